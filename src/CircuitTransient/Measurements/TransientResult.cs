@@ -1,0 +1,205 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>Everything a user is told of one circuit: the figures behind every file and every line of output.</summary>
+/// <param name="Circuit">The circuit that was solved.</param>
+/// <param name="Until">End of the study in seconds.</param>
+/// <param name="UntilReason">Why it ends there, where no <c>until</c> was written; else null.</param>
+/// <param name="Causes">The causes, in the order of the parts.</param>
+/// <param name="Intervals">The intervals between switchings.</param>
+/// <param name="Events">Every switching in order, with what each switch saw.</param>
+/// <param name="SampleTimes">Instants of the waveforms in seconds; a jump's instant stands twice: before and after.</param>
+/// <param name="Observations">The observed waveforms with their extremes and causes.</param>
+/// <param name="Figures">Figures read off waveforms.</param>
+/// <param name="Requirements">The verdict on each requirement.</param>
+/// <param name="Parts">Stresses of each part.</param>
+/// <param name="SelfChecks">The checks every solve runs.</param>
+/// <param name="NotJudged">Checks that could not judge, each with its reason.</param>
+/// <param name="Warnings">Warnings from text to result.</param>
+/// <param name="Cautions">What can kill or burn.</param>
+public sealed record TransientResult(
+    Circuit Circuit,
+    double Until,
+    string? UntilReason,
+    ImmutableArray<CauseName> Causes,
+    ImmutableArray<IntervalResult> Intervals,
+    ImmutableArray<EventResult> Events,
+    ImmutableArray<double> SampleTimes,
+    ImmutableArray<ObservationResult> Observations,
+    ImmutableArray<FigureResult> Figures,
+    ImmutableArray<RequirementResult> Requirements,
+    ImmutableArray<PartResult> Parts,
+    ImmutableArray<SelfCheck> SelfChecks,
+    ImmutableArray<NotJudged> NotJudged,
+    ImmutableArray<Notice> Warnings,
+    ImmutableArray<Caution> Cautions)
+{
+    /// <summary>Whether every requirement and rating holds.</summary>
+    public bool AllHold =>
+        Requirements.All(r => r.Holds) && Parts.All(p => p.Ratings.All(r => r.Holds));
+
+    /// <summary>Whether every self-check holds.</summary>
+    public bool ChecksHold => SelfChecks.All(c => c.Holds);
+}
+
+/// <summary>The kinds of causes.</summary>
+public enum CauseKind
+{
+    /// <summary>An independent source.</summary>
+    Source,
+
+    /// <summary>A charge or flux stored at the start.</summary>
+    Stored,
+
+    /// <summary>One piece of a source: a step, a corner, a sine.</summary>
+    Edge,
+}
+
+/// <summary>A cause by the user's own name.</summary>
+/// <param name="Of">The source a piece belongs to; null for the others.</param>
+public sealed record CauseName(string Name, CauseKind Kind, string? Of = null);
+
+/// <summary>A value and when it stood; the value is null where it is infinite or undetermined.</summary>
+public sealed record TimedValue(double? Value, double Time);
+
+/// <summary>On which side of its instant an extreme stands.</summary>
+public enum InstantSide
+{
+    /// <summary>Just before a jump.</summary>
+    Before,
+
+    /// <summary>At an instant without a jump.</summary>
+    At,
+
+    /// <summary>Just after a jump.</summary>
+    After,
+}
+
+/// <summary>A global extreme.</summary>
+/// <param name="Bound">Proven not to be exceeded anywhere in the window.</param>
+public sealed record Extreme(double? Value, double Time, InstantSide Side, double? Bound);
+
+/// <summary>One interval between switchings.</summary>
+/// <param name="StartsWith">The switchings at its start: <c>Kmain closes</c>.</param>
+/// <param name="Poles">Every finite one, by magnitude.</param>
+/// <param name="Impulses">At its start, or where a source steps.</param>
+/// <param name="EnergyLost">In all of them, joules.</param>
+public sealed record IntervalResult(
+    double From, double Until, ImmutableArray<string> StartsWith, ImmutableArray<Pole> Poles,
+    ImmutableArray<ImpulseResult> Impulses, double EnergyLost);
+
+/// <summary>A pole, or a pair of conjugate ones (Im ≥ 0), in 1/s and rad/s.</summary>
+public sealed record Pole(double Re, double Im, int Multiplicity);
+
+/// <summary>An impulse through a part (coulombs) or across it (volt-seconds).</summary>
+/// <param name="Remedy">Which real part would make it finite.</param>
+public sealed record ImpulseResult(double Time, string Part, double? Charge, double? VoltSeconds, string? Remedy);
+
+/// <summary>A switching, with what the switch saw; null where undetermined.</summary>
+public sealed record EventResult(
+    double Time, string Switch, bool Closes, double? VoltageBefore, double? VoltageAfter, double? CurrentBefore,
+    double? CurrentAfter, string? Remark);
+
+/// <summary>An observed quantity over the study.</summary>
+/// <param name="Start">Value just after the window's start.</param>
+/// <param name="End">Value at the window's end.</param>
+/// <param name="Final">Limit for t → ∞ of the last interval with its sources as they stand; null where there is none.</param>
+/// <param name="EndsRising">Whether the greatest magnitude lies at the end of the study and still rises.</param>
+/// <param name="Contributions">One for each cause; quadratic quantities have one more, named <c>joint</c>.</param>
+/// <param name="After">The breakdown since an event; null where not asked for or not defined.</param>
+/// <param name="Samples">The instants asked for with <c>--at</c>.</param>
+/// <param name="Total">The waveform at <see cref="TransientResult.SampleTimes"/>; NaN where undetermined.</param>
+/// <param name="ByCause">The waveform of each contribution, in the order of <paramref name="Contributions"/>.</param>
+public sealed record ObservationResult(
+    string Name,
+    string Unit,
+    double? Start,
+    double? End,
+    double? Final,
+    Extreme Max,
+    Extreme Min,
+    bool EndsRising,
+    ImmutableArray<Contribution> Contributions,
+    ContributionsAfter? After,
+    ImmutableArray<SampleAt> Samples,
+    ImmutableArray<double> Total,
+    ImmutableArray<ImmutableArray<double>> ByCause)
+{
+    /// <summary>The extreme of greater magnitude.</summary>
+    public Extreme Greatest => Math.Abs(Min.Value ?? 0) > Math.Abs(Max.Value ?? 0) ? Min : Max;
+}
+
+/// <summary>What one cause has in an observation.</summary>
+/// <param name="AtMax">Its value at the total's maximum.</param>
+/// <param name="AtMin">Its value at the total's minimum.</param>
+/// <param name="OwnMax">Its own greatest value.</param>
+/// <param name="OwnMin">Its own least value.</param>
+/// <param name="MaxWithout">Greatest value of the total without it.</param>
+/// <param name="MinWithout">Least value of the total without it.</param>
+public sealed record Contribution(
+    string Cause, double? AtMax, double? AtMin, TimedValue? OwnMax, TimedValue? OwnMin, TimedValue? MaxWithout,
+    TimedValue? MinWithout);
+
+/// <summary>The breakdown since an event, at both extremes; null where the event comes after the extreme.</summary>
+public sealed record ContributionsAfter(SinceEvent? AtMax, SinceEvent? AtMin);
+
+/// <summary>What the stored quantities at an event and the sources from then on have in a value.</summary>
+public sealed record SinceEvent(string Event, double Time, ImmutableArray<CauseValue> Parts);
+
+/// <summary>A cause and its value.</summary>
+public sealed record CauseValue(string Cause, double? Value);
+
+/// <summary>An exact value at an instant asked for; contributions in the order of the observation's.</summary>
+public sealed record SampleAt(double Time, double? Value, ImmutableArray<double?> ByCause);
+
+/// <summary>A figure read off a waveform.</summary>
+public sealed record FigureResult(string Name, string Unit, double? Value, string Definition);
+
+/// <summary>The verdict on a requirement.</summary>
+/// <param name="Line">Line in the circuit file.</param>
+/// <param name="Worst">The value nearest to, or furthest past, its bound.</param>
+/// <param name="Margin">In the quantity's unit, negative when broken; null where infinite.</param>
+public sealed record RequirementResult(
+    string Statement, string? Reason, string Unit, int Line, bool Holds, TimedValue Worst, double? Margin);
+
+/// <summary>Stresses of a part; null where undetermined or infinite.</summary>
+/// <param name="Energy">Absorbed over the study, joules.</param>
+/// <param name="JouleIntegral">∫ i² dt over the study, A²s.</param>
+public sealed record PartResult(
+    string Name, string Kind, TimedValue? PeakVoltage, TimedValue? PeakCurrent, TimedValue? PeakPower,
+    TimedValue? PeakVoltageRate, TimedValue? PeakCurrentRate, double? Energy, double? JouleIntegral,
+    ImmutableArray<RatingResult> Ratings, LinearUpToResult? LinearUpTo);
+
+/// <summary>A rating against what was reached; <paramref name="Used"/> is a fraction.</summary>
+public sealed record RatingResult(double Rated, string Unit, double? Reached, double? Used, bool Holds);
+
+/// <summary>A <c>linear up to</c> limit against what was reached.</summary>
+/// <param name="Direction">Which way the result errs past the limit, in words; null where the kind does not tell.</param>
+public sealed record LinearUpToResult(double Declared, string Unit, double? Reached, bool Holds, string? Direction);
+
+/// <summary>One check every solve runs: the worst relative figure against what is allowed.</summary>
+public sealed record SelfCheck(string Name, double Worst, double Allowed, bool Holds);
+
+/// <summary>A check that could not judge this circuit.</summary>
+public sealed record NotJudged(string Name, string Reason);
+
+/// <summary>A warning; line 0 where it belongs to no line.</summary>
+public sealed record Notice(int Line, string Text);
+
+/// <summary>How grave a caution is.</summary>
+public enum CautionSeverity
+{
+    /// <summary>Worth knowing.</summary>
+    Note,
+
+    /// <summary>May do damage.</summary>
+    Warning,
+
+    /// <summary>May kill or burn.</summary>
+    Danger,
+}
+
+/// <summary>A caution with its figure in words and the standard to verify it in.</summary>
+public sealed record Caution(CautionSeverity Severity, string Text, string Standard);
