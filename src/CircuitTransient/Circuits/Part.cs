@@ -4,7 +4,8 @@ using CircuitTransient.Text;
 namespace CircuitTransient.Circuits;
 
 /// <summary>A part between two nodes. Its voltage is that of <see cref="From"/> less that of
-/// <see cref="To"/>; its current is positive flowing from <see cref="From"/> to <see cref="To"/> inside it.</summary>
+/// <see cref="To"/>; its current is positive flowing from <see cref="From"/> to <see cref="To"/> inside
+/// it.</summary>
 public abstract record Part
 {
     /// <summary>The user's name.</summary>
