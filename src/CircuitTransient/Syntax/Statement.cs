@@ -80,7 +80,8 @@ public sealed record SwitchStatement(
 
 /// <summary><c>coupling NAME of COIL and COIL : factor or mutual inductance</c>.</summary>
 public sealed record CouplingStatement(
-    TextSpan Span, NameSyntax Name, NameSyntax First, NameSyntax Second, ToleratedSyntax Value) : Statement(Span);
+    TextSpan Span, NameSyntax Name, NameSyntax First, NameSyntax Second, ToleratedSyntax Value)
+    : Statement(Span);
 
 /// <summary><c>transformer NAME primary from A to B, secondary from C to D : turns N1 to N2</c>.</summary>
 public sealed record TransformerStatement(
@@ -94,7 +95,8 @@ public sealed record ObserveStatement(
 
 /// <summary><c>require QUANTITY BOUND from T to T because "reason"</c>.</summary>
 public sealed record RequireStatement(
-    TextSpan Span, QuantitySyntax Quantity, BoundSyntax Bound, WindowSyntax Window, string? Reason) : Statement(Span);
+    TextSpan Span, QuantitySyntax Quantity, BoundSyntax Bound, WindowSyntax Window, string? Reason)
+    : Statement(Span);
 
 /// <summary><c>start as stated</c> or <c>start settled</c>.</summary>
 public sealed record StartStatement(TextSpan Span, bool IsSettled) : Statement(Span);
@@ -113,9 +115,12 @@ public sealed record AssemblyStatement(
 
 /// <summary><c>place ASSEMBLY as NAME with terminal = node, value = expression</c>.</summary>
 public sealed record PlaceStatement(
-    TextSpan Span, NameSyntax Assembly, NameSyntax Name, ImmutableArray<AssignmentSyntax> Assignments) : Statement(Span);
+    TextSpan Span, NameSyntax Assembly, NameSyntax Name, ImmutableArray<AssignmentSyntax> Assignments)
+    : Statement(Span);
 
-/// <summary><c>inner = outer</c> of a placed assembly: a node for a terminal, an expression for a value.</summary>
+/// <summary><c>inner = outer</c> of a placed assembly: a node for a terminal, an expression for a
+/// value.</summary>
 /// <param name="Node">The right side read as a name; null where it can only be an expression.</param>
 /// <param name="Value">The right side read as an expression; null where it can only be a name.</param>
-public sealed record AssignmentSyntax(TextSpan Span, NameSyntax Inner, NameSyntax? Node, ToleratedSyntax? Value);
+public sealed record AssignmentSyntax(
+    TextSpan Span, NameSyntax Inner, NameSyntax? Node, ToleratedSyntax? Value);
