@@ -5,9 +5,9 @@ using CircuitTransient.Measurements;
 
 namespace CircuitTransient.Reports;
 
-/// <summary>The waveforms as comma-separated values by RFC 4180, <c>waveforms.csv</c>: a column of time, then each
-/// observation followed by its contributions. A jump stands in two rows of one time; what is undetermined is
-/// empty.</summary>
+/// <summary>The waveforms as comma-separated values by RFC 4180, <c>waveforms.csv</c>: a column of time, then
+/// each observation followed by its contributions. A jump stands in two rows of one time; what is
+/// undetermined is empty.</summary>
 public static class CsvReport
 {
     private const string LineEnd = "\r\n"; // RFC 4180, section 2.1

@@ -6,7 +6,7 @@ namespace CircuitTransient.Reports;
 /// <summary>Instants in words: when, and how long after the last switching before.</summary>
 public static class InstantWords
 {
-    /// <summary><c>at 1.801 s, 1.496 ms after Kmain closes</c>; empty where there is no such instant.</summary>
+    /// <summary><c>at 1.801 s, 1.496 ms after Kmain closes</c>; empty where there is no instant.</summary>
     public static string At(TransientResult result, double time, InstantSide side = InstantSide.At)
     {
         if (!double.IsFinite(time))
@@ -23,7 +23,8 @@ public static class InstantWords
         };
     }
 
-    /// <summary><c>1.496 ms after Kmain closes</c>, <c>just before KB opens</c>; null before the first switching.</summary>
+    /// <summary><c>1.496 ms after Kmain closes</c>, <c>just before KB opens</c>; null before the first
+    /// switching.</summary>
     public static string? SinceEvent(TransientResult result, double time, InstantSide side = InstantSide.At)
     {
         if (LastBefore(result, time) is not { } last)

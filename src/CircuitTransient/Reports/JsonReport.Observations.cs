@@ -26,7 +26,7 @@ public static partial class JsonReport
             json.WriteEndObject();
         }
 
-        WriteArray(json, "samples", observation.Samples, (_, sample) => WriteSample(json, observation, sample));
+        WriteArray(json, "samples", observation.Samples, (to, at) => WriteSample(to, observation, at));
         json.WriteEndObject();
     }
 

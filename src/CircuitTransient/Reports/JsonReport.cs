@@ -9,14 +9,14 @@ using CircuitTransient.Measurements;
 
 namespace CircuitTransient.Reports;
 
-/// <summary>The results document, <c>results.json</c>: SI units, doubles that read back to the same bits, null for
-/// what is infinite or left open. Its shape is described by <c>results.schema.json</c>.</summary>
+/// <summary>The results document, <c>results.json</c>: SI units, doubles that read back to the same bits,
+/// null for what is infinite or left open. Its shape is described by <c>results.schema.json</c>.</summary>
 public static partial class JsonReport
 {
-    /// <summary>The name and number of the format; the number changes when a field is changed or removed.</summary>
+    /// <summary>Name and number of the format; the number changes when a field changes or goes.</summary>
     public const string Format = "circuit-transient results 1";
 
-    // Letters of every script stay readable; < > & ' are escaped, so that the document may stand inside a page.
+    // Letters of every script stay readable; < > & ' are escaped, so that it may stand inside a page.
     private static readonly JsonWriterOptions Options = new()
     {
         Indented = true,
@@ -174,7 +174,8 @@ public static partial class JsonReport
         WriteArray(json, items, write);
     }
 
-    private static void WriteArray<T>(Utf8JsonWriter json, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
+    private static void WriteArray<T>(
+        Utf8JsonWriter json, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
     {
         json.WriteStartArray();
         foreach (var item in items)

@@ -46,7 +46,8 @@ internal sealed class SummaryText(bool colour)
     }
 
     /// <summary>A table.</summary>
-    public void Table(ImmutableArray<TextColumn> columns, IEnumerable<ImmutableArray<string>> rows, int indent = 2)
+    public void Table(
+        ImmutableArray<TextColumn> columns, IEnumerable<ImmutableArray<string>> rows, int indent = 2)
     {
         foreach (var line in TextTable.Lines(columns, [.. rows], indent, Width))
         {

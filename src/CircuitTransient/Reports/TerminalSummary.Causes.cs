@@ -20,10 +20,11 @@ public static partial class TerminalSummary
 
         var unit = worst.Observation.Unit;
         var when = InstantWords.At(result, worst.Extreme.Time, worst.Extreme.Side);
-        text.Heading($"What makes the {Number(total, unit)} of {worst.Observation.Name} ({when}; {worst.Why})");
-        text.Paragraph(result.Circuit.StartsSettled
-            ? "From the start: the sources, and what was stored at t = 0 apart from them, carried through every switching"
-            : "From the start: the sources, and what was stored at t = 0, carried through every switching");
+        text.Heading(
+            $"What makes the {Number(total, unit)} of {worst.Observation.Name} ({when}; {worst.Why})");
+        var apart = result.Circuit.StartsSettled ? " apart from them" : "";
+        text.Paragraph(
+            $"From the start: the sources, and what was stored at t = 0{apart}, carried through switchings");
         WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without");
         if (DecidedByAnswer(result) is { } decided)
         {
@@ -32,8 +33,10 @@ public static partial class TerminalSummary
 
         if (worst.Since is { } since)
         {
-            text.Paragraph($"Since {since.Event}: what each part held just before it, and the sources from then on");
-            WriteShares(text, [.. since.Parts.Select(part => new Share(part.Cause, part.Value))], total, unit, null);
+            text.Paragraph(
+                $"Since {since.Event}: what each part held just before it, and the sources from then on");
+            var shares = since.Parts.Select(part => new Share(part.Cause, part.Value)).ToImmutableArray();
+            WriteShares(text, shares, total, unit, without: null);
             if (Driving(result, since) is { } driving)
             {
                 text.Paragraph(driving, hanging: 2);
@@ -56,7 +59,7 @@ public static partial class TerminalSummary
         var ordered = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
         var shown = ordered.Length <= MostCauses ? ordered : ordered[..(MostCauses - 1)];
         var largest = shown.Select(share => Math.Abs(share.Value ?? 0)).DefaultIfEmpty().Max();
-        var bars = new SignedBars(largest, shown.Any(share => share.Value < 0), shown.Any(share => share.Value > 0));
+        var bars = new SignedBars(largest, shown.Any(share => share.Value < 0), shown.Any(s => s.Value > 0));
         var rows = shown.Select(share => Row(share, total, unit, bars, without is not null)).ToList();
         if (without is not null)
         {
@@ -77,13 +80,16 @@ public static partial class TerminalSummary
         }
     }
 
-    private static ImmutableArray<string> Row(Share share, double total, string unit, SignedBars bars, bool withOwn) =>
+    private static ImmutableArray<string> Row(
+        Share share, double total, string unit, SignedBars bars, bool withOwn) =>
     [
         share.Cause,
         Signed(share.Value, unit),
         PercentOf(share.Value, total),
         bars.Of(share.Value ?? 0),
-        withOwn && share.Own is { Value: { } own } ? $"{Number(own, unit)} at {Number(share.Own.Time, "s")}" : "",
+        withOwn && share.Own is { Value: { } own, Time: var time }
+            ? $"{Number(own, unit)} at {Number(time, "s")}"
+            : "",
         withOwn && share.Without is { } without ? Number(without.Value, unit) : "",
     ];
 
@@ -95,9 +101,10 @@ public static partial class TerminalSummary
             return null;
         }
 
-        var with = shares.Where(share => share.Value * total > 0 || (total == 0 && share.Value > 0)).ToArray();
-        var against = shares.Where(share => share.Value * total < 0 || (total == 0 && share.Value < 0)).ToArray();
-        return $"large causes cancel: {Group(with, unit)} against {Group(against, unit)}: {Number(total, unit)}";
+        var sign = total < 0 ? -1 : 1;
+        var with = Group([.. shares.Where(share => share.Value * sign > 0)], unit);
+        var against = Group([.. shares.Where(share => share.Value * sign < 0)], unit);
+        return $"large causes cancel: {with} against {against}: {Number(total, unit)}";
     }
 
     private static string Group(Share[] shares, string unit)
@@ -111,7 +118,8 @@ public static partial class TerminalSummary
 
     private static string? Driving(TransientResult result, SinceEvent since)
     {
-        var switching = result.Events.FirstOrDefault(e => e.Time == since.Time && InstantWords.Name(e) == since.Event);
+        var switching = result.Events
+            .FirstOrDefault(e => e.Time == since.Time && InstantWords.Name(e) == since.Event);
         return switching switch
         {
             { Closes: true, VoltageBefore: { } voltage } =>
@@ -145,7 +153,8 @@ public static partial class TerminalSummary
         return text + " %";
     }
 
-    private sealed record Share(string Cause, double? Value, TimedValue? Own = null, TimedValue? Without = null);
+    private sealed record Share(
+        string Cause, double? Value, TimedValue? Own = null, TimedValue? Without = null);
 
     /// <summary>Bars to both sides of a common zero, in half cells.</summary>
     private sealed record SignedBars(double Largest, bool HasNegative, bool HasPositive)

@@ -19,10 +19,11 @@ public static partial class TerminalSummary
                 : $"{failed} self-checks failed: do not use these figures.";
         }
 
+        var required = result.Requirements;
         var ratings = result.Parts.SelectMany(part => part.Ratings).ToArray();
         var sentences = new[]
         {
-            Tally(result.Requirements.Count(r => r.Holds), result.Requirements.Length, "requirement", "broken"),
+            Tally(required.Count(r => r.Holds), required.Length, "requirement", "broken"),
             Tally(ratings.Count(r => r.Holds), ratings.Length, "rating", "exceeded"),
             Doubt(result.Parts.Count(part => part.LinearUpTo is { Holds: false })),
         };
@@ -82,9 +83,10 @@ public static partial class TerminalSummary
             (false, null) => "broken without limit",
         };
         var because = requirement.Reason is { } reason ? $" because \"{reason}\"" : "";
-        var worst = requirement.Worst.Value is { } value ? Number(value, requirement.Unit) : "no finite value";
+        var statement = $"{requirement.Statement}{because} (line {requirement.Line})";
+        var worst = Finite(requirement.Worst.Value, requirement.Unit);
         var when = InstantWords.At(result, requirement.Worst.Time);
-        return [verdict, $"{requirement.Statement}{because} (line {requirement.Line})", $"{worst} {when}".TrimEnd()];
+        return [verdict, statement, $"{worst} {when}".TrimEnd()];
     }
 
     private static void WriteRatings(SummaryText text, TransientResult result)
@@ -101,12 +103,14 @@ public static partial class TerminalSummary
         }
 
         text.Heading("Ratings, the most used first");
-        text.Table([Prose, Left, Right, Left, Right, Left], ratings.Select(pair => RowOf(pair.Name, pair.Rating)));
+        text.Table(
+            [Prose, Left, Right, Left, Right, Left], ratings.Select(pair => RowOf(pair.Name, pair.Rating)));
         var unrated = result.Parts.Where(part => part.Ratings.IsEmpty).Select(part => part.Name).ToArray();
         if (unrated.Length > 0)
         {
             var rest = unrated.Length > MostUnrated ? $" and {unrated.Length - MostUnrated} more" : "";
-            text.Paragraph($"no rating given: {string.Join(", ", unrated.Take(MostUnrated))}{rest}", hanging: 2);
+            var names = string.Join(", ", unrated.Take(MostUnrated));
+            text.Paragraph($"no rating given: {names}{rest}", hanging: 2);
         }
     }
 
@@ -120,9 +124,12 @@ public static partial class TerminalSummary
             (false, { } excess) => $"exceeded by {Number(excess, rating.Unit)}",
             (false, null) => "exceeded without limit",
         };
-        var reached = rating.Reached is { } figure ? Number(figure, rating.Unit) : "no finite value";
+        var reached = Finite(rating.Reached, rating.Unit);
         return [part, Rated(rating.Unit), reached, $"of {Number(rating.Rated, rating.Unit)}", used, verdict];
     }
+
+    private static string Finite(double? value, string unit) =>
+        value is null ? "no finite value" : Number(value, unit);
 
     private static string Rated(string unit) => unit switch
     {

@@ -21,7 +21,7 @@ public static partial class TerminalSummary
 
     /// <summary>The summary of a result.</summary>
     /// <param name="result">The result.</param>
-    /// <param name="files">Where the files are, as the user may open them; empty where none were written.</param>
+    /// <param name="files">Where the files are, as the user may open them; may be empty.</param>
     /// <param name="colour">Whether headings are bold and bars blue.</param>
     public static string Write(TransientResult result, ImmutableArray<string> files, bool colour = false)
     {
@@ -44,7 +44,9 @@ public static partial class TerminalSummary
     }
 
     private static string TitleOf(TransientResult result) =>
-        result.Circuit.Title is { } title ? $"{title} ({result.Circuit.Source.Name})" : result.Circuit.Source.Name;
+        result.Circuit.Title is { } title
+            ? $"{title} ({result.Circuit.Source.Name})"
+            : result.Circuit.Source.Name;
 
     private static void WriteEvents(SummaryText text, TransientResult result)
     {
@@ -88,14 +90,14 @@ public static partial class TerminalSummary
         }
     }
 
-    private static IEnumerable<ImmutableArray<string>> RowsOf(TransientResult result, ObservationResult observation)
+    private static IEnumerable<ImmutableArray<string>> RowsOf(
+        TransientResult result, ObservationResult observed)
     {
-        var unit = observation.Unit;
-        yield return
-            [observation.Name, "max", Number(observation.Max.Value, unit), When(result, observation, observation.Max)];
-        yield return ["", "min", Number(observation.Min.Value, unit), When(result, observation, observation.Min)];
-        var final = observation.Final is { } limit ? $"tends to {Number(limit, unit)}" : "tends to no limit";
-        yield return ["", "end", Number(observation.End, unit), final];
+        var (unit, max, min) = (observed.Unit, observed.Max, observed.Min);
+        yield return [observed.Name, "max", Number(max.Value, unit), When(result, observed, max)];
+        yield return ["", "min", Number(min.Value, unit), When(result, observed, min)];
+        var final = observed.Final is { } limit ? $"tends to {Number(limit, unit)}" : "tends to no limit";
+        yield return ["", "end", Number(observed.End, unit), final];
     }
 
     private static string When(TransientResult result, ObservationResult observation, Extreme extreme)
@@ -111,7 +113,7 @@ public static partial class TerminalSummary
             when += "; still rising at the end: a longer study shows more";
         }
 
-        // The bound is owed within 1e-9 of the value; where it was not reached, the reader is told how far it went.
+        // The bound is owed within 1e-9 of the value; where it fell short, the reader is told.
         return extreme.Bound is { } bound && Math.Abs(bound - value) > 2e-9 * Math.Abs(value)
             ? when + $"; proven only not to pass {Number(bound, observation.Unit)}"
             : when;
@@ -124,7 +126,8 @@ public static partial class TerminalSummary
             text.Heading("Read off the waveforms");
             text.Table(
                 [Prose, Right, Prose],
-                result.Figures.Select(f => ImmutableArray.Create(f.Name, Number(f.Value, f.Unit), f.Definition)));
+                result.Figures.Select(figure => ImmutableArray.Create(
+                    figure.Name, Number(figure.Value, figure.Unit), figure.Definition)));
         }
     }
 
@@ -172,7 +175,7 @@ public static partial class TerminalSummary
         else if (!result.SelfChecks.IsEmpty)
         {
             var closest = result.SelfChecks.MaxBy(check => check.Worst / check.Allowed)!;
-            var count = result.SelfChecks.Length == 1 ? "the one check holds" : $"all {result.SelfChecks.Length} hold";
+            var count = result.SelfChecks is [_] ? "it holds" : $"all {result.SelfChecks.Length} hold";
             text.Paragraph(
                 $"Self-checks: {count}; nearest to its limit is {closest.Name}, {Ratio(closest.Worst)} of " +
                 $"{Ratio(closest.Allowed)} allowed.",
@@ -193,7 +196,8 @@ public static partial class TerminalSummary
             text.Heading("Warnings");
             foreach (var warning in result.Warnings)
             {
-                text.Paragraph(warning.Line > 0 ? $"line {warning.Line}: {warning.Text}" : warning.Text, hanging: 2);
+                var place = warning.Line > 0 ? $"line {warning.Line}: " : "";
+                text.Paragraph(place + warning.Text, hanging: 2);
             }
         }
     }
@@ -229,7 +233,9 @@ public static partial class TerminalSummary
     }
 
     private static string Number(double? value, string unit) =>
-        value is { } number && double.IsFinite(number) ? EngineeringNumber.Format(number, unit) : "undetermined";
+        value is { } number && double.IsFinite(number)
+            ? EngineeringNumber.Format(number, unit)
+            : "undetermined";
 
     private static string Ratio(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 }

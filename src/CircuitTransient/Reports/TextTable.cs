@@ -16,10 +16,14 @@ public static class TextTable
 
     /// <summary>The lines of a table, none wider than <paramref name="width"/>.</summary>
     public static ImmutableArray<string> Lines(
-        ImmutableArray<TextColumn> columns, ImmutableArray<ImmutableArray<string>> rows, int indent, int width)
+        ImmutableArray<TextColumn> columns,
+        ImmutableArray<ImmutableArray<string>> rows,
+        int indent,
+        int width)
     {
         var printable = rows.Select(row => row.Select(DisplayWidth.Printable).ToArray()).ToArray();
-        var widths = columns.Select((_, i) => printable.Select(row => DisplayWidth.Of(row[i])).DefaultIfEmpty().Max())
+        var widths = columns
+            .Select((_, i) => printable.Select(row => DisplayWidth.Of(row[i])).DefaultIfEmpty().Max())
             .ToArray();
         Narrow(columns, widths, width - indent);
         var lines = ImmutableArray.CreateBuilder<string>();
@@ -96,7 +100,11 @@ public static class TextTable
     }
 
     private static string Line(
-        ImmutableArray<TextColumn> columns, int[] widths, ImmutableArray<string>[] cells, int line, int indent)
+        ImmutableArray<TextColumn> columns,
+        int[] widths,
+        ImmutableArray<string>[] cells,
+        int line,
+        int indent)
     {
         var text = new StringBuilder().Append(' ', indent);
         for (var i = 0; i < columns.Length; i++)

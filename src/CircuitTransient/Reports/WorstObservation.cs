@@ -18,7 +18,7 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
     /// <summary>What a cause has in the extreme.</summary>
     public double? Share(Contribution contribution) => AtMax ? contribution.AtMax : contribution.AtMin;
 
-    /// <summary>The one whose requirement or rating is most exceeded, else the most used; else the first.</summary>
+    /// <summary>The one whose requirement or rating is exceeded or used most; else the first.</summary>
     public static WorstObservation? Find(TransientResult result)
     {
         if (result.Observations.IsEmpty)
@@ -49,12 +49,13 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         for (var i = 0; i < Math.Min(required.Length, result.Requirements.Length); i++)
         {
             var verdict = result.Requirements[i];
-            yield return (required[i].Quantity, Used(required[i].Bound, verdict), verdict.Worst.Value, "requirement");
+            var used = Used(required[i].Bound, verdict);
+            yield return (required[i].Quantity, used, verdict.Worst.Value, "requirement");
         }
 
         foreach (var part in result.Parts)
         {
-            var index = result.Circuit.Parts.IndexOf(result.Circuit.Parts.FirstOrDefault(p => p.Name == part.Name)!);
+            var index = result.Circuit.Parts.ToList().FindIndex(p => p.Name == part.Name);
             foreach (var rating in part.Ratings)
             {
                 if (index >= 0 && RatedQuantity(index, rating.Unit) is { } quantity)
@@ -100,7 +101,8 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
     private static ObservationResult? Matching(TransientResult result, Measurand quantity)
     {
         var sought = Normalised(result.Circuit, quantity);
-        var observed = result.Circuit.Observations.FirstOrDefault(o => Normalised(result.Circuit, o.Quantity) == sought);
+        var observed = result.Circuit.Observations
+            .FirstOrDefault(o => Normalised(result.Circuit, o.Quantity) == sought);
         return observed is null ? null : result.Observations.FirstOrDefault(o => o.Name == observed.Name);
     }
 
@@ -120,11 +122,10 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
 
     private static bool IsAtMax(ObservationResult observation, double? value)
     {
-        if (value is not { } worst || observation.Max.Value is not { } max || observation.Min.Value is not { } min)
+        return (value, observation.Max.Value, observation.Min.Value) switch
         {
-            return observation.Greatest == observation.Max;
-        }
-
-        return Math.Abs(worst - max) <= Math.Abs(worst - min);
+            ({ } worst, { } max, { } min) => Math.Abs(worst - max) <= Math.Abs(worst - min),
+            _ => observation.Greatest == observation.Max,
+        };
     }
 }

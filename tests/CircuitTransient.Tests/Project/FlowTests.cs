@@ -59,7 +59,7 @@ public partial class FlowTests
     }
 
     private static string? StageOf(IType type) =>
-        type.Namespace.FullName.Split('.') is ["CircuitTransient", var stage, ..] ? stage : null;
+        type.Namespace?.FullName.Split('.') is ["CircuitTransient", var stage, ..] ? stage : null;
 
     private static string? StageOfPath(string path) =>
         Path.GetExtension(path) == ".cs"

@@ -9,8 +9,9 @@ public class CsvReportTests
     {
         var heading = CsvReport.Write(SampleResults.Inrush()).Split("\r\n")[0];
         Assert.Equal(
-            "time (s),voltage of bus (V),voltage of bus from Supply (V),voltage of bus from Cbus initial charge (V)," +
-            "current through Ls (A),current through Ls from Supply (A),current through Ls from Cbus initial charge (A)",
+            "time (s),voltage of bus (V),voltage of bus from Supply (V)," +
+            "voltage of bus from Cbus initial charge (V),current through Ls (A)," +
+            "current through Ls from Supply (A),current through Ls from Cbus initial charge (A)",
             heading);
     }
 
@@ -30,7 +31,7 @@ public class CsvReportTests
     {
         var result = SampleResults.Inrush();
         var rows = CsvReport.Write(result).Split("\r\n");
-        Assert.Equal(result.SampleTimes.Length + 2, rows.Length); // the heading, and nothing after the last line end
+        Assert.Equal(result.SampleTimes.Length + 2, rows.Length); // the heading, and nothing after the last
         Assert.Equal("", rows[^1]);
         Assert.Equal(2, rows.Count(row => row.StartsWith("0.2,", StringComparison.Ordinal)));
     }
@@ -49,7 +50,10 @@ public class CsvReportTests
     public void What_is_undetermined_is_empty()
     {
         var result = SampleResults.Bare();
-        var observation = result.Observations[0] with { Total = [double.NaN, 5], ByCause = [[double.NaN, 5]] };
+        var observation = result.Observations[0] with
+        {
+            Total = [double.NaN, 5], ByCause = [[double.NaN, 5]],
+        };
         Assert.Equal(
             "time (s),voltage of a (V),voltage of a from Feed (V)\r\n0,,\r\n1,5,5\r\n",
             CsvReport.Write(result with { Observations = [observation] }));
@@ -60,7 +64,11 @@ public class CsvReportTests
     {
         var result = SampleResults.Bare();
         var energy = SampleResults.Observed(
-            "energy in C", "J", result.SampleTimes, ["Feed", "C initial charge", "joint"], [_ => 1, _ => 2, _ => -0.5]);
+            "energy in C",
+            "J",
+            result.SampleTimes,
+            ["Feed", "C initial charge", "joint"],
+            [_ => 1, _ => 2, _ => -0.5]);
         Assert.Equal(
             "time (s),energy in C (J),energy in C from Feed (J),energy in C from C initial charge (J)," +
             "energy in C from joint (J)\r\n0,2.5,1,2,-0.5\r\n1,2.5,1,2,-0.5\r\n",

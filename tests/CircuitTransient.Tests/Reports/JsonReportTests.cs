@@ -12,7 +12,8 @@ public class JsonReportTests
     public void A_full_document_obeys_the_schema() => AssertObeys(JsonReport.Write(SampleResults.Inrush()));
 
     [Fact]
-    public void A_document_of_almost_nothing_obeys_the_schema() => AssertObeys(JsonReport.Write(SampleResults.Bare()));
+    public void A_document_of_almost_nothing_obeys_the_schema() =>
+        AssertObeys(JsonReport.Write(SampleResults.Bare()));
 
     [Fact]
     public void Awkward_names_obey_the_schema() => AssertObeys(JsonReport.Write(SampleResults.Awkward()));
@@ -47,10 +48,16 @@ public class JsonReportTests
     public void What_is_infinite_or_undetermined_is_null()
     {
         var result = SampleResults.Bare();
-        var observation = result.Observations[0] with { Start = double.NaN, End = double.PositiveInfinity, Final = null };
-        using var document = JsonDocument.Parse(JsonReport.Write(result with { Observations = [observation] }));
+        var observation = result.Observations[0] with
+        {
+            Start = double.NaN, End = double.PositiveInfinity, Final = null,
+        };
+        var text = JsonReport.Write(result with { Observations = [observation] });
+        using var document = JsonDocument.Parse(text);
         var written = document.RootElement.GetProperty("observations")[0];
-        Assert.All(["start", "end", "final"], name => Assert.Equal(JsonValueKind.Null, written.GetProperty(name).ValueKind));
+        Assert.All(
+            ["start", "end", "final"],
+            name => Assert.Equal(JsonValueKind.Null, written.GetProperty(name).ValueKind));
     }
 
     [Fact]
@@ -75,7 +82,8 @@ public class JsonReportTests
         var sample = document.RootElement.GetProperty("observations")[1].GetProperty("samples")[1];
         Assert.Equal(2.5e-3, sample.GetProperty("time").GetDouble());
         var causes = sample.GetProperty("byCause").EnumerateObject().Select(p => (p.Name, p.Value.ValueKind));
-        Assert.Equal([("Supply", JsonValueKind.Number), ("Cbus initial charge", JsonValueKind.Null)], causes);
+        Assert.Equal(
+            [("Supply", JsonValueKind.Number), ("Cbus initial charge", JsonValueKind.Null)], causes);
     }
 
     [Fact]
@@ -96,7 +104,8 @@ public class JsonReportTests
         var circuit = document.RootElement.GetProperty("circuit");
         // From sha256sum of GNU coreutils over the same bytes.
         Assert.Equal(
-            "e5b24a4b013f13b5fee7465117af399c7227be0802334b8f3d1175806b12c28e", circuit.GetProperty("sha256").GetString());
+            "e5b24a4b013f13b5fee7465117af399c7227be0802334b8f3d1175806b12c28e",
+            circuit.GetProperty("sha256").GetString());
         Assert.Equal(3, circuit.GetProperty("parts").GetInt32());
         Assert.Equal(4, circuit.GetProperty("nodes").GetInt32());
         Assert.Equal(2, circuit.GetProperty("storedQuantities").GetInt32());
@@ -121,8 +130,10 @@ public class JsonReportTests
     private static void AssertObeys(string json)
     {
         using var document = JsonDocument.Parse(json);
-        var verdict = Schema.Evaluate(document.RootElement, new EvaluationOptions { OutputFormat = OutputFormat.List });
-        Assert.True(verdict.IsValid, string.Join('\n', (verdict.Details ?? []).Where(d => d.Errors is not null)
-            .Select(d => $"{d.InstanceLocation}: {string.Join(", ", d.Errors!.Values)}")));
+        var options = new EvaluationOptions { OutputFormat = OutputFormat.List };
+        var verdict = Schema.Evaluate(document.RootElement, options);
+        var faults = (verdict.Details ?? []).Where(detail => detail.Errors is not null)
+            .Select(detail => $"{detail.InstanceLocation}: {string.Join(", ", detail.Errors!.Values)}");
+        Assert.True(verdict.IsValid, string.Join('\n', faults));
     }
 }

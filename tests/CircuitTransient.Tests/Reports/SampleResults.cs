@@ -5,30 +5,35 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Tests.Reports;
 
-/// <summary>Results made by formula, so that reports can be tested without an engine: a capacitor is charged through
-/// a resistor and then rings against a choke.</summary>
+/// <summary>Results made by formula, so that reports can be tested without an engine: a capacitor is charged
+/// through a resistor and then rings against a choke.</summary>
 internal static class SampleResults
 {
     private static readonly TextSpan Nowhere = new(0, 0);
 
-    /// <summary>A long study with a short inrush: one requirement broken, a rating, two events, every list filled.</summary>
+    /// <summary>A long study with a short inrush: a requirement broken and every list filled.</summary>
     public static TransientResult Inrush(
-        string bus = "voltage of bus", string current = "current through Ls", string feed = "Supply",
-        string charge = "Cbus initial charge", string contactor = "Kmain", string title = "Pre-charge and bypass")
+        string bus = "voltage of bus",
+        string current = "current through Ls",
+        string feed = "Supply",
+        string charge = "Cbus initial charge",
+        string contactor = "Kmain",
+        string title = "Pre-charge and bypass")
     {
         var times = Times();
-        var voltage = Observed(bus, "V", times, [feed, charge], [t => FeedVoltage(t), t => ChargeVoltage(t)]);
-        var inrush = Observed(current, "A", times, [feed, charge], [t => FeedCurrent(t), t => ChargeCurrent(t)]);
+        var voltage = Observed(bus, "V", times, [feed, charge], [FeedVoltage, ChargeVoltage]);
+        var inrush = Observed(current, "A", times, [feed, charge], [FeedCurrent, ChargeCurrent]);
         var since = new SinceEvent(
             $"{contactor} closes",
             1.8,
-            [new("Supply", 4577), new($"Cbus charge when {contactor} closes", (inrush.Max.Value ?? 0) - 4577)]);
+            [new("Supply", 4577), new($"Cbus charge when {contactor} closes", inrush.Max.Value - 4577)]);
         inrush = inrush with
         {
             After = new(since, null),
             Samples = [new(1e-3, 0, [0, 0]), new(2.5e-3, -0.0, [1.5, null])],
         };
-        var circuit = CircuitOf(title, [(bus, "V", new VoltageBetween(3, 0)), (current, "A", new CurrentThrough(2))], current);
+        var circuit = CircuitOf(
+            title, [(bus, "V", new VoltageBetween(3, 0)), (current, "A", new CurrentThrough(2))], current);
         var peak = inrush.Max;
         return Empty(circuit, 14) with
         {
@@ -70,7 +75,11 @@ internal static class SampleResults
                 new("Kirchhoff's laws and the laws of the parts", 2e-14, 1e-9, true),
             ],
             NotJudged = [new("numerical inversion", "its own error estimate is 3e-5")],
-            Warnings = [new(7, "node `x` is touched by one part only"), new(0, "a peak lies at the end of the study")],
+            Warnings =
+            [
+                new(7, "node `x` is touched by one part only"),
+                new(0, "a peak lies at the end of the study"),
+            ],
             Cautions =
             [
                 new(CautionSeverity.Note, "Cbus holds 2.4 kJ", "common practice, no source"),
@@ -83,13 +92,13 @@ internal static class SampleResults
     /// <summary>Names that no format may trip over.</summary>
     public static TransientResult Awkward() => Inrush(
         bus: "bus, \"plus\" & <script>alert('1')</script>",
-        current: "זרם הגל 電流 🚡 in a label that goes on and on and on, far past the edge of any terminal's window",
+        current: "זרם הגל 電流 🚡 in a label that goes on and on and on, far past the edge of any terminal",
         feed: "=Feed,\"quoted\"",
         charge: "\u001b[31mred\u202e",
         contactor: "K—'main'",
         title: "</title><b>& \"x\"");
 
-    /// <summary>A study of one interval in which nothing was required, nothing switched, nothing stored.</summary>
+    /// <summary>A study of one interval in which nothing is required, switched or stored.</summary>
     public static TransientResult Bare()
     {
         ImmutableArray<double> times = [0, 1];
@@ -110,7 +119,8 @@ internal static class SampleResults
         string name, string unit, ImmutableArray<double> times, ImmutableArray<string> causes,
         ImmutableArray<Func<double, double>> waves)
     {
-        ImmutableArray<ImmutableArray<double>> byCause = [.. waves.Select(w => times.Select(w).ToImmutableArray())];
+        ImmutableArray<ImmutableArray<double>> byCause =
+            [.. waves.Select(wave => times.Select(wave).ToImmutableArray())];
         ImmutableArray<double> total = [.. times.Select((_, i) => byCause.Sum(wave => wave[i]))];
         var atMax = total.IndexOf(total.Max());
         var atMin = total.IndexOf(total.Min());
@@ -121,7 +131,8 @@ internal static class SampleResults
             false,
             [.. causes.Select((cause, i) => new Contribution(
                 cause, byCause[i][atMax], byCause[i][atMin], At(byCause[i], times, byCause[i].Max()),
-                At(byCause[i], times, byCause[i].Min()), new(total[atMax] - byCause[i][atMax], times[atMax]), null))],
+                At(byCause[i], times, byCause[i].Min()),
+                new(total[atMax] - byCause[i][atMax], times[atMax]), null))],
             null, [], total, byCause);
     }
 
@@ -129,7 +140,9 @@ internal static class SampleResults
         new(value, times[wave.IndexOf(value)]);
 
     private static Circuit CircuitOf(
-        string? title, ImmutableArray<(string Name, string Unit, Measurand Quantity)> observed, string? required) => new(
+        string? title,
+        ImmutableArray<(string Name, string Unit, Measurand Quantity)> observed,
+        string? required) => new(
         new SourceText("bullwheel-bus.cause", "resistor Rpre from b to bus : 82 Ω\n"),
         title,
         [],
@@ -145,10 +158,10 @@ internal static class SampleResults
         required is null
             ? []
             : [
-                new("voltage across Cbus at most 1.1 kV", null, "voltage across Cbus", "V", new VoltageAcross(1),
-                    new Limits(null, 1100), new(null, null), Nowhere),
-                new($"{required} at most 100 A", null, required, "A", new CurrentThrough(2), new Limits(null, 100),
-                    new(null, null), Nowhere),
+                new("voltage across Cbus at most 1.1 kV", null, "voltage across Cbus", "V",
+                    new VoltageAcross(1), new Limits(null, 1100), new(null, null), Nowhere),
+                new($"{required} at most 100 A", null, required, "A", new CurrentThrough(2),
+                    new Limits(null, 100), new(null, null), Nowhere),
             ],
         false,
         null);
