@@ -71,9 +71,10 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     /// <summary>this · <paramref name="right"/>.</summary>
     public DoubleDoubleComplexMatrix Times(DoubleDoubleMatrix right) => new(Re.Times(right), Im.Times(right));
 
-    /// <summary>Row <paramref name="row"/> from column <paramref name="start"/> on, plus f times that stretch of a row
-    /// of another matrix.</summary>
-    public void AddScaledRow(int row, DoubleDoubleComplex f, DoubleDoubleComplexMatrix x, int xRow, int start = 0)
+    /// <summary>Row <paramref name="row"/> from column <paramref name="start"/> on, plus f times that stretch
+    /// of a row of another matrix.</summary>
+    public void AddScaledRow(
+        int row, DoubleDoubleComplex f, DoubleDoubleComplexMatrix x, int xRow, int start = 0)
     {
         ArgumentNullException.ThrowIfNull(x);
         DoubleDoubleRow yRe = Re.Row(row, start);

@@ -1,7 +1,7 @@
 namespace CircuitTransient.Numerics;
 
-/// <summary>A dense real matrix of <see cref="DoubleDouble"/>s, row by row, high and low words in planes of their
-/// own. Filled by whoever makes it, then only read.</summary>
+/// <summary>A dense real matrix of <see cref="DoubleDouble"/>s, row by row, high and low words in planes of
+/// their own. Filled by whoever makes it, then only read.</summary>
 /// <param name="rows">How many rows; may be zero.</param>
 /// <param name="columns">How many columns; may be zero.</param>
 public sealed class DoubleDoubleMatrix(int rows, int columns)

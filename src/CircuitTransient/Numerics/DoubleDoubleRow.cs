@@ -4,12 +4,12 @@ using System.Runtime.Intrinsics;
 
 namespace CircuitTransient.Numerics;
 
-/// <summary>A run of double-double numbers in somebody's memory, high and low words apart, and the vector kernels on
-/// it. Four lanes whatever the machine, so that the bits do not depend on it.</summary>
+/// <summary>A run of double-double numbers in somebody's memory, high and low words apart, and the vector
+/// kernels on it. Four lanes whatever the machine, so that the bits do not depend on it.</summary>
 /// <param name="hi">The high words.</param>
 /// <param name="lo">The low words, as many.</param>
-/// <remarks>Products are added by the short form of the double-double sum: its error is 2⁻¹⁰⁴ of |x| + |y|, not of
-/// |x + y|, which is all that a backward stable elimination or rotation asks.</remarks>
+/// <remarks>Products are added by the short form of the double-double sum: its error is 2⁻¹⁰⁴ of |x| + |y|,
+/// not of |x + y|, which is all that a backward stable elimination or rotation asks.</remarks>
 public readonly ref struct DoubleDoubleRow(Span<double> hi, Span<double> lo)
 {
     private const int Lanes = 4;
@@ -41,7 +41,8 @@ public readonly ref struct DoubleDoubleRow(Span<double> hi, Span<double> lo)
     public DoubleDoubleRow Slice(int start) => new(Hi[start..], Lo[start..]);
 
     /// <summary>Some of the numbers.</summary>
-    public DoubleDoubleRow Slice(int start, int length) => new(Hi.Slice(start, length), Lo.Slice(start, length));
+    public DoubleDoubleRow Slice(int start, int length) =>
+        new(Hi.Slice(start, length), Lo.Slice(start, length));
 
     /// <summary>All numbers zero.</summary>
     public void Clear()

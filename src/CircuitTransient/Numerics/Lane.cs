@@ -54,9 +54,9 @@ internal readonly record struct Lane(Vector256<double> Hi, Vector256<double> Lo)
     }
 
     /// <summary>The lane's four numbers summed.</summary>
-    public DoubleDouble Total() =>
-        new DoubleDouble(Hi.GetElement(0), Lo.GetElement(0)) + new DoubleDouble(Hi.GetElement(1), Lo.GetElement(1))
-        + (new DoubleDouble(Hi.GetElement(2), Lo.GetElement(2)) + new DoubleDouble(Hi.GetElement(3), Lo.GetElement(3)));
+    public DoubleDouble Total() => Element(0) + Element(1) + (Element(2) + Element(3));
+
+    private DoubleDouble Element(int index) => new(Hi.GetElement(index), Lo.GetElement(index));
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private Lane Add(Vector256<double> p, Vector256<double> e)

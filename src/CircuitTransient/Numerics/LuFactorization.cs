@@ -37,7 +37,8 @@ public sealed class LuFactorization
         }
     }
 
-    /// <summary>Smallest over largest pivot magnitude; a rough measure of how near to singular. 1 for order zero.
+    /// <summary>Smallest over largest pivot magnitude; a rough measure of how near to singular. 1 for order
+    /// zero.
     /// </summary>
     public double PivotRatio
     {

@@ -1,6 +1,7 @@
 namespace CircuitTransient.Numerics;
 
-/// <summary>The check of sizes that every kernel makes first; a mismatch is our own mistake, so it throws.</summary>
+/// <summary>The check of sizes that every kernel makes first; a mismatch is our own mistake, so it
+/// throws.</summary>
 internal static class Shape
 {
     /// <summary>Throws unless both are the same.</summary>

@@ -4,8 +4,8 @@ namespace CircuitTransient.Tests.Numerics;
 
 public class LuFactorizationTests
 {
-    // Inverse of the Hilbert matrix: integers (M.-D. Choi, "Tricks or treats with the Hilbert matrix", American
-    // Mathematical Monthly 90 (1983), from memory). Its condition number at order 10 is 1.6e13.
+    // Inverse of the Hilbert matrix: integers (M.-D. Choi, "Tricks or treats with the Hilbert matrix",
+    // American Mathematical Monthly 90 (1983), from memory). Its condition number at order 10 is 1.6e13.
     [Fact]
     public void The_inverse_of_the_hilbert_matrix_comes_out_in_its_known_integers()
     {
@@ -62,7 +62,8 @@ public class LuFactorizationTests
         {
             for (int j = 0; j < 3; j++)
             {
-                Assert.True((solved[i, j] - x[i, j]).Magnitude < 1e-27); // n · condition (about 100) · 5e-32, with room
+                // n · condition (about 100) · 5e-32, with room
+                Assert.True((solved[i, j] - x[i, j]).Magnitude < 1e-27);
             }
         }
     }

@@ -22,7 +22,8 @@ internal static class SampleMatrices
         return result;
     }
 
-    /// <summary>The Frank matrix: a_ij = n + 1 − max(i, j) for j ≥ i − 1, else 0 (W. L. Frank 1958).</summary>
+    /// <summary>The Frank matrix: a_ij = n + 1 − max(i, j) for j ≥ i − 1, else 0 (W. L. Frank
+    /// 1958).</summary>
     public static DoubleDoubleMatrix Frank(int n)
     {
         DoubleDoubleMatrix result = new(n, n);
@@ -37,7 +38,8 @@ internal static class SampleMatrices
         return result;
     }
 
-    /// <summary>A random orthogonal matrix: reflections of random vectors, multiplied out in double-double.</summary>
+    /// <summary>A random orthogonal matrix: reflections of random vectors, multiplied out in
+    /// double-double.</summary>
     public static DoubleDoubleMatrix Orthogonal(int n, int seed)
     {
         DoubleDoubleMatrix result = DoubleDoubleMatrix.Identity(n);
