@@ -16,7 +16,8 @@ public static class TextDecoder
     {
         if (bytes.Length > LargestFile)
         {
-            return Refuse(name, "", "the file is over 16 MiB", "a circuit is text; repeat … end writes a large one short");
+            return Refuse(
+                name, "", "the file is over 16 MiB", "a circuit is text; repeat … end writes a large one short");
         }
 
         var end = LengthOfUtf8(bytes);
@@ -34,7 +35,8 @@ public static class TextDecoder
     private static int LengthOfUtf8(ReadOnlySpan<byte> bytes)
     {
         var end = 0;
-        while (end < bytes.Length && Rune.DecodeFromUtf8(bytes[end..], out _, out var length) == OperationStatus.Done)
+        while (end < bytes.Length
+            && Rune.DecodeFromUtf8(bytes[end..], out _, out var length) == OperationStatus.Done)
         {
             end += length;
         }
