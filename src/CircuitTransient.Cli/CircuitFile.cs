@@ -1,0 +1,51 @@
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>A circuit file that was read, or the exit status that says why not.</summary>
+/// <param name="Path">Its name as the user gave it.</param>
+/// <param name="Source">Its text; null where it could not be read.</param>
+/// <param name="Status">Success, or what kept it from being read.</param>
+public sealed record CircuitFile(string Path, SourceText? Source, int Status)
+{
+    /// <summary>Reads a file; what is wrong with it has been said when this returns.</summary>
+    public static CircuitFile Read(string path, Streams streams)
+    {
+        try
+        {
+            var text = Decode(path, path);
+            streams.Report(text.Diagnostics);
+            return new(path, text.Value, text.Succeeded ? ExitStatus.Success : ExitStatus.Mistake);
+        }
+        catch (Exception trouble) when (trouble.IsFileTrouble())
+        {
+            var reason = Directory.Exists(path) ? "it is a folder" : FileTrouble.Reason(trouble);
+            streams.Complain($"{path} cannot be read: {reason}");
+            return new(path, null, ExitStatus.FileTrouble);
+        }
+    }
+
+    /// <summary>Reads a file that the circuit names, found beside the circuit.</summary>
+    public Outcome<SourceText> ReadBeside(string name)
+    {
+        var folder = System.IO.Path.GetDirectoryName(Path) ?? "";
+        return Decode(name, System.IO.Path.Combine(folder, name));
+    }
+
+    private static Outcome<SourceText> Decode(string name, string path)
+    {
+        using var stream = new FileStream(path, FileMode.Open, FileAccess.Read, FileShare.ReadWrite, bufferSize: 0);
+        var bytes = new byte[1 << 16];
+        var length = 0;
+        while (length <= TextDecoder.LargestFile && stream.Read(bytes.AsSpan(length)) is > 0 and var count)
+        {
+            length += count;
+            if (length == bytes.Length)
+            {
+                Array.Resize(ref bytes, 2 * length);
+            }
+        }
+
+        return TextDecoder.Decode(name, bytes.AsSpan(0, length));
+    }
+}

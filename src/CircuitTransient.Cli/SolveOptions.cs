@@ -1,0 +1,10 @@
+namespace CircuitTransient.Cli;
+
+/// <summary>What <c>solve</c> was asked for besides its files.</summary>
+/// <param name="Analysis">What the analysis itself is to do.</param>
+/// <param name="Folder">Where the folders of results go; null where no files are wanted.</param>
+/// <param name="IsJson">Whether the results document takes the place of the summary.</param>
+/// <param name="IsQuiet">Whether there is no summary.</param>
+/// <param name="IsStrict">Whether warnings and passed linear ranges count as broken requirements.</param>
+public sealed record SolveOptions(
+    AnalysisOptions Analysis, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict);

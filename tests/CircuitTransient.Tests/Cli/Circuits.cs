@@ -1,0 +1,27 @@
+namespace CircuitTransient.Tests.Cli;
+
+/// <summary>Circuits for the tests of the command line, each with one exit status.</summary>
+internal static class Circuits
+{
+    public const string Holding =
+        """
+        source    Feed at a : 10 V
+        resistor  R1 from a to b : 1 kΩ
+        capacitor C1 from b to ground : 1 µF
+        require voltage of b at most 11 V
+        until 5 ms
+        """;
+
+    public const string Mistaken = "resistor R1 from a to ground : 1\n";
+
+    // Two ideal voltage sources in parallel that disagree.
+    public const string WithoutUniqueSolution =
+        """
+        source   Feed at a : 10 V
+        source   Tie at a : 9 V
+        resistor R1 from a to ground : 1 kΩ
+        until 5 ms
+        """;
+
+    public static string Broken => Holding.Replace("at most 11 V", "at most 5 V", StringComparison.Ordinal);
+}
