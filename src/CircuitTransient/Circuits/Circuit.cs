@@ -10,8 +10,10 @@ namespace CircuitTransient.Circuits;
 /// <param name="Nodes">Node names; the reference conductor is node 0.</param>
 /// <param name="Parts">All parts, in the order written.</param>
 /// <param name="Couplings">Mutual inductances.</param>
-/// <param name="Parameters">Named values with a tolerance and every other toleranced value: what a study may vary.</param>
-/// <param name="Observations">What is observed; never empty (every node voltage where nothing was asked).</param>
+/// <param name="Parameters">Named values with a tolerance and every other toleranced value: what a study may
+/// vary.</param>
+/// <param name="Observations">What is observed; never empty (every node voltage where nothing was
+/// asked).</param>
 /// <param name="Requirements">What is required.</param>
 /// <param name="StartsSettled">Whether constants and sines have been on for ever before t = 0.</param>
 /// <param name="Until">End of the study in seconds; null where it follows from the slowest mode.</param>
@@ -29,7 +31,8 @@ public sealed record Circuit(
     double? Until);
 
 /// <summary>A value a study may vary: a named value or a part's own value that has a tolerance.</summary>
-/// <param name="Name">The user's name: a value's, or a part's with what of it (<c>Rpre</c>, <c>Cbus initial charge</c>).</param>
+/// <param name="Name">The user's name: a value's, or a part's with what of it (<c>Rpre</c>, <c>Cbus initial
+/// charge</c>).</param>
 /// <param name="Nominal">Nominal value in SI.</param>
 /// <param name="Tolerance">Its tolerance, null for a plain named value.</param>
 /// <param name="Span">Where it stands.</param>
@@ -69,4 +72,5 @@ public sealed record CallFormula(string Function, Formula Argument) : Formula;
 /// <param name="Value">Coupling factor, or mutual inductance in henries.</param>
 /// <param name="IsFactor">Whether <paramref name="Value"/> is a factor: M = k √(L1 L2).</param>
 /// <param name="Span">Where it stands.</param>
-public sealed record Coupling(string Name, int First, int Second, Quantity Value, bool IsFactor, TextSpan Span);
+public sealed record Coupling(
+    string Name, int First, int Second, Quantity Value, bool IsFactor, TextSpan Span);

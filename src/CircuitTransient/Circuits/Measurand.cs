@@ -33,7 +33,8 @@ public sealed record RateOfChange(Measurand Of) : Measurand;
 /// <summary>A figure read off a waveform; its value is one number.</summary>
 /// <param name="Kind">Which.</param>
 /// <param name="Of">The waveform.</param>
-/// <param name="Argument">Band (fraction) of a settling time, level of a time after which it stays below; else null.</param>
+/// <param name="Argument">Band (fraction) of a settling time, level of a time after which it stays below;
+/// else null.</param>
 public sealed record Figure(FigureOf Kind, Measurand Of, double? Argument) : Measurand;
 
 /// <summary>The figures that are read off a waveform.</summary>
@@ -78,7 +79,8 @@ public sealed record Observation(string Name, string Unit, Measurand Quantity, W
 /// <param name="Name">The name of the quantity.</param>
 /// <param name="Unit">Its unit.</param>
 public sealed record Requirement(
-    string Statement, string? Reason, string Name, string Unit, Measurand Quantity, Bound Bound, Window Window,
+    string Statement, string? Reason, string Name, string Unit, Measurand Quantity, Bound Bound,
+    Window Window,
     TextSpan Span);
 
 /// <summary>The bound of a requirement.</summary>

@@ -3,8 +3,9 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>A part between two nodes. Its voltage is that of <see cref="From"/> less that of <see cref="To"/>;
-/// its current is positive flowing from <see cref="From"/> to <see cref="To"/> inside it.</summary>
+/// <summary>A part between two nodes. Its voltage is that of <see cref="From"/> less that of
+/// <see cref="To"/>; its current is positive flowing from <see cref="From"/> to <see cref="To"/> inside
+/// it.</summary>
 public abstract record Part
 {
     /// <summary>The user's name.</summary>
@@ -39,7 +40,8 @@ public sealed record Resistor(Quantity Resistance) : Part
 
 /// <summary>A capacitor.</summary>
 /// <param name="Capacitance">In farads.</param>
-/// <param name="InitialVoltage">What it is charged to at t = 0⁻, in volts; null where nothing was stated.</param>
+/// <param name="InitialVoltage">What it is charged to at t = 0⁻, in volts; null where nothing was
+/// stated.</param>
 public sealed record Capacitor(Quantity Capacitance, Quantity? InitialVoltage) : Part
 {
     /// <inheritdoc/>
@@ -74,14 +76,16 @@ public sealed record CurrentSource(Wave Wave) : Part
 /// <summary>A source whose voltage or current is a multiple of another voltage or current.</summary>
 /// <param name="SetsVoltage">Whether it sets its voltage (else its current).</param>
 /// <param name="Gain">The multiple, in SI.</param>
-/// <param name="Control">What it follows: a node voltage, a voltage between nodes or a part's current.</param>
+/// <param name="Control">What it follows: a node voltage, a voltage between nodes or a part's
+/// current.</param>
 public sealed record DependentSource(bool SetsVoltage, Quantity Gain, Measurand Control) : Part
 {
     /// <inheritdoc/>
     public override string Kind => "dependent source";
 }
 
-/// <summary>An ideal transformer; <see cref="Part.From"/> and <see cref="Part.To"/> are the primary's.</summary>
+/// <summary>An ideal transformer; <see cref="Part.From"/> and <see cref="Part.To"/> are the
+/// primary's.</summary>
 /// <param name="SecondaryFrom">First node of the secondary.</param>
 /// <param name="SecondaryTo">Second node of the secondary.</param>
 /// <param name="Ratio">Primary voltage over secondary voltage.</param>
@@ -97,7 +101,8 @@ public sealed record IdealTransformer(int SecondaryFrom, int SecondaryTo, double
 /// <param name="OpenResistance">In ohms; null for an ideal gap.</param>
 /// <param name="Events">Its events in time order, alternating.</param>
 public sealed record Switch(
-    bool StartsClosed, Quantity? ClosedResistance, Quantity? OpenResistance, ImmutableArray<SwitchEvent> Events) : Part
+    bool StartsClosed, Quantity? ClosedResistance, Quantity? OpenResistance,
+    ImmutableArray<SwitchEvent> Events) : Part
 {
     /// <inheritdoc/>
     public override string Kind => "switch";
@@ -123,7 +128,8 @@ public sealed record AtInstant(Instant Instant) : Trigger;
 /// <param name="Level">In SI.</param>
 /// <param name="InMagnitude">Whether the magnitude is watched.</param>
 /// <param name="After">Not watched before this instant.</param>
-public sealed record WhenCrosses(Measurand Quantity, bool Rises, double Level, bool InMagnitude, Instant? After) : Trigger;
+public sealed record WhenCrosses(
+    Measurand Quantity, bool Rises, double Level, bool InMagnitude, Instant? After) : Trigger;
 
 /// <summary>An instant: a delay after t = 0 or after an event.</summary>
 /// <param name="Delay">In seconds.</param>

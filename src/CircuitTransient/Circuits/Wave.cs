@@ -4,12 +4,15 @@ namespace CircuitTransient.Circuits;
 
 /// <summary>A source's value over time: the sum of its pieces.</summary>
 /// <param name="Pieces">In the order written; a pulse is a rise and a delayed fall.</param>
-/// <param name="Scale">A factor on the whole wave that carries the tolerance of a constant source; nominally 1.</param>
+/// <param name="Scale">A factor on the whole wave that carries the tolerance of a constant source; nominally
+/// 1.</param>
 public sealed record Wave(ImmutableArray<WavePiece> Pieces, Quantity Scale);
 
-/// <summary>One piece of a wave: (A + S·τ)·e^(−d·τ)·cos(ω·τ + φ) with τ = t − Start, for Start ≤ t &lt; End; zero elsewhere.
+/// <summary>One piece of a wave: (A + S·τ)·e^(−d·τ)·cos(ω·τ + φ) with τ = t − Start, for Start ≤ t &lt; End;
+/// zero elsewhere.
 /// A step, a corner, a sine, a decay are all of this form.</summary>
-/// <param name="Start">In seconds; negative infinity is not allowed, see <paramref name="IsPerpetual"/>.</param>
+/// <param name="Start">In seconds; negative infinity is not allowed, see
+/// <paramref name="IsPerpetual"/>.</param>
 /// <param name="End">In seconds; positive infinity where it never ends.</param>
 /// <param name="Amplitude">A, in volts or amperes.</param>
 /// <param name="Slope">S, in volts or amperes per second.</param>
@@ -17,7 +20,8 @@ public sealed record Wave(ImmutableArray<WavePiece> Pieces, Quantity Scale);
 /// <param name="AngularFrequency">ω in rad/s, zero for a piece that does not oscillate.</param>
 /// <param name="Phase">φ in radians at τ = 0.</param>
 /// <param name="Label">What the piece is in the user's words: <c>step at 2 ms</c>.</param>
-/// <param name="IsPerpetual">Whether it has been on for ever in a settled start (a constant or a sine without a start).</param>
+/// <param name="IsPerpetual">Whether it has been on for ever in a settled start (a constant or a sine without
+/// a start).</param>
 public sealed record WavePiece(
     double Start,
     double End,

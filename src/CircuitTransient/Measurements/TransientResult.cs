@@ -3,14 +3,16 @@ using CircuitTransient.Circuits;
 
 namespace CircuitTransient.Measurements;
 
-/// <summary>Everything a user is told of one circuit: the figures behind every file and every line of output.</summary>
+/// <summary>Everything a user is told of one circuit: the figures behind every file and every line of
+/// output.</summary>
 /// <param name="Circuit">The circuit that was solved.</param>
 /// <param name="Until">End of the study in seconds.</param>
 /// <param name="UntilReason">Why it ends there, where no <c>until</c> was written; else null.</param>
 /// <param name="Causes">The causes, in the order of the parts.</param>
 /// <param name="Intervals">The intervals between switchings.</param>
 /// <param name="Events">Every switching in order, with what each switch saw.</param>
-/// <param name="SampleTimes">Instants of the waveforms in seconds; a jump's instant stands twice: before and after.</param>
+/// <param name="SampleTimes">Instants of the waveforms in seconds; a jump's instant stands twice: before and
+/// after.</param>
 /// <param name="Observations">The observed waveforms with their extremes and causes.</param>
 /// <param name="Figures">Figures read off waveforms.</param>
 /// <param name="Requirements">The verdict on each requirement.</param>
@@ -95,23 +97,30 @@ public sealed record Pole(double Re, double Im, int Multiplicity);
 
 /// <summary>An impulse through a part (coulombs) or across it (volt-seconds).</summary>
 /// <param name="Remedy">Which real part would make it finite.</param>
-public sealed record ImpulseResult(double Time, string Part, double? Charge, double? VoltSeconds, string? Remedy);
+public sealed record ImpulseResult(
+    double Time, string Part, double? Charge, double? VoltSeconds, string? Remedy);
 
 /// <summary>A switching, with what the switch saw; null where undetermined.</summary>
 public sealed record EventResult(
-    double Time, string Switch, bool Closes, double? VoltageBefore, double? VoltageAfter, double? CurrentBefore,
+    double Time, string Switch, bool Closes, double? VoltageBefore, double? VoltageAfter,
+    double? CurrentBefore,
     double? CurrentAfter, string? Remark);
 
 /// <summary>An observed quantity over the study.</summary>
 /// <param name="Start">Value just after the window's start.</param>
 /// <param name="End">Value at the window's end.</param>
-/// <param name="Final">Limit for t → ∞ of the last interval with its sources as they stand; null where there is none.</param>
-/// <param name="EndsRising">Whether the greatest magnitude lies at the end of the study and still rises.</param>
-/// <param name="Contributions">One for each cause; quadratic quantities have one more, named <c>joint</c>.</param>
+/// <param name="Final">Limit for t → ∞ of the last interval with its sources as they stand; null where there
+/// is none.</param>
+/// <param name="EndsRising">Whether the greatest magnitude lies at the end of the study and still
+/// rises.</param>
+/// <param name="Contributions">One for each cause; quadratic quantities have one more, named
+/// <c>joint</c>.</param>
 /// <param name="After">The breakdown since an event; null where not asked for or not defined.</param>
 /// <param name="Samples">The instants asked for with <c>--at</c>.</param>
-/// <param name="Total">The waveform at <see cref="TransientResult.SampleTimes"/>; NaN where undetermined.</param>
-/// <param name="ByCause">The waveform of each contribution, in the order of <paramref name="Contributions"/>.</param>
+/// <param name="Total">The waveform at <see cref="TransientResult.SampleTimes"/>; NaN where
+/// undetermined.</param>
+/// <param name="ByCause">The waveform of each contribution, in the order of
+/// <paramref name="Contributions"/>.</param>
 public sealed record ObservationResult(
     string Name,
     string Unit,
@@ -139,10 +148,12 @@ public sealed record ObservationResult(
 /// <param name="MaxWithout">Greatest value of the total without it.</param>
 /// <param name="MinWithout">Least value of the total without it.</param>
 public sealed record Contribution(
-    string Cause, double? AtMax, double? AtMin, TimedValue? OwnMax, TimedValue? OwnMin, TimedValue? MaxWithout,
+    string Cause, double? AtMax, double? AtMin, TimedValue? OwnMax, TimedValue? OwnMin,
+    TimedValue? MaxWithout,
     TimedValue? MinWithout);
 
-/// <summary>The breakdown since an event, at both extremes; null where the event comes after the extreme.</summary>
+/// <summary>The breakdown since an event, at both extremes; null where the event comes after the
+/// extreme.</summary>
 public sealed record ContributionsAfter(SinceEvent? AtMax, SinceEvent? AtMin);
 
 /// <summary>What the stored quantities at an event and the sources from then on have in a value.</summary>
@@ -151,7 +162,8 @@ public sealed record SinceEvent(string Event, double Time, ImmutableArray<CauseV
 /// <summary>A cause and its value.</summary>
 public sealed record CauseValue(string Cause, double? Value);
 
-/// <summary>An exact value at an instant asked for; contributions in the order of the observation's.</summary>
+/// <summary>An exact value at an instant asked for; contributions in the order of the
+/// observation's.</summary>
 public sealed record SampleAt(double Time, double? Value, ImmutableArray<double?> ByCause);
 
 /// <summary>A figure read off a waveform.</summary>
@@ -176,8 +188,10 @@ public sealed record PartResult(
 public sealed record RatingResult(double Rated, string Unit, double? Reached, double? Used, bool Holds);
 
 /// <summary>A <c>linear up to</c> limit against what was reached.</summary>
-/// <param name="Direction">Which way the result errs past the limit, in words; null where the kind does not tell.</param>
-public sealed record LinearUpToResult(double Declared, string Unit, double? Reached, bool Holds, string? Direction);
+/// <param name="Direction">Which way the result errs past the limit, in words; null where the kind does not
+/// tell.</param>
+public sealed record LinearUpToResult(
+    double Declared, string Unit, double? Reached, bool Holds, string? Direction);
 
 /// <summary>One check every solve runs: the worst relative figure against what is allowed.</summary>
 public sealed record SelfCheck(string Name, double Worst, double Allowed, bool Holds);

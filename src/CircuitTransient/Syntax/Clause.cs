@@ -36,7 +36,8 @@ public sealed record AtInstantSyntax(TextSpan Span, TimeSyntax Time) : TriggerSy
 
 /// <summary><c>when QUANTITY rises above|falls below LEVEL [in magnitude] [after T]</c>.</summary>
 public sealed record WhenCrossesSyntax(
-    TextSpan Span, QuantitySyntax Quantity, bool Rises, ExpressionSyntax Level, bool InMagnitude, TimeSyntax? After)
+    TextSpan Span, QuantitySyntax Quantity, bool Rises, ExpressionSyntax Level, bool InMagnitude,
+    TimeSyntax? After)
     : TriggerSyntax(Span);
 
 /// <summary><c>at next current zero</c> (no limit) or <c>once its current is at most I</c>.</summary>
@@ -46,18 +47,21 @@ public sealed record CutSyntax(TextSpan Span, ExpressionSyntax? Limit);
 public abstract record BoundSyntax(TextSpan Span);
 
 /// <summary><c>at most X [in magnitude]</c>, <c>at least X</c>, <c>between X and Y</c>.</summary>
-public sealed record LimitsSyntax(TextSpan Span, ExpressionSyntax? Lower, ExpressionSyntax? Upper, bool InMagnitude)
+public sealed record LimitsSyntax(
+    TextSpan Span, ExpressionSyntax? Lower, ExpressionSyntax? Upper, bool InMagnitude)
     : BoundSyntax(Span);
 
 /// <summary><c>settling of Q to X within P by T</c>.</summary>
-public sealed record SettlingSyntax(TextSpan Span, ExpressionSyntax Target, ExpressionSyntax Within, TimeSyntax By)
+public sealed record SettlingSyntax(
+    TextSpan Span, ExpressionSyntax Target, ExpressionSyntax Within, TimeSyntax By)
     : BoundSyntax(Span);
 
 /// <summary>A measured quantity as written.</summary>
 public abstract record QuantitySyntax(TextSpan Span);
 
 /// <summary><c>voltage of N</c>, <c>voltage from A to B</c>.</summary>
-public sealed record NodeVoltageSyntax(TextSpan Span, NameSyntax Node, NameSyntax? Against) : QuantitySyntax(Span);
+public sealed record NodeVoltageSyntax(
+    TextSpan Span, NameSyntax Node, NameSyntax? Against) : QuantitySyntax(Span);
 
 /// <summary>The quantities that belong to one part.</summary>
 public enum PartQuantityKind
@@ -88,7 +92,8 @@ public enum PartQuantityKind
 }
 
 /// <summary>A quantity of one part.</summary>
-public sealed record PartQuantitySyntax(TextSpan Span, PartQuantityKind Kind, NameSyntax Part) : QuantitySyntax(Span);
+public sealed record PartQuantitySyntax(
+    TextSpan Span, PartQuantityKind Kind, NameSyntax Part) : QuantitySyntax(Span);
 
 /// <summary><c>rate of change of QUANTITY</c>.</summary>
 public sealed record RateSyntax(TextSpan Span, QuantitySyntax Of) : QuantitySyntax(Span);
@@ -122,6 +127,8 @@ public enum FigureKind
 }
 
 /// <summary>A figure read off a waveform.</summary>
-/// <param name="Argument">The band of a settling time or the level of a time after which it stays below.</param>
-public sealed record FigureSyntax(TextSpan Span, FigureKind Kind, QuantitySyntax Of, ExpressionSyntax? Argument)
+/// <param name="Argument">The band of a settling time or the level of a time after which it stays
+/// below.</param>
+public sealed record FigureSyntax(
+    TextSpan Span, FigureKind Kind, QuantitySyntax Of, ExpressionSyntax? Argument)
     : QuantitySyntax(Span);

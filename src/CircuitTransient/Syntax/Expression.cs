@@ -10,8 +10,10 @@ public abstract record ExpressionSyntax(TextSpan Span);
 /// <param name="Value">The number times its prefix, in the SI unit.</param>
 /// <param name="Dimension">What the unit measures; <see cref="Text.Dimension.None"/> without a unit.</param>
 /// <param name="HasUnit">Whether a unit was written (a degree, radian or per cent counts).</param>
-/// <param name="Mark">The text, where it reads as a marking code of IEC 60062 such as <c>4k7</c>, else null.</param>
-public sealed record NumberSyntax(TextSpan Span, double Value, Dimension Dimension, bool HasUnit, string? Mark = null)
+/// <param name="Mark">The text, where it reads as a marking code of IEC 60062 such as <c>4k7</c>, else
+/// null.</param>
+public sealed record NumberSyntax(
+    TextSpan Span, double Value, Dimension Dimension, bool HasUnit, string? Mark = null)
     : ExpressionSyntax(Span);
 
 /// <summary>The name of a value, of a counter, or <c>pi</c>.</summary>
@@ -25,7 +27,8 @@ public sealed record BinarySyntax(TextSpan Span, char Operator, ExpressionSyntax
     : ExpressionSyntax(Span);
 
 /// <summary><c>sqrt(…)</c>, <c>exp(…)</c> or <c>ln(…)</c>.</summary>
-public sealed record CallSyntax(TextSpan Span, string Function, ExpressionSyntax Argument) : ExpressionSyntax(Span);
+public sealed record CallSyntax(
+    TextSpan Span, string Function, ExpressionSyntax Argument) : ExpressionSyntax(Span);
 
 /// <summary>A value with its tolerance, if one was written.</summary>
 public sealed record ToleratedSyntax(ExpressionSyntax Value, ToleranceSyntax? Tolerance);
@@ -39,7 +42,8 @@ public sealed record ToleranceSyntax(
     TextSpan Span, ExpressionSyntax Lower, ExpressionSyntax Upper, bool IsAbsolute, bool IsNormal);
 
 /// <summary>A wave as written: signed pieces that add.</summary>
-public sealed record WaveSyntax(TextSpan Span, ImmutableArray<WaveTermSyntax> Terms, ToleranceSyntax? Tolerance);
+public sealed record WaveSyntax(
+    TextSpan Span, ImmutableArray<WaveTermSyntax> Terms, ToleranceSyntax? Tolerance);
 
 /// <summary>One piece of a wave with its sign.</summary>
 public sealed record WaveTermSyntax(bool IsSubtracted, WavePieceSyntax Piece);
@@ -51,7 +55,8 @@ public abstract record WavePieceSyntax(TextSpan Span);
 public sealed record ConstantSyntax(TextSpan Span, ExpressionSyntax Level) : WavePieceSyntax(Span);
 
 /// <summary><c>step of V at T</c>.</summary>
-public sealed record StepSyntax(TextSpan Span, ExpressionSyntax Level, TimeSyntax? At) : WavePieceSyntax(Span);
+public sealed record StepSyntax(
+    TextSpan Span, ExpressionSyntax Level, TimeSyntax? At) : WavePieceSyntax(Span);
 
 /// <summary><c>rectangular pulse of V from T1 to T2</c>.</summary>
 public sealed record PulseSyntax(TextSpan Span, ExpressionSyntax Level, TimeSyntax? From, TimeSyntax To)
@@ -69,19 +74,24 @@ public sealed record RampSyntax(TextSpan Span, ExpressionSyntax Level, TimeSynta
 /// <summary><c>sine|cosine of V [rms] at F phase A from T1 until T2 decaying in TAU</c>.</summary>
 public sealed record SineSyntax(
     TextSpan Span, bool IsCosine, ExpressionSyntax Amplitude, bool IsRms, ExpressionSyntax Frequency,
-    ExpressionSyntax? Phase, TimeSyntax? From, TimeSyntax? Until, ExpressionSyntax? TimeConstant) : WavePieceSyntax(Span);
-
-/// <summary><c>decay of V in TAU from T</c>.</summary>
-public sealed record DecaySyntax(TextSpan Span, ExpressionSyntax Level, ExpressionSyntax TimeConstant, TimeSyntax? From)
+    ExpressionSyntax? Phase, TimeSyntax? From, TimeSyntax? Until, ExpressionSyntax? TimeConstant)
     : WavePieceSyntax(Span);
 
-/// <summary><c>double exponential of V front T1 half-value T2 from T</c>, also written <c>impulse of V 1.2/50 µs</c>.</summary>
+/// <summary><c>decay of V in TAU from T</c>.</summary>
+public sealed record DecaySyntax(
+    TextSpan Span, ExpressionSyntax Level, ExpressionSyntax TimeConstant, TimeSyntax? From)
+    : WavePieceSyntax(Span);
+
+/// <summary><c>double exponential of V front T1 half-value T2 from T</c>, also written <c>impulse of V 1.2/50
+/// µs</c>.</summary>
 public sealed record ImpulseSyntax(
-    TextSpan Span, ExpressionSyntax Peak, ExpressionSyntax Front, ExpressionSyntax HalfValue, TimeSyntax? From)
+    TextSpan Span, ExpressionSyntax Peak, ExpressionSyntax Front, ExpressionSyntax HalfValue,
+    TimeSyntax? From)
     : WavePieceSyntax(Span);
 
 /// <summary><c>straight lines (0 s, 0 V) (1 ms, 5 V)</c>.</summary>
-public sealed record StraightLinesSyntax(TextSpan Span, ImmutableArray<PointSyntax> Points) : WavePieceSyntax(Span);
+public sealed record StraightLinesSyntax(
+    TextSpan Span, ImmutableArray<PointSyntax> Points) : WavePieceSyntax(Span);
 
 /// <summary>A point of straight lines.</summary>
 public sealed record PointSyntax(TextSpan Span, ExpressionSyntax Time, ExpressionSyntax Level);

@@ -15,10 +15,20 @@ public abstract record Statement(TextSpan Span);
 /// <param name="Span">Where it stands.</param>
 /// <param name="Index">The bracketed index of a name in a repetition, such as <c>[k+1]</c>.</param>
 /// <param name="IsQuoted">Whether it was written in quotes.</param>
-public sealed record NameSyntax(string Text, TextSpan Span, IndexSyntax? Index = null, bool IsQuoted = false);
+/// <param name="Owner">The placed assembly it stands in: <c>Stage1</c> of <c>Stage1/R1</c>; <paramref name="Text"/> is
+/// then the last name alone.</param>
+public sealed record NameSyntax(
+    string Text, TextSpan Span, IndexSyntax? Index = null, bool IsQuoted = false, NameSyntax? Owner = null);
 
 /// <summary>A bracketed index: a number, or a counter with an offset (<c>[k-1]</c>).</summary>
 public sealed record IndexSyntax(string? Counter, int Offset, TextSpan Span);
+
+/// <summary>A statement that could not be read, kept so that nothing is said about names it would have made.</summary>
+/// <param name="KeyWord">Its first word: <c>resistor</c>, <c>value</c>.</param>
+/// <param name="Name">The name it gives, if that far it could be read.</param>
+/// <param name="Mentions">Every name and whole number in it: nodes it may touch, parts it may speak of.</param>
+public sealed record UnreadableStatement(
+    TextSpan Span, string KeyWord, NameSyntax? Name, ImmutableArray<string> Mentions) : Statement(Span);
 
 /// <summary><c>circuit "title"</c>.</summary>
 public sealed record TitleStatement(TextSpan Span, string Title) : Statement(Span);
@@ -70,7 +80,8 @@ public sealed record SwitchStatement(
 
 /// <summary><c>coupling NAME of COIL and COIL : factor or mutual inductance</c>.</summary>
 public sealed record CouplingStatement(
-    TextSpan Span, NameSyntax Name, NameSyntax First, NameSyntax Second, ToleratedSyntax Value) : Statement(Span);
+    TextSpan Span, NameSyntax Name, NameSyntax First, NameSyntax Second, ToleratedSyntax Value)
+    : Statement(Span);
 
 /// <summary><c>transformer NAME primary from A to B, secondary from C to D : turns N1 to N2</c>.</summary>
 public sealed record TransformerStatement(
@@ -84,7 +95,8 @@ public sealed record ObserveStatement(
 
 /// <summary><c>require QUANTITY BOUND from T to T because "reason"</c>.</summary>
 public sealed record RequireStatement(
-    TextSpan Span, QuantitySyntax Quantity, BoundSyntax Bound, WindowSyntax Window, string? Reason) : Statement(Span);
+    TextSpan Span, QuantitySyntax Quantity, BoundSyntax Bound, WindowSyntax Window, string? Reason)
+    : Statement(Span);
 
 /// <summary><c>start as stated</c> or <c>start settled</c>.</summary>
 public sealed record StartStatement(TextSpan Span, bool IsSettled) : Statement(Span);
@@ -103,9 +115,12 @@ public sealed record AssemblyStatement(
 
 /// <summary><c>place ASSEMBLY as NAME with terminal = node, value = expression</c>.</summary>
 public sealed record PlaceStatement(
-    TextSpan Span, NameSyntax Assembly, NameSyntax Name, ImmutableArray<AssignmentSyntax> Assignments) : Statement(Span);
+    TextSpan Span, NameSyntax Assembly, NameSyntax Name, ImmutableArray<AssignmentSyntax> Assignments)
+    : Statement(Span);
 
-/// <summary><c>inner = outer</c> of a placed assembly: a node for a terminal, an expression for a value.</summary>
+/// <summary><c>inner = outer</c> of a placed assembly: a node for a terminal, an expression for a
+/// value.</summary>
 /// <param name="Node">The right side read as a name; null where it can only be an expression.</param>
 /// <param name="Value">The right side read as an expression; null where it can only be a name.</param>
-public sealed record AssignmentSyntax(TextSpan Span, NameSyntax Inner, NameSyntax? Node, ToleratedSyntax? Value);
+public sealed record AssignmentSyntax(
+    TextSpan Span, NameSyntax Inner, NameSyntax? Node, ToleratedSyntax? Value);

@@ -15,14 +15,17 @@ public enum Severity
 /// <param name="Source">The text it stands in.</param>
 /// <param name="Span">The smallest run of characters at fault.</param>
 /// <param name="Message">A headline that stands alone, lower case, without a full stop.</param>
-/// <param name="Advice">What to do, ready to paste where possible; null where the message says it all.</param>
-public sealed record Diagnostic(Severity Severity, SourceText Source, TextSpan Span, string Message, string? Advice)
+/// <param name="Advice">What to do, ready to paste where possible; null where the message says it
+/// all.</param>
+public sealed record Diagnostic(
+    Severity Severity, SourceText Source, TextSpan Span, string Message, string? Advice)
 {
     /// <summary>An error at a place.</summary>
     public static Diagnostic Error(SourceText source, TextSpan span, string message, string? advice = null) =>
         new(Severity.Error, source, span, message, advice);
 
     /// <summary>A warning at a place.</summary>
-    public static Diagnostic Warning(SourceText source, TextSpan span, string message, string? advice = null) =>
+    public static Diagnostic Warning(
+        SourceText source, TextSpan span, string message, string? advice = null) =>
         new(Severity.Warning, source, span, message, advice);
 }

@@ -1,6 +1,7 @@
 namespace CircuitTransient.Text;
 
-/// <summary>What a value measures, as exponents of volt, ampere and second; angles and fractions have none.</summary>
+/// <summary>What a value measures, as exponents of volt, ampere and second; angles and fractions have
+/// none.</summary>
 public readonly record struct Dimension(int Volt, int Ampere, int Second)
 {
     /// <summary>A pure number.</summary>

@@ -3,7 +3,8 @@ using System.Diagnostics.CodeAnalysis;
 
 namespace CircuitTransient.Text;
 
-/// <summary>What a stage returns: a value, or the errors that kept it from one; warnings come with either.</summary>
+/// <summary>What a stage returns: a value, or the errors that kept it from one; warnings come with
+/// either.</summary>
 public sealed record Outcome<T>(T? Value, ImmutableArray<Diagnostic> Diagnostics)
     where T : class
 {

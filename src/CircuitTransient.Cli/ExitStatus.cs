@@ -1,0 +1,26 @@
+namespace CircuitTransient.Cli;
+
+/// <summary>What the process ends with; the higher, the worse.</summary>
+public static class ExitStatus
+{
+    /// <summary>Solved; all requirements and ratings hold.</summary>
+    public const int Success = 0;
+
+    /// <summary>Solved; a requirement or rating is broken.</summary>
+    public const int RequirementBroken = 1;
+
+    /// <summary>The circuit file or the command line is wrong.</summary>
+    public const int Mistake = 2;
+
+    /// <summary>Some interval has no unique solution.</summary>
+    public const int NoUniqueSolution = 3;
+
+    /// <summary>A self-check failed.</summary>
+    public const int SelfCheckFailed = 4;
+
+    /// <summary>A file could not be read or written.</summary>
+    public const int FileTrouble = 5;
+
+    /// <summary>Stopped by Ctrl-C.</summary>
+    public const int Interrupted = 130;
+}

@@ -1,0 +1,25 @@
+using System.Text;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>Where a run writes: results to <see cref="Output"/>, mistakes, warnings and progress to
+/// <see cref="Error"/>.</summary>
+public sealed record Streams(TextWriter Output, TextWriter Error, bool ErrorIsTerminal = false) : IDisposable
+{
+    private static readonly UTF8Encoding Encoding = new(encoderShouldEmitUTF8Identifier: false);
+
+    /// <summary>The streams of this process. A pipe closed by its reader swallows the
+    /// rest.</summary>
+    public static Streams OfProcess() =>
+        new(
+            new StreamWriter(Console.OpenStandardOutput(), Encoding, bufferSize: 1 << 16) { NewLine = "\n" },
+            new StreamWriter(Console.OpenStandardError(), Encoding) { NewLine = "\n", AutoFlush = true },
+            !Console.IsErrorRedirected);
+
+    /// <inheritdoc/>
+    public void Dispose()
+    {
+        Output.Dispose();
+        Error.Dispose();
+    }
+}

@@ -1,0 +1,55 @@
+using System.Collections.Concurrent;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>A file under its temporary name: it becomes the real one by a move, or is removed.</summary>
+public sealed class UnfinishedFile : IDisposable
+{
+    // The one piece of state of the process: what an interruption has to sweep away.
+    private static readonly ConcurrentDictionary<string, byte> Unfinished = new(StringComparer.Ordinal);
+
+    private readonly string path;
+    private readonly string temporaryPath;
+
+    /// <summary>Writes the whole content beside its place.</summary>
+    public UnfinishedFile(string path, ReadOnlySpan<byte> content)
+    {
+        this.path = path;
+        temporaryPath = $"{path}.{Environment.ProcessId}.unfinished";
+        Unfinished[temporaryPath] = 0;
+        try
+        {
+            File.WriteAllBytes(temporaryPath, content);
+        }
+        catch
+        {
+            Dispose();
+            throw;
+        }
+    }
+
+    /// <summary>Removes what is unfinished anywhere in the process.</summary>
+    public static void RemoveAll()
+    {
+        foreach (var temporary in Unfinished.Keys)
+        {
+            File.Delete(temporary);
+        }
+    }
+
+    /// <summary>Puts the file in its place, over what stood there.</summary>
+    public void Finish()
+    {
+        File.Move(temporaryPath, path, overwrite: true);
+        Unfinished.TryRemove(temporaryPath, out _);
+    }
+
+    /// <summary>Removes the file if it was not finished.</summary>
+    public void Dispose()
+    {
+        if (Unfinished.TryRemove(temporaryPath, out _))
+        {
+            File.Delete(temporaryPath);
+        }
+    }
+}
