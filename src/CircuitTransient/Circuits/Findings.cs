@@ -16,6 +16,17 @@ internal sealed class Findings(SourceText source)
 
     public bool HasErrors { get; private set; }
 
+    /// <summary>Names that stand in statements that could not be read: nothing is said of them.</summary>
+    public HashSet<string> Excused { get; } = new(StringComparer.Ordinal);
+
+    /// <summary>Whether an unreadable statement may have made, or meant, that name.</summary>
+    public bool IsExcused(string name)
+    {
+        var last = name[(name.LastIndexOf('/') + 1)..];
+        var bracket = last.IndexOf('[', StringComparison.Ordinal);
+        return Excused.Count > 0 && Excused.Contains(bracket < 0 ? last : last[..bracket]);
+    }
+
     public int LineOf(TextSpan span) => source.LineOf(span.Start);
 
     public bool IsNew(TextSpan span) => !places.Contains((source, span, Severity.Error));

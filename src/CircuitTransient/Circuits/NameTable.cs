@@ -59,7 +59,7 @@ internal sealed class NameTable<T>(string noun, Findings findings)
             return true;
         }
 
-        if (findings.IsNew(span))
+        if (!findings.IsExcused(name) && findings.IsNew(span))
         {
             var nearest = NearestName.Find(name, names);
             findings.Error(span, $"there is no {noun} `{name}`",

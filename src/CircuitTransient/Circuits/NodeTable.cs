@@ -42,12 +42,15 @@ internal sealed class NodeTable
             touches.Add(new Touch(0, name.Span));
         }
 
-        touches[index] = touches[index] with
-        {
-            Count = touches[index].Count + 1,
-            Span = touches[index].Count == 0 ? name.Span : touches[index].Span,
-        };
+        touches[index] = touches[index] with { Count = touches[index].Count + 1 };
         return index;
+    }
+
+    /// <summary>The reference conductor, touched by a part written <c>at N</c>.</summary>
+    public int AtReference()
+    {
+        touches[0] = touches[0] with { Count = touches[0].Count + 1 };
+        return 0;
     }
 
     /// <summary>The node of that name, or an error: a quantity cannot make a node.</summary>

@@ -22,26 +22,27 @@ internal sealed record Scope(
     /// <summary>The name with its index as a number, without the prefix.</summary>
     public string Written(NameSyntax name, Findings findings)
     {
+        var text = name.Owner is { } owner ? $"{Written(owner, findings)}/{name.Text}" : name.Text;
         if (name.Index is not { } index)
         {
-            return name.Text;
+            return text;
         }
 
         if (index.Counter is not { } counter)
         {
-            return $"{name.Text}[{index.Offset}]";
+            return $"{text}[{index.Offset}]";
         }
 
         if (Counters.TryGetValue(counter, out var value))
         {
-            return $"{name.Text}[{(long)value + index.Offset}]";
+            return $"{text}[{(long)value + index.Offset}]";
         }
 
         var nearest = Counters.Count == 1 ? Counters.Keys.First() : null;
         findings.Error(index.Span, $"there is no counter `{counter}` here",
             nearest is null ? $"put the statement between `repeat 40 as {counter}` and `end`"
                 : $"the counter here is `{nearest}`");
-        return $"{name.Text}[{counter}]";
+        return $"{text}[{counter}]";
     }
 
     public string Full(NameSyntax name, Findings findings) => Prefix + Written(name, findings);

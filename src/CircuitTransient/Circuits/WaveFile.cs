@@ -125,30 +125,9 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
     private static (Dimension Dimension, double Scale)? UnitOf(string title)
     {
         var open = title.LastIndexOf('(');
-        if (open < 0 || !title.EndsWith(')'))
-        {
-            return null;
-        }
-
-        var unit = title[(open + 1)..^1].Trim();
-        Dimension? dimension = unit.Length == 0 ? null : unit[^1] switch
-        {
-            's' => Dimension.Time,
-            'V' => Dimension.Voltage,
-            'A' => Dimension.Current,
-            _ => null,
-        };
-        double? scale = unit.Length switch
-        {
-            1 => 1,
-            2 => unit[0] switch
-            {
-                'f' => 1e-15, 'p' => 1e-12, 'n' => 1e-9, 'u' or 'µ' or 'μ' => 1e-6, 'm' => 1e-3,
-                'k' => 1e3, 'M' => 1e6, 'G' => 1e9, _ => null,
-            },
-            _ => null,
-        };
-        return dimension is { } d && scale is { } s ? (d, s) : null;
+        return open >= 0 && title.EndsWith(')') && Unit.TryRead(title.AsSpan(open + 1, title.Length - open - 2), out var unit)
+            ? (unit.Dimension, Math.Pow(10, unit.Exponent) * unit.Factor)
+            : null;
     }
 
     private static TextSpan LineSpan(SourceText text, int number)
