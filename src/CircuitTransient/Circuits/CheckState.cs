@@ -64,6 +64,11 @@ internal sealed class CheckState(
     /// <summary>The parts that came out well so far, by index.</summary>
     public Part?[] Parts { get; set; } = [];
 
+    /// <summary>The statement a part came from.</summary>
+    public PartDeclaration DeclarationOf(Part part) => Names.TryGet(part.Name, out var declared)
+        ? declared
+        : throw new System.Diagnostics.UnreachableException($"no declaration of {part.Name}");
+
     /// <summary>The text of a span.</summary>
     public string Text(TextSpan span) => findings.Source[span];
 

@@ -27,11 +27,11 @@ internal sealed class Expansion
     public static ImmutableArray<PlacedStatement> WriteOut(
         CircuitSyntax syntax, string reference, Findings findings, NamedValues values)
     {
-        var assemblies = Assemblies.Collect(syntax.Statements, findings);
+        var defined = Assemblies.Collect(syntax.Statements, findings);
         var scope = Scope.Outermost(reference);
-        var expansion = new Expansion(findings, values, assemblies);
+        var expansion = new Expansion(findings, values, defined);
         expansion.DeclareValues(syntax.Statements, scope);
-        var size = new ExpansionSize(findings, values.Evaluator, assemblies);
+        var size = new ExpansionSize(findings, values.Evaluator, defined);
         if (!size.IsWithin(syntax.Statements, scope, MostStatements))
         {
             return [];

@@ -1,4 +1,3 @@
-using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;

@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using CircuitTransient.Syntax;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 

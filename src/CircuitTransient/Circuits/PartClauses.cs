@@ -36,7 +36,10 @@ internal sealed record PartClauses(ImmutableArray<Rating> Ratings, LinearLimit? 
             {
                 var rating = Rated(state, part, rated);
                 isGood &= rating is not null;
-                ratings.AddRange(rating is null ? [] : [rating]);
+                if (rating is not null)
+                {
+                    ratings.Add(rating);
+                }
             }
             else if (clause is LinearUpToSyntax upTo)
             {

@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 

@@ -1,5 +1,4 @@
 using CircuitTransient.Syntax;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 

@@ -1,5 +1,4 @@
 using CircuitTransient.Syntax;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
@@ -124,5 +123,5 @@ internal static class StoredContradictions
 
     private static T? Clause<T>(CheckState state, Part part)
         where T : ClauseSyntax =>
-        state.Declared[Array.IndexOf(state.Parts, part)].Clauses.OfType<T>().FirstOrDefault();
+        state.DeclarationOf(part).Clauses.OfType<T>().FirstOrDefault();
 }

@@ -1,5 +1,4 @@
 using CircuitTransient.Syntax;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
@@ -33,7 +32,7 @@ internal static class ValueHabits
     {
         var resistance = part.Resistance.Nominal;
         if (resistance is <= 0 or >= 0.1
-            || state.Declared[Array.IndexOf(state.Parts, part)].Statement is not SimplePartStatement syntax)
+            || state.DeclarationOf(part).Statement is not SimplePartStatement syntax)
         {
             return;
         }

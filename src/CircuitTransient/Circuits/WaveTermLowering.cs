@@ -76,7 +76,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
 
     private bool Fits(ExpressionSyntax expression, Dimension found)
     {
-        if (expected is { } other)
+        if ((expected ?? Dimension) is { } other)
         {
             Dimension = other;
             return Expected.Matches(state.Findings, expression, found, other);
@@ -217,7 +217,6 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
                 Expected.Fixed(state, point.Level, value);
             }
 
-            expected ??= Dimension;
             Level = null;
             if (time is not { } t || level is not { } v)
             {
