@@ -5,7 +5,8 @@ namespace CircuitTransient.Circuits;
 /// <summary>The assemblies a file defines, by name.</summary>
 internal static class Assemblies
 {
-    /// <summary>All definitions, wherever they stand; one that holds itself is an error and is left out.</summary>
+    /// <summary>All definitions, wherever they stand; one that holds itself is an error and is left
+    /// out.</summary>
     public static Dictionary<string, AssemblyStatement> Collect(
         IEnumerable<Statement> statements, Findings findings)
     {
@@ -44,7 +45,8 @@ internal static class Assemblies
         return found;
     }
 
-    public static string List(IEnumerable<NameSyntax> names) => string.Join(", ", names.Select(n => $"`{n.Text}`"));
+    public static string List(IEnumerable<NameSyntax> names) =>
+        string.Join(", ", names.Select(n => $"`{n.Text}`"));
 
     /// <summary>Every placing in statements, inside repetitions too.</summary>
     private static IEnumerable<PlaceStatement> Places(IEnumerable<Statement> statements) =>

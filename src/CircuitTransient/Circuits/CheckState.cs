@@ -4,7 +4,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>A part or coupling as declared: its name and place in the lists are known before its value is.</summary>
+/// <summary>A part or coupling as declared: its name and place in the lists are known before its value
+/// is.</summary>
 /// <param name="Index">Index in the parts, or in the couplings.</param>
 /// <param name="IsCoupling">Whether it is a coupling.</param>
 internal sealed record PartDeclaration(

@@ -10,11 +10,12 @@ public static class CircuitChecker
     /// <summary>Checks a circuit.</summary>
     /// <param name="syntax">The statements as written.</param>
     /// <param name="earlier">What reading the text found; with an error in it there is no circuit.</param>
-    /// <param name="readFile">Reads a file of wave points by its path relative to the circuit's folder; null where
-    /// no file can be read.</param>
+    /// <param name="readFile">Reads a file of wave points by its path relative to the circuit's folder; null
+    /// where no file can be read.</param>
     /// <returns>The circuit, or errors in the order of the file; warnings come with either.</returns>
     public static Outcome<Circuit> Check(
-        CircuitSyntax syntax, ImmutableArray<Diagnostic> earlier, Func<string, Outcome<SourceText>>? readFile = null)
+        CircuitSyntax syntax, ImmutableArray<Diagnostic> earlier,
+        Func<string, Outcome<SourceText>>? readFile = null)
     {
         var findings = new Findings(syntax.Source);
         foreach (var diagnostic in earlier)
@@ -66,7 +67,8 @@ public static class CircuitChecker
         var requirements = ImmutableArray.CreateBuilder<Requirement>();
         foreach (var (statement, scope) in statements)
         {
-            if (statement is RequireStatement syntax && Requirements.Lower(state, syntax, scope, until) is { } requirement)
+            if (statement is RequireStatement syntax && Requirements.Lower(state, syntax, scope, until)
+                is { } requirement)
             {
                 requirements.Add(requirement);
             }

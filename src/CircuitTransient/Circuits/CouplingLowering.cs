@@ -5,10 +5,12 @@ using MathNet.Numerics.LinearAlgebra;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>Turns couplings into mutual inductances, and checks that no set of them stores negative energy.</summary>
+/// <summary>Turns couplings into mutual inductances, and checks that no set of them stores negative
+/// energy.</summary>
 internal static class CouplingLowering
 {
-    private const double Rounding = 1e-12; // k = 1 works exactly; eigenvalues of sets of dozens are good to 1e-14
+    // k = 1 works exactly; eigenvalues of sets of dozens are good to 1e-14
+    private const double Rounding = 1e-12;
 
     public static ImmutableArray<Coupling> Lower(CheckState state)
     {
@@ -26,7 +28,8 @@ internal static class CouplingLowering
         return couplings.ToImmutable();
     }
 
-    private static Coupling? Lower(CheckState state, PartDeclaration declared, Dictionary<(int, int), string> pairs)
+    private static Coupling? Lower(
+        CheckState state, PartDeclaration declared, Dictionary<(int, int), string> pairs)
     {
         var syntax = (CouplingStatement)declared.Statement;
         var first = Coil(state, syntax.First, declared.Scope);
@@ -48,7 +51,8 @@ internal static class CouplingLowering
         if (!pairs.TryAdd(pair, declared.Name))
         {
             state.Findings.Error(declared.NameSyntax.Span,
-                $"`{first.Name}` and `{second.Name}` are coupled by `{pairs[pair]}` already", "leave one of them out");
+                $"`{first.Name}` and `{second.Name}` are coupled by `{pairs[pair]}` already",
+                    "leave one of them out");
             return null;
         }
 
@@ -56,12 +60,14 @@ internal static class CouplingLowering
         if (!isFactor && plain.Dimension != Dimension.Inductance)
         {
             state.Findings.Error(syntax.Value.Value.Span,
-                $"`{state.Text(syntax.Value.Value.Span)}` is {Measure.Of(plain.Dimension).Phrase}; a coupling is a "
+                $"`{state.Text(syntax.Value.Value.Span)}` is {Measure.Of(plain.Dimension).Phrase}; a "
+                    + $"coupling is a "
                 + "factor from -1 to 1, or a mutual inductance in henries");
             return null;
         }
 
-        var toleranced = Tolerances.Apply(plain, syntax.Value, declared.Scope, state.Evaluator, state.Findings,
+        var toleranced =
+            Tolerances.Apply(plain, syntax.Value, declared.Scope, state.Evaluator, state.Findings,
             state.Parameters, declared.Name, declared.NameSyntax.Span);
         return toleranced is { } v && IsPossible(state, syntax, first, second, v, isFactor)
             ? new Coupling(declared.Name, first.Index, second.Index, v.AsQuantity, isFactor, syntax.Span)
@@ -82,18 +88,21 @@ internal static class CouplingLowering
     }
 
     private static bool IsPossible(
-        CheckState state, CouplingStatement syntax, PartDeclaration first, PartDeclaration second, Evaluated value,
+        CheckState state, CouplingStatement syntax, PartDeclaration first, PartDeclaration second,
+            Evaluated value,
         bool isFactor)
     {
         var span = syntax.Value.Value.Span;
         if (isFactor && Math.Abs(value.Value) > 1)
         {
-            state.Findings.Error(span, $"a coupling factor lies between -1 and 1, not at {Amount.Of(value.Value, "")}",
+            state.Findings.Error(span,
+                $"a coupling factor lies between -1 and 1, not at {Amount.Of(value.Value, "")}",
                 "for a mutual inductance write it in henries, such as `3 mH`");
             return false;
         }
 
-        if (isFactor || state.Parts[first.Index] is not Inductor a || state.Parts[second.Index] is not Inductor b)
+        if (isFactor || state.Parts[first.Index] is not Inductor a
+            || state.Parts[second.Index] is not Inductor b)
         {
             return true;
         }
@@ -105,7 +114,8 @@ internal static class CouplingLowering
         }
 
         state.Findings.Error(span,
-            $"a mutual inductance of {Amount.Of(value.Value, "H")} would couple `{first.Name}` and `{second.Name}` "
+            $"a mutual inductance of {Amount.Of(value.Value, "H")} would couple `{first.Name}` and "
+                + $"`{second.Name}` "
             + $"by more than all their flux", $"the most is sqrt(L1·L2) = {Amount.Of(most, "H")}");
         return false;
     }
@@ -148,7 +158,8 @@ internal static class CouplingLowering
         state.Findings.Error(set[0].Span,
             $"the couplings of {names} cannot all be: some currents would store negative energy, down to "
             + $"{EngineeringNumber.Format(least, "", 3)} of ½ L i² of each coil",
-            "if a coil is coupled closely to two others, those two are coupled closely too; lower a factor or add one");
+            "if a coil is coupled closely to two others, those two are coupled closely too; lower a "
+                + "factor or add one");
     }
 
     private static double Factor(CheckState state, Coupling coupling) => coupling.IsFactor

@@ -28,7 +28,8 @@ internal static class Declarations
                     Part(state, s, s.Name, s.Primary, scope, s.Secondary);
                     break;
                 case CouplingStatement s:
-                    var coupling = new PartDeclaration(scope.Full(s.Name, state.Findings), state.Couplings.Count,
+                    var coupling =
+                        new PartDeclaration(scope.Full(s.Name, state.Findings), state.Couplings.Count,
                         IsCoupling: true, s, scope, s.Name, -1, -1);
                     if (state.Names.Declare(coupling.Name, s.Name.Span, coupling))
                     {
@@ -62,7 +63,8 @@ internal static class Declarations
         }
 
         var part = new PartDeclaration(
-            full, state.Declared.Count, IsCoupling: false, statement, scope, name, from, to, secondaryFrom, secondaryTo);
+            full, state.Declared.Count, IsCoupling: false, statement, scope, name, from, to, secondaryFrom,
+                secondaryTo);
         if (state.Names.Declare(full, name.Span, part))
         {
             state.Declared.Add(part);

@@ -3,10 +3,12 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>Sources that follow a voltage or current elsewhere; the dimension of the product says what they set.</summary>
+/// <summary>Sources that follow a voltage or current elsewhere; the dimension of the product says what they
+/// set.</summary>
 internal static class DependentSources
 {
-    public static DependentSource? Lower(CheckState state, PartDeclaration part, DependentSourceStatement syntax)
+    public static DependentSource? Lower(CheckState state, PartDeclaration part,
+        DependentSourceStatement syntax)
     {
         var control = Measurands.Lower(state, syntax.Control, part.Scope);
         var gain = state.Evaluator.Evaluate(syntax.Gain, part.Scope);
@@ -36,7 +38,8 @@ internal static class DependentSources
         var toleranced = new ToleratedSyntax(syntax.Gain, null);
         var parameter = Tolerances.Apply(value, toleranced, part.Scope, state.Evaluator, state.Findings,
             state.Parameters, part.Name, part.NameSyntax.Span);
-        return new DependentSource(product == Dimension.Voltage, parameter!.Value.AsQuantity, control.Quantity)
+        return new DependentSource(product == Dimension.Voltage, parameter!.Value.AsQuantity,
+            control.Quantity)
         {
             Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
         };

@@ -30,7 +30,8 @@ internal sealed class DisjointSets(int count)
         return result;
     }
 
-    /// <summary>Joins two nodes, the first standing higher by a difference; false if they were joined before.</summary>
+    /// <summary>Joins two nodes, the first standing higher by a difference; false if they were joined
+    /// before.</summary>
     public bool Join(int a, int b, double difference = 0)
     {
         var (rootA, heightA) = Find(a);

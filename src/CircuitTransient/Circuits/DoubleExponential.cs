@@ -1,17 +1,22 @@
 namespace CircuitTransient.Circuits;
 
-/// <summary>The difference of two exponentials Peak·k·(e^(−t/τ1) − e^(−t/τ2)) of given front and half-value times.</summary>
+/// <summary>The difference of two exponentials Peak·k·(e^(−t/τ1) − e^(−t/τ2)) of given front and half-value
+/// times.</summary>
 /// <param name="Tail">τ1, the longer time constant, in seconds.</param>
 /// <param name="Front">τ2, the shorter one, in seconds.</param>
 /// <param name="Factor">k, which makes the crest 1.</param>
 public sealed record DoubleExponential(double Tail, double Front, double Factor)
 {
-    private const double LongestRatio = 1e9; // a front a thousand million times shorter than the tail is a step
+    // a front a thousand million times shorter than the tail is a step
+    private const double LongestRatio = 1e9;
 
-    /// <summary>Solves for the time constants, or gives null where no double exponential has that ratio.</summary>
-    /// <param name="front">Front time in seconds: (t90 − t30)/0.6 of a voltage (IEC 60060-1), 1.25 (t90 − t10) of a
+    /// <summary>Solves for the time constants, or gives null where no double exponential has that
+    /// ratio.</summary>
+    /// <param name="front">Front time in seconds: (t90 − t30)/0.6 of a voltage (IEC 60060-1), 1.25 (t90 −
+    /// t10) of a
     /// current (IEC 62475).</param>
-    /// <param name="halfValue">Time from the virtual origin to half the crest on the tail, in seconds.</param>
+    /// <param name="halfValue">Time from the virtual origin to half the crest on the tail, in
+    /// seconds.</param>
     /// <param name="isVoltage">Whether the wave is a voltage.</param>
     public static DoubleExponential? Solve(double front, double halfValue, bool isVoltage)
     {
@@ -43,7 +48,8 @@ public sealed record DoubleExponential(double Tail, double Front, double Factor)
     public static double LeastRatio(bool isVoltage) => new Shape(1e-8).Ratio(isVoltage);
 
     /// <summary>The shape with τ2 = 1 and τ1 = e^y. Written with sinh, whose value stays exact where the two
-    /// exponentials nearly cancel: e^(−ρt) − e^(−t) = 2 e^(−mt) sinh(δt), m = (1+ρ)/2, δ = (1−ρ)/2, ρ = 1/τ1.</summary>
+    /// exponentials nearly cancel: e^(−ρt) − e^(−t) = 2 e^(−mt) sinh(δt), m = (1+ρ)/2, δ = (1−ρ)/2, ρ =
+    /// 1/τ1.</summary>
     internal readonly struct Shape
     {
         private readonly double mean;

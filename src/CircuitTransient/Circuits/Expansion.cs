@@ -12,7 +12,8 @@ internal sealed class Expansion
     private readonly Findings findings;
     private readonly NamedValues values;
     private readonly Dictionary<string, AssemblyStatement> assemblies;
-    private readonly ImmutableArray<PlacedStatement>.Builder written = ImmutableArray.CreateBuilder<PlacedStatement>();
+    private readonly ImmutableArray<PlacedStatement>.Builder written =
+        ImmutableArray.CreateBuilder<PlacedStatement>();
     private readonly NameTable<PlaceStatement> places;
 
     private Expansion(Findings findings, NamedValues values, Dictionary<string, AssemblyStatement> assemblies)
@@ -79,7 +80,8 @@ internal sealed class Expansion
 
         if (scope.Counters.ContainsKey(repeat.Counter))
         {
-            findings.Error(repeat.Span, $"the counter `{repeat.Counter}` is in use by the repetition round this one",
+            findings.Error(repeat.Span,
+                $"the counter `{repeat.Counter}` is in use by the repetition round this one",
                 "give the inner one another letter");
             return;
         }
@@ -107,7 +109,8 @@ internal sealed class Expansion
 
         var terminals = ImmutableDictionary.CreateBuilder<string, string>();
         var overrides = new Dictionary<string, AssignmentSyntax>(StringComparer.Ordinal);
-        var ownValues = assembly.Body.OfType<ValueStatement>().Select(v => v.Name.Text).ToHashSet(StringComparer.Ordinal);
+        var ownValues = assembly.Body.OfType<ValueStatement>().Select(v => v.Name.Text)
+            .ToHashSet(StringComparer.Ordinal);
         var terminalNames = assembly.Terminals.Select(t => t.Text).ToHashSet(StringComparer.Ordinal);
         foreach (var assignment in place.Assignments)
         {
@@ -137,7 +140,8 @@ internal sealed class Expansion
         if (Complete(place, assembly, terminals))
         {
             WriteAssembly(assembly, overrides, scope, new Scope(
-                name + "/", ImmutableDictionary<string, int>.Empty, terminals.ToImmutable(), scope.Reference));
+                name + "/", ImmutableDictionary<string, int>.Empty, terminals.ToImmutable(),
+                    scope.Reference));
         }
     }
 
@@ -160,13 +164,15 @@ internal sealed class Expansion
         overrides.Add(assignment.Inner.Text, assignment);
         if (assignment.Value is null)
         {
-            findings.Error(assignment.Span, $"`{assignment.Inner.Text}` is a value and is given by an expression",
+            findings.Error(assignment.Span,
+                $"`{assignment.Inner.Text}` is a value and is given by an expression",
                 $"write `{assignment.Inner.Text} = 3 Ω`");
         }
     }
 
     private bool Complete(
-        PlaceStatement place, AssemblyStatement assembly, ImmutableDictionary<string, string>.Builder terminals)
+        PlaceStatement place, AssemblyStatement assembly,
+        ImmutableDictionary<string, string>.Builder terminals)
     {
         var open = assembly.Terminals.Where(t => !terminals.ContainsKey(t.Text)).ToImmutableArray();
         if (open.Length == 0)

@@ -13,10 +13,10 @@ internal sealed class ExpansionSize(
 
     private long visits;
 
-    /// <summary>Whether the circuit stays within a number of parts; if not, that is an error with the count.</summary>
+    /// <summary>Whether the circuit stays within a number of parts; if not, that is an error with the
+    /// count.</summary>
     public bool IsWithin(ImmutableArray<Statement> statements, Scope scope, long most)
     {
-        var errorAt = statements.FirstOrDefault(s => s is RepeatStatement or PlaceStatement) ?? statements.FirstOrDefault();
         var count = Count(statements, scope);
         if (count <= most && visits <= MostVisits)
         {
@@ -27,7 +27,7 @@ internal sealed class ExpansionSize(
             : count < 1e15 ? ((long)count).ToString("#,0", CultureInfo.InvariantCulture).Replace(',', ' ')
             : count.ToString("0e0", CultureInfo.InvariantCulture);
         var largest = statements.Where(s => s is RepeatStatement or PlaceStatement)
-            .MaxBy(s => Count([s], scope)) ?? errorAt;
+            .MaxBy(s => Count([s], scope));
         var span = largest is RepeatStatement repeat ? repeat.Count.Span
             : largest is PlaceStatement place ? place.Name.Span : new TextSpan(0, 0);
         findings.Error(span, $"written out, this circuit has {said} parts; the most is 100 000",
@@ -35,8 +35,10 @@ internal sealed class ExpansionSize(
         return false;
     }
 
-    /// <summary>How often a repetition goes round, or null where that has been reported as an error.</summary>
-    public static int? CountOf(RepeatStatement repeat, Scope scope, ExpressionEvaluator evaluator, Findings findings)
+    /// <summary>How often a repetition goes round, or null where that has been reported as an
+    /// error.</summary>
+    public static int? CountOf(RepeatStatement repeat, Scope scope, ExpressionEvaluator evaluator,
+        Findings findings)
     {
         if (evaluator.Evaluate(repeat.Count, scope) is not { } count)
         {
@@ -50,7 +52,8 @@ internal sealed class ExpansionSize(
         }
 
         findings.Error(repeat.Count.Span,
-            $"`{findings.Source[repeat.Count.Span]}` is not a number of times to repeat", "write a whole number");
+            $"`{findings.Source[repeat.Count.Span]}` is not a number of times to repeat",
+                "write a whole number");
         return null;
     }
 

@@ -7,7 +7,8 @@ namespace CircuitTransient.Circuits;
 /// <param name="Value">In SI, with all parameters nominal.</param>
 /// <param name="Formula">How it follows from parameters; null where it depends on none.</param>
 /// <param name="Size">Operands and operators of the formula written out.</param>
-internal readonly record struct Evaluated(double Value, Dimension Dimension, Formula? Formula = null, int Size = 1)
+internal readonly record struct Evaluated(double Value, Dimension Dimension, Formula? Formula = null,
+    int Size = 1)
 {
     public Formula AsFormula => Formula ?? new NumberFormula(Value);
 
@@ -18,7 +19,8 @@ internal readonly record struct Evaluated(double Value, Dimension Dimension, For
 internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
 {
     private const int DeepestNesting = 200;
-    private const int LargestFormula = 10_000; // written out; keeps doubling chains of values from running away
+    // written out; keeps doubling chains of values from running away
+    private const int LargestFormula = 10_000;
 
     public Evaluated? Evaluate(ExpressionSyntax expression, Scope scope, int depth = 0)
     {
@@ -101,7 +103,8 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
 
         if (step.Operator == '/' && b.Value == 0)
         {
-            findings.Error(step.Right.Span, $"`{Text(step.Right)}` is zero, and nothing can be divided by it");
+            findings.Error(step.Right.Span,
+                $"`{Text(step.Right)}` is zero, and nothing can be divided by it");
             return null;
         }
 
@@ -137,7 +140,8 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
                 var joined = step.Operator == '+' ? "added to" : "subtracted from";
                 var (first, second) = step.Operator == '+' ? (a, b) : (b, a);
                 findings.Error(step.Span,
-                    $"{Measure.Of(first.Dimension).Phrase} cannot be {joined} {Measure.Of(second.Dimension).Phrase}",
+                    $"{Measure.Of(first.Dimension).Phrase} cannot be {joined} "
+                        + $"{Measure.Of(second.Dimension).Phrase}",
                     $"`{Text(step.Left)}` is {Measure.Of(a.Dimension).Phrase}, "
                     + $"`{Text(step.Right)}` {Measure.Of(b.Dimension).Phrase}");
                 return null;
@@ -148,7 +152,8 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
     {
         if (b.Dimension != Dimension.None)
         {
-            findings.Error(step.Right.Span, $"an exponent is a pure number, not {Measure.Of(b.Dimension).Phrase}");
+            findings.Error(step.Right.Span,
+                $"an exponent is a pure number, not {Measure.Of(b.Dimension).Phrase}");
             return null;
         }
 
@@ -163,7 +168,8 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
             return new Dimension(a.Dimension.Volt * n, a.Dimension.Ampere * n, a.Dimension.Second * n);
         }
 
-        findings.Error(step.Right.Span, $"{Measure.Of(a.Dimension).Phrase} takes a whole number as its exponent",
+        findings.Error(step.Right.Span,
+            $"{Measure.Of(a.Dimension).Phrase} takes a whole number as its exponent",
             "for a root write `sqrt(…)`");
         return null;
     }
@@ -187,8 +193,10 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
         var isOutside = call.Function == "ln" ? a.Value <= 0 : call.Function == "sqrt" && a.Value < 0;
         if (isOutside)
         {
-            findings.Error(call.Span, $"`{call.Function}` of {Amount.Of(a.Value, Measure.Of(a.Dimension).Unit)} is not a number",
-                call.Function == "ln" ? "a logarithm is taken of a positive number" : "a root is taken of zero or more");
+            findings.Error(call.Span,
+                $"`{call.Function}` of {Amount.Of(a.Value, Measure.Of(a.Dimension).Unit)} is not a number",
+                call.Function == "ln" ? "a logarithm is taken of a positive number"
+                    : "a root is taken of zero or more");
             return null;
         }
 
@@ -236,7 +244,7 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
         if (result.Size > LargestFormula)
         {
             findings.Error(expression.Span,
-                $"`{Text(expression)}` grows past {LargestFormula} terms when its named values are written out",
+                $"with its named values written out `{Text(expression)}` grows past {LargestFormula} terms",
                 "give the value as a number");
             return null;
         }

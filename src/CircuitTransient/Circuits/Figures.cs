@@ -15,7 +15,8 @@ internal static class Figures
 
         if (of.Quantity is Figure)
         {
-            state.Findings.Error(syntax.Of.Span, $"`{state.Text(syntax.Of.Span)}` is one number, not a waveform",
+            state.Findings.Error(syntax.Of.Span,
+                $"`{state.Text(syntax.Of.Span)}` is one number, not a waveform",
                 "read the figure off a voltage, current, power or energy");
             return null;
         }
@@ -50,7 +51,8 @@ internal static class Figures
             FigureKind.TimeStaysBelow => Time(FigureOf.TimeStaysBelow,
                 $"time after which {of.Name} stays below {Amount.Of(argument ?? 0, of.Unit)}"),
             FigureKind.Overshoot => new NamedMeasurand(
-                new Figure(FigureOf.Overshoot, of.Quantity, null), $"overshoot of {of.Name}", Dimension.None, "%"),
+                new Figure(FigureOf.Overshoot, of.Quantity, null), $"overshoot of {of.Name}", Dimension.None,
+                    "%"),
             FigureKind.RingFrequency => Measurands.Named(
                 new Figure(FigureOf.RingFrequency, of.Quantity, null), $"ring frequency of {of.Name}",
                 Dimension.Frequency),

@@ -3,8 +3,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>The mistakes and warnings of one file while they are gathered: one for each place, since a second at
-/// the same place follows from the first or repeats it in another round of a repetition.</summary>
+/// <summary>The mistakes and warnings of one file while they are gathered: one for each place, since a second
+/// at the same place follows from the first or repeats it in another round of a repetition.</summary>
 internal sealed class Findings(SourceText source)
 {
     private const int MostErrors = 20; // more than a screenful helps nobody; common practice, no source

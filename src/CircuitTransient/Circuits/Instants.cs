@@ -77,8 +77,10 @@ internal static class Instants
             return value.AsQuantity;
         }
 
-        state.Findings.Error(expression.Span, $"`{state.Text(expression.Span)}` lies before the start of the study",
-            "the study starts at 0 s; what was before it is said by `charged to`, `carrying` or `start settled`");
+        state.Findings.Error(expression.Span,
+            $"`{state.Text(expression.Span)}` lies before the start of the study",
+            "the study starts at 0 s; what was before it is said by `charged to`, `carrying` or `start "
+                + "settled`");
         return null;
     }
 
@@ -98,7 +100,8 @@ internal static class Instants
         }
 
         var events = part.Events;
-        int[] matching = [.. Enumerable.Range(0, events.Length).Where(i => events[i].Closes == syntax.Closes)];
+        int[] matching =
+            [.. Enumerable.Range(0, events.Length).Where(i => events[i].Closes == syntax.Closes)];
         if (matching is [var only])
         {
             return new EventReference(part.Index, only);
@@ -106,8 +109,10 @@ internal static class Instants
 
         state.Findings.Error(syntax.Span, matching.Length == 0
             ? $"`{part.Name}` never {acts}"
-            : $"`{part.Name}` {acts} {matching.Length} times, so `after {part.Name} {acts}` says no one instant",
-            matching.Length == 0 ? $"add `{acts} at …` to `{part.Name}`, or give a time" : "give the time itself");
+            : $"`{part.Name}` {acts} {matching.Length} times, so `after {part.Name} {acts}` says no one "
+                + $"instant",
+            matching.Length == 0 ? $"add `{acts} at …` to `{part.Name}`, or give a time"
+                : "give the time itself");
         return null;
     }
 }

@@ -2,7 +2,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>Whether every part has a path to the reference conductor, and every node more than one part.</summary>
+/// <summary>Whether every part has a path to the reference conductor, and every node more than one
+/// part.</summary>
 internal static class Islands
 {
     private const int MostNamed = 5;
@@ -38,7 +39,8 @@ internal static class Islands
             PartDeclaration[] parts = [.. island.Select(t => t.Part).Distinct()];
             var node = state.Nodes[island.First().At];
             state.Findings.Error(parts[0].NameSyntax.Span,
-                $"{List(parts)} {(parts.Length == 1 ? "has" : "have")} no path to the reference `{state.Nodes.Reference}`",
+                $"{List(parts)} {(parts.Length == 1 ? "has" : "have")} no path to the reference "
+                    + $"`{state.Nodes.Reference}`",
                 $"tie them to it, such as `resistor Rtie from {node} to {state.Nodes.Reference} : 10 MΩ`");
         }
     }

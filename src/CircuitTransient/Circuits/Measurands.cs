@@ -7,8 +7,8 @@ namespace CircuitTransient.Circuits;
 /// <param name="Unit">Unit of its value in SI, or <c>%</c>.</param>
 internal sealed record NamedMeasurand(Measurand Quantity, string Name, Dimension Dimension, string Unit);
 
-/// <summary>Looks up the quantities that are observed, required or followed; null means that an error has been
-/// reported.</summary>
+/// <summary>Looks up the quantities that are observed, required or followed; null means that an error has
+/// been reported.</summary>
 internal static class Measurands
 {
     public static NamedMeasurand? Lower(CheckState state, QuantitySyntax syntax, Scope scope) => syntax switch
@@ -76,17 +76,21 @@ internal static class Measurands
 
         return syntax.Kind switch
         {
-            PartQuantityKind.VoltageAcross => Named(new VoltageAcross(p), $"voltage across {name}", Dimension.Voltage),
-            PartQuantityKind.CurrentThrough => Named(new CurrentThrough(p), $"current through {name}", Dimension.Current),
+            PartQuantityKind.VoltageAcross =>
+                Named(new VoltageAcross(p), $"voltage across {name}", Dimension.Voltage),
+            PartQuantityKind.CurrentThrough =>
+                Named(new CurrentThrough(p), $"current through {name}", Dimension.Current),
             PartQuantityKind.CurrentDelivered =>
-                Named(new CurrentThrough(p, Delivered: true), $"current delivered by {name}", Dimension.Current),
+                Named(new CurrentThrough(p, Delivered: true), $"current delivered by {name}",
+                    Dimension.Current),
             PartQuantityKind.PowerIn => Named(new PowerIn(p), $"power in {name}", Dimension.Power),
             PartQuantityKind.PowerDelivered =>
                 Named(new PowerIn(p, Delivered: true), $"power delivered by {name}", Dimension.Power),
             PartQuantityKind.EnergyIn => Named(new EnergyIn(p), $"energy in {name}", Dimension.Energy),
             PartQuantityKind.EnergyDelivered =>
                 Named(new EnergyIn(p, Delivered: true), $"energy delivered by {name}", Dimension.Energy),
-            PartQuantityKind.JouleIntegral => Named(new JouleIntegral(p), $"I²t through {name}", Dimension.JouleIntegral),
+            PartQuantityKind.JouleIntegral =>
+                Named(new JouleIntegral(p), $"I²t through {name}", Dimension.JouleIntegral),
             _ => throw new System.Diagnostics.UnreachableException($"no quantity for {syntax.Kind}"),
         };
     }
@@ -100,10 +104,12 @@ internal static class Measurands
 
         if (of.Quantity is VoltageBetween or VoltageAcross or CurrentThrough)
         {
-            return Named(new RateOfChange(of.Quantity), $"rate of change of {of.Name}", of.Dimension / Dimension.Time);
+            return Named(new RateOfChange(of.Quantity), $"rate of change of {of.Name}",
+                of.Dimension / Dimension.Time);
         }
 
-        state.Findings.Error(syntax.Of.Span, $"`{state.Text(syntax.Of.Span)}` is neither a voltage nor a current",
+        state.Findings.Error(syntax.Of.Span,
+            $"`{state.Text(syntax.Of.Span)}` is neither a voltage nor a current",
             "a rate of change is that of a voltage or a current");
         return null;
     }

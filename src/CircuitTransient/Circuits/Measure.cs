@@ -23,7 +23,8 @@ internal sealed record Measure(string Phrase, string UnitWord, string Unit)
         [Dimension.Frequency] = new("a frequency", "hertz", "Hz"),
         [Dimension.JouleIntegral] = new("a Joule integral", "ampere-squared seconds", "A²s"),
         [Dimension.Voltage / Dimension.Time] = new("a rate of change of voltage", "volts per second", "V/s"),
-        [Dimension.Current / Dimension.Time] = new("a rate of change of current", "amperes per second", "A/s"),
+        [Dimension.Current / Dimension.Time] =
+            new("a rate of change of current", "amperes per second", "A/s"),
     };
 
     public static Measure Of(Dimension dimension)

@@ -11,7 +11,8 @@ internal sealed class NameTable<T>(string noun, Findings findings)
 
     public IReadOnlyList<string> Names => names;
 
-    /// <summary>Gives a thing its name; a name that is taken, or differs from one only in case, is an error.</summary>
+    /// <summary>Gives a thing its name; a name that is taken, or differs from one only in case, is an
+    /// error.</summary>
     public bool Declare(string name, TextSpan span, T item)
     {
         if (entries.TryGetValue(name, out var taken))
@@ -33,7 +34,8 @@ internal sealed class NameTable<T>(string noun, Findings findings)
         return isKnown;
     }
 
-    /// <summary>What has that name; letter case that differs is reported and the thing meant is returned.</summary>
+    /// <summary>What has that name; letter case that differs is reported and the thing meant is
+    /// returned.</summary>
     public bool TryGetAnyCase(string name, TextSpan span, out T item)
     {
         if (!entries.TryGetValue(name, out var entry))

@@ -39,7 +39,8 @@ internal sealed class NamedValues
         table.Declare(name, span, new Definition(name, span, value, scope));
     }
 
-    /// <summary>Works out every value in the order written, so that mistakes in unused ones are found too.</summary>
+    /// <summary>Works out every value in the order written, so that mistakes in unused ones are found
+    /// too.</summary>
     public void EvaluateAll()
     {
         foreach (var name in table.Names.ToArray())
@@ -56,7 +57,8 @@ internal sealed class NamedValues
     {
         var written = scope.Written(name, findings);
         return table.TryGet(scope.Prefix + written, out var inner) ? Evaluate(inner)
-            : table.Find(written, name.Span, out var outer, $"define it: `value {written} : …`") ? Evaluate(outer)
+            : table.Find(written, name.Span, out var outer, $"define it: `value {written} : …`")
+            ? Evaluate(outer)
             : null;
     }
 
@@ -78,7 +80,8 @@ internal sealed class NamedValues
         inProgress.RemoveAt(inProgress.Count - 1);
         if (result is { } plain)
         {
-            result = Tolerances.Apply(plain, definition.Value, definition.Scope, Evaluator, findings, parameters,
+            result = Tolerances.Apply(plain, definition.Value, definition.Scope, Evaluator, findings,
+                parameters,
                 definition.Name, definition.Span, isNamedValue: true);
         }
 

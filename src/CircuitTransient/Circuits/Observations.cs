@@ -3,7 +3,8 @@ using CircuitTransient.Syntax;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>Turns <c>observe</c> statements into observations; where there are none, every node voltage is one.</summary>
+/// <summary>Turns <c>observe</c> statements into observations; where there are none, every node voltage is
+/// one.</summary>
 internal static class Observations
 {
     public static ImmutableArray<Observation> Lower(

@@ -3,8 +3,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>The values a study may vary, as they are met. A value and a part that share a name are told apart as
-/// <c>value R1</c> and <c>part R1</c>.</summary>
+/// <summary>The values a study may vary, as they are met. A value and a part that share a name are told apart
+/// as <c>value R1</c> and <c>part R1</c>.</summary>
 internal sealed class ParameterList
 {
     private readonly ImmutableArray<Parameter>.Builder list = ImmutableArray.CreateBuilder<Parameter>();

@@ -4,7 +4,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>The clauses any part may have: what it is rated for, and how far its value may be believed.</summary>
+/// <summary>The clauses any part may have: what it is rated for, and how far its value may be
+/// believed.</summary>
 internal sealed record PartClauses(ImmutableArray<Rating> Ratings, LinearLimit? LinearUpTo)
 {
     /// <summary>Reads them and refuses clauses that are doubled or belong to another kind of part.</summary>
@@ -27,7 +28,8 @@ internal sealed record PartClauses(ImmutableArray<Rating> Ratings, LinearLimit? 
 
             if (clause is not (RatedSyntax or SwitchEventSyntax) && !seen.Add(clause.GetType()))
             {
-                state.Findings.Error(clause.Span, $"`{part.Name}` has `{words}` twice", "leave one of them out");
+                state.Findings.Error(clause.Span, $"`{part.Name}` has `{words}` twice",
+                    "leave one of them out");
                 isGood = false;
                 continue;
             }
@@ -101,14 +103,16 @@ internal sealed record PartClauses(ImmutableArray<Rating> Ratings, LinearLimit? 
         return null;
     }
 
-    private static bool IsPositive(CheckState state, ExpressionSyntax expression, Evaluated value, string what)
+    private static bool IsPositive(CheckState state, ExpressionSyntax expression, Evaluated value,
+        string what)
     {
         if (value.Value > 0)
         {
             return true;
         }
 
-        state.Findings.Error(expression.Span, $"{what} is more than zero, not `{state.Text(expression.Span)}`",
+        state.Findings.Error(expression.Span,
+            $"{what} is more than zero, not `{state.Text(expression.Span)}`",
             "give its magnitude; both signs are meant");
         return false;
     }

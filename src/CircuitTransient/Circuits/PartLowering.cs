@@ -87,15 +87,18 @@ internal static class PartLowering
             };
     }
 
-    private static IdealTransformer? Transformer(CheckState state, PartDeclaration part, TransformerStatement syntax)
+    private static IdealTransformer? Transformer(CheckState state, PartDeclaration part,
+        TransformerStatement syntax)
     {
         var primary = Expected.Fixed(state, syntax.PrimaryTurns, part.Scope, Dimension.None);
         var secondary = Expected.Fixed(state, syntax.SecondaryTurns, part.Scope, Dimension.None);
-        foreach (var (turns, written) in new[] { (primary, syntax.PrimaryTurns), (secondary, syntax.SecondaryTurns) })
+        var windings = new[] { (primary, syntax.PrimaryTurns), (secondary, syntax.SecondaryTurns) };
+        foreach (var (turns, written) in windings)
         {
             if (turns <= 0)
             {
-                state.Findings.Error(written.Span, $"a winding of `{part.Name}` has {Amount.Of(turns.Value, "")} turns",
+                state.Findings.Error(written.Span,
+                    $"a winding of `{part.Name}` has {Amount.Of(turns.Value, "")} turns",
                     "write a number above zero; swap the terminals of a winding to turn its sense");
                 return null;
             }

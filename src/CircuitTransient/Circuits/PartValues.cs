@@ -6,11 +6,13 @@ namespace CircuitTransient.Circuits;
 /// <summary>The values of parts: their unit, marking code, tolerance, sign and habit.</summary>
 internal static class PartValues
 {
-    /// <summary>A value with its tolerance as a parameter of the part; null means an error has been reported.</summary>
-    /// <param name="aspect">What of the part, in words that are part of the parameter's name; null for its own
-    /// value.</param>
+    /// <summary>A value with its tolerance as a parameter of the part; null means an error has been
+    /// reported.</summary>
+    /// <param name="aspect">What of the part, in words that are part of the parameter's name; null for its
+    /// own value.</param>
     public static Evaluated? Toleranced(
-        CheckState state, PartDeclaration part, ToleratedSyntax syntax, Dimension dimension, string? aspect) =>
+        CheckState state, PartDeclaration part, ToleratedSyntax syntax, Dimension dimension,
+            string? aspect) =>
         Read(state, part, syntax.Value, dimension) is { } value
             ? Tolerances.Apply(value, syntax, part.Scope, state.Evaluator, state.Findings, state.Parameters,
                 part.Name, part.NameSyntax.Span, aspect)
@@ -23,8 +25,7 @@ internal static class PartValues
         if (value.Value <= 0)
         {
             state.Findings.Error(syntax.Value.Span,
-                $"the {aspect} of `{part.Name}` is {Amount.Of(value.Value, Measure.Of(value.Dimension).Unit)}; "
-                + "it must be more than zero");
+                $"the {aspect} of `{part.Name}` is {Say(value)}; it must be more than zero");
             return false;
         }
 
@@ -48,7 +49,8 @@ internal static class PartValues
         if (syntax.Kind == SimplePartKind.Resistor && value.Value == 0)
         {
             state.Findings.Error(syntax.Value.Value.Span, $"the resistance of `{part.Name}` is zero",
-                $"use a closed switch: `switch {part.Name} from {state.Nodes[part.From]} to {state.Nodes[part.To]} : closed`");
+                $"use a closed switch: `switch {part.Name} from {state.Nodes[part.From]} to "
+                    + $"{state.Nodes[part.To]} : closed`");
             return null;
         }
 
@@ -89,12 +91,15 @@ internal static class PartValues
         if (state.Values.IsKnown(part.Scope.Prefix + mark) || state.Values.IsKnown(mark))
         {
             state.Findings.Warn(number.Span,
-                $"`{mark}` is read as the marking code of {Amount.Of(marked, measure.Unit)}, not as the named value",
+                $"`{mark}` is read as the marking code of {Amount.Of(marked, measure.Unit)}, not as the "
+                    + $"named value",
                 "give the named value another name");
         }
 
         return new Evaluated(marked, dimension);
     }
+
+    private static string Say(Evaluated value) => Amount.Of(value.Value, Measure.Of(value.Dimension).Unit);
 
     private static bool ToleranceReachesZero(
         CheckState state, PartDeclaration part, ToleratedSyntax syntax, Evaluated value, string aspect)
@@ -107,9 +112,11 @@ internal static class PartValues
         var limit = value.Value > 0 ? range.Lowest : range.Highest;
         var unit = Measure.Of(value.Dimension).Unit;
         state.Findings.Error(syntax.Tolerance?.Span ?? syntax.Value.Span,
-            $"the tolerance of `{part.Name}` reaches {(limit == 0 ? "zero" : "past zero")}: its {aspect} would go from "
+            $"the tolerance of `{part.Name}` reaches {(limit == 0 ? "zero" : "past zero")}: its {aspect} "
+                + $"would go from "
             + $"{Amount.Of(range.Lowest, unit)} to {Amount.Of(range.Highest, unit)}",
-            $"{(aspect[0] is 'i' or 'o' ? "an" : "a")} {aspect} of zero is no {part.Kind}; narrow the tolerance");
+            $"{(aspect[0] is 'i' or 'o' ? "an" : "a")} {aspect} of zero is no {part.Kind}; narrow the "
+                + $"tolerance");
         return true;
     }
 

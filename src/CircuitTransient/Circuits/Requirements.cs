@@ -2,7 +2,8 @@ using CircuitTransient.Syntax;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>Turns <c>require</c> statements into requirements; null means that an error has been reported.</summary>
+/// <summary>Turns <c>require</c> statements into requirements; null means that an error has been
+/// reported.</summary>
 internal static class Requirements
 {
     public static Requirement? Lower(CheckState state, RequireStatement syntax, Scope scope, double? until)
@@ -26,7 +27,8 @@ internal static class Requirements
         }
 
         var name = b.Bound is SettlesTo ? "settling of " + quantity.Name : quantity.Name;
-        return new Requirement($"{name} {b.Words}{Windows.Words(state, window)}", syntax.Reason, quantity.Name,
+        return new Requirement($"{name} {b.Words}{Windows.Words(state, window)}", syntax.Reason,
+            quantity.Name,
             quantity.Unit, quantity.Quantity, b.Bound, window, syntax.Span);
     }
 
@@ -55,10 +57,12 @@ internal static class Requirements
             return null;
         }
 
-        string Say(double value) => quantity.Unit == "%" ? Amount.Of(value / 100, "%") : Amount.Of(value, quantity.Unit);
+        string Say(double value) => quantity.Unit == "%" ? Amount.Of(value / 100, "%")
+            : Amount.Of(value, quantity.Unit);
         return (lower, upper) switch
         {
-            (null, { } most) when syntax.InMagnitude => (new Limits(-most, most), $"at most {Say(most)} in magnitude"),
+            (null, { } most) when syntax.InMagnitude =>
+                (new Limits(-most, most), $"at most {Say(most)} in magnitude"),
             (null, { } most) => (new Limits(null, most), $"at most {Say(most)}"),
             ({ } least, null) => (new Limits(least, null), $"at least {Say(least)}"),
             ({ } least, { } most) => (new Limits(least, most), $"between {Say(least)} and {Say(most)}"),
@@ -67,7 +71,8 @@ internal static class Requirements
     }
 
     // A bound on a figure in per cent is kept in per cent, as its unit says.
-    private static double? Limit(CheckState state, ExpressionSyntax? syntax, NamedMeasurand quantity, Scope scope) =>
+    private static double? Limit(CheckState state, ExpressionSyntax? syntax, NamedMeasurand quantity,
+        Scope scope) =>
         syntax is null ? null
         : quantity.Unit == "%" ? Expected.Fraction(state, syntax, scope) * 100
         : Expected.Fixed(state, syntax, scope, quantity.Dimension);

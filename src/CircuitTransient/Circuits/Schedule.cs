@@ -3,7 +3,8 @@ namespace CircuitTransient.Circuits;
 /// <summary>What is known of instants before anything is solved.</summary>
 public static class Schedule
 {
-    /// <summary>The instant in seconds where it follows from the text alone, with all parameters nominal; null where
+    /// <summary>The instant in seconds where it follows from the text alone, with all parameters nominal;
+    /// null where
     /// it waits for a condition or a current that the answer decides.</summary>
     /// <param name="instant">The instant.</param>
     /// <param name="parts">The parts by index; those not known yet may be null.</param>
@@ -18,8 +19,10 @@ public static class Schedule
                 return seconds;
             }
 
-            if (steps > parts.Count || parts[after.Part] is not Switch waited || after.Event >= waited.Events.Length
-                || waited.Events[after.Event] is not { CutAtMost: null, Trigger: AtInstant { Instant: var earlier } })
+            if (steps > parts.Count || parts[after.Part] is not Switch waited
+                || after.Event >= waited.Events.Length
+                || waited.Events[after.Event] is not { CutAtMost: null,
+                    Trigger: AtInstant { Instant: var earlier } })
             {
                 return null;
             }
@@ -30,5 +33,6 @@ public static class Schedule
 
     /// <summary>The instant of an event in seconds, where it follows from the text alone.</summary>
     public static double? Resolve(SwitchEvent switchEvent, IReadOnlyList<Part?> parts) =>
-        switchEvent is { CutAtMost: null, Trigger: AtInstant { Instant: var instant } } ? Resolve(instant, parts) : null;
+        switchEvent is { CutAtMost: null, Trigger: AtInstant { Instant: var instant } }
+            ? Resolve(instant, parts) : null;
 }

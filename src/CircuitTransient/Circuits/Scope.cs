@@ -56,5 +56,6 @@ internal sealed record Scope(
     }
 }
 
-/// <summary>A statement that repeats nothing and places nothing, with the scope its names belong to.</summary>
+/// <summary>A statement that repeats nothing and places nothing, with the scope its names belong
+/// to.</summary>
 internal sealed record PlacedStatement(Statement Statement, Scope Scope);

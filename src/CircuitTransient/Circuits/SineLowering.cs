@@ -30,7 +30,8 @@ internal sealed class SineLowering(CheckState state, Scope scope)
         if (end <= start)
         {
             state.Findings.Error(sine.Until!.Span,
-                $"this wave ends at {Amount.Of(end, "s")}, which is not after its start at {Amount.Of(start, "s")}",
+                $"this wave ends at {Amount.Of(end, "s")}, which is not after its start at "
+                    + $"{Amount.Of(start, "s")}",
                 "let it end later");
             return null;
         }
@@ -38,12 +39,15 @@ internal sealed class SineLowering(CheckState state, Scope scope)
         var isPerpetual = sine is { From: null, Until: null, TimeConstant: null };
         return
         [
-            new WavePiece(start, end, sine.IsRms ? amplitude * Math.Sqrt(2) : amplitude, 0, rate, 2 * Math.PI * f,
-                PhaseAt(start, f, sine.IsCosine ? p : p - (Math.PI / 2)), Label(sine, start, end), isPerpetual),
+            new WavePiece(start, end, sine.IsRms ? amplitude * Math.Sqrt(2) : amplitude, 0, rate,
+                2 * Math.PI * f,
+                PhaseAt(start, f, sine.IsCosine ? p : p - (Math.PI / 2)), Label(sine, start, end),
+                    isPerpetual),
         ];
     }
 
-    // Whole turns up to the start are taken off before they are multiplied by 2π, which keeps their last digits.
+    // Whole turns up to the start are taken off before they are multiplied by 2π, which keeps their last
+    // digits.
     private static double PhaseAt(double start, double frequency, double phase) =>
         Math.IEEERemainder((Math.IEEERemainder(frequency * start, 1) * 2 * Math.PI) + phase, 2 * Math.PI);
 

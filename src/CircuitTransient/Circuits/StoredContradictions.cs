@@ -44,9 +44,11 @@ internal static class StoredContradictions
                 && Clause<ChargedToSyntax>(state, capacitor) is { } clause)
             {
                 state.Findings.Warn(clause.Span,
-                    $"`{capacitor.Name}` is charged to {Amount.Of(stated, "V")}, but what it stands across holds it at "
+                    $"`{capacitor.Name}` is charged to {Amount.Of(stated, "V")}, but what it stands "
+                        + $"across holds it at "
                     + $"{Amount.Of(imposed, "V")}",
-                    $"the voltage round this loop jumps by {Amount.Of(jump, "V")} at t = 0, as an impulse of current; "
+                    $"the voltage round this loop jumps by {Amount.Of(jump, "V")} at t = 0, as an impulse "
+                        + $"of current; "
                     + $"write `charged to {Amount.Of(imposed, "V")}` if no jump is meant");
             }
         }
@@ -88,20 +90,25 @@ internal static class StoredContradictions
             Add(sums, sets.Find(part.To).Root, -i, part);
         }
 
-        foreach (var (_, (sum, largest, coil)) in sums.Where(e => e.Key != sets.Find(0).Root).OrderBy(e => e.Key))
+        foreach (var (_, (sum, largest, coil)) in sums.Where(e => e.Key != sets.Find(0).Root)
+            .OrderBy(e => e.Key))
         {
-            if (coil is not null && Math.Abs(sum) > Rounding * largest && Clause<CarryingSyntax>(state, coil) is { } clause)
+            if (coil is not null && Math.Abs(sum) > Rounding * largest && Clause<CarryingSyntax>(state, coil)
+                is { } clause)
             {
                 state.Findings.Warn(clause.Span,
-                    $"the current that `{coil.Name}` carries at the start has no way on: {Amount.Of(Math.Abs(sum), "A")} "
+                    $"the current that `{coil.Name}` carries at the start has no way on: "
+                        + $"{Amount.Of(Math.Abs(sum), "A")} "
                     + "are left over where it meets other coils, current sources or open contacts",
-                    "the currents jump at t = 0, as an impulse of voltage; let series coils carry the same current");
+                    "the currents jump at t = 0, as an impulse of voltage; let series coils carry the "
+                        + "same current");
             }
         }
     }
 
     private static void Add(
-        Dictionary<int, (double Sum, double Largest, Inductor? Coil)> sums, int node, double current, Part part)
+        Dictionary<int, (double Sum, double Largest, Inductor? Coil)> sums, int node, double current,
+            Part part)
     {
         var (sum, largest, coil) = sums.GetValueOrDefault(node);
         var stated = part is Inductor { InitialCurrent: not null } inductor ? inductor : null;
@@ -111,7 +118,8 @@ internal static class StoredContradictions
     private static bool IsShut(Switch part) =>
         part is { StartsClosed: true, ClosedResistance: null } && !ActsAtStart(part);
 
-    private static bool IsGap(Switch part) => part is { StartsClosed: false, OpenResistance: null } && !ActsAtStart(part);
+    private static bool IsGap(Switch part) => part is { StartsClosed: false, OpenResistance: null }
+        && !ActsAtStart(part);
 
     // What happens when a switch acts at 0 s is a switching, with its own impulse, and no contradiction.
     private static bool ActsAtStart(Switch part) =>

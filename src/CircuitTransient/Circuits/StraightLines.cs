@@ -6,7 +6,8 @@ namespace CircuitTransient.Circuits;
 internal static class StraightLines
 {
     /// <summary>What is wrong with a point that comes next, or null.</summary>
-    public static (string Message, string Advice)? Mistake(List<(double Time, double Level)> before, double time)
+    public static (string Message, string Advice)? Mistake(List<(double Time, double Level)> before,
+        double time)
     {
         if (time < 0)
         {
@@ -21,7 +22,8 @@ internal static class StraightLines
 
         if (time < before[^1].Time)
         {
-            return ($"this point at {Amount.Of(time, "s")} comes after one at {Amount.Of(before[^1].Time, "s")}",
+            var last = Amount.Of(before[^1].Time, "s");
+            return ($"this point at {Amount.Of(time, "s")} comes after one at {last}",
                 "put the points in the order of time");
         }
 
@@ -41,7 +43,8 @@ internal static class StraightLines
             if (end.Time > start.Time && (start.Level != 0 || end.Level != 0))
             {
                 pieces.Add(new WavePiece(
-                    start.Time, end.Time, start.Level, (end.Level - start.Level) / (end.Time - start.Time), 0, 0, 0,
+                    start.Time, end.Time, start.Level, (end.Level - start.Level) / (end.Time - start.Time), 0,
+                        0, 0,
                     $"line from {Amount.Of(start.Time, "s")} to {Amount.Of(end.Time, "s")}"));
             }
         }

@@ -28,7 +28,8 @@ internal sealed record StudySettings(
             until);
     }
 
-    /// <summary>The end of the study in seconds, or null where none is written or an error was reported.</summary>
+    /// <summary>The end of the study in seconds, or null where none is written or an error was
+    /// reported.</summary>
     public double? End(CheckState state, Scope scope)
     {
         if (Until is null || Expected.Fixed(state, Until.Time, scope, Dimension.Time) is not { } end)
@@ -72,9 +73,11 @@ internal sealed record StudySettings(
         {
             foreach (var statement in body)
             {
-                if (statement is TitleStatement or NoteStatement or ReferenceStatement or StartStatement or UntilStatement)
+                if (statement is TitleStatement or NoteStatement or ReferenceStatement or StartStatement
+                    or UntilStatement)
                 {
-                    findings.Error(statement.Span, "this speaks of the whole circuit and cannot stand inside a block",
+                    findings.Error(statement.Span,
+                        "this speaks of the whole circuit and cannot stand inside a block",
                         "move it above the `repeat` or `assembly`");
                 }
             }

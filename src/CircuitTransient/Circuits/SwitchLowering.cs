@@ -39,7 +39,8 @@ internal static class SwitchLowering
 
         if (events.Count == 0)
         {
-            state.Findings.Warn(part.NameSyntax.Span, $"`{part.Name}` never acts: it stays {Position(syntax.IsClosed)}",
+            state.Findings.Warn(part.NameSyntax.Span,
+                $"`{part.Name}` never acts: it stays {Position(syntax.IsClosed)}",
                 $"add `{(syntax.IsClosed ? "opens" : "closes")} at 1 ms`, or leave the switch out");
         }
 
@@ -51,7 +52,8 @@ internal static class SwitchLowering
             : null;
     }
 
-    private static Quantity? Resistance(CheckState state, PartDeclaration part, ToleratedSyntax value, string aspect) =>
+    private static Quantity? Resistance(CheckState state, PartDeclaration part, ToleratedSyntax value,
+        string aspect) =>
         PartValues.Toleranced(state, part, value, Dimension.Resistance, aspect) is { } r
         && PartValues.IsPositive(state, part, value, r, aspect) ? r.AsQuantity : null;
 
@@ -76,7 +78,8 @@ internal static class SwitchLowering
 
     private static string Position(bool isClosed) => isClosed ? "closed" : "open";
 
-    private static double? Cut(CheckState state, PartDeclaration part, SwitchEventSyntax syntax, ref bool isGood)
+    private static double? Cut(CheckState state, PartDeclaration part, SwitchEventSyntax syntax,
+        ref bool isGood)
     {
         if (syntax.Cut is not { } cut)
         {
@@ -85,7 +88,8 @@ internal static class SwitchLowering
 
         if (syntax.Closes)
         {
-            state.Findings.Error(cut.Span, $"`{part.Name}` closes here; only an opening waits for its own current",
+            state.Findings.Error(cut.Span,
+                $"`{part.Name}` closes here; only an opening waits for its own current",
                 "leave these words out");
             isGood = false;
             return null;
@@ -132,7 +136,8 @@ internal static class SwitchLowering
         var level = Expected.Fixed(state, when.Level, part.Scope, quantity.Dimension);
         if (when.InMagnitude && level < 0)
         {
-            state.Findings.Error(when.Level.Span, "a magnitude is never below zero", "give a level of zero or more");
+            state.Findings.Error(when.Level.Span, "a magnitude is never below zero",
+                "give a level of zero or more");
             return null;
         }
 

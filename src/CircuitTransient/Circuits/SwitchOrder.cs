@@ -14,7 +14,8 @@ internal static class SwitchOrder
         }
     }
 
-    /// <summary>Reports events that wait for each other in a ring, or for a later event of their own switch.</summary>
+    /// <summary>Reports events that wait for each other in a ring, or for a later event of their own
+    /// switch.</summary>
     public static bool WaitsInRings(CheckState state)
     {
         var found = false;
@@ -57,25 +58,28 @@ internal static class SwitchOrder
     }
 
     private static EventReference? Awaited(CheckState state, EventReference of) =>
-        state.Parts[of.Part] is Switch s && s.Events[of.Event].Trigger is AtInstant { Instant.After: var after }
+        state.Parts[of.Part] is Switch s && s.Events[of.Event]
+            .Trigger is AtInstant { Instant.After: var after }
             ? after : null;
 
     private static string Words(CheckState state, EventReference of) =>
-        $"{state.Declared[of.Part].Name} {(((Switch)state.Parts[of.Part]!).Events[of.Event].Closes ? "closes" : "opens")}";
+        Instants.Words(state, new Instant(0, of))["when ".Length..];
 
     private static void Check(CheckState state, Switch part, double? until)
     {
         double? last = null;
         foreach (var e in part.Events)
         {
-            var known = e.Trigger is AtInstant { Instant: var instant } ? Schedule.Resolve(instant, state.Parts) : null;
+            var known = e.Trigger is AtInstant { Instant: var instant }
+                ? Schedule.Resolve(instant, state.Parts) : null;
             var acts = e.Closes ? "closes" : "opens";
             if (known is { } time)
             {
                 if (last is { } before && time <= before)
                 {
                     state.Findings.Error(e.Span,
-                        $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, which is not after its event before at "
+                        $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, which is not after its event "
+                            + $"before at "
                         + Amount.Of(before, "s"), "put its events in the order of time");
                     return;
                 }
@@ -83,7 +87,8 @@ internal static class SwitchOrder
                 if (time > until)
                 {
                     state.Findings.Warn(e.Span,
-                        $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, after the study ends at {Amount.Of(until.Value, "s")}",
+                        $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, after the study ends at "
+                            + $"{Amount.Of(until.Value, "s")}",
                         $"end the study later, such as `until {Amount.Of(2 * time, "s")}`");
                 }
 

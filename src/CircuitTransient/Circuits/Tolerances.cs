@@ -6,11 +6,13 @@ namespace CircuitTransient.Circuits;
 /// <summary>Turns a value with its tolerance into a parameter and the formula that reads it.</summary>
 internal static class Tolerances
 {
-    /// <summary>The value as a formula: a parameter of its own if it is a plain number or has a tolerance, else
-    /// what follows from the named values in it.</summary>
+    /// <summary>The value as a formula: a parameter of its own if it is a plain number or has a tolerance,
+    /// else what follows from the named values in it.</summary>
     public static Evaluated? Apply(
-        Evaluated value, ToleratedSyntax syntax, Scope scope, ExpressionEvaluator evaluator, Findings findings,
-        ParameterList parameters, string owner, TextSpan span, string? aspect = null, bool isNamedValue = false)
+        Evaluated value, ToleratedSyntax syntax, Scope scope, ExpressionEvaluator evaluator,
+            Findings findings,
+        ParameterList parameters, string owner, TextSpan span, string? aspect = null, bool isNamedValue =
+            false)
     {
         Tolerance? tolerance = null;
         if (syntax.Tolerance is { } written)
@@ -32,10 +34,12 @@ internal static class Tolerances
             : value with { Formula = OnTopOf(value, own), Size = value.Size + 4 };
     }
 
-    // A tolerance upon named values: the own draw scales what follows from them, or shifts it where that is zero.
+    // A tolerance upon named values: the own draw scales what follows from them, or shifts it where that is
+    // zero.
     private static BinaryFormula OnTopOf(Evaluated value, Formula own) => value.Value == 0
         ? new BinaryFormula('+', value.AsFormula, own)
-        : new BinaryFormula('*', value.AsFormula, new BinaryFormula('/', own, new NumberFormula(value.Value)));
+        : new BinaryFormula('*', value.AsFormula,
+            new BinaryFormula('/', own, new NumberFormula(value.Value)));
 
     private static Tolerance? Range(
         Evaluated value, ExpressionSyntax valueSyntax, ToleranceSyntax written, Scope scope,
@@ -54,7 +58,8 @@ internal static class Tolerances
             {
                 var measure = Measure.Of(expected);
                 findings.Error(syntax.Span, written.IsAbsolute
-                    ? $"`{findings.Source[syntax.Span]}` is {Measure.Of(limit.Dimension).Phrase}; the limits of "
+                    ? $"`{findings.Source[syntax.Span]}` is {Measure.Of(limit.Dimension).Phrase}; the "
+                        + $"limits of "
                         + $"{measure.Phrase} are in {measure.UnitWord}"
                     : $"a tolerance is in per cent, not {Measure.Of(limit.Dimension).Phrase}",
                     written.IsAbsolute ? null : "for absolute limits write `between A and B`");
@@ -85,7 +90,8 @@ internal static class Tolerances
         if (value.Value < lower || value.Value > upper)
         {
             findings.Error(valueSyntax.Span,
-                $"`{findings.Source[valueSyntax.Span]}` lies outside its own limits `{findings.Source[written.Span]}`",
+                $"`{findings.Source[valueSyntax.Span]}` lies outside its own limits "
+                    + $"`{findings.Source[written.Span]}`",
                 "the nominal value stands between the limits or on one of them");
             return null;
         }

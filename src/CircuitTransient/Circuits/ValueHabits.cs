@@ -13,7 +13,8 @@ internal static class ValueHabits
         [SimplePartKind.Inductor] = (1e-12, 1e4),
     };
 
-    public static void Check(CheckState state, PartDeclaration part, SimplePartStatement syntax, Evaluated value)
+    public static void Check(CheckState state, PartDeclaration part, SimplePartStatement syntax,
+        Evaluated value)
     {
         var (least, most) = habits[syntax.Kind];
         var expression = syntax.Value.Value;
@@ -23,7 +24,8 @@ internal static class ValueHabits
         }
 
         state.Findings.Warn(expression.Span,
-            $"{Amount.Of(value.Value, Measure.Of(value.Dimension).Unit)} is far from the habit of {Article(part.Kind)} "
+            $"{Amount.Of(value.Value, Measure.Of(value.Dimension).Unit)} is far from the habit of "
+                + $"{Article(part.Kind)} "
             + $"{part.Kind}; is it meant?", Swapped(state.Text(expression.Span)));
     }
 
@@ -42,7 +44,7 @@ internal static class ValueHabits
         if (source is not null)
         {
             state.Findings.Warn(syntax.Value.Value.Span,
-                $"{Amount.Of(resistance, "Ω")} stands straight across the source `{source.Name}`; is it meant?",
+                $"{Amount.Of(resistance, "Ω")} stands across the source `{source.Name}`; is that meant?",
                 Swapped(state.Text(syntax.Value.Value.Span)));
         }
     }

@@ -4,8 +4,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>The points of a wave kept in a table of its own: time in the first column, value in the second, the
-/// units in the header as in <c>time (s),level (V)</c>.</summary>
+/// <summary>The points of a wave kept in a table of its own: time in the first column, value in the second,
+/// the units in the header as in <c>time (s),level (V)</c>.</summary>
 internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Points, Dimension Dimension)
 {
     private const int MostPoints = 100_000;
@@ -56,7 +56,8 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
             || UnitOf(header[1]) is not { } level
             || (level.Dimension != Dimension.Voltage && level.Dimension != Dimension.Current))
         {
-            Wrong(LineSpan(text, 1), "the first line does not name a time and a voltage or current with their units",
+            Wrong(LineSpan(text, 1),
+                "the first line does not name a time and a voltage or current with their units",
                 "write `time (s),level (V)`");
             return null;
         }
@@ -80,7 +81,8 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
             var cells = Cells(text, line);
             if (cells.Length < 2 || cells[0].Length == 0 || cells[1].Length == 0)
             {
-                Wrong(LineSpan(text, line), "a time or a value is missing in this line", "fill the gap or delete the line");
+                Wrong(LineSpan(text, line), "a time or a value is missing in this line",
+                    "fill the gap or delete the line");
                 return null;
             }
 
@@ -99,7 +101,8 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
 
             if (points.Count == MostPoints)
             {
-                Wrong(LineSpan(text, line), "this file has more than 100 000 points", "keep every second point, or fewer");
+                Wrong(LineSpan(text, line), "this file has more than 100 000 points",
+                    "keep every second point, or fewer");
                 return null;
             }
 
@@ -119,13 +122,15 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
         text.Line(line).Trim('\uFEFF').Split(',', StringSplitOptions.TrimEntries);
 
     private static double? Number(string cell) =>
-        double.TryParse(cell, NumberStyles.Float, CultureInfo.InvariantCulture, out var value) && double.IsFinite(value)
+        double.TryParse(cell, NumberStyles.Float, CultureInfo.InvariantCulture, out var value)
+            && double.IsFinite(value)
             ? value : null;
 
     private static (Dimension Dimension, double Scale)? UnitOf(string title)
     {
         var open = title.LastIndexOf('(');
-        return open >= 0 && title.EndsWith(')') && Unit.TryRead(title.AsSpan(open + 1, title.Length - open - 2), out var unit)
+        return open >= 0 && title.EndsWith(')')
+            && Unit.TryRead(title.AsSpan(open + 1, title.Length - open - 2), out var unit)
             ? (unit.Dimension, Math.Pow(10, unit.Exponent) * unit.Factor)
             : null;
     }

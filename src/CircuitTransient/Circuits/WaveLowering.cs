@@ -8,7 +8,8 @@ namespace CircuitTransient.Circuits;
 internal static class WaveLowering
 {
     /// <summary>The wave and what it is in, or null where an error was reported.</summary>
-    public static (Wave Wave, bool IsVoltage)? Lower(CheckState state, PartDeclaration part, WaveSyntax syntax)
+    public static (Wave Wave, bool IsVoltage)? Lower(CheckState state, PartDeclaration part,
+        WaveSyntax syntax)
     {
         var pieces = ImmutableArray.CreateBuilder<WavePiece>();
         Dimension? dimension = null;
@@ -42,7 +43,8 @@ internal static class WaveLowering
     private static (Quantity Scale, bool Succeeded) Scale(
         CheckState state, PartDeclaration part, WaveSyntax syntax, Evaluated? level)
     {
-        if (syntax.Tolerance is { } tolerance && (level is null || syntax.Terms[0].Piece is not ConstantSyntax))
+        if (syntax.Tolerance is { } tolerance
+            && (level is null || syntax.Terms[0].Piece is not ConstantSyntax))
         {
             state.Findings.Error(tolerance.Span, "a tolerance stands after a constant value only",
                 "name the level: `value Level : 540 V ±10 %`, then use `Level` in a wave of one term");

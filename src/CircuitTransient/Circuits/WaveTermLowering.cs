@@ -64,7 +64,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
     /// <summary>Signed level, in volts or amperes.</summary>
     private double? ReadLevel(ExpressionSyntax expression)
     {
-        if (state.Evaluator.Evaluate(expression, scope) is not { } value || !Fits(expression, value.Dimension))
+        if (state.Evaluator.Evaluate(expression, scope) is not { } value
+            || !Fits(expression, value.Dimension))
         {
             return null;
         }
@@ -98,7 +99,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
     }
 
     private static ImmutableArray<WavePiece> Constant(ConstantSyntax constant, double level) =>
-        [new WavePiece(0, double.PositiveInfinity, level, 0, 0, 0, 0, "constant", IsPerpetual: constant is not null)];
+        [new WavePiece(0, double.PositiveInfinity, level, 0, 0, 0, 0, "constant",
+            IsPerpetual: constant is not null)];
 
     private ImmutableArray<WavePiece>? Step(StepSyntax step, double level) =>
         Instants.Fixed(state, step.At, scope) is { } at ? [Held(at, level, $"step at {Time(at)}")] : null;
@@ -171,7 +173,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         var from = Instants.Fixed(state, decay.From, scope);
         var tau = Positive(decay.TimeConstant, "a time constant");
         return from is { } start && tau is { } t
-            ? [new WavePiece(start, double.PositiveInfinity, level, 0, 1 / t, 0, 0, $"decay from {Time(start)}")]
+            ? [new WavePiece(start, double.PositiveInfinity, level, 0, 1 / t, 0, 0,
+                $"decay from {Time(start)}")]
             : null;
     }
 
@@ -180,7 +183,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         var from = Instants.Fixed(state, impulse.From, scope);
         var front = Positive(impulse.Front, "a front time");
         var half = Positive(impulse.HalfValue, "a time to half-value");
-        if (from is not { } start || front is not { } t1 || half is not { } t2 || Dimension is not { } dimension)
+        if (from is not { } start || front is not { } t1 || half is not { } t2
+            || Dimension is not { } dimension)
         {
             return null;
         }
@@ -190,9 +194,11 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         {
             var definition = isVoltage ? "IEC 60060-1 front and half-value times" : "10–90 % × 1.25 front";
             state.Findings.Error(TextSpan.Between(impulse.Front.Span, impulse.HalfValue.Span),
-                $"no double exponential has a half-value time of {Amount.Of(Math.Round(t2 / t1, 4), "")} times its front; "
+                $"no double exponential has a half-value time of {Amount.Of(Math.Round(t2 / t1, 4), "")} "
+                    + $"times its front; "
                 + $"the least is {Amount.Of(Math.Round(DoubleExponential.LeastRatio(isVoltage), 4), "")}",
-                $"that is the limit t·e^(−t), by {definition}; give such a wave as `straight lines` or by its circuit");
+                $"that is the limit t·e^(−t), by {definition}; give such a wave as `straight lines` or by "
+                    + $"its circuit");
             return null;
         }
 
@@ -243,7 +249,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         }
 
         Dimension = read.Dimension;
-        return StraightLines.Pieces([.. read.Points.Select(p => (p.Time, isSubtracted ? -p.Level : p.Level))]);
+        return StraightLines.Pieces(
+            [.. read.Points.Select(p => (p.Time, isSubtracted ? -p.Level : p.Level))]);
     }
 
     private (double From, double To)? Span(TimeSyntax? from, TimeSyntax to, TextSpan span, string what)
@@ -277,7 +284,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
             return value;
         }
 
-        state.Findings.Error(expression.Span, $"{what} is more than zero, not `{state.Text(expression.Span)}`");
+        state.Findings.Error(expression.Span,
+            $"{what} is more than zero, not `{state.Text(expression.Span)}`");
         return null;
     }
 

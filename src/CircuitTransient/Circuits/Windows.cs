@@ -5,8 +5,10 @@ namespace CircuitTransient.Circuits;
 /// <summary>Turns written windows of time into checked ones.</summary>
 internal static class Windows
 {
-    /// <summary>The window, or null where an error was reported; one that is empty or lies past the end is.</summary>
-    public static Window? Lower(CheckState state, WindowSyntax syntax, Scope scope, double? until, string consequence)
+    /// <summary>The window, or null where an error was reported; one that is empty or lies past the end
+    /// is.</summary>
+    public static Window? Lower(CheckState state, WindowSyntax syntax, Scope scope, double? until,
+        string consequence)
     {
         var from = syntax.From is null ? null : Instants.Lower(state, syntax.From, scope);
         var to = syntax.To is null ? null : Instants.Lower(state, syntax.To, scope);
@@ -20,7 +22,8 @@ internal static class Windows
         if (start > end)
         {
             state.Findings.Error(syntax.To!.Span,
-                $"{consequence}: its window from {Amount.Of(start.Value, "s")} to {Amount.Of(end.Value, "s")} is empty",
+                $"{consequence}: its window from {Amount.Of(start.Value, "s")} "
+                + $"to {Amount.Of(end.Value, "s")} is empty",
                 "give the earlier time first");
             return null;
         }
@@ -29,7 +32,8 @@ internal static class Windows
         {
             state.Findings.Error(syntax.From!.Span,
                 $"{consequence}: its window starts at {Amount.Of(start.Value, "s")}, and the study ends at "
-                + Amount.Of(until.Value, "s"), $"write `until {Amount.Of(2 * start.Value, "s")}`, or an earlier window");
+                + Amount.Of(until.Value, "s"),
+                    $"write `until {Amount.Of(2 * start.Value, "s")}`, or an earlier window");
             return null;
         }
 
