@@ -1,4 +1,6 @@
 using System.Collections.Immutable;
+using System.Security.Cryptography;
+using System.Text;
 
 namespace CircuitTransient.Text;
 
@@ -32,6 +34,9 @@ public sealed class SourceText
 
     /// <summary>The characters.</summary>
     public string Content { get; }
+
+    /// <summary>SHA-256 of the text in UTF-8, in lower-case hexadecimal digits.</summary>
+    public string Sha256 => Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(Content)));
 
     /// <summary>The number of lines; an empty text has one.</summary>
     public int LineCount => lineStarts.Length;
