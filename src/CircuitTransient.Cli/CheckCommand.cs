@@ -29,7 +29,7 @@ internal sealed class CheckCommand : Command
         switch (outcome)
         {
             case Mistakes:
-                return ExitStatus.Mistake;
+                return Math.Max(ExitStatus.Mistake, reading.Status);
             case NoUniqueSolution:
                 return ExitStatus.NoUniqueSolution;
             default:

@@ -3,11 +3,23 @@ using CircuitTransient.Text;
 namespace CircuitTransient.Cli;
 
 /// <summary>A circuit file that was read, or the exit status that says why not.</summary>
-/// <param name="Path">Its name as the user gave it.</param>
-/// <param name="Source">Its text; null where it could not be read.</param>
-/// <param name="Status">Success, or what kept it from being read.</param>
-public sealed record CircuitFile(string Path, SourceText? Source, int Status)
+public sealed class CircuitFile
 {
+    private readonly string path;
+
+    private CircuitFile(string path, SourceText? source, int status)
+    {
+        this.path = path;
+        Source = source;
+        Status = status;
+    }
+
+    /// <summary>Its text; null where it could not be read.</summary>
+    public SourceText? Source { get; }
+
+    /// <summary>Success, or what kept it, or a file it names, from being read.</summary>
+    public int Status { get; private set; }
+
     /// <summary>Reads a file; what is wrong with it has been said when this returns.</summary>
     public static CircuitFile Read(string path, Streams streams)
     {
@@ -25,11 +37,19 @@ public sealed record CircuitFile(string Path, SourceText? Source, int Status)
         }
     }
 
-    /// <summary>Reads a file that the circuit names, found beside the circuit.</summary>
+    /// <summary>Reads a file that the circuit names, found beside the circuit; nothing where that fails.</summary>
     public Outcome<SourceText> ReadBeside(string name)
     {
-        var folder = System.IO.Path.GetDirectoryName(Path) ?? "";
-        return Decode(name, System.IO.Path.Combine(folder, name));
+        var beside = Path.Combine(Path.GetDirectoryName(path) ?? "", name);
+        try
+        {
+            return Decode(beside, beside);
+        }
+        catch (Exception trouble) when (trouble.IsFileTrouble())
+        {
+            Status = ExitStatus.FileTrouble;
+            return new(null, []);
+        }
     }
 
     private static Outcome<SourceText> Decode(string name, string path)

@@ -72,7 +72,7 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
         {
             Solved solved => Finish(file, solved.Result),
             NoUniqueSolution => new Answer(ExitStatus.NoUniqueSolution, "not solved, no unique solution"),
-            _ => new Answer(ExitStatus.Mistake, "not solved, the circuit has mistakes"),
+            _ => new Answer(Math.Max(ExitStatus.Mistake, reading.Status), "not solved, the circuit has mistakes"),
         };
     }
 
