@@ -45,7 +45,7 @@ public static class App
 
     private static RootCommand Commands(Streams streams, CancellationToken cancellation)
     {
-        var root = new RootCommand("Exact transients of switched RLC circuits, every peak traced to its causes.")
+        var root = new RootCommand("Exact transients of switched circuits, every peak traced to its causes.")
         {
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),

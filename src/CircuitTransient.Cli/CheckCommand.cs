@@ -24,18 +24,23 @@ internal sealed class CheckCommand : Command
             return reading.Status;
         }
 
-        var outcome = TransientAnalysis.Check(source, reading.ReadBeside, cancellation);
-        streams.Report(outcome.Diagnostics);
-        switch (outcome)
+        var outcome = TransientAnalysis.Check(source, reading.ReadBeside);
+        cancellation.ThrowIfCancellationRequested();
+        var unsolvable = outcome.Succeeded ? TransientAnalysis.FindUnsolvable(outcome.Value) : [];
+        cancellation.ThrowIfCancellationRequested();
+        streams.Report([.. outcome.Diagnostics, .. unsolvable]);
+        if (!outcome.Succeeded)
         {
-            case Mistakes:
-                return Math.Max(ExitStatus.Mistake, reading.Status);
-            case NoUniqueSolution:
-                return ExitStatus.NoUniqueSolution;
-            default:
-                streams.Output.WriteLine($"{file}: no mistakes{Warnings(outcome.Diagnostics.Length)}");
-                return ExitStatus.Success;
+            return Math.Max(ExitStatus.Mistake, reading.Status);
         }
+
+        if (!unsolvable.IsEmpty)
+        {
+            return ExitStatus.NoUniqueSolution;
+        }
+
+        streams.Output.WriteLine($"{file}: no mistakes{Warnings(outcome.Diagnostics.Length)}");
+        return ExitStatus.Success;
     }
 
     private static string Warnings(int count) => count switch

@@ -37,7 +37,8 @@ public sealed class CircuitFile
         }
     }
 
-    /// <summary>Reads a file that the circuit names, found beside the circuit; nothing where that fails.</summary>
+    /// <summary>Reads a file that the circuit names, found beside the circuit; nothing where that
+    /// fails.</summary>
     public Outcome<SourceText> ReadBeside(string name)
     {
         var beside = Path.Combine(Path.GetDirectoryName(path) ?? "", name);
@@ -54,10 +55,10 @@ public sealed class CircuitFile
 
     private static Outcome<SourceText> Decode(string name, string path)
     {
-        using var stream = new FileStream(path, FileMode.Open, FileAccess.Read, FileShare.ReadWrite, bufferSize: 0);
+        using var stream = File.OpenRead(path);
         var bytes = new byte[1 << 16];
         var length = 0;
-        while (length <= TextDecoder.LargestFile && stream.Read(bytes.AsSpan(length)) is > 0 and var count)
+        while (length <= SourceText.LargestFile && stream.Read(bytes.AsSpan(length)) is > 0 and var count)
         {
             length += count;
             if (length == bytes.Length)
@@ -66,6 +67,6 @@ public sealed class CircuitFile
             }
         }
 
-        return TextDecoder.Decode(name, bytes.AsSpan(0, length));
+        return SourceText.Read(name, bytes.AsSpan(0, length));
     }
 }

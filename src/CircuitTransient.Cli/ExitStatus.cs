@@ -36,7 +36,8 @@ public static class ExitStatus
             return SelfCheckFailed;
         }
 
-        var isDoubtful = !result.Warnings.IsEmpty || result.Parts.Any(part => part.LinearUpTo is { Holds: false });
+        var isDoubtful = !result.Warnings.IsEmpty
+            || result.Parts.Any(part => part.LinearUpTo is { Holds: false });
         return result.AllHold && !(isStrict && isDoubtful) ? Success : RequirementBroken;
     }
 }

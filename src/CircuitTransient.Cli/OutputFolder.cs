@@ -33,8 +33,8 @@ public static class OutputFolder
         return null;
     }
 
-    /// <summary>Writes all files under temporary names, then puts all of them in place: none is ever seen half
-    /// written.</summary>
+    /// <summary>Writes all files under temporary names, then puts all of them in place: none is ever seen
+    /// half written.</summary>
     public static void Write(string folder, IReadOnlyList<OutputFile> files, CancellationToken cancellation)
     {
         Directory.CreateDirectory(folder);

@@ -2,7 +2,8 @@ using System.Diagnostics;
 
 namespace CircuitTransient.Cli;
 
-/// <summary>A line on the terminal's stderr while work takes longer than half a second; gone when it ends.</summary>
+/// <summary>A line on the terminal's stderr while work takes longer than half a second; gone when it
+/// ends.</summary>
 public sealed class Progress : IDisposable
 {
     private static readonly TimeSpan Patience = TimeSpan.FromMilliseconds(500);

@@ -1,4 +1,6 @@
 using System.CommandLine;
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
 
@@ -28,16 +30,6 @@ internal sealed class SolveCommand : Command
         CustomParser = Words.WholeNumber(2, 1_000_000),
     };
 
-    private readonly Option<string> by = Words.Choice(
-        "--by", "What counts as a cause: a source or stored charge (origin), each piece of a source (edge).",
-        "origin", "edge");
-
-    private readonly Option<string> after = new("--after")
-    {
-        Description = "Also break the peaks down since an event: \"Kmain closes\", an instant, or last.",
-        HelpName = "EVENT",
-    };
-
     private readonly Option<bool> json = new("--json") { Description = "Print the results document." };
 
     private readonly Option<bool> noFiles = new("--no-files") { Description = "Write no files." };
@@ -57,7 +49,7 @@ internal sealed class SolveCommand : Command
         : base("solve", "Solve circuits, print a summary and write the results.")
     {
         Add(files);
-        foreach (var option in (Option[])[folder, at, samples, by, after, json, noFiles, quiet, strict])
+        foreach (var option in (Option[])[folder, at, samples, json, noFiles, quiet, strict])
         {
             Add(option);
         }
@@ -69,17 +61,19 @@ internal sealed class SolveCommand : Command
 
     private SolveOptions? Read(ParseResult parsed, Streams streams)
     {
-        var analysis = new AnalysisOptions
-        {
-            Samples = parsed.GetRequiredValue(samples),
-            By = parsed.GetRequiredValue(by) == "edge" ? CauseSplit.Edge : CauseSplit.Origin,
-            After = parsed.GetValue(after),
-        };
-        return new SolveOptions(
-            analysis,
-            parsed.GetValue(noFiles) ? null : parsed.GetRequiredValue(folder),
-            parsed.GetValue(json),
-            parsed.GetValue(quiet),
-            parsed.GetValue(strict));
+        var text = parsed.GetValue(at);
+        var instants = text is null
+            ? new(InstantList.Empty, [])
+            : InstantListParser.Parse(new SourceText(at.Name, text));
+        streams.Report(instants.Diagnostics);
+        return instants.Succeeded
+            ? new SolveOptions(
+                instants.Value,
+                parsed.GetRequiredValue(samples),
+                parsed.GetValue(noFiles) ? null : parsed.GetRequiredValue(folder),
+                parsed.GetValue(json),
+                parsed.GetValue(quiet),
+                parsed.GetValue(strict))
+            : null;
     }
 }

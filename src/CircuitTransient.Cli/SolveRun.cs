@@ -1,19 +1,24 @@
 using System.Collections.Immutable;
+using System.Diagnostics;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
 
 /// <summary>One call of <c>solve</c>: each file solved, written and spoken of.</summary>
 public sealed class SolveRun(SolveOptions options, Streams streams, CancellationToken cancellation)
 {
+    private AnalysisOptions Analysis =>
+        new([.. options.At.Instants.Select(instant => instant.Value)], options.SampleCount);
+
     /// <summary>Solves the files in order.</summary>
     /// <returns>The worst of their exit statuses.</returns>
     public int Run(IReadOnlyList<string> files)
     {
         if (TwoOfOneStem(files) is { } stem)
         {
-            streams.Complain($"two of the files are named `{stem}`: their results would overwrite each other");
+            streams.Complain($"two files are named `{stem}`: their results would overwrite each other");
             return ExitStatus.Mistake;
         }
 
@@ -29,12 +34,14 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
             }
         }
 
-        WriteResults(files.Count, [.. answers.Select(answer => answer.Result).OfType<TransientResult>()], answers[0]);
+        var results = answers.Select(answer => answer.Result).OfType<TransientResult>();
+        WriteResults(files.Count, [.. results], answers[0]);
         return answers.Max(answer => answer.Status);
     }
 
     private static string? TwoOfOneStem(IReadOnlyList<string> files) =>
-        files.GroupBy(OutputFolder.StemOf, StringComparer.Ordinal).FirstOrDefault(group => group.Count() > 1)?.Key;
+        files.GroupBy(OutputFolder.StemOf, StringComparer.Ordinal)
+            .FirstOrDefault(group => group.Count() > 1)?.Key;
 
     private void WriteResults(int fileCount, ImmutableArray<TransientResult> results, Answer first)
     {
@@ -64,20 +71,45 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
         }
 
         using var progress = new Progress(file, streams);
-        var outcome = TransientAnalysis.Run(source, options.Analysis, reading.ReadBeside, cancellation);
+        var outcome = TransientAnalysis.Run(source, Analysis, reading.ReadBeside, cancellation);
         cancellation.ThrowIfCancellationRequested();
         progress.Dispose();
-        streams.Report(outcome.Diagnostics);
-        return outcome switch
+        switch (outcome)
         {
-            Solved solved => Finish(file, solved.Result),
-            NoUniqueSolution => new Answer(ExitStatus.NoUniqueSolution, "not solved, no unique solution"),
-            _ => new Answer(Math.Max(ExitStatus.Mistake, reading.Status), "not solved, the circuit has mistakes"),
-        };
+            case Solved { Result: var result }:
+                return IsWithin(result.Until)
+                    ? Finish(file, result)
+                    : new(ExitStatus.Mistake, "ends before an instant asked for");
+            case NoUniqueSolution trouble:
+                streams.Report(trouble.Diagnostics);
+                return new(ExitStatus.NoUniqueSolution, "not solved, no unique solution");
+            case Mistakes mistakes:
+                streams.Report(mistakes.Diagnostics);
+                return new(Math.Max(ExitStatus.Mistake, reading.Status), "not solved, it has mistakes");
+            default:
+                throw new UnreachableException($"no status for {outcome}");
+        }
+    }
+
+    /// <summary>Whether every instant asked for lies in the study; says which do not.</summary>
+    private bool IsWithin(double until)
+    {
+        var end = EngineeringNumber.Format(until, "s");
+        var late = options.At.Instants.Where(instant => instant.Value > until).Select(instant =>
+            Diagnostic.Error(options.At.Source, instant.Span, $"the study ends before it, at {end}"));
+        var mistakes = late.ToImmutableArray();
+        streams.Report(mistakes);
+        return mistakes.IsEmpty;
     }
 
     private Answer Finish(string file, TransientResult result)
     {
+        foreach (var warning in result.Warnings)
+        {
+            var place = warning.Line > 0 ? $"{file}:{warning.Line}" : file;
+            streams.Error.WriteLine($"{place}: warning: {warning.Text}");
+        }
+
         var status = ExitStatus.Of(result, options.IsStrict);
         var verdict = TerminalSummary.Verdict(result);
         if (options.Folder is null)
@@ -90,7 +122,7 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
         try
         {
             OutputFolder.Write(folder, files, cancellation);
-            return new Answer(status, verdict, result) { Written = [.. files.Select(f => $"{folder}/{f.Name}")] };
+            return new(status, verdict, result) { Written = [.. files.Select(f => $"{folder}/{f.Name}")] };
         }
         catch (Exception trouble) when (trouble.IsFileTrouble())
         {

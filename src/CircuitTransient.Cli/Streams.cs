@@ -22,13 +22,8 @@ public sealed record Streams(TextWriter Output, TextWriter Error, bool ErrorIsTe
     public void Complain(string message) => Error.WriteLine($"error: {message}");
 
     /// <summary>Diagnostics with their places.</summary>
-    public void Report(ImmutableArray<Diagnostic> diagnostics)
-    {
-        foreach (var diagnostic in diagnostics)
-        {
-            Error.WriteLine(diagnostic.Message);
-        }
-    }
+    public void Report(ImmutableArray<Diagnostic> diagnostics) =>
+        Error.Write(DiagnosticText.Render(diagnostics));
 
     /// <inheritdoc/>
     public void Dispose()

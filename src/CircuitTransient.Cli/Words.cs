@@ -21,24 +21,6 @@ public static class Words
         return files;
     }
 
-    /// <summary>An option whose value is one of a few words.</summary>
-    public static Option<string> Choice(string name, string description, params string[] words)
-    {
-        var option = new Option<string>(name) { Description = description, DefaultValueFactory = _ => words[0] };
-        option.CompletionSources.Add(words);
-        option.CustomParser = result =>
-        {
-            var word = result.Tokens is [var token] ? token.Value : "";
-            if (!words.Contains(word))
-            {
-                result.AddError($"`{word}` is not one of the words of {name}: {string.Join(", ", words)}");
-            }
-
-            return word;
-        };
-        return option;
-    }
-
     /// <summary>Reads a whole number within limits.</summary>
     public static Func<ArgumentResult, int> WholeNumber(int least, int most) => result =>
     {

@@ -23,5 +23,19 @@ internal static class Circuits
         until 5 ms
         """;
 
+    // A line of 140 stored quantities, watched at its far end: seconds of work.
+    public const string Slow =
+        """
+        source Feed at n[1] : step of 10 V
+        repeat 70 as k
+          inductor  L[k] from n[k] to m[k] : 1 mH
+          resistor  R[k] from m[k] to n[k+1] : 10 mΩ
+          capacitor C[k] from n[k+1] to ground : 1 µF
+        end
+        resistor Load from n[71] to ground : 31 Ω
+        observe voltage of n[71]
+        until 100 ms
+        """;
+
     public static string Broken => Holding.Replace("at most 11 V", "at most 5 V", StringComparison.Ordinal);
 }

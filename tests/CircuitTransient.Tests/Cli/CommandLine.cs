@@ -2,7 +2,8 @@ using CircuitTransient.Cli;
 
 namespace CircuitTransient.Tests.Cli;
 
-/// <summary>Runs the command line inside the test, with a folder of its own for circuits and results.</summary>
+/// <summary>Runs the command line inside the test, with a folder of its own for circuits and
+/// results.</summary>
 public sealed class CommandLine : IDisposable
 {
     private readonly DirectoryInfo folder = Directory.CreateTempSubdirectory("circuit-transient-");

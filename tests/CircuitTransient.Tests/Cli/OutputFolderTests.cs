@@ -32,7 +32,8 @@ public sealed class OutputFolderTests : IDisposable
     {
         Directory.CreateDirectory(Path.Combine(commandLine.Results, "b.txt"));
 
-        Assert.ThrowsAny<Exception>(() => Write(OutputFile.OfText("a.txt", "a"), OutputFile.OfText("b.txt", "b")));
+        Assert.ThrowsAny<Exception>(
+            () => Write(OutputFile.OfText("a.txt", "a"), OutputFile.OfText("b.txt", "b")));
 
         Assert.Equal(["a.txt"], commandLine.Written);
     }

@@ -3,7 +3,8 @@ using CircuitTransient.Cli;
 
 namespace CircuitTransient.Tests.Cli;
 
-/// <summary>Runs the program as a process of its own, by way of the shell, with `circuit-transient` as a word.</summary>
+/// <summary>Runs the program as a process of its own, by way of the shell, with
+/// <c>circuit-transient</c> as a word.</summary>
 internal static class Shell
 {
     private static readonly string Program = Path.ChangeExtension(typeof(App).Assembly.Location, ".dll");
@@ -18,12 +19,14 @@ internal static class Shell
         return new CommandLineAnswer(shell.ExitCode, output, error.Result);
     }
 
-    /// <summary>Starts a line of the shell in a folder; `exec` makes the program the process itself.</summary>
+    /// <summary>Starts a line of the shell in a folder; <c>exec</c> makes the program the process
+    /// itself.</summary>
     public static Process Start(string folder, string line)
     {
         var start = new ProcessStartInfo("bash", ["-c", line])
         {
             WorkingDirectory = folder,
+            UseShellExecute = false,
             RedirectStandardOutput = true,
             RedirectStandardError = true,
         };

@@ -16,13 +16,15 @@ public sealed partial class ReadmeTests : IDisposable
     [Fact]
     public void Each_command_prints_what_stands_below_it()
     {
-        foreach (Match circuit in Blocks("cause"))
+        foreach (var circuit in Blocks("cause"))
         {
             var text = circuit.Groups["text"].Value;
             commandLine.Circuit(text.Split('\n')[0].Trim('#', ' '), text);
         }
 
-        var commands = Blocks("console").SelectMany(block => Command().Matches(block.Groups["text"].Value)).ToList();
+        var commands = Blocks("console")
+            .SelectMany(block => Command().Matches(block.Groups["text"].Value))
+            .ToList();
 
         Assert.NotEmpty(commands);
         Assert.All(commands, command =>
@@ -35,7 +37,7 @@ public sealed partial class ReadmeTests : IDisposable
     [Fact]
     public void The_demonstration_is_solved_and_holds()
     {
-        var line = Regex.Match(Readme, "^dotnet run .* -- (.*)$", RegexOptions.Multiline).Groups[1].Value;
+        var line = Demonstration().Match(Readme).Groups["words"].Value;
         Assert.NotEmpty(line);
         var words = line.Split(' ').Select(word => word.EndsWith(".cause", StringComparison.Ordinal)
             ? Path.Combine(Repository.Root, word)
@@ -46,8 +48,16 @@ public sealed partial class ReadmeTests : IDisposable
         Assert.Equal((ExitStatus.Success, ""), (run.Status, run.Error));
     }
 
-    private static MatchCollection Blocks(string language) =>
-        Regex.Matches(Readme, $"^```{language}\n(?<text>.*?)^```$", RegexOptions.Multiline | RegexOptions.Singleline);
+    private static IEnumerable<Match> Blocks(string language) =>
+        Block().Matches(Readme).Where(block => block.Groups["language"].Value == language);
+
+    [GeneratedRegex(@"^```(?<language>\w+)\n(?<text>.*?)^```$",
+        RegexOptions.Multiline | RegexOptions.Singleline | RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex Block();
+
+    [GeneratedRegex("^dotnet run .* -- (?<words>.*)$",
+        RegexOptions.Multiline | RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex Demonstration();
 
     [GeneratedRegex(@"^\$ (?<line>[^\n]*)\n(?<answer>(?!\$ ).*?)(?=^\$ |\z)",
         RegexOptions.Multiline | RegexOptions.Singleline | RegexOptions.ExplicitCapture, 1000)]
