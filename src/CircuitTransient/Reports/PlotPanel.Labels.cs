@@ -84,16 +84,16 @@ internal sealed partial class PlotPanel
 
     private void AddPeak(Extreme extreme, bool isMax)
     {
-        if (extreme.Value is not { } value || extreme.Time < window.From || extreme.Time > window.To)
+        if (extreme.Value is not { } value || !window.Holds(extreme.Time))
         {
             return;
         }
 
         var (x, y) = (time.Place(extreme.Time), level.Place(value));
-        var when =
-            window.OriginName is not null && extreme.Time >= window.Origin
-                ? $", {EngineeringNumber.Format(extreme.Time - window.Origin, "s")} after {window.OriginName}"
-                : $" at {EngineeringNumber.Format(extreme.Time, "s")}";
+        var since = window.OriginName is null
+            ? null
+            : InstantWords.SinceEvent(result, extreme.Time, extreme.Side);
+        var when = since is null ? $" at {EngineeringNumber.Format(extreme.Time, "s")}" : $", {since}";
         var text = $"{EngineeringNumber.Format(value, observation.Unit)}{when}";
         var half = fonts.Width(text, Small, isStrong: true) / 2;
         var anchor =

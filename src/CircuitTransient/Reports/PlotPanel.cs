@@ -13,7 +13,7 @@ internal sealed partial class PlotPanel
     private const double Left = 76;
     private const double Right = Width - 210;
     private const int MostCauses = 6;
-    private const double SmallestCause = 0.005; // of the panel's range: a line that would lie on the zero line
+    private const double SmallestCause = 0.005; // of the panel's range: less would lie on the zero line
 
     private readonly TransientResult result;
     private readonly ObservationResult observation;

@@ -53,6 +53,9 @@ internal sealed record PlotWindow(double From, double To, double Origin = 0, str
             : new PlotWindow(from, to);
     }
 
+    /// <summary>Whether an instant lies in it, the rounding of its ends apart.</summary>
+    public bool Holds(double time) => time >= From - (SameInstant * To) && time <= To + (SameInstant * To);
+
     /// <summary>The window in words: <c>the first 15.5 ms after Kmain closes</c>.</summary>
     public string Words()
     {

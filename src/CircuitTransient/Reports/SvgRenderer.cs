@@ -13,6 +13,7 @@ public static class SvgRenderer
         var svg = new StringBuilder();
         var (width, height) = (Number(drawing.Width), Number(drawing.Height));
         svg.Append($"<svg xmlns=\"http://www.w3.org/2000/svg\" width=\"{width}\" height=\"{height}\"");
+        svg.Append(" stroke-linejoin=\"round\"");
         svg.Append($" viewBox=\"0 0 {width} {height}\" role=\"img\"");
         svg.Append(" font-family=\"Inter, 'Segoe UI', 'Helvetica Neue', Arial, sans-serif\">\n");
         svg.Append($"<title>{Escaped(drawing.Title)}</title>\n");
@@ -29,7 +30,7 @@ public static class SvgRenderer
         shape switch
         {
             PolylineShape line =>
-                $"<polyline points=\"{Points(line.Points)}\" fill=\"none\" stroke-linejoin=\"round\"{Of(line.Stroke)}/>",
+                $"<polyline points=\"{Points(line.Points)}\" fill=\"none\"{Of(line.Stroke)}/>",
             LineShape line =>
                 $"<line x1=\"{Number(line.X1)}\" y1=\"{Number(line.Y1)}\" x2=\"{Number(line.X2)}\""
                     + $" y2=\"{Number(line.Y2)}\"{Of(line.Stroke)}/>",
@@ -53,7 +54,7 @@ public static class SvgRenderer
         };
         var weight = text.IsStrong ? " font-weight=\"600\"" : "";
         var halo = text.HasHalo
-            ? $" stroke=\"{PlotStyle.Paper}\" stroke-width=\"3\" stroke-linejoin=\"round\" paint-order=\"stroke\""
+            ? $" stroke=\"{PlotStyle.Paper}\" stroke-width=\"3\" paint-order=\"stroke\""
             : "";
         return $"<text x=\"{Number(text.X)}\" y=\"{Number(text.Y)}\" font-size=\"{Number(text.Size)}\""
             + $" fill=\"{text.Fill}\"{anchor}{weight}{halo}>{Escaped(text.Text)}</text>";
