@@ -2,11 +2,12 @@ using System.Runtime.CompilerServices;
 
 namespace CircuitTransient.Numerics;
 
-/// <summary>A real number held as the unevaluated sum of two doubles, about 106 bits (relative rounding 2⁻¹⁰⁴).</summary>
+/// <summary>A real number held as the unevaluated sum of two doubles, about 106 bits (relative rounding
+/// 2⁻¹⁰⁴).</summary>
 /// <param name="Hi">The nearest double.</param>
 /// <param name="Lo">What <paramref name="Hi"/> leaves, at most half its last bit.</param>
-/// <remarks>Sum, product and quotient after M. Joldeş, J.-M. Muller, V. Popescu, "Tight and rigorous error bounds
-/// for basic building blocks of double-word arithmetic", ACM TOMS 44 (2017), algorithms 6, 12 and 17
+/// <remarks>Sum, product and quotient after M. Joldeş, J.-M. Muller, V. Popescu, "Tight and rigorous error
+/// bounds for basic building blocks of double-word arithmetic", ACM TOMS 44 (2017), algorithms 6, 12 and 17
 /// (from memory).</remarks>
 public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComparable<DoubleDouble>
 {
@@ -120,19 +121,22 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     }
 
     /// <summary>Whether x is below y.</summary>
-    public static bool operator <(DoubleDouble x, DoubleDouble y) => x.Hi < y.Hi || (x.Hi == y.Hi && x.Lo < y.Lo);
+    public static bool operator <(DoubleDouble x, DoubleDouble y) =>
+        x.Hi < y.Hi || (x.Hi == y.Hi && x.Lo < y.Lo);
 
     /// <summary>Whether x is above y.</summary>
     public static bool operator >(DoubleDouble x, DoubleDouble y) => y < x;
 
     /// <summary>Whether x is at most y.</summary>
-    public static bool operator <=(DoubleDouble x, DoubleDouble y) => x.Hi < y.Hi || (x.Hi == y.Hi && x.Lo <= y.Lo);
+    public static bool operator <=(DoubleDouble x, DoubleDouble y) =>
+        x.Hi < y.Hi || (x.Hi == y.Hi && x.Lo <= y.Lo);
 
     /// <summary>Whether x is at least y.</summary>
     public static bool operator >=(DoubleDouble x, DoubleDouble y) => y <= x;
 
     /// <inheritdoc/>
-    public int CompareTo(DoubleDouble other) => Hi == other.Hi ? Lo.CompareTo(other.Lo) : Hi.CompareTo(other.Hi);
+    public int CompareTo(DoubleDouble other) =>
+        Hi == other.Hi ? Lo.CompareTo(other.Lo) : Hi.CompareTo(other.Hi);
 
     /// <summary>Both words, as "hi + lo".</summary>
     public override string ToString() => Lo == 0 ? $"{Hi:R}" : $"{Hi:R} + {Lo:R}";

@@ -36,7 +36,8 @@ public readonly record struct DoubleDoubleComplex(DoubleDouble Re, DoubleDouble 
     public static implicit operator DoubleDoubleComplex(Complex value) => new(value.Real, value.Imaginary);
 
     /// <summary>The nearest number in doubles.</summary>
-    public static explicit operator Complex(DoubleDoubleComplex value) => new((double)value.Re, (double)value.Im);
+    public static explicit operator Complex(DoubleDoubleComplex value) =>
+        new((double)value.Re, (double)value.Im);
 
     /// <summary>The number with its sign turned.</summary>
     public static DoubleDoubleComplex operator -(DoubleDoubleComplex x) => new(-x.Re, -x.Im);
@@ -56,15 +57,19 @@ public readonly record struct DoubleDoubleComplex(DoubleDouble Re, DoubleDouble 
         new((x.Re * y.Re) - (x.Im * y.Im), (x.Re * y.Im) + (x.Im * y.Re));
 
     /// <summary>Product.</summary>
-    public static DoubleDoubleComplex operator *(DoubleDoubleComplex x, DoubleDouble y) => new(x.Re * y, x.Im * y);
+    public static DoubleDoubleComplex operator *(DoubleDoubleComplex x, DoubleDouble y) =>
+        new(x.Re * y, x.Im * y);
 
     /// <summary>Product.</summary>
-    public static DoubleDoubleComplex operator *(DoubleDouble x, DoubleDoubleComplex y) => new(x * y.Re, x * y.Im);
+    public static DoubleDoubleComplex operator *(DoubleDouble x, DoubleDoubleComplex y) =>
+        new(x * y.Re, x * y.Im);
 
     /// <summary>Quotient.</summary>
-    public static DoubleDoubleComplex operator /(DoubleDoubleComplex x, DoubleDouble y) => new(x.Re / y, x.Im / y);
+    public static DoubleDoubleComplex operator /(DoubleDoubleComplex x, DoubleDouble y) =>
+        new(x.Re / y, x.Im / y);
 
-    /// <summary>Quotient, scaled by a power of two so that the square of the divisor neither overflows nor vanishes.
+    /// <summary>Quotient, scaled by a power of two so that the square of the divisor neither overflows nor
+    /// vanishes.
     /// </summary>
     public static DoubleDoubleComplex operator /(DoubleDoubleComplex x, DoubleDoubleComplex y)
     {

@@ -3,8 +3,8 @@ using System.Collections.Immutable;
 namespace CircuitTransient.Numerics;
 
 // Elementary functions, to a few units of the last bit. Reduction and Taylor series as in Y. Hida, X. S. Li,
-// D. H. Bailey, "Library for double-double and quad-double arithmetic" (2007), from memory. Constants computed with
-// 400 bits.
+// D. H. Bailey, "Library for double-double and quad-double arithmetic" (2007), from memory. Constants
+// computed with 400 bits.
 public readonly partial record struct DoubleDouble
 {
     private const int HalvingSteps = 9; // e^r − 1 is summed at r/2⁹, |r| ≤ ln 2 / 2, where ten terms suffice
@@ -60,7 +60,8 @@ public readonly partial record struct DoubleDouble
     public static DoubleDouble ScaleByPowerOfTwo(DoubleDouble x, int n) =>
         new(Math.ScaleB(x.Hi, n), Math.ScaleB(x.Lo, n));
 
-    /// <summary>√x by one correction of the double root (A. H. Karp, P. Markstein 1997, from memory).</summary>
+    /// <summary>√x by one correction of the double root (A. H. Karp, P. Markstein 1997, from
+    /// memory).</summary>
     public static DoubleDouble Sqrt(DoubleDouble x)
     {
         double s = Math.Sqrt(x.Hi);

@@ -6,7 +6,8 @@ namespace CircuitTransient.Tests.Numerics;
 
 public class DoubleDoubleTests
 {
-    // Bounds of the cited paper: 3u² for the sum (of its exact value), 5u² for the product, 15u² for the quotient.
+    // Bounds of the cited paper: 3u² for the sum (of its exact value), 5u² for the product, 15u² for the
+    // quotient.
     private const double SquaredRounding = 1.232595164407831e-32;
 
     private static readonly Gen<DoubleDouble> _numbers =
@@ -15,10 +16,14 @@ public class DoubleDoubleTests
 
     [Fact]
     public void The_sum_is_right_to_its_proven_bound() => Gen.Select(_numbers, _numbers).Sample(
-        (x, y) => RelativeError(x + y, Exact(x) + Exact(y)) <= 3.1 * SquaredRounding, seed: "0N0XIzNsQ0O2", iter: 2000);
+        (x, y) =>
+            RelativeError(x + y, Exact(x) + Exact(y)) <= 3.1 * SquaredRounding,
+        seed: "0N0XIzNsQ0O2",
+        iter: 2000);
 
     [Fact]
-    public void A_sum_that_cancels_keeps_its_relative_accuracy() => Gen.Select(_numbers, Gen.Double[-1, 1]).Sample(
+    public void A_sum_that_cancels_keeps_its_relative_accuracy() =>
+        Gen.Select(_numbers, Gen.Double[-1, 1]).Sample(
         (x, e) =>
         {
             DoubleDouble y = DoubleDouble.FromSum(-x.Hi, x.Lo * e);
@@ -29,11 +34,17 @@ public class DoubleDoubleTests
 
     [Fact]
     public void The_product_is_right_to_its_proven_bound() => Gen.Select(_numbers, _numbers).Sample(
-        (x, y) => RelativeError(x * y, Exact(x) * Exact(y)) <= 5 * SquaredRounding, seed: "0N0XIzNsQ0O2", iter: 2000);
+        (x, y) =>
+            RelativeError(x * y, Exact(x) * Exact(y)) <= 5 * SquaredRounding,
+        seed: "0N0XIzNsQ0O2",
+        iter: 2000);
 
     [Fact]
     public void The_quotient_is_right_to_its_proven_bound() => Gen.Select(_numbers, _numbers).Sample(
-        (x, y) => RelativeError((x / y) * y, Exact(x)) <= 20 * SquaredRounding, seed: "0N0XIzNsQ0O2", iter: 2000);
+        (x, y) =>
+            RelativeError((x / y) * y, Exact(x)) <= 20 * SquaredRounding,
+        seed: "0N0XIzNsQ0O2",
+        iter: 2000);
 
     [Fact]
     public void The_square_root_squared_is_the_number() => _numbers.Sample(
@@ -85,7 +96,8 @@ public class DoubleDoubleTests
             return new((a.Numerator << (a.Exponent - low)) + (b.Numerator << (b.Exponent - low)), low);
         }
 
-        public static Rational operator -(Rational a, Rational b) => a + new Rational(-b.Numerator, b.Exponent);
+        public static Rational operator -(Rational a, Rational b) =>
+            a + new Rational(-b.Numerator, b.Exponent);
 
         public static Rational operator *(Rational a, Rational b) =>
             new(a.Numerator * b.Numerator, a.Exponent + b.Exponent);

@@ -1,0 +1,155 @@
+namespace CircuitTransient.Numerics;
+
+/// <summary>P A = L U of a square real matrix, with row exchanges for the largest pivot.</summary>
+public sealed class LuFactorization
+{
+    private readonly DoubleDoubleMatrix _lu;
+    private readonly int[] _order;
+
+    private LuFactorization(DoubleDoubleMatrix lu, int[] order, int sign)
+    {
+        _lu = lu;
+        _order = order;
+        Determinant = sign;
+        for (int i = 0; i < lu.Rows; i++)
+        {
+            Determinant *= lu[i, i];
+        }
+    }
+
+    /// <summary>The determinant.</summary>
+    public DoubleDouble Determinant { get; }
+
+    /// <summary>Whether some pivot is exactly zero, so that nothing can be solved.</summary>
+    public bool IsSingular
+    {
+        get
+        {
+            for (int i = 0; i < _lu.Rows; i++)
+            {
+                if (_lu[i, i].IsZero)
+                {
+                    return true;
+                }
+            }
+
+            return false;
+        }
+    }
+
+    /// <summary>Smallest over largest pivot magnitude; a rough measure of how near to singular. 1 for order
+    /// zero.
+    /// </summary>
+    public double PivotRatio
+    {
+        get
+        {
+            double smallest = double.PositiveInfinity;
+            double largest = 0;
+            for (int i = 0; i < _lu.Rows; i++)
+            {
+                smallest = Math.Min(smallest, Math.Abs(_lu[i, i].Hi));
+                largest = Math.Max(largest, Math.Abs(_lu[i, i].Hi));
+            }
+
+            return _lu.Rows == 0 ? 1 : smallest == 0 ? 0 : smallest / largest;
+        }
+    }
+
+    /// <summary>Factorises a copy of <paramref name="a"/>.</summary>
+    public static LuFactorization Of(DoubleDoubleMatrix a)
+    {
+        ArgumentNullException.ThrowIfNull(a);
+        Shape.MustAgree(a.Rows, a.Columns);
+        int n = a.Rows;
+        DoubleDoubleMatrix lu = a.Copy();
+        int[] order = [.. Enumerable.Range(0, n)];
+        int sign = 1;
+        for (int k = 0; k < n; k++)
+        {
+            int pivot = LargestBelow(lu, k);
+            if (pivot != k)
+            {
+                Exchange(lu, k, pivot);
+                (order[k], order[pivot]) = (order[pivot], order[k]);
+                sign = -sign;
+            }
+
+            Eliminate(lu, k);
+        }
+
+        return new(lu, order, sign);
+    }
+
+    /// <summary>X of A X = <paramref name="b"/>.</summary>
+    public DoubleDoubleMatrix Solve(DoubleDoubleMatrix b)
+    {
+        ArgumentNullException.ThrowIfNull(b);
+        Shape.MustAgree(_lu.Rows, b.Rows);
+        int n = _lu.Rows;
+        DoubleDoubleMatrix x = new(n, b.Columns);
+        for (int i = 0; i < n; i++)
+        {
+            x.Row(i).CopyFrom(b.Row(_order[i]));
+            for (int k = 0; k < i; k++)
+            {
+                x.Row(i).AddScaled(-_lu[i, k], x.Row(k));
+            }
+        }
+
+        for (int i = n - 1; i >= 0; i--)
+        {
+            for (int k = i + 1; k < n; k++)
+            {
+                x.Row(i).AddScaled(-_lu[i, k], x.Row(k));
+            }
+
+            x.Row(i).Scale(1.0 / _lu[i, i]);
+        }
+
+        return x;
+    }
+
+    private static int LargestBelow(DoubleDoubleMatrix lu, int k)
+    {
+        int pivot = k;
+        for (int i = k + 1; i < lu.Rows; i++)
+        {
+            if (Math.Abs(lu[i, k].Hi) > Math.Abs(lu[pivot, k].Hi))
+            {
+                pivot = i;
+            }
+        }
+
+        return pivot;
+    }
+
+    private static void Exchange(DoubleDoubleMatrix lu, int i, int k)
+    {
+        for (int j = 0; j < lu.Columns; j++)
+        {
+            (lu[i, j], lu[k, j]) = (lu[k, j], lu[i, j]);
+        }
+    }
+
+    private static void Eliminate(DoubleDoubleMatrix lu, int k)
+    {
+        DoubleDouble pivot = lu[k, k];
+        if (pivot.IsZero)
+        {
+            return;
+        }
+
+        for (int i = k + 1; i < lu.Rows; i++)
+        {
+            if (lu[i, k].IsZero)
+            {
+                continue;
+            }
+
+            DoubleDouble f = lu[i, k] / pivot;
+            lu[i, k] = f;
+            lu.Row(i, k + 1).AddScaled(-f, lu.Row(k, k + 1));
+        }
+    }
+}

@@ -1,0 +1,222 @@
+using System.Text.Json;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports;
+
+/// <content>Waveforms, verdicts and stresses in the results document.</content>
+public static partial class JsonReport
+{
+    private static void WriteObservation(Utf8JsonWriter json, ObservationResult observation)
+    {
+        json.WriteStartObject();
+        json.WriteString("name", observation.Name);
+        json.WriteString("unit", observation.Unit);
+        WriteNumber(json, "start", observation.Start);
+        WriteNumber(json, "end", observation.End);
+        WriteNumber(json, "final", observation.Final);
+        WriteExtreme(json, "max", observation.Max);
+        WriteExtreme(json, "min", observation.Min);
+        json.WriteBoolean("endsRising", observation.EndsRising);
+        WriteArray(json, "contributions", observation.Contributions, WriteContribution);
+        if (observation.After is { } after)
+        {
+            json.WriteStartObject("contributionsAfter");
+            WriteSinceEvent(json, "atMax", after.AtMax);
+            WriteSinceEvent(json, "atMin", after.AtMin);
+            json.WriteEndObject();
+        }
+
+        WriteArray(json, "samples", observation.Samples, (to, at) => WriteSample(to, observation, at));
+        json.WriteEndObject();
+    }
+
+    private static void WriteExtreme(Utf8JsonWriter json, string name, Extreme extreme)
+    {
+        json.WriteStartObject(name);
+        WriteNumber(json, "value", extreme.Value);
+        WriteNumber(json, "time", extreme.Time);
+        json.WriteString("side", extreme.Side switch
+        {
+            InstantSide.Before => "before",
+            InstantSide.At => "at",
+            InstantSide.After => "after",
+            _ => throw new System.Diagnostics.UnreachableException($"no word for {extreme.Side}"),
+        });
+        WriteNumber(json, "bound", extreme.Bound);
+        json.WriteEndObject();
+    }
+
+    private static void WriteContribution(Utf8JsonWriter json, Contribution contribution)
+    {
+        json.WriteStartObject();
+        json.WriteString("cause", contribution.Cause);
+        WriteNumber(json, "atMax", contribution.AtMax);
+        WriteNumber(json, "atMin", contribution.AtMin);
+        WriteTimed(json, "ownMax", contribution.OwnMax);
+        WriteTimed(json, "ownMin", contribution.OwnMin);
+        WriteTimed(json, "maxWithout", contribution.MaxWithout);
+        WriteTimed(json, "minWithout", contribution.MinWithout);
+        json.WriteEndObject();
+    }
+
+    private static void WriteSinceEvent(Utf8JsonWriter json, string name, SinceEvent? since)
+    {
+        if (since is null)
+        {
+            json.WriteNull(name);
+            return;
+        }
+
+        json.WriteStartObject(name);
+        json.WriteString("event", since.Event);
+        WriteNumber(json, "time", since.Time);
+        WriteArray(json, "parts", since.Parts, WriteCauseValue);
+        json.WriteEndObject();
+    }
+
+    private static void WriteCauseValue(Utf8JsonWriter json, CauseValue part)
+    {
+        json.WriteStartObject();
+        json.WriteString("cause", part.Cause);
+        WriteNumber(json, "value", part.Value);
+        json.WriteEndObject();
+    }
+
+    private static void WriteSample(Utf8JsonWriter json, ObservationResult observation, SampleAt sample)
+    {
+        json.WriteStartObject();
+        WriteNumber(json, "time", sample.Time);
+        WriteNumber(json, "value", sample.Value);
+        json.WriteStartObject("byCause");
+        for (var i = 0; i < sample.ByCause.Length; i++)
+        {
+            WriteNumber(json, observation.Contributions[i].Cause, sample.ByCause[i]);
+        }
+
+        json.WriteEndObject();
+        json.WriteEndObject();
+    }
+
+    private static void WriteFigure(Utf8JsonWriter json, FigureResult figure)
+    {
+        json.WriteStartObject();
+        json.WriteString("name", figure.Name);
+        json.WriteString("unit", figure.Unit);
+        WriteNumber(json, "value", figure.Value);
+        json.WriteString("definition", figure.Definition);
+        json.WriteEndObject();
+    }
+
+    private static void WriteRequirement(Utf8JsonWriter json, RequirementResult requirement)
+    {
+        json.WriteStartObject();
+        json.WriteString("statement", requirement.Statement);
+        json.WriteNumber("line", requirement.Line);
+        json.WriteBoolean("holds", requirement.Holds);
+        WriteTimed(json, "worst", requirement.Worst);
+        WriteNumber(json, "margin", requirement.Margin);
+        json.WriteString("unit", requirement.Unit);
+        WriteOptional(json, "because", requirement.Reason);
+        json.WriteEndObject();
+    }
+
+    private static void WritePart(Utf8JsonWriter json, PartResult part)
+    {
+        json.WriteStartObject();
+        json.WriteString("name", part.Name);
+        json.WriteString("kind", part.Kind);
+        WriteTimed(json, "peakVoltage", part.PeakVoltage);
+        WriteTimed(json, "peakCurrent", part.PeakCurrent);
+        WriteTimed(json, "peakPower", part.PeakPower);
+        WriteTimed(json, "peakVoltageRate", part.PeakVoltageRate);
+        WriteTimed(json, "peakCurrentRate", part.PeakCurrentRate);
+        WriteNumber(json, "energy", part.Energy);
+        WriteNumber(json, "jouleIntegral", part.JouleIntegral);
+        WriteArray(json, "ratings", part.Ratings, WriteRating);
+        WriteLinearUpTo(json, part.LinearUpTo);
+        json.WriteEndObject();
+    }
+
+    private static void WriteRating(Utf8JsonWriter json, RatingResult rating)
+    {
+        json.WriteStartObject();
+        WriteNumber(json, "rated", rating.Rated);
+        json.WriteString("unit", rating.Unit);
+        WriteNumber(json, "reached", rating.Reached);
+        WriteNumber(json, "used", rating.Used);
+        json.WriteBoolean("holds", rating.Holds);
+        json.WriteEndObject();
+    }
+
+    private static void WriteLinearUpTo(Utf8JsonWriter json, LinearUpToResult? linear)
+    {
+        if (linear is null)
+        {
+            json.WriteNull("linearUpTo");
+            return;
+        }
+
+        json.WriteStartObject("linearUpTo");
+        WriteNumber(json, "declared", linear.Declared);
+        WriteNumber(json, "reached", linear.Reached);
+        json.WriteBoolean("holds", linear.Holds);
+        json.WriteString("unit", linear.Unit);
+        WriteOptional(json, "direction", linear.Direction);
+        json.WriteEndObject();
+    }
+
+    private static void WriteSelfCheck(Utf8JsonWriter json, SelfCheck check)
+    {
+        json.WriteStartObject();
+        json.WriteString("name", check.Name);
+        WriteNumber(json, "worst", check.Worst);
+        WriteNumber(json, "allowed", check.Allowed);
+        json.WriteBoolean("holds", check.Holds);
+        json.WriteEndObject();
+    }
+
+    private static void WriteNotJudged(Utf8JsonWriter json, NotJudged check)
+    {
+        json.WriteStartObject();
+        json.WriteString("name", check.Name);
+        json.WriteString("reason", check.Reason);
+        json.WriteEndObject();
+    }
+
+    private static void WriteWarning(Utf8JsonWriter json, Notice warning)
+    {
+        json.WriteStartObject();
+        WriteNumber(json, "line", warning.Line > 0 ? warning.Line : null);
+        json.WriteString("text", warning.Text);
+        json.WriteEndObject();
+    }
+
+    private static void WriteCaution(Utf8JsonWriter json, Caution caution)
+    {
+        json.WriteStartObject();
+        json.WriteString("severity", caution.Severity switch
+        {
+            CautionSeverity.Note => "note",
+            CautionSeverity.Warning => "warning",
+            CautionSeverity.Danger => "danger",
+            _ => throw new System.Diagnostics.UnreachableException($"no word for {caution.Severity}"),
+        });
+        json.WriteString("text", caution.Text);
+        json.WriteString("standard", caution.Standard);
+        json.WriteEndObject();
+    }
+
+    private static void WriteTimed(Utf8JsonWriter json, string name, TimedValue? timed)
+    {
+        if (timed is null)
+        {
+            json.WriteNull(name);
+            return;
+        }
+
+        json.WriteStartObject(name);
+        WriteNumber(json, "value", timed.Value);
+        WriteNumber(json, "time", timed.Time);
+        json.WriteEndObject();
+    }
+}

@@ -1,0 +1,214 @@
+using System.Buffers;
+using System.Collections.Immutable;
+using System.Text;
+using System.Text.Encodings.Web;
+using System.Text.Json;
+using System.Text.Unicode;
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports;
+
+/// <summary>The results document, <c>results.json</c>: SI units, doubles that read back to the same bits,
+/// null for what is infinite or left open. Its shape is described by <c>results.schema.json</c>.</summary>
+public static partial class JsonReport
+{
+    /// <summary>Name and number of the format; the number changes when a field changes or goes.</summary>
+    public const string Format = "circuit-transient results 1";
+
+    // Letters of every script stay readable; < > & ' are escaped, so that it may stand inside a page.
+    private static readonly JsonWriterOptions Options = new()
+    {
+        Indented = true,
+        NewLine = "\n",
+        Encoder = JavaScriptEncoder.Create(UnicodeRanges.All),
+    };
+
+    /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
+    public static string Schema
+    {
+        get
+        {
+            using var stream = typeof(JsonReport).Assembly.GetManifestResourceStream("results.schema.json")
+                ?? throw new InvalidOperationException("results.schema.json is not embedded");
+            using var reader = new StreamReader(stream, Encoding.UTF8);
+            return reader.ReadToEnd();
+        }
+    }
+
+    /// <summary>The document of one circuit.</summary>
+    public static string Write(TransientResult result) => WriteWith(json => WriteDocument(json, result));
+
+    /// <summary>The documents of several circuits, as an array.</summary>
+    public static string Write(ImmutableArray<TransientResult> results) =>
+        WriteWith(json => WriteArray(json, results, WriteDocument));
+
+    private static string WriteWith(Action<Utf8JsonWriter> write)
+    {
+        var buffer = new ArrayBufferWriter<byte>();
+        using (var json = new Utf8JsonWriter(buffer, Options))
+        {
+            write(json);
+        }
+
+        return Encoding.UTF8.GetString(buffer.WrittenSpan) + "\n";
+    }
+
+    private static void WriteDocument(Utf8JsonWriter json, TransientResult result)
+    {
+        json.WriteStartObject();
+        json.WriteString("format", Format);
+        json.WritePropertyName("circuit");
+        WriteCircuit(json, result.Circuit);
+        json.WriteStartObject("study");
+        WriteNumber(json, "from", 0);
+        WriteNumber(json, "until", result.Until);
+        json.WriteString("start", result.Circuit.StartsSettled ? "settled" : "as stated");
+        WriteOptional(json, "untilReason", result.UntilReason);
+        json.WriteEndObject();
+        WriteArray(json, "causes", result.Causes, WriteCause);
+        WriteArray(json, "intervals", result.Intervals, WriteInterval);
+        WriteArray(json, "events", result.Events, WriteEvent);
+        WriteArray(json, "observations", result.Observations, WriteObservation);
+        WriteArray(json, "figures", result.Figures, WriteFigure);
+        WriteArray(json, "requirements", result.Requirements, WriteRequirement);
+        WriteArray(json, "parts", result.Parts, WritePart);
+        WriteArray(json, "selfChecks", result.SelfChecks, WriteSelfCheck);
+        WriteArray(json, "notJudged", result.NotJudged, WriteNotJudged);
+        WriteArray(json, "warnings", result.Warnings, WriteWarning);
+        WriteArray(json, "cautions", result.Cautions, WriteCaution);
+        json.WriteEndObject();
+    }
+
+    private static void WriteCircuit(Utf8JsonWriter json, Circuit circuit)
+    {
+        json.WriteStartObject();
+        json.WriteString("title", circuit.Title);
+        json.WriteString("file", circuit.Source.Name);
+        json.WriteString("sha256", circuit.Source.Sha256);
+        json.WriteNumber("parts", circuit.Parts.Length);
+        json.WriteNumber("nodes", circuit.Nodes.Length);
+        json.WriteNumber("storedQuantities", circuit.Parts.Count(part => part is Capacitor or Inductor));
+        json.WriteEndObject();
+    }
+
+    private static void WriteCause(Utf8JsonWriter json, CauseName cause)
+    {
+        json.WriteStartObject();
+        json.WriteString("name", cause.Name);
+        json.WriteString("kind", cause.Kind switch
+        {
+            CauseKind.Source => "source",
+            CauseKind.Stored => "stored",
+            CauseKind.Edge => "edge",
+            _ => throw new System.Diagnostics.UnreachableException($"no word for {cause.Kind}"),
+        });
+        WriteOptional(json, "of", cause.Of);
+        json.WriteEndObject();
+    }
+
+    private static void WriteInterval(Utf8JsonWriter json, IntervalResult interval)
+    {
+        json.WriteStartObject();
+        WriteNumber(json, "from", interval.From);
+        WriteNumber(json, "until", interval.Until);
+        json.WriteStartArray("startsWith");
+        foreach (var switching in interval.StartsWith)
+        {
+            json.WriteStringValue(switching);
+        }
+
+        json.WriteEndArray();
+        WriteArray(json, "poles", interval.Poles, WritePole);
+        WriteArray(json, "impulses", interval.Impulses, WriteImpulse);
+        WriteNumber(json, "energyLost", interval.EnergyLost);
+        json.WriteEndObject();
+    }
+
+    private static void WritePole(Utf8JsonWriter json, Pole pole)
+    {
+        json.WriteStartObject();
+        WriteNumber(json, "re", pole.Re);
+        WriteNumber(json, "im", pole.Im);
+        json.WriteNumber("multiplicity", pole.Multiplicity);
+        json.WriteEndObject();
+    }
+
+    private static void WriteImpulse(Utf8JsonWriter json, ImpulseResult impulse)
+    {
+        json.WriteStartObject();
+        WriteNumber(json, "time", impulse.Time);
+        json.WriteString("part", impulse.Part);
+        if (impulse.Charge is not null)
+        {
+            WriteNumber(json, "charge", impulse.Charge);
+        }
+
+        if (impulse.VoltSeconds is not null)
+        {
+            WriteNumber(json, "voltSeconds", impulse.VoltSeconds);
+        }
+
+        WriteOptional(json, "remedy", impulse.Remedy);
+        json.WriteEndObject();
+    }
+
+    private static void WriteEvent(Utf8JsonWriter json, EventResult switching)
+    {
+        json.WriteStartObject();
+        WriteNumber(json, "time", switching.Time);
+        json.WriteString("switch", switching.Switch);
+        json.WriteString("action", switching.Closes ? "closes" : "opens");
+        WriteNumber(json, "voltageBefore", switching.VoltageBefore);
+        WriteNumber(json, "voltageAfter", switching.VoltageAfter);
+        WriteNumber(json, "currentBefore", switching.CurrentBefore);
+        WriteNumber(json, "currentAfter", switching.CurrentAfter);
+        WriteOptional(json, "remark", switching.Remark);
+        json.WriteEndObject();
+    }
+
+    private static void WriteArray<T>(
+        Utf8JsonWriter json, string name, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
+    {
+        json.WritePropertyName(name);
+        WriteArray(json, items, write);
+    }
+
+    private static void WriteArray<T>(
+        Utf8JsonWriter json, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
+    {
+        json.WriteStartArray();
+        foreach (var item in items)
+        {
+            write(json, item);
+        }
+
+        json.WriteEndArray();
+    }
+
+    private static void WriteNumber(Utf8JsonWriter json, string name, double? value)
+    {
+        json.WritePropertyName(name);
+        WriteNumber(json, value);
+    }
+
+    private static void WriteNumber(Utf8JsonWriter json, double? value)
+    {
+        if (value is { } number && double.IsFinite(number))
+        {
+            json.WriteNumberValue(number + 0.0); // turns the negative zero into the plain one
+        }
+        else
+        {
+            json.WriteNullValue();
+        }
+    }
+
+    private static void WriteOptional(Utf8JsonWriter json, string name, string? text)
+    {
+        if (text is not null)
+        {
+            json.WriteString(name, text);
+        }
+    }
+}

@@ -1,0 +1,173 @@
+using System.Collections.Immutable;
+using System.Globalization;
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports;
+
+/// <content>The causes of the worst observation.</content>
+public static partial class TerminalSummary
+{
+    private const int MostCauses = 12;
+    private const int BarCells = 12;
+
+    private static void WriteCauses(SummaryText text, TransientResult result)
+    {
+        if (WorstObservation.Find(result) is not { } worst || worst.Extreme.Value is not { } total)
+        {
+            return;
+        }
+
+        var unit = worst.Observation.Unit;
+        var when = InstantWords.At(result, worst.Extreme.Time, worst.Extreme.Side);
+        text.Heading(
+            $"What makes the {Number(total, unit)} of {worst.Observation.Name} ({when}; {worst.Why})");
+        var apart = result.Circuit.StartsSettled ? " apart from them" : "";
+        text.Paragraph(
+            $"From the start: the sources, and what was stored at t = 0{apart}, carried through switchings");
+        WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without");
+        if (DecidedByAnswer(result) is { } decided)
+        {
+            text.Paragraph($"instants of the full answer kept: {decided}", hanging: 2);
+        }
+
+        if (worst.Since is { } since)
+        {
+            text.Paragraph(
+                $"Since {since.Event}: what each part held just before it, and the sources from then on");
+            var shares = since.Parts.Select(part => new Share(part.Cause, part.Value)).ToImmutableArray();
+            WriteShares(text, shares, total, unit, without: null);
+            if (Driving(result, since) is { } driving)
+            {
+                text.Paragraph(driving, hanging: 2);
+            }
+        }
+    }
+
+    private static ImmutableArray<Share> SharesFromStart(WorstObservation worst) =>
+    [
+        .. worst.Observation.Contributions.Select(c => new Share(
+            c.Cause,
+            worst.Share(c),
+            Math.Abs(c.OwnMin?.Value ?? 0) > Math.Abs(c.OwnMax?.Value ?? 0) ? c.OwnMin : c.OwnMax,
+            worst.AtMax ? c.MaxWithout : c.MinWithout)),
+    ];
+
+    private static void WriteShares(
+        SummaryText text, ImmutableArray<Share> shares, double total, string unit, string? without)
+    {
+        var ordered = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
+        var shown = ordered.Length <= MostCauses ? ordered : ordered[..(MostCauses - 1)];
+        var largest = shown.Select(share => Math.Abs(share.Value ?? 0)).DefaultIfEmpty().Max();
+        var bars = new SignedBars(largest, shown.Any(share => share.Value < 0), shown.Any(s => s.Value > 0));
+        var rows = shown.Select(share => Row(share, total, unit, bars, without is not null)).ToList();
+        if (without is not null)
+        {
+            rows.Insert(0, ["", "", "", "", "its own peak", without]);
+        }
+
+        if (shown.Length < ordered.Length)
+        {
+            var rest = ordered[shown.Length..];
+            var sum = rest.Sum(share => share.Value ?? 0);
+            rows.Add([$"{rest.Length} smaller ones", Signed(sum, unit), PercentOf(sum, total), "", "", ""]);
+        }
+
+        text.Table([Prose, Right, Right, Left, Right, Right], rows, indent: 4);
+        if (Cancelling(shares, total, unit) is { } cancelling)
+        {
+            text.Paragraph(cancelling, indent: 4, hanging: 2);
+        }
+    }
+
+    private static ImmutableArray<string> Row(
+        Share share, double total, string unit, SignedBars bars, bool withOwn) =>
+    [
+        share.Cause,
+        Signed(share.Value, unit),
+        PercentOf(share.Value, total),
+        bars.Of(share.Value ?? 0),
+        withOwn && share.Own is { Value: { } own, Time: var time }
+            ? $"{Number(own, unit)} at {Number(time, "s")}"
+            : "",
+        withOwn && share.Without is { } without ? Number(without.Value, unit) : "",
+    ];
+
+    // Causes whose magnitudes sum to over three times the total are shown as a group with their difference.
+    private static string? Cancelling(ImmutableArray<Share> shares, double total, string unit)
+    {
+        if (shares.Sum(share => Math.Abs(share.Value ?? 0)) <= 3 * Math.Abs(total))
+        {
+            return null;
+        }
+
+        var sign = total < 0 ? -1 : 1;
+        var with = Group([.. shares.Where(share => share.Value * sign > 0)], unit);
+        var against = Group([.. shares.Where(share => share.Value * sign < 0)], unit);
+        return $"large causes cancel: {with} against {against}: {Number(total, unit)}";
+    }
+
+    private static string Group(Share[] shares, string unit)
+    {
+        var largest = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
+        var names = largest.Length <= 3
+            ? string.Join(" and ", largest.Select(share => share.Cause))
+            : $"{largest[0].Cause}, {largest[1].Cause} and {largest.Length - 2} more";
+        return $"{names} {Number(Math.Abs(shares.Sum(share => share.Value ?? 0)), unit)}";
+    }
+
+    private static string? Driving(TransientResult result, SinceEvent since)
+    {
+        var switching = result.Events
+            .FirstOrDefault(e => e.Time == since.Time && InstantWords.Name(e) == since.Event);
+        return switching switch
+        {
+            { Closes: true, VoltageBefore: { } voltage } =>
+                $"what drives it: the {Number(voltage, "V")} across {switching.Switch} just before it closes",
+            { Closes: false, CurrentBefore: { } current } =>
+                $"what drives it: the {Number(current, "A")} through {switching.Switch} just before it opens",
+            _ => null,
+        };
+    }
+
+    private static string? DecidedByAnswer(TransientResult result)
+    {
+        var decided = result.Circuit.Parts.OfType<Switch>()
+            .Where(s => s.Events.Any(e => e.CutAtMost is not null || e.Trigger is WhenCrosses))
+            .Select(s => s.Name)
+            .ToArray();
+        return decided.Length == 0 ? null : $"{string.Join(", ", decided)} act where the full answer says";
+    }
+
+    private static string Signed(double? value, string unit) =>
+        value > 0 ? $"+{Number(value, unit)}" : Number(value, unit);
+
+    private static string PercentOf(double? value, double total) =>
+        value is { } share && total != 0 ? Percent(share / total) : "";
+
+    private static string Percent(double fraction)
+    {
+        var percent = 100 * fraction;
+        var digits = Math.Abs(percent) >= 1000 ? "0" : "0.0";
+        var text = percent.ToString(digits, CultureInfo.InvariantCulture);
+        return text + " %";
+    }
+
+    private sealed record Share(
+        string Cause, double? Value, TimedValue? Own = null, TimedValue? Without = null);
+
+    /// <summary>Bars to both sides of a common zero, in half cells.</summary>
+    private sealed record SignedBars(double Largest, bool HasNegative, bool HasPositive)
+    {
+        public string Of(double value)
+        {
+            var cells = HasNegative && HasPositive ? BarCells / 2 : BarCells;
+            var halves = Largest > 0 ? (int)Math.Round(2 * cells * Math.Abs(value) / Largest) : 0;
+            var full = new string('█', halves / 2);
+            var left = HasNegative ? (value < 0 ? Half(halves, '▐') + full : "").PadLeft(cells) : "";
+            return left + (value > 0 ? full + Half(halves, '▌') : "");
+        }
+
+        private static string Half(int halves, char half) => halves % 2 == 1 ? half.ToString() : "";
+    }
+}

@@ -1,0 +1,145 @@
+using System.Collections.Immutable;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports;
+
+/// <content>The verdict on requirements and ratings.</content>
+public static partial class TerminalSummary
+{
+    private const int MostUnrated = 40;
+
+    /// <summary>The verdict in one sentence.</summary>
+    public static string Verdict(TransientResult result)
+    {
+        var failed = result.SelfChecks.Count(check => !check.Holds);
+        if (failed > 0)
+        {
+            return failed == 1
+                ? "A self-check failed: do not use these figures."
+                : $"{failed} self-checks failed: do not use these figures.";
+        }
+
+        var required = result.Requirements;
+        var ratings = result.Parts.SelectMany(part => part.Ratings).ToArray();
+        var sentences = new[]
+        {
+            Tally(required.Count(r => r.Holds), required.Length, "requirement", "broken"),
+            Tally(ratings.Count(r => r.Holds), ratings.Length, "rating", "exceeded"),
+            Doubt(result.Parts.Count(part => part.LinearUpTo is { Holds: false })),
+        };
+        var said = string.Join("; ", sentences.Where(sentence => sentence.Length > 0));
+        return said.Length == 0
+            ? "Nothing was required or rated, so there is no verdict."
+            : $"{char.ToUpperInvariant(said[0])}{said[1..]}.";
+    }
+
+    private static string Tally(int holding, int all, string noun, string otherwise) => (holding, all) switch
+    {
+        (_, 0) => "",
+        (1, 1) => $"the {noun} holds",
+        (0, 1) => $"the {noun} is {otherwise}",
+        (0, _) => $"all {all} {noun}s are {otherwise}",
+        _ when holding == all => $"all {all} {noun}s hold",
+        _ when holding == all - 1 => $"one of {all} {noun}s is {otherwise}",
+        _ => $"{all - holding} of {all} {noun}s are {otherwise}",
+    };
+
+    private static string Doubt(int parts) => parts switch
+    {
+        0 => "",
+        1 => "one part leaves the range its value is good for",
+        _ => $"{parts} parts leave the range their values are good for",
+    };
+
+    private static void WriteVerdict(SummaryText text, TransientResult result)
+    {
+        text.Paragraph(Verdict(result), indent: 0);
+        if (!result.Requirements.IsEmpty)
+        {
+            text.Blank();
+            text.Table(
+                [Left, Prose, Prose],
+                result.Requirements.OrderBy(r => r.Holds).Select(r => RowOf(result, r)));
+        }
+
+        foreach (var part in result.Parts.Where(part => part.LinearUpTo is { Holds: false }))
+        {
+            var linear = part.LinearUpTo!;
+            var direction = linear.Direction is { } words ? $": {words}" : "";
+            text.Paragraph(
+                $"{part.Name} is linear up to {Number(linear.Declared, linear.Unit)} but reaches " +
+                $"{Number(linear.Reached, linear.Unit)}{direction}",
+                hanging: 2);
+        }
+    }
+
+    private static ImmutableArray<string> RowOf(TransientResult result, RequirementResult requirement)
+    {
+        var verdict = (requirement.Holds, requirement.Margin) switch
+        {
+            (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
+            (true, null) => "held",
+            (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
+            (false, null) => "broken without limit",
+        };
+        var because = requirement.Reason is { } reason ? $" because \"{reason}\"" : "";
+        var statement = $"{requirement.Statement}{because} (line {requirement.Line})";
+        var worst = Finite(requirement.Worst.Value, requirement.Unit);
+        var when = InstantWords.At(result, requirement.Worst.Time);
+        return [verdict, statement, $"{worst} {when}".TrimEnd()];
+    }
+
+    private static void WriteRatings(SummaryText text, TransientResult result)
+    {
+        var ratings = result.Parts
+            .SelectMany(part => part.Ratings.Select(rating => (part.Name, Rating: rating)))
+            .OrderByDescending(pair => pair.Rating.Used ?? (pair.Rating.Holds ? -1 : double.PositiveInfinity))
+            .ToArray();
+        if (ratings.Length == 0)
+        {
+            text.Blank();
+            text.Paragraph("Ratings: no rating given for any part.", indent: 0);
+            return;
+        }
+
+        text.Heading("Ratings, the most used first");
+        text.Table(
+            [Prose, Left, Right, Left, Right, Left], ratings.Select(pair => RowOf(pair.Name, pair.Rating)));
+        var unrated = result.Parts.Where(part => part.Ratings.IsEmpty).Select(part => part.Name).ToArray();
+        if (unrated.Length > 0)
+        {
+            var rest = unrated.Length > MostUnrated ? $" and {unrated.Length - MostUnrated} more" : "";
+            var names = string.Join(", ", unrated.Take(MostUnrated));
+            text.Paragraph($"no rating given: {names}{rest}", hanging: 2);
+        }
+    }
+
+    private static ImmutableArray<string> RowOf(string part, RatingResult rating)
+    {
+        var used = rating.Used is { } fraction ? Percent(fraction) : "";
+        var over = rating.Reached - rating.Rated;
+        var verdict = (rating.Holds, over) switch
+        {
+            (true, _) => "held",
+            (false, { } excess) => $"exceeded by {Number(excess, rating.Unit)}",
+            (false, null) => "exceeded without limit",
+        };
+        var reached = Finite(rating.Reached, rating.Unit);
+        return [part, Rated(rating.Unit), reached, $"of {Number(rating.Rated, rating.Unit)}", used, verdict];
+    }
+
+    private static string Finite(double? value, string unit) =>
+        value is null ? "no finite value" : Number(value, unit);
+
+    private static string Rated(string unit) => unit switch
+    {
+        "V" => "peak voltage",
+        "A" => "peak current",
+        "W" => "mean power",
+        "J" => "energy",
+        "A²s" => "I²t",
+        "V/s" => "rate of change of voltage",
+        "A/s" => "rate of change of current",
+        _ => "rating",
+    };
+}

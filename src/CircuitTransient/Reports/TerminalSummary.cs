@@ -1,0 +1,241 @@
+using System.Collections.Immutable;
+using System.Globalization;
+using CircuitTransient.Measurements;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Reports;
+
+/// <summary>The summary for the terminal: a note to a colleague within 100 columns, verdict first.</summary>
+public static partial class TerminalSummary
+{
+    /// <summary>The sentence every summary and report ends with.</summary>
+    public const string Closing =
+        "This is the result of a linear model and a calculation aid; the applicable code and a licensed " +
+        "practitioner decide.";
+
+    private const int MostObservations = 50;
+
+    private static readonly TextColumn Left = new();
+    private static readonly TextColumn Right = new(IsRight: true);
+    private static readonly TextColumn Prose = new(IsProse: true);
+
+    /// <summary>The summary of a result.</summary>
+    /// <param name="result">The result.</param>
+    /// <param name="files">Where the files are, as the user may open them; may be empty.</param>
+    /// <param name="colour">Whether headings are bold and bars blue.</param>
+    public static string Write(TransientResult result, ImmutableArray<string> files, bool colour = false)
+    {
+        var text = new SummaryText(colour);
+        text.Title(TitleOf(result));
+        WriteVerdict(text, result);
+        WriteEvents(text, result);
+        WriteObservations(text, result);
+        WriteCauses(text, result);
+        WriteFigures(text, result);
+        WriteRatings(text, result);
+        WriteImpulses(text, result);
+        WriteSelfChecks(text, result);
+        WriteWarnings(text, result);
+        WriteCautions(text, result);
+        WriteFiles(text, files);
+        text.Blank();
+        text.Paragraph(Closing, indent: 0);
+        return text.ToString();
+    }
+
+    private static string TitleOf(TransientResult result) =>
+        result.Circuit.Title is { } title
+            ? $"{title} ({result.Circuit.Source.Name})"
+            : result.Circuit.Source.Name;
+
+    private static void WriteEvents(SummaryText text, TransientResult result)
+    {
+        if (result.Events.IsEmpty)
+        {
+            return;
+        }
+
+        text.Heading("Switchings, with what each switch saw just before and just after");
+        text.Table(
+            [Right, Prose, Right, Left, Right, Left, Prose],
+            result.Events.Select(e => ImmutableArray.Create(
+                Number(e.Time, "s"),
+                InstantWords.Name(e),
+                Number(e.VoltageBefore, "V"),
+                $"→ {Number(e.VoltageAfter, "V")} across",
+                Number(e.CurrentBefore, "A"),
+                $"→ {Number(e.CurrentAfter, "A")} through",
+                e.Remark ?? "")));
+    }
+
+    private static void WriteObservations(SummaryText text, TransientResult result)
+    {
+        var until = EngineeringNumber.Format(result.Until, "s");
+        text.Heading(
+            $"Observed from 0 s to {until}" + (result.UntilReason is { } reason ? $" ({reason})" : ""));
+        var shown = result.Observations.Take(MostObservations);
+        text.Table([Prose, Left, Right, Prose], shown.SelectMany(o => RowsOf(result, o)));
+        if (result.Observations.Length > MostObservations)
+        {
+            text.Paragraph($"and {result.Observations.Length - MostObservations} more, in results.json");
+        }
+
+        if (result.Observations.Any(o => !o.Samples.IsEmpty))
+        {
+            text.Heading("At the instants asked for (each cause's share stands in results.json)");
+            text.Table(
+                [Prose, Right, Right],
+                result.Observations.SelectMany(o => o.Samples.Select((sample, i) => ImmutableArray.Create(
+                    i == 0 ? o.Name : "", Number(sample.Time, "s"), Number(sample.Value, o.Unit)))));
+        }
+    }
+
+    private static IEnumerable<ImmutableArray<string>> RowsOf(
+        TransientResult result, ObservationResult observed)
+    {
+        var (unit, max, min) = (observed.Unit, observed.Max, observed.Min);
+        yield return [observed.Name, "max", Number(max.Value, unit), When(result, observed, max)];
+        yield return ["", "min", Number(min.Value, unit), When(result, observed, min)];
+        var final = observed.Final is { } limit ? $"tends to {Number(limit, unit)}" : "tends to no limit";
+        yield return ["", "end", Number(observed.End, unit), final];
+    }
+
+    private static string When(TransientResult result, ObservationResult observation, Extreme extreme)
+    {
+        if (extreme.Value is not { } value)
+        {
+            return "";
+        }
+
+        var when = InstantWords.At(result, extreme.Time, extreme.Side);
+        if (observation.EndsRising && extreme == observation.Greatest)
+        {
+            when += "; still rising at the end: a longer study shows more";
+        }
+
+        // The bound is owed within 1e-9 of the value; where it fell short, the reader is told.
+        return extreme.Bound is { } bound && Math.Abs(bound - value) > 2e-9 * Math.Abs(value)
+            ? when + $"; proven only not to pass {Number(bound, observation.Unit)}"
+            : when;
+    }
+
+    private static void WriteFigures(SummaryText text, TransientResult result)
+    {
+        if (!result.Figures.IsEmpty)
+        {
+            text.Heading("Read off the waveforms");
+            text.Table(
+                [Prose, Right, Prose],
+                result.Figures.Select(figure => ImmutableArray.Create(
+                    figure.Name, Number(figure.Value, figure.Unit), figure.Definition)));
+        }
+    }
+
+    private static void WriteImpulses(SummaryText text, TransientResult result)
+    {
+        var intervals = result.Intervals.Where(interval => !interval.Impulses.IsEmpty).ToArray();
+        if (intervals.Length == 0)
+        {
+            return;
+        }
+
+        text.Heading("Impulses: ideal parts joined or parted with more than they could hold");
+        foreach (var interval in intervals)
+        {
+            foreach (var impulse in interval.Impulses)
+            {
+                var size = impulse.Charge is { } charge
+                    ? $"{Number(charge, "C")} through {impulse.Part}"
+                    : $"{Number(impulse.VoltSeconds, "Vs")} across {impulse.Part}";
+                var remedy = impulse.Remedy is { } words ? $"; {words}" : "";
+                text.Paragraph($"{InstantWords.At(result, impulse.Time)}: {size}{remedy}", hanging: 2);
+            }
+
+            text.Paragraph($"lost in them: {Number(interval.EnergyLost, "J")}", hanging: 2);
+        }
+    }
+
+    private static void WriteSelfChecks(SummaryText text, TransientResult result)
+    {
+        if (result.SelfChecks.IsEmpty && result.NotJudged.IsEmpty)
+        {
+            return;
+        }
+
+        text.Blank();
+        var failed = result.SelfChecks.Where(check => !check.Holds).ToArray();
+        if (failed.Length > 0)
+        {
+            text.Title("Self-checks: FAILED, do not use these figures");
+            text.Table(
+                [Prose, Left],
+                failed.Select(check => ImmutableArray.Create(
+                    check.Name, $"worst {Ratio(check.Worst)}, allowed {Ratio(check.Allowed)}")));
+        }
+        else if (!result.SelfChecks.IsEmpty)
+        {
+            var closest = result.SelfChecks.MaxBy(check => check.Worst / check.Allowed)!;
+            var count = result.SelfChecks is [_] ? "it holds" : $"all {result.SelfChecks.Length} hold";
+            text.Paragraph(
+                $"Self-checks: {count}; nearest to its limit is {closest.Name}, {Ratio(closest.Worst)} of " +
+                $"{Ratio(closest.Allowed)} allowed.",
+                indent: 0,
+                hanging: 2);
+        }
+
+        foreach (var check in result.NotJudged)
+        {
+            text.Paragraph($"Not judged: {check.Name}: {check.Reason}.", indent: 0, hanging: 2);
+        }
+    }
+
+    private static void WriteWarnings(SummaryText text, TransientResult result)
+    {
+        if (!result.Warnings.IsEmpty)
+        {
+            text.Heading("Warnings");
+            foreach (var warning in result.Warnings)
+            {
+                var place = warning.Line > 0 ? $"line {warning.Line}: " : "";
+                text.Paragraph(place + warning.Text, hanging: 2);
+            }
+        }
+    }
+
+    private static void WriteCautions(SummaryText text, TransientResult result)
+    {
+        if (!result.Cautions.IsEmpty)
+        {
+            text.Heading("Cautions");
+            foreach (var caution in result.Cautions.OrderByDescending(caution => caution.Severity))
+            {
+                var word = caution.Severity switch
+                {
+                    CautionSeverity.Danger => "danger",
+                    CautionSeverity.Warning => "warning",
+                    _ => "note",
+                };
+                text.Paragraph($"{word}: {caution.Text} ({caution.Standard})", hanging: 2);
+            }
+        }
+    }
+
+    private static void WriteFiles(SummaryText text, ImmutableArray<string> files)
+    {
+        if (!files.IsEmpty)
+        {
+            text.Heading("Files");
+            foreach (var file in files)
+            {
+                text.Paragraph(file);
+            }
+        }
+    }
+
+    private static string Number(double? value, string unit) =>
+        value is { } number && double.IsFinite(number)
+            ? EngineeringNumber.Format(number, unit)
+            : "undetermined";
+
+    private static string Ratio(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
+}

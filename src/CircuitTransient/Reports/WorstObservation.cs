@@ -1,0 +1,131 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports;
+
+/// <summary>The observation a reader should look at first, and which of its extremes.</summary>
+/// <param name="Observation">The observation.</param>
+/// <param name="AtMax">Whether its maximum matters (else its minimum).</param>
+/// <param name="Why">Why it was chosen, in words.</param>
+public sealed record WorstObservation(ObservationResult Observation, bool AtMax, string Why)
+{
+    /// <summary>The extreme that matters.</summary>
+    public Extreme Extreme => AtMax ? Observation.Max : Observation.Min;
+
+    /// <summary>The breakdown since an event at that extreme; null where there is none.</summary>
+    public SinceEvent? Since => AtMax ? Observation.After?.AtMax : Observation.After?.AtMin;
+
+    /// <summary>What a cause has in the extreme.</summary>
+    public double? Share(Contribution contribution) => AtMax ? contribution.AtMax : contribution.AtMin;
+
+    /// <summary>The one whose requirement or rating is exceeded or used most; else the first.</summary>
+    public static WorstObservation? Find(TransientResult result)
+    {
+        if (result.Observations.IsEmpty)
+        {
+            return null;
+        }
+
+        WorstObservation? worst = null;
+        var greatest = 0.0;
+        foreach (var (quantity, used, value, what) in Uses(result))
+        {
+            if (used > greatest && Matching(result, quantity) is { } observation)
+            {
+                greatest = used;
+                var why = used > 1 ? $"the {what} exceeded most" : $"nearest to its {what}";
+                worst = new WorstObservation(observation, IsAtMax(observation, value), why);
+            }
+        }
+
+        var first = result.Observations[0];
+        return worst ?? new WorstObservation(first, first.Greatest == first.Max, "the first observed");
+    }
+
+    private static IEnumerable<(Measurand Quantity, double Used, double? Value, string What)> Uses(
+        TransientResult result)
+    {
+        var required = result.Circuit.Requirements;
+        for (var i = 0; i < Math.Min(required.Length, result.Requirements.Length); i++)
+        {
+            var verdict = result.Requirements[i];
+            var used = Used(required[i].Bound, verdict);
+            yield return (required[i].Quantity, used, verdict.Worst.Value, "requirement");
+        }
+
+        foreach (var part in result.Parts)
+        {
+            var index = result.Circuit.Parts.ToList().FindIndex(p => p.Name == part.Name);
+            foreach (var rating in part.Ratings)
+            {
+                if (index >= 0 && RatedQuantity(index, rating.Unit) is { } quantity)
+                {
+                    var used = rating.Used ?? (rating.Holds ? 0 : double.PositiveInfinity);
+                    yield return (quantity, used, null, "rating");
+                }
+            }
+        }
+    }
+
+    // The worst value as a fraction of its bound; only the order of these figures is used.
+    private static double Used(Bound bound, RequirementResult verdict)
+    {
+        var limit = bound switch
+        {
+            Limits { Lower: { } lower, Upper: { } upper } => Math.Max(Math.Abs(lower), Math.Abs(upper)),
+            Limits { Lower: { } lower } => Math.Abs(lower),
+            Limits { Upper: { } upper } => Math.Abs(upper),
+            SettlesTo settles => Math.Abs(settles.Target),
+            _ => 0,
+        };
+        if (verdict.Margin is not { } margin || limit == 0)
+        {
+            return verdict.Holds ? 0 : double.PositiveInfinity;
+        }
+
+        return 1 - (margin / limit);
+    }
+
+    private static Measurand? RatedQuantity(int part, string unit) => unit switch
+    {
+        "V" => new VoltageAcross(part),
+        "A" => new CurrentThrough(part),
+        "W" => new PowerIn(part),
+        "J" => new EnergyIn(part),
+        "A²s" => new JouleIntegral(part),
+        "V/s" => new RateOfChange(new VoltageAcross(part)),
+        "A/s" => new RateOfChange(new CurrentThrough(part)),
+        _ => null,
+    };
+
+    private static ObservationResult? Matching(TransientResult result, Measurand quantity)
+    {
+        var sought = Normalised(result.Circuit, quantity);
+        var observed = result.Circuit.Observations
+            .FirstOrDefault(o => Normalised(result.Circuit, o.Quantity) == sought);
+        return observed is null ? null : result.Observations.FirstOrDefault(o => o.Name == observed.Name);
+    }
+
+    // One quantity may be named in several ways: by its node, its nodes or its part, with either sign.
+    private static Measurand Normalised(Circuit circuit, Measurand quantity) => quantity switch
+    {
+        VoltageAcross across => Normalised(
+            circuit, new VoltageBetween(circuit.Parts[across.Part].From, circuit.Parts[across.Part].To)),
+        VoltageBetween between when between.From < between.To => new VoltageBetween(between.To, between.From),
+        CurrentThrough current => current with { Delivered = false },
+        PowerIn power => power with { Delivered = false },
+        EnergyIn energy => energy with { Delivered = false },
+        Figure figure => Normalised(circuit, figure.Of),
+        RateOfChange rate => new RateOfChange(Normalised(circuit, rate.Of)),
+        _ => quantity,
+    };
+
+    private static bool IsAtMax(ObservationResult observation, double? value)
+    {
+        return (value, observation.Max.Value, observation.Min.Value) switch
+        {
+            ({ } worst, { } max, { } min) => Math.Abs(worst - max) <= Math.Abs(worst - min),
+            _ => observation.Greatest == observation.Max,
+        };
+    }
+}
