@@ -62,7 +62,7 @@ public class PlotTraceTests
     [InlineData(-0.0015, 0.0061, "A", "-1 0 1 2 3 4 5 6", "mA")]
     [InlineData(0, 71900, "A²s", "0 10 20 30 40 50 60 70", "10³ A²s")]
     [InlineData(0, 1, "V", "0.0 0.2 0.4 0.6 0.8 1.0", "V")]
-    [InlineData(930, 934, "V", "930 931 932 933 934", "V")]
+    [InlineData(930, 936, "V", "930 931 932 933 934 935 936", "V")]
     [InlineData(0, 120, "%", "0 20 40 60 80 100 120", "%")]
     public void Marks_are_round_and_in_a_fitting_unit(
         double from,
