@@ -12,5 +12,7 @@ public static class ResultFiles
     [
         OutputFile.OfText("results.json", JsonReport.Write(result)),
         OutputFile.OfText("waveforms.csv", CsvReport.Write(result)),
+        OutputFile.OfText("waveforms.svg", WaveformPlot.Svg(result)),
+        new OutputFile("waveforms.png", WaveformPlot.Png(result)),
     ];
 }
