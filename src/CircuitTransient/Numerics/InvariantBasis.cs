@@ -59,7 +59,8 @@ internal sealed record InvariantBasis(
     }
 
     /// <summary>S = R T R⁻¹ from S R = R T, column by column; the diagonal is kept as it is.</summary>
-    private static DoubleDoubleComplexMatrix Transform(DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix r)
+    private static DoubleDoubleComplexMatrix Transform(
+        DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix r)
     {
         int m = t.Rows;
         DoubleDoubleComplexMatrix s = r.Times(t);

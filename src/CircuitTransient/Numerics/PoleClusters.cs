@@ -128,6 +128,7 @@ internal sealed class PoleClusters
             .OrderByDescending(b => bases[b].ProjectorNorm)
             .ToArray();
         int[] names = [.. Enumerable.Range(0, bases.Length).Select(NameOf)];
+        BlockDirections?[] directions = new BlockDirections?[bases.Length];
         HashSet<int> taken = [];
         foreach (int b in worst)
         {
@@ -136,7 +137,7 @@ internal sealed class PoleClusters
                 continue;
             }
 
-            int partner = Partner(bases, names, b);
+            int partner = Partner(bases, directions, names, b);
             if (partner >= 0 && !taken.Contains(names[partner]))
             {
                 Join(names[b], names[partner], taken);
@@ -146,7 +147,7 @@ internal sealed class PoleClusters
         return taken.Count > 0;
     }
 
-    private int Partner(InvariantBasis[] bases, int[] names, int b)
+    private int Partner(InvariantBasis[] bases, BlockDirections?[] directions, int[] names, int b)
     {
         int best = -1;
         double bestScore = double.PositiveInfinity;
@@ -160,8 +161,9 @@ internal sealed class PoleClusters
             double distance = Distance(names[b], names[c], Blur(bases[b]) + Blur(bases[c]));
             if (distance < 2.5)
             {
-                double score = 1 - (SubspaceAngle.Cosine(bases[b].Right, bases[c].Right)
-                    * SubspaceAngle.Cosine(bases[b].Left, bases[c].Left)) + (1e-3 * distance);
+                BlockDirections own = directions[b] ??= new(bases[b]);
+                BlockDirections other = directions[c] ??= new(bases[c]);
+                double score = 1 - own.CosineTo(other) + (1e-3 * distance);
                 (best, bestScore) = score < bestScore ? (c, score) : (best, bestScore);
             }
         }

@@ -2,16 +2,23 @@ using System.Numerics;
 
 namespace CircuitTransient.Numerics;
 
-/// <summary>How nearly parallel two sets of vectors are; a figure for choosing, so doubles do.</summary>
-internal static class SubspaceAngle
+/// <summary>The directions that a block spans, to tell how nearly parallel two blocks are; a figure for
+/// choosing, so doubles do.</summary>
+/// <param name="basis">The block.</param>
+internal sealed class BlockDirections(InvariantBasis basis)
 {
-    /// <summary>The root mean square cosine between the spans, over the smaller one; 1 where one lies in the
-    /// other.
+    private readonly Complex[][] _right = Orthonormalised(basis.Right);
+    private readonly Complex[][] _left = Orthonormalised(basis.Left);
+
+    /// <summary>Product of the cosines between the right and between the left spans; 1 where both are
+    /// parallel.
     /// </summary>
-    public static double Cosine(DoubleDoubleComplexMatrix x, DoubleDoubleComplexMatrix y)
+    public double CosineTo(BlockDirections other) =>
+        Cosine(_right, other._right) * Cosine(_left, other._left);
+
+    /// <summary>The root mean square cosine over the smaller span; 1 where one lies in the other.</summary>
+    private static double Cosine(Complex[][] u, Complex[][] v)
     {
-        Complex[][] u = Orthonormalised(x);
-        Complex[][] v = Orthonormalised(y);
         double sum = 0;
         foreach (Complex[] a in u)
         {
