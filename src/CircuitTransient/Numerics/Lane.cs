@@ -21,6 +21,23 @@ internal readonly record struct Lane(Vector256<double> Hi, Vector256<double> Lo)
         Lo.StoreUnsafe(ref lo, (nuint)index);
     }
 
+    /// <summary>Four numbers a stride apart.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lane Gather(Span<double> hi, Span<double> lo, int index, int stride) => new(
+        Vector256.Create(hi[index], hi[index + stride], hi[index + (2 * stride)], hi[index + (3 * stride)]),
+        Vector256.Create(lo[index], lo[index + stride], lo[index + (2 * stride)], lo[index + (3 * stride)]));
+
+    /// <summary>Four numbers a stride apart.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public void Scatter(Span<double> hi, Span<double> lo, int index, int stride)
+    {
+        for (int k = 0; k < Vector256<double>.Count; k++)
+        {
+            hi[index + (k * stride)] = Hi.GetElement(k);
+            lo[index + (k * stride)] = Lo.GetElement(k);
+        }
+    }
+
     /// <summary>One number four times.</summary>
     public static Lane Repeat(DoubleDouble x) => new(Vector256.Create(x.Hi), Vector256.Create(x.Lo));
 
@@ -37,10 +54,6 @@ internal readonly record struct Lane(Vector256<double> Hi, Vector256<double> Lo)
     /// <summary>this + f x by the short sum.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public Lane AddProduct(Lane f, Lane x) => AddProduct(f.Hi, f.Lo, x);
-
-    /// <summary>this − x by the short sum.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public Lane Subtract(Lane x) => Add(-x.Hi, -x.Lo);
 
     /// <summary>f this.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]

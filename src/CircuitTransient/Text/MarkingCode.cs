@@ -1,9 +1,11 @@
 namespace CircuitTransient.Text;
 
-/// <summary>Marking codes of IEC 60062, in which a letter stands for the decimal mark: <c>4k7</c>, <c>R047</c>.</summary>
+/// <summary>Marking codes of IEC 60062, in which a letter stands for the decimal mark: <c>4k7</c>,
+/// <c>R047</c>.</summary>
 public static class MarkingCode
 {
-    // Letters as quoted in secondary sources for IEC 60062:2016; m and F of capacitors from memory; n, µ, m for
+    // Letters as quoted in secondary sources for IEC 60062:2016; m and F of capacitors from memory; n, µ, m
+    // for
     // inductors, u for µ and k for K are custom and not the code.
     private const string Letters = "RLKkMGmuµμnpF";
 
@@ -24,11 +26,14 @@ public static class MarkingCode
             return false;
         }
 
-        var digits = string.Concat(place == 0 ? "0" : text.AsSpan(0, place), ".", text.AsSpan(place + 1), "0");
+        var digits = string.Concat(place == 0
+            ? "0"
+            : text.AsSpan(0, place), ".", text.AsSpan(place + 1), "0");
         return DecimalText.TryRead(digits, Exponent(text[place]), 1, out value);
     }
 
-    /// <summary>Reads a code on a part of the dimension given: a resistor's letters are not a capacitor's.</summary>
+    /// <summary>Reads a code on a part of the dimension given: a resistor's letters are not a
+    /// capacitor's.</summary>
     public static bool TryRead(string text, Dimension dimension, out double value) =>
         TryRead(text, out value) && text[LetterOf(text)] is var letter
         && (dimension == Dimension.Resistance ? "RLKkMG".Contains(letter)

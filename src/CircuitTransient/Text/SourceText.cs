@@ -1,11 +1,12 @@
 using System.Collections.Immutable;
+using System.Runtime.InteropServices;
 using System.Security.Cryptography;
 using System.Text;
 
 namespace CircuitTransient.Text;
 
 /// <summary>A text as read from its file, with the places of its lines.</summary>
-public sealed class SourceText
+public sealed partial class SourceText
 {
     private readonly ImmutableArray<int> lineStarts;
 
@@ -13,20 +14,16 @@ public sealed class SourceText
     /// <param name="name">The name shown in messages, as the user gave it.</param>
     /// <param name="content">The characters.</param>
     public SourceText(string name, string content)
+        : this(name, content, Encoding.UTF8.GetBytes(content))
+    {
+    }
+
+    private SourceText(string name, string content, ReadOnlySpan<byte> bytes)
     {
         Name = name;
         Content = content;
-        var starts = ImmutableArray.CreateBuilder<int>();
-        starts.Add(0);
-        for (var i = 0; i < content.Length; i++)
-        {
-            if (content[i] == '\n')
-            {
-                starts.Add(i + 1);
-            }
-        }
-
-        lineStarts = starts.ToImmutable();
+        Sha256 = Convert.ToHexStringLower(SHA256.HashData(bytes));
+        lineStarts = StartsOfLines(content);
     }
 
     /// <summary>The name shown in messages.</summary>
@@ -35,8 +32,8 @@ public sealed class SourceText
     /// <summary>The characters.</summary>
     public string Content { get; }
 
-    /// <summary>SHA-256 of the text in UTF-8, in lower-case hexadecimal digits.</summary>
-    public string Sha256 => Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(Content)));
+    /// <summary>SHA-256 of the bytes of the file, in lower-case hexadecimal digits.</summary>
+    public string Sha256 { get; }
 
     /// <summary>The number of lines; an empty text has one.</summary>
     public int LineCount => lineStarts.Length;
@@ -51,14 +48,45 @@ public sealed class SourceText
         return index >= 0 ? index + 1 : ~index;
     }
 
-    /// <summary>Column number, counted from 1, of an offset.</summary>
-    public int ColumnOf(int offset) => offset - lineStarts[LineOf(offset) - 1] + 1;
+    /// <summary>Column number, counted from 1 in characters, of an offset.</summary>
+    public int ColumnOf(int offset)
+    {
+        var before = Content.AsSpan()[lineStarts[LineOf(offset) - 1]..offset];
+        var column = 1;
+        foreach (var unit in before)
+        {
+            // The second half of a surrogate pair belongs to the character of the first.
+            column += char.IsLowSurrogate(unit) ? 0 : 1;
+        }
+
+        return column;
+    }
 
     /// <summary>The characters of a line (counted from 1) without its line break.</summary>
     public string Line(int number)
     {
+        var span = SpanOfLine(number);
+        return Content.Substring(span.Start, span.Length);
+    }
+
+    /// <summary>Where a line (counted from 1) stands, without its line break.</summary>
+    public TextSpan SpanOfLine(int number)
+    {
         var start = lineStarts[number - 1];
         var end = number < lineStarts.Length ? lineStarts[number] : Content.Length;
-        return Content[start..end].TrimEnd('\r', '\n');
+        return new TextSpan(start, Content.AsSpan()[start..end].TrimEnd("\r\n").Length);
+    }
+
+    private static ImmutableArray<int> StartsOfLines(string content)
+    {
+        // Counted first, so that sixteen million line breaks cost one array and no growing.
+        var starts = new int[content.AsSpan().Count('\n') + 1];
+        var line = 0;
+        for (var i = content.IndexOf('\n'); i >= 0; i = content.IndexOf('\n', i + 1))
+        {
+            starts[++line] = i + 1;
+        }
+
+        return ImmutableCollectionsMarshal.AsImmutableArray(starts);
     }
 }

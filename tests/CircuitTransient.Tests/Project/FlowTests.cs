@@ -1,6 +1,7 @@
 using System.Text.RegularExpressions;
 using ArchUnitNET.Domain;
 using ArchUnitNET.Loader;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Tests.Project;
 
@@ -24,7 +25,7 @@ public partial class FlowTests
     [Fact]
     public void No_compiled_type_depends_on_a_later_stage()
     {
-        var architecture = new ArchLoader().LoadAssemblies(typeof(Text.SourceText).Assembly).Build();
+        var architecture = new ArchLoader().LoadAssemblies(typeof(SourceText).Assembly).Build();
         var dependencies = architecture.Types.SelectMany(type => type.Dependencies).ToList();
 
         Assert.Contains(dependencies, d => StageOf(d.Origin) == "Circuits" && StageOf(d.Target) == "Text");

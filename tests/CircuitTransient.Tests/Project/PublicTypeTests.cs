@@ -1,5 +1,7 @@
 using System.Reflection;
 using System.Xml.Linq;
+using CircuitTransient.Cli;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Tests.Project;
 
@@ -7,7 +9,7 @@ namespace CircuitTransient.Tests.Project;
 public class PublicTypeTests
 {
     public static TheoryData<Assembly> Assemblies =>
-        [typeof(Text.SourceText).Assembly, typeof(CircuitTransient.Cli.App).Assembly];
+        [typeof(SourceText).Assembly, typeof(App).Assembly];
 
     [Theory]
     [MemberData(nameof(Assemblies))]

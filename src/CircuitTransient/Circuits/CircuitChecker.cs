@@ -1,0 +1,128 @@
+using System.Collections.Immutable;
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>Turns statements into a checked circuit, or finds every mistake in them in one go.</summary>
+public static class CircuitChecker
+{
+    /// <summary>Checks a circuit.</summary>
+    /// <param name="syntax">The statements as written.</param>
+    /// <param name="earlier">What reading the text found; with an error in it there is no circuit.</param>
+    /// <param name="readFile">Reads a file of wave points by its path relative to the circuit's folder; null
+    /// where no file can be read.</param>
+    /// <returns>The circuit, or errors in the order of the file; warnings come with either.</returns>
+    public static Outcome<Circuit> Check(
+        CircuitSyntax syntax, ImmutableArray<Diagnostic> earlier,
+        Func<string, Outcome<SourceText>>? readFile = null)
+    {
+        var findings = new Findings(syntax.Source);
+        foreach (var diagnostic in earlier)
+        {
+            findings.Add(diagnostic);
+        }
+
+        var circuit = Build(syntax, findings, readFile ?? (_ => new Outcome<SourceText>(null, [])));
+        return new Outcome<Circuit>(findings.HasErrors ? null : circuit, findings.InOrder());
+    }
+
+    private static Circuit? Build(
+        CircuitSyntax syntax, Findings findings, Func<string, Outcome<SourceText>> readFile)
+    {
+        if (syntax.Statements.IsEmpty)
+        {
+            ReportEmpty(findings);
+            return null;
+        }
+
+        Unreadable.Excuse(syntax.Statements, findings);
+        var settings = StudySettings.Read(syntax, findings);
+        var parameters = new ParameterList();
+        var values = new NamedValues(findings, parameters);
+        var statements = Expansion.WriteOut(syntax, settings.Reference, findings, values);
+        if (statements.IsEmpty)
+        {
+            ReportEmpty(findings);
+            return null;
+        }
+
+        var state = new CheckState(findings, values, parameters, readFile)
+        {
+            Nodes = new NodeTable(settings.Reference, findings, settings.ReferenceSpan),
+        };
+        Declarations.Declare(state, statements);
+        values.EvaluateAll();
+        return Lower(state, settings, statements);
+    }
+
+    private static Circuit Lower(
+        CheckState state, StudySettings settings, ImmutableArray<PlacedStatement> statements)
+    {
+        var until = settings.End(state, Scope.Outermost(settings.Reference));
+        LowerParts(state);
+        var couplings = CouplingLowering.Lower(state);
+        SwitchOrder.Check(state, until);
+        var observations = Observations.Lower(state, statements, until);
+        var requirements = ImmutableArray.CreateBuilder<Requirement>();
+        foreach (var (statement, scope) in statements)
+        {
+            if (statement is RequireStatement syntax && Requirements.Lower(state, syntax, scope, until)
+                is { } requirement)
+            {
+                requirements.Add(requirement);
+            }
+        }
+
+        CheckTopology(state, settings);
+        return new Circuit(
+            state.Findings.Source, settings.Title, settings.Notes, state.Nodes.Names,
+            [.. state.Parts.OfType<Part>()], couplings, state.Parameters.ToImmutable(), observations,
+            requirements.ToImmutable(), settings.StartsSettled, until);
+    }
+
+    // Switches first: a wave may stand at an instant after one of them acts.
+    private static void LowerParts(CheckState state)
+    {
+        state.Parts = new Part?[state.Declared.Count];
+        foreach (var part in state.Declared.Where(p => p.Statement is SwitchStatement))
+        {
+            state.Parts[part.Index] = SwitchLowering.Lower(state, part);
+        }
+
+        foreach (var part in state.Declared)
+        {
+            state.Parts[part.Index] = PartLowering.Lower(state, part);
+        }
+    }
+
+    private static void CheckTopology(CheckState state, StudySettings settings)
+    {
+        if (state.Declared.Count == 0)
+        {
+            ReportEmpty(state.Findings);
+        }
+        else
+        {
+            Islands.Check(state, settings.ReferenceSpan);
+            foreach (var resistor in state.Parts.OfType<Resistor>())
+            {
+                ValueHabits.CheckAcrossSource(state, resistor);
+            }
+        }
+
+        if (!state.Findings.HasErrors)
+        {
+            StoredContradictions.Check(state);
+        }
+    }
+
+    private static void ReportEmpty(Findings findings)
+    {
+        if (!findings.HasErrors)
+        {
+            findings.Error(new TextSpan(0, 0), "this file holds no circuit: there is no part in it",
+                "start with `source Feed at a : 10 V` and `resistor R1 at a : 1 kΩ`");
+        }
+    }
+}

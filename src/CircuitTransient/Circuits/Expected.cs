@@ -1,0 +1,76 @@
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>Works out an expression where a certain dimension is expected; null means an error has been
+/// reported.</summary>
+internal static class Expected
+{
+    public static Evaluated? Value(CheckState state, ExpressionSyntax expression, Scope scope,
+        Dimension dimension)
+    {
+        var value = state.Evaluator.Evaluate(expression, scope);
+        return value is { } v && Matches(state.Findings, expression, v.Dimension, dimension) ? value : null;
+    }
+
+    /// <summary>A value that cannot vary: of a tolerance in it only the nominal value is used, which is
+    /// said.</summary>
+    public static double? Fixed(CheckState state, ExpressionSyntax expression, Scope scope,
+        Dimension dimension) =>
+        Value(state, expression, scope, dimension) is { } v ? Fixed(state, expression, v) : null;
+
+    /// <summary>The nominal value of one that cannot vary here.</summary>
+    public static double Fixed(CheckState state, ExpressionSyntax expression, Evaluated value)
+    {
+        if (state.Parameters.FirstToleranced(value.Formula) is { } held)
+        {
+            state.Findings.Warn(expression.Span, $"`{held.Name}` is held at its nominal value here",
+                "its tolerance is drawn only in part values, initial charges and currents, delays and "
+                    + "single waves");
+        }
+
+        return value.Value;
+    }
+
+    /// <summary>A fraction written in per cent.</summary>
+    public static double? Fraction(CheckState state, ExpressionSyntax expression, Scope scope)
+    {
+        if (expression is NumberSyntax { HasUnit: false, Mark: null } bare)
+        {
+            state.Findings.Error(bare.Span, $"`{state.Text(bare.Span)}` has no unit; a band is in per cent",
+                $"write `{state.Text(bare.Span)} %`");
+            return null;
+        }
+
+        return Fixed(state, expression, scope, Dimension.None);
+    }
+
+    public static bool Matches(Findings findings, ExpressionSyntax expression, Dimension found,
+        Dimension expected)
+    {
+        if (found == expected)
+        {
+            return true;
+        }
+
+        var text = findings.Source[expression.Span];
+        var measure = Measure.Of(expected);
+        var plain = expression is NegationSyntax negation ? negation.Operand : expression;
+        if (plain is NumberSyntax { HasUnit: false })
+        {
+            findings.Error(expression.Span,
+                $"`{text}` has no unit; {measure.Phrase} is in {measure.UnitWord}",
+                $"write `{text} {measure.Unit}`");
+        }
+        else
+        {
+            findings.Error(expression.Span, expected == Dimension.None
+                ? $"`{text}` is {Measure.Of(found).Phrase}; a pure number is expected here"
+                : $"`{text}` is {Measure.Of(found).Phrase}; {measure.Phrase} in {measure.UnitWord} is "
+                    + $"expected here");
+        }
+
+        return false;
+    }
+}

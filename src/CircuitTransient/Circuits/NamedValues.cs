@@ -1,0 +1,126 @@
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>The named values of a circuit, each worked out when it is first asked for.</summary>
+internal sealed class NamedValues
+{
+    private readonly Findings findings;
+    private readonly ParameterList parameters;
+    private readonly NameTable<Definition> table;
+    private readonly List<Definition> inProgress = [];
+
+    public NamedValues(Findings findings, ParameterList parameters)
+    {
+        this.findings = findings;
+        this.parameters = parameters;
+        table = new NameTable<Definition>("value", findings);
+        Evaluator = new ExpressionEvaluator(findings, this);
+    }
+
+    public ExpressionEvaluator Evaluator { get; }
+
+    public bool IsKnown(string name) => table.TryGet(name, out _);
+
+    /// <summary>Names a value.</summary>
+    /// <param name="name">Its full name.</param>
+    /// <param name="span">Where the name stands.</param>
+    /// <param name="value">What it is.</param>
+    /// <param name="scope">Where the names in its expression belong.</param>
+    public void Declare(string name, TextSpan span, ToleratedSyntax value, Scope scope)
+    {
+        if (name is "pi")
+        {
+            findings.Error(span, "`pi` is the circle number already", "give the value another name");
+            return;
+        }
+
+        table.Declare(name, span, new Definition(name, span, value, scope));
+    }
+
+    /// <summary>Works out every value in the order written, so that mistakes in unused ones are found
+    /// too.</summary>
+    public void EvaluateAll()
+    {
+        foreach (var name in table.Names.ToArray())
+        {
+            if (table.TryGet(name, out var definition))
+            {
+                Evaluate(definition);
+            }
+        }
+    }
+
+    /// <summary>The value of that name, of the assembly first and then of the file.</summary>
+    public Evaluated? Find(NameSyntax name, Scope scope)
+    {
+        var written = scope.Written(name, findings);
+        return table.TryGet(scope.Prefix + written, out var inner) ? Evaluate(inner)
+            : table.Find(written, name.Span, out var outer, $"define it: `value {written} : …`")
+            ? Evaluate(outer)
+            : null;
+    }
+
+    private Evaluated? Evaluate(Definition definition)
+    {
+        if (definition.IsDone)
+        {
+            return definition.Result;
+        }
+
+        if (inProgress.Contains(definition))
+        {
+            ReportCycle(definition);
+            return null;
+        }
+
+        inProgress.Add(definition);
+        var result = Evaluator.Evaluate(definition.Value.Value, definition.Scope, inProgress.Count);
+        inProgress.RemoveAt(inProgress.Count - 1);
+        if (result is { } plain)
+        {
+            result = Tolerances.Apply(plain, definition.Value, definition.Scope, Evaluator, findings,
+                parameters,
+                definition.Name, definition.Span, isNamedValue: true);
+        }
+
+        if (!definition.IsDone)
+        {
+            definition.Result = result;
+            definition.IsDone = true;
+        }
+
+        return definition.Result;
+    }
+
+    private void ReportCycle(Definition definition)
+    {
+        var start = inProgress.IndexOf(definition);
+        var cycle = inProgress.Skip(start).ToList();
+        var path = string.Join(" → ", cycle.Append(definition).Select(d => d.Name));
+        findings.Error(definition.Span,
+            cycle.Count == 1 ? $"the value `{definition.Name}` is made of itself"
+                : $"the value `{definition.Name}` is made of itself: {path}",
+            "give one of them as a number");
+        foreach (var member in cycle)
+        {
+            member.IsDone = true;
+        }
+    }
+
+    private sealed class Definition(string name, TextSpan span, ToleratedSyntax value, Scope scope)
+    {
+        public string Name => name;
+
+        public TextSpan Span => span;
+
+        public ToleratedSyntax Value => value;
+
+        public Scope Scope => scope;
+
+        public bool IsDone { get; set; }
+
+        public Evaluated? Result { get; set; }
+    }
+}

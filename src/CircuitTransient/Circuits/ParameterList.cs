@@ -1,0 +1,44 @@
+using System.Collections.Immutable;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>The values a study may vary, as they are met. A value and a part that share a name are told apart
+/// as <c>value R1</c> and <c>part R1</c>.</summary>
+internal sealed class ParameterList
+{
+    private readonly ImmutableArray<Parameter>.Builder list = ImmutableArray.CreateBuilder<Parameter>();
+    private readonly HashSet<string> shared = new(StringComparer.Ordinal);
+
+    public int Count => list.Count;
+
+    public Parameter this[int index] => list[index];
+
+    /// <summary>Says that both a value and a part bear the name.</summary>
+    public void Share(string name) => shared.Add(name);
+
+    /// <summary>Adds a parameter and gives the formula that reads it.</summary>
+    /// <param name="owner">The name of the value or part.</param>
+    /// <param name="aspect">What of a part: <c>initial charge</c>; null for the value itself.</param>
+    /// <param name="isNamedValue">Whether the owner is a named value.</param>
+    public Formula Add(
+        string owner, string? aspect, bool isNamedValue, double nominal, Tolerance? tolerance, TextSpan span)
+    {
+        var name = aspect is not null ? $"{owner} {aspect}"
+            : shared.Contains(owner) ? (isNamedValue ? "value " : "part ") + owner
+            : owner;
+        list.Add(new Parameter(name, nominal, tolerance, span));
+        return new ParameterFormula(list.Count - 1);
+    }
+
+    public ImmutableArray<Parameter> ToImmutable() => list.ToImmutable();
+
+    /// <summary>The first parameter with a tolerance that a formula reads, or null.</summary>
+    public Parameter? FirstToleranced(Formula? formula) => formula switch
+    {
+        ParameterFormula p when list[p.Index].Tolerance is not null => list[p.Index],
+        BinaryFormula b => FirstToleranced(b.Left) ?? FirstToleranced(b.Right),
+        CallFormula c => FirstToleranced(c.Argument),
+        _ => null,
+    };
+}

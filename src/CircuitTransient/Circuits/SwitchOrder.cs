@@ -1,0 +1,99 @@
+namespace CircuitTransient.Circuits;
+
+/// <summary>Whether the events of switches come in an order that can happen.</summary>
+internal static class SwitchOrder
+{
+    public static void Check(CheckState state, double? until)
+    {
+        if (!WaitsInRings(state))
+        {
+            foreach (var part in state.Parts.OfType<Switch>())
+            {
+                Check(state, part, until);
+            }
+        }
+    }
+
+    /// <summary>Reports events that wait for each other in a ring, or for a later event of their own
+    /// switch.</summary>
+    public static bool WaitsInRings(CheckState state)
+    {
+        var found = false;
+        foreach (var (part, index) in state.Parts.Select((p, i) => (p, i)))
+        {
+            for (var e = 0; part is Switch s && e < s.Events.Length; e++)
+            {
+                found |= ReportRing(state, new EventReference(index, e));
+            }
+        }
+
+        return found;
+    }
+
+    private static bool ReportRing(CheckState state, EventReference start)
+    {
+        var path = new List<EventReference> { start };
+        for (var next = Awaited(state, start); next is not null; next = Awaited(state, next))
+        {
+            if (next.Part == start.Part && next.Event >= start.Event)
+            {
+                var names = path.Append(next).Select(r => Words(state, r));
+                state.Findings.Error(((Switch)state.Parts[start.Part]!).Events[start.Event].Span,
+                    next == start ? $"`{Words(state, start)}` waits for itself: {string.Join(" → ", names)}"
+                        : $"`{Words(state, start)}` waits for a later event of its own switch: "
+                        + string.Join(" → ", names),
+                    "give one of these events a time");
+                return true;
+            }
+
+            if (path.Contains(next))
+            {
+                return false; // a ring further on, reported where it is
+            }
+
+            path.Add(next);
+        }
+
+        return false;
+    }
+
+    private static EventReference? Awaited(CheckState state, EventReference of) =>
+        state.Parts[of.Part] is Switch s && s.Events[of.Event]
+            .Trigger is AtInstant { Instant.After: var after }
+            ? after : null;
+
+    private static string Words(CheckState state, EventReference of) =>
+        Instants.Words(state, new Instant(0, of))["when ".Length..];
+
+    private static void Check(CheckState state, Switch part, double? until)
+    {
+        double? last = null;
+        foreach (var e in part.Events)
+        {
+            var known = e.Trigger is AtInstant { Instant: var instant }
+                ? Schedule.Resolve(instant, state.Parts) : null;
+            var acts = e.Closes ? "closes" : "opens";
+            if (known is { } time)
+            {
+                if (last is { } before && time <= before)
+                {
+                    state.Findings.Error(e.Span,
+                        $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, which is not after its event "
+                            + $"before at "
+                        + Amount.Of(before, "s"), "put its events in the order of time");
+                    return;
+                }
+
+                if (time > until)
+                {
+                    state.Findings.Warn(e.Span,
+                        $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, after the study ends at "
+                            + $"{Amount.Of(until.Value, "s")}",
+                        $"end the study later, such as `until {Amount.Of(2 * time, "s")}`");
+                }
+
+                last = time;
+            }
+        }
+    }
+}

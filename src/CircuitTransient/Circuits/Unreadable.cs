@@ -1,0 +1,32 @@
+using System.Collections.Immutable;
+using CircuitTransient.Syntax;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>Keeps what follows from a statement that could not be read from being reported as well.</summary>
+internal static class Unreadable
+{
+    public static void Excuse(ImmutableArray<Statement> statements, Findings findings)
+    {
+        foreach (var statement in statements)
+        {
+            switch (statement)
+            {
+                case UnreadableStatement unreadable:
+                    findings.Excused.UnionWith(unreadable.Mentions);
+                    if (unreadable.Name is { } name)
+                    {
+                        findings.Excused.Add(name.Text);
+                    }
+
+                    break;
+                case RepeatStatement repeat:
+                    Excuse(repeat.Body, findings);
+                    break;
+                case AssemblyStatement assembly:
+                    Excuse(assembly.Body, findings);
+                    break;
+            }
+        }
+    }
+}

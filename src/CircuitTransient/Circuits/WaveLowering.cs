@@ -1,0 +1,77 @@
+using System.Collections.Immutable;
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>Turns the wave of a source into pieces.</summary>
+internal static class WaveLowering
+{
+    /// <summary>The wave and what it is in, or null where an error was reported.</summary>
+    public static (Wave Wave, bool IsVoltage)? Lower(CheckState state, PartDeclaration part,
+        WaveSyntax syntax)
+    {
+        var pieces = ImmutableArray.CreateBuilder<WavePiece>();
+        Dimension? dimension = null;
+        Evaluated? only = null;
+        var isGood = true;
+        foreach (var term in syntax.Terms)
+        {
+            var lowering = new WaveTermLowering(state, part.Scope, dimension, term.IsSubtracted);
+            var lowered = lowering.Lower(term.Piece);
+            isGood &= lowered is not null;
+            dimension ??= lowering.Dimension;
+            only = lowering.Level;
+            pieces.AddRange(lowered ?? []);
+            if (syntax.Terms.Length > 1 && lowering.Level is { } level)
+            {
+                Expected.Fixed(state, WaveTermLowering.LevelOf(term.Piece)!, level);
+            }
+        }
+
+        if (!isGood || dimension is null)
+        {
+            return null;
+        }
+
+        var single = syntax.Terms.Length == 1 ? only : null;
+        var (scale, isScaled) = Scale(state, part, syntax, single);
+        return isScaled ? (new Wave(pieces.ToImmutable(), scale), dimension == Dimension.Voltage) : null;
+    }
+
+    // The tolerance of a source's level is carried by one factor on the whole wave.
+    private static (Quantity Scale, bool Succeeded) Scale(
+        CheckState state, PartDeclaration part, WaveSyntax syntax, Evaluated? level)
+    {
+        if (syntax.Tolerance is { } tolerance
+            && (level is null || syntax.Terms[0].Piece is not ConstantSyntax))
+        {
+            state.Findings.Error(tolerance.Span, "a tolerance stands after a constant value only",
+                "name the level: `value Level : 540 V ±10 %`, then use `Level` in a wave of one term");
+            return (1, false);
+        }
+
+        if (level is not { } nominal)
+        {
+            return (1, true);
+        }
+
+        if (nominal.Value == 0)
+        {
+            if (syntax.Tolerance is { } onZero)
+            {
+                state.Findings.Error(onZero.Span, "a source of zero has nothing a tolerance could scale",
+                    "give its largest value and a tolerance down to zero, such as `1 V -100 % +0 %`");
+            }
+
+            return (1, syntax.Tolerance is null);
+        }
+
+        var value = new ToleratedSyntax(WaveTermLowering.LevelOf(syntax.Terms[0].Piece)!, syntax.Tolerance);
+        var applied = Tolerances.Apply(nominal, value, part.Scope, state.Evaluator, state.Findings,
+            state.Parameters, part.Name, part.NameSyntax.Span);
+        return applied is { } a
+            ? (new Quantity(1, new BinaryFormula('/', a.AsFormula, new NumberFormula(nominal.Value))), true)
+            : (1, false);
+    }
+}

@@ -1,0 +1,296 @@
+using System.Collections.Immutable;
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>Turns one term of a wave into pieces; null means that an error has been reported.</summary>
+/// <param name="state">What is known of the circuit.</param>
+/// <param name="scope">Where the source stands.</param>
+/// <param name="expected">The dimension the terms before it have, or null.</param>
+/// <param name="isSubtracted">Whether the term is taken off.</param>
+internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension? expected, bool isSubtracted)
+{
+    private const int MostEdges = 100_000;
+
+    /// <summary>Voltage or current, once a level has been read.</summary>
+    public Dimension? Dimension { get; private set; }
+
+    /// <summary>The level that the whole term is a multiple of, where it has one.</summary>
+    public Evaluated? Level { get; private set; }
+
+    /// <summary>The level of a term as written; null for straight lines.</summary>
+    public static ExpressionSyntax? LevelOf(WavePieceSyntax piece) => piece switch
+    {
+        ConstantSyntax p => p.Level,
+        StepSyntax p => p.Level,
+        PulseSyntax p => p.Level,
+        PulseTrainSyntax p => p.Level,
+        RampSyntax p => p.Level,
+        SineSyntax p => p.Amplitude,
+        DecaySyntax p => p.Level,
+        ImpulseSyntax p => p.Peak,
+        _ => null,
+    };
+
+    public ImmutableArray<WavePiece>? Lower(WavePieceSyntax piece)
+    {
+        if (piece is StraightLinesSyntax lines)
+        {
+            return Lines(lines);
+        }
+
+        if (piece is StraightLinesFileSyntax file)
+        {
+            return File(file);
+        }
+
+        var level = ReadLevel(LevelOf(piece)!);
+        var pieces = piece switch
+        {
+            ConstantSyntax constant => Constant(constant, level ?? 0),
+            StepSyntax step => Step(step, level ?? 0),
+            PulseSyntax pulse => Pulse(pulse, level ?? 0),
+            PulseTrainSyntax train => Train(train, level ?? 0),
+            RampSyntax ramp => Ramp(ramp, level ?? 0),
+            SineSyntax sine => new SineLowering(state, scope).Lower(sine, level ?? 0),
+            DecaySyntax decay => Decay(decay, level ?? 0),
+            ImpulseSyntax impulse => Impulse(impulse, level ?? 0),
+            _ => throw new System.Diagnostics.UnreachableException($"no wave for {piece}"),
+        };
+        return level is null ? null : pieces;
+    }
+
+    /// <summary>Signed level, in volts or amperes.</summary>
+    private double? ReadLevel(ExpressionSyntax expression)
+    {
+        if (state.Evaluator.Evaluate(expression, scope) is not { } value
+            || !Fits(expression, value.Dimension))
+        {
+            return null;
+        }
+
+        var sign = isSubtracted ? -1 : 1;
+        Level = value;
+        return sign * value.Value;
+    }
+
+    private bool Fits(ExpressionSyntax expression, Dimension found)
+    {
+        if ((expected ?? Dimension) is { } other)
+        {
+            Dimension = other;
+            return Expected.Matches(state.Findings, expression, found, other);
+        }
+
+        if (found == Text.Dimension.Voltage || found == Text.Dimension.Current)
+        {
+            Dimension = found;
+            return true;
+        }
+
+        var text = state.Text(expression.Span);
+        var isBare = expression is NumberSyntax { HasUnit: false };
+        state.Findings.Error(expression.Span, isBare
+            ? $"`{text}` has no unit; a source is in volts or amperes"
+            : $"`{text}` is {Measure.Of(found).Phrase}; a source is in volts or amperes",
+            isBare ? $"write `{text} V` or `{text} A`" : null);
+        return false;
+    }
+
+    private static ImmutableArray<WavePiece> Constant(ConstantSyntax constant, double level) =>
+        [new WavePiece(0, double.PositiveInfinity, level, 0, 0, 0, 0, "constant",
+            IsPerpetual: constant is not null)];
+
+    private ImmutableArray<WavePiece>? Step(StepSyntax step, double level) =>
+        Instants.Fixed(state, step.At, scope) is { } at ? [Held(at, level, $"step at {Time(at)}")] : null;
+
+    private ImmutableArray<WavePiece>? Pulse(PulseSyntax pulse, double level)
+    {
+        if (Span(pulse.From, pulse.To, pulse.Span, "this pulse") is not { } span)
+        {
+            return null;
+        }
+
+        return
+        [
+            Held(span.From, level, $"rise at {Time(span.From)}"),
+            Held(span.To, -level, $"fall at {Time(span.To)}"),
+        ];
+    }
+
+    private ImmutableArray<WavePiece>? Train(PulseTrainSyntax train, double level)
+    {
+        var width = Expected.Fixed(state, train.Width, scope, Text.Dimension.Time);
+        var every = Expected.Fixed(state, train.Every, scope, Text.Dimension.Time);
+        var from = Instants.Fixed(state, train.From, scope);
+        var count = Expected.Fixed(state, train.Count, scope, Text.Dimension.None);
+        if (width is not { } w || every is not { } p || from is not { } start || count is not { } n)
+        {
+            return null;
+        }
+
+        if (w <= 0 || w >= p)
+        {
+            state.Findings.Error(train.Width.Span,
+                $"pulses {Amount.Of(w, "s")} wide do not fit a period of {Amount.Of(p, "s")}",
+                "the width is more than zero and less than the period");
+            return null;
+        }
+
+        if (n < 1 || n != Math.Round(n) || 2 * n > MostEdges)
+        {
+            state.Findings.Error(train.Count.Span, 2 * n > MostEdges
+                ? $"this pulse train has {Amount.Of(2 * n, "")} edges; the most is 100 000"
+                : $"`{state.Text(train.Count.Span)}` is not a number of pulses",
+                2 * n > MostEdges ? "end the train with the study" : "write a whole number of one or more");
+            return null;
+        }
+
+        var pieces = ImmutableArray.CreateBuilder<WavePiece>();
+        for (var i = 0; i < (int)n; i++)
+        {
+            var rise = start + (i * p);
+            pieces.Add(Held(rise, level, $"pulse {i + 1} rises at {Time(rise)}"));
+            pieces.Add(Held(rise + w, -level, $"pulse {i + 1} falls at {Time(rise + w)}"));
+        }
+
+        return pieces.ToImmutable();
+    }
+
+    private ImmutableArray<WavePiece>? Ramp(RampSyntax ramp, double level) =>
+        Span(ramp.From, ramp.To, ramp.Span, "this ramp") is { } span
+            ?
+            [
+                new WavePiece(span.From, span.To, 0, level / (span.To - span.From), 0, 0, 0,
+                    $"ramp from {Time(span.From)} to {Time(span.To)}"),
+                Held(span.To, level, $"hold from {Time(span.To)}"),
+            ]
+            : null;
+
+    private ImmutableArray<WavePiece>? Decay(DecaySyntax decay, double level)
+    {
+        var from = Instants.Fixed(state, decay.From, scope);
+        var tau = Positive(decay.TimeConstant, "a time constant");
+        return from is { } start && tau is { } t
+            ? [new WavePiece(start, double.PositiveInfinity, level, 0, 1 / t, 0, 0,
+                $"decay from {Time(start)}")]
+            : null;
+    }
+
+    private ImmutableArray<WavePiece>? Impulse(ImpulseSyntax impulse, double level)
+    {
+        var from = Instants.Fixed(state, impulse.From, scope);
+        var front = Positive(impulse.Front, "a front time");
+        var half = Positive(impulse.HalfValue, "a time to half-value");
+        if (from is not { } start || front is not { } t1 || half is not { } t2
+            || Dimension is not { } dimension)
+        {
+            return null;
+        }
+
+        var isVoltage = dimension == Text.Dimension.Voltage;
+        if (DoubleExponential.Solve(t1, t2, isVoltage) is not { } wave)
+        {
+            var definition = isVoltage ? "IEC 60060-1 front and half-value times" : "10–90 % × 1.25 front";
+            state.Findings.Error(TextSpan.Between(impulse.Front.Span, impulse.HalfValue.Span),
+                $"no double exponential has a half-value time of {Amount.Of(Math.Round(t2 / t1, 4), "")} "
+                    + $"times its front; "
+                + $"the least is {Amount.Of(Math.Round(DoubleExponential.LeastRatio(isVoltage), 4), "")}",
+                $"that is the limit t·e^(−t), by {definition}; give such a wave as `straight lines` or by "
+                    + $"its circuit");
+            return null;
+        }
+
+        var crest = level * wave.Factor;
+        var name = $"impulse from {Time(start)}";
+        return
+        [
+            new WavePiece(start, double.PositiveInfinity, crest, 0, 1 / wave.Tail, 0, 0, name + ", tail"),
+            new WavePiece(start, double.PositiveInfinity, -crest, 0, 1 / wave.Front, 0, 0, name + ", front"),
+        ];
+    }
+
+    private ImmutableArray<WavePiece>? Lines(StraightLinesSyntax lines)
+    {
+        var points = new List<(double Time, double Level)>();
+        foreach (var point in lines.Points)
+        {
+            var time = Expected.Fixed(state, point.Time, scope, Text.Dimension.Time);
+            var level = ReadLevel(point.Level);
+            if (level is not null && Level is { } value)
+            {
+                Expected.Fixed(state, point.Level, value);
+            }
+
+            Level = null;
+            if (time is not { } t || level is not { } v)
+            {
+                return null;
+            }
+
+            if (StraightLines.Mistake(points, t) is { } mistake)
+            {
+                state.Findings.Error(point.Span, mistake.Message, mistake.Advice);
+                return null;
+            }
+
+            points.Add((t, v));
+        }
+
+        return StraightLines.Pieces(points);
+    }
+
+    private ImmutableArray<WavePiece>? File(StraightLinesFileSyntax file)
+    {
+        if (WaveFile.Read(state, file, expected) is not { } read)
+        {
+            return null;
+        }
+
+        Dimension = read.Dimension;
+        return StraightLines.Pieces(
+            [.. read.Points.Select(p => (p.Time, isSubtracted ? -p.Level : p.Level))]);
+    }
+
+    private (double From, double To)? Span(TimeSyntax? from, TimeSyntax to, TextSpan span, string what)
+    {
+        var first = Instants.Fixed(state, from, scope);
+        var last = Instants.Fixed(state, to, scope);
+        if (first is not { } a || last is not { } b)
+        {
+            return null;
+        }
+
+        if (b > a)
+        {
+            return (a, b);
+        }
+
+        state.Findings.Error(span, $"{what} ends at {Time(b)}, which is not after its start at {Time(a)}",
+            "give the earlier time first");
+        return null;
+    }
+
+    private double? Positive(ExpressionSyntax expression, string what)
+    {
+        if (Expected.Fixed(state, expression, scope, Text.Dimension.Time) is not { } value)
+        {
+            return null;
+        }
+
+        if (value > 0)
+        {
+            return value;
+        }
+
+        state.Findings.Error(expression.Span,
+            $"{what} is more than zero, not `{state.Text(expression.Span)}`");
+        return null;
+    }
+
+    private static WavePiece Held(double from, double level, string label) =>
+        new(from, double.PositiveInfinity, level, 0, 0, 0, 0, label);
+
+    private static string Time(double seconds) => Amount.Of(seconds, "s");
+}

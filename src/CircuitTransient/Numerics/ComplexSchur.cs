@@ -1,0 +1,68 @@
+namespace CircuitTransient.Numerics;
+
+/// <summary>The complex Schur form of a real matrix, A = Z T Zᴴ: T upper triangular with complex pairs as
+/// exact conjugates, and Z unitary.</summary>
+/// <param name="T">The triangle, overwritten by reordering.</param>
+/// <param name="Vectors">Row k is the k-th column of Z, not conjugated.</param>
+public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleComplexMatrix Vectors)
+{
+    /// <summary>The complex form of a real one, each pair split by a rotation, the pole of positive imaginary
+    /// part first.</summary>
+    public static ComplexSchur Of(RealSchur real)
+    {
+        ArgumentNullException.ThrowIfNull(real);
+        ComplexSchur schur = new(
+            DoubleDoubleComplexMatrix.From(real.T.Copy()),
+            DoubleDoubleComplexMatrix.From(real.TransposedQ.Copy()));
+        for (int k = 0; k + 1 < schur.T.Rows; k++)
+        {
+            if (!schur.T[k + 1, k].IsZero)
+            {
+                schur.SplitPair(k);
+            }
+        }
+
+        return schur;
+    }
+
+    /// <summary>Exchanges the neighbours k and k + 1 on the diagonal.</summary>
+    public void Swap(int k)
+    {
+        DoubleDoubleComplex first = T[k, k];
+        DoubleDoubleComplex second = T[k + 1, k + 1];
+        DoubleDoubleComplex coupling = T[k, k + 1];
+        DoubleDoubleComplex gap = second - first;
+        if (gap.IsZero)
+        {
+            return;
+        }
+
+        ComplexRotation.Towards(coupling, gap).Apply(this, k);
+        SetDiagonal(k, second, first);
+    }
+
+    private void SplitPair(int k)
+    {
+        DoubleDouble a = T[k, k].Re;
+        DoubleDouble b = T[k, k + 1].Re;
+        DoubleDouble c = T[k + 1, k].Re;
+        DoubleDouble d = T[k + 1, k + 1].Re;
+        DoubleDouble p = (a - d) * 0.5;
+        double scale = Math.Max(Math.Abs(p.Hi), Math.Max(Math.Abs(b.Hi), Math.Abs(c.Hi)));
+        DoubleDouble square = (p / scale * p) + (b / scale * c);
+        DoubleDouble frequency = DoubleDouble.Sqrt(-square) * DoubleDouble.Sqrt(scale);
+        DoubleDoubleComplex pole = new((a + d) * 0.5, frequency);
+        ComplexRotation rotation = Math.Abs(b.Hi) >= Math.Abs(c.Hi)
+            ? ComplexRotation.Towards(b, pole - a)
+            : ComplexRotation.Towards(pole - d, c);
+        rotation.Apply(this, k);
+        SetDiagonal(k, pole, pole.Conjugate);
+    }
+
+    private void SetDiagonal(int k, DoubleDoubleComplex first, DoubleDoubleComplex second)
+    {
+        T[k, k] = first;
+        T[k + 1, k + 1] = second;
+        T[k + 1, k] = 0;
+    }
+}

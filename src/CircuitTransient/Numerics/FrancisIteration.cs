@@ -1,0 +1,147 @@
+namespace CircuitTransient.Numerics;
+
+/// <summary>The implicit double-shift QR iteration from Hessenberg to real Schur form.</summary>
+/// <remarks>J. G. F. Francis (1961); shifts, deflation and exceptional steps in the form of LAPACK's dlahqr,
+/// with the deflation test of M. Ahues and F. Tisseur (LAPACK Working Note 122, 1997); from memory.</remarks>
+public static class FrancisIteration
+{
+    private const double UnitRoundoff = 2.465190328815662e-32; // 2⁻¹⁰⁵
+    private const double Tiny = 1e-290; // below any entry that a balanced matrix can mean
+    private const int StepsAnEigenvalue = 60; // two to four are usual
+
+    /// <summary>Overwrites the Hessenberg matrix H with its Schur form T (blocks of order two only for
+    /// complex pairs), and the rows of <paramref name="qt"/> with the rotations applied to them.</summary>
+    public static void Run(DoubleDoubleMatrix h, DoubleDoubleMatrix qt)
+    {
+        ArgumentNullException.ThrowIfNull(h);
+        ArgumentNullException.ThrowIfNull(qt);
+        int last = h.Rows - 1;
+        int steps = 0;
+        while (last >= 0)
+        {
+            int first = FirstOfWindow(h, last);
+            if (first >= last - 1)
+            {
+                if (first == last - 1)
+                {
+                    RealPair.Split(h, qt, first);
+                }
+
+                last = first - 1;
+                steps = 0;
+                continue;
+            }
+
+            if (steps++ > StepsAnEigenvalue)
+            {
+                throw new ArithmeticException("the QR iteration did not converge; are all entries finite?");
+            }
+
+            Step(h, qt, first, last, FrancisShifts.Choose(h, first, last, steps));
+        }
+    }
+
+    private static int FirstOfWindow(DoubleDoubleMatrix h, int last)
+    {
+        int k = last;
+        while (k > 0 && !IsNegligible(h, k, last))
+        {
+            k--;
+        }
+
+        if (k > 0)
+        {
+            h[k, k - 1] = 0;
+        }
+
+        return k;
+    }
+
+    private static bool IsNegligible(DoubleDoubleMatrix h, int k, int last)
+    {
+        double below = Math.Abs(h[k, k - 1].Hi);
+        if (below <= Tiny)
+        {
+            return true;
+        }
+
+        double size = Math.Abs(h[k - 1, k - 1].Hi) + Math.Abs(h[k, k].Hi);
+        if (size == 0)
+        {
+            size = (k >= 2 ? Math.Abs(h[k - 1, k - 2].Hi) : 0)
+                + (k + 1 <= last ? Math.Abs(h[k + 1, k].Hi) : 0);
+        }
+
+        if (below > UnitRoundoff * size)
+        {
+            return false;
+        }
+
+        double above = Math.Abs(h[k - 1, k].Hi);
+        double gap = Math.Abs((h[k - 1, k - 1] - h[k, k]).Hi);
+        double diagonal = Math.Abs(h[k, k].Hi);
+        double larger = Math.Max(diagonal, gap);
+        double smaller = Math.Min(diagonal, gap);
+        double sum = larger + Math.Max(below, above);
+        return Math.Min(below, above) * (Math.Max(below, above) / sum)
+            <= Math.Max(Tiny, UnitRoundoff * (smaller * (larger / sum)));
+    }
+
+    private static void Step(
+        DoubleDoubleMatrix h, DoubleDoubleMatrix qt, int first, int last, FrancisShifts shifts)
+    {
+        (int start, DoubleDouble x, DoubleDouble y, DoubleDouble z) = StartOfBulge(h, first, last, shifts);
+        for (int k = start; k < last; k++)
+        {
+            int count = Math.Min(3, last - k + 1);
+            if (k > start)
+            {
+                x = h[k, k - 1];
+                y = h[k + 1, k - 1];
+                z = count == 3 ? h[k + 2, k - 1] : 0;
+            }
+
+            Reflection reflection = Reflection.Of(x, y, z, count, out DoubleDouble alpha);
+            if (k > start)
+            {
+                h[k, k - 1] = alpha;
+                h[k + 1, k - 1] = 0;
+                if (count == 3)
+                {
+                    h[k + 2, k - 1] = 0;
+                }
+            }
+            else if (start > first)
+            {
+                h[k, k - 1] *= 1 - reflection.Tau;
+            }
+
+            reflection.ApplyToRows(h, k, k);
+            reflection.ApplyToColumns(h, k, Math.Min(k + 3, last) + 1);
+            reflection.ApplyToRows(qt, k, 0);
+        }
+    }
+
+    /// <summary>Where two small subdiagonal entries in a row let the bulge start, and the first column of the
+    /// shifted product there.</summary>
+    private static (int Start, DoubleDouble X, DoubleDouble Y, DoubleDouble Z) StartOfBulge(
+        DoubleDoubleMatrix h, int first, int last, FrancisShifts shifts)
+    {
+        for (int m = last - 2; ; m--)
+        {
+            (DoubleDouble x, DoubleDouble y, DoubleDouble z) = shifts.FirstColumn(h, m);
+            if (m == first)
+            {
+                return (m, x, y, z);
+            }
+
+            double around = Math.Abs(h[m - 1, m - 1].Hi) + Math.Abs(h[m, m].Hi)
+                + Math.Abs(h[m + 1, m + 1].Hi);
+            if (Math.Abs(h[m, m - 1].Hi) * (Math.Abs(y.Hi) + Math.Abs(z.Hi))
+                <= UnitRoundoff * Math.Abs(x.Hi) * around)
+            {
+                return (m, x, y, z);
+            }
+        }
+    }
+}

@@ -1,0 +1,110 @@
+using System.Collections.Immutable;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Syntax;
+
+/// <summary>Reads the clauses behind a part's value.</summary>
+internal static class ClauseParser
+{
+    private static readonly string[] words =
+        ["charged", "carrying", "rated", "linear", "closed", "open", "closes", "opens"];
+
+    /// <summary>Reads clauses to the end of the statement; after a mistake in one it goes on with the
+    /// next.</summary>
+    public static ImmutableArray<ClauseSyntax> ReadAll(StatementCursor cursor)
+    {
+        var clauses = ImmutableArray.CreateBuilder<ClauseSyntax>();
+        while (!cursor.IsAtEnd)
+        {
+            if (!cursor.Take(','))
+            {
+                ReportRest(cursor);
+            }
+            else if (Read(cursor) is { } clause)
+            {
+                clauses.Add(clause);
+                continue;
+            }
+
+            if (!cursor.SkipTo(','))
+            {
+                break;
+            }
+        }
+
+        return clauses.ToImmutable();
+    }
+
+    /// <summary>Says that something is left over where the statement or a comma should be.</summary>
+    public static void ReportRest(StatementCursor cursor)
+    {
+        var token = cursor.Current;
+        if (token.Kind is TokenKind.OpenQuote or TokenKind.Stray)
+        {
+            cursor.Unexpected("the end");
+            return;
+        }
+
+        var isClause = words.Contains(cursor.Shown(token));
+        cursor.Error(token.Span, $"`{cursor.Shown(token)}` is left over behind what the statement says",
+            isClause ? $"put a comma before it: `, {cursor.TextOf(token)} …`"
+                : "a clause starts after a comma, a comment with `#`, a statement on a line of its own");
+    }
+
+    private static ClauseSyntax? Read(StatementCursor cursor)
+    {
+        var start = cursor.Current.Start;
+        cursor.Form = "clauses are `charged to`, `carrying`, `rated`, `linear up to`, `closed resistance`, "
+            + "`open resistance`, `closes at`, `opens at`";
+        return cursor switch
+        {
+            _ when cursor.IsWord("closes") || cursor.IsWord("opens") => SwitchEventParser.Read(cursor),
+            _ when cursor.Take("charged") => cursor.Expect("to") && ReadTolerated(cursor) is { } voltage
+                ? new ChargedToSyntax(cursor.SpanFrom(start), voltage)
+                : null,
+            _ when cursor.Take("carrying") => ReadTolerated(cursor) is { } current
+                ? new CarryingSyntax(cursor.SpanFrom(start), current)
+                : null,
+            _ when cursor.Take("rated") => ReadLimit(cursor, "a rating") is { } rating
+                ? new RatedSyntax(cursor.SpanFrom(start), rating)
+                : null,
+            _ when cursor.Take("linear") => cursor.Expect("up", "to")
+                && ReadLimit(cursor, "a limit") is { } limit
+                ? new LinearUpToSyntax(cursor.SpanFrom(start), limit)
+                : null,
+            _ when cursor.Take("closed") => cursor.Expect("resistance")
+                && ReadTolerated(cursor) is { } resistance
+                ? new ClosedResistanceSyntax(cursor.SpanFrom(start), resistance)
+                : null,
+            _ when cursor.Take("open") => cursor.Expect("resistance")
+                && ReadTolerated(cursor) is { } resistance
+                ? new OpenResistanceSyntax(cursor.SpanFrom(start), resistance)
+                : null,
+            _ => ReportUnknown(cursor),
+        };
+    }
+
+    private static ClauseSyntax? ReportUnknown(StatementCursor cursor)
+    {
+        if (cursor.IsAtEnd)
+        {
+            cursor.Error(new TextSpan(cursor.LastEnd - 1, 1), "the comma promises a clause, and none follows",
+                "take the comma away, or go on in the next line");
+        }
+        else
+        {
+            cursor.Unexpected("a clause", words);
+        }
+
+        return null;
+    }
+
+    private static ToleratedSyntax? ReadTolerated(StatementCursor cursor) =>
+        ToleranceParser.ReadTolerated(cursor, acceptsSum: false);
+
+    private static ExpressionSyntax? ReadLimit(StatementCursor cursor, string what) =>
+        ExpressionParser.ReadInClause(cursor) is { } value
+        && ToleranceParser.Refuse(cursor, $"{what} has no tolerance", "leave the tolerance out")
+            ? value
+            : null;
+}

@@ -1,0 +1,91 @@
+namespace CircuitTransient.Syntax;
+
+/// <summary>Reads what is asked of a circuit: observations, requirements, the start and the end.</summary>
+internal static class StudyParser
+{
+    public static ObserveStatement? ReadObserve(StatementCursor cursor, int start)
+    {
+        cursor.Form =
+            "an observation is written `observe current through Ls as \"inrush\" from 1.8 s to 6 s`";
+        if (QuantityParser.ReadWithFigures(cursor) is not { } quantity)
+        {
+            return null;
+        }
+
+        string? label = null;
+        if (cursor.Take("as") && !ReadText(cursor, "the label in quotes", out label))
+        {
+            return null;
+        }
+
+        return ReadWindow(cursor) is { } window
+            ? new ObserveStatement(cursor.SpanFrom(start), quantity, label, window)
+            : null;
+    }
+
+    public static RequireStatement? ReadRequire(StatementCursor cursor, int start)
+    {
+        cursor.Form =
+            "a requirement is written `require voltage of bus at most 1.1 kV because \"capacitor rating\"`";
+        var quantityAndBound = cursor.IsWord("settling") && cursor.IsWord("of", 1)
+            ? BoundParser.ReadSettling(cursor)
+            : BoundParser.Read(cursor);
+        if (quantityAndBound is not var (quantity, bound) || ReadWindow(cursor) is not { } window)
+        {
+            return null;
+        }
+
+        string? reason = null;
+        return !cursor.Take("because") || ReadText(cursor, "the reason in quotes", out reason)
+            ? new RequireStatement(cursor.SpanFrom(start), quantity, bound, window, reason)
+            : null;
+    }
+
+    public static StartStatement? ReadStart(StatementCursor cursor, int start)
+    {
+        cursor.Form = "write `start as stated` or `start settled`";
+        if (cursor.Take("settled"))
+        {
+            return new StartStatement(cursor.SpanFrom(start), IsSettled: true);
+        }
+
+        if (cursor.Take("as", "stated"))
+        {
+            return new StartStatement(cursor.SpanFrom(start), IsSettled: false);
+        }
+
+        cursor.Unexpected("`as stated` or `settled`", "as", "settled");
+        return null;
+    }
+
+    public static UntilStatement? ReadUntil(StatementCursor cursor, int start)
+    {
+        cursor.Form = "the end of the study is written `until 14 s`";
+        return ExpressionParser.ReadSum(cursor) is { } time
+            ? new UntilStatement(cursor.SpanFrom(start), time)
+            : null;
+    }
+
+    /// <summary>A text in quotes; false, and said, where something else stands.</summary>
+    public static bool ReadText(StatementCursor cursor, string what, out string text)
+    {
+        text = "";
+        if (cursor.Current.Kind != TokenKind.Quoted)
+        {
+            return cursor.Unexpected(what);
+        }
+
+        text = NameParser.Unquoted(cursor, cursor.Advance());
+        return true;
+    }
+
+    private static WindowSyntax? ReadWindow(StatementCursor cursor)
+    {
+        if (!TimeParser.ReadOptional(cursor, "from", out var from))
+        {
+            return null;
+        }
+
+        return TimeParser.ReadOptional(cursor, "to", out var to) ? new WindowSyntax(from, to) : null;
+    }
+}

@@ -1,0 +1,70 @@
+using System.Buffers;
+using System.Text;
+using System.Text.Unicode;
+
+namespace CircuitTransient.Text;
+
+public sealed partial class SourceText
+{
+    /// <summary>The largest file read, in bytes (16 MiB).</summary>
+    public const int LargestFile = 16 * 1024 * 1024;
+
+    private const int BytesShownAfterFault = 60;
+
+    /// <summary>Reads the bytes of a file as UTF-8; a byte-order mark is dropped.</summary>
+    public static Outcome<SourceText> Read(string name, ReadOnlySpan<byte> bytes)
+    {
+        if (bytes.Length > LargestFile)
+        {
+            return Refuse(TooLarge(name, bytes.Length));
+        }
+
+        if (bytes.StartsWith((ReadOnlySpan<byte>)[0xFF, 0xFE])
+            || bytes.StartsWith((ReadOnlySpan<byte>)[0xFE, 0xFF]))
+        {
+            return Refuse(AtStart(name, "the file is written in UTF-16; a circuit is UTF-8 text",
+                "save it as UTF-8"));
+        }
+
+        var mark = Encoding.UTF8.Preamble;
+        var start = bytes.StartsWith(mark) ? mark.Length : 0;
+        var text = bytes[start..];
+        var zero = text.IndexOf((byte)0);
+        var characters = new char[text.Length];
+        var status = Utf8.ToUtf16(text, characters, out var read, out var written,
+            replaceInvalidSequences: false);
+        if (zero >= 0 && (zero < read || status == OperationStatus.Done))
+        {
+            return Refuse(Fault(name, text, zero, $"byte {start + zero + 1} is zero: this is not a text",
+                "a circuit file is plain UTF-8 text"));
+        }
+
+        return status == OperationStatus.Done
+            ? new Outcome<SourceText>(new SourceText(name, new string(characters, 0, written), bytes), [])
+            : Refuse(Fault(name, text, read, $"byte {start + read + 1} (0x{text[read]:X2}) is not UTF-8",
+                "save the file as UTF-8"));
+    }
+
+    /// <summary>The error for a file over <see cref="LargestFile"/>, which need not be read to be
+    /// refused.</summary>
+    public static Diagnostic TooLarge(string name, long length) => AtStart(
+        name, string.Create(null,
+            $"the file has {length / 1048576.0:F1} MiB; a circuit file has at most 16 MiB"),
+        "write what repeats with `repeat`, and long records as `straight lines in file \"NAME.csv\"`");
+
+    private static Diagnostic AtStart(string name, string message, string advice) =>
+        Diagnostic.Error(new SourceText(name, ""), new TextSpan(0, 0), message, advice);
+
+    /// <summary>An error at a byte, shown in as much of the text as can be read around it.</summary>
+    private static Diagnostic Fault(string name, ReadOnlySpan<byte> text, int place, string message,
+        string advice)
+    {
+        var before = Encoding.UTF8.GetString(text[..place]);
+        var after = Encoding.UTF8.GetString(text.Slice(place, Math.Min(BytesShownAfterFault,
+            text.Length - place)));
+        return Diagnostic.Error(
+            new SourceText(name, before + after), new TextSpan(before.Length, 1), message, advice);
+    }
+
+    private static Outcome<SourceText> Refuse(Diagnostic diagnostic) => new(null, [diagnostic]);
+}

@@ -1,0 +1,86 @@
+namespace CircuitTransient.Text;
+
+/// <summary>What to write in place of something that is not a unit.</summary>
+public static class UnitAdvice
+{
+    private static readonly (string Word, string Symbol)[] words =
+    [
+        ("volt", "V"), ("amp", "A"), ("ampere", "A"), ("ohm", "Ω"), ("farad", "F"), ("henry", "H"),
+            ("henries", "H"),
+        ("watt", "W"), ("joule", "J"), ("coulomb", "C"), ("weber", "Wb"), ("siemens", "S"), ("hertz", "Hz"),
+        ("sec", "s"), ("second", "s"), ("minute", "min"), ("hour", "h"), ("hr", "h"), ("degree", "deg"),
+        ("percent", "%"), ("millisecond", "ms"), ("microsecond", "µs"), ("nanosecond", "ns"),
+    ];
+
+    private static readonly (string Letters, string Word, string Prefix)[] prefixWords =
+    [
+        ("meg", "mega", "M"), ("kil", "kilo", "k"), ("gig", "giga", "G"), ("ter", "tera", "T"), ("mil",
+            "milli", "m"),
+        ("mic", "micro", "µ"), ("nan", "nano", "n"), ("pic", "pico", "p"), ("fem", "femto", "f"),
+    ];
+
+    /// <summary>Advice for a word that stands where a unit should, behind a number.</summary>
+    public static string For(string word, string number)
+    {
+        foreach (var (name, symbol) in words)
+        {
+            if (word.Equals(name, StringComparison.OrdinalIgnoreCase)
+                || word.Equals(name + "s", StringComparison.OrdinalIgnoreCase))
+            {
+                return $"write `{number} {symbol}`";
+            }
+        }
+
+        if (SameButForCase(word) is { } unit)
+        {
+            return $"case matters: write `{number} {unit}`";
+        }
+
+        foreach (var (letters, name, prefix) in prefixWords)
+        {
+            if (word.StartsWith(letters, StringComparison.OrdinalIgnoreCase))
+            {
+                return $"{name} is `{prefix}`, and the unit follows it: `{prefix}Ω`, `{prefix}V`";
+            }
+        }
+
+        return $"the units are {string.Join(' ', Unit.Symbols)} min h rad deg ° %, before them {Prefix.All}; "
+            + $"for a product write `{number} * {word}`";
+    }
+
+    /// <summary>The unit meant by one in the wrong case: <c>KOHM</c>, <c>uf</c>, <c>HZ</c>.</summary>
+    private static string? SameButForCase(string word)
+    {
+        foreach (var symbol in Unit.Symbols.Append("Ohm"))
+        {
+            if (!word.EndsWith(symbol, StringComparison.OrdinalIgnoreCase))
+            {
+                continue;
+            }
+
+            var shown = symbol == "Ohm" ? "Ω" : symbol;
+            var prefix = word[..^symbol.Length];
+            if (prefix.Length == 0)
+            {
+                return shown;
+            }
+
+            // `MF` may be mega or milli: a prefix is only mended where one reading exists.
+            var mended = prefix switch
+            {
+                "U" => "µ",
+                "K" => "k",
+                "N" => "n",
+                "g" => "G",
+                _ when prefix.Length == 1 && Prefix.TryRead(prefix[0], out _) => prefix,
+                _ => null,
+            };
+            if (mended is not null)
+            {
+                return mended + shown;
+            }
+        }
+
+        return null;
+    }
+}
