@@ -6,13 +6,11 @@ using CircuitTransient.Solutions;
 namespace CircuitTransient.Measurements;
 
 /// <summary>What every part bears over the study, against its ratings.</summary>
-internal sealed class PartStresses(CurveBuilder curves, Infinities infinities)
+internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, Func<int, double[,]> gram)
 {
     private const int MostStretches = 50_000;
 
     private readonly TransientSolution solution = curves.Solution;
-    private readonly Lazy<ImmutableArray<double[,]>> grams =
-        new(() => [.. curves.Solution.Segments.Select(GramIntegral.Of)]);
 
     /// <summary>The stresses of one part.</summary>
     public PartResult Measure(int part)
@@ -101,7 +99,7 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities)
                 return null;
             }
 
-            sum += GramIntegral.Form(grams.Value[s], a, b);
+            sum += GramIntegral.Form(gram(s), a, b);
         }
 
         return sum;
