@@ -25,19 +25,22 @@ public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleCompl
         return schur;
     }
 
-    /// <summary>Exchanges the neighbours k and k + 1 on the diagonal.</summary>
-    public void Swap(int k)
+    /// <summary>Exchanges the neighbours k and k + 1 on the diagonal. Equal ones are exchanged only where
+    /// their coupling is at most <paramref name="negligible"/>; a chain of equal poles has no other
+    /// order.</summary>
+    public void Swap(int k, double negligible = 0)
     {
         DoubleDoubleComplex first = T[k, k];
         DoubleDoubleComplex second = T[k + 1, k + 1];
         DoubleDoubleComplex coupling = T[k, k + 1];
         DoubleDoubleComplex gap = second - first;
-        if (gap.IsZero)
+        if (gap.IsZero && coupling.Magnitude > negligible)
         {
             return;
         }
 
-        ComplexRotation.Towards(coupling, gap).Apply(this, k);
+        ComplexRotation rotation = gap.IsZero ? new(0, 1) : ComplexRotation.Towards(coupling, gap);
+        rotation.Apply(this, k);
         SetDiagonal(k, second, first);
     }
 

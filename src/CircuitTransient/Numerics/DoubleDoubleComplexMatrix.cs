@@ -52,6 +52,14 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     /// <summary>The transposed matrix, not conjugated.</summary>
     public DoubleDoubleComplexMatrix Transposed() => new(Re.Transposed(), Im.Transposed());
 
+    /// <summary>The transposed and conjugated matrix.</summary>
+    public DoubleDoubleComplexMatrix Adjoint()
+    {
+        DoubleDoubleComplexMatrix result = Transposed();
+        result.Im.Negate();
+        return result;
+    }
+
     /// <summary>A rectangle of entries, copied.</summary>
     public DoubleDoubleComplexMatrix Part(int row, int column, int rows, int columns) =>
         new(Re.Part(row, column, rows, columns), Im.Part(row, column, rows, columns));

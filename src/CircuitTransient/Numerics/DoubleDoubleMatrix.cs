@@ -97,6 +97,16 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
         return result;
     }
 
+    /// <summary>Turns the sign of every entry.</summary>
+    public void Negate()
+    {
+        for (int k = 0; k < _hi.Length; k++)
+        {
+            _hi[k] = -_hi[k];
+            _lo[k] = -_lo[k];
+        }
+    }
+
     /// <summary>A rectangle of entries, copied.</summary>
     public DoubleDoubleMatrix Part(int row, int column, int rows, int columns)
     {
