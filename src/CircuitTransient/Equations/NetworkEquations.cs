@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using System.Diagnostics;
 using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
+using Switch = CircuitTransient.Circuits.Switch;
 
 namespace CircuitTransient.Equations;
 

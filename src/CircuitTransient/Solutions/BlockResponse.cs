@@ -19,11 +19,26 @@ internal static class BlockResponse
         return (first, second);
     }
 
+    /// <summary>T as an array.</summary>
+    public static DoubleDoubleComplex[,] TriangleOf(SpectralBlock block)
+    {
+        var t = new DoubleDoubleComplex[block.Size, block.Size];
+        for (var i = 0; i < block.Size; i++)
+        {
+            for (var j = i; j < block.Size; j++)
+            {
+                t[i, j] = block.T[i, j];
+            }
+        }
+
+        return t;
+    }
+
     /// <summary>[T w; 0 μ], or [T w 0; 0 μ 1; 0 0 μ] with slopes: the block and the exponential as one triangle.</summary>
     public static DoubleDoubleComplex[,] Join(
         SpectralBlock block, DoubleDoubleComplex[] w, DoubleDoubleComplex exponent, bool withSlopes)
     {
-        var m = block.Order;
+        var m = block.Size;
         var order = withSlopes ? m + 2 : m + 1;
         var joined = new DoubleDoubleComplex[order, order];
         for (var i = 0; i < m; i++)

@@ -17,7 +17,7 @@ public sealed class IntervalModel
     {
         Form = form;
         IsClosed = isClosed;
-        Blocks = SpectralBlocks.Of(form.A);
+        Blocks = SpectralBlocks.Of(form.A).Blocks;
         drives = new DoubleDoubleComplex[Blocks.Length][][];
         for (var b = 0; b < Blocks.Length; b++)
         {

@@ -124,5 +124,5 @@ public sealed class Segment
     internal DoubleDoubleComplex[][] StateAtEnd(int cause) => modes.StateAtEnd(motions[cause]);
 
     private static Motion Still(IntervalModel model) =>
-        new([.. model.Blocks.Select(b => new DoubleDoubleComplex[b.Order])], []);
+        new([.. model.Blocks.Select(b => new DoubleDoubleComplex[b.Size])], []);
 }

@@ -22,7 +22,7 @@ internal sealed class SegmentModes
         var modes = ImmutableArray.CreateBuilder<Mode>();
         for (var b = 0; b < model.Blocks.Length; b++)
         {
-            modes.Add(new Mode(ModeKind.Pole, model.Blocks[b].Triangle(), model.Blocks[b].Order, b));
+            modes.Add(new Mode(ModeKind.Pole, BlockResponse.TriangleOf(model.Blocks[b]), model.Blocks[b].Size, b));
         }
 
         var all = forcings.ToList();
@@ -128,9 +128,9 @@ internal sealed class SegmentModes
             AddForcedTerms(sums, forcing.Exponent, a * factor, s * factor);
         }
 
-        for (var i = 0; i < block.Order; i++)
+        for (var i = 0; i < block.Size; i++)
         {
-            for (var j = i; j < block.Order; j++)
+            for (var j = i; j < block.Size; j++)
             {
                 sums[b][mode.Carrier(i, j)] += row[i] * free[j] * factor;
             }
@@ -190,14 +190,14 @@ internal sealed class SegmentModes
 
         joinedModes.Add(Key(b, forcing), modes.Count);
         var block = model.Blocks[b];
-        var drive = block.Order == 1 ? [DoubleDoubleComplex.One] : model.Drive(b, forcing.Input);
+        var drive = block.Size == 1 ? [DoubleDoubleComplex.One] : model.Drive(b, forcing.Input);
         var slopes = all.Exists(f => f.Exponent == forcing.Exponent && !f.Slope.IsZero);
-        modes.Add(new Mode(ModeKind.Joined, BlockResponse.Join(block, drive, forcing.Exponent, slopes), block.Order, b));
+        modes.Add(new Mode(ModeKind.Joined, BlockResponse.Join(block, drive, forcing.Exponent, slopes), block.Size, b));
     }
 
     private bool IsNear(SpectralBlock block, DoubleDoubleComplex exponent)
     {
-        for (var i = 0; i < block.Order; i++)
+        for (var i = 0; i < block.Size; i++)
         {
             if ((block.T[i, i] - exponent).Magnitude * length.Hi < 1)
             {
@@ -209,5 +209,5 @@ internal sealed class SegmentModes
     }
 
     private (int, DoubleDoubleComplex, int) Key(int block, Forcing forcing) =>
-        (block, forcing.Exponent, model.Blocks[block].Order == 1 ? -1 : forcing.Input);
+        (block, forcing.Exponent, model.Blocks[block].Size == 1 ? -1 : forcing.Input);
 }

@@ -16,7 +16,7 @@ internal static class StudyEnd
         var reason = string.Empty;
         foreach (var block in model.Blocks)
         {
-            for (var i = 0; i < block.Order; i++)
+            for (var i = 0; i < block.Size; i++)
             {
                 var (re, im) = (block.T[i, i].Re.Hi, Math.Abs(block.T[i, i].Im.Hi));
                 var isUndamped = im > 0 && Math.Abs(re) < 1e-12 * im; // a loss below rounding of the parts' values

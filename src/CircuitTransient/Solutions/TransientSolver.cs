@@ -159,7 +159,7 @@ public sealed class TransientSolver
         var state = new DoubleDoubleComplex[model.Blocks.Length][];
         for (var b = 0; b < state.Length; b++)
         {
-            state[b] = new DoubleDoubleComplex[model.Blocks[b].Order];
+            state[b] = new DoubleDoubleComplex[model.Blocks[b].Size];
             for (var k = 0; k < stored.Length; k++)
             {
                 if (!stored[k].IsZero)

@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Verification;
 using CircuitTransient.Solutions;
+using Segment = CircuitTransient.Solutions.Segment;
 
 namespace CircuitTransient.Measurements.Checks;
 
