@@ -3,7 +3,8 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Equations;
 
 /// <summary>Expresses every eliminated unknown by the state and the inputs, last eliminated first.</summary>
-internal sealed class BackSubstitution(NetworkLayout layout, int order, LinearOutput[] unknowns, List<SparseVector> open)
+internal sealed class BackSubstitution(NetworkLayout layout, int order, LinearOutput[] unknowns,
+    List<SparseVector> open)
 {
     /// <summary>Fills in the unknowns that are not state variables.</summary>
     public void Run(List<(int Unknown, EquationRow Row)> substitutions)
@@ -13,7 +14,8 @@ internal sealed class BackSubstitution(NetworkLayout layout, int order, LinearOu
             var opens = open.Select(d => d.At(i)).ToArray();
             unknowns[i] = unknowns[i] is { } state
                 ? state with { Open = opens }
-                : new LinearOutput(new DoubleDouble[order], [], opens); // held at zero where it is open itself
+                // held at zero where it is open itself
+                : new LinearOutput(new DoubleDouble[order], [], opens);
         }
 
         for (var k = substitutions.Count - 1; k >= 0; k--)
@@ -93,7 +95,8 @@ internal sealed class BackSubstitution(NetworkLayout layout, int order, LinearOu
             var result = new DoubleDouble[values.Length];
             for (var i = 0; i < values.Length; i++)
             {
-                result[i] = Math.Abs(values[i].Hi) > SparseVector.Cancelled * scales[i] ? values[i] : DoubleDouble.Zero;
+                result[i] = Math.Abs(values[i].Hi) > SparseVector.Cancelled * scales[i] ? values[i]
+                    : DoubleDouble.Zero;
             }
 
             return result;

@@ -2,10 +2,13 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Equations;
 
-/// <summary>Solves (s E + G) X = R(s) (U, x₀) for its state by structure: algebraic equations are put into the
-/// others one by one; where rows of E prove dependent, their combination is algebraic and is put in likewise, until
+/// <summary>Solves (s E + G) X = R(s) (U, x₀) for its state by structure: algebraic equations are put into
+/// the
+/// others one by one; where rows of E prove dependent, their combination is algebraic and is put in likewise,
+/// until
 /// E is regular. Each step lowers the index by one and is exact in double-double; no part is perturbed.
-/// This is the shuffle algorithm (D. G. Luenberger, "Time-invariant descriptor systems", Automatica 14, 1978, from
+/// This is the shuffle algorithm (D. G. Luenberger, "Time-invariant descriptor systems", Automatica 14, 1978,
+/// from
 /// memory), with substitution in place of differentiation so that no pole is invented.</summary>
 internal sealed class DescriptorReduction
 {
@@ -26,7 +29,8 @@ internal sealed class DescriptorReduction
 
     /// <summary>Reduces the equations.</summary>
     /// <returns>The normal form; or null, with the equations at fault.</returns>
-    public static NormalForm? Reduce(NetworkLayout layout, List<EquationRow> rows, out SingularEquations? singular)
+    public static NormalForm? Reduce(NetworkLayout layout, List<EquationRow> rows,
+        out SingularEquations? singular)
     {
         var reduction = new DescriptorReduction(layout, rows);
         while (reduction.singular is null)
@@ -107,7 +111,8 @@ internal sealed class DescriptorReduction
 
         const double reasonable = 0.01; // of the heaviest in the row: keeps growth small and leaves a choice
         var onlyPlain = row.G.Terms.ToArray().Any(t => !differentiated.Contains(t.Index));
-        var candidates = row.G.Terms.ToArray().Where(t => !onlyPlain || !differentiated.Contains(t.Index)).ToArray();
+        var candidates =
+            row.G.Terms.ToArray().Where(t => !onlyPlain || !differentiated.Contains(t.Index)).ToArray();
         var heaviest = candidates.Max(Weight);
         return candidates.Where(t => Weight(t) >= reasonable * heaviest)
             .MinBy(t => (uses.GetValueOrDefault(t.Index), -Weight(t))).Index;
@@ -115,7 +120,8 @@ internal sealed class DescriptorReduction
 
     private double Weight(Term term) => Math.Abs(term.Value.Hi) * columnScales[term.Index];
 
-    /// <summary>Brings E to echelon form; true where a row's derivatives prove to be a sum of others'.</summary>
+    /// <summary>Brings E to echelon form; true where a row's derivatives prove to be a sum of
+    /// others'.</summary>
     private bool DerivativesDepend()
     {
         var waiting = new List<EquationRow>(rows);
@@ -140,8 +146,10 @@ internal sealed class DescriptorReduction
         return found;
     }
 
-    /// <summary>The unknowns left over are the state, as many as there are rows; a direction in them that no row
-    /// feels is open (the potential of a floating group, the shares of two ideal contacts in parallel).</summary>
+    /// <summary>The unknowns left over are the state, as many as there are rows; a direction in them that no
+    /// row
+    /// feels is open (the potential of a floating group, the shares of two ideal contacts in
+    /// parallel).</summary>
     private int[] ChooseState(out List<SparseVector> open)
     {
         var used = rows.SelectMany(r => Indices(r.E).Concat(Indices(r.G))).ToHashSet();

@@ -2,8 +2,10 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Equations;
 
-/// <summary>One equation of (s E + G) X = Σ sᵏ Rₖ (U, x₀): a row of each matrix. The columns of Rₖ are the inputs:
-/// first the sources' transforms, then the stored quantities at the interval's start (whose transforms are 1).</summary>
+/// <summary>One equation of (s E + G) X = Σ sᵏ Rₖ (U, x₀): a row of each matrix. The columns of Rₖ are the
+/// inputs:
+/// first the sources' transforms, then the stored quantities at the interval's start (whose transforms are
+/// 1).</summary>
 internal sealed class EquationRow(SparseVector e, SparseVector g, SparseVector[] r, SparseVector origin)
 {
     /// <summary>The row of E.</summary>
@@ -24,24 +26,25 @@ internal sealed class EquationRow(SparseVector e, SparseVector g, SparseVector[]
     /// <summary>Whether its right side is zero.</summary>
     public bool HasNoRight => Array.TrueForAll(R, v => v.IsEmpty);
 
-    /// <summary>Puts the algebraic equation <paramref name="other"/>, solved for an unknown, in the unknown's place:
+    /// <summary>Puts the algebraic equation <paramref name="other"/>, solved for an unknown, in the unknown's
+    /// place:
     /// in the algebraic part as it is, under the derivative with its right side multiplied by s.</summary>
     public void Substitute(int unknown, EquationRow other)
     {
         var pivot = other.G.At(unknown);
-        var g = G.At(unknown);
-        if (!g.IsZero)
+        var inPlace = G.At(unknown);
+        if (!inPlace.IsZero)
         {
-            var f = -g / pivot;
+            var f = -inPlace / pivot;
             G = SparseVector.Add(G, f, other.G).Without(unknown);
             R = AddRight(R, f, other.R, 0);
             Origin = SparseVector.Add(Origin, f, other.Origin);
         }
 
-        var e = E.At(unknown);
-        if (!e.IsZero)
+        var underDerivative = E.At(unknown);
+        if (!underDerivative.IsZero)
         {
-            var f = -e / pivot;
+            var f = -underDerivative / pivot;
             E = SparseVector.Add(E, f, other.G).Without(unknown);
             R = AddRight(R, f, other.R, 1);
             Origin = SparseVector.Add(Origin, f, other.Origin);
@@ -51,10 +54,10 @@ internal sealed class EquationRow(SparseVector e, SparseVector g, SparseVector[]
     /// <summary>Subtracts a multiple of another row so that an unknown leaves E.</summary>
     public void ClearDerivative(int unknown, EquationRow other)
     {
-        var e = E.At(unknown);
-        if (!e.IsZero)
+        var value = E.At(unknown);
+        if (!value.IsZero)
         {
-            var f = -e / other.E.At(unknown);
+            var f = -value / other.E.At(unknown);
             E = SparseVector.Add(E, f, other.E).Without(unknown);
             G = SparseVector.Add(G, f, other.G);
             R = AddRight(R, f, other.R, 0);

@@ -3,7 +3,8 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Equations;
 
 /// <summary>A voltage or current as a linear function of the state and the inputs:
-/// y = c z + d₀ u + d₁ u′ + …, where a stored quantity's input is an impulse at the interval's start.</summary>
+/// y = c z + d₀ u + d₁ u′ + …, where a stored quantity's input is an impulse at the interval's
+/// start.</summary>
 /// <param name="State">c, one for each state variable.</param>
 /// <param name="Direct">d₀, d₁, …, each one for each input.</param>
 /// <param name="Open">How it goes with each direction that the equations leave open.</param>
@@ -13,7 +14,8 @@ public sealed record LinearOutput(DoubleDouble[] State, DoubleDouble[][] Direct,
     public bool IsDetermined => Array.TrueForAll(Open, x => Math.Abs(x.Hi) <= SparseVector.Cancelled);
 
     /// <summary>a y₁ + b y₂.</summary>
-    public static LinearOutput Combine(DoubleDouble a, LinearOutput first, DoubleDouble b, LinearOutput second)
+    public static LinearOutput Combine(DoubleDouble a, LinearOutput first, DoubleDouble b,
+        LinearOutput second)
     {
         var direct = new DoubleDouble[Math.Max(first.Direct.Length, second.Direct.Length)][];
         for (var k = 0; k < direct.Length; k++)

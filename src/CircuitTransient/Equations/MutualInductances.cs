@@ -32,7 +32,8 @@ public static class MutualInductances
     {
         DoubleDouble value = coupling.Value.Nominal;
         return coupling.IsFactor
-            ? value * DoubleDouble.Sqrt(Inductance(circuit, coupling.First) * Inductance(circuit, coupling.Second))
+            ? value * DoubleDouble
+                .Sqrt(Inductance(circuit, coupling.First) * Inductance(circuit, coupling.Second))
             : value;
     }
 

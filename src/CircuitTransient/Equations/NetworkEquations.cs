@@ -6,10 +6,14 @@ using Switch = CircuitTransient.Circuits.Switch;
 
 namespace CircuitTransient.Equations;
 
-/// <summary>The equations (s E + G) X = R (U, x₀) of a circuit with its switches in given positions: Kirchhoff's
-/// current law at every node but the reference, then the law of every part. Every part keeps its current as an
-/// unknown, so a microohm stands in a row of its own and is never added to a large conductance. A capacitor's law is
-/// divided by its capacitance and a lone inductor's by its inductance: the rows of E hold small whole numbers, so
+/// <summary>The equations (s E + G) X = R (U, x₀) of a circuit with its switches in given positions:
+/// Kirchhoff's
+/// current law at every node but the reference, then the law of every part. Every part keeps its current as
+/// an
+/// unknown, so a microohm stands in a row of its own and is never added to a large conductance. A capacitor's
+/// law is
+/// divided by its capacitance and a lone inductor's by its inductance: the rows of E hold small whole
+/// numbers, so
 /// loops of capacitors and cut-sets of coils cancel exactly.</summary>
 internal sealed class NetworkEquations
 {
@@ -30,7 +34,8 @@ internal sealed class NetworkEquations
     /// <summary>Writes the equations.</summary>
     /// <param name="layout">Where each unknown and input stands.</param>
     /// <param name="isClosed">For every part, whether it is a switch that is closed.</param>
-    /// <param name="tracksOrigin">Whether rows remember which written equations they are sums of: row k of the
+    /// <param name="tracksOrigin">Whether rows remember which written equations they are sums of: row k of
+    /// the
     /// nodes first (node k + 1), then the parts in order.</param>
     public static List<EquationRow> Assemble(
         NetworkLayout layout, ImmutableArray<bool> isClosed, bool tracksOrigin = false)
@@ -135,7 +140,8 @@ internal sealed class NetworkEquations
     private void WriteTransformer(int index, IdealTransformer transformer)
     {
         var secondary = Between(transformer.SecondaryFrom, transformer.SecondaryTo);
-        Write([], [.. Voltage(transformer), .. secondary.Select(t => (t.Index, -transformer.Ratio * t.Value))]);
+        Write([], [.. Voltage(transformer),
+            .. secondary.Select(t => (t.Index, -transformer.Ratio * t.Value))]);
         Write([], [(layout.SecondaryCurrent(index), 1), (layout.Current(index), transformer.Ratio)]);
     }
 
@@ -150,7 +156,8 @@ internal sealed class NetworkEquations
     private static (int Index, DoubleDouble Value)[] Voltage(Part part) => Between(part.From, part.To);
 
     private static (int Index, DoubleDouble Value)[] Between(int from, int to) =>
-        [.. new[] { (NetworkLayout.Voltage(from), DoubleDouble.One), (NetworkLayout.Voltage(to), -DoubleDouble.One) }
+        [.. new[] { (NetworkLayout.Voltage(from), DoubleDouble.One),
+            (NetworkLayout.Voltage(to), -DoubleDouble.One) }
             .Where(t => t.Item1 >= 0)];
 
     private void Write(

@@ -3,9 +3,12 @@ using CircuitTransient.Circuits;
 
 namespace CircuitTransient.Equations;
 
-/// <summary>Which place each unknown and each input of a circuit has in its equations, whatever its switches do.
-/// Unknowns are the node voltages to the reference, then a current of every part (two of a transformer). Inputs are
-/// the independent sources, then what is stored in every capacitor (a voltage) and inductor (a current).</summary>
+/// <summary>Which place each unknown and each input of a circuit has in its equations, whatever its switches
+/// do.
+/// Unknowns are the node voltages to the reference, then a current of every part (two of a transformer).
+/// Inputs are
+/// the independent sources, then what is stored in every capacitor (a voltage) and inductor (a
+/// current).</summary>
 public sealed class NetworkLayout
 {
     private readonly ImmutableArray<int> currents;
@@ -51,7 +54,8 @@ public sealed class NetworkLayout
     /// <summary>The independent sources, as indices of parts; input k is that of <c>Sources[k]</c>.</summary>
     public ImmutableArray<int> Sources { get; }
 
-    /// <summary>The capacitors and inductors, as indices of parts; their inputs follow those of the sources.</summary>
+    /// <summary>The capacitors and inductors, as indices of parts; their inputs follow those of the
+    /// sources.</summary>
     public ImmutableArray<int> Stores { get; }
 
     /// <summary>The number of inputs.</summary>

@@ -2,8 +2,10 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Equations;
 
-/// <summary>The last step of the reduction: from rows with a regular E to z′ = A z + B u. A right side that is a
-/// polynomial in s is divided by s E + G: the quotient acts on the unknowns directly, the remainder drives the state.</summary>
+/// <summary>The last step of the reduction: from rows with a regular E to z′ = A z + B u. A right side that
+/// is a
+/// polynomial in s is divided by s E + G: the quotient acts on the unknowns directly, the remainder drives
+/// the state.</summary>
 internal static class NormalFormSolver
 {
     public static NormalForm Solve(
@@ -45,7 +47,8 @@ internal static class NormalFormSolver
         return new NormalForm(layout, a, lu.Solve(right[0]), unknowns);
     }
 
-    private static DoubleDoubleMatrix Dense(List<EquationRow> rows, int[] state, Func<EquationRow, SparseVector> part)
+    private static DoubleDoubleMatrix Dense(List<EquationRow> rows, int[] state, Func<EquationRow,
+        SparseVector> part)
     {
         var matrix = new DoubleDoubleMatrix(rows.Count, state.Length);
         for (var i = 0; i < rows.Count; i++)

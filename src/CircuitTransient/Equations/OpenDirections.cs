@@ -5,7 +5,8 @@ namespace CircuitTransient.Equations;
 /// <summary>Finds what a set of equations leaves open: vectors n with E n = 0 and G n = 0.</summary>
 internal static class OpenDirections
 {
-    /// <summary>A basis of the open directions; in each one unknown, held at zero in the solution, has the value 1.</summary>
+    /// <summary>A basis of the open directions; in each one unknown, held at zero in the solution, has the
+    /// value 1.</summary>
     public static List<(int Fixed, SparseVector Direction)> Find(List<EquationRow> rows, int[] unknowns)
     {
         var reduced = new List<(int Pivot, SparseVector Row)>();
@@ -35,7 +36,8 @@ internal static class OpenDirections
 
     private static SparseVector Direction(int free, List<(int Pivot, SparseVector Row)> reduced) =>
         SparseVector.From(
-            reduced.Select(r => (r.Pivot, -r.Row.At(free) / r.Row.At(r.Pivot))).Append((free, DoubleDouble.One)));
+            reduced.Select(r => (r.Pivot, -r.Row.At(free) / r.Row.At(r.Pivot)))
+                .Append((free, DoubleDouble.One)));
 
     private static SparseVector Clear(SparseVector row, int pivot, SparseVector by)
     {

@@ -11,7 +11,8 @@ public static class Outputs
     public static LinearOutput Of(NormalForm form, Measurand measurand) => measurand switch
     {
         VoltageBetween v => Between(form, v.From, v.To),
-        VoltageAcross v => Between(form, form.Layout.Circuit.Parts[v.Part].From, form.Layout.Circuit.Parts[v.Part].To),
+        VoltageAcross v =>
+            Between(form, form.Layout.Circuit.Parts[v.Part].From, form.Layout.Circuit.Parts[v.Part].To),
         CurrentThrough { Delivered: true } c => Negate(form.Unknowns[form.Layout.Current(c.Part)]),
         CurrentThrough c => form.Unknowns[form.Layout.Current(c.Part)],
         RateOfChange r => Rate(form, Of(form, r.Of)),
@@ -31,7 +32,8 @@ public static class Outputs
     private static LinearOutput Negate(LinearOutput output) =>
         LinearOutput.Combine(-1, output, 0, output);
 
-    /// <summary>y′ = c A z + c B u + d₀ u′ + d₁ u″ + …; a stored quantity drives no z′, its impulse has set z.</summary>
+    /// <summary>y′ = c A z + c B u + d₀ u′ + d₁ u″ + …; a stored quantity drives no z′, its impulse has set
+    /// z.</summary>
     private static LinearOutput Rate(NormalForm form, LinearOutput output)
     {
         var n = form.Order;

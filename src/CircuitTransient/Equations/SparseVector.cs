@@ -5,14 +5,17 @@ namespace CircuitTransient.Equations;
 /// <summary>One non-zero of a sparse vector.</summary>
 /// <param name="Index">Its place.</param>
 /// <param name="Value">Its value.</param>
-/// <param name="Scale">The largest magnitude that went into the value: what a cancellation is judged against.</param>
+/// <param name="Scale">The largest magnitude that went into the value: what a cancellation is judged
+/// against.</param>
 public readonly record struct Term(int Index, DoubleDouble Value, double Scale);
 
-/// <summary>A sparse vector, its terms sorted by index. A sum that cancels to below <see cref="Cancelled"/> of what
+/// <summary>A sparse vector, its terms sorted by index. A sum that cancels to below <see cref="Cancelled"/>
+/// of what
 /// went into it is an exact zero of the network's structure and is dropped.</summary>
 public sealed class SparseVector
 {
-    /// <summary>2⁻⁸⁶: far above the rounding of double-double (2⁻¹⁰⁴), far below any ratio of real parts.</summary>
+    /// <summary>2⁻⁸⁶: far above the rounding of double-double (2⁻¹⁰⁴), far below any ratio of real
+    /// parts.</summary>
     public const double Cancelled = 1.3e-26;
 
     private readonly Term[] terms;
@@ -40,7 +43,8 @@ public sealed class SparseVector
         {
             if (!value.IsZero)
             {
-                sum = Add(sum, DoubleDouble.One, new SparseVector(new Term(index, value, Math.Abs(value.Hi))));
+                sum = Add(sum, DoubleDouble.One,
+                    new SparseVector(new Term(index, value, Math.Abs(value.Hi))));
             }
         }
 

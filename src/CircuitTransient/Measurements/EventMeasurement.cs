@@ -30,7 +30,8 @@ internal sealed class EventMeasurement(CurveBuilder curves)
 
     private double? After(Measurand quantity, double time) => Value(quantity, time, before: false);
 
-    /// <summary>A segment's own coefficients serve, since a quantity may be open in some other interval.</summary>
+    /// <summary>A segment's own coefficients serve, since a quantity may be open in some other
+    /// interval.</summary>
     private double? Value(Measurand quantity, double time, bool before)
     {
         var index = solution.SegmentAt(time, before);

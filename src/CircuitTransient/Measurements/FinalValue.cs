@@ -4,7 +4,8 @@ using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
 
-/// <summary>The limit of a quantity for t → ∞ if the last segment went on with its sources as they stand.</summary>
+/// <summary>The limit of a quantity for t → ∞ if the last segment went on with its sources as they
+/// stand.</summary>
 internal static class FinalValue
 {
     /// <summary>The limit; null where there is none.</summary>
@@ -32,7 +33,8 @@ internal static class FinalValue
         return sum;
     }
 
-    /// <summary>An integral has a limit where its rate dies out: then it is gathered over many time constants more.</summary>
+    /// <summary>An integral has a limit where its rate dies out: then it is gathered over many time constants
+    /// more.</summary>
     private static double? OfIntegral(AccumulatedPiece piece)
     {
         if (piece.Rate.Terms.IsEmpty)
@@ -45,7 +47,8 @@ internal static class FinalValue
             return null;
         }
 
-        var slowest = piece.Segment.Basis.Modes.Where(m => m.Decay > 0).Select(m => m.Decay).DefaultIfEmpty(0).Min();
+        var slowest =
+            piece.Segment.Basis.Modes.Where(m => m.Decay > 0).Select(m => m.Decay).DefaultIfEmpty(0).Min();
         if (slowest == 0)
         {
             return null;
@@ -81,7 +84,8 @@ internal static class FinalValue
         return limit;
     }
 
-    private static double? ModeLimit(SegmentBasis basis, int m, ReadOnlySpan<double> coefficients, double scale)
+    private static double? ModeLimit(SegmentBasis basis, int m, ReadOnlySpan<double> coefficients,
+        double scale)
     {
         var mode = basis.Modes[m];
         var t = mode.Rounded;

@@ -4,13 +4,15 @@ using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
 
-/// <summary>Where a quantity is infinite for an instant: an impulse of a voltage or current, or the rate of change of
+/// <summary>Where a quantity is infinite for an instant: an impulse of a voltage or current, or the rate of
+/// change of
 /// something that jumps.</summary>
 internal sealed class Infinities(CurveBuilder curves)
 {
     private readonly TransientSolution solution = curves.Solution;
 
-    /// <summary>The first instants in a window at which the quantity is infinitely great and infinitely small.</summary>
+    /// <summary>The first instants in a window at which the quantity is infinitely great and infinitely
+    /// small.</summary>
     public (double? Up, double? Down) Of(Measurand quantity, double from, double until)
     {
         double? up = null, down = null;
@@ -43,7 +45,8 @@ internal sealed class Infinities(CurveBuilder curves)
                 var current = new CurrentThrough(power.Part, power.Delivered);
                 var v = solution.Segments[s].ImpulseAtStart(voltage);
                 var i = solution.Segments[s].ImpulseAtStart(current);
-                return v != 0 ? Math.Sign(v * After(current, s)) : i != 0 ? Math.Sign(i * After(voltage, s)) : 0;
+                return v != 0 ? Math.Sign(v * After(current, s)) : i != 0 ? Math.Sign(i * After(voltage, s))
+                    : 0;
             case EnergyIn or CouplingEnergy or JouleIntegral or Figure:
                 return 0;
             default:
@@ -51,7 +54,8 @@ internal sealed class Infinities(CurveBuilder curves)
         }
     }
 
-    /// <summary>By how much a voltage or current jumps at a segment's start; zero at the study's start, before which
+    /// <summary>By how much a voltage or current jumps at a segment's start; zero at the study's start,
+    /// before which
     /// nothing is known of it.</summary>
     private double JumpAt(Measurand quantity, int s)
     {

@@ -27,7 +27,8 @@ internal sealed class IntervalMeasurement(TransientSolution solution, StoredEner
             interval.From,
             interval.Until,
             [.. interval.StartsWith.Select(Words)],
-            [.. PoleGroups.Of(interval.Model.Blocks).Select(p => new Pole(p.Value.Real, p.Value.Imaginary, p.Multiplicity))],
+            [.. PoleGroups.Of(interval.Model.Blocks)
+                .Select(p => new Pole(p.Value.Real, p.Value.Imaginary, p.Multiplicity))],
             impulses.ToImmutable(),
             lost);
     }
@@ -45,7 +46,8 @@ internal sealed class IntervalMeasurement(TransientSolution solution, StoredEner
             var flux = Impulse(segment, new VoltageAcross(i));
             if (charge is not null || flux is not null)
             {
-                impulses.Add(new ImpulseResult(segment.Start, part.Name, charge, flux, ImpulseRemedy.For(part, charge)));
+                impulses.Add(new ImpulseResult(segment.Start, part.Name, charge, flux,
+                    ImpulseRemedy.For(part, charge)));
             }
         }
     }

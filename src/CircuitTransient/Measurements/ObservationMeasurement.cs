@@ -14,7 +14,8 @@ internal sealed class ObservationMeasurement(
 
     private readonly TransientSolution solution = curves.Solution;
 
-    /// <summary>Measures one observation; its waveforms are still to be filled in from the curves, the total's first.</summary>
+    /// <summary>Measures one observation; its waveforms are still to be filled in from the curves, the
+    /// total's first.</summary>
     public (ObservationResult Result, ImmutableArray<Curve> Curves) Measure(Observation observation)
     {
         var window = times.Of(observation.Window);
@@ -47,7 +48,8 @@ internal sealed class ObservationMeasurement(
         return (result, [total, .. shares.Select(s => s.Curve)]);
     }
 
-    private (Extreme Max, Extreme Min) Extremes(Measurand quantity, Curve total, (double From, double To) window)
+    private (Extreme Max, Extreme Min) Extremes(Measurand quantity, Curve total,
+        (double From, double To) window)
     {
         var max = ExtremeSearch.Greatest(total, window.From, window.To, MostStretches);
         var min = ExtremeSearch.Least(total, window.From, window.To, MostStretches);
@@ -78,7 +80,8 @@ internal sealed class ObservationMeasurement(
     }
 
     private Contribution Contribution(
-        Measurand quantity, (string Name, Share Share, int Cause, Curve Curve) share, Extreme max, Extreme min,
+        Measurand quantity, (string Name, Share Share, int Cause, Curve Curve) share, Extreme max,
+            Extreme min,
         (double From, double To) window)
     {
         var atMax = share.Curve.ValueAt(solution, max.Time, max.Side == InstantSide.Before);
@@ -105,8 +108,10 @@ internal sealed class ObservationMeasurement(
         return new TimedValue(found.Value, found.Time);
     }
 
-    private SampleAt Sample(double time, Curve total, List<(string Name, Share Share, int Cause, Curve Curve)> shares) =>
-        new(time, total.ValueAt(solution, time), [.. shares.Select(s => (double?)s.Curve.ValueAt(solution, time))]);
+    private SampleAt Sample(double time, Curve total,
+        List<(string Name, Share Share, int Cause, Curve Curve)> shares) =>
+        new(time, total.ValueAt(solution, time),
+            [.. shares.Select(s => (double?)s.Curve.ValueAt(solution, time))]);
 
     private bool EndsRising(Curve total, Extreme max, Extreme min)
     {
@@ -120,16 +125,20 @@ internal sealed class ObservationMeasurement(
         Span<double> phi = new double[last.Segment.Basis.Width];
         last.Segment.Basis.Evaluate(last.Segment.Length, phi);
         var slope = last.At(last.Segment.Length, phi).Slope * Math.Sign(value);
-        return slope * solution.Until > 1e-3 * Math.Abs(value); // still growing by a thousandth a study's length
+        // still growing by a thousandth a study's length
+        return slope * solution.Until > 1e-3 * Math.Abs(value);
     }
 
     private ObservationResult Undetermined(Observation observation)
     {
         var nothing = new Extreme(null, 0, InstantSide.At, null);
-        var contributions = solution.Causes.Select(c => new Contribution(c.Name, null, null, null, null, null, null));
+        var contributions =
+            solution.Causes.Select(c => new Contribution(c.Name, null, null, null, null, null, null));
         return new ObservationResult(
-            observation.Name, observation.Unit, null, null, null, nothing, nothing, false, [.. contributions], null,
-            [.. options.At.Select(t => new SampleAt(t, null, [.. solution.Causes.Select(_ => (double?)null)]))],
+            observation.Name, observation.Unit, null, null, null, nothing, nothing, false, [.. contributions],
+                null,
+            [.. options.At
+                .Select(t => new SampleAt(t, null, [.. solution.Causes.Select(_ => (double?)null)]))],
             [], []);
     }
 }

@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Curves;
 using CircuitTransient.Solutions;
@@ -47,7 +46,8 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
             };
             var magnitude = Math.Abs(reached ?? double.PositiveInfinity);
             return new RatingResult(
-                rating.Limit, unit, reached is null ? null : magnitude, reached is null ? null : magnitude / rating.Limit,
+                rating.Limit, unit, reached is null ? null : magnitude, reached is null ? null
+                    : magnitude / rating.Limit,
                 magnitude <= rating.Limit);
         }
 
@@ -66,7 +66,8 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
         }
     }
 
-    /// <summary>The extreme of greatest magnitude, with its sign; its value is null where an impulse makes it infinite.</summary>
+    /// <summary>The extreme of greatest magnitude, with its sign; its value is null where an impulse makes it
+    /// infinite.</summary>
     private TimedValue? Peak(Measurand quantity)
     {
         if (curves.Of(quantity) is not { } curve)

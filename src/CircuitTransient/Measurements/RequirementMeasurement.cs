@@ -8,7 +8,8 @@ internal sealed class RequirementMeasurement(CurveBuilder curves, WindowTimes ti
 {
     private const int MostStretches = 1_000_000;
 
-    /// <summary>The verdict; one that could not be judged does not hold, and its worst value is null.</summary>
+    /// <summary>The verdict; one that could not be judged does not hold, and its worst value is
+    /// null.</summary>
     public RequirementResult Judge(Requirement requirement)
     {
         var line = curves.Solution.Circuit.Source.LineOf(requirement.Span.Start);
@@ -62,7 +63,8 @@ internal sealed class RequirementMeasurement(CurveBuilder curves, WindowTimes ti
     }
 
     /// <summary>From the stated instant on the quantity stays within the band about its target.</summary>
-    private (bool Holds, TimedValue Worst, double? Margin) JudgeSettling(Requirement requirement, SettlesTo settles)
+    private (bool Holds, TimedValue Worst, double? Margin) JudgeSettling(Requirement requirement,
+        SettlesTo settles)
     {
         if (times.Of(new Window(settles.By, requirement.Window.To)) is not { } window
             || curves.Of(requirement.Quantity) is not { } curve)

@@ -34,18 +34,21 @@ public static class ResultBuilder
         var stresses = new PartStresses(curves, infinities, s => grams[s]);
 
         var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
-            .Select(o => Stop(cancellation, observing.Measure(o))).ToArray();
-        var samples = SampleTimes.Of(solution, options.SampleCount, observed.SelectMany(o => Peaks(o.Result)));
+            .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
+        var samples =
+            SampleTimes.Of(solution, options.SampleCount, observed.SelectMany(o => Peaks(o.Result)));
         var observations = Waves(observed, solution, samples);
         var parts = Enumerable.Range(0, circuit.Parts.Length)
-            .Select(i => Stop(cancellation, stresses.Measure(i))).ToImmutableArray();
-        var requirements = circuit.Requirements.Select(r => Stop(cancellation, judging.Judge(r))).ToImmutableArray();
+            .Select(i => Unless(stresses.Measure(i), cancellation)).ToImmutableArray();
+        var requirements =
+            circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation)).ToImmutableArray();
         var (checks, notJudged) = SelfChecks.Run(curves, energy, s => grams[s]);
         return new TransientResult(
             circuit,
             solution.Until,
             solution.UntilReason,
-            [.. solution.Causes.Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
+            [.. solution.Causes
+                .Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
             [.. solution.Intervals.Select(intervals.Measure)],
             [.. solution.Occurrences.Select(events.Measure)],
             samples,
@@ -72,7 +75,8 @@ public static class ResultBuilder
         {
             if (curves.IsEmpty)
             {
-                filled.Add(result with { Total = blank, ByCause = [.. result.Contributions.Select(_ => blank)] });
+                filled.Add(result with { Total = blank, ByCause =
+                    [.. result.Contributions.Select(_ => blank)] });
                 continue;
             }
 
@@ -89,7 +93,7 @@ public static class ResultBuilder
 
     private static IEnumerable<double> Peaks(ObservationResult result) => [result.Max.Time, result.Min.Time];
 
-    private static T Stop<T>(CancellationToken cancellation, T value)
+    private static T Unless<T>(T value, CancellationToken cancellation)
     {
         cancellation.ThrowIfCancellationRequested();
         return value;

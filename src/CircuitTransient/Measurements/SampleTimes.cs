@@ -4,7 +4,8 @@ using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
 
-/// <summary>Chooses the instants of the waveforms: dense where the observed quantities move, every boundary twice,
+/// <summary>Chooses the instants of the waveforms: dense where the observed quantities move, every boundary
+/// twice,
 /// every peak included.</summary>
 internal static class SampleTimes
 {
@@ -46,7 +47,9 @@ internal static class SampleTimes
     private static int Count(TransientSolution solution, double fraction, int count) =>
         solution.Segments.Sum(s => Steps(solution, s, fraction, count).Length);
 
-    /// <summary>A segment's share of a limited number is by its count, not its length: a short inrush gets its due.</summary>
+    /// <summary>A segment's share of a limited number is by its count, not its length: a short inrush gets
+    /// its due.</summary>
     private static double[] Steps(TransientSolution solution, Segment segment, double fraction, int count) =>
-        SamplingSteps.Of(segment.Basis, segment.Length, fraction, Math.Max(2, count / solution.Segments.Length));
+        SamplingSteps
+            .Of(segment.Basis, segment.Length, fraction, Math.Max(2, count / solution.Segments.Length));
 }

@@ -54,7 +54,8 @@ internal sealed class StoredEnergy(CurveBuilder curves)
             * Carried(circuit.Parts[k.First]) * Carried(circuit.Parts[k.Second]));
     }
 
-    /// <summary>What the impulses at a segment's start lose: stored before, less stored after, and what the sources
+    /// <summary>What the impulses at a segment's start lose: stored before, less stored after, and what the
+    /// sources
     /// supply within the impulses.</summary>
     public double LostAtStartOf(int segment)
     {
@@ -62,7 +63,8 @@ internal sealed class StoredEnergy(CurveBuilder curves)
         return before - At(segment, end: false) + SuppliedInImpulse(segment);
     }
 
-    /// <summary>Joules that sources supply within the impulses at a segment's start: the charge at the voltage just
+    /// <summary>Joules that sources supply within the impulses at a segment's start: the charge at the
+    /// voltage just
     /// after, the flux at the current just after.</summary>
     public double SuppliedInImpulse(int segment)
     {

@@ -8,7 +8,8 @@ namespace CircuitTransient.Measurements;
 /// <summary>Waveforms at chosen instants.</summary>
 internal static class Waveform
 {
-    /// <summary>The values of many curves; an instant that stands twice is a jump: the value before, then after.</summary>
+    /// <summary>The values of many curves; an instant that stands twice is a jump: the value before, then
+    /// after.</summary>
     public static ImmutableArray<ImmutableArray<double>> Of(
         ImmutableArray<Curve> curves, TransientSolution solution, ImmutableArray<double> times)
     {
@@ -24,7 +25,8 @@ internal static class Waveform
         {
             var isBefore = k + 1 < times.Length && times[k + 1] == times[k];
             while (index + 1 < solution.Segments.Length
-                && (solution.Segments[index].End < times[k] || (!isBefore && solution.Segments[index].End == times[k])))
+                && (solution.Segments[index].End < times[k]
+                    || (!isBefore && solution.Segments[index].End == times[k])))
             {
                 index++;
             }

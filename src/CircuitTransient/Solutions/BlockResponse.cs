@@ -5,7 +5,8 @@ namespace CircuitTransient.Solutions;
 /// <summary>The response of one spectral block, ζ′ = T ζ + w u, to (a + b τ) e^(μ τ).</summary>
 internal static class BlockResponse
 {
-    /// <summary>x₁ = (μ − T)⁻¹ w and x₂ = −(μ − T)⁻¹ x₁: the forced response is (a x₁ + b x₂ + b x₁ τ) e^(μ τ).</summary>
+    /// <summary>x₁ = (μ − T)⁻¹ w and x₂ = −(μ − T)⁻¹ x₁: the forced response is (a x₁ + b x₂ + b x₁ τ) e^(μ
+    /// τ).</summary>
     public static (DoubleDoubleComplex[] First, DoubleDoubleComplex[] Second) Forced(
         SpectralBlock block, DoubleDoubleComplex[] w, DoubleDoubleComplex exponent)
     {
@@ -34,7 +35,8 @@ internal static class BlockResponse
         return t;
     }
 
-    /// <summary>[T w; 0 μ], or [T w 0; 0 μ 1; 0 0 μ] with slopes: the block and the exponential as one triangle.</summary>
+    /// <summary>[T w; 0 μ], or [T w 0; 0 μ 1; 0 0 μ] with slopes: the block and the exponential as one
+    /// triangle.</summary>
     public static DoubleDoubleComplex[,] Join(
         SpectralBlock block, DoubleDoubleComplex[] w, DoubleDoubleComplex exponent, bool withSlopes)
     {
@@ -101,7 +103,8 @@ internal static class BlockResponse
     }
 
     private static void AddJoined(
-        DoubleDoubleComplex[] end, Mode mode, DoubleDoubleComplex[] carriers, DoubleDoubleComplex[] w, Forcing forcing)
+        DoubleDoubleComplex[] end, Mode mode, DoubleDoubleComplex[] carriers, DoubleDoubleComplex[] w,
+            Forcing forcing)
     {
         var m = end.Length;
         for (var i = 0; i < m; i++)

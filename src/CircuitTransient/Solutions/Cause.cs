@@ -1,11 +1,11 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
-using CircuitTransient.Equations;
 using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>A cause that is solved alone: pieces of one source, or what one part stores at the start.</summary>
+/// <summary>A cause that is solved alone: pieces of one source, or what one part stores at the
+/// start.</summary>
 /// <param name="Name">The user's own part name, with what of it.</param>
 /// <param name="Source">Index of the source; −1 for a stored quantity.</param>
 /// <param name="Pieces">The pieces of the source's wave that belong to it.</param>
@@ -17,7 +17,8 @@ public sealed record Cause(
 /// <summary>The lists of causes.</summary>
 public static class CauseList
 {
-    /// <summary>From the start: every source, and every stored quantity that is not zero, in the order of the parts.</summary>
+    /// <summary>From the start: every source, and every stored quantity that is not zero, in the order of the
+    /// parts.</summary>
     public static ImmutableArray<Cause> FromStart(Circuit circuit)
     {
         var causes = ImmutableArray.CreateBuilder<Cause>();

@@ -11,9 +11,11 @@ internal sealed record Forcing(
     int Input, DoubleDoubleComplex Exponent, DoubleDoubleComplex Amplitude, DoubleDoubleComplex Slope)
 {
     /// <summary>The forcings of a cause's pieces that are on just after an instant.</summary>
-    public static ImmutableArray<Forcing> Of(IEnumerable<WavePiece> pieces, int input, DoubleDouble scale, double start)
+    public static ImmutableArray<Forcing> Of(IEnumerable<WavePiece> pieces, int input, DoubleDouble scale,
+        double start)
     {
-        var sums = new Dictionary<DoubleDoubleComplex, (DoubleDoubleComplex Amplitude, DoubleDoubleComplex Slope)>();
+        var sums = new Dictionary<DoubleDoubleComplex,
+            (DoubleDoubleComplex Amplitude, DoubleDoubleComplex Slope)>();
         foreach (var piece in pieces)
         {
             if (piece.Start <= start && start < piece.End)
@@ -71,7 +73,8 @@ internal sealed record Forcing(
         return this with { Amplitude = (Amplitude + (Slope * time)) * growth, Slope = Slope * growth };
     }
 
-    /// <summary>The k-th derivative at the segment's start, real part: a real source's two halves add up to it.</summary>
+    /// <summary>The k-th derivative at the segment's start, real part: a real source's two halves add up to
+    /// it.</summary>
     public DoubleDouble DerivativeAtStart(int k)
     {
         var (amplitude, slope) = (Amplitude, Slope);

@@ -3,12 +3,14 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>The integrals over a segment of the products of its functions, in closed form: with them the energy of
+/// <summary>The integrals over a segment of the products of its functions, in closed form: with them the
+/// energy of
 /// any part is one quadratic form.</summary>
 public static class GramIntegral
 {
     /// <summary>∫₀ʰ φ(τ) φ(τ)ᵀ dτ over a segment, a symmetric matrix of the basis' width.</summary>
-    public static double[,] Of(Segment segment) => Of(segment.Basis, (DoubleDouble)segment.End - segment.Start);
+    public static double[,] Of(Segment segment) =>
+        Of(segment.Basis, (DoubleDouble)segment.End - segment.Start);
 
     /// <summary>∫₀ʰ φ(τ) φ(τ)ᵀ dτ over any length h in seconds.</summary>
     public static double[,] Of(SegmentBasis basis, DoubleDouble h)
@@ -73,7 +75,8 @@ public static class GramIntegral
 
     /// <summary>With P = ∫ X Y and Q = ∫ X Ȳ: ∫ Re X Re Y = Re (P + Q)/2, and so on.</summary>
     private static void Put(
-        double[,] gram, SegmentBasis basis, (int Mode, int Carrier) x, (int Mode, int Carrier) y, Complex p, Complex q)
+        double[,] gram, SegmentBasis basis, (int Mode, int Carrier) x, (int Mode, int Carrier) y, Complex p,
+            Complex q)
     {
         var isRealX = basis.Modes[x.Mode].IsReal;
         var isRealY = basis.Modes[y.Mode].IsReal;

@@ -5,7 +5,8 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>A circuit with its switches in given positions, split into its spectral blocks. Made once for each set
+/// <summary>A circuit with its switches in given positions, split into its spectral blocks. Made once for
+/// each set
 /// of positions and used for every interval that has them.</summary>
 public sealed class IntervalModel
 {

@@ -8,7 +8,8 @@ public sealed class IntervalModels(NetworkLayout layout)
 {
     private readonly Dictionary<string, IntervalModel?> models = [];
 
-    /// <summary>The network with the switches in these positions; null where its equations have no unique solution.</summary>
+    /// <summary>The network with the switches in these positions; null where its equations have no unique
+    /// solution.</summary>
     public IntervalModel? For(ImmutableArray<bool> isClosed)
     {
         var key = string.Concat(isClosed.Select(c => c ? '1' : '0'));

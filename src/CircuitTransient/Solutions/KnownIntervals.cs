@@ -8,7 +8,8 @@ namespace CircuitTransient.Solutions;
 /// <summary>The intervals whose switch positions follow from the text alone.</summary>
 public static class KnownIntervals
 {
-    /// <summary>An error for each set of positions, met at a known instant, whose equations have no unique solution.</summary>
+    /// <summary>An error for each set of positions, met at a known instant, whose equations have no unique
+    /// solution.</summary>
     public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit)
     {
         var layout = new NetworkLayout(circuit);
@@ -23,7 +24,8 @@ public static class KnownIntervals
             var next = waiting.Select(w => w.Due).DefaultIfEmpty(double.PositiveInfinity).Min();
             if (next <= now)
             {
-                timeline.Act(now, waiting.Where(w => w.Due <= now).Select(w => w.Reference), isDecidedByAnswer: false);
+                timeline.Act(now, waiting.Where(w => w.Due <= now).Select(w => w.Reference),
+                    isDecidedByAnswer: false);
                 continue;
             }
 

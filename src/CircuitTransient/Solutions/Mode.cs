@@ -12,12 +12,15 @@ public enum ModeKind
     /// <summary>An exponent of the sources: a constant, a ramp, a sine, a decay.</summary>
     Forced,
 
-    /// <summary>A pole so near an exponent of the sources, over the segment, that the two are kept together.</summary>
+    /// <summary>A pole so near an exponent of the sources, over the segment, that the two are kept
+    /// together.</summary>
     Joined,
 }
 
-/// <summary>A group of functions of time that belong together: the upper triangle of the first rows of exp(T τ), for
-/// a small upper triangular T. They are closed under differentiation, X′ = X T, and stay accurate however near the
+/// <summary>A group of functions of time that belong together: the upper triangle of the first rows of exp(T
+/// τ), for
+/// a small upper triangular T. They are closed under differentiation, X′ = X T, and stay accurate however
+/// near the
 /// diagonal elements of T are to each other.</summary>
 public sealed class Mode
 {

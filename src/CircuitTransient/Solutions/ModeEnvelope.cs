@@ -13,7 +13,8 @@ internal static class ModeEnvelope
         }
         else if (mode.Rows == 1)
         {
-            // |e[p, μ]| ≤ τ max e^(σ τ) and |e[p, μ, μ]| ≤ τ²/2 max e^(σ τ), by the mean value of divided differences.
+            // |e[p, μ]| ≤ τ max e^(σ τ) and |e[p, μ, μ]| ≤ τ²/2 max e^(σ τ), by the mean value of divided
+            // differences.
             var highest = Math.Max(Peak(t[0, 0].Real, a, b), Peak(t[1, 1].Real, a, b));
             bounds[0] = Peak(t[0, 0].Real, a, b);
             bounds[1] = b * highest;
@@ -28,7 +29,8 @@ internal static class ModeEnvelope
         }
     }
 
-    /// <summary>|exp(T τ)| ≤ exp(N τ) element by element, N with Re of T's diagonal and the magnitudes above it;
+    /// <summary>|exp(T τ)| ≤ exp(N τ) element by element, N with Re of T's diagonal and the magnitudes above
+    /// it;
     /// for τ in [a, b] that is at most exp(N a) exp(N⁺ (b − a)), N⁺ without the decays.</summary>
     private static void BoundTriangle(Mode mode, double a, double b, Span<double> bounds)
     {
@@ -63,7 +65,8 @@ internal static class ModeEnvelope
 
     private static double Peak(double rate, double a, double b) => Math.Exp(rate * (rate > 0 ? b : a));
 
-    /// <summary>exp(N t) of a triangle that is non-negative off its diagonal: a sum of positive terms, so no digit
+    /// <summary>exp(N t) of a triangle that is non-negative off its diagonal: a sum of positive terms, so no
+    /// digit
     /// is lost. Scaled and squared.</summary>
     private static double[,] NonNegativeExponential(double[,] matrix, double t)
     {

@@ -52,7 +52,8 @@ internal static class ModeEvaluation
         return values;
     }
 
-    /// <summary>e^(p τ), with the low part of the phase kept: an error of u even after a million radians.</summary>
+    /// <summary>e^(p τ), with the low part of the phase kept: an error of u even after a million
+    /// radians.</summary>
     public static Complex Exponential(DoubleDoubleComplex p, double tau)
     {
         var exponent = p.Re * tau;
@@ -67,7 +68,8 @@ internal static class ModeEvaluation
         return new Complex(magnitude * (cos - (phase.Lo * sin)), magnitude * (sin + (phase.Lo * cos)));
     }
 
-    /// <summary>Chains [μ 1; 0 μ] and [p 1 0; 0 μ 1; 0 0 μ]: divided differences of the exponential by the series
+    /// <summary>Chains [μ 1; 0 μ] and [p 1 0; 0 μ 1; 0 0 μ]: divided differences of the exponential by the
+    /// series
     /// of (eˣ − 1)/x and its successor, which the segment's length keeps at |x| ≤ 1.</summary>
     private static void EvaluateChain(Mode mode, double tau, Span<double> values)
     {

@@ -1,12 +1,14 @@
-using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
 using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>What sets in at a segment's start, and so may come as an impulse: at a switching everything that is
-/// stored and every source as it stands (the equations begin anew), at a corner what the sources change by.</summary>
-/// <param name="Jumps">For each order of derivative, the change of each input's derivative of that order.</param>
+/// <summary>What sets in at a segment's start, and so may come as an impulse: at a switching everything that
+/// is
+/// stored and every source as it stands (the equations begin anew), at a corner what the sources change
+/// by.</summary>
+/// <param name="Jumps">For each order of derivative, the change of each input's derivative of that
+/// order.</param>
 /// <param name="Stored">What is stored at the start, for each input; zeros at a corner.</param>
 internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored)
 {
@@ -31,7 +33,8 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored)
     public static Onset OfCorner(NetworkLayout layout, Segment before, IEnumerable<Motion> motions)
     {
         var jumps = Derivatives(layout, motions);
-        var ended = before.MotionOf(Segment.Total).Forcings.Select(f => f.MovedBy((DoubleDouble)before.End - before.Start));
+        var ended = before.MotionOf(Segment.Total).Forcings
+            .Select(f => f.MovedBy((DoubleDouble)before.End - before.Start));
         var earlier = Derivatives(layout, [new Motion([], [.. ended])]);
         for (var k = 0; k < Orders; k++)
         {

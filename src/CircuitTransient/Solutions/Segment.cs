@@ -5,7 +5,8 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>A stretch of the study without a switching or a source's corner: every voltage and current is a sum of
+/// <summary>A stretch of the study without a switching or a source's corner: every voltage and current is a
+/// sum of
 /// a fixed set of functions, cause by cause.</summary>
 public sealed class Segment
 {
@@ -16,7 +17,8 @@ public sealed class Segment
     private readonly Dictionary<(Measurand, int), double[]> coefficients = [];
 
     internal Segment(
-        IntervalModel model, int interval, double start, double end, SegmentModes modes, ImmutableArray<Motion> motions,
+        IntervalModel model, int interval, double start, double end, SegmentModes modes,
+            ImmutableArray<Motion> motions,
         Onset onset)
     {
         Model = model;
@@ -50,7 +52,8 @@ public sealed class Segment
     /// <summary>The total's index where a cause's is asked for.</summary>
     public const int Total = -1;
 
-    /// <summary>The coefficients of a linear quantity, of one cause or of the total; null where it is undetermined.</summary>
+    /// <summary>The coefficients of a linear quantity, of one cause or of the total; null where it is
+    /// undetermined.</summary>
     public double[]? Coefficients(Measurand measurand, int cause = Total)
     {
         lock (coefficients)
@@ -114,7 +117,8 @@ public sealed class Segment
         return sum;
     }
 
-    /// <summary>The impulse of a voltage (V·s) or current (C) at the segment's start; zero where there is none.</summary>
+    /// <summary>The impulse of a voltage (V·s) or current (C) at the segment's start; zero where there is
+    /// none.</summary>
     public double ImpulseAtStart(Measurand measurand) => onset.ImpulseIn(Model.Project(measurand).Output);
 
     /// <summary>The motion of a cause, or the total's.</summary>

@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using System.Numerics;
-using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
@@ -38,14 +37,16 @@ public sealed class SegmentBasis
         }
     }
 
-    /// <summary>An upper bound of each function's magnitude for a ≤ τ ≤ b; a complex one's stands in both its places.</summary>
+    /// <summary>An upper bound of each function's magnitude for a ≤ τ ≤ b; a complex one's stands in both its
+    /// places.</summary>
     public void Envelope(double a, double b, Span<double> bounds)
     {
         Span<double> carriers = stackalloc double[128];
         for (var i = 0; i < Modes.Length; i++)
         {
             var mode = Modes[i];
-            var own = mode.CarrierCount <= 128 ? carriers[..mode.CarrierCount] : new double[mode.CarrierCount];
+            var own = mode.CarrierCount <= 128 ? carriers[..mode.CarrierCount]
+                : new double[mode.CarrierCount];
             ModeEnvelope.Bound(mode, a, b, own);
             for (var k = 0; k < own.Length; k++)
             {

@@ -3,8 +3,10 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>The modes of a segment, and how motions are written in them. A forced response is kept as a multiple of
-/// its exponential where that is well apart from a block's poles over the segment; where the two are so near that
+/// <summary>The modes of a segment, and how motions are written in them. A forced response is kept as a
+/// multiple of
+/// its exponential where that is well apart from a block's poles over the segment; where the two are so near
+/// that
 /// their difference times the length is below 1, block and exponential stay together as one triangle, since a
 /// quotient of differences would cancel.</summary>
 internal sealed class SegmentModes
@@ -22,7 +24,8 @@ internal sealed class SegmentModes
         var modes = ImmutableArray.CreateBuilder<Mode>();
         for (var b = 0; b < model.Blocks.Length; b++)
         {
-            modes.Add(new Mode(ModeKind.Pole, BlockResponse.TriangleOf(model.Blocks[b]), model.Blocks[b].Size, b));
+            modes.Add(new Mode(ModeKind.Pole, BlockResponse.TriangleOf(model.Blocks[b]), model.Blocks[b].Size,
+                b));
         }
 
         var all = forcings.ToList();
@@ -44,7 +47,8 @@ internal sealed class SegmentModes
     /// <summary>Every function at the segment's end.</summary>
     public DoubleDoubleComplex[][] CarriersAtEnd => carriersAtEnd.Value;
 
-    /// <summary>The coefficients of an output, mode by mode; the output is the real part of the sum of products.</summary>
+    /// <summary>The coefficients of an output, mode by mode; the output is the real part of the sum of
+    /// products.</summary>
     public DoubleDoubleComplex[][] Coefficients(Projection projection, Motion motion)
     {
         var sums = new DoubleDoubleComplex[Basis.Modes.Length][];
@@ -111,11 +115,13 @@ internal sealed class SegmentModes
         {
             if (IsJoined(b, forcing, out var joined))
             {
-                AddJoinedTerms(sums[joined], Basis.Modes[joined], row, factor, model.Drive(b, forcing.Input), forcing);
+                AddJoinedTerms(sums[joined], Basis.Modes[joined], row, factor, model.Drive(b, forcing.Input),
+                    forcing);
                 continue;
             }
 
-            var (first, second) = BlockResponse.Forced(block, model.Drive(b, forcing.Input), forcing.Exponent);
+            var (first, second) =
+                BlockResponse.Forced(block, model.Drive(b, forcing.Input), forcing.Exponent);
             DoubleDoubleComplex a = default, s = default;
             for (var i = 0; i < free.Length; i++)
             {
@@ -155,7 +161,8 @@ internal sealed class SegmentModes
     }
 
     private void AddForcedTerms(
-        DoubleDoubleComplex[][] sums, DoubleDoubleComplex exponent, DoubleDoubleComplex a, DoubleDoubleComplex s)
+        DoubleDoubleComplex[][] sums, DoubleDoubleComplex exponent, DoubleDoubleComplex a,
+            DoubleDoubleComplex s)
     {
         var mirrored = exponent.Im.IsNegative;
         var mode = forcedModes[mirrored ? exponent.Conjugate : exponent];
@@ -166,7 +173,8 @@ internal sealed class SegmentModes
         }
     }
 
-    private void AddForced(ImmutableArray<Mode>.Builder modes, DoubleDoubleComplex exponent, List<Forcing> all)
+    private void AddForced(ImmutableArray<Mode>.Builder modes, DoubleDoubleComplex exponent,
+        List<Forcing> all)
     {
         if (exponent.Im.IsNegative || forcedModes.ContainsKey(exponent))
         {
@@ -192,7 +200,8 @@ internal sealed class SegmentModes
         var block = model.Blocks[b];
         var drive = block.Size == 1 ? [DoubleDoubleComplex.One] : model.Drive(b, forcing.Input);
         var slopes = all.Exists(f => f.Exponent == forcing.Exponent && !f.Slope.IsZero);
-        modes.Add(new Mode(ModeKind.Joined, BlockResponse.Join(block, drive, forcing.Exponent, slopes), block.Size, b));
+        modes.Add(new Mode(ModeKind.Joined, BlockResponse.Join(block, drive, forcing.Exponent, slopes),
+            block.Size, b));
     }
 
     private bool IsNear(SpectralBlock block, DoubleDoubleComplex exponent)

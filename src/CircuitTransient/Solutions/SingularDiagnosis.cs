@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using System.Globalization;
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
 using CircuitTransient.Text;
@@ -17,7 +16,8 @@ public static class SingularDiagnosis
         var circuit = layout.Circuit;
         var nodeCount = circuit.Nodes.Length - 1;
         var places = PartRows(layout, nodeCount);
-        var parts = singular!.Equations.Where(e => e >= nodeCount).Select(e => places[e - nodeCount]).Distinct()
+        var parts =
+            singular!.Equations.Where(e => e >= nodeCount).Select(e => places[e - nodeCount]).Distinct()
             .Order().ToArray();
         var usesNodes = singular.Equations.Any(e => e < nodeCount);
         var names = Names(circuit, parts);
@@ -32,19 +32,25 @@ public static class SingularDiagnosis
     {
         if (parts.Any(p => circuit.Parts[p] is DependentSource or IdealTransformer))
         {
-            return ($"{names} leave no unique solution{when}: together their laws contradict each other or say the same twice",
+            return (
+                $"{names} leave no unique solution{when}: their laws contradict each other or say the same twice",
                 "change a gain, or put a resistance in the loop they form");
         }
 
         if (!usesNodes)
         {
-            return ($"{names} form a loop of ideal voltage sources and closed switches{when}, so their current has no value",
-                $"put the real resistance of a contact or lead in series: resistor Rlead from … to … : 1 mΩ, or give a switch `closed resistance 1 mΩ`");
+            return (
+                $"{names} form a loop of ideal voltage sources and closed switches{when}: their current has "
+                + "no value",
+                "put the real resistance of a contact or lead in series, some milliohms: "
+                + "`closed resistance 1 mΩ` on a switch, or a resistor");
         }
 
         return contradicts
-            ? ($"{names} are all that joins two parts of the circuit{when}, and they force currents that do not agree",
-                "give the current a path: a resistor across the source, or `open resistance 10 MΩ` on a switch")
+            ? ($"{names} are all that joins two parts of the circuit{when}, and they force currents that do "
+                + "not agree",
+                "give the current a path: a resistor across the source, or `open resistance 10 MΩ` on a "
+                + "switch")
             : ($"{names} leave a current or voltage open{when} on which the rest depends",
                 "give the voltage a path to the reference: a resistor of some megohms");
     }
@@ -55,7 +61,7 @@ public static class SingularDiagnosis
         var names = parts.Take(shown).Select(p => $"`{circuit.Parts[p].Name}`").ToArray();
         if (parts.Length > shown)
         {
-            return $"{string.Join(", ", names)} and {(parts.Length - shown).ToString(CultureInfo.InvariantCulture)} more";
+            return string.Join(", ", names) + $" and {parts.Length - shown} more";
         }
 
         return names.Length switch

@@ -7,8 +7,10 @@ namespace CircuitTransient.Solutions;
 /// <summary>Where a study ends whose file does not say.</summary>
 internal static class StudyEnd
 {
-    /// <summary>When the slowest decaying mode of the last interval has fallen to 0.1 %, or after 20 periods of the
-    /// slowest undamped one, counted from the last event or source corner; null where neither exists.</summary>
+    /// <summary>When the slowest decaying mode of the last interval has fallen to 0.1 %, or after 20 periods
+    /// of the
+    /// slowest undamped one, counted from the last event or source corner; null where neither
+    /// exists.</summary>
     public static (double End, string Reason)? Of(Circuit circuit, IntervalModel model, double now)
     {
         var start = Math.Max(now, LastCorner(circuit));
@@ -19,7 +21,8 @@ internal static class StudyEnd
             for (var i = 0; i < block.Size; i++)
             {
                 var (re, im) = (block.T[i, i].Re.Hi, Math.Abs(block.T[i, i].Im.Hi));
-                var isUndamped = im > 0 && Math.Abs(re) < 1e-12 * im; // a loss below rounding of the parts' values
+                // a loss below rounding of the parts' values
+                var isUndamped = im > 0 && Math.Abs(re) < 1e-12 * im;
                 if (!isUndamped && re >= 0)
                 {
                     continue;
@@ -30,8 +33,8 @@ internal static class StudyEnd
                 {
                     longest = time;
                     reason = isUndamped
-                        ? $"20 periods of the slowest undamped mode, {EngineeringNumber.Format(im / (2 * Math.PI), "Hz")}"
-                        : $"the slowest mode, time constant {EngineeringNumber.Format(-1 / re, "s")}, has fallen to 0.1 %";
+                        ? $"20 periods of the slowest undamped mode, {Format(im / (2 * Math.PI), "Hz")}"
+                        : $"the slowest mode, time constant {Format(-1 / re, "s")}, has fallen to 0.1 %";
                 }
             }
         }
@@ -45,6 +48,8 @@ internal static class StudyEnd
         default,
         "nothing in this circuit decays or rings after the last event, so the end of the study is not known",
         "say how long to look: until 10 ms");
+
+    private static string Format(double value, string unit) => EngineeringNumber.Format(value, unit);
 
     private static double LastCorner(Circuit circuit)
     {

@@ -3,7 +3,8 @@ using CircuitTransient.Circuits;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>What each switch will do next: the declared events in order, and the instants of those that acted.</summary>
+/// <summary>What each switch will do next: the declared events in order, and the instants of those that
+/// acted.</summary>
 internal sealed class Timeline
 {
     private readonly Circuit circuit;
@@ -36,7 +37,8 @@ internal sealed class Timeline
         }
     }
 
-    /// <summary>The instant of a fixed event, or from which a conditional one is watched; infinity while it hangs on
+    /// <summary>The instant of a fixed event, or from which a conditional one is watched; infinity while it
+    /// hangs on
     /// an event that has not taken place.</summary>
     public double Due(EventReference reference, SwitchEvent declared)
     {
@@ -57,7 +59,8 @@ internal sealed class Timeline
         : double.PositiveInfinity;
 
     /// <summary>Turns switches at an instant.</summary>
-    public ImmutableArray<Occurrence> Act(double time, IEnumerable<EventReference> events, bool isDecidedByAnswer)
+    public ImmutableArray<Occurrence> Act(double time, IEnumerable<EventReference> events,
+        bool isDecidedByAnswer)
     {
         var now = ImmutableArray.CreateBuilder<Occurrence>();
         var positions = IsClosed.ToBuilder();

@@ -23,7 +23,8 @@ public sealed record TransientSolution(
     ImmutableArray<Occurrence> Occurrences,
     ImmutableArray<EventReference> NeverActed)
 {
-    /// <summary>Index of the segment that holds an instant; at a boundary the later one, unless the earlier is asked for.</summary>
+    /// <summary>Index of the segment that holds an instant; at a boundary the later one, unless the earlier
+    /// is asked for.</summary>
     public int SegmentAt(double time, bool before = false)
     {
         int low = 0, high = Segments.Length - 1;

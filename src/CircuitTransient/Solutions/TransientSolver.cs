@@ -6,7 +6,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>Solves a circuit from t = 0 to the end of its study, interval by interval, each cause alone.</summary>
+/// <summary>Solves a circuit from t = 0 to the end of its study, interval by interval, each cause
+/// alone.</summary>
 public sealed class TransientSolver
 {
     private readonly Circuit circuit;
@@ -120,7 +121,8 @@ public sealed class TransientSolver
     }
 
     private DoubleDouble[][] SolveInterval(
-        IntervalModel model, double from, double until, DoubleDouble[][] stored, ImmutableArray<Occurrence> startsWith)
+        IntervalModel model, double from, double until, DoubleDouble[][] stored,
+            ImmutableArray<Occurrence> startsWith)
     {
         var first = segments.Count;
         var states = stored.Select(s => StateFrom(model, s)).ToArray();
@@ -134,8 +136,10 @@ public sealed class TransientSolver
                 motions.Add(new Motion(states[c], Forcings(causes[c], corners[k])));
             }
 
-            var modes = new SegmentModes(model, corners[k], corners[k + 1], motions.SelectMany(m => m.Forcings));
-            var onset = k == 0 ? Onset.OfInterval(layout, motions, stored) : Onset.OfCorner(layout, segments[^1], motions);
+            var modes =
+                new SegmentModes(model, corners[k], corners[k + 1], motions.SelectMany(m => m.Forcings));
+            var onset = k == 0 ? Onset.OfInterval(layout, motions, stored)
+                : Onset.OfCorner(layout, segments[^1], motions);
             var segment = new Segment(
                 model, intervals.Count, corners[k], corners[k + 1], modes, motions.ToImmutable(), onset);
             segments.Add(segment);
@@ -152,7 +156,8 @@ public sealed class TransientSolver
     private ImmutableArray<Forcing> Forcings(Cause cause, double start) =>
         cause.Source < 0
             ? []
-            : Forcing.Of(cause.Pieces, layout.Input(cause.Source), CauseList.ScaleOf(circuit, cause.Source), start);
+            : Forcing.Of(cause.Pieces, layout.Input(cause.Source), CauseList.ScaleOf(circuit, cause.Source),
+                start);
 
     private DoubleDoubleComplex[][] StateFrom(IntervalModel model, DoubleDouble[] stored)
     {

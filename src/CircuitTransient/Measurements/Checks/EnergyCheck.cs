@@ -4,11 +4,14 @@ using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements.Checks;
 
-/// <summary>Energy, interval by interval: what sources supply is stored or turned to heat. Heat is the integral of
-/// R i² in closed form, supply that of v i, storage that of the fields at the ends: three routes that meet.</summary>
+/// <summary>Energy, interval by interval: what sources supply is stored or turned to heat. Heat is the
+/// integral of
+/// R i² in closed form, supply that of v i, storage that of the fields at the ends: three routes that
+/// meet.</summary>
 internal static class EnergyCheck
 {
-    /// <summary>The worst imbalance over the largest of supply, heat and storage in its interval; null where some
+    /// <summary>The worst imbalance over the largest of supply, heat and storage in its interval; null where
+    /// some
     /// part's current or voltage is open.</summary>
     public static double? Worst(CurveBuilder curves, StoredEnergy energy, Func<int, double[,]> gram)
     {
@@ -37,7 +40,8 @@ internal static class EnergyCheck
         return worst;
     }
 
-    private static (double Supplied, double Heat, double Size)? Flow(TransientSolution solution, int s, double[,] gram)
+    private static (double Supplied, double Heat, double Size)? Flow(TransientSolution solution, int s,
+        double[,] gram)
     {
         var segment = solution.Segments[s];
         double supplied = 0, heat = 0, size = 0;
@@ -71,7 +75,8 @@ internal static class EnergyCheck
         return (supplied, heat, Math.Max(size, Math.Abs(heat)));
     }
 
-    /// <summary>A part's resistance; zero where it neither heats nor supplies, null where it may supply.</summary>
+    /// <summary>A part's resistance; zero where it neither heats nor supplies, null where it may
+    /// supply.</summary>
     private static double? Resistance(Part part, bool isClosed) => part switch
     {
         Resistor r => r.Resistance.Nominal,

@@ -30,7 +30,8 @@ internal static class SelfChecks
         }
         else
         {
-            open.Add(new NotJudged("energy supplied, stored and lost", "the equations leave a part's current or voltage open"));
+            open.Add(new NotJudged("energy supplied, stored and lost",
+                "the equations leave a part's current or voltage open"));
         }
 
         return (checks.ToImmutable(), open.ToImmutable());

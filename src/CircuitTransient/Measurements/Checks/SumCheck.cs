@@ -6,12 +6,14 @@ using Segment = CircuitTransient.Solutions.Segment;
 
 namespace CircuitTransient.Measurements.Checks;
 
-/// <summary>The sum of the causes, each solved alone, against one solution of everything at once by another route.</summary>
+/// <summary>The sum of the causes, each solved alone, against one solution of everything at once by another
+/// route.</summary>
 internal static class SumCheck
 {
     private const int MostInstants = 24;
 
-    /// <summary>The worst difference over each quantity's largest value at the compared instants; null with a reason
+    /// <summary>The worst difference over each quantity's largest value at the compared instants; null with a
+    /// reason
     /// where the other route does not reach.</summary>
     public static (double? Worst, string? Reason) Worst(TransientSolution solution, AllAtOnceSolution other)
     {
@@ -47,7 +49,8 @@ internal static class SumCheck
         var expected = other.ValuesAt(quantities, segment.Start + tau, before: tau == segment.Length);
         for (var q = 0; q < quantities.Length; q++)
         {
-            if (segment.Coefficients(quantities[q]) is null || expected[q] is not { } value || double.IsNaN(value))
+            if (segment.Coefficients(quantities[q]) is null || expected[q] is not { } value
+                || double.IsNaN(value))
             {
                 continue;
             }
@@ -63,11 +66,13 @@ internal static class SumCheck
         }
     }
 
-    /// <summary>What is observed and required, as far as it is linear, and everything that is stored.</summary>
+    /// <summary>What is observed and required, as far as it is linear, and everything that is
+    /// stored.</summary>
     private static ImmutableArray<Measurand> Quantities(TransientSolution solution)
     {
         var circuit = solution.Circuit;
-        var asked = circuit.Observations.Select(o => o.Quantity).Concat(circuit.Requirements.Select(r => r.Quantity))
+        var asked =
+            circuit.Observations.Select(o => o.Quantity).Concat(circuit.Requirements.Select(r => r.Quantity))
             .Where(q => q is VoltageBetween or VoltageAcross or CurrentThrough);
         var stored = solution.Layout.Stores.Select(
             Measurand (i) => circuit.Parts[i] is Capacitor ? new VoltageAcross(i) : new CurrentThrough(i));

@@ -11,7 +11,8 @@ internal static class WaveValue
         double sum = 0;
         foreach (var piece in wave.Pieces)
         {
-            var isOn = before ? piece.Start < time && time <= piece.End : piece.Start <= time && time < piece.End;
+            var isOn = before ? piece.Start < time && time <= piece.End : piece.Start <= time
+                && time < piece.End;
             if (isOn)
             {
                 var tau = time - piece.Start;

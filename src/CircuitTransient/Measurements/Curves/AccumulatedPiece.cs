@@ -1,6 +1,7 @@
 namespace CircuitTransient.Measurements.Curves;
 
-/// <summary>The integral of a sum of products since some instant: an absorbed energy, a Joule integral.</summary>
+/// <summary>The integral of a sum of products since some instant: an absorbed energy, a Joule
+/// integral.</summary>
 public sealed class AccumulatedPiece : CurvePiece
 {
     private readonly QuadraticPiece rate;
@@ -19,7 +20,8 @@ public sealed class AccumulatedPiece : CurvePiece
         From = from;
         for (var k = 0; k + 1 < sums.Length; k++)
         {
-            sums[k + 1] = sums[k] + PanelIntegral.Of(rate, Math.Max(from, Table.Instants[k]), Table.Instants[k + 1]);
+            sums[k + 1] =
+                sums[k] + PanelIntegral.Of(rate, Math.Max(from, Table.Instants[k]), Table.Instants[k + 1]);
         }
     }
 
@@ -61,7 +63,8 @@ public sealed class AccumulatedPiece : CurvePiece
 
     /// <inheritdoc/>
     public override double UpperBound(
-        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope,
+        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
+            ReadOnlySpan<double> envelope,
         double firstValue, double lastValue)
     {
         var bounds = rate.Bounds(envelope);

@@ -2,7 +2,6 @@ using System.Collections.Immutable;
 using System.Diagnostics;
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
-using CircuitTransient.Numerics;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements.Curves;
@@ -31,7 +30,8 @@ public sealed class CurveBuilder
     /// <summary>A quantity's curve; null where the equations leave it open.</summary>
     /// <param name="measurand">The quantity.</param>
     /// <param name="share">Whose part.</param>
-    /// <param name="cause">Index of the cause, for <see cref="Share.Own"/> and <see cref="Share.Without"/>.</param>
+    /// <param name="cause">Index of the cause, for <see cref="Share.Own"/> and <see
+    /// cref="Share.Without"/>.</param>
     /// <param name="from">Since when an integral gathers, in seconds.</param>
     public Curve? Of(Measurand measurand, Share share = Share.Total, int cause = -1, double from = 0)
     {
@@ -91,7 +91,8 @@ public sealed class CurveBuilder
         return new Curve(pieces.ToImmutable());
     }
 
-    /// <summary>Whether a quantity is an integral over time: the energy of what does not store, a Joule integral.</summary>
+    /// <summary>Whether a quantity is an integral over time: the energy of what does not store, a Joule
+    /// integral.</summary>
     public bool IsAccumulated(Measurand measurand) => measurand switch
     {
         JouleIntegral => true,
@@ -109,7 +110,8 @@ public sealed class CurveBuilder
                 Share.Total => Piece(s, tables[s].Segment.Coefficients(measurand)),
                 Share.Own => Piece(s, tables[s].Segment.Coefficients(measurand, cause)),
                 Share.Without => Piece(s, Difference(
-                    tables[s].Segment.Coefficients(measurand), tables[s].Segment.Coefficients(measurand, cause))),
+                    tables[s].Segment.Coefficients(measurand),
+                        tables[s].Segment.Coefficients(measurand, cause))),
                 _ => throw new UnreachableException("a linear quantity has no joint part"),
             };
             linears.Add(key, piece);
@@ -173,9 +175,11 @@ public sealed class CurveBuilder
                 return ((double)MutualInductances.Mutual(circuit, coupling),
                     new CurrentThrough(coupling.First), new CurrentThrough(coupling.Second));
             case EnergyIn e when circuit.Parts[e.Part] is Capacitor c:
-                return (Sign(e) * c.Capacitance.Nominal / 2, new VoltageAcross(e.Part), new VoltageAcross(e.Part));
+                return (Sign(e) * c.Capacitance.Nominal / 2, new VoltageAcross(e.Part),
+                    new VoltageAcross(e.Part));
             case EnergyIn e when circuit.Parts[e.Part] is Inductor l:
-                return (Sign(e) * l.Inductance.Nominal / 2, new CurrentThrough(e.Part), new CurrentThrough(e.Part));
+                return (Sign(e) * l.Inductance.Nominal / 2, new CurrentThrough(e.Part),
+                    new CurrentThrough(e.Part));
             case EnergyIn e:
                 return (Sign(e), new VoltageAcross(e.Part), new CurrentThrough(e.Part));
             default:

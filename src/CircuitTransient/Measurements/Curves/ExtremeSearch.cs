@@ -1,5 +1,3 @@
-using CircuitTransient.Solutions;
-
 namespace CircuitTransient.Measurements.Curves;
 
 /// <summary>A global extreme found on a curve.</summary>
@@ -8,9 +6,12 @@ namespace CircuitTransient.Measurements.Curves;
 /// <param name="Bound">Proven not to be exceeded in the window.</param>
 public sealed record FoundExtreme(double Value, double Time, int Piece, InstantSide Side, double Bound);
 
-/// <summary>Finds the greatest value of a curve in a closed window and proves that there is no greater: the window is
-/// cut into stretches, each with an upper bound from the derivatives' closed forms; the stretch with the highest bound
-/// is looked at first, settled where it is monotone or bent one way, else halved, until no bound is above the best
+/// <summary>Finds the greatest value of a curve in a closed window and proves that there is no greater: the
+/// window is
+/// cut into stretches, each with an upper bound from the derivatives' closed forms; the stretch with the
+/// highest bound
+/// is looked at first, settled where it is monotone or bent one way, else halved, until no bound is above the
+/// best
 /// value by more than 1e-10 of the curve's size.</summary>
 public sealed class ExtremeSearch
 {
@@ -38,8 +39,10 @@ public sealed class ExtremeSearch
     /// <param name="curve">The curve.</param>
     /// <param name="from">The window's start, in seconds.</param>
     /// <param name="until">Its end.</param>
-    /// <param name="mostStretches">How many stretches may be looked at before the search stops with what is proven.</param>
-    public static FoundExtreme Greatest(Curve curve, double from, double until, int mostStretches = 100_000) =>
+    /// <param name="mostStretches">How many stretches may be looked at before the search stops with what is
+    /// proven.</param>
+    public static FoundExtreme Greatest(Curve curve, double from, double until, int mostStretches =
+        100_000) =>
         new ExtremeSearch(curve, 1, from, until).Run(mostStretches);
 
     /// <summary>The least value in a window.</summary>
@@ -86,7 +89,8 @@ public sealed class ExtremeSearch
         }
 
         var time = curve.Pieces[bestPiece].Segment.Start + bestTau;
-        return new FoundExtreme(best, Math.Clamp(time, from, until), bestPiece, Side(), Math.Max(best, highest));
+        return new FoundExtreme(best, Math.Clamp(time, from, until), bestPiece, Side(),
+            Math.Max(best, highest));
     }
 
     private bool Inside(int p, out double a, out double b)
@@ -95,7 +99,8 @@ public sealed class ExtremeSearch
         a = Math.Max(0, from - segment.Start);
         b = Math.Min(segment.Length, until - segment.Start);
 
-        // At its ends only the inner value of a window counts: no piece of no length, unless the window itself has none.
+        // At its ends only the inner value of a window counts: no piece of no length, unless the window
+        // itself has none.
         return a < b || (a == b && from == until);
     }
 
@@ -175,7 +180,8 @@ public sealed class ExtremeSearch
     private void Push(Stretch stretch) => waiting.Enqueue(
         stretch, (-stretch.Upper, curve.Pieces[stretch.Piece].Segment.Start + stretch.From));
 
-    /// <summary>On a stretch that is bent downwards throughout, the root of the slope by Newton steps kept in a bracket.</summary>
+    /// <summary>On a stretch that is bent downwards throughout, the root of the slope by Newton steps kept in
+    /// a bracket.</summary>
     private void Climb(Stretch stretch, CurvePiece piece, double[] phi)
     {
         var (low, high) = (stretch.From, stretch.Until);
@@ -209,7 +215,8 @@ public sealed class ExtremeSearch
         }
     }
 
-    private (double Value, double Slope, double Bend) Derivatives(CurvePiece piece, double tau, Span<double> phi)
+    private (double Value, double Slope, double Bend) Derivatives(CurvePiece piece, double tau,
+        Span<double> phi)
     {
         piece.Segment.Basis.Evaluate(tau, phi);
         var (value, slope, bend) = piece.At(tau, phi);
@@ -221,7 +228,8 @@ public sealed class ExtremeSearch
         size = Math.Max(size, Math.Abs(value));
         var rounding = 1e-14 * size; // values that differ by less are equal, and the earlier one counts
         var isEarlier = piece < bestPiece || (piece == bestPiece && tau < bestTau);
-        if (value > best + rounding || (isEarlier && value >= best - rounding) || double.IsNegativeInfinity(best))
+        if (value > best + rounding || (isEarlier && value >= best - rounding)
+            || double.IsNegativeInfinity(best))
         {
             best = double.IsNegativeInfinity(best) ? value : Math.Max(best, value);
             bestPiece = piece;
@@ -241,12 +249,14 @@ public sealed class ExtremeSearch
         if (bestTau == 0 && bestPiece > 0)
         {
             var before = curve.Pieces[bestPiece - 1];
-            return sign * before.ValueAt(before.Segment.Length) < best - rounding ? InstantSide.After : InstantSide.At;
+            return sign * before.ValueAt(before.Segment.Length) < best - rounding ? InstantSide.After
+                : InstantSide.At;
         }
 
         if (bestTau == piece.Segment.Length && bestPiece + 1 < curve.Pieces.Length)
         {
-            return sign * curve.Pieces[bestPiece + 1].ValueAt(0) < best - rounding ? InstantSide.Before : InstantSide.At;
+            return sign * curve.Pieces[bestPiece + 1].ValueAt(0) < best - rounding ? InstantSide.Before
+                : InstantSide.At;
         }
 
         return InstantSide.At;

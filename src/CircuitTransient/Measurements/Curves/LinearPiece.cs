@@ -59,7 +59,8 @@ public sealed class LinearPiece : CurvePiece
 
     /// <inheritdoc/>
     public override double UpperBound(
-        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope,
+        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
+            ReadOnlySpan<double> envelope,
         double firstValue, double lastValue)
     {
         double slowFirst = 0, slowLast = 0, slack = 0;

@@ -1,12 +1,15 @@
 namespace CircuitTransient.Measurements.Curves;
 
-/// <summary>The integral of a curve over a short stretch by the ten-point rule of Gauss and Legendre, in panels that
-/// the fastest living function crosses in at most two time constants: the rule's error is then below rounding.</summary>
+/// <summary>The integral of a curve over a short stretch by the ten-point rule of Gauss and Legendre, in
+/// panels that
+/// the fastest living function crosses in at most two time constants: the rule's error is then below
+/// rounding.</summary>
 internal static class PanelIntegral
 {
     private const int MostPanels = 200_000;
 
-    // Abramowitz and Stegun, Handbook of Mathematical Functions, table 25.4, n = 10 (from memory; the tests integrate
+    // Abramowitz and Stegun, Handbook of Mathematical Functions, table 25.4, n = 10 (from memory; the tests
+    // integrate
     // powers up to 19 exactly).
     private static ReadOnlySpan<double> Nodes =>
         [0.1488743389816312, 0.4333953941292472, 0.6794095682990244, 0.8650633666889845, 0.9739065285171717];

@@ -18,7 +18,8 @@ public sealed class QuadraticPiece(SegmentTable table, ImmutableArray<ProductTer
         foreach (var term in terms)
         {
             var (a, a1, a2) = term.First.At(tau, phi);
-            var (b, b1, b2) = ReferenceEquals(term.First, term.Second) ? (a, a1, a2) : term.Second.At(tau, phi);
+            var (b, b1, b2) = ReferenceEquals(term.First, term.Second) ? (a, a1, a2)
+                : term.Second.At(tau, phi);
             value += term.Factor * a * b;
             slope += term.Factor * ((a1 * b) + (a * b1));
             bend += term.Factor * ((a2 * b) + (2 * a1 * b1) + (a * b2));
@@ -34,7 +35,8 @@ public sealed class QuadraticPiece(SegmentTable table, ImmutableArray<ProductTer
         foreach (var term in terms)
         {
             var a = term.First.ValueAt(tau, phi);
-            value += term.Factor * a * (ReferenceEquals(term.First, term.Second) ? a : term.Second.ValueAt(tau, phi));
+            value += term.Factor * a * (ReferenceEquals(term.First, term.Second) ? a
+                : term.Second.ValueAt(tau, phi));
         }
 
         return value;
@@ -68,7 +70,8 @@ public sealed class QuadraticPiece(SegmentTable table, ImmutableArray<ProductTer
 
     /// <inheritdoc/>
     public override double UpperBound(
-        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope,
+        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
+            ReadOnlySpan<double> envelope,
         double firstValue, double lastValue)
     {
         var bounds = Bounds(envelope);

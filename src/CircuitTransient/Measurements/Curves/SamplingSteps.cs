@@ -10,7 +10,8 @@ public static class SamplingSteps
     /// <param name="basis">The functions.</param>
     /// <param name="length">The segment's length in seconds.</param>
     /// <param name="stepFraction">Step over the fastest living time constant.</param>
-    /// <param name="mostSteps">At most so many steps: where the functions ring longer, the steps grow.</param>
+    /// <param name="mostSteps">At most so many steps: where the functions ring longer, the steps
+    /// grow.</param>
     public static double[] Of(SegmentBasis basis, double length, double stepFraction, int mostSteps)
     {
         var instants = new List<double> { 0 };
