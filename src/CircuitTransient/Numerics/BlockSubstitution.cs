@@ -15,8 +15,9 @@ internal sealed class BlockSubstitution
     private const double Noise = 4e-32;
     // poles that differ by less than this many noises are one to working accuracy
     private const double EqualPoles = 16;
-    // beyond this a vector only says "not separable"; squares stay finite
-    private const double Largest = 1e100;
+    // beyond this a vector only says "not separable"; fourth powers stay
+    // finite
+    private const double Largest = 1e60;
 
     private readonly DoubleDoubleComplexMatrix _t;
     private readonly double _norm;

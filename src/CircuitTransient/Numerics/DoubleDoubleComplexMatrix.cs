@@ -53,11 +53,16 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     public DoubleDoubleComplexMatrix Transposed() => new(Re.Transposed(), Im.Transposed());
 
     /// <summary>The transposed and conjugated matrix.</summary>
-    public DoubleDoubleComplexMatrix Adjoint()
+    public DoubleDoubleComplexMatrix Adjoint() => new(Re.Transposed(), Im.Transposed().Negative());
+
+    /// <summary>Multiplies every entry.</summary>
+    public void Scale(DoubleDouble factor)
     {
-        DoubleDoubleComplexMatrix result = Transposed();
-        result.Im.Negate();
-        return result;
+        for (int i = 0; i < Rows; i++)
+        {
+            Re.Row(i).Scale(factor);
+            Im.Row(i).Scale(factor);
+        }
     }
 
     /// <summary>A rectangle of entries, copied.</summary>

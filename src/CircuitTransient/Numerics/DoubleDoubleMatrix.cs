@@ -97,14 +97,16 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
         return result;
     }
 
-    /// <summary>Turns the sign of every entry.</summary>
-    public void Negate()
+    /// <summary>The matrix with every sign turned.</summary>
+    public DoubleDoubleMatrix Negative()
     {
-        for (int k = 0; k < _hi.Length; k++)
+        DoubleDoubleMatrix result = Copy();
+        for (int i = 0; i < Rows; i++)
         {
-            _hi[k] = -_hi[k];
-            _lo[k] = -_lo[k];
+            result.Row(i).Scale(-1);
         }
+
+        return result;
     }
 
     /// <summary>A rectangle of entries, copied.</summary>

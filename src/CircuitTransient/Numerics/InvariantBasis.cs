@@ -43,10 +43,6 @@ internal sealed record InvariantBasis(
         return new(Transform(t.Part(start, start, m, m), r), u, left);
     }
 
-    /// <summary>The basis turned by a unitary Q (m × m): Right Q, Qᴴ Left, Qᴴ T Q.</summary>
-    public InvariantBasis Turn(DoubleDoubleComplexMatrix q, DoubleDoubleComplexMatrix turnedT) =>
-        new(turnedT, q.Transposed().Times(Right), q.Adjoint().Times(Left));
-
     /// <summary>Σ conj(x) y.</summary>
     public static DoubleDoubleComplex Overlap(
         DoubleDoubleComplexMatrix x, int xRow, DoubleDoubleComplexMatrix y, int yRow)

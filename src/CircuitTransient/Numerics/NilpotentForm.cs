@@ -7,31 +7,34 @@ namespace CircuitTransient.Numerics;
 /// rest.</remarks>
 internal static class NilpotentForm
 {
-    // inverse iteration gains the whole gap to the next singular value each time
-    private const int Refinements = 3;
-
-    /// <summary>The turned basis where the block is nilpotent to <paramref name="tolerance"/> (absolute), the
-    /// same one where it is not.</summary>
-    public static InvariantBasis Of(InvariantBasis basis, double tolerance)
+    /// <summary>The form Qᴴ T Q and Q where T is nilpotent to <paramref name="tolerance"/> (absolute); T
+    /// itself and the identity where it is not.</summary>
+    public static (DoubleDoubleComplexMatrix T, DoubleDoubleComplexMatrix Q) Of(
+        DoubleDoubleComplexMatrix original, double tolerance)
     {
-        DoubleDoubleComplexMatrix t = basis.T;
+        DoubleDoubleComplexMatrix t = original;
         int m = t.Rows;
         if (!MayBeNilpotent(t, tolerance))
         {
-            return basis;
+            return (original, DoubleDoubleComplexMatrix.Identity(m));
         }
 
         DoubleDoubleComplexMatrix total = DoubleDoubleComplexMatrix.Identity(m);
         for (int k = 0; k < m; k++)
         {
-            DoubleDoubleComplexMatrix q = Embedded(NullDirection(t.Part(k, k, m - k, m - k), tolerance), m);
+            if (NullVector.Of(t.Part(k, k, m - k, m - k), tolerance) is not { } z)
+            {
+                return (original, DoubleDoubleComplexMatrix.Identity(m));
+            }
+
+            DoubleDoubleComplexMatrix q = Embedded(Completed(z), m);
             t = q.Adjoint().Times(t).Times(q);
             total = total.Times(q);
             for (int i = k; i < m; i++)
             {
                 if (t[i, k].Magnitude > tolerance)
                 {
-                    return basis;
+                    return (original, DoubleDoubleComplexMatrix.Identity(m));
                 }
 
                 t[i, k] = 0;
@@ -46,7 +49,7 @@ internal static class NilpotentForm
             }
         }
 
-        return basis.Turn(total, t);
+        return (t, total);
     }
 
     private static bool MayBeNilpotent(DoubleDoubleComplexMatrix t, double tolerance)
@@ -59,45 +62,6 @@ internal static class NilpotentForm
         }
 
         return product <= tolerance;
-    }
-
-    /// <summary>A unitary matrix whose first column is the direction that T shrinks most.</summary>
-    private static DoubleDoubleComplexMatrix NullDirection(DoubleDoubleComplexMatrix t, double tolerance)
-    {
-        int m = t.Rows;
-        DoubleDoubleComplexMatrix shifted = t.Copy();
-        for (int i = 0; i < m; i++)
-        {
-            shifted[i, i] += tolerance * 1e-6; // only to keep the factors regular
-        }
-
-        ComplexLuFactorization right = ComplexLuFactorization.Of(shifted);
-        ComplexLuFactorization left = ComplexLuFactorization.Of(shifted.Adjoint());
-        DoubleDoubleComplexMatrix z = new(m, 1);
-        for (int i = 0; i < m; i++)
-        {
-            z[i, 0] = 1;
-        }
-
-        for (int k = 0; k < Refinements; k++)
-        {
-            z = right.Solve(Normalised(left.Solve(z)));
-            z = Normalised(z);
-        }
-
-        return Completed(z);
-    }
-
-    private static DoubleDoubleComplexMatrix Normalised(DoubleDoubleComplexMatrix z)
-    {
-        DoubleDoubleComplexMatrix result = z.Copy();
-        DoubleDouble largest = z.FrobeniusNorm();
-        for (int i = 0; i < z.Rows; i++)
-        {
-            result[i, 0] /= largest;
-        }
-
-        return result;
     }
 
     /// <summary>Columns: z, then unit vectors made orthogonal to it and to each other.</summary>

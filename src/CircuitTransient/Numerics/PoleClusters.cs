@@ -163,7 +163,8 @@ internal sealed class PoleClusters
             {
                 BlockDirections own = directions[b] ??= new(bases[b]);
                 BlockDirections other = directions[c] ??= new(bases[c]);
-                double score = 1 - own.CosineTo(other) + (1e-3 * distance);
+                double cosine = own.CosineTo(other);
+                double score = (double.IsNaN(cosine) ? 0 : 1 - cosine) + (1e-3 * distance);
                 (best, bestScore) = score < bestScore ? (c, score) : (best, bestScore);
             }
         }

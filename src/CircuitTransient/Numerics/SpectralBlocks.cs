@@ -14,76 +14,37 @@ public sealed record SpectralBlocks(int Order, ImmutableArray<SpectralBlock> Blo
     {
         ArgumentNullException.ThrowIfNull(a);
         Shape.MustAgree(a.Rows, a.Columns);
-        Balancing balancing = Balancing.Of(a);
-        double norm = balancing.Matrix.FrobeniusNorm();
-        ComplexSchur schur = ComplexSchur.Of(RealSchur.Of(balancing.Matrix));
-        ClearZeroPoles(schur.T, BlockSubstitution.ZeroPole * norm);
-        IReadOnlyList<(InvariantBasis Basis, bool IsReal)> clusters = PoleClusters.Of(schur, norm);
-
-        DoubleDoubleComplexMatrix conjugate = schur.Vectors.Copy();
-        conjugate.Im.Negate();
-        return new(
-            a.Rows,
-            [
-                .. clusters.Select(cluster => Finished(
-                    NilpotentForm.Of(cluster.Basis, BlockSubstitution.ZeroPole * norm),
-                    cluster.IsReal,
-                    schur.Vectors,
-                    conjugate,
-                    balancing.Exponents)),
-            ]);
-    }
-
-    private static void ClearZeroPoles(DoubleDoubleComplexMatrix t, double limit)
-    {
-        for (int i = 0; i < t.Rows; i++)
+        ImmutableArray<SpectralBlock>.Builder blocks = ImmutableArray.CreateBuilder<SpectralBlock>();
+        foreach (int[] places in ConnectedParts.Of(a))
         {
-            t[i, i] = t[i, i].Magnitude <= limit ? 0 : t[i, i];
-        }
-    }
-
-    /// <summary>From the Schur basis of the balanced matrix to the coordinates of A.</summary>
-    private static SpectralBlock Finished(
-        InvariantBasis basis,
-        bool isReal,
-        DoubleDoubleComplexMatrix z,
-        DoubleDoubleComplexMatrix conjugateZ,
-        IReadOnlyList<int> exponents)
-    {
-        DoubleDoubleComplexMatrix v = basis.Right.Times(z);
-        DoubleDoubleComplexMatrix w = basis.Left.Times(conjugateZ);
-        if (basis.T.Rows == 1)
-        {
-            Normalise(v, w, isReal);
-        }
-
-        for (int j = 0; j < exponents.Count; j++)
-        {
-            for (int i = 0; i < basis.T.Rows; i++)
+            DoubleDoubleMatrix part = new(places.Length, places.Length);
+            for (int i = 0; i < places.Length; i++)
             {
-                v[i, j] = v[i, j].ScaleByPowerOfTwo(exponents[j]);
-                w[i, j] = w[i, j].ScaleByPowerOfTwo(-exponents[j]);
+                for (int j = 0; j < places.Length; j++)
+                {
+                    part[i, j] = a[places[i], places[j]];
+                }
+            }
+
+            blocks.AddRange(SpectralSplit.Of(part).Select(block => Embedded(block, places, a.Rows)));
+        }
+
+        return new(a.Rows, blocks.ToImmutable());
+    }
+
+    private static SpectralBlock Embedded(SpectralBlock block, int[] places, int n)
+    {
+        DoubleDoubleComplexMatrix v = new(n, block.Size);
+        DoubleDoubleComplexMatrix w = new(block.Size, n);
+        for (int i = 0; i < places.Length; i++)
+        {
+            for (int k = 0; k < block.Size; k++)
+            {
+                v[places[i], k] = block.V[i, k];
+                w[k, places[i]] = block.W[k, i];
             }
         }
 
-        return new(isReal, basis.T, v.Transposed(), w, basis.ProjectorNorm);
-    }
-
-    /// <summary>Turns the phase of a single vector so that its largest entry is positive; a real pole's
-    /// vectors are then real, and the rounding in their imaginary parts is dropped.</summary>
-    private static void Normalise(DoubleDoubleComplexMatrix v, DoubleDoubleComplexMatrix w, bool isReal)
-    {
-        int largest = Enumerable.Range(0, v.Columns).MaxBy(j => v[0, j].Magnitude);
-        DoubleDoubleComplex phase = v[0, largest].Conjugate / DoubleDoubleComplex.Abs(v[0, largest]);
-        for (int j = 0; j < v.Columns; j++)
-        {
-            v[0, j] *= phase;
-            w[0, j] *= phase.Conjugate;
-            if (isReal)
-            {
-                v[0, j] = v[0, j].Re;
-                w[0, j] = w[0, j].Re;
-            }
-        }
+        return block with { V = v, W = w };
     }
 }

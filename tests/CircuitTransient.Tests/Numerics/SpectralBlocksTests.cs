@@ -163,6 +163,67 @@ public class SpectralBlocksTests
         AssertRebuilds(a, blocks, 1e-26);
     }
 
+    [Fact]
+    public void Twenty_equal_sections_beside_each_other_stay_twenty_blocks()
+    {
+        DoubleDoubleMatrix a = Sections(20, 1);
+
+        SpectralBlocks blocks = SpectralBlocks.Of(a);
+
+        Assert.Equal(20, blocks.Blocks.Length);
+        Assert.All(blocks.Blocks, block => Assert.Equal(2, block.Size));
+        AssertRebuilds(a, blocks, 1e-30);
+    }
+
+    [Theory]
+    [InlineData(0.9)]
+    [InlineData(1)]
+    [InlineData(1.0000001)]
+    [InlineData(1.001)]
+    public void Twenty_equal_sections_hidden_by_a_rotation_are_still_rebuilt(double damping)
+    {
+        DoubleDoubleMatrix q = SampleMatrices.Orthogonal(40, 5);
+        DoubleDoubleMatrix a = q.Times(Sections(20, damping)).Times(q.Transposed());
+
+        AssertRebuilds(a, SpectralBlocks.Of(a), 1e-27);
+    }
+
+    [Fact]
+    public void A_row_of_fourteen_integrators_is_one_chain_of_zeros()
+    {
+        DoubleDoubleMatrix a = new(14, 14);
+        for (int i = 0; i + 1 < 14; i++)
+        {
+            a[i, i + 1] = 1 + i;
+        }
+
+        SpectralBlocks blocks = SpectralBlocks.Of(a);
+
+        Assert.All(Poles(Assert.Single(blocks.Blocks)), pole => Assert.True(pole.IsZero));
+        AssertRebuilds(a, blocks, 1e-30);
+    }
+
+    [Fact]
+    public void The_blocks_of_the_frank_matrix_add_up_to_it()
+    {
+        DoubleDoubleMatrix a = SampleMatrices.Frank(12);
+
+        AssertRebuilds(a, SpectralBlocks.Of(a), 1e-27); // projectors of norm up to a thousand
+    }
+
+    private static DoubleDoubleMatrix Sections(int count, double damping)
+    {
+        DoubleDoubleMatrix a = new(2 * count, 2 * count);
+        for (int i = 0; i < 2 * count; i += 2)
+        {
+            a[i, i + 1] = 1;
+            a[i + 1, i] = -1;
+            a[i + 1, i + 1] = -2 * damping;
+        }
+
+        return a;
+    }
+
     private static IEnumerable<DoubleDoubleComplex> Poles(SpectralBlock block) =>
         Enumerable.Range(0, block.Size).Select(block.Pole);
 
