@@ -22,13 +22,14 @@ internal static class SolveMeasurement
             Analyse(source);
         }
 
-        Console.WriteLine($"analysis: {Spread(Enumerable.Range(0, Runs).Select(_ => Analyse(source)))} (warm)");
+        var warm = Enumerable.Range(0, Runs).Select(_ => Analyse(source));
+        Console.WriteLine($"analysis: {Spread(warm)} (warm)");
     }
 
     private static string Spread(IEnumerable<double> milliseconds)
     {
         var sorted = milliseconds.Order().ToArray();
-        return $"{sorted[sorted.Length / 2]:F1} ms, from {sorted[0]:F1} to {sorted[^1]:F1} ms in {sorted.Length} runs";
+        return $"{sorted[sorted.Length / 2]:F1} ms, {sorted[0]:F1} to {sorted[^1]:F1} ms in {sorted.Length} runs";
     }
 
     private static double Analyse(SourceText source)

@@ -5,7 +5,7 @@ internal static class Circuits
 {
     public const string Holding =
         """
-        source    Feed at a : 10 V
+        source    Feed at a : rectangular pulse of 10 V from 0 s to 3 ms
         resistor  R1 from a to b : 1 kΩ
         capacitor C1 from b to ground : 1 µF
         require voltage of b at most 11 V
