@@ -8,7 +8,7 @@ namespace CircuitTransient.Circuits;
 public sealed record DoubleExponential(double Tail, double Front, double Factor)
 {
     // a front a thousand million times shorter than the tail is a step
-    private const double LongestRatio = 1e9;
+    internal const double LongestRatio = 1e9;
 
     /// <summary>Solves for the time constants, or gives null where no double exponential has that
     /// ratio.</summary>
