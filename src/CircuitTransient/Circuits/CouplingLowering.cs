@@ -60,9 +60,8 @@ internal static class CouplingLowering
         if (!isFactor && plain.Dimension != Dimension.Inductance)
         {
             state.Findings.Error(syntax.Value.Value.Span,
-                $"`{state.Text(syntax.Value.Value.Span)}` is {Measure.Of(plain.Dimension).Phrase}; a "
-                    + $"coupling is a "
-                + "factor from -1 to 1, or a mutual inductance in henries", "write `0.9`, or `3 mH`");
+                $"`{state.Text(syntax.Value.Value.Span)}` is {Measure.Of(plain.Dimension).Phrase}; "
+                + "a coupling is a pure number or in henries", "write `0.9`, or `3 mH`");
             return null;
         }
 

@@ -46,7 +46,8 @@ internal static class StoredContradictions
                 state.Findings.Warn(clause.Span,
                     $"`{capacitor.Name}` is charged to {Amount.Of(stated, "V")}, but is held at "
                         + $"{Amount.Of(imposed, "V")}",
-                    $"it jumps by {Amount.Of(jump, "V")} at once; write `charged to {Amount.Of(imposed, "V")}` if no jump is meant");
+                    $"it jumps by {Amount.Of(jump, "V")} at once; "
+                    + $"write `charged to {Amount.Of(imposed, "V")}` if no jump is meant");
             }
         }
     }
@@ -94,7 +95,8 @@ internal static class StoredContradictions
                 is { } clause)
             {
                 state.Findings.Warn(clause.Span,
-                    $"the current that `{coil.Name}` carries has no way on: {Amount.Of(Math.Abs(sum), "A")} is left",
+                    $"the current that `{coil.Name}` carries has no way on: "
+                    + $"{Amount.Of(Math.Abs(sum), "A")} is left",
                     "it jumps at once; let coils in series carry one current");
             }
         }

@@ -61,7 +61,7 @@ public class CouplingTests
     public void A_coupling_in_farads_is_refused() =>
         Assert.Equal(
             """
-            plant.cause:4:28: error: `3 mF` is a capacitance; a coupling is a factor from -1 to 1, or a mutual inductance in henries
+            plant.cause:4:28: error: `3 mF` is a capacitance; a coupling is a pure number or in henries
               coupling M1 of L1 and L2 : 3 mF
                                          ^^^^
               → write `0.9`, or `3 mH`

@@ -26,7 +26,7 @@ public class DoubleExponentialTests
         var wave = DoubleExponential.Solve(1.19876222e-6, 49.9995702e-6, isVoltage: true)!;
 
         Assert.Equal(68.22e-6, wave.Tail, 1e-12);
-        Assert.Equal(0.407e-6, wave.Front, 1e-14);
+        Assert.Equal(1 / ((1 / 0.407e-6) + (1 / 68.22e-6)), wave.Front, 1e-14);
     }
 
     [Theory]

@@ -75,10 +75,10 @@ public class ParameterTests
             value R1 : 100 Ω
             source Feed at a : 10 V
             resistor R1 from a to b : 50 Ω
-            resistor R2 at b : R1
+            resistor R2 at b : 2*R1 ±1 %
             """);
 
-        Assert.Equal(["value R1", "Feed", "part R1"], circuit.Parameters.Select(p => p.Name));
+        Assert.Equal(["value R1", "Feed", "part R1", "R2"], circuit.Parameters.Select(p => p.Name));
     }
 
     [Fact]
