@@ -156,8 +156,8 @@ internal static class CouplingLowering
 
         var names = string.Join(", ", coils.Select(c => $"`{state.Declared[c].Name}`"));
         state.Findings.Error(set[0].Span,
-            $"the couplings of {names} cannot all be: some currents would store negative energy, down to "
-            + $"{EngineeringNumber.Format(least, "", 3)} of ½ L i² of each coil",
+            $"the couplings of {names} cannot all hold: with some currents they would store negative energy, "
+            + $"{EngineeringNumber.Format(least, "", 3)} times what the coils store uncoupled",
             "if a coil is coupled closely to two others, those two are coupled closely too; lower a "
                 + "factor or add one");
     }

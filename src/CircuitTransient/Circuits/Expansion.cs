@@ -98,7 +98,8 @@ internal sealed class Expansion
     {
         if (!assemblies.TryGetValue(place.Assembly.Text, out var assembly))
         {
-            return; // said by the size count
+            Excuse(place);
+            return;
         }
 
         var name = scope.Full(place.Name, findings);
@@ -170,6 +171,13 @@ internal sealed class Expansion
         }
     }
 
+    // What a placing that failed would have joined and made is not missed a second time.
+    private void Excuse(PlaceStatement place)
+    {
+        findings.Excused.Add(place.Name.Text);
+        findings.Excused.UnionWith(place.Assignments.Select(a => a.Node?.Text).OfType<string>());
+    }
+
     private bool Complete(
         PlaceStatement place, AssemblyStatement assembly,
         ImmutableDictionary<string, string>.Builder terminals)
@@ -180,6 +188,7 @@ internal sealed class Expansion
             return true;
         }
 
+        Excuse(place);
         findings.Error(place.Name.Span,
             $"{(open.Length == 1 ? "the terminal" : "the terminals")} {Assemblies.List(open)} of "
             + $"`{place.Name.Text}` {(open.Length == 1 ? "is" : "are")} not joined to any node",
@@ -195,7 +204,7 @@ internal sealed class Expansion
             var full = inner.Full(value.Name, findings);
             if (overrides.TryGetValue(value.Name.Text, out var given))
             {
-                values.Declare(full, given.Span, given.Value ?? value.Value, outer);
+                values.Override(full, given.Span, given.Value ?? value.Value, outer, value.Value, inner);
             }
             else
             {

@@ -34,11 +34,11 @@ internal static class Expected
     }
 
     /// <summary>A fraction written in per cent.</summary>
-    public static double? Fraction(CheckState state, ExpressionSyntax expression, Scope scope)
+    public static double? Fraction(CheckState state, ExpressionSyntax expression, Scope scope, string what)
     {
         if (expression is NumberSyntax { HasUnit: false, Mark: null } bare)
         {
-            state.Findings.Error(bare.Span, $"`{state.Text(bare.Span)}` has no unit; a band is in per cent",
+            state.Findings.Error(bare.Span, $"`{state.Text(bare.Span)}` has no unit; {what} is in per cent",
                 $"write `{state.Text(bare.Span)} %`");
             return null;
         }
@@ -68,9 +68,17 @@ internal static class Expected
             findings.Error(expression.Span, expected == Dimension.None
                 ? $"`{text}` is {Measure.Of(found).Phrase}; a pure number is expected here"
                 : $"`{text}` is {Measure.Of(found).Phrase}; {measure.Phrase} in {measure.UnitWord} is "
-                    + $"expected here");
+                    + "expected here", Advice(plain, text, measure));
         }
 
         return false;
+    }
+
+    private static string Advice(ExpressionSyntax plain, string text, Measure measure)
+    {
+        var number = new string([.. text.TakeWhile(c => char.IsDigit(c) || c is '.' or '-' or '\u2212')]);
+        return plain is NumberSyntax && number.Length > 0
+            ? $"if the number is right, write `{$"{number} {measure.Unit}".TrimEnd()}`"
+            : $"what is written here must come out in {measure.UnitWord}";
     }
 }

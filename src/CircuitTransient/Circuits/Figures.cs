@@ -25,7 +25,7 @@ internal static class Figures
         if (syntax.Argument is { } written)
         {
             argument = syntax.Kind == FigureKind.SettlingTime
-                ? Expected.Fraction(state, written, scope)
+                ? Expected.Fraction(state, written, scope, "a band")
                 : Expected.Fixed(state, written, scope, of.Dimension);
             if (argument is not { } value || !IsPositive(state, written, value))
             {

@@ -22,9 +22,8 @@ internal sealed class Findings(SourceText source)
     /// <summary>Whether an unreadable statement may have made, or meant, that name.</summary>
     public bool IsExcused(string name)
     {
-        var last = name[(name.LastIndexOf('/') + 1)..];
-        var bracket = last.IndexOf('[', StringComparison.Ordinal);
-        return Excused.Count > 0 && Excused.Contains(bracket < 0 ? last : last[..bracket]);
+        return Excused.Count > 0 && name.Split('/').Any(word =>
+            Excused.Contains(word) || Excused.Contains(word.Split('[')[0]));
     }
 
     public int LineOf(TextSpan span) => source.LineOf(span.Start);

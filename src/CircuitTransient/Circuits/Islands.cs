@@ -41,7 +41,8 @@ internal static class Islands
             state.Findings.Error(parts[0].NameSyntax.Span,
                 $"{List(parts)} {(parts.Length == 1 ? "has" : "have")} no path to the reference "
                     + $"`{state.Nodes.Reference}`",
-                $"tie them to it, such as `resistor Rtie from {node} to {state.Nodes.Reference} : 10 MΩ`");
+                $"tie {(parts.Length == 1 ? "it" : "them")} down, such as `resistor Rtie from {node} to "
+                    + $"{state.Nodes.Reference} : 10 MΩ`");
         }
     }
 

@@ -39,6 +39,17 @@ internal sealed class NamedValues
         table.Declare(name, span, new Definition(name, span, value, scope));
     }
 
+    /// <summary>Names a value of a placed assembly that is given from outside.</summary>
+    /// <param name="name">Its full name.</param>
+    /// <param name="span">Where it is given.</param>
+    /// <param name="value">What it is given.</param>
+    /// <param name="scope">Where the names in that belong.</param>
+    /// <param name="own">What the assembly says itself, whose dimension must be the same.</param>
+    /// <param name="inner">Where the names in the assembly's own value belong.</param>
+    public void Override(
+        string name, TextSpan span, ToleratedSyntax value, Scope scope, ToleratedSyntax own, Scope inner) =>
+        table.Declare(name, span, new Definition(name, span, value, scope) { Own = (own, inner) });
+
     /// <summary>Works out every value in the order written, so that mistakes in unused ones are found
     /// too.</summary>
     public void EvaluateAll()
@@ -78,6 +89,11 @@ internal sealed class NamedValues
         inProgress.Add(definition);
         var result = Evaluator.Evaluate(definition.Value.Value, definition.Scope, inProgress.Count);
         inProgress.RemoveAt(inProgress.Count - 1);
+        if (result is { } given && !MatchesOwn(definition, given))
+        {
+            result = null;
+        }
+
         if (result is { } plain)
         {
             result = Tolerances.Apply(plain, definition.Value, definition.Scope, Evaluator, findings,
@@ -92,6 +108,22 @@ internal sealed class NamedValues
         }
 
         return definition.Result;
+    }
+
+    private bool MatchesOwn(Definition definition, Evaluated given)
+    {
+        if (definition.Own is not { } own
+            || Evaluator.Evaluate(own.Value.Value, own.Scope) is not { } expected
+            || expected.Dimension == given.Dimension)
+        {
+            return true;
+        }
+
+        findings.Error(definition.Span,
+            $"`{definition.Name}` is given {Measure.Of(given.Dimension).Phrase}; in its assembly it is "
+            + Measure.Of(expected.Dimension).Phrase,
+            $"give it in {Measure.Of(expected.Dimension).UnitWord}");
+        return false;
     }
 
     private void ReportCycle(Definition definition)
@@ -118,6 +150,8 @@ internal sealed class NamedValues
         public ToleratedSyntax Value => value;
 
         public Scope Scope => scope;
+
+        public (ToleratedSyntax Value, Scope Scope)? Own { get; init; }
 
         public bool IsDone { get; set; }
 

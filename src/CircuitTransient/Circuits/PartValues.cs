@@ -25,7 +25,9 @@ internal static class PartValues
         if (value.Value <= 0)
         {
             state.Findings.Error(syntax.Value.Span,
-                $"the {aspect} of `{part.Name}` is {Say(value)}; it must be more than zero");
+                $"the {aspect} of `{part.Name}` is {Say(value)}; it must be more than zero",
+                value.Value < 0 ? "leave the minus out"
+                    : syntax.Value is NumberSyntax ? $"leave it out if `{part.Name}` has none" : null);
             return false;
         }
 
@@ -74,7 +76,7 @@ internal static class PartValues
     private static Evaluated? Read(
         CheckState state, PartDeclaration part, ExpressionSyntax expression, Dimension dimension)
     {
-        if (expression is not NumberSyntax { HasUnit: false, Mark: { } mark } number)
+        if (MarkOf(expression) is not { } mark)
         {
             return Expected.Value(state, expression, part.Scope, dimension);
         }
@@ -82,7 +84,7 @@ internal static class PartValues
         var measure = Measure.Of(dimension);
         if (!MarkingCode.TryRead(mark, dimension, out var marked))
         {
-            state.Findings.Error(number.Span,
+            state.Findings.Error(expression.Span,
                 $"the marking code `{mark}` is not that of {measure.Phrase}",
                 $"write the value with its unit, in {measure.UnitWord}");
             return null;
@@ -90,7 +92,7 @@ internal static class PartValues
 
         if (state.Values.IsKnown(part.Scope.Prefix + mark) || state.Values.IsKnown(mark))
         {
-            state.Findings.Warn(number.Span,
+            state.Findings.Warn(expression.Span,
                 $"`{mark}` is read as the marking code of {Amount.Of(marked, measure.Unit)}, not as the "
                     + $"named value",
                 "give the named value another name");
@@ -100,6 +102,15 @@ internal static class PartValues
     }
 
     private static string Say(Evaluated value) => Amount.Of(value.Value, Measure.Of(value.Dimension).Unit);
+
+    // `R047` is written like a name; where a part says the unit it is the marking code.
+    private static string? MarkOf(ExpressionSyntax expression) => expression switch
+    {
+        NumberSyntax { HasUnit: false, Mark: { } mark } => mark,
+        NameExpressionSyntax { Name: { IsQuoted: false, Index: null, Owner: null, Text: var text } }
+            when MarkingCode.TryRead(text, out _) => text,
+        _ => null,
+    };
 
     private static bool ToleranceReachesZero(
         CheckState state, PartDeclaration part, ToleratedSyntax syntax, Evaluated value, string aspect)

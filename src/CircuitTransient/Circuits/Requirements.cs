@@ -74,14 +74,14 @@ internal static class Requirements
     private static double? Limit(CheckState state, ExpressionSyntax? syntax, NamedMeasurand quantity,
         Scope scope) =>
         syntax is null ? null
-        : quantity.Unit == "%" ? Expected.Fraction(state, syntax, scope) * 100
+        : quantity.Unit == "%" ? Expected.Fraction(state, syntax, scope, "an overshoot") * 100
         : Expected.Fixed(state, syntax, scope, quantity.Dimension);
 
     private static (Bound Bound, string Words)? Settling(
         CheckState state, SettlingSyntax syntax, NamedMeasurand quantity, Scope scope, double? until)
     {
         var target = Expected.Fixed(state, syntax.Target, scope, quantity.Dimension);
-        var within = Expected.Fraction(state, syntax.Within, scope);
+        var within = Expected.Fraction(state, syntax.Within, scope, "a band");
         var by = Instants.Lower(state, syntax.By, scope);
         if (target is not { } t || within is not { } w || by is null)
         {

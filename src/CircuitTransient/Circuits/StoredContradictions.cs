@@ -99,7 +99,7 @@ internal static class StoredContradictions
                 state.Findings.Warn(clause.Span,
                     $"the current that `{coil.Name}` carries at the start has no way on: "
                         + $"{Amount.Of(Math.Abs(sum), "A")} "
-                    + "are left over where it meets other coils, current sources or open contacts",
+                    + "is left over where it meets other coils, current sources or open contacts",
                     "the currents jump at t = 0, as an impulse of voltage; let series coils carry the "
                         + "same current");
             }

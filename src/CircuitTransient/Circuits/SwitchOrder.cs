@@ -5,56 +5,49 @@ internal static class SwitchOrder
 {
     public static void Check(CheckState state, double? until)
     {
-        if (!WaitsInRings(state))
+        ReportRings(state);
+        foreach (var part in state.Parts.OfType<Switch>())
         {
-            foreach (var part in state.Parts.OfType<Switch>())
-            {
-                Check(state, part, until);
-            }
+            Check(state, part, until);
         }
     }
 
-    /// <summary>Reports events that wait for each other in a ring, or for a later event of their own
-    /// switch.</summary>
-    public static bool WaitsInRings(CheckState state)
+    // Events that wait for each other in a ring, or for a later event of their own switch.
+    private static void ReportRings(CheckState state)
     {
-        var found = false;
-        foreach (var (part, index) in state.Parts.Select((p, i) => (p, i)))
+        var reported = new HashSet<EventReference>();
+        for (var index = 0; index < state.Parts.Length; index++)
         {
-            for (var e = 0; part is Switch s && e < s.Events.Length; e++)
+            for (var e = 0; state.Parts[index] is Switch s && e < s.Events.Length; e++)
             {
-                found |= ReportRing(state, new EventReference(index, e));
+                ReportRing(state, new EventReference(index, e), reported);
             }
         }
-
-        return found;
     }
 
-    private static bool ReportRing(CheckState state, EventReference start)
+    private static void ReportRing(CheckState state, EventReference start, HashSet<EventReference> reported)
     {
         var path = new List<EventReference> { start };
         for (var next = Awaited(state, start); next is not null; next = Awaited(state, next))
         {
-            if (next.Part == start.Part && next.Event >= start.Event)
+            var isLater = next.Part == start.Part && next.Event >= start.Event;
+            if (isLater && !reported.Overlaps(path))
             {
-                var names = path.Append(next).Select(r => Words(state, r));
+                var names = string.Join(" → ", path.Append(next).Select(r => Words(state, r)));
                 state.Findings.Error(((Switch)state.Parts[start.Part]!).Events[start.Event].Span,
-                    next == start ? $"`{Words(state, start)}` waits for itself: {string.Join(" → ", names)}"
-                        : $"`{Words(state, start)}` waits for a later event of its own switch: "
-                        + string.Join(" → ", names),
+                    next == start ? $"`{Words(state, start)}` waits for itself: {names}"
+                        : $"`{Words(state, start)}` waits for a later event of its own switch: {names}",
                     "give one of these events a time");
-                return true;
+                reported.UnionWith(path);
             }
 
-            if (path.Contains(next))
+            if (isLater || path.Contains(next))
             {
-                return false; // a ring further on, reported where it is
+                return;
             }
 
             path.Add(next);
         }
-
-        return false;
     }
 
     private static EventReference? Awaited(CheckState state, EventReference of) =>

@@ -7,8 +7,9 @@ namespace CircuitTransient.Numerics;
 public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleComplexMatrix Vectors)
 {
     /// <summary>The complex form of a real one, each pair split by a rotation, the pole of positive imaginary
-    /// part first.</summary>
-    public static ComplexSchur Of(RealSchur real)
+    /// part first. A block of order two whose couplings are both at most <paramref name="negligible"/> is two
+    /// real poles that rounding has turned into a pair.</summary>
+    public static ComplexSchur Of(RealSchur real, double negligible = 0)
     {
         ArgumentNullException.ThrowIfNull(real);
         ComplexSchur schur = new(
@@ -16,7 +17,12 @@ public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleCompl
             DoubleDoubleComplexMatrix.From(real.TransposedQ.Copy()));
         for (int k = 0; k + 1 < schur.T.Rows; k++)
         {
-            if (!schur.T[k + 1, k].IsZero)
+            double below = schur.T[k + 1, k].Magnitude;
+            if (below > 0 && Math.Max(below, schur.T[k, k + 1].Magnitude) <= negligible)
+            {
+                schur.T[k + 1, k] = 0;
+            }
+            else if (below > 0)
             {
                 schur.SplitPair(k);
             }
@@ -25,19 +31,22 @@ public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleCompl
         return schur;
     }
 
-    /// <summary>Exchanges the neighbours k and k + 1 on the diagonal.</summary>
-    public void Swap(int k)
+    /// <summary>Exchanges the neighbours k and k + 1 on the diagonal. Equal ones are exchanged only where
+    /// their coupling is at most <paramref name="negligible"/>; a chain of equal poles has no other
+    /// order.</summary>
+    public void Swap(int k, double negligible = 0)
     {
         DoubleDoubleComplex first = T[k, k];
         DoubleDoubleComplex second = T[k + 1, k + 1];
         DoubleDoubleComplex coupling = T[k, k + 1];
         DoubleDoubleComplex gap = second - first;
-        if (gap.IsZero)
+        if (gap.IsZero && coupling.Magnitude > negligible)
         {
             return;
         }
 
-        ComplexRotation.Towards(coupling, gap).Apply(this, k);
+        ComplexRotation rotation = gap.IsZero ? new(0, 1) : ComplexRotation.Towards(coupling, gap);
+        rotation.Apply(this, k);
         SetDiagonal(k, second, first);
     }
 

@@ -52,6 +52,19 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     /// <summary>The transposed matrix, not conjugated.</summary>
     public DoubleDoubleComplexMatrix Transposed() => new(Re.Transposed(), Im.Transposed());
 
+    /// <summary>The transposed and conjugated matrix.</summary>
+    public DoubleDoubleComplexMatrix Adjoint() => new(Re.Transposed(), Im.Transposed().Negative());
+
+    /// <summary>Multiplies every entry.</summary>
+    public void Scale(DoubleDouble factor)
+    {
+        for (int i = 0; i < Rows; i++)
+        {
+            Re.Row(i).Scale(factor);
+            Im.Row(i).Scale(factor);
+        }
+    }
+
     /// <summary>A rectangle of entries, copied.</summary>
     public DoubleDoubleComplexMatrix Part(int row, int column, int rows, int columns) =>
         new(Re.Part(row, column, rows, columns), Im.Part(row, column, rows, columns));

@@ -97,6 +97,18 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
         return result;
     }
 
+    /// <summary>The matrix with every sign turned.</summary>
+    public DoubleDoubleMatrix Negative()
+    {
+        DoubleDoubleMatrix result = Copy();
+        for (int i = 0; i < Rows; i++)
+        {
+            result.Row(i).Scale(-1);
+        }
+
+        return result;
+    }
+
     /// <summary>A rectangle of entries, copied.</summary>
     public DoubleDoubleMatrix Part(int row, int column, int rows, int columns)
     {

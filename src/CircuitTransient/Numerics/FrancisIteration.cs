@@ -7,7 +7,11 @@ public static class FrancisIteration
 {
     private const double UnitRoundoff = 2.465190328815662e-32; // 2⁻¹⁰⁵
     private const double Tiny = 1e-290; // below any entry that a balanced matrix can mean
-    private const int StepsAnEigenvalue = 60; // two to four are usual
+    private const int StepsAnEigenvalue = 120; // two to four are usual
+    // then an entry is judged by its neighbours only, no longer by their gap
+    private const int StrictSteps = 15;
+    // then by the norm, as backward stability allows; chains of equal poles need it
+    private const int LocalSteps = 30;
 
     /// <summary>Overwrites the Hessenberg matrix H with its Schur form T (blocks of order two only for
     /// complex pairs), and the rows of <paramref name="qt"/> with the rotations applied to them.</summary>
@@ -16,10 +20,11 @@ public static class FrancisIteration
         ArgumentNullException.ThrowIfNull(h);
         ArgumentNullException.ThrowIfNull(qt);
         int last = h.Rows - 1;
+        double norm = h.FrobeniusNorm();
         int steps = 0;
         while (last >= 0)
         {
-            int first = FirstOfWindow(h, last);
+            int first = FirstOfWindow(h, last, steps > LocalSteps ? norm : 0, steps <= StrictSteps);
             if (first >= last - 1)
             {
                 if (first == last - 1)
@@ -41,10 +46,10 @@ public static class FrancisIteration
         }
     }
 
-    private static int FirstOfWindow(DoubleDoubleMatrix h, int last)
+    private static int FirstOfWindow(DoubleDoubleMatrix h, int last, double floor, bool isStrict)
     {
         int k = last;
-        while (k > 0 && !IsNegligible(h, k, last))
+        while (k > 0 && !IsNegligible(h, k, last, floor, isStrict))
         {
             k--;
         }
@@ -57,10 +62,10 @@ public static class FrancisIteration
         return k;
     }
 
-    private static bool IsNegligible(DoubleDoubleMatrix h, int k, int last)
+    private static bool IsNegligible(DoubleDoubleMatrix h, int k, int last, double floor, bool isStrict)
     {
         double below = Math.Abs(h[k, k - 1].Hi);
-        if (below <= Tiny)
+        if (below <= Math.Max(Tiny, UnitRoundoff * floor))
         {
             return true;
         }
@@ -75,6 +80,11 @@ public static class FrancisIteration
         if (below > UnitRoundoff * size)
         {
             return false;
+        }
+
+        if (!isStrict)
+        {
+            return true;
         }
 
         double above = Math.Abs(h[k - 1, k].Hi);

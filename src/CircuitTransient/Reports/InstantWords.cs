@@ -6,6 +6,8 @@ namespace CircuitTransient.Reports;
 /// <summary>Instants in words: when, and how long after the last switching before.</summary>
 public static class InstantWords
 {
+    private const double RoundingOfTimes = 1e-14; // an extreme at a jump carries the event's own time
+
     /// <summary><c>at 1.801 s, 1.496 ms after Kmain closes</c>; empty where there is no instant.</summary>
     public static string At(TransientResult result, double time, InstantSide side = InstantSide.At)
     {
@@ -33,7 +35,7 @@ public static class InstantWords
         }
 
         var names = Names(result, last.Time);
-        if (last.Time == time)
+        if (time - last.Time <= RoundingOfTimes * time)
         {
             return side == InstantSide.Before ? $"just before {names}" : $"just after {names}";
         }

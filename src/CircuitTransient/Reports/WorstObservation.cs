@@ -30,7 +30,7 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         var greatest = 0.0;
         foreach (var (quantity, used, value, what) in Uses(result))
         {
-            if (used > greatest && Matching(result, quantity) is { } observation)
+            if (used > greatest && ObservedQuantity.Find(result, quantity) is { } observation)
             {
                 greatest = used;
                 var why = used > 1 ? $"the {what} exceeded most" : $"nearest to its {what}";
@@ -96,28 +96,6 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         "V/s" => new RateOfChange(new VoltageAcross(part)),
         "A/s" => new RateOfChange(new CurrentThrough(part)),
         _ => null,
-    };
-
-    private static ObservationResult? Matching(TransientResult result, Measurand quantity)
-    {
-        var sought = Normalised(result.Circuit, quantity);
-        var observed = result.Circuit.Observations
-            .FirstOrDefault(o => Normalised(result.Circuit, o.Quantity) == sought);
-        return observed is null ? null : result.Observations.FirstOrDefault(o => o.Name == observed.Name);
-    }
-
-    // One quantity may be named in several ways: by its node, its nodes or its part, with either sign.
-    private static Measurand Normalised(Circuit circuit, Measurand quantity) => quantity switch
-    {
-        VoltageAcross across => Normalised(
-            circuit, new VoltageBetween(circuit.Parts[across.Part].From, circuit.Parts[across.Part].To)),
-        VoltageBetween between when between.From < between.To => new VoltageBetween(between.To, between.From),
-        CurrentThrough current => current with { Delivered = false },
-        PowerIn power => power with { Delivered = false },
-        EnergyIn energy => energy with { Delivered = false },
-        Figure figure => Normalised(circuit, figure.Of),
-        RateOfChange rate => new RateOfChange(Normalised(circuit, rate.Of)),
-        _ => quantity,
     };
 
     private static bool IsAtMax(ObservationResult observation, double? value)

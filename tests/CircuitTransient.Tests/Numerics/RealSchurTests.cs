@@ -4,8 +4,8 @@ namespace CircuitTransient.Tests.Numerics;
 
 public class RealSchurTests
 {
-    // The lower six eigenvalues of the Frank matrix of order 12, the others being their reciprocals; these digits
-    // computed with 60 places by mpmath 1.3.0.
+    // The lower six eigenvalues of the Frank matrix of order 12, the others being their reciprocals; these
+    // digits computed with 60 places by mpmath 1.3.0.
     private static readonly double[] _frank =
     [
         0.03102806064401, 0.049507429185278, 0.081227659240405, 0.14364651976922, 0.28474972055848,
