@@ -40,6 +40,10 @@ public static class TriangularExponential
         return Scaled(result, DoubleDoubleComplex.Exp((centred.Mean + shift) * time));
     }
 
+    /// <summary>e^(T t) of a triangle held as an array.</summary>
+    public static DoubleDoubleComplex[,] Exact(DoubleDoubleComplex[,] t, DoubleDouble time) =>
+        Of(DoubleDoubleComplexMatrix.From(t), time).ToArray();
+
     private static DoubleDoubleComplexMatrix Taylor(DoubleDoubleComplexMatrix n, DoubleDouble time)
     {
         DoubleDoubleComplexMatrix sum = DoubleDoubleComplexMatrix.Identity(n.Rows);

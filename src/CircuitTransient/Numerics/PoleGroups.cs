@@ -1,29 +1,29 @@
 using System.Collections.Immutable;
+using System.Numerics;
 
 namespace CircuitTransient.Numerics;
 
 /// <summary>A pole as it is shown: a real one, or a complex pair by its upper member.</summary>
-/// <param name="Re">Real part, in reciprocals of the time unit.</param>
-/// <param name="Im">Imaginary part, zero or positive.</param>
+/// <param name="Value">The pole, in reciprocals of the time unit; its imaginary part is zero or
+/// positive.</param>
 /// <param name="Multiplicity">How many poles (or pairs) coincide here to working accuracy.</param>
-public sealed record PoleGroup(double Re, double Im, int Multiplicity)
+public sealed record PoleGroup(Complex Value, int Multiplicity);
+
+/// <summary>The poles of a matrix as they are shown, those that coincide counted once.</summary>
+public static class PoleGroups
 {
     private const double InputRounding = 2.2e-16; // the matrix came from doubles
     private const double Slack = 8; // on the root of it; trials spread by up to 4
     private const double Widest = 0.2; // what the eye tells apart is not one pole, whatever its blur
     private const double SemisimpleRounding = 1e-13;
 
-    /// <summary>Distance from zero.</summary>
-    public double Magnitude => double.Hypot(Re, Im);
-
-    /// <summary>The poles of a matrix, smallest first.</summary>
-    public static ImmutableArray<PoleGroup> Of(SpectralBlocks blocks)
+    /// <summary>The poles of all blocks of a matrix, smallest first.</summary>
+    public static ImmutableArray<PoleGroup> Of(ImmutableArray<SpectralBlock> blocks)
     {
-        ArgumentNullException.ThrowIfNull(blocks);
-        IEnumerable<PoleGroup> groups = blocks.Blocks.SelectMany(block => OfBlock(block, blocks.Order))
-            .OrderBy(group => group.Magnitude)
-            .ThenBy(group => group.Im)
-            .ThenBy(group => group.Re);
+        IEnumerable<PoleGroup> groups = blocks.SelectMany(block => OfBlock(block, block.V.Rows))
+            .OrderBy(group => group.Value.Magnitude)
+            .ThenBy(group => group.Value.Imaginary)
+            .ThenBy(group => group.Value.Real);
         List<PoleGroup> merged = [];
         foreach (PoleGroup group in groups)
         {
@@ -43,7 +43,7 @@ public sealed record PoleGroup(double Re, double Im, int Multiplicity)
     }
 
     private static bool Coincide(PoleGroup a, PoleGroup b) =>
-        double.Hypot(a.Re - b.Re, a.Im - b.Im) <= SemisimpleRounding * Math.Max(a.Magnitude, b.Magnitude);
+        (a.Value - b.Value).Magnitude <= SemisimpleRounding * Math.Max(a.Value.Magnitude, b.Value.Magnitude);
 
     /// <summary>Within a block, the largest sets whose spread rounding of the input explains count as one
     /// pole: an m-fold pole is blurred to the m-th root (J. H. Wilkinson, "The Algebraic Eigenvalue Problem",
@@ -62,7 +62,7 @@ public sealed record PoleGroup(double Re, double Im, int Multiplicity)
                 double im = isReal ? 0 : (double)mean.Im;
                 if (im >= 0)
                 {
-                    yield return new((double)mean.Re, im, found.Count);
+                    yield return new(new Complex((double)mean.Re, im), found.Count);
                 }
             }
         }

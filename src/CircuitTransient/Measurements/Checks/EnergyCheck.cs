@@ -1,0 +1,88 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements.Checks;
+
+/// <summary>Energy, interval by interval: what sources supply is stored or turned to heat. Heat is the
+/// integral of
+/// R i² in closed form, supply that of v i, storage that of the fields at the ends: three routes that
+/// meet.</summary>
+internal static class EnergyCheck
+{
+    /// <summary>The worst imbalance over the largest of supply, heat and storage in its interval; null where
+    /// some
+    /// part's current or voltage is open.</summary>
+    public static double? Worst(CurveBuilder curves, StoredEnergy energy, Func<int, double[,]> gram)
+    {
+        double worst = 0;
+        var solution = curves.Solution;
+        foreach (var interval in solution.Intervals)
+        {
+            double supplied = 0, heat = 0, stored = 0, size = 0;
+            for (var s = interval.FirstSegment; s < interval.FirstSegment + interval.SegmentCount; s++)
+            {
+                if (Flow(solution, s, gram(s)) is not { } flow)
+                {
+                    return null;
+                }
+
+                supplied += flow.Supplied;
+                heat += flow.Heat;
+                var (start, end) = (energy.At(s, end: false), energy.At(s, end: true));
+                stored += end - start;
+                size = Math.Max(size, Math.Max(flow.Size, Math.Max(Math.Abs(start), Math.Abs(end))));
+            }
+
+            worst = Math.Max(worst, size == 0 ? 0 : Math.Abs(supplied - heat - stored) / size);
+        }
+
+        return worst;
+    }
+
+    private static (double Supplied, double Heat, double Size)? Flow(TransientSolution solution, int s,
+        double[,] gram)
+    {
+        var segment = solution.Segments[s];
+        double supplied = 0, heat = 0, size = 0;
+        for (var i = 0; i < solution.Circuit.Parts.Length; i++)
+        {
+            var resistance = Resistance(solution.Circuit.Parts[i], segment.Model.IsClosed[i]);
+            if (resistance is 0 || solution.Circuit.Parts[i] is Capacitor or Inductor)
+            {
+                continue;
+            }
+
+            var current = segment.Coefficients(new CurrentThrough(i));
+            var voltage = segment.Coefficients(new VoltageAcross(i));
+            if (current is null || voltage is null || solution.Circuit.Parts[i] is IdealTransformer)
+            {
+                return null;
+            }
+
+            if (resistance is { } r)
+            {
+                heat += r * GramIntegral.Form(gram, current, current);
+            }
+            else
+            {
+                var energy = -GramIntegral.Form(gram, voltage, current);
+                supplied += energy;
+                size = Math.Max(size, Math.Abs(energy));
+            }
+        }
+
+        return (supplied, heat, Math.Max(size, Math.Abs(heat)));
+    }
+
+    /// <summary>A part's resistance; zero where it neither heats nor supplies, null where it may
+    /// supply.</summary>
+    private static double? Resistance(Part part, bool isClosed) => part switch
+    {
+        Resistor r => r.Resistance.Nominal,
+        Switch s when isClosed => s.ClosedResistance?.Nominal ?? 0,
+        Switch s => s.OpenResistance?.Nominal ?? 0,
+        Capacitor or Inductor => 0,
+        _ => null,
+    };
+}

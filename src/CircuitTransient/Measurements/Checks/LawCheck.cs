@@ -1,0 +1,165 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Equations;
+using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements.Checks;
+
+/// <summary>Kirchhoff's current law at every node and every part's own law, at the ends and in the middle of
+/// segments: each residual over the largest term of its law at any of these instants.</summary>
+internal sealed class LawCheck
+{
+    private const int MostSegments = 12;
+
+    private readonly CurveBuilder curves;
+    private readonly Circuit circuit;
+    private readonly double[] residuals;
+    private readonly double[] scales;
+
+    private LawCheck(CurveBuilder curves)
+    {
+        this.curves = curves;
+        circuit = curves.Solution.Circuit;
+        residuals = new double[circuit.Nodes.Length + circuit.Parts.Length];
+        scales = new double[residuals.Length];
+    }
+
+    /// <summary>The worst relative residual.</summary>
+    public static double Worst(CurveBuilder curves)
+    {
+        var check = new LawCheck(curves);
+        var count = curves.Tables.Length;
+        var step = Math.Max(1, count / MostSegments);
+        for (var s = 0; s < count; s += step)
+        {
+            var length = curves.Tables[s].Segment.Length;
+            check.Sample(s, 0);
+            check.Sample(s, length / 2);
+            check.Sample(s, length);
+        }
+
+        double worst = 0;
+        for (var k = 0; k < check.residuals.Length; k++)
+        {
+            worst = Math.Max(worst, check.scales[k] == 0 ? 0 : check.residuals[k] / check.scales[k]);
+        }
+
+        return worst;
+    }
+
+    private void Sample(int s, double tau)
+    {
+        var segment = curves.Tables[s].Segment;
+        var phi = new double[segment.Basis.Width];
+        segment.Basis.Evaluate(tau, phi);
+        var currents = new (double Value, double Slope)?[circuit.Parts.Length];
+        var voltages = new (double Value, double Slope)?[circuit.Parts.Length];
+        for (var i = 0; i < circuit.Parts.Length; i++)
+        {
+            currents[i] = Value(s, new CurrentThrough(i), phi);
+            voltages[i] = Value(s, new VoltageAcross(i), phi);
+        }
+
+        NodeLaws(currents);
+        var time = segment.Start + tau;
+        for (var i = 0; i < circuit.Parts.Length; i++)
+        {
+            PartLaw(i, segment.Model, time, tau == segment.Length, voltages, currents);
+        }
+    }
+
+    private (double Value, double Slope)? Value(int s, Measurand quantity, double[] phi)
+    {
+        if (curves.Tables[s].Segment.Coefficients(quantity) is not { } c)
+        {
+            return null;
+        }
+
+        var (value, slope, _) = new LinearPiece(curves.Tables[s], c).At(0, phi);
+        return (value, slope);
+    }
+
+    private void NodeLaws((double Value, double Slope)?[] currents)
+    {
+        var sums = new double[circuit.Nodes.Length];
+        var largest = new double[circuit.Nodes.Length];
+        var isOpen = new bool[circuit.Nodes.Length];
+        for (var i = 0; i < currents.Length; i++)
+        {
+            var part = circuit.Parts[i];
+            if (part is IdealTransformer || currents[i] is not { } current)
+            {
+                isOpen[part.From] = isOpen[part.To] = true;
+                if (part is IdealTransformer t)
+                {
+                    isOpen[t.SecondaryFrom] = isOpen[t.SecondaryTo] = true;
+                }
+
+                continue;
+            }
+
+            sums[part.From] += current.Value;
+            sums[part.To] -= current.Value;
+            largest[part.From] = Math.Max(largest[part.From], Math.Abs(current.Value));
+            largest[part.To] = Math.Max(largest[part.To], Math.Abs(current.Value));
+        }
+
+        for (var node = 0; node < sums.Length; node++)
+        {
+            if (!isOpen[node])
+            {
+                Note(node, sums[node], largest[node]);
+            }
+        }
+    }
+
+    private void PartLaw(
+        int i, IntervalModel model, double time, bool before,
+        (double Value, double Slope)?[] voltages, (double Value, double Slope)?[] currents)
+    {
+        if (voltages[i] is not { } v || currents[i] is not { } c)
+        {
+            return;
+        }
+
+        var place = circuit.Nodes.Length + i;
+        switch (circuit.Parts[i])
+        {
+            case Resistor r:
+                Note(place, v.Value - (r.Resistance.Nominal * c.Value), v.Value);
+                break;
+            case Capacitor k:
+                Note(place, c.Value - (k.Capacitance.Nominal * v.Slope), c.Value);
+                break;
+            case Inductor l:
+                Note(place, v.Value - (l.Inductance.Nominal * c.Slope) - Induced(i, currents), v.Value);
+                break;
+            case VoltageSource source:
+                Note(place, v.Value - WaveValue.At(source.Wave, time, before), v.Value);
+                break;
+            case CurrentSource source:
+                Note(place, c.Value - WaveValue.At(source.Wave, time, before), c.Value);
+                break;
+            case Switch s when model.IsClosed[i]:
+                Note(place, v.Value - ((s.ClosedResistance?.Nominal ?? 0) * c.Value), v.Value);
+                break;
+            case Switch { OpenResistance: { } open }:
+                Note(place, v.Value - (open.Nominal * c.Value), v.Value);
+                break;
+            case Switch:
+                Note(place, c.Value, c.Value);
+                break;
+        }
+    }
+
+    private double Induced(int coil, (double Value, double Slope)?[] currents) =>
+        circuit.Couplings.Where(k => k.First == coil || k.Second == coil).Sum(k =>
+            (double)MutualInductances.Mutual(circuit, k)
+            * (currents[k.First == coil ? k.Second : k.First]?.Slope ?? double.NaN));
+
+    private void Note(int place, double residual, double size)
+    {
+        residuals[place] = Math.Max(residuals[place], Math.Abs(residual));
+        scales[place] = Math.Max(scales[place], Math.Abs(size));
+    }
+}

@@ -1,0 +1,191 @@
+using System.Collections.Immutable;
+using System.Diagnostics;
+using CircuitTransient.Circuits;
+using CircuitTransient.Equations;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements.Curves;
+
+/// <summary>Makes curves of measured quantities from a solution.</summary>
+public sealed class CurveBuilder
+{
+    private readonly TransientSolution solution;
+    private readonly ImmutableArray<SegmentTable> tables;
+    private readonly Dictionary<(Measurand, Share, int), Curve?> curves = [];
+    private readonly Dictionary<(int, Measurand, Share, int), LinearPiece?> linears = [];
+
+    /// <summary>Tabulates a solution's segments.</summary>
+    public CurveBuilder(TransientSolution solution)
+    {
+        this.solution = solution;
+        tables = [.. solution.Segments.Select(s => new SegmentTable(s))];
+    }
+
+    /// <summary>The solution.</summary>
+    public TransientSolution Solution => solution;
+
+    /// <summary>The tables of the segments.</summary>
+    public ImmutableArray<SegmentTable> Tables => tables;
+
+    /// <summary>A quantity's curve; null where the equations leave it open.</summary>
+    /// <param name="measurand">The quantity.</param>
+    /// <param name="share">Whose part.</param>
+    /// <param name="cause">Index of the cause, for <see cref="Share.Own"/> and <see
+    /// cref="Share.Without"/>.</param>
+    /// <param name="from">Since when an integral gathers, in seconds.</param>
+    public Curve? Of(Measurand measurand, Share share = Share.Total, int cause = -1, double from = 0)
+    {
+        var key = (measurand, share, cause);
+        if (from == 0 && curves.TryGetValue(key, out var known))
+        {
+            return known;
+        }
+
+        var curve = Build(measurand, share, cause, from);
+        if (from == 0)
+        {
+            curves.Add(key, curve);
+        }
+
+        return curve;
+    }
+
+    /// <summary>Whether a quantity is a sum of products, so that causes have a joint part in it.</summary>
+    public static bool IsQuadratic(Measurand measurand) =>
+        measurand is PowerIn or EnergyIn or CouplingEnergy or JouleIntegral;
+
+    private Curve? Build(Measurand measurand, Share share, int cause, double from)
+    {
+        var pieces = ImmutableArray.CreateBuilder<CurvePiece>(tables.Length);
+        double gathered = 0;
+        for (var s = 0; s < tables.Length; s++)
+        {
+            if (!IsQuadratic(measurand))
+            {
+                if (Linear(s, measurand, share, cause) is not { } linear)
+                {
+                    return null;
+                }
+
+                pieces.Add(linear);
+                continue;
+            }
+
+            if (Products(s, measurand, share, cause) is not { } quadratic)
+            {
+                return null;
+            }
+
+            if (!IsAccumulated(measurand))
+            {
+                pieces.Add(quadratic);
+                continue;
+            }
+
+            var set = Math.Clamp(from - tables[s].Segment.Start, 0, tables[s].Segment.Length);
+            var accumulated = new AccumulatedPiece(quadratic, gathered, set);
+            gathered = accumulated.AtEnd;
+            pieces.Add(accumulated);
+        }
+
+        return new Curve(pieces.ToImmutable());
+    }
+
+    /// <summary>Whether a quantity is an integral over time: the energy of what does not store, a Joule
+    /// integral.</summary>
+    public bool IsAccumulated(Measurand measurand) => measurand switch
+    {
+        JouleIntegral => true,
+        EnergyIn e => solution.Circuit.Parts[e.Part] is not (Capacitor or Inductor),
+        _ => false,
+    };
+
+    private LinearPiece? Linear(int s, Measurand measurand, Share share, int cause)
+    {
+        var key = (s, measurand, share, cause);
+        if (!linears.TryGetValue(key, out var piece))
+        {
+            piece = share switch
+            {
+                Share.Total => Piece(s, tables[s].Segment.Coefficients(measurand)),
+                Share.Own => Piece(s, tables[s].Segment.Coefficients(measurand, cause)),
+                Share.Without => Piece(s, Difference(
+                    tables[s].Segment.Coefficients(measurand),
+                        tables[s].Segment.Coefficients(measurand, cause))),
+                _ => throw new UnreachableException("a linear quantity has no joint part"),
+            };
+            linears.Add(key, piece);
+        }
+
+        return piece;
+    }
+
+    private LinearPiece? Piece(int s, double[]? coefficients) =>
+        coefficients is null ? null : new LinearPiece(tables[s], coefficients);
+
+    private static double[]? Difference(double[]? a, double[]? b) =>
+        a is null || b is null ? null : [.. a.Zip(b, (x, y) => x - y)];
+
+    private QuadraticPiece? Products(int s, Measurand measurand, Share share, int cause)
+    {
+        var (factor, first, second) = Factors(measurand);
+        var terms = ImmutableArray.CreateBuilder<ProductTerm>();
+        if (share != Share.Joint)
+        {
+            return Add(share, cause, factor) ? new QuadraticPiece(tables[s], terms.ToImmutable()) : null;
+        }
+
+        var isComplete = Add(Share.Total, -1, factor);
+        for (var c = 0; c < solution.Causes.Length && isComplete; c++)
+        {
+            isComplete = Add(Share.Own, c, -factor);
+        }
+
+        return isComplete ? new QuadraticPiece(tables[s], terms.ToImmutable()) : null;
+
+        bool Add(Share of, int whose, double weight)
+        {
+            var a = Linear(s, first, of, whose);
+            var b = first == second ? a : Linear(s, second, of, whose);
+            if (a is null || b is null)
+            {
+                return false;
+            }
+
+            if (!a.IsZero && !b.IsZero)
+            {
+                terms.Add(new ProductTerm(weight, a, b));
+            }
+
+            return true;
+        }
+    }
+
+    private (double Factor, Measurand First, Measurand Second) Factors(Measurand measurand)
+    {
+        var circuit = solution.Circuit;
+        switch (measurand)
+        {
+            case PowerIn p:
+                return (p.Delivered ? -1 : 1, new VoltageAcross(p.Part), new CurrentThrough(p.Part));
+            case JouleIntegral j:
+                return (1, new CurrentThrough(j.Part), new CurrentThrough(j.Part));
+            case CouplingEnergy k:
+                var coupling = circuit.Couplings[k.Coupling];
+                return ((double)MutualInductances.Mutual(circuit, coupling),
+                    new CurrentThrough(coupling.First), new CurrentThrough(coupling.Second));
+            case EnergyIn e when circuit.Parts[e.Part] is Capacitor c:
+                return (Sign(e) * c.Capacitance.Nominal / 2, new VoltageAcross(e.Part),
+                    new VoltageAcross(e.Part));
+            case EnergyIn e when circuit.Parts[e.Part] is Inductor l:
+                return (Sign(e) * l.Inductance.Nominal / 2, new CurrentThrough(e.Part),
+                    new CurrentThrough(e.Part));
+            case EnergyIn e:
+                return (Sign(e), new VoltageAcross(e.Part), new CurrentThrough(e.Part));
+            default:
+                throw new UnreachableException($"{measurand} is no product");
+        }
+    }
+
+    private static double Sign(EnergyIn energy) => energy.Delivered ? -1 : 1;
+}

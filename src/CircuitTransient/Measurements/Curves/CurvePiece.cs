@@ -1,0 +1,47 @@
+using CircuitTransient.Numerics;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements.Curves;
+
+/// <summary>A measured quantity on one segment: its value, its derivatives, and bounds that hold between
+/// instants.</summary>
+public abstract class CurvePiece(SegmentTable table)
+{
+    /// <summary>The table of the segment's functions.</summary>
+    public SegmentTable Table { get; } = table;
+
+    /// <summary>The segment.</summary>
+    public Segment Segment => Table.Segment;
+
+    /// <summary>Value, first and second derivative at τ, where the segment's functions are <paramref
+    /// name="phi"/>.</summary>
+    public abstract (double Value, double Slope, double Bend) At(double tau, ReadOnlySpan<double> phi);
+
+    /// <summary>The value alone.</summary>
+    public abstract double ValueAt(double tau, ReadOnlySpan<double> phi);
+
+    /// <summary>Bounds of the magnitudes of the second and third derivative where the functions stay within
+    /// an envelope.</summary>
+    public abstract (double Second, double Third) DerivativeBounds(ReadOnlySpan<double> envelope);
+
+    /// <summary>An upper bound of sign × value over a stretch whose ends are known: slow functions are nearly
+    /// straight
+    /// there, fast ones are at most their amplitude.</summary>
+    public abstract double UpperBound(
+        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
+            ReadOnlySpan<double> envelope,
+        double firstValue, double lastValue);
+
+    /// <summary>The value at τ.</summary>
+    public double ValueAt(double tau)
+    {
+        Span<double> phi = stackalloc double[256];
+        phi = Segment.Basis.Width <= 256 ? phi[..Segment.Basis.Width] : new double[Segment.Basis.Width];
+        Segment.Basis.Evaluate(tau, phi);
+        return ValueAt(tau, phi);
+    }
+
+    /// <summary>a · b.</summary>
+    protected static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b) =>
+        DotProduct.Of(a, b);
+}

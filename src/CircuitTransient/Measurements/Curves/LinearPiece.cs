@@ -1,0 +1,110 @@
+namespace CircuitTransient.Measurements.Curves;
+
+/// <summary>A voltage, a current, or the rate of change of one.</summary>
+public sealed class LinearPiece : CurvePiece
+{
+    private readonly double[] c0;
+    private readonly double[] c1;
+    private readonly double[] c2;
+    private readonly double[] c3;
+
+    /// <summary>Takes the coefficients of the segment's functions.</summary>
+    public LinearPiece(SegmentTable table, double[] coefficients)
+        : base(table)
+    {
+        c0 = coefficients;
+        IsZero = Array.TrueForAll(c0, x => x == 0);
+        c1 = IsZero ? c0 : Segment.Basis.Differentiate(c0);
+        c2 = IsZero ? c0 : Segment.Basis.Differentiate(c1);
+        c3 = IsZero ? c0 : Segment.Basis.Differentiate(c2);
+    }
+
+    /// <summary>Whether it is zero throughout.</summary>
+    public bool IsZero { get; }
+
+    /// <summary>The coefficients.</summary>
+    public ReadOnlySpan<double> Coefficients => c0;
+
+    /// <summary>The size of the largest function in it over the segment.</summary>
+    public double Scale
+    {
+        get
+        {
+            Span<double> envelope = new double[c0.Length];
+            Segment.Basis.Envelope(0, Segment.Length, envelope);
+            double scale = 0;
+            for (var k = 0; k < c0.Length; k++)
+            {
+                scale = Math.Max(scale, Math.Abs(c0[k]) * envelope[k]);
+            }
+
+            return scale;
+        }
+    }
+
+    /// <inheritdoc/>
+    public override (double Value, double Slope, double Bend) At(double tau, ReadOnlySpan<double> phi) =>
+        (Dot(c0, phi), Dot(c1, phi), Dot(c2, phi));
+
+    /// <inheritdoc/>
+    public override double ValueAt(double tau, ReadOnlySpan<double> phi) => Dot(c0, phi);
+
+    /// <inheritdoc/>
+    public override (double Second, double Third) DerivativeBounds(ReadOnlySpan<double> envelope) =>
+        (Magnitude(c2, envelope), Magnitude(c3, envelope));
+
+    /// <summary>Bounds of the magnitudes of value, first, second and third derivative.</summary>
+    public (double Value, double First, double Second, double Third) Bounds(ReadOnlySpan<double> envelope) =>
+        (Magnitude(c0, envelope), Magnitude(c1, envelope), Magnitude(c2, envelope), Magnitude(c3, envelope));
+
+    /// <inheritdoc/>
+    public override double UpperBound(
+        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
+            ReadOnlySpan<double> envelope,
+        double firstValue, double lastValue)
+    {
+        double slowFirst = 0, slowLast = 0, slack = 0;
+        var modes = Segment.Basis.Modes;
+        for (var m = 0; m < modes.Length; m++)
+        {
+            var place = Segment.Basis.Place(m);
+            double amplitude = 0, bend = 0, start = 0, end = 0;
+            for (var k = place; k < place + modes[m].Width; k++)
+            {
+                amplitude += Pair(modes[m].IsReal, c0, k, place) * envelope[k];
+                bend += Pair(modes[m].IsReal, c2, k, place) * envelope[k];
+                start += c0[k] * first[k];
+                end += c0[k] * last[k];
+            }
+
+            var curvature = width * width / 8 * bend;
+            if (curvature < amplitude)
+            {
+                slowFirst += start;
+                slowLast += end;
+                slack += curvature;
+            }
+            else
+            {
+                slack += amplitude;
+            }
+        }
+
+        return Math.Max(sign * slowFirst, sign * slowLast) + slack;
+    }
+
+    /// <summary>|Re c|, |Im c| of a complex function count together once, as the magnitude.</summary>
+    private static double Pair(bool isReal, double[] c, int k, int place) =>
+        isReal ? Math.Abs(c[k]) : (k - place) % 2 == 0 ? double.Hypot(c[k], c[k + 1]) : 0;
+
+    private static double Magnitude(double[] c, ReadOnlySpan<double> envelope)
+    {
+        double sum = 0;
+        for (var k = 0; k < c.Length; k++)
+        {
+            sum += Math.Abs(c[k]) * envelope[k];
+        }
+
+        return sum;
+    }
+}

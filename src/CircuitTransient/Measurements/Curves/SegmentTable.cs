@@ -1,0 +1,42 @@
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements.Curves;
+
+/// <summary>A segment's functions tabulated where they move, once for all curves on it.</summary>
+public sealed class SegmentTable
+{
+    private readonly double[] values;
+    private readonly double[] envelopes;
+    private readonly int width;
+
+    /// <summary>Tabulates a segment.</summary>
+    public SegmentTable(Segment segment)
+    {
+        Segment = segment;
+        Instants = SamplingSteps.Of(segment.Basis, segment.Length, stepFraction: 0.5, mostSteps: 400);
+        width = segment.Basis.Width;
+        values = new double[Instants.Length * width];
+        envelopes = new double[Math.Max(0, Instants.Length - 1) * width];
+        for (var k = 0; k < Instants.Length; k++)
+        {
+            segment.Basis.Evaluate(Instants[k], values.AsSpan(k * width, width));
+        }
+
+        for (var k = 0; k + 1 < Instants.Length; k++)
+        {
+            segment.Basis.Envelope(Instants[k], Instants[k + 1], envelopes.AsSpan(k * width, width));
+        }
+    }
+
+    /// <summary>The segment.</summary>
+    public Segment Segment { get; }
+
+    /// <summary>The tabulated instants from the segment's start, its ends included.</summary>
+    public double[] Instants { get; }
+
+    /// <summary>The functions at a tabulated instant.</summary>
+    public ReadOnlySpan<double> Values(int k) => values.AsSpan(k * width, width);
+
+    /// <summary>Bounds of the functions between a tabulated instant and the next.</summary>
+    public ReadOnlySpan<double> Envelope(int k) => envelopes.AsSpan(k * width, width);
+}

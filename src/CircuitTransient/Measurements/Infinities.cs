@@ -1,0 +1,75 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>Where a quantity is infinite for an instant: an impulse of a voltage or current, or the rate of
+/// change of
+/// something that jumps.</summary>
+internal sealed class Infinities(CurveBuilder curves)
+{
+    private readonly TransientSolution solution = curves.Solution;
+
+    /// <summary>The first instants in a window at which the quantity is infinitely great and infinitely
+    /// small.</summary>
+    public (double? Up, double? Down) Of(Measurand quantity, double from, double until)
+    {
+        double? up = null, down = null;
+        for (var s = 0; s < solution.Segments.Length; s++)
+        {
+            var time = solution.Segments[s].Start;
+            if (time < from || time > until || (time == until && until > from))
+            {
+                continue;
+            }
+
+            var sign = Sign(quantity, s);
+            up ??= sign > 0 ? time : null;
+            down ??= sign < 0 ? time : null;
+        }
+
+        return (up, down);
+    }
+
+    /// <summary>The sign of the infinity at a segment's start; zero where there is none.</summary>
+    private int Sign(Measurand quantity, int s)
+    {
+        switch (quantity)
+        {
+            case RateOfChange rate:
+                var impulse = Math.Sign(solution.Segments[s].ImpulseAtStart(rate.Of));
+                return impulse != 0 ? impulse : Math.Sign(JumpAt(rate.Of, s));
+            case PowerIn power:
+                var voltage = new VoltageAcross(power.Part);
+                var current = new CurrentThrough(power.Part, power.Delivered);
+                var v = solution.Segments[s].ImpulseAtStart(voltage);
+                var i = solution.Segments[s].ImpulseAtStart(current);
+                return v != 0 ? Math.Sign(v * After(current, s)) : i != 0 ? Math.Sign(i * After(voltage, s))
+                    : 0;
+            case EnergyIn or CouplingEnergy or JouleIntegral or Figure:
+                return 0;
+            default:
+                return Math.Sign(solution.Segments[s].ImpulseAtStart(quantity));
+        }
+    }
+
+    /// <summary>By how much a voltage or current jumps at a segment's start; zero at the study's start,
+    /// before which
+    /// nothing is known of it.</summary>
+    private double JumpAt(Measurand quantity, int s)
+    {
+        if (s == 0 || curves.Of(quantity) is not { } curve)
+        {
+            return 0;
+        }
+
+        var after = curve.Pieces[s].ValueAt(0);
+        var before = curve.Pieces[s - 1].ValueAt(curve.Pieces[s - 1].Segment.Length);
+        const double rounding = 1e-9; // the accuracy every value is held to
+        var size = Math.Max(((LinearPiece)curve.Pieces[s]).Scale, ((LinearPiece)curve.Pieces[s - 1]).Scale);
+        return Math.Abs(after - before) <= rounding * size ? 0 : after - before;
+    }
+
+    private double After(Measurand quantity, int s) => curves.Of(quantity)?.Pieces[s].ValueAt(0) ?? 0;
+}

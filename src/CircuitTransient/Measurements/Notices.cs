@@ -1,0 +1,39 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Solutions;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>Warnings that the text gave, and those that only the answer can give.</summary>
+internal static class Notices
+{
+    /// <summary>All warnings, those of the text first.</summary>
+    public static ImmutableArray<Notice> Of(
+        TransientSolution solution, ImmutableArray<Diagnostic> warnings,
+            ImmutableArray<ObservationResult> observations) =>
+    [
+        .. warnings.Select(w => new Notice(w.Source.LineOf(w.Span.Start), w.Message)),
+        .. solution.NeverActed.Where(e => Declared(solution, e).CutAtMost is not null
+            || Declared(solution, e).Trigger is WhenCrosses).Select(e => NeverActed(solution, e)),
+        .. observations.Where(o => o.EndsRising).Select(o => new Notice(
+            0,
+            $"{o.Name} is greatest at the end of the study and still rises: look further with a later "
+                + "`until`")),
+    ];
+
+    private static SwitchEvent Declared(TransientSolution solution, EventReference reference) =>
+        ((Switch)solution.Circuit.Parts[reference.Part]).Events[reference.Event];
+
+    private static Notice NeverActed(TransientSolution solution, EventReference reference)
+    {
+        var declared = Declared(solution, reference);
+        var name = solution.Circuit.Parts[reference.Part].Name;
+        return new Notice(
+            solution.Circuit.Source.LineOf(declared.Span.Start),
+            declared.Closes
+                ? $"`{name}` never closes within the study: what it waits for does not happen"
+                : $"`{name}` never opens within the study: what it waits for does not happen, so it stays "
+                    + "closed");
+    }
+}

@@ -1,0 +1,144 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>Measures an observed quantity: its extremes and what each cause has in them.</summary>
+internal sealed class ObservationMeasurement(
+    CurveBuilder curves, WindowTimes times, Infinities infinities, AnalysisOptions options)
+{
+    private const int MostStretches = 3_000_000; // a million crests, three stretches each
+    private const int MostStretchesOfACause = 200_000;
+
+    private readonly TransientSolution solution = curves.Solution;
+
+    /// <summary>Measures one observation; its waveforms are still to be filled in from the curves, the
+    /// total's first.</summary>
+    public (ObservationResult Result, ImmutableArray<Curve> Curves) Measure(Observation observation)
+    {
+        var window = times.Of(observation.Window);
+        if (curves.Of(observation.Quantity) is not { } total || window is not { } open)
+        {
+            return (Undetermined(observation), []);
+        }
+
+        if (curves.IsAccumulated(observation.Quantity))
+        {
+            total = curves.Of(observation.Quantity, from: open.From)!;
+        }
+
+        var (max, min) = Extremes(observation.Quantity, total, open);
+        var shares = Shares(observation.Quantity, open);
+        var result = new ObservationResult(
+            observation.Name,
+            observation.Unit,
+            total.ValueAt(solution, open.From),
+            total.ValueAt(solution, open.To, before: open.To > open.From),
+            FinalValue.Of(total),
+            max,
+            min,
+            EndsRising(total, max, min),
+            [.. shares.Select(s => Contribution(observation.Quantity, s, max, min, open))],
+            null,
+            [.. options.At.Select(t => Sample(t, total, shares))],
+            [],
+            []);
+        return (result, [total, .. shares.Select(s => s.Curve)]);
+    }
+
+    private (Extreme Max, Extreme Min) Extremes(Measurand quantity, Curve total,
+        (double From, double To) window)
+    {
+        var max = ExtremeSearch.Greatest(total, window.From, window.To, MostStretches);
+        var min = ExtremeSearch.Least(total, window.From, window.To, MostStretches);
+        var (up, down) = infinities.Of(quantity, window.From, window.To);
+        return (
+            up is { } high ? new Extreme(null, high, InstantSide.At, null)
+                : new Extreme(max.Value, max.Time, max.Side, max.Bound),
+            down is { } low ? new Extreme(null, low, InstantSide.At, null)
+                : new Extreme(min.Value, min.Time, min.Side, min.Bound));
+    }
+
+    private List<(string Name, Share Share, int Cause, Curve Curve)> Shares(
+        Measurand quantity, (double From, double To) window)
+    {
+        var shares = new List<(string, Share, int, Curve)>();
+        var from = curves.IsAccumulated(quantity) ? window.From : 0;
+        for (var c = 0; c < solution.Causes.Length; c++)
+        {
+            shares.Add((solution.Causes[c].Name, Share.Own, c, curves.Of(quantity, Share.Own, c, from)!));
+        }
+
+        if (CurveBuilder.IsQuadratic(quantity))
+        {
+            shares.Add(("joint", Share.Joint, -1, curves.Of(quantity, Share.Joint, -1, from)!));
+        }
+
+        return shares;
+    }
+
+    private Contribution Contribution(
+        Measurand quantity, (string Name, Share Share, int Cause, Curve Curve) share, Extreme max,
+            Extreme min,
+        (double From, double To) window)
+    {
+        var atMax = share.Curve.ValueAt(solution, max.Time, max.Side == InstantSide.Before);
+        var atMin = share.Curve.ValueAt(solution, min.Time, min.Side == InstantSide.Before);
+        var ownMax = Search(share.Curve, window, greatest: true);
+        var ownMin = Search(share.Curve, window, greatest: false);
+        if (share.Share == Share.Joint)
+        {
+            return new Contribution(share.Name, atMax, atMin, ownMax, ownMin, null, null);
+        }
+
+        var from = curves.IsAccumulated(quantity) ? window.From : 0;
+        var without = curves.Of(quantity, Share.Without, share.Cause, from)!;
+        return new Contribution(
+            share.Name, atMax, atMin, ownMax, ownMin,
+            Search(without, window, greatest: true), Search(without, window, greatest: false));
+    }
+
+    private static TimedValue Search(Curve curve, (double From, double To) window, bool greatest)
+    {
+        var found = greatest
+            ? ExtremeSearch.Greatest(curve, window.From, window.To, MostStretchesOfACause)
+            : ExtremeSearch.Least(curve, window.From, window.To, MostStretchesOfACause);
+        return new TimedValue(found.Value, found.Time);
+    }
+
+    private SampleAt Sample(double time, Curve total,
+        List<(string Name, Share Share, int Cause, Curve Curve)> shares) =>
+        new(time, total.ValueAt(solution, time),
+            [.. shares.Select(s => (double?)s.Curve.ValueAt(solution, time))]);
+
+    private bool EndsRising(Curve total, Extreme max, Extreme min)
+    {
+        var greatest = Math.Abs(min.Value ?? 0) > Math.Abs(max.Value ?? 0) ? min : max;
+        if (greatest.Time != solution.Until || greatest.Value is not { } value)
+        {
+            return false;
+        }
+
+        var last = total.Pieces[^1];
+        Span<double> phi = new double[last.Segment.Basis.Width];
+        last.Segment.Basis.Evaluate(last.Segment.Length, phi);
+        var slope = last.At(last.Segment.Length, phi).Slope * Math.Sign(value);
+        // still growing by a thousandth a study's length
+        return slope * solution.Until > 1e-3 * Math.Abs(value);
+    }
+
+    private ObservationResult Undetermined(Observation observation)
+    {
+        var nothing = new Extreme(null, 0, InstantSide.At, null);
+        var contributions =
+            solution.Causes.Select(c => new Contribution(c.Name, null, null, null, null, null, null));
+        return new ObservationResult(
+            observation.Name, observation.Unit, null, null, null, nothing, nothing, false, [.. contributions],
+                null,
+            [.. options.At
+                .Select(t => new SampleAt(t, null, [.. solution.Causes.Select(_ => (double?)null)]))],
+            [], []);
+    }
+}

@@ -1,0 +1,108 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>What every part bears over the study, against its ratings.</summary>
+internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, Func<int, double[,]> gram)
+{
+    private const int MostStretches = 50_000;
+
+    private readonly TransientSolution solution = curves.Solution;
+
+    /// <summary>The stresses of one part.</summary>
+    public PartResult Measure(int part)
+    {
+        var declared = solution.Circuit.Parts[part];
+        var voltage = Peak(new VoltageAcross(part));
+        var current = Peak(new CurrentThrough(part));
+        var power = Peak(new PowerIn(part));
+        var voltageRate = Peak(new RateOfChange(new VoltageAcross(part)));
+        var currentRate = Peak(new RateOfChange(new CurrentThrough(part)));
+        var absorbed = Integral(new VoltageAcross(part), new CurrentThrough(part));
+        var joule = Integral(new CurrentThrough(part), new CurrentThrough(part));
+        var energy = declared switch
+        {
+            Capacitor c => c.Capacitance.Nominal / 2 * voltage?.Value * voltage?.Value,
+            Inductor l => l.Inductance.Nominal / 2 * current?.Value * current?.Value,
+            _ => absorbed,
+        };
+        return new PartResult(
+            declared.Name, declared.Kind, voltage, current, power, voltageRate, currentRate, energy, joule,
+            [.. declared.Ratings.Select(Rate)], Limit());
+
+        RatingResult Rate(Rating rating)
+        {
+            var (reached, unit) = rating.Kind switch
+            {
+                RatingKind.PeakVoltage => (voltage?.Value, "V"),
+                RatingKind.PeakCurrent => (current?.Value, "A"),
+                RatingKind.MeanPower => (absorbed / solution.Until, "W"),
+                RatingKind.Energy => (energy, "J"),
+                RatingKind.JouleIntegral => (joule, "A²s"),
+                RatingKind.VoltageRate => (voltageRate?.Value, "V/s"),
+                _ => (currentRate?.Value, "A/s"),
+            };
+            var magnitude = Math.Abs(reached ?? double.PositiveInfinity);
+            return new RatingResult(
+                rating.Limit, unit, reached is null ? null : magnitude, reached is null ? null
+                    : magnitude / rating.Limit,
+                magnitude <= rating.Limit);
+        }
+
+        LinearUpToResult? Limit()
+        {
+            if (declared.LinearUpTo is not { } limit)
+            {
+                return null;
+            }
+
+            var reached = limit.IsVoltage ? voltage?.Value : current?.Value;
+            var holds = Math.Abs(reached ?? double.PositiveInfinity) <= limit.Limit;
+            return new LinearUpToResult(
+                limit.Limit, limit.IsVoltage ? "V" : "A", reached is { } r ? Math.Abs(r) : null, holds,
+                LinearLimits.Direction(declared, limit));
+        }
+    }
+
+    /// <summary>The extreme of greatest magnitude, with its sign; its value is null where an impulse makes it
+    /// infinite.</summary>
+    private TimedValue? Peak(Measurand quantity)
+    {
+        if (curves.Of(quantity) is not { } curve)
+        {
+            return null;
+        }
+
+        var (up, down) = infinities.Of(quantity, 0, solution.Until);
+        if ((up ?? down) is { } time)
+        {
+            return new TimedValue(null, time);
+        }
+
+        var high = ExtremeSearch.Greatest(curve, 0, solution.Until, MostStretches);
+        var low = ExtremeSearch.Least(curve, 0, solution.Until, MostStretches);
+        return Math.Abs(low.Value) > Math.Abs(high.Value)
+            ? new TimedValue(low.Value, low.Time)
+            : new TimedValue(high.Value, high.Time);
+    }
+
+    /// <summary>The integral of a product over the study, in closed form.</summary>
+    private double? Integral(Measurand first, Measurand second)
+    {
+        double sum = 0;
+        for (var s = 0; s < solution.Segments.Length; s++)
+        {
+            if (solution.Segments[s].Coefficients(first) is not { } a
+                || solution.Segments[s].Coefficients(second) is not { } b)
+            {
+                return null;
+            }
+
+            sum += GramIntegral.Form(gram(s), a, b);
+        }
+
+        return sum;
+    }
+}

@@ -1,0 +1,85 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Curves;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>Judges requirements.</summary>
+internal sealed class RequirementMeasurement(CurveBuilder curves, WindowTimes times, Infinities infinities)
+{
+    private const int MostStretches = 1_000_000;
+
+    /// <summary>The verdict; one that could not be judged does not hold, and its worst value is
+    /// null.</summary>
+    public RequirementResult Judge(Requirement requirement)
+    {
+        var line = curves.Solution.Circuit.Source.LineOf(requirement.Span.Start);
+        var (holds, worst, margin) = requirement.Bound switch
+        {
+            Limits limits => JudgeLimits(requirement, limits),
+            SettlesTo settles => JudgeSettling(requirement, settles),
+            _ => throw new System.Diagnostics.UnreachableException($"no verdict on {requirement.Bound}"),
+        };
+        return new RequirementResult(
+            requirement.Statement, requirement.Reason, requirement.Unit, line, holds, worst, margin);
+    }
+
+    private (bool Holds, TimedValue Worst, double? Margin) JudgeLimits(Requirement requirement, Limits limits)
+    {
+        if (times.Of(requirement.Window) is not { } window)
+        {
+            return NotJudged(requirement);
+        }
+
+        var from = curves.IsAccumulated(requirement.Quantity) ? window.From : 0;
+        if (curves.Of(requirement.Quantity, from: from) is not { } curve)
+        {
+            return NotJudged(requirement);
+        }
+
+        var (up, down) = infinities.Of(requirement.Quantity, window.From, window.To);
+        if ((limits.Upper is not null && up is not null) || (limits.Lower is not null && down is not null))
+        {
+            return (false, new TimedValue(null, (limits.Upper is null ? down : up) ?? down!.Value), null);
+        }
+
+        (TimedValue Worst, double Margin)? nearest = null;
+        if (limits.Upper is { } upper)
+        {
+            var found = ExtremeSearch.Greatest(curve, window.From, window.To, MostStretches);
+            nearest = (new TimedValue(found.Value, found.Time), upper - found.Value);
+        }
+
+        if (limits.Lower is { } lower)
+        {
+            var found = ExtremeSearch.Least(curve, window.From, window.To, MostStretches);
+            if (nearest is not { } other || found.Value - lower < other.Margin)
+            {
+                nearest = (new TimedValue(found.Value, found.Time), found.Value - lower);
+            }
+        }
+
+        var (worst, margin) = nearest!.Value;
+        return (margin >= 0, worst, margin);
+    }
+
+    /// <summary>From the stated instant on the quantity stays within the band about its target.</summary>
+    private (bool Holds, TimedValue Worst, double? Margin) JudgeSettling(Requirement requirement,
+        SettlesTo settles)
+    {
+        if (times.Of(new Window(settles.By, requirement.Window.To)) is not { } window
+            || curves.Of(requirement.Quantity) is not { } curve)
+        {
+            return NotJudged(requirement);
+        }
+
+        var band = settles.Within * Math.Abs(settles.Target);
+        var high = ExtremeSearch.Greatest(curve, window.From, window.To, MostStretches);
+        var low = ExtremeSearch.Least(curve, window.From, window.To, MostStretches);
+        var worst = high.Value - settles.Target > settles.Target - low.Value ? high : low;
+        var margin = band - Math.Abs(worst.Value - settles.Target);
+        return (margin >= 0, new TimedValue(worst.Value, worst.Time), margin);
+    }
+
+    private (bool Holds, TimedValue Worst, double? Margin) NotJudged(Requirement requirement) =>
+        (false, new TimedValue(null, times.Of(requirement.Window)?.From ?? curves.Solution.Until), null);
+}

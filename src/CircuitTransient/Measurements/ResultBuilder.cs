@@ -1,0 +1,101 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Checks;
+using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>Measures a solved study: from closed forms to every figure a user is told.</summary>
+public static class ResultBuilder
+{
+    /// <summary>Takes all measurements.</summary>
+    /// <param name="solution">The solved study.</param>
+    /// <param name="warnings">The warnings of the stages before.</param>
+    /// <param name="options">What was asked for beyond the file.</param>
+    /// <param name="cancellation">Stops the work.</param>
+    public static TransientResult Measure(
+        TransientSolution solution,
+        ImmutableArray<Diagnostic> warnings,
+        AnalysisOptions options,
+        CancellationToken cancellation = default)
+    {
+        var circuit = solution.Circuit;
+        var curves = new CurveBuilder(solution);
+        var times = new WindowTimes(solution);
+        var infinities = new Infinities(curves);
+        var energy = new StoredEnergy(curves);
+        var intervals = new IntervalMeasurement(solution, energy);
+        var events = new EventMeasurement(curves);
+        var observing = new ObservationMeasurement(curves, times, infinities, options);
+        var judging = new RequirementMeasurement(curves, times, infinities);
+        var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
+        var stresses = new PartStresses(curves, infinities, s => grams[s]);
+
+        var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
+            .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
+        var samples =
+            SampleTimes.Of(solution, options.SampleCount, observed.SelectMany(o => Peaks(o.Result)));
+        var observations = Waves(observed, solution, samples);
+        var parts = Enumerable.Range(0, circuit.Parts.Length)
+            .Select(i => Unless(stresses.Measure(i), cancellation)).ToImmutableArray();
+        var requirements =
+            circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation)).ToImmutableArray();
+        var (checks, notJudged) = SelfChecks.Run(curves, energy, s => grams[s]);
+        return new TransientResult(
+            circuit,
+            solution.Until,
+            solution.UntilReason,
+            [.. solution.Causes
+                .Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
+            [.. solution.Intervals.Select(intervals.Measure)],
+            [.. solution.Occurrences.Select(events.Measure)],
+            samples,
+            observations,
+            [],
+            requirements,
+            parts,
+            checks,
+            notJudged,
+            Notices.Of(solution, warnings, observations),
+            []);
+    }
+
+    private static ImmutableArray<ObservationResult> Waves(
+        (ObservationResult Result, ImmutableArray<Curve> Curves)[] observed,
+        TransientSolution solution,
+        ImmutableArray<double> samples)
+    {
+        var waves = Waveform.Of([.. observed.SelectMany(o => o.Curves)], solution, samples);
+        var blank = Enumerable.Repeat(double.NaN, samples.Length).ToImmutableArray();
+        var next = 0;
+        var filled = ImmutableArray.CreateBuilder<ObservationResult>();
+        foreach (var (result, curves) in observed)
+        {
+            if (curves.IsEmpty)
+            {
+                filled.Add(result with { Total = blank, ByCause =
+                    [.. result.Contributions.Select(_ => blank)] });
+                continue;
+            }
+
+            filled.Add(result with
+            {
+                Total = waves[next],
+                ByCause = [.. Enumerable.Range(next + 1, curves.Length - 1).Select(k => waves[k])],
+            });
+            next += curves.Length;
+        }
+
+        return filled.ToImmutable();
+    }
+
+    private static IEnumerable<double> Peaks(ObservationResult result) => [result.Max.Time, result.Min.Time];
+
+    private static T Unless<T>(T value, CancellationToken cancellation)
+    {
+        cancellation.ThrowIfCancellationRequested();
+        return value;
+    }
+}

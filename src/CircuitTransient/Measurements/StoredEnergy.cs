@@ -1,0 +1,101 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Equations;
+using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+
+namespace CircuitTransient.Measurements;
+
+/// <summary>The energy in the fields of all capacitors and coils, and what of it impulses lose.</summary>
+internal sealed class StoredEnergy(CurveBuilder curves)
+{
+    private readonly TransientSolution solution = curves.Solution;
+
+    /// <summary>Joules in all fields at the start of a segment, or at its end.</summary>
+    public double At(int segment, bool end)
+    {
+        var circuit = solution.Circuit;
+        double sum = 0;
+        for (var i = 0; i < circuit.Parts.Length; i++)
+        {
+            sum += circuit.Parts[i] switch
+            {
+                Capacitor c => c.Capacitance.Nominal / 2 * Square(Value(new VoltageAcross(i), segment, end)),
+                Inductor l => l.Inductance.Nominal / 2 * Square(Value(new CurrentThrough(i), segment, end)),
+                _ => 0,
+            };
+        }
+
+        foreach (var coupling in circuit.Couplings)
+        {
+            sum += (double)MutualInductances.Mutual(circuit, coupling)
+                * Value(new CurrentThrough(coupling.First), segment, end)
+                * Value(new CurrentThrough(coupling.Second), segment, end);
+        }
+
+        return sum;
+    }
+
+    /// <summary>Joules in all fields just before t = 0, as stated.</summary>
+    public double Stated()
+    {
+        var circuit = solution.Circuit;
+        double sum = 0;
+        foreach (var part in circuit.Parts)
+        {
+            sum += part switch
+            {
+                Capacitor { InitialVoltage: { } v } c => c.Capacitance.Nominal / 2 * Square(v.Nominal),
+                Inductor { InitialCurrent: { } i } l => l.Inductance.Nominal / 2 * Square(i.Nominal),
+                _ => 0,
+            };
+        }
+
+        return sum + circuit.Couplings.Sum(k => (double)MutualInductances.Mutual(circuit, k)
+            * Carried(circuit.Parts[k.First]) * Carried(circuit.Parts[k.Second]));
+    }
+
+    /// <summary>What the impulses at a segment's start lose: stored before, less stored after, and what the
+    /// sources
+    /// supply within the impulses.</summary>
+    public double LostAtStartOf(int segment)
+    {
+        var before = segment == 0 ? Stated() : At(segment - 1, end: true);
+        return before - At(segment, end: false) + SuppliedInImpulse(segment);
+    }
+
+    /// <summary>Joules that sources supply within the impulses at a segment's start: the charge at the
+    /// voltage just
+    /// after, the flux at the current just after.</summary>
+    public double SuppliedInImpulse(int segment)
+    {
+        double sum = 0;
+        for (var i = 0; i < solution.Circuit.Parts.Length; i++)
+        {
+            if (solution.Circuit.Parts[i] is VoltageSource or CurrentSource or DependentSource)
+            {
+                sum -= AbsorbedInImpulse(i, segment);
+            }
+        }
+
+        return sum;
+    }
+
+    private double AbsorbedInImpulse(int part, int segment)
+    {
+        var (voltage, current) = (new VoltageAcross(part), new CurrentThrough(part));
+        var charge = solution.Segments[segment].ImpulseAtStart(current);
+        var flux = solution.Segments[segment].ImpulseAtStart(voltage);
+        return (charge == 0 ? 0 : charge * Value(voltage, segment, end: false))
+            + (flux == 0 ? 0 : flux * Value(current, segment, end: false));
+    }
+
+    private double Value(Measurand quantity, int segment, bool end)
+    {
+        var piece = curves.Of(quantity)?.Pieces[segment];
+        return piece is null ? 0 : piece.ValueAt(end ? piece.Segment.Length : 0);
+    }
+
+    private static double Carried(Part part) => ((Inductor)part).InitialCurrent?.Nominal ?? 0;
+
+    private static double Square(double x) => x * x;
+}

@@ -1,0 +1,94 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Equations;
+using CircuitTransient.Numerics;
+
+namespace CircuitTransient.Solutions;
+
+/// <summary>A circuit with its switches in given positions, split into its spectral blocks. Made once for
+/// each set
+/// of positions and used for every interval that has them.</summary>
+public sealed class IntervalModel
+{
+    private readonly DoubleDoubleComplex[][][] drives;
+    private readonly Dictionary<Measurand, Projection> projections = [];
+
+    /// <summary>Splits a normal form.</summary>
+    public IntervalModel(NormalForm form, ImmutableArray<bool> isClosed)
+    {
+        Form = form;
+        IsClosed = isClosed;
+        Blocks = SpectralBlocks.Of(form.A).Blocks;
+        drives = new DoubleDoubleComplex[Blocks.Length][][];
+        for (var b = 0; b < Blocks.Length; b++)
+        {
+            var driven = Blocks[b].W.Times(form.B);
+            drives[b] = new DoubleDoubleComplex[form.Layout.InputCount][];
+            for (var input = 0; input < drives[b].Length; input++)
+            {
+                drives[b][input] = new DoubleDoubleComplex[driven.Rows];
+                for (var i = 0; i < driven.Rows; i++)
+                {
+                    drives[b][input][i] = driven[i, input];
+                }
+            }
+        }
+    }
+
+    /// <summary>The equations in normal form.</summary>
+    public NormalForm Form { get; }
+
+    /// <summary>For every part, whether it is a switch that is closed.</summary>
+    public ImmutableArray<bool> IsClosed { get; }
+
+    /// <summary>The blocks of poles.</summary>
+    public ImmutableArray<SpectralBlock> Blocks { get; }
+
+    /// <summary>How an input drives a block: W b, one number for each row of the block.</summary>
+    internal DoubleDoubleComplex[] Drive(int block, int input) => drives[block][input];
+
+    /// <summary>How a voltage, a current or the rate of change of one is made of the blocks.</summary>
+    public Projection Project(Measurand measurand)
+    {
+        lock (projections)
+        {
+            if (!projections.TryGetValue(measurand, out var projection))
+            {
+                projection = Projection.Of(this, Outputs.Of(Form, measurand));
+                projections.Add(measurand, projection);
+            }
+
+            return projection;
+        }
+    }
+}
+
+/// <summary>A linear output seen from the spectral blocks.</summary>
+/// <param name="Rows">c V for each block.</param>
+/// <param name="Output">The output itself.</param>
+public sealed record Projection(DoubleDoubleComplex[][] Rows, LinearOutput Output)
+{
+    internal static Projection Of(IntervalModel model, LinearOutput output)
+    {
+        var rows = new DoubleDoubleComplex[model.Blocks.Length][];
+        for (var b = 0; b < rows.Length; b++)
+        {
+            var v = model.Blocks[b].V;
+            rows[b] = new DoubleDoubleComplex[v.Columns];
+            for (var i = 0; i < v.Rows; i++)
+            {
+                if (output.State[i].IsZero)
+                {
+                    continue;
+                }
+
+                for (var j = 0; j < v.Columns; j++)
+                {
+                    rows[b][j] += output.State[i] * v[i, j];
+                }
+            }
+        }
+
+        return new Projection(rows, output);
+    }
+}

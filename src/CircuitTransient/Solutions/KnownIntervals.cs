@@ -1,0 +1,52 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Equations;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Solutions;
+
+/// <summary>The intervals whose switch positions follow from the text alone.</summary>
+public static class KnownIntervals
+{
+    /// <summary>An error for each set of positions, met at a known instant, whose equations have no unique
+    /// solution.</summary>
+    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit)
+    {
+        var layout = new NetworkLayout(circuit);
+        var timeline = new Timeline(circuit);
+        var models = new HashSet<string>();
+        var found = ImmutableArray.CreateBuilder<Diagnostic>();
+        double now = 0;
+        while (true)
+        {
+            var waiting = timeline.Waiting().Where(w => w.Event is { Trigger: AtInstant, CutAtMost: null })
+                .Select(w => (w.Reference, Due: timeline.Due(w.Reference, w.Event))).ToArray();
+            var next = waiting.Select(w => w.Due).DefaultIfEmpty(double.PositiveInfinity).Min();
+            if (next <= now)
+            {
+                timeline.Act(now, waiting.Where(w => w.Due <= now).Select(w => w.Reference),
+                    isDecidedByAnswer: false);
+                continue;
+            }
+
+            if (models.Add(string.Concat(timeline.IsClosed.Select(c => c ? '1' : '0')))
+                && !IsSolvable(layout, timeline.IsClosed))
+            {
+                found.Add(SingularDiagnosis.Describe(layout, timeline.IsClosed, now));
+            }
+
+            if (double.IsPositiveInfinity(next) || next >= circuit.Until)
+            {
+                return found.ToImmutable();
+            }
+
+            now = next;
+        }
+    }
+
+    private static bool IsSolvable(NetworkLayout layout, ImmutableArray<bool> isClosed)
+    {
+        DescriptorReduction.Reduce(layout, NetworkEquations.Assemble(layout, isClosed), out var singular);
+        return singular is null;
+    }
+}

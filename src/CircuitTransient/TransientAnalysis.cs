@@ -1,0 +1,60 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements;
+using CircuitTransient.Solutions;
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient;
+
+/// <summary>The whole program: a circuit's text in, an attributed transient out.</summary>
+public static class TransientAnalysis
+{
+    /// <summary>Reads, checks, solves and measures a circuit.</summary>
+    /// <param name="source">The circuit file's text.</param>
+    /// <param name="options">What is asked for beyond the file.</param>
+    /// <param name="readBeside">Reads a file that the circuit names, by its path relative to the circuit file.</param>
+    /// <param name="cancellation">Stops the work.</param>
+    /// <exception cref="OperationCanceledException">The work was stopped.</exception>
+    public static AnalysisOutcome Run(
+        SourceText source,
+        AnalysisOptions options,
+        Func<string, Outcome<SourceText>> readBeside,
+        CancellationToken cancellation = default)
+    {
+        var checkedCircuit = Check(source, readBeside);
+        if (!checkedCircuit.Succeeded)
+        {
+            return new Mistakes(checkedCircuit.Diagnostics);
+        }
+
+        var circuit = checkedCircuit.Value;
+        var solution = TransientSolver.Solve(circuit, CauseList.FromStart(circuit), cancellation);
+        return solution.Succeeded
+            ? new Solved(ResultBuilder.Measure(solution.Value, checkedCircuit.Diagnostics, options, cancellation))
+            : new NoUniqueSolution([.. checkedCircuit.Diagnostics, .. solution.Diagnostics]);
+    }
+
+    /// <summary>Reads and checks a circuit, every mistake in one go; solves nothing.</summary>
+    public static Outcome<Circuit> Check(SourceText source, Func<string, Outcome<SourceText>> readBeside)
+    {
+        var (syntax, mistakes) = CircuitParser.ParseWhatCanBe(source);
+        return CircuitChecker.Check(syntax, mistakes, readBeside);
+    }
+
+    /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have no
+    /// unique solution.</summary>
+    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) => KnownIntervals.FindUnsolvable(circuit);
+}
+
+/// <summary>What came of an analysis.</summary>
+public abstract record AnalysisOutcome;
+
+/// <summary>The circuit was solved.</summary>
+public sealed record Solved(TransientResult Result) : AnalysisOutcome;
+
+/// <summary>No circuit can be built from the text.</summary>
+public sealed record Mistakes(ImmutableArray<Diagnostic> Diagnostics) : AnalysisOutcome;
+
+/// <summary>Some interval has no unique solution.</summary>
+public sealed record NoUniqueSolution(ImmutableArray<Diagnostic> Diagnostics) : AnalysisOutcome;
