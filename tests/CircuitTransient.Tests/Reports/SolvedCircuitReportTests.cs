@@ -1,8 +1,6 @@
-using System.Text.Json;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports;
 using CircuitTransient.Text;
-using Json.Schema;
 
 namespace CircuitTransient.Tests.Reports;
 
@@ -28,11 +26,8 @@ public class SolvedCircuitReportTests
     private static readonly TransientResult Result = Solve();
 
     [Fact]
-    public void The_results_document_obeys_its_schema()
-    {
-        using var document = JsonDocument.Parse(JsonReport.Write(Result));
-        Assert.True(JsonSchema.FromText(JsonReport.Schema).Evaluate(document.RootElement).IsValid);
-    }
+    public void The_results_document_obeys_its_schema() =>
+        Assert.Empty(ResultsSchema.Faults(JsonReport.Write(Result)));
 
     [Fact]
     public void Every_row_of_the_waveforms_adds_up()
