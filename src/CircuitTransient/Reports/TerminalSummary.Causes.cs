@@ -22,9 +22,7 @@ public static partial class TerminalSummary
         var when = InstantWords.At(result, worst.Extreme.Time, worst.Extreme.Side);
         text.Heading(
             $"What makes the {Number(total, unit)} of {worst.Observation.Name} ({when}; {worst.Why})");
-        var apart = result.Circuit.StartsSettled ? " apart from them" : "";
-        text.Paragraph(
-            $"From the start: the sources, and what was stored at t = 0{apart}, carried through switchings");
+        text.Paragraph($"From the start: {FromStart(result)}, carried through every switching");
         WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without");
         if (DecidedByAnswer(result) is { } decided)
         {
@@ -44,22 +42,38 @@ public static partial class TerminalSummary
         }
     }
 
+    private static string FromStart(TransientResult result)
+    {
+        var sources = result.Causes.Any(cause => cause.Kind == CauseKind.Edge)
+            ? "the sources' pieces"
+            : "the sources";
+        var apart = result.Circuit.StartsSettled ? " apart from them" : "";
+        return $"{sources}, and what was stored at t = 0{apart}";
+    }
+
     private static ImmutableArray<Share> SharesFromStart(WorstObservation worst) =>
-    [
-        .. worst.Observation.Contributions.Select(c => new Share(
-            c.Cause,
-            worst.Share(c),
-            Math.Abs(c.OwnMin?.Value ?? 0) > Math.Abs(c.OwnMax?.Value ?? 0) ? c.OwnMin : c.OwnMax,
-            worst.AtMax ? c.MaxWithout : c.MinWithout)),
-    ];
+        [
+            .. worst.Observation.Contributions.Select(c => new Share(
+                c.Cause,
+                worst.Share(c),
+                Math.Abs(c.OwnMin?.Value ?? 0) > Math.Abs(c.OwnMax?.Value ?? 0) ? c.OwnMin : c.OwnMax,
+                worst.AtMax ? c.MaxWithout : c.MinWithout)),
+        ];
 
     private static void WriteShares(
-        SummaryText text, ImmutableArray<Share> shares, double total, string unit, string? without)
+        SummaryText text,
+        ImmutableArray<Share> shares,
+        double total,
+        string unit,
+        string? without)
     {
         var ordered = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
         var shown = ordered.Length <= MostCauses ? ordered : ordered[..(MostCauses - 1)];
         var largest = shown.Select(share => Math.Abs(share.Value ?? 0)).DefaultIfEmpty().Max();
-        var bars = new SignedBars(largest, shown.Any(share => share.Value < 0), shown.Any(s => s.Value > 0));
+        var bars = new SignedBars(
+            largest,
+            shown.Any(share => share.Value < 0),
+            shown.Any(s => s.Value > 0));
         var rows = shown.Select(share => Row(share, total, unit, bars, without is not null)).ToList();
         if (without is not null)
         {
@@ -81,17 +95,21 @@ public static partial class TerminalSummary
     }
 
     private static ImmutableArray<string> Row(
-        Share share, double total, string unit, SignedBars bars, bool withOwn) =>
-    [
-        share.Cause,
-        Signed(share.Value, unit),
-        PercentOf(share.Value, total),
-        bars.Of(share.Value ?? 0),
-        withOwn && share.Own is { Value: { } own, Time: var time }
-            ? $"{Number(own, unit)} at {Number(time, "s")}"
-            : "",
-        withOwn && share.Without is { } without ? Number(without.Value, unit) : "",
-    ];
+        Share share,
+        double total,
+        string unit,
+        SignedBars bars,
+        bool withOwn) =>
+        [
+            share.Cause,
+            Signed(share.Value, unit),
+            PercentOf(share.Value, total),
+            bars.Of(share.Value ?? 0),
+            withOwn && share.Own is { Value: { } own, Time: var time }
+                ? $"{Number(own, unit)} at {Number(time, "s")}"
+                : "",
+            withOwn && share.Without is { } without ? Number(without.Value, unit) : "",
+        ];
 
     // Causes whose magnitudes sum to over three times the total are shown as a group with their difference.
     private static string? Cancelling(ImmutableArray<Share> shares, double total, string unit)
@@ -110,16 +128,17 @@ public static partial class TerminalSummary
     private static string Group(Share[] shares, string unit)
     {
         var largest = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
-        var names = largest.Length <= 3
-            ? string.Join(" and ", largest.Select(share => share.Cause))
-            : $"{largest[0].Cause}, {largest[1].Cause} and {largest.Length - 2} more";
+        var names =
+            largest.Length <= 3
+                ? string.Join(" and ", largest.Select(share => share.Cause))
+                : $"{largest[0].Cause}, {largest[1].Cause} and {largest.Length - 2} more";
         return $"{names} {Number(Math.Abs(shares.Sum(share => share.Value ?? 0)), unit)}";
     }
 
     private static string? Driving(TransientResult result, SinceEvent since)
     {
-        var switching = result.Events
-            .FirstOrDefault(e => e.Time == since.Time && InstantWords.Name(e) == since.Event);
+        var switching = result.Events.FirstOrDefault(e =>
+            e.Time == since.Time && InstantWords.Name(e) == since.Event);
         return switching switch
         {
             { Closes: true, VoltageBefore: { } voltage } =>
@@ -132,7 +151,8 @@ public static partial class TerminalSummary
 
     private static string? DecidedByAnswer(TransientResult result)
     {
-        var decided = result.Circuit.Parts.OfType<Switch>()
+        var decided = result
+            .Circuit.Parts.OfType<Switch>()
             .Where(s => s.Events.Any(e => e.CutAtMost is not null || e.Trigger is WhenCrosses))
             .Select(s => s.Name)
             .ToArray();
@@ -147,14 +167,17 @@ public static partial class TerminalSummary
 
     private static string Percent(double fraction)
     {
-        var percent = 100 * fraction;
+        var percent = Math.Round(100 * fraction, 1) + 0.0; // never a negative zero
         var digits = Math.Abs(percent) >= 1000 ? "0" : "0.0";
         var text = percent.ToString(digits, CultureInfo.InvariantCulture);
         return text + " %";
     }
 
     private sealed record Share(
-        string Cause, double? Value, TimedValue? Own = null, TimedValue? Without = null);
+        string Cause,
+        double? Value,
+        TimedValue? Own = null,
+        TimedValue? Without = null);
 
     /// <summary>Bars to both sides of a common zero, in half cells.</summary>
     private sealed record SignedBars(double Largest, bool HasNegative, bool HasPositive)

@@ -110,7 +110,7 @@ public static partial class TerminalSummary
         var when = InstantWords.At(result, extreme.Time, extreme.Side);
         if (observation.EndsRising && extreme == observation.Greatest)
         {
-            when += "; still rising at the end: a longer study shows more";
+            when += "; still rising at the end";
         }
 
         // The bound is owed within 1e-9 of the value; where it fell short, the reader is told.

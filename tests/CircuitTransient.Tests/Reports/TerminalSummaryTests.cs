@@ -49,7 +49,7 @@ public class TerminalSummaryTests
 
         What makes the 129.3 A of current through Ls (at 1.802 s, 1.500 ms after Kmain closes; the
         requirement exceeded most)
-          From the start: the sources, and what was stored at t = 0, carried through switchings
+          From the start: the sources, and what was stored at t = 0, carried through every switching
                                                                          its own peak  max without
             Supply               +150.2 A  116.1 %        ██████   150.2 A at 1.802 s     -20.88 A
             Cbus initial charge  -20.88 A  -16.1 %       █        -20.88 A at 1.802 s      150.2 A

@@ -9,18 +9,13 @@ namespace CircuitTransient.Measurements.Verification;
 /// judges.</summary>
 public sealed class AllAtOnceSolution
 {
-    private readonly Circuit circuit;
-    private readonly StorageLayout storage;
-    private readonly InputModel inputs;
-    private readonly ImmutableArray<Segment> segments;
-
     private AllAtOnceSolution(
         Circuit circuit, StorageLayout storage, InputModel inputs, ImmutableArray<Segment> segments,
         double until, NotJudged? rest)
     {
-        (this.circuit, this.storage, this.inputs, this.segments) = (circuit, storage, inputs, segments);
+        (Circuit, Storage, Inputs, Segments) = (circuit, storage, inputs, segments);
         (Until, Rest) = (until, rest);
-        EstimatedError = segments.Sum(segment => segment.Propagator.ErrorOver(segment.End - segment.Start));
+        EstimatedError = Segments.Sum(segment => segment.Propagator.ErrorOver(segment.End - segment.Start));
     }
 
     /// <summary>Up to which instant, in seconds, there are values.</summary>
@@ -33,8 +28,17 @@ public sealed class AllAtOnceSolution
     /// propagation.</summary>
     public double EstimatedError { get; }
 
-    /// <summary>Number of spans between which neither a switch acts nor a source bends.</summary>
-    internal int SegmentCount => segments.Length;
+    /// <summary>The circuit solved.</summary>
+    internal Circuit Circuit { get; }
+
+    /// <summary>Its stored quantities.</summary>
+    internal StorageLayout Storage { get; }
+
+    /// <summary>Its sources.</summary>
+    internal InputModel Inputs { get; }
+
+    /// <summary>The spans in which no switch acts and no source bends.</summary>
+    internal ImmutableArray<Segment> Segments { get; }
 
     /// <summary>Solves a study.</summary>
     /// <param name="initial">For each part the voltage of a capacitor or the current of a coil at t = 0⁻;
@@ -93,9 +97,9 @@ public sealed class AllAtOnceSolution
 
         var p = segment.Propagator;
         var row = p.Impulses(segment.Before, segment.States);
-        var jump = p.Stored(segment.States.Plus(-DoubleDouble.One, segment.Before), storage.Count);
+        var jump = p.Stored(segment.States.Plus(-DoubleDouble.One, segment.Before), Storage.Count);
         var layout = segment.Equations.Unknowns;
-        return new CircuitReading(circuit, layout, storage, i => row[0, i], [], [.. jump], _ => 0)
+        return new CircuitReading(Circuit, layout, Storage, i => row[0, i], [], [.. jump], _ => 0)
             .Value(measurand) ?? double.NaN;
     }
 
@@ -108,8 +112,8 @@ public sealed class AllAtOnceSolution
             return null;
         }
 
-        var stored = segment.Propagator.Stored(segment.StatesAt(time), storage.Count);
-        return [.. storage.IndexOf.Select(index => index < 0 ? 0 : (double)stored[index])];
+        var stored = segment.Propagator.Stored(segment.StatesAt(time), Storage.Count);
+        return [.. Storage.IndexOf.Select(index => index < 0 ? 0 : (double)stored[index])];
     }
 
     /// <summary>The energy of all fields at an instant, joules; null past <see cref="Until"/>.</summary>
@@ -118,25 +122,22 @@ public sealed class AllAtOnceSolution
             ? (double)Reading(segment, segment.StatesAt(time)).StoredEnergy()
             : null;
 
-    /// <summary>A span between switchings and source corners.</summary>
-    internal Segment SegmentOf(int index) => segments[index];
-
     private CircuitReading Reading(Segment segment, SplitMatrix states)
     {
         var p = segment.Propagator;
         var unknowns = p.Unknowns(states);
-        var all = p.Stored(states, storage.Count + inputs.StateCount);
+        var all = p.Stored(states, Storage.Count + Inputs.StateCount);
         return new CircuitReading(
-            circuit, segment.Equations.Unknowns, storage, i => unknowns[0, i], [.. all[..storage.Count]],
-            [.. p.Stored(p.Rate(states), storage.Count)], part => SourceValue(part, all));
+            Circuit, segment.Equations.Unknowns, Storage, i => unknowns[0, i], [.. all[..Storage.Count]],
+            [.. p.Stored(p.Rate(states), Storage.Count)], part => SourceValue(part, all));
     }
 
     private double SourceValue(int part, DoubleDouble[] states)
     {
         DoubleDouble sum = 0;
-        foreach (var group in inputs.Groups)
+        foreach (var group in Inputs.Groups)
         {
-            sum += group.Part == part ? states[storage.Count + group.First] : 0;
+            sum += group.Part == part ? states[Storage.Count + group.First] : 0;
         }
 
         return (double)sum;
@@ -149,11 +150,11 @@ public sealed class AllAtOnceSolution
             return null;
         }
 
-        var (low, high) = (0, segments.Length);
+        var (low, high) = (0, Segments.Length);
         while (low < high)
         {
             var middle = (low + high) / 2;
-            var start = segments[middle].Start;
+            var start = Segments[middle].Start;
             if (start < time || (start == time && !before))
             {
                 low = middle + 1;
@@ -164,6 +165,6 @@ public sealed class AllAtOnceSolution
             }
         }
 
-        return segments.Length == 0 ? null : segments[Math.Max(low - 1, 0)];
+        return Segments.Length == 0 ? null : Segments[Math.Max(low - 1, 0)];
     }
 }

@@ -24,6 +24,15 @@ internal sealed record DescriptorEquations(
         Circuit circuit, StorageLayout storage, ImmutableArray<bool> closed, bool resistorsAsBranches) =>
         new Stamps(circuit, storage, UnknownLayout.Of(circuit, closed, resistorsAsBranches)).Equations();
 
+    /// <summary>The elements of E, to be added where several share a place.</summary>
+    public IEnumerable<MatrixElement> StorageElements() =>
+        from element in Storage.Values
+        from row in StorageRows
+        where row.Index == element.Row
+        from column in StorageColumns
+        where column.Index == element.Column
+        select new MatrixElement(row.Place, column.Place, element.Value * (row.Sign * column.Sign));
+
     private sealed class Stamps(Circuit circuit, StorageLayout storage, UnknownLayout unknowns)
     {
         private readonly List<MatrixElement> conductances = [];

@@ -67,18 +67,9 @@ internal sealed record ShiftedSolve(double Shift, SplitMatrix Unknowns, SplitMat
             system[element.Row, element.Column] += element.Value;
         }
 
-        foreach (var element in equations.Storage.Values)
+        foreach (var element in equations.StorageElements())
         {
-            foreach (var row in equations.StorageRows)
-            {
-                foreach (var column in equations.StorageColumns)
-                {
-                    if (row.Index == element.Row && column.Index == element.Column)
-                    {
-                        system[row.Place, column.Place] += element.Value * (shift * row.Sign * column.Sign);
-                    }
-                }
-            }
+            system[element.Row, element.Column] += element.Value * shift;
         }
 
         foreach (var rate in inputs.Rates())

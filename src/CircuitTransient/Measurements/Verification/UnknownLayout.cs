@@ -24,7 +24,7 @@ internal sealed record UnknownLayout(
     public static UnknownLayout Of(Circuit circuit, ImmutableArray<bool> closed, bool resistorsAsBranches)
     {
         var kinds = Conductions(circuit, closed);
-        var islands = new DisjointSets(circuit.Nodes.Length);
+        var islands = new NodeSets(circuit.Nodes.Length);
         for (var part = 0; part < kinds.Length; part++)
         {
             var p = circuit.Parts[part];
@@ -88,7 +88,7 @@ internal sealed record UnknownLayout(
     private static ImmutableArray<Conduction> Conductions(Circuit circuit, ImmutableArray<bool> closed)
     {
         var kinds = new Conduction[circuit.Parts.Length];
-        var contacts = new DisjointSets(circuit.Nodes.Length);
+        var contacts = new NodeSets(circuit.Nodes.Length);
         var hasLoop = false;
         for (var part = 0; part < kinds.Length; part++)
         {
@@ -118,7 +118,7 @@ internal sealed record UnknownLayout(
 
     private static bool StaysJoinedWithout(Circuit circuit, Conduction[] kinds, int left)
     {
-        var contacts = new DisjointSets(circuit.Nodes.Length);
+        var contacts = new NodeSets(circuit.Nodes.Length);
         for (var part = 0; part < kinds.Length; part++)
         {
             if (part != left

@@ -1,12 +1,12 @@
 namespace CircuitTransient.Measurements.Verification;
 
 /// <summary>Sets of nodes that grow together.</summary>
-internal sealed class DisjointSets
+internal sealed class NodeSets
 {
     private readonly int[] parent;
 
     /// <summary>Each node alone.</summary>
-    public DisjointSets(int count)
+    public NodeSets(int count)
     {
         parent = new int[count];
         for (var i = 0; i < count; i++)
