@@ -3,7 +3,8 @@ using CircuitTransient.Measurements.Curves;
 
 namespace CircuitTransient.Measurements;
 
-/// <summary>The values of all integrals among a set of curves, moved forward together from instant to instant, so
+/// <summary>The values of all integrals among a set of curves, moved forward together from instant to
+/// instant, so
 /// that the functions of time are evaluated once for all of them.</summary>
 internal sealed class GatheredIntegrals
 {
@@ -16,7 +17,8 @@ internal sealed class GatheredIntegrals
     public GatheredIntegrals(ImmutableArray<Curve> curves)
     {
         this.curves = curves;
-        integrals = [.. Enumerable.Range(0, curves.Length).Where(c => curves[c].Pieces[0] is AccumulatedPiece)];
+        integrals =
+            [.. Enumerable.Range(0, curves.Length).Where(c => curves[c].Pieces[0] is AccumulatedPiece)];
         values = new double?[curves.Length];
     }
 

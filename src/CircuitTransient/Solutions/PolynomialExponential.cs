@@ -3,15 +3,18 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>One of a mode's functions as e^(μ τ) times a polynomial in u = τ/h over a segment of length h: exact for
-/// simple poles and forced functions, a series that ends below rounding for joined ones, since (p − μ) h is below 1.</summary>
+/// <summary>One of a mode's functions as e^(μ τ) times a polynomial in u = τ/h over a segment of length h:
+/// exact for
+/// simple poles and forced functions, a series that ends below rounding for joined ones, since (p − μ) h is
+/// below 1.</summary>
 /// <param name="Exponent">μ h.</param>
 /// <param name="Powers">The polynomial's coefficients, from u⁰ up.</param>
 internal readonly record struct PolynomialExponential(Complex Exponent, Complex[] Powers)
 {
     private const int SeriesLength = 18; // 1/19! is below 1e-17
 
-    /// <summary>The functions of a mode with one row, in the order of its carriers; null for a block.</summary>
+    /// <summary>The functions of a mode with one row, in the order of its carriers; null for a
+    /// block.</summary>
     public static PolynomialExponential[]? Of(Mode mode, DoubleDouble h)
     {
         if (mode.Order == 1)

@@ -2,12 +2,15 @@ using System.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>Jₖ(w) = ∫₀¹ uᵏ e^(w u) du for k = 0 … n: what integrals of polynomials times exponentials are made of.</summary>
+/// <summary>Jₖ(w) = ∫₀¹ uᵏ e^(w u) du for k = 0 … n: what integrals of polynomials times exponentials are
+/// made of.</summary>
 internal static class PowerMoments
 {
     /// <summary>Fills in the moments. Where |w| exceeds the highest order the recursion
-    /// Jₖ = (e^w − k Jₖ₋₁)/w runs upwards, since each step shrinks the error; else it runs downwards from the highest,
-    /// which Jₙ = e^w Σ (−w)ʲ n!/(n + j + 1)! gives (for Re w &gt; 0 Σ wʲ/(j! (n + j + 1))): integration by parts,
+    /// Jₖ = (e^w − k Jₖ₋₁)/w runs upwards, since each step shrinks the error; else it runs downwards from the
+    /// highest,
+    /// which Jₙ = e^w Σ (−w)ʲ n!/(n + j + 1)! gives (for Re w &gt; 0 Σ wʲ/(j! (n + j + 1))): integration by
+    /// parts,
     /// all terms of falling size.</summary>
     public static void Fill(Complex w, Span<Complex> moments)
     {

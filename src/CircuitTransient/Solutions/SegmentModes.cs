@@ -149,9 +149,11 @@ internal sealed class SegmentModes
         }
     }
 
-    /// <summary>e^(p τ) = e^(μ τ) + (p − μ) e[p, μ]: beside a joined exponential the pole is written so, and a network
+    /// <summary>e^(p τ) = e^(μ τ) + (p − μ) e[p, μ]: beside a joined exponential the pole is written so, and
+    /// a network
     /// at rest is a constant to the last digit instead of two motions that cancel.</summary>
-    private void AddBesideForced(DoubleDoubleComplex[][] sums, int b, Forcing kept, DoubleDoubleComplex weight)
+    private void AddBesideForced(DoubleDoubleComplex[][] sums, int b, Forcing kept,
+        DoubleDoubleComplex weight)
     {
         IsJoined(b, kept, out var joined);
         var mode = Basis.Modes[joined];

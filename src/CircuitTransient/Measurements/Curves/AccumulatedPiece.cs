@@ -79,7 +79,8 @@ public sealed class AccumulatedPiece : CurvePiece
         double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope)
     {
         var growth = Math.Max(
-            rate.UpperAround(1, half, tau, middle, envelope), rate.UpperAround(-1, half, tau, middle, envelope));
+            rate.UpperAround(1, half, tau, middle, envelope),
+                rate.UpperAround(-1, half, tau, middle, envelope));
         return (sign * ValueAt(tau, middle)) + (half * growth);
     }
 }

@@ -35,7 +35,8 @@ public abstract class CurvePiece(SegmentTable table)
         double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
         ReadOnlySpan<double> envelope);
 
-    /// <summary>An upper bound of sign × value over a stretch that reaches half a width to either side of τ.</summary>
+    /// <summary>An upper bound of sign × value over a stretch that reaches half a width to either side of
+    /// τ.</summary>
     public abstract double UpperAround(
         double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope);
 

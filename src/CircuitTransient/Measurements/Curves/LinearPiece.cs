@@ -63,7 +63,8 @@ public sealed class LinearPiece : CurvePiece
         ReadOnlySpan<double> envelope)
     {
         var split = Split(width, first, last, envelope);
-        return Math.Max(sign * split.First, sign * split.Last) + (width * width / 8 * split.Bend) + split.Fast;
+        return Math
+            .Max(sign * split.First, sign * split.Last) + (width * width / 8 * split.Bend) + split.Fast;
     }
 
     /// <inheritdoc/>
@@ -71,10 +72,12 @@ public sealed class LinearPiece : CurvePiece
         double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope)
     {
         var split = Split(2 * half, middle, middle, envelope);
-        return (sign * split.First) + (half * Math.Abs(split.Slope)) + (half * half / 2 * split.Bend) + split.Fast;
+        return (sign * split.First) + (half * Math
+            .Abs(split.Slope)) + (half * half / 2 * split.Bend) + split.Fast;
     }
 
-    /// <summary>Parts the modes into slow ones, which a straight line follows better than their amplitude bounds
+    /// <summary>Parts the modes into slow ones, which a straight line follows better than their amplitude
+    /// bounds
     /// them over the stretch, and fast ones.</summary>
     internal SlowAndFast Split(
         double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope)

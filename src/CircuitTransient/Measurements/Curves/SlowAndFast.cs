@@ -12,6 +12,7 @@ internal readonly record struct SlowAndFast(
     double First, double Last, double Slope, double Size, double Rate, double Bend, double Fast)
 {
     /// <summary>With one more slow mode.</summary>
-    public SlowAndFast WithSlow(double first, double last, double slope, double size, double rate, double bend) => new(
+    public SlowAndFast WithSlow(double first, double last, double slope, double size, double rate,
+        double bend) => new(
         First + first, Last + last, Slope + slope, Size + size, Rate + rate, Bend + bend, Fast);
 }
