@@ -73,6 +73,10 @@ public sealed class NetworkLayout
     /// <summary>The input of an independent source, or of what a capacitor or inductor stores.</summary>
     public int Input(int part) => inputs[part];
 
+    /// <summary>What a part stores by: a capacitor's voltage, a coil's current.</summary>
+    public Measurand Held(int part) =>
+        Circuit.Parts[part] is Capacitor ? new VoltageAcross(part) : new CurrentThrough(part);
+
     private static ImmutableArray<int> Indices(Circuit circuit, Func<Part, bool> isWanted) =>
         [.. Enumerable.Range(0, circuit.Parts.Length).Where(i => isWanted(circuit.Parts[i]))];
 }

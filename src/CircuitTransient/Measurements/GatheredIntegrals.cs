@@ -1,5 +1,5 @@
 using System.Collections.Immutable;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Measurements;
 

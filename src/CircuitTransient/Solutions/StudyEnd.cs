@@ -11,7 +11,7 @@ internal static class StudyEnd
     /// of the
     /// slowest undamped one, counted from the last event or source corner; null where neither
     /// exists.</summary>
-    public static (double End, string Reason)? Of(Circuit circuit, IntervalModel model, double now)
+    public static (double Time, string? Reason)? Of(Circuit circuit, IntervalModel model, double now)
     {
         var start = Math.Max(now, LastCorner(circuit));
         double longest = 0;

@@ -37,6 +37,9 @@ internal sealed class Timeline
         }
     }
 
+    /// <summary>Whether an event's instant does not depend on the answer.</summary>
+    public static bool IsFixed(SwitchEvent declared) => declared is { Trigger: AtInstant, CutAtMost: null };
+
     /// <summary>The instant of a fixed event, or from which a conditional one is watched; infinity while it
     /// hangs on
     /// an event that has not taken place.</summary>

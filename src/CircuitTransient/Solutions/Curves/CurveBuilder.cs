@@ -2,9 +2,8 @@ using System.Collections.Immutable;
 using System.Diagnostics;
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>Makes curves of measured quantities from a solution.</summary>
 public sealed class CurveBuilder
@@ -50,17 +49,13 @@ public sealed class CurveBuilder
         return curve;
     }
 
-    /// <summary>Whether a quantity is a sum of products, so that causes have a joint part in it.</summary>
-    public static bool IsQuadratic(Measurand measurand) =>
-        measurand is PowerIn or EnergyIn or CouplingEnergy or JouleIntegral;
-
     private Curve? Build(Measurand measurand, Share share, int cause, double from)
     {
         var pieces = ImmutableArray.CreateBuilder<CurvePiece>(tables.Length);
         double gathered = 0;
         for (var s = 0; s < tables.Length; s++)
         {
-            if (!IsQuadratic(measurand))
+            if (!QuantityFactors.IsQuadratic(measurand))
             {
                 if (Linear(s, measurand, share, cause) is not { } linear)
                 {
@@ -93,12 +88,8 @@ public sealed class CurveBuilder
 
     /// <summary>Whether a quantity is an integral over time: the energy of what does not store, a Joule
     /// integral.</summary>
-    public bool IsAccumulated(Measurand measurand) => measurand switch
-    {
-        JouleIntegral => true,
-        EnergyIn e => solution.Circuit.Parts[e.Part] is not (Capacitor or Inductor),
-        _ => false,
-    };
+    public bool IsAccumulated(Measurand measurand) =>
+        QuantityFactors.OfAny(solution.Circuit, measurand) is { IsIntegrated: true };
 
     private LinearPiece? Linear(int s, Measurand measurand, Share share, int cause)
     {
@@ -128,7 +119,7 @@ public sealed class CurveBuilder
 
     private QuadraticPiece? Products(int s, Measurand measurand, Share share, int cause)
     {
-        var (factor, first, second) = Factors(measurand);
+        var (factor, first, second, _) = QuantityFactors.OfAny(solution.Circuit, measurand)!;
         var terms = ImmutableArray.CreateBuilder<ProductTerm>();
         if (share != Share.Joint)
         {
@@ -160,32 +151,4 @@ public sealed class CurveBuilder
             return true;
         }
     }
-
-    private (double Factor, Measurand First, Measurand Second) Factors(Measurand measurand)
-    {
-        var circuit = solution.Circuit;
-        switch (measurand)
-        {
-            case PowerIn p:
-                return (p.Delivered ? -1 : 1, new VoltageAcross(p.Part), new CurrentThrough(p.Part));
-            case JouleIntegral j:
-                return (1, new CurrentThrough(j.Part), new CurrentThrough(j.Part));
-            case CouplingEnergy k:
-                var coupling = circuit.Couplings[k.Coupling];
-                return ((double)MutualInductances.Mutual(circuit, coupling),
-                    new CurrentThrough(coupling.First), new CurrentThrough(coupling.Second));
-            case EnergyIn e when circuit.Parts[e.Part] is Capacitor c:
-                return (Sign(e) * c.Capacitance.Nominal / 2, new VoltageAcross(e.Part),
-                    new VoltageAcross(e.Part));
-            case EnergyIn e when circuit.Parts[e.Part] is Inductor l:
-                return (Sign(e) * l.Inductance.Nominal / 2, new CurrentThrough(e.Part),
-                    new CurrentThrough(e.Part));
-            case EnergyIn e:
-                return (Sign(e), new VoltageAcross(e.Part), new CurrentThrough(e.Part));
-            default:
-                throw new UnreachableException($"{measurand} is no product");
-        }
-    }
-
-    private static double Sign(EnergyIn energy) => energy.Delivered ? -1 : 1;
 }

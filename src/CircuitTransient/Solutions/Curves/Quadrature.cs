@@ -1,6 +1,5 @@
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>The instants and weights that integrate products of a segment's functions to rounding: panels
 /// that the

@@ -1,4 +1,4 @@
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>Nodes and weights of the rules of Gauss and Legendre with four and ten points, positive
 /// half.</summary>

@@ -1,4 +1,4 @@
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A voltage, a current, or the rate of change of one.</summary>
 public sealed class LinearPiece : CurvePiece

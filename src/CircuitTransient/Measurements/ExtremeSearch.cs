@@ -1,4 +1,6 @@
-namespace CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
+
+namespace CircuitTransient.Measurements;
 
 /// <summary>A global extreme found on a curve.</summary>
 /// <param name="Time">In seconds.</param>
