@@ -7,11 +7,12 @@ public static class FrancisIteration
 {
     private const double UnitRoundoff = 2.465190328815662e-32; // 2⁻¹⁰⁵
     private const double Tiny = 1e-290; // below any entry that a balanced matrix can mean
-    private const int StepsAnEigenvalue = 1000; // two to four are usual, a hundred with dozens of equal chains
+    // two to four are usual, a hundred with dozens of equal chains
+    private const int StepsAnEigenvalue = 1000;
 
-    // Many equal chains of poles make the iteration wander just above rounding. So after this many steps an entry is
-    // judged by its neighbours only, no longer by their gap; then by the norm; then by n times the norm, which is
-    // what the reduction's own rounding comes to.
+    // Many equal chains of poles make the iteration wander just above rounding. So after this many steps an
+    // entry is judged by its neighbours only, no longer by their gap; then by the norm; then by n times the
+    // norm, which is what the reduction's own rounding comes to.
     private const int StrictSteps = 15;
     private const int LocalSteps = 30;
     private const int NormSteps = 60;
