@@ -57,8 +57,10 @@ internal sealed class NodeTable
     public int? Find(NameSyntax name, Scope scope) =>
         names.Find(scope.Node(name, findings), name.Span, out var index) ? index : null;
 
-    /// <summary>The node nearest in name to another, or null.</summary>
-    public string? NearestTo(int node) => NearestName.Find(this[node], names.Names);
+    /// <summary>The node nearest in name to another, or null; a node that hangs loose itself is
+    /// none.</summary>
+    public string? NearestTo(int node) =>
+        NearestName.Find(this[node], names.Names.Where((_, other) => touches[other].Count > 1));
 
     internal sealed record Touch(int Count, TextSpan Span, string FirstPart = "");
 }
