@@ -20,7 +20,8 @@ public sealed record SolveOptions(
     public string CommandFor(string file)
     {
         var name = Path.GetFileName(file);
-        var quoted = name.All(c => char.IsAsciiLetterOrDigit(c) || c is '.' or '-' or '_') ? name : $"\"{name}\"";
+        var isPlain = name.All(c => char.IsAsciiLetterOrDigit(c) || c is '.' or '-' or '_');
+        var quoted = isPlain ? name : $"\"{name}\"";
         var at = At.Instants.Any() ? $" --at \"{At.Source.Content}\"" : "";
         var samples = SampleCount == UsualSampleCount ? "" : $" --samples {SampleCount}";
         return $"circuit-transient solve {quoted}{at}{samples}";

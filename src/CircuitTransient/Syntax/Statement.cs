@@ -25,7 +25,7 @@ public sealed record IndexSyntax(string? Counter, int Offset, TextSpan Span);
 
 /// <summary>A statement that could not be read, kept so that nothing is said about
 /// names it would have made.</summary>
-/// <param name="KeyWord">Its first word: <c>resistor</c>, <c>value</c>.</param>
+/// <param name="KeyWord">Its first word, or the key word that one most likely meant: <c>resistor</c>.</param>
 /// <param name="Name">The name it gives, if that far it could be read.</param>
 /// <param name="Mentions">Every name and whole number in it: nodes it may
 /// touch, parts it may speak of.</param>

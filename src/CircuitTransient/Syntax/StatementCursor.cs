@@ -166,11 +166,16 @@ internal sealed class StatementCursor(SourceText source, List<Token> tokens, Lis
         return span.Length <= most ? source[span] : source[new TextSpan(span.Start, most)] + "…";
     }
 
-    /// <summary>The first word of the statement and, where it can be told, the name it gives.</summary>
+    /// <summary>The first word of the statement, or the key word it most likely meant, and, where it can be
+    /// told, the name it gives.</summary>
     public (string KeyWord, NameSyntax? Name) Introduction()
     {
-        var keyWord = tokens[0].Kind == TokenKind.Word ? Shown(tokens[0]) : "";
-        var place = keyWord == "place" ? FindWord("as") + 1 : IsDependent() ? 2 : 1;
+        var first = tokens[0].Kind == TokenKind.Word ? Shown(tokens[0]) : "";
+        var keyWord = StatementKeyWords.All.Contains(first)
+            ? first
+            : NearestName.Find(first, StatementKeyWords.All) ?? first;
+        var isSecond = keyWord == "dependent" && tokens.Count > 1 && TextOf(tokens[1]) is "source";
+        var place = keyWord == "place" ? FindWord("as") + 1 : isSecond ? 2 : 1;
         var isNamed = keyWord is not ("circuit" or "note" or "reference" or "observe" or "require" or "start"
             or "until" or "repeat" or "end");
         if (!isNamed || place == 0 || place >= tokens.Count)
@@ -191,9 +196,6 @@ internal sealed class StatementCursor(SourceText source, List<Token> tokens, Lis
         .Select(t => t.Kind == TokenKind.Quoted
             ? source[new TextSpan(t.Start + 1, t.Length - 2)]
             : source[t.Span]);
-
-    private bool IsDependent() => tokens.Count > 1 && TextOf(tokens[0]) is "dependent"
-        && TextOf(tokens[1]) is "source";
 
     private int FindWord(string word) =>
         tokens.FindIndex(t => t.Kind == TokenKind.Word && TextOf(t).SequenceEqual(word));

@@ -22,13 +22,9 @@ public static class UnitAdvice
     /// <summary>Advice for a word that stands where a unit should, behind a number.</summary>
     public static string For(string word, string number)
     {
-        foreach (var (name, symbol) in words)
+        if ((SymbolOf(word) ?? PrefixedSymbolOf(word)) is { } symbol)
         {
-            if (word.Equals(name, StringComparison.OrdinalIgnoreCase)
-                || word.Equals(name + "s", StringComparison.OrdinalIgnoreCase))
-            {
-                return $"write `{number} {symbol}`";
-            }
+            return $"write `{number} {symbol}`";
         }
 
         if (SameButForCase(word) is { } unit)
@@ -47,6 +43,28 @@ public static class UnitAdvice
         return $"units: {string.Join(' ', Unit.Symbols)} min h deg %; prefixes: {Prefix.All}; "
             + $"a product: `{number} * {word}`";
     }
+
+    /// <summary>The symbol of a unit written out.</summary>
+    private static string? SymbolOf(string word)
+    {
+        foreach (var (name, symbol) in words)
+        {
+            if (word.Equals(name, StringComparison.OrdinalIgnoreCase)
+                || word.Equals(name + "s", StringComparison.OrdinalIgnoreCase))
+            {
+                return symbol;
+            }
+        }
+
+        return null;
+    }
+
+    /// <summary>The same with a prefix before it: <c>kOhms</c>, <c>msec</c>.</summary>
+    private static string? PrefixedSymbolOf(string word) =>
+        word.Length > 1 && Prefix.TryRead(word[0], out var exponent) && SymbolOf(word[1..]) is { } symbol
+            && Unit.Symbols.Contains(symbol)
+            ? Prefix.Write(exponent) + symbol
+            : null;
 
     /// <summary>The unit meant by one in the wrong case: <c>KOHM</c>, <c>uf</c>, <c>HZ</c>.</summary>
     private static string? SameButForCase(string word)

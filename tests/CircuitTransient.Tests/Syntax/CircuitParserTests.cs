@@ -46,6 +46,15 @@ public class CircuitParserTests
             Read("repeat as k\nresistor R1 from a to b : 3 Ω\nend").Syntax.Statements));
 
     [Fact]
+    public void A_misspelt_key_word_stands_for_the_one_it_meant()
+    {
+        var (syntax, diagnostics) = Read("repaet 3 as k\nresistor R1 from a to b : 3 Ω\nend");
+
+        Assert.Equal("repeat", Assert.IsType<UnreadableStatement>(Assert.Single(syntax.Statements)).KeyWord);
+        Assert.Equal("no statement starts with `repaet`", Assert.Single(diagnostics).Message);
+    }
+
+    [Fact]
     public void Spans_cover_what_was_written()
     {
         var source = new SourceText("a.cause", "  resistor R1 from a to b : (1 Ω + 2 Ω) * 3 ±5 %  # x");
@@ -111,6 +120,8 @@ public class CircuitParserTests
     [InlineData("repeat 2 as k\n", "blocks are nested deeper than 200")]
     [InlineData("(1 s,1 V)", "the statement has more than two million words and signs")]
     [InlineData("until 1 s\n", "the file has more than 250 000 statements")]
+    [InlineData("value x : 1 + 1 + 1 + 1 + 1 + 1 + 1 + 1 + 1 + 1\n",
+        "the file has more than three million words and signs")]
     public void Sixteen_mebibytes_of_noise_take_bounded_time(string piece, string message)
     {
         var text = new SourceText("a.cause", string.Concat(Enumerable.Repeat(piece,

@@ -81,6 +81,15 @@ public class ValueMessageTests
 
         """)]
     [InlineData(
+        "resistor R8 from a to b : 10 kOhms",
+        """
+        a.cause:1:30: error: `kOhms` is not a unit
+          resistor R8 from a to b : 10 kOhms
+                                       ^^^^^
+          → write `10 kΩ`
+
+        """)]
+    [InlineData(
         "until 14 seconds",
         """
         a.cause:1:10: error: `seconds` is not a unit

@@ -23,7 +23,8 @@ internal static class EventLine
         foreach (var (x, start, row, text) in labels)
         {
             var y = axis - 10 - (row * 17);
-            shapes.Add(new LineShape(x, text.Length == 0 ? axis - 10 : y + 4, x, axis, new(PlotStyle.Axis, 1)));
+            var top = text.Length == 0 ? axis - 10 : y + 4;
+            shapes.Add(new LineShape(x, top, x, axis, new(PlotStyle.Axis, 1)));
             shapes.Add(new DiscShape(x, axis, 4.5, PlotStyle.Ink));
             shapes.Add(new TextShape(start, y, text, Size, PlotStyle.Ink, HasHalo: true));
         }

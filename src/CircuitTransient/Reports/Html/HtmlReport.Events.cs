@@ -16,16 +16,26 @@ public static partial class HtmlReport
         }
 
         var rows = result.Events.Select(e => Markup.Of($"""
-            <tr><td class="number">{Number(e.Time, "s")}</td><th scope="row">{Markup.Name(InstantWords.Name(e))}{Remark(e)}</th><td class="number">{Number(e.VoltageBefore, "V")}</td><td class="number">{Number(e.VoltageAfter, "V")}</td><td class="number">{Number(e.CurrentBefore, "A")}</td><td class="number">{Number(e.CurrentAfter, "A")}</td></tr>
+            <tr><td class="number">{Number(e.Time, "s")}</td>
+            <th scope="row">{Markup.Name(InstantWords.Name(e))}{Remark(e)}</th>
+            <td class="number">{Number(e.VoltageBefore, "V")}</td>
+            <td class="number">{Number(e.VoltageAfter, "V")}</td>
+            <td class="number">{Number(e.CurrentBefore, "A")}</td>
+            <td class="number">{Number(e.CurrentAfter, "A")}</td></tr>
 
             """));
         return Markup.Of($"""
             <section id="events" aria-labelledby="events-heading">
             <h2 id="events-heading">Events</h2>
-            <div class="wide picture" tabindex="0" role="region" aria-label="Time line of the switchings">{Themed(EventLine.Draw(result, fonts))}</div>
+            <div class="wide picture" tabindex="0" role="region" aria-label="Time line of the
+            switchings">{Themed(EventLine.Draw(result, fonts))}</div>
             <div class="wide"><table>
             <caption>Switchings, with what each switch saw just before and just after</caption>
-            <thead><tr><th scope="col" class="number">Time</th><th scope="col">Event</th><th scope="col" class="number">Across, before</th><th scope="col" class="number">Across, after</th><th scope="col" class="number">Through, before</th><th scope="col" class="number">Through, after</th></tr></thead>
+            <thead><tr><th scope="col" class="number">Time</th><th scope="col">Event</th>
+            <th scope="col" class="number">Across, before</th>
+            <th scope="col" class="number">Across, after</th>
+            <th scope="col" class="number">Through, before</th>
+            <th scope="col" class="number">Through, after</th></tr></thead>
             <tbody>
             {Markup.Join(rows)}</tbody>
             </table></div>
@@ -43,21 +53,33 @@ public static partial class HtmlReport
             return default;
         }
 
+        var pictures = result.Intervals.Take(MostPolePictures).Select(i => PoleFigure(result, i, fonts));
         return Markup.Of($"""
             <section id="poles" aria-labelledby="poles-heading">
             <h2 id="poles-heading">Poles</h2>
-            <p class="aside">Of each interval between switchings. In the pictures the distance from the middle is the logarithm of the magnitude, the angle is the pole's own; of a conjugate pair both are drawn.</p>
+            <p class="aside">Of each interval between switchings. In the pictures the distance from the
+            middle is the logarithm of the magnitude, the angle is the pole's own; of a conjugate pair both
+            are drawn.</p>
             <div class="planes">
-            {Markup.Join(result.Intervals.Take(MostPolePictures).Select(i => Markup.Of($"<figure>{Themed(PolePlane.Draw(result, i, fonts))}<figcaption>{IntervalName(i)}</figcaption></figure>\n")))}</div>
+            {Markup.Join(pictures)}</div>
             {Markup.Join(result.Intervals.Select(PoleTable))}</section>
             """);
     }
+
+    private static Markup PoleFigure(TransientResult result, IntervalResult interval, PlotFonts fonts) =>
+        Markup.Of($"""
+            <figure>{Themed(PolePlane.Draw(result, interval, fonts))}
+            <figcaption>{IntervalName(interval)}</figcaption></figure>
+
+            """);
 
     private static string IntervalName(IntervalResult interval)
     {
         var from = interval.From == 0 ? "0 s" : Number(interval.From, "s");
         var span = $"{from} to {Number(interval.Until, "s")}";
-        return interval.StartsWith.IsEmpty ? span : $"{span}, from {string.Join(" and ", interval.StartsWith)}";
+        return interval.StartsWith.IsEmpty
+            ? span
+            : $"{span}, from {string.Join(" and ", interval.StartsWith)}";
     }
 
     private static Markup PoleTable(IntervalResult interval)
@@ -65,7 +87,10 @@ public static partial class HtmlReport
         var table = Markup.Of($"""
             <div class="wide"><table>
             <caption>{IntervalName(interval)}</caption>
-            <thead><tr><th scope="col">Pole</th><th scope="col" class="number">Time constant</th><th scope="col" class="number">Natural frequency</th><th scope="col" class="number">Damping ratio</th><th scope="col" class="number">Multiplicity</th></tr></thead>
+            <thead><tr><th scope="col">Pole</th><th scope="col" class="number">Time constant</th>
+            <th scope="col" class="number">Natural frequency</th>
+            <th scope="col" class="number">Damping ratio</th>
+            <th scope="col" class="number">Multiplicity</th></tr></thead>
             <tbody>
             {Markup.Join(interval.Poles.Select(PoleRow))}</tbody>
             </table></div>
@@ -74,7 +99,10 @@ public static partial class HtmlReport
         var count = interval.Poles.Length;
         return count <= 12
             ? table
-            : Markup.Of($"<details><summary>{count} poles of {IntervalName(interval)}</summary>{table}</details>\n");
+            : Markup.Of($"""
+                <details><summary>{count} poles of {IntervalName(interval)}</summary>{table}</details>
+
+                """);
     }
 
     private static Markup PoleRow(Pole pole)
@@ -88,7 +116,9 @@ public static partial class HtmlReport
         var frequency = pole.Im == 0 ? "" : Number(magnitude / (2 * Math.PI), "Hz");
         var damping = pole.Im == 0 ? "" : Number(-pole.Re / magnitude, "");
         return Markup.Of($"""
-            <tr><th scope="row">{place}</th><td class="number">{constant}{growing}</td><td class="number">{frequency}</td><td class="number">{damping}</td><td class="number">{pole.Multiplicity}</td></tr>
+            <tr><th scope="row">{place}</th><td class="number">{constant}{growing}</td>
+            <td class="number">{frequency}</td><td class="number">{damping}</td>
+            <td class="number">{pole.Multiplicity}</td></tr>
 
             """);
     }

@@ -19,7 +19,10 @@ public static partial class HtmlReport
             ? Markup.Of($"<path class=\"mark\" d=\"M125 3 L132 8 L125 13 Z\"/>")
             : Markup.Of($"<circle class=\"mark\" cx=\"{place}\" cy=\"8\" r=\"4\"/>");
         return Markup.Of($"""
-            <span class="used"><svg class="scale" viewBox="0 0 134 16" width="134" height="16" aria-hidden="true"><path class="rule" d="M4 8 H129 M4 5 V11"/><path class="limit" d="M104 1 V15"/><path class="reach" d="M4 8 H{place}"/>{mark}</svg> <span class="percent">{words}</span></span>
+            <span class="used"><svg class="scale" viewBox="0 0 134 16" width="134" height="16"
+            aria-hidden="true"><path class="rule" d="M4 8 H129 M4 5 V11"/><path class="limit" d="M104 1
+            V15"/><path class="reach" d="M4 8 H{place}"/>{mark}</svg> <span
+            class="percent">{words}</span></span>
             """);
     }
 
@@ -34,7 +37,9 @@ public static partial class HtmlReport
         var width = 60 * Math.Abs(share) / largest;
         var start = share < 0 ? 62 - width : 62;
         return Markup.Of($"""
-            <svg class="bar" viewBox="0 0 124 12" width="124" height="12" aria-hidden="true"><path class="rule" d="M62 0 V12"/><rect class="mark" x="{Coordinate(start)}" y="2" width="{Coordinate(width)}" height="8"/></svg>
+            <svg class="bar" viewBox="0 0 124 12" width="124" height="12" aria-hidden="true"><path
+            class="rule" d="M62 0 V12"/><rect class="mark" x="{Coordinate(start)}" y="2"
+            width="{Coordinate(width)}" height="8"/></svg>
             """);
     }
 

@@ -16,15 +16,24 @@ public static partial class HtmlReport
         }
 
         var rows = result.Parts.Select(part => Markup.Of($"""
-            <tr><th scope="row">{Markup.Name(part.Name)}</th><td>{part.Kind}</td><td class="number">{Peak(part.PeakVoltage, "V")}</td><td class="number">{Peak(part.PeakCurrent, "A")}</td><td class="number">{Peak(part.PeakPower, "W")}</td><td class="number">{Number(part.Energy, "J")}</td><td class="number">{Number(part.JouleIntegral, "A²s")}</td></tr>
+            <tr><th scope="row">{Markup.Name(part.Name)}</th><td>{part.Kind}</td>
+            <td class="number">{Peak(part.PeakVoltage, "V")}</td>
+            <td class="number">{Peak(part.PeakCurrent, "A")}</td>
+            <td class="number">{Peak(part.PeakPower, "W")}</td>
+            <td class="number">{Number(part.Energy, "J")}</td>
+            <td class="number">{Number(part.JouleIntegral, "A²s")}</td></tr>
 
             """));
         return Markup.Of($"""
             <section id="stresses" aria-labelledby="stresses-heading">
             <h2 id="stresses-heading">What every part bears</h2>
             <div class="wide"><table>
-            <caption>Values of greatest magnitude over the study; energy absorbed, of capacitors and inductors the greatest stored</caption>
-            <thead><tr><th scope="col">Part</th><th scope="col">Kind</th><th scope="col" class="number">Voltage</th><th scope="col" class="number">Current</th><th scope="col" class="number">Power</th><th scope="col" class="number">Energy</th><th scope="col" class="number">I²t</th></tr></thead>
+            <caption>Values of greatest magnitude over the study; energy absorbed, of capacitors and
+            inductors the greatest stored</caption>
+            <thead><tr><th scope="col">Part</th><th scope="col">Kind</th>
+            <th scope="col" class="number">Voltage</th><th scope="col" class="number">Current</th>
+            <th scope="col" class="number">Power</th><th scope="col" class="number">Energy</th>
+            <th scope="col" class="number">I²t</th></tr></thead>
             <tbody>
             {Markup.Join(rows)}</tbody>
             </table></div>
@@ -48,7 +57,8 @@ public static partial class HtmlReport
         }
 
         var items = intervals.Select(interval => Markup.Of($"""
-            {Markup.Join(interval.Impulses.Select(i => Impulse(result, i)))}<li>Energy lost in them: {Number(interval.EnergyLost, "J")}.</li>
+            {Markup.Join(interval.Impulses.Select(i => Impulse(result, i)))}<li>Energy lost in them:
+            {Number(interval.EnergyLost, "J")}.</li>
 
             """));
         return Markup.Of($"""
@@ -74,17 +84,22 @@ public static partial class HtmlReport
     private static Markup Checks(TransientResult result)
     {
         var rows = result.SelfChecks.Select(c => Markup.Of($"""
-            <tr{Broken(c.Holds)}><th scope="row">{c.Name}</th><td class="number">{Small(c.Worst)}</td><td class="number">{Small(c.Allowed)}</td><td>{(c.Holds ? "holds" : "FAILED: do not use these figures")}</td></tr>
+            <tr{Broken(c.Holds)}><th scope="row">{c.Name}</th><td class="number">{Small(c.Worst)}</td>
+            <td class="number">{Small(c.Allowed)}</td>
+            <td>{(c.Holds ? "holds" : "FAILED: do not use these figures")}</td></tr>
 
             """));
-        var open = result.NotJudged.Select(n =>
-            Markup.Of($"<tr><th scope=\"row\">{n.Name}</th><td colspan=\"3\">not judged: {n.Reason}</td></tr>\n"));
+        var open = result.NotJudged.Select(n => Markup.Of($"""
+            <tr><th scope="row">{n.Name}</th><td colspan="3">not judged: {n.Reason}</td></tr>
+
+            """));
         return Markup.Of($"""
             <section id="checks" aria-labelledby="checks-heading">
             <h2 id="checks-heading">Self-checks</h2>
             <div class="wide"><table>
             <caption>Checks that every solve runs on its own answer, as parts of the largest value</caption>
-            <thead><tr><th scope="col">Check</th><th scope="col" class="number">Worst</th><th scope="col" class="number">Allowed</th><th scope="col">Verdict</th></tr></thead>
+            <thead><tr><th scope="col">Check</th><th scope="col" class="number">Worst</th>
+            <th scope="col" class="number">Allowed</th><th scope="col">Verdict</th></tr></thead>
             <tbody>
             {Markup.Join(rows)}{Markup.Join(open)}</tbody>
             </table></div>

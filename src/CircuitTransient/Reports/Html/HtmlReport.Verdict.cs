@@ -26,7 +26,8 @@ public static partial class HtmlReport
         return Markup.Of($"""
             <div class="wide"><table class="limits" id="requirements">
             <caption>Requirements</caption>
-            <thead><tr><th scope="col">Required</th><th scope="col">Verdict</th><th scope="col">Worst value</th><th scope="col">Used of the limit</th></tr></thead>
+            <thead><tr><th scope="col">Required</th><th scope="col">Verdict</th>
+            <th scope="col">Worst value</th><th scope="col">Used of the limit</th></tr></thead>
             <tbody>
             {Markup.Join(order.Select(i => RequirementRow(result, i)))}</tbody>
             </table></div>
@@ -40,25 +41,33 @@ public static partial class HtmlReport
         var reason = requirement.Reason is { } words
             ? Markup.Of($"<br><span class=\"aside\">{Markup.Name(words)}, line {requirement.Line}</span>")
             : Markup.Of($"<br><span class=\"aside\">line {requirement.Line}</span>");
-        var worst = requirement.Worst.Value is { } value ? Number(value, requirement.Unit) : "no finite value";
+        var worst = requirement.Worst.Value is { } value
+            ? Number(value, requirement.Unit)
+            : "no finite value";
         var used = i < result.Circuit.Requirements.Length
             ? Used(result.Circuit.Requirements[i].Bound, requirement)
             : null;
         return Markup.Of($"""
-            <tr data-requirement="{i}"{Broken(requirement.Holds)}><th scope="row">{Markup.Name(requirement.Statement)}{reason}</th><td class="verdict">{Held(requirement)}</td><td class="worst">{worst}<br><span class="aside">{InstantWords.At(result, requirement.Worst.Time)}</span></td><td>{Mark(used)}</td></tr>
+            <tr data-requirement="{i}"{Broken(requirement.Holds)}>
+            <th scope="row">{Markup.Name(requirement.Statement)}{reason}</th>
+            <td class="verdict">{Held(requirement)}</td>
+            <td class="worst">{worst}<br><span
+            class="aside">{InstantWords.At(result, requirement.Worst.Time)}</span></td>
+            <td>{Mark(used)}</td></tr>
 
             """);
     }
 
     private static Markup Broken(bool holds) => holds ? default : Markup.Of($" class=\"broken\"");
 
-    private static string Held(RequirementResult requirement) => (requirement.Holds, requirement.Margin) switch
-    {
-        (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
-        (true, null) => "held",
-        (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
-        (false, null) => "broken without limit",
-    };
+    private static string Held(RequirementResult requirement) =>
+        (requirement.Holds, requirement.Margin) switch
+        {
+            (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
+            (true, null) => "held",
+            (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
+            (false, null) => "broken without limit",
+        };
 
     private static double? Used(Bound bound, RequirementResult requirement)
     {
@@ -81,7 +90,8 @@ public static partial class HtmlReport
 
     private static Markup RatingTable(TransientResult result)
     {
-        var ratings = result.Parts.SelectMany(part => part.Ratings.Select(rating => (Part: part, Rating: rating)))
+        var ratings = result.Parts
+            .SelectMany(part => part.Ratings.Select(rating => (Part: part, Rating: rating)))
             .Select((pair, i) => (pair.Part, pair.Rating, Index: i))
             .OrderByDescending(r => r.Rating.Used ?? (r.Rating.Holds ? -1 : double.PositiveInfinity))
             .ToArray();
@@ -91,13 +101,19 @@ public static partial class HtmlReport
         }
 
         var rows = ratings.Select(r => Markup.Of($"""
-            <tr data-rating="{r.Index}"{Broken(r.Rating.Holds)}><th scope="row">{Markup.Name(r.Part.Name)}, {Rated(r.Rating.Unit)}</th><td class="verdict">{Held(r.Rating)}</td><td class="worst">{Reached(r.Rating)} <span class="aside">of {Number(r.Rating.Rated, r.Rating.Unit)}</span></td><td>{Mark(r.Rating.Used ?? (r.Rating.Holds ? null : double.PositiveInfinity))}</td></tr>
+            <tr data-rating="{r.Index}"{Broken(r.Rating.Holds)}>
+            <th scope="row">{Markup.Name(r.Part.Name)}, {Rated(r.Rating.Unit)}</th>
+            <td class="verdict">{Held(r.Rating)}</td>
+            <td class="worst">{Reached(r.Rating)} <span class="aside">of
+            {Number(r.Rating.Rated, r.Rating.Unit)}</span></td>
+            <td>{Mark(r.Rating.Used ?? (r.Rating.Holds ? null : double.PositiveInfinity))}</td></tr>
 
             """));
         return Markup.Of($"""
             <div class="wide"><table class="limits" id="ratings">
             <caption>Ratings, the most used first</caption>
-            <thead><tr><th scope="col">Rated</th><th scope="col">Verdict</th><th scope="col">Reached</th><th scope="col">Used of the rating</th></tr></thead>
+            <thead><tr><th scope="col">Rated</th><th scope="col">Verdict</th><th scope="col">Reached</th>
+            <th scope="col">Used of the rating</th></tr></thead>
             <tbody>
             {Markup.Join(rows)}</tbody>
             </table></div>
@@ -107,7 +123,8 @@ public static partial class HtmlReport
 
     private static Markup Unrated(TransientResult result)
     {
-        var unrated = result.Parts.Where(part => part.Ratings.IsEmpty).Select(part => Markup.Name(part.Name)).ToArray();
+        var unrated = result.Parts.Where(part => part.Ratings.IsEmpty)
+            .Select(part => Markup.Name(part.Name)).ToArray();
         if (unrated.Length == 0)
         {
             return default;
@@ -146,7 +163,8 @@ public static partial class HtmlReport
         where linear is { Holds: false }
         let direction = linear.Direction is { } words ? $": {words}" : ""
         select Markup.Of($"""
-            <p>{Markup.Name(part.Name)} is linear up to {Number(linear.Declared, linear.Unit)} but reaches {Number(linear.Reached, linear.Unit)}{direction}.</p>
+            <p>{Markup.Name(part.Name)} is linear up to {Number(linear.Declared, linear.Unit)} but reaches
+            {Number(linear.Reached, linear.Unit)}{direction}.</p>
 
             """));
 
@@ -155,7 +173,8 @@ public static partial class HtmlReport
         : Markup.Of($"""
             <h3>Warnings</h3>
             <ul>
-            {Markup.Join(result.Warnings.Select(w => Markup.Of($"<li>{(w.Line > 0 ? $"line {w.Line}: " : "")}{w.Text}</li>\n")))}</ul>
+            {Markup.Join(result.Warnings.Select(w =>
+                Markup.Of($"<li>{(w.Line > 0 ? $"line {w.Line}: " : "")}{w.Text}</li>\n")))}</ul>
 
             """);
 
@@ -177,6 +196,9 @@ public static partial class HtmlReport
             CautionSeverity.Warning => "Warning",
             _ => "Note",
         };
-        return Markup.Of($"<li><strong>{word}.</strong> {caution.Text} <span class=\"aside\">({caution.Standard})</span></li>\n");
+        return Markup.Of($"""
+            <li><strong>{word}.</strong> {caution.Text} <span class="aside">({caution.Standard})</span></li>
+
+            """);
     }
 }

@@ -28,7 +28,8 @@ public static partial class HtmlReport
             <head>
             <meta charset="utf-8">
             <meta name="viewport" content="width=device-width, initial-scale=1">
-            <meta http-equiv="Content-Security-Policy" content="default-src 'none'; style-src '{Hash(style)}'; script-src '{Hash(script)}'">
+            <meta http-equiv="Content-Security-Policy" content="default-src 'none'; style-src
+            '{Hash(style)}'; script-src '{Hash(script)}'">
             <meta name="color-scheme" content="light dark">
             <title>{title}</title>
             <style>{Markup.Raw(style, "style")}</style>
@@ -68,7 +69,8 @@ public static partial class HtmlReport
         return Markup.Of($"""
             <header>
             <h1>{Markup.Name(title)}</h1>
-            <p class="study">{Markup.Name(circuit.Source.Name)}: {circuit.Parts.Length} parts, {circuit.Nodes.Length} nodes; from 0 s to {until}{reason}; {start}.</p>
+            <p class="study">{Markup.Name(circuit.Source.Name)}: {circuit.Parts.Length} parts,
+            {circuit.Nodes.Length} nodes; from 0 s to {until}{reason}; {start}.</p>
             {Markup.Join(notes)}</header>
             """);
     }
@@ -89,5 +91,7 @@ public static partial class HtmlReport
             ?.InformationalVersion ?? "";
 
     private static string Number(double? value, string unit) =>
-        value is { } number && double.IsFinite(number) ? EngineeringNumber.Format(number, unit) : "undetermined";
+        value is { } number && double.IsFinite(number)
+            ? EngineeringNumber.Format(number, unit)
+            : "undetermined";
 }

@@ -74,7 +74,9 @@ internal sealed partial class PageData
         }
 
         var observed = result.Circuit.Observations.Where(o => o.Window is { From: null })
-            .Select(o => (o.Name, Sign: ObservedQuantity.Sign(result.Circuit, requirement.Quantity, o.Quantity)))
+            .Select(o => (
+                o.Name,
+                Sign: ObservedQuantity.Sign(result.Circuit, requirement.Quantity, o.Quantity)))
             .FirstOrDefault(o => o.Sign != 0);
         var place = result.Observations.Select(o => o.Name).ToList().IndexOf(observed.Name);
         return place >= 0 && observed.Sign != 0 ? (place, observed.Sign) : null;
@@ -92,9 +94,10 @@ internal sealed partial class PageData
                 json.WriteNumber("rated", part.Ratings[i].Rated);
                 json.WriteString("unit", part.Ratings[i].Unit);
                 json.WriteBoolean("holds", part.Ratings[i].Holds);
-                if (index >= 0 && i < result.Circuit.Parts[index].Ratings.Length && part.Ratings[i].Reached is not null)
+                var declared = index < 0 ? null : result.Circuit.Parts[index];
+                if (i < declared?.Ratings.Length && part.Ratings[i].Reached is not null)
                 {
-                    WriteUse(result.Circuit.Parts[index], index, result.Circuit.Parts[index].Ratings[i].Kind);
+                    WriteUse(declared, index, declared.Ratings[i].Kind);
                 }
 
                 json.WriteEndObject();

@@ -19,9 +19,10 @@ internal sealed partial class PageData
     private readonly Dictionary<FollowedWave, int> places = new(ReferenceEqualityComparer.Instance);
     private readonly Utf8JsonWriter json;
 
-    private PageData(TransientResult result, Utf8JsonWriter json) => (this.result, this.json) = (result, json);
+    private PageData(TransientResult result, Utf8JsonWriter json) =>
+        (this.result, this.json) = (result, json);
 
-    /// <summary>The data of a result. It holds neither a less-than sign nor a character outside ASCII.</summary>
+    /// <summary>The data of a result, without a less-than sign or a character outside ASCII.</summary>
     public static string Write(TransientResult result)
     {
         using var stream = new MemoryStream();

@@ -18,7 +18,8 @@ internal sealed record PageWave(
         var isQuadratic = observed.Contributions.Length > result.Causes.Length;
         if (!isQuadratic)
         {
-            return new([.. observed.ByCause.Select((wave, cause) => new PageTerm(cause, null, wave))], false, peaks);
+            var own = observed.ByCause.Select((samples, cause) => new PageTerm(cause, null, samples));
+            return new([.. own], false, peaks);
         }
 
         var followed = declared is null ? null : Followed(result, declared.Quantity, declared.Window);
@@ -28,8 +29,8 @@ internal sealed record PageWave(
     }
 
     /// <summary>The waveform of what is judged but not observed.</summary>
-    public static PageWave Of(FollowedWave followed, bool isQuadratic, ImmutableArray<double> peaks) =>
-        new([.. followed.Terms.Select(t => new PageTerm(t.Cause, t.WithCause, t.Samples))], isQuadratic, peaks);
+    public static PageWave Of(FollowedWave followed, bool isQuadratic, ImmutableArray<double> peaks) => new(
+        [.. followed.Terms.Select(t => new PageTerm(t.Cause, t.WithCause, t.Samples))], isQuadratic, peaks);
 
     /// <summary>The waveform kept for a quantity; null where there is none.</summary>
     public static FollowedWave? Followed(TransientResult result, Measurand quantity, Window window)

@@ -17,7 +17,8 @@ internal static class PolePlane
     /// <summary>The picture of one interval; all intervals of a result share their circles.</summary>
     public static Drawing Draw(TransientResult result, IntervalResult interval, PlotFonts fonts)
     {
-        var magnitudes = result.Intervals.SelectMany(i => i.Poles).Select(Magnitude).Where(m => m > 0).ToArray();
+        var magnitudes = result.Intervals.SelectMany(i => i.Poles).Select(Magnitude)
+            .Where(m => m > 0).ToArray();
         var first = magnitudes.Length == 0 ? 0 : (int)Math.Floor(Math.Log10(magnitudes.Min()) - 0.15);
         var last = magnitudes.Length == 0 ? 1 : (int)Math.Ceiling(Math.Log10(magnitudes.Max()) + 0.15);
         var shapes = ImmutableArray.CreateBuilder<Shape>();
@@ -33,15 +34,16 @@ internal static class PolePlane
     private static void AddCircles(ImmutableArray<Shape>.Builder shapes, int first, int last)
     {
         var step = Math.Max(1, (int)Math.Ceiling((last - first) / 5.0));
-        shapes.Add(new LineShape(Middle - Outer - 8, Middle, Middle + Outer + 8, Middle, new(PlotStyle.Axis, 1)));
-        shapes.Add(new LineShape(Middle, Middle - Outer - 8, Middle, Middle + Outer + 8, new(PlotStyle.Axis, 1)));
+        var (start, end, axis) = (Middle - Outer - 8, Middle + Outer + 8, new Stroke(PlotStyle.Axis, 1));
+        shapes.Add(new LineShape(start, Middle, end, Middle, axis));
+        shapes.Add(new LineShape(Middle, start, Middle, end, axis));
         for (var decade = last; decade > first; decade -= step)
         {
             var radius = Radius(Math.Pow(10, decade), first, last);
             shapes.Add(new PolylineShape(Circle(radius), new(PlotStyle.Grid, 1)));
             var label = EngineeringNumber.Format(Math.Pow(10, decade), "", 1);
-            shapes.Add(new TextShape(
-                Middle + (radius * 0.7071) + 2, Middle + (radius * 0.7071) + 10, label, 10, PlotStyle.Grey, HasHalo: true));
+            var corner = Middle + (radius * Math.Sqrt(0.5));
+            shapes.Add(new TextShape(corner + 2, corner + 10, label, 10, PlotStyle.Grey, HasHalo: true));
         }
 
         shapes.Add(new TextShape(Middle + Outer + 10, Middle - 6, "re (1/s)", 10, PlotStyle.Grey));
@@ -54,7 +56,8 @@ internal static class PolePlane
             .Select(a => new PlotPoint(Middle + (radius * Math.Cos(a)), Middle + (radius * Math.Sin(a)))),
     ];
 
-    private static void AddPole(ImmutableArray<Shape>.Builder shapes, Pole pole, double radius, PlotFonts fonts)
+    private static void AddPole(
+        ImmutableArray<Shape>.Builder shapes, Pole pole, double radius, PlotFonts fonts)
     {
         var angle = Math.Atan2(pole.Im, pole.Re);
         var (x, rise) = (Middle + (radius * Math.Cos(angle)), radius * Math.Sin(angle));
@@ -85,6 +88,7 @@ internal static class PolePlane
         var real = interval.Poles.Where(p => p.Im == 0).Sum(p => p.Multiplicity);
         var pairs = interval.Poles.Where(p => p.Im != 0).Sum(p => p.Multiplicity);
         var growing = interval.Poles.Count(p => p.Re > 0);
-        return $"s-plane: {real} real poles, {pairs} conjugate pairs, {growing} growing; figures in the table below";
+        return $"s-plane: {real} real poles, {pairs} conjugate pairs, {growing} growing; "
+            + "figures in the table below";
     }
 }
