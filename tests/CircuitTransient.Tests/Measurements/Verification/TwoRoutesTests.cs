@@ -5,8 +5,8 @@ using static CircuitTransient.Tests.Measurements.Verification.HandBuilt;
 
 namespace CircuitTransient.Tests.Measurements.Verification;
 
-/// <summary>The two routes share the equations but no way of solving them; on circuits drawn at random they must agree
-/// and obey every law.</summary>
+/// <summary>The two routes share the equations but no way of solving them; on circuits drawn at random they
+/// must agree and obey every law.</summary>
 public sealed class TwoRoutesTests
 {
     // Values over twelve decades of time constant: 1 µΩ to 1 MΩ, 1 pF to 1 µF, 10 nH to 10 mH.
@@ -14,7 +14,9 @@ public sealed class TwoRoutesTests
         Gen.Select(Gen.Int[0, 9], Gen.Int[0, 5], Gen.Int[0, 5], Gen.Double[-6, 6], Gen.Double[-10, 10]);
 
     [Fact]
-    public void Propagation_and_inversion_agree_on_circuits_drawn_at_random() =>
+    public void Propagation_and_inversion_agree_on_circuits_drawn_at_random()
+    {
+        var compared = 0;
         _part.Array[6, 14].Sample(
             parts =>
             {
@@ -31,13 +33,15 @@ public sealed class TwoRoutesTests
                     var closed = sample.Time < 0.3e-3 ? switches[..(switches.Length / 2)] : switches;
                     residuals.Add(
                         built.Positions(closed), sample.Time, m => solution.ValueAt(m, sample.Time));
-                    Compare(solution, sample);
+                    compared += Compare(solution, sample);
                 }
 
                 Assert.InRange(residuals.WorstAtNodes, 0, 1e-9);
                 Assert.InRange(residuals.WorstInParts, 0, 1e-9);
             },
             seed: "0000000000000", iter: 150, threads: 1);
+        Assert.True(compared > 500); // few circuits fall out as singular, few values as too lightly damped
+    }
 
     private static (HandBuilt Built, int[] Switches) Build((int, int, int, double, double)[] parts)
     {
@@ -69,8 +73,10 @@ public sealed class TwoRoutesTests
         return (built, [.. switches]);
     }
 
-    private static void Compare(AllAtOnceSolution solution, ContourSample sample)
+    // How many node voltages could be compared.
+    private static int Compare(AllAtOnceSolution solution, ContourSample sample)
     {
+        var compared = 0;
         var scale = Enumerable.Range(1, 5)
             .Max(node => Math.Abs(solution.ValueAt(new VoltageBetween(node, 0), sample.Time)!.Value));
         for (var node = 1; node <= 5; node++)
@@ -80,7 +86,10 @@ public sealed class TwoRoutesTests
             {
                 var expected = solution.ValueAt(new VoltageBetween(node, 0), sample.Time)!.Value;
                 Assert.InRange(Math.Abs(value - expected), 0, (2 * error) + (1e-9 * scale));
+                compared++;
             }
         }
+
+        return compared;
     }
 }
