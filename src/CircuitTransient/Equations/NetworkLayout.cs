@@ -4,10 +4,8 @@ using CircuitTransient.Circuits;
 namespace CircuitTransient.Equations;
 
 /// <summary>Which place each unknown and each input of a circuit has in its equations, whatever its switches
-/// do.
-/// Unknowns are the node voltages to the reference, then a current of every part (two of a transformer).
-/// Inputs are
-/// the independent sources, then what is stored in every capacitor (a voltage) and inductor (a
+/// do. Unknowns are the node voltages to the reference, then a current of every part (two of a transformer).
+/// Inputs are the independent sources, then what is stored in every capacitor (a voltage) and inductor (a
 /// current).</summary>
 public sealed class NetworkLayout
 {

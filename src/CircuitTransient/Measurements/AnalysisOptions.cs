@@ -5,9 +5,10 @@ namespace CircuitTransient.Measurements;
 /// <summary>What a caller may ask of an analysis beyond the circuit file.</summary>
 /// <param name="At">Instants in seconds for which exact values are wanted, in the order asked.</param>
 /// <param name="SampleCount">Waveform samples aimed at.</param>
-/// <param name="After">The event since which contributions are broken down a second time; null for the last before
-/// each extreme, without showing it in the results document.</param>
-public sealed record AnalysisOptions(ImmutableArray<double> At, int SampleCount = 2000, AfterEvent? After = null)
+/// <param name="After">The event since which contributions are broken down a second time; null for the last
+/// before each extreme, without showing it in the results document.</param>
+public sealed record AnalysisOptions(ImmutableArray<double> At, int SampleCount = 2000, AfterEvent? After =
+    null)
 {
     /// <summary>Nothing asked for.</summary>
     public static AnalysisOptions Default { get; } = new([]);

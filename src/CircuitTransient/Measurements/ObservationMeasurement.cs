@@ -104,7 +104,8 @@ internal sealed class ObservationMeasurement(
     private SinceEvent? Since(Measurand quantity, Extreme extreme) =>
         extreme.Value is null || curves.IsAccumulated(quantity)
             ? null
-            : since.At(quantity, extreme.Time, extreme.Side == InstantSide.Before, times.IntervalOf(options.After));
+            : since.At(quantity, extreme.Time, extreme.Side == InstantSide.Before,
+                times.IntervalOf(options.After));
 
     private static TimedValue Search(Curve curve, (double From, double To) window, bool greatest)
     {

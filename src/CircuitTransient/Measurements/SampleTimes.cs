@@ -5,8 +5,7 @@ using CircuitTransient.Solutions;
 namespace CircuitTransient.Measurements;
 
 /// <summary>Chooses the instants of the waveforms: dense where the observed quantities move, every boundary
-/// twice,
-/// every peak included.</summary>
+/// twice, every peak included.</summary>
 internal static class SampleTimes
 {
     /// <summary>The instants in order.</summary>

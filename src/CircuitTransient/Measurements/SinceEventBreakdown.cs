@@ -5,17 +5,19 @@ using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
 
-/// <summary>The second breakdown: since a switching, what every part held just before it is a cause, and every source
-/// from then on. The switchings that follow keep the instants of the full answer.</summary>
+/// <summary>The second breakdown: since a switching, what every part held just before it is a cause, and
+/// every source from then on. The switchings that follow keep the instants of the full answer.</summary>
 internal sealed class SinceEventBreakdown(TransientSolution solution, CancellationToken cancellation)
 {
-    private readonly Dictionary<int, (ImmutableArray<Cause> Causes, ImmutableArray<Segment> Segments)> solved = [];
+    private readonly Dictionary<int,
+        (ImmutableArray<Cause> Causes, ImmutableArray<Segment> Segments)> solved = [];
 
     /// <summary>The breakdown of a quantity at an instant.</summary>
     /// <param name="quantity">The quantity; for an integral over time there is no such breakdown.</param>
     /// <param name="time">The instant, in seconds.</param>
     /// <param name="before">Whether the value just before a jump is meant.</param>
-    /// <param name="since">Index of the interval that the event starts; null for the last one before the instant.</param>
+    /// <param name="since">Index of the interval that the event starts; null for the last one before the
+    /// instant.</param>
     /// <returns>The parts; null where no switching comes before the instant.</returns>
     public SinceEvent? At(Measurand quantity, double time, bool before, int? since)
     {
@@ -123,7 +125,8 @@ internal sealed class SinceEventBreakdown(TransientSolution solution, Cancellati
     {
         var parts = causes.Select((c, n) => new CauseValue(
             c.Name,
-            factors.Factor * Value(segment, factors.First, n, tau) * Value(segment, factors.Second, n, tau))).ToList();
+            factors.Factor * Value(segment, factors.First, n, tau) * Value(segment, factors.Second, n, tau)))
+                .ToList();
         var total = factors.Factor * Value(segment, factors.First, Segment.Total, tau)
             * Value(segment, factors.Second, Segment.Total, tau);
         parts.Add(new CauseValue("joint", total - parts.Sum(p => p.Value)));

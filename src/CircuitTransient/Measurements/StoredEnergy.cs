@@ -55,8 +55,7 @@ internal sealed class StoredEnergy(CurveBuilder curves)
     }
 
     /// <summary>What the impulses at a segment's start lose: stored before, less stored after, and what the
-    /// sources
-    /// supply within the impulses.</summary>
+    /// sources supply within the impulses.</summary>
     public double LostAtStartOf(int segment)
     {
         var before = segment == 0 ? Initial() : At(segment - 1, end: true);
@@ -64,8 +63,7 @@ internal sealed class StoredEnergy(CurveBuilder curves)
     }
 
     /// <summary>Joules that sources supply within the impulses at a segment's start: the charge at the
-    /// voltage just
-    /// after, the flux at the current just after.</summary>
+    /// voltage just after, the flux at the current just after.</summary>
     public double SuppliedInImpulse(int segment)
     {
         double sum = 0;

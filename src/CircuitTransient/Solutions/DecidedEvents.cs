@@ -7,8 +7,8 @@ namespace CircuitTransient.Solutions;
 /// <summary>Finds the switchings whose instants the answer itself decides.</summary>
 internal sealed class DecidedEvents(Timeline timeline, double resolution)
 {
-    /// <summary>The first instant in an interval at which a waiting event's condition holds, and the events that act
-    /// then; null where none does.</summary>
+    /// <summary>The first instant in an interval at which a waiting event's condition holds, and the events
+    /// that act then; null where none does.</summary>
     /// <param name="segments">The interval, solved as if nothing happened in it.</param>
     public (double Time, ImmutableArray<EventReference> Events)? FirstIn(ImmutableArray<Segment> segments)
     {
@@ -42,11 +42,13 @@ internal sealed class DecidedEvents(Timeline timeline, double resolution)
     {
         var watched = declared.Trigger is WhenCrosses w
             ? w
-            : new WhenCrosses(new CurrentThrough(reference.Part), Rises: false, declared.CutAtMost!.Value, true, null);
+            : new WhenCrosses(new CurrentThrough(reference.Part), Rises: false, declared.CutAtMost!.Value,
+                true, null);
         foreach (var table in tables)
         {
             var from = Math.Max(0, watchedFrom - table.Segment.Start);
-            if (from > table.Segment.Length || table.Segment.Coefficients(watched.Quantity) is not { } coefficients)
+            if (from > table.Segment.Length
+                || table.Segment.Coefficients(watched.Quantity) is not { } coefficients)
             {
                 continue;
             }
@@ -76,8 +78,8 @@ internal sealed class DecidedEvents(Timeline timeline, double resolution)
             return up is null || down < up ? down : up;
         }
 
-        // The magnitude falls to a level (zero too): the value, while it keeps its sign, falls to it. A zero that is
-        // only touched counts within rounding of the waveform's size.
+        // The magnitude falls to a level (zero too): the value, while it keeps its sign, falls to it. A zero
+        // that is only touched counts within rounding of the waveform's size.
         var sign = piece.ValueAt(from) < 0 ? -1 : 1;
         var touch = watched.Level + (1e-14 * piece.Scale);
         if (LevelSearch.First(piece, -sign, -touch, from, until) is not { } near)

@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
 using CircuitTransient.Numerics;
 
@@ -26,7 +25,8 @@ internal sealed class IntervalSolver(
         for (var k = 0; k + 1 < corners.Length; k++)
         {
             cancellation.ThrowIfCancellationRequested();
-            var motions = causes.Select((c, n) => new Motion(states[n], Forcings(c, corners[k]))).ToImmutableArray();
+            var motions =
+                causes.Select((c, n) => new Motion(states[n], Forcings(c, corners[k]))).ToImmutableArray();
             var forcings = motions.SelectMany(m => m.Forcings);
             var modes = new SegmentModes(model, corners[k], corners[k + 1], forcings);
             var onset = k == 0
@@ -62,17 +62,20 @@ internal sealed class IntervalSolver(
 
     /// <summary>What every store holds at a segment's end, cause by cause.</summary>
     public DoubleDouble[][] StoredAtEnd(Segment segment) =>
-        [.. causes.Select((_, c) => layout.Stores.Select(p => segment.ValueAtEnd(layout.Held(p), c)).ToArray())];
+        [.. causes.Select((_, c) =>
+            layout.Stores.Select(p => segment.ValueAtEnd(layout.Held(p), c)).ToArray())];
 
     /// <summary>What every store holds just after a segment's start, cause by cause.</summary>
     public DoubleDouble[][] StoredAtStart(Segment segment) =>
-        [.. causes.Select((_, c) => layout.Stores.Select(p => segment.ValueAtStart(layout.Held(p), c)).ToArray())];
+        [.. causes.Select((_, c) =>
+            layout.Stores.Select(p => segment.ValueAtStart(layout.Held(p), c)).ToArray())];
 
     private ImmutableArray<Forcing> Forcings(Cause cause, double start) =>
         cause.Source < 0
             ? []
             : Forcing.Of(
-                cause.Pieces, layout.Input(cause.Source), CauseList.ScaleOf(layout.Circuit, cause.Source), start);
+                cause.Pieces, layout.Input(cause.Source), CauseList.ScaleOf(layout.Circuit, cause.Source),
+                    start);
 
     private DoubleDoubleComplex[][] StateFrom(IntervalModel model, DoubleDouble[] stored)
     {

@@ -4,14 +4,13 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>What sets in at a segment's start, and so may come as an impulse: at a switching everything that
-/// is
-/// stored and every source as it stands (the equations begin anew), at a corner what the sources change
+/// is stored and every source as it stands (the equations begin anew), at a corner what the sources change
 /// by.</summary>
 /// <param name="Jumps">For each order of derivative, the change of each input's derivative of that
 /// order.</param>
 /// <param name="Stored">What is stored at the start, for each input; zeros at a corner.</param>
-/// <param name="Sizes">The size each input has had so far: a current cut at its zero leaves its rounding, which is
-/// no impulse.</param>
+/// <param name="Sizes">The size each input has had so far: a current cut at its zero leaves its rounding,
+/// which is no impulse.</param>
 internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, double[] Sizes)
 {
     private const int Orders = 4; // derivatives of a source that a network of index up to 5 can pass on

@@ -9,8 +9,9 @@ namespace CircuitTransient.Solutions;
 /// <summary>Fixes what the sources leave open in a settled start by what the file states.</summary>
 internal static class OpenQuantities
 {
-    /// <summary>Adds to every cause the multiple of each held quantity (exact zero pole) that makes stated parts hold
-    /// what they state, then replaces stated quantities; an error where something open is not stated.</summary>
+    /// <summary>Adds to every cause the multiple of each held quantity (exact zero pole) that makes stated
+    /// parts hold what they state, then replaces stated quantities; an error where something open is not
+    /// stated.</summary>
     public static Diagnostic? Fix(
         IntervalModel model, NetworkLayout layout, ImmutableArray<Cause> causes, DoubleDouble[][] stored)
     {
@@ -50,7 +51,8 @@ internal static class OpenQuantities
             {
                 if (model.Blocks[b].T[i, i].IsZero)
                 {
-                    directions.Add([.. layout.Stores.Select(p => Clean(model.Project(layout.Held(p)).Rows[b][i].Re))]);
+                    directions.Add([.. layout.Stores
+                        .Select(p => Clean(model.Project(layout.Held(p)).Rows[b][i].Re))]);
                 }
             }
         }

@@ -3,7 +3,8 @@ using CircuitTransient.Equations;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>A quantity that is a product of two linear ones: a power, a stored energy, or the rate of an integral.</summary>
+/// <summary>A quantity that is a product of two linear ones: a power, a stored energy, or the rate of an
+/// integral.</summary>
 /// <param name="Factor">What the product is multiplied by.</param>
 /// <param name="First">One linear quantity.</param>
 /// <param name="Second">The other.</param>
@@ -14,7 +15,8 @@ public sealed record QuantityFactors(double Factor, Measurand First, Measurand S
     public static bool IsQuadratic(Measurand quantity) =>
         quantity is PowerIn or EnergyIn or CouplingEnergy or JouleIntegral;
 
-    /// <summary>The factors of a product at one instant; null for linear quantities and for integrals.</summary>
+    /// <summary>The factors of a product at one instant; null for linear quantities and for
+    /// integrals.</summary>
     public static QuantityFactors? Of(Circuit circuit, Measurand quantity) =>
         OfAny(circuit, quantity) is { IsIntegrated: false } factors ? factors : null;
 
@@ -24,7 +26,8 @@ public sealed record QuantityFactors(double Factor, Measurand First, Measurand S
         switch (quantity)
         {
             case PowerIn p:
-                return Product(p.Delivered ? -1 : 1, new VoltageAcross(p.Part), new CurrentThrough(p.Part), false);
+                return Product(p.Delivered ? -1
+                    : 1, new VoltageAcross(p.Part), new CurrentThrough(p.Part), false);
             case JouleIntegral j:
                 return Product(1, new CurrentThrough(j.Part), new CurrentThrough(j.Part), true);
             case CouplingEnergy k:
@@ -43,10 +46,12 @@ public sealed record QuantityFactors(double Factor, Measurand First, Measurand S
         }
     }
 
-    private static QuantityFactors Product(double factor, Measurand first, Measurand second, bool isIntegrated) =>
+    private static QuantityFactors Product(double factor, Measurand first, Measurand second,
+        bool isIntegrated) =>
         new(factor, first, second, isIntegrated);
 
-    private static QuantityFactors Square(double factor, Measurand quantity) => new(factor, quantity, quantity, false);
+    private static QuantityFactors Square(double factor, Measurand quantity) =>
+        new(factor, quantity, quantity, false);
 
     private static double Sign(EnergyIn energy) => energy.Delivered ? -1 : 1;
 }

@@ -6,9 +6,10 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>What is stored where constants and sines have been on for ever: each source's own forced response at
-/// t = 0. A quantity that the file states is replaced whole and is a cause of its own; one that the sources leave
-/// open (a charge held by capacitors, a current round a loop of coils) is fixed by stated ones, or it is an error.</summary>
+/// <summary>What is stored where constants and sines have been on for ever: each source's own forced response
+/// at t = 0. A quantity that the file states is replaced whole and is a cause of its own; one that the
+/// sources leave open (a charge held by capacitors, a current round a loop of coils) is fixed by stated ones,
+/// or it is an error.</summary>
 internal static class SettledStart
 {
     /// <summary>What every store holds at t = 0⁻, cause by cause; or why there is no settled state.</summary>
@@ -41,7 +42,8 @@ internal static class SettledStart
     }
 
     /// <summary>What the stores hold in the forced response of one source.</summary>
-    private static DoubleDouble[] Forced(IntervalModel model, NetworkLayout layout, ImmutableArray<Forcing> forcings)
+    private static DoubleDouble[] Forced(IntervalModel model, NetworkLayout layout,
+        ImmutableArray<Forcing> forcings)
     {
         var state = new DoubleDoubleComplex[model.Blocks.Length][];
         for (var b = 0; b < state.Length; b++)
@@ -97,7 +99,7 @@ internal static class SettledStart
                     var growth = EngineeringNumber.Format(1 / block.T[i, i].Re.Hi, "s");
                     return Diagnostic.Error(
                         layout.Circuit.Source, default,
-                        $"there is no settled state to start from: a mode grows with a time constant of {growth}",
+                        $"there is no settled state to start from: a mode grows, time constant {growth}",
                         "start as stated, with the charges and currents you know");
                 }
             }
@@ -121,7 +123,7 @@ internal static class SettledStart
 
                 var part = layout.Circuit.Parts[cause.Source];
                 var how = forcing.Exponent.IsZero
-                    ? $"`{cause.Name}` drives a charge or current that nothing limits, so it has grown for ever"
+                    ? $"`{cause.Name}` drives a charge or current that nothing limits"
                     : $"`{cause.Name}` drives an undamped mode at its own frequency of "
                         + EngineeringNumber.Format(Math.Abs(forcing.Exponent.Im.Hi) / (2 * Math.PI), "Hz");
                 return Diagnostic.Error(

@@ -51,7 +51,8 @@ public sealed record TransientSolution(
 /// <param name="FirstSegment">Index of its first segment.</param>
 /// <param name="SegmentCount">How many segments it has.</param>
 /// <param name="StartsWith">The switchings at its start.</param>
-/// <param name="Momentary">The first segments of intervals that ended as they began, just before this one.</param>
+/// <param name="Momentary">The first segments of intervals that ended as they began, just before this
+/// one.</param>
 public sealed record SolvedInterval(
     double From, double Until, IntervalModel Model, int FirstSegment, int SegmentCount,
     ImmutableArray<Occurrence> StartsWith, ImmutableArray<Segment> Momentary);

@@ -6,7 +6,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>Solves a circuit from t = 0 to the end of its study, interval by interval, each cause alone.</summary>
+/// <summary>Solves a circuit from t = 0 to the end of its study, interval by interval, each cause
+/// alone.</summary>
 public sealed class TransientSolver
 {
     private const int MostAtOnce = 100; // switchings in no time: more is chatter
@@ -67,7 +68,8 @@ public sealed class TransientSolver
 
             var until = Math.Min(NextFixed().Due, end.Time);
             var solved = solver.Solve(model, intervals.Count, now, until, stored);
-            if (new DecidedEvents(timeline, 1e-12 * end.Time).FirstIn(solved) is { } decided && decided.Time < until)
+            if (new DecidedEvents(timeline, 1e-12 * end.Time).FirstIn(solved) is { } decided
+                && decided.Time < until)
             {
                 atOnce = decided.Time - now <= 1e-12 * end.Time ? atOnce + 1 : 0;
                 if (atOnce > MostAtOnce)
@@ -97,7 +99,8 @@ public sealed class TransientSolver
         }
     }
 
-    /// <summary>The stated end, or the one that follows from the slowest mode once nothing more is fixed to happen.</summary>
+    /// <summary>The stated end, or the one that follows from the slowest mode once nothing more is fixed to
+    /// happen.</summary>
     private (double Time, string? Reason)? EndFor(IntervalModel model)
     {
         if (circuit.Until is { } stated)
@@ -110,7 +113,8 @@ public sealed class TransientSolver
             : (double.PositiveInfinity, null);
     }
 
-    /// <summary>Ends the interval at an instant; one that had no time leaves what is stored just after it began.</summary>
+    /// <summary>Ends the interval at an instant; one that had no time leaves what is stored just after it
+    /// began.</summary>
     private void Advance(IntervalModel model, double until, ImmutableArray<Segment> solved)
     {
         if (until <= now)
@@ -121,7 +125,8 @@ public sealed class TransientSolver
         }
 
         var kept = until < solved[^1].End ? solver.Solve(model, intervals.Count, now, until, stored) : solved;
-        intervals.Add(new SolvedInterval(now, until, model, segments.Count, kept.Length, startsWith, momentary));
+        intervals.Add(new SolvedInterval(now, until, model, segments.Count, kept.Length, startsWith,
+            momentary));
         segments.AddRange(kept);
         stored = solver.StoredAtEnd(kept[^1]);
         startsWith = [];
@@ -151,7 +156,8 @@ public sealed class TransientSolver
         return (due, events.ToImmutable());
     }
 
-    /// <summary>Sets what every store holds at t = 0⁻, cause by cause; an error where no settled state exists.</summary>
+    /// <summary>Sets what every store holds at t = 0⁻, cause by cause; an error where no settled state
+    /// exists.</summary>
     private Diagnostic? FindInitialQuantities()
     {
         if (circuit.StartsSettled)
@@ -175,7 +181,7 @@ public sealed class TransientSolver
         return Diagnostic.Error(
             circuit.Source,
             part.Events[reference.Event].Span,
-            $"`{part.Name}` chatters: more than {MostAtOnce} switchings at {EngineeringNumber.Format(time, "s")} in no time",
+            $"`{part.Name}` chatters: over {MostAtOnce} switchings at {EngineeringNumber.Format(time, "s")}",
             "leave a gap between the level that opens a switch and the level that closes it");
     }
 

@@ -46,7 +46,8 @@ internal static class SelfChecks
         }
     }
 
-    /// <summary>The first instant at which switches acted twice in no time, which the other route does not follow.</summary>
+    /// <summary>The first instant at which switches acted twice in no time, which the other route does not
+    /// follow.</summary>
     private static double FirstMomentary(TransientSolution solution) =>
         solution.Intervals.Where(i => !i.Momentary.IsEmpty).Select(i => i.From)
             .DefaultIfEmpty(double.PositiveInfinity).First();

@@ -3,8 +3,8 @@ using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Measurements.Checks;
 
-/// <summary>How large quantities get over the study: what their errors are measured by. A quantity that is zero but
-/// for rounding is measured by a trace of the largest of its kind.</summary>
+/// <summary>How large quantities get over the study: what their errors are measured by. A quantity that is
+/// zero but for rounding is measured by a trace of the largest of its kind.</summary>
 internal sealed class StudySizes
 {
     private const double Trace = 1e-15; // rounding of double precision

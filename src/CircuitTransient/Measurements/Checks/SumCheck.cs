@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Verification;
 using CircuitTransient.Solutions;
+using CircuitTransient.Text;
 using Segment = CircuitTransient.Solutions.Segment;
 
 namespace CircuitTransient.Measurements.Checks;
@@ -13,8 +14,7 @@ internal static class SumCheck
     private const int MostInstants = 24;
 
     /// <summary>The worst difference over each quantity's largest value at the compared instants; null with a
-    /// reason
-    /// where the other route does not reach.</summary>
+    /// reason where the other route does not reach.</summary>
     /// <param name="solution">The solution to be judged.</param>
     /// <param name="other">The other route's.</param>
     /// <param name="sizes">What errors are measured by.</param>
@@ -41,7 +41,7 @@ internal static class SumCheck
 
         var rest = other.Rest?.Reason ?? (double.IsPositiveInfinity(until)
             ? null
-            : $"not compared beyond {Text.EngineeringNumber.Format(until, "s")}, where switches act twice in no time");
+            : $"not compared beyond {EngineeringNumber.Format(until, "s")}: switches act twice at once");
         return compared == 0
             ? (null, rest ?? "the other route gave no value")
             : (worst.Select((w, q) => Relative(w, sizes.Of(quantities[q]))).DefaultIfEmpty(0).Max(), rest);

@@ -1,12 +1,13 @@
 namespace CircuitTransient.Solutions.Curves;
 
-/// <summary>Finds when a curve reaches a level, on its closed form: stretches whose upper bound stays below the level
-/// are ruled out, monotone ones are bracketed, the others are halved.</summary>
+/// <summary>Finds when a curve reaches a level, on its closed form: stretches whose upper bound stays below
+/// the level are ruled out, monotone ones are bracketed, the others are halved.</summary>
 public static class LevelSearch
 {
     private const int MostStretches = 200_000;
 
-    /// <summary>The first instant of a piece, in seconds from its start, at which sign × value is at least a level.</summary>
+    /// <summary>The first instant of a piece, in seconds from its start, at which sign × value is at least a
+    /// level.</summary>
     /// <param name="piece">The piece.</param>
     /// <param name="sign">+1 to wait for a rise above, −1 for a fall below.</param>
     /// <param name="level">The level times the sign.</param>
@@ -86,14 +87,16 @@ public static class LevelSearch
 
         var (_, slope, _) = piece.At(middle, phi);
         var (second, _) = piece.DerivativeBounds(envelope);
-        return Math.Abs(slope) >= second * half || middle <= a || middle >= b ? Finding.Monotone : Finding.Halve;
+        return Math.Abs(slope) >= second * half || middle <= a || middle >= b ? Finding.Monotone
+            : Finding.Halve;
     }
 
     private static bool Reaches(CurvePiece piece, double sign, double level, double tau) =>
         sign * piece.ValueAt(tau) >= level;
 
     /// <summary>The crossing of a monotone stretch, halved until neighbouring numbers hold it.</summary>
-    private static double Bracket(CurvePiece piece, double sign, double level, double a, double b, bool forwards)
+    private static double Bracket(CurvePiece piece, double sign, double level, double a, double b,
+        bool forwards)
     {
         var (below, reached) = forwards ? (a, b) : (b, a);
         while (true)

@@ -77,8 +77,7 @@ public sealed class LinearPiece : CurvePiece
     }
 
     /// <summary>Parts the modes into slow ones, which a straight line follows better than their amplitude
-    /// bounds
-    /// them over the stretch, and fast ones.</summary>
+    /// bounds them over the stretch, and fast ones.</summary>
     internal SlowAndFast Split(
         double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope)
     {
