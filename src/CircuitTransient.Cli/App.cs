@@ -1,5 +1,7 @@
 using System.CommandLine;
+using System.CommandLine.Help;
 using System.CommandLine.Invocation;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
 
@@ -17,7 +19,8 @@ public static class App
     {
         try
         {
-            var parsed = Commands().Parse(args, new() { ResponseFileTokenReplacer = null });
+            var parsed = Commands(streams, cancellation)
+                .Parse(args, new() { ResponseFileTokenReplacer = null });
             var status = parsed.Action is ParseErrorAction
                 ? Refuse(parsed, streams)
                 : Invoke(parsed, streams);
@@ -30,19 +33,32 @@ public static class App
         }
         catch (IOException trouble)
         {
-            streams.Error.WriteLine($"error: the output could not be written: {trouble.Message}");
+            streams.Complain($"the output cannot be written: {FileTrouble.Reason(trouble)}");
             return ExitStatus.FileTrouble;
         }
         catch (Exception defect)
         {
-            streams.Error.WriteLine($"error: a defect of {Name}, not of your circuit: {defect.Message}");
-            streams.Error.WriteLine("please report it together with the circuit file");
+            streams.Complain($"a defect of {Name}, not a mistake of yours: {defect.Message}");
             return ExitStatus.SelfCheckFailed;
         }
     }
 
-    private static RootCommand Commands() =>
-        new("Exact transients of switched RLC circuits, every peak traced to its causes.");
+    private static RootCommand Commands(Streams streams, CancellationToken cancellation)
+    {
+        var root = new RootCommand("Exact transients of switched circuits, every peak traced to its causes.")
+        {
+            new CheckCommand(streams, cancellation),
+            new SolveCommand(streams, cancellation),
+        };
+        var help = root.Options.OfType<HelpOption>().Single();
+        help.Aliases.Clear();
+        help.Aliases.Add("-h");
+        help.Description = "Show what can be said.";
+        var version = root.Options.OfType<VersionOption>().Single();
+        version.Description = "Show the version.";
+        version.Recursive = true;
+        return root;
+    }
 
     private static int Invoke(ParseResult parsed, Streams streams) =>
         parsed.Invoke(new()
@@ -54,11 +70,33 @@ public static class App
 
     private static int Refuse(ParseResult parsed, Streams streams)
     {
-        foreach (var error in parsed.Errors)
+        var command = parsed.CommandResult.Command;
+        if (command is RootCommand)
         {
-            streams.Error.WriteLine($"error: {error.Message}");
+            streams.Complain(Unknown(parsed.UnmatchedTokens is [var word, ..] ? word : null, command));
+            streams.Error.WriteLine($"see `{Name} --help`");
+            return ExitStatus.Mistake;
         }
 
+        foreach (var error in parsed.Errors)
+        {
+            streams.Complain(error.Message);
+        }
+
+        streams.Error.WriteLine($"see `{Name} {command.Name} --help`");
         return ExitStatus.Mistake;
+    }
+
+    private static string Unknown(string? word, Command root)
+    {
+        var commands = root.Subcommands.Select(command => command.Name).ToList();
+        if (word is null)
+        {
+            return $"a command is missing: {string.Join(", ", commands)}";
+        }
+
+        return NearestName.Find(word, commands) is { } nearest
+            ? $"there is no command `{word}`; did you mean `{nearest}`?"
+            : $"there is no command `{word}`, only {string.Join(", ", commands)}";
     }
 }

@@ -1,3 +1,5 @@
+using CircuitTransient.Measurements;
+
 namespace CircuitTransient.Cli;
 
 /// <summary>What the process ends with; the higher, the worse.</summary>
@@ -23,4 +25,19 @@ public static class ExitStatus
 
     /// <summary>Stopped by Ctrl-C.</summary>
     public const int Interrupted = 130;
+
+    /// <summary>The status of a circuit that was solved.</summary>
+    /// <param name="result">Its result.</param>
+    /// <param name="isStrict">Whether warnings and passed linear ranges count as broken requirements.</param>
+    public static int Of(TransientResult result, bool isStrict)
+    {
+        if (!result.ChecksHold)
+        {
+            return SelfCheckFailed;
+        }
+
+        var isDoubtful = !result.Warnings.IsEmpty
+            || result.Parts.Any(part => part.LinearUpTo is { Holds: false });
+        return result.AllHold && !(isStrict && isDoubtful) ? Success : RequirementBroken;
+    }
 }

@@ -1,4 +1,6 @@
+using System.Collections.Immutable;
 using System.Text;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
 
@@ -15,6 +17,13 @@ public sealed record Streams(TextWriter Output, TextWriter Error, bool ErrorIsTe
             new StreamWriter(Console.OpenStandardOutput(), Encoding, bufferSize: 1 << 16) { NewLine = "\n" },
             new StreamWriter(Console.OpenStandardError(), Encoding) { NewLine = "\n", AutoFlush = true },
             !Console.IsErrorRedirected);
+
+    /// <summary>One line about something that is wrong and has no place in a file.</summary>
+    public void Complain(string message) => Error.WriteLine($"error: {message}");
+
+    /// <summary>Diagnostics with their places.</summary>
+    public void Report(ImmutableArray<Diagnostic> diagnostics) =>
+        Error.Write(DiagnosticText.Render(diagnostics));
 
     /// <inheritdoc/>
     public void Dispose()

@@ -1,1 +1,10 @@
-BenchmarkDotNet.Running.BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
+using CircuitTransient.Benchmarks;
+
+if (args is ["solve", var program, var circuit])
+{
+    SolveMeasurement.Print(program, circuit);
+}
+else
+{
+    BenchmarkDotNet.Running.BenchmarkSwitcher.FromAssembly(typeof(SolveMeasurement).Assembly).Run(args);
+}

@@ -60,9 +60,8 @@ internal static class CouplingLowering
         if (!isFactor && plain.Dimension != Dimension.Inductance)
         {
             state.Findings.Error(syntax.Value.Value.Span,
-                $"`{state.Text(syntax.Value.Value.Span)}` is {Measure.Of(plain.Dimension).Phrase}; a "
-                    + $"coupling is a "
-                + "factor from -1 to 1, or a mutual inductance in henries");
+                $"`{state.Text(syntax.Value.Value.Span)}` is {Measure.Of(plain.Dimension).Phrase}; "
+                + "a coupling is a pure number or in henries", "write `0.9`, or `3 mH`");
             return null;
         }
 
@@ -114,9 +113,9 @@ internal static class CouplingLowering
         }
 
         state.Findings.Error(span,
-            $"a mutual inductance of {Amount.Of(value.Value, "H")} would couple `{first.Name}` and "
-                + $"`{second.Name}` "
-            + $"by more than all their flux", $"the most is sqrt(L1·L2) = {Amount.Of(most, "H")}");
+            $"{Amount.Of(value.Value, "H")} would couple `{first.Name}` and `{second.Name}` by more than "
+                + $"all their flux",
+            $"the most is sqrt(L1·L2) = {Amount.Of(most, "H")}");
         return false;
     }
 
@@ -156,10 +155,8 @@ internal static class CouplingLowering
 
         var names = string.Join(", ", coils.Select(c => $"`{state.Declared[c].Name}`"));
         state.Findings.Error(set[0].Span,
-            $"the couplings of {names} cannot all hold: with some currents they would store negative energy, "
-            + $"{EngineeringNumber.Format(least, "", 3)} times what the coils store uncoupled",
-            "if a coil is coupled closely to two others, those two are coupled closely too; lower a "
-                + "factor or add one");
+            $"{names} so coupled can store {EngineeringNumber.Format(least, "", 3)} times their own energy",
+            "coils close to a third one are close to each other: lower a factor, or raise or add another");
     }
 
     private static double Factor(CheckState state, Coupling coupling) => coupling.IsFactor

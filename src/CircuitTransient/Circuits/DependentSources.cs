@@ -30,7 +30,7 @@ internal static class DependentSources
             var (v, i) = (Measure.Of(Dimension.Voltage / control.Dimension).Phrase,
                 Measure.Of(Dimension.Current / control.Dimension).Phrase);
             state.Findings.Error(TextSpan.Between(syntax.Gain.Span, syntax.Control.Span),
-                $"`{part.Name}` would set {Measure.Of(product).Phrase}; a source sets a voltage or a current",
+                $"`{part.Name}` would set {Measure.Of(product).Phrase}, not a voltage or a current",
                 $"to set a voltage the gain is {v}, to set a current {i}");
             return null;
         }

@@ -8,7 +8,7 @@ namespace CircuitTransient.Circuits;
 public sealed record DoubleExponential(double Tail, double Front, double Factor)
 {
     // a front a thousand million times shorter than the tail is a step
-    private const double LongestRatio = 1e9;
+    internal const double LongestRatio = 1e9;
 
     /// <summary>Solves for the time constants, or gives null where no double exponential has that
     /// ratio.</summary>
@@ -52,6 +52,7 @@ public sealed record DoubleExponential(double Tail, double Front, double Factor)
     /// 1/τ1.</summary>
     internal readonly struct Shape
     {
+        private readonly double ratio;
         private readonly double mean;
         private readonly double half;
         private readonly double crestTime;
@@ -59,7 +60,7 @@ public sealed record DoubleExponential(double Tail, double Front, double Factor)
 
         public Shape(double y)
         {
-            var ratio = Math.Exp(-y);
+            ratio = Math.Exp(-y);
             mean = (1 + ratio) / 2;
             half = ratio * Math.Exp(y / 2) * Math.Sinh(y / 2); // (1 − ρ)/2 without cancellation
             crestTime = y / (2 * half);
@@ -99,7 +100,7 @@ public sealed record DoubleExponential(double Tail, double Front, double Factor)
         {
             // 2 e^(−mt) sinh(δt), without overflow at large t where sinh is half an exponential.
             var x = half * t;
-            return x < 20 ? 2 * Math.Exp(-mean * t) * Math.Sinh(x) : Math.Exp(-(mean - half) * t);
+            return x < 20 ? 2 * Math.Exp(-mean * t) * Math.Sinh(x) : Math.Exp(-ratio * t);
         }
 
         private double Crossing(double below, double above, double fraction)

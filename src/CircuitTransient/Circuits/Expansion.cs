@@ -21,7 +21,7 @@ internal sealed class Expansion
         this.findings = findings;
         this.values = values;
         this.assemblies = assemblies;
-        places = new NameTable<PlaceStatement>("placed assembly", findings);
+        places = new NameTable<PlaceStatement>("placing", findings);
     }
 
     /// <summary>All statements with their scopes; the named values are declared on the way.</summary>
@@ -75,6 +75,7 @@ internal sealed class Expansion
     {
         if (ExpansionSize.CountOf(repeat, scope, values.Evaluator, findings) is not { } count)
         {
+            findings.LacksParts = true;
             return;
         }
 
@@ -83,6 +84,7 @@ internal sealed class Expansion
             findings.Error(repeat.Span,
                 $"the counter `{repeat.Counter}` is in use by the repetition round this one",
                 "give the inner one another letter");
+            findings.LacksParts = true;
             return;
         }
 
@@ -98,7 +100,7 @@ internal sealed class Expansion
     {
         if (!assemblies.TryGetValue(place.Assembly.Text, out var assembly))
         {
-            Excuse(place);
+            findings.LacksParts = true;
             return;
         }
 
@@ -113,6 +115,7 @@ internal sealed class Expansion
         var ownValues = assembly.Body.OfType<ValueStatement>().Select(v => v.Name.Text)
             .ToHashSet(StringComparer.Ordinal);
         var terminalNames = assembly.Terminals.Select(t => t.Text).ToHashSet(StringComparer.Ordinal);
+        var isMisnamed = false;
         foreach (var assignment in place.Assignments)
         {
             var inner = assignment.Inner.Text;
@@ -130,6 +133,7 @@ internal sealed class Expansion
             }
             else
             {
+                isMisnamed = true;
                 var nearest = NearestName.Find(inner, terminalNames.Concat(ownValues));
                 findings.Error(assignment.Inner.Span,
                     $"the assembly `{assembly.Name.Text}` has no terminal or value `{inner}`",
@@ -138,7 +142,7 @@ internal sealed class Expansion
             }
         }
 
-        if (Complete(place, assembly, terminals))
+        if (Complete(place, assembly, terminals, isMisnamed))
         {
             WriteAssembly(assembly, overrides, scope, new Scope(
                 name + "/", ImmutableDictionary<string, int>.Empty, terminals.ToImmutable(),
@@ -171,16 +175,9 @@ internal sealed class Expansion
         }
     }
 
-    // What a placing that failed would have joined and made is not missed a second time.
-    private void Excuse(PlaceStatement place)
-    {
-        findings.Excused.Add(place.Name.Text);
-        findings.Excused.UnionWith(place.Assignments.Select(a => a.Node?.Text).OfType<string>());
-    }
-
     private bool Complete(
         PlaceStatement place, AssemblyStatement assembly,
-        ImmutableDictionary<string, string>.Builder terminals)
+        ImmutableDictionary<string, string>.Builder terminals, bool isMisnamed)
     {
         var open = assembly.Terminals.Where(t => !terminals.ContainsKey(t.Text)).ToImmutableArray();
         if (open.Length == 0)
@@ -188,7 +185,12 @@ internal sealed class Expansion
             return true;
         }
 
-        Excuse(place);
+        findings.LacksParts = true;
+        if (isMisnamed)
+        {
+            return false;
+        }
+
         findings.Error(place.Name.Span,
             $"{(open.Length == 1 ? "the terminal" : "the terminals")} {Assemblies.List(open)} of "
             + $"`{place.Name.Text}` {(open.Length == 1 ? "is" : "are")} not joined to any node",

@@ -26,8 +26,7 @@ internal static class Expected
         if (state.Parameters.FirstToleranced(value.Formula) is { } held)
         {
             state.Findings.Warn(expression.Span, $"`{held.Name}` is held at its nominal value here",
-                "its tolerance is drawn only in part values, initial charges and currents, delays and "
-                    + "single waves");
+                "its tolerance is drawn in part values, charges, currents and single waves only");
         }
 
         return value.Value;
@@ -44,6 +43,26 @@ internal static class Expected
         }
 
         return Fixed(state, expression, scope, Dimension.None);
+    }
+
+    /// <summary>A time of more than zero that cannot vary.</summary>
+    public static double? PositiveTime(
+        CheckState state, ExpressionSyntax expression, Scope scope, string what)
+    {
+        if (Fixed(state, expression, scope, Dimension.Time) is not { } value)
+        {
+            return null;
+        }
+
+        if (value > 0)
+        {
+            return value;
+        }
+
+        state.Findings.Error(expression.Span,
+            $"{what} is more than zero, not `{state.Text(expression.Span)}`",
+            "write a longer time");
+        return null;
     }
 
     public static bool Matches(Findings findings, ExpressionSyntax expression, Dimension found,

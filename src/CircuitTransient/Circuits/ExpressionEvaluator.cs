@@ -104,7 +104,8 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
         if (step.Operator == '/' && b.Value == 0)
         {
             findings.Error(step.Right.Span,
-                $"`{Text(step.Right)}` is zero, and nothing can be divided by it");
+                $"`{Text(step.Right)}` is zero, and nothing can be divided by it",
+                "look for two values that cancel");
             return null;
         }
 
@@ -153,7 +154,8 @@ internal sealed class ExpressionEvaluator(Findings findings, NamedValues values)
         if (b.Dimension != Dimension.None)
         {
             findings.Error(step.Right.Span,
-                $"an exponent is a pure number, not {Measure.Of(b.Dimension).Phrase}");
+                $"an exponent is a pure number, not {Measure.Of(b.Dimension).Phrase}",
+                "divide it by a value of the same unit");
             return null;
         }
 

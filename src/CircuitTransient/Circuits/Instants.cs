@@ -79,8 +79,7 @@ internal static class Instants
 
         state.Findings.Error(expression.Span,
             $"`{state.Text(expression.Span)}` lies before the start of the study",
-            "the study starts at 0 s; what was before it is said by `charged to`, `carrying` or `start "
-                + "settled`");
+            "it starts at 0 s; `charged to`, `carrying` and `start settled` say what was before");
         return null;
     }
 

@@ -6,10 +6,15 @@ namespace CircuitTransient.Circuits;
 /// part.</summary>
 internal static class Islands
 {
-    private const int MostNamed = 5;
+    private const int MostNamed = 4;
 
     public static void Check(CheckState state, TextSpan referenceSpan)
     {
+        if (state.Findings.LacksParts)
+        {
+            return;
+        }
+
         CheckLoneNodes(state);
         if (state.Nodes.TouchOf(0).Count == 0)
         {
@@ -60,7 +65,7 @@ internal static class Islands
         for (var node = 1; node < state.Nodes.Count; node++)
         {
             var touch = state.Nodes.TouchOf(node);
-            if (touch.Count != 1 || state.Findings.IsExcused(state.Nodes[node]))
+            if (touch.Count != 1)
             {
                 continue;
             }

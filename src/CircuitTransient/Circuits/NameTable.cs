@@ -8,6 +8,7 @@ internal sealed class NameTable<T>(string noun, Findings findings)
 {
     private readonly Dictionary<string, Entry> entries = new(StringComparer.OrdinalIgnoreCase);
     private readonly List<string> names = [];
+    private readonly string plural = noun.EndsWith('y') ? noun[..^1] + "ies" : noun + "s";
 
     public IReadOnlyList<string> Names => names;
 
@@ -61,7 +62,8 @@ internal sealed class NameTable<T>(string noun, Findings findings)
             return true;
         }
 
-        if (!findings.IsExcused(name) && findings.IsNew(span))
+        var isMissedAlready = (findings.LacksParts && noun is ("part" or "node")) || findings.IsExcused(name);
+        if (!isMissedAlready && findings.IsNew(span))
         {
             var nearest = NearestName.Find(name, names);
             findings.Error(span, $"there is no {noun} `{name}`",
@@ -72,7 +74,7 @@ internal sealed class NameTable<T>(string noun, Findings findings)
     }
 
     private string? Known() => names.Count is > 0 and <= 8
-        ? $"the {noun}s are {string.Join(", ", names.Select(n => $"`{n}`"))}"
+        ? $"the {plural} are {string.Join(", ", names.Select(n => $"`{n}`"))}"
         : null;
 
     private void ReportTaken(string name, TextSpan span, Entry taken)
@@ -80,12 +82,12 @@ internal sealed class NameTable<T>(string noun, Findings findings)
         var line = findings.LineOf(taken.Span);
         if (taken.Name == name)
         {
-            findings.Error(span, $"there are two {noun}s named `{name}`",
+            findings.Error(span, $"there are two {plural} named `{name}`",
                 $"the first stands in line {line}; give this one a name of its own");
         }
         else
         {
-            findings.Error(span, $"the {noun}s `{taken.Name}` and `{name}` differ only in case",
+            findings.Error(span, $"the {plural} `{taken.Name}` and `{name}` differ only in case",
                 $"line {line} has `{taken.Name}`; write both alike, or give one another name");
         }
     }

@@ -123,11 +123,9 @@ internal static class PartValues
         var limit = value.Value > 0 ? range.Lowest : range.Highest;
         var unit = Measure.Of(value.Dimension).Unit;
         state.Findings.Error(syntax.Tolerance?.Span ?? syntax.Value.Span,
-            $"the tolerance of `{part.Name}` reaches {(limit == 0 ? "zero" : "past zero")}: its {aspect} "
-                + $"would go from "
+            $"the tolerance of `{part.Name}` reaches {(limit == 0 ? "zero" : "past zero")}: "
             + $"{Amount.Of(range.Lowest, unit)} to {Amount.Of(range.Highest, unit)}",
-            $"{(aspect[0] is 'i' or 'o' ? "an" : "a")} {aspect} of zero is no {part.Kind}; narrow the "
-                + $"tolerance");
+            $"{(aspect[0] is 'i' or 'o' ? "an" : "a")} {aspect} of zero is no {part.Kind}; narrow it");
         return true;
     }
 

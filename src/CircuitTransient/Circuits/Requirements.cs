@@ -9,7 +9,7 @@ internal static class Requirements
     public static Requirement? Lower(CheckState state, RequireStatement syntax, Scope scope, double? until)
     {
         var quantity = Measurands.Lower(state, syntax.Quantity, scope);
-        var window = Windows.Lower(state, syntax.Window, scope, until, "this requirement is never judged");
+        var window = Windows.Lower(state, syntax.Window, scope, until, "this is never judged");
         if (quantity is null)
         {
             return null;
@@ -99,7 +99,7 @@ internal static class Requirements
         if (Schedule.Resolve(by, state.Parts) > until)
         {
             state.Findings.Error(syntax.By.Span,
-                $"this requirement is never judged: the study ends at {Amount.Of(until!.Value, "s")}",
+                $"this is never judged: the study ends at {Amount.Of(until!.Value, "s")}",
                 "end the study later, or ask for an earlier time");
             return null;
         }

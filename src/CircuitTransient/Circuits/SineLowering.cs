@@ -77,25 +77,7 @@ internal sealed class SineLowering(CheckState state, Scope scope)
         return Expected.Fixed(state, phase, scope, Dimension.None);
     }
 
-    private double? Decay(ExpressionSyntax? timeConstant)
-    {
-        if (timeConstant is null)
-        {
-            return 0;
-        }
-
-        if (Expected.Fixed(state, timeConstant, scope, Dimension.Time) is not { } tau)
-        {
-            return null;
-        }
-
-        if (tau > 0)
-        {
-            return 1 / tau;
-        }
-
-        state.Findings.Error(timeConstant.Span,
-            $"a time constant is more than zero, not `{state.Text(timeConstant.Span)}`");
-        return null;
-    }
+    private double? Decay(ExpressionSyntax? timeConstant) => timeConstant is null
+        ? 0
+        : 1 / Expected.PositiveTime(state, timeConstant, scope, "a time constant");
 }

@@ -44,11 +44,9 @@ internal static class StoredContradictions
                 && Clause<ChargedToSyntax>(state, capacitor) is { } clause)
             {
                 state.Findings.Warn(clause.Span,
-                    $"`{capacitor.Name}` is charged to {Amount.Of(stated, "V")}, but what it stands "
-                        + $"across holds it at "
-                    + $"{Amount.Of(imposed, "V")}",
-                    $"the voltage round this loop jumps by {Amount.Of(jump, "V")} at t = 0, as an impulse "
-                        + $"of current; "
+                    $"`{capacitor.Name}` is charged to {Amount.Of(stated, "V")}, but is held at "
+                        + $"{Amount.Of(imposed, "V")}",
+                    $"it jumps by {Amount.Of(jump, "V")} at once; "
                     + $"write `charged to {Amount.Of(imposed, "V")}` if no jump is meant");
             }
         }
@@ -97,11 +95,9 @@ internal static class StoredContradictions
                 is { } clause)
             {
                 state.Findings.Warn(clause.Span,
-                    $"the current that `{coil.Name}` carries at the start has no way on: "
-                        + $"{Amount.Of(Math.Abs(sum), "A")} "
-                    + "is left over where it meets other coils, current sources or open contacts",
-                    "the currents jump at t = 0, as an impulse of voltage; let series coils carry the "
-                        + "same current");
+                    $"the current that `{coil.Name}` carries has no way on: "
+                    + $"{Amount.Of(Math.Abs(sum), "A")} is left",
+                    "it jumps at once; let coils in series carry one current");
             }
         }
     }

@@ -5,15 +5,18 @@ internal static class SwitchOrder
 {
     public static void Check(CheckState state, double? until)
     {
-        ReportRings(state);
-        foreach (var part in state.Parts.OfType<Switch>())
+        var ringed = ReportRings(state);
+        for (var index = 0; index < state.Parts.Length; index++)
         {
-            Check(state, part, until);
+            if (state.Parts[index] is Switch part && !ringed.Contains(index))
+            {
+                Check(state, part, until);
+            }
         }
     }
 
     // Events that wait for each other in a ring, or for a later event of their own switch.
-    private static void ReportRings(CheckState state)
+    private static HashSet<int> ReportRings(CheckState state)
     {
         var reported = new HashSet<EventReference>();
         for (var index = 0; index < state.Parts.Length; index++)
@@ -23,6 +26,8 @@ internal static class SwitchOrder
                 ReportRing(state, new EventReference(index, e), reported);
             }
         }
+
+        return [.. reported.Select(r => r.Part)];
     }
 
     private static void ReportRing(CheckState state, EventReference start, HashSet<EventReference> reported)
@@ -36,7 +41,7 @@ internal static class SwitchOrder
                 var names = string.Join(" → ", path.Append(next).Select(r => Words(state, r)));
                 state.Findings.Error(((Switch)state.Parts[start.Part]!).Events[start.Event].Span,
                     next == start ? $"`{Words(state, start)}` waits for itself: {names}"
-                        : $"`{Words(state, start)}` waits for a later event of its own switch: {names}",
+                        : $"`{Words(state, start)}` waits for its own later event: {names}",
                     "give one of these events a time");
                 reported.UnionWith(path);
             }

@@ -62,7 +62,8 @@ internal static class Tolerances
                         + $"limits of "
                         + $"{measure.Phrase} are in {measure.UnitWord}"
                     : $"a tolerance is in per cent, not {Measure.Of(limit.Dimension).Phrase}",
-                    written.IsAbsolute ? null : "for absolute limits write `between A and B`");
+                    written.IsAbsolute ? "write both limits in the unit of the value"
+                        : "for absolute limits write `between A and B`");
                 return null;
             }
         }

@@ -13,6 +13,9 @@ internal static class Unreadable
             switch (statement)
             {
                 case UnreadableStatement unreadable:
+                    findings.LacksParts |= unreadable.KeyWord is not (
+                        "observe" or "require" or "value" or "note"
+                        or "circuit" or "start" or "until");
                     findings.Excused.UnionWith(unreadable.Mentions);
                     if (unreadable.Name is { } name)
                     {

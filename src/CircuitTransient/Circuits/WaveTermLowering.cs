@@ -55,7 +55,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
             RampSyntax ramp => Ramp(ramp, level ?? 0),
             SineSyntax sine => new SineLowering(state, scope).Lower(sine, level ?? 0),
             DecaySyntax decay => Decay(decay, level ?? 0),
-            ImpulseSyntax impulse => Impulse(impulse, level ?? 0),
+            ImpulseSyntax impulse => new ImpulseLowering(state, scope).Lower(impulse, level ?? 0, Dimension),
             _ => throw new System.Diagnostics.UnreachableException($"no wave for {piece}"),
         };
         return level is null ? null : pieces;
@@ -94,7 +94,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         state.Findings.Error(expression.Span, isBare
             ? $"`{text}` has no unit; a source is in volts or amperes"
             : $"`{text}` is {Measure.Of(found).Phrase}; a source is in volts or amperes",
-            isBare ? $"write `{text} V` or `{text} A`" : null);
+            isBare ? $"write `{text} V` or `{text} A`"
+                : "what is written here must come out in volts or amperes");
         return false;
     }
 
@@ -171,44 +172,11 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
     private ImmutableArray<WavePiece>? Decay(DecaySyntax decay, double level)
     {
         var from = Instants.Fixed(state, decay.From, scope);
-        var tau = Positive(decay.TimeConstant, "a time constant");
+        var tau = Expected.PositiveTime(state, decay.TimeConstant, scope, "a time constant");
         return from is { } start && tau is { } t
             ? [new WavePiece(start, double.PositiveInfinity, level, 0, 1 / t, 0, 0,
                 $"decay from {Time(start)}")]
             : null;
-    }
-
-    private ImmutableArray<WavePiece>? Impulse(ImpulseSyntax impulse, double level)
-    {
-        var from = Instants.Fixed(state, impulse.From, scope);
-        var front = Positive(impulse.Front, "a front time");
-        var half = Positive(impulse.HalfValue, "a time to half-value");
-        if (from is not { } start || front is not { } t1 || half is not { } t2
-            || Dimension is not { } dimension)
-        {
-            return null;
-        }
-
-        var isVoltage = dimension == Text.Dimension.Voltage;
-        if (DoubleExponential.Solve(t1, t2, isVoltage) is not { } wave)
-        {
-            var definition = isVoltage ? "IEC 60060-1 front and half-value times" : "10–90 % × 1.25 front";
-            state.Findings.Error(TextSpan.Between(impulse.Front.Span, impulse.HalfValue.Span),
-                $"no double exponential has a half-value time of {Amount.Of(Math.Round(t2 / t1, 4), "")} "
-                    + $"times its front; "
-                + $"the least is {Amount.Of(Math.Round(DoubleExponential.LeastRatio(isVoltage), 4), "")}",
-                $"that is the limit t·e^(−t), by {definition}; give such a wave as `straight lines` or by "
-                    + $"its circuit");
-            return null;
-        }
-
-        var crest = level * wave.Factor;
-        var name = $"impulse from {Time(start)}";
-        return
-        [
-            new WavePiece(start, double.PositiveInfinity, crest, 0, 1 / wave.Tail, 0, 0, name + ", tail"),
-            new WavePiece(start, double.PositiveInfinity, -crest, 0, 1 / wave.Front, 0, 0, name + ", front"),
-        ];
     }
 
     private ImmutableArray<WavePiece>? Lines(StraightLinesSyntax lines)
@@ -269,23 +237,6 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
 
         state.Findings.Error(span, $"{what} ends at {Time(b)}, which is not after its start at {Time(a)}",
             "give the earlier time first");
-        return null;
-    }
-
-    private double? Positive(ExpressionSyntax expression, string what)
-    {
-        if (Expected.Fixed(state, expression, scope, Text.Dimension.Time) is not { } value)
-        {
-            return null;
-        }
-
-        if (value > 0)
-        {
-            return value;
-        }
-
-        state.Findings.Error(expression.Span,
-            $"{what} is more than zero, not `{state.Text(expression.Span)}`");
         return null;
     }
 

@@ -31,7 +31,7 @@ internal static class Windows
         if (start > until)
         {
             state.Findings.Error(syntax.From!.Span,
-                $"{consequence}: its window starts at {Amount.Of(start.Value, "s")}, and the study ends at "
+                $"{consequence}: it starts at {Amount.Of(start.Value, "s")}, the study ends at "
                 + Amount.Of(until.Value, "s"),
                     $"write `until {Amount.Of(2 * start.Value, "s")}`, or an earlier window");
             return null;

@@ -3,7 +3,8 @@ using System.Runtime.Intrinsics;
 
 namespace CircuitTransient.Numerics;
 
-/// <summary>The sum of products of two vectors in double precision, in four fixed lanes: the same bits everywhere.</summary>
+/// <summary>The sum of products of two vectors in double precision, in four fixed lanes: the same bits
+/// everywhere.</summary>
 public static class DotProduct
 {
     /// <summary>a · b.</summary>

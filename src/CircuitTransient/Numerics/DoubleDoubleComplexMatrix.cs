@@ -46,6 +46,37 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
         return new(re, new(re.Rows, re.Columns));
     }
 
+    /// <summary>A matrix of the array's entries.</summary>
+    public static DoubleDoubleComplexMatrix From(DoubleDoubleComplex[,] values)
+    {
+        ArgumentNullException.ThrowIfNull(values);
+        DoubleDoubleComplexMatrix result = new(values.GetLength(0), values.GetLength(1));
+        for (int i = 0; i < result.Rows; i++)
+        {
+            for (int j = 0; j < result.Columns; j++)
+            {
+                result[i, j] = values[i, j];
+            }
+        }
+
+        return result;
+    }
+
+    /// <summary>The entries as an array.</summary>
+    public DoubleDoubleComplex[,] ToArray()
+    {
+        DoubleDoubleComplex[,] result = new DoubleDoubleComplex[Rows, Columns];
+        for (int i = 0; i < Rows; i++)
+        {
+            for (int j = 0; j < Columns; j++)
+            {
+                result[i, j] = this[i, j];
+            }
+        }
+
+        return result;
+    }
+
     /// <summary>A copy.</summary>
     public DoubleDoubleComplexMatrix Copy() => new(Re.Copy(), Im.Copy());
 

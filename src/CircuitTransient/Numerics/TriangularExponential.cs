@@ -1,55 +1,73 @@
-using System.Numerics;
-
 namespace CircuitTransient.Numerics;
 
+/// <summary>e^(T t) of a small upper triangular matrix, in double-double.</summary>
+/// <remarks>Taylor's series about the mean pole, scaled so that the poles' distances from it are small, then
+/// squared (C. B. Moler, C. F. Van Loan, "Nineteen dubious ways to compute the exponential of a matrix", SIAM
+/// Review 20 (1978), methods 1 and 3, from memory). Scaling goes by the poles, not by the norm, so that a
+/// chain of equal poles is a polynomial in t; differences of poles are never divided.</remarks>
 public static class TriangularExponential
 {
-    public static Complex[,] Of(DoubleDoubleComplex[,] t, double tau)
+    /// <summary>Farthest distance of a scaled pole from the mean; e^½ costs no digits.</summary>
+    internal const double ScaledDistance = 0.5;
+
+    private const int MostTerms = 400; // chains of m poles need about m + 30
+    private const double Negligible = 1e-34;
+
+    /// <summary>e^(T t).</summary>
+    public static DoubleDoubleComplexMatrix Of(DoubleDoubleComplexMatrix t, DoubleDouble time)
     {
-        var x = Exact(t, tau);
-        var n = t.GetLength(0);
-        var r = new Complex[n, n];
-        for (var i = 0; i < n; i++)
-            for (var j = i; j < n; j++)
-                r[i, j] = (Complex)x[i, j];
-        return r;
+        ArgumentNullException.ThrowIfNull(t);
+        int m = t.Rows;
+        if (m == 1)
+        {
+            DoubleDoubleComplexMatrix single = new(1, 1);
+            single[0, 0] = DoubleDoubleComplex.Exp(t[0, 0] * time);
+            return single;
+        }
+
+        CentredBlock centred = CentredBlock.Of(t);
+        double distance = centred.Farthest * Math.Abs(time.Hi);
+        int squarings = distance > ScaledDistance ? Math.ILogB(distance / ScaledDistance) + 1 : 0;
+        DoubleDouble scaledTime = DoubleDouble.ScaleByPowerOfTwo(time, -squarings);
+        DoubleDouble shift = time.Hi >= 0 ? centred.Rightmost : 0; // keeps every square bounded
+        DoubleDoubleComplexMatrix result = Taylor(centred.N, scaledTime);
+        result.Scale(DoubleDouble.Exp(-(shift * scaledTime)));
+        for (int k = 0; k < squarings; k++)
+        {
+            result = result.Times(result);
+        }
+
+        return Scaled(result, DoubleDoubleComplex.Exp((centred.Mean + shift) * time));
     }
 
-    public static DoubleDoubleComplex[,] Exact(DoubleDoubleComplex[,] t, DoubleDouble tau)
+    /// <summary>e^(T t) of a triangle held as an array.</summary>
+    public static DoubleDoubleComplex[,] Exact(DoubleDoubleComplex[,] t, DoubleDouble time) =>
+        Of(DoubleDoubleComplexMatrix.From(t), time).ToArray();
+
+    private static DoubleDoubleComplexMatrix Taylor(DoubleDoubleComplexMatrix n, DoubleDouble time)
     {
-        var n = t.GetLength(0);
-        var mean = DoubleDoubleComplex.Zero;
-        for (var i = 0; i < n; i++) mean += t[i, i];
-        mean = mean / (DoubleDouble)n;
-        var a = new DoubleDoubleComplex[n, n];
-        double norm = 0;
-        for (var i = 0; i < n; i++)
-            for (var j = i; j < n; j++)
-            {
-                a[i, j] = (t[i, j] - (i == j ? mean : DoubleDoubleComplex.Zero)) * tau;
-                norm += a[i, j].Magnitude;
-            }
-        var k = norm > 0.5 ? (int)Math.Ceiling(Math.Log2(norm)) + 1 : 0;
-        var s = DoubleDouble.ScaleByPowerOfTwo(1, -k);
-        var term = new DoubleDoubleComplex[n, n];
-        var sum = new DoubleDoubleComplex[n, n];
-        for (var i = 0; i < n; i++) { term[i, i] = 1; sum[i, i] = 1; for (var j = i; j < n; j++) a[i, j] *= s; }
-        for (var m = 1; m <= 26; m++)
+        DoubleDoubleComplexMatrix sum = DoubleDoubleComplexMatrix.Identity(n.Rows);
+        DoubleDoubleComplexMatrix term = sum.Copy();
+        int quiet = 0;
+        for (int k = 1; k < MostTerms && quiet < n.Rows; k++)
         {
-            term = Mul(term, a);
-            for (var i = 0; i < n; i++) for (var j = i; j < n; j++) { term[i, j] = term[i, j] / (DoubleDouble)m; sum[i, j] += term[i, j]; }
+            term = term.Times(n);
+            term.Scale(time / k);
+            sum = new(sum.Re.Plus(1, term.Re), sum.Im.Plus(1, term.Im));
+            quiet = term.FrobeniusNorm() <= Negligible * sum.FrobeniusNorm() ? quiet + 1 : 0;
         }
-        for (var q = 0; q < k; q++) sum = Mul(sum, sum);
-        var f = DoubleDoubleComplex.Exp(mean * tau);
-        for (var i = 0; i < n; i++) for (var j = i; j < n; j++) sum[i, j] *= f;
+
         return sum;
     }
 
-    private static DoubleDoubleComplex[,] Mul(DoubleDoubleComplex[,] a, DoubleDoubleComplex[,] b)
+    private static DoubleDoubleComplexMatrix Scaled(DoubleDoubleComplexMatrix a, DoubleDoubleComplex factor)
     {
-        var n = a.GetLength(0);
-        var c = new DoubleDoubleComplex[n, n];
-        for (var i = 0; i < n; i++) for (var j = i; j < n; j++) for (var k = i; k <= j; k++) c[i, j] += a[i, k] * b[k, j];
-        return c;
+        DoubleDoubleComplexMatrix result = new(a.Rows, a.Columns);
+        for (int i = 0; i < a.Rows; i++)
+        {
+            result.AddScaledRow(i, factor, a, i);
+        }
+
+        return result;
     }
 }

@@ -84,7 +84,7 @@ internal sealed partial class PlotPanel
 
     private void AddPeak(Extreme extreme, bool isMax)
     {
-        if (extreme.Value is not { } value || !window.Holds(extreme.Time))
+        if (extreme.Value is not { } value || value == 0 || !window.Holds(extreme.Time))
         {
             return;
         }

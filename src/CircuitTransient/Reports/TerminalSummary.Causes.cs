@@ -167,7 +167,7 @@ public static partial class TerminalSummary
 
     private static string Percent(double fraction)
     {
-        var percent = 100 * fraction;
+        var percent = Math.Round(100 * fraction, 1) + 0.0; // never a negative zero
         var digits = Math.Abs(percent) >= 1000 ? "0" : "0.0";
         var text = percent.ToString(digits, CultureInfo.InvariantCulture);
         return text + " %";

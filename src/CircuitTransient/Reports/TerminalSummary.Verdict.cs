@@ -38,7 +38,9 @@ public static partial class TerminalSummary
         (_, 0) => "",
         (1, 1) => $"the {noun} holds",
         (0, 1) => $"the {noun} is {otherwise}",
+        (0, 2) => $"both {noun}s are {otherwise}",
         (0, _) => $"all {all} {noun}s are {otherwise}",
+        (2, 2) => $"both {noun}s hold",
         _ when holding == all => $"all {all} {noun}s hold",
         _ when holding == all - 1 => $"one of {all} {noun}s is {otherwise}",
         _ => $"{all - holding} of {all} {noun}s are {otherwise}",
@@ -86,7 +88,8 @@ public static partial class TerminalSummary
         var statement = $"{requirement.Statement}{because} (line {requirement.Line})";
         var worst = Finite(requirement.Worst.Value, requirement.Unit);
         var when = InstantWords.At(result, requirement.Worst.Time);
-        return [verdict, statement, $"{worst} {when}".TrimEnd()];
+        var joint = when.Length == 0 ? "" : when.StartsWith("at ", StringComparison.Ordinal) ? " " : ", ";
+        return [verdict, statement, worst + joint + when];
     }
 
     private static void WriteRatings(SummaryText text, TransientResult result)

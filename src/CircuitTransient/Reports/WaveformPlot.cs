@@ -68,7 +68,7 @@ public static class WaveformPlot
 
         var source = result.Circuit.Source;
         var foot =
-            $"{source.Name}, SHA-256 {source.Sha256[..12]}…. Result of a linear model; a calculation aid.";
+            $"{source.Name}, SHA-256 {source.Sha256[..12]}… · a linear model, a calculation aid";
         shapes.Add(
             new TextShape(
                 left,

@@ -26,6 +26,7 @@ public sealed class Mode
 {
     private readonly DoubleDoubleComplex[,] t;
     private readonly Complex[,] rounded;
+    private readonly BlockExponential? exponential;
 
     /// <summary>Takes the triangle.</summary>
     public Mode(ModeKind kind, DoubleDoubleComplex[,] triangle, int rows, int block)
@@ -49,6 +50,11 @@ public sealed class Mode
         for (var i = 0; i < rows; i++)
         {
             CarrierCount += Order - i;
+        }
+
+        if (Order > 1 && (kind == ModeKind.Pole || (kind == ModeKind.Joined && rows > 1)))
+        {
+            exponential = new BlockExponential(DoubleDoubleComplexMatrix.From(triangle));
         }
     }
 
@@ -78,6 +84,9 @@ public sealed class Mode
 
     /// <summary>T in double precision.</summary>
     public Complex[,] Rounded => rounded;
+
+    /// <summary>exp(T τ) made ready for many instants; null where a chain's own series serves.</summary>
+    public BlockExponential? Exponential => exponential;
 
     /// <summary>The place of the function in row i and column j ≥ i.</summary>
     public int Carrier(int i, int j) => (i * Order) - (i * (i - 1) / 2) + j - i;

@@ -13,14 +13,16 @@ internal static class ModeEvaluation
         {
             Put(mode, 0, Exponential(mode.Triangle[0, 0], tau), values);
         }
-        else if (mode.Kind == ModeKind.Pole || (mode.Kind == ModeKind.Joined && mode.Rows > 1))
+        else if (mode.Exponential is { } exponential)
         {
-            var x = TriangularExponential.Of(mode.Triangle, tau);
+            var x = mode.Order <= 16 ? stackalloc Complex[mode.Order * mode.Order]
+                : new Complex[mode.Order * mode.Order];
+            exponential.Evaluate(tau, x);
             for (var i = 0; i < mode.Rows; i++)
             {
                 for (var j = i; j < mode.Order; j++)
                 {
-                    Put(mode, mode.Carrier(i, j), x[i, j], values);
+                    Put(mode, mode.Carrier(i, j), x[(i * mode.Order) + j], values);
                 }
             }
         }

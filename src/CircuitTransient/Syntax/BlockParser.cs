@@ -71,8 +71,7 @@ internal static class BlockParser
             return null;
         }
 
-        // `in = a/b` may be an inner node or a quotient: both readings are kept, the checker knows which is
-        // meant.
+        // `in = a/b` may be an inner node or a quotient: both readings are kept for the checker to choose.
         var here = cursor.Here;
         var node = NameParser.ReadNode(cursor);
         var isNode = node is not null && (cursor.IsAtEnd || cursor.IsSign(','));

@@ -11,8 +11,11 @@ internal sealed class BlockStack(SourceText source, List<Diagnostic> diagnostics
     private readonly Stack<(Statement Header, ImmutableArray<Statement>.Builder Body)> open = [];
     private ImmutableArray<Statement>.Builder current = ImmutableArray.CreateBuilder<Statement>();
 
-    /// <summary>Adds a statement to the innermost block; one that opens a block becomes the
-    /// innermost.</summary>
+    /// <summary>Whether blocks were nested past reason, and reading should stop.</summary>
+    public bool IsTooDeep { get; private set; }
+
+    /// <summary>Adds a statement to the innermost block; one that opens a block
+    /// becomes the innermost.</summary>
     public void Add(Statement statement)
     {
         var opens = statement is RepeatStatement or AssemblyStatement
@@ -25,8 +28,10 @@ internal sealed class BlockStack(SourceText source, List<Diagnostic> diagnostics
 
         if (open.Count == Deepest)
         {
+            IsTooDeep = true;
             diagnostics.Add(Diagnostic.Error(source, statement.Span,
                 $"blocks are nested deeper than {Deepest}", "close the outer ones with `end` first"));
+            return;
         }
 
         open.Push((statement, current));
@@ -51,13 +56,19 @@ internal sealed class BlockStack(SourceText source, List<Diagnostic> diagnostics
     {
         while (open.Count > 0)
         {
+            if (IsTooDeep)
+            {
+                Pop(open.Peek().Header.Span);
+                continue;
+            }
+
             var header = open.Peek().Header;
             var word = header is AssemblyStatement or UnreadableStatement { KeyWord: "assembly" }
                 ? "assembly"
                 : "repeat";
             diagnostics.Add(Diagnostic.Error(source, new TextSpan(header.Span.Start, word.Length),
                 $"the `{word}` that starts here has no `end`",
-                    "write `end` on a line of its own behind its last line"));
+                "write `end` on a line of its own behind its last line"));
             Pop(header.Span);
         }
 
@@ -67,7 +78,7 @@ internal sealed class BlockStack(SourceText source, List<Diagnostic> diagnostics
     private void Pop(TextSpan end)
     {
         var (header, outer) = open.Pop();
-        var body = open.Count < Deepest ? current.ToImmutable() : [];
+        var body = current.ToImmutable();
         var span = TextSpan.Between(header.Span, end);
         outer.Add(header switch
         {

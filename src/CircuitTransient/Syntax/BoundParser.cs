@@ -3,8 +3,7 @@ namespace CircuitTransient.Syntax;
 /// <summary>Reads what is required of a quantity.</summary>
 internal static class BoundParser
 {
-    private const string Forms = "bounds are `at most 1.1 kV`, `at least 48 V`, `between -5 A and 200 A`, "
-        + "`at most 60 V in magnitude`";
+    private const string Forms = "bounds are `at most 1.1 kV`, `at least 48 V`, `between -5 A and 200 A`";
 
     /// <summary>A quantity and its limits.</summary>
     public static (QuantitySyntax, BoundSyntax)? Read(StatementCursor cursor)

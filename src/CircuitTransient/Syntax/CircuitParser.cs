@@ -21,8 +21,7 @@ public static class CircuitParser
     }
 
     /// <summary>Reads every statement that can be read, and says what is wrong with the others, which are
-    /// kept as
-    /// <see cref="UnreadableStatement"/>.</summary>
+    /// kept as <see cref="UnreadableStatement"/>.</summary>
     public static (CircuitSyntax Syntax,
         ImmutableArray<Diagnostic> Diagnostics) ParseWhatCanBe(SourceText source)
     {
@@ -36,43 +35,37 @@ public static class CircuitParser
             var cursor = new StatementCursor(source, tokens, diagnostics);
             if (lexer.IsCut)
             {
-                cursor.Error(tokens[0].Span, "the statement has more than a million words and signs",
+                cursor.Error(tokens[0].Span, "the statement has more than two million words and signs",
                     "read straight lines of that length from a file: `straight lines in file \"NAME.csv\"`");
             }
-            else if (tokens.Count == 1 && cursor.IsWord("end"))
+
+            if (tokens.Count == 1 && cursor.IsWord("end"))
             {
                 blocks.Close(tokens[0].Span);
             }
             else
             {
-                blocks.Add(StatementParser.Read(cursor));
+                blocks.Add(lexer.IsCut ? StatementParser.Unreadable(cursor) : StatementParser.Read(cursor));
             }
 
-            if (++count > MostStatements || diagnostics.Count >= MostErrors)
+            if (++count > MostStatements || diagnostics.Count >= MostErrors || blocks.IsTooDeep)
             {
-                ReportStop(cursor, count > MostStatements);
+                ReportStop(cursor, count);
                 break;
             }
 
             tokens.Clear();
         }
 
-        var statements = blocks.Finish();
-        if (count == 0)
-        {
-            diagnostics.Add(Diagnostic.Error(source, new TextSpan(0, 0), "the file has no statement",
-                "start with a part: `resistor R1 from a to ground : 82 Ω`"));
-        }
-
-        return (new CircuitSyntax(source, statements), [.. diagnostics]);
+        return (new CircuitSyntax(source, blocks.Finish()), [.. diagnostics]);
     }
 
-    private static void ReportStop(StatementCursor cursor, bool isTooLong)
+    private static void ReportStop(StatementCursor cursor, int count)
     {
-        var message = isTooLong
-            ? "the file has more than 250 000 statements; reading stopped here"
-            : "the file has 1000 mistakes; reading stopped here";
-        cursor.Error(new TextSpan(cursor.LastEnd, 0), message,
-            isTooLong ? "write what repeats with `repeat`" : null);
+        if (count > MostStatements)
+        {
+            cursor.Error(new TextSpan(cursor.LastEnd, 0), "the file has more than 250 000 statements",
+                "write what repeats with `repeat`");
+        }
     }
 }

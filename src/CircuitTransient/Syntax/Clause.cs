@@ -127,8 +127,8 @@ public enum FigureKind
 }
 
 /// <summary>A figure read off a waveform.</summary>
-/// <param name="Argument">The band of a settling time or the level of a time after which it stays
-/// below.</param>
+/// <param name="Argument">The band of a settling time or the level of a time
+/// after which it stays below.</param>
 public sealed record FigureSyntax(
     TextSpan Span, FigureKind Kind, QuantitySyntax Of, ExpressionSyntax? Argument)
     : QuantitySyntax(Span);

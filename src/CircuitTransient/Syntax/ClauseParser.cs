@@ -6,11 +6,13 @@ namespace CircuitTransient.Syntax;
 /// <summary>Reads the clauses behind a part's value.</summary>
 internal static class ClauseParser
 {
+    private const int MostErrors = 20; // in one statement; as many as are shown of a file
+
     private static readonly string[] words =
         ["charged", "carrying", "rated", "linear", "closed", "open", "closes", "opens"];
 
-    /// <summary>Reads clauses to the end of the statement; after a mistake in one it goes on with the
-    /// next.</summary>
+    /// <summary>Reads clauses to the end of the statement; after a mistake in one it
+    /// goes on with the next.</summary>
     public static ImmutableArray<ClauseSyntax> ReadAll(StatementCursor cursor)
     {
         var clauses = ImmutableArray.CreateBuilder<ClauseSyntax>();
@@ -26,7 +28,7 @@ internal static class ClauseParser
                 continue;
             }
 
-            if (!cursor.SkipTo(','))
+            if (cursor.ErrorCount > MostErrors || !cursor.SkipTo(','))
             {
                 break;
             }
@@ -48,14 +50,14 @@ internal static class ClauseParser
         var isClause = words.Contains(cursor.Shown(token));
         cursor.Error(token.Span, $"`{cursor.Shown(token)}` is left over behind what the statement says",
             isClause ? $"put a comma before it: `, {cursor.TextOf(token)} …`"
-                : "a clause starts after a comma, a comment with `#`, a statement on a line of its own");
+                : "clauses follow a comma, comments a `#`, and a statement has its own line");
     }
 
     private static ClauseSyntax? Read(StatementCursor cursor)
     {
         var start = cursor.Current.Start;
-        cursor.Form = "clauses are `charged to`, `carrying`, `rated`, `linear up to`, `closed resistance`, "
-            + "`open resistance`, `closes at`, `opens at`";
+        cursor.Form =
+            "clauses are `charged to`, `carrying`, `rated`, `linear up to`, `closes at`, `opens at`";
         return cursor switch
         {
             _ when cursor.IsWord("closes") || cursor.IsWord("opens") => SwitchEventParser.Read(cursor),
@@ -73,11 +75,11 @@ internal static class ClauseParser
                 ? new LinearUpToSyntax(cursor.SpanFrom(start), limit)
                 : null,
             _ when cursor.Take("closed") => cursor.Expect("resistance")
-                && ReadTolerated(cursor) is { } resistance
+                && ToleranceParser.ReadResistance(cursor, acceptsSum: false) is { } resistance
                 ? new ClosedResistanceSyntax(cursor.SpanFrom(start), resistance)
                 : null,
             _ when cursor.Take("open") => cursor.Expect("resistance")
-                && ReadTolerated(cursor) is { } resistance
+                && ToleranceParser.ReadResistance(cursor, acceptsSum: false) is { } resistance
                 ? new OpenResistanceSyntax(cursor.SpanFrom(start), resistance)
                 : null,
             _ => ReportUnknown(cursor),

@@ -10,8 +10,8 @@ public abstract record ExpressionSyntax(TextSpan Span);
 /// <param name="Value">The number times its prefix, in the SI unit.</param>
 /// <param name="Dimension">What the unit measures; <see cref="Text.Dimension.None"/> without a unit.</param>
 /// <param name="HasUnit">Whether a unit was written (a degree, radian or per cent counts).</param>
-/// <param name="Mark">The text, where it reads as a marking code of IEC 60062 such as <c>4k7</c>, else
-/// null.</param>
+/// <param name="Mark">The text, where it reads as a marking code of IEC 60062 such
+/// as <c>4k7</c>, else null.</param>
 public sealed record NumberSyntax(
     TextSpan Span, double Value, Dimension Dimension, bool HasUnit, string? Mark = null)
     : ExpressionSyntax(Span);
@@ -82,8 +82,8 @@ public sealed record DecaySyntax(
     TextSpan Span, ExpressionSyntax Level, ExpressionSyntax TimeConstant, TimeSyntax? From)
     : WavePieceSyntax(Span);
 
-/// <summary><c>double exponential of V front T1 half-value T2 from T</c>, also written <c>impulse of V 1.2/50
-/// µs</c>.</summary>
+/// <summary><c>double exponential of V front T1 half-value T2 from T</c>, also written
+/// <c>impulse of V 1.2/50 µs</c>.</summary>
 public sealed record ImpulseSyntax(
     TextSpan Span, ExpressionSyntax Peak, ExpressionSyntax Front, ExpressionSyntax HalfValue,
     TimeSyntax? From)

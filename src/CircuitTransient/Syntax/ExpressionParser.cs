@@ -60,13 +60,11 @@ internal static class ExpressionParser
         var span = cursor.SpanFrom(value.Span.Start);
         cursor.Return(here);
         cursor.Error(span, "a sum inside a clause stands in parentheses",
-            $"write `({Cut(cursor.TextOf(span))})`");
+            $"write `({cursor.Shown(span)})`");
         cursor.Advance();
         ReadSum(cursor);
         return value;
     }
-
-    private static string Cut(string text) => text.Length <= 60 ? text : text[..60] + "…";
 
     private static BinarySyntax? ReadRight(
         StatementCursor cursor, ExpressionSyntax left, char sign, int count,

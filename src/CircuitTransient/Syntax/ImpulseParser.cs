@@ -1,7 +1,9 @@
+using CircuitTransient.Text;
+
 namespace CircuitTransient.Syntax;
 
-/// <summary>Reads decays, double exponentials and impulses as the trade writes them, behind their first
-/// words.</summary>
+/// <summary>Reads decays, double exponentials and impulses as the trade writes them,
+/// behind their first words.</summary>
 internal static class ImpulseParser
 {
     public static DecaySyntax? ReadDecay(StatementCursor cursor, int start)
@@ -64,12 +66,11 @@ internal static class ImpulseParser
             return null;
         }
 
-        var half = NumberParser.Number(cursor, second, cursor.TextOf(second).ToString(), 0, unit, hasUnit,
-            null);
-        var front = NumberParser.Number(cursor, first, cursor.TextOf(first).ToString(), 0, hasOwn
-            ? own
-            : unit,
-            hasOwn || hasUnit, null);
+        var half = Number(cursor, second, unit, hasUnit);
+        var front = Number(cursor, first, hasOwn ? own : unit, hasOwn || hasUnit);
         return front is null || half is null ? null : (front with { Span = firstEnd }, half);
     }
+
+    private static NumberSyntax? Number(StatementCursor cursor, Token token, Unit unit, bool hasUnit) =>
+        NumberParser.Number(cursor, token, cursor.TextOf(token).ToString(), 0, unit, hasUnit, mark: null);
 }

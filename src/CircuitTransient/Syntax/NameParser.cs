@@ -3,10 +3,12 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Syntax;
 
-/// <summary>Reads names: <c>Rpre</c>, <c>"DC+"</c>, <c>n[k+1]</c>, <c>Stage1/R1</c>, a node
-/// <c>3</c>.</summary>
+/// <summary>Reads names: <c>Rpre</c>, <c>"DC+"</c>, <c>n[k+1]</c>,
+/// <c>Stage1/R1</c>, a node <c>3</c>.</summary>
 internal static class NameParser
 {
+    private const int Longest = 200; // past all use, and keeps every message short
+
     /// <summary>A name in a definition or an expression: one word or quoted text, with an index.</summary>
     public static NameSyntax? Read(StatementCursor cursor, string what, params ReadOnlySpan<string> followers)
     {
@@ -57,6 +59,10 @@ internal static class NameParser
         var start = owner?.Span.Start ?? token.Start;
         switch (token.Kind)
         {
+            case TokenKind.Word or TokenKind.Quoted when token.Length > Longest:
+                cursor.Error(token.Span, $"the name has more than {Longest} characters",
+                    "give it a shorter one");
+                return null;
             case TokenKind.Word:
                 cursor.Advance();
                 IndexSyntax? index = null;
@@ -138,9 +144,13 @@ internal static class NameParser
     private static bool TryReadWhole(StatementCursor cursor, out int value)
     {
         value = 0;
-        return cursor.Current.Kind == TokenKind.Number
-            && int.TryParse(cursor.TextOf(cursor.Advance()), NumberStyles.None,
-            CultureInfo.InvariantCulture, out value)
+        if (cursor.Current.Kind != TokenKind.Number)
+        {
+            return false;
+        }
+
+        var text = cursor.TextOf(cursor.Advance());
+        return int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out value)
             && value < 1_000_000_000;
     }
 }

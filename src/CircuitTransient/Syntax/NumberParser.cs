@@ -8,40 +8,33 @@ internal static class NumberParser
     // Key words that may follow a number, so that they are not taken for a unit.
     private static readonly HashSet<string> followers =
     [
-        "after", "and", "as", "at", "because", "between", "by", "closed", "count", "decaying", "every",
-            "falls",
-        "from", "front", "half", "in", "normal", "of", "once", "open", "phase", "rises", "rms", "stays",
-            "times",
-        "to", "until", "when", "width", "with", "within",
+        "after", "and", "as", "at", "because", "between", "by", "closed", "count", "current", "decaying",
+        "energy", "every", "falls", "from", "front", "half", "in", "normal", "of", "once", "open", "phase",
+        "power", "rises", "rms", "stays", "times", "to", "until", "voltage", "when", "width", "with",
+            "within",
     ];
 
-    /// <summary>Reads at a number token; what is wrong with the unit is said, and reading goes on behind
-    /// it.</summary>
+    /// <summary>Reads at a number token; what is wrong with the unit is said, and
+    /// reading goes on behind it.</summary>
     public static NumberSyntax? Read(StatementCursor cursor) => Read(cursor, isInPoint: false);
 
-    /// <summary>The same inside the parentheses of a point, where a comma may part two bare
-    /// numbers.</summary>
+    /// <summary>The same inside the parentheses of a point, where a comma may
+    /// part two bare numbers.</summary>
     public static NumberSyntax? Read(StatementCursor cursor, bool isInPoint)
     {
         var token = cursor.Advance();
-        if (token.Length > DecimalText.Longest)
+        if (NumberMistakes.HasDecimalComma(cursor, token, isInPoint))
         {
-            cursor.Error(token.Span, $"the number has more than {DecimalText.Longest} characters",
-                "a double holds 17 digits");
+            NumberMistakes.ReportDecimalComma(cursor, token);
             return null;
         }
 
-        if (HasDecimalComma(cursor, token, isInPoint))
-        {
-            ReportDecimalComma(cursor, token);
-            return null;
-        }
-
-        var digits = cursor.TextOf(token).ToString().Replace('\u2212', '-');
+        var digits = cursor.TextOf(token).ToString();
         var exponent = TenthPower.Take(cursor, ref digits);
         if (cursor.Current.Kind == TokenKind.Number && !IsImpulseTime(cursor))
         {
-            return ReportGap(cursor, token);
+            NumberMistakes.ReportGap(cursor, token);
+            return null;
         }
 
         return TakeUnit(cursor, token, out var unit, out var mark, out var hasUnit)
@@ -54,23 +47,28 @@ internal static class NumberParser
         StatementCursor cursor, Token token, string digits, int exponent, Unit unit, bool hasUnit,
             string? mark)
     {
+        if (digits.Length > DecimalText.Longest)
+        {
+            cursor.Error(token.Span, $"the number has more than {DecimalText.Longest} characters",
+                "write at most 17 digits; a computed value holds no more");
+            return null;
+        }
+
         var span = cursor.SpanFrom(token.Start);
         if (mark is not null && MarkingCode.TryRead(mark, out var marked))
         {
             return new NumberSyntax(span, marked, Dimension.None, HasUnit: false, mark);
         }
 
-        var isWhole = unit.Factor >= 1;
-        var isHeld = DecimalText.TryRead(digits, exponent + unit.Exponent, isWhole
-            ? (int)unit.Factor
-            : 1, out var value);
-        value = isWhole ? value : value * unit.Factor;
-        if (isHeld)
+        // A minute and an hour are whole numbers of seconds and keep the rounding right; a degree is not.
+        var (whole, rest) = unit.Factor >= 1 ? ((int)unit.Factor, 1.0) : (1, unit.Factor);
+        if (DecimalText.TryRead(digits.Replace('\u2212', '-'), exponent + unit.Exponent, whole,
+            out var value))
         {
-            return new NumberSyntax(span, value, unit.Dimension, hasUnit, mark);
+            return new NumberSyntax(span, value * rest, unit.Dimension, hasUnit, mark);
         }
 
-        var text = cursor.TextOf(span);
+        var text = cursor.Shown(span);
         cursor.Error(span, double.IsInfinity(value)
             ? $"`{text}` is larger than any number that can be computed with, 1.8·10³⁰⁸"
             : $"`{text}` is smaller than any number that can be computed with, 4.9·10⁻³²⁴",
@@ -78,8 +76,7 @@ internal static class NumberParser
         return null;
     }
 
-    /// <summary>Takes the unit, a bare prefix or a marking code's letter and digits behind a
-    /// number.</summary>
+    /// <summary>Takes the unit, a bare prefix or the rest of a marking code behind a number.</summary>
     public static bool TakeUnit(
         StatementCursor cursor, Token number, out Unit unit, out string? mark, out bool hasUnit)
     {
@@ -116,15 +113,15 @@ internal static class NumberParser
             return true;
         }
 
-        var end = cursor.Ahead(length - 1).End;
-        var span = new TextSpan(word.Start, end - word.Start);
-        cursor.Error(span, $"`{text}` is not a unit", UnitAdvice.For(text, cursor.TextOf(number).ToString()));
+        var shown = cursor.Shown(Run(cursor, length));
+        cursor.Error(Run(cursor, length), $"`{shown}` is not a unit",
+            UnitAdvice.For(shown, cursor.Shown(number)));
         cursor.Advance(length);
         return false;
     }
 
     /// <summary>How many tokens spell the unit: <c>µF</c> one, <c>V/µs</c> three, <c>A^2s</c> four.</summary>
-    private static int UnitTokens(StatementCursor cursor, out string text)
+    public static int UnitTokens(StatementCursor cursor, out string text)
     {
         var first = cursor.Current;
         var length = first.Kind switch
@@ -137,73 +134,23 @@ internal static class NumberParser
         {
             var isWord = cursor.Ahead(2).Kind == TokenKind.Word && cursor.IsJoined(2);
             var isSquare = cursor.IsSign('^', 1) && cursor.Ahead(2).Kind == TokenKind.Number
-                && cursor.IsJoined(2)
-                && cursor.Ahead(3).Kind == TokenKind.Word && cursor.IsJoined(3);
+                && cursor.IsJoined(2) && cursor.Ahead(3).Kind == TokenKind.Word && cursor.IsJoined(3);
             length = isSquare ? 4
                 : isWord && cursor.Ahead(1).Kind == TokenKind.Superscript ? 3
                 : isWord && cursor.IsSign('/', 1) && IsRate(cursor) ? 3
                 : 1;
         }
 
-        text = length == 0
-            ? ""
-            : cursor.TextOf(new TextSpan(first.Start, cursor.Ahead(length - 1).End - first.Start));
+        text = length == 0 ? "" : cursor.TextOf(Run(cursor, length));
         return length;
     }
 
-    private static bool IsRate(StatementCursor cursor) =>
-        Unit.TryRead(cursor.TextOf(new TextSpan(cursor.Current.Start,
-            cursor.Ahead(2).End - cursor.Current.Start)), out _);
+    private static bool IsRate(StatementCursor cursor) => Unit.TryRead(cursor.TextOf(Run(cursor, 3)), out _);
+
+    private static TextSpan Run(StatementCursor cursor, int length) =>
+        TextSpan.Between(cursor.Current.Span, cursor.Ahead(length - 1).Span);
 
     /// <summary>Whether the number ahead is the front of <c>6 kV 1.2/50 µs</c>.</summary>
     private static bool IsImpulseTime(StatementCursor cursor) =>
         cursor.IsSign('/', 1) && cursor.Ahead(2).Kind == TokenKind.Number;
-
-    private static bool HasDecimalComma(StatementCursor cursor, Token token, bool isInPoint)
-    {
-        if (!cursor.IsSign(',') || cursor.Current.Start != token.End
-            || cursor.Ahead(1).Kind != TokenKind.Number
-            || !cursor.IsJoined(1))
-        {
-            return false;
-        }
-
-        // `(0,5)` is a point without units; `(0,5 ms, 3 V)` has a decimal comma.
-        return !isInPoint || (cursor.Ahead(2).Kind == TokenKind.Word && cursor.IsSign(',', 3));
-    }
-
-    private static void ReportDecimalComma(StatementCursor cursor, Token token)
-    {
-        var after = cursor.Ahead(1);
-        var span = new TextSpan(token.Start, after.End - token.Start);
-        cursor.Advance(2);
-        var number = cursor.TextOf(token);
-        var decimals = cursor.TextOf(after);
-        var length = UnitTokens(cursor, out var text);
-        var unit = length > 0 && (Unit.TryRead(text, out _) || (text.Length == 1
-            && Prefix.TryRead(text[0], out _)))
-            ? " " + text
-            : "";
-        cursor.Advance(unit.Length > 0 ? length : 0);
-        var isThousands = decimals.Length == 3 && number.Length <= 3 && number is not "0";
-        cursor.Error(span, $"`{cursor.TextOf(span)}` has a decimal comma; the decimal mark is a point",
-            $"write `{number}.{decimals}{unit}`" + (isThousands
-                ? $" or, for thousands, `{number}{decimals}{unit}`"
-                : ""));
-    }
-
-    private static NumberSyntax? ReportGap(StatementCursor cursor, Token token)
-    {
-        var text = cursor.TextOf(token).ToString();
-        while (cursor.Current.Kind == TokenKind.Number && cursor.Current.Length <= DecimalText.Longest
-            && text.Length < DecimalText.Longest)
-        {
-            text += cursor.TextOf(cursor.Advance()).ToString();
-        }
-
-        var span = cursor.SpanFrom(token.Start);
-        TakeUnit(cursor, token, out _, out _, out _);
-        cursor.Error(span, "two numbers stand side by side", $"write one number without blanks: `{text}`");
-        return null;
-    }
 }

@@ -5,8 +5,7 @@ internal static class PairParser
 {
     public static CouplingStatement? ReadCoupling(StatementCursor cursor, int start)
     {
-        cursor.Form =
-            "a coupling is written `coupling M1 of Lp and Ls : 0.98`, or with a mutual inductance, `: 3 mH`";
+        cursor.Form = "a coupling is written `coupling M1 of Lp and Ls : 0.98`, or `: 3 mH`";
         NameSyntax? first = null;
         NameSyntax? second = null;
         var name = NameParser.Read(cursor, "the name", "of");
@@ -25,8 +24,7 @@ internal static class PairParser
     public static TransformerStatement? ReadTransformer(StatementCursor cursor, int start)
     {
         cursor.Form =
-            "a transformer is written `transformer T1 primary from p to minus, secondary from s to t : "
-            + "turns 10 to 1`";
+            "write `transformer T1 primary from p to minus, secondary from s to t : turns 10 to 1`";
         TerminalsSyntax? primary = null;
         TerminalsSyntax? secondary = null;
         var name = NameParser.Read(cursor, "the name", "primary");
@@ -38,8 +36,8 @@ internal static class PairParser
         var isValue = PartParser.GoToValue(cursor) && cursor.Expect("turns")
             && (first = ExpressionParser.ReadSum(cursor)) is not null && cursor.Expect("to")
             && (second = ExpressionParser.ReadSum(cursor)) is not null
-            && ToleranceParser.Refuse(cursor, "a ratio of turns has no tolerance",
-            "name it: `value Turns : 10 ±1 %`");
+            && ToleranceParser.Refuse(cursor, "a number of turns has no tolerance of its own",
+                "name it: `value Turns : 10 ±1 %`");
         var clauses = PartParser.ReadClauses(cursor, isValue);
         return isHead && isValue
             ? new TransformerStatement(

@@ -18,7 +18,9 @@ internal static class PartParser
         };
         cursor.Form = $"{what} is written `{example}`";
         var head = ReadHead(cursor);
-        var value = GoToValue(cursor) ? ToleranceParser.ReadTolerated(cursor, acceptsSum: true) : null;
+        var value = !GoToValue(cursor) ? null
+            : kind == SimplePartKind.Resistor ? ToleranceParser.ReadResistance(cursor, acceptsSum: true)
+            : ToleranceParser.ReadTolerated(cursor, acceptsSum: true);
         var clauses = ReadClauses(cursor, value is not null);
         return head is null || value is null
             ? null
@@ -46,11 +48,12 @@ internal static class PartParser
         if (GoToValue(cursor))
         {
             gain = ExpressionParser.ReadSum(cursor);
-            control = gain is not null
+            var isRead = gain is not null
                 && ToleranceParser.Refuse(cursor,
-                "a tolerance may not stand inside the value of a dependent source",
+                "the factor of a dependent source has no tolerance of its own",
                     "name the factor: `value Gain : 10 ±2 %`, and write `Gain times …`")
-                && cursor.Expect("times") ? QuantityParser.Read(cursor) : null;
+                && cursor.Expect("times");
+            control = isRead ? QuantityParser.Read(cursor) : null;
         }
 
         var clauses = ReadClauses(cursor, control is not null);
@@ -92,8 +95,8 @@ internal static class PartParser
             : null;
     }
 
-    /// <summary>Takes the colon; after a mistake before it, goes there, so that the value is read all the
-    /// same.</summary>
+    /// <summary>Takes the colon; after a mistake before it, goes there, so that the
+    /// value is read all the same.</summary>
     public static bool GoToValue(StatementCursor cursor)
     {
         if (cursor.HasErrors)
@@ -123,11 +126,11 @@ internal static class PartParser
             return true;
         }
 
-        if (cursor.IsWord("closes") || cursor.IsWord("opens"))
+        if (cursor.IsWord("closes") || cursor.IsWord("opens") || cursor.IsWord("resistance", 1))
         {
-            var first = cursor.IsWord("closes") ? "open" : "closed";
+            var first = cursor.IsWord("closes") || cursor.IsWord("open") ? "open" : "closed";
             cursor.Error(cursor.Current.Span, "whether the switch starts open or closed is not said",
-                $"write `: {first}, {cursor.TextOf(cursor.Current)} …`");
+                $"write `: {first}, {cursor.Shown(cursor.Current)} {cursor.Shown(cursor.Ahead(1))} …`");
             return false;
         }
 

@@ -4,13 +4,12 @@ namespace CircuitTransient.Syntax;
 internal static class QuantityParser
 {
     private const string Forms =
-        "quantities are `voltage of NODE`, `voltage from NODE to NODE`, `voltage across PART`, "
-        + "`current through PART`, `power in PART`, `energy in PART`, `I²t through PART`";
+        "write `voltage of NODE`, `voltage across PART`, `current through PART`, `energy in PART`";
 
     private static readonly string[] words =
     [
         "voltage", "current", "power", "energy", "I²t", "rate", "rise", "front", "time", "overshoot",
-            "settling", "ring",
+        "settling", "ring",
     ];
 
     private static readonly (string[] Words, FigureKind Kind)[] figures =

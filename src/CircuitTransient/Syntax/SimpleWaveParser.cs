@@ -59,7 +59,7 @@ internal static class SimpleWaveParser
         var level = ExpressionParser.ReadProduct(cursor);
         return level is not null && ToleranceParser.Refuse(cursor,
             "a tolerance may not stand inside a wave",
-            $"name the value: `value Peak : {cursor.TextOf(level.Span)} ±5 %`, and write `Peak` in the wave")
+            $"name the value: `value Peak : {cursor.Shown(level.Span)} ±5 %`, and write `Peak` in the wave")
             ? level
             : null;
     }

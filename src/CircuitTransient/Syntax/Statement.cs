@@ -16,20 +16,19 @@ public abstract record Statement(TextSpan Span);
 /// <param name="Index">The bracketed index of a name in a repetition, such as <c>[k+1]</c>.</param>
 /// <param name="IsQuoted">Whether it was written in quotes.</param>
 /// <param name="Owner">The placed assembly it stands in: <c>Stage1</c> of <c>Stage1/R1</c>;
-/// <paramref name="Text"/> is
-/// then the last name alone.</param>
+/// <paramref name="Text"/> is then the last name alone.</param>
 public sealed record NameSyntax(
     string Text, TextSpan Span, IndexSyntax? Index = null, bool IsQuoted = false, NameSyntax? Owner = null);
 
 /// <summary>A bracketed index: a number, or a counter with an offset (<c>[k-1]</c>).</summary>
 public sealed record IndexSyntax(string? Counter, int Offset, TextSpan Span);
 
-/// <summary>A statement that could not be read, kept so that nothing is said about names it would have
-/// made.</summary>
-/// <param name="KeyWord">Its first word: <c>resistor</c>, <c>value</c>.</param>
+/// <summary>A statement that could not be read, kept so that nothing is said about
+/// names it would have made.</summary>
+/// <param name="KeyWord">Its first word, or the key word that one most likely meant: <c>resistor</c>.</param>
 /// <param name="Name">The name it gives, if that far it could be read.</param>
-/// <param name="Mentions">Every name and whole number in it: nodes it may touch, parts it may speak
-/// of.</param>
+/// <param name="Mentions">Every name and whole number in it: nodes it may
+/// touch, parts it may speak of.</param>
 public sealed record UnreadableStatement(
     TextSpan Span, string KeyWord, NameSyntax? Name, ImmutableArray<string> Mentions) : Statement(Span);
 
@@ -121,8 +120,8 @@ public sealed record PlaceStatement(
     TextSpan Span, NameSyntax Assembly, NameSyntax Name, ImmutableArray<AssignmentSyntax> Assignments)
     : Statement(Span);
 
-/// <summary><c>inner = outer</c> of a placed assembly: a node for a terminal, an expression for a
-/// value.</summary>
+/// <summary><c>inner = outer</c> of a placed assembly: a node for a terminal, an
+/// expression for a value.</summary>
 /// <param name="Node">The right side read as a name; null where it can only be an expression.</param>
 /// <param name="Value">The right side read as an expression; null where it can only be a name.</param>
 public sealed record AssignmentSyntax(

@@ -14,8 +14,11 @@ internal sealed class StatementCursor(SourceText source, List<Token> tokens, Lis
     /// <summary>How deep brackets and signs are nested where the cursor stands.</summary>
     public int Depth { get; set; }
 
+    /// <summary>How much was found wrong with this statement.</summary>
+    public int ErrorCount => diagnostics.Count - errorsBefore;
+
     /// <summary>Whether anything was found wrong with this statement.</summary>
-    public bool HasErrors => diagnostics.Count > errorsBefore;
+    public bool HasErrors => ErrorCount > 0;
 
     /// <summary>From the statement's first character to its last.</summary>
     public TextSpan WholeSpan => TextSpan.Between(tokens[0].Span, tokens[^1].Span);
@@ -104,8 +107,8 @@ internal sealed class StatementCursor(SourceText source, List<Token> tokens, Lis
         diagnostics.Add(Diagnostic.Error(source, span, message, advice));
 
     /// <summary>Says that the current token stands where something else should; always false.</summary>
-    /// <param name="words">What one could have written here, from which a slip of the finger is
-    /// guessed.</param>
+    /// <param name="words">What one could have written here, from which a slip of
+    /// the finger is guessed.</param>
     public bool Unexpected(string expected, params ReadOnlySpan<string> words)
     {
         var token = Current;
@@ -132,41 +135,49 @@ internal sealed class StatementCursor(SourceText source, List<Token> tokens, Lis
         return false;
     }
 
-    /// <summary>Goes to a sign outside brackets, the one before the cursor not counted; false where there is
-    /// none.
-    /// </summary>
+    /// <summary>Goes to the next such sign outside parentheses, those left open behind included; false where
+    /// there is none.</summary>
     public bool SkipTo(char sign)
     {
-        var depth = 0;
         Depth = 0;
-        for (; !IsAtEnd; Advance())
+        var open = 0;
+        for (var i = 0; i < tokens.Count; i++)
         {
-            if (depth <= 0 && IsSign(sign))
+            if (i >= position && open <= 0 && tokens[i].Sign == sign)
             {
+                position = i;
                 return true;
             }
 
-            depth += IsSign('(') ? 1 : IsSign(')') ? -1 : 0;
+            open += tokens[i].Sign == '(' ? 1 : tokens[i].Sign == ')' ? -1 : 0;
         }
 
+        position = tokens.Count;
         return false;
     }
 
     /// <summary>The text of a token, cut where it would fill the screen.</summary>
-    public string Shown(Token token)
+    public string Shown(Token token) => Shown(token.Span);
+
+    /// <summary>A run of the text, cut where it would fill the screen.</summary>
+    public string Shown(TextSpan span)
     {
         const int most = 40;
-        return token.Length <= most ? TextOf(token).ToString() : $"{TextOf(token)[..most]}…";
+        return span.Length <= most ? source[span] : source[new TextSpan(span.Start, most)] + "…";
     }
 
-    /// <summary>The first word of the statement and, where it can be told, the name it gives.</summary>
+    /// <summary>The first word of the statement, or the key word it most likely meant, and, where it can be
+    /// told, the name it gives.</summary>
     public (string KeyWord, NameSyntax? Name) Introduction()
     {
-        var keyWord = tokens[0].Kind == TokenKind.Word ? Shown(tokens[0]) : "";
-        var place = keyWord == "place" ? FindWord("as") + 1 : IsDependent() ? 2 : 1;
-        var isNamed = keyWord is not ("circuit" or "note" or "reference" or "observe" or "require"
-            or "start" or "until"
-            or "repeat" or "end");
+        var first = tokens[0].Kind == TokenKind.Word ? Shown(tokens[0]) : "";
+        var keyWord = StatementKeyWords.All.Contains(first)
+            ? first
+            : NearestName.Find(first, StatementKeyWords.All) ?? first;
+        var isSecond = keyWord == "dependent" && tokens.Count > 1 && TextOf(tokens[1]) is "source";
+        var place = keyWord == "place" ? FindWord("as") + 1 : isSecond ? 2 : 1;
+        var isNamed = keyWord is not ("circuit" or "note" or "reference" or "observe" or "require" or "start"
+            or "until" or "repeat" or "end");
         if (!isNamed || place == 0 || place >= tokens.Count)
         {
             return (keyWord, null);
@@ -185,9 +196,6 @@ internal sealed class StatementCursor(SourceText source, List<Token> tokens, Lis
         .Select(t => t.Kind == TokenKind.Quoted
             ? source[new TextSpan(t.Start + 1, t.Length - 2)]
             : source[t.Span]);
-
-    private bool IsDependent() => tokens.Count > 1 && TextOf(tokens[0]) is "dependent"
-        && TextOf(tokens[1]) is "source";
 
     private int FindWord(string word) =>
         tokens.FindIndex(t => t.Kind == TokenKind.Word && TextOf(t).SequenceEqual(word));

@@ -7,14 +7,12 @@ internal static class StatementKeyWords
     public static readonly string[] All =
     [
         "circuit", "note", "reference", "value", "resistor", "capacitor", "inductor", "coupling",
-            "transformer",
-        "source", "dependent", "switch", "observe", "require", "start", "until", "repeat", "assembly",
-            "place", "end",
+        "transformer", "source", "dependent", "switch", "observe", "require", "start", "until", "repeat",
+        "assembly", "place", "end",
     ];
 
     /// <summary>Whether the line whose tokens begin at an index of an unfinished statement starts one of its
-    /// own:
-    /// a key word, and then what follows a key word and cannot follow a name or value.</summary>
+    /// own: a key word, and then what follows a key word and cannot follow a name or value.</summary>
     public static bool Start(string content, List<Token> tokens, int index)
     {
         var word = tokens[index];

@@ -7,9 +7,9 @@ namespace CircuitTransient.Syntax;
 /// <summary>Cuts a text into statements, and a statement into tokens.</summary>
 internal sealed class StatementLexer(SourceText source)
 {
-    /// <summary>The most tokens of one statement: bounds memory; two hundred thousand points of straight
-    /// lines.</summary>
-    public const int MostTokens = 1_000_000;
+    /// <summary>The most tokens of one statement, which bounds memory: straight lines through some three
+    /// hundred thousand points.</summary>
+    public const int MostTokens = 2_000_000;
 
     private readonly string content = source.Content;
     private int position;
@@ -26,7 +26,7 @@ internal sealed class StatementLexer(SourceText source)
             ScanLine(tokens);
         }
 
-        while (tokens.Count > 0 && GoesOn(tokens[^1]) && ScanNextLine(tokens))
+        while (tokens.Count > 0 && !IsCut && GoesOn(tokens[^1]) && ScanNextLine(tokens))
         {
         }
 
@@ -35,8 +35,8 @@ internal sealed class StatementLexer(SourceText source)
 
     private static bool GoesOn(Token last) => last.Sign is ',' or ':' or '+' or '-';
 
-    /// <summary>Adds the next line, past comments, unless it is blank or starts a statement of its
-    /// own.</summary>
+    /// <summary>Adds the next line, past comments, unless it is blank or starts a
+    /// statement of its own.</summary>
     private bool ScanNextLine(List<Token> tokens)
     {
         while (position < content.Length)
@@ -78,9 +78,7 @@ internal sealed class StatementLexer(SourceText source)
             }
             else
             {
-                var token = Scan();
-                position = token.End;
-                Add(tokens, token);
+                Add(tokens, Scan());
             }
         }
 
@@ -93,10 +91,13 @@ internal sealed class StatementLexer(SourceText source)
         if (tokens.Count < MostTokens)
         {
             tokens.Add(token);
+            position = token.End;
         }
         else
         {
             IsCut = true;
+            var length = content.AsSpan(position).IndexOf('\n');
+            position = length < 0 ? content.Length : position + length;
         }
     }
 
@@ -107,8 +108,8 @@ internal sealed class StatementLexer(SourceText source)
         var c => c > '\u007F' && char.GetUnicodeCategory(c) == UnicodeCategory.SpaceSeparator,
     };
 
-    /// <summary>A carriage return that stands alone ends a comment too: it is a mistake that must be
-    /// seen.</summary>
+    /// <summary>A carriage return that stands alone ends a comment too: it is a
+    /// mistake that must be seen.</summary>
     private int EndOfLine()
     {
         var end = content.AsSpan(position).IndexOfAny('\r', '\n');

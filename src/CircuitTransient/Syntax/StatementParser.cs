@@ -51,9 +51,7 @@ internal static class StatementParser
     private static Statement? ReportUnknown(StatementCursor cursor, int start, string word)
     {
         cursor.Form =
-            "a statement starts with a key word: resistor, capacitor, inductor, coupling, transformer, "
-            + "source, dependent source, switch, value, observe, require, reference, start, until, circuit, "
-            + "note, repeat, assembly, place";
+            "statements start with `resistor`, `source`, `switch`, `observe`, `require` or another key word";
         if (word.Length == 0)
         {
             cursor.Unexpected("a key word");
@@ -99,7 +97,8 @@ internal static class StatementParser
             : null;
     }
 
-    private static UnreadableStatement Unreadable(StatementCursor cursor)
+    /// <summary>What is kept of a statement that cannot be read.</summary>
+    public static UnreadableStatement Unreadable(StatementCursor cursor)
     {
         var (keyWord, name) = cursor.Introduction();
         return new UnreadableStatement(

@@ -7,7 +7,7 @@ internal static class StraightLinesParser
 {
     public static WavePieceSyntax? Read(StatementCursor cursor, int start)
     {
-        cursor.Form = "straight lines are written `straight lines (0 s, 0 V) (1 ms, 5 V)`, or "
+        cursor.Form = "write `straight lines (0 s, 0 V) (1 ms, 5 V)` or "
             + "`straight lines in file \"surge.csv\"`";
         if (cursor.Take("in", "file"))
         {

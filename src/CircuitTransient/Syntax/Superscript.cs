@@ -5,8 +5,8 @@ internal static class Superscript
 {
     private const string Digits = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 
-    /// <summary>Where a run of superscript digits with an optional sign ends; the start where there is
-    /// none.</summary>
+    /// <summary>Where a run of superscript digits with an optional sign ends; the
+    /// start where there is none.</summary>
     public static int End(string content, int start)
     {
         var first = content[start] is '⁻' or '⁺' ? start + 1 : start;

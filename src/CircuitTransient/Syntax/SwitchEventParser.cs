@@ -7,8 +7,8 @@ internal static class SwitchEventParser
 
     public static SwitchEventSyntax? Read(StatementCursor cursor)
     {
-        cursor.Form = "an event is written `closes at 1.8 s`, `opens at 5 ms after K1 opens` or "
-            + "`closes when voltage of bus rises above 840 V`";
+        cursor.Form =
+            "write `closes at 1.8 s`, `opens at 5 ms after K1 opens`, `closes when voltage of bus …`";
         var start = cursor.Current.Start;
         var closes = cursor.IsWord("closes");
         cursor.Advance();

@@ -32,9 +32,9 @@ internal static class TenthPower
 
         var isNegative = cursor.IsSign('-', 3);
         var place = isNegative ? 4 : 3;
+        var text = cursor.TextOf(cursor.Ahead(place));
         if (cursor.IsSign('^', 2) && cursor.Ahead(place).Kind == TokenKind.Number
-            && int.TryParse(cursor.TextOf(cursor.Ahead(place)), NumberStyles.None,
-            CultureInfo.InvariantCulture, out var power))
+            && int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out var power))
         {
             cursor.Advance(place + 1);
             return Math.Min(power, 1000) * (isNegative ? -1 : 1);

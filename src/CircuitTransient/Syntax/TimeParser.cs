@@ -30,9 +30,8 @@ internal static class TimeParser
             : null;
     }
 
-    /// <summary>An optional instant behind a word, or in its place <c>when NAME closes</c>; false where it is
-    /// wrong.
-    /// </summary>
+    /// <summary>An optional instant behind a word, or in its place <c>when NAME closes</c>;
+    /// false where it is wrong. </summary>
     public static bool ReadOptional(StatementCursor cursor, string word, out TimeSyntax? time)
     {
         time = null;
@@ -45,8 +44,8 @@ internal static class TimeParser
         return time is not null;
     }
 
-    /// <summary><c>when NAME closes|opens</c>; null, and nothing taken or said, where something else
-    /// stands.</summary>
+    /// <summary><c>when NAME closes|opens</c>; null, and nothing taken or said, where
+    /// something else stands.</summary>
     public static TimeAfterSyntax? ReadWhen(StatementCursor cursor)
     {
         var here = cursor.Here;

@@ -2,22 +2,32 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Syntax;
 
-/// <summary>Reads tolerances: <c>±5 %</c>, <c>-20 % +80 %</c>, <c>between A and B</c>, then
-/// <c>normal</c>.</summary>
+/// <summary>Reads tolerances: <c>±5 %</c>, <c>-20 % +80 %</c>, <c>between A and
+/// B</c>, then <c>normal</c>.</summary>
 internal static class ToleranceParser
 {
     /// <summary>Whether a tolerance stands here; a closing <c>-20 % +80 %</c> is always one.</summary>
     public static bool IsAhead(StatementCursor cursor) =>
         cursor.IsSign('±') || IsPlusMinus(cursor) || cursor.IsWord("between") || IsPair(cursor);
 
-    /// <summary>A value, a sum where <paramref name="acceptsSum"/>, and its tolerance if there is
-    /// one.</summary>
+    /// <summary>A value, a sum where <paramref name="acceptsSum"/>, and its
+    /// tolerance if there is one.</summary>
     public static ToleratedSyntax? ReadTolerated(StatementCursor cursor, bool acceptsSum)
     {
         var value = acceptsSum ? ExpressionParser.ReadSum(cursor) : ExpressionParser.ReadInClause(cursor);
         return value is not null && Read(cursor, out var tolerance)
             ? new ToleratedSyntax(value, tolerance)
             : null;
+    }
+
+    /// <summary>The same for a resistance, where a name such as <c>R047</c> is a marking code.</summary>
+    public static ToleratedSyntax? ReadResistance(StatementCursor cursor, bool acceptsSum)
+    {
+        var read = ReadTolerated(cursor, acceptsSum);
+        return read?.Value is NameExpressionSyntax { Name: { Index: null, IsQuoted: false, Text: var text } }
+            && MarkingCode.TryRead(text, out var value)
+            ? read with { Value = new NumberSyntax(read.Value.Span, value, Dimension.None, false, text) }
+            : read;
     }
 
     /// <summary>Reads a tolerance if there is one; false where it is wrong.</summary>
@@ -31,8 +41,8 @@ internal static class ToleranceParser
 
         var start = cursor.Current.Start;
         var isAbsolute = cursor.IsWord("between");
-        var limits = isAbsolute ? ReadBetween(cursor) : IsPair(cursor)
-            ? ReadPair(cursor)
+        var limits = isAbsolute ? ReadBetween(cursor)
+            : IsPair(cursor) ? ReadPair(cursor)
             : ReadPlusMinus(cursor);
         if (limits is not var (lower, upper))
         {
@@ -44,8 +54,8 @@ internal static class ToleranceParser
         return true;
     }
 
-    /// <summary>Says that no tolerance may stand here, and goes behind it; true where there is
-    /// none.</summary>
+    /// <summary>Says that no tolerance may stand here, and goes behind it; true
+    /// where there is none.</summary>
     public static bool Refuse(StatementCursor cursor, string message, string advice)
     {
         if (!IsAhead(cursor))
@@ -68,8 +78,8 @@ internal static class ToleranceParser
 
     private static bool IsPair(StatementCursor cursor)
     {
-        var isSigned = (cursor.IsSign('-') && cursor.IsSign('+', 3)) || (cursor.IsSign('+')
-            && cursor.IsSign('-', 3));
+        var isSigned = (cursor.IsSign('-') && cursor.IsSign('+', 3))
+            || (cursor.IsSign('+') && cursor.IsSign('-', 3));
         return isSigned && cursor.Ahead(1).Kind == TokenKind.Number && cursor.IsSign('%', 2)
             && cursor.Ahead(4).Kind == TokenKind.Number && cursor.IsSign('%', 5)
             && (cursor.Ahead(6).Kind is TokenKind.End or TokenKind.Word || cursor.IsSign(',', 6));

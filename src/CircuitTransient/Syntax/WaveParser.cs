@@ -1,11 +1,13 @@
 using System.Collections.Immutable;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Syntax;
 
 /// <summary>Reads the wave of a source: pieces that add.</summary>
 internal static class WaveParser
 {
+    private const string Forms =
+        "a wave is a constant, `step of`, `ramp of`, `sine of`, `impulse of`, `straight lines` or another";
+
     private static readonly string[] waveWords =
     [
         "step", "rectangular", "pulse", "ramp", "sine", "cosine", "decay", "double", "impulse", "straight",
@@ -68,30 +70,33 @@ internal static class WaveParser
                 ImpulseParser.ReadDoubleExponential(cursor, start),
             _ when cursor.Take("impulse", "of") => ImpulseParser.ReadImpulse(cursor, start),
             _ when cursor.Take("straight", "lines") => StraightLinesParser.Read(cursor, start),
-            _ when IsPieceAhead(cursor, 0) => ReportUnknown(cursor),
+            _ when IsPieceAhead(cursor, 0) || IsWaveWord(cursor) => ReportUnknown(cursor),
             _ => ReadConstant(cursor),
         };
         cursor.Form = form;
         return piece;
     }
 
+    /// <summary><c>step 8 A</c>: the word of a wave, and a number where more words should be.</summary>
+    private static bool IsWaveWord(StatementCursor cursor) =>
+        cursor.Ahead(1).Kind == TokenKind.Number && waveWords.Contains(cursor.Shown(cursor.Current));
+
     private static WavePieceSyntax? ReportUnknown(StatementCursor cursor)
     {
-        var word = cursor.Current;
-        if (ToleranceParser.IsAhead(cursor) || cursor.IsWord("between", 1))
+        if (IsWaveWord(cursor))
+        {
+            cursor.Advance();
+            cursor.Form = Forms;
+            cursor.Unexpected("`of` and the rest of the wave");
+            return null;
+        }
+
+        if (cursor.IsWord("between", 1))
         {
             return ReadConstant(cursor);
         }
 
-        var nearest = NearestName.Find(cursor.Shown(word), waveWords);
-        if (nearest is null || nearest == cursor.Shown(word))
-        {
-            cursor.Advance(nearest is null ? 0 : 1);
-        }
-
-        cursor.Form =
-            "waves are a constant, `step of`, `rectangular pulse of`, `pulse train of`, `ramp of`, "
-            + "`sine of`, `cosine of`, `decay of`, `double exponential of`, `impulse of`, `straight lines`";
+        cursor.Form = Forms;
         cursor.Unexpected("the value of the source", waveWords);
         return null;
     }
@@ -107,8 +112,8 @@ internal static class WaveParser
         if (cursor.IsWord("at") || cursor.IsWord("from"))
         {
             cursor.Error(level.Span,
-                $"`{cursor.TextOf(level.Span)}` is a constant; it does not start at an instant",
-                $"write `step of {cursor.TextOf(level.Span)} at …`, and a sum inside a wave in parentheses");
+                $"`{cursor.Shown(level.Span)}` is a constant; it does not start at an instant",
+                $"write `step of {cursor.Shown(level.Span)} at …`, and a sum inside a wave in parentheses");
             return null;
         }
 

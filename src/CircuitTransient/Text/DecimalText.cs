@@ -3,18 +3,18 @@ using System.Numerics;
 
 namespace CircuitTransient.Text;
 
-/// <summary>Decimal digits read to the nearest double, prefix and all: 22 with µ is exactly the double
-/// 22e-6.</summary>
+/// <summary>Decimal digits read to the nearest double, prefix and all: 22 with µ is
+/// exactly the double 22e-6.</summary>
 public static class DecimalText
 {
-    /// <summary>The longest number read, in characters; a double is settled by the first 767
-    /// digits.</summary>
+    /// <summary>The longest number read, in characters; a double is settled by
+    /// the first 767 digits.</summary>
     public const int Longest = 1000;
 
     private const int LargestExponent = 100_000; // far past any double, far from overflowing an int
 
-    /// <summary>Reads digits with an optional point and exponent, times a power of ten and a whole
-    /// factor.</summary>
+    /// <summary>Reads digits with an optional point and exponent, times a power of
+    /// ten and a whole factor.</summary>
     /// <returns>False where the value overflows, or where digits other than zero vanish.</returns>
     public static bool TryRead(ReadOnlySpan<char> text, int exponent, int factor, out double value)
     {

@@ -2,8 +2,8 @@ using System.Text;
 
 namespace CircuitTransient.Text;
 
-/// <summary>Diagnostics written for reading: place and headline, the line with the fault underlined, the way
-/// out.</summary>
+/// <summary>Diagnostics written for reading: place and headline, the line with the
+/// fault underlined, the way out.</summary>
 public static class DiagnosticText
 {
     /// <summary>The most errors shown, and the most warnings; what is behind them is counted.</summary>
@@ -32,8 +32,8 @@ public static class DiagnosticText
         return text.ToString();
     }
 
-    /// <summary>Writes many in the order of their places, errors and warnings together, with a final line
-    /// break.</summary>
+    /// <summary>Writes many in the order of their places, errors and warnings together,
+    /// with a final line break.</summary>
     public static string Render(IEnumerable<Diagnostic> diagnostics)
     {
         var text = new StringBuilder();

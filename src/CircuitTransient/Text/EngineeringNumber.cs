@@ -7,12 +7,11 @@ public static class EngineeringNumber
 {
     private const string SuperscriptDigits = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 
-    /// <summary>Writes a value in SI with the prefix that leaves one to three digits before the
-    /// point.</summary>
-    /// <param name="unit">The unit without a prefix; empty for a pure number. <c>V/s</c> and <c>A/s</c> are
-    /// written a
-    /// millisecond or microsecond where that is nearer; <c>A²s</c>, <c>%</c> and <c>°</c> never take a
-    /// prefix.</param>
+    /// <summary>Writes a value in SI with the prefix that leaves one to three
+    /// digits before the point.</summary>
+    /// <param name="unit">The unit without a prefix; empty for a pure number. <c>V/s</c> and
+    /// <c>A/s</c> are written a millisecond or microsecond where that is nearer; <c>A²s</c>, <c>%</c>
+    /// and <c>°</c> never take a prefix.</param>
     public static string Format(double value, string unit, int significantDigits = 4)
     {
         if (!double.IsFinite(value))
@@ -49,8 +48,8 @@ public static class EngineeringNumber
     {
         var text = Math.Abs(value).ToString("E" + (count - 1), CultureInfo.InvariantCulture);
         var mark = text.IndexOf('E');
-        return (text[..mark].Replace(".", ""), int.Parse(text.AsSpan(mark + 1),
-            provider: CultureInfo.InvariantCulture));
+        var exponent = int.Parse(text.AsSpan(mark + 1), provider: CultureInfo.InvariantCulture);
+        return (text[..mark].Replace(".", ""), exponent);
     }
 
     private static string WithPrefix(string digits, int exponent, string tail)
@@ -77,9 +76,9 @@ public static class EngineeringNumber
             return "";
         }
 
-        var digits = Math.Abs(exponent).ToString(CultureInfo.InvariantCulture).Select(d =>
-            SuperscriptDigits[d - '0']);
-        return "·10" + (exponent < 0 ? "⁻" : "") + string.Concat(digits);
+        var digits = Math.Abs(exponent).ToString(CultureInfo.InvariantCulture);
+        return "·10" + (exponent < 0 ? "⁻" : "") + string.Concat(digits.Select(d =>
+            SuperscriptDigits[d - '0']));
     }
 
     /// <summary>Sets the decimal point after the digit that stands for 10⁰.</summary>

@@ -3,8 +3,8 @@ using System.Text;
 
 namespace CircuitTransient.Text;
 
-/// <summary>A line of a source as shown under a message, and the marks that underline the fault in
-/// it.</summary>
+/// <summary>A line of a source as shown under a message, and the marks that
+/// underline the fault in it.</summary>
 /// <param name="Line">The line, or a window of a long one; what cannot be printed is replaced.</param>
 /// <param name="Underline">Blanks and marks that stand under it; a tab stays a tab.</param>
 internal sealed record Excerpt(string Line, string Underline)
@@ -42,9 +42,8 @@ internal sealed record Excerpt(string Line, string Underline)
         AppendPrintable(shown, content[from..to]);
         AppendBlanks(marks, content[from..start]);
         marks.Append('^', Math.Max(1, Width(content[start..Math.Min(end, to)])));
-        return new Excerpt(shown.Append(to < content.Length
-            ? "…"
-            : "").ToString().TrimEnd(), marks.ToString());
+        shown.Append(to < content.Length ? "…" : "");
+        return new Excerpt(shown.ToString().TrimEnd(), marks.ToString());
     }
 
     /// <summary>Appends a text with everything replaced that would move the cursor or hide.</summary>
@@ -87,8 +86,7 @@ internal sealed record Excerpt(string Line, string Underline)
     }
 
     /// <summary>Columns a character takes on a terminal: East Asian wide blocks two (Unicode UAX 11, from
-    /// memory,
-    /// whole blocks), a combining mark none.</summary>
+    /// memory, whole blocks), a combining mark none.</summary>
     private static int Width(Rune rune) => rune.Value switch
     {
         _ when Rune.GetUnicodeCategory(rune) is UnicodeCategory.NonSpacingMark

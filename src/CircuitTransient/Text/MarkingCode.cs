@@ -1,7 +1,7 @@
 namespace CircuitTransient.Text;
 
-/// <summary>Marking codes of IEC 60062, in which a letter stands for the decimal mark: <c>4k7</c>,
-/// <c>R047</c>.</summary>
+/// <summary>Marking codes of IEC 60062, in which a letter stands for the decimal mark:
+/// <c>4k7</c>, <c>R047</c>.</summary>
 public static class MarkingCode
 {
     // Letters as quoted in secondary sources for IEC 60062:2016; m and F of capacitors from memory; n, µ, m
@@ -32,8 +32,8 @@ public static class MarkingCode
         return DecimalText.TryRead(digits, Exponent(text[place]), 1, out value);
     }
 
-    /// <summary>Reads a code on a part of the dimension given: a resistor's letters are not a
-    /// capacitor's.</summary>
+    /// <summary>Reads a code on a part of the dimension given: a resistor's letters
+    /// are not a capacitor's.</summary>
     public static bool TryRead(string text, Dimension dimension, out double value) =>
         TryRead(text, out value) && text[LetterOf(text)] is var letter
         && (dimension == Dimension.Resistance ? "RLKkMG".Contains(letter)

@@ -5,8 +5,8 @@ public static class NearestName
 {
     private const int LongestCompared = 64; // longer words are no slips of the finger; keeps the work bounded
 
-    /// <summary>The nearest candidate, or null where none is near enough: a third of the letters may
-    /// differ.</summary>
+    /// <summary>The nearest candidate, or null where none is near enough: a third of
+    /// the letters may differ.</summary>
     public static string? Find(string word, IEnumerable<string> candidates)
     {
         string? nearest = null;
@@ -31,8 +31,8 @@ public static class NearestName
         return nearest;
     }
 
-    /// <summary>The least number of letters inserted, left out, exchanged or swapped with their
-    /// neighbour.</summary>
+    /// <summary>The least number of letters inserted, left out, exchanged or
+    /// swapped with their neighbour.</summary>
     private static int Distance(string a, string b)
     {
         // Optimal string alignment: the recurrence of Damerau (1964) and Levenshtein (1966), from memory.

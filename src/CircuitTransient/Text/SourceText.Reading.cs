@@ -16,7 +16,7 @@ public sealed partial class SourceText
     {
         if (bytes.Length > LargestFile)
         {
-            return Refuse(TooLarge(name, bytes.Length));
+            return Refuse(TooLarge(name));
         }
 
         if (bytes.StartsWith((ReadOnlySpan<byte>)[0xFF, 0xFE])
@@ -47,21 +47,20 @@ public sealed partial class SourceText
 
     /// <summary>The error for a file over <see cref="LargestFile"/>, which need not be read to be
     /// refused.</summary>
-    public static Diagnostic TooLarge(string name, long length) => AtStart(
-        name, string.Create(null,
-            $"the file has {length / 1048576.0:F1} MiB; a circuit file has at most 16 MiB"),
+    public static Diagnostic TooLarge(string name) => AtStart(
+        name, "the file has more than 16 MiB",
         "write what repeats with `repeat`, and long records as `straight lines in file \"NAME.csv\"`");
 
     private static Diagnostic AtStart(string name, string message, string advice) =>
         Diagnostic.Error(new SourceText(name, ""), new TextSpan(0, 0), message, advice);
 
     /// <summary>An error at a byte, shown in as much of the text as can be read around it.</summary>
-    private static Diagnostic Fault(string name, ReadOnlySpan<byte> text, int place, string message,
-        string advice)
+    private static Diagnostic Fault(
+        string name, ReadOnlySpan<byte> text, int place, string message, string advice)
     {
         var before = Encoding.UTF8.GetString(text[..place]);
-        var after = Encoding.UTF8.GetString(text.Slice(place, Math.Min(BytesShownAfterFault,
-            text.Length - place)));
+        var shown = Math.Min(BytesShownAfterFault, text.Length - place);
+        var after = Encoding.UTF8.GetString(text.Slice(place, shown));
         return Diagnostic.Error(
             new SourceText(name, before + after), new TextSpan(before.Length, 1), message, advice);
     }

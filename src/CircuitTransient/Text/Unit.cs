@@ -3,18 +3,18 @@ namespace CircuitTransient.Text;
 /// <summary>A unit as written, its prefix included.</summary>
 /// <param name="Dimension">What it measures.</param>
 /// <param name="Exponent">Power of ten of its prefix or of its per cent.</param>
-/// <param name="Factor">What is left to reach the SI unit: 60 for a minute, π/180 for a degree, else
-/// 1.</param>
+/// <param name="Factor">What is left to reach the SI unit: 60 for a minute,
+/// π/180 for a degree, else 1.</param>
 public readonly record struct Unit(Dimension Dimension, int Exponent, double Factor = 1)
 {
     private const double RadiansInDegree = Math.PI / 180;
 
     /// <summary>The units a prefix may stand before, by their symbols.</summary>
-    public static IEnumerable<string> Symbols => ["Ω", "S", "F", "H", "V", "A", "W", "J", "C", "Wb", "Hz",
-        "s", "Vs"];
+    public static IEnumerable<string> Symbols =>
+        ["Ω", "S", "F", "H", "V", "A", "W", "J", "C", "Wb", "Hz", "s", "Vs"];
 
-    /// <summary>Reads a unit such as <c>µF</c>, <c>kOhm</c>, <c>V/µs</c>, <c>A²s</c>, <c>min</c>,
-    /// <c>°</c>.</summary>
+    /// <summary>Reads a unit such as <c>µF</c>, <c>kOhm</c>, <c>V/µs</c>,
+    /// <c>A²s</c>, <c>min</c>, <c>°</c>.</summary>
     public static bool TryRead(ReadOnlySpan<char> text, out Unit unit)
     {
         var whole = text switch
@@ -38,9 +38,10 @@ public readonly record struct Unit(Dimension Dimension, int Exponent, double Fac
             return TryReadPrefixed(text, out unit);
         }
 
-        var isRate = TryReadPrefixed(text[..slash], out var top) & TryReadPrefixed(text[(slash + 1)..],
-            out var bottom)
-            && (top.Dimension == Dimension.Voltage || top.Dimension == Dimension.Current)
+        var isTop = TryReadPrefixed(text[..slash], out var top);
+        var isBottom = TryReadPrefixed(text[(slash + 1)..], out var bottom);
+        var isRate = isTop && isBottom && (top.Dimension == Dimension.Voltage
+            || top.Dimension == Dimension.Current)
             && bottom.Dimension == Dimension.Time;
         unit = new Unit(top.Dimension / bottom.Dimension, top.Exponent - bottom.Exponent);
         return isRate;

@@ -6,29 +6,25 @@ public static class UnitAdvice
     private static readonly (string Word, string Symbol)[] words =
     [
         ("volt", "V"), ("amp", "A"), ("ampere", "A"), ("ohm", "Ω"), ("farad", "F"), ("henry", "H"),
-            ("henries", "H"),
-        ("watt", "W"), ("joule", "J"), ("coulomb", "C"), ("weber", "Wb"), ("siemens", "S"), ("hertz", "Hz"),
-        ("sec", "s"), ("second", "s"), ("minute", "min"), ("hour", "h"), ("hr", "h"), ("degree", "deg"),
-        ("percent", "%"), ("millisecond", "ms"), ("microsecond", "µs"), ("nanosecond", "ns"),
+        ("henries", "H"), ("watt", "W"), ("joule", "J"), ("coulomb", "C"), ("weber", "Wb"), ("siemens", "S"),
+        ("hertz", "Hz"), ("sec", "s"), ("second", "s"), ("minute", "min"), ("hour", "h"), ("hr", "h"),
+            ("degree", "deg"), ("percent", "%"), ("millisecond", "ms"), ("microsecond", "µs"),
+                ("nanosecond", "ns"),
     ];
 
     private static readonly (string Letters, string Word, string Prefix)[] prefixWords =
     [
-        ("meg", "mega", "M"), ("kil", "kilo", "k"), ("gig", "giga", "G"), ("ter", "tera", "T"), ("mil",
-            "milli", "m"),
-        ("mic", "micro", "µ"), ("nan", "nano", "n"), ("pic", "pico", "p"), ("fem", "femto", "f"),
+        ("meg", "mega", "M"), ("kil", "kilo", "k"), ("gig", "giga", "G"), ("ter", "tera", "T"),
+        ("mil", "milli", "m"), ("mic", "micro", "µ"), ("nan", "nano", "n"),
+        ("pic", "pico", "p"), ("fem", "femto", "f"),
     ];
 
     /// <summary>Advice for a word that stands where a unit should, behind a number.</summary>
     public static string For(string word, string number)
     {
-        foreach (var (name, symbol) in words)
+        if ((SymbolOf(word) ?? PrefixedSymbolOf(word)) is { } symbol)
         {
-            if (word.Equals(name, StringComparison.OrdinalIgnoreCase)
-                || word.Equals(name + "s", StringComparison.OrdinalIgnoreCase))
-            {
-                return $"write `{number} {symbol}`";
-            }
+            return $"write `{number} {symbol}`";
         }
 
         if (SameButForCase(word) is { } unit)
@@ -44,9 +40,31 @@ public static class UnitAdvice
             }
         }
 
-        return $"the units are {string.Join(' ', Unit.Symbols)} min h rad deg ° %, before them {Prefix.All}; "
-            + $"for a product write `{number} * {word}`";
+        return $"units: {string.Join(' ', Unit.Symbols)} min h deg %; prefixes: {Prefix.All}; "
+            + $"a product: `{number} * {word}`";
     }
+
+    /// <summary>The symbol of a unit written out.</summary>
+    private static string? SymbolOf(string word)
+    {
+        foreach (var (name, symbol) in words)
+        {
+            if (word.Equals(name, StringComparison.OrdinalIgnoreCase)
+                || word.Equals(name + "s", StringComparison.OrdinalIgnoreCase))
+            {
+                return symbol;
+            }
+        }
+
+        return null;
+    }
+
+    /// <summary>The same with a prefix before it: <c>kOhms</c>, <c>msec</c>.</summary>
+    private static string? PrefixedSymbolOf(string word) =>
+        word.Length > 1 && Prefix.TryRead(word[0], out var exponent) && SymbolOf(word[1..]) is { } symbol
+            && Unit.Symbols.Contains(symbol)
+            ? Prefix.Write(exponent) + symbol
+            : null;
 
     /// <summary>The unit meant by one in the wrong case: <c>KOHM</c>, <c>uf</c>, <c>HZ</c>.</summary>
     private static string? SameButForCase(string word)
@@ -68,7 +86,7 @@ public static class UnitAdvice
             // `MF` may be mega or milli: a prefix is only mended where one reading exists.
             var mended = prefix switch
             {
-                "U" => "µ",
+                "u" or "U" => "µ",
                 "K" => "k",
                 "N" => "n",
                 "g" => "G",

@@ -60,4 +60,44 @@ internal static class SampleMatrices
     /// <summary>S B S⁻¹, multiplied out and solved in double-double.</summary>
     public static DoubleDoubleMatrix Similar(DoubleDoubleMatrix s, DoubleDoubleMatrix b) =>
         LuFactorization.Of(s.Transposed()).Solve(s.Times(b).Transposed()).Transposed();
+
+    /// <summary>A chain of m poles −1, −1 − δ, −1 − 2δ, … coupled by ones, three other poles, turned by a
+    /// random similarity.</summary>
+    public static DoubleDoubleMatrix NearlyDefective(int m, double separation)
+    {
+        DoubleDoubleMatrix b = new(m + 3, m + 3);
+        for (int i = 0; i < m; i++)
+        {
+            b[i, i] = (DoubleDouble)(-1) - (separation * i);
+            b[i, i + 1] = i + 1 < m ? 1 : 0;
+        }
+
+        b[m, m] = -4;
+        b[m + 1, m + 2] = 7;
+        b[m + 2, m + 1] = -7;
+        return Similar(Random(m + 3, m + 3, 100 + m), b);
+    }
+
+    /// <summary>e^(A t) by Taylor's series of the whole matrix, scaled to a norm below one half and squared.
+    /// </summary>
+    public static DoubleDoubleMatrix Exponential(DoubleDoubleMatrix a, double t)
+    {
+        double norm = a.FrobeniusNorm() * Math.Abs(t);
+        int squarings = norm > 0.5 ? Math.ILogB(norm) + 2 : 0;
+        DoubleDouble scaled = DoubleDouble.ScaleByPowerOfTwo(t, -squarings);
+        DoubleDoubleMatrix sum = DoubleDoubleMatrix.Identity(a.Rows);
+        DoubleDoubleMatrix term = sum;
+        for (int k = 1; k < 30; k++)
+        {
+            term = new DoubleDoubleMatrix(a.Rows, a.Rows).Plus(scaled / k, term.Times(a));
+            sum = sum.Plus(1, term);
+        }
+
+        for (int k = 0; k < squarings; k++)
+        {
+            sum = sum.Times(sum);
+        }
+
+        return sum;
+    }
 }

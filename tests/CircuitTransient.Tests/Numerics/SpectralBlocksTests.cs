@@ -42,7 +42,7 @@ public class SpectralBlocksTests
     public void Poles_that_nearly_coincide_stay_one_block_and_the_sum_has_no_seam(
         int multiplicity, double separation)
     {
-        DoubleDoubleMatrix a = NearlyDefective(multiplicity, separation);
+        DoubleDoubleMatrix a = SampleMatrices.NearlyDefective(multiplicity, separation);
 
         SpectralBlocks blocks = SpectralBlocks.Of(a);
 
@@ -226,23 +226,6 @@ public class SpectralBlocksTests
 
     private static IEnumerable<DoubleDoubleComplex> Poles(SpectralBlock block) =>
         Enumerable.Range(0, block.Size).Select(block.Pole);
-
-    /// <summary>A chain of m poles −1, −1 − δ, −1 − 2δ, … coupled by ones, three other poles, turned by a
-    /// random similarity.</summary>
-    private static DoubleDoubleMatrix NearlyDefective(int m, double separation)
-    {
-        DoubleDoubleMatrix b = new(m + 3, m + 3);
-        for (int i = 0; i < m; i++)
-        {
-            b[i, i] = (DoubleDouble)(-1) - (separation * i);
-            b[i, i + 1] = i + 1 < m ? 1 : 0;
-        }
-
-        b[m, m] = -4;
-        b[m + 1, m + 2] = 7;
-        b[m + 2, m + 1] = -7;
-        return SampleMatrices.Similar(SampleMatrices.Random(m + 3, m + 3, 100 + m), b);
-    }
 
     private static void AssertRebuilds(DoubleDoubleMatrix a, SpectralBlocks blocks, double tolerance)
     {

@@ -1,13 +1,10 @@
 using System.Text.Json;
 using CircuitTransient.Reports;
-using Json.Schema;
 
 namespace CircuitTransient.Tests.Reports;
 
 public class JsonReportTests
 {
-    private static readonly JsonSchema Schema = JsonSchema.FromText(JsonReport.Schema);
-
     [Fact]
     public void A_full_document_obeys_the_schema() => AssertObeys(JsonReport.Write(SampleResults.Inrush()));
 
@@ -30,8 +27,7 @@ public class JsonReportTests
     {
         var text = JsonReport.Write(SampleResults.Inrush());
         Assert.Contains(right, text, StringComparison.Ordinal);
-        using var document = JsonDocument.Parse(text.Replace(right, wrong, StringComparison.Ordinal));
-        Assert.False(Schema.Evaluate(document.RootElement).IsValid);
+        Assert.NotEmpty(ResultsSchema.Faults(text.Replace(right, wrong, StringComparison.Ordinal)));
     }
 
     [Fact]
@@ -127,13 +123,5 @@ public class JsonReportTests
     public void The_same_result_gives_the_same_text() =>
         Assert.Equal(JsonReport.Write(SampleResults.Inrush()), JsonReport.Write(SampleResults.Inrush()));
 
-    private static void AssertObeys(string json)
-    {
-        using var document = JsonDocument.Parse(json);
-        var options = new EvaluationOptions { OutputFormat = OutputFormat.List };
-        var verdict = Schema.Evaluate(document.RootElement, options);
-        var faults = (verdict.Details ?? []).Where(detail => detail.Errors is not null)
-            .Select(detail => $"{detail.InstanceLocation}: {string.Join(", ", detail.Errors!.Values)}");
-        Assert.True(verdict.IsValid, string.Join('\n', faults));
-    }
+    private static void AssertObeys(string json) => Assert.Empty(ResultsSchema.Faults(json));
 }

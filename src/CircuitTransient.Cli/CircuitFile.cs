@@ -1,0 +1,72 @@
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>A circuit file that was read, or the exit status that says why not.</summary>
+public sealed class CircuitFile
+{
+    private readonly string path;
+
+    private CircuitFile(string path, SourceText? source, int status)
+    {
+        this.path = path;
+        Source = source;
+        Status = status;
+    }
+
+    /// <summary>Its text; null where it could not be read.</summary>
+    public SourceText? Source { get; }
+
+    /// <summary>Success, or what kept it, or a file it names, from being read.</summary>
+    public int Status { get; private set; }
+
+    /// <summary>Reads a file; what is wrong with it has been said when this returns.</summary>
+    public static CircuitFile Read(string path, Streams streams)
+    {
+        try
+        {
+            var text = Decode(path, path);
+            streams.Report(text.Diagnostics);
+            return new(path, text.Value, text.Succeeded ? ExitStatus.Success : ExitStatus.Mistake);
+        }
+        catch (Exception trouble) when (trouble.IsFileTrouble())
+        {
+            var reason = Directory.Exists(path) ? "it is a folder" : FileTrouble.Reason(trouble);
+            streams.Complain($"{path} cannot be read: {reason}");
+            return new(path, null, ExitStatus.FileTrouble);
+        }
+    }
+
+    /// <summary>Reads a file that the circuit names, found beside the circuit; nothing where that
+    /// fails.</summary>
+    public Outcome<SourceText> ReadBeside(string name)
+    {
+        var beside = Path.Combine(Path.GetDirectoryName(path) ?? "", name);
+        try
+        {
+            return Decode(beside, beside);
+        }
+        catch (Exception trouble) when (trouble.IsFileTrouble())
+        {
+            Status = ExitStatus.FileTrouble;
+            return new(null, []);
+        }
+    }
+
+    private static Outcome<SourceText> Decode(string name, string path)
+    {
+        using var stream = File.OpenRead(path);
+        var bytes = new byte[1 << 16];
+        var length = 0;
+        while (length <= SourceText.LargestFile && stream.Read(bytes.AsSpan(length)) is > 0 and var count)
+        {
+            length += count;
+            if (length == bytes.Length)
+            {
+                Array.Resize(ref bytes, 2 * length);
+            }
+        }
+
+        return SourceText.Read(name, bytes.AsSpan(0, length));
+    }
+}

@@ -1,0 +1,57 @@
+using System.Text;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>A file to be written: its name in the folder and its whole content.</summary>
+public sealed record OutputFile(string Name, ReadOnlyMemory<byte> Content)
+{
+    /// <summary>A text file, in UTF-8 without a byte-order mark.</summary>
+    public static OutputFile OfText(string name, string text) => new(name, Encoding.UTF8.GetBytes(text));
+}
+
+/// <summary>The folder of one circuit's results.</summary>
+public static class OutputFolder
+{
+    /// <summary>The folder for a circuit file: its stem below the folder asked for.</summary>
+    public static string For(string folder, string file) => Path.Combine(folder, StemOf(file));
+
+    /// <summary>A file's name without its folder and extension.</summary>
+    public static string StemOf(string file) =>
+        Path.GetFileNameWithoutExtension(file) is { Length: > 0 } stem ? stem : Path.GetFileName(file);
+
+    /// <summary>The file that stands where a folder is needed; null where none does.</summary>
+    public static string? FileInTheWay(string folder)
+    {
+        for (var place = folder; !string.IsNullOrEmpty(place); place = Path.GetDirectoryName(place))
+        {
+            if (File.Exists(place))
+            {
+                return place;
+            }
+        }
+
+        return null;
+    }
+
+    /// <summary>Writes all files under temporary names, then puts all of them in place: none is ever seen
+    /// half written.</summary>
+    public static void Write(string folder, IReadOnlyList<OutputFile> files, CancellationToken cancellation)
+    {
+        Directory.CreateDirectory(folder);
+        var unfinished = new List<UnfinishedFile>();
+        try
+        {
+            foreach (var file in files)
+            {
+                cancellation.ThrowIfCancellationRequested();
+                unfinished.Add(new UnfinishedFile(Path.Combine(folder, file.Name), file.Content.Span));
+            }
+
+            unfinished.ForEach(file => file.Finish());
+        }
+        finally
+        {
+            unfinished.ForEach(file => file.Dispose());
+        }
+    }
+}

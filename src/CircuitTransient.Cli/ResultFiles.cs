@@ -1,0 +1,18 @@
+using System.Collections.Immutable;
+using CircuitTransient.Measurements;
+using CircuitTransient.Reports;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>The files of one result.</summary>
+public static class ResultFiles
+{
+    /// <summary>Every file that is written, in the order the summary names them.</summary>
+    public static ImmutableArray<OutputFile> Of(TransientResult result) =>
+    [
+        OutputFile.OfText("results.json", JsonReport.Write(result)),
+        OutputFile.OfText("waveforms.csv", CsvReport.Write(result)),
+        OutputFile.OfText("waveforms.svg", WaveformPlot.Svg(result)),
+        new OutputFile("waveforms.png", WaveformPlot.Png(result)),
+    ];
+}

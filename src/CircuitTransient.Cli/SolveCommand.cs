@@ -1,0 +1,79 @@
+using System.CommandLine;
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Cli;
+
+/// <summary><c>solve FILE…</c>: the words of the main job.</summary>
+internal sealed class SolveCommand : Command
+{
+    private readonly Argument<string[]> files = Words.Files();
+
+    private readonly Option<string> folder = new("--out")
+    {
+        Description = "Folder of the results; each circuit gets a folder of its own in it.",
+        HelpName = "DIR",
+        DefaultValueFactory = _ => "output",
+    };
+
+    private readonly Option<string> at = new("--at")
+    {
+        Description = "Instants to give exact values at, such as \"1 ms, 2.5 ms\".",
+        HelpName = "TIMES",
+    };
+
+    private readonly Option<int> samples = new("--samples")
+    {
+        Description = "How many samples of each waveform to aim at.",
+        HelpName = "N",
+        DefaultValueFactory = _ => 2000,
+        CustomParser = Words.WholeNumber(2, 1_000_000),
+    };
+
+    private readonly Option<bool> json = new("--json") { Description = "Print the results document." };
+
+    private readonly Option<bool> noFiles = new("--no-files") { Description = "Write no files." };
+
+    private readonly Option<bool> quiet = new("--quiet")
+    {
+        Description = "Print no summary; mistakes and warnings still go to stderr.",
+    };
+
+    private readonly Option<bool> strict = new("--strict")
+    {
+        Description = "Count warnings and passed linear ranges as broken requirements.",
+    };
+
+    /// <summary>The command, writing to these streams.</summary>
+    public SolveCommand(Streams streams, CancellationToken cancellation)
+        : base("solve", "Solve circuits, print a summary and write the results.")
+    {
+        Add(files);
+        foreach (var option in (Option[])[folder, at, samples, json, noFiles, quiet, strict])
+        {
+            Add(option);
+        }
+
+        SetAction(parsed => Read(parsed, streams) is { } options
+            ? new SolveRun(options, streams, cancellation).Run(parsed.GetRequiredValue(files))
+            : ExitStatus.Mistake);
+    }
+
+    private SolveOptions? Read(ParseResult parsed, Streams streams)
+    {
+        var text = parsed.GetValue(at);
+        var instants = text is null
+            ? new(InstantList.Empty, [])
+            : InstantListParser.Parse(new SourceText(at.Name, text));
+        streams.Report(instants.Diagnostics);
+        return instants.Succeeded
+            ? new SolveOptions(
+                instants.Value,
+                parsed.GetRequiredValue(samples),
+                parsed.GetValue(noFiles) ? null : parsed.GetRequiredValue(folder),
+                parsed.GetValue(json),
+                parsed.GetValue(quiet),
+                parsed.GetValue(strict))
+            : null;
+    }
+}

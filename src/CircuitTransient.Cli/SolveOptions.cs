@@ -1,0 +1,13 @@
+using CircuitTransient.Syntax;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>What <c>solve</c> was asked for besides its files.</summary>
+/// <param name="At">The instants to give exact values at.</param>
+/// <param name="SampleCount">How many samples of each waveform to aim at.</param>
+/// <param name="Folder">Where the folders of results go; null where no files are wanted.</param>
+/// <param name="IsJson">Whether the results document takes the place of the summary.</param>
+/// <param name="IsQuiet">Whether there is no summary.</param>
+/// <param name="IsStrict">Whether warnings and passed linear ranges count as broken requirements.</param>
+public sealed record SolveOptions(
+    InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict);

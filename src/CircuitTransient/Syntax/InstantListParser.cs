@@ -1,0 +1,89 @@
+using System.Collections.Immutable;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Syntax;
+
+/// <summary>Instants given outside a circuit, such as <c>1 ms, 2.5 ms</c>, in seconds after t = 0.</summary>
+/// <param name="Source">The text they are written in.</param>
+/// <param name="Instants">The instants in the order written.</param>
+public sealed record InstantList(SourceText Source, ImmutableArray<NumberSyntax> Instants)
+{
+    /// <summary>No instants.</summary>
+    public static InstantList Empty { get; } = new(new SourceText("", ""), []);
+}
+
+/// <summary>Reads lists of instants: numbers with units of time, parted by commas.</summary>
+public static class InstantListParser
+{
+    private const string Form = "such as `1 ms, 2.5 ms`";
+
+    /// <summary>Reads a list; errors point into its own text.</summary>
+    public static Outcome<InstantList> Parse(SourceText source)
+    {
+        var diagnostics = new List<Diagnostic>();
+        var tokens = new List<Token>();
+        var lexer = new StatementLexer(source);
+        if (!lexer.Next(tokens))
+        {
+            var nothing = new TextSpan(0, source.Content.Length);
+            return new(null, [Diagnostic.Error(source, nothing, "no instant is given", Form)]);
+        }
+
+        var cursor = new StatementCursor(source, tokens, diagnostics) { Form = Form };
+        var instants = ImmutableArray.CreateBuilder<NumberSyntax>();
+        do
+        {
+            if (ReadInstant(cursor) is not { } instant)
+            {
+                return new(null, [.. diagnostics]);
+            }
+
+            instants.Add(instant);
+        }
+        while (cursor.Take(','));
+
+        if (!cursor.IsAtEnd)
+        {
+            cursor.Unexpected("`,`");
+        }
+
+        return diagnostics.Count == 0
+            ? new(new InstantList(source, instants.ToImmutable()), [])
+            : new(null, [.. diagnostics]);
+    }
+
+    private static NumberSyntax? ReadInstant(StatementCursor cursor)
+    {
+        if (cursor.IsSign('-'))
+        {
+            cursor.Error(cursor.Current.Span, "an instant before t = 0 is before the study");
+            return null;
+        }
+
+        if (cursor.Current.Kind != TokenKind.Number)
+        {
+            cursor.Unexpected("an instant");
+            return null;
+        }
+
+        if (NumberParser.Read(cursor) is not { } number)
+        {
+            return null;
+        }
+
+        var text = cursor.TextOf(number.Span);
+        if (!number.HasUnit)
+        {
+            cursor.Error(number.Span, $"`{text}` has no unit; an instant is in seconds", $"write `{text} s`");
+            return null;
+        }
+
+        if (number.Dimension != Dimension.Time)
+        {
+            cursor.Error(number.Span, $"`{text}` is not an instant, which is in seconds");
+            return null;
+        }
+
+        return number;
+    }
+}

@@ -1,0 +1,57 @@
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Syntax;
+
+/// <summary>What is often wrong with a number, and what to say of it.</summary>
+internal static class NumberMistakes
+{
+    public static bool HasDecimalComma(StatementCursor cursor, Token token, bool isInPoint)
+    {
+        if (!cursor.IsSign(',') || cursor.Current.Start != token.End
+            || cursor.Ahead(1).Kind != TokenKind.Number || !cursor.IsJoined(1))
+        {
+            return false;
+        }
+
+        // `(0,5)` is a point without units; `(0,5 ms, 3 V)` has a decimal comma.
+        return !isInPoint || (cursor.Ahead(2).Kind == TokenKind.Word && cursor.IsSign(',', 3));
+    }
+
+    public static void ReportDecimalComma(StatementCursor cursor, Token token)
+    {
+        var after = cursor.Ahead(1);
+        var span = new TextSpan(token.Start, after.End - token.Start);
+        cursor.Advance(2);
+        var number = cursor.Shown(token);
+        var decimals = cursor.Shown(after);
+        var length = NumberParser.UnitTokens(cursor, out var text);
+        var isUnit = length > 0
+            && (Unit.TryRead(text, out _) || (text.Length == 1 && Prefix.TryRead(text[0], out _)));
+        var unit = isUnit ? " " + text : "";
+        cursor.Advance(isUnit ? length : 0);
+        var isThousands = decimals.Length == 3 && number.Length <= 3 && number is not "0";
+        cursor.Error(span, $"`{cursor.Shown(span)}` has a decimal comma; the decimal mark is a point",
+            isThousands
+                ? $"write `{number}.{decimals}{unit}` or, for thousands, `{number}{decimals}{unit}`"
+                : $"write `{number}.{decimals}{unit}`");
+    }
+
+    public static void ReportGap(StatementCursor cursor, Token token)
+    {
+        var text = cursor.TextOf(token).ToString();
+        while (cursor.Current.Kind == TokenKind.Number && cursor.Current.Length <= DecimalText.Longest
+            && text.Length < DecimalText.Longest)
+        {
+            text += cursor.TextOf(cursor.Advance()).ToString();
+        }
+
+        var span = cursor.SpanFrom(token.Start);
+        var isRead = NumberParser.TakeUnit(cursor, token, out _, out _, out var hasUnit);
+        var unit = hasUnit ? cursor.Shown(new TextSpan(span.End, cursor.LastEnd - span.End)) : "";
+        if (isRead)
+        {
+            cursor.Error(span, "two numbers stand side by side",
+                $"write one number without blanks: `{text}{unit}`");
+        }
+    }
+}

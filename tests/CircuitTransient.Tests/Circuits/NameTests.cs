@@ -1,0 +1,168 @@
+namespace CircuitTransient.Tests.Circuits;
+
+/// <summary>Names of parts and nodes.</summary>
+public class NameTests
+{
+    [Fact]
+    public void Two_parts_of_one_name_are_refused() =>
+        Assert.Equal(
+            """
+            plant.cause:3:11: error: there are two parts named `R1`
+              capacitor R1 at a : 1 µF
+                        ^^
+              → the first stands in line 2; give this one a name of its own
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                resistor R1 at a : 1 kΩ
+                capacitor R1 at a : 1 µF
+                """));
+
+    [Fact]
+    public void Parts_that_differ_only_in_case_are_refused() =>
+        Assert.Equal(
+            """
+            plant.cause:3:10: error: the parts `Rpre` and `RPRE` differ only in case
+              resistor RPRE at a : 2 kΩ
+                       ^^^^
+              → line 2 has `Rpre`; write both alike, or give one another name
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                resistor Rpre at a : 1 kΩ
+                resistor RPRE at a : 2 kΩ
+                """));
+
+    [Fact]
+    public void Nodes_that_differ_only_in_case_are_refused() =>
+        Assert.Equal(
+            """
+            plant.cause:2:16: error: the nodes `bus` and `Bus` differ only in case
+              resistor R1 at Bus : 1 kΩ
+                             ^^^
+              → line 1 has `bus`; write both alike, or give one another name
+            """,
+            Checking.Messages(
+                """
+                source Feed at bus : 10 V
+                resistor R1 at Bus : 1 kΩ
+                """));
+
+    [Fact]
+    public void Both_ends_on_one_node_are_refused() =>
+        Assert.Equal(
+            """
+            plant.cause:3:23: error: both ends of `R2` are on the node `a`
+              resistor R2 from a to a : 2 kΩ
+                                    ^
+              → join one end to another node, or leave the part out
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                resistor R1 at a : 1 kΩ
+                resistor R2 from a to a : 2 kΩ
+                """));
+
+    [Fact]
+    public void A_part_at_the_reference_has_both_ends_there() =>
+        Assert.Equal(
+            """
+            plant.cause:3:16: error: both ends of `R2` are on the node `ground`
+              resistor R2 at ground : 2 kΩ
+                             ^^^^^^
+              → join one end to another node, or leave the part out
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                resistor R1 at a : 1 kΩ
+                resistor R2 at ground : 2 kΩ
+                """));
+
+    [Fact]
+    public void A_node_touched_once_is_asked_about_with_the_nearest() =>
+        Assert.Equal(
+            """
+            plant.cause:3:25: warning: only `R2` touches the node `buss`
+              resistor R2 from bus to buss : 1 kΩ
+                                      ^^^^
+              → did you mean `bus`?
+            """,
+            Checking.Messages(
+                """
+                source Feed at bus : 10 V
+                resistor R1 at bus : 1 kΩ
+                resistor R2 from bus to buss : 1 kΩ
+                """));
+
+    [Fact]
+    public void A_node_touched_once_without_a_neighbour_is_asked_about() =>
+        Assert.Equal(
+            """
+            plant.cause:3:25: warning: only `R2` touches the node `x`
+              resistor R2 from bus to x : 1 kΩ
+                                      ^
+              → join another part to it, unless it is meant to hang open
+            """,
+            Checking.Messages(
+                """
+                source Feed at bus : 10 V
+                resistor R1 at bus : 1 kΩ
+                resistor R2 from bus to x : 1 kΩ
+                """));
+
+    [Fact]
+    public void What_an_unreadable_part_is_and_touches_is_not_missed() =>
+        Assert.Equal(
+            """
+            plant.cause:2:27: error: `3,5` has a decimal comma; the decimal mark is a point
+              resistor R1 from a to b : 3,5 Ω
+                                        ^^^
+              → write `3.5 Ω`
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                resistor R1 from a to b : 3,5 Ω
+                capacitor C1 from b to ground : 1 µF
+                observe current through R1
+                observe voltage of b
+                """));
+
+    [Fact]
+    public void Every_mistake_is_told_in_one_go() =>
+        Assert.Equal(
+            """
+            plant.cause:1:20: error: `10` has no unit; a source is in volts or amperes
+              source Feed at a : 10
+                                 ^^
+              → write `10 V` or `10 A`
+            plant.cause:2:27: error: `5 V` is a voltage; a resistance in ohms is expected here
+              resistor R1 from a to b : 5 V
+                                        ^^^
+              → if the number is right, write `5 Ω`
+            plant.cause:3:21: error: the capacitance of `C1` is 0 F; it must be more than zero
+              capacitor C1 at b : 0 F
+                                  ^^^
+              → leave it out if `C1` has none
+            plant.cause:4:20: error: there is no node `c`
+              observe voltage of c
+                                 ^
+              → the nodes are `ground`, `a`, `b`
+            plant.cause:5:7: error: the study would end at 0 s, and it starts at 0 s
+              until 0 s
+                    ^^^
+              → give an end after 0 s
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10
+                resistor R1 from a to b : 5 V
+                capacitor C1 at b : 0 F
+                observe voltage of c
+                until 0 s
+                """));
+}

@@ -1,0 +1,65 @@
+using System.Text.RegularExpressions;
+using CircuitTransient.Cli;
+using CircuitTransient.Tests.Cli;
+
+namespace CircuitTransient.Tests.Project;
+
+/// <summary>What the README shows is what happens.</summary>
+public sealed partial class ReadmeTests : IDisposable
+{
+    private static readonly string Readme = Repository.Read("README.md");
+
+    private readonly CommandLine commandLine = new();
+
+    public void Dispose() => commandLine.Dispose();
+
+    [Fact]
+    public void Each_command_prints_what_stands_below_it()
+    {
+        foreach (var circuit in Blocks("cause"))
+        {
+            var text = circuit.Groups["text"].Value;
+            commandLine.Circuit(text.Split('\n')[0].Trim('#', ' '), text);
+        }
+
+        var commands = Blocks("console")
+            .SelectMany(block => Command().Matches(block.Groups["text"].Value))
+            .ToList();
+
+        Assert.NotEmpty(commands);
+        Assert.All(commands, command =>
+        {
+            var run = Shell.Run(commandLine.Folder, command.Groups["line"].Value);
+            Assert.Equal(command.Groups["answer"].Value.TrimEnd(), (run.Output + run.Error).TrimEnd());
+        });
+    }
+
+    [Fact]
+    public void The_demonstration_is_solved_and_holds()
+    {
+        var line = Demonstration().Match(Readme).Groups["words"].Value;
+        Assert.NotEmpty(line);
+        var words = line.Split(' ').Select(word => word.EndsWith(".cause", StringComparison.Ordinal)
+            ? Path.Combine(Repository.Root, word)
+            : word);
+
+        var run = commandLine.Run([.. words, "--out", commandLine.Results]);
+
+        Assert.Equal((ExitStatus.Success, ""), (run.Status, run.Error));
+    }
+
+    private static IEnumerable<Match> Blocks(string language) =>
+        Block().Matches(Readme).Where(block => block.Groups["language"].Value == language);
+
+    [GeneratedRegex(@"^```(?<language>\w+)\n(?<text>.*?)^```$",
+        RegexOptions.Multiline | RegexOptions.Singleline | RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex Block();
+
+    [GeneratedRegex("^dotnet run .* -- (?<words>.*)$",
+        RegexOptions.Multiline | RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex Demonstration();
+
+    [GeneratedRegex(@"^\$ (?<line>[^\n]*)\n(?<answer>(?!\$ ).*?)(?=^\$ |\z)",
+        RegexOptions.Multiline | RegexOptions.Singleline | RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex Command();
+}
