@@ -18,10 +18,10 @@ internal sealed class SolvedText
     /// <summary>Solves a text; what the result says of itself must hold, too.</summary>
     /// <param name="text">The circuit file.</param>
     /// <param name="at">Instants in seconds whose exact values are wanted.</param>
-    public static SolvedText Of(string text, params double[] at) => Of(text, 16, at);
+    public static SolvedText Of(string text, params double[] at) => WithWaveform(text, 16, at);
 
     /// <summary>Solves a text with a number of waveform samples.</summary>
-    public static SolvedText Of(string text, int samples, params double[] at)
+    public static SolvedText WithWaveform(string text, int samples, params double[] at)
     {
         var outcome = TransientAnalysis.Run(
             new SourceText("check.cause", text), new AnalysisOptions([.. at], samples), NoFile);
