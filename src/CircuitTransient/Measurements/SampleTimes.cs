@@ -15,18 +15,10 @@ internal static class SampleTimes
     /// <param name="extra">Instants that must be among them.</param>
     public static ImmutableArray<double> Of(TransientSolution solution, int count, IEnumerable<double> extra)
     {
-        var (coarse, fine) = (4.0, 1e-4); // steps over the fastest living time constant
-        for (var k = 0; k < 12; k++)
+        double coarse = 0.5; // of the fastest living time constant; the number of steps is nearly its inverse
+        for (var k = 0; k < 3; k++)
         {
-            var middle = Math.Sqrt(coarse * fine);
-            if (Count(solution, middle, count) > count)
-            {
-                fine = middle;
-            }
-            else
-            {
-                coarse = middle;
-            }
+            coarse = Math.Clamp(coarse * Count(solution, coarse, count) / count, 1e-6, 4);
         }
 
         var times = new List<double>();

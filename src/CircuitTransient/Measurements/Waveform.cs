@@ -21,6 +21,7 @@ internal static class Waveform
 
         var index = 0;
         var phi = new double[solution.Segments.Max(s => s.Basis.Width)];
+        var gathered = new GatheredIntegrals(curves);
         for (var k = 0; k < times.Length; k++)
         {
             var isBefore = k + 1 < times.Length && times[k + 1] == times[k];
@@ -35,9 +36,10 @@ internal static class Waveform
             var tau = Math.Clamp(times[k] - segment.Start, 0, segment.Length);
             var now = phi.AsSpan(0, segment.Basis.Width);
             segment.Basis.Evaluate(tau, now);
+            gathered.MoveTo(index, tau);
             for (var c = 0; c < values.Length; c++)
             {
-                values[c][k] = curves[c].Pieces[index].ValueAt(tau, now);
+                values[c][k] = gathered.ValueOf(c) ?? curves[c].Pieces[index].ValueAt(tau, now);
             }
         }
 

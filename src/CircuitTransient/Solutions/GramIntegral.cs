@@ -16,11 +16,19 @@ public static class GramIntegral
     public static double[,] Of(SegmentBasis basis, DoubleDouble h)
     {
         var gram = new double[basis.Width, basis.Width];
+        var plain = basis.Modes.Select(m => PolynomialExponential.Of(m, h)).ToArray();
         for (var a = 0; a < basis.Modes.Length; a++)
         {
             for (var b = a; b < basis.Modes.Length; b++)
             {
-                AddPair(gram, basis, a, b, h);
+                if (plain[a] is { } first && plain[b] is { } second)
+                {
+                    AddPlainPair(gram, basis, (a, first), (b, second), h.Hi);
+                }
+                else
+                {
+                    AddPair(gram, basis, a, b, h);
+                }
             }
         }
 
@@ -48,6 +56,22 @@ public static class GramIntegral
         }
 
         return sum;
+    }
+
+    private static void AddPlainPair(
+        double[,] gram, SegmentBasis basis, (int Mode, PolynomialExponential[] Functions) a,
+        (int Mode, PolynomialExponential[] Functions) b, double h)
+    {
+        var isReal = basis.Modes[b.Mode].IsReal;
+        for (var j = 0; j < a.Functions.Length; j++)
+        {
+            for (var l = 0; l < b.Functions.Length; l++)
+            {
+                var p = a.Functions[j].Integral(b.Functions[l], conjugate: false, h);
+                var q = isReal ? p : a.Functions[j].Integral(b.Functions[l], conjugate: true, h);
+                Put(gram, basis, (a.Mode, j), (b.Mode, l), p, q);
+            }
+        }
     }
 
     private static void AddPair(double[,] gram, SegmentBasis basis, int a, int b, DoubleDouble h)

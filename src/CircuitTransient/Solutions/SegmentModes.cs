@@ -134,6 +134,12 @@ internal sealed class SegmentModes
             AddForcedTerms(sums, forcing.Exponent, a * factor, s * factor);
         }
 
+        if (block.Size == 1 && motion.Forcings.FirstOrDefault(f => IsJoined(b, f, out _)) is { } kept)
+        {
+            AddBesideForced(sums, b, kept, row[0] * free[0] * factor);
+            return;
+        }
+
         for (var i = 0; i < block.Size; i++)
         {
             for (var j = i; j < block.Size; j++)
@@ -141,6 +147,18 @@ internal sealed class SegmentModes
                 sums[b][mode.Carrier(i, j)] += row[i] * free[j] * factor;
             }
         }
+    }
+
+    /// <summary>e^(p τ) = e^(μ τ) + (p − μ) e[p, μ]: beside a joined exponential the pole is written so, and
+    /// a network
+    /// at rest is a constant to the last digit instead of two motions that cancel.</summary>
+    private void AddBesideForced(DoubleDoubleComplex[][] sums, int b, Forcing kept,
+        DoubleDoubleComplex weight)
+    {
+        IsJoined(b, kept, out var joined);
+        var mode = Basis.Modes[joined];
+        sums[joined][mode.Carrier(0, 1)] += weight * (mode.Triangle[0, 0] - mode.Triangle[1, 1]);
+        AddForcedTerms(sums, kept.Exponent, weight, default);
     }
 
     private static void AddJoinedTerms(

@@ -1,3 +1,5 @@
+using System.Diagnostics;
+
 namespace CircuitTransient.Measurements.Curves;
 
 /// <summary>The integral of a sum of products since some instant: an absorbed energy, a Joule
@@ -20,8 +22,10 @@ public sealed class AccumulatedPiece : CurvePiece
         From = from;
         for (var k = 0; k + 1 < sums.Length; k++)
         {
-            sums[k + 1] =
-                sums[k] + PanelIntegral.Of(rate, Math.Max(from, Table.Instants[k]), Table.Instants[k + 1]);
+            var added = from <= Table.Instants[k]
+                ? Table.IntegralBetween(rate, k)
+                : PanelIntegral.Of(rate, from, Table.Instants[k + 1]);
+            sums[k + 1] = sums[k] + added;
         }
     }
 
@@ -33,6 +37,9 @@ public sealed class AccumulatedPiece : CurvePiece
 
     /// <summary>The integral up to the segment's end.</summary>
     public double AtEnd => sums[^1];
+
+    /// <inheritdoc/>
+    protected override double[] Tabulate() => sums;
 
     /// <inheritdoc/>
     public override (double Value, double Slope, double Bend) At(double tau, ReadOnlySpan<double> phi)
@@ -62,15 +69,18 @@ public sealed class AccumulatedPiece : CurvePiece
     }
 
     /// <inheritdoc/>
-    public override double UpperBound(
+    public override double UpperBetween(
         double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
-            ReadOnlySpan<double> envelope,
-        double firstValue, double lastValue)
+        ReadOnlySpan<double> envelope) =>
+        throw new UnreachableException("an integral is bounded around the middle of a stretch");
+
+    /// <inheritdoc/>
+    public override double UpperAround(
+        double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope)
     {
-        var bounds = rate.Bounds(envelope);
-        var middle = (firstValue + lastValue) / 2;
-        return Math.Min(
-            (sign * middle) + (width / 2 * bounds.Value),
-            Math.Max(sign * firstValue, sign * lastValue) + (width * width / 8 * bounds.First));
+        var growth = Math.Max(
+            rate.UpperAround(1, half, tau, middle, envelope),
+                rate.UpperAround(-1, half, tau, middle, envelope));
+        return (sign * ValueAt(tau, middle)) + (half * growth);
     }
 }

@@ -7,11 +7,16 @@ namespace CircuitTransient.Measurements.Curves;
 /// instants.</summary>
 public abstract class CurvePiece(SegmentTable table)
 {
+    private double[]? tabulated;
+
     /// <summary>The table of the segment's functions.</summary>
     public SegmentTable Table { get; } = table;
 
     /// <summary>The segment.</summary>
     public Segment Segment => Table.Segment;
+
+    /// <summary>The values at the tabulated instants.</summary>
+    public ReadOnlySpan<double> Tabulated => tabulated ??= Tabulate();
 
     /// <summary>Value, first and second derivative at τ, where the segment's functions are <paramref
     /// name="phi"/>.</summary>
@@ -25,12 +30,15 @@ public abstract class CurvePiece(SegmentTable table)
     public abstract (double Second, double Third) DerivativeBounds(ReadOnlySpan<double> envelope);
 
     /// <summary>An upper bound of sign × value over a stretch whose ends are known: slow functions are nearly
-    /// straight
-    /// there, fast ones are at most their amplitude.</summary>
-    public abstract double UpperBound(
+    /// straight there, fast ones are at most their amplitude.</summary>
+    public abstract double UpperBetween(
         double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
-            ReadOnlySpan<double> envelope,
-        double firstValue, double lastValue);
+        ReadOnlySpan<double> envelope);
+
+    /// <summary>An upper bound of sign × value over a stretch that reaches half a width to either side of
+    /// τ.</summary>
+    public abstract double UpperAround(
+        double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope);
 
     /// <summary>The value at τ.</summary>
     public double ValueAt(double tau)
@@ -39,6 +47,18 @@ public abstract class CurvePiece(SegmentTable table)
         phi = Segment.Basis.Width <= 256 ? phi[..Segment.Basis.Width] : new double[Segment.Basis.Width];
         Segment.Basis.Evaluate(tau, phi);
         return ValueAt(tau, phi);
+    }
+
+    /// <summary>Takes the values at the tabulated instants.</summary>
+    protected virtual double[] Tabulate()
+    {
+        var values = new double[Table.Instants.Length];
+        for (var k = 0; k < values.Length; k++)
+        {
+            values[k] = ValueAt(Table.Instants[k], Table.Values(k));
+        }
+
+        return values;
     }
 
     /// <summary>a · b.</summary>

@@ -108,14 +108,15 @@ public sealed class ExtremeSearch
     private void Scan(int p, double a, double b)
     {
         var table = curve.Pieces[p].Table;
-        Offer(p, a, sign * curve.Pieces[p].ValueAt(a));
-        Offer(p, b, sign * curve.Pieces[p].ValueAt(b));
+        var values = curve.Pieces[p].Tabulated;
+        Offer(p, a, sign * (a == 0 ? values[0] : curve.Pieces[p].ValueAt(a)));
+        Offer(p, b, sign * (b == table.Instants[^1] ? values[^1] : curve.Pieces[p].ValueAt(b)));
         for (var k = 0; k < table.Instants.Length; k++)
         {
             var tau = table.Instants[k];
             if (tau > a && tau < b)
             {
-                Offer(p, tau, sign * curve.Pieces[p].ValueAt(tau, table.Values(k)));
+                Offer(p, tau, sign * values[k]);
             }
         }
     }
@@ -133,12 +134,11 @@ public sealed class ExtremeSearch
                 continue;
             }
 
-            double upper;
-            var first = piece.ValueAt(table.Instants[k], table.Values(k));
-            var last = piece.ValueAt(table.Instants[k + 1], table.Values(k + 1));
-            upper = piece.UpperBound(
-                sign, table.Instants[k + 1] - table.Instants[k], table.Values(k), table.Values(k + 1),
-                table.Envelope(k), first, last);
+            var upper = piece is AccumulatedPiece
+                ? double.PositiveInfinity
+                : piece.UpperBetween(
+                    sign, table.Instants[k + 1] - table.Instants[k], table.Values(k), table.Values(k + 1),
+                    table.Envelope(k));
             if (upper > best + (Resolution * size))
             {
                 waiting.Enqueue(new Stretch(p, left, right, upper), (-upper, piece.Segment.Start + left));
@@ -155,8 +155,9 @@ public sealed class ExtremeSearch
         var half = (stretch.Until - stretch.From) / 2;
         var (value, slope, bend) = Derivatives(piece, middle, phi);
         Offer(stretch.Piece, middle, value);
-        basis.Envelope(stretch.From, stretch.Until, phi);
-        var (second, third) = piece.DerivativeBounds(phi);
+        var envelope = new double[basis.Width];
+        basis.Envelope(stretch.From, stretch.Until, envelope);
+        var (second, third) = piece.DerivativeBounds(envelope);
         var isMonotone = Math.Abs(slope) >= second * half;
         if (isMonotone || bend - (third * half) >= 0 || middle <= stretch.From || middle >= stretch.Until)
         {
@@ -169,7 +170,7 @@ public sealed class ExtremeSearch
             return;
         }
 
-        var upper = Math.Min(stretch.Upper, value + (Math.Abs(slope) * half) + (second * half * half / 2));
+        var upper = Math.Min(stretch.Upper, piece.UpperAround(sign, half, middle, phi, envelope));
         if (upper > best + (Resolution * size))
         {
             Push(stretch with { Until = middle, Upper = upper });

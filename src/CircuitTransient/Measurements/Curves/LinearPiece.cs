@@ -58,39 +58,53 @@ public sealed class LinearPiece : CurvePiece
         (Magnitude(c0, envelope), Magnitude(c1, envelope), Magnitude(c2, envelope), Magnitude(c3, envelope));
 
     /// <inheritdoc/>
-    public override double UpperBound(
+    public override double UpperBetween(
         double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
-            ReadOnlySpan<double> envelope,
-        double firstValue, double lastValue)
+        ReadOnlySpan<double> envelope)
     {
-        double slowFirst = 0, slowLast = 0, slack = 0;
+        var split = Split(width, first, last, envelope);
+        return Math
+            .Max(sign * split.First, sign * split.Last) + (width * width / 8 * split.Bend) + split.Fast;
+    }
+
+    /// <inheritdoc/>
+    public override double UpperAround(
+        double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope)
+    {
+        var split = Split(2 * half, middle, middle, envelope);
+        return (sign * split.First) + (half * Math
+            .Abs(split.Slope)) + (half * half / 2 * split.Bend) + split.Fast;
+    }
+
+    /// <summary>Parts the modes into slow ones, which a straight line follows better than their amplitude
+    /// bounds
+    /// them over the stretch, and fast ones.</summary>
+    internal SlowAndFast Split(
+        double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope)
+    {
+        var sum = default(SlowAndFast);
         var modes = Segment.Basis.Modes;
         for (var m = 0; m < modes.Length; m++)
         {
             var place = Segment.Basis.Place(m);
-            double amplitude = 0, bend = 0, start = 0, end = 0;
+            var isReal = modes[m].IsReal;
+            double amplitude = 0, rate = 0, bend = 0, start = 0, end = 0, slope = 0;
             for (var k = place; k < place + modes[m].Width; k++)
             {
-                amplitude += Pair(modes[m].IsReal, c0, k, place) * envelope[k];
-                bend += Pair(modes[m].IsReal, c2, k, place) * envelope[k];
+                amplitude += Pair(isReal, c0, k, place) * envelope[k];
+                rate += Pair(isReal, c1, k, place) * envelope[k];
+                bend += Pair(isReal, c2, k, place) * envelope[k];
                 start += c0[k] * first[k];
                 end += c0[k] * last[k];
+                slope += c1[k] * first[k];
             }
 
-            var curvature = width * width / 8 * bend;
-            if (curvature < amplitude)
-            {
-                slowFirst += start;
-                slowLast += end;
-                slack += curvature;
-            }
-            else
-            {
-                slack += amplitude;
-            }
+            sum = width * width / 8 * bend <= amplitude
+                ? sum.WithSlow(start, end, slope, amplitude, rate, bend)
+                : sum with { Fast = sum.Fast + amplitude };
         }
 
-        return Math.Max(sign * slowFirst, sign * slowLast) + slack;
+        return sum;
     }
 
     /// <summary>|Re c|, |Im c| of a complex function count together once, as the magnitude.</summary>

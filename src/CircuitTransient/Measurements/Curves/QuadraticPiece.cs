@@ -69,14 +69,51 @@ public sealed class QuadraticPiece(SegmentTable table, ImmutableArray<ProductTer
     }
 
     /// <inheritdoc/>
-    public override double UpperBound(
+    public override double UpperBetween(
         double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
-            ReadOnlySpan<double> envelope,
-        double firstValue, double lastValue)
+        ReadOnlySpan<double> envelope)
     {
-        var bounds = Bounds(envelope);
-        return Math.Min(
-            bounds.Value,
-            Math.Max(sign * firstValue, sign * lastValue) + (width * width / 8 * bounds.Second));
+        double start = 0, end = 0, bend = 0, fast = 0;
+        foreach (var (factor, a, b) in Splits(width, first, last, envelope))
+        {
+            start += factor * a.First * b.First;
+            end += factor * a.Last * b.Last;
+            bend += Math.Abs(factor) * ((a.Bend * b.Size) + (2 * a.Rate * b.Rate) + (a.Size * b.Bend));
+            fast += Math.Abs(factor) * ((a.Fast * (b.Size + b.Fast)) + (a.Size * b.Fast));
+        }
+
+        return Math.Max(sign * start, sign * end) + (width * width / 8 * bend) + fast;
+    }
+
+    /// <inheritdoc/>
+    public override double UpperAround(
+        double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope)
+    {
+        double value = 0, slope = 0, bend = 0, fast = 0;
+        foreach (var (factor, a, b) in Splits(2 * half, middle, middle, envelope))
+        {
+            value += factor * a.First * b.First;
+            slope += factor * ((a.Slope * b.First) + (a.First * b.Slope));
+            bend += Math.Abs(factor) * ((a.Bend * b.Size) + (2 * a.Rate * b.Rate) + (a.Size * b.Bend));
+            fast += Math.Abs(factor) * ((a.Fast * (b.Size + b.Fast)) + (a.Size * b.Fast));
+        }
+
+        return (sign * value) + (half * Math.Abs(slope)) + (half * half / 2 * bend) + fast;
+    }
+
+    private (double Factor, SlowAndFast First, SlowAndFast Second)[] Splits(
+        double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope)
+    {
+        var splits = new (double, SlowAndFast, SlowAndFast)[terms.Length];
+        for (var k = 0; k < splits.Length; k++)
+        {
+            var a = terms[k].First.Split(width, first, last, envelope);
+            var b = ReferenceEquals(terms[k].First, terms[k].Second)
+                ? a
+                : terms[k].Second.Split(width, first, last, envelope);
+            splits[k] = (terms[k].Factor, a, b);
+        }
+
+        return splits;
     }
 }

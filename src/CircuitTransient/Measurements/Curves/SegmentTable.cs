@@ -8,6 +8,7 @@ public sealed class SegmentTable
     private readonly double[] values;
     private readonly double[] envelopes;
     private readonly int width;
+    private readonly Lazy<(int[] Starts, double[] Weights, double[] Values)> nodes;
 
     /// <summary>Tabulates a segment.</summary>
     public SegmentTable(Segment segment)
@@ -22,10 +23,48 @@ public sealed class SegmentTable
             segment.Basis.Evaluate(Instants[k], values.AsSpan(k * width, width));
         }
 
+        nodes = new(PlaceNodes);
         for (var k = 0; k + 1 < Instants.Length; k++)
         {
             segment.Basis.Envelope(Instants[k], Instants[k + 1], envelopes.AsSpan(k * width, width));
         }
+    }
+
+    /// <summary>The integral of a curve from each tabulated instant to the next.</summary>
+    internal double IntegralBetween(CurvePiece curve, int k)
+    {
+        var (starts, weights, phi) = nodes.Value;
+        double sum = 0;
+        for (var n = starts[k]; n < starts[k + 1]; n++)
+        {
+            sum += weights[n] * curve.ValueAt(0, phi.AsSpan(n * width, width));
+        }
+
+        return sum;
+    }
+
+    private (int[] Starts, double[] Weights, double[] Values) PlaceNodes()
+    {
+        var starts = new int[Instants.Length];
+        var instants = new List<double>();
+        var weights = new List<double>();
+        for (var k = 0; k + 1 < Instants.Length; k++)
+        {
+            Quadrature.Visit(Segment.Basis, Instants[k], Instants[k + 1], (tau, weight) =>
+            {
+                instants.Add(tau);
+                weights.Add(weight);
+            });
+            starts[k + 1] = instants.Count;
+        }
+
+        var phi = new double[instants.Count * width];
+        for (var n = 0; n < instants.Count; n++)
+        {
+            Segment.Basis.Evaluate(instants[n], phi.AsSpan(n * width, width));
+        }
+
+        return (starts, [.. weights], phi);
     }
 
     /// <summary>The segment.</summary>
