@@ -41,7 +41,10 @@ internal static class DependentSources
         return new DependentSource(product == Dimension.Voltage, parameter!.Value.AsQuantity,
             control.Quantity)
         {
-            Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
+            Name = part.Name,
+            From = part.From,
+            To = part.To,
+            Span = syntax.Span,
         };
     }
 }

@@ -36,15 +36,24 @@ internal static class PartLowering
         {
             SimplePartKind.Resistor => new Resistor(own)
             {
-                Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
+                Name = part.Name,
+                From = part.From,
+                To = part.To,
+                Span = syntax.Span,
             },
             SimplePartKind.Capacitor => new Capacitor(own, stored)
             {
-                Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
+                Name = part.Name,
+                From = part.From,
+                To = part.To,
+                Span = syntax.Span,
             },
             _ => new Inductor(own, stored)
             {
-                Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
+                Name = part.Name,
+                From = part.From,
+                To = part.To,
+                Span = syntax.Span,
             },
         };
     }
@@ -79,11 +88,17 @@ internal static class PartLowering
         return lowered.IsVoltage
             ? new VoltageSource(lowered.Wave)
             {
-                Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
+                Name = part.Name,
+                From = part.From,
+                To = part.To,
+                Span = syntax.Span,
             }
             : new CurrentSource(lowered.Wave)
             {
-                Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
+                Name = part.Name,
+                From = part.From,
+                To = part.To,
+                Span = syntax.Span,
             };
     }
 
@@ -107,7 +122,10 @@ internal static class PartLowering
         return primary is { } p && secondary is { } s
             ? new IdealTransformer(part.SecondaryFrom, part.SecondaryTo, p / s)
             {
-                Name = part.Name, From = part.From, To = part.To, Span = syntax.Span,
+                Name = part.Name,
+                From = part.From,
+                To = part.To,
+                Span = syntax.Span,
             }
             : null;
     }

@@ -21,8 +21,11 @@ public static class Schedule
 
             if (steps > parts.Count || parts[after.Part] is not Switch waited
                 || after.Event >= waited.Events.Length
-                || waited.Events[after.Event] is not { CutAtMost: null,
-                    Trigger: AtInstant { Instant: var earlier } })
+                || waited.Events[after.Event] is not
+                {
+                    CutAtMost: null,
+                    Trigger: AtInstant { Instant: var earlier }
+                })
             {
                 return null;
             }

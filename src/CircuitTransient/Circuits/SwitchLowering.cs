@@ -47,7 +47,10 @@ internal static class SwitchLowering
         return isGood
             ? new Switch(syntax.IsClosed, closed, open, events.ToImmutable())
             {
-                Name = part.Name, From = part.From, To = part.To, Span = part.Statement.Span,
+                Name = part.Name,
+                From = part.From,
+                To = part.To,
+                Span = part.Statement.Span,
             }
             : null;
     }

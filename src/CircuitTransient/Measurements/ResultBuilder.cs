@@ -75,8 +75,12 @@ public static class ResultBuilder
         {
             if (curves.IsEmpty)
             {
-                filled.Add(result with { Total = blank, ByCause =
-                    [.. result.Contributions.Select(_ => blank)] });
+                filled.Add(result with
+                {
+                    Total = blank,
+                    ByCause =
+                    [.. result.Contributions.Select(_ => blank)]
+                });
                 continue;
             }
 

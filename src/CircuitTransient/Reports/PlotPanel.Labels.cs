@@ -210,9 +210,12 @@ internal sealed partial class PlotPanel
         foreach (var (x, text, y) in eventLabels)
         {
             shapes.Add(new LineShape(x, y + 3, x, PlotBottom, new Stroke(PlotStyle.Axis, 1, [2, 3])));
-            var width = fonts.Width(text, Small);
-            var start = Math.Clamp(x - (width / 2), Left, Right - width);
-            shapes.Add(new TextShape(start, y, text, Small, PlotStyle.Grey));
+            if (text.Length > 0)
+            {
+                var width = fonts.Width(text, Small);
+                var start = Math.Clamp(x - (width / 2), Left, Right - width);
+                shapes.Add(new TextShape(start, y, text, Small, PlotStyle.Grey));
+            }
         }
     }
 }

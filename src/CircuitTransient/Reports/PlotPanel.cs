@@ -80,7 +80,11 @@ internal sealed partial class PlotPanel
             1 => "1 smaller cause not drawn",
             _ => $"{hidden} smaller causes not drawn",
         };
-        shapes.Add(new TextShape(Right, y, note, Small, PlotStyle.Grey, TextAnchor.End));
+        if (note.Length > 0)
+        {
+            shapes.Add(new TextShape(Right, y, note, Small, PlotStyle.Grey, TextAnchor.End));
+        }
+
         title = fonts.Fitted(title, 14, Right - Left - fonts.Width(note, Small) - 20, isStrong: true);
         shapes.Add(new TextShape(Left, y, title, 14, PlotStyle.Ink, IsStrong: true));
     }

@@ -53,7 +53,7 @@ internal static class PlotTrace
         double columnsPerPoint)
     {
         var thinned = ImmutableArray.CreateBuilder<PlotPoint>();
-        for (var first = 0; first < points.Length; )
+        for (var first = 0; first < points.Length;)
         {
             var column = Math.Floor(points[first].X * columnsPerPoint);
             var (end, least, greatest) = (first + 1, first, first);

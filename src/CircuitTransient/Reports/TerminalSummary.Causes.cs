@@ -26,7 +26,7 @@ public static partial class TerminalSummary
         WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without");
         if (DecidedByAnswer(result) is { } decided)
         {
-            text.Paragraph($"instants of the full answer kept: {decided}", hanging: 2);
+            text.Paragraph($"instants of the full answer kept for {decided}", hanging: 2);
         }
 
         if (worst.Since is { } since)
@@ -156,7 +156,7 @@ public static partial class TerminalSummary
             .Where(s => s.Events.Any(e => e.CutAtMost is not null || e.Trigger is WhenCrosses))
             .Select(s => s.Name)
             .ToArray();
-        return decided.Length == 0 ? null : $"{string.Join(", ", decided)} act where the full answer says";
+        return decided.Length == 0 ? null : string.Join(", ", decided);
     }
 
     private static string Signed(double? value, string unit) =>

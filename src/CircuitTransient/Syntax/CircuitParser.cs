@@ -9,8 +9,11 @@ public static class CircuitParser
     /// <summary>The most mistakes gathered; a text with more is no circuit, and reading stops.</summary>
     public const int MostErrors = 1000;
 
-    /// <summary>The most statements read: bounds memory at some 200 MB.</summary>
+    /// <summary>The most statements read; with <see cref="MostTokens"/> it bounds memory at 300 MB.</summary>
     public const int MostStatements = 250_000;
+
+    /// <summary>The most words and signs read.</summary>
+    public const int MostTokens = 3_000_000;
 
     /// <summary>Reads a circuit; without a value where any statement could not be read.</summary>
     public static Outcome<CircuitSyntax> Parse(SourceText source)
@@ -22,14 +25,14 @@ public static class CircuitParser
 
     /// <summary>Reads every statement that can be read, and says what is wrong with the others, which are
     /// kept as <see cref="UnreadableStatement"/>.</summary>
-    public static (CircuitSyntax Syntax,
-        ImmutableArray<Diagnostic> Diagnostics) ParseWhatCanBe(SourceText source)
+    public static (CircuitSyntax Syntax, ImmutableArray<Diagnostic> Diagnostics) ParseWhatCanBe(
+        SourceText source)
     {
         var diagnostics = new List<Diagnostic>();
         var lexer = new StatementLexer(source);
         var blocks = new BlockStack(source, diagnostics);
         var tokens = new List<Token>();
-        var count = 0;
+        var (count, words) = (0, 0);
         while (lexer.Next(tokens))
         {
             var cursor = new StatementCursor(source, tokens, diagnostics);
@@ -48,9 +51,18 @@ public static class CircuitParser
                 blocks.Add(lexer.IsCut ? StatementParser.Unreadable(cursor) : StatementParser.Read(cursor));
             }
 
-            if (++count > MostStatements || diagnostics.Count >= MostErrors || blocks.IsTooDeep)
+            words += tokens.Count;
+            if (++count > MostStatements || words > MostTokens)
             {
-                ReportStop(cursor, count);
+                cursor.Error(new TextSpan(cursor.LastEnd, 0), count > MostStatements
+                    ? "the file has more than 250 000 statements"
+                    : "the file has more than three million words and signs",
+                    "write what repeats with `repeat`");
+                break;
+            }
+
+            if (diagnostics.Count >= MostErrors || blocks.IsTooDeep)
+            {
                 break;
             }
 
@@ -58,14 +70,5 @@ public static class CircuitParser
         }
 
         return (new CircuitSyntax(source, blocks.Finish()), [.. diagnostics]);
-    }
-
-    private static void ReportStop(StatementCursor cursor, int count)
-    {
-        if (count > MostStatements)
-        {
-            cursor.Error(new TextSpan(cursor.LastEnd, 0), "the file has more than 250 000 statements",
-                "write what repeats with `repeat`");
-        }
     }
 }

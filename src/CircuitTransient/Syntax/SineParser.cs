@@ -56,12 +56,12 @@ internal static class SineParser
 
     private static bool IsGiven(SineSyntax sine, StatementCursor cursor) =>
         cursor.TextOf(cursor.Current) switch
-    {
-        "phase" => sine.Phase is not null,
-        "from" => sine.From is not null,
-        "until" => sine.Until is not null,
-        _ => sine.TimeConstant is not null,
-    };
+        {
+            "phase" => sine.Phase is not null,
+            "from" => sine.From is not null,
+            "until" => sine.Until is not null,
+            _ => sine.TimeConstant is not null,
+        };
 
     private static SineSyntax? ReadOption(StatementCursor cursor, SineSyntax sine)
     {

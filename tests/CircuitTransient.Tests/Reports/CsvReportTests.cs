@@ -52,7 +52,8 @@ public class CsvReportTests
         var result = SampleResults.Bare();
         var observation = result.Observations[0] with
         {
-            Total = [double.NaN, 5], ByCause = [[double.NaN, 5]],
+            Total = [double.NaN, 5],
+            ByCause = [[double.NaN, 5]],
         };
         Assert.Equal(
             "time (s),voltage of a (V),voltage of a from Feed (V)\r\n0,,\r\n1,5,5\r\n",

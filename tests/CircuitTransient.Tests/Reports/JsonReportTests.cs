@@ -46,7 +46,9 @@ public class JsonReportTests
         var result = SampleResults.Bare();
         var observation = result.Observations[0] with
         {
-            Start = double.NaN, End = double.PositiveInfinity, Final = null,
+            Start = double.NaN,
+            End = double.PositiveInfinity,
+            Final = null,
         };
         var text = JsonReport.Write(result with { Observations = [observation] });
         using var document = JsonDocument.Parse(text);

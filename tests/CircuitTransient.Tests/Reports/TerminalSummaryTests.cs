@@ -1,3 +1,4 @@
+using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports;
 
@@ -145,5 +146,30 @@ public class TerminalSummaryTests
         var result = SampleResults.Bare() with { Events = [new(0, "KB", true, 5, 0, 0, 0, null)] };
         Assert.Equal("298.0 µs after KB closes", InstantWords.At(result, 298e-6));
         Assert.Equal("just before KB closes", InstantWords.At(result, 0, InstantSide.Before));
+    }
+
+    [Fact]
+    public void Switches_that_the_answer_decides_are_said_to_keep_their_instants()
+    {
+        var result = SampleResults.Inrush();
+        var breaker = new Switch(true, null, null, [new(false, new AtInstant(new(0.01, null)), 0, new(0, 0))])
+        {
+            Name = "Q1", From = 1, To = 2, Span = new(0, 0),
+        };
+        var circuit = result.Circuit with { Parts = result.Circuit.Parts.Add(breaker) };
+        var text = TerminalSummary.Write(result with { Circuit = circuit }, []);
+        Assert.Contains("  instants of the full answer kept for Q1\n", text);
+    }
+
+    [Fact]
+    public void Very_many_causes_are_summed_up()
+    {
+        var result = SampleResults.Bare();
+        var names = Enumerable.Range(1, 20).Select(i => $"S[{i}]").ToArray();
+        var waves = Enumerable.Range(1, 20).Select(i => (Func<double, double>)(_ => i)).ToArray();
+        var sum = SampleResults.Observed("voltage of a", "V", result.SampleTimes, [.. names], [.. waves]);
+        var lines = TerminalSummary.Write(result with { Observations = [sum] }, []).Split('\n');
+        // 210 V in all; the eleven largest are 20 to 10, which leaves 9 + 8 + … + 1 = 45.
+        Assert.Contains("    9 smaller ones  +45.00 V  21.4 %", lines);
     }
 }

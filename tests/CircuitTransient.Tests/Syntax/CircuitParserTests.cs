@@ -120,6 +120,8 @@ public class CircuitParserTests
     [InlineData("repeat 2 as k\n", "blocks are nested deeper than 200")]
     [InlineData("(1 s,1 V)", "the statement has more than two million words and signs")]
     [InlineData("until 1 s\n", "the file has more than 250 000 statements")]
+    [InlineData("value x : 1 + 1 + 1 + 1 + 1 + 1 + 1 + 1 + 1 + 1\n",
+        "the file has more than three million words and signs")]
     public void Sixteen_mebibytes_of_noise_take_bounded_time(string piece, string message)
     {
         var text = new SourceText("a.cause", string.Concat(Enumerable.Repeat(piece,

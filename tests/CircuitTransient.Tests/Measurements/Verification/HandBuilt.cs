@@ -30,19 +30,28 @@ internal sealed class HandBuilt
         Add(new Switch(
             false, closedOhms is { } r ? r : (Quantity?)null, openOhms is { } gap ? gap : null, [])
         {
-            Name = "", From = from, To = to, Span = default,
+            Name = "",
+            From = from,
+            To = to,
+            Span = default,
         });
 
     public int Dependent(int from, int to, bool setsVoltage, double gain, Measurand control) =>
         Add(new DependentSource(setsVoltage, gain, control)
         {
-            Name = "", From = from, To = to, Span = default,
+            Name = "",
+            From = from,
+            To = to,
+            Span = default,
         });
 
     public int Transformer(int from, int to, int secondaryFrom, int secondaryTo, double ratio) =>
         Add(new IdealTransformer(secondaryFrom, secondaryTo, ratio)
         {
-            Name = "", From = from, To = to, Span = default,
+            Name = "",
+            From = from,
+            To = to,
+            Span = default,
         });
 
     public void Couple(int first, int second, double factor) =>
