@@ -72,7 +72,7 @@ internal sealed record PlotLimit(double Value, double From, double To, string Wo
     }
 
     // An event that never came has no instant: the limit is then drawn from the start to the end.
-    private static double? Seconds(TransientResult result, Instant? instant)
+    internal static double? Seconds(TransientResult result, Instant? instant)
     {
         if (instant?.After is not { } reference)
         {
