@@ -16,9 +16,9 @@ internal static class SampleTimes
     public static ImmutableArray<double> Of(TransientSolution solution, int count, IEnumerable<double> extra)
     {
         double coarse = 0.5; // of the fastest living time constant; the number of steps is nearly its inverse
-        for (var k = 0; k < 3; k++)
+        for (var k = 0; k < 6; k++)
         {
-            coarse = Math.Clamp(coarse * Count(solution, coarse, count) / count, 1e-6, 4);
+            coarse = Math.Max(coarse * Count(solution, coarse, count) / count, 1e-6);
         }
 
         var times = new List<double>();
@@ -26,7 +26,7 @@ internal static class SampleTimes
         foreach (var segment in solution.Segments)
         {
             var inner = new SortedSet<double>(
-                Steps(solution, segment, coarse, count).Select(tau => segment.Start + tau));
+                Steps(segment, coarse, count).Select(tau => segment.Start + tau));
             inner.UnionWith(wanted.GetViewBetween(segment.Start, segment.End));
             inner.Add(segment.Start);
             inner.Add(segment.End);
@@ -37,11 +37,10 @@ internal static class SampleTimes
     }
 
     private static int Count(TransientSolution solution, double fraction, int count) =>
-        solution.Segments.Sum(s => Steps(solution, s, fraction, count).Length);
+        solution.Segments.Sum(s => Steps(s, fraction, count).Length);
 
-    /// <summary>A segment's share of a limited number is by its count, not its length: a short inrush gets
-    /// its due.</summary>
-    private static double[] Steps(TransientSolution solution, Segment segment, double fraction, int count) =>
-        SamplingSteps
-            .Of(segment.Basis, segment.Length, fraction, Math.Max(2, count / solution.Segments.Length));
+    // The fraction is what keeps to the count. The limit only guards against endless ringing; were it near the
+    // count, it would spread the samples evenly and leave a short inrush in a long study without its due.
+    private static double[] Steps(Segment segment, double fraction, int count) =>
+        SamplingSteps.Of(segment.Basis, segment.Length, fraction, 100 * count);
 }
