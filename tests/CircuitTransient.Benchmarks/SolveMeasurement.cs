@@ -29,7 +29,8 @@ internal static class SolveMeasurement
     private static string Spread(IEnumerable<double> milliseconds)
     {
         var sorted = milliseconds.Order().ToArray();
-        return $"{sorted[sorted.Length / 2]:F1} ms, {sorted[0]:F1} to {sorted[^1]:F1} ms in {sorted.Length} runs";
+        var median = sorted[sorted.Length / 2];
+        return $"{median:F1} ms, {sorted[0]:F1} to {sorted[^1]:F1} ms in {sorted.Length} runs";
     }
 
     private static double Analyse(SourceText source)

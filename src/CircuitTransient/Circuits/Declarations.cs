@@ -50,15 +50,15 @@ internal static class Declarations
         CheckState state, Statement statement, NameSyntax name, TerminalsSyntax terminals, Scope scope,
         TerminalsSyntax? secondary = null)
     {
-        var from = state.Nodes.At(terminals.From, scope);
-        var to = To(state, terminals, scope);
         var full = scope.Full(name, state.Findings);
+        var from = state.Nodes.At(terminals.From, scope, full);
+        var to = To(state, terminals, scope, full);
         CheckEnds(state, full, terminals, from, to);
         var (secondaryFrom, secondaryTo) = (-1, -1);
         if (secondary is not null)
         {
-            secondaryFrom = state.Nodes.At(secondary.From, scope);
-            secondaryTo = To(state, secondary, scope);
+            secondaryFrom = state.Nodes.At(secondary.From, scope, full);
+            secondaryTo = To(state, secondary, scope, full);
             CheckEnds(state, full, secondary, secondaryFrom, secondaryTo);
         }
 
@@ -71,8 +71,8 @@ internal static class Declarations
         }
     }
 
-    private static int To(CheckState state, TerminalsSyntax terminals, Scope scope) =>
-        terminals.To is { } to ? state.Nodes.At(to, scope) : state.Nodes.AtReference();
+    private static int To(CheckState state, TerminalsSyntax terminals, Scope scope, string part) =>
+        terminals.To is { } to ? state.Nodes.At(to, scope, part) : state.Nodes.AtReference();
 
     private static void CheckEnds(CheckState state, string part, TerminalsSyntax terminals, int from, int to)
     {

@@ -33,7 +33,8 @@ internal sealed class Findings(SourceText source)
 
     public int LineOf(TextSpan span) => source.LineOf(span.Start);
 
-    public bool IsNew(TextSpan span) => !places.Contains((source, span, Severity.Error));
+    public bool IsNew(TextSpan span, Severity severity = Severity.Error) =>
+        !places.Contains((source, span, severity));
 
     public void Error(TextSpan span, string message, string? advice = null) =>
         Add(Diagnostic.Error(source, span, message, advice));

@@ -7,6 +7,7 @@ namespace CircuitTransient.Circuits;
 internal static class Islands
 {
     private const int MostNamed = 4;
+    private const int MostCompared = 20; // comparing every name with every other would take minutes
 
     public static void Check(CheckState state, TextSpan referenceSpan)
     {
@@ -62,18 +63,18 @@ internal static class Islands
 
     private static void CheckLoneNodes(CheckState state)
     {
+        var told = 0;
         for (var node = 1; node < state.Nodes.Count; node++)
         {
             var touch = state.Nodes.TouchOf(node);
-            if (touch.Count != 1)
+            if (touch.Count != 1 || !state.Findings.IsNew(touch.Span, Severity.Warning))
             {
                 continue;
             }
 
-            var only = state.Declared.First(p =>
-                p.From == node || p.To == node || p.SecondaryFrom == node || p.SecondaryTo == node);
-            var nearest = state.Nodes.NearestTo(node);
-            state.Findings.Warn(touch.Span, $"only `{only.Name}` touches the node `{state.Nodes[node]}`",
+            var only = state.Nodes.TouchOf(node).FirstPart;
+            var nearest = ++told <= MostCompared ? state.Nodes.NearestTo(node) : null;
+            state.Findings.Warn(touch.Span, $"only `{only}` touches the node `{state.Nodes[node]}`",
                 nearest is null ? "join another part to it, unless it is meant to hang open"
                     : $"did you mean `{nearest}`?");
         }

@@ -70,7 +70,7 @@ public sealed record Window(Instant? From, Instant? To);
 
 /// <summary>Something to observe.</summary>
 /// <param name="Name">The label, or the quantity's own name.</param>
-/// <param name="Unit">Unit of the value in SI: V, A, W, J, A²s, V/s, A/s, s, Hz, % .</param>
+/// <param name="Unit">Unit of the value in SI: V, A, W, J, A²s, V/s, A/s, s, Hz; % in per cent.</param>
 public sealed record Observation(string Name, string Unit, Measurand Quantity, Window Window, TextSpan Span);
 
 /// <summary>Something required.</summary>
@@ -86,7 +86,9 @@ public sealed record Requirement(
 /// <summary>The bound of a requirement.</summary>
 public abstract record Bound;
 
-/// <summary>Limits on the value, each null where open; a bound in magnitude has both.</summary>
+/// <summary>Limits on the value in the quantity's unit (an overshoot's in per cent), each null where open; a
+/// bound in
+/// magnitude has both.</summary>
 public sealed record Limits(double? Lower, double? Upper) : Bound;
 
 /// <summary>From <paramref name="By"/> on, the quantity stays within a fraction of the target.</summary>

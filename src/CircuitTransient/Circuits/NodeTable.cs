@@ -28,18 +28,18 @@ internal sealed class NodeTable
 
     public string this[int index] => names.Names[index];
 
-    /// <summary>How many terminals touch a node, and where it was first named.</summary>
+    /// <summary>How many terminals touch a node, where it was first named and by which part.</summary>
     public Touch TouchOf(int node) => touches[node];
 
     /// <summary>The node a terminal touches; a name not seen before makes a node.</summary>
-    public int At(NameSyntax name, Scope scope)
+    public int At(NameSyntax name, Scope scope, string part)
     {
         var full = scope.Node(name, findings);
         if (!names.TryGet(full, out var index) && !names.TryGetAnyCase(full, name.Span, out index))
         {
             index = touches.Count;
             names.Declare(full, name.Span, index);
-            touches.Add(new Touch(0, name.Span));
+            touches.Add(new Touch(0, name.Span, part));
         }
 
         touches[index] = touches[index] with { Count = touches[index].Count + 1 };
@@ -57,8 +57,10 @@ internal sealed class NodeTable
     public int? Find(NameSyntax name, Scope scope) =>
         names.Find(scope.Node(name, findings), name.Span, out var index) ? index : null;
 
-    /// <summary>The node nearest in name to another, or null.</summary>
-    public string? NearestTo(int node) => NearestName.Find(this[node], names.Names);
+    /// <summary>The node nearest in name to another, or null; a node that hangs loose itself is
+    /// none.</summary>
+    public string? NearestTo(int node) =>
+        NearestName.Find(this[node], names.Names.Where((_, other) => touches[other].Count > 1));
 
-    internal sealed record Touch(int Count, TextSpan Span);
+    internal sealed record Touch(int Count, TextSpan Span, string FirstPart = "");
 }

@@ -15,50 +15,78 @@ internal static class SwitchOrder
         }
     }
 
-    // Events that wait for each other in a ring, or for a later event of their own switch.
+    // An event waits for the one it is counted from and for the one before it on its own switch. A ring of
+    // such
+    // waits is found by walking each event once; the switches in rings are returned.
     private static HashSet<int> ReportRings(CheckState state)
     {
-        var reported = new HashSet<EventReference>();
+        var ringed = new HashSet<int>();
+        var done = new HashSet<EventReference>();
         for (var index = 0; index < state.Parts.Length; index++)
         {
             for (var e = 0; state.Parts[index] is Switch s && e < s.Events.Length; e++)
             {
-                ReportRing(state, new EventReference(index, e), reported);
+                Walk(state, new EventReference(index, e), done, ringed);
             }
         }
 
-        return [.. reported.Select(r => r.Part)];
+        return ringed;
     }
 
-    private static void ReportRing(CheckState state, EventReference start, HashSet<EventReference> reported)
+    private static void Walk(
+        CheckState state, EventReference start, HashSet<EventReference> done, HashSet<int> ringed)
     {
-        var path = new List<EventReference> { start };
-        for (var next = Awaited(state, start); next is not null; next = Awaited(state, next))
+        var path = new List<EventReference>();
+        var places = new Dictionary<EventReference, int>();
+        var waiting = new Stack<(EventReference Event, int Depth)>([(start, 0)]);
+        while (waiting.TryPop(out var next))
         {
-            var isLater = next.Part == start.Part && next.Event >= start.Event;
-            if (isLater && !reported.Overlaps(path))
+            foreach (var left in path.Skip(next.Depth))
             {
-                var names = string.Join(" → ", path.Append(next).Select(r => Words(state, r)));
-                state.Findings.Error(((Switch)state.Parts[start.Part]!).Events[start.Event].Span,
-                    next == start ? $"`{Words(state, start)}` waits for itself: {names}"
-                        : $"`{Words(state, start)}` waits for its own later event: {names}",
-                    "give one of these events a time");
-                reported.UnionWith(path);
+                places.Remove(left);
+                done.Add(left);
             }
 
-            if (isLater || path.Contains(next))
+            path.RemoveRange(next.Depth, path.Count - next.Depth);
+            if (places.TryGetValue(next.Event, out var at))
             {
-                return;
+                Report(state, path[at..]);
+                ringed.UnionWith(path[at..].Select(r => r.Part));
             }
-
-            path.Add(next);
+            else if (!done.Contains(next.Event))
+            {
+                places.Add(next.Event, path.Count);
+                path.Add(next.Event);
+                foreach (var awaited in Awaited(state, next.Event))
+                {
+                    waiting.Push((awaited, path.Count));
+                }
+            }
         }
+
+        done.UnionWith(path);
     }
 
-    private static EventReference? Awaited(CheckState state, EventReference of) =>
-        state.Parts[of.Part] is Switch s && s.Events[of.Event]
-            .Trigger is AtInstant { Instant.After: var after }
-            ? after : null;
+    private static void Report(CheckState state, List<EventReference> ring)
+    {
+        var names = string.Join(" → ", ring.Append(ring[0]).Select(r => Words(state, r)));
+        state.Findings.Error(((Switch)state.Parts[ring[0].Part]!).Events[ring[0].Event].Span,
+            $"`{Words(state, ring[0])}` waits for itself: {names}", "give one of these events a time");
+    }
+
+    private static IEnumerable<EventReference> Awaited(CheckState state, EventReference of)
+    {
+        if (of.Event > 0)
+        {
+            yield return of with { Event = of.Event - 1 };
+        }
+
+        if (state.Parts[of.Part] is Switch s && of.Event < s.Events.Length
+            && s.Events[of.Event].Trigger is AtInstant { Instant.After: { } after })
+        {
+            yield return after;
+        }
+    }
 
     private static string Words(CheckState state, EventReference of) =>
         Instants.Words(state, new Instant(0, of))["when ".Length..];

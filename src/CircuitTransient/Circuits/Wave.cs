@@ -4,13 +4,16 @@ namespace CircuitTransient.Circuits;
 
 /// <summary>A source's value over time: the sum of its pieces.</summary>
 /// <param name="Pieces">In the order written; a pulse is a rise and a delayed fall.</param>
-/// <param name="Scale">A factor on the whole wave that carries the tolerance of a constant source; nominally
-/// 1.</param>
+/// <param name="Scale">A factor on the whole wave that carries what its level follows from; nominally 1, or 0
+/// where the
+/// level is zero and the pieces are those of a level of 1.</param>
 public sealed record Wave(ImmutableArray<WavePiece> Pieces, Quantity Scale);
 
 /// <summary>One piece of a wave: (A + S·τ)·e^(−d·τ)·cos(ω·τ + φ) with τ = t − Start, for Start ≤ t &lt; End;
 /// zero elsewhere.
-/// A step, a corner, a sine, a decay are all of this form.</summary>
+/// A step, a corner, a sine, a decay are all of this form. Ramps and straight lines are stretches with an end
+/// each,
+/// then the last value held: sums of unending ramps would lose digits long after the corner.</summary>
 /// <param name="Start">In seconds; negative infinity is not allowed, see
 /// <paramref name="IsPerpetual"/>.</param>
 /// <param name="End">In seconds; positive infinity where it never ends.</param>

@@ -8,8 +8,8 @@ namespace CircuitTransient.Circuits;
 internal static class WaveLowering
 {
     /// <summary>The wave and what it is in, or null where an error was reported.</summary>
-    public static (Wave Wave, bool IsVoltage)? Lower(CheckState state, PartDeclaration part,
-        WaveSyntax syntax)
+    public static (Wave Wave, bool IsVoltage)? Lower(
+        CheckState state, PartDeclaration part, WaveSyntax syntax)
     {
         var pieces = ImmutableArray.CreateBuilder<WavePiece>();
         Dimension? dimension = null;
@@ -17,7 +17,8 @@ internal static class WaveLowering
         var isGood = true;
         foreach (var term in syntax.Terms)
         {
-            var lowering = new WaveTermLowering(state, part.Scope, dimension, term.IsSubtracted);
+            var lowering = new WaveTermLowering(
+                state, part.Scope, dimension, term.IsSubtracted, syntax.Terms.Length == 1);
             var lowered = lowering.Lower(term.Piece);
             isGood &= lowered is not null;
             dimension ??= lowering.Dimension;
@@ -56,22 +57,16 @@ internal static class WaveLowering
             return (1, true);
         }
 
-        if (nominal.Value == 0)
-        {
-            if (syntax.Tolerance is { } onZero)
-            {
-                state.Findings.Error(onZero.Span, "a source of zero has nothing a tolerance could scale",
-                    "give its largest value and a tolerance down to zero, such as `1 V -100 % +0 %`");
-            }
-
-            return (1, syntax.Tolerance is null);
-        }
-
         var value = new ToleratedSyntax(WaveTermLowering.LevelOf(syntax.Terms[0].Piece)!, syntax.Tolerance);
         var applied = Tolerances.Apply(nominal, value, part.Scope, state.Evaluator, state.Findings,
             state.Parameters, part.Name, part.NameSyntax.Span);
-        return applied is { } a
-            ? (new Quantity(1, new BinaryFormula('/', a.AsFormula, new NumberFormula(nominal.Value))), true)
-            : (1, false);
+        if (applied is not { } a)
+        {
+            return (1, false);
+        }
+
+        return nominal.Value == 0
+            ? (new Quantity(0, a.Formula), true)
+            : (new Quantity(1, new BinaryFormula('/', a.AsFormula, new NumberFormula(nominal.Value))), true);
     }
 }

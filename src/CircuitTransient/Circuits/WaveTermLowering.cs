@@ -9,7 +9,10 @@ namespace CircuitTransient.Circuits;
 /// <param name="scope">Where the source stands.</param>
 /// <param name="expected">The dimension the terms before it have, or null.</param>
 /// <param name="isSubtracted">Whether the term is taken off.</param>
-internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension? expected, bool isSubtracted)
+/// <param name="isOnlyTerm">Whether it is the whole wave: then a level of zero is left to the wave's
+/// scale.</param>
+internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension? expected, bool isSubtracted,
+    bool isOnlyTerm)
 {
     private const int MostEdges = 100_000;
 
@@ -62,7 +65,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
     }
 
     /// <summary>Signed level, in volts or amperes.</summary>
-    private double? ReadLevel(ExpressionSyntax expression)
+    private double? ReadLevel(ExpressionSyntax expression, bool isPoint = false)
     {
         if (state.Evaluator.Evaluate(expression, scope) is not { } value
             || !Fits(expression, value.Dimension))
@@ -72,7 +75,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
 
         var sign = isSubtracted ? -1 : 1;
         Level = value;
-        return sign * value.Value;
+        return sign * (isOnlyTerm && !isPoint && value.Value == 0 ? 1 : value.Value);
     }
 
     private bool Fits(ExpressionSyntax expression, Dimension found)
@@ -185,7 +188,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         foreach (var point in lines.Points)
         {
             var time = Expected.Fixed(state, point.Time, scope, Text.Dimension.Time);
-            var level = ReadLevel(point.Level);
+            var level = ReadLevel(point.Level, isPoint: true);
             if (level is not null && Level is { } value)
             {
                 Expected.Fixed(state, point.Level, value);

@@ -31,6 +31,9 @@ public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleCompl
         return schur;
     }
 
+    /// <summary>A copy, to be reordered by itself.</summary>
+    public ComplexSchur Copy() => new(T.Copy(), Vectors.Copy());
+
     /// <summary>Exchanges the neighbours k and k + 1 on the diagonal. Equal ones are exchanged only where
     /// their coupling is at most <paramref name="negligible"/>; a chain of equal poles has no other
     /// order.</summary>

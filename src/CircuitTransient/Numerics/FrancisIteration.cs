@@ -7,11 +7,15 @@ public static class FrancisIteration
 {
     private const double UnitRoundoff = 2.465190328815662e-32; // 2⁻¹⁰⁵
     private const double Tiny = 1e-290; // below any entry that a balanced matrix can mean
-    private const int StepsAnEigenvalue = 120; // two to four are usual
-    // then an entry is judged by its neighbours only, no longer by their gap
+    // two to four are usual, a hundred with dozens of equal chains
+    private const int StepsAnEigenvalue = 1000;
+
+    // Many equal chains of poles make the iteration wander just above rounding. So after this many steps an
+    // entry is judged by its neighbours only, no longer by their gap; then by the norm; then by n times the
+    // norm, which is what the reduction's own rounding comes to.
     private const int StrictSteps = 15;
-    // then by the norm, as backward stability allows; chains of equal poles need it
     private const int LocalSteps = 30;
+    private const int NormSteps = 60;
 
     /// <summary>Overwrites the Hessenberg matrix H with its Schur form T (blocks of order two only for
     /// complex pairs), and the rows of <paramref name="qt"/> with the rotations applied to them.</summary>
@@ -24,7 +28,8 @@ public static class FrancisIteration
         int steps = 0;
         while (last >= 0)
         {
-            int first = FirstOfWindow(h, last, steps > LocalSteps ? norm : 0, steps <= StrictSteps);
+            double floor = steps > NormSteps ? h.Rows * norm : steps > LocalSteps ? norm : 0;
+            int first = FirstOfWindow(h, last, floor, steps <= StrictSteps);
             if (first >= last - 1)
             {
                 if (first == last - 1)

@@ -6,17 +6,18 @@ namespace CircuitTransient.Numerics;
 /// left.</summary>
 internal sealed class PoleClusters
 {
-    /// <summary>A projector norm up to this loses three digits of a double, which double-double leaves to
-    /// spare.
-    /// </summary>
-    public const double ModestProjector = 1e3;
+    /// <summary>Beyond so many poles each instant of a block costs more than the digits are worth.</summary>
+    public const int LargeBlock = 12;
 
-    // poles of moduli farther apart than this are never merged for condition
-    private const double FarthestRatio = 3;
+    // costs three digits of a double, and double-double has them to spare
+    private const double ModestProjector = 1e3;
+    private const double BearableProjector = 1e6; // what is borne rather than make a large block
+    private const double FarthestRatio = 3; // poles of moduli farther apart are never merged for condition
     private const double Noise = 1e-31; // relative to ‖A‖ and per unit of projector norm: the blur of a pole
     private const double WidestBlur = 0.01; // of ‖A‖; the blur of a twelvefold pole is near this
 
     private readonly ComplexSchur _schur;
+    private readonly int _largeBlock;
     private readonly double _norm;
     private readonly DoubleDoubleComplex[] _poles;
     private readonly int[] _mirror; // the index of the conjugate pole
@@ -24,8 +25,9 @@ internal sealed class PoleClusters
     private readonly int[] _order; // which pole stands at which place of the diagonal
     private readonly List<int> _starts = [];
 
-    private PoleClusters(ComplexSchur schur, double norm)
+    private PoleClusters(ComplexSchur schur, double norm, int largeBlock)
     {
+        _largeBlock = largeBlock;
         int n = schur.T.Rows;
         _schur = schur;
         _norm = norm;
@@ -40,10 +42,17 @@ internal sealed class PoleClusters
         }
     }
 
-    /// <summary>The clusters, their bases in the Schur basis, and whether each is its own mirror.</summary>
-    public static IReadOnlyList<(InvariantBasis Basis, bool IsReal)> Of(ComplexSchur schur, double norm)
+    /// <summary>The Schur form, reordered cluster by cluster.</summary>
+    public ComplexSchur Schur => _schur;
+
+    /// <summary>The clusters' bases in the Schur basis, and whether each is its own mirror.</summary>
+    public IReadOnlyList<(InvariantBasis Basis, bool IsReal)> Found { get; private set; } = [];
+
+    /// <summary>Clusters the poles of <paramref name="schur"/>, which is reordered. Blocks larger than
+    /// <paramref name="largeBlock"/> are made only where a projector would else be unbearable.</summary>
+    public static PoleClusters Of(ComplexSchur schur, double norm, int largeBlock)
     {
-        PoleClusters clusters = new(schur, norm);
+        PoleClusters clusters = new(schur, norm, largeBlock);
         InvariantBasis[] bases;
         do
         {
@@ -52,18 +61,19 @@ internal sealed class PoleClusters
         }
         while (clusters.Merge(bases));
 
-        List<(InvariantBasis Basis, bool IsReal)> result = [];
+        List<(InvariantBasis Basis, bool IsReal)> found = [];
         for (int b = 0; b < bases.Length; b++)
         {
             int name = clusters.NameOf(b);
             bool isReal = clusters.MirrorOf(name) == name;
             if (isReal || clusters.MeanImaginary(name) > 0)
             {
-                result.Add((bases[b], isReal));
+                found.Add((bases[b], isReal));
             }
         }
 
-        return result;
+        clusters.Found = found;
+        return clusters;
     }
 
     private int NameOf(int block) => _cluster[_order[_starts[block]]];
@@ -138,7 +148,9 @@ internal sealed class PoleClusters
             }
 
             int partner = Partner(bases, directions, names, b);
-            if (partner >= 0 && !taken.Contains(names[partner]))
+            if (partner >= 0 && !taken.Contains(names[partner])
+                && (bases[b].ProjectorNorm > BearableProjector
+                    || bases[b].T.Rows + bases[partner].T.Rows <= _largeBlock))
             {
                 Join(names[b], names[partner], taken);
             }

@@ -8,15 +8,21 @@ internal sealed class SpectralSplit
     // of ‖A‖ and per row; couplings below it do not tell a pair from two real poles
     private const double Noise = 1e-30;
 
+    // of ‖A‖; a good basis reaches n · 1e-31, and zero poles are cleared at 1e-26
+    private const double Invariance = 1e-25;
+
     private readonly DoubleDoubleMatrix _a;
-    private readonly double _zero;
+    private readonly DoubleDoubleMatrix _transposed;
+    private readonly double _norm;
     private readonly DoubleDoubleMatrix _rows;
+    private readonly List<Share> _shares = [];
     private int _filled;
 
-    private SpectralSplit(DoubleDoubleMatrix balanced, double zero)
+    private SpectralSplit(DoubleDoubleMatrix balanced, double norm)
     {
         _a = balanced;
-        _zero = zero;
+        _transposed = balanced.Transposed();
+        _norm = norm;
         _rows = new(balanced.Rows, balanced.Rows);
     }
 
@@ -24,30 +30,65 @@ internal sealed class SpectralSplit
     public static IEnumerable<SpectralBlock> Of(DoubleDoubleMatrix a)
     {
         Balancing balancing = Balancing.Of(a);
-        double norm = balancing.Matrix.FrobeniusNorm();
-        ComplexSchur schur = ComplexSchur.Of(RealSchur.Of(balancing.Matrix), Noise * a.Rows * norm);
-        SpectralSplit split = new(balancing.Matrix, BlockSubstitution.ZeroPole * norm);
-        split.ClearZeroPoles(schur.T);
+        DoubleDoubleMatrix balanced = balancing.Matrix;
+        double norm = balanced.FrobeniusNorm();
+        ComplexSchur schur = ComplexSchur.Of(RealSchur.Of(balanced), Noise * a.Rows * norm);
+        ClearZeroPoles(schur.T, BlockSubstitution.ZeroPole * norm);
 
-        List<Share> shares = [];
-        foreach ((InvariantBasis basis, bool isReal) in PoleClusters.Of(schur, norm))
+        SpectralSplit split = new(balanced, norm);
+        if (!split.Fill(PoleClusters.Of(schur.Copy(), norm, PoleClusters.LargeBlock))
+            && !split.Fill(PoleClusters.Of(schur.Copy(), norm, a.Rows)))
         {
-            DoubleDoubleComplexMatrix right = basis.Right.Times(schur.Vectors);
-            shares.Add(!isReal ? split.AddComplex(basis.T, right)
-                : right.Rows == 1 ? split.AddReal(basis.T, right)
-                : split.AddRealCluster(right));
+            split.FillWhole(schur.Vectors);
         }
 
         DoubleDoubleMatrix inverse = LuFactorization.Of(split._rows.Transposed())
             .Solve(DoubleDoubleMatrix.Identity(a.Rows));
-        return shares.Select(share => share.Finished(inverse, balancing.Exponents));
+        return split._shares.Select(share => share.Finished(inverse, balancing.Exponents));
     }
 
-    private void ClearZeroPoles(DoubleDoubleComplexMatrix t)
+    /// <summary>Takes these clusters; false where some basis is not invariant to rounding, because poles
+    /// closer than rounding were parted all the same.</summary>
+    private bool Fill(PoleClusters clusters)
+    {
+        Clear();
+        foreach ((InvariantBasis basis, bool isReal) in clusters.Found)
+        {
+            DoubleDoubleComplexMatrix right = basis.Right.Times(clusters.Schur.Vectors);
+            _shares.Add(!isReal ? AddComplex(basis.T, right)
+                : right.Rows == 1 ? AddReal(basis.T, right)
+                : AddRealCluster(right));
+        }
+
+        return _shares.TrueForAll(IsInvariant);
+    }
+
+    private void FillWhole(DoubleDoubleComplexMatrix vectors)
+    {
+        Clear();
+        _shares.Add(AddRealCluster(vectors));
+    }
+
+    private void Clear()
+    {
+        _filled = 0;
+        _shares.Clear();
+    }
+
+    private bool IsInvariant(Share share)
+    {
+        DoubleDoubleComplexMatrix image = share.Right.Times(_transposed);
+        DoubleDoubleComplexMatrix expected = share.T.Transposed().Times(share.Right);
+        return double.Hypot(
+            image.Re.Plus(-1, expected.Re).FrobeniusNorm(),
+            image.Im.Plus(-1, expected.Im).FrobeniusNorm()) <= Invariance * _norm;
+    }
+
+    private static void ClearZeroPoles(DoubleDoubleComplexMatrix t, double limit)
     {
         for (int i = 0; i < t.Rows; i++)
         {
-            t[i, i] = t[i, i].Magnitude <= _zero ? 0 : t[i, i];
+            t[i, i] = t[i, i].Magnitude <= limit ? 0 : t[i, i];
         }
     }
 
@@ -82,8 +123,9 @@ internal sealed class SpectralSplit
         DoubleDoubleMatrix b = RealSpan.Of(right);
         Append(b);
         ComplexSchur schur = ComplexSchur.Of(RealSchur.Of(b.Times(_a).Times(b.Transposed())));
-        ClearZeroPoles(schur.T);
-        (DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix q) = NilpotentForm.Of(schur.T, _zero);
+        ClearZeroPoles(schur.T, BlockSubstitution.ZeroPole * _norm);
+        (DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix q) =
+            NilpotentForm.Of(schur.T, BlockSubstitution.ZeroPole * _norm);
         DoubleDoubleComplexMatrix turn = q.Transposed().Times(schur.Vectors);
         return new(true, first, t, turn.Times(b), turn);
     }

@@ -277,17 +277,17 @@ public class WaveTests
                 """));
 
     [Fact]
-    public void A_tolerance_on_a_source_of_zero_is_refused() =>
+    public void A_front_too_short_to_matter_is_a_step() =>
         Assert.Equal(
             """
-            plant.cause:1:24: error: a source of zero has nothing a tolerance could scale
-              source Feed at a : 0 V between -1 V and 1 V
-                                     ^^^^^^^^^^^^^^^^^^^^
-              → give its largest value and a tolerance down to zero, such as `1 V -100 % +0 %`
+            plant.cause:1:36: error: a front this much shorter than the tail is a step
+              source Feed at a : impulse of 5 kV 1e-9/50 s
+                                                 ^^^^
+              → write `decay of 5 kV in 72.1348 s`
             """,
             Checking.Messages(
                 """
-                source Feed at a : 0 V between -1 V and 1 V
+                source Feed at a : impulse of 5 kV 1e-9/50 s
                 resistor R1 at a : 1 kΩ
                 """));
 }

@@ -122,7 +122,8 @@ public sealed class AllAtOnceSolution
             ? (double)Reading(segment, segment.StatesAt(time)).StoredEnergy()
             : null;
 
-    private CircuitReading Reading(Segment segment, SplitMatrix states)
+    /// <summary>All unknowns that go with settled states of a span.</summary>
+    internal CircuitReading Reading(Segment segment, SplitMatrix states)
     {
         var p = segment.Propagator;
         var unknowns = p.Unknowns(states);

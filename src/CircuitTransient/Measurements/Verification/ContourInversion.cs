@@ -11,10 +11,10 @@ namespace CircuitTransient.Measurements.Verification;
 /// only where the probe comes out right is the sample believed, else an earlier instant is tried.</remarks>
 public static class ContourInversion
 {
-    private const int Fewer = 16;
-    private const int More = 22;
+    private const int Fewer = 20;
+    private const int More = 24;
     private const int MostAttempts = 5;
-    private const double ProbeTolerance = 1e-7; // of the probe's largest quantity, in roots of energy
+    private const double ProbeTolerance = 1e-9; // of the probe's largest quantity, in roots of energy
     private const double LatestPart = 0.4; // of the span that holds the sample
     private const string Name = "samples against inversion of X(s)";
 
@@ -70,8 +70,7 @@ public static class ContourInversion
         var system = new ContourSystem(equations, inputs);
         var states = AsDoubles(segment.Propagator.Stored(segment.Before, storage.Count + inputs.StateCount));
         var probe = new Probe(storage);
-        var span = segment.End - segment.Start;
-        var latest = LatestPart * span;
+        var latest = LatestPart * (segment.End - segment.Start);
         var earliest = Math.Min(latest, 1 / segment.Propagator.Radius);
         var points = 0;
         for (var attempt = 0; attempt < MostAttempts && latest > 0; attempt++)
@@ -83,31 +82,40 @@ public static class ContourInversion
             }
 
             points += Fewer;
-            if (Invert(system, equations, states, probe.Quantities, elapsed, Fewer) is not { } fewer
-                || probe.Error(segment.Propagator, fewer.Probe, elapsed, inputs.StateCount) > ProbeTolerance)
+            var known = probe.After(segment.Propagator, elapsed, inputs.StateCount);
+            if (Invert(system, equations, states, probe.Quantities, elapsed, Fewer) is not var (fewer, probed)
+                || !(probe.Error(segment.Propagator, probed.Stored, known) <= ProbeTolerance))
             {
                 continue;
             }
 
             points += More;
-            if (Invert(system, equations, states, probe.Quantities, elapsed, More) is { } more)
+            if (Invert(system, equations, states, probe.Quantities, elapsed, More)
+                is not var (more, probedAgain))
             {
-                var sources = SourceValues(inputs, states, storage, elapsed);
-                ContourReading Read(Inverted of) => new(circuit, equations.Unknowns, storage, of, sources);
-                var sample = new ContourSample(segment.Start + elapsed, Read(more), Read(fewer));
-                return (sample, (double)points * system.Cost);
+                continue;
             }
+
+            var sources = SourceValues(inputs, states, storage, elapsed);
+            ContourReading Read(Inverted of, double[] values) =>
+                new(circuit, equations.Unknowns, storage, of, values);
+            var silent = new double[circuit.Parts.Length];
+            var sample = new ContourSample(
+                segment.Start + elapsed, Read(more, sources), Read(fewer, sources), Read(probedAgain, silent),
+                solution.Reading(segment, known), probe.Strength(states, more.Stored));
+            return (sample, (double)points * system.Cost);
         }
 
         return (null, (double)points * system.Cost);
     }
 
-    private static Inverted? Invert(
+    private static (Inverted Own, Inverted Probe)? Invert(
         ContourSystem system, DescriptorEquations equations, double[] states, double[] probe, double elapsed,
         int count)
     {
         var m = equations.Storage.Count;
-        var inverted = new Inverted(new double[system.Size], new double[m], new double[m], new double[m]);
+        var own = new Inverted(new double[system.Size], new double[m], new double[m]);
+        var probed = new Inverted(new double[system.Size], new double[m], new double[m]);
         var quantities = new Complex[m];
         foreach (var (point, weight) in HyperbolicContour.For(elapsed, count))
         {
@@ -117,26 +125,24 @@ public static class ContourInversion
                 return null;
             }
 
-            for (var i = 0; i < system.Size; i++)
+            foreach (var (sum, part) in new[] { (own, 0), (probed, system.Size) })
             {
-                inverted.Unknowns[i] += (weight * x[i]).Imaginary;
-            }
+                var unknowns = x.Slice(part, system.Size);
+                for (var i = 0; i < unknowns.Length; i++)
+                {
+                    sum.Unknowns[i] += (weight * unknowns[i]).Imaginary;
+                }
 
-            StoredQuantities(equations, x[..system.Size], quantities);
-            for (var k = 0; k < m; k++)
-            {
-                inverted.Stored[k] += (weight * quantities[k]).Imaginary;
-                inverted.StorageRates[k] += (weight * point * quantities[k]).Imaginary;
-            }
-
-            StoredQuantities(equations, x[system.Size..], quantities);
-            for (var k = 0; k < m; k++)
-            {
-                inverted.Probe[k] += (weight * quantities[k]).Imaginary;
+                StoredQuantities(equations, unknowns, quantities);
+                for (var k = 0; k < m; k++)
+                {
+                    sum.Stored[k] += (weight * quantities[k]).Imaginary;
+                    sum.StorageRates[k] += (weight * point * quantities[k]).Imaginary;
+                }
             }
         }
 
-        return inverted;
+        return (own, probed);
     }
 
     // q = D Rᵀ x.

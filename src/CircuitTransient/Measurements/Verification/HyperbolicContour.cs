@@ -29,7 +29,7 @@ internal static class HyperbolicContour
         return points;
     }
 
-    /// <summary>Greatest |Im p|·t of a pole on the imaginary axis that the contour still encloses with room
-    /// to spare. It crosses the axis at 0.73 N/t.</summary>
-    public static double WidestEnclosed(int count) => 0.35 * count;
+    /// <summary>Greatest |Im p|·t of a pole on the imaginary axis that lies well within the contour, which
+    /// crosses the axis at 0.73 N/t. Measured for 20 points: an error of 3e-10 at 4.</summary>
+    public static double WidestEnclosed(int count) => 0.2 * count;
 }

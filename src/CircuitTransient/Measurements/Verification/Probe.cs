@@ -36,21 +36,41 @@ internal sealed class Probe
     /// <summary>The quantities, in coulombs and webers.</summary>
     public double[] Quantities { get; }
 
-    /// <summary>How far inverted quantities are from the propagated ones, relative to the probe's largest,
-    /// each in the root of an energy.</summary>
-    public double Error(
-        Propagator propagator, ReadOnlySpan<double> inverted, double elapsed, int sourceStates)
+    /// <summary>The states the probe leaves after a time, by propagation.</summary>
+    public SplitMatrix After(Propagator propagator, double elapsed, int sourceStates)
     {
         DoubleDouble[] quantities = [.. Quantities.Select(quantity => (DoubleDouble)quantity)];
         var row = propagator.Row(quantities, new DoubleDouble[sourceStates]);
-        var known = propagator.Stored(propagator.Advance(propagator.Settle(row), elapsed), unit.Length);
-        var (worst, largest) = (0.0, 0.0);
+        return propagator.Advance(propagator.Settle(row), elapsed);
+    }
+
+    /// <summary>How far inverted quantities are from the propagated ones, relative to the probe's largest,
+    /// each in the root of an energy.</summary>
+    public double Error(Propagator propagator, ReadOnlySpan<double> inverted, SplitMatrix known)
+    {
+        var states = propagator.Stored(known, unit.Length);
+        var worst = 0.0;
         for (var k = 0; k < unit.Length; k++)
         {
-            worst = Math.Max(worst, Math.Abs(inverted[k] - (double)known[k]) / unit[k]);
-            largest = Math.Max(largest, Math.Abs(Quantities[k]) / unit[k]);
+            worst = Math.Max(worst, Math.Abs(inverted[k] - (double)states[k]) / unit[k]);
         }
 
-        return largest == 0 ? 0 : worst / largest;
+        return unit.Length == 0 ? 0 : worst / Largest(Quantities);
+    }
+
+    /// <summary>How many times stronger than the probe a circuit is stirred, from its stored quantities at
+    /// the start and at the sample.</summary>
+    public double Strength(ReadOnlySpan<double> atStart, ReadOnlySpan<double> atSample) =>
+        unit.Length == 0 ? 0 : Math.Max(Largest(atStart), Largest(atSample)) / Largest(Quantities);
+
+    private double Largest(ReadOnlySpan<double> quantities)
+    {
+        var largest = 0.0;
+        for (var k = 0; k < unit.Length; k++)
+        {
+            largest = Math.Max(largest, Math.Abs(quantities[k]) / unit[k]);
+        }
+
+        return largest;
     }
 }

@@ -129,7 +129,9 @@ internal sealed class Propagator
             }
         }
 
-        return Taylor(row, duration);
+        // Rounding gathers in the directions that Π forbids, where nothing decays, and currents follow from
+        // it times the shift: it is projected away again.
+        return Settle(Taylor(row, duration));
     }
 
     /// <summary>The relative error that truncation and squaring leave over a duration, estimated.</summary>
