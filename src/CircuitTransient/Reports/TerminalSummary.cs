@@ -119,7 +119,8 @@ public static partial class TerminalSummary
         }
 
         // The bound is owed within 1e-9 of the value; where it fell short, the reader is told.
-        return extreme.Bound is { } bound && Math.Abs(bound - value) > 2e-9 * Math.Abs(value)
+        var rounding = 1e-12 * Math.Abs(observation.Greatest.Value ?? 0);
+        return extreme.Bound is { } bound && Math.Abs(bound - value) > (2e-9 * Math.Abs(value)) + rounding
             ? when + $"; proven only not to pass {Number(bound, observation.Unit)}"
             : when;
     }
