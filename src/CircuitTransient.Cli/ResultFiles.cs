@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports;
+using CircuitTransient.Reports.Html;
 
 namespace CircuitTransient.Cli;
 
@@ -8,7 +9,7 @@ namespace CircuitTransient.Cli;
 public static class ResultFiles
 {
     /// <summary>Every file that is written, in the order the summary names them.</summary>
-    public static ImmutableArray<OutputFile> Of(TransientResult result)
+    public static ImmutableArray<OutputFile> Of(TransientResult result, string command)
     {
         // The picture takes as long as all else together, and a second core is mostly there.
         var picture = Task.Run(() => WaveformPlot.Png(result));
@@ -18,6 +19,7 @@ public static class ResultFiles
             OutputFile.OfText("waveforms.csv", CsvReport.Write(result)),
             OutputFile.OfText("waveforms.svg", WaveformPlot.Svg(result)),
             new OutputFile("waveforms.png", picture.GetAwaiter().GetResult()),
+            OutputFile.OfText("report.html", HtmlReport.Write(result, command)),
         ];
     }
 }

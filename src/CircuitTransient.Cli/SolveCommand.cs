@@ -26,7 +26,7 @@ internal sealed class SolveCommand : Command
     {
         Description = "How many samples of each waveform to aim at.",
         HelpName = "N",
-        DefaultValueFactory = _ => 2000,
+        DefaultValueFactory = _ => SolveOptions.UsualSampleCount,
         CustomParser = Words.WholeNumber(2, 1_000_000),
     };
 

@@ -10,4 +10,20 @@ namespace CircuitTransient.Cli;
 /// <param name="IsQuiet">Whether there is no summary.</param>
 /// <param name="IsStrict">Whether warnings and passed linear ranges count as broken requirements.</param>
 public sealed record SolveOptions(
-    InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict);
+    InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict)
+{
+    /// <summary>How many samples are aimed at where nothing is said.</summary>
+    public const int UsualSampleCount = 2000;
+
+    /// <summary>The command that makes the same results again beside the circuit file, wherever that
+    /// is.</summary>
+    public string CommandFor(string file)
+    {
+        var name = Path.GetFileName(file);
+        var isPlain = name.All(c => char.IsAsciiLetterOrDigit(c) || c is '.' or '-' or '_');
+        var quoted = isPlain ? name : $"\"{name}\"";
+        var at = At.Instants.Any() ? $" --at \"{At.Source.Content}\"" : "";
+        var samples = SampleCount == UsualSampleCount ? "" : $" --samples {SampleCount}";
+        return $"circuit-transient solve {quoted}{at}{samples}";
+    }
+}

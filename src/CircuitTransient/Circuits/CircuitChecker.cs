@@ -36,7 +36,7 @@ public static class CircuitChecker
             return null;
         }
 
-        Unreadable.Excuse(syntax.Statements, findings);
+        findings.LacksNames |= !Unreadable.Excuse(syntax.Statements, findings) && findings.HasErrors;
         var settings = StudySettings.Read(syntax, findings);
         var parameters = new ParameterList();
         var values = new NamedValues(findings, parameters);

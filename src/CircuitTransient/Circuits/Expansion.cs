@@ -75,7 +75,7 @@ internal sealed class Expansion
     {
         if (ExpansionSize.CountOf(repeat, scope, values.Evaluator, findings) is not { } count)
         {
-            findings.LacksParts = true;
+            findings.LacksNames = true;
             return;
         }
 
@@ -84,7 +84,7 @@ internal sealed class Expansion
             findings.Error(repeat.Span,
                 $"the counter `{repeat.Counter}` is in use by the repetition round this one",
                 "give the inner one another letter");
-            findings.LacksParts = true;
+            findings.LacksNames = true;
             return;
         }
 
@@ -100,7 +100,7 @@ internal sealed class Expansion
     {
         if (!assemblies.TryGetValue(place.Assembly.Text, out var assembly))
         {
-            findings.LacksParts = true;
+            findings.LacksNames = true;
             return;
         }
 
@@ -185,7 +185,7 @@ internal sealed class Expansion
             return true;
         }
 
-        findings.LacksParts = true;
+        findings.LacksNames = true;
         if (isMisnamed)
         {
             return false;

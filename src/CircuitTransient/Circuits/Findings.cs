@@ -19,10 +19,19 @@ internal sealed class Findings(SourceText source)
     /// <summary>Names that stand in statements that could not be read: nothing is said of them.</summary>
     public HashSet<string> Excused { get; } = new(StringComparer.Ordinal);
 
-    /// <summary>Whether parts are missing because of a mistake told already: then nothing is said of names
-    /// and
-    /// paths that they may have made.</summary>
-    public bool LacksParts { get; set; }
+    /// <summary>Whether parts are missing because of a mistake told already: then nothing is said of paths
+    /// and loose
+    /// ends.</summary>
+    public bool LacksParts
+    {
+        get => field || LacksNames;
+        set;
+    }
+
+    /// <summary>Whether it is not even known which names the missing parts had: then nothing is said of
+    /// unknown parts
+    /// and nodes either.</summary>
+    public bool LacksNames { get; set; }
 
     /// <summary>Whether an unreadable statement may have made, or meant, that name.</summary>
     public bool IsExcused(string name)

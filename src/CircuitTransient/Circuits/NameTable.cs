@@ -62,7 +62,7 @@ internal sealed class NameTable<T>(string noun, Findings findings)
             return true;
         }
 
-        var isMissedAlready = (findings.LacksParts && noun is ("part" or "node")) || findings.IsExcused(name);
+        var isMissedAlready = (findings.LacksNames && noun is ("part" or "node")) || findings.IsExcused(name);
         if (!isMissedAlready && findings.IsNew(span))
         {
             var nearest = NearestName.Find(name, names);

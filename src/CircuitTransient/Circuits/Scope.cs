@@ -42,7 +42,7 @@ internal sealed record Scope(
         findings.Error(index.Span, $"there is no counter `{counter}` here",
             nearest is null ? $"put the statement between `repeat 40 as {counter}` and `end`"
                 : $"the counter here is `{nearest}`");
-        findings.LacksParts = true;
+        findings.LacksNames = true;
         return $"{text}[{counter}]";
     }
 

@@ -71,7 +71,7 @@ internal static class SwitchOrder
     {
         var names = string.Join(" → ", ring.Append(ring[0]).Select(r => Words(state, r)));
         state.Findings.Error(((Switch)state.Parts[ring[0].Part]!).Events[ring[0].Event].Span,
-            $"`{Words(state, ring[0])}` waits for itself: {names}", "give one of these events a time");
+            $"a ring of waits: {names}", "give one of these events a time");
     }
 
     private static IEnumerable<EventReference> Awaited(CheckState state, EventReference of)

@@ -6,13 +6,16 @@ namespace CircuitTransient.Circuits;
 /// <summary>Keeps what follows from a statement that could not be read from being reported as well.</summary>
 internal static class Unreadable
 {
-    public static void Excuse(ImmutableArray<Statement> statements, Findings findings)
+    /// <summary>Whether there was any; where none was kept, more than one statement may be missing.</summary>
+    public static bool Excuse(ImmutableArray<Statement> statements, Findings findings)
     {
+        var found = false;
         foreach (var statement in statements)
         {
             switch (statement)
             {
                 case UnreadableStatement unreadable:
+                    found = true;
                     findings.LacksParts |= unreadable.KeyWord is not (
                         "observe" or "require" or "value" or "note"
                         or "circuit" or "start" or "until");
@@ -24,12 +27,14 @@ internal static class Unreadable
 
                     break;
                 case RepeatStatement repeat:
-                    Excuse(repeat.Body, findings);
+                    found |= Excuse(repeat.Body, findings);
                     break;
                 case AssemblyStatement assembly:
-                    Excuse(assembly.Body, findings);
+                    found |= Excuse(assembly.Body, findings);
                     break;
             }
         }
+
+        return found;
     }
 }

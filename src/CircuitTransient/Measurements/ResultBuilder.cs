@@ -59,7 +59,10 @@ public static class ResultBuilder
             checks,
             notJudged,
             Notices.Of(solution, warnings, observations),
-            []);
+            [])
+        {
+            Followed = FollowedWaves.Of(curves, times, samples),
+        };
     }
 
     private static ImmutableArray<ObservationResult> Waves(

@@ -38,6 +38,10 @@ public sealed record TransientResult(
     ImmutableArray<Notice> Warnings,
     ImmutableArray<Caution> Cautions)
 {
+    /// <summary>The waveforms, taken apart by causes, of what is judged and of what is quadratic, so that a
+    /// reader can scale the causes.</summary>
+    public ImmutableArray<FollowedWave> Followed { get; init; } = [];
+
     /// <summary>Whether every requirement and rating holds.</summary>
     public bool AllHold =>
         Requirements.All(r => r.Holds) && Parts.All(p => p.Ratings.All(r => r.Holds));
@@ -139,6 +143,17 @@ public sealed record ObservationResult(
     /// <summary>The extreme of greater magnitude.</summary>
     public Extreme Greatest => Math.Abs(Min.Value ?? 0) > Math.Abs(Max.Value ?? 0) ? Min : Max;
 }
+
+/// <summary>A waveform as a sum of terms, each of which grows with the scale of one cause or with those of
+/// two.</summary>
+/// <param name="From">Since when an integral gathers, in seconds.</param>
+public sealed record FollowedWave(Measurand Quantity, double From, ImmutableArray<WaveTerm> Terms);
+
+/// <summary>A term of a waveform.</summary>
+/// <param name="Cause">Index of the cause it grows with.</param>
+/// <param name="WithCause">Index of the other cause it grows with; null where it grows with one only.</param>
+/// <param name="Samples">Its values at <see cref="TransientResult.SampleTimes"/>.</param>
+public sealed record WaveTerm(int Cause, int? WithCause, ImmutableArray<double> Samples);
 
 /// <summary>What one cause has in an observation.</summary>
 /// <param name="AtMax">Its value at the total's maximum.</param>

@@ -16,17 +16,20 @@ public class LargeTextTests
     [Fact]
     public void A_long_sum_is_no_deep_nesting() =>
         Assert.Empty(Checking.Messages(
-            "source Feed at a : 1 V\nresistor R1 at a : " + string.Join(" + ", Enumerable.Repeat("1 Ω", 900))));
+            "source Feed at a : 1 V\nresistor R1 at a : "
+            + string.Join(" + ", Enumerable.Repeat("1 Ω", 900))));
 
     [Fact]
     public void A_long_chain_of_values_counted_backwards_is_refused()
     {
-        var chain = string.Join('\n', Enumerable.Range(1, 300).Select(k => $"value V{k} : V{k + 1}"));
+        var values = Enumerable.Range(1, 300).Select(k => $"value V{k} : V{k + 1}");
+        var chain = string.Join('\n', values);
 
         var messages = Checking.Messages(
             $"{chain}\nvalue V301 : 1 Ω\nsource Feed at a : 1 V\nresistor R1 at a : V1");
 
-        Assert.StartsWith("plant.cause:201:14: error: this expression is nested more than 200 deep\n", messages,
+        Assert.StartsWith(
+            "plant.cause:201:14: error: this expression is nested more than 200 deep\n", messages,
             StringComparison.Ordinal);
         Assert.Equal(1, messages.Split(": error: ").Length - 1);
     }

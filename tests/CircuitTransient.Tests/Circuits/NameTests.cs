@@ -133,6 +133,26 @@ public class NameTests
                 """));
 
     [Fact]
+    public void A_name_that_stands_in_no_unreadable_part_is_still_unknown() =>
+        Assert.Equal(
+            """
+            plant.cause:2:27: error: `3,5` has a decimal comma; the decimal mark is a point
+              resistor R1 from a to b : 3,5 Ω
+                                        ^^^
+              → write `3.5 Ω`
+            plant.cause:3:25: error: there is no part `Rload`
+              observe current through Rload
+                                      ^^^^^
+              → the parts are `Feed`
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                resistor R1 from a to b : 3,5 Ω
+                observe current through Rload
+                """));
+
+    [Fact]
     public void Every_mistake_is_told_in_one_go() =>
         Assert.Equal(
             """

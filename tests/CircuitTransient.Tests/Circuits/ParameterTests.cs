@@ -70,7 +70,8 @@ public class ParameterTests
     [Fact]
     public void A_source_of_zero_may_have_a_tolerance()
     {
-        var circuit = Checking.Circuit("source Feed at a : 0 V between -1 V and 2 V\nresistor R1 at a : 1 kΩ");
+        var circuit = Checking.Circuit(
+            "source Feed at a : 0 V between -1 V and 2 V\nresistor R1 at a : 1 kΩ");
         var wave = circuit.Part<VoltageSource>("Feed").Wave;
 
         Assert.Equal(0, wave.Scale.Nominal * wave.Pieces[0].Amplitude);

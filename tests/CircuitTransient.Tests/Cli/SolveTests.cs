@@ -18,7 +18,10 @@ public sealed class SolveTests : IDisposable
         Assert.Contains("The requirement holds.", run.Output);
         Assert.Contains("results/filter/results.json", run.Output);
         Assert.Equal(
-            ["filter/results.json", "filter/waveforms.csv", "filter/waveforms.png", "filter/waveforms.svg"],
+            [
+                "filter/report.html", "filter/results.json", "filter/waveforms.csv", "filter/waveforms.png",
+                "filter/waveforms.svg",
+            ],
             commandLine.Written);
     }
 
@@ -29,7 +32,7 @@ public sealed class SolveTests : IDisposable
 
         Assert.Equal((ExitStatus.RequirementBroken, ""), (run.Status, run.Error));
         Assert.Contains("The requirement is broken.", run.Output);
-        Assert.Equal(4, commandLine.Written.Count());
+        Assert.Equal(5, commandLine.Written.Count());
     }
 
     [Fact]

@@ -54,24 +54,59 @@ public sealed class CurveBuilder
     public static bool IsQuadratic(Measurand measurand) =>
         measurand is PowerIn or EnergyIn or CouplingEnergy or JouleIntegral;
 
+    /// <summary>What two causes have together in a quadratic quantity; of one cause with itself, its own
+    /// part.</summary>
+    /// <param name="measurand">The quantity.</param>
+    /// <param name="one">Index of a cause.</param>
+    /// <param name="other">Index of a cause.</param>
+    /// <param name="from">Since when an integral gathers, in seconds.</param>
+    public Curve? OfPair(Measurand measurand, int one, int other, double from = 0)
+    {
+        var (factor, first, second) = Factors(measurand);
+        return Quadratic(measurand, Pair, from);
+
+        QuadraticPiece? Pair(int s)
+        {
+            var (a, b) = (Linear(s, first, Share.Own, one), Linear(s, second, Share.Own, other));
+            var (c, d) = (Linear(s, first, Share.Own, other), Linear(s, second, Share.Own, one));
+            if (a is null || b is null || c is null || d is null)
+            {
+                return null;
+            }
+
+            var straight = new ProductTerm(factor, a, b);
+            return new(tables[s], one == other ? [straight] : [straight, new ProductTerm(factor, c, d)]);
+        }
+    }
+
     private Curve? Build(Measurand measurand, Share share, int cause, double from)
+    {
+        if (IsQuadratic(measurand))
+        {
+            return Quadratic(measurand, s => Products(s, measurand, share, cause), from);
+        }
+
+        var pieces = ImmutableArray.CreateBuilder<CurvePiece>(tables.Length);
+        for (var s = 0; s < tables.Length; s++)
+        {
+            if (Linear(s, measurand, share, cause) is not { } linear)
+            {
+                return null;
+            }
+
+            pieces.Add(linear);
+        }
+
+        return new Curve(pieces.ToImmutable());
+    }
+
+    private Curve? Quadratic(Measurand measurand, Func<int, QuadraticPiece?> products, double from)
     {
         var pieces = ImmutableArray.CreateBuilder<CurvePiece>(tables.Length);
         double gathered = 0;
         for (var s = 0; s < tables.Length; s++)
         {
-            if (!IsQuadratic(measurand))
-            {
-                if (Linear(s, measurand, share, cause) is not { } linear)
-                {
-                    return null;
-                }
-
-                pieces.Add(linear);
-                continue;
-            }
-
-            if (Products(s, measurand, share, cause) is not { } quadratic)
+            if (products(s) is not { } quadratic)
             {
                 return null;
             }

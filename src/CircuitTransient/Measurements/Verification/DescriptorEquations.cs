@@ -6,8 +6,7 @@ namespace CircuitTransient.Measurements.Verification;
 
 /// <summary>The whole of a circuit's equations for given switch positions, nothing eliminated:
 /// E x′ + G x = B u with E = P D Rᵀ, where q = D Rᵀ x are the stored quantities and P says in which rows
-/// they stand.
-/// </summary>
+/// they stand.</summary>
 /// <param name="Unknowns">What x is made of.</param>
 /// <param name="Storage">What q is made of.</param>
 /// <param name="Conductances">The elements of G, to be added where several share a place.</param>

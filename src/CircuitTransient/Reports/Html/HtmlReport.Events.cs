@@ -1,0 +1,149 @@
+using System.Collections.Immutable;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports.Html;
+
+/// <content>The switchings on a time line and as a table; the poles.</content>
+public static partial class HtmlReport
+{
+    private const int MostPolePictures = 12;
+
+    private static Markup Events(TransientResult result, PlotFonts fonts)
+    {
+        if (result.Events.IsEmpty)
+        {
+            return default;
+        }
+
+        var rows = result.Events.Select(e => Markup.Of($"""
+            <tr><td class="number">{Number(e.Time, "s")}</td>
+            <th scope="row">{Markup.Name(InstantWords.Name(e))}{Remark(e)}</th>
+            <td class="number">{Number(e.VoltageBefore, "V")}</td>
+            <td class="number">{Number(e.VoltageAfter, "V")}</td>
+            <td class="number">{Number(e.CurrentBefore, "A")}</td>
+            <td class="number">{Number(e.CurrentAfter, "A")}</td></tr>
+
+            """));
+        return Markup.Of($"""
+            <section id="events" aria-labelledby="events-heading">
+            <h2 id="events-heading">Events</h2>
+            <div class="wide picture" tabindex="0" role="region" aria-label="Time line of the
+            switchings">{Themed(EventLine.Draw(result, fonts))}</div>
+            <div class="wide"><table>
+            <caption>Switchings, with what each switch saw just before and just after</caption>
+            <thead><tr><th scope="col" class="number">Time</th><th scope="col">Event</th>
+            <th scope="col" class="number">Across, before</th>
+            <th scope="col" class="number">Across, after</th>
+            <th scope="col" class="number">Through, before</th>
+            <th scope="col" class="number">Through, after</th></tr></thead>
+            <tbody>
+            {Markup.Join(rows)}</tbody>
+            </table></div>
+            </section>
+            """);
+    }
+
+    private static Markup Remark(EventResult e) =>
+        e.Remark is { } remark ? Markup.Of($"<br><span class=\"aside\">{remark}</span>") : default;
+
+    private static Markup Poles(TransientResult result, PlotFonts fonts)
+    {
+        if (result.Intervals.All(i => i.Poles.IsEmpty))
+        {
+            return default;
+        }
+
+        var pictures = result.Intervals.Take(MostPolePictures).Select(i => PoleFigure(result, i, fonts));
+        return Markup.Of($"""
+            <section id="poles" aria-labelledby="poles-heading">
+            <h2 id="poles-heading">Poles</h2>
+            <p class="aside">Of each interval between switchings. In the pictures the distance from the
+            middle is the logarithm of the magnitude, the angle is the pole's own; of a conjugate pair both
+            are drawn.</p>
+            <div class="planes">
+            {Markup.Join(pictures)}</div>
+            {Markup.Join(result.Intervals.Select(PoleTable))}</section>
+            """);
+    }
+
+    private static Markup PoleFigure(TransientResult result, IntervalResult interval, PlotFonts fonts) =>
+        Markup.Of($"""
+            <figure>{Themed(PolePlane.Draw(result, interval, fonts))}
+            <figcaption>{IntervalName(interval)}</figcaption></figure>
+
+            """);
+
+    private static string IntervalName(IntervalResult interval)
+    {
+        var from = interval.From == 0 ? "0 s" : Number(interval.From, "s");
+        var span = $"{from} to {Number(interval.Until, "s")}";
+        return interval.StartsWith.IsEmpty
+            ? span
+            : $"{span}, from {string.Join(" and ", interval.StartsWith)}";
+    }
+
+    private static Markup PoleTable(IntervalResult interval)
+    {
+        var table = Markup.Of($"""
+            <div class="wide"><table>
+            <caption>{IntervalName(interval)}</caption>
+            <thead><tr><th scope="col">Pole</th><th scope="col" class="number">Time constant</th>
+            <th scope="col" class="number">Natural frequency</th>
+            <th scope="col" class="number">Damping ratio</th>
+            <th scope="col" class="number">Multiplicity</th></tr></thead>
+            <tbody>
+            {Markup.Join(interval.Poles.Select(PoleRow))}</tbody>
+            </table></div>
+
+            """);
+        var count = interval.Poles.Length;
+        return count <= 12
+            ? table
+            : Markup.Of($"""
+                <details><summary>{count} poles of {IntervalName(interval)}</summary>{table}</details>
+
+                """);
+    }
+
+    private static Markup PoleRow(Pole pole)
+    {
+        var magnitude = Math.Sqrt((pole.Re * pole.Re) + (pole.Im * pole.Im));
+        var place = pole.Im == 0
+            ? Number(pole.Re, "1/s")
+            : $"{Number(pole.Re, "1/s")} ± j {Number(pole.Im, "rad/s")}";
+        var constant = pole.Re == 0 ? "does not decay" : Number(Math.Abs(1 / pole.Re), "s");
+        var growing = pole.Re > 0 ? ", growing" : "";
+        var frequency = pole.Im == 0 ? "" : Number(magnitude / (2 * Math.PI), "Hz");
+        var damping = pole.Im == 0 ? "" : Number(-pole.Re / magnitude, "");
+        return Markup.Of($"""
+            <tr><th scope="row">{place}</th><td class="number">{constant}{growing}</td>
+            <td class="number">{frequency}</td><td class="number">{damping}</td>
+            <td class="number">{pole.Multiplicity}</td></tr>
+
+            """);
+    }
+
+    // A picture whose colours follow the reader's setting; each colour of the style has a variable.
+    private static Markup Themed(Drawing drawing)
+    {
+        var svg = SvgRenderer.Write(drawing);
+        foreach (var (colour, variable) in Variables)
+        {
+            svg = svg.Replace($"\"{colour}\"", $"\"var(--{variable})\"", StringComparison.Ordinal);
+        }
+
+        return Markup.Picture(svg);
+    }
+
+    private static ImmutableArray<(string Colour, string Variable)> Variables { get; } =
+    [
+        (PlotStyle.Paper, "paper"),
+        (PlotStyle.Ink, "ink"),
+        (PlotStyle.Grey, "grey"),
+        (PlotStyle.Grid, "grid"),
+        (PlotStyle.Axis, "axis"),
+        (PlotStyle.Limit, "limit"),
+        ("#fbfcfc", "ground"),
+        .. Enumerable.Range(0, 6).Select(i => (PlotStyle.Cause(i).Colour, $"cause-{i}")),
+    ];
+}

@@ -1,0 +1,204 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports.Html;
+
+/// <content>The verdict, and what is used of each limit on one common scale.</content>
+public static partial class HtmlReport
+{
+    private static Markup Verdict(TransientResult result) => Markup.Of($"""
+        <section id="verdict" aria-labelledby="verdict-heading">
+        <h2 id="verdict-heading">Verdict</h2>
+        <p class="lead" id="verdict-words">{TerminalSummary.Verdict(result)}</p>
+        {RequirementTable(result)}{RatingTable(result)}{Doubts(result)}{Warnings(result)}</section>
+        """);
+
+    private static Markup RequirementTable(TransientResult result)
+    {
+        if (result.Requirements.IsEmpty)
+        {
+            return default;
+        }
+
+        // What is broken comes first.
+        var order = Enumerable.Range(0, result.Requirements.Length)
+            .OrderBy(i => result.Requirements[i].Holds);
+        return Markup.Of($"""
+            <div class="wide"><table class="limits" id="requirements">
+            <caption>Requirements</caption>
+            <thead><tr><th scope="col">Required</th><th scope="col">Verdict</th>
+            <th scope="col">Worst value</th><th scope="col">Used of the limit</th></tr></thead>
+            <tbody>
+            {Markup.Join(order.Select(i => RequirementRow(result, i)))}</tbody>
+            </table></div>
+
+            """);
+    }
+
+    private static Markup RequirementRow(TransientResult result, int i)
+    {
+        var requirement = result.Requirements[i];
+        var reason = requirement.Reason is { } words
+            ? Markup.Of($"<br><span class=\"aside\">{Markup.Name(words)}, line {requirement.Line}</span>")
+            : Markup.Of($"<br><span class=\"aside\">line {requirement.Line}</span>");
+        var worst = requirement.Worst.Value is { } value
+            ? Number(value, requirement.Unit)
+            : "no finite value";
+        var used = i < result.Circuit.Requirements.Length
+            ? Used(result.Circuit.Requirements[i].Bound, requirement)
+            : null;
+        return Markup.Of($"""
+            <tr data-requirement="{i}"{Broken(requirement.Holds)}>
+            <th scope="row">{Markup.Name(requirement.Statement)}{reason}</th>
+            <td class="verdict">{Held(requirement)}</td>
+            <td class="worst">{worst}<br><span
+            class="aside">{InstantWords.At(result, requirement.Worst.Time)}</span></td>
+            <td>{Mark(used)}</td></tr>
+
+            """);
+    }
+
+    private static Markup Broken(bool holds) => holds ? default : Markup.Of($" class=\"broken\"");
+
+    private static string Held(RequirementResult requirement) =>
+        (requirement.Holds, requirement.Margin) switch
+        {
+            (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
+            (true, null) => "held",
+            (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
+            (false, null) => "broken without limit",
+        };
+
+    private static double? Used(Bound bound, RequirementResult requirement)
+    {
+        if (requirement.Worst.Value is not { } value)
+        {
+            return requirement.Holds ? null : double.PositiveInfinity;
+        }
+
+        return bound switch
+        {
+            Limits { Lower: null, Upper: { } upper and not 0 } when upper > 0 => Math.Max(0, value / upper),
+            Limits { Lower: { } lower and not 0, Upper: { } upper and not 0 } when lower < 0 && upper > 0 =>
+                Math.Max(value / upper, value / lower),
+            Limits { Lower: { } lower, Upper: null } when lower > 0 && value > 0 => lower / value,
+            SettlesTo settles when settles.Target != 0 && settles.Within != 0 =>
+                Math.Abs(value - settles.Target) / Math.Abs(settles.Within * settles.Target),
+            _ => null,
+        };
+    }
+
+    private static Markup RatingTable(TransientResult result)
+    {
+        var ratings = result.Parts
+            .SelectMany(part => part.Ratings.Select(rating => (Part: part, Rating: rating)))
+            .Select((pair, i) => (pair.Part, pair.Rating, Index: i))
+            .OrderByDescending(r => r.Rating.Used ?? (r.Rating.Holds ? -1 : double.PositiveInfinity))
+            .ToArray();
+        if (ratings.Length == 0)
+        {
+            return Markup.Of($"<p>Ratings: no rating given for any part.</p>\n");
+        }
+
+        var rows = ratings.Select(r => Markup.Of($"""
+            <tr data-rating="{r.Index}"{Broken(r.Rating.Holds)}>
+            <th scope="row">{Markup.Name(r.Part.Name)}, {Rated(r.Rating.Unit)}</th>
+            <td class="verdict">{Held(r.Rating)}</td>
+            <td class="worst">{Reached(r.Rating)} <span class="aside">of
+            {Number(r.Rating.Rated, r.Rating.Unit)}</span></td>
+            <td>{Mark(r.Rating.Used ?? (r.Rating.Holds ? null : double.PositiveInfinity))}</td></tr>
+
+            """));
+        return Markup.Of($"""
+            <div class="wide"><table class="limits" id="ratings">
+            <caption>Ratings, the most used first</caption>
+            <thead><tr><th scope="col">Rated</th><th scope="col">Verdict</th><th scope="col">Reached</th>
+            <th scope="col">Used of the rating</th></tr></thead>
+            <tbody>
+            {Markup.Join(rows)}</tbody>
+            </table></div>
+            {Unrated(result)}
+            """);
+    }
+
+    private static Markup Unrated(TransientResult result)
+    {
+        var unrated = result.Parts.Where(part => part.Ratings.IsEmpty)
+            .Select(part => Markup.Name(part.Name)).ToArray();
+        if (unrated.Length == 0)
+        {
+            return default;
+        }
+
+        var names = unrated.Take(60).Select((name, i) => Markup.Of($"{(i == 0 ? "" : ", ")}{name}"));
+        var rest = unrated.Length > 60 ? $" and {unrated.Length - 60} more" : "";
+        return Markup.Of($"<p class=\"aside\">No rating given: {Markup.Join(names)}{rest}.</p>\n");
+    }
+
+    private static string Reached(RatingResult rating) =>
+        rating.Reached is { } reached ? Number(reached, rating.Unit) : "no finite value";
+
+    private static string Held(RatingResult rating) => (rating.Holds, rating.Reached - rating.Rated) switch
+    {
+        (true, _) => "held",
+        (false, { } excess) => $"exceeded by {Number(excess, rating.Unit)}",
+        (false, null) => "exceeded without limit",
+    };
+
+    private static string Rated(string unit) => unit switch
+    {
+        "V" => "peak voltage",
+        "A" => "peak current",
+        "W" => "mean power",
+        "J" => "energy",
+        "A²s" => "I²t",
+        "V/s" => "rate of change of voltage",
+        "A/s" => "rate of change of current",
+        _ => "rating",
+    };
+
+    private static Markup Doubts(TransientResult result) => Markup.Join(
+        from part in result.Parts
+        let linear = part.LinearUpTo
+        where linear is { Holds: false }
+        let direction = linear.Direction is { } words ? $": {words}" : ""
+        select Markup.Of($"""
+            <p>{Markup.Name(part.Name)} is linear up to {Number(linear.Declared, linear.Unit)} but reaches
+            {Number(linear.Reached, linear.Unit)}{direction}.</p>
+
+            """));
+
+    private static Markup Warnings(TransientResult result) => result.Warnings.IsEmpty
+        ? default
+        : Markup.Of($"""
+            <h3>Warnings</h3>
+            <ul>
+            {Markup.Join(result.Warnings.Select(w =>
+                Markup.Of($"<li>{(w.Line > 0 ? $"line {w.Line}: " : "")}{w.Text}</li>\n")))}</ul>
+
+            """);
+
+    private static Markup Cautions(TransientResult result) => result.Cautions.IsEmpty
+        ? default
+        : Markup.Of($"""
+            <section id="cautions" aria-labelledby="cautions-heading">
+            <h2 id="cautions-heading">Cautions</h2>
+            <ul class="cautions">
+            {Markup.Join(result.Cautions.OrderByDescending(c => c.Severity).Select(CautionItem))}</ul>
+            </section>
+            """);
+
+    private static Markup CautionItem(Caution caution)
+    {
+        var word = caution.Severity switch
+        {
+            CautionSeverity.Danger => "Danger",
+            CautionSeverity.Warning => "Warning",
+            _ => "Note",
+        };
+        return Markup.Of($"""
+            <li><strong>{word}.</strong> {caution.Text} <span class="aside">({caution.Standard})</span></li>
+
+            """);
+    }
+}

@@ -1,0 +1,97 @@
+using System.Reflection;
+using System.Security.Cryptography;
+using System.Text;
+using CircuitTransient.Measurements;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Reports.Html;
+
+/// <summary>The report people look at: one self-contained page that a review reads, an engineer explores and
+/// a printer prints.</summary>
+public static partial class HtmlReport
+{
+    private static readonly string[] Scripts =
+        ["report-numbers.js", "report-waves.js", "report-plot.js", "report-explore.js", "report-page.js"];
+
+    /// <summary>The page.</summary>
+    /// <param name="result">What it reports.</param>
+    /// <param name="command">The command that makes it again, as typed.</param>
+    public static string Write(TransientResult result, string command)
+    {
+        using var fonts = new PlotFonts();
+        var style = Resource("report.css");
+        var script = $"(() => {{\n\"use strict\";\n{string.Concat(Scripts.Select(Resource))}}})();\n";
+        var title = result.Circuit.Title ?? result.Circuit.Source.Name;
+        return Markup.Of($"""
+            <!DOCTYPE html>
+            <html lang="en">
+            <head>
+            <meta charset="utf-8">
+            <meta name="viewport" content="width=device-width, initial-scale=1">
+            <meta http-equiv="Content-Security-Policy" content="default-src 'none'; style-src
+            '{Hash(style)}'; script-src '{Hash(script)}'">
+            <meta name="color-scheme" content="light dark">
+            <title>{title}</title>
+            <style>{Markup.Raw(style, "style")}</style>
+            </head>
+            <body>
+            <a class="skip" href="#observations">Skip to the waveforms</a>
+            {Head(result, title)}
+            <main>
+            {Verdict(result)}
+            {Cautions(result)}
+            {Events(result, fonts)}
+            {Observations(result, fonts)}
+            {Stresses(result)}
+            {Poles(result, fonts)}
+            {Impulses(result)}
+            {Checks(result)}
+            {Source(result, command)}
+            </main>
+            <footer><p>{TerminalSummary.Closing}</p></footer>
+            <script type="application/json" id="data">{Markup.Raw(PageData.Write(result), "script")}</script>
+            <script>{Markup.Raw(script, "script")}</script>
+            </body>
+            </html>
+
+            """).ToString();
+    }
+
+    private static Markup Head(TransientResult result, string title)
+    {
+        var circuit = result.Circuit;
+        var until = EngineeringNumber.Format(result.Until, "s");
+        var start = circuit.StartsSettled
+            ? "sources on for ever before the start"
+            : "everything stored at the start as stated";
+        var reason = result.UntilReason is { } words ? Markup.Of($" ({words})") : default;
+        var notes = circuit.Notes.Select(note => Markup.Of($"<p>{Markup.Name(note)}</p>\n"));
+        return Markup.Of($"""
+            <header>
+            <h1>{Markup.Name(title)}</h1>
+            <p class="study">{Markup.Name(circuit.Source.Name)}: {circuit.Parts.Length} parts,
+            {circuit.Nodes.Length} nodes; from 0 s to {until}{reason}; {start}.</p>
+            {Markup.Join(notes)}</header>
+            """);
+    }
+
+    private static string Hash(string content) =>
+        $"sha256-{Convert.ToBase64String(SHA256.HashData(Encoding.UTF8.GetBytes(content)))}";
+
+    private static string Resource(string name)
+    {
+        using var stream = typeof(HtmlReport).Assembly.GetManifestResourceStream(name)
+            ?? throw new InvalidOperationException($"{name} is not embedded");
+        using var reader = new StreamReader(stream, Encoding.UTF8);
+        return reader.ReadToEnd();
+    }
+
+    private static string Version =>
+        typeof(HtmlReport).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()
+            ?.InformationalVersion ?? "";
+
+    private static string Number(double? value, string unit) =>
+        value is { } number && double.IsFinite(number)
+            ? EngineeringNumber.Format(number, unit)
+            : "undetermined";
+}

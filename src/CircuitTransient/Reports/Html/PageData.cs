@@ -1,0 +1,254 @@
+using System.Buffers.Binary;
+using System.Collections.Immutable;
+using System.Text;
+using System.Text.Json;
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Reports.Html;
+
+/// <summary>What the page's script works on: the samples of every waveform by causes, and what is judged by
+/// them, as JSON.</summary>
+internal sealed partial class PageData
+{
+    private const int MostValues = 900_000; // samples of all terms: 4.8 MB in base 64
+    private const int FewestSamples = 120;
+
+    private readonly TransientResult result;
+    private readonly List<PageWave> waves = [];
+    private readonly Dictionary<FollowedWave, int> places = new(ReferenceEqualityComparer.Instance);
+    private readonly Utf8JsonWriter json;
+
+    private PageData(TransientResult result, Utf8JsonWriter json) =>
+        (this.result, this.json) = (result, json);
+
+    /// <summary>The data of a result, without a less-than sign or a character outside ASCII.</summary>
+    public static string Write(TransientResult result)
+    {
+        using var stream = new MemoryStream();
+        using var writer = new Utf8JsonWriter(stream);
+        new PageData(result, writer).WriteAll();
+        writer.Flush();
+        return Encoding.UTF8.GetString(stream.ToArray());
+    }
+
+    private void WriteAll()
+    {
+        json.WriteStartObject();
+        json.WriteNumber("until", result.Until);
+        WriteCauses();
+        WriteEvents();
+        WriteObservations();
+        WriteRequirements();
+        WriteRatings();
+        WriteWaves();
+        json.WriteEndObject();
+    }
+
+    private void WriteCauses()
+    {
+        json.WriteStartArray("causes");
+        foreach (var cause in result.Causes)
+        {
+            json.WriteStringValue(cause.Name);
+        }
+
+        json.WriteEndArray();
+    }
+
+    private void WriteEvents()
+    {
+        json.WriteStartArray("events");
+        foreach (var together in result.Events.GroupBy(e => e.Time))
+        {
+            json.WriteStartObject();
+            json.WriteNumber("time", together.Key);
+            json.WriteString("name", string.Join(" and ", together.Select(InstantWords.Name)));
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
+    private void WriteObservations()
+    {
+        json.WriteStartArray("observations");
+        foreach (var observed in result.Observations)
+        {
+            var declared = result.Circuit.Observations.FirstOrDefault(o => o.Name == observed.Name);
+            var (from, to) = WindowOf(declared?.Window);
+            json.WriteStartObject();
+            json.WriteString("name", observed.Name);
+            json.WriteString("unit", observed.Unit);
+            json.WriteNumber("from", from);
+            json.WriteNumber("to", to);
+            json.WriteNumber("wave", Add(PageWave.Of(result, observed, declared)));
+            WriteTimed("max", observed.Max.Value, observed.Max.Time);
+            WriteTimed("min", observed.Min.Value, observed.Min.Time);
+            WriteContributions(observed);
+            WriteLimits(observed);
+            WriteCloseUp(observed);
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
+    private void WriteContributions(ObservationResult observed)
+    {
+        json.WriteStartArray("without");
+        foreach (var contribution in observed.Contributions)
+        {
+            json.WriteStartObject();
+            WriteTimed("ownMax", contribution.OwnMax?.Value, contribution.OwnMax?.Time ?? 0);
+            WriteTimed("ownMin", contribution.OwnMin?.Value, contribution.OwnMin?.Time ?? 0);
+            WriteTimed("max", contribution.MaxWithout?.Value, contribution.MaxWithout?.Time ?? 0);
+            WriteTimed("min", contribution.MinWithout?.Value, contribution.MinWithout?.Time ?? 0);
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
+    private void WriteLimits(ObservationResult observed)
+    {
+        json.WriteStartArray("limits");
+        foreach (var limit in PlotLimit.On(result, observed))
+        {
+            json.WriteStartObject();
+            json.WriteNumber("value", limit.Value);
+            json.WriteNumber("from", limit.From);
+            json.WriteNumber("to", limit.To);
+            json.WriteString("words", limit.Words);
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
+    private void WriteCloseUp(ObservationResult observed)
+    {
+        if (PlotWindow.Enlarged(result, observed) is { } window)
+        {
+            json.WriteStartObject("closeUp");
+            json.WriteNumber("from", window.From);
+            json.WriteNumber("to", window.To);
+            json.WriteNumber("origin", window.Origin);
+            json.WriteString("originName", window.OriginName);
+            json.WriteString("words", window.Words());
+            json.WriteEndObject();
+        }
+    }
+
+    private (double From, double To) WindowOf(Window? window)
+    {
+        var from = window?.From is { } start ? DeclaredInstant.Seconds(result, start) : 0;
+        var to = window?.To is { } end ? DeclaredInstant.Seconds(result, end) : result.Until;
+        return (Math.Max(0, from ?? 0), Math.Min(result.Until, to ?? result.Until));
+    }
+
+    private void WriteTimed(string name, double? value, double time)
+    {
+        if (value is { } number && double.IsFinite(number) && double.IsFinite(time))
+        {
+            json.WriteStartArray(name);
+            json.WriteNumberValue(number);
+            json.WriteNumberValue(time);
+            json.WriteEndArray();
+        }
+    }
+
+    private int Add(PageWave wave)
+    {
+        waves.Add(wave);
+        return waves.Count - 1;
+    }
+
+    private void WriteWaves()
+    {
+        var terms = Math.Max(1, waves.Sum(w => w.Terms.Length));
+        var limit = Math.Max(FewestSamples, MostValues / terms);
+        json.WriteBase64String("times", Bytes(result.SampleTimes));
+        json.WriteStartArray("waves");
+        foreach (var wave in waves)
+        {
+            var chosen = result.SampleTimes.Length > limit ? Thinned(wave, limit) : default;
+            json.WriteStartObject();
+            json.WriteBoolean("quadratic", wave.IsQuadratic);
+            if (!chosen.IsDefault)
+            {
+                json.WriteBase64String("index", Bytes(chosen));
+            }
+
+            json.WriteStartArray("terms");
+            foreach (var term in wave.Terms)
+            {
+                WriteTerm(term, chosen);
+            }
+
+            json.WriteEndArray();
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
+    private void WriteTerm(PageTerm term, ImmutableArray<int> chosen)
+    {
+        json.WriteStartObject();
+        if (term.Cause is { } cause)
+        {
+            json.WriteNumber("cause", cause);
+        }
+
+        if (term.WithCause is { } other)
+        {
+            json.WriteNumber("with", other);
+        }
+
+        var samples = chosen.IsDefault ? term.Samples : [.. chosen.Select(i => term.Samples[i])];
+        json.WriteBase64String("samples", SingleBytes(samples));
+        json.WriteEndObject();
+    }
+
+    private ImmutableArray<int> Thinned(PageWave wave, int limit)
+    {
+        var peaks = wave.Peaks.ToHashSet();
+        var kept = Enumerable.Range(0, result.SampleTimes.Length)
+            .Where(i => peaks.Contains(result.SampleTimes[i])).ToHashSet();
+        return SampleThinning.Choose(result.SampleTimes, [.. wave.Terms.Select(t => t.Samples)], kept, limit);
+    }
+
+    private static byte[] Bytes(ImmutableArray<double> values)
+    {
+        var bytes = new byte[8 * values.Length];
+        for (var i = 0; i < values.Length; i++)
+        {
+            BinaryPrimitives.WriteDoubleLittleEndian(bytes.AsSpan(8 * i), values[i]);
+        }
+
+        return bytes;
+    }
+
+    private static byte[] Bytes(ImmutableArray<int> values)
+    {
+        var bytes = new byte[4 * values.Length];
+        for (var i = 0; i < values.Length; i++)
+        {
+            BinaryPrimitives.WriteInt32LittleEndian(bytes.AsSpan(4 * i), values[i]);
+        }
+
+        return bytes;
+    }
+
+    private static byte[] SingleBytes(ImmutableArray<double> values)
+    {
+        var bytes = new byte[4 * values.Length];
+        for (var i = 0; i < values.Length; i++)
+        {
+            BinaryPrimitives.WriteSingleLittleEndian(bytes.AsSpan(4 * i), (float)values[i]);
+        }
+
+        return bytes;
+    }
+}
