@@ -5,11 +5,13 @@ using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements.Checks;
 
-/// <summary>Kirchhoff's current law at every node and every part's own law, at the ends and in the middle of
-/// segments: each residual over the largest term of its law at any of these instants.</summary>
+/// <summary>Kirchhoff's current law at every node and every part's own law, at the ends of segments and between
+/// them: each residual over the largest term of its law at any of these instants.</summary>
 internal sealed class LawCheck
 {
     private const int MostSegments = 12;
+    private const int MostInside = 6;
+    private const double GoldenPart = 0.381966011250105; // least likely to be a zero of a periodic wave
 
     private readonly CurveBuilder curves;
     private readonly Circuit circuit;
@@ -32,10 +34,10 @@ internal sealed class LawCheck
         var step = Math.Max(1, count / MostSegments);
         for (var s = 0; s < count; s += step)
         {
-            var length = curves.Tables[s].Segment.Length;
-            check.Sample(s, 0);
-            check.Sample(s, length / 2);
-            check.Sample(s, length);
+            foreach (var tau in Instants(curves.Tables[s]))
+            {
+                check.Sample(s, tau);
+            }
         }
 
         double worst = 0;
@@ -45,6 +47,21 @@ internal sealed class LawCheck
         }
 
         return worst;
+    }
+
+    /// <summary>The ends, and instants between them where the modes live: even parts of a segment may all be
+    /// zeros of a sine, or all lie where everything has decayed.</summary>
+    private static IEnumerable<double> Instants(SegmentTable table)
+    {
+        yield return 0;
+        var panels = table.Instants.Length - 1;
+        for (var k = 0; k < Math.Min(MostInside, panels); k++)
+        {
+            var panel = panels * k / Math.Min(MostInside, panels);
+            yield return double.Lerp(table.Instants[panel], table.Instants[panel + 1], GoldenPart);
+        }
+
+        yield return table.Segment.Length;
     }
 
     private void Sample(int s, double tau)

@@ -1,0 +1,87 @@
+namespace CircuitTransient.Tests.OutsideChecks;
+
+/// <summary>The voltage that rises across a breaker's contacts as they part.</summary>
+public sealed class RecoveryVoltageTests
+{
+    private const string Voltage = "voltage of contact";
+    private const string Rate = "rate of change of voltage of contact";
+
+    // Textbook problem, from memory: 11 kV, 50 Hz, 5 Ω a phase, 0.01 µF; figures computed (C) with 40 digits.
+    private const string SingleFrequency = """
+        value Crest : 11 kV * sqrt(2/3)
+        inductor L from s to contact : 5 Ω / (2*pi*50 Hz)
+        capacitor C from contact to ground : 0.01 µF
+        observe voltage of contact
+        observe rate of change of voltage of contact
+        until 60 µs
+        """;
+
+    [Fact]
+    public void With_a_constant_source_it_doubles_the_crest_of_the_phase()
+    {
+        var solved = SolvedText.Of(SingleFrequency + "\nsource E at s : step of Crest");
+        Close.To(17962.9247804, solved.Max(Voltage));
+        Close.To(39.6332730e-6, solved[Voltage].Max.Time, Close.Instant);
+    }
+
+    [Fact]
+    public void With_a_constant_source_it_swings_at_the_natural_frequency()
+    {
+        var solved = SolvedText.Of(SingleFrequency + "\nsource E at s : step of Crest");
+        Close.To(12615.6626101008, Assert.Single(solved.Poles()).Im / double.Tau);
+    }
+
+    [Fact]
+    public void With_a_constant_source_it_rises_at_the_rates_of_the_closed_form()
+    {
+        var solved = SolvedText.Of(SingleFrequency + "\nsource E at s : step of Crest");
+        Close.To(0.453228397e9, solved.Max(Voltage) / solved[Voltage].Max.Time, Close.Instant);
+        Close.To(0.711929501e9, solved.Max(Rate));
+    }
+
+    [Fact]
+    public void With_the_50_Hz_source_it_stays_below_twice_the_crest()
+    {
+        var solved = SolvedText.Of(SingleFrequency + "\nsource E at s : cosine of Crest at 50 Hz");
+        Close.To(17962.5107505, solved.Max(Voltage));
+        Close.To(39.6326504e-6, solved[Voltage].Max.Time, Close.Instant);
+    }
+
+    // A network that produces the 12 kV envelope of IEC 62271-100: computed (C); the envelope's 20.6 kV and
+    // 61 µs are from memory.
+    private const string Envelope = """
+        source E at s : step of 14696.9384567 V
+        inductor L from s to contact : 1.32318934901 mH
+        capacitor C from contact to ground : 0.388664560624 µF
+        resistor R from contact to ground : 104.193016721 Ω
+        observe voltage of contact
+        observe overshoot of voltage of contact
+        until 400 µs
+        """;
+
+    [Fact]
+    public void The_network_for_the_12_kV_envelope_has_its_peak()
+    {
+        var solved = SolvedText.Of(Envelope);
+        Close.To(20575.7138394, solved.Max(Voltage));
+        Close.To(74.2124628e-6, solved[Voltage].Max.Time, Close.Instant);
+    }
+
+    [Fact]
+    public void The_network_for_the_12_kV_envelope_touches_the_tangent_from_the_origin()
+    {
+        var undamped = 1 / Math.Sqrt(1.32318934901e-3 * 0.388664560624e-6);
+        var solved = SolvedText.Of(Envelope, 2.10443528339 / undamped, 1e-6, 30e-6, 100e-6);
+        var slopes = solved[Voltage].Samples.Select(s => s.Value!.Value / s.Time).ToArray();
+        Close.To(20575.7138394 / 61e-6, slopes[0]); // crest over t3: 0.337306784 kV/µs
+        Assert.All(slopes[1..], slope => Assert.True(slope < slopes[0]));
+    }
+
+    [Fact]
+    public void The_network_for_the_12_kV_envelope_has_its_undamped_frequency()
+    {
+        var pole = Assert.Single(SolvedText.Of(Envelope).Poles());
+        Close.To(7018.1341, double.Hypot(pole.Re, pole.Im) / double.Tau, 1e-8); // eight digits given
+        Close.To(0.279997993335, -pole.Re / double.Hypot(pole.Re, pole.Im));
+    }
+}
