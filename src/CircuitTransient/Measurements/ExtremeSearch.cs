@@ -133,11 +133,14 @@ public sealed class ExtremeSearch
                 continue;
             }
 
-            var upper = piece is AccumulatedPiece
-                ? double.PositiveInfinity
-                : piece.UpperBetween(
-                    sign, table.Instants[k + 1] - table.Instants[k], table.Values(k), table.Values(k + 1),
-                    table.Envelope(k));
+            if (piece.MagnitudeWithin(table.Envelope(k)) <= best)
+            {
+                continue;
+            }
+
+            var half = (table.Instants[k + 1] - table.Instants[k]) / 2;
+            var model = piece.Around(table.Instants[k] + half, half, table.Middle(k), table.Envelope(k));
+            var upper = model.Upper(sign);
             if (upper > best + (Resolution * size))
             {
                 waiting.Enqueue(new Stretch(p, left, right, upper), (-upper, piece.Segment.Start + left));
@@ -148,28 +151,22 @@ public sealed class ExtremeSearch
     private void Settle(Stretch stretch)
     {
         var piece = curve.Pieces[stretch.Piece];
-        var basis = piece.Segment.Basis;
-        var phi = new double[basis.Width];
         var middle = stretch.From + ((stretch.Until - stretch.From) / 2);
-        var half = (stretch.Until - stretch.From) / 2;
-        var (value, slope, bend) = Derivatives(piece, middle, phi);
-        Offer(stretch.Piece, middle, value);
-        var envelope = new double[basis.Width];
-        basis.Envelope(stretch.From, stretch.Until, envelope);
-        var (second, third) = piece.DerivativeBounds(envelope);
-        var isMonotone = Math.Abs(slope) >= second * half;
-        if (isMonotone || bend - (third * half) >= 0 || middle <= stretch.From || middle >= stretch.Until)
+        var model = piece.Between(stretch.From, stretch.Until);
+        Offer(stretch.Piece, middle, sign * piece.ValueAt(middle));
+        var isSmallest = middle <= stretch.From || middle >= stretch.Until;
+        if (isSmallest || model.IsMonotone || model.IsBentDown(-sign))
         {
             return; // the greatest value is at an end, and the ends have been offered
         }
 
-        if (bend + (third * half) < 0)
+        if (model.IsBentDown(sign))
         {
-            Climb(stretch, piece, phi);
+            Climb(stretch, piece, new double[piece.Segment.Basis.Width]);
             return;
         }
 
-        var upper = Math.Min(stretch.Upper, piece.UpperAround(sign, half, middle, phi, envelope));
+        var upper = Math.Min(stretch.Upper, model.Upper(sign));
         if (upper > best + (Resolution * size))
         {
             Push(stretch with { Until = middle, Upper = upper });

@@ -1,5 +1,3 @@
-using System.Diagnostics;
-
 namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>The integral of a sum of products since some instant: an absorbed energy, a Joule
@@ -62,25 +60,10 @@ public sealed class AccumulatedPiece : CurvePiece
     }
 
     /// <inheritdoc/>
-    public override (double Second, double Third) DerivativeBounds(ReadOnlySpan<double> envelope)
-    {
-        var (_, first, second, _) = rate.Bounds(envelope);
-        return (first, second);
-    }
+    public override double MagnitudeWithin(ReadOnlySpan<double> envelope) => double.PositiveInfinity;
 
     /// <inheritdoc/>
-    public override double UpperBetween(
-        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
-        ReadOnlySpan<double> envelope) =>
-        throw new UnreachableException("an integral is bounded around the middle of a stretch");
-
-    /// <inheritdoc/>
-    public override double UpperAround(
-        double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope)
-    {
-        var growth = Math.Max(
-            rate.UpperAround(1, half, tau, middle, envelope),
-                rate.UpperAround(-1, half, tau, middle, envelope));
-        return (sign * ValueAt(tau, middle)) + (half * growth);
-    }
+    public override TaylorModel Around(
+        double tau, double half, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope) =>
+        rate.Around(tau, half, phi, envelope).Integrated(ValueAt(tau, phi), half);
 }
