@@ -25,6 +25,7 @@ public sealed class ExtremeSearch
     private double bestTau;
     private int bestPiece;
     private double size;
+    private bool isBeaten; // whether the best value is one that another search found
 
     private ExtremeSearch(Curve curve, double sign, double from, double until)
     {
@@ -49,6 +50,16 @@ public sealed class ExtremeSearch
     {
         var found = new ExtremeSearch(curve, -1, from, until).Run(mostStretches);
         return found with { Value = -found.Value, Bound = -found.Bound };
+    }
+
+    /// <summary>The value of greatest magnitude, with its sign.</summary>
+    public static FoundExtreme GreatestMagnitude(Curve curve, double from, double until, int mostStretches)
+    {
+        var high = Greatest(curve, from, until, mostStretches);
+        var search =
+            new ExtremeSearch(curve, -1, from, until) { best = Math.Max(0, high.Value), isBeaten = true };
+        var low = search.Run(mostStretches);
+        return search.isBeaten ? high : low with { Value = -low.Value, Bound = -low.Bound };
     }
 
     private FoundExtreme Run(int mostStretches)
@@ -123,6 +134,11 @@ public sealed class ExtremeSearch
     private void Enqueue(int p, double a, double b)
     {
         var piece = curve.Pieces[p];
+        if (piece is LinearPiece { IsZero: true })
+        {
+            return;
+        }
+
         var table = piece.Table;
         for (var k = 0; k + 1 < table.Instants.Length; k++)
         {
@@ -224,11 +240,12 @@ public sealed class ExtremeSearch
     {
         size = Math.Max(size, Math.Abs(value));
         var rounding = 1e-14 * size; // values that differ by less are equal, and the earlier one counts
-        var isEarlier = piece < bestPiece || (piece == bestPiece && tau < bestTau);
+        var isEarlier = !isBeaten && (piece < bestPiece || (piece == bestPiece && tau < bestTau));
         if (value > best + rounding || (isEarlier && value >= best - rounding)
             || double.IsNegativeInfinity(best))
         {
             best = double.IsNegativeInfinity(best) ? value : Math.Max(best, value);
+            isBeaten = false;
             bestPiece = piece;
             bestTau = tau;
         }

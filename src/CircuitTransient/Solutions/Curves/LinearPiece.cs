@@ -57,8 +57,8 @@ public sealed class LinearPiece : CurvePiece
         return sum;
     }
 
-    /// <summary>Slow modes enter the polynomial with their derivatives; a mode so fast that its series would not
-    /// end below its amplitude is bounded by that.</summary>
+    /// <summary>Slow modes enter the polynomial with their derivatives; a mode so fast that its series would
+    /// not end below its amplitude is bounded by that.</summary>
     public override TaylorModel Around(
         double tau, double half, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope)
     {
@@ -122,7 +122,8 @@ public sealed class LinearPiece : CurvePiece
         return sum;
     }
 
-    /// <summary>A bound of a mode's part in a derivative; a complex function counts by its magnitude.</summary>
+    /// <summary>A bound of a mode's part in a derivative; a complex function counts by its
+    /// magnitude.</summary>
     private double Magnitude(int order, int mode, ReadOnlySpan<double> envelope)
     {
         var c = Derivative(order);

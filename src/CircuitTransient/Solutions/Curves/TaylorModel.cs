@@ -1,9 +1,10 @@
 namespace CircuitTransient.Solutions.Curves;
 
-/// <summary>A curve around an instant: f(τ + h x) = Σ aⱼ xʲ within a remainder, for −1 ≤ x ≤ 1, and likewise its first
-/// and second derivative by x. Unlike a bound of a derivative alone it sees how the modes of a long ladder cancel.</summary>
-/// <remarks>K. Makino and M. Berz, "Taylor models and other validated functional inclusion methods", 2003 (from
-/// memory); remainders here come from the modes' envelopes, rounding is left out.</remarks>
+/// <summary>A curve around an instant: f(τ + h x) = Σ aⱼ xʲ within a remainder, for −1 ≤ x ≤ 1, and likewise
+/// its first and second derivative by x. Unlike a bound of a derivative alone it sees how the modes of a long
+/// ladder cancel.</summary>
+/// <remarks>K. Makino and M. Berz, "Taylor models and other validated functional inclusion methods", 2003
+/// (from memory); remainders here come from the modes' envelopes, rounding is left out.</remarks>
 public sealed class TaylorModel
 {
     /// <summary>The highest power kept.</summary>
@@ -92,7 +93,8 @@ public sealed class TaylorModel
                 + (2 * Cross(FirstRemainder, q.First, other.FirstRemainder, p.First)));
     }
 
-    /// <summary>The model of an integral whose value in the middle is known and whose rate has this model.</summary>
+    /// <summary>The model of an integral whose value in the middle is known and whose rate has this
+    /// model.</summary>
     public TaylorModel Integrated(double middle, double half)
     {
         var integral = new double[Degree + 1];
