@@ -15,6 +15,7 @@ internal sealed class DescriptorReduction
     private readonly double[] columnScales;
     private readonly bool[] isEliminated;
     private readonly List<(int Unknown, EquationRow Row)> substitutions = [];
+    private readonly List<EquationRow> saysNothing = []; // each leaves one direction open
     private SingularEquations? singular;
 
     private DescriptorReduction(NetworkLayout layout, List<EquationRow> rows)
@@ -56,10 +57,11 @@ internal sealed class DescriptorReduction
             {
                 if (!row.HasNoRight)
                 {
-                    singular = new SingularEquations(Indices(row.Origin), Contradicts: true);
+                    singular = new SingularEquations([Indices(row.Origin)], Contradicts: true);
                     return;
                 }
 
+                saysNothing.Add(row);
                 continue;
             }
 
@@ -160,8 +162,8 @@ internal sealed class DescriptorReduction
             state = [.. state.Except(directions.Select(d => d.Fixed))];
             if (state.Length > rows.Count)
             {
-                var involved = rows.SelectMany(r => Indices(r.Origin)).Distinct().Order().ToArray();
-                singular = new SingularEquations(involved, Contradicts: false);
+                singular = new SingularEquations(
+                    [.. saysNothing.Select(r => Indices(r.Origin))], Contradicts: false);
             }
         }
 

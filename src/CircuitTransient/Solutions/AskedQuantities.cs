@@ -52,6 +52,11 @@ internal sealed class AskedQuantities(Circuit circuit, Func<Instant, double> ins
                 yield return ([limit.IsVoltage ? new VoltageAcross(i) : new CurrentThrough(i)], limit.Span, "judged");
             }
 
+            if (circuit.Parts[i] is DependentSource follower)
+            {
+                yield return ([follower.Control], follower.Span, $"followed by `{follower.Name}`");
+            }
+
             foreach (var declared in (circuit.Parts[i] as Switch)?.Events ?? [])
             {
                 if (declared.Trigger is WhenCrosses condition)
