@@ -1,3 +1,4 @@
+using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Equations;
@@ -155,6 +156,7 @@ internal sealed class DescriptorReduction
         var left = Enumerable.Range(0, layout.UnknownCount).Where(i => !isEliminated[i]).ToArray();
         open = [.. left.Where(i => !used.Contains(i)).Select(i => SparseVector.From((i, DoubleDouble.One)))];
         var state = left.Where(used.Contains).ToArray();
+        FindDependentSourcesThatSayNothing();
         if (singular is null && state.Length > rows.Count)
         {
             var directions = OpenDirections.Find(rows, state);
@@ -168,6 +170,20 @@ internal sealed class DescriptorReduction
         }
 
         return state;
+    }
+
+    /// <summary>What ideal contacts leave open may stay open; a dependent source that says nothing, or what
+    /// another says already, is at fault wherever it stands.</summary>
+    private void FindDependentSourcesThatSayNothing()
+    {
+        // A part's law stands in the row whose index is that of its current.
+        var laws = Enumerable.Range(0, layout.Circuit.Parts.Length)
+            .Where(i => layout.Circuit.Parts[i] is DependentSource).Select(layout.Current).ToHashSet();
+        int[][] atFault = [.. saysNothing.Select(r => Indices(r.Origin)).Where(laws.Overlaps)];
+        if (singular is null && atFault.Length > 0)
+        {
+            singular = new SingularEquations([.. atFault], Contradicts: false);
+        }
     }
 
     private static int[] Indices(SparseVector vector) => [.. vector.Terms.ToArray().Select(t => t.Index)];

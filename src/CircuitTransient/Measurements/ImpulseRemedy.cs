@@ -14,13 +14,15 @@ internal static class ImpulseRemedy
             "the resistance of the contact and its leads would make it finite: `closed resistance`, "
             + "milliohms for a power contact",
         (VoltageSource or DependentSource, true) =>
-            "the source's inner resistance, milliohms to an ohm, and the inductance of its leads, about 1 µH a metre, "
+            "the source's inner resistance, milliohms to an ohm, and the inductance of its leads, about 1 "
+            + "µH a metre, "
             + "would make it finite",
         (Switch, false) =>
             "the capacitance across the open gap, tens of picofarads, or the arc would make it finite",
         (CurrentSource or DependentSource, false) =>
             "the capacitance across the source, tens of picofarads, would make it finite",
-        (Inductor, false) => "the winding's own capacitance, tens to hundreds of picofarads, would make it finite",
+        (Inductor, false) =>
+            "the winding's own capacitance, tens to hundreds of picofarads, would make it finite",
         _ => null,
     };
 
@@ -29,9 +31,11 @@ internal static class ImpulseRemedy
     public static string? OfStore(Part part, bool isCharge) => (part, isCharge) switch
     {
         (Capacitor, true) =>
-            "the capacitor's series resistance would make it finite: milliohms for a film, tenths of an ohm for an "
+            "the capacitor's series resistance would make it finite: milliohms for a film, tenths of an ohm "
+            + "for an "
             + "electrolytic capacitor",
-        (Inductor, true) => "the winding's leakage inductance, some per cent of its own, would make it finite",
+        (Inductor, true) =>
+            "the winding's leakage inductance, some per cent of its own, would make it finite",
         _ => null,
     };
 }

@@ -48,7 +48,8 @@ internal sealed class IntervalMeasurement(TransientSolution solution, StoredEner
             .Select(i => (Part: solution.Circuit.Parts[i], Charge: Impulse(segment, new CurrentThrough(i)),
                 Flux: Impulse(segment, new VoltageAcross(i))))
             .Where(f => f.Charge is not null || f.Flux is not null).ToArray();
-        var isExplained = found.Any(f => f.Charge is not null && ImpulseRemedy.For(f.Part, isCharge: true) is not null);
+        var isExplained = found.Any(f =>
+            f.Charge is not null && ImpulseRemedy.For(f.Part, isCharge: true) is not null);
         foreach (var (part, charge, flux) in found)
         {
             var isCharge = charge is not null;

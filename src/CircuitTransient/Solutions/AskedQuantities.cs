@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
 using CircuitTransient.Text;
@@ -28,7 +27,8 @@ internal sealed class AskedQuantities(Circuit circuit, Func<Instant, double> ins
         }
     }
 
-    private IEnumerable<(Measurand[] Quantities, TextSpan Span, string Words)> Asked(double from, double until)
+    private IEnumerable<(Measurand[] Quantities, TextSpan Span, string Words)> Asked(
+        double from, double until)
     {
         foreach (var o in circuit.Observations.Where(o => !o.IsByDefault && Overlaps(o.Window, from, until)))
         {
@@ -49,7 +49,8 @@ internal sealed class AskedQuantities(Circuit circuit, Func<Instant, double> ins
 
             if (circuit.Parts[i].LinearUpTo is { } limit)
             {
-                yield return ([limit.IsVoltage ? new VoltageAcross(i) : new CurrentThrough(i)], limit.Span, "judged");
+                Measurand judged = limit.IsVoltage ? new VoltageAcross(i) : new CurrentThrough(i);
+                yield return ([judged], limit.Span, "judged");
             }
 
             if (circuit.Parts[i] is DependentSource follower)
@@ -68,12 +69,14 @@ internal sealed class AskedQuantities(Circuit circuit, Func<Instant, double> ins
     }
 
     private bool Overlaps(Window window, double from, double until) =>
-        (window.From is null || instantOf(window.From) < until) && (window.To is null || instantOf(window.To) > from);
+        (window.From is null || instantOf(window.From) < until)
+        && (window.To is null || instantOf(window.To) > from);
 
     private static Measurand Rated(RatingKind kind, int part) => kind switch
     {
         RatingKind.PeakVoltage or RatingKind.VoltageRate => new VoltageAcross(part),
-        RatingKind.PeakCurrent or RatingKind.CurrentRate or RatingKind.JouleIntegral => new CurrentThrough(part),
+        RatingKind.PeakCurrent or RatingKind.CurrentRate or RatingKind.JouleIntegral =>
+            new CurrentThrough(part),
         _ => new EnergyIn(part),
     };
 
@@ -92,12 +95,14 @@ internal sealed class AskedQuantities(Circuit circuit, Func<Instant, double> ins
         return quantity is CurrentThrough current
             ? Diagnostic.Error(
                 circuit.Source, span,
-                $"the current through `{circuit.Parts[current.Part].Name}` is {words}, but nothing decides how it is "
+                $"the current through `{circuit.Parts[current.Part].Name}` is {words}, but nothing decides "
+                + "how it is "
                 + $"shared with the ideal contacts or sources in parallel{when}",
                 "give the contacts the resistance they have: `closed resistance 1 mΩ`")
             : Diagnostic.Error(
                 circuit.Source, span,
-                $"this voltage is {words}, but nothing fixes it{when}: only open contacts lead to {Where(quantity)}",
+                $"this voltage is {words}, but nothing fixes it{when}: only open contacts lead to "
+                + $"{Where(quantity)}",
                 "give an open contact the resistance of its gap: `open resistance 10 MΩ`");
     }
 

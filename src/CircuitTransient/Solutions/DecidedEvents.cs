@@ -8,10 +8,10 @@ namespace CircuitTransient.Solutions;
 internal sealed class DecidedEvents(Timeline timeline, WatchedQuantities quantities, double resolution)
 {
     private const double Rounding = 1e-14; // of the waveform's own size
-    private const double Nothing = 1e-20; // of the largest current in the circuit: solved in 32 digits, still rounding
+    private const double Nothing = 1e-20; // of the largest current: of 32 digits solved in, still rounding
 
-    /// <summary>The first instant in an interval at which a waiting event's condition holds, and the events that
-    /// act then; null where none does.</summary>
+    /// <summary>The first instant in an interval at which a waiting event's condition holds, and the events
+    /// that act then; null where none does.</summary>
     /// <param name="segments">The interval, solved as if nothing happened in it.</param>
     public (double Time, ImmutableArray<EventReference> Events)? FirstIn(ImmutableArray<Segment> segments)
     {
@@ -41,12 +41,14 @@ internal sealed class DecidedEvents(Timeline timeline, WatchedQuantities quantit
         return (first, [.. found.Where(f => f.Time <= first + resolution).Select(f => f.Event)]);
     }
 
-    /// <summary>What an event waits for: a condition of its own, or the fall of its switch's current.</summary>
+    /// <summary>What an event waits for: a condition of its own, or the fall of its switch's
+    /// current.</summary>
     public static WhenCrosses Watched(EventReference reference, SwitchEvent declared) =>
         declared.Trigger is WhenCrosses condition
             ? condition
             : new WhenCrosses(
-                new CurrentThrough(reference.Part), Rises: false, declared.CutAtMost!.Value, InMagnitude: true, null);
+                new CurrentThrough(reference.Part), Rises: false, declared.CutAtMost!.Value,
+                InMagnitude: true, null);
 
     private double? Holds(WhenCrosses watched, SegmentTable[] tables, double watchedFrom)
     {

@@ -43,8 +43,12 @@ public static class KnownIntervals
         }
     }
 
-    private static IEnumerable<Diagnostic> Find(NetworkLayout layout, Timeline timeline, double from, double until) =>
-        DescriptorReduction.Reduce(layout, NetworkEquations.Assemble(layout, timeline.IsClosed), out _) is { } form
+    private static IEnumerable<Diagnostic> Find(
+        NetworkLayout layout, Timeline timeline, double from, double until)
+    {
+        var rows = NetworkEquations.Assemble(layout, timeline.IsClosed);
+        return DescriptorReduction.Reduce(layout, rows, out _) is { } form
             ? new AskedQuantities(layout.Circuit, timeline.InstantOf).LeftOpenIn(form, from, until)
             : [SingularDiagnosis.Describe(layout, timeline.IsClosed, from)];
+    }
 }

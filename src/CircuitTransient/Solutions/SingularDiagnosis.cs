@@ -18,7 +18,8 @@ public static class SingularDiagnosis
         var places = PartRows(layout);
         var sets = singular!.Sets
             .Select(set => (Parts: PartsOf(set, nodeCount, places), HasNodes: set.Any(e => e < nodeCount)))
-            .OrderBy(s => s.Parts.All(p => circuit.Parts[p] is Switch)) // contacts in parallel alone do no harm
+            // contacts in parallel alone do no harm
+            .OrderBy(s => s.Parts.All(p => circuit.Parts[p] is Switch))
             .ThenBy(s => s.Parts.Length).ToArray();
         var (parts, hasNodes) = sets[0];
         var when = from > 0 ? $" from {EngineeringNumber.Format(from, "s")} on" : string.Empty;

@@ -2,7 +2,8 @@ using CircuitTransient.Circuits;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>The smallest set of parts whose laws contradict each other or say the same twice, in words.</summary>
+/// <summary>The smallest set of parts whose laws contradict each other or say the same twice, in
+/// words.</summary>
 /// <param name="circuit">The circuit.</param>
 /// <param name="parts">The parts, as indices.</param>
 /// <param name="hasNodes">Whether the currents at a node are needed for it: a cut-set, else a loop.</param>
@@ -21,7 +22,8 @@ internal sealed class SingularFault(Circuit circuit, int[] parts, bool hasNodes,
         if (Any(p => p is Resistor { Resistance.Nominal: < 0 }))
         {
             return (
-                $"{Names(parts)} cancel each other exactly{when}: a negative resistance against as much positive "
+                $"{Names(parts)} cancel each other exactly{when}: a negative resistance against as much "
+                + "positive "
                 + "resistance, and what is left has no value",
                 "change one of the values, if only by its tolerance");
         }
@@ -53,11 +55,13 @@ internal sealed class SingularFault(Circuit circuit, int[] parts, bool hasNodes,
             $"the current of {Names(parts)} has no path{when}",
             "give it one: a resistor or capacitor across the source")
         : (
-            $"{Names(parts)} are all that joins two parts of the circuit{when}, and they force currents that do not agree",
+            $"{Names(parts)} are all that joins two parts of the circuit{when}, and they force currents "
+            + "that do not agree",
             "give the current a path: a resistor across the source, or `open resistance 10 MΩ` on a switch");
 
     private (string Message, string Advice) Coils() => (
-        $"{Names(parts)} contradict each other{when}: coils coupled without leakage tie their voltages together, so two "
+        $"{Names(parts)} contradict each other{when}: coils coupled without leakage tie their voltages "
+        + "together, so two "
         + "sources cannot both set them",
         "put the winding resistance in series with a coil, or say what leaks: a coupling of 0.99");
 

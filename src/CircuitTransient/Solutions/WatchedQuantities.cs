@@ -4,8 +4,8 @@ using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>The quantities that switches wait for, as curves: voltages, currents and their rates, powers, stored
-/// energies, and integrals gathered since t = 0.</summary>
+/// <summary>The quantities that switches wait for, as curves: voltages, currents and their rates, powers,
+/// stored energies, and integrals gathered since t = 0.</summary>
 internal sealed class WatchedQuantities
 {
     private readonly Circuit circuit;
@@ -42,8 +42,8 @@ internal sealed class WatchedQuantities
         }
     }
 
-    /// <summary>A quantity over consecutive segments that follow what is kept; null where the equations leave it
-    /// open.</summary>
+    /// <summary>A quantity over consecutive segments that follow what is kept; null where the equations leave
+    /// it open.</summary>
     public CurvePiece[]? Over(SegmentTable[] tables, Measurand quantity)
     {
         var pieces = new CurvePiece[tables.Length];
@@ -80,5 +80,7 @@ internal sealed class WatchedQuantities
     }
 
     private static LinearPiece? Linear(SegmentTable table, Measurand quantity) =>
-        table.Segment.Coefficients(quantity) is { } coefficients ? new LinearPiece(table, coefficients) : null;
+        table.Segment.Coefficients(quantity) is { } coefficients
+            ? new LinearPiece(table, coefficients)
+            : null;
 }

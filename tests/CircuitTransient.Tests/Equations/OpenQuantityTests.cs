@@ -40,8 +40,8 @@ public sealed class OpenQuantityTests
             observe voltage of n
             until 1000 s
             """, 0.5, 999);
-        // A node voltage is what its group's charge says; v of m before: C1 and C3 down, C2 in series with C4 too.
-        // Charge of n: −5 µC; charge of m: +5 µC; a at 0, later 9 V.
+        // A node voltage is what its group's charge says; v of m before: C1 and C3 down, C2 in series with C4
+        // too. Charge of n: −5 µC; charge of m: +5 µC; a at 0, later 9 V.
         double[] before = Solve(0), after = Solve(9);
         Close.To(before[0], solved.Sample("voltage of m", 0), 1e-11);
         Close.To(before[1], solved.Sample("voltage of n", 0), 1e-11);
@@ -104,7 +104,8 @@ public sealed class OpenQuantityTests
             until 5 ms
             """));
         Assert.Equal(
-            $"the current through `S1` is {(asked[0] == 'o' ? "observed" : "required")}, but nothing decides how it is "
+            $"the current through `S1` is {(asked[0] == 'o' ? "observed" : "required")}, but nothing "
+            + "decides how it is "
             + "shared with the ideal contacts or sources in parallel from 1.000 ms on", diagnostic.Message);
         Assert.Equal(asked, diagnostic.Source[diagnostic.Span]);
     }
@@ -135,7 +136,8 @@ public sealed class OpenQuantityTests
             """).Select(d => d.Message).ToArray();
         Assert.Equal(
         [
-            "the current through `S1` is rated, but nothing decides how it is shared with the ideal contacts or sources "
+            "the current through `S1` is rated, but nothing decides how it is shared with the ideal "
+            + "contacts or sources "
             + "in parallel",
             "this voltage is waited for, but nothing fixes it: only open contacts lead to `m`",
         ], messages);

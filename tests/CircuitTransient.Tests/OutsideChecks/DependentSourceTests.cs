@@ -1,11 +1,11 @@
 namespace CircuitTransient.Tests.OutsideChecks;
 
 /// <summary>Networks of dependent sources whose transfer functions stand in textbooks.</summary>
-/// <remarks>Sources, all from memory, none opened: R. P. Sallen and E. L. Key, "A practical method of designing RC
-/// active filters", IRE Transactions on Circuit Theory 2, 1955; B. D. H. Tellegen, "The gyrator, a new electric
-/// network element", Philips Research Reports 3, 1948; J. M. Miller, "Dependence of the input impedance of a
-/// three-electrode vacuum tube upon the load in the plate circuit", 1920; L. O. Chua, C. A. Desoer and E. S. Kuh,
-/// "Linear and Nonlinear Circuits", 1987, for the four kinds.</remarks>
+/// <remarks>Sources, all from memory, none opened: R. P. Sallen and E. L. Key, "A practical method of
+/// designing RC active filters", IRE Transactions on Circuit Theory 2, 1955; B. D. H. Tellegen, "The gyrator,
+/// a new electric network element", Philips Research Reports 3, 1948; J. M. Miller, "Dependence of the input
+/// impedance of a three-electrode vacuum tube upon the load in the plate circuit", 1920; L. O. Chua, C. A.
+/// Desoer and E. S. Kuh, "Linear and Nonlinear Circuits", 1987, for the four kinds.</remarks>
 public sealed class DependentSourceTests
 {
     private const string Driven = """
@@ -66,7 +66,8 @@ public sealed class DependentSourceTests
         {
             var answer = gain == 1
                 ? 1 - ((1 + (t / tau)) * Math.Exp(-t / tau))
-                : gain * (1 - (Math.Exp(-zeta * t / tau) * (Math.Cos(ring * t) + (zeta / tau / ring * Math.Sin(ring * t)))));
+                : gain * (1 - (Math.Exp(-zeta * t / tau)
+                    * (Math.Cos(ring * t) + (zeta / tau / ring * Math.Sin(ring * t)))));
             Close.OfScale(scale, answer, value, 1e-11);
         }
     }

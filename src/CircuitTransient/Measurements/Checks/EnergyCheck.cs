@@ -70,7 +70,8 @@ internal static class EnergyCheck
             {
                 supplied -= GramIntegral.Form(gram, voltage, current);
                 // What goes to and fro counts too: by Schwarz, |∫ v i|² is at most ∫ v² ∫ i².
-                var (v2, i2) = (GramIntegral.Form(gram, voltage, voltage), GramIntegral.Form(gram, current, current));
+                var v2 = GramIntegral.Form(gram, voltage, voltage);
+                var i2 = GramIntegral.Form(gram, current, current);
                 size = Math.Max(size, Math.Sqrt(Math.Max(0, v2) * Math.Max(0, i2)));
             }
         }

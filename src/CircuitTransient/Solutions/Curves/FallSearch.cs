@@ -29,7 +29,8 @@ internal sealed class FallSearch(CurvePiece piece, double level, double rounding
             : LevelSearch.First(piece, -sign, -level, near, until);
     }
 
-    /// <summary>Where the magnitude, falling at an instant, rises again; null where it falls to the end.</summary>
+    /// <summary>Where the magnitude, falling at an instant, rises again; null where it falls to the
+    /// end.</summary>
     private double? Bottom(int sign, double near, double until)
     {
         const double firstStep = 1e-14; // of the segment; doubled until the slope has turned
