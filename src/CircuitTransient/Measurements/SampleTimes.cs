@@ -1,31 +1,33 @@
 using System.Collections.Immutable;
-using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
 
-/// <summary>Chooses the instants of the waveforms: dense where the observed quantities move, every boundary
-/// twice, every peak included.</summary>
+/// <summary>Instants dense where a solution may move: every step is the same fraction of the fastest time
+/// constant still alive, every boundary stands twice.</summary>
 internal static class SampleTimes
 {
+    private const double Slowest = 4; // steps' worth of motion in a segment where nothing moves by itself
+
     /// <summary>The instants in order.</summary>
     /// <param name="solution">The solution.</param>
     /// <param name="count">How many are aimed at.</param>
     /// <param name="extra">Instants that must be among them.</param>
-    public static ImmutableArray<double> Of(TransientSolution solution, int count, IEnumerable<double> extra)
+    /// <param name="shows">For each segment and mode, for how many of its decay times it shows.</param>
+    public static ImmutableArray<double> Of(
+        TransientSolution solution, int count, IEnumerable<double> extra, ImmutableArray<double[]> shows)
     {
-        double coarse = 0.5; // of the fastest living time constant; the number of steps is nearly its inverse
-        for (var k = 0; k < 3; k++)
-        {
-            coarse = Math.Clamp(coarse * Count(solution, coarse, count) / count, 1e-6, 4);
-        }
-
+        var paces = solution.Segments.Select((s, k) => Paces(s, shows[k])).ToArray();
+        var motions = paces.Select(p => p.Sum(pace => pace.Length * pace.Speed)).ToArray();
+        var most = 2.0 * count / motions.Length; // a short inrush gets its due beside a long ringing
+        var fraction = Fraction(motions, count, most);
         var times = new List<double>();
         var wanted = new SortedSet<double>(extra);
-        foreach (var segment in solution.Segments)
+        for (var s = 0; s < motions.Length; s++)
         {
-            var inner = new SortedSet<double>(
-                Steps(solution, segment, coarse, count).Select(tau => segment.Start + tau));
+            var segment = solution.Segments[s];
+            var inner = new SortedSet<double>(Steps(paces[s], Math.Max(fraction, motions[s] / most))
+                .Select(tau => segment.Start + tau));
             inner.UnionWith(wanted.GetViewBetween(segment.Start, segment.End));
             inner.Add(segment.Start);
             inner.Add(segment.End);
@@ -35,12 +37,59 @@ internal static class SampleTimes
         return [.. times];
     }
 
-    private static int Count(TransientSolution solution, double fraction, int count) =>
-        solution.Segments.Sum(s => Steps(solution, s, fraction, count).Length);
+    // The fraction for which the segments, none beyond its most, have the count together.
+    private static double Fraction(double[] motions, int count, double most)
+    {
+        var (fine, coarse) = (1e-9, motions.Max());
+        for (var k = 0; k < 60; k++)
+        {
+            var middle = Math.Sqrt(fine * coarse);
+            (fine, coarse) = motions.Sum(m => Math.Min(most, m / middle)) > count
+                ? (middle, coarse)
+                : (fine, middle);
+        }
 
-    /// <summary>A segment's share of a limited number is by its count, not its length: a short inrush gets
-    /// its due.</summary>
-    private static double[] Steps(TransientSolution solution, Segment segment, double fraction, int count) =>
-        SamplingSteps
-            .Of(segment.Basis, segment.Length, fraction, Math.Max(2, count / solution.Segments.Length));
+        return coarse;
+    }
+
+    private static IEnumerable<double> Steps((double Length, double Speed)[] paces, double fraction)
+    {
+        double start = 0;
+        foreach (var (length, speed) in paces)
+        {
+            var steps = Math.Max(1, (int)Math.Round(length * speed / fraction));
+            for (var k = 0; k < steps; k++)
+            {
+                yield return start + (length * k / steps);
+            }
+
+            start += length;
+        }
+    }
+
+    // From death to death of the fast modes, in order: how long, and the fastest speed alive.
+    private static (double Length, double Speed)[] Paces(Segment segment, double[] shows)
+    {
+        var modes = segment.Basis.Modes;
+        var ends = new double[modes.Length];
+        for (var m = 0; m < ends.Length; m++)
+        {
+            ends[m] = shows[m] < 0 ? 0
+                : modes[m].Decay > 0 ? shows[m] / modes[m].Decay
+                : double.PositiveInfinity;
+        }
+
+        var paces = new List<(double, double)>();
+        double start = 0;
+        var changes = ends.Where(t => t > 0 && t < segment.Length).Append(segment.Length).Distinct();
+        foreach (var end in changes.Order())
+        {
+            var living =
+                Enumerable.Range(0, ends.Length).Where(m => ends[m] > start).Select(m => modes[m].Speed);
+            paces.Add((end - start, living.Append(Slowest / segment.Length).Max()));
+            start = end;
+        }
+
+        return [.. paces];
+    }
 }

@@ -40,8 +40,8 @@ internal sealed record PlotLimit(double Value, double From, double To, string Wo
             yield break;
         }
 
-        var from = Seconds(result, requirement.Window.From) ?? 0;
-        var to = Seconds(result, requirement.Window.To) ?? result.Until;
+        var from = DeclaredInstant.Seconds(result, requirement.Window.From) ?? 0;
+        var to = DeclaredInstant.Seconds(result, requirement.Window.To) ?? result.Until;
         var (lower, upper) = requirement.Bound switch
         {
             Limits limits => (limits.Lower, limits.Upper),
@@ -52,7 +52,7 @@ internal sealed record PlotLimit(double Value, double From, double To, string Wo
         };
         if (requirement.Bound is SettlesTo { By: var by })
         {
-            from = Seconds(result, by) ?? from;
+            from = DeclaredInstant.Seconds(result, by) ?? from;
         }
 
         if (sign < 0)
@@ -69,18 +69,5 @@ internal sealed record PlotLimit(double Value, double From, double To, string Wo
         {
             yield return new(least, from, to, $"at least {EngineeringNumber.Format(least, unit)}");
         }
-    }
-
-    // An event that never came has no instant: the limit is then drawn from the start to the end.
-    internal static double? Seconds(TransientResult result, Instant? instant)
-    {
-        if (instant?.After is not { } reference)
-        {
-            return instant?.Delay.Nominal;
-        }
-
-        var part = result.Circuit.Parts[reference.Part];
-        var acted = result.Events.Where(e => e.Switch == part.Name).ElementAtOrDefault(reference.Event);
-        return acted?.Time + instant.Delay.Nominal;
     }
 }

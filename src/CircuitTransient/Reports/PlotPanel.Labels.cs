@@ -84,7 +84,7 @@ internal sealed partial class PlotPanel
 
     private void AddPeak(Extreme extreme, bool isMax)
     {
-        if (extreme.Value is not { } value || value == 0 || !window.Holds(extreme.Time))
+        if (extreme.Value is not { } value || IsRounding(value) || !window.Holds(extreme.Time))
         {
             return;
         }
@@ -118,6 +118,10 @@ internal sealed partial class PlotPanel
                 IsStrong: true,
                 HasHalo: true));
     }
+
+    // A mark at nothing, or at what rounding left of nothing, tells nothing.
+    private bool IsRounding(double value) =>
+        Math.Abs(value) <= 1e-12 * Math.Abs(observation.Greatest.Value ?? 0);
 
     // Past the lines of the causes where they run close by, so that the label hides none of them.
     private double PeakLabelPlace(double peak, bool isMax)

@@ -45,8 +45,7 @@ internal sealed partial class PlotPanel
         level = new PlotScale(least, greatest, PlotTop + Height, PlotTop);
     }
 
-    private double Height =>
-        window.OriginName is null && window.From == 0 && window.To == result.Until ? 240 : 200;
+    private double Height => window == PlotWindow.Whole(result, observation) ? 240 : 200;
 
     private double PlotTop { get; }
 
@@ -71,7 +70,7 @@ internal sealed partial class PlotPanel
 
     private void AddTitle(double y)
     {
-        var isWhole = window == PlotWindow.Whole(result);
+        var isWhole = window == PlotWindow.Whole(result, observation);
         var title = isWhole ? observation.Name : $"{observation.Name}: {window.Words()}";
         var hidden = causes.IsEmpty ? 0 : observation.Contributions.Length - causes.Length;
         var note = hidden switch

@@ -18,6 +18,22 @@ internal sealed record PlotScale(double From, double To, double Start, double En
         var step = Step((To - From) / aim);
         var largest = Math.Max(Math.Abs(From), Math.Abs(To));
         var exponent = unit is "%" or "°" ? 0 : 3 * (int)Math.Floor(Math.Log10(largest) / 3);
+        if (unit is "V/s" or "A/s" && exponent >= 3)
+        {
+            // Steepness is read a millisecond or a microsecond.
+            var within = exponent >= 6 ? 6 : 3;
+            var (marks, inner) = (
+                this with
+                {
+                    From = From / Math.Pow(10, within),
+                    To = To / Math.Pow(10, within),
+                }
+            ).Ticks(unit[..1], aim);
+            return new PlotTicks(
+                [.. marks.Select(mark => (mark.Value * Math.Pow(10, within), mark.Label))],
+                inner + (within == 6 ? "/µs" : "/ms"));
+        }
+
         var prefix = unit is "A²s" or "%" ? null : Prefix.Write(exponent);
         var scaled =
             prefix is not null ? prefix + unit

@@ -13,10 +13,17 @@ internal sealed record PlotWindow(double From, double To, double Origin = 0, str
     private const double ShortPart = 0.02; // of the study: less than this is some twenty points wide
 
     private const double VisiblePart = 0.02; // of the whole range: what moves less is not worth a panel
+    private const int FewestSamples = 20; // a panel of fewer would show corners that are not there
     private const double SameInstant = 1e-12; // of the study: rounding of event times
 
-    /// <summary>The whole study.</summary>
-    public static PlotWindow Whole(TransientResult result) => new(0, result.Until);
+    /// <summary>The observation's own window: the whole study where none was declared.</summary>
+    public static PlotWindow Whole(TransientResult result, ObservationResult observation)
+    {
+        var declared = result.Circuit.Observations.FirstOrDefault(o => o.Name == observation.Name)?.Window;
+        var from = DeclaredInstant.Seconds(result, declared?.From) ?? 0;
+        var to = DeclaredInstant.Seconds(result, declared?.To) ?? result.Until;
+        return from < to ? new(from, Math.Min(to, result.Until)) : new(0, result.Until);
+    }
 
     /// <summary>The surroundings of an observation's greatest value, where it is too short to be seen in
     /// the whole study; else null.</summary>
@@ -34,16 +41,20 @@ internal sealed record PlotWindow(double From, double To, double Origin = 0, str
         var (crestFrom, crestTo) = Crest(result, observation);
         var isAfterSwitching = delay > 0 && 2 * delay <= crestTo - crestFrom;
         var width = isAfterSwitching ? 2 * delay : crestTo - crestFrom;
-        if (width <= 0 || width >= ShortPart * result.Until)
+        var whole = Whole(result, observation);
+        if (width <= 0 || width >= ShortPart * (whole.To - whole.From))
         {
             return null;
         }
 
         // Where the switching that led to it is near, the panel begins with the switching.
         var start = delay <= 10 * width ? peak.Time - delay : crestFrom;
-        var from = Math.Max(0, start - (0.05 * (peak.Time + (5 * width) - start)));
-        var to = Math.Min(result.Until, peak.Time + Math.Max(5 * width, peak.Time - start));
-        if (Span(result, observation, from, to) < VisiblePart * Span(result, observation, 0, result.Until))
+        var from = Math.Max(whole.From, start - (0.05 * (peak.Time + (5 * width) - start)));
+        var to = Math.Min(whole.To, peak.Time + Math.Max(5 * width, peak.Time - start));
+        var moves =
+            Span(result, observation, from, to)
+            >= VisiblePart * Span(result, observation, whole.From, whole.To);
+        if (!moves || result.SampleTimes.Count(time => time >= from && time <= to) < FewestSamples)
         {
             return null;
         }

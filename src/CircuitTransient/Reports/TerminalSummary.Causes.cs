@@ -84,7 +84,8 @@ public static partial class TerminalSummary
         {
             var rest = ordered[shown.Length..];
             var sum = rest.Sum(share => share.Value ?? 0);
-            rows.Add([$"{rest.Length} smaller ones", Signed(sum, unit), PercentOf(sum, total), "", "", ""]);
+            var count = $"{rest.Length} smaller ones";
+            rows.Add([count, Signed(sum, unit, largest), PercentOf(sum, total), "", "", ""]);
         }
 
         text.Table([Prose, Right, Right, Left, Right, Right], rows, indent: 4);
@@ -102,7 +103,7 @@ public static partial class TerminalSummary
         bool withOwn) =>
         [
             share.Cause,
-            Signed(share.Value, unit),
+            Signed(share.Value, unit, bars.Largest),
             PercentOf(share.Value, total),
             bars.Of(share.Value ?? 0),
             withOwn && share.Own is { Value: { } own, Time: var time }
@@ -159,8 +160,8 @@ public static partial class TerminalSummary
         return decided.Length == 0 ? null : string.Join(", ", decided);
     }
 
-    private static string Signed(double? value, string unit) =>
-        value > 0 ? $"+{Number(value, unit)}" : Number(value, unit);
+    private static string Signed(double? value, string unit, double scale) =>
+        value > 1e-12 * scale ? $"+{Number(value, unit)}" : Number(value, unit, scale);
 
     private static string PercentOf(double? value, double total) =>
         value is { } share && total != 0 ? Percent(share / total) : "";

@@ -55,18 +55,22 @@ public static partial class TerminalSummary
             return;
         }
 
+        var volts = Greatest(result.Events.SelectMany(e => new[] { e.VoltageBefore, e.VoltageAfter }));
+        var amperes = Greatest(result.Events.SelectMany(e => new[] { e.CurrentBefore, e.CurrentAfter }));
         text.Heading("Switchings, with what each switch saw just before and just after");
         text.Table(
             [Right, Prose, Right, Left, Right, Left, Prose],
             result.Events.Select(e => ImmutableArray.Create(
                 Number(e.Time, "s"),
                 InstantWords.Name(e),
-                Number(e.VoltageBefore, "V"),
-                $"→ {Number(e.VoltageAfter, "V")} across",
-                Number(e.CurrentBefore, "A"),
-                $"→ {Number(e.CurrentAfter, "A")} through",
+                Number(e.VoltageBefore, "V", volts),
+                $"→ {Number(e.VoltageAfter, "V", volts)} across",
+                Number(e.CurrentBefore, "A", amperes),
+                $"→ {Number(e.CurrentAfter, "A", amperes)} through",
                 e.Remark ?? "")));
     }
+
+    private static double Greatest(IEnumerable<double?> values) => values.Max(value => Math.Abs(value ?? 0));
 
     private static void WriteObservations(SummaryText text, TransientResult result)
     {
@@ -94,10 +98,11 @@ public static partial class TerminalSummary
         TransientResult result, ObservationResult observed)
     {
         var (unit, max, min) = (observed.Unit, observed.Max, observed.Min);
-        yield return [observed.Name, "max", Number(max.Value, unit), When(result, observed, max)];
-        yield return ["", "min", Number(min.Value, unit), When(result, observed, min)];
-        var final = observed.Final is { } limit ? $"tends to {Number(limit, unit)}" : "tends to no limit";
-        yield return ["", "end", Number(observed.End, unit), final];
+        var scale = Math.Abs(observed.Greatest.Value ?? 0);
+        yield return [observed.Name, "max", Number(max.Value, unit, scale), When(result, observed, max)];
+        yield return ["", "min", Number(min.Value, unit, scale), When(result, observed, min)];
+        var final = observed.Final is null ? "no limit" : Number(observed.Final, unit, scale);
+        yield return ["", "end", Number(observed.End, unit, scale), $"tends to {final}"];
     }
 
     private static string When(TransientResult result, ObservationResult observation, Extreme extreme)
@@ -114,7 +119,8 @@ public static partial class TerminalSummary
         }
 
         // The bound is owed within 1e-9 of the value; where it fell short, the reader is told.
-        return extreme.Bound is { } bound && Math.Abs(bound - value) > 2e-9 * Math.Abs(value)
+        var rounding = 1e-12 * Math.Abs(observation.Greatest.Value ?? 0);
+        return extreme.Bound is { } bound && Math.Abs(bound - value) > (2e-9 * Math.Abs(value)) + rounding
             ? when + $"; proven only not to pass {Number(bound, observation.Unit)}"
             : when;
     }
@@ -236,6 +242,10 @@ public static partial class TerminalSummary
         value is { } number && double.IsFinite(number)
             ? EngineeringNumber.Format(number, unit)
             : "undetermined";
+
+    // What is left of two equal figures after rounding is no figure: the engine owes 1e-11 of the scale.
+    private static string Number(double? value, string unit, double scale) =>
+        Math.Abs(value ?? scale) <= 1e-12 * scale ? Number(0, unit) : Number(value, unit);
 
     private static string Ratio(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 }

@@ -81,7 +81,7 @@ public static class WaveformPlot
 
     private static IEnumerable<PlotWindow> Windows(TransientResult result, ObservationResult observation)
     {
-        yield return PlotWindow.Whole(result);
+        yield return PlotWindow.Whole(result, observation);
         if (PlotWindow.Enlarged(result, observation) is { } enlarged)
         {
             yield return enlarged;

@@ -63,6 +63,8 @@ public class PlotTraceTests
     [InlineData(0, 71900, "A²s", "0 10 20 30 40 50 60 70", "10³ A²s")]
     [InlineData(0, 1, "V", "0.0 0.2 0.4 0.6 0.8 1.0", "V")]
     [InlineData(930, 936, "V", "930 931 932 933 934 935 936", "V")]
+    [InlineData(0, 369e6, "V/s", "0 50 100 150 200 250 300 350", "V/µs")]
+    [InlineData(0, 3.5e9, "A/s", "0.0 0.5 1.0 1.5 2.0 2.5 3.0 3.5", "kA/µs")]
     [InlineData(0, 120, "%", "0 20 40 60 80 100 120", "%")]
     public void Marks_are_round_and_in_a_fitting_unit(
         double from,

@@ -172,4 +172,14 @@ public class TerminalSummaryTests
         // 210 V in all; the eleven largest are 20 to 10, which leaves 9 + 8 + … + 1 = 45.
         Assert.Contains("    9 smaller ones  +45.00 V  21.4 %", lines);
     }
+
+    [Fact]
+    public void What_rounding_left_over_is_written_as_zero()
+    {
+        var result = SampleResults.Bare();
+        var wave = result.Observations[0] with { Min = new(-34.69e-18, 0, InstantSide.At, 0), End = 4e-11 };
+        var lines = TerminalSummary.Write(result with { Observations = [wave] }, []).Split('\n');
+        Assert.Contains("                min       0 V  at the start", lines);
+        Assert.Contains("                end  40.00 pV  tends to 5.000 V", lines);
+    }
 }

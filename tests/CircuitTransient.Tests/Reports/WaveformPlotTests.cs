@@ -1,4 +1,5 @@
 using System.Xml.Linq;
+using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports;
 using SkiaSharp;
@@ -110,6 +111,17 @@ public class WaveformPlotTests
         Assert.Equal(7, places.Length);
         Assert.All(places.Zip(places.Skip(1)), pair =>
             Assert.InRange(pair.Second - pair.First, 14.9, double.MaxValue));
+    }
+
+    [Fact]
+    public void An_observation_with_a_window_is_drawn_within_it()
+    {
+        var result = SampleResults.Inrush();
+        var observed = result.Circuit.Observations[1] with { Window = new(null, new Instant(1.0, null)) };
+        var circuit = result.Circuit with { Observations = [observed] };
+        var texts = Texts(result with { Circuit = circuit, Observations = [result.Observations[1]] });
+        Assert.Contains("Kpre closes", texts);
+        Assert.DoesNotContain("Kmain closes", texts);
     }
 
     [Fact]

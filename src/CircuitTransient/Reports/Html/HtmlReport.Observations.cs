@@ -47,7 +47,7 @@ public static partial class HtmlReport
 
     private static Markup StillPicture(TransientResult result, ObservationResult observed, PlotFonts fonts)
     {
-        var (shapes, height) = PlotPanel.Draw(result, observed, PlotWindow.Whole(result), fonts, 0);
+        var (shapes, height) = PlotPanel.Draw(result, observed, PlotWindow.Whole(result, observed), fonts, 0);
         var drawing = new Drawing(PlotPanel.Width, height, $"Waveform of {observed.Name}", shapes);
         return Markup.Of($"<noscript>{Themed(drawing)}</noscript>\n");
     }

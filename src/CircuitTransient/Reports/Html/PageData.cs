@@ -142,8 +142,8 @@ internal sealed partial class PageData
 
     private (double From, double To) WindowOf(Window? window)
     {
-        var from = window?.From is { } start ? PlotLimit.Seconds(result, start) : 0;
-        var to = window?.To is { } end ? PlotLimit.Seconds(result, end) : result.Until;
+        var from = window?.From is { } start ? DeclaredInstant.Seconds(result, start) : 0;
+        var to = window?.To is { } end ? DeclaredInstant.Seconds(result, end) : result.Until;
         return (Math.Max(0, from ?? 0), Math.Min(result.Until, to ?? result.Until));
     }
 

@@ -35,7 +35,7 @@ internal sealed record PageWave(
     /// <summary>The waveform kept for a quantity; null where there is none.</summary>
     public static FollowedWave? Followed(TransientResult result, Measurand quantity, Window window)
     {
-        var from = window.From is null ? 0 : PlotLimit.Seconds(result, window.From) ?? 0;
+        var from = window.From is null ? 0 : DeclaredInstant.Seconds(result, window.From) ?? 0;
         return result.Followed.Where(f => f.Quantity == quantity && (f.From == 0 || f.From == from))
             .OrderByDescending(f => f.From == from).FirstOrDefault();
     }
