@@ -13,7 +13,8 @@ public static class TransientAnalysis
     /// <summary>Reads, checks, solves and measures a circuit.</summary>
     /// <param name="source">The circuit file's text.</param>
     /// <param name="options">What is asked for beyond the file.</param>
-    /// <param name="readBeside">Reads a file that the circuit names, by its path relative to the circuit file.</param>
+    /// <param name="readBeside">Reads a file that the circuit names, by its path relative to the circuit
+    /// file.</param>
     /// <param name="cancellation">Stops the work.</param>
     /// <exception cref="OperationCanceledException">The work was stopped.</exception>
     public static AnalysisOutcome Run(
@@ -42,8 +43,8 @@ public static class TransientAnalysis
         return CircuitChecker.Check(syntax, mistakes, readBeside);
     }
 
-    /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have no
-    /// unique solution.</summary>
+    /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have
+    /// no unique solution.</summary>
     public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) => KnownIntervals.FindUnsolvable(circuit);
 }
 

@@ -1,5 +1,5 @@
 using CircuitTransient.Circuits;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Measurements;
 

@@ -1,7 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Checks;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 using CircuitTransient.Text;
 
@@ -28,7 +28,8 @@ public static class ResultBuilder
         var energy = new StoredEnergy(curves);
         var intervals = new IntervalMeasurement(solution, energy);
         var events = new EventMeasurement(curves);
-        var observing = new ObservationMeasurement(curves, times, infinities, options);
+        var observing = new ObservationMeasurement(
+            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options);
         var judging = new RequirementMeasurement(curves, times, infinities);
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
         var stresses = new PartStresses(curves, infinities, s => grams[s]);

@@ -1,6 +1,6 @@
 using System.Diagnostics;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>The integral of a sum of products since some instant: an absorbed energy, a Joule
 /// integral.</summary>

@@ -1,4 +1,4 @@
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A voltage, a current, or the rate of change of one.</summary>
 public sealed class LinearPiece : CurvePiece
@@ -77,8 +77,7 @@ public sealed class LinearPiece : CurvePiece
     }
 
     /// <summary>Parts the modes into slow ones, which a straight line follows better than their amplitude
-    /// bounds
-    /// them over the stretch, and fast ones.</summary>
+    /// bounds them over the stretch, and fast ones.</summary>
     internal SlowAndFast Split(
         double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope)
     {

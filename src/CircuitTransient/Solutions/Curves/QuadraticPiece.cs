@@ -1,6 +1,6 @@
 using System.Collections.Immutable;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A factor times the product of two linear quantities.</summary>
 public sealed record ProductTerm(double Factor, LinearPiece First, LinearPiece Second);

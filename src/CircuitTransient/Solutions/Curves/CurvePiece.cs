@@ -1,7 +1,6 @@
 using CircuitTransient.Numerics;
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A measured quantity on one segment: its value, its derivatives, and bounds that hold between
 /// instants.</summary>

@@ -1,4 +1,6 @@
-namespace CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
+
+namespace CircuitTransient.Measurements;
 
 /// <summary>A global extreme found on a curve.</summary>
 /// <param name="Time">In seconds.</param>
@@ -7,12 +9,9 @@ namespace CircuitTransient.Measurements.Curves;
 public sealed record FoundExtreme(double Value, double Time, int Piece, InstantSide Side, double Bound);
 
 /// <summary>Finds the greatest value of a curve in a closed window and proves that there is no greater: the
-/// window is
-/// cut into stretches, each with an upper bound from the derivatives' closed forms; the stretch with the
-/// highest bound
-/// is looked at first, settled where it is monotone or bent one way, else halved, until no bound is above the
-/// best
-/// value by more than 1e-10 of the curve's size.</summary>
+/// window is cut into stretches, each with an upper bound from the derivatives' closed forms; the stretch
+/// with the highest bound is looked at first, settled where it is monotone or bent one way, else halved,
+/// until no bound is above the best value by more than 1e-10 of the curve's size.</summary>
 public sealed class ExtremeSearch
 {
     private const double Resolution = 1e-10;
