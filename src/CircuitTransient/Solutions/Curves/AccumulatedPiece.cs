@@ -101,6 +101,6 @@ public sealed class AccumulatedPiece : CurvePiece
         }
 
         expansion.AddRest(half * growth.Rest, half * growth.Rest, half * growth.RestOfSlope);
-        expansion.Noise += (half * growth.Noise) + (1e-15 * Math.Abs(value));
+        expansion.AddNoise((half * growth.Noise) + (1e-15 * Math.Abs(value)));
     }
 }

@@ -10,19 +10,19 @@ public ref struct Expansion(Span<double> terms)
     public const int Order = 12;
 
     /// <summary>The terms.</summary>
-    public readonly Span<double> Terms = terms;
+    public Span<double> Terms { get; } = terms;
 
     /// <summary>A bound of the remainder.</summary>
-    public double Rest;
+    public double Rest { get; private set; }
 
     /// <summary>A bound of the remainder's slope with respect to s.</summary>
-    public double RestOfSlope;
+    public double RestOfSlope { get; private set; }
 
     /// <summary>A bound of the remainder's second derivative with respect to s.</summary>
-    public double RestOfBend;
+    public double RestOfBend { get; private set; }
 
     /// <summary>What rounding may blur the value by.</summary>
-    public double Noise;
+    public double Noise { get; private set; }
 
     /// <summary>A bound of the magnitude.</summary>
     public readonly double Size
@@ -107,6 +107,9 @@ public ref struct Expansion(Span<double> terms)
         RestOfBend += bend;
     }
 
+    /// <summary>Adds to what rounding may blur the value by.</summary>
+    public void AddNoise(double noise) => Noise += noise;
+
     /// <summary>Adds factor × a × b.</summary>
     public void AddProduct(double factor, scoped Expansion a, scoped Expansion b)
     {
@@ -125,6 +128,6 @@ public ref struct Expansion(Span<double> terms)
                 + (a.SizeOfSlope * b.Rest) + (a.Size * b.RestOfSlope)),
             f * ((a.RestOfBend * b.Size) + (2 * a.RestOfSlope * b.SizeOfSlope) + (a.Rest * b.SizeOfBend)
                 + (a.SizeOfBend * b.Rest) + (2 * a.SizeOfSlope * b.RestOfSlope) + (a.Size * b.RestOfBend)));
-        Noise += f * ((a.Noise * b.Size) + (a.Size * b.Noise));
+        AddNoise(f * ((a.Noise * b.Size) + (a.Size * b.Noise)));
     }
 }

@@ -125,7 +125,7 @@ public sealed class LinearPiece : CurvePiece
         {
             var (place, width, isReal) = (Segment.Basis.Place(m), modes[m].Width, modes[m].IsReal);
             var amplitude = Magnitude(c0, envelope, isReal, place, width);
-            expansion.Noise += 4 * Rounding * amplitude;
+            expansion.AddNoise(4 * Rounding * amplitude);
             var rest = Magnitude(c[^1], envelope, isReal, place, width);
             for (var k = 1; k <= Expansion.Order; k++)
             {
