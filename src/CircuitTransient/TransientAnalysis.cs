@@ -31,9 +31,10 @@ public static class TransientAnalysis
 
         var circuit = checkedCircuit.Value;
         var solution = TransientSolver.Solve(circuit, CauseList.FromStart(circuit), cancellation);
+        var warnings = checkedCircuit.Diagnostics;
         return solution.Succeeded
-            ? new Solved(ResultBuilder.Measure(solution.Value, checkedCircuit.Diagnostics, options, cancellation))
-            : new NoUniqueSolution([.. checkedCircuit.Diagnostics, .. solution.Diagnostics]);
+            ? new Solved(ResultBuilder.Measure(solution.Value, warnings, options, cancellation))
+            : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
     }
 
     /// <summary>Reads and checks a circuit, every mistake in one go; solves nothing.</summary>
@@ -45,7 +46,8 @@ public static class TransientAnalysis
 
     /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have
     /// no unique solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) => KnownIntervals.FindUnsolvable(circuit);
+    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) =>
+        KnownIntervals.FindUnsolvable(circuit);
 }
 
 /// <summary>What came of an analysis.</summary>

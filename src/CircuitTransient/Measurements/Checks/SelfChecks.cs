@@ -35,7 +35,28 @@ internal static class SelfChecks
                 "the equations leave a part's current or voltage open"));
         }
 
+        var quantities = SumCheck.Quantities(solution);
+        var until = FirstMomentary(solution);
+        AddRoute("initial and final values by the limit theorems",
+            RouteChecks.Limits(curves, other, quantities, sizes, until), null);
+        var (inversion, weakness) = RouteChecks.Inversion(curves, other, quantities, sizes, until);
+        AddRoute("samples by numerical inversion of X(s)", inversion, weakness);
         return (checks.ToImmutable(), open.ToImmutable());
+
+        void AddRoute(string name, IndependentValues values, string? weakness)
+        {
+            if (values.Compared > 0)
+            {
+                checks.Add(new SelfCheck(name, values.Worst, values.Allowed, values.Worst <= values.Allowed));
+            }
+
+            if (values.TooWeak > 0 || values.Compared == 0)
+            {
+                open.Add(new NotJudged(name, weakness ?? (values.TooWeak > 0
+                    ? $"{values.TooWeak} values left out: the route's own error estimate is over 1e-6"
+                    : "the route gives no value for this circuit")));
+            }
+        }
 
         void Add(string name, double? worst, double allowed)
         {

@@ -77,7 +77,7 @@ internal static class SumCheck
 
     /// <summary>What is observed and required, as far as it is linear, and everything that is
     /// stored.</summary>
-    private static ImmutableArray<Measurand> Quantities(TransientSolution solution)
+    public static ImmutableArray<Measurand> Quantities(TransientSolution solution)
     {
         var circuit = solution.Circuit;
         var asked =
