@@ -36,13 +36,16 @@ public static class ResultBuilder
 
         var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
             .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
-        var samples =
-            SampleTimes.Of(solution, options.SampleCount, observed.SelectMany(o => Peaks(o.Result)));
-        var observations = Waves(observed, solution, samples);
         var parts = Enumerable.Range(0, circuit.Parts.Length)
             .Select(i => Unless(stresses.Measure(i), cancellation)).ToImmutableArray();
         var requirements =
             circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation)).ToImmutableArray();
+        var waves = SampledWaves.Of(
+            solution, observed, options.SampleCount,
+            [
+                .. observed.SelectMany(o => Peaks(o.Result)),
+                .. requirements.Select(r => r.Worst.Time).Where(t => t >= 0 && t <= solution.Until),
+            ]);
         var (checks, notJudged) = SelfChecks.Run(curves, energy, s => grams[s]);
         return new TransientResult(
             circuit,
@@ -52,51 +55,18 @@ public static class ResultBuilder
                 .Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
             [.. solution.Intervals.Select(intervals.Measure)],
             [.. solution.Occurrences.Select(events.Measure)],
-            samples,
-            observations,
+            waves.Times,
+            waves.Observations,
             [],
             requirements,
             parts,
             checks,
             notJudged,
-            Notices.Of(solution, warnings, observations),
+            Notices.Of(solution, warnings, waves.Observations),
             [])
         {
-            Followed = FollowedWaves.Of(curves, times, samples),
+            FollowedWaves = new(() => FollowedWaves.Of(curves, times, waves.Times)),
         };
-    }
-
-    private static ImmutableArray<ObservationResult> Waves(
-        (ObservationResult Result, ImmutableArray<Curve> Curves)[] observed,
-        TransientSolution solution,
-        ImmutableArray<double> samples)
-    {
-        var waves = Waveform.Of([.. observed.SelectMany(o => o.Curves)], solution, samples);
-        var blank = Enumerable.Repeat(double.NaN, samples.Length).ToImmutableArray();
-        var next = 0;
-        var filled = ImmutableArray.CreateBuilder<ObservationResult>();
-        foreach (var (result, curves) in observed)
-        {
-            if (curves.IsEmpty)
-            {
-                filled.Add(result with
-                {
-                    Total = blank,
-                    ByCause =
-                    [.. result.Contributions.Select(_ => blank)]
-                });
-                continue;
-            }
-
-            filled.Add(result with
-            {
-                Total = waves[next],
-                ByCause = [.. Enumerable.Range(next + 1, curves.Length - 1).Select(k => waves[k])],
-            });
-            next += curves.Length;
-        }
-
-        return filled.ToImmutable();
     }
 
     private static IEnumerable<double> Peaks(ObservationResult result) => [result.Max.Time, result.Min.Time];

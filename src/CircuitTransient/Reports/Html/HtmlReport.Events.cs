@@ -109,8 +109,8 @@ public static partial class HtmlReport
     {
         var magnitude = Math.Sqrt((pole.Re * pole.Re) + (pole.Im * pole.Im));
         var place = pole.Im == 0
-            ? Number(pole.Re, "1/s")
-            : $"{Number(pole.Re, "1/s")} ± j {Number(pole.Im, "rad/s")}";
+            ? $"{Number(pole.Re, "")} 1/s"
+            : $"{Number(pole.Re, "")} 1/s ± j {Number(pole.Im, "")} rad/s";
         var constant = pole.Re == 0 ? "does not decay" : Number(Math.Abs(1 / pole.Re), "s");
         var growing = pole.Re > 0 ? ", growing" : "";
         var frequency = pole.Im == 0 ? "" : Number(magnitude / (2 * Math.PI), "Hz");

@@ -1,12 +1,12 @@
 using System.Collections.Immutable;
 
-namespace CircuitTransient.Reports.Html;
+namespace CircuitTransient.Measurements;
 
 /// <summary>Chooses the samples that several waveforms of one time axis need, so that straight lines between
 /// them stay close to all of them.</summary>
-internal static class SampleThinning
+public static class SampleThinning
 {
-    private const int Halvings = 14;
+    private const int Halvings = 12;
 
     /// <summary>Indices of at most about <paramref name="limit"/> samples: as close as that number
     /// allows.</summary>
@@ -21,7 +21,7 @@ internal static class SampleThinning
         int limit)
     {
         var ranges = waves.Select(Range).ToArray();
-        var (close, far) = (1e-7, 0.2); // of each waveform's own range
+        var (close, far) = (1e-9, 0.2); // of each waveform's own range
         for (var k = 0; k < Halvings; k++)
         {
             var middle = Math.Sqrt(close * far);
