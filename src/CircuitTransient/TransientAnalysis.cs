@@ -13,7 +13,8 @@ public static class TransientAnalysis
     /// <summary>Reads, checks, solves and measures a circuit.</summary>
     /// <param name="source">The circuit file's text.</param>
     /// <param name="options">What is asked for beyond the file.</param>
-    /// <param name="readBeside">Reads a file that the circuit names, by its path relative to the circuit file.</param>
+    /// <param name="readBeside">Reads a file that the circuit names, by its path relative to the circuit
+    /// file.</param>
     /// <param name="cancellation">Stops the work.</param>
     /// <exception cref="OperationCanceledException">The work was stopped.</exception>
     public static AnalysisOutcome Run(
@@ -30,9 +31,10 @@ public static class TransientAnalysis
 
         var circuit = checkedCircuit.Value;
         var solution = TransientSolver.Solve(circuit, CauseList.FromStart(circuit), cancellation);
+        var warnings = checkedCircuit.Diagnostics;
         return solution.Succeeded
-            ? new Solved(ResultBuilder.Measure(solution.Value, checkedCircuit.Diagnostics, options, cancellation))
-            : new NoUniqueSolution([.. checkedCircuit.Diagnostics, .. solution.Diagnostics]);
+            ? new Solved(ResultBuilder.Measure(solution.Value, warnings, options, cancellation))
+            : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
     }
 
     /// <summary>Reads and checks a circuit, every mistake in one go; solves nothing.</summary>
@@ -42,9 +44,10 @@ public static class TransientAnalysis
         return CircuitChecker.Check(syntax, mistakes, readBeside);
     }
 
-    /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have no
-    /// unique solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) => KnownIntervals.FindUnsolvable(circuit);
+    /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have
+    /// no unique solution.</summary>
+    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) =>
+        KnownIntervals.FindUnsolvable(circuit);
 }
 
 /// <summary>What came of an analysis.</summary>

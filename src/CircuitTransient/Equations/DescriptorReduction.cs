@@ -3,13 +3,11 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Equations;
 
 /// <summary>Solves (s E + G) X = R(s) (U, x₀) for its state by structure: algebraic equations are put into
-/// the
-/// others one by one; where rows of E prove dependent, their combination is algebraic and is put in likewise,
-/// until
-/// E is regular. Each step lowers the index by one and is exact in double-double; no part is perturbed.
-/// This is the shuffle algorithm (D. G. Luenberger, "Time-invariant descriptor systems", Automatica 14, 1978,
-/// from
-/// memory), with substitution in place of differentiation so that no pole is invented.</summary>
+/// the others one by one; where rows of E prove dependent, their combination is algebraic and is put in
+/// likewise, until E is regular. Each step lowers the index by one and is exact in double-double; no part is
+/// perturbed. This is the shuffle algorithm (D. G. Luenberger, "Time-invariant descriptor systems",
+/// Automatica 14, 1978, from memory), with substitution in place of differentiation so that no pole is
+/// invented.</summary>
 internal sealed class DescriptorReduction
 {
     private readonly NetworkLayout layout;
@@ -147,8 +145,7 @@ internal sealed class DescriptorReduction
     }
 
     /// <summary>The unknowns left over are the state, as many as there are rows; a direction in them that no
-    /// row
-    /// feels is open (the potential of a floating group, the shares of two ideal contacts in
+    /// row feels is open (the potential of a floating group, the shares of two ideal contacts in
     /// parallel).</summary>
     private int[] ChooseState(out List<SparseVector> open)
     {

@@ -3,9 +3,8 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Equations;
 
 /// <summary>One equation of (s E + G) X = Σ sᵏ Rₖ (U, x₀): a row of each matrix. The columns of Rₖ are the
-/// inputs:
-/// first the sources' transforms, then the stored quantities at the interval's start (whose transforms are
-/// 1).</summary>
+/// inputs: first the sources' transforms, then the stored quantities at the interval's start (whose
+/// transforms are 1).</summary>
 internal sealed class EquationRow(SparseVector e, SparseVector g, SparseVector[] r, SparseVector origin)
 {
     /// <summary>The row of E.</summary>
@@ -27,8 +26,8 @@ internal sealed class EquationRow(SparseVector e, SparseVector g, SparseVector[]
     public bool HasNoRight => Array.TrueForAll(R, v => v.IsEmpty);
 
     /// <summary>Puts the algebraic equation <paramref name="other"/>, solved for an unknown, in the unknown's
-    /// place:
-    /// in the algebraic part as it is, under the derivative with its right side multiplied by s.</summary>
+    /// place: in the algebraic part as it is, under the derivative with its right side multiplied by
+    /// s.</summary>
     public void Substitute(int unknown, EquationRow other)
     {
         var pivot = other.G.At(unknown);

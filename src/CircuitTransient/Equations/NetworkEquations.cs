@@ -7,14 +7,10 @@ using Switch = CircuitTransient.Circuits.Switch;
 namespace CircuitTransient.Equations;
 
 /// <summary>The equations (s E + G) X = R (U, x₀) of a circuit with its switches in given positions:
-/// Kirchhoff's
-/// current law at every node but the reference, then the law of every part. Every part keeps its current as
-/// an
-/// unknown, so a microohm stands in a row of its own and is never added to a large conductance. A capacitor's
-/// law is
-/// divided by its capacitance and a lone inductor's by its inductance: the rows of E hold small whole
-/// numbers, so
-/// loops of capacitors and cut-sets of coils cancel exactly.</summary>
+/// Kirchhoff's current law at every node but the reference, then the law of every part. Every part keeps its
+/// current as an unknown, so a microohm stands in a row of its own and is never added to a large conductance.
+/// A capacitor's law is divided by its capacitance and a lone inductor's by its inductance: the rows of E
+/// hold small whole numbers, so loops of capacitors and cut-sets of coils cancel exactly.</summary>
 internal sealed class NetworkEquations
 {
     private readonly NetworkLayout layout;
@@ -35,8 +31,7 @@ internal sealed class NetworkEquations
     /// <param name="layout">Where each unknown and input stands.</param>
     /// <param name="isClosed">For every part, whether it is a switch that is closed.</param>
     /// <param name="tracksOrigin">Whether rows remember which written equations they are sums of: row k of
-    /// the
-    /// nodes first (node k + 1), then the parts in order.</param>
+    /// the nodes first (node k + 1), then the parts in order.</param>
     public static List<EquationRow> Assemble(
         NetworkLayout layout, ImmutableArray<bool> isClosed, bool tracksOrigin = false)
     {

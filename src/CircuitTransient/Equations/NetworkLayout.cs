@@ -4,10 +4,8 @@ using CircuitTransient.Circuits;
 namespace CircuitTransient.Equations;
 
 /// <summary>Which place each unknown and each input of a circuit has in its equations, whatever its switches
-/// do.
-/// Unknowns are the node voltages to the reference, then a current of every part (two of a transformer).
-/// Inputs are
-/// the independent sources, then what is stored in every capacitor (a voltage) and inductor (a
+/// do. Unknowns are the node voltages to the reference, then a current of every part (two of a transformer).
+/// Inputs are the independent sources, then what is stored in every capacitor (a voltage) and inductor (a
 /// current).</summary>
 public sealed class NetworkLayout
 {
@@ -72,6 +70,10 @@ public sealed class NetworkLayout
 
     /// <summary>The input of an independent source, or of what a capacitor or inductor stores.</summary>
     public int Input(int part) => inputs[part];
+
+    /// <summary>What a part stores by: a capacitor's voltage, a coil's current.</summary>
+    public Measurand Held(int part) =>
+        Circuit.Parts[part] is Capacitor ? new VoltageAcross(part) : new CurrentThrough(part);
 
     private static ImmutableArray<int> Indices(Circuit circuit, Func<Part, bool> isWanted) =>
         [.. Enumerable.Range(0, circuit.Parts.Length).Where(i => isWanted(circuit.Parts[i]))];

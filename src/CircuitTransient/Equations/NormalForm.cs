@@ -3,8 +3,7 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Equations;
 
 /// <summary>The equations of one interval solved for their state: z′ = A z + B u, z(0⁺) = B x₀, every unknown
-/// a
-/// linear function of z, the inputs and their derivatives.</summary>
+/// a linear function of z, the inputs and their derivatives.</summary>
 /// <param name="A">Square, one row for each state variable, 1/s.</param>
 /// <param name="B">One column for each input: a source's drives z′, a stored quantity's sets z(0⁺).</param>
 /// <param name="Unknowns">In the order of <see cref="NetworkLayout"/>.</param>

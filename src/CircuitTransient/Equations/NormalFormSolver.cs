@@ -3,9 +3,8 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Equations;
 
 /// <summary>The last step of the reduction: from rows with a regular E to z′ = A z + B u. A right side that
-/// is a
-/// polynomial in s is divided by s E + G: the quotient acts on the unknowns directly, the remainder drives
-/// the state.</summary>
+/// is a polynomial in s is divided by s E + G: the quotient acts on the unknowns directly, the remainder
+/// drives the state.</summary>
 internal static class NormalFormSolver
 {
     public static NormalForm Solve(

@@ -10,8 +10,7 @@ namespace CircuitTransient.Equations;
 public readonly record struct Term(int Index, DoubleDouble Value, double Scale);
 
 /// <summary>A sparse vector, its terms sorted by index. A sum that cancels to below <see cref="Cancelled"/>
-/// of what
-/// went into it is an exact zero of the network's structure and is dropped.</summary>
+/// of what went into it is an exact zero of the network's structure and is dropped.</summary>
 public sealed class SparseVector
 {
     /// <summary>2⁻⁸⁶: far above the rounding of double-double (2⁻¹⁰⁴), far below any ratio of real

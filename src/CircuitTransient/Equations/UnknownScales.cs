@@ -3,8 +3,7 @@ using CircuitTransient.Circuits;
 namespace CircuitTransient.Equations;
 
 /// <summary>What a unit of each unknown weighs when pivots are compared: a volt 1, an ampere the circuit's
-/// own
-/// impedance level. Only the choice of pivots depends on it, never a value.</summary>
+/// own impedance level. Only the choice of pivots depends on it, never a value.</summary>
 internal static class UnknownScales
 {
     public static double[] Of(NetworkLayout layout)

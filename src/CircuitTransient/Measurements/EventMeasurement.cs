@@ -1,5 +1,5 @@
 using CircuitTransient.Circuits;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;

@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions;
+using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Measurements;
 
@@ -52,7 +53,7 @@ public static class FollowedWaves
     {
         for (var one = 0; one < causes; one++)
         {
-            if (!CurveBuilder.IsQuadratic(quantity))
+            if (!QuantityFactors.IsQuadratic(quantity))
             {
                 yield return (one, null);
                 continue;
@@ -85,7 +86,7 @@ public static class FollowedWaves
             }
         }
 
-        foreach (var observed in circuit.Observations.Where(o => CurveBuilder.IsQuadratic(o.Quantity)))
+        foreach (var observed in circuit.Observations.Where(o => QuantityFactors.IsQuadratic(o.Quantity)))
         {
             yield return Since(observed.Quantity, observed.Window);
         }

@@ -1,11 +1,10 @@
 using System.Collections.Immutable;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Measurements;
 
 /// <summary>The values of all integrals among a set of curves, moved forward together from instant to
-/// instant, so
-/// that the functions of time are evaluated once for all of them.</summary>
+/// instant, so that the functions of time are evaluated once for all of them.</summary>
 internal sealed class GatheredIntegrals
 {
     private readonly ImmutableArray<Curve> curves;

@@ -1,12 +1,11 @@
 using CircuitTransient.Circuits;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
 
 /// <summary>Where a quantity is infinite for an instant: an impulse of a voltage or current, or the rate of
-/// change of
-/// something that jumps.</summary>
+/// change of something that jumps.</summary>
 internal sealed class Infinities(CurveBuilder curves)
 {
     private readonly TransientSolution solution = curves.Solution;
@@ -55,8 +54,7 @@ internal sealed class Infinities(CurveBuilder curves)
     }
 
     /// <summary>By how much a voltage or current jumps at a segment's start; zero at the study's start,
-    /// before which
-    /// nothing is known of it.</summary>
+    /// before which nothing is known of it.</summary>
     private double JumpAt(Measurand quantity, int s)
     {
         if (s == 0 || curves.Of(quantity) is not { } curve)

@@ -16,6 +16,11 @@ internal sealed class IntervalMeasurement(TransientSolution solution, StoredEner
         for (var s = interval.FirstSegment; s < interval.FirstSegment + interval.SegmentCount; s++)
         {
             var before = impulses.Count;
+            foreach (var momentary in s == interval.FirstSegment ? interval.Momentary : [])
+            {
+                AddImpulses(impulses, momentary);
+            }
+
             AddImpulses(impulses, solution.Segments[s]);
             if (impulses.Count > before)
             {

@@ -1,13 +1,14 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
 
 /// <summary>Measures an observed quantity: its extremes and what each cause has in them.</summary>
 internal sealed class ObservationMeasurement(
-    CurveBuilder curves, WindowTimes times, Infinities infinities, AnalysisOptions options)
+    CurveBuilder curves, WindowTimes times, Infinities infinities, SinceEventBreakdown since,
+    AnalysisOptions options)
 {
     private const int MostStretches = 3_000_000; // a million crests, three stretches each
     private const int MostStretchesOfACause = 200_000;
@@ -41,7 +42,7 @@ internal sealed class ObservationMeasurement(
             min,
             EndsRising(total, max, min),
             [.. shares.Select(s => Contribution(observation.Quantity, s, max, min, open))],
-            null,
+            new ContributionsAfter(Since(observation.Quantity, max), Since(observation.Quantity, min)),
             [.. options.At.Select(t => Sample(t, total, shares))],
             [],
             []);
@@ -71,7 +72,7 @@ internal sealed class ObservationMeasurement(
             shares.Add((solution.Causes[c].Name, Share.Own, c, curves.Of(quantity, Share.Own, c, from)!));
         }
 
-        if (CurveBuilder.IsQuadratic(quantity))
+        if (QuantityFactors.IsQuadratic(quantity))
         {
             shares.Add(("joint", Share.Joint, -1, curves.Of(quantity, Share.Joint, -1, from)!));
         }
@@ -99,6 +100,12 @@ internal sealed class ObservationMeasurement(
             share.Name, atMax, atMin, ownMax, ownMin,
             Search(without, window, greatest: true), Search(without, window, greatest: false));
     }
+
+    private SinceEvent? Since(Measurand quantity, Extreme extreme) =>
+        extreme.Value is null || curves.IsAccumulated(quantity)
+            ? null
+            : since.At(quantity, extreme.Time, extreme.Side == InstantSide.Before,
+                times.IntervalOf(options.After));
 
     private static TimedValue Search(Curve curve, (double From, double To) window, bool greatest)
     {

@@ -1,7 +1,8 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Checks;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Measurements.Figures;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 using CircuitTransient.Text;
 
@@ -28,8 +29,10 @@ public static class ResultBuilder
         var energy = new StoredEnergy(curves);
         var intervals = new IntervalMeasurement(solution, energy);
         var events = new EventMeasurement(curves);
-        var observing = new ObservationMeasurement(curves, times, infinities, options);
-        var judging = new RequirementMeasurement(curves, times, infinities);
+        var observing = new ObservationMeasurement(
+            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options);
+        var reading = new FigureMeasurement(curves, times, infinities);
+        var judging = new RequirementMeasurement(curves, times, infinities, reading);
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
         var stresses = new PartStresses(curves, infinities, s => grams[s]);
 
@@ -40,7 +43,7 @@ public static class ResultBuilder
         var requirements =
             circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation)).ToImmutableArray();
         var waves = SampledWaves.Of(
-            curves, times, observed, options.SampleCount,
+            solution, observed, options.SampleCount,
             [
                 .. observed.SelectMany(o => Peaks(o.Result)),
                 .. requirements.Select(r => r.Worst.Time).Where(t => t >= 0 && t <= solution.Until),
@@ -56,7 +59,8 @@ public static class ResultBuilder
             [.. solution.Occurrences.Select(events.Measure)],
             waves.Times,
             waves.Observations,
-            [],
+            [.. circuit.Observations.Where(o => o.Quantity is Figure)
+                .Select(o => Unless(reading.Measure(o), cancellation))],
             requirements,
             parts,
             checks,
@@ -64,7 +68,7 @@ public static class ResultBuilder
             Notices.Of(solution, warnings, waves.Observations),
             [])
         {
-            Followed = waves.Followed,
+            FollowedWaves = new(() => FollowedWaves.Of(curves, times, waves.Times)),
         };
     }
 

@@ -7,16 +7,17 @@ namespace CircuitTransient.Measurements;
 /// constant still alive, every boundary stands twice.</summary>
 internal static class SampleTimes
 {
-    private const double Alive = 9; // e^-9 of what it was: too small to shape a picture
     private const double Slowest = 4; // steps' worth of motion in a segment where nothing moves by itself
 
     /// <summary>The instants in order.</summary>
     /// <param name="solution">The solution.</param>
     /// <param name="count">How many are aimed at.</param>
     /// <param name="extra">Instants that must be among them.</param>
-    public static ImmutableArray<double> Of(TransientSolution solution, int count, IEnumerable<double> extra)
+    /// <param name="shows">For each segment and mode, for how many of its decay times it shows.</param>
+    public static ImmutableArray<double> Of(
+        TransientSolution solution, int count, IEnumerable<double> extra, ImmutableArray<double[]> shows)
     {
-        var paces = solution.Segments.Select(Paces).ToArray();
+        var paces = solution.Segments.Select((s, k) => Paces(s, shows[k])).ToArray();
         var motions = paces.Select(p => p.Sum(pace => pace.Length * pace.Speed)).ToArray();
         var most = 2.0 * count / motions.Length; // a short inrush gets its due beside a long ringing
         var fraction = Fraction(motions, count, most);
@@ -67,16 +68,24 @@ internal static class SampleTimes
     }
 
     // From death to death of the fast modes, in order: how long, and the fastest speed alive.
-    private static (double Length, double Speed)[] Paces(Segment segment)
+    private static (double Length, double Speed)[] Paces(Segment segment, double[] shows)
     {
         var modes = segment.Basis.Modes;
-        var deaths = modes.Select(m => m.Decay > 0 ? Alive / m.Decay : double.PositiveInfinity)
-            .Where(t => t < segment.Length).Append(segment.Length).Distinct().Order().ToArray();
+        var ends = new double[modes.Length];
+        for (var m = 0; m < ends.Length; m++)
+        {
+            ends[m] = shows[m] < 0 ? 0
+                : modes[m].Decay > 0 ? shows[m] / modes[m].Decay
+                : double.PositiveInfinity;
+        }
+
         var paces = new List<(double, double)>();
         double start = 0;
-        foreach (var end in deaths.Where(t => t > 0))
+        var changes = ends.Where(t => t > 0 && t < segment.Length).Append(segment.Length).Distinct();
+        foreach (var end in changes.Order())
         {
-            var living = modes.Where(m => m.Decay * start < Alive).Select(m => m.Speed);
+            var living =
+                Enumerable.Range(0, ends.Length).Where(m => ends[m] > start).Select(m => modes[m].Speed);
             paces.Add((end - start, living.Append(Slowest / segment.Length).Max()));
             start = end;
         }

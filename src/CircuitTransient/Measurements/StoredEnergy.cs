@@ -1,6 +1,6 @@
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements;
@@ -35,37 +35,35 @@ internal sealed class StoredEnergy(CurveBuilder curves)
         return sum;
     }
 
-    /// <summary>Joules in all fields just before t = 0, as stated.</summary>
-    public double Stated()
+    /// <summary>Joules in all fields just before t = 0.</summary>
+    public double Initial()
     {
         var circuit = solution.Circuit;
         double sum = 0;
-        foreach (var part in circuit.Parts)
+        foreach (var part in solution.Layout.Stores)
         {
-            sum += part switch
+            sum += circuit.Parts[part] switch
             {
-                Capacitor { InitialVoltage: { } v } c => c.Capacitance.Nominal / 2 * Square(v.Nominal),
-                Inductor { InitialCurrent: { } i } l => l.Inductance.Nominal / 2 * Square(i.Nominal),
+                Capacitor c => c.Capacitance.Nominal / 2 * Square(Held(part)),
+                Inductor l => l.Inductance.Nominal / 2 * Square(Held(part)),
                 _ => 0,
             };
         }
 
-        return sum + circuit.Couplings.Sum(k => (double)MutualInductances.Mutual(circuit, k)
-            * Carried(circuit.Parts[k.First]) * Carried(circuit.Parts[k.Second]));
+        return sum + circuit.Couplings.Sum(k =>
+            (double)MutualInductances.Mutual(circuit, k) * Held(k.First) * Held(k.Second));
     }
 
     /// <summary>What the impulses at a segment's start lose: stored before, less stored after, and what the
-    /// sources
-    /// supply within the impulses.</summary>
+    /// sources supply within the impulses.</summary>
     public double LostAtStartOf(int segment)
     {
-        var before = segment == 0 ? Stated() : At(segment - 1, end: true);
+        var before = segment == 0 ? Initial() : At(segment - 1, end: true);
         return before - At(segment, end: false) + SuppliedInImpulse(segment);
     }
 
     /// <summary>Joules that sources supply within the impulses at a segment's start: the charge at the
-    /// voltage just
-    /// after, the flux at the current just after.</summary>
+    /// voltage just after, the flux at the current just after.</summary>
     public double SuppliedInImpulse(int segment)
     {
         double sum = 0;
@@ -95,7 +93,7 @@ internal sealed class StoredEnergy(CurveBuilder curves)
         return piece is null ? 0 : piece.ValueAt(end ? piece.Segment.Length : 0);
     }
 
-    private static double Carried(Part part) => ((Inductor)part).InitialCurrent?.Nominal ?? 0;
+    private double Held(int part) => solution.Initial[solution.Layout.Stores.IndexOf(part)];
 
     private static double Square(double x) => x * x;
 }

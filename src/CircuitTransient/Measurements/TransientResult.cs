@@ -40,7 +40,11 @@ public sealed record TransientResult(
 {
     /// <summary>The waveforms, taken apart by causes, of what is judged and of what is quadratic, so that a
     /// reader can scale the causes.</summary>
-    public ImmutableArray<FollowedWave> Followed { get; init; } = [];
+    public ImmutableArray<FollowedWave> Followed => FollowedWaves.Value;
+
+    /// <summary>Those waveforms, evaluated when somebody looks: only a page that scales causes
+    /// does.</summary>
+    internal Lazy<ImmutableArray<FollowedWave>> FollowedWaves { get; init; } = new([]);
 
     /// <summary>Whether every requirement and rating holds.</summary>
     public bool AllHold =>

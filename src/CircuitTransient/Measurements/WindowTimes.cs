@@ -22,6 +22,27 @@ public sealed class WindowTimes
         : acted.TryGetValue(instant.After, out var time) ? time + instant.Delay.Nominal
         : null;
 
+    /// <summary>The interval that an event begins; null for the last one before each extreme.</summary>
+    public int? IntervalOf(AfterEvent? after)
+    {
+        for (var i = solution.Intervals.Length - 1; i >= 0; i--)
+        {
+            var isMeant = after switch
+            {
+                AfterInstant t => solution.Intervals[i].From <= t.Time,
+                AfterSwitching s => solution.Intervals[i].StartsWith.Any(o =>
+                    o.Closes == s.Closes && solution.Circuit.Parts[o.Event.Part].Name == s.Switch),
+                _ => false,
+            };
+            if (isMeant)
+            {
+                return i;
+            }
+        }
+
+        return null;
+    }
+
     /// <summary>A window cut to the study; null where it holds nothing.</summary>
     public (double From, double To)? Of(Window window)
     {

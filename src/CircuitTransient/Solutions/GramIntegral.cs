@@ -4,8 +4,7 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>The integrals over a segment of the products of its functions, in closed form: with them the
-/// energy of
-/// any part is one quadratic form.</summary>
+/// energy of any part is one quadratic form.</summary>
 public static class GramIntegral
 {
     /// <summary>∫₀ʰ φ(τ) φ(τ)ᵀ dτ over a segment, a symmetric matrix of the basis' width.</summary>

@@ -6,8 +6,7 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>A circuit with its switches in given positions, split into its spectral blocks. Made once for
-/// each set
-/// of positions and used for every interval that has them.</summary>
+/// each set of positions and used for every interval that has them.</summary>
 public sealed class IntervalModel
 {
     private readonly DoubleDoubleComplex[][][] drives;

@@ -18,10 +18,8 @@ public enum ModeKind
 }
 
 /// <summary>A group of functions of time that belong together: the upper triangle of the first rows of exp(T
-/// τ), for
-/// a small upper triangular T. They are closed under differentiation, X′ = X T, and stay accurate however
-/// near the
-/// diagonal elements of T are to each other.</summary>
+/// τ), for a small upper triangular T. They are closed under differentiation, X′ = X T, and stay accurate
+/// however near the diagonal elements of T are to each other.</summary>
 public sealed class Mode
 {
     private readonly DoubleDoubleComplex[,] t;

@@ -30,8 +30,7 @@ internal static class ModeEnvelope
     }
 
     /// <summary>|exp(T τ)| ≤ exp(N τ) element by element, N with Re of T's diagonal and the magnitudes above
-    /// it;
-    /// for τ in [a, b] that is at most exp(N a) exp(N⁺ (b − a)), N⁺ without the decays.</summary>
+    /// it; for τ in [a, b] that is at most exp(N a) exp(N⁺ (b − a)), N⁺ without the decays.</summary>
     private static void BoundTriangle(Mode mode, double a, double b, Span<double> bounds)
     {
         var n = mode.Order;
@@ -66,8 +65,7 @@ internal static class ModeEnvelope
     private static double Peak(double rate, double a, double b) => Math.Exp(rate * (rate > 0 ? b : a));
 
     /// <summary>exp(N t) of a triangle that is non-negative off its diagonal: a sum of positive terms, so no
-    /// digit
-    /// is lost. Scaled and squared.</summary>
+    /// digit is lost. Scaled and squared.</summary>
     private static double[,] NonNegativeExponential(double[,] matrix, double t)
     {
         var n = matrix.GetLength(0);

@@ -71,8 +71,7 @@ internal static class ModeEvaluation
     }
 
     /// <summary>Chains [μ 1; 0 μ] and [p 1 0; 0 μ 1; 0 0 μ]: divided differences of the exponential by the
-    /// series
-    /// of (eˣ − 1)/x and its successor, which the segment's length keeps at |x| ≤ 1.</summary>
+    /// series of (eˣ − 1)/x and its successor, which the segment's length keeps at |x| ≤ 1.</summary>
     private static void EvaluateChain(Mode mode, double tau, Span<double> values)
     {
         Put(mode, 0, Exponential(mode.Triangle[0, 0], tau), values);

@@ -4,8 +4,7 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>How one cause, or a sum of causes, moves a network over a segment: the state at the segment's
-/// start,
-/// block by block, and what drives it.</summary>
+/// start, block by block, and what drives it.</summary>
 /// <param name="State">ζ for each block at the segment's start.</param>
 /// <param name="Forcings">The sources' parts that are on.</param>
 internal sealed record Motion(DoubleDoubleComplex[][] State, ImmutableArray<Forcing> Forcings)

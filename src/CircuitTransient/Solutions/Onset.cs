@@ -4,18 +4,20 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>What sets in at a segment's start, and so may come as an impulse: at a switching everything that
-/// is
-/// stored and every source as it stands (the equations begin anew), at a corner what the sources change
+/// is stored and every source as it stands (the equations begin anew), at a corner what the sources change
 /// by.</summary>
 /// <param name="Jumps">For each order of derivative, the change of each input's derivative of that
 /// order.</param>
 /// <param name="Stored">What is stored at the start, for each input; zeros at a corner.</param>
-internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored)
+/// <param name="Sizes">The size each input has had so far: a current cut at its zero leaves its rounding,
+/// which is no impulse.</param>
+internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, double[] Sizes)
 {
     private const int Orders = 4; // derivatives of a source that a network of index up to 5 can pass on
 
     /// <summary>At the start of an interval.</summary>
-    public static Onset OfInterval(NetworkLayout layout, IEnumerable<Motion> motions, DoubleDouble[][] stored)
+    public static Onset OfInterval(
+        NetworkLayout layout, IEnumerable<Motion> motions, DoubleDouble[][] stored, double[] sizes)
     {
         var total = new DoubleDouble[layout.InputCount];
         foreach (var own in stored)
@@ -26,7 +28,7 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored)
             }
         }
 
-        return new Onset(Derivatives(layout, motions), total);
+        return new Onset(Derivatives(layout, motions), total, sizes);
     }
 
     /// <summary>At a source's corner within an interval.</summary>
@@ -44,7 +46,7 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored)
             }
         }
 
-        return new Onset(jumps, new DoubleDouble[layout.InputCount]);
+        return new Onset(jumps, new DoubleDouble[layout.InputCount], new double[layout.InputCount]);
     }
 
     /// <summary>The impulse in an output: volt-seconds of a voltage, coulombs of a current.</summary>
@@ -64,7 +66,7 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored)
 
                 var term = d * (k == 0 ? Stored[i] : k <= Orders ? Jumps[k - 1][i] : DoubleDouble.Zero);
                 sum += term;
-                scale += Math.Abs(term.Hi);
+                scale += Math.Max(Math.Abs(term.Hi), k == 0 ? Math.Abs(d.Hi) * Sizes[i] : 0);
             }
         }
 

@@ -4,9 +4,8 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>One of a mode's functions as e^(μ τ) times a polynomial in u = τ/h over a segment of length h:
-/// exact for
-/// simple poles and forced functions, a series that ends below rounding for joined ones, since (p − μ) h is
-/// below 1.</summary>
+/// exact for simple poles and forced functions, a series that ends below rounding for joined ones, since (p −
+/// μ) h is below 1.</summary>
 /// <param name="Exponent">μ h.</param>
 /// <param name="Powers">The polynomial's coefficients, from u⁰ up.</param>
 internal readonly record struct PolynomialExponential(Complex Exponent, Complex[] Powers)

@@ -6,12 +6,10 @@ namespace CircuitTransient.Solutions;
 /// made of.</summary>
 internal static class PowerMoments
 {
-    /// <summary>Fills in the moments. Where |w| exceeds the highest order the recursion
-    /// Jₖ = (e^w − k Jₖ₋₁)/w runs upwards, since each step shrinks the error; else it runs downwards from the
-    /// highest,
-    /// which Jₙ = e^w Σ (−w)ʲ n!/(n + j + 1)! gives (for Re w &gt; 0 Σ wʲ/(j! (n + j + 1))): integration by
-    /// parts,
-    /// all terms of falling size.</summary>
+    /// <summary>Fills in the moments. Where |w| exceeds the highest order the recursion Jₖ = (e^w − k Jₖ₋₁)/w
+    /// runs upwards, since each step shrinks the error; else it runs downwards from the highest, which Jₙ =
+    /// e^w Σ (−w)ʲ n!/(n + j + 1)! gives (for Re w &gt; 0 Σ wʲ/(j! (n + j + 1))): integration by parts, all
+    /// terms of falling size.</summary>
     public static void Fill(Complex w, Span<Complex> moments)
     {
         var exponential = Complex.Exp(w);

@@ -6,8 +6,7 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>A stretch of the study without a switching or a source's corner: every voltage and current is a
-/// sum of
-/// a fixed set of functions, cause by cause.</summary>
+/// sum of a fixed set of functions, cause by cause.</summary>
 public sealed class Segment
 {
     private readonly SegmentModes modes;

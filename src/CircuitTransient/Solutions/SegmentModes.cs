@@ -4,11 +4,9 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Solutions;
 
 /// <summary>The modes of a segment, and how motions are written in them. A forced response is kept as a
-/// multiple of
-/// its exponential where that is well apart from a block's poles over the segment; where the two are so near
-/// that
-/// their difference times the length is below 1, block and exponential stay together as one triangle, since a
-/// quotient of differences would cancel.</summary>
+/// multiple of its exponential where that is well apart from a block's poles over the segment; where the two
+/// are so near that their difference times the length is below 1, block and exponential stay together as one
+/// triangle, since a quotient of differences would cancel.</summary>
 internal sealed class SegmentModes
 {
     private readonly IntervalModel model;
@@ -150,8 +148,7 @@ internal sealed class SegmentModes
     }
 
     /// <summary>e^(p τ) = e^(μ τ) + (p − μ) e[p, μ]: beside a joined exponential the pole is written so, and
-    /// a network
-    /// at rest is a constant to the last digit instead of two motions that cancel.</summary>
+    /// a network at rest is a constant to the last digit instead of two motions that cancel.</summary>
     private void AddBesideForced(DoubleDoubleComplex[][] sums, int b, Forcing kept,
         DoubleDoubleComplex weight)
     {

@@ -33,7 +33,7 @@ public static class SingularDiagnosis
         if (parts.Any(p => circuit.Parts[p] is DependentSource or IdealTransformer))
         {
             return (
-                $"{names} leave no unique solution{when}: their laws contradict each other or say the same twice",
+                $"{names} leave no unique solution{when}: their laws contradict or repeat each other",
                 "change a gain, or put a resistance in the loop they form");
         }
 

@@ -8,10 +8,9 @@ namespace CircuitTransient.Solutions;
 internal static class StudyEnd
 {
     /// <summary>When the slowest decaying mode of the last interval has fallen to 0.1 %, or after 20 periods
-    /// of the
-    /// slowest undamped one, counted from the last event or source corner; null where neither
+    /// of the slowest undamped one, counted from the last event or source corner; null where neither
     /// exists.</summary>
-    public static (double End, string Reason)? Of(Circuit circuit, IntervalModel model, double now)
+    public static (double Time, string? Reason)? Of(Circuit circuit, IntervalModel model, double now)
     {
         var start = Math.Max(now, LastCorner(circuit));
         double longest = 0;

@@ -37,9 +37,11 @@ internal sealed class Timeline
         }
     }
 
+    /// <summary>Whether an event's instant does not depend on the answer.</summary>
+    public static bool IsFixed(SwitchEvent declared) => declared is { Trigger: AtInstant, CutAtMost: null };
+
     /// <summary>The instant of a fixed event, or from which a conditional one is watched; infinity while it
-    /// hangs on
-    /// an event that has not taken place.</summary>
+    /// hangs on an event that has not taken place.</summary>
     public double Due(EventReference reference, SwitchEvent declared)
     {
         var previous = reference.Event == 0 ? 0 : acted[reference with { Event = reference.Event - 1 }];

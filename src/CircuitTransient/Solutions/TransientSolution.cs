@@ -12,6 +12,7 @@ namespace CircuitTransient.Solutions;
 /// <param name="Segments">Their segments, in order.</param>
 /// <param name="Occurrences">Every switching that took place, in order.</param>
 /// <param name="NeverActed">Declared events that did not take place within the study.</param>
+/// <param name="Initial">What every store holds at t = 0⁻, in the layout's order: volts or amperes.</param>
 public sealed record TransientSolution(
     Circuit Circuit,
     NetworkLayout Layout,
@@ -21,7 +22,8 @@ public sealed record TransientSolution(
     ImmutableArray<SolvedInterval> Intervals,
     ImmutableArray<Segment> Segments,
     ImmutableArray<Occurrence> Occurrences,
-    ImmutableArray<EventReference> NeverActed)
+    ImmutableArray<EventReference> NeverActed,
+    ImmutableArray<double> Initial)
 {
     /// <summary>Index of the segment that holds an instant; at a boundary the later one, unless the earlier
     /// is asked for.</summary>
@@ -49,9 +51,11 @@ public sealed record TransientSolution(
 /// <param name="FirstSegment">Index of its first segment.</param>
 /// <param name="SegmentCount">How many segments it has.</param>
 /// <param name="StartsWith">The switchings at its start.</param>
+/// <param name="Momentary">The first segments of intervals that ended as they began, just before this
+/// one.</param>
 public sealed record SolvedInterval(
     double From, double Until, IntervalModel Model, int FirstSegment, int SegmentCount,
-    ImmutableArray<Occurrence> StartsWith);
+    ImmutableArray<Occurrence> StartsWith, ImmutableArray<Segment> Momentary);
 
 /// <summary>A switching that took place.</summary>
 /// <param name="Time">In seconds.</param>

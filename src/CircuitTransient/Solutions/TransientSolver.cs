@@ -10,23 +10,29 @@ namespace CircuitTransient.Solutions;
 /// alone.</summary>
 public sealed class TransientSolver
 {
+    private const int MostAtOnce = 100; // switchings in no time: more is chatter
+
     private readonly Circuit circuit;
     private readonly NetworkLayout layout;
     private readonly ImmutableArray<Cause> causes;
     private readonly Timeline timeline;
     private readonly IntervalModels models;
-    private readonly CancellationToken cancellation;
+    private readonly IntervalSolver solver;
     private readonly List<Segment> segments = [];
     private readonly List<SolvedInterval> intervals = [];
+    private ImmutableArray<Occurrence> startsWith = [];
+    private ImmutableArray<Segment> momentary = [];
+    private DoubleDouble[][] stored = [];
+    private double now;
 
     private TransientSolver(Circuit circuit, ImmutableArray<Cause> causes, CancellationToken cancellation)
     {
         this.circuit = circuit;
         this.causes = causes;
-        this.cancellation = cancellation;
         layout = new NetworkLayout(circuit);
         timeline = new Timeline(circuit);
         models = new IntervalModels(layout);
+        solver = new IntervalSolver(layout, causes, cancellation);
     }
 
     /// <summary>Solves a circuit.</summary>
@@ -40,53 +46,99 @@ public sealed class TransientSolver
 
     private Outcome<TransientSolution> Run()
     {
-        var stored = InitialQuantities();
-        double now = 0;
-        var end = circuit.Until ?? double.PositiveInfinity;
-        string? endReason = null;
+        if (FindInitialQuantities() is { } unsettled)
+        {
+            return Failed(unsettled);
+        }
+
+        var initial = stored;
+        var atOnce = 0;
         while (true)
         {
-            cancellation.ThrowIfCancellationRequested();
-            var (due, events) = NextFixed();
-            ImmutableArray<Occurrence> startsWith = [];
-            if (due <= now)
-            {
-                startsWith = timeline.Act(now, events, isDecidedByAnswer: false);
-                (due, events) = NextFixed();
-            }
-
+            ActDue();
             if (models.For(timeline.IsClosed) is not { } model)
             {
-                var diagnosis = SingularDiagnosis.Describe(layout, timeline.IsClosed, now);
-                return new Outcome<TransientSolution>(null, [diagnosis]);
+                return Failed(SingularDiagnosis.Describe(layout, timeline.IsClosed, now));
             }
 
-            if (double.IsPositiveInfinity(end) && double.IsPositiveInfinity(due))
+            if (EndFor(model) is not { } end)
             {
-                if (StudyEnd.Of(circuit, model, now) is not { } found)
+                return Failed(StudyEnd.Unknown(circuit));
+            }
+
+            var until = Math.Min(NextFixed().Due, end.Time);
+            var solved = solver.Solve(model, intervals.Count, now, until, stored);
+            if (new DecidedEvents(timeline, 1e-12 * end.Time).FirstIn(solved) is { } decided
+                && decided.Time < until)
+            {
+                atOnce = decided.Time - now <= 1e-12 * end.Time ? atOnce + 1 : 0;
+                if (atOnce > MostAtOnce)
                 {
-                    return new Outcome<TransientSolution>(null, [StudyEnd.Unknown(circuit)]);
+                    return Failed(Chatter(decided.Events[0], now));
                 }
 
-                (end, endReason) = found;
+                Advance(model, decided.Time, solved);
+                startsWith = [.. startsWith, .. timeline.Act(now, decided.Events, isDecidedByAnswer: true)];
+                continue;
             }
 
-            var until = Math.Min(due, end);
-            stored = SolveInterval(model, now, until, stored, startsWith);
-            if (until >= end)
+            Advance(model, until, solved);
+            if (until >= end.Time)
             {
-                return new Outcome<TransientSolution>(Finish(end, endReason), []);
+                return new Outcome<TransientSolution>(Finish(end, initial), []);
             }
-
-            now = until;
         }
+    }
+
+    private void ActDue()
+    {
+        var (due, events) = NextFixed();
+        if (due <= now)
+        {
+            startsWith = [.. startsWith, .. timeline.Act(now, events, isDecidedByAnswer: false)];
+        }
+    }
+
+    /// <summary>The stated end, or the one that follows from the slowest mode once nothing more is fixed to
+    /// happen.</summary>
+    private (double Time, string? Reason)? EndFor(IntervalModel model)
+    {
+        if (circuit.Until is { } stated)
+        {
+            return (stated, null);
+        }
+
+        return double.IsPositiveInfinity(NextFixed().Due)
+            ? StudyEnd.Of(circuit, model, now)
+            : (double.PositiveInfinity, null);
+    }
+
+    /// <summary>Ends the interval at an instant; one that had no time leaves what is stored just after it
+    /// began.</summary>
+    private void Advance(IntervalModel model, double until, ImmutableArray<Segment> solved)
+    {
+        if (until <= now)
+        {
+            stored = solver.StoredAtStart(solved[0]);
+            momentary = [.. momentary, solved[0]];
+            return;
+        }
+
+        var kept = until < solved[^1].End ? solver.Solve(model, intervals.Count, now, until, stored) : solved;
+        intervals.Add(new SolvedInterval(now, until, model, segments.Count, kept.Length, startsWith,
+            momentary));
+        segments.AddRange(kept);
+        stored = solver.StoredAtEnd(kept[^1]);
+        startsWith = [];
+        momentary = [];
+        now = until;
     }
 
     private (double Due, ImmutableArray<EventReference> Events) NextFixed()
     {
         var due = double.PositiveInfinity;
         var events = ImmutableArray.CreateBuilder<EventReference>();
-        foreach (var (reference, declared) in timeline.Waiting())
+        foreach (var (reference, declared) in timeline.Waiting().Where(w => Timeline.IsFixed(w.Event)))
         {
             var time = timeline.Due(reference, declared);
             if (time < due)
@@ -95,7 +147,7 @@ public sealed class TransientSolver
                 events.Clear();
             }
 
-            if (time == due)
+            if (time == due && !double.IsPositiveInfinity(time))
             {
                 events.Add(reference);
             }
@@ -104,97 +156,46 @@ public sealed class TransientSolver
         return (due, events.ToImmutable());
     }
 
-    /// <summary>What every store holds at t = 0⁻, cause by cause.</summary>
-    private DoubleDouble[][] InitialQuantities()
+    /// <summary>Sets what every store holds at t = 0⁻, cause by cause; an error where no settled state
+    /// exists.</summary>
+    private Diagnostic? FindInitialQuantities()
     {
-        var stored = new DoubleDouble[causes.Length][];
-        for (var c = 0; c < causes.Length; c++)
+        if (circuit.StartsSettled)
         {
-            stored[c] = new DoubleDouble[layout.Stores.Length];
-            if (causes[c].Store >= 0)
+            if (models.For(timeline.IsClosed) is not { } model)
             {
-                stored[c][layout.Stores.IndexOf(causes[c].Store)] = causes[c].Stored;
+                return SingularDiagnosis.Describe(layout, timeline.IsClosed, 0);
             }
+
+            (stored, var problem) = SettledStart.Find(model, layout, causes);
+            return problem;
         }
 
-        return stored;
+        stored = StatedStart.Of(layout, causes);
+        return null;
     }
 
-    private DoubleDouble[][] SolveInterval(
-        IntervalModel model, double from, double until, DoubleDouble[][] stored,
-            ImmutableArray<Occurrence> startsWith)
+    private Diagnostic Chatter(EventReference reference, double time)
     {
-        var first = segments.Count;
-        var states = stored.Select(s => StateFrom(model, s)).ToArray();
-        var corners = SourceCorners.Between(causes, from, until);
-        for (var k = 0; k + 1 < corners.Length; k++)
-        {
-            cancellation.ThrowIfCancellationRequested();
-            var motions = ImmutableArray.CreateBuilder<Motion>(causes.Length);
-            for (var c = 0; c < causes.Length; c++)
-            {
-                motions.Add(new Motion(states[c], Forcings(causes[c], corners[k])));
-            }
-
-            var modes =
-                new SegmentModes(model, corners[k], corners[k + 1], motions.SelectMany(m => m.Forcings));
-            var onset = k == 0 ? Onset.OfInterval(layout, motions, stored)
-                : Onset.OfCorner(layout, segments[^1], motions);
-            var segment = new Segment(
-                model, intervals.Count, corners[k], corners[k + 1], modes, motions.ToImmutable(), onset);
-            segments.Add(segment);
-            for (var c = 0; c < causes.Length && k + 2 < corners.Length; c++)
-            {
-                states[c] = segment.StateAtEnd(c);
-            }
-        }
-
-        intervals.Add(new SolvedInterval(from, until, model, first, segments.Count - first, startsWith));
-        return [.. Enumerable.Range(0, causes.Length).Select(c => StoredAtEnd(segments[^1], c))];
+        var part = (Switch)circuit.Parts[reference.Part];
+        return Diagnostic.Error(
+            circuit.Source,
+            part.Events[reference.Event].Span,
+            $"`{part.Name}` chatters: over {MostAtOnce} switchings at {EngineeringNumber.Format(time, "s")}",
+            "leave a gap between the level that opens a switch and the level that closes it");
     }
 
-    private ImmutableArray<Forcing> Forcings(Cause cause, double start) =>
-        cause.Source < 0
-            ? []
-            : Forcing.Of(cause.Pieces, layout.Input(cause.Source), CauseList.ScaleOf(circuit, cause.Source),
-                start);
+    private static Outcome<TransientSolution> Failed(Diagnostic diagnostic) => new(null, [diagnostic]);
 
-    private DoubleDoubleComplex[][] StateFrom(IntervalModel model, DoubleDouble[] stored)
-    {
-        var state = new DoubleDoubleComplex[model.Blocks.Length][];
-        for (var b = 0; b < state.Length; b++)
-        {
-            state[b] = new DoubleDoubleComplex[model.Blocks[b].Size];
-            for (var k = 0; k < stored.Length; k++)
-            {
-                if (!stored[k].IsZero)
-                {
-                    var drive = model.Drive(b, layout.Sources.Length + k);
-                    for (var i = 0; i < drive.Length; i++)
-                    {
-                        state[b][i] += drive[i] * stored[k];
-                    }
-                }
-            }
-        }
-
-        return state;
-    }
-
-    private DoubleDouble[] StoredAtEnd(Segment segment, int cause) =>
-        [.. layout.Stores.Select(p => segment.ValueAtEnd(Held(p), cause))];
-
-    private Measurand Held(int part) =>
-        circuit.Parts[part] is Capacitor ? new VoltageAcross(part) : new CurrentThrough(part);
-
-    private TransientSolution Finish(double end, string? reason) => new(
+    private TransientSolution Finish((double Time, string? Reason) end, DoubleDouble[][] initial) => new(
         circuit,
         layout,
-        end,
-        reason,
+        end.Time,
+        end.Reason,
         causes,
         [.. intervals],
         [.. segments],
         [.. timeline.Occurrences],
-        [.. timeline.Waiting().Select(w => w.Reference)]);
+        [.. timeline.Waiting().Select(w => w.Reference)],
+        [.. Enumerable.Range(0, layout.Stores.Length).Select(k => initial.Sum(own => (double)own[k]))]);
 }

@@ -1,18 +1,16 @@
 using CircuitTransient.Circuits;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements.Checks;
 
 /// <summary>Energy, interval by interval: what sources supply is stored or turned to heat. Heat is the
-/// integral of
-/// R i² in closed form, supply that of v i, storage that of the fields at the ends: three routes that
-/// meet.</summary>
+/// integral of R i² in closed form, supply that of v i, storage that of the fields at the ends: three routes
+/// that meet.</summary>
 internal static class EnergyCheck
 {
     /// <summary>The worst imbalance over the largest of supply, heat and storage in its interval; null where
-    /// some
-    /// part's current or voltage is open.</summary>
+    /// some part's current or voltage is open.</summary>
     public static double? Worst(CurveBuilder curves, StoredEnergy energy, Func<int, double[,]> gram)
     {
         double worst = 0;

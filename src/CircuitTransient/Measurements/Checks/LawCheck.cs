@@ -1,12 +1,12 @@
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
-using CircuitTransient.Measurements.Curves;
+using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements.Checks;
 
-/// <summary>Kirchhoff's current law at every node and every part's own law, at the ends of segments and between
-/// them: each residual over the largest term of its law at any of these instants.</summary>
+/// <summary>Kirchhoff's current law at every node and every part's own law, at the ends of segments and
+/// between them: each residual over the size that the terms of its law have in the study.</summary>
 internal sealed class LawCheck
 {
     private const int MostSegments = 12;
@@ -18,18 +18,29 @@ internal sealed class LawCheck
     private readonly double[] residuals;
     private readonly double[] scales;
 
-    private LawCheck(CurveBuilder curves)
+    private LawCheck(CurveBuilder curves, StudySizes sizes)
     {
         this.curves = curves;
         circuit = curves.Solution.Circuit;
         residuals = new double[circuit.Nodes.Length + circuit.Parts.Length];
         scales = new double[residuals.Length];
+        for (var i = 0; i < circuit.Parts.Length; i++)
+        {
+            var part = circuit.Parts[i];
+            var current = sizes.Of(new CurrentThrough(i));
+            scales[part.From] = Math.Max(scales[part.From], current);
+            scales[part.To] = Math.Max(scales[part.To], current);
+            scales[circuit.Nodes.Length + i] = part is Capacitor or CurrentSource
+                || part is Switch { OpenResistance: null }
+                ? current
+                : sizes.Of(new VoltageAcross(i));
+        }
     }
 
     /// <summary>The worst relative residual.</summary>
-    public static double Worst(CurveBuilder curves)
+    public static double Worst(CurveBuilder curves, StudySizes sizes)
     {
-        var check = new LawCheck(curves);
+        var check = new LawCheck(curves, sizes);
         var count = curves.Tables.Length;
         var step = Math.Max(1, count / MostSegments);
         for (var s = 0; s < count; s += step)
@@ -99,7 +110,6 @@ internal sealed class LawCheck
     private void NodeLaws((double Value, double Slope)?[] currents)
     {
         var sums = new double[circuit.Nodes.Length];
-        var largest = new double[circuit.Nodes.Length];
         var isOpen = new bool[circuit.Nodes.Length];
         for (var i = 0; i < currents.Length; i++)
         {
@@ -117,15 +127,13 @@ internal sealed class LawCheck
 
             sums[part.From] += current.Value;
             sums[part.To] -= current.Value;
-            largest[part.From] = Math.Max(largest[part.From], Math.Abs(current.Value));
-            largest[part.To] = Math.Max(largest[part.To], Math.Abs(current.Value));
         }
 
         for (var node = 0; node < sums.Length; node++)
         {
             if (!isOpen[node])
             {
-                Note(node, sums[node], largest[node]);
+                Note(node, sums[node]);
             }
         }
     }
@@ -143,28 +151,28 @@ internal sealed class LawCheck
         switch (circuit.Parts[i])
         {
             case Resistor r:
-                Note(place, v.Value - (r.Resistance.Nominal * c.Value), v.Value);
+                Note(place, v.Value - (r.Resistance.Nominal * c.Value));
                 break;
             case Capacitor k:
-                Note(place, c.Value - (k.Capacitance.Nominal * v.Slope), c.Value);
+                Note(place, c.Value - (k.Capacitance.Nominal * v.Slope));
                 break;
             case Inductor l:
-                Note(place, v.Value - (l.Inductance.Nominal * c.Slope) - Induced(i, currents), v.Value);
+                Note(place, v.Value - (l.Inductance.Nominal * c.Slope) - Induced(i, currents));
                 break;
             case VoltageSource source:
-                Note(place, v.Value - WaveValue.At(source.Wave, time, before), v.Value);
+                Note(place, v.Value - WaveValue.At(source.Wave, time, before));
                 break;
             case CurrentSource source:
-                Note(place, c.Value - WaveValue.At(source.Wave, time, before), c.Value);
+                Note(place, c.Value - WaveValue.At(source.Wave, time, before));
                 break;
             case Switch s when model.IsClosed[i]:
-                Note(place, v.Value - ((s.ClosedResistance?.Nominal ?? 0) * c.Value), v.Value);
+                Note(place, v.Value - ((s.ClosedResistance?.Nominal ?? 0) * c.Value));
                 break;
             case Switch { OpenResistance: { } open }:
-                Note(place, v.Value - (open.Nominal * c.Value), v.Value);
+                Note(place, v.Value - (open.Nominal * c.Value));
                 break;
             case Switch:
-                Note(place, c.Value, c.Value);
+                Note(place, c.Value);
                 break;
         }
     }
@@ -174,9 +182,6 @@ internal sealed class LawCheck
             (double)MutualInductances.Mutual(circuit, k)
             * (currents[k.First == coil ? k.Second : k.First]?.Slope ?? double.NaN));
 
-    private void Note(int place, double residual, double size)
-    {
+    private void Note(int place, double residual) =>
         residuals[place] = Math.Max(residuals[place], Math.Abs(residual));
-        scales[place] = Math.Max(scales[place], Math.Abs(size));
-    }
 }

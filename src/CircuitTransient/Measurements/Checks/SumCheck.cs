@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Verification;
 using CircuitTransient.Solutions;
+using CircuitTransient.Text;
 using Segment = CircuitTransient.Solutions.Segment;
 
 namespace CircuitTransient.Measurements.Checks;
@@ -13,36 +14,45 @@ internal static class SumCheck
     private const int MostInstants = 24;
 
     /// <summary>The worst difference over each quantity's largest value at the compared instants; null with a
-    /// reason
-    /// where the other route does not reach.</summary>
-    public static (double? Worst, string? Reason) Worst(TransientSolution solution, AllAtOnceSolution other)
+    /// reason where the other route does not reach.</summary>
+    /// <param name="solution">The solution to be judged.</param>
+    /// <param name="other">The other route's.</param>
+    /// <param name="sizes">What errors are measured by.</param>
+    /// <param name="until">Up to which instant the two may be compared.</param>
+    public static (double? Worst, string? Reason) Worst(
+        TransientSolution solution, AllAtOnceSolution other, StudySizes sizes, double until)
     {
         var quantities = Quantities(solution);
         var worst = new double[quantities.Length];
-        var scale = new double[quantities.Length];
         var step = Math.Max(1, solution.Segments.Length * 2 / MostInstants);
         var compared = 0;
         for (var k = 0; k < solution.Segments.Length * 2; k += step)
         {
             var segment = solution.Segments[k / 2];
             var tau = k % 2 == 0 ? segment.Length / 7 : segment.Length;
-            if (segment.Start + tau > other.Until)
+            if (segment.Start + tau > Math.Min(other.Until, until))
             {
                 break;
             }
 
-            Compare(solution, segment, tau, quantities, other, worst, scale);
+            Compare(solution, segment, tau, quantities, other, worst);
             compared++;
         }
 
+        var rest = other.Rest?.Reason ?? (double.IsPositiveInfinity(until)
+            ? null
+            : $"not compared beyond {EngineeringNumber.Format(until, "s")}: switches act twice at once");
         return compared == 0
-            ? (null, other.Rest?.Reason ?? "the other route gave no value")
-            : (worst.Zip(scale, (w, s) => s == 0 ? 0 : w / s).DefaultIfEmpty(0).Max(), other.Rest?.Reason);
+            ? (null, rest ?? "the other route gave no value")
+            : (worst.Select((w, q) => Relative(w, sizes.Of(quantities[q]))).DefaultIfEmpty(0).Max(), rest);
     }
+
+    private static double Relative(double difference, double size) =>
+        difference == 0 ? 0 : size == 0 ? double.PositiveInfinity : difference / size;
 
     private static void Compare(
         TransientSolution solution, Segment segment, double tau, ImmutableArray<Measurand> quantities,
-        AllAtOnceSolution other, double[] worst, double[] scale)
+        AllAtOnceSolution other, double[] worst)
     {
         var phi = new double[segment.Basis.Width];
         segment.Basis.Evaluate(tau, phi);
@@ -62,13 +72,12 @@ internal static class SumCheck
             }
 
             worst[q] = Math.Max(worst[q], Math.Abs(sum - value));
-            scale[q] = Math.Max(scale[q], Math.Abs(value));
         }
     }
 
     /// <summary>What is observed and required, as far as it is linear, and everything that is
     /// stored.</summary>
-    private static ImmutableArray<Measurand> Quantities(TransientSolution solution)
+    public static ImmutableArray<Measurand> Quantities(TransientSolution solution)
     {
         var circuit = solution.Circuit;
         var asked =

@@ -1,10 +1,8 @@
 using System.Collections.Immutable;
 using System.Diagnostics;
 using CircuitTransient.Circuits;
-using CircuitTransient.Equations;
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>Makes curves of measured quantities from a solution.</summary>
 public sealed class CurveBuilder
@@ -50,10 +48,6 @@ public sealed class CurveBuilder
         return curve;
     }
 
-    /// <summary>Whether a quantity is a sum of products, so that causes have a joint part in it.</summary>
-    public static bool IsQuadratic(Measurand measurand) =>
-        measurand is PowerIn or EnergyIn or CouplingEnergy or JouleIntegral;
-
     /// <summary>What two causes have together in a quadratic quantity; of one cause with itself, its own
     /// part.</summary>
     /// <param name="measurand">The quantity.</param>
@@ -62,7 +56,7 @@ public sealed class CurveBuilder
     /// <param name="from">Since when an integral gathers, in seconds.</param>
     public Curve? OfPair(Measurand measurand, int one, int other, double from = 0)
     {
-        var (factor, first, second) = Factors(measurand);
+        var (factor, first, second, _) = QuantityFactors.OfAny(solution.Circuit, measurand)!;
         return Quadratic(measurand, Pair, from);
 
         QuadraticPiece? Pair(int s)
@@ -81,7 +75,7 @@ public sealed class CurveBuilder
 
     private Curve? Build(Measurand measurand, Share share, int cause, double from)
     {
-        if (IsQuadratic(measurand))
+        if (QuantityFactors.IsQuadratic(measurand))
         {
             return Quadratic(measurand, s => Products(s, measurand, share, cause), from);
         }
@@ -128,12 +122,8 @@ public sealed class CurveBuilder
 
     /// <summary>Whether a quantity is an integral over time: the energy of what does not store, a Joule
     /// integral.</summary>
-    public bool IsAccumulated(Measurand measurand) => measurand switch
-    {
-        JouleIntegral => true,
-        EnergyIn e => solution.Circuit.Parts[e.Part] is not (Capacitor or Inductor),
-        _ => false,
-    };
+    public bool IsAccumulated(Measurand measurand) =>
+        QuantityFactors.OfAny(solution.Circuit, measurand) is { IsIntegrated: true };
 
     private LinearPiece? Linear(int s, Measurand measurand, Share share, int cause)
     {
@@ -163,7 +153,7 @@ public sealed class CurveBuilder
 
     private QuadraticPiece? Products(int s, Measurand measurand, Share share, int cause)
     {
-        var (factor, first, second) = Factors(measurand);
+        var (factor, first, second, _) = QuantityFactors.OfAny(solution.Circuit, measurand)!;
         var terms = ImmutableArray.CreateBuilder<ProductTerm>();
         if (share != Share.Joint)
         {
@@ -195,32 +185,4 @@ public sealed class CurveBuilder
             return true;
         }
     }
-
-    private (double Factor, Measurand First, Measurand Second) Factors(Measurand measurand)
-    {
-        var circuit = solution.Circuit;
-        switch (measurand)
-        {
-            case PowerIn p:
-                return (p.Delivered ? -1 : 1, new VoltageAcross(p.Part), new CurrentThrough(p.Part));
-            case JouleIntegral j:
-                return (1, new CurrentThrough(j.Part), new CurrentThrough(j.Part));
-            case CouplingEnergy k:
-                var coupling = circuit.Couplings[k.Coupling];
-                return ((double)MutualInductances.Mutual(circuit, coupling),
-                    new CurrentThrough(coupling.First), new CurrentThrough(coupling.Second));
-            case EnergyIn e when circuit.Parts[e.Part] is Capacitor c:
-                return (Sign(e) * c.Capacitance.Nominal / 2, new VoltageAcross(e.Part),
-                    new VoltageAcross(e.Part));
-            case EnergyIn e when circuit.Parts[e.Part] is Inductor l:
-                return (Sign(e) * l.Inductance.Nominal / 2, new CurrentThrough(e.Part),
-                    new CurrentThrough(e.Part));
-            case EnergyIn e:
-                return (Sign(e), new VoltageAcross(e.Part), new CurrentThrough(e.Part));
-            default:
-                throw new UnreachableException($"{measurand} is no product");
-        }
-    }
-
-    private static double Sign(EnergyIn energy) => energy.Delivered ? -1 : 1;
 }

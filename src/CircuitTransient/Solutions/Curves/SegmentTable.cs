@@ -1,6 +1,5 @@
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A segment's functions tabulated where they move, once for all curves on it.</summary>
 public sealed class SegmentTable

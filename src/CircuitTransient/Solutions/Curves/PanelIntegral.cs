@@ -1,4 +1,4 @@
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>The integral of a curve over a stretch of one segment.</summary>
 internal static class PanelIntegral

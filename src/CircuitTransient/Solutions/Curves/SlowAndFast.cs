@@ -1,4 +1,4 @@
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A linear quantity over a stretch of time, its slow modes apart from its fast ones.</summary>
 /// <param name="First">The slow modes' sum at a first instant.</param>

@@ -1,7 +1,6 @@
 using System.Collections.Immutable;
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A measured quantity over the whole study, piece by piece.</summary>
 /// <param name="Pieces">One for each segment.</param>

@@ -1,10 +1,8 @@
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>The instants and weights that integrate products of a segment's functions to rounding: panels
-/// that the
-/// fastest living function crosses in at most two time constants, by the rules of Gauss and
+/// that the fastest living function crosses in at most two time constants, by the rules of Gauss and
 /// Legendre.</summary>
 internal static class Quadrature
 {

@@ -1,6 +1,5 @@
-using CircuitTransient.Solutions;
 
-namespace CircuitTransient.Measurements.Curves;
+namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>Chooses instants by how fast a segment's functions move: a step is a fraction of the fastest time
 /// constant that is still alive.</summary>

@@ -1,0 +1,152 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Equations;
+using CircuitTransient.Numerics;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Solutions;
+
+/// <summary>What is stored where constants and sines have been on for ever: each source's own forced response
+/// at t = 0. A quantity that the file states is replaced whole and is a cause of its own; one that the
+/// sources leave open (a charge held by capacitors, a current round a loop of coils) is fixed by stated ones,
+/// or it is an error.</summary>
+internal static class SettledStart
+{
+    /// <summary>What every store holds at t = 0⁻, cause by cause; or why there is no settled state.</summary>
+    public static (DoubleDouble[][] Stored, Diagnostic? Problem) Find(
+        IntervalModel model, NetworkLayout layout, ImmutableArray<Cause> causes)
+    {
+        var stored = StatedStart.Of(layout, causes);
+        if (Unstable(model, layout) is { } unstable)
+        {
+            return (stored, unstable);
+        }
+
+        for (var c = 0; c < causes.Length; c++)
+        {
+            if (causes[c].Source >= 0)
+            {
+                var forcings = Forcing.Of(
+                    causes[c].Pieces.Where(p => p.IsPerpetual), layout.Input(causes[c].Source),
+                    CauseList.ScaleOf(layout.Circuit, causes[c].Source), 0);
+                if (Resonance(model, layout, causes[c], forcings) is { } resonance)
+                {
+                    return (stored, resonance);
+                }
+
+                stored[c] = Forced(model, layout, forcings);
+            }
+        }
+
+        return (stored, OpenQuantities.Fix(model, layout, causes, stored));
+    }
+
+    /// <summary>What the stores hold in the forced response of one source.</summary>
+    private static DoubleDouble[] Forced(IntervalModel model, NetworkLayout layout,
+        ImmutableArray<Forcing> forcings)
+    {
+        var state = new DoubleDoubleComplex[model.Blocks.Length][];
+        for (var b = 0; b < state.Length; b++)
+        {
+            state[b] = new DoubleDoubleComplex[model.Blocks[b].Size];
+            foreach (var forcing in forcings.Where(f => !IsAtPole(model.Blocks[b], f.Exponent)))
+            {
+                var (first, _) = BlockResponse.Forced(
+                    model.Blocks[b], model.Drive(b, forcing.Input), forcing.Exponent);
+                for (var i = 0; i < first.Length; i++)
+                {
+                    state[b][i] += first[i] * forcing.Amplitude;
+                }
+            }
+        }
+
+        var motion = new Motion(state, forcings);
+        return [.. layout.Stores.Select(p => ValueOf(model, motion, layout.Held(p)))];
+    }
+
+    private static DoubleDouble ValueOf(IntervalModel model, Motion motion, Measurand quantity)
+    {
+        var projection = model.Project(quantity);
+        var sum = DoubleDouble.Zero;
+        for (var b = 0; b < motion.State.Length; b++)
+        {
+            DoubleDouble factor = model.Blocks[b].IsReal ? 1 : 2;
+            for (var i = 0; i < motion.State[b].Length; i++)
+            {
+                sum += factor * (projection.Rows[b][i] * motion.State[b][i]).Re;
+            }
+        }
+
+        foreach (var forcing in motion.Forcings)
+        {
+            for (var k = 0; k < projection.Output.Direct.Length; k++)
+            {
+                sum += projection.Output.Direct[k][forcing.Input] * forcing.DerivativeAtStart(k);
+            }
+        }
+
+        return sum;
+    }
+
+    private static Diagnostic? Unstable(IntervalModel model, NetworkLayout layout)
+    {
+        foreach (var block in model.Blocks)
+        {
+            for (var i = 0; i < block.Size; i++)
+            {
+                if (block.T[i, i].Re.Hi > 1e-12 * block.T[i, i].Magnitude)
+                {
+                    var growth = EngineeringNumber.Format(1 / block.T[i, i].Re.Hi, "s");
+                    return Diagnostic.Error(
+                        layout.Circuit.Source, default,
+                        $"there is no settled state to start from: a mode grows, time constant {growth}",
+                        "start as stated, with the charges and currents you know");
+                }
+            }
+        }
+
+        return null;
+    }
+
+    private static Diagnostic? Resonance(
+        IntervalModel model, NetworkLayout layout, Cause cause, ImmutableArray<Forcing> forcings)
+    {
+        foreach (var forcing in forcings)
+        {
+            for (var b = 0; b < model.Blocks.Length; b++)
+            {
+                var isDriven = model.Drive(b, forcing.Input).Any(w => w.Magnitude > 0);
+                if (!isDriven || !IsAtPole(model.Blocks[b], forcing.Exponent))
+                {
+                    continue;
+                }
+
+                var part = layout.Circuit.Parts[cause.Source];
+                var how = forcing.Exponent.IsZero
+                    ? $"`{cause.Name}` drives a charge or current that nothing limits"
+                    : $"`{cause.Name}` drives an undamped mode at its own frequency of "
+                        + EngineeringNumber.Format(Math.Abs(forcing.Exponent.Im.Hi) / (2 * Math.PI), "Hz");
+                return Diagnostic.Error(
+                    layout.Circuit.Source, part.Span, $"there is no settled state to start from: {how}",
+                    "put in the resistance that damps it, or start as stated");
+            }
+        }
+
+        return null;
+    }
+
+    private static bool IsAtPole(SpectralBlock block, DoubleDoubleComplex exponent)
+    {
+        const double rounding = 1e-13; // of the values in the file
+        for (var i = 0; i < block.Size; i++)
+        {
+            var size = Math.Max(block.T[i, i].Magnitude, exponent.Magnitude);
+            if ((block.T[i, i] - exponent).Magnitude <= rounding * size)
+            {
+                return true;
+            }
+        }
+
+        return false;
+    }
+}
