@@ -25,6 +25,7 @@ public sealed class ExtremeSearch
     private double bestTau;
     private int bestPiece;
     private double size;
+    private double abandoned = double.NegativeInfinity; // the highest bound that rounding leaves standing
 
     private ExtremeSearch(Curve curve, double sign, double from, double until)
     {
@@ -89,7 +90,7 @@ public sealed class ExtremeSearch
 
         var time = curve.Pieces[bestPiece].Segment.Start + bestTau;
         return new FoundExtreme(best, Math.Clamp(time, from, until), bestPiece, Side(),
-            Math.Max(best, highest));
+            Math.Max(Math.Max(best, abandoned), highest));
     }
 
     private bool Inside(int p, out double a, out double b)
@@ -171,6 +172,39 @@ public sealed class ExtremeSearch
 
         var upper = Math.Min(stretch.Upper, piece.UpperAround(sign, half, middle, phi, envelope));
         if (upper > best + (Resolution * size))
+        {
+            SettleExpanded(stretch with { Upper = upper }, piece, phi, envelope);
+        }
+    }
+
+    /// <summary>The same by an expansion about the middle, which sees modes cancel.</summary>
+    private void SettleExpanded(
+        Stretch stretch, CurvePiece piece, double[] phi, ReadOnlySpan<double> envelope)
+    {
+        Span<double> terms = stackalloc double[Expansion.Order];
+        terms.Clear();
+        var middle = stretch.From + ((stretch.Until - stretch.From) / 2);
+        var expansion = new Expansion(terms);
+        piece.Expand((stretch.Until - stretch.From) / 2, middle, phi, envelope, ref expansion);
+        var bend = 2 * sign * terms[2];
+        var change = expansion.ChangeOfBend;
+        if (Math.Abs(terms[1]) >= expansion.ChangeOfSlope || bend - change >= 0)
+        {
+            return;
+        }
+
+        if (bend + change < 0)
+        {
+            Climb(stretch, piece, phi);
+            return;
+        }
+
+        var upper = Math.Min(stretch.Upper, expansion.Upper(sign));
+        if (upper <= best + expansion.Noise)
+        {
+            abandoned = Math.Max(abandoned, upper);
+        }
+        else if (upper > best + (Resolution * size))
         {
             Push(stretch with { Until = middle, Upper = upper });
             Push(stretch with { From = middle, Upper = upper });

@@ -83,4 +83,24 @@ public sealed class AccumulatedPiece : CurvePiece
                 rate.UpperAround(-1, half, tau, middle, envelope));
         return (sign * ValueAt(tau, middle)) + (half * growth);
     }
+
+    /// <inheritdoc/>
+    public override void Expand(
+        double half, double tau, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope,
+        ref Expansion expansion)
+    {
+        Span<double> terms = stackalloc double[Expansion.Order];
+        terms.Clear();
+        var growth = new Expansion(terms);
+        rate.Expand(half, tau, phi, envelope, ref growth);
+        var value = ValueAt(tau, phi);
+        expansion.Add(0, value);
+        for (var k = 0; k < terms.Length; k++)
+        {
+            expansion.Add(k + 1, half * terms[k] / (k + 1));
+        }
+
+        expansion.AddRest(half * growth.Rest, half * growth.Rest, half * growth.RestOfSlope);
+        expansion.AddNoise((half * growth.Noise) + (1e-15 * Math.Abs(value)));
+    }
 }

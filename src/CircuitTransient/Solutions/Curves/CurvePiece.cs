@@ -39,6 +39,16 @@ public abstract class CurvePiece(SegmentTable table)
     public abstract double UpperAround(
         double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope);
 
+    /// <summary>Expands the curve about τ, half a width to either side.</summary>
+    /// <param name="half">Half the width of the stretch.</param>
+    /// <param name="tau">Its middle.</param>
+    /// <param name="phi">The functions there.</param>
+    /// <param name="envelope">Bounds of the functions over the stretch.</param>
+    /// <param name="expansion">What is added to.</param>
+    public abstract void Expand(
+        double half, double tau, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope,
+        ref Expansion expansion);
+
     /// <summary>The value at τ.</summary>
     public double ValueAt(double tau)
     {

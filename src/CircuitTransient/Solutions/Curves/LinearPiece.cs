@@ -3,10 +3,13 @@ namespace CircuitTransient.Solutions.Curves;
 /// <summary>A voltage, a current, or the rate of change of one.</summary>
 public sealed class LinearPiece : CurvePiece
 {
+    private const double Rounding = 1.2e-16; // half a unit of a double's last place
+
     private readonly double[] c0;
     private readonly double[] c1;
     private readonly double[] c2;
     private readonly double[] c3;
+    private double[][]? derivatives;
 
     /// <summary>Takes the coefficients of the segment's functions.</summary>
     public LinearPiece(SegmentTable table, double[] coefficients)
@@ -101,6 +104,75 @@ public sealed class LinearPiece : CurvePiece
             sum = width * width / 8 * bend <= amplitude
                 ? sum.WithSlow(start, end, slope, amplitude, rate, bend)
                 : sum with { Fast = sum.Fast + amplitude };
+        }
+
+        return sum;
+    }
+
+    /// <inheritdoc/>
+    public override void Expand(
+        double half, double tau, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope,
+        ref Expansion expansion)
+    {
+        if (IsZero)
+        {
+            return;
+        }
+
+        var c = derivatives ??= Derivatives();
+        var modes = Segment.Basis.Modes;
+        for (var m = 0; m < modes.Length; m++)
+        {
+            var (place, width, isReal) = (Segment.Basis.Place(m), modes[m].Width, modes[m].IsReal);
+            var amplitude = Magnitude(c0, envelope, isReal, place, width);
+            expansion.AddNoise(4 * Rounding * amplitude);
+            var rest = Magnitude(c[^1], envelope, isReal, place, width);
+            for (var k = 1; k <= Expansion.Order; k++)
+            {
+                rest *= half / k;
+            }
+
+            if (!(rest <= amplitude))
+            {
+                // too fast for a polynomial: its amplitude is all that is said of it
+                expansion.AddRest(
+                    amplitude,
+                    half * Magnitude(c1, envelope, isReal, place, width),
+                    half * half * Magnitude(c2, envelope, isReal, place, width));
+                continue;
+            }
+
+            double factor = 1;
+            for (var k = 0; k < Expansion.Order; k++)
+            {
+                expansion.Add(k, factor * Dot(c[k].AsSpan(place, width), phi.Slice(place, width)));
+                factor *= half / (k + 1);
+            }
+
+            expansion.AddRest(
+                rest, Expansion.Order * rest, Expansion.Order * (Expansion.Order - 1) * rest);
+        }
+    }
+
+    private double[][] Derivatives()
+    {
+        var c = new double[Expansion.Order + 1][];
+        (c[0], c[1], c[2], c[3]) = (c0, c1, c2, c3);
+        for (var k = 4; k < c.Length; k++)
+        {
+            c[k] = Segment.Basis.Differentiate(c[k - 1]);
+        }
+
+        return c;
+    }
+
+    private static double Magnitude(
+        double[] c, ReadOnlySpan<double> envelope, bool isReal, int place, int width)
+    {
+        double sum = 0;
+        for (var k = place; k < place + width; k++)
+        {
+            sum += Pair(isReal, c, k, place) * envelope[k];
         }
 
         return sum;

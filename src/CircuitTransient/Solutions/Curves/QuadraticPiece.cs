@@ -101,6 +101,31 @@ public sealed class QuadraticPiece(SegmentTable table, ImmutableArray<ProductTer
         return (sign * value) + (half * Math.Abs(slope)) + (half * half / 2 * bend) + fast;
     }
 
+    /// <inheritdoc/>
+    public override void Expand(
+        double half, double tau, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope,
+        ref Expansion expansion)
+    {
+        Span<double> first = stackalloc double[Expansion.Order];
+        Span<double> second = stackalloc double[Expansion.Order];
+        foreach (var term in terms)
+        {
+            first.Clear();
+            var a = new Expansion(first);
+            term.First.Expand(half, tau, phi, envelope, ref a);
+            if (ReferenceEquals(term.First, term.Second))
+            {
+                expansion.AddProduct(term.Factor, a, a);
+                continue;
+            }
+
+            second.Clear();
+            var b = new Expansion(second);
+            term.Second.Expand(half, tau, phi, envelope, ref b);
+            expansion.AddProduct(term.Factor, a, b);
+        }
+    }
+
     private (double Factor, SlowAndFast First, SlowAndFast Second)[] Splits(
         double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last, ReadOnlySpan<double> envelope)
     {
