@@ -15,8 +15,8 @@ public sealed class LargerCircuitTests : IDisposable
 
     public void Dispose() => commandLine.Dispose();
 
-    /// <remarks>IEC 62305-1 annex B (from memory): i = (I/k) x¹⁰/(1 + x¹⁰) e^(−t/τ₂), x = t/τ₁. Peak, charge and
-    /// specific energy of the wave itself: computed by quadrature outside this program.</remarks>
+    /// <remarks>IEC 62305-1 annex B (from memory): i = (I/k) x¹⁰/(1 + x¹⁰) e^(−t/τ₂), x = t/τ₁. Peak, charge
+    /// and specific energy of the wave itself: computed by quadrature outside this program.</remarks>
     [Theory]
     [InlineData(200e3, 0.93, 19e-6, 485e-6, 200.254e3, 100.2314, 10.27533e6)]
     [InlineData(100e3, 0.986, 1.82e-6, 285e-6, 100.039e3, 28.7176, 1.44497e6)]

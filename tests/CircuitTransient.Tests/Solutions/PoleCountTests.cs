@@ -18,9 +18,9 @@ public sealed class PoleCountTests
     private static readonly Gen<(int Nodes, uint[] Draws)> _drawing =
         Gen.Select(Gen.Int[2, 12], Gen.UInt.Array[20, 52]);
 
-    /// <remarks>The order of complexity: the stores, less one for each loop of capacitors and voltage sources and
-    /// each cut-set of coils and current sources (P. R. Bryant, "The order of complexity of electrical networks",
-    /// Proceedings of the IEE 106 C, 1959, from memory).</remarks>
+    /// <remarks>The order of complexity: the stores, less one for each loop of capacitors and voltage sources
+    /// and each cut-set of coils and current sources (P. R. Bryant, "The order of complexity of electrical
+    /// networks", Proceedings of the IEE 106 C, 1959, from memory).</remarks>
     [Fact]
     public void As_many_as_the_structure_of_a_network_without_dependent_sources_has() =>
         _drawing.Sample(
@@ -30,7 +30,7 @@ public sealed class PoleCountTests
                 var poles = Poles(circuit);
                 Assert.Equal(Order(circuit), poles.Count);
             },
-            seed: "0000000000000", iter: 60, threads: 1);
+            seed: "0000000000000", iter: 40, threads: 1);
 
     /// <remarks>Within a circle, a polynomial has as many zeros as its value turns about zero on it (the
     /// argument principle); det(s E + G) is taken from equations that the poles do not come from.</remarks>
@@ -47,7 +47,7 @@ public sealed class PoleCountTests
                     Assert.Equal(poles.Count(p => p.Magnitude < radius), determinant.TurnsAt(radius));
                 }
             },
-            seed: "0000000000000", iter: 30, threads: 1);
+            seed: "0000000000000", iter: 20, threads: 1);
 
     private static List<Complex> Poles(Circuit circuit)
     {
