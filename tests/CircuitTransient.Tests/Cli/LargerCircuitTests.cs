@@ -1,6 +1,5 @@
 using System.Diagnostics;
 using System.Globalization;
-using System.Text;
 using System.Text.Json;
 using CircuitTransient.Cli;
 using CircuitTransient.Tests.OutsideChecks;

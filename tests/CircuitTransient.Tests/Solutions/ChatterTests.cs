@@ -1,4 +1,3 @@
-using CircuitTransient.Circuits;
 using CircuitTransient.Solutions;
 using CircuitTransient.Tests.OutsideChecks;
 using CircuitTransient.Text;
@@ -14,7 +13,8 @@ public sealed class ChatterTests
         var source = new SourceText("chatter.cause", Relay(60));
         var circuit = TransientAnalysis.Check(source, _ => throw new InvalidOperationException()).Value!;
 
-        var outcome = TransientSolver.Solve(circuit, CauseList.FromStart(circuit));
+        var outcome = TransientSolver.Solve(
+            circuit, CauseList.FromStart(circuit), TestContext.Current.CancellationToken);
 
         var refused = Assert.Single(outcome.Diagnostics);
         Assert.Equal("`Q` chatters: over 100 switchings at 1.000 ms", refused.Message);

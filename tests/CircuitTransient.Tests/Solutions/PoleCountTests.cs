@@ -138,7 +138,8 @@ public sealed class PoleCountTests
             8 => $"dependent source P{k} from {a} to {b} : {size} times current through Feed",
             9 => $"dependent source P{k} from {a} to x{k} : {size} Ω times current through Feed\n"
                 + $"inductor Q{k} from x{k} to {b} : {size} mH",
-            10 => $"transformer P{k} primary from {a} to x{k}, secondary from {b} to y{k} : turns {size} to 7\n"
+            10 =>
+                $"transformer P{k} primary from {a} to x{k}, secondary from {b} to y{k} : turns {size} to 7\n"
                 + $"resistor Q{k} from x{k} to {b} : 3 Ω\ncapacitor S{k} from y{k} to {a} : 2 µF",
             _ => $"inductor P{k} from {a} to x{k} : 1 mH\ninductor Q{k} from {b} to y{k} : {size} mH\n"
                 + $"coupling K{k} of P{k} and Q{k} : 1\n"
