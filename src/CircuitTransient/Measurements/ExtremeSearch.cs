@@ -25,6 +25,7 @@ public sealed class ExtremeSearch
     private double bestTau;
     private int bestPiece;
     private double size;
+    private double abandoned = double.NegativeInfinity; // the highest bound that rounding leaves standing
     private bool isBeaten; // whether the best value is one that another search found
 
     private ExtremeSearch(Curve curve, double sign, double from, double until)
@@ -100,7 +101,7 @@ public sealed class ExtremeSearch
 
         var time = curve.Pieces[bestPiece].Segment.Start + bestTau;
         return new FoundExtreme(best, Math.Clamp(time, from, until), bestPiece, Side(),
-            Math.Max(best, highest));
+            Math.Max(Math.Max(best, abandoned), highest));
     }
 
     private bool Inside(int p, out double a, out double b)
@@ -183,7 +184,11 @@ public sealed class ExtremeSearch
         }
 
         var upper = Math.Min(stretch.Upper, model.Upper(sign));
-        if (upper > best + (Resolution * size))
+        if (upper <= best + model.Noise)
+        {
+            abandoned = Math.Max(abandoned, upper);
+        }
+        else if (upper > best + (Resolution * size))
         {
             Push(stretch with { Until = middle, Upper = upper });
             Push(stretch with { From = middle, Upper = upper });

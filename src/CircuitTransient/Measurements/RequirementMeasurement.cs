@@ -1,10 +1,12 @@
 using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Figures;
 using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Measurements;
 
 /// <summary>Judges requirements.</summary>
-internal sealed class RequirementMeasurement(CurveBuilder curves, WindowTimes times, Infinities infinities)
+internal sealed class RequirementMeasurement(
+    CurveBuilder curves, WindowTimes times, Infinities infinities, FigureMeasurement figures)
 {
     private const int MostStretches = 1_000_000;
 
@@ -15,6 +17,8 @@ internal sealed class RequirementMeasurement(CurveBuilder curves, WindowTimes ti
         var line = curves.Solution.Circuit.Source.LineOf(requirement.Span.Start);
         var (holds, worst, margin) = requirement.Bound switch
         {
+            Limits limits when requirement.Quantity is Figure figure =>
+                JudgeFigure(requirement, figure, limits),
             Limits limits => JudgeLimits(requirement, limits),
             SettlesTo settles => JudgeSettling(requirement, settles),
             _ => throw new System.Diagnostics.UnreachableException($"no verdict on {requirement.Bound}"),
@@ -60,6 +64,22 @@ internal sealed class RequirementMeasurement(CurveBuilder curves, WindowTimes ti
 
         var (worst, margin) = nearest!.Value;
         return (margin >= 0, worst, margin);
+    }
+
+    /// <summary>A figure is one number; where the waveform has none, the requirement does not
+    /// hold.</summary>
+    private (bool Holds, TimedValue Worst, double? Margin) JudgeFigure(
+        Requirement requirement, Figure figure, Limits limits)
+    {
+        if (figures.Read(figure, requirement.Window) is not { Value: { } value, Time: var time })
+        {
+            return NotJudged(requirement);
+        }
+
+        var margin = Math.Min(
+            (limits.Upper ?? double.PositiveInfinity) - value,
+            value - (limits.Lower ?? double.NegativeInfinity));
+        return (margin >= 0, new TimedValue(value, time), margin);
     }
 
     /// <summary>From the stated instant on the quantity stays within the band about its target.</summary>

@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Checks;
+using CircuitTransient.Measurements.Figures;
 using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 using CircuitTransient.Text;
@@ -30,7 +31,8 @@ public static class ResultBuilder
         var events = new EventMeasurement(curves);
         var observing = new ObservationMeasurement(
             curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options);
-        var judging = new RequirementMeasurement(curves, times, infinities);
+        var reading = new FigureMeasurement(curves, times, infinities);
+        var judging = new RequirementMeasurement(curves, times, infinities, reading);
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
         var stresses = new PartStresses(curves, infinities, s => grams[s]);
 
@@ -61,7 +63,8 @@ public static class ResultBuilder
             [.. solution.Occurrences.Select(events.Measure)],
             waves.Times,
             waves.Observations,
-            [],
+            [.. circuit.Observations.Where(o => o.Quantity is Figure)
+                .Select(o => Unless(reading.Measure(o), cancellation))],
             requirements,
             parts,
             checks,

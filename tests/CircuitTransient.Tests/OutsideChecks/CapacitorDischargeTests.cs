@@ -2,7 +2,7 @@ namespace CircuitTransient.Tests.OutsideChecks;
 
 /// <summary>One capacitor discharged through one resistor.</summary>
 /// <remarks>A resistor maker's sheet, quoted (V2): 195 µF from 1500 V to 320 V through 50 Ω takes
-/// 0.015062769 s; time constant 0.00975 s, 45 000 W, 219.375 J. The further digits are computed (C).</remarks>
+/// 0.015062769 s; time constant 0.00975 s, 45 000 W, 219.375 J. Further digits: computed (C).</remarks>
 public sealed class CapacitorDischargeTests
 {
     private const string Through50Ohms = """

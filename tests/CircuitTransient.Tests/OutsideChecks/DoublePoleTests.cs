@@ -49,7 +49,8 @@ public sealed class DoublePoleTests
     {
         var t = microseconds / 10; // in units of 1/a
         var square = ((2 * detuning) + (detuning * detuning)) * t * t;
-        return 0.1 * t * Math.Exp(-t) * Math.Exp(-t * detuning) * (1 + (square / 6) + (square * square / 120));
+        var quotient = 1 + (square / 6) + (square * square / 120);
+        return 0.1 * t * Math.Exp(-t * (1 + detuning)) * quotient;
     }
 
     private static SolvedText Series(double resistance) => SolvedText.Of(

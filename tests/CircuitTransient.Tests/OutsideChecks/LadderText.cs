@@ -9,10 +9,12 @@ internal static class LadderText
     /// <param name="series">What joins two neighbours, with its value: <c>inductor</c>, <c>1 H</c>.</param>
     /// <param name="capacitance">With its unit.</param>
     /// <param name="charged">The node charged to 1 V; 0 for none.</param>
-    public static string Nodes(int count, (string Kind, string Value) series, string capacitance, int charged = 0)
+    public static string Nodes(
+        int count, (string Kind, string Value) series, string capacitance, int charged = 0)
     {
         var shunts = Enumerable.Range(1, count).Select(k =>
-            $"capacitor C[{k}] from n[{k}] to ground : {capacitance}{(k == charged ? ", charged to 1 V" : "")}");
+            $"capacitor C[{k}] from n[{k}] to ground : {capacitance}"
+            + (k == charged ? ", charged to 1 V" : ""));
         var joints = Enumerable.Range(1, count - 1).Select(k =>
             $"{series.Kind} J[{k}] from n[{k}] to n[{k + 1}] : {series.Value}");
         return string.Join('\n', [.. shunts, .. joints]);

@@ -8,6 +8,7 @@ namespace CircuitTransient.Measurements.Checks;
 internal sealed class StudySizes
 {
     private const double Trace = 1e-15; // rounding of double precision
+    private const double Cancelled = 1e-6; // of modes that cancel: their rounding is then 1e-10 of the size
 
     private readonly CurveBuilder curves;
     private readonly Dictionary<Measurand, double> sizes = [];
@@ -42,7 +43,11 @@ internal sealed class StudySizes
         {
             if (table.Segment.Coefficients(quantity) is { } coefficients)
             {
-                foreach (var value in new LinearPiece(table, coefficients).Tabulated)
+                var piece = new LinearPiece(table, coefficients);
+                var envelope = new double[coefficients.Length];
+                table.Segment.Basis.Envelope(0, table.Segment.Length, envelope);
+                largest = Math.Max(largest, Cancelled * piece.MagnitudeWithin(envelope));
+                foreach (var value in piece.Tabulated)
                 {
                     largest = Math.Max(largest, Math.Abs(value));
                 }

@@ -65,13 +65,14 @@ public sealed class LinearPiece : CurvePiece
         var a = new double[TaylorModel.Degree + 1];
         if (IsZero)
         {
-            return new TaylorModel(a, 0, 0, 0);
+            return TaylorModel.Zero;
         }
 
-        double remainder = 0, first = 0, second = 0;
+        double remainder = 0, first = 0, second = 0, size = 0;
         var modes = Segment.Basis.Modes;
         for (var m = 0; m < modes.Length; m++)
         {
+            size += Magnitude(0, m, envelope);
             var last = Power(modes[m].Speed * half, Beyond);
             if (last > 1)
             {
@@ -94,7 +95,8 @@ public sealed class LinearPiece : CurvePiece
             second += Beyond * (Beyond - 1) * left;
         }
 
-        return new TaylorModel(a, remainder, first, second);
+        const double rounding = 4 * 1.1e-16; // of a coefficient, a function, their product and the sum
+        return new TaylorModel(a, remainder, first, second, rounding * size);
     }
 
     /// <summary>xⁿ/n!.</summary>

@@ -56,7 +56,7 @@ public sealed class QuadraticPiece(SegmentTable table, ImmutableArray<ProductTer
     public override TaylorModel Around(
         double tau, double half, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope)
     {
-        var sum = new TaylorModel(new double[TaylorModel.Degree + 1], 0, 0, 0);
+        var sum = TaylorModel.Zero;
         foreach (var term in terms)
         {
             var first = term.First.Around(tau, half, phi, envelope);

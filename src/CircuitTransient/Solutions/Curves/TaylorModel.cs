@@ -12,14 +12,19 @@ public sealed class TaylorModel
 
     private readonly double[] a;
 
-    /// <summary>Takes the coefficients and the remainders.</summary>
-    public TaylorModel(double[] coefficients, double remainder, double firstRemainder, double secondRemainder)
+    /// <summary>Takes the coefficients, the remainders and what rounding may blur the value by.</summary>
+    public TaylorModel(
+        double[] coefficients, double remainder, double firstRemainder, double secondRemainder, double noise)
     {
         a = coefficients;
         Remainder = remainder;
         FirstRemainder = firstRemainder;
         SecondRemainder = secondRemainder;
+        Noise = noise;
     }
+
+    /// <summary>The model of nothing.</summary>
+    public static TaylorModel Zero => new(new double[Degree + 1], 0, 0, 0, 0);
 
     /// <summary>The value in the middle, within the remainder.</summary>
     public double Middle => a[0];
@@ -32,6 +37,10 @@ public sealed class TaylorModel
 
     /// <summary>A bound of what its second derivative leaves out.</summary>
     public double SecondRemainder { get; }
+
+    /// <summary>What rounding may blur the value by: modes that cancel leave it, and no halving helps against
+    /// it.</summary>
+    public double Noise { get; }
 
     /// <summary>Whether the curve rises or falls throughout.</summary>
     public bool IsMonotone => Math.Abs(a[1]) >= Sum(2, (j, c) => j * Math.Abs(c)) + FirstRemainder;
@@ -56,7 +65,7 @@ public sealed class TaylorModel
         var weight = Math.Abs(factor);
         return new TaylorModel(
             sum, Remainder + (weight * other.Remainder), FirstRemainder + (weight * other.FirstRemainder),
-            SecondRemainder + (weight * other.SecondRemainder));
+            SecondRemainder + (weight * other.SecondRemainder), Noise + (weight * other.Noise));
     }
 
     /// <summary>The model of a product.</summary>
@@ -90,7 +99,8 @@ public sealed class TaylorModel
                 + (p.First * other.Remainder) + (q.First * Remainder),
             secondCut + Cross(SecondRemainder, q.Value, other.SecondRemainder, p.Value)
                 + (p.Second * other.Remainder) + (q.Second * Remainder)
-                + (2 * Cross(FirstRemainder, q.First, other.FirstRemainder, p.First)));
+                + (2 * Cross(FirstRemainder, q.First, other.FirstRemainder, p.First)),
+            (Noise * q.Value) + (other.Noise * p.Value));
     }
 
     /// <summary>The model of an integral whose value in the middle is known and whose rate has this
@@ -107,7 +117,7 @@ public sealed class TaylorModel
         var cut = half * Math.Abs(a[Degree]);
         return new TaylorModel(
             integral, (half * Remainder) + cut, (half * Remainder) + cut,
-            (half * FirstRemainder) + (Degree * cut));
+            (half * FirstRemainder) + (Degree * cut), (half * Noise) + (1e-15 * Math.Abs(middle)));
     }
 
     /// <summary>Bounds of the polynomial and its derivatives.</summary>
