@@ -106,7 +106,8 @@ public sealed class CoincidingPolesTests
             denominator = Product(denominator, [inductance, 0.2m, 1m]); // L s² + R s + 1
         }
 
-        return (double)Sum(1 / denominator[0], [.. denominator.Select(d => d / denominator[0])], (decimal)time);
+        var monic = denominator.Select(d => d / denominator[0]).ToArray();
+        return (double)Sum(1 / denominator[0], monic, (decimal)time);
     }
 
     /// <summary>Coefficients of Π(s + pₖ), highest power first.</summary>

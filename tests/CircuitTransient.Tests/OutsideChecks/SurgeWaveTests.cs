@@ -39,7 +39,8 @@ public sealed class SurgeWaveTests
     {
         const string ring = """
             value Fast : 1/(1/0.533 µs + 1/9.788 µs)
-            source E at a : cosine of 1.59 V at 100 kHz decaying in 9.788 µs - cosine of 1.59 V at 100 kHz decaying in Fast
+            source E at a : cosine of 1.59 V at 100 kHz decaying in 9.788 µs -
+              cosine of 1.59 V at 100 kHz decaying in Fast
             resistor R from a to ground : 50 Ω
             observe voltage of a
             observe voltage of a as "second crest" from 2 µs
@@ -75,8 +76,8 @@ public sealed class SurgeWaveTests
         Close.To(17.4565633e-6, charge / solved.Max("current through Load"), 3e-9); // nine digits given
     }
 
-    // Published: Wu 2014, doi 10.1109/TEMC.2013.2296573, at least 4.29 (abstract, quoted: V2); the instants of
-    // t e^(−t) are computed (C).
+    // Published: Wu 2014, doi 10.1109/TEMC.2013.2296573, at least 4.29 (abstract, quoted: V2); the instants
+    // of t e^(−t) are computed (C).
     [Fact]
     public void No_two_real_poles_make_a_pulse_shorter_than_its_front_says()
     {
@@ -126,8 +127,8 @@ public sealed class SurgeWaveTests
     private static SolvedText Exponentials(string peak, string slow, string front, string until) =>
         Difference(peak, slow, $"(1/(1/{front} + 1/{slow}))", until);
 
-    private static SolvedText Difference(string peak, string slow, string fast, string until) => SolvedText.Of(
-        $"""
+    private static SolvedText Difference(string peak, string slow, string fast, string until) =>
+        SolvedText.Of($"""
         source E at a : decay of {peak} in {slow} - decay of {peak} in {fast}
         resistor R from a to ground : 50 Ω
         observe voltage of a
