@@ -125,8 +125,8 @@ public static partial class PdfReport
         var largest = Math.Max(since.Parts.Max(p => Math.Abs(p.Value ?? 0)), double.Epsilon);
         pages.Need(60);
         pages.Paragraph(
-            $"The same value counted since {since.Event}: what each part held just before it, and the sources "
-                + "from then on",
+            $"The same value counted since {since.Event}: what each part held just before it, and the "
+                + "sources from then on",
             9.5,
             isStrong: true);
         var parts = since.Parts.OrderByDescending(p => Math.Abs(p.Value ?? 0));

@@ -28,10 +28,12 @@ public partial class PdfReportTests
     public void Each_chapter_and_observation_stands_in_the_outline()
     {
         var titles = Title().Matches(Text)
-            .Select(m => Encoding.BigEndianUnicode.GetString(Convert.FromHexString(m.Groups["letters"].Value)))
+            .Select(m => Convert.FromHexString(m.Groups["letters"].Value))
+            .Select(Encoding.BigEndianUnicode.GetString)
             .ToArray();
 
-        string[] chapters = ["Verdict", "Events", "What every part bears", "Poles", "Self-checks", "The circuit file"];
+        string[] chapters =
+            ["Verdict", "Events", "What every part bears", "Poles", "Self-checks", "The circuit file"];
         Assert.Equal(
             ["Two feeds and a charge", .. chapters[..2],
                 .. SolvedPages.AsItStands.Observations.Select(o => o.Name), .. chapters[2..]],
@@ -62,10 +64,14 @@ public partial class PdfReportTests
     [Fact]
     public void Names_of_ten_thousand_letters_and_of_any_script_are_drawn() =>
         Assert.All(
-            [SampleResults.Awkward(), SampleResults.Bare(), SampleResults.Inrush(title: new string('w', 10_000))],
+            [
+                SampleResults.Awkward(), SampleResults.Bare(),
+                SampleResults.Inrush(title: new string('w', 10_000)),
+            ],
             result => Assert.InRange(Write(result).Length, 10_000, 5_000_000));
 
-    private static byte[] Write(TransientResult result) => PdfReport.Write(result, "circuit-transient solve x");
+    private static byte[] Write(TransientResult result) =>
+        PdfReport.Write(result, "circuit-transient solve x");
 
     [GeneratedRegex(@"/Title <FEFF(?<letters>[0-9A-F]+)>", RegexOptions.ExplicitCapture, 1000)]
     private static partial Regex Title();
