@@ -32,6 +32,8 @@ internal sealed class SolveCommand : Command
 
     private readonly Option<bool> json = new("--json") { Description = "Print the results document." };
 
+    private readonly Option<bool> pdf = new("--pdf") { Description = "Write the report as PDF too." };
+
     private readonly Option<bool> noFiles = new("--no-files") { Description = "Write no files." };
 
     private readonly Option<bool> quiet = new("--quiet")
@@ -49,7 +51,7 @@ internal sealed class SolveCommand : Command
         : base("solve", "Solve circuits, print a summary and write the results.")
     {
         Add(files);
-        foreach (var option in (Option[])[folder, at, samples, json, noFiles, quiet, strict])
+        foreach (var option in (Option[])[folder, at, samples, json, pdf, noFiles, quiet, strict])
         {
             Add(option);
         }
@@ -73,7 +75,8 @@ internal sealed class SolveCommand : Command
                 parsed.GetValue(noFiles) ? null : parsed.GetRequiredValue(folder),
                 parsed.GetValue(json),
                 parsed.GetValue(quiet),
-                parsed.GetValue(strict))
+                parsed.GetValue(strict),
+                parsed.GetValue(pdf))
             : null;
     }
 }

@@ -9,8 +9,9 @@ namespace CircuitTransient.Cli;
 /// <param name="IsJson">Whether the results document takes the place of the summary.</param>
 /// <param name="IsQuiet">Whether there is no summary.</param>
 /// <param name="IsStrict">Whether warnings and passed linear ranges count as broken requirements.</param>
+/// <param name="IsPdf">Whether the report is written as PDF too.</param>
 public sealed record SolveOptions(
-    InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict)
+    InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict, bool IsPdf)
 {
     /// <summary>How many samples are aimed at where nothing is said.</summary>
     public const int UsualSampleCount = 2000;
@@ -24,6 +25,7 @@ public sealed record SolveOptions(
         var quoted = isPlain ? name : $"\"{name}\"";
         var at = At.Instants.Any() ? $" --at \"{At.Source.Content}\"" : "";
         var samples = SampleCount == UsualSampleCount ? "" : $" --samples {SampleCount}";
-        return $"circuit-transient solve {quoted}{at}{samples}";
+        var pdf = IsPdf ? " --pdf" : "";
+        return $"circuit-transient solve {quoted}{at}{samples}{pdf}";
     }
 }
