@@ -22,6 +22,12 @@ internal sealed class SolveCommand : Command
         HelpName = "TIMES",
     };
 
+    private readonly Option<string> after = new("--after")
+    {
+        Description = "Break peaks down anew since an event: \"Kmain closes\", an instant, or last.",
+        HelpName = "EVENT",
+    };
+
     private readonly Option<int> samples = new("--samples")
     {
         Description = "How many samples of each waveform to aim at.",
@@ -49,7 +55,7 @@ internal sealed class SolveCommand : Command
         : base("solve", "Solve circuits, print a summary and write the results.")
     {
         Add(files);
-        foreach (var option in (Option[])[folder, at, samples, json, noFiles, quiet, strict])
+        foreach (var option in (Option[])[folder, at, after, samples, json, noFiles, quiet, strict])
         {
             Add(option);
         }
@@ -66,14 +72,16 @@ internal sealed class SolveCommand : Command
             ? new(InstantList.Empty, [])
             : InstantListParser.Parse(new SourceText(at.Name, text));
         streams.Report(instants.Diagnostics);
-        return instants.Succeeded
+        var words = parsed.GetValue(after);
+        var since = words is null ? null : AfterWords.Read(words, streams);
+        return instants.Succeeded && (words is null || since is not null)
             ? new SolveOptions(
                 instants.Value,
                 parsed.GetRequiredValue(samples),
                 parsed.GetValue(noFiles) ? null : parsed.GetRequiredValue(folder),
                 parsed.GetValue(json),
                 parsed.GetValue(quiet),
-                parsed.GetValue(strict))
+                parsed.GetValue(strict)) { After = since }
             : null;
     }
 }

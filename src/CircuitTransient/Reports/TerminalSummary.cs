@@ -245,7 +245,7 @@ public static partial class TerminalSummary
 
     // What is left of two equal figures after rounding is no figure: the engine owes 1e-11 of the scale.
     private static string Number(double? value, string unit, double scale) =>
-        Math.Abs(value ?? scale) <= 1e-12 * scale ? Number(0, unit) : Number(value, unit);
+        value is { } number && Math.Abs(number) <= 1e-12 * scale ? Number(0, unit) : Number(value, unit);
 
     private static string Ratio(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 }
