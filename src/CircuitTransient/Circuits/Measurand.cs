@@ -71,7 +71,11 @@ public sealed record Window(Instant? From, Instant? To);
 /// <summary>Something to observe.</summary>
 /// <param name="Name">The label, or the quantity's own name.</param>
 /// <param name="Unit">Unit of the value in SI: V, A, W, J, A²s, V/s, A/s, s, Hz; % in per cent.</param>
-public sealed record Observation(string Name, string Unit, Measurand Quantity, Window Window, TextSpan Span);
+public sealed record Observation(string Name, string Unit, Measurand Quantity, Window Window, TextSpan Span)
+{
+    /// <summary>Whether nobody asked for it: with nothing observed, every node voltage is.</summary>
+    public bool IsByDefault { get; init; }
+}
 
 /// <summary>Something required.</summary>
 /// <param name="Statement">The requirement in one line of normalised words, without its reason.</param>

@@ -46,6 +46,7 @@ internal static class Observations
     [
         .. state.Nodes.Names.Select((name, node) => new Observation(
             $"voltage of {name}", "V", new VoltageBetween(node, 0), new Window(null, null),
-            state.Nodes.TouchOf(node).Span)).Skip(1),
+            state.Nodes.TouchOf(node).Span)
+        { IsByDefault = true }).Skip(1),
     ];
 }

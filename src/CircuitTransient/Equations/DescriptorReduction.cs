@@ -1,3 +1,4 @@
+using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Equations;
@@ -15,6 +16,7 @@ internal sealed class DescriptorReduction
     private readonly double[] columnScales;
     private readonly bool[] isEliminated;
     private readonly List<(int Unknown, EquationRow Row)> substitutions = [];
+    private readonly List<EquationRow> saysNothing = []; // each leaves one direction open
     private SingularEquations? singular;
 
     private DescriptorReduction(NetworkLayout layout, List<EquationRow> rows)
@@ -56,10 +58,11 @@ internal sealed class DescriptorReduction
             {
                 if (!row.HasNoRight)
                 {
-                    singular = new SingularEquations(Indices(row.Origin), Contradicts: true);
+                    singular = new SingularEquations([Indices(row.Origin)], Contradicts: true);
                     return;
                 }
 
+                saysNothing.Add(row);
                 continue;
             }
 
@@ -153,6 +156,7 @@ internal sealed class DescriptorReduction
         var left = Enumerable.Range(0, layout.UnknownCount).Where(i => !isEliminated[i]).ToArray();
         open = [.. left.Where(i => !used.Contains(i)).Select(i => SparseVector.From((i, DoubleDouble.One)))];
         var state = left.Where(used.Contains).ToArray();
+        FindDependentSourcesThatSayNothing();
         if (singular is null && state.Length > rows.Count)
         {
             var directions = OpenDirections.Find(rows, state);
@@ -160,12 +164,26 @@ internal sealed class DescriptorReduction
             state = [.. state.Except(directions.Select(d => d.Fixed))];
             if (state.Length > rows.Count)
             {
-                var involved = rows.SelectMany(r => Indices(r.Origin)).Distinct().Order().ToArray();
-                singular = new SingularEquations(involved, Contradicts: false);
+                singular = new SingularEquations(
+                    [.. saysNothing.Select(r => Indices(r.Origin))], Contradicts: false);
             }
         }
 
         return state;
+    }
+
+    /// <summary>What ideal contacts leave open may stay open; a dependent source that says nothing, or what
+    /// another says already, is at fault wherever it stands.</summary>
+    private void FindDependentSourcesThatSayNothing()
+    {
+        // A part's law stands in the row whose index is that of its current.
+        var laws = Enumerable.Range(0, layout.Circuit.Parts.Length)
+            .Where(i => layout.Circuit.Parts[i] is DependentSource).Select(layout.Current).ToHashSet();
+        int[][] atFault = [.. saysNothing.Select(r => Indices(r.Origin)).Where(laws.Overlaps)];
+        if (singular is null && atFault.Length > 0)
+        {
+            singular = new SingularEquations([.. atFault], Contradicts: false);
+        }
     }
 
     private static int[] Indices(SparseVector vector) => [.. vector.Terms.ToArray().Select(t => t.Index)];

@@ -23,7 +23,7 @@ internal sealed class NetworkEquations
     {
         this.layout = layout;
         this.isClosed = isClosed;
-        this.tracksOrigin = tracksOrigin;
+        this.tracksOrigin = tracksOrigin || layout.Circuit.Parts.Any(p => p is DependentSource);
         mutuals = MutualInductances.Of(layout.Circuit);
     }
 
@@ -31,7 +31,8 @@ internal sealed class NetworkEquations
     /// <param name="layout">Where each unknown and input stands.</param>
     /// <param name="isClosed">For every part, whether it is a switch that is closed.</param>
     /// <param name="tracksOrigin">Whether rows remember which written equations they are sums of: row k of
-    /// the nodes first (node k + 1), then the parts in order.</param>
+    /// the nodes first (node k + 1), then the parts in order; they do so in any case where there are
+    /// dependent sources, which may say the same twice.</param>
     public static List<EquationRow> Assemble(
         NetworkLayout layout, ImmutableArray<bool> isClosed, bool tracksOrigin = false)
     {

@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Equations;
@@ -15,8 +16,8 @@ public sealed record NormalForm(
 }
 
 /// <summary>Why an interval's equations have no unique solution.</summary>
-/// <param name="Equations">The written equations whose sum says nothing or a contradiction, as rows of
-/// <see cref="NetworkEquations"/>: nodes first, then parts.</param>
-/// <param name="Contradicts">Whether they contradict each other; else they leave something open that
-/// matters.</param>
-public sealed record SingularEquations(int[] Equations, bool Contradicts);
+/// <param name="Sets">Each a smallest set of written equations whose sum says nothing or a contradiction, as
+/// rows of <see cref="NetworkEquations"/>: nodes first, then parts.</param>
+/// <param name="Contradicts">Whether they contradict each other; else they say the same twice, and something
+/// that matters is left open.</param>
+public sealed record SingularEquations(ImmutableArray<int[]> Sets, bool Contradicts);

@@ -44,16 +44,18 @@ internal sealed class IntervalMeasurement(TransientSolution solution, StoredEner
 
     private void AddImpulses(ImmutableArray<ImpulseResult>.Builder impulses, Segment segment)
     {
-        for (var i = 0; i < solution.Circuit.Parts.Length; i++)
+        var found = Enumerable.Range(0, solution.Circuit.Parts.Length)
+            .Select(i => (Part: solution.Circuit.Parts[i], Charge: Impulse(segment, new CurrentThrough(i)),
+                Flux: Impulse(segment, new VoltageAcross(i))))
+            .Where(f => f.Charge is not null || f.Flux is not null).ToArray();
+        var isExplained = found.Any(f =>
+            f.Charge is not null && ImpulseRemedy.For(f.Part, isCharge: true) is not null);
+        foreach (var (part, charge, flux) in found)
         {
-            var part = solution.Circuit.Parts[i];
-            var charge = Impulse(segment, new CurrentThrough(i));
-            var flux = Impulse(segment, new VoltageAcross(i));
-            if (charge is not null || flux is not null)
-            {
-                impulses.Add(new ImpulseResult(segment.Start, part.Name, charge, flux,
-                    ImpulseRemedy.For(part, charge)));
-            }
+            var isCharge = charge is not null;
+            var remedy = ImpulseRemedy.For(part, isCharge)
+                ?? (isExplained ? null : ImpulseRemedy.OfStore(part, isCharge));
+            impulses.Add(new ImpulseResult(segment.Start, part.Name, charge, flux, remedy));
         }
     }
 

@@ -34,14 +34,17 @@ public sealed class PlotFonts : IDisposable
         }
 
         var runes = text.EnumerateRunes().ToArray();
-        var kept = runes.Length;
-        string cut;
-        do
+        var (kept, tooMany) = (0, runes.Length);
+        while (tooMany - kept > 1)
         {
-            kept--;
-            cut = string.Concat(runes.Take(kept)).TrimEnd() + "…";
-        } while (kept > 0 && Width(cut, size, isStrong) > limit);
-        return cut;
+            var middle = (kept + tooMany) / 2;
+            var isTooMany = Width(Cut(middle), size, isStrong) > limit;
+            (kept, tooMany) = isTooMany ? (kept, middle) : (middle, tooMany);
+        }
+
+        return Cut(kept);
+
+        string Cut(int count) => string.Concat(runes.Take(count)).TrimEnd() + "…";
     }
 
     /// <inheritdoc/>

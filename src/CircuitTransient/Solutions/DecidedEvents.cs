@@ -5,24 +5,28 @@ using CircuitTransient.Solutions.Curves;
 namespace CircuitTransient.Solutions;
 
 /// <summary>Finds the switchings whose instants the answer itself decides.</summary>
-internal sealed class DecidedEvents(Timeline timeline, double resolution)
+internal sealed class DecidedEvents(Timeline timeline, WatchedQuantities quantities, double resolution)
 {
+    private const double Rounding = 1e-14; // of the waveform's own size
+    private const double Nothing = 1e-20; // of the largest current: of 32 digits solved in, still rounding
+
     /// <summary>The first instant in an interval at which a waiting event's condition holds, and the events
     /// that act then; null where none does.</summary>
     /// <param name="segments">The interval, solved as if nothing happened in it.</param>
     public (double Time, ImmutableArray<EventReference> Events)? FirstIn(ImmutableArray<Segment> segments)
     {
+        var waiting = timeline.Waiting().Where(w => !Timeline.IsFixed(w.Event)).ToArray();
+        if (waiting.Length == 0)
+        {
+            return null;
+        }
+
         var tables = segments.Select(s => new SegmentTable(s)).ToArray();
         var found = new List<(double Time, EventReference Event)>();
-        foreach (var (reference, declared) in timeline.Waiting())
+        foreach (var (reference, declared) in waiting)
         {
-            if (Timeline.IsFixed(declared))
-            {
-                continue;
-            }
-
-            var watchedFrom = timeline.Due(reference, declared);
-            if (Holds(reference, declared, tables, watchedFrom) is { } time)
+            var watched = Watched(reference, declared);
+            if (Holds(watched, tables, timeline.Due(reference, declared)) is { } time)
             {
                 found.Add((time, reference));
             }
@@ -37,32 +41,35 @@ internal sealed class DecidedEvents(Timeline timeline, double resolution)
         return (first, [.. found.Where(f => f.Time <= first + resolution).Select(f => f.Event)]);
     }
 
-    private static double? Holds(
-        EventReference reference, SwitchEvent declared, SegmentTable[] tables, double watchedFrom)
-    {
-        var watched = declared.Trigger is WhenCrosses w
-            ? w
-            : new WhenCrosses(new CurrentThrough(reference.Part), Rises: false, declared.CutAtMost!.Value,
-                true, null);
-        foreach (var table in tables)
-        {
-            var from = Math.Max(0, watchedFrom - table.Segment.Start);
-            if (from > table.Segment.Length
-                || table.Segment.Coefficients(watched.Quantity) is not { } coefficients)
-            {
-                continue;
-            }
+    /// <summary>What an event waits for: a condition of its own, or the fall of its switch's
+    /// current.</summary>
+    public static WhenCrosses Watched(EventReference reference, SwitchEvent declared) =>
+        declared.Trigger is WhenCrosses condition
+            ? condition
+            : new WhenCrosses(
+                new CurrentThrough(reference.Part), Rises: false, declared.CutAtMost!.Value,
+                InMagnitude: true, null);
 
-            if (Crossing(new LinearPiece(table, coefficients), watched, from) is { } tau)
+    private double? Holds(WhenCrosses watched, SegmentTable[] tables, double watchedFrom)
+    {
+        if (quantities.Over(tables, watched.Quantity) is not { } pieces)
+        {
+            return null;
+        }
+
+        foreach (var piece in pieces)
+        {
+            var from = Math.Max(0, watchedFrom - piece.Segment.Start);
+            if (from <= piece.Segment.Length && Crossing(piece, watched, from) is { } tau)
             {
-                return table.Segment.Start + tau;
+                return piece.Segment.Start + tau;
             }
         }
 
         return null;
     }
 
-    private static double? Crossing(LinearPiece piece, WhenCrosses watched, double from)
+    private static double? Crossing(CurvePiece piece, WhenCrosses watched, double from)
     {
         var until = piece.Segment.Length;
         var rises = watched.Rises ? 1 : -1;
@@ -78,16 +85,37 @@ internal sealed class DecidedEvents(Timeline timeline, double resolution)
             return up is null || down < up ? down : up;
         }
 
-        // The magnitude falls to a level (zero too): the value, while it keeps its sign, falls to it. A zero
-        // that is only touched counts within rounding of the waveform's size.
-        var sign = piece.ValueAt(from) < 0 ? -1 : 1;
-        var touch = watched.Level + (1e-14 * piece.Scale);
-        if (LevelSearch.First(piece, -sign, -touch, from, until) is not { } near)
+        var size = Size(piece);
+        return watched.Quantity is CurrentThrough && size <= Nothing * LargestCurrent(piece.Segment)
+            ? from
+            : new FallSearch(piece, watched.Level, Rounding * size).First(from);
+    }
+
+    private static double Size(CurvePiece piece)
+    {
+        var envelope = new double[piece.Segment.Basis.Width];
+        piece.Segment.Basis.Envelope(0, piece.Segment.Length, envelope);
+        return piece switch
         {
-            return null;
+            LinearPiece linear => linear.Scale,
+            QuadraticPiece quadratic => quadratic.Bounds(envelope).Value,
+            _ => Math.Abs(piece.Tabulated[^1]),
+        };
+    }
+
+    private static double LargestCurrent(Segment segment)
+    {
+        var envelope = new double[segment.Basis.Width];
+        segment.Basis.Envelope(0, segment.Length, envelope);
+        double largest = 0;
+        for (var i = 0; i < segment.Model.Form.Layout.Circuit.Parts.Length; i++)
+        {
+            foreach (var (c, e) in (segment.Coefficients(new CurrentThrough(i)) ?? []).Zip(envelope))
+            {
+                largest = Math.Max(largest, Math.Abs(c) * e);
+            }
         }
 
-        var exact = LevelSearch.First(piece, -sign, -watched.Level, near, until);
-        return exact is { } e && e - near <= 1e-6 * until ? e : near;
+        return largest;
     }
 }

@@ -29,24 +29,26 @@ public static class KnownIntervals
                 continue;
             }
 
-            if (models.Add(string.Concat(timeline.IsClosed.Select(c => c ? '1' : '0')))
-                && !IsSolvable(layout, timeline.IsClosed))
+            if (models.Add(string.Concat(timeline.IsClosed.Select(c => c ? '1' : '0'))))
             {
-                found.Add(SingularDiagnosis.Describe(layout, timeline.IsClosed, now));
+                found.AddRange(Find(layout, timeline, now, Math.Min(next, circuit.Until ?? next)));
             }
 
             if (double.IsPositiveInfinity(next) || next >= circuit.Until)
             {
-                return found.ToImmutable();
+                return [.. found.DistinctBy(d => (d.Span, d.Message))];
             }
 
             now = next;
         }
     }
 
-    private static bool IsSolvable(NetworkLayout layout, ImmutableArray<bool> isClosed)
+    private static IEnumerable<Diagnostic> Find(
+        NetworkLayout layout, Timeline timeline, double from, double until)
     {
-        DescriptorReduction.Reduce(layout, NetworkEquations.Assemble(layout, isClosed), out var singular);
-        return singular is null;
+        var rows = NetworkEquations.Assemble(layout, timeline.IsClosed);
+        return DescriptorReduction.Reduce(layout, rows, out _) is { } form
+            ? new AskedQuantities(layout.Circuit, timeline.InstantOf).LeftOpenIn(form, from, until)
+            : [SingularDiagnosis.Describe(layout, timeline.IsClosed, from)];
     }
 }

@@ -18,6 +18,7 @@ public sealed class TransientSolver
     private readonly Timeline timeline;
     private readonly IntervalModels models;
     private readonly IntervalSolver solver;
+    private readonly WatchedQuantities watched;
     private readonly List<Segment> segments = [];
     private readonly List<SolvedInterval> intervals = [];
     private ImmutableArray<Occurrence> startsWith = [];
@@ -33,6 +34,7 @@ public sealed class TransientSolver
         timeline = new Timeline(circuit);
         models = new IntervalModels(layout);
         solver = new IntervalSolver(layout, causes, cancellation);
+        watched = new WatchedQuantities(circuit);
     }
 
     /// <summary>Solves a circuit.</summary>
@@ -68,7 +70,7 @@ public sealed class TransientSolver
 
             var until = Math.Min(NextFixed().Due, end.Time);
             var solved = solver.Solve(model, intervals.Count, now, until, stored);
-            if (new DecidedEvents(timeline, 1e-12 * end.Time).FirstIn(solved) is { } decided
+            if (new DecidedEvents(timeline, watched, 1e-12 * end.Time).FirstIn(solved) is { } decided
                 && decided.Time < until)
             {
                 atOnce = decided.Time - now <= 1e-12 * end.Time ? atOnce + 1 : 0;
@@ -85,7 +87,10 @@ public sealed class TransientSolver
             Advance(model, until, solved);
             if (until >= end.Time)
             {
-                return new Outcome<TransientSolution>(Finish(end, initial), []);
+                var leftOpen = LeftOpen();
+                return leftOpen.IsEmpty
+                    ? new Outcome<TransientSolution>(Finish(end, initial), [])
+                    : new Outcome<TransientSolution>(null, leftOpen);
             }
         }
     }
@@ -129,6 +134,7 @@ public sealed class TransientSolver
             momentary));
         segments.AddRange(kept);
         stored = solver.StoredAtEnd(kept[^1]);
+        watched.Gather(kept);
         startsWith = [];
         momentary = [];
         now = until;
@@ -173,6 +179,14 @@ public sealed class TransientSolver
 
         stored = StatedStart.Of(layout, causes);
         return null;
+    }
+
+    /// <summary>What is asked for although some interval leaves it open, each once.</summary>
+    private ImmutableArray<Diagnostic> LeftOpen()
+    {
+        var asked = new AskedQuantities(circuit, timeline.InstantOf);
+        return [.. intervals
+            .SelectMany(i => asked.LeftOpenIn(i.Model.Form, i.From, i.Until)).DistinctBy(d => d.Span)];
     }
 
     private Diagnostic Chatter(EventReference reference, double time)

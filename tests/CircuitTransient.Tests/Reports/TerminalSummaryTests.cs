@@ -154,7 +154,10 @@ public class TerminalSummaryTests
         var result = SampleResults.Inrush();
         var breaker = new Switch(true, null, null, [new(false, new AtInstant(new(0.01, null)), 0, new(0, 0))])
         {
-            Name = "Q1", From = 1, To = 2, Span = new(0, 0),
+            Name = "Q1",
+            From = 1,
+            To = 2,
+            Span = new(0, 0),
         };
         var circuit = result.Circuit with { Parts = result.Circuit.Parts.Add(breaker) };
         var text = TerminalSummary.Write(result with { Circuit = circuit }, []);

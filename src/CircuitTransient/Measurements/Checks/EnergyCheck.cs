@@ -13,7 +13,9 @@ internal static class EnergyCheck
     /// some part's current or voltage is open.</summary>
     public static double? Worst(CurveBuilder curves, StoredEnergy energy, Func<int, double[,]> gram)
     {
-        double worst = 0;
+        // An interval whose energies are rounding of an earlier one's is not judged against itself.
+        const double rounding = 1e-12;
+        double worst = 0, largest = 0;
         var solution = curves.Solution;
         foreach (var interval in solution.Intervals)
         {
@@ -32,6 +34,8 @@ internal static class EnergyCheck
                 size = Math.Max(size, Math.Max(flow.Size, Math.Max(Math.Abs(start), Math.Abs(end))));
             }
 
+            largest = Math.Max(largest, size);
+            size = Math.Max(size, rounding * largest);
             worst = Math.Max(worst, size == 0 ? 0 : Math.Abs(supplied - heat - stored) / size);
         }
 
@@ -46,14 +50,14 @@ internal static class EnergyCheck
         for (var i = 0; i < solution.Circuit.Parts.Length; i++)
         {
             var resistance = Resistance(solution.Circuit.Parts[i], segment.Model.IsClosed[i]);
-            if (resistance is 0 || solution.Circuit.Parts[i] is Capacitor or Inductor)
+            if (resistance is 0)
             {
                 continue;
             }
 
             var current = segment.Coefficients(new CurrentThrough(i));
             var voltage = segment.Coefficients(new VoltageAcross(i));
-            if (current is null || voltage is null || solution.Circuit.Parts[i] is IdealTransformer)
+            if (current is null || voltage is null)
             {
                 return null;
             }
@@ -64,9 +68,11 @@ internal static class EnergyCheck
             }
             else
             {
-                var energy = -GramIntegral.Form(gram, voltage, current);
-                supplied += energy;
-                size = Math.Max(size, Math.Abs(energy));
+                supplied -= GramIntegral.Form(gram, voltage, current);
+                // What goes to and fro counts too: by Schwarz, |∫ v i|² is at most ∫ v² ∫ i².
+                var v2 = GramIntegral.Form(gram, voltage, voltage);
+                var i2 = GramIntegral.Form(gram, current, current);
+                size = Math.Max(size, Math.Sqrt(Math.Max(0, v2) * Math.Max(0, i2)));
             }
         }
 
@@ -80,7 +86,7 @@ internal static class EnergyCheck
         Resistor r => r.Resistance.Nominal,
         Switch s when isClosed => s.ClosedResistance?.Nominal ?? 0,
         Switch s => s.OpenResistance?.Nominal ?? 0,
-        Capacitor or Inductor => 0,
+        Capacitor or Inductor or IdealTransformer => 0,
         _ => null,
     };
 }

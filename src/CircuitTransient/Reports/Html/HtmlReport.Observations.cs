@@ -5,18 +5,25 @@ namespace CircuitTransient.Reports.Html;
 /// <content>The observations: waveform, extremes, and what made the peak.</content>
 public static partial class HtmlReport
 {
-    private const int MostStillPictures = 12;
+    private const int MostStillLetters = 600_000; // of pictures for readers without scripts
 
     private static Markup Observations(TransientResult result, PlotFonts fonts)
     {
         var worst = WorstObservation.Find(result);
+        var letters = 0;
+        var sections = result.Observations.Select((observed, i) =>
+        {
+            var still = letters < MostStillLetters ? StillPicture(result, observed, fonts) : default;
+            letters += still.ToString().Length;
+            return Observed(result, observed, i, worst, still);
+        });
         return Markup.Of($"""
             <section id="observations" aria-labelledby="observations-heading">
             <h2 id="observations-heading">Waveforms and their causes</h2>
             <p class="aside">Contributions are counted from the start: the sources, and what was stored at
             t = 0, carried through every switching. At every instant they add up to the total.</p>
             <div id="explorer"></div>
-            {Markup.Join(result.Observations.Select((o, i) => Observed(result, o, i, worst, fonts)))}
+            {Markup.Join(sections)}
             {Figures(result)}</section>
             """);
     }
@@ -26,11 +33,10 @@ public static partial class HtmlReport
         ObservationResult observed,
         int index,
         WorstObservation? worst,
-        PlotFonts fonts)
+        Markup still)
     {
         var isWorst = ReferenceEquals(worst?.Observation, observed);
         var atMax = isWorst ? worst!.AtMax : observed.Greatest == observed.Max;
-        var still = index < MostStillPictures ? StillPicture(result, observed, fonts) : default;
         return Markup.Of($"""
             <section class="observation" id="observation-{index}"
             aria-labelledby="observation-{index}-heading">
@@ -58,8 +64,8 @@ public static partial class HtmlReport
         var rising = observed.EndsRising ? "; it is still growing at the end of the study" : "";
         var final = observed.Final is { } limit ? $"tends to {Number(limit, unit)}" : "tends to no limit";
         return Markup.Of($"""
-            Highest {Strong(observed.Max, unit)} {When(result, observed.Max)}; lowest
-            {Strong(observed.Min, unit)} {When(result, observed.Min)}; {Number(observed.End, unit)} at the
+            Highest {Strong(observed.Max, unit)}{When(result, observed.Max)}; lowest
+            {Strong(observed.Min, unit)}{When(result, observed.Min)}; {Number(observed.End, unit)} at the
             end, {final}{rising}.
             """);
     }
@@ -71,7 +77,11 @@ public static partial class HtmlReport
     }
 
     private static string When(TransientResult result, Extreme extreme) =>
-        extreme.Value is null ? "" : InstantWords.At(result, extreme.Time, extreme.Side);
+        extreme.Value is null ? "" : Placed(InstantWords.At(result, extreme.Time, extreme.Side));
+
+    // After a value: ` at 2 s`, but `, 3 ms after S closes`.
+    private static string Placed(string when) =>
+        when.StartsWith("at ", StringComparison.Ordinal) ? $" {when}" : $", {when}";
 
     private static Markup Caption(ObservationResult observed)
     {
@@ -80,7 +90,7 @@ public static partial class HtmlReport
             .Take(3)
             .Select((c, i) => Markup.Of($"{(i == 0 ? "" : ", ")}{Markup.Name(c.Cause)}"));
         return Markup.Of($"""
-            The dark line is the total, in {observed.Unit} over time; thin lines are contributions, the
+            The thick line is the total, in {observed.Unit} over time; thin lines are contributions, the
             largest at its greatest value from {Markup.Join(largest)}.
             """);
     }
@@ -100,8 +110,8 @@ public static partial class HtmlReport
             .Select(i => CauseRow(observed, i, atMax, total, largest));
         return Markup.Of($"""
             <div class="wide"><table class="causes" data-at="{(atMax ? "max" : "min")}">
-            <caption>What made the {word} value, <span class="peak">{Number(total, observed.Unit)}
-            {InstantWords.At(result, extreme.Time, extreme.Side)}</span></caption>
+            <caption>What made the {word} value, <span
+            class="peak">{Number(total, observed.Unit)}{When(result, extreme)}</span></caption>
             <thead><tr><th scope="col">Cause</th><th scope="col" class="number">Then</th>
             <th scope="col" class="number">Of the total</th>
             <th scope="col"><span class="hidden">Bar</span></th>

@@ -11,7 +11,7 @@ namespace CircuitTransient.Reports.Html;
 /// them, as JSON.</summary>
 internal sealed partial class PageData
 {
-    private const int MostValues = 900_000; // samples of all terms: 4.8 MB in base 64
+    private const int MostValues = 600_000; // samples of all terms: 3.2 MB in base 64
     private const int FewestSamples = 120;
 
     private readonly TransientResult result;

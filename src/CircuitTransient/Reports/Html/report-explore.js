@@ -159,13 +159,14 @@ class Panel {
       const { from, to } = this.window;
       this.zoom(this.cursor - 2 * (this.cursor - from), this.cursor + 2 * (to - this.cursor));
     };
-    const event_ = () => {
+    const nextEvent = () => {
       const later = data.events.filter((e) => e.time > this.cursor && e.time <= this.window.to)[0] ?? data.events.filter((e) => e.time >= this.window.from)[0];
       if (later) this.read(later.time);
     };
     const peak = () => {
-      const { max, min } = this.model.extremes;
-      this.show(this.cursor === max.time ? min.time : max.time);
+      const { extremes, side } = this.model;
+      const [first, second] = [extremes[side].time, extremes[side === "max" ? "min" : "max"].time];
+      this.show(this.cursor === first ? second : first);
     };
     const actions = {
       ArrowRight: () => (event.shiftKey ? sample(1) : step(4)), ArrowLeft: () => (event.shiftKey ? sample(-1) : step(-4)),
@@ -173,7 +174,7 @@ class Panel {
       PageUp: () => step((time.right - time.left) / 10), PageDown: () => step((time.left - time.right) / 10),
       Home: () => this.read(this.window.from), End: () => this.read(this.window.to),
       "+": () => near(0.5), "=": () => near(0.5), "-": wider, 0: () => this.whole(), Escape: () => this.whole(),
-      e: event_, p: peak,
+      e: nextEvent, p: peak,
     };
     const action = actions[event.key];
     if (!action) return;

@@ -321,6 +321,10 @@ views.forEach((view) => near.observe(view.section));
 let width = window.innerWidth;
 new ResizeObserver(() => {
   document.documentElement.style.scrollPaddingTop = `${explorer.offsetHeight + 12}px`;
+  // What scrolls sideways must be reached by keyboard too.
+  document.querySelectorAll(".wide").forEach((box) => {
+    if (box.scrollWidth > box.clientWidth) box.tabIndex = 0; else box.removeAttribute("tabindex");
+  });
   if (window.innerWidth !== width) {
     width = window.innerWidth;
     drawAll();
