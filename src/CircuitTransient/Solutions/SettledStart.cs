@@ -103,7 +103,7 @@ internal static class SettledStart
                 {
                     var growth = EngineeringNumber.Format(1 / block.T[i, i].Re.Hi, "s");
                     return Diagnostic.Error(
-                        layout.Circuit.Source, default,
+                        layout.Circuit.Source, Active(layout.Circuit)?.Span ?? default,
                         $"there is no settled state to start from: a mode grows, time constant {growth}",
                         "start as stated, with the charges and currents you know");
                 }
@@ -112,6 +112,10 @@ internal static class SettledStart
 
         return null;
     }
+
+    /// <summary>The first part that can feed a mode: without one, none grows.</summary>
+    private static Part? Active(Circuit circuit) =>
+        circuit.Parts.FirstOrDefault(p => p is Resistor { Resistance.Nominal: < 0 } or DependentSource);
 
     private static Diagnostic? Resonance(
         IntervalModel model, NetworkLayout layout, Cause cause, ImmutableArray<Forcing> forcings)

@@ -98,8 +98,8 @@ public sealed class SettledStartTests
 
     [Fact]
     public void A_constant_voltage_across_a_coil_is_an_error() => Assert.Equal(
-        "plant.cause:1:1: error: there is no settled state to start from: `E` drives a charge or current that "
-        + "nothing limits\n" +
+        "plant.cause:1:1: error: there is no settled state to start from: `E` drives a charge or current "
+        + "that nothing limits\n" +
         """
           source E at s : 1 V
           ^^^^^^^^^^^^^^^^^^^
@@ -116,7 +116,13 @@ public sealed class SettledStartTests
 
     [Fact]
     public void An_unstable_mode_is_an_error() => Assert.Equal(
-        "",
+        """
+        plant.cause:2:1: error: there is no settled state to start from: a mode grows, time constant 1.000 ms
+          resistor R from a to ground : -1 kΩ
+          ^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^
+          → start as stated, with the charges and currents you know
+
+        """,
         Unsolved.Message(
             """
             capacitor C at a : 1 µF
