@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports;
 using CircuitTransient.Reports.Html;
+using CircuitTransient.Reports.Pdf;
 
 namespace CircuitTransient.Cli;
 
@@ -9,7 +10,7 @@ namespace CircuitTransient.Cli;
 public static class ResultFiles
 {
     /// <summary>Every file that is written, in the order the summary names them.</summary>
-    public static ImmutableArray<OutputFile> Of(TransientResult result, string command)
+    public static ImmutableArray<OutputFile> Of(TransientResult result, string command, bool isPdf)
     {
         // The picture takes as long as all else together, and a second core is mostly there.
         var picture = Task.Run(() => WaveformPlot.Png(result));
@@ -20,6 +21,7 @@ public static class ResultFiles
             OutputFile.OfText("waveforms.svg", WaveformPlot.Svg(result)),
             new OutputFile("waveforms.png", picture.GetAwaiter().GetResult()),
             OutputFile.OfText("report.html", HtmlReport.Write(result, command)),
+            .. isPdf ? [new OutputFile("report.pdf", PdfReport.Write(result, command))] : (OutputFile[])[],
         ];
     }
 }

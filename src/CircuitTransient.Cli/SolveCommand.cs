@@ -38,6 +38,8 @@ internal sealed class SolveCommand : Command
 
     private readonly Option<bool> json = new("--json") { Description = "Print the results document." };
 
+    private readonly Option<bool> pdf = new("--pdf") { Description = "Write the report as PDF too." };
+
     private readonly Option<bool> noFiles = new("--no-files") { Description = "Write no files." };
 
     private readonly Option<bool> quiet = new("--quiet")
@@ -55,7 +57,7 @@ internal sealed class SolveCommand : Command
         : base("solve", "Solve circuits, print a summary and write the results.")
     {
         Add(files);
-        foreach (var option in (Option[])[folder, at, after, samples, json, noFiles, quiet, strict])
+        foreach (var option in (Option[])[folder, at, after, samples, json, pdf, noFiles, quiet, strict])
         {
             Add(option);
         }
@@ -81,7 +83,8 @@ internal sealed class SolveCommand : Command
                 parsed.GetValue(noFiles) ? null : parsed.GetRequiredValue(folder),
                 parsed.GetValue(json),
                 parsed.GetValue(quiet),
-                parsed.GetValue(strict)) { After = since }
+                parsed.GetValue(strict),
+                parsed.GetValue(pdf)) { After = since }
             : null;
     }
 }

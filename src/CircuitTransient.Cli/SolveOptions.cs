@@ -9,8 +9,9 @@ namespace CircuitTransient.Cli;
 /// <param name="IsJson">Whether the results document takes the place of the summary.</param>
 /// <param name="IsQuiet">Whether there is no summary.</param>
 /// <param name="IsStrict">Whether warnings and passed linear ranges count as broken requirements.</param>
+/// <param name="IsPdf">Whether the report is written as PDF too.</param>
 public sealed record SolveOptions(
-    InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict)
+    InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict, bool IsPdf)
 {
     /// <summary>The event since which contributions are broken down a second time; null where none was
     /// asked for.</summary>
@@ -28,7 +29,8 @@ public sealed record SolveOptions(
         var quoted = isPlain ? name : $"\"{name}\"";
         var at = At.Instants.Any() ? $" --at \"{At.Source.Content}\"" : "";
         var samples = SampleCount == UsualSampleCount ? "" : $" --samples {SampleCount}";
-        var after = After is { } words ? $" --after \"{words.Text}\"" : "";
-        return $"circuit-transient solve {quoted}{at}{after}{samples}";
+        var after = After is { } words ? $" --after \"{words.Text.Replace("\"", "")}\"" : "";
+        var pdf = IsPdf ? " --pdf" : "";
+        return $"circuit-transient solve {quoted}{at}{after}{samples}{pdf}";
     }
 }

@@ -125,7 +125,7 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
         }
 
         var folder = OutputFolder.For(options.Folder, file);
-        var files = ResultFiles.Of(result, options.CommandFor(file));
+        var files = ResultFiles.Of(result, options.CommandFor(file), options.IsPdf);
         try
         {
             OutputFolder.Write(folder, files, cancellation);

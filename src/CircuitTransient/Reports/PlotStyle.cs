@@ -12,6 +12,9 @@ public static class PlotStyle
     /// <summary>Texts and the line of the total.</summary>
     public const string Ink = "#1c2126";
 
+    /// <summary>Marks and bars of the reports.</summary>
+    public const string Accent = "#1f5673";
+
     /// <summary>Texts that matter less.</summary>
     public const string Grey = "#5c656e";
 

@@ -26,6 +26,7 @@ public class PlotStyleTests
     [Fact]
     public void Lines_stand_out_from_the_paper() =>
         Assert.All(
-            Enumerable.Range(0, 6).Select(i => ColourSight.Contrast(PlotStyle.Cause(i).Colour, PlotStyle.Paper)),
+            Enumerable.Range(0, 6).Select(i => PlotStyle.Cause(i).Colour)
+                .Select(colour => ColourSight.Contrast(colour, PlotStyle.Paper)),
             contrast => Assert.InRange(contrast, 3.5, 21));
 }

@@ -6,7 +6,7 @@ namespace CircuitTransient.Reports.Html;
 /// <summary>The switchings along the study's time.</summary>
 internal static class EventLine
 {
-    private const double Width = 1040;
+    private const double Width = 860;
     private const double Left = 16;
     private const double Right = Width - 70;
     private const double Size = 12;

@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Measurements;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports.Html;
 
@@ -73,15 +74,6 @@ public static partial class HtmlReport
 
             """);
 
-    private static string IntervalName(IntervalResult interval)
-    {
-        var from = interval.From == 0 ? "0 s" : Number(interval.From, "s");
-        var span = $"{from} to {Number(interval.Until, "s")}";
-        return interval.StartsWith.IsEmpty
-            ? span
-            : $"{span}, from {string.Join(" and ", interval.StartsWith)}";
-    }
-
     private static Markup PoleTable(IntervalResult interval)
     {
         var table = Markup.Of($"""
@@ -107,20 +99,9 @@ public static partial class HtmlReport
 
     private static Markup PoleRow(Pole pole)
     {
-        var magnitude = Math.Sqrt((pole.Re * pole.Re) + (pole.Im * pole.Im));
-        var place = pole.Im == 0
-            ? $"{Number(pole.Re, "")} 1/s"
-            : $"{Number(pole.Re, "")} 1/s ± j {Number(pole.Im, "")} rad/s";
-        var constant = pole.Re == 0 ? "does not decay" : Number(Math.Abs(1 / pole.Re), "s");
-        var growing = pole.Re > 0 ? ", growing" : "";
-        var frequency = pole.Im == 0 ? "" : Number(magnitude / (2 * Math.PI), "Hz");
-        var damping = pole.Im == 0 ? "" : Number(-pole.Re / magnitude, "");
-        return Markup.Of($"""
-            <tr><th scope="row">{place}</th><td class="number">{constant}{growing}</td>
-            <td class="number">{frequency}</td><td class="number">{damping}</td>
-            <td class="number">{pole.Multiplicity}</td></tr>
-
-            """);
+        var words = PoleWords(pole);
+        var figures = words.Skip(1).Select(word => Markup.Of($"<td class=\"number\">{word}</td>"));
+        return Markup.Of($"<tr><th scope=\"row\">{words[0]}</th>{Markup.Join(figures)}</tr>\n");
     }
 
     // A picture whose colours follow the reader's setting; each colour of the style has a variable.

@@ -1,4 +1,5 @@
 using System.Globalization;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports.Html;
 
@@ -41,13 +42,6 @@ public static partial class HtmlReport
             class="rule" d="M62 0 V12"/><rect class="mark" x="{Coordinate(start)}" y="2"
             width="{Coordinate(width)}" height="8"/></svg>
             """);
-    }
-
-    private static string Percent(double fraction)
-    {
-        var percent = 100 * fraction;
-        var text = percent.ToString(Math.Abs(percent) >= 1000 ? "0" : "0.0", CultureInfo.InvariantCulture);
-        return (text == "-0.0" ? "0.0" : text) + " %";
     }
 
     private static string Coordinate(double value) => value.ToString("0.##", CultureInfo.InvariantCulture);

@@ -1,4 +1,5 @@
 using CircuitTransient.Measurements;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports.Html;
 
@@ -85,13 +86,21 @@ public static partial class HtmlReport
 
     private static Markup Caption(ObservationResult observed)
     {
+        if (observed.Contributions is [var only])
+        {
+            return Markup.Of($"""
+                The line is the total, in {observed.Unit} over time; its one cause is
+                {Markup.Name(only.Cause)}.
+                """);
+        }
+
         var largest = observed.Contributions
             .OrderByDescending(c => Math.Abs((observed.Greatest == observed.Max ? c.AtMax : c.AtMin) ?? 0))
             .Take(3)
             .Select((c, i) => Markup.Of($"{(i == 0 ? "" : ", ")}{Markup.Name(c.Cause)}"));
         return Markup.Of($"""
-            The thick line is the total, in {observed.Unit} over time; thin lines are contributions, the
-            largest at its greatest value from {Markup.Join(largest)}.
+            The thick line is the total, in {observed.Unit} over time; thin lines are contributions. The
+            largest at its greatest value: {Markup.Join(largest)}.
             """);
     }
 
@@ -237,7 +246,4 @@ public static partial class HtmlReport
         <td class="number">{Number(figure.Value, figure.Unit)}</td><td>{figure.Definition}</td></tr>
 
         """);
-
-    private static string Signed(double? value, string unit) =>
-        value > 0 ? $"+{Number(value, unit)}" : Number(value, unit);
 }

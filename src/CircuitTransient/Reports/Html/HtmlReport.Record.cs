@@ -1,5 +1,5 @@
-using System.Globalization;
 using CircuitTransient.Measurements;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports.Html;
 
@@ -40,13 +40,6 @@ public static partial class HtmlReport
             </section>
             """);
     }
-
-    private static string Peak(TimedValue? peak, string unit) => peak switch
-    {
-        null => "undetermined",
-        { Value: null } => "no finite value",
-        { Value: { } value } => Number(value, unit),
-    };
 
     private static Markup Impulses(TransientResult result)
     {
@@ -131,6 +124,4 @@ public static partial class HtmlReport
             </section>
             """);
     }
-
-    private static string Small(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 }

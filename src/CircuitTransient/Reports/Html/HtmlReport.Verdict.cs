@@ -1,5 +1,5 @@
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports.Html;
 
@@ -63,34 +63,6 @@ public static partial class HtmlReport
 
     private static Markup Broken(bool holds) => holds ? default : Markup.Of($" class=\"broken\"");
 
-    private static string Held(RequirementResult requirement) =>
-        (requirement.Holds, requirement.Margin) switch
-        {
-            (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
-            (true, null) => "held",
-            (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
-            (false, null) => "broken without limit",
-        };
-
-    private static double? Used(Bound bound, RequirementResult requirement)
-    {
-        if (requirement.Worst.Value is not { } value)
-        {
-            return requirement.Holds ? null : double.PositiveInfinity;
-        }
-
-        return bound switch
-        {
-            Limits { Lower: null, Upper: { } upper and not 0 } when upper > 0 => Math.Max(0, value / upper),
-            Limits { Lower: { } lower and not 0, Upper: { } upper and not 0 } when lower < 0 && upper > 0 =>
-                Math.Max(value / upper, value / lower),
-            Limits { Lower: { } lower, Upper: null } when lower > 0 && value > 0 => lower / value,
-            SettlesTo settles when settles.Target != 0 && settles.Within != 0 =>
-                Math.Abs(value - settles.Target) / Math.Abs(settles.Within * settles.Target),
-            _ => null,
-        };
-    }
-
     private static Markup RatingTable(TransientResult result)
     {
         var ratings = result.Parts
@@ -137,28 +109,6 @@ public static partial class HtmlReport
         var rest = unrated.Length > 60 ? $" and {unrated.Length - 60} more" : "";
         return Markup.Of($"<p class=\"aside\">No rating given: {Markup.Join(names)}{rest}.</p>\n");
     }
-
-    private static string Reached(RatingResult rating) =>
-        rating.Reached is { } reached ? Number(reached, rating.Unit) : "no finite value";
-
-    private static string Held(RatingResult rating) => (rating.Holds, rating.Reached - rating.Rated) switch
-    {
-        (true, _) => "held",
-        (false, { } excess) => $"exceeded by {Number(excess, rating.Unit)}",
-        (false, null) => "exceeded without limit",
-    };
-
-    private static string Rated(string unit) => unit switch
-    {
-        "V" => "peak voltage",
-        "A" => "peak current",
-        "W" => "mean power",
-        "J" => "energy",
-        "A²s" => "I²t",
-        "V/s" => "rate of change of voltage",
-        "A/s" => "rate of change of current",
-        _ => "rating",
-    };
 
     private static Markup Doubts(TransientResult result) => Markup.Join(
         from part in result.Parts

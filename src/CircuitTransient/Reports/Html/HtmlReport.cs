@@ -86,12 +86,8 @@ public static partial class HtmlReport
         return reader.ReadToEnd();
     }
 
-    private static string Version =>
+    /// <summary>The version of this library.</summary>
+    internal static string Version =>
         typeof(HtmlReport).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()
             ?.InformationalVersion ?? "";
-
-    private static string Number(double? value, string unit) =>
-        value is { } number && double.IsFinite(number)
-            ? EngineeringNumber.Format(number, unit)
-            : "undetermined";
 }

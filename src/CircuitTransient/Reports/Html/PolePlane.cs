@@ -8,7 +8,9 @@ namespace CircuitTransient.Reports.Html;
 /// middle the logarithm of its magnitude, so that slow and fast ones both show.</summary>
 internal static class PolePlane
 {
-    private const double Width = 330;
+    /// <summary>Width of a picture in points.</summary>
+    public const double Width = 330;
+
     private const double Height = 300;
     private const double Middle = 150;
     private const double Inner = 16;

@@ -29,7 +29,10 @@ const views = data.observations.map((observation, index) => {
   const section = host.closest(".observation");
   const view = { observation, host, section, panels: [], isNear: false, isDirty: true };
   host.append(tools(view));
-  view.panels.push(new Panel(host, view, undefined, shared));
+  // An observation with a window of its own is shown within it; the others share their time axis.
+  const { from, to } = observation;
+  const window = from > 0 || to < data.until ? { from, to, origin: 0, log: false, words: "its window" } : undefined;
+  view.panels.push(new Panel(host, view, window, shared));
   if (observation.closeUp) {
     const words = make("p", { class: "aside close-up" }, `Close-up: ${observation.closeUp.words}`);
     host.append(words);

@@ -30,7 +30,8 @@ public partial class ExploringTests(Browser browser)
 
         Assert.Equal(["Feed", "Aid", "C1 initial charge"], causes.Select(cause => cause.Name));
         Assert.Equal(
-            $"With the causes as scaled: {TerminalSummary.Verdict(engine)}", await opened.Text("#verdict-words"));
+            $"With the causes as scaled: {TerminalSummary.Verdict(engine)}",
+            await opened.Text("#verdict-words"));
         for (var i = 0; i < engine.Observations.Length; i++)
         {
             var expected = engine.Observations[i];

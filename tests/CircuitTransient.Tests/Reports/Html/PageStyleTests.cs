@@ -17,7 +17,8 @@ public partial class PageStyleTests
         var colours = Colours(theme);
 
         // Found by search; a difference of 10 is plain to see between lines (common practice, no source).
-        Assert.InRange(ColourSight.LeastDistance([colours["ink"], .. Causes.Select(c => colours[c])]), 20, 200);
+        string[] lines = [colours["ink"], .. Causes.Select(c => colours[c])];
+        Assert.InRange(ColourSight.LeastDistance(lines), 20, 200);
     }
 
     [Theory]
@@ -55,7 +56,8 @@ public partial class PageStyleTests
         using var stream = typeof(HtmlReport).Assembly.GetManifestResourceStream("report.css")!;
         using var reader = new StreamReader(stream);
         var block = Root().Matches(reader.ReadToEnd())[theme].Value;
-        return Variable().Matches(block).ToDictionary(m => m.Groups["name"].Value, m => m.Groups["colour"].Value);
+        return Variable().Matches(block)
+            .ToDictionary(m => m.Groups["name"].Value, m => m.Groups["colour"].Value);
     }
 
     [GeneratedRegex(@":root \{[^}]*\}", RegexOptions.ExplicitCapture, 1000)]

@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports.Html;
 using CircuitTransient.Tests.Project;
@@ -8,6 +9,9 @@ namespace CircuitTransient.Tests.Reports.Html;
 /// <summary>Pages of solved circuits.</summary>
 internal static class SolvedPages
 {
+    private static readonly ConcurrentDictionary<string, TransientResult> Solved =
+        new(StringComparer.Ordinal);
+
     /// <summary>Names of the demonstration circuits.</summary>
     public static IEnumerable<string> Demos => Repository.Files
         .Where(f => f.StartsWith("netlists/", StringComparison.Ordinal) && Path.GetExtension(f) == ".cause")
@@ -17,8 +21,8 @@ internal static class SolvedPages
     public static TransientResult AsItStands { get; } = Scaled();
 
     /// <summary>A demonstration circuit, solved.</summary>
-    public static TransientResult Demo(string name) =>
-        Solve(Repository.Read($"netlists/{name}.cause"), $"{name}.cause");
+    public static TransientResult Demo(string name) => Solved.GetOrAdd(
+        name, _ => Solve(Repository.Read($"netlists/{name}.cause"), $"{name}.cause"));
 
     /// <summary>Two sources and a charge, each scaled; something of each kind is judged.</summary>
     public static TransientResult Scaled(double feed = 1, double aid = 1, double charge = 1) => Solve($"""
@@ -53,6 +57,6 @@ internal static class SolvedPages
             AnalysisOptions.Default,
             path => throw new InvalidOperationException($"the circuit names {path}"),
             TestContext.Current.CancellationToken);
-        return Assert.IsType<Solved>(outcome).Result;
+        return Assert.IsType<CircuitTransient.Solved>(outcome).Result;
     }
 }

@@ -1,0 +1,121 @@
+using System.Collections.Immutable;
+using System.Globalization;
+using CircuitTransient.Circuits;
+using CircuitTransient.Measurements;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Reports;
+
+/// <summary>Figures and verdicts in words, alike on the page and on paper.</summary>
+internal static class ReportWords
+{
+    /// <summary>A figure with its unit; <c>undetermined</c> where there is none.</summary>
+    public static string Number(double? value, string unit) =>
+        value is { } number && double.IsFinite(number)
+            ? EngineeringNumber.Format(number, unit)
+            : "undetermined";
+
+    /// <summary>A figure with its sign, a plus too.</summary>
+    public static string Signed(double? value, string unit) =>
+        value > 0 ? $"+{Number(value, unit)}" : Number(value, unit);
+
+    /// <summary>A fraction in per cent.</summary>
+    public static string Percent(double fraction)
+    {
+        var percent = 100 * fraction;
+        var text = percent.ToString(Math.Abs(percent) >= 1000 ? "0" : "0.0", CultureInfo.InvariantCulture);
+        return (text == "-0.0" ? "0.0" : text) + " %";
+    }
+
+    /// <summary>The verdict on a requirement.</summary>
+    public static string Held(RequirementResult requirement) =>
+        (requirement.Holds, requirement.Margin) switch
+        {
+            (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
+            (true, null) => "held",
+            (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
+            (false, null) => "broken without limit",
+        };
+
+    /// <summary>The worst value as a fraction of what its bound allows; null where that has no
+    /// meaning.</summary>
+    public static double? Used(Bound bound, RequirementResult requirement)
+    {
+        if (requirement.Worst.Value is not { } value)
+        {
+            return requirement.Holds ? null : double.PositiveInfinity;
+        }
+
+        return bound switch
+        {
+            Limits { Lower: null, Upper: { } upper and not 0 } when upper > 0 => Math.Max(0, value / upper),
+            Limits { Lower: { } lower and not 0, Upper: { } upper and not 0 } when lower < 0 && upper > 0 =>
+                Math.Max(value / upper, value / lower),
+            Limits { Lower: { } lower, Upper: null } when lower > 0 && value > 0 => lower / value,
+            SettlesTo settles when settles.Target != 0 && settles.Within != 0 =>
+                Math.Abs(value - settles.Target) / Math.Abs(settles.Within * settles.Target),
+            _ => null,
+        };
+    }
+
+    /// <summary>What a rated part reached.</summary>
+    public static string Reached(RatingResult rating) =>
+        rating.Reached is { } reached ? Number(reached, rating.Unit) : "no finite value";
+
+    /// <summary>The verdict on a rating.</summary>
+    public static string Held(RatingResult rating) => (rating.Holds, rating.Reached - rating.Rated) switch
+    {
+        (true, _) => "held",
+        (false, { } excess) => $"exceeded by {Number(excess, rating.Unit)}",
+        (false, null) => "exceeded without limit",
+    };
+
+    /// <summary>What is rated, by its unit.</summary>
+    public static string Rated(string unit) => unit switch
+    {
+        "V" => "peak voltage",
+        "A" => "peak current",
+        "W" => "mean power",
+        "J" => "energy",
+        "A²s" => "I²t",
+        "V/s" => "rate of change of voltage",
+        "A/s" => "rate of change of current",
+        _ => "rating",
+    };
+
+    /// <summary>A peak; infinite ones in words.</summary>
+    public static string Peak(TimedValue? peak, string unit) => peak switch
+    {
+        null => "undetermined",
+        { Value: null } => "no finite value",
+        { Value: { } value } => Number(value, unit),
+    };
+
+    /// <summary>A figure of a self-check.</summary>
+    public static string Small(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
+
+    /// <summary>An interval and what it starts with.</summary>
+    public static string IntervalName(IntervalResult interval)
+    {
+        var from = interval.From == 0 ? "0 s" : Number(interval.From, "s");
+        var span = $"{from} to {Number(interval.Until, "s")}";
+        return interval.StartsWith.IsEmpty
+            ? span
+            : $"{span}, from {string.Join(" and ", interval.StartsWith)}";
+    }
+
+    /// <summary>A pole in words: place, time constant, natural frequency, damping ratio,
+    /// multiplicity.</summary>
+    public static ImmutableArray<string> PoleWords(Pole pole)
+    {
+        var magnitude = Math.Sqrt((pole.Re * pole.Re) + (pole.Im * pole.Im));
+        var place = pole.Im == 0
+            ? $"{Number(pole.Re, "")} 1/s"
+            : $"{Number(pole.Re, "")} 1/s ± j {Number(pole.Im, "")} rad/s";
+        var growing = pole.Re > 0 ? ", growing" : "";
+        var constant = pole.Re == 0 ? "does not decay" : Number(Math.Abs(1 / pole.Re), "s") + growing;
+        var frequency = pole.Im == 0 ? "" : Number(magnitude / (2 * Math.PI), "Hz");
+        var damping = pole.Im == 0 ? "" : Number(-pole.Re / magnitude, "");
+        return [place, constant, frequency, damping, $"{pole.Multiplicity}"];
+    }
+}
