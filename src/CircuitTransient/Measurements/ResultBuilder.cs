@@ -37,6 +37,10 @@ public static class ResultBuilder
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
         var stresses = new PartStresses(curves, infinities, s => grams[s]);
 
+        var own = new CurveBuilder(curves);
+        var checking =
+            Task.Run(() => SelfChecks.Run(own, new StoredEnergy(own), s => grams[s]), cancellation);
+
         var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
             .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
         var parts = Enumerable.Range(0, circuit.Parts.Length)
@@ -52,9 +56,9 @@ public static class ResultBuilder
                 .. observed.SelectMany(o => Peaks(o.Result)),
                 .. requirements.Select(r => r.Worst.Time).Where(t => t >= 0 && t <= solution.Until),
             ]);
-        var (checks, notJudged) = SelfChecks.Run(curves, energy, s => grams[s]);
         var intervalResults = solution.Intervals.Select(intervals.Measure).ToImmutableArray();
         var eventResults = solution.Occurrences.Select(events.Measure).ToImmutableArray();
+        var (checks, notJudged) = checking.GetAwaiter().GetResult();
         return new TransientResult(
             circuit,
             solution.Until,
