@@ -36,6 +36,10 @@ public static class ResultBuilder
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
         var stresses = new PartStresses(curves, infinities, s => grams[s]);
 
+        var own = new CurveBuilder(curves);
+        var checking =
+            Task.Run(() => SelfChecks.Run(own, new StoredEnergy(own), s => grams[s]), cancellation);
+
         var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
             .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
         var parts = Enumerable.Range(0, circuit.Parts.Length)
@@ -48,7 +52,7 @@ public static class ResultBuilder
                 .. observed.SelectMany(o => Peaks(o.Result)),
                 .. requirements.Select(r => r.Worst.Time).Where(t => t >= 0 && t <= solution.Until),
             ]);
-        var (checks, notJudged) = SelfChecks.Run(curves, energy, s => grams[s]);
+        var (checks, notJudged) = checking.GetAwaiter().GetResult();
         return new TransientResult(
             circuit,
             solution.Until,

@@ -1,4 +1,5 @@
 using CircuitTransient.Circuits;
+using CircuitTransient.Solutions;
 using CircuitTransient.Solutions.Curves;
 
 namespace CircuitTransient.Measurements.Checks;
@@ -12,12 +13,14 @@ internal sealed class StudySizes
 
     private readonly CurveBuilder curves;
     private readonly Dictionary<Measurand, double> sizes = [];
+    private readonly double[][][] between;
     private readonly double largestVoltage;
     private readonly double largestCurrent;
 
     public StudySizes(CurveBuilder curves)
     {
         this.curves = curves;
+        between = [.. curves.Tables.Select(t => FunctionsBetween(t.Segment))];
         var parts = Enumerable.Range(0, curves.Solution.Circuit.Parts.Length).ToArray();
         largestVoltage = parts.Max(i => Largest(new VoltageAcross(i)));
         largestCurrent = parts.Max(i => Largest(new CurrentThrough(i)));
@@ -30,30 +33,62 @@ internal sealed class StudySizes
         {
             var floor = Trace * (quantity is CurrentThrough ? largestCurrent : largestVoltage);
             size = Math.Max(Largest(quantity), floor);
+            size = size == 0 ? Cancelled * Conceivable(quantity is CurrentThrough) : size;
             sizes.Add(quantity, size);
         }
 
         return size;
     }
 
+    /// <summary>Where every current is exactly zero, as in a charge at rest, what the voltages could drive
+    /// through the least resistance; where every voltage is, what the currents could raise.</summary>
+    private double Conceivable(bool isCurrent)
+    {
+        var resistances = curves.Solution.Circuit.Parts.OfType<Resistor>()
+            .Select(r => Math.Abs(r.Resistance.Nominal)).DefaultIfEmpty(1).ToArray();
+        return isCurrent ? largestVoltage / resistances.Min() : largestCurrent * resistances.Max();
+    }
+
     private double Largest(Measurand quantity)
     {
         double largest = 0;
-        foreach (var table in curves.Tables)
+        for (var s = 0; s < curves.Tables.Length; s++)
         {
+            var table = curves.Tables[s];
             if (table.Segment.Coefficients(quantity) is { } coefficients)
             {
                 var piece = new LinearPiece(table, coefficients);
                 var envelope = new double[coefficients.Length];
                 table.Segment.Basis.Envelope(0, table.Segment.Length, envelope);
-                largest = Math.Max(largest, Cancelled * piece.Bounds(envelope).Value);
+                largest = Math.Max(largest, Cancelled * piece.MagnitudeWithin(envelope));
                 foreach (var value in piece.Tabulated)
                 {
                     largest = Math.Max(largest, Math.Abs(value));
+                }
+
+                foreach (var functions in between[s])
+                {
+                    largest = Math.Max(largest, Math.Abs(piece.ValueAt(0, functions)));
                 }
             }
         }
 
         return largest;
+    }
+
+    /// <summary>The functions at golden parts of a segment: tabulated instants may all be zeros of a
+    /// sine.</summary>
+    private static double[][] FunctionsBetween(Segment segment)
+    {
+        const double golden = 0.6180339887498949;
+        const int count = 8;
+        var functions = new double[count][];
+        for (var k = 0; k < count; k++)
+        {
+            functions[k] = new double[segment.Basis.Width];
+            segment.Basis.Evaluate(golden * (k + 1) % 1 * segment.Length, functions[k]);
+        }
+
+        return functions;
     }
 }
