@@ -84,4 +84,51 @@ public sealed class RecoveryVoltageTests
         Close.To(7018.1341, double.Hypot(pole.Re, pole.Im) / double.Tau, 1e-8); // eight digits given
         Close.To(0.279997993335, -pole.Re / double.Hypot(pole.Re, pole.Im));
     }
+
+    // Values of IEC 62271-100 (uc, t3 and the rate of rise, two parameters), from memory; the formula's
+    // figures are computed (C): uc = 1.5 · 1.4 · Ur √(2/3).
+    [Theory]
+    [InlineData(12, 61, 20.6, 0.34)]
+    [InlineData(24, 87, 41.2, 0.47)]
+    [InlineData(36, 109, 61.7, 0.57)]
+    public void The_envelopes_of_the_standard_are_the_formula_rounded(
+        double rated, double t3, double crest, double rate)
+    {
+        // an undamped swing about 1.05 times the crest of the phase makes 2.1 times it
+        var solved = SolvedText.Of(
+            $"""
+            source E at s : step of 1.05 * {rated} kV * sqrt(2/3)
+            inductor L from s to contact : 1 mH
+            capacitor C from contact to ground : 0.1 µF
+            observe voltage of contact
+            until 100 µs
+            """);
+        var uc = solved.Max(Voltage) / 1e3;
+        Close.AsPrinted(crest, uc, 1);
+        Close.AsPrinted(rate, uc / t3, 2);
+    }
+
+    // Chopping 5 A in 5 H beside 0.01 µF, from memory; V = i √(L/C) quoted (V2); the rest computed (C).
+    [Fact]
+    public void A_chopped_current_swings_up_to_its_surge_impedance()
+    {
+        var solved = SolvedText.Of(Chopped, 1e-6);
+        Close.To(111803.39887498948, Math.Abs(solved[Voltage].Greatest.Value!.Value));
+    }
+
+    [Fact]
+    public void The_critical_resistance_lowers_a_chopped_currents_peak()
+    {
+        const string critical = "\nresistor R from contact to ground : sqrt(5 H / 0.01 µF) / 2";
+        var wave = SolvedText.Of(Chopped + critical)[Voltage];
+        Close.To(-41130.171899198995, wave.Min.Value!.Value);
+        Close.To(223.60679774997897e-6, wave.Min.Time, Close.Instant);
+    }
+
+    private const string Chopped = """
+        inductor L from contact to ground : 5 H, carrying 5 A
+        capacitor C from contact to ground : 0.01 µF
+        observe voltage of contact
+        until 1.5 ms
+        """;
 }
