@@ -145,8 +145,8 @@ public static partial class HtmlReport
             : contribution.OwnMax;
         var without = atMax ? contribution.MaxWithout : contribution.MinWithout;
         var share = value is { } part && total != 0 ? Percent(part / total) : "";
-        var time = own?.Value is not null
-            ? Markup.Of($" <span class=\"aside\">at {Number(own.Time, "s")}</span>")
+        var time = own?.Value is not (null or 0)
+            ? Markup.Of($" <span class=\"aside\">at {Number(own!.Time, "s")}</span>")
             : default;
         return Markup.Of($"""
             <tr data-cause="{i}"><th scope="row">{Markup.Name(contribution.Cause)}</th>
@@ -213,9 +213,21 @@ public static partial class HtmlReport
             <tbody>
             {Markup.Join(rows)}</tbody>
             </table></div>
-
+            {Driving(since)}
             """);
     }
+
+    private static Markup Driving(SinceEvent since) => DrivingDifference.Of(since) is not { } difference
+        ? default
+        : Markup.Of($"""
+            <p class="aside cancelling">Two large causes cancel. What they are at that instant, and their
+            difference: {Markup.Name(difference.With.Cause)}
+            {Number(Math.Abs(difference.With.Strength ?? 0), difference.Unit)} against
+            {Markup.Name(difference.Against.Cause)}
+            {Number(Math.Abs(difference.Against.Strength ?? 0), difference.Unit)}:
+            {Number(difference.Value, difference.Unit)}.</p>
+
+            """);
 
     private static Markup Figures(TransientResult result) => result.Figures.IsEmpty
         ? default
