@@ -14,7 +14,8 @@ internal static class Notices
             ImmutableArray<ObservationResult> observations) =>
     [
         .. warnings.Select(w => new Notice(w.Source.LineOf(w.Span.Start), w.Message)),
-        .. solution.NeverActed.Where(e => Schedule.Resolve(Declared(solution, e), solution.Circuit.Parts) is null)
+        .. solution.NeverActed
+            .Where(e => Schedule.Resolve(Declared(solution, e), solution.Circuit.Parts) is null)
             .Select(e => NeverActed(solution, e)),
         .. observations.Where(o => o.EndsRising).Select(o => new Notice(
             0,

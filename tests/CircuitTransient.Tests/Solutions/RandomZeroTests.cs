@@ -6,8 +6,10 @@ namespace CircuitTransient.Tests.Solutions;
 /// <summary>Current zeros in circuits drawn at random, where no closed form is at hand.</summary>
 public sealed class RandomZeroTests
 {
-    private static readonly Gen<(double R, double L, double C, double Phase, double After)> _drawing = Gen.Select(
-        Gen.Double[1, 100], Gen.Double[1, 50], Gen.Double[1, 50], Gen.Double[0, 360], Gen.Double[0.1, 15]);
+    private static readonly Gen<(double R, double L, double C, double Phase, double After)> _drawing =
+        Gen.Select(
+            Gen.Double[1, 100], Gen.Double[1, 50], Gen.Double[1, 50], Gen.Double[0, 360],
+            Gen.Double[0.1, 15]);
 
     [Fact]
     public void The_current_is_zero_where_it_is_parted_and_kept_its_sign_until_then() =>
@@ -26,11 +28,12 @@ public sealed class RandomZeroTests
 
                     """;
                 var parted = SolvedText.Of(
-                    $"{circuit}switch Q from d to ground : closed, opens at {after:F4} ms at next current zero");
+                    $"{circuit}switch Q at d : closed, opens at {after:F4} ms at next current zero");
                 var time = Assert.Single(parted.Result.Events).Time;
                 var from = after * 1e-3;
-                double[] instants = [.. Enumerable.Range(1, 99).Select(k => from + ((time - from) * k / 100))];
-                var kept = SolvedText.Of($"{circuit}switch Q from d to ground : closed", [.. instants, time]);
+                double[] instants =
+                    [.. Enumerable.Range(1, 99).Select(k => from + ((time - from) * k / 100))];
+                var kept = SolvedText.Of($"{circuit}switch Q at d : closed", [.. instants, time]);
                 var values = kept.Samples("current through Load");
                 Assert.Single(values[..^1].Select(Math.Sign).Distinct());
                 Close.OfScale(kept.Max("current through Load"), 0, values[^1], 1e-11);
