@@ -93,7 +93,8 @@ internal static class ReportWords
     };
 
     /// <summary>A figure of a self-check.</summary>
-    public static string Small(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
+    public static string Small(double value) =>
+        value == 0 ? "0" : value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 
     /// <summary>An interval and what it starts with.</summary>
     public static string IntervalName(IntervalResult interval)
