@@ -31,6 +31,7 @@ internal static class ReportWords
     public static string Held(RequirementResult requirement) =>
         (requirement.Holds, requirement.Margin) switch
         {
+            _ when !requirement.IsJudged => "broken: nothing to judge",
             (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
             (true, null) => "held",
             (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
