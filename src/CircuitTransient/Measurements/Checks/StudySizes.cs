@@ -16,7 +16,7 @@ internal sealed class StudySizes
     private readonly double[][][] between;
     private readonly double largestVoltage;
     private readonly double largestCurrent;
-    private readonly double currentAtRest; // what the voltages of a study at rest could drive; else zero
+    private readonly bool isStill;
 
     public StudySizes(CurveBuilder curves)
     {
@@ -25,20 +25,24 @@ internal sealed class StudySizes
         var parts = Enumerable.Range(0, curves.Solution.Circuit.Parts.Length).ToArray();
         largestVoltage = parts.Max(i => Largest(new VoltageAcross(i)));
         largestCurrent = parts.Max(i => Largest(new CurrentThrough(i)));
-        const double noise = 1e-13; // below it nothing but rounding flows anywhere
-        var drivable = largestVoltage / curves.Solution.Circuit.Parts.OfType<Resistor>()
-            .Select(r => Math.Abs(r.Resistance.Nominal)).DefaultIfEmpty(double.PositiveInfinity).Max();
-        currentAtRest = largestCurrent <= noise * drivable ? drivable : 0;
+        const double noise = 1e-13; // of what the voltages could drive through the greatest resistance
+        var resistors = curves.Solution.Circuit.Parts.OfType<Resistor>().ToArray();
+        isStill = resistors.Length > 0 && largestCurrent
+            <= noise * largestVoltage / resistors.Max(r => Math.Abs(r.Resistance.Nominal));
     }
 
-    /// <summary>The size of a voltage or current.</summary>
+    /// <summary>The size of a voltage or current; where nothing but rounding flows anywhere, a current's is a
+    /// trace of what the voltages could drive.</summary>
     public double Of(Measurand quantity)
     {
+        if (isStill && quantity is CurrentThrough)
+        {
+            return Cancelled * Conceivable(isCurrent: true);
+        }
+
         if (!sizes.TryGetValue(quantity, out var size))
         {
-            var floor = quantity is CurrentThrough
-                ? Math.Max(Trace * largestCurrent, currentAtRest)
-                : Trace * largestVoltage;
+            var floor = Trace * (quantity is CurrentThrough ? largestCurrent : largestVoltage);
             size = Math.Max(Largest(quantity), floor);
             size = size == 0 ? Cancelled * Conceivable(quantity is CurrentThrough) : size;
             sizes.Add(quantity, size);
@@ -47,8 +51,9 @@ internal sealed class StudySizes
         return size;
     }
 
-    /// <summary>Where every current is exactly zero, as in a charge at rest, what the voltages could drive
-    /// through the least resistance; where every voltage is, what the currents could raise.</summary>
+    /// <summary>Where every current is zero but for rounding, as in a charge at rest, what the voltages
+    /// could drive through the least resistance; where every voltage is, what the currents could
+    /// raise.</summary>
     private double Conceivable(bool isCurrent)
     {
         var resistances = curves.Solution.Circuit.Parts.OfType<Resistor>()
