@@ -22,6 +22,12 @@ internal sealed class SolveCommand : Command
         HelpName = "TIMES",
     };
 
+    private readonly Option<string> after = new("--after")
+    {
+        Description = "Break peaks down anew since an event: \"Kmain closes\", an instant, or last.",
+        HelpName = "EVENT",
+    };
+
     private readonly Option<int> samples = new("--samples")
     {
         Description = "How many samples of each waveform to aim at.",
@@ -51,7 +57,7 @@ internal sealed class SolveCommand : Command
         : base("solve", "Solve circuits, print a summary and write the results.")
     {
         Add(files);
-        foreach (var option in (Option[])[folder, at, samples, json, pdf, noFiles, quiet, strict])
+        foreach (var option in (Option[])[folder, at, after, samples, json, pdf, noFiles, quiet, strict])
         {
             Add(option);
         }
@@ -68,7 +74,9 @@ internal sealed class SolveCommand : Command
             ? new(InstantList.Empty, [])
             : InstantListParser.Parse(new SourceText(at.Name, text));
         streams.Report(instants.Diagnostics);
-        return instants.Succeeded
+        var words = parsed.GetValue(after);
+        var since = words is null ? null : AfterWords.Read(words, streams);
+        return instants.Succeeded && (words is null || since is not null)
             ? new SolveOptions(
                 instants.Value,
                 parsed.GetRequiredValue(samples),
@@ -76,7 +84,7 @@ internal sealed class SolveCommand : Command
                 parsed.GetValue(json),
                 parsed.GetValue(quiet),
                 parsed.GetValue(strict),
-                parsed.GetValue(pdf))
+                parsed.GetValue(pdf)) { After = since }
             : null;
     }
 }

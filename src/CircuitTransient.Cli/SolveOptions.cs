@@ -13,6 +13,10 @@ namespace CircuitTransient.Cli;
 public sealed record SolveOptions(
     InstantList At, int SampleCount, string? Folder, bool IsJson, bool IsQuiet, bool IsStrict, bool IsPdf)
 {
+    /// <summary>The event since which contributions are broken down a second time; null where none was
+    /// asked for.</summary>
+    public AfterWords? After { get; init; }
+
     /// <summary>How many samples are aimed at where nothing is said.</summary>
     public const int UsualSampleCount = 2000;
 
@@ -25,7 +29,8 @@ public sealed record SolveOptions(
         var quoted = isPlain ? name : $"\"{name}\"";
         var at = At.Instants.Any() ? $" --at \"{At.Source.Content}\"" : "";
         var samples = SampleCount == UsualSampleCount ? "" : $" --samples {SampleCount}";
+        var after = After is { } words ? $" --after \"{words.Text.Replace("\"", "")}\"" : "";
         var pdf = IsPdf ? " --pdf" : "";
-        return $"circuit-transient solve {quoted}{at}{samples}{pdf}";
+        return $"circuit-transient solve {quoted}{at}{after}{samples}{pdf}";
     }
 }

@@ -10,7 +10,8 @@ namespace CircuitTransient.Cli;
 public sealed class SolveRun(SolveOptions options, Streams streams, CancellationToken cancellation)
 {
     private AnalysisOptions Analysis =>
-        new([.. options.At.Instants.Select(instant => instant.Value)], options.SampleCount);
+        new([.. options.At.Instants.Select(instant => instant.Value)], options.SampleCount,
+            options.After?.Event);
 
     /// <summary>Solves the files in order.</summary>
     /// <returns>The worst of their exit statuses.</returns>
@@ -77,6 +78,12 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
         switch (outcome)
         {
             case Solved { Result: var result }:
+                if (options.After?.Missing(result) is { } missing)
+                {
+                    streams.Complain($"{file}: {missing}");
+                    return new(ExitStatus.Mistake, "has no such event");
+                }
+
                 return IsWithin(result.Until)
                     ? Finish(file, result)
                     : new(ExitStatus.Mistake, "ends before an instant asked for");

@@ -26,6 +26,7 @@ public sealed class ExtremeSearch
     private int bestPiece;
     private double size;
     private double abandoned = double.NegativeInfinity; // the highest bound that rounding leaves standing
+    private bool isBeaten; // whether the best value is one that another search found
 
     private ExtremeSearch(Curve curve, double sign, double from, double until)
     {
@@ -50,6 +51,16 @@ public sealed class ExtremeSearch
     {
         var found = new ExtremeSearch(curve, -1, from, until).Run(mostStretches);
         return found with { Value = -found.Value, Bound = -found.Bound };
+    }
+
+    /// <summary>The value of greatest magnitude, with its sign.</summary>
+    public static FoundExtreme GreatestMagnitude(Curve curve, double from, double until, int mostStretches)
+    {
+        var high = Greatest(curve, from, until, mostStretches);
+        var search =
+            new ExtremeSearch(curve, -1, from, until) { best = Math.Max(0, high.Value), isBeaten = true };
+        var low = search.Run(mostStretches);
+        return search.isBeaten ? high : low with { Value = -low.Value, Bound = -low.Bound };
     }
 
     private FoundExtreme Run(int mostStretches)
@@ -124,6 +135,11 @@ public sealed class ExtremeSearch
     private void Enqueue(int p, double a, double b)
     {
         var piece = curve.Pieces[p];
+        if (piece is LinearPiece { IsZero: true })
+        {
+            return;
+        }
+
         var table = piece.Table;
         for (var k = 0; k + 1 < table.Instants.Length; k++)
         {
@@ -134,11 +150,14 @@ public sealed class ExtremeSearch
                 continue;
             }
 
-            var upper = piece is AccumulatedPiece
-                ? double.PositiveInfinity
-                : piece.UpperBetween(
-                    sign, table.Instants[k + 1] - table.Instants[k], table.Values(k), table.Values(k + 1),
-                    table.Envelope(k));
+            if (piece.MagnitudeWithin(table.Envelope(k)) <= best)
+            {
+                continue;
+            }
+
+            var half = (table.Instants[k + 1] - table.Instants[k]) / 2;
+            var model = piece.Around(table.Instants[k] + half, half, table.Middle(k), table.Envelope(k));
+            var upper = model.Upper(sign);
             if (upper > best + (Resolution * size))
             {
                 waiting.Enqueue(new Stretch(p, left, right, upper), (-upper, piece.Segment.Start + left));
@@ -149,58 +168,23 @@ public sealed class ExtremeSearch
     private void Settle(Stretch stretch)
     {
         var piece = curve.Pieces[stretch.Piece];
-        var basis = piece.Segment.Basis;
-        var phi = new double[basis.Width];
         var middle = stretch.From + ((stretch.Until - stretch.From) / 2);
-        var half = (stretch.Until - stretch.From) / 2;
-        var (value, slope, bend) = Derivatives(piece, middle, phi);
-        Offer(stretch.Piece, middle, value);
-        var envelope = new double[basis.Width];
-        basis.Envelope(stretch.From, stretch.Until, envelope);
-        var (second, third) = piece.DerivativeBounds(envelope);
-        var isMonotone = Math.Abs(slope) >= second * half;
-        if (isMonotone || bend - (third * half) >= 0 || middle <= stretch.From || middle >= stretch.Until)
+        var model = piece.Between(stretch.From, stretch.Until);
+        Offer(stretch.Piece, middle, sign * piece.ValueAt(middle));
+        var isSmallest = middle <= stretch.From || middle >= stretch.Until;
+        if (isSmallest || model.IsMonotone || model.IsBentDown(-sign))
         {
             return; // the greatest value is at an end, and the ends have been offered
         }
 
-        if (bend + (third * half) < 0)
+        if (model.IsBentDown(sign))
         {
-            Climb(stretch, piece, phi);
+            Climb(stretch, piece, new double[piece.Segment.Basis.Width]);
             return;
         }
 
-        var upper = Math.Min(stretch.Upper, piece.UpperAround(sign, half, middle, phi, envelope));
-        if (upper > best + (Resolution * size))
-        {
-            SettleExpanded(stretch with { Upper = upper }, piece, phi, envelope);
-        }
-    }
-
-    /// <summary>The same by an expansion about the middle, which sees modes cancel.</summary>
-    private void SettleExpanded(
-        Stretch stretch, CurvePiece piece, double[] phi, ReadOnlySpan<double> envelope)
-    {
-        Span<double> terms = stackalloc double[Expansion.Order];
-        terms.Clear();
-        var middle = stretch.From + ((stretch.Until - stretch.From) / 2);
-        var expansion = new Expansion(terms);
-        piece.Expand((stretch.Until - stretch.From) / 2, middle, phi, envelope, ref expansion);
-        var bend = 2 * sign * terms[2];
-        var change = expansion.ChangeOfBend;
-        if (Math.Abs(terms[1]) >= expansion.ChangeOfSlope || bend - change >= 0)
-        {
-            return;
-        }
-
-        if (bend + change < 0)
-        {
-            Climb(stretch, piece, phi);
-            return;
-        }
-
-        var upper = Math.Min(stretch.Upper, expansion.Upper(sign));
-        if (upper <= best + expansion.Noise)
+        var upper = Math.Min(stretch.Upper, model.Upper(sign));
+        if (upper <= best + model.Noise)
         {
             abandoned = Math.Max(abandoned, upper);
         }
@@ -261,11 +245,12 @@ public sealed class ExtremeSearch
     {
         size = Math.Max(size, Math.Abs(value));
         var rounding = 1e-14 * size; // values that differ by less are equal, and the earlier one counts
-        var isEarlier = piece < bestPiece || (piece == bestPiece && tau < bestTau);
+        var isEarlier = !isBeaten && (piece < bestPiece || (piece == bestPiece && tau < bestTau));
         if (value > best + rounding || (isEarlier && value >= best - rounding)
             || double.IsNegativeInfinity(best))
         {
             best = double.IsNegativeInfinity(best) ? value : Math.Max(best, value);
+            isBeaten = false;
             bestPiece = piece;
             bestTau = tau;
         }

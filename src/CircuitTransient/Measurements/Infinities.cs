@@ -24,12 +24,21 @@ internal sealed class Infinities(CurveBuilder curves)
             }
 
             var sign = Sign(quantity, s);
-            up ??= sign > 0 ? time : null;
-            down ??= sign < 0 ? time : null;
+            var isBothWays = IsBothWays(quantity, s);
+            up ??= sign > 0 || isBothWays ? time : null;
+            down ??= sign < 0 || isBothWays ? time : null;
         }
 
         return (up, down);
     }
+
+    private bool IsBothWays(Measurand quantity, int s) => quantity switch
+    {
+        RateOfChange rate => solution.Segments[s].ImpulseAtStart(rate.Of) != 0 || IsBothWays(rate.Of, s),
+        VoltageBetween or VoltageAcross or CurrentThrough =>
+            solution.Segments[s].IsBeyondImpulseAtStart(quantity),
+        _ => false,
+    };
 
     /// <summary>The sign of the infinity at a segment's start; zero where there is none.</summary>
     private int Sign(Measurand quantity, int s)

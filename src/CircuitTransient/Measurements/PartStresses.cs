@@ -15,11 +15,7 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
     public PartResult Measure(int part)
     {
         var declared = solution.Circuit.Parts[part];
-        var voltage = Peak(new VoltageAcross(part));
-        var current = Peak(new CurrentThrough(part));
-        var power = Peak(new PowerIn(part));
-        var voltageRate = Peak(new RateOfChange(new VoltageAcross(part)));
-        var currentRate = Peak(new RateOfChange(new CurrentThrough(part)));
+        var (voltage, current, power, voltageRate, currentRate) = Peaks(part);
         var absorbed = Integral(new VoltageAcross(part), new CurrentThrough(part));
         var joule = Integral(new CurrentThrough(part), new CurrentThrough(part));
         var energy = declared switch
@@ -66,6 +62,28 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
         }
     }
 
+    /// <summary>The peaks of voltage, current, power and the rates. A resistor's current has the shape of its
+    /// voltage, so two searches give all five.</summary>
+    private (TimedValue? V, TimedValue? I, TimedValue? P, TimedValue? VoltageRate,
+        TimedValue? CurrentRate) Peaks(
+        int part)
+    {
+        var voltage = Peak(new VoltageAcross(part));
+        var voltageRate = Peak(new RateOfChange(new VoltageAcross(part)));
+        if (solution.Circuit.Parts[part] is Resistor { Resistance.Nominal: var r }
+            && voltage?.Value is not null)
+        {
+            return (voltage, Times(voltage, 1 / r), Times(voltage, voltage.Value.Value / r), voltageRate,
+                Times(voltageRate, 1 / r));
+        }
+
+        return (voltage, Peak(new CurrentThrough(part)), Peak(new PowerIn(part)), voltageRate,
+            Peak(new RateOfChange(new CurrentThrough(part))));
+    }
+
+    private static TimedValue? Times(TimedValue? peak, double factor) =>
+        peak is null ? null : peak with { Value = peak.Value * factor };
+
     /// <summary>The extreme of greatest magnitude, with its sign; its value is null where an impulse makes it
     /// infinite.</summary>
     private TimedValue? Peak(Measurand quantity)
@@ -81,11 +99,8 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
             return new TimedValue(null, time);
         }
 
-        var high = ExtremeSearch.Greatest(curve, 0, solution.Until, MostStretches);
-        var low = ExtremeSearch.Least(curve, 0, solution.Until, MostStretches);
-        return Math.Abs(low.Value) > Math.Abs(high.Value)
-            ? new TimedValue(low.Value, low.Time)
-            : new TimedValue(high.Value, high.Time);
+        var peak = ExtremeSearch.GreatestMagnitude(curve, 0, solution.Until, MostStretches);
+        return new TimedValue(peak.Value, peak.Time);
     }
 
     /// <summary>The integral of a product over the study, in closed form.</summary>

@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Cautions;
 using CircuitTransient.Measurements.Checks;
 using CircuitTransient.Measurements.Figures;
 using CircuitTransient.Solutions.Curves;
@@ -36,27 +37,36 @@ public static class ResultBuilder
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
         var stresses = new PartStresses(curves, infinities, s => grams[s]);
 
+        var own = new CurveBuilder(curves);
+        var checking =
+            Task.Run(() => SelfChecks.Run(own, new StoredEnergy(own), s => grams[s]), cancellation);
+
         var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
             .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
         var parts = Enumerable.Range(0, circuit.Parts.Length)
             .Select(i => Unless(stresses.Measure(i), cancellation)).ToImmutableArray();
         var requirements =
-            circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation)).ToImmutableArray();
+            circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation) with
+            {
+                Doubt = LinearLimits.Doubt(parts),
+            }).ToImmutableArray();
         var waves = SampledWaves.Of(
             solution, observed, options.SampleCount,
             [
                 .. observed.SelectMany(o => Peaks(o.Result)),
                 .. requirements.Select(r => r.Worst.Time).Where(t => t >= 0 && t <= solution.Until),
             ]);
-        var (checks, notJudged) = SelfChecks.Run(curves, energy, s => grams[s]);
+        var intervalResults = solution.Intervals.Select(intervals.Measure).ToImmutableArray();
+        var eventResults = solution.Occurrences.Select(events.Measure).ToImmutableArray();
+        var (checks, notJudged) = checking.GetAwaiter().GetResult();
         return new TransientResult(
             circuit,
             solution.Until,
             solution.UntilReason,
             [.. solution.Causes
                 .Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
-            [.. solution.Intervals.Select(intervals.Measure)],
-            [.. solution.Occurrences.Select(events.Measure)],
+            intervalResults,
+            eventResults,
             waves.Times,
             waves.Observations,
             [.. circuit.Observations.Where(o => o.Quantity is Figure)
@@ -66,8 +76,9 @@ public static class ResultBuilder
             checks,
             notJudged,
             Notices.Of(solution, warnings, waves.Observations),
-            [])
+            new CautionFinder(curves, parts, intervalResults, eventResults).Find())
         {
+            IsAfterAsked = options.After is not null,
             FollowedWaves = new(() => FollowedWaves.Of(curves, times, waves.Times)),
         };
     }

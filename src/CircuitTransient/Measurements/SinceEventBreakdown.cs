@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Checks;
 using CircuitTransient.Numerics;
 using CircuitTransient.Solutions;
 
@@ -33,7 +34,8 @@ internal sealed class SinceEventBreakdown(TransientSolution solution, Cancellati
         var segment = segments[at - solution.Intervals[interval].FirstSegment];
         var tau = Math.Clamp(time - segment.Start, 0, segment.Length);
         return Parts(quantity, segment, tau, causes) is { } parts
-            ? new SinceEvent(Words(interval), solution.Intervals[interval].From, parts)
+            ? new SinceEvent(Words(interval), solution.Intervals[interval].From,
+                [.. parts.Select((p, n) => n < causes.Length ? WithStrength(p, causes[n], interval) : p)])
             : null;
     }
 
@@ -94,6 +96,18 @@ internal sealed class SinceEventBreakdown(TransientSolution solution, Cancellati
 
         return causes.ToImmutable();
     }
+
+    private CauseValue WithStrength(CauseValue value, Cause cause, int interval) =>
+        solution.Circuit.Parts[Math.Max(cause.Source, cause.Store)] switch
+        {
+            VoltageSource s => value with { Strength = Strength(s.Wave, interval) },
+            CurrentSource s => value with { Strength = Strength(s.Wave, interval), StrengthUnit = "A" },
+            Inductor => value with { Strength = cause.Stored, StrengthUnit = "A" },
+            _ => value with { Strength = cause.Stored },
+        };
+
+    private double Strength(Wave wave, int interval) =>
+        WaveValue.At(wave, solution.Intervals[interval].From, before: false);
 
     private double HeldBefore(int interval, int store)
     {

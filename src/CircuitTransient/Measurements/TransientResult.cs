@@ -46,6 +46,10 @@ public sealed record TransientResult(
     /// does.</summary>
     internal Lazy<ImmutableArray<FollowedWave>> FollowedWaves { get; init; } = new([]);
 
+    /// <summary>Whether the breakdown since an event was asked for, so that it stands in the results
+    /// document.</summary>
+    public bool IsAfterAsked { get; init; }
+
     /// <summary>Whether every requirement and rating holds.</summary>
     public bool AllHold =>
         Requirements.All(r => r.Holds) && Parts.All(p => p.Ratings.All(r => r.Holds));
@@ -179,7 +183,15 @@ public sealed record ContributionsAfter(SinceEvent? AtMax, SinceEvent? AtMin);
 public sealed record SinceEvent(string Event, double Time, ImmutableArray<CauseValue> Parts);
 
 /// <summary>A cause and its value.</summary>
-public sealed record CauseValue(string Cause, double? Value);
+public sealed record CauseValue(string Cause, double? Value)
+{
+    /// <summary>The cause's own size at the event: the source's value, or what the part held; null for what
+    /// is no single cause.</summary>
+    public double? Strength { get; init; }
+
+    /// <summary>Unit of the strength: V or A.</summary>
+    public string StrengthUnit { get; init; } = "V";
+}
 
 /// <summary>An exact value at an instant asked for; contributions in the order of the
 /// observation's.</summary>
@@ -193,7 +205,12 @@ public sealed record FigureResult(string Name, string Unit, double? Value, strin
 /// <param name="Worst">The value nearest to, or furthest past, its bound.</param>
 /// <param name="Margin">In the quantity's unit, negative when broken; null where infinite.</param>
 public sealed record RequirementResult(
-    string Statement, string? Reason, string Unit, int Line, bool Holds, TimedValue Worst, double? Margin);
+    string Statement, string? Reason, string Unit, int Line, bool Holds, TimedValue Worst, double? Margin)
+{
+    /// <summary>Why the verdict is in doubt: a part passed what it is <c>linear up to</c>; else
+    /// null.</summary>
+    public string? Doubt { get; init; }
+}
 
 /// <summary>Stresses of a part; null where undetermined or infinite.</summary>
 /// <param name="Energy">Absorbed over the study, joules.</param>

@@ -6,6 +6,8 @@ namespace CircuitTransient.Measurements;
 /// <summary>Instants of a solved study: what a declared instant came to.</summary>
 public sealed class WindowTimes
 {
+    private const double Rounding = 1e-12; // an instant written out again means the same event
+
     private readonly TransientSolution solution;
     private readonly Dictionary<EventReference, double> acted;
 
@@ -29,7 +31,8 @@ public sealed class WindowTimes
         {
             var isMeant = after switch
             {
-                AfterInstant t => solution.Intervals[i].From <= t.Time,
+                AfterInstant t => solution.Intervals[i].From <= t.Time * (1 + Rounding)
+                    && !solution.Intervals[i].StartsWith.IsEmpty,
                 AfterSwitching s => solution.Intervals[i].StartsWith.Any(o =>
                     o.Closes == s.Closes && solution.Circuit.Parts[o.Event.Part].Name == s.Switch),
                 _ => false,

@@ -6,7 +6,8 @@ namespace CircuitTransient.Reports;
 /// <content>Waveforms, verdicts and stresses in the results document.</content>
 public static partial class JsonReport
 {
-    private static void WriteObservation(Utf8JsonWriter json, ObservationResult observation)
+    private static void WriteObservation(
+        Utf8JsonWriter json, ObservationResult observation, bool isAfterAsked)
     {
         json.WriteStartObject();
         json.WriteString("name", observation.Name);
@@ -18,7 +19,7 @@ public static partial class JsonReport
         WriteExtreme(json, "min", observation.Min);
         json.WriteBoolean("endsRising", observation.EndsRising);
         WriteArray(json, "contributions", observation.Contributions, WriteContribution);
-        if (observation.After is { } after)
+        if (isAfterAsked && observation.After is { } after)
         {
             json.WriteStartObject("contributionsAfter");
             WriteSinceEvent(json, "atMax", after.AtMax);
@@ -117,6 +118,7 @@ public static partial class JsonReport
         WriteNumber(json, "margin", requirement.Margin);
         json.WriteString("unit", requirement.Unit);
         WriteOptional(json, "because", requirement.Reason);
+        WriteOptional(json, "doubt", requirement.Doubt);
         json.WriteEndObject();
     }
 

@@ -69,7 +69,8 @@ public static partial class JsonReport
         WriteArray(json, "causes", result.Causes, WriteCause);
         WriteArray(json, "intervals", result.Intervals, WriteInterval);
         WriteArray(json, "events", result.Events, WriteEvent);
-        WriteArray(json, "observations", result.Observations, WriteObservation);
+        WriteArray(json, "observations", result.Observations,
+            (to, observation) => WriteObservation(to, observation, result.IsAfterAsked));
         WriteArray(json, "figures", result.Figures, WriteFigure);
         WriteArray(json, "requirements", result.Requirements, WriteRequirement);
         WriteArray(json, "parts", result.Parts, WritePart);

@@ -19,9 +19,7 @@ public static partial class TerminalSummary
         }
 
         var unit = worst.Observation.Unit;
-        var when = InstantWords.At(result, worst.Extreme.Time, worst.Extreme.Side);
-        text.Heading(
-            $"What makes the {Number(total, unit)} of {worst.Observation.Name} ({when}; {worst.Why})");
+        text.Heading(HeadingOf(result, worst));
         text.Paragraph($"From the start: {FromStart(result)}, carried through every switching");
         WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without");
         if (DecidedByAnswer(result) is { } decided)
@@ -29,16 +27,38 @@ public static partial class TerminalSummary
             text.Paragraph($"instants of the full answer kept for {decided}", hanging: 2);
         }
 
-        if (worst.Since is { } since)
+        if (worst.Since is not null)
         {
-            text.Paragraph(
-                $"Since {since.Event}: what each part held just before it, and the sources from then on");
-            var shares = since.Parts.Select(part => new Share(part.Cause, part.Value)).ToImmutableArray();
-            WriteShares(text, shares, total, unit, without: null);
-            if (Driving(result, since) is { } driving)
-            {
-                text.Paragraph(driving, hanging: 2);
-            }
+            WriteSince(text, result, worst);
+        }
+        else if (WorstObservation.FindSinceEvent(result) is { } other)
+        {
+            text.Heading(HeadingOf(result, other));
+            WriteSince(text, result, other);
+        }
+    }
+
+    private static string HeadingOf(TransientResult result, WorstObservation worst)
+    {
+        var when = InstantWords.At(result, worst.Extreme.Time, worst.Extreme.Side);
+        return $"What makes the {Number(worst.Extreme.Value, worst.Observation.Unit)} of " +
+            $"{worst.Observation.Name} ({when}; {worst.Why})";
+    }
+
+    private static void WriteSince(SummaryText text, TransientResult result, WorstObservation worst)
+    {
+        if (worst.Since is not { } since || worst.Extreme.Value is not { } total)
+        {
+            return;
+        }
+
+        text.Paragraph(
+            $"Since {since.Event}: what each part held just before it, and the sources from then on");
+        var shares = since.Parts.Select(part => new Share(part.Cause, part.Value)).ToImmutableArray();
+        WriteShares(text, shares, total, worst.Observation.Unit, without: null);
+        foreach (var driving in Driving(result, since))
+        {
+            text.Paragraph(driving, hanging: 2);
         }
     }
 
@@ -111,44 +131,6 @@ public static partial class TerminalSummary
                 : "",
             withOwn && share.Without is { } without ? Number(without.Value, unit) : "",
         ];
-
-    // Causes whose magnitudes sum to over three times the total are shown as a group with their difference.
-    private static string? Cancelling(ImmutableArray<Share> shares, double total, string unit)
-    {
-        if (shares.Sum(share => Math.Abs(share.Value ?? 0)) <= 3 * Math.Abs(total))
-        {
-            return null;
-        }
-
-        var sign = total < 0 ? -1 : 1;
-        var with = Group([.. shares.Where(share => share.Value * sign > 0)], unit);
-        var against = Group([.. shares.Where(share => share.Value * sign < 0)], unit);
-        return $"large causes cancel: {with} against {against}: {Number(total, unit)}";
-    }
-
-    private static string Group(Share[] shares, string unit)
-    {
-        var largest = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
-        var names =
-            largest.Length <= 3
-                ? string.Join(" and ", largest.Select(share => share.Cause))
-                : $"{largest[0].Cause}, {largest[1].Cause} and {largest.Length - 2} more";
-        return $"{names} {Number(Math.Abs(shares.Sum(share => share.Value ?? 0)), unit)}";
-    }
-
-    private static string? Driving(TransientResult result, SinceEvent since)
-    {
-        var switching = result.Events.FirstOrDefault(e =>
-            e.Time == since.Time && InstantWords.Name(e) == since.Event);
-        return switching switch
-        {
-            { Closes: true, VoltageBefore: { } voltage } =>
-                $"what drives it: the {Number(voltage, "V")} across {switching.Switch} just before it closes",
-            { Closes: false, CurrentBefore: { } current } =>
-                $"what drives it: the {Number(current, "A")} through {switching.Switch} just before it opens",
-            _ => null,
-        };
-    }
 
     private static string? DecidedByAnswer(TransientResult result)
     {

@@ -85,7 +85,8 @@ public static partial class TerminalSummary
             (false, null) => "broken without limit",
         };
         var because = requirement.Reason is { } reason ? $" because \"{reason}\"" : "";
-        var statement = $"{requirement.Statement}{because} (line {requirement.Line})";
+        var statement = $"{requirement.Statement}{because} (line {requirement.Line})" +
+            (requirement.Doubt is { } doubt ? $"; in doubt: {doubt}" : "");
         var worst = Finite(requirement.Worst.Value, requirement.Unit);
         var when = InstantWords.At(result, requirement.Worst.Time);
         var joint = when.Length == 0 ? "" : when.StartsWith("at ", StringComparison.Ordinal) ? " " : ", ";

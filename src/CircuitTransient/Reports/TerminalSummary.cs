@@ -99,17 +99,22 @@ public static partial class TerminalSummary
     {
         var (unit, max, min) = (observed.Unit, observed.Max, observed.Min);
         var scale = Math.Abs(observed.Greatest.Value ?? 0);
-        yield return [observed.Name, "max", Number(max.Value, unit, scale), When(result, observed, max)];
-        yield return ["", "min", Number(min.Value, unit, scale), When(result, observed, min)];
+        yield return [observed.Name, "max", Peak(max), When(result, observed, max)];
+        yield return ["", "min", Peak(min), When(result, observed, min)];
         var final = observed.Final is null ? "no limit" : Number(observed.Final, unit, scale);
         yield return ["", "end", Number(observed.End, unit, scale), $"tends to {final}"];
+
+        // A value that the equations leave open has no start either; one that is missing alone is an impulse.
+        string Peak(Extreme extreme) => extreme.Value is null && observed.Start is not null
+            ? "infinite"
+            : Number(extreme.Value, unit, scale);
     }
 
     private static string When(TransientResult result, ObservationResult observation, Extreme extreme)
     {
         if (extreme.Value is not { } value)
         {
-            return "";
+            return observation.Start is null ? "" : InstantWords.At(result, extreme.Time, extreme.Side);
         }
 
         var when = InstantWords.At(result, extreme.Time, extreme.Side);
@@ -245,7 +250,7 @@ public static partial class TerminalSummary
 
     // What is left of two equal figures after rounding is no figure: the engine owes 1e-11 of the scale.
     private static string Number(double? value, string unit, double scale) =>
-        Math.Abs(value ?? scale) <= 1e-12 * scale ? Number(0, unit) : Number(value, unit);
+        value is { } number && Math.Abs(number) <= 1e-12 * scale ? Number(0, unit) : Number(value, unit);
 
     private static string Ratio(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 }

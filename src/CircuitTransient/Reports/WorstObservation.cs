@@ -19,7 +19,13 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
     public double? Share(Contribution contribution) => AtMax ? contribution.AtMax : contribution.AtMin;
 
     /// <summary>The one whose requirement or rating is exceeded or used most; else the first.</summary>
-    public static WorstObservation? Find(TransientResult result)
+    public static WorstObservation? Find(TransientResult result) => Find(result, _ => true);
+
+    /// <summary>The worst of those whose extreme follows an event, and is broken down since it.</summary>
+    public static WorstObservation? FindSinceEvent(TransientResult result) =>
+        Find(result, worst => worst.Since is not null) is { Since: not null } found ? found : null;
+
+    private static WorstObservation? Find(TransientResult result, Func<WorstObservation, bool> isMeant)
     {
         if (result.Observations.IsEmpty)
         {
@@ -32,14 +38,15 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         {
             if (used > greatest && ObservedQuantity.Find(result, quantity) is { } observation)
             {
-                greatest = used;
                 var why = used > 1 ? $"the {what} exceeded most" : $"nearest to its {what}";
-                worst = new WorstObservation(observation, IsAtMax(observation, value), why);
+                var candidate = new WorstObservation(observation, IsAtMax(observation, value), why);
+                (worst, greatest) = isMeant(candidate) ? (candidate, used) : (worst, greatest);
             }
         }
 
-        var first = result.Observations[0];
-        return worst ?? new WorstObservation(first, first.Greatest == first.Max, "the first observed");
+        var observed = result.Observations
+            .Select(o => new WorstObservation(o, o.Greatest == o.Max, "the first observed"));
+        return worst ?? observed.FirstOrDefault(isMeant);
     }
 
     private static IEnumerable<(Measurand Quantity, double Used, double? Value, string What)> Uses(

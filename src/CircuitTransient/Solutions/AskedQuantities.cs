@@ -92,18 +92,24 @@ internal sealed class AskedQuantities(Circuit circuit, Func<Instant, double> ins
     private Diagnostic Describe(Measurand quantity, TextSpan span, string words, double from)
     {
         var when = from > 0 ? $" from {EngineeringNumber.Format(from, "s")} on" : string.Empty;
-        return quantity is CurrentThrough current
-            ? Diagnostic.Error(
-                circuit.Source, span,
-                $"the current through `{circuit.Parts[current.Part].Name}` is {words}, but nothing decides "
-                + "how it is "
+        var (message, advice) = quantity switch
+        {
+            CurrentThrough c when circuit.Parts[c.Part] is Inductor coil => (
+                $"the current through `{coil.Name}` is {words}, but nothing decides how coils coupled "
+                + "without "
+                + $"leakage share it{when}",
+                "say what leaks: a coupling of 0.99, or a winding resistance in series"),
+            CurrentThrough c => (
+                $"the current through `{circuit.Parts[c.Part].Name}` is {words}, but nothing decides how it "
+                + "is "
                 + $"shared with the ideal contacts or sources in parallel{when}",
-                "give the contacts the resistance they have: `closed resistance 1 mΩ`")
-            : Diagnostic.Error(
-                circuit.Source, span,
+                "give the contacts the resistance they have: `closed resistance 1 mΩ`"),
+            _ => (
                 $"this voltage is {words}, but nothing fixes it{when}: only open contacts lead to "
                 + $"{Where(quantity)}",
-                "give an open contact the resistance of its gap: `open resistance 10 MΩ`");
+                "give an open contact the resistance of its gap: `open resistance 10 MΩ`"),
+        };
+        return Diagnostic.Error(circuit.Source, span, message, advice);
     }
 
     private string Where(Measurand quantity)

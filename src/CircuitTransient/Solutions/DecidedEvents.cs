@@ -98,7 +98,7 @@ internal sealed class DecidedEvents(Timeline timeline, WatchedQuantities quantit
         return piece switch
         {
             LinearPiece linear => linear.Scale,
-            QuadraticPiece quadratic => quadratic.Bounds(envelope).Value,
+            QuadraticPiece quadratic => quadratic.MagnitudeWithin(envelope),
             _ => Math.Abs(piece.Tabulated[^1]),
         };
     }

@@ -49,6 +49,29 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
         return new Onset(jumps, new DoubleDouble[layout.InputCount], new double[layout.InputCount]);
     }
 
+    /// <summary>Whether an output carries more than an impulse: an impulse's derivative, or that
+    /// one's.</summary>
+    public bool IsBeyondImpulseIn(LinearOutput output)
+    {
+        for (var order = 1; order < output.Direct.Length; order++)
+        {
+            for (var k = order; k < output.Direct.Length; k++)
+            {
+                for (var i = 0; i < output.Direct[k].Length; i++)
+                {
+                    var sets = k == order ? Stored[i]
+                        : k - order <= Orders ? Jumps[k - order - 1][i] : DoubleDouble.Zero;
+                    if (!output.Direct[k][i].IsZero && !sets.IsZero)
+                    {
+                        return true;
+                    }
+                }
+            }
+        }
+
+        return false;
+    }
+
     /// <summary>The impulse in an output: volt-seconds of a voltage, coulombs of a current.</summary>
     public double ImpulseIn(LinearOutput output)
     {

@@ -120,6 +120,11 @@ public sealed class Segment
     /// none.</summary>
     public double ImpulseAtStart(Measurand measurand) => onset.ImpulseIn(Model.Project(measurand).Output);
 
+    /// <summary>Whether a voltage or current carries a derivative of an impulse at the segment's start: it is
+    /// infinite both ways.</summary>
+    public bool IsBeyondImpulseAtStart(Measurand measurand) =>
+        onset.IsBeyondImpulseIn(Model.Project(measurand).Output);
+
     /// <summary>The motion of a cause, or the total's.</summary>
     internal Motion MotionOf(int cause) => cause == Total ? total : motions[cause];
 

@@ -24,7 +24,12 @@ internal static class SettledStart
 
         for (var c = 0; c < causes.Length; c++)
         {
-            if (causes[c].Source >= 0)
+            if (causes[c].Source < 0)
+            {
+                // What a stated quantity brings with it is settled below, with the open ones.
+                stored[c] = new DoubleDouble[layout.Stores.Length];
+            }
+            else
             {
                 var forcings = Forcing.Of(
                     causes[c].Pieces.Where(p => p.IsPerpetual), layout.Input(causes[c].Source),
@@ -98,7 +103,7 @@ internal static class SettledStart
                 {
                     var growth = EngineeringNumber.Format(1 / block.T[i, i].Re.Hi, "s");
                     return Diagnostic.Error(
-                        layout.Circuit.Source, default,
+                        layout.Circuit.Source, Active(layout.Circuit)?.Span ?? default,
                         $"there is no settled state to start from: a mode grows, time constant {growth}",
                         "start as stated, with the charges and currents you know");
                 }
@@ -108,6 +113,10 @@ internal static class SettledStart
         return null;
     }
 
+    /// <summary>The first part that can feed a mode: without one, none grows.</summary>
+    private static Part? Active(Circuit circuit) =>
+        circuit.Parts.FirstOrDefault(p => p is Resistor { Resistance.Nominal: < 0 } or DependentSource);
+
     private static Diagnostic? Resonance(
         IntervalModel model, NetworkLayout layout, Cause cause, ImmutableArray<Forcing> forcings)
     {
@@ -115,8 +124,7 @@ internal static class SettledStart
         {
             for (var b = 0; b < model.Blocks.Length; b++)
             {
-                var isDriven = model.Drive(b, forcing.Input).Any(w => w.Magnitude > 0);
-                if (!isDriven || !IsAtPole(model.Blocks[b], forcing.Exponent))
+                if (!IsDriven(model, b, forcing.Input) || !IsAtPole(model.Blocks[b], forcing.Exponent))
                 {
                     continue;
                 }
@@ -133,6 +141,28 @@ internal static class SettledStart
         }
 
         return null;
+    }
+
+    /// <summary>Whether an input moves a block at all: what only rounding leaves of W b does not.</summary>
+    private static bool IsDriven(IntervalModel model, int b, int input)
+    {
+        const double rounding = 1e-22; // of the sum's largest terms; double-double leaves some 1e-30
+        var (w, drive) = (model.Blocks[b].W, model.Drive(b, input));
+        for (var i = 0; i < drive.Length; i++)
+        {
+            double size = 0;
+            for (var k = 0; k < w.Columns; k++)
+            {
+                size += w[i, k].Magnitude * Math.Abs(model.Form.B[k, input].Hi);
+            }
+
+            if (drive[i].Magnitude > rounding * size)
+            {
+                return true;
+            }
+        }
+
+        return false;
     }
 
     private static bool IsAtPole(SpectralBlock block, DoubleDoubleComplex exponent)

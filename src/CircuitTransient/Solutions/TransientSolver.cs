@@ -68,7 +68,8 @@ public sealed class TransientSolver
                 return Failed(StudyEnd.Unknown(circuit));
             }
 
-            var until = Math.Min(NextFixed().Due, end.Time);
+            var horizon = Growth.Horizon(model, now, stored);
+            var until = Math.Min(NextFixed().Due, Math.Min(end.Time, horizon));
             var solved = solver.Solve(model, intervals.Count, now, until, stored);
             if (new DecidedEvents(timeline, watched, 1e-12 * end.Time).FirstIn(solved) is { } decided
                 && decided.Time < until)
@@ -82,6 +83,11 @@ public sealed class TransientSolver
                 Advance(model, decided.Time, solved);
                 startsWith = [.. startsWith, .. timeline.Act(now, decided.Events, isDecidedByAnswer: true)];
                 continue;
+            }
+
+            if (until >= horizon)
+            {
+                return Failed(Growth.Describe(circuit, model, horizon));
             }
 
             Advance(model, until, solved);

@@ -86,4 +86,22 @@ public sealed class HigherIndexTests
         var expected = -10e-3 * 20 * 1e-6 * omega * omega * 5 * Math.Sin(omega * 1.1e-3);
         Close.OfScale(1, expected, solved.Sample("voltage of b", 0), 1e-12);
     }
+
+    [Fact]
+    public void A_differentiated_jump_is_infinite_and_its_derivative_is_so_both_ways()
+    {
+        var solved = SolvedText.Of("""
+            source Feed at a : step of 10 V at 1 ms
+            capacitor Ca at a : 1 µF
+            dependent source D1 at b : 1 kΩ times current through Ca
+            capacitor Cb at b : 1 µF
+            observe voltage of b
+            observe current through Cb
+            until 5 ms
+            """);
+        Assert.Equal((null, 1e-3), (solved["voltage of b"].Max.Value, solved["voltage of b"].Max.Time));
+        Assert.Equal(0, solved.Min("voltage of b"));
+        Assert.Null(solved["current through Cb"].Max.Value);
+        Assert.Null(solved["current through Cb"].Min.Value);
+    }
 }

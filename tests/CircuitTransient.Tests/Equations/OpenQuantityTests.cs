@@ -143,6 +143,25 @@ public sealed class OpenQuantityTests
         ], messages);
     }
 
+    [Fact]
+    public void Coils_coupled_without_leakage_side_by_side_share_their_current_in_no_definite_way()
+    {
+        const string coils = """
+            inductor L1 at a : 1 mH, carrying 2 A
+            inductor L2 at a : 1 mH
+            coupling K of L1 and L2 : 1
+            resistor R at a : 1 Ω
+            until 10 ms
+
+            """;
+        var solved = SolvedText.Of($"{coils}observe voltage of a", 1e-3);
+        Close.To(-2 * Math.Exp(-1), solved.Sample("voltage of a", 0));
+        Assert.Equal(
+            "the current through `L1` is observed, but nothing decides how coils coupled without leakage "
+            + "share it",
+            Assert.Single(Unsolvable($"{coils}observe current through L1")).Message);
+    }
+
     /// <summary>What solving says, which must be what checking says.</summary>
     private static Diagnostic[] Unsolvable(string text)
     {

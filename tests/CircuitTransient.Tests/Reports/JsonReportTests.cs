@@ -87,12 +87,21 @@ public class JsonReportTests
     [Fact]
     public void Causes_since_an_event_stand_beside_those_from_the_start()
     {
-        using var document = JsonDocument.Parse(JsonReport.Write(SampleResults.Inrush()));
+        using var document = JsonDocument.Parse(JsonReport.Write(
+            SampleResults.Inrush() with { IsAfterAsked = true }));
         var observations = document.RootElement.GetProperty("observations");
         var after = observations[1].GetProperty("contributionsAfter");
         Assert.Equal("Kmain closes", after.GetProperty("atMax").GetProperty("event").GetString());
         Assert.Equal(JsonValueKind.Null, after.GetProperty("atMin").ValueKind);
         Assert.False(observations[0].TryGetProperty("contributionsAfter", out _));
+    }
+
+    [Fact]
+    public void Causes_since_an_event_stand_only_where_they_were_asked_for()
+    {
+        using var document = JsonDocument.Parse(JsonReport.Write(SampleResults.Inrush()));
+        var observations = document.RootElement.GetProperty("observations").EnumerateArray();
+        Assert.All(observations, o => Assert.False(o.TryGetProperty("contributionsAfter", out _)));
     }
 
     [Fact]

@@ -50,7 +50,7 @@ internal static class EnergyCheck
         for (var i = 0; i < solution.Circuit.Parts.Length; i++)
         {
             var resistance = Resistance(solution.Circuit.Parts[i], segment.Model.IsClosed[i]);
-            if (resistance is 0)
+            if (resistance is 0 && solution.Circuit.Parts[i] is not (Capacitor or Inductor))
             {
                 continue;
             }
@@ -60,6 +60,11 @@ internal static class EnergyCheck
             if (current is null || voltage is null)
             {
                 return null;
+            }
+
+            if (resistance is 0)
+            {
+                continue;
             }
 
             if (resistance is { } r)

@@ -36,7 +36,9 @@ internal static class RouteChecks
                 && final.ValueOf(quantity) is { } value && double.IsFinite(value.Value)
                     && sizes.Of(quantity) > 0)
             {
-                result = result.With(own - value.Value, value.EstimatedError, sizes.Of(quantity));
+                // What it tends to after the study may be far greater than anything within it.
+                var size = Math.Max(sizes.Of(quantity), Math.Abs(own));
+                result = result.With(own - value.Value, value.EstimatedError, size);
             }
         }
 

@@ -16,6 +16,7 @@ internal sealed class StudySizes
     private readonly double[][][] between;
     private readonly double largestVoltage;
     private readonly double largestCurrent;
+    private readonly bool isStill;
 
     public StudySizes(CurveBuilder curves)
     {
@@ -24,11 +25,20 @@ internal sealed class StudySizes
         var parts = Enumerable.Range(0, curves.Solution.Circuit.Parts.Length).ToArray();
         largestVoltage = parts.Max(i => Largest(new VoltageAcross(i)));
         largestCurrent = parts.Max(i => Largest(new CurrentThrough(i)));
+        const double noise = 1e-13; // of what the voltages could drive through the greatest resistance
+        var resistors = curves.Solution.Circuit.Parts.OfType<Resistor>().ToArray();
+        isStill = resistors.Length > 0 && largestCurrent
+            <= noise * largestVoltage / resistors.Max(r => Math.Abs(r.Resistance.Nominal));
     }
 
-    /// <summary>The size of a voltage or current.</summary>
+    /// <summary>The size of a voltage or current; zero where nothing but rounding flows anywhere.</summary>
     public double Of(Measurand quantity)
     {
+        if (isStill && quantity is CurrentThrough)
+        {
+            return 0;
+        }
+
         if (!sizes.TryGetValue(quantity, out var size))
         {
             var floor = Trace * (quantity is CurrentThrough ? largestCurrent : largestVoltage);
@@ -60,7 +70,7 @@ internal sealed class StudySizes
                 var piece = new LinearPiece(table, coefficients);
                 var envelope = new double[coefficients.Length];
                 table.Segment.Basis.Envelope(0, table.Segment.Length, envelope);
-                largest = Math.Max(largest, Cancelled * piece.Bounds(envelope).Value);
+                largest = Math.Max(largest, Cancelled * piece.MagnitudeWithin(envelope));
                 foreach (var value in piece.Tabulated)
                 {
                     largest = Math.Max(largest, Math.Abs(value));

@@ -65,9 +65,9 @@ internal static class RingFrequency
 
     private static double Size(CurvePiece piece, double[] envelope) => piece switch
     {
-        LinearPiece linear => linear.Bounds(envelope).Value,
-        QuadraticPiece quadratic => quadratic.Bounds(envelope).Value,
-        AccumulatedPiece accumulated => accumulated.Rate.Bounds(envelope).Value,
+        LinearPiece linear => linear.MagnitudeWithin(envelope),
+        QuadraticPiece quadratic => quadratic.MagnitudeWithin(envelope),
+        AccumulatedPiece accumulated => accumulated.Rate.MagnitudeWithin(envelope),
         _ => 0,
     };
 }

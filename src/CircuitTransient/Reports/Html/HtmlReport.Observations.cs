@@ -213,9 +213,21 @@ public static partial class HtmlReport
             <tbody>
             {Markup.Join(rows)}</tbody>
             </table></div>
-
+            {Driving(since)}
             """);
     }
+
+    private static Markup Driving(SinceEvent since) => DrivingDifference.Of(since) is not { } difference
+        ? default
+        : Markup.Of($"""
+            <p class="aside cancelling">Two large causes cancel. What they are at that instant, and their
+            difference: {Markup.Name(difference.With.Cause)}
+            {Number(Math.Abs(difference.With.Strength ?? 0), difference.Unit)} against
+            {Markup.Name(difference.Against.Cause)}
+            {Number(Math.Abs(difference.Against.Strength ?? 0), difference.Unit)}:
+            {Number(difference.Value, difference.Unit)}.</p>
+
+            """);
 
     private static Markup Figures(TransientResult result) => result.Figures.IsEmpty
         ? default

@@ -47,9 +47,12 @@ public static partial class HtmlReport
         var used = i < result.Circuit.Requirements.Length
             ? Used(result.Circuit.Requirements[i].Bound, requirement)
             : null;
+        var doubt = requirement.Doubt is { } doubtful
+            ? Markup.Of($"<br><span class=\"aside\">in doubt: {Markup.Name(doubtful)}</span>")
+            : default;
         return Markup.Of($"""
             <tr data-requirement="{i}"{Broken(requirement.Holds)}>
-            <th scope="row">{Markup.Name(requirement.Statement)}{reason}</th>
+            <th scope="row">{Markup.Name(requirement.Statement)}{reason}{doubt}</th>
             <td class="verdict">{Held(requirement)}</td>
             <td class="worst">{worst}<br><span
             class="aside">{InstantWords.At(result, requirement.Worst.Time)}</span></td>

@@ -1,5 +1,3 @@
-using System.Diagnostics;
-
 namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>The integral of a sum of products since some instant: an absorbed energy, a Joule
@@ -62,45 +60,10 @@ public sealed class AccumulatedPiece : CurvePiece
     }
 
     /// <inheritdoc/>
-    public override (double Second, double Third) DerivativeBounds(ReadOnlySpan<double> envelope)
-    {
-        var (_, first, second, _) = rate.Bounds(envelope);
-        return (first, second);
-    }
+    public override double MagnitudeWithin(ReadOnlySpan<double> envelope) => double.PositiveInfinity;
 
     /// <inheritdoc/>
-    public override double UpperBetween(
-        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
-        ReadOnlySpan<double> envelope) =>
-        throw new UnreachableException("an integral is bounded around the middle of a stretch");
-
-    /// <inheritdoc/>
-    public override double UpperAround(
-        double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope)
-    {
-        var growth = Math.Max(
-            rate.UpperAround(1, half, tau, middle, envelope),
-                rate.UpperAround(-1, half, tau, middle, envelope));
-        return (sign * ValueAt(tau, middle)) + (half * growth);
-    }
-
-    /// <inheritdoc/>
-    public override void Expand(
-        double half, double tau, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope,
-        ref Expansion expansion)
-    {
-        Span<double> terms = stackalloc double[Expansion.Order];
-        terms.Clear();
-        var growth = new Expansion(terms);
-        rate.Expand(half, tau, phi, envelope, ref growth);
-        var value = ValueAt(tau, phi);
-        expansion.Add(0, value);
-        for (var k = 0; k < terms.Length; k++)
-        {
-            expansion.Add(k + 1, half * terms[k] / (k + 1));
-        }
-
-        expansion.AddRest(half * growth.Rest, half * growth.Rest, half * growth.RestOfSlope);
-        expansion.AddNoise((half * growth.Noise) + (1e-15 * Math.Abs(value)));
-    }
+    public override TaylorModel Around(
+        double tau, double half, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope) =>
+        rate.Around(tau, half, phi, envelope).Integrated(ValueAt(tau, phi), half);
 }

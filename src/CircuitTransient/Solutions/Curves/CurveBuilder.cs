@@ -19,6 +19,13 @@ public sealed class CurveBuilder
         tables = [.. solution.Segments.Select(s => new SegmentTable(s))];
     }
 
+    /// <summary>Shares the tables of another: each thread has a builder of its own.</summary>
+    public CurveBuilder(CurveBuilder other)
+    {
+        solution = other.solution;
+        tables = other.tables;
+    }
+
     /// <summary>The solution.</summary>
     public TransientSolution Solution => solution;
 

@@ -2,7 +2,7 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions.Curves;
 
-/// <summary>A measured quantity on one segment: its value, its derivatives, and bounds that hold between
+/// <summary>A measured quantity on one segment: its value, its derivatives, and what bounds it between
 /// instants.</summary>
 public abstract class CurvePiece(SegmentTable table)
 {
@@ -17,37 +17,23 @@ public abstract class CurvePiece(SegmentTable table)
     /// <summary>The values at the tabulated instants.</summary>
     public ReadOnlySpan<double> Tabulated => tabulated ??= Tabulate();
 
-    /// <summary>Value, first and second derivative at τ, where the segment's functions are <paramref
-    /// name="phi"/>.</summary>
+    /// <summary>Value, first and second derivative at τ, where the segment's functions are
+    /// <paramref name="phi"/>.</summary>
     public abstract (double Value, double Slope, double Bend) At(double tau, ReadOnlySpan<double> phi);
 
     /// <summary>The value alone.</summary>
     public abstract double ValueAt(double tau, ReadOnlySpan<double> phi);
 
-    /// <summary>Bounds of the magnitudes of the second and third derivative where the functions stay within
-    /// an envelope.</summary>
-    public abstract (double Second, double Third) DerivativeBounds(ReadOnlySpan<double> envelope);
+    /// <summary>A bound of the magnitude where the functions stay within an envelope.</summary>
+    public abstract double MagnitudeWithin(ReadOnlySpan<double> envelope);
 
-    /// <summary>An upper bound of sign × value over a stretch whose ends are known: slow functions are nearly
-    /// straight there, fast ones are at most their amplitude.</summary>
-    public abstract double UpperBetween(
-        double sign, double width, ReadOnlySpan<double> first, ReadOnlySpan<double> last,
-        ReadOnlySpan<double> envelope);
-
-    /// <summary>An upper bound of sign × value over a stretch that reaches half a width to either side of
-    /// τ.</summary>
-    public abstract double UpperAround(
-        double sign, double half, double tau, ReadOnlySpan<double> middle, ReadOnlySpan<double> envelope);
-
-    /// <summary>Expands the curve about τ, half a width to either side.</summary>
-    /// <param name="half">Half the width of the stretch.</param>
-    /// <param name="tau">Its middle.</param>
-    /// <param name="phi">The functions there.</param>
-    /// <param name="envelope">Bounds of the functions over the stretch.</param>
-    /// <param name="expansion">What is added to.</param>
-    public abstract void Expand(
-        double half, double tau, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope,
-        ref Expansion expansion);
+    /// <summary>The model around τ, half a width to either side.</summary>
+    /// <param name="tau">The middle, in seconds from the segment's start.</param>
+    /// <param name="half">Half the width in seconds.</param>
+    /// <param name="phi">The segment's functions in the middle.</param>
+    /// <param name="envelope">Their bounds over the width.</param>
+    public abstract TaylorModel Around(
+        double tau, double half, ReadOnlySpan<double> phi, ReadOnlySpan<double> envelope);
 
     /// <summary>The value at τ.</summary>
     public double ValueAt(double tau)
@@ -56,6 +42,18 @@ public abstract class CurvePiece(SegmentTable table)
         phi = Segment.Basis.Width <= 256 ? phi[..Segment.Basis.Width] : new double[Segment.Basis.Width];
         Segment.Basis.Evaluate(tau, phi);
         return ValueAt(tau, phi);
+    }
+
+    /// <summary>The model of the stretch from one instant to another.</summary>
+    public TaylorModel Between(double from, double until)
+    {
+        var basis = Segment.Basis;
+        var phi = new double[basis.Width];
+        var envelope = new double[basis.Width];
+        var half = (until - from) / 2;
+        basis.Evaluate(from + half, phi);
+        basis.Envelope(from, until, envelope);
+        return Around(from + half, half, phi, envelope);
     }
 
     /// <summary>Takes the values at the tabulated instants.</summary>
@@ -71,6 +69,5 @@ public abstract class CurvePiece(SegmentTable table)
     }
 
     /// <summary>a · b.</summary>
-    protected static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b) =>
-        DotProduct.Of(a, b);
+    protected static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b) => DotProduct.Of(a, b);
 }

@@ -74,20 +74,10 @@ public static class LevelSearch
 
     private static Finding Look(CurvePiece piece, double sign, double level, double a, double b)
     {
-        var basis = piece.Segment.Basis;
-        var phi = new double[basis.Width];
-        var envelope = new double[basis.Width];
-        var (middle, half) = (a + ((b - a) / 2), (b - a) / 2);
-        basis.Evaluate(middle, phi);
-        basis.Envelope(a, b, envelope);
-        if (piece.UpperAround(sign, half, middle, phi, envelope) < level)
-        {
-            return Finding.Below;
-        }
-
-        var (_, slope, _) = piece.At(middle, phi);
-        var (second, _) = piece.DerivativeBounds(envelope);
-        return Math.Abs(slope) >= second * half || middle <= a || middle >= b ? Finding.Monotone
+        var middle = a + ((b - a) / 2);
+        var model = piece.Between(a, b);
+        return model.Upper(sign) < level ? Finding.Below
+            : model.IsMonotone || middle <= a || middle >= b ? Finding.Monotone
             : Finding.Halve;
     }
 

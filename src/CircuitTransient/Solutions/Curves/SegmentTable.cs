@@ -6,6 +6,7 @@ public sealed class SegmentTable
 {
     private readonly double[] values;
     private readonly double[] envelopes;
+    private readonly double[] middles;
     private readonly int width;
     private readonly Lazy<(int[] Starts, double[] Weights, double[] Values)> nodes;
 
@@ -13,7 +14,7 @@ public sealed class SegmentTable
     public SegmentTable(Segment segment)
     {
         Segment = segment;
-        Instants = SamplingSteps.Of(segment.Basis, segment.Length, stepFraction: 0.5, mostSteps: 400);
+        Instants = SamplingSteps.Of(segment.Basis, segment.Length, stepFraction: 1.5, mostSteps: 300);
         width = segment.Basis.Width;
         values = new double[Instants.Length * width];
         envelopes = new double[Math.Max(0, Instants.Length - 1) * width];
@@ -22,10 +23,13 @@ public sealed class SegmentTable
             segment.Basis.Evaluate(Instants[k], values.AsSpan(k * width, width));
         }
 
+        middles = new double[envelopes.Length];
         nodes = new(PlaceNodes);
         for (var k = 0; k + 1 < Instants.Length; k++)
         {
             segment.Basis.Envelope(Instants[k], Instants[k + 1], envelopes.AsSpan(k * width, width));
+            var middle = Instants[k] + ((Instants[k + 1] - Instants[k]) / 2);
+            segment.Basis.Evaluate(middle, middles.AsSpan(k * width, width));
         }
     }
 
@@ -74,6 +78,9 @@ public sealed class SegmentTable
 
     /// <summary>The functions at a tabulated instant.</summary>
     public ReadOnlySpan<double> Values(int k) => values.AsSpan(k * width, width);
+
+    /// <summary>The functions half way between a tabulated instant and the next.</summary>
+    public ReadOnlySpan<double> Middle(int k) => middles.AsSpan(k * width, width);
 
     /// <summary>Bounds of the functions between a tabulated instant and the next.</summary>
     public ReadOnlySpan<double> Envelope(int k) => envelopes.AsSpan(k * width, width);
