@@ -31,12 +31,12 @@ internal sealed class StudySizes
             <= noise * largestVoltage / resistors.Max(r => Math.Abs(r.Resistance.Nominal));
     }
 
-    /// <summary>The size of a voltage or current; zero where nothing but rounding flows anywhere.</summary>
+    /// <summary>The size of a voltage or current.</summary>
     public double Of(Measurand quantity)
     {
         if (isStill && quantity is CurrentThrough)
         {
-            return 0;
+            return Cancelled * Conceivable(isCurrent: true);
         }
 
         if (!sizes.TryGetValue(quantity, out var size))
@@ -50,7 +50,7 @@ internal sealed class StudySizes
         return size;
     }
 
-    /// <summary>Where every current is exactly zero, as in a charge at rest, what the voltages could drive
+    /// <summary>Where every current is zero but for rounding, as in a charge at rest, what the voltages could drive
     /// through the least resistance; where every voltage is, what the currents could raise.</summary>
     private double Conceivable(bool isCurrent)
     {
