@@ -14,14 +14,13 @@ public static class ResultFiles
     {
         // The picture takes as long as all else together, and a second core is mostly there.
         var picture = Task.Run(() => WaveformPlot.Png(result));
-        return
-        [
-            OutputFile.OfText("results.json", JsonReport.Write(result)),
-            OutputFile.OfText("waveforms.csv", CsvReport.Write(result)),
-            OutputFile.OfText("waveforms.svg", WaveformPlot.Svg(result)),
-            new OutputFile("waveforms.png", picture.GetAwaiter().GetResult()),
-            OutputFile.OfText("report.html", HtmlReport.Write(result, command)),
-            .. isPdf ? [new OutputFile("report.pdf", PdfReport.Write(result, command))] : (OutputFile[])[],
-        ];
+        var json = OutputFile.OfText("results.json", JsonReport.Write(result));
+        var csv = OutputFile.OfText("waveforms.csv", CsvReport.Write(result));
+        var svg = OutputFile.OfText("waveforms.svg", WaveformPlot.Svg(result));
+        var page = OutputFile.OfText("report.html", HtmlReport.Write(result, command));
+        var png = new OutputFile("waveforms.png", picture.GetAwaiter().GetResult());
+        return isPdf
+            ? [json, csv, svg, png, page, new OutputFile("report.pdf", PdfReport.Write(result, command))]
+            : [json, csv, svg, png, page];
     }
 }

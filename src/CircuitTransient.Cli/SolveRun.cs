@@ -58,7 +58,8 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
             }
             else if (!options.IsQuiet)
             {
-                streams.Output.Write(TerminalSummary.Write(result, first.Written));
+                streams.Output.Write(TerminalSummary.Write(
+                    result, first.Written, streams.IsColoured, streams.OutputWidth));
             }
         }
     }

@@ -6,7 +6,15 @@ namespace CircuitTransient.Cli;
 
 /// <summary>Where a run writes: results to <see cref="Output"/>, mistakes, warnings and progress to
 /// <see cref="Error"/>.</summary>
-public sealed record Streams(TextWriter Output, TextWriter Error, bool ErrorIsTerminal = false) : IDisposable
+/// <param name="ErrorIsTerminal">Whether somebody watches the errors.</param>
+/// <param name="OutputWidth">Columns of the terminal that shows the results; null where none does.</param>
+/// <param name="IsColoured">Whether that terminal may be sent colours.</param>
+public sealed record Streams(
+    TextWriter Output,
+    TextWriter Error,
+    bool ErrorIsTerminal = false,
+    int? OutputWidth = null,
+    bool IsColoured = false) : IDisposable
 {
     private static readonly UTF8Encoding Encoding = new(encoderShouldEmitUTF8Identifier: false);
 
@@ -16,7 +24,10 @@ public sealed record Streams(TextWriter Output, TextWriter Error, bool ErrorIsTe
         new(
             new StreamWriter(Console.OpenStandardOutput(), Encoding, bufferSize: 1 << 16) { NewLine = "\n" },
             new StreamWriter(Console.OpenStandardError(), Encoding) { NewLine = "\n", AutoFlush = true },
-            !Console.IsErrorRedirected);
+            !Console.IsErrorRedirected,
+            Console.IsOutputRedirected ? null : Console.WindowWidth,
+            !Console.IsOutputRedirected
+                && string.IsNullOrEmpty(Environment.GetEnvironmentVariable("NO_COLOR")));
 
     /// <summary>One line about something that is wrong and has no place in a file.</summary>
     public void Complain(string message) => Error.WriteLine($"error: {message}");

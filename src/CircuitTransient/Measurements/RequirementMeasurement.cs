@@ -15,7 +15,7 @@ internal sealed class RequirementMeasurement(
     public RequirementResult Judge(Requirement requirement)
     {
         var line = curves.Solution.Circuit.Source.LineOf(requirement.Span.Start);
-        var (holds, worst, margin) = requirement.Bound switch
+        var verdict = requirement.Bound switch
         {
             Limits limits when requirement.Quantity is Figure figure =>
                 JudgeFigure(requirement, figure, limits),
@@ -24,10 +24,14 @@ internal sealed class RequirementMeasurement(
             _ => throw new System.Diagnostics.UnreachableException($"no verdict on {requirement.Bound}"),
         };
         return new RequirementResult(
-            requirement.Statement, requirement.Reason, requirement.Unit, line, holds, worst, margin);
+            requirement.Statement, requirement.Reason, requirement.Unit, line, verdict.Holds, verdict.Worst,
+            verdict.Margin)
+        {
+            IsJudged = verdict.IsJudged,
+        };
     }
 
-    private (bool Holds, TimedValue Worst, double? Margin) JudgeLimits(Requirement requirement, Limits limits)
+    private Verdict JudgeLimits(Requirement requirement, Limits limits)
     {
         if (times.Of(requirement.Window) is not { } window)
         {
@@ -43,7 +47,7 @@ internal sealed class RequirementMeasurement(
         var (up, down) = infinities.Of(requirement.Quantity, window.From, window.To);
         if ((limits.Upper is not null && up is not null) || (limits.Lower is not null && down is not null))
         {
-            return (false, new TimedValue(null, (limits.Upper is null ? down : up) ?? down!.Value), null);
+            return new Verdict(false, new TimedValue(null, (limits.Upper is null ? down : up) ?? down!.Value), null);
         }
 
         (TimedValue Worst, double Margin)? nearest = null;
@@ -63,12 +67,12 @@ internal sealed class RequirementMeasurement(
         }
 
         var (worst, margin) = nearest!.Value;
-        return (margin >= 0, worst, margin);
+        return new Verdict(margin >= 0, worst, margin);
     }
 
     /// <summary>A figure is one number; where the waveform has none, the requirement does not
     /// hold.</summary>
-    private (bool Holds, TimedValue Worst, double? Margin) JudgeFigure(
+    private Verdict JudgeFigure(
         Requirement requirement, Figure figure, Limits limits)
     {
         if (figures.Read(figure, requirement.Window) is not { Value: { } value, Time: var time })
@@ -79,11 +83,11 @@ internal sealed class RequirementMeasurement(
         var margin = Math.Min(
             (limits.Upper ?? double.PositiveInfinity) - value,
             value - (limits.Lower ?? double.NegativeInfinity));
-        return (margin >= 0, new TimedValue(value, time), margin);
+        return new Verdict(margin >= 0, new TimedValue(value, time), margin);
     }
 
     /// <summary>From the stated instant on the quantity stays within the band about its target.</summary>
-    private (bool Holds, TimedValue Worst, double? Margin) JudgeSettling(Requirement requirement,
+    private Verdict JudgeSettling(Requirement requirement,
         SettlesTo settles)
     {
         if (times.Of(new Window(settles.By, requirement.Window.To)) is not { } window
@@ -97,9 +101,12 @@ internal sealed class RequirementMeasurement(
         var low = ExtremeSearch.Least(curve, window.From, window.To, MostStretches);
         var worst = high.Value - settles.Target > settles.Target - low.Value ? high : low;
         var margin = band - Math.Abs(worst.Value - settles.Target);
-        return (margin >= 0, new TimedValue(worst.Value, worst.Time), margin);
+        return new Verdict(margin >= 0, new TimedValue(worst.Value, worst.Time), margin);
     }
 
-    private (bool Holds, TimedValue Worst, double? Margin) NotJudged(Requirement requirement) =>
-        (false, new TimedValue(null, times.Of(requirement.Window)?.From ?? curves.Solution.Until), null);
+    private Verdict NotJudged(Requirement requirement) =>
+        new(false, new TimedValue(null, times.Of(requirement.Window)?.From ?? curves.Solution.Until), null,
+            IsJudged: false);
+
+    private sealed record Verdict(bool Holds, TimedValue Worst, double? Margin, bool IsJudged = true);
 }

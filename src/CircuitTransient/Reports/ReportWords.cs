@@ -31,6 +31,7 @@ internal static class ReportWords
     public static string Held(RequirementResult requirement) =>
         (requirement.Holds, requirement.Margin) switch
         {
+            _ when !requirement.IsJudged => "broken: nothing to judge",
             (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
             (true, null) => "held",
             (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
@@ -92,7 +93,8 @@ internal static class ReportWords
     };
 
     /// <summary>A figure of a self-check.</summary>
-    public static string Small(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
+    public static string Small(double value) =>
+        value == 0 ? "0" : value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 
     /// <summary>An interval and what it starts with.</summary>
     public static string IntervalName(IntervalResult interval)

@@ -79,6 +79,7 @@ public static partial class TerminalSummary
     {
         var verdict = (requirement.Holds, requirement.Margin) switch
         {
+            _ when !requirement.IsJudged => "broken: nothing to judge",
             (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
             (true, null) => "held",
             (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
@@ -87,6 +88,11 @@ public static partial class TerminalSummary
         var because = requirement.Reason is { } reason ? $" because \"{reason}\"" : "";
         var statement = $"{requirement.Statement}{because} (line {requirement.Line})" +
             (requirement.Doubt is { } doubt ? $"; in doubt: {doubt}" : "");
+        if (!requirement.IsJudged)
+        {
+            return [verdict, statement, "there is no such value in this study"];
+        }
+
         var worst = Finite(requirement.Worst.Value, requirement.Unit);
         var when = InstantWords.At(result, requirement.Worst.Time);
         var joint = when.Length == 0 ? "" : when.StartsWith("at ", StringComparison.Ordinal) ? " " : ", ";

@@ -23,7 +23,10 @@ public static partial class TerminalSummary
     /// <param name="result">The result.</param>
     /// <param name="files">Where the files are, as the user may open them; may be empty.</param>
     /// <param name="colour">Whether headings are bold and bars blue.</param>
-    public static string Write(TransientResult result, ImmutableArray<string> files, bool colour = false)
+    /// <param name="terminalWidth">Columns of the terminal it goes to; null where it goes to none. A wide one
+    /// gets a sketch of the worst observation.</param>
+    public static string Write(
+        TransientResult result, ImmutableArray<string> files, bool colour = false, int? terminalWidth = null)
     {
         var text = new SummaryText(colour);
         text.Title(TitleOf(result));
@@ -31,6 +34,7 @@ public static partial class TerminalSummary
         WriteEvents(text, result);
         WriteObservations(text, result);
         WriteCauses(text, result);
+        WriteSketch(text, result, terminalWidth);
         WriteFigures(text, result);
         WriteRatings(text, result);
         WriteImpulses(text, result);
@@ -41,6 +45,19 @@ public static partial class TerminalSummary
         text.Blank();
         text.Paragraph(Closing, indent: 0);
         return text.ToString();
+    }
+
+    private static void WriteSketch(SummaryText text, TransientResult result, int? terminalWidth)
+    {
+        if (terminalWidth >= SummaryText.Width && WorstObservation.Find(result) is { } worst
+            && TerminalSketch.Lines(result, worst.Observation) is { IsEmpty: false } lines)
+        {
+            text.Blank();
+            foreach (var line in lines)
+            {
+                text.Paragraph(line);
+            }
+        }
     }
 
     private static string TitleOf(TransientResult result) =>

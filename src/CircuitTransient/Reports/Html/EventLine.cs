@@ -8,7 +8,7 @@ internal static class EventLine
 {
     private const double Width = 860;
     private const double Left = 16;
-    private const double Right = Width - 70;
+    private const double Right = Width - 92;
     private const double Size = 12;
     private const int MostRows = 6;
 

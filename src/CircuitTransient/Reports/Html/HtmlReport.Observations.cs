@@ -145,8 +145,8 @@ public static partial class HtmlReport
             : contribution.OwnMax;
         var without = atMax ? contribution.MaxWithout : contribution.MinWithout;
         var share = value is { } part && total != 0 ? Percent(part / total) : "";
-        var time = own?.Value is not null
-            ? Markup.Of($" <span class=\"aside\">at {Number(own.Time, "s")}</span>")
+        var time = own?.Value is not (null or 0)
+            ? Markup.Of($" <span class=\"aside\">at {Number(own!.Time, "s")}</span>")
             : default;
         return Markup.Of($"""
             <tr data-cause="{i}"><th scope="row">{Markup.Name(contribution.Cause)}</th>

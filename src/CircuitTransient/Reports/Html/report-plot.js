@@ -151,7 +151,8 @@ function drawEvents(svg, frame, time) {
   }
 }
 
-function drawLimits(svg, frame, model, time, level) {
+// Words of a limit go where no peak's label stands: at its right end or its left, outside it or inside.
+function drawLimits(svg, frame, model, time, level, taken) {
   for (const limit of model.limits) {
     if (limit.to <= time.from || limit.from >= time.to) continue;
     const y = level.place(limit.value);
@@ -159,11 +160,20 @@ function drawLimits(svg, frame, model, time, level) {
     const isIn = y > frame.top && y < frame.bottom;
     if (isIn) shape(svg, "path", { class: "bound", d: `M${x1} ${y}H${x2}` });
     const words = isIn ? limit.words : `${limit.words}: ${y <= frame.top ? "above" : "below"} this panel`;
-    const over = limit.words.startsWith("at most");
-    const place = isIn ? (over ? y - 5 : y + 15) : y <= frame.top ? frame.top + 14 : frame.bottom - 6;
-    shape(svg, "text", { class: "bound-words halo", x: x2 - 6, y: place, "text-anchor": "end" }, words);
+    const length = widthOf(words);
+    const [over, under] = [y - 5, y + 15];
+    const heights = isIn ? (limit.words.startsWith("at most") ? [over, under] : [under, over])
+      : [y <= frame.top ? frame.top + 14 : frame.bottom - 6];
+    const starts = [Math.max(frame.left + 4, x2 - 6 - length), x1 + 6];
+    const places = heights.flatMap((base) => starts.map((x) => ({ x, base, length })));
+    const free = places.find((p) => taken.every((t) => !overlaps(p, t))) ?? places[0];
+    taken.push(free);
+    shape(svg, "text", { class: "bound-words halo", x: free.x, y: free.base }, words);
   }
 }
+
+const overlaps = (a, b) =>
+  a.x < b.x + b.length + 4 && b.x < a.x + a.length + 4 && Math.abs(a.base - b.base) < 14;
 
 function drawEnds(svg, frame, model, time, level) {
   const last = (values) => valueAt(model.times, values, Math.min(time.to, model.times[model.times.length - 1]));
@@ -181,6 +191,7 @@ function drawEnds(svg, frame, model, time, level) {
 }
 
 function drawPeaks(svg, frame, model, time, level) {
+  const taken = [];
   for (const side of ["max", "min"]) {
     const { value, time: instant } = model.extremes[side];
     if (!Number.isFinite(value) || instant < time.from || instant > time.to) continue;
@@ -194,7 +205,9 @@ function drawPeaks(svg, frame, model, time, level) {
     const base = side === "max" ? Math.max(Math.min(...near) - 9, frame.top + 12) : Math.min(Math.max(...near) + 19, frame.bottom - 4);
     shape(svg, "circle", { class: "peak", cx: x, cy: y, r: 4.5 });
     shape(svg, "text", { class: "strong halo", x: start, y: base, "text-anchor": "middle" }, text);
+    taken.push({ x: start - half, base, length: 2 * half });
   }
+  return taken;
 }
 
 // Draws a panel anew and returns what pointing at it needs.
@@ -209,19 +222,17 @@ function drawPanel(svg, model, window, axis, width, clip) {
   const level = { from, to, place: (v) => frame.bottom - (v - from) / (to - from) * (frame.bottom - frame.top) };
   svg.replaceChildren();
   svg.setAttribute("viewBox", `0 0 ${width} ${height}`);
-  const box = shape(shape(shape(svg, "defs", {}), "clipPath", { id: clip }), "rect", {
+  shape(shape(shape(svg, "defs", {}), "clipPath", { id: clip }), "rect", {
     x: frame.left, y: frame.top, width: frame.right - frame.left, height: frame.bottom - frame.top,
   });
-  box.setAttribute("y", frame.top);
   drawGrid(svg, frame, model, time, level, axis);
   drawEvents(svg, frame, time);
-  drawLimits(svg, frame, model, time, level);
   const inner = shape(svg, "g", { "clip-path": `url(#${clip})` });
   const line = (style, values) => shape(inner, "path", { class: style, d: pathOf(model.times, values, time, level.place) });
   if (model.solved !== model.total) line("solved", model.solved);
   for (const part of model.lines) line(`part ${part.style}`, part.values);
   line("total", model.total);
   drawEnds(svg, frame, model, time, level);
-  drawPeaks(svg, frame, model, time, level);
+  drawLimits(svg, frame, model, time, level, drawPeaks(svg, frame, model, time, level));
   return { frame, time, level };
 }

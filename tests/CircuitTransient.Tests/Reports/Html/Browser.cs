@@ -5,8 +5,11 @@ namespace CircuitTransient.Tests.Reports.Html;
 /// <summary>A real Chromium for the tests of the page; where there is none, they are skipped.</summary>
 public sealed class Browser : IAsyncLifetime
 {
+    // The variable names another place, or none.
     private static readonly string[] Places =
-        ["/usr/bin/chromium", "/usr/bin/chromium-browser", "/usr/bin/google-chrome"];
+        Environment.GetEnvironmentVariable("CHROMIUM") is { Length: > 0 } named
+            ? [named]
+            : ["/usr/bin/chromium", "/usr/bin/chromium-browser", "/usr/bin/google-chrome"];
 
     private static readonly string[] Flags =
     [
