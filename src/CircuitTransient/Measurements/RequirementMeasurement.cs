@@ -47,7 +47,8 @@ internal sealed class RequirementMeasurement(
         var (up, down) = infinities.Of(requirement.Quantity, window.From, window.To);
         if ((limits.Upper is not null && up is not null) || (limits.Lower is not null && down is not null))
         {
-            return new Verdict(false, new TimedValue(null, (limits.Upper is null ? down : up) ?? down!.Value), null);
+            var time = (limits.Upper is null ? down : up) ?? down!.Value;
+            return new Verdict(false, new TimedValue(null, time), null);
         }
 
         (TimedValue Worst, double Margin)? nearest = null;

@@ -207,8 +207,8 @@ public sealed record FigureResult(string Name, string Unit, double? Value, strin
 public sealed record RequirementResult(
     string Statement, string? Reason, string Unit, int Line, bool Holds, TimedValue Worst, double? Margin)
 {
-    /// <summary>Whether there was something to judge: not where the quantity is undetermined, its window never
-    /// opens, or the waveform has no such figure.</summary>
+    /// <summary>Whether there was something to judge: not where the quantity is undetermined, its window
+    /// never opens, or the waveform has no such figure.</summary>
     public bool IsJudged { get; init; } = true;
 
     /// <summary>Why the verdict is in doubt: a part passed what it is <c>linear up to</c>; else
