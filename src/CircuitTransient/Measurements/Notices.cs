@@ -14,8 +14,9 @@ internal static class Notices
             ImmutableArray<ObservationResult> observations) =>
     [
         .. warnings.Select(w => new Notice(w.Source.LineOf(w.Span.Start), w.Message)),
-        .. solution.NeverActed.Where(e => Declared(solution, e).CutAtMost is not null
-            || Declared(solution, e).Trigger is WhenCrosses).Select(e => NeverActed(solution, e)),
+        .. solution.NeverActed
+            .Where(e => Schedule.Resolve(Declared(solution, e), solution.Circuit.Parts) is null)
+            .Select(e => NeverActed(solution, e)),
         .. observations.Where(o => o.EndsRising).Select(o => new Notice(
             0,
             $"{o.Name} is greatest at the end of the study and still rises: look further with a later "

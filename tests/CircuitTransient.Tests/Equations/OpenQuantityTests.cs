@@ -58,6 +58,24 @@ public sealed class OpenQuantityTests
     }
 
     [Fact]
+    public void A_network_that_only_rides_on_its_source_carries_nothing_and_passes_its_checks()
+    {
+        var solved = SolvedText.Of("""
+            source Feed at a : sine of 10 V at 50 Hz + step of 1 V at 3 ms
+            resistor R1 from a to b : 20 Ω
+            dependent source H from b to x : 17 Ω times current through Feed
+            inductor L from x to c : 17 mH
+            resistor R2 from c to a : 30 Ω
+            capacitor C from b to c : 84 nF
+            observe voltage of c
+            observe current through L
+            until 20 ms
+            """, 5e-3);
+        Close.To(11, solved.Sample("voltage of c", 0));
+        Close.OfScale(1, 0, solved.Max("current through L"), 1e-20);
+    }
+
+    [Fact]
     public void Open_contacts_in_series_leave_the_rest_right()
     {
         var solved = SolvedText.Of("""

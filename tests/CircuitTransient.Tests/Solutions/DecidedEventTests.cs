@@ -222,11 +222,15 @@ public sealed class DecidedEventTests
         var solved = SolvedText.Of("""
             source Feed at in : 10 V
             switch Q from in to a : closed, opens at 1 ms at next current zero
+            switch K from a to b : open, closes at 1 ms after Q opens
             resistor R at a : 1 Ω
+            resistor Rb at b : 1 Ω
             observe current through R
             until 4 ms
             """);
         Assert.Empty(solved.Result.Events);
+        Assert.Contains(solved.Result.Warnings,
+            w => w.Text == "`K` never closes within the study: what it waits for does not happen");
         Assert.Contains(solved.Result.Warnings,
             w => w.Text == "`Q` never opens within the study: what it waits for does not happen, so it stays "
                 + "closed");

@@ -49,6 +49,12 @@ internal static class EnergyCheck
     {
         var segment = solution.Segments[s];
         double supplied = 0, heat = 0, size = 0;
+
+        // Where no current flows but rounding, energies are measured by a trace of what the source could
+        // heat.
+        const double trace = 1e-20;
+        var still = trace / solution.Circuit.Parts.OfType<Resistor>()
+            .Select(r => Math.Abs(r.Resistance.Nominal)).DefaultIfEmpty(double.PositiveInfinity).Max();
         for (var i = 0; i < solution.Circuit.Parts.Length; i++)
         {
             var resistance = Resistance(solution.Circuit.Parts[i], segment.Model.IsClosed[i]);
@@ -80,6 +86,7 @@ internal static class EnergyCheck
                 var v2 = GramIntegral.Form(gram, voltage, voltage);
                 var i2 = GramIntegral.Form(gram, current, current);
                 size = Math.Max(size, Math.Sqrt(Math.Max(0, v2) * Math.Max(0, i2)));
+                size = Math.Max(size, still * Math.Max(0, v2));
             }
         }
 

@@ -31,7 +31,8 @@ internal sealed class StudySizes
             <= noise * largestVoltage / resistors.Max(r => Math.Abs(r.Resistance.Nominal));
     }
 
-    /// <summary>The size of a voltage or current.</summary>
+    /// <summary>The size of a voltage or current; where nothing but rounding flows anywhere, a current's is a
+    /// trace of what the voltages could drive.</summary>
     public double Of(Measurand quantity)
     {
         if (isStill && quantity is CurrentThrough)
