@@ -86,6 +86,14 @@ public static class FollowedWaves
             }
         }
 
+        for (var part = 0; part < circuit.Parts.Length; part++)
+        {
+            if (circuit.Parts[part].LinearUpTo is { } limit)
+            {
+                yield return (Limited(part, limit), 0);
+            }
+        }
+
         foreach (var observed in circuit.Observations.Where(o => QuantityFactors.IsQuadratic(o.Quantity)))
         {
             yield return Since(observed.Quantity, observed.Window);
@@ -94,6 +102,10 @@ public static class FollowedWaves
         (Measurand, double) Since(Measurand quantity, Window window) =>
             (quantity, curves.IsAccumulated(quantity) ? times.Of(window)?.From ?? 0 : 0);
     }
+
+    /// <summary>The quantity whose waveform tells how far a part's value may be believed.</summary>
+    public static Measurand Limited(int part, LinearLimit limit) =>
+        limit.IsVoltage ? new VoltageAcross(part) : new CurrentThrough(part);
 
     /// <summary>The quantity whose waveform tells what a rating is used for; null where none does.</summary>
     public static Measurand? Rated(Part part, int index, RatingKind kind) => kind switch

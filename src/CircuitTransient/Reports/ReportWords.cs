@@ -120,4 +120,13 @@ internal static class ReportWords
         var damping = pole.Im == 0 ? "" : Number(-pole.Re / magnitude, "");
         return [place, constant, frequency, damping, $"{pole.Multiplicity}"];
     }
+
+    /// <summary>When an extreme stands, to follow its value: <c> at 2 s</c>, <c>, 3 ms after S
+    /// closes</c>.</summary>
+    public static string When(TransientResult result, Extreme extreme)
+    {
+        var when = extreme.Value is null ? "" : InstantWords.At(result, extreme.Time, extreme.Side);
+        var isPlain = when.Length == 0 || when.StartsWith("at ", StringComparison.Ordinal);
+        return isPlain ? $" {when}" : $", {when}";
+    }
 }

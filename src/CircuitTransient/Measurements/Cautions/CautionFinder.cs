@@ -158,8 +158,11 @@ internal sealed class CautionFinder(
         {
             Kind: FigureOf.TimeStaysBelow,
             Of: VoltageAcross or VoltageBetween,
-        } || (r is { Quantity: VoltageAcross or VoltageBetween, Window.From: not null,
-            Bound: Limits { Upper: { } upper } }
+        } || (r is
+        {
+            Quantity: VoltageAcross or VoltageBetween, Window.From: not null,
+            Bound: Limits { Upper: { } upper }
+        }
             && Capacitors().Any(i => Math.Abs(parts[i].PeakVoltage?.Value ?? 0) > upper)));
         return judged && Capacitors().Any() ? new Caution(
             CautionSeverity.Note,

@@ -77,13 +77,6 @@ public static partial class HtmlReport
         return Markup.Of($"<strong>{words}</strong>");
     }
 
-    private static string When(TransientResult result, Extreme extreme) =>
-        extreme.Value is null ? "" : Placed(InstantWords.At(result, extreme.Time, extreme.Side));
-
-    // After a value: ` at 2 s`, but `, 3 ms after S closes`.
-    private static string Placed(string when) =>
-        when.StartsWith("at ", StringComparison.Ordinal) ? $" {when}" : $", {when}";
-
     private static Markup Caption(ObservationResult observed)
     {
         if (observed.Contributions is [var only])

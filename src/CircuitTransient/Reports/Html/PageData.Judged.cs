@@ -107,6 +107,29 @@ internal sealed partial class PageData
         json.WriteEndArray();
     }
 
+    private void WriteLinearLimits()
+    {
+        json.WriteStartArray("linearLimits");
+        foreach (var part in result.Parts.Where(part => part.LinearUpTo is not null))
+        {
+            var index = result.Circuit.Parts.Select(p => p.Name).ToList().IndexOf(part.Name);
+            json.WriteStartObject();
+            json.WriteNumber("rated", part.LinearUpTo!.Declared);
+            json.WriteBoolean("holds", part.LinearUpTo.Holds);
+            if (part.LinearUpTo.Reached is not null && index >= 0
+                && result.Circuit.Parts[index].LinearUpTo is { } limit
+                && FollowedWaves.Limited(index, limit) is var quantity
+                && PageWave.Followed(result, quantity, new(null, null)) is { } followed)
+            {
+                WriteUse(followed, isAtEnd: false, factor: 1, power: 1);
+            }
+
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
     // The figure a rating is held against: factor · (greatest magnitude or value at the end)^power.
     private void WriteUse(Part part, int index, RatingKind kind)
     {
@@ -124,6 +147,11 @@ internal sealed partial class PageData
             (_, RatingKind.MeanPower) => (true, 1 / result.Until, 1),
             _ => (false, 1.0, 1),
         };
+        WriteUse(followed, isAtEnd, factor, power);
+    }
+
+    private void WriteUse(FollowedWave followed, bool isAtEnd, double factor, int power)
+    {
         json.WriteNumber("wave", Place(followed));
         json.WriteBoolean("atEnd", isAtEnd);
         json.WriteNumber("factor", factor);

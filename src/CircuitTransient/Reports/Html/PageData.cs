@@ -36,11 +36,13 @@ internal sealed partial class PageData
     {
         json.WriteStartObject();
         json.WriteNumber("until", result.Until);
+        json.WriteBoolean("checksHold", result.ChecksHold);
         WriteCauses();
         WriteEvents();
         WriteObservations();
         WriteRequirements();
         WriteRatings();
+        WriteLinearLimits();
         WriteWaves();
         json.WriteEndObject();
     }

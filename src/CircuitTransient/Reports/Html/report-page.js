@@ -142,7 +142,9 @@ function followTable(view, scales) {
     rewrite(cell("share"), total !== 0 ? percent(then[c] / total) : "");
     rewrite(cell("bars"), barOf(then[c], largest));
     rewrite(cell("own"), `${engineering(own.value, unit)} at ${engineering(own.time, "s")}`);
-    const without = isCause && sumOf(wave, scales.map((s, i) => (i === c ? 0 : s)));
+    const without = isCause && (wave.quadratic
+      ? sumOf(wave, scales.map((s, i) => (i === c ? 0 : s)))
+      : view.model.total.map((sum, i) => sum - parts[c][i]));
     rewrite(cell("without"), without ? engineering(extremeOf(times, without, from, to, sign).value, unit) : "");
   }
 }
@@ -222,9 +224,14 @@ function followVerdict(scales) {
       const words = holds ? "held" : `exceeded by ${engineering(reached - item.rated, item.unit)}`;
       return { holds, words, worst: `${engineering(reached, item.unit)} of ${engineering(item.rated, item.unit)}`, used: reached / item.rated };
     }));
-  const said = [tally(held, "requirement", "broken"), tally(rated, "rating", "exceeded")].filter((s) => s).join("; ");
-  const sentence = said ? `${said[0].toUpperCase()}${said.slice(1)}.` : "Nothing was required or rated.";
+  const left = data.linearLimits.filter((item) =>
+    item.wave === undefined ? !item.holds : reach(item, scales) > item.rated).length;
+  const doubt = left === 0 ? "" : left === 1 ? "one part leaves the range its value is good for"
+    : `${left} parts leave the range their values are good for`;
+  const said = [tally(held, "requirement", "broken"), tally(rated, "rating", "exceeded"), doubt].filter((s) => s).join("; ");
   const lead = document.getElementById("verdict-words");
+  const sentence = !data.checksHold ? "A self-check failed: do not use these figures."
+    : said ? `${said[0].toUpperCase()}${said.slice(1)}.` : "Nothing was required or rated, so there is no verdict.";
   lead.classList.toggle("explored", !isSolved(scales));
   if (isSolved(scales)) restore(lead); else rewrite(lead, `With the causes as scaled: ${sentence}`);
   return sentence;

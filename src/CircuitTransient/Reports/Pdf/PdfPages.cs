@@ -36,6 +36,37 @@ internal sealed class PdfPages : IDisposable
     /// <summary>Pages begun.</summary>
     public int Count { get; private set; }
 
+    /// <summary>Left edge of the column that is being filled; mostly that of the text.</summary>
+    public double ColumnLeft { get; private set; } = Left;
+
+    /// <summary>Width of the column that is being filled.</summary>
+    public double ColumnWidth { get; private set; } = TextWidth;
+
+    /// <summary>Two blocks side by side where their height has room on a page, else one after the
+    /// other.</summary>
+    /// <param name="first">Adds the first.</param>
+    /// <param name="second">Adds the second.</param>
+    /// <param name="height">What the taller one needs at most.</param>
+    public void SideBySide(Action first, Action second, double height)
+    {
+        if (height > Bottom - Top)
+        {
+            first();
+            second();
+            return;
+        }
+
+        Need(height);
+        var top = y;
+        const double gap = 24;
+        ColumnWidth = (TextWidth - gap) * 0.56; // the first has two columns of figures more
+        first();
+        (var end, y) = (y, top);
+        (ColumnLeft, ColumnWidth) = (Left + ColumnWidth + gap, TextWidth - ColumnWidth - gap);
+        second();
+        (y, ColumnLeft, ColumnWidth) = (Math.Max(y, end), Left, TextWidth);
+    }
+
     /// <summary>Makes room, on a new page where this one has too little.</summary>
     public void Need(double height)
     {
@@ -70,10 +101,10 @@ internal sealed class PdfPages : IDisposable
     /// <summary>A paragraph within a comfortable measure.</summary>
     public void Paragraph(string text, double size = 9, string colour = PlotStyle.Ink, bool isStrong = false)
     {
-        foreach (var line in TextLines.Of(Fonts, text, size, Math.Min(TextWidth, 62 * size), isStrong))
+        foreach (var line in TextLines.Of(Fonts, text, size, Math.Min(ColumnWidth, 62 * size), isStrong))
         {
             Need(size * 1.5);
-            Write(line, Left, y + size, size, colour, isStrong: isStrong);
+            Write(line, ColumnLeft, y + size, size, colour, isStrong: isStrong);
             y += size * 1.45;
         }
 

@@ -11,7 +11,7 @@ public static partial class PdfReport
     private const int MostPolePictures = 12;
     private const int MostLines = 5000;
     private const double OnePanel = PdfPages.TextWidth / PlotPanel.Width;
-    private const double TwoPanels = 0.54; // with the tables of a few causes they just fill a page
+    private const double TwoPanels = 0.5; // with the tables of a few causes they just fill a page
 
     private static void AddEvents(PdfPages pages, TransientResult result)
     {
@@ -68,7 +68,7 @@ public static partial class PdfReport
             + $"{Number(observed.End, unit)} at the end, {final}{rising}.";
 
         string At(Extreme extreme) => extreme.Value is { } value
-            ? $"{Number(value, unit)} {InstantWords.At(result, extreme.Time, extreme.Side)}"
+            ? Number(value, unit) + When(result, extreme)
             : "no finite value";
     }
 
@@ -89,41 +89,46 @@ public static partial class PdfReport
                 Without: atMax ? c.MaxWithout : c.MinWithout))
             .OrderByDescending(s => Math.Abs(s.Value ?? 0)).ToArray();
         var largest = Math.Max(shares.Max(s => Math.Abs(s.Value ?? 0)), double.Epsilon);
-        pages.Need(60);
-        pages.Paragraph(
-            $"What made the {(atMax ? "highest" : "lowest")} value, {Number(total, unit)} "
-                + InstantWords.At(result, extreme.Time, extreme.Side),
-            9.5,
-            isStrong: true);
-        PdfTable.Add(
-            pages,
-            [
-                "Cause", "Then|", "Of the total|", "", "Its own peak|",
-                atMax ? "Highest without it|" : "Lowest without it|",
-            ],
-            shares.Select(s => ImmutableArray.Create<PdfCell>(
-                s.Cause.Cause,
-                Signed(s.Value, unit),
-                s.Value is { } part && total != 0 ? Percent(part / total) : "",
-                new PdfCell("", Bar: (s.Value ?? 0) / largest),
-                s.Own?.Value is { } own ? $"{Number(own, unit)} at {Number(s.Own.Time, "s")}" : "",
-                s.Without is null ? "" : Number(s.Without.Value, unit))));
-        AddSince(pages, observed, atMax, total);
+        var count = Math.Max(shares.Length, SinceOf(observed, atMax)?.Parts.Length ?? 0);
+        pages.SideBySide(AddShares, () => AddSince(pages, observed, atMax, total), 58 + (22 * count));
+
+        void AddShares()
+        {
+            pages.Paragraph(
+                $"What made the {(atMax ? "highest" : "lowest")} value, {Number(total, unit)}"
+                    + When(result, extreme),
+                9.5,
+                isStrong: true);
+            PdfTable.Add(
+                pages,
+                [
+                    "Cause", "Then|", "Of the total|", "", "Its own peak|",
+                    atMax ? "Highest without it|" : "Lowest without it|",
+                ],
+                shares.Select(s => ImmutableArray.Create<PdfCell>(
+                    s.Cause.Cause,
+                    Signed(s.Value, unit),
+                    s.Value is { } part && total != 0 ? Percent(part / total) : "",
+                    new PdfCell("", Bar: (s.Value ?? 0) / largest),
+                    s.Own?.Value is { } own ? $"{Number(own, unit)} at {Number(s.Own.Time, "s")}" : "",
+                    s.Without is null ? "" : Number(s.Without.Value, unit))));
+        }
     }
 
     private static TimedValue? Own(Contribution c) =>
         Math.Abs(c.OwnMin?.Value ?? 0) > Math.Abs(c.OwnMax?.Value ?? 0) ? c.OwnMin : c.OwnMax;
 
+    private static SinceEvent? SinceOf(ObservationResult observed, bool atMax) =>
+        atMax ? observed.After?.AtMax : observed.After?.AtMin;
+
     private static void AddSince(PdfPages pages, ObservationResult observed, bool atMax, double total)
     {
-        var since = atMax ? observed.After?.AtMax : observed.After?.AtMin;
-        if (since is null || since.Parts.IsEmpty)
+        if (SinceOf(observed, atMax) is not { Parts.IsEmpty: false } since)
         {
             return;
         }
 
         var largest = Math.Max(since.Parts.Max(p => Math.Abs(p.Value ?? 0)), double.Epsilon);
-        pages.Need(60);
         pages.Paragraph(
             $"The same value counted since {since.Event}: what each part held just before it, and the "
                 + "sources from then on",

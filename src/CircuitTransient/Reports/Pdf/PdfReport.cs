@@ -104,6 +104,23 @@ public static partial class PdfReport
                     Mark(r.Rating.Used ?? (r.Rating.Holds ? null : double.PositiveInfinity)))));
         }
 
+        var unrated = result.Parts.Where(part => part.Ratings.IsEmpty).Select(part => part.Name).ToArray();
+        if (unrated.Length > 0)
+        {
+            var rest = unrated.Length > 60 ? $" and {unrated.Length - 60} more" : "";
+            var names = string.Join(", ", unrated.Take(60));
+            pages.Paragraph($"No rating given: {names}{rest}.", 8, PlotStyle.Grey);
+        }
+
+        foreach (var part in result.Parts.Where(part => part.LinearUpTo is { Holds: false }))
+        {
+            var linear = part.LinearUpTo!;
+            var direction = linear.Direction is { } words ? $": {words}" : "";
+            pages.Paragraph(
+                $"{part.Name} is linear up to {Number(linear.Declared, linear.Unit)} but reaches "
+                    + $"{Number(linear.Reached, linear.Unit)}{direction}.");
+        }
+
         foreach (var warning in result.Warnings)
         {
             pages.Paragraph($"Warning: {(warning.Line > 0 ? $"line {warning.Line}: " : "")}{warning.Text}");

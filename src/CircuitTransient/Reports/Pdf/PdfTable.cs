@@ -16,9 +16,9 @@ internal static class PdfTable
 {
     private const double Size = 8;
     private const double LineHeight = 11;
-    private const double Gap = 14;
+    private const double Gap = 10;
     private const double ScaleWidth = 92; // 0 to 125 % over 75 points
-    private const double BarWidth = 90;
+    private const double BarWidth = 70;
 
     /// <summary>Adds a table.</summary>
     /// <param name="pages">Where to.</param>
@@ -29,7 +29,7 @@ internal static class PdfTable
         PdfPages pages, ImmutableArray<string> heads, IEnumerable<ImmutableArray<PdfCell>> rows)
     {
         var all = rows.ToArray();
-        var widths = Widths(pages.Fonts, heads, all);
+        var widths = Widths(pages, heads, all);
         var isRight = heads.Select(h => h.EndsWith('|')).ToArray();
         pages.Need(2.6 * LineHeight);
         AddHead();
@@ -45,28 +45,33 @@ internal static class PdfTable
                 AddHead();
             }
 
-            pages.Block(height, y => Row(row, lines, widths, isRight, y));
+            pages.Block(height, y => Row(pages, row, lines, widths, isRight, y));
         }
 
         pages.Space(8);
 
         void AddHead() => pages.Block(LineHeight + 3, y => heads.Select((head, i) => new TextShape(
-            isRight[i] ? Place(widths, i) + widths[i] : Place(widths, i), y + 9, head.TrimEnd('|'), 7.5,
-            PlotStyle.Grey, isRight[i] ? TextAnchor.End : TextAnchor.Start)));
+            Place(pages, widths, i) + (isRight[i] ? widths[i] : 0),
+            y + 9,
+            head.TrimEnd('|'),
+            7.5,
+            PlotStyle.Grey,
+            isRight[i] ? TextAnchor.End : TextAnchor.Start)));
     }
 
     private static IEnumerable<Shape> Row(
+        PdfPages pages,
         ImmutableArray<PdfCell> row,
         ImmutableArray<string>[] lines,
         double[] widths,
         bool[] isRight,
         double y)
     {
-        var end = Place(widths, widths.Length - 1) + widths[^1];
-        yield return new LineShape(PdfPages.Left, y, end, y, new(PlotStyle.Grid, 0.7));
+        var end = Place(pages, widths, widths.Length - 1) + widths[^1];
+        yield return new LineShape(pages.ColumnLeft, y, end, y, new(PlotStyle.Grid, 0.7));
         for (var i = 0; i < row.Length; i++)
         {
-            var x = Place(widths, i);
+            var x = Place(pages, widths, i);
             foreach (var shape in Picture(row[i], x, y + 7.5))
             {
                 yield return shape;
@@ -105,12 +110,13 @@ internal static class PdfTable
     }
 
     private static double[] Widths(
-        PlotFonts fonts, ImmutableArray<string> heads, ImmutableArray<PdfCell>[] rows)
+        PdfPages pages, ImmutableArray<string> heads, ImmutableArray<PdfCell>[] rows)
     {
+        var fonts = pages.Fonts;
         var widths = heads.Select((head, i) => rows
             .Select(row => fonts.Width(row[i].Text, Size) + Room(row[i]))
             .Append(fonts.Width(head, 7.5)).Max() + 1).ToArray();
-        var excess = widths.Sum() + (Gap * (widths.Length - 1)) - PdfPages.TextWidth;
+        var excess = widths.Sum() + (Gap * (widths.Length - 1)) - pages.ColumnWidth;
         while (excess > 0)
         {
             var widest = Array.IndexOf(widths, widths.Max());
@@ -126,6 +132,6 @@ internal static class PdfTable
 
     private static double TextRoom(PdfCell cell, double width) => Math.Max(20, width - Room(cell));
 
-    private static double Place(double[] widths, int column) =>
-        PdfPages.Left + widths.Take(column).Sum(w => w + Gap);
+    private static double Place(PdfPages pages, double[] widths, int column) =>
+        pages.ColumnLeft + widths.Take(column).Sum(w => w + Gap);
 }

@@ -108,7 +108,7 @@ public partial class ExploringTests(Browser browser)
             async () => {
               const spent = [];
               const box = document.getElementById("cause-3");
-              for (let i = 0; i < 7; i++) {
+              for (let i = 0; i < 15; i++) {
                 const start = performance.now();
                 box.click();
                 await new Promise((painted) => requestAnimationFrame(() => setTimeout(painted)));

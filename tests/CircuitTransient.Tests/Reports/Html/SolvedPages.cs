@@ -31,7 +31,7 @@ internal static class SolvedPages
         source    Aid at d : sine of {40 * aid} V at 200 Hz
         resistor  R1 from a to b : 10 Ω, rated 6 J
         inductor  L1 from b to c : 10 mH, rated 0.4 J
-        capacitor C1 from c to ground : 100 µF, charged to {30 * charge} V, rated 130 V
+        capacitor C1 from c to ground : 100 µF, charged to {30 * charge} V, rated 130 V, linear up to 100 V
         resistor  R2 from d to c : 25 Ω
         switch    S1 from c to e : open, closes at 12 ms
         resistor  R3 from e to ground : 50 Ω
