@@ -11,28 +11,37 @@ internal sealed class StoredEnergy(CurveBuilder curves)
     private readonly TransientSolution solution = curves.Solution;
 
     /// <summary>Joules in all fields at the start of a segment, or at its end.</summary>
-    public double At(int segment, bool end)
+    public double At(int segment, bool end) => Terms(segment, end).Sum();
+
+    /// <summary>The largest of its terms: near k = 1 those of two coils and of their coupling nearly
+    /// cancel.</summary>
+    public double LargestTermAt(int segment, bool end) =>
+        Terms(segment, end).Select(Math.Abs).DefaultIfEmpty(0).Max();
+
+    private IEnumerable<double> Terms(int segment, bool end)
     {
         var circuit = solution.Circuit;
-        double sum = 0;
         for (var i = 0; i < circuit.Parts.Length; i++)
         {
-            sum += circuit.Parts[i] switch
+            switch (circuit.Parts[i])
             {
-                Capacitor c => c.Capacitance.Nominal / 2 * Square(Value(new VoltageAcross(i), segment, end)),
-                Inductor l => l.Inductance.Nominal / 2 * Square(Value(new CurrentThrough(i), segment, end)),
-                _ => 0,
-            };
+                case Capacitor c:
+                    yield return c.Capacitance.Nominal / 2
+                        * Square(Value(new VoltageAcross(i), segment, end));
+                    break;
+                case Inductor l:
+                    yield return l.Inductance.Nominal / 2
+                        * Square(Value(new CurrentThrough(i), segment, end));
+                    break;
+            }
         }
 
         foreach (var coupling in circuit.Couplings)
         {
-            sum += (double)MutualInductances.Mutual(circuit, coupling)
+            yield return (double)MutualInductances.Mutual(circuit, coupling)
                 * Value(new CurrentThrough(coupling.First), segment, end)
                 * Value(new CurrentThrough(coupling.Second), segment, end);
         }
-
-        return sum;
     }
 
     /// <summary>Joules in all fields just before t = 0.</summary>

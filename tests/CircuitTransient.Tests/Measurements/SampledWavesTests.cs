@@ -31,8 +31,8 @@ public class SampledWavesTests
     [Fact]
     public void The_terms_of_a_quadratic_quantity_add_up_to_it()
     {
-        var declared = Bypass.Circuit.Observations.Single(o => o.Name == "energy in Rpre");
-        var energy = Bypass.Observations.Single(o => o.Name == "energy in Rpre");
+        var declared = Bypass.Circuit.Observations.Single(o => o.Name == "power in Rpre");
+        var power = Bypass.Observations.Single(o => o.Name == "power in Rpre");
         var followed = Bypass.Followed.Single(f => f.Quantity == declared.Quantity);
 
         // Two causes: each alone, and the two together.
@@ -41,7 +41,7 @@ public class SampledWavesTests
         {
             // Sums of a dozen terms of that size round within a few hundred units.
             var sum = followed.Terms.Sum(t => t.Samples[i]);
-            Assert.Equal(energy.Total[i], sum, 1e-9 * energy.Max.Value!.Value);
+            Assert.Equal(power.Total[i], sum, 1e-9 * power.Max.Value!.Value);
         }
     }
 

@@ -36,9 +36,8 @@ public sealed class LadderTests
         { 5, [0.12783333716342861, 0.12126268138445552, 0.1035808008865375, 0.079830361029840517] },
     };
 
-    [Theory]
-    [MemberData(nameof(BesselJ))]
-    public void A_charge_in_the_middle_of_33_nodes_spreads_as_the_Bessel_functions(double t, double[] j)
+    [Fact]
+    public void A_charge_in_the_middle_of_33_nodes_spreads_as_the_Bessel_functions()
     {
         var solved = SolvedText.Of(
             $"""
@@ -51,13 +50,16 @@ public sealed class LadderTests
             observe voltage of n[19]
             until 6 s
             """,
-            t);
-        Close.Within(1e-12, j[0], solved.Sample("voltage of n[17]", 0));
-        Close.Within(1e-12, j[1], solved.Sample("current through J[17]", 0));
-        Close.Within(1e-12, j[2], solved.Sample("voltage of n[18]", 0));
-        Close.Within(1e-12, j[2], solved.Sample("voltage of n[16]", 0));
-        Close.Within(1e-12, j[3], solved.Sample("current through J[18]", 0));
-        Close.Within(1e-12, j[4], solved.Sample("voltage of n[19]", 0));
+            1, 2, 3, 5);
+        foreach (var (i, row) in BesselJ.Select(r => r.Data.Item2).Index())
+        {
+            Close.Within(1e-12, row[0], solved.Sample("voltage of n[17]", i));
+            Close.Within(1e-12, row[1], solved.Sample("current through J[17]", i));
+            Close.Within(1e-12, row[2], solved.Sample("voltage of n[18]", i));
+            Close.Within(1e-12, row[2], solved.Sample("voltage of n[16]", i));
+            Close.Within(1e-12, row[3], solved.Sample("current through J[18]", i));
+            Close.Within(1e-12, row[4], solved.Sample("voltage of n[19]", i));
+        }
     }
 
     [Fact]
@@ -84,7 +86,6 @@ public sealed class LadderTests
 
     [Theory]
     [InlineData(40)]
-    [InlineData(60)]
     [InlineData(75)] // 150 stored quantities
     public void A_step_runs_along_a_ladder_as_the_integrals_of_Bessel_functions(int sections)
     {

@@ -10,7 +10,7 @@ public sealed class SweptFamilyTests
     [Fact]
     public void A_contact_of_less_and_less_resistance_becomes_an_impulse()
     {
-        for (var k = 0; k <= 12; k++)
+        for (var k = 0; k <= 12; k += 2)
         {
             var solved = Joined($"open, closed resistance 1e-{k} Ω, closes at 1 ms");
             Close.To(1200.0 / 147, solved.Sample("voltage of b", 0));
@@ -253,6 +253,6 @@ public sealed class SweptFamilyTests
         capacitor C2 from q to ground : 1 F
         coupling M of L1 and L2 : {coupling:R}
         observe voltage of q
-        until 10 s
+        until 0.1 s
         """);
 }

@@ -31,7 +31,9 @@ internal static class EnergyCheck
                 heat += flow.Heat;
                 var (start, end) = (energy.At(s, end: false), energy.At(s, end: true));
                 stored += end - start;
-                size = Math.Max(size, Math.Max(flow.Size, Math.Max(Math.Abs(start), Math.Abs(end))));
+                var fields =
+                    Math.Max(energy.LargestTermAt(s, end: false), energy.LargestTermAt(s, end: true));
+                size = Math.Max(size, Math.Max(flow.Size, fields));
             }
 
             largest = Math.Max(largest, size);

@@ -173,7 +173,13 @@ public sealed class CurveBuilder
             isComplete = Add(Share.Own, c, -factor);
         }
 
-        return isComplete ? new QuadraticPiece(tables[s], terms.ToImmutable()) : null;
+        // One cause alone has nothing joint; its products would cancel but for rounding.
+        var isAlone = Enumerable.Range(0, solution.Causes.Length).Count(IsPresent) < 2;
+        return isComplete ? new QuadraticPiece(tables[s], isAlone ? [] : terms.ToImmutable()) : null;
+
+        bool IsPresent(int whose) =>
+            Linear(s, first, Share.Own, whose) is { IsZero: false }
+            || Linear(s, second, Share.Own, whose) is { IsZero: false };
 
         bool Add(Share of, int whose, double weight)
         {
