@@ -35,7 +35,7 @@ public static class LimitTheorems
     {
         const int MostSteps = 24;
         const double Converged = 1e-13;
-        const int Steady = 3; // steps in a row: between a fast pole and a slow one the extrapolation rests too
+        const int Steady = 3; // steps in a row: between fast and slow poles the extrapolation rests too
         const double Slow = 1e-3; // of the span's own rate, below which it has seen what the span sees
         if (solution.Segments.IsEmpty || solution.Rest is not null)
         {

@@ -112,7 +112,8 @@ public sealed class CurveBuilder
 
     /// <param name="measurand">The quantity.</param>
     /// <param name="products">Its products on a segment.</param>
-    /// <param name="work">What a part takes in within the impulses at a segment's start, for an energy.</param>
+    /// <param name="work">What a part takes in within the impulses at a segment's start, for an
+    /// energy.</param>
     /// <param name="from">Since when an integral gathers, in seconds.</param>
     private Curve? Quadratic(
         Measurand measurand, Func<int, QuadraticPiece?> products, Func<int, int, double> work, double from)

@@ -2,8 +2,9 @@ using CircuitTransient.Circuits;
 
 namespace CircuitTransient.Solutions.Curves;
 
-/// <summary>The energy a part takes in within an impulse: a charge times the voltage it passes, a flux times the
-/// current. A source's is the one just after, as in the energy lost; any other part's the mean of before and after.</summary>
+/// <summary>The energy a part takes in within an impulse: a charge times the voltage it passes, a flux times
+/// the current. A source's is the one just after, as in the energy lost; any other part's the mean of before
+/// and after.</summary>
 internal sealed class ImpulseWork(TransientSolution solution)
 {
     /// <summary>Joules at a segment's start: the impulse of one cause at the level of another.</summary>
@@ -22,7 +23,8 @@ internal sealed class ImpulseWork(TransientSolution solution)
             + (flux == 0 ? 0 : flux * Level(current, part, segment, levelOf));
     }
 
-    /// <summary>Joules of a share: as with products, a joint part is left when every cause's own is taken away.</summary>
+    /// <summary>Joules of a share: as with products, a joint part is left when every cause's own is taken
+    /// away.</summary>
     public double Of(int part, int segment, Share share, int cause)
     {
         const int total = Segment.Total;
@@ -46,7 +48,8 @@ internal sealed class ImpulseWork(TransientSolution solution)
         }
 
         var earlier = segment == 0 ? null : solution.Segments[segment - 1];
-        var before = earlier?.Coefficients(quantity) is null ? 0 : (double)earlier.ValueAtEnd(quantity, cause);
+        var before =
+            earlier?.Coefficients(quantity) is null ? 0 : (double)earlier.ValueAtEnd(quantity, cause);
         return (before + after) / 2;
     }
 }
