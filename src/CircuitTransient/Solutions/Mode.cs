@@ -45,6 +45,12 @@ public sealed class Mode
             }
         }
 
+        for (var i = 0; i < Order; i++)
+        {
+            Speed = Math.Max(Speed, rounded[i, i].Magnitude);
+            Decay = Math.Min(Decay, -rounded[i, i].Real);
+        }
+
         for (var i = 0; i < rows; i++)
         {
             CarrierCount += Order - i;
@@ -90,32 +96,8 @@ public sealed class Mode
     public int Carrier(int i, int j) => (i * Order) - (i * (i - 1) / 2) + j - i;
 
     /// <summary>The fastest rate in it, 1/s.</summary>
-    public double Speed
-    {
-        get
-        {
-            double fastest = 0;
-            for (var i = 0; i < Order; i++)
-            {
-                fastest = Math.Max(fastest, rounded[i, i].Magnitude);
-            }
-
-            return fastest;
-        }
-    }
+    public double Speed { get; }
 
     /// <summary>The slowest decay in it, 1/s; negative where it grows.</summary>
-    public double Decay
-    {
-        get
-        {
-            var slowest = double.PositiveInfinity;
-            for (var i = 0; i < Order; i++)
-            {
-                slowest = Math.Min(slowest, -rounded[i, i].Real);
-            }
-
-            return slowest;
-        }
-    }
+    public double Decay { get; } = double.PositiveInfinity;
 }

@@ -6,6 +6,7 @@ public sealed class LinearPiece : CurvePiece
     private const int Beyond = TaylorModel.Degree + 1;
 
     private readonly double[]?[] derivatives = new double[Beyond + 1][];
+    private readonly double[]?[] amplitudes = new double[Beyond + 1][];
 
     /// <summary>Takes the coefficients of the segment's functions.</summary>
     public LinearPiece(SegmentTable table, double[] coefficients)
@@ -46,16 +47,7 @@ public sealed class LinearPiece : CurvePiece
     public override double ValueAt(double tau, ReadOnlySpan<double> phi) => Dot(Derivative(0), phi);
 
     /// <inheritdoc/>
-    public override double MagnitudeWithin(ReadOnlySpan<double> envelope)
-    {
-        double sum = 0;
-        for (var m = 0; m < Segment.Basis.Modes.Length; m++)
-        {
-            sum += Magnitude(0, m, envelope);
-        }
-
-        return sum;
-    }
+    public override double MagnitudeWithin(ReadOnlySpan<double> envelope) => Dot(Amplitude(0), envelope);
 
     /// <summary>Slow modes enter the polynomial with their derivatives; a mode so fast that its series would
     /// not end below its amplitude is bounded by that.</summary>
@@ -68,35 +60,53 @@ public sealed class LinearPiece : CurvePiece
             return TaylorModel.Zero;
         }
 
-        double remainder = 0, first = 0, second = 0, size = 0;
         var modes = Segment.Basis.Modes;
+        double fastest = 0;
+        foreach (var mode in modes)
+        {
+            fastest = Math.Max(fastest, mode.Speed);
+        }
+
+        const double rounding = 4 * 1.1e-16; // of a coefficient, a function, their product and the sum
+        var noise = rounding * MagnitudeWithin(envelope);
+        if (Power(fastest * half, Beyond) <= 1)
+        {
+            AddSeries(a, half, phi, 0, phi.Length);
+            var left = Power(half, Beyond) * Dot(Amplitude(Beyond), envelope);
+            return new TaylorModel(a, left, Beyond * left, Beyond * (Beyond - 1) * left, noise);
+        }
+
+        double remainder = 0, first = 0, second = 0;
         for (var m = 0; m < modes.Length; m++)
         {
-            size += Magnitude(0, m, envelope);
-            var last = Power(modes[m].Speed * half, Beyond);
-            if (last > 1)
+            var (place, width) = (Segment.Basis.Place(m), modes[m].Width);
+            var bounds = envelope.Slice(place, width);
+            if (Power(modes[m].Speed * half, Beyond) > 1)
             {
-                remainder += Magnitude(0, m, envelope);
-                first += half * Magnitude(1, m, envelope);
-                second += half * half * Magnitude(2, m, envelope);
+                remainder += Magnitude(0, place, bounds);
+                first += half * Magnitude(1, place, bounds);
+                second += half * half * Magnitude(2, place, bounds);
                 continue;
             }
 
-            double weight = 1;
-            for (var j = 0; j <= TaylorModel.Degree; j++)
-            {
-                a[j] += weight * Part(j, m, phi);
-                weight *= half / (j + 1);
-            }
-
-            var left = weight * Magnitude(Beyond, m, envelope);
+            AddSeries(a, half, phi, place, width);
+            var left = Power(half, Beyond) * Magnitude(Beyond, place, bounds);
             remainder += left;
             first += Beyond * left;
             second += Beyond * (Beyond - 1) * left;
         }
 
-        const double rounding = 4 * 1.1e-16; // of a coefficient, a function, their product and the sum
-        return new TaylorModel(a, remainder, first, second, rounding * size);
+        return new TaylorModel(a, remainder, first, second, noise);
+    }
+
+    private void AddSeries(double[] a, double half, ReadOnlySpan<double> phi, int place, int width)
+    {
+        double weight = 1;
+        for (var j = 0; j <= TaylorModel.Degree; j++)
+        {
+            a[j] += weight * Dot(Derivative(j).AsSpan(place, width), phi.Slice(place, width));
+            weight *= half / (j + 1);
+        }
     }
 
     /// <summary>xⁿ/n!.</summary>
@@ -111,33 +121,32 @@ public sealed class LinearPiece : CurvePiece
         return power;
     }
 
-    private double Part(int order, int mode, ReadOnlySpan<double> phi)
+    private double Magnitude(int order, int place, ReadOnlySpan<double> bounds) =>
+        Dot(Amplitude(order).AsSpan(place, bounds.Length), bounds);
+
+    /// <summary>The magnitudes of a derivative's coefficients: of a complex function in its first
+    /// place.</summary>
+    private double[] Amplitude(int order)
     {
-        var c = Derivative(order);
-        var place = Segment.Basis.Place(mode);
-        double sum = 0;
-        for (var k = place; k < place + Segment.Basis.Modes[mode].Width; k++)
+        if (amplitudes[order] is { } known)
         {
-            sum += c[k] * phi[k];
+            return known;
         }
 
-        return sum;
-    }
-
-    /// <summary>A bound of a mode's part in a derivative; a complex function counts by its
-    /// magnitude.</summary>
-    private double Magnitude(int order, int mode, ReadOnlySpan<double> envelope)
-    {
         var c = Derivative(order);
-        var place = Segment.Basis.Place(mode);
-        var (isReal, width) = (Segment.Basis.Modes[mode].IsReal, Segment.Basis.Modes[mode].Width);
-        double sum = 0;
-        for (var k = place; k < place + width; k += isReal ? 1 : 2)
+        var magnitudes = new double[c.Length];
+        for (var m = 0; m < Segment.Basis.Modes.Length; m++)
         {
-            sum += envelope[k] * (isReal ? Math.Abs(c[k]) : Math.Sqrt((c[k] * c[k]) + (c[k + 1] * c[k + 1])));
+            var (place, mode) = (Segment.Basis.Place(m), Segment.Basis.Modes[m]);
+            for (var k = place; k < place + mode.Width; k += mode.IsReal ? 1 : 2)
+            {
+                magnitudes[k] = mode.IsReal
+                    ? Math.Abs(c[k])
+                    : Math.Sqrt((c[k] * c[k]) + (c[k + 1] * c[k + 1]));
+            }
         }
 
-        return sum;
+        return amplitudes[order] = magnitudes;
     }
 
     private double[] Derivative(int order) =>
