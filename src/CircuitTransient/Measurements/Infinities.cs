@@ -53,9 +53,12 @@ internal sealed class Infinities(CurveBuilder curves)
                 var current = new CurrentThrough(power.Part, power.Delivered);
                 var v = solution.Segments[s].ImpulseAtStart(voltage);
                 var i = solution.Segments[s].ImpulseAtStart(current);
-                return v != 0 ? Math.Sign(v * After(current, s)) : i != 0 ? Math.Sign(i * After(voltage, s))
+                return v != 0 ? Math.Sign(v * Level(current, s))
+                    : i != 0 ? Math.Sign(i * Level(voltage, s))
                     : 0;
-            case EnergyIn or CouplingEnergy or JouleIntegral or Figure:
+            case JouleIntegral joule:
+                return solution.Segments[s].ImpulseAtStart(new CurrentThrough(joule.Part)) == 0 ? 0 : 1;
+            case EnergyIn or CouplingEnergy or Figure:
                 return 0;
             default:
                 return Math.Sign(solution.Segments[s].ImpulseAtStart(quantity));
@@ -78,5 +81,13 @@ internal sealed class Infinities(CurveBuilder curves)
         return Math.Abs(after - before) <= rounding * size ? 0 : after - before;
     }
 
-    private double After(Measurand quantity, int s) => curves.Of(quantity)?.Pieces[s].ValueAt(0) ?? 0;
+    /// <summary>The value just after a segment's start or, where that is zero, just before it.</summary>
+    private double Level(Measurand quantity, int s)
+    {
+        var curve = curves.Of(quantity);
+        var after = curve?.Pieces[s].ValueAt(0) ?? 0;
+        return after != 0 || curve is null || s == 0
+            ? after
+            : curve.Pieces[s - 1].ValueAt(curve.Pieces[s - 1].Segment.Length);
+    }
 }

@@ -56,9 +56,9 @@ internal sealed class ObservationMeasurement(
         var min = ExtremeSearch.Least(total, window.From, window.To, MostStretches);
         var (up, down) = infinities.Of(quantity, window.From, window.To);
         return (
-            up is { } high ? new Extreme(null, high, InstantSide.At, null)
+            up is { } high ? new Extreme(null, high, InstantSide.After, null)
                 : new Extreme(max.Value, max.Time, max.Side, max.Bound),
-            down is { } low ? new Extreme(null, low, InstantSide.At, null)
+            down is { } low ? new Extreme(null, low, InstantSide.After, null)
                 : new Extreme(min.Value, min.Time, min.Side, min.Bound));
     }
 
@@ -85,8 +85,8 @@ internal sealed class ObservationMeasurement(
             Extreme min,
         (double From, double To) window)
     {
-        var atMax = share.Curve.ValueAt(solution, max.Time, max.Side == InstantSide.Before);
-        var atMin = share.Curve.ValueAt(solution, min.Time, min.Side == InstantSide.Before);
+        var atMax = At(share.Curve, max);
+        var atMin = At(share.Curve, min);
         var ownMax = Search(share.Curve, window, greatest: true);
         var ownMin = Search(share.Curve, window, greatest: false);
         if (share.Share == Share.Joint)
@@ -100,6 +100,11 @@ internal sealed class ObservationMeasurement(
             share.Name, atMax, atMin, ownMax, ownMin,
             Search(without, window, greatest: true), Search(without, window, greatest: false));
     }
+
+    /// <summary>The value where an extreme stands; null where that is infinite and so is its share.</summary>
+    private double? At(Curve curve, Extreme extreme) => extreme.Value is null
+        ? null
+        : curve.ValueAt(solution, extreme.Time, extreme.Side == InstantSide.Before);
 
     private SinceEvent? Since(Measurand quantity, Extreme extreme) =>
         extreme.Value is null || curves.IsAccumulated(quantity)

@@ -10,14 +10,18 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
     private const int MostStretches = 50_000;
 
     private readonly TransientSolution solution = curves.Solution;
+    private readonly ImpulseWork impulses = new(curves.Solution);
 
     /// <summary>The stresses of one part.</summary>
     public PartResult Measure(int part)
     {
         var declared = solution.Circuit.Parts[part];
         var (voltage, current, power, voltageRate, currentRate) = Peaks(part);
-        var absorbed = Integral(new VoltageAcross(part), new CurrentThrough(part));
-        var joule = Integral(new CurrentThrough(part), new CurrentThrough(part));
+        var absorbed = Integral(new VoltageAcross(part), new CurrentThrough(part))
+            + Enumerable.Range(0, solution.Segments.Length)
+                .Sum(s => impulses.Of(part, s, Segment.Total, Segment.Total));
+        var carriesImpulse = solution.Segments.Any(s => s.ImpulseAtStart(new CurrentThrough(part)) != 0);
+        var joule = carriesImpulse ? null : Integral(new CurrentThrough(part), new CurrentThrough(part));
         var energy = declared switch
         {
             Capacitor c => c.Capacitance.Nominal / 2 * voltage?.Value * voltage?.Value,

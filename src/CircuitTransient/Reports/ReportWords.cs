@@ -129,4 +129,10 @@ internal static class ReportWords
         var isPlain = when.Length == 0 || when.StartsWith("at ", StringComparison.Ordinal);
         return isPlain ? $" {when}" : $", {when}";
     }
+
+    /// <summary>A value of an observation; what rounding left of nothing is nothing.</summary>
+    public static double? Cleaned(double? value, ObservationResult observed) =>
+        value is { } figure && Math.Abs(figure) < 1e-12 * Math.Abs(observed.Greatest.Value ?? 0)
+            ? 0
+            : value;
 }

@@ -29,10 +29,11 @@ internal sealed class IntervalSolver(
                 causes.Select((c, n) => new Motion(states[n], Forcings(c, corners[k]))).ToImmutableArray();
             var forcings = motions.SelectMany(m => m.Forcings);
             var modes = new SegmentModes(model, corners[k], corners[k + 1], forcings);
-            var onset = k == 0
-                ? Onset.OfInterval(layout, motions, stored, (double[])sizes.Clone())
-                : Onset.OfCorner(layout, segments[^1], motions);
-            segments.Add(new Segment(model, index, corners[k], corners[k + 1], modes, motions, onset));
+            var before = k == 0 ? null : segments[^1];
+            var soFar = (double[])sizes.Clone();
+            segments.Add(new Segment(
+                model, index, corners[k], corners[k + 1], modes, motions,
+                c => OnsetOf(c, before, motions, stored, soFar)));
             for (var c = 0; c < causes.Length && k + 2 < corners.Length; c++)
             {
                 states[c] = segments[^1].StateAtEnd(c);
@@ -41,6 +42,15 @@ internal sealed class IntervalSolver(
 
         NoteSizes(segments);
         return segments.ToImmutable();
+    }
+
+    private Onset OnsetOf(
+        int cause, Segment? before, ImmutableArray<Motion> motions, DoubleDouble[][] stored, double[] soFar)
+    {
+        var whose = cause == Segment.Total ? motions : [motions[cause]];
+        return before is null
+            ? Onset.OfInterval(layout, whose, cause == Segment.Total ? stored : [stored[cause]], soFar)
+            : Onset.OfCorner(layout, before, whose, cause);
     }
 
     private void NoteSizes(IEnumerable<Segment> segments)

@@ -32,10 +32,11 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
     }
 
     /// <summary>At a source's corner within an interval.</summary>
-    public static Onset OfCorner(NetworkLayout layout, Segment before, IEnumerable<Motion> motions)
+    public static Onset OfCorner(
+        NetworkLayout layout, Segment before, IEnumerable<Motion> motions, int cause = Segment.Total)
     {
         var jumps = Derivatives(layout, motions);
-        var ended = before.MotionOf(Segment.Total).Forcings
+        var ended = before.MotionOf(cause).Forcings
             .Select(f => f.MovedBy((DoubleDouble)before.End - before.Start));
         var earlier = Derivatives(layout, [new Motion([], [.. ended])]);
         for (var k = 0; k < Orders; k++)

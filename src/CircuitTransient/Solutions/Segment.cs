@@ -13,12 +13,12 @@ public sealed class Segment
     private readonly ImmutableArray<Motion> motions;
     private readonly Motion total;
     private readonly Onset onset;
+    private readonly Func<int, Onset> onsetOf;
     private readonly Dictionary<(Measurand, int), double[]> coefficients = [];
 
     internal Segment(
         IntervalModel model, int interval, double start, double end, SegmentModes modes,
-            ImmutableArray<Motion> motions,
-        Onset onset)
+        ImmutableArray<Motion> motions, Func<int, Onset> onsetOf)
     {
         Model = model;
         Interval = interval;
@@ -26,7 +26,8 @@ public sealed class Segment
         End = end;
         this.modes = modes;
         this.motions = motions;
-        this.onset = onset;
+        this.onsetOf = onsetOf;
+        onset = onsetOf(Total);
         total = Motion.Sum(motions.Length == 0 ? [Still(model)] : motions);
     }
 
@@ -118,7 +119,8 @@ public sealed class Segment
 
     /// <summary>The impulse of a voltage (V·s) or current (C) at the segment's start; zero where there is
     /// none.</summary>
-    public double ImpulseAtStart(Measurand measurand) => onset.ImpulseIn(Model.Project(measurand).Output);
+    public double ImpulseAtStart(Measurand measurand, int cause = Total) =>
+        (cause == Total ? onset : onsetOf(cause)).ImpulseIn(Model.Project(measurand).Output);
 
     /// <summary>Whether a voltage or current carries a derivative of an impulse at the segment's start: it is
     /// infinite both ways.</summary>

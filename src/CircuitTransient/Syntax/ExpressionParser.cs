@@ -45,7 +45,8 @@ internal static class ExpressionParser
     public static ExpressionSyntax? ReadInClause(StatementCursor cursor)
     {
         var value = ReadProduct(cursor);
-        if (value is null || !(cursor.IsSign('+') || cursor.IsSign('-')) || ToleranceParser.IsAhead(cursor))
+        if (value is null || cursor.IsInWave || !(cursor.IsSign('+') || cursor.IsSign('-'))
+            || ToleranceParser.IsAhead(cursor))
         {
             return value;
         }

@@ -11,6 +11,9 @@ internal sealed class StatementCursor(SourceText source, List<Token> tokens, Lis
     /// <summary>How the thing being read is written: the advice where nothing better is known.</summary>
     public string? Form { get; set; }
 
+    /// <summary>Whether a wave is being read, in which a bare plus or minus adds the next piece.</summary>
+    public bool IsInWave { get; set; }
+
     /// <summary>How deep brackets and signs are nested where the cursor stands.</summary>
     public int Depth { get; set; }
 

@@ -19,6 +19,14 @@ internal static class WaveParser
     /// <summary>A wave, and the tolerance of one that is a constant.</summary>
     public static WaveSyntax? Read(StatementCursor cursor)
     {
+        cursor.IsInWave = true;
+        var wave = ReadTerms(cursor);
+        cursor.IsInWave = false;
+        return wave;
+    }
+
+    private static WaveSyntax? ReadTerms(StatementCursor cursor)
+    {
         var start = cursor.Current.Start;
         var terms = ImmutableArray.CreateBuilder<WaveTermSyntax>();
         var isSubtracted = false;

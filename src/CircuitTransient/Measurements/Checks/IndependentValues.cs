@@ -15,9 +15,6 @@ internal sealed record IndependentValues(double Worst, double Allowed, int Compa
     private const double Least = 1e-9;
     private const double Weak = 1e-6;
 
-    // An estimate is no bound: on two coils with k = 0.999999 the error is 1.004 times it.
-    private const double Allowance = 2;
-
     /// <summary>Nothing compared yet.</summary>
     public static IndependentValues None { get; } = new(0, Least, 0, 0);
 
@@ -58,7 +55,7 @@ internal sealed record IndependentValues(double Worst, double Allowed, int Compa
             return this with { TooWeak = TooWeak + 1 };
         }
 
-        var allowed = Math.Max(Least, Allowance * error);
+        var allowed = Math.Max(Least, error);
         var isWorse = Compared == 0 || relative / allowed > Worst / Allowed;
         return isWorse
             ? new IndependentValues(relative, allowed, Compared + 1, TooWeak)

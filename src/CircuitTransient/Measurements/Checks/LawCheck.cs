@@ -34,6 +34,13 @@ internal sealed class LawCheck
                 || part is Switch { OpenResistance: null }
                 ? current
                 : sizes.Of(new VoltageAcross(i));
+            var trace = part switch
+            {
+                Capacitor c => c.Capacitance.Nominal * sizes.RateTrace(isCurrent: false),
+                Inductor l => l.Inductance.Nominal * sizes.RateTrace(isCurrent: true),
+                _ => 0,
+            };
+            scales[circuit.Nodes.Length + i] = Math.Max(scales[circuit.Nodes.Length + i], trace);
         }
     }
 

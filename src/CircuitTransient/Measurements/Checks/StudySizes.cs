@@ -8,7 +8,10 @@ namespace CircuitTransient.Measurements.Checks;
 /// zero but for rounding is measured by a trace of the largest of its kind.</summary>
 internal sealed class StudySizes
 {
-    private const double Trace = 1e-15; // rounding of double precision
+    // What lies so far below the largest of its kind is judged by its share in that: an error of 1e-9 of this
+    // trace is a thousandth of the rounding of the largest value itself.
+    private const double Trace = 1e-10;
+
     private const double Cancelled = 1e-6; // of modes that cancel: their rounding is then 1e-10 of the size
 
     private readonly CurveBuilder curves;
@@ -30,6 +33,13 @@ internal sealed class StudySizes
         isStill = resistors.Length > 0 && largestCurrent
             <= noise * largestVoltage / resistors.Max(r => Math.Abs(r.Resistance.Nominal));
     }
+
+    /// <summary>The trace that structure leaves in rates of change: a voltage or current that is zero keeps
+    /// <see cref="Equations.SparseVector.Cancelled"/> of the largest, and the fastest mode multiplies
+    /// that.</summary>
+    public double RateTrace(bool isCurrent) => Equations.SparseVector.Cancelled
+        * (isCurrent ? largestCurrent : largestVoltage)
+        * curves.Tables.SelectMany(t => t.Segment.Basis.Modes).Select(m => m.Speed).DefaultIfEmpty(0).Max();
 
     /// <summary>The size of a voltage or current; where nothing but rounding flows anywhere, a current's is a
     /// trace of what the voltages could drive.</summary>

@@ -20,12 +20,16 @@ public sealed class ContourSample
         (this.probe, this.probeKnown, this.strength) = (probe, probeKnown, strength);
     }
 
+    // A difference of two approximations tells the size of an error, not its bound: over 3000 random
+    // circuits the error was up to 3.7 times the difference.
+    private const double Doubt = 10;
+
     /// <summary>The instant in seconds.</summary>
     public double Time { get; }
 
     /// <summary>A voltage or current with its estimated error: by how much the two inversions differ, and by
-    /// how much the probe missed, times how much stronger than the probe the circuit is stirred. NaN where
-    /// the equations leave it open, null for any other quantity.</summary>
+    /// how much the probe missed, times how much stronger than the probe the circuit is stirred, tenfold.
+    /// NaN where the equations leave it open, null for any other quantity.</summary>
     public (double Value, double EstimatedError)? ValueOf(Measurand measurand)
     {
         if (measurand is not (VoltageBetween or VoltageAcross or CurrentThrough))
@@ -36,7 +40,7 @@ public sealed class ContourSample
         double Of(CircuitReading reading) => reading.Value(measurand) ?? double.NaN;
         var value = Of(finer.Reading());
         var missed = Math.Abs(Of(probe.Reading()) - Of(probeKnown));
-        return (value, Math.Abs(value - Of(coarser.Reading())) + (strength * missed));
+        return (value, Doubt * (Math.Abs(value - Of(coarser.Reading())) + (strength * missed)));
     }
 }
 

@@ -35,6 +35,8 @@ public static class LimitTheorems
     {
         const int MostSteps = 24;
         const double Converged = 1e-13;
+        const int Steady = 3; // steps in a row: between fast and slow poles the extrapolation rests too
+        const double Slow = 1e-3; // of the span's own rate, below which it has seen what the span sees
         if (solution.Segments.IsEmpty || solution.Rest is not null)
         {
             return null;
@@ -44,6 +46,7 @@ public static class LimitTheorems
         var sources = FinalSources(solution, segment);
         var nodes = new List<Sample>();
         Sample? last = null;
+        var stands = 0;
         for (var k = 1; k <= MostSteps; k++)
         {
             var s = Math.ScaleB(segment.Propagator.Radius, -8 * k);
@@ -54,7 +57,8 @@ public static class LimitTheorems
 
             nodes.Add(new Sample(s, Times(sample.Unknowns, s), Times(sample.Stored, (DoubleDouble)s * s)));
             var limit = AtZero(nodes.TakeLast(Nodes - 2).ToArray());
-            if (last is not null && Distance(limit, last) <= Converged * Size(limit))
+            stands = last is not null && Distance(limit, last) <= Converged * Size(limit) ? stands + 1 : 0;
+            if (last is not null && stands >= Steady && s * (segment.End - segment.Start) < Slow)
             {
                 return new LimitValues(
                     Reading(solution, segment, limit.Unknowns, limit.Stored, sources),

@@ -67,15 +67,18 @@ public static partial class HtmlReport
             ? $"tends to {Number(limit, unit)}"
             : "goes on swinging or has no limit";
         return Markup.Of($"""
-            Highest {Strong(observed.Max, unit)}{When(result, observed.Max)}; lowest
-            {Strong(observed.Min, unit)}{When(result, observed.Min)}; {Number(observed.End, unit)} at the
+            Highest {Strong(observed.Max, observed)}{When(result, observed.Max)}; lowest
+            {Strong(observed.Min, observed)}{When(result, observed.Min)};
+            {Number(Cleaned(observed.End, observed), unit)} at the
             end, {final}{rising}.
             """);
     }
 
-    private static Markup Strong(Extreme extreme, string unit)
+    private static Markup Strong(Extreme extreme, ObservationResult observed)
     {
-        var words = extreme.Value is { } value ? Number(value, unit) : "no finite value";
+        var words = Cleaned(extreme.Value, observed) is { } value
+            ? Number(value, observed.Unit)
+            : "no finite value";
         return Markup.Of($"<strong>{words}</strong>");
     }
 
@@ -134,21 +137,22 @@ public static partial class HtmlReport
         ObservationResult observed, int i, bool atMax, double total, double largest)
     {
         var (contribution, unit) = (observed.Contributions[i], observed.Unit);
-        var value = atMax ? contribution.AtMax : contribution.AtMin;
+        var value = Cleaned(atMax ? contribution.AtMax : contribution.AtMin, observed);
         var own = Math.Abs(contribution.OwnMin?.Value ?? 0) > Math.Abs(contribution.OwnMax?.Value ?? 0)
             ? contribution.OwnMin
             : contribution.OwnMax;
         var without = atMax ? contribution.MaxWithout : contribution.MinWithout;
         var share = value is { } part && total != 0 ? Percent(part / total) : "";
-        var time = own?.Value is not (null or 0)
+        var rest = without is null ? "" : Number(Cleaned(without.Value, observed), unit);
+        var time = Cleaned(own?.Value, observed) is not (null or 0)
             ? Markup.Of($" <span class=\"aside\">at {Number(own!.Time, "s")}</span>")
             : default;
         return Markup.Of($"""
             <tr data-cause="{i}"><th scope="row">{Markup.Name(contribution.Cause)}</th>
             <td class="number then">{Signed(value, unit)}</td><td class="number share">{share}</td>
             <td class="bars">{Bar(value, largest)}</td>
-            <td class="number own">{Number(own?.Value, unit)}{time}</td>
-            <td class="number without">{(without is null ? "" : Number(without.Value, unit))}</td></tr>
+            <td class="number own">{Number(Cleaned(own?.Value, observed), unit)}{time}</td>
+            <td class="number without">{rest}</td></tr>
 
             """);
     }

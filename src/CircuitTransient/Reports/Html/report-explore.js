@@ -16,6 +16,10 @@ function readoutOf(model, time, axis) {
   return { when, total: engineering(total, unit), parts: words };
 }
 
+// A number without an exponent, which assistive technology does not read.
+const plain = (value) =>
+  value === 0 ? "0" : value.toFixed(Math.min(20, Math.max(0, 16 - Math.floor(Math.log10(Math.abs(value))))));
+
 // A panel in the page: draws itself, listens, and tells where it is read.
 class Panel {
   constructor(host, source, own, shared) {
@@ -58,7 +62,7 @@ class Panel {
 
   tell(now, text) {
     const attributes = {
-      "aria-valuemin": this.window.from, "aria-valuemax": this.window.to, "aria-valuenow": now, "aria-valuetext": text,
+      "aria-valuemin": plain(this.window.from), "aria-valuemax": plain(this.window.to), "aria-valuenow": plain(now), "aria-valuetext": text,
     };
     for (const [name, value] of Object.entries(attributes)) this.box.setAttribute(name, value);
   }

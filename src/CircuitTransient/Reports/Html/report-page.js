@@ -166,7 +166,8 @@ function followExtremes(view, scales) {
     return;
   }
   const { extremes: { max, min }, unit, total } = view.model;
-  const strong = (value) => make("strong", {}, engineering(value, unit));
+  const most = Math.max(Math.abs(max.value), Math.abs(min.value));
+  const strong = (value) => make("strong", {}, engineering(Math.abs(value) < 1e-12 * most ? 0 : value, unit));
   rewrite(line, "As scaled: highest ", strong(max.value), ` at ${engineering(max.time, "s")}; lowest `, strong(min.value),
     ` at ${engineering(min.time, "s")}; ${engineering(total[total.length - 1], unit)} at the end.`);
 }

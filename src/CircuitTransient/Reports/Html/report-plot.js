@@ -51,8 +51,11 @@ function pathOf(times, values, scale, place) {
     }
     entry = null;
   };
-  const start = Math.max(0, firstAt(times, scale.from) - 1);
+  // At a jump on the window's edge only the inner side is drawn.
+  const edge = firstAt(times, scale.from);
+  const start = times[edge] === scale.from && times[edge + 1] === scale.from ? edge + 1 : Math.max(0, edge - 1);
   for (let i = start; i < times.length; i++) {
+    if (times[i] === scale.to && times[i - 1] === scale.to && i > start) break;
     const value = values[i];
     if (!Number.isFinite(value)) {
       flush();
@@ -196,6 +199,8 @@ function drawPeaks(svg, frame, model, time, level) {
     const { value, time: instant } = model.extremes[side];
     if (!Number.isFinite(value) || instant < time.from || instant > time.to) continue;
     if (side === "min" && value === model.extremes.max.value) continue;
+    const other = model.extremes[side === "min" ? "max" : "min"].value;
+    if (Math.abs(value) < 1e-12 * Math.abs(other)) continue; // what rounding left of nothing
     const [x, y] = [time.place(instant), level.place(value)];
     const text = `${engineering(value, model.unit)} at ${engineering(instant, "s")}`;
     const half = widthOf(text, true) / 2;

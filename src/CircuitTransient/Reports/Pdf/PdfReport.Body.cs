@@ -67,9 +67,9 @@ public static partial class PdfReport
             : "goes on swinging or has no limit";
         var rising = observed.EndsRising ? "; it is still growing at the end of the study" : "";
         return $"Highest {At(observed.Max)}; lowest {At(observed.Min)}; "
-            + $"{Number(observed.End, unit)} at the end, {final}{rising}.";
+            + $"{Number(Cleaned(observed.End, observed), unit)} at the end, {final}{rising}.";
 
-        string At(Extreme extreme) => extreme.Value is { } value
+        string At(Extreme extreme) => Cleaned(extreme.Value, observed) is { } value
             ? Number(value, unit) + When(result, extreme)
             : "no finite value";
     }
@@ -86,7 +86,7 @@ public static partial class PdfReport
         var shares = observed.Contributions
             .Select(c => (
                 Cause: c,
-                Value: atMax ? c.AtMax : c.AtMin,
+                Value: Cleaned(atMax ? c.AtMax : c.AtMin, observed),
                 Own: Own(c),
                 Without: atMax ? c.MaxWithout : c.MinWithout))
             .OrderByDescending(s => Math.Abs(s.Value ?? 0)).ToArray();

@@ -9,6 +9,7 @@ public sealed class CurveBuilder
 {
     private readonly TransientSolution solution;
     private readonly ImmutableArray<SegmentTable> tables;
+    private readonly ImpulseWork impulses;
     private readonly Dictionary<(Measurand, Share, int), Curve?> curves = [];
     private readonly Dictionary<(int, Measurand, Share, int), LinearPiece?> linears = [];
 
@@ -16,6 +17,7 @@ public sealed class CurveBuilder
     public CurveBuilder(TransientSolution solution)
     {
         this.solution = solution;
+        impulses = new ImpulseWork(solution);
         tables = [.. solution.Segments.Select(s => new SegmentTable(s))];
     }
 
@@ -23,6 +25,7 @@ public sealed class CurveBuilder
     public CurveBuilder(CurveBuilder other)
     {
         solution = other.solution;
+        impulses = other.impulses;
         tables = other.tables;
     }
 
@@ -64,7 +67,11 @@ public sealed class CurveBuilder
     public Curve? OfPair(Measurand measurand, int one, int other, double from = 0)
     {
         var (factor, first, second, _) = QuantityFactors.OfAny(solution.Circuit, measurand)!;
-        return Quadratic(measurand, Pair, from);
+        return Quadratic(measurand, Pair, Work, from);
+
+        double Work(int part, int s) => one == other
+            ? impulses.Of(part, s, one, one)
+            : impulses.Of(part, s, one, other) + impulses.Of(part, s, other, one);
 
         QuadraticPiece? Pair(int s)
         {
@@ -84,7 +91,9 @@ public sealed class CurveBuilder
     {
         if (QuantityFactors.IsQuadratic(measurand))
         {
-            return Quadratic(measurand, s => Products(s, measurand, share, cause), from);
+            return Quadratic(
+                measurand, s => Products(s, measurand, share, cause),
+                (part, s) => impulses.Of(part, s, share, cause), from);
         }
 
         var pieces = ImmutableArray.CreateBuilder<CurvePiece>(tables.Length);
@@ -101,7 +110,13 @@ public sealed class CurveBuilder
         return new Curve(pieces.ToImmutable());
     }
 
-    private Curve? Quadratic(Measurand measurand, Func<int, QuadraticPiece?> products, double from)
+    /// <param name="measurand">The quantity.</param>
+    /// <param name="products">Its products on a segment.</param>
+    /// <param name="work">What a part takes in within the impulses at a segment's start, for an
+    /// energy.</param>
+    /// <param name="from">Since when an integral gathers, in seconds.</param>
+    private Curve? Quadratic(
+        Measurand measurand, Func<int, QuadraticPiece?> products, Func<int, int, double> work, double from)
     {
         var pieces = ImmutableArray.CreateBuilder<CurvePiece>(tables.Length);
         double gathered = 0;
@@ -119,6 +134,11 @@ public sealed class CurveBuilder
             }
 
             var set = Math.Clamp(from - tables[s].Segment.Start, 0, tables[s].Segment.Length);
+            if (measurand is EnergyIn energy && tables[s].Segment.Start >= from)
+            {
+                gathered += (energy.Delivered ? -1 : 1) * work(energy.Part, s);
+            }
+
             var accumulated = new AccumulatedPiece(quadratic, gathered, set);
             gathered = accumulated.AtEnd;
             pieces.Add(accumulated);

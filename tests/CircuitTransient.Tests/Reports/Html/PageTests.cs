@@ -25,6 +25,7 @@ public class PageTests(Browser browser)
     [InlineData("bullwheel-bus", ColorScheme.Light, 1280)]
     [InlineData("bullwheel-bus", ColorScheme.Dark, 1280)]
     [InlineData("intake-bay", ColorScheme.Light, 390)]
+    [InlineData("load-pin", ColorScheme.Light, 1280)] // nanoseconds
     public async Task An_accessibility_engine_finds_no_violation(string demo, ColorScheme scheme, int width)
     {
         var html = SolvedPages.Page(SolvedPages.Demo(demo));
