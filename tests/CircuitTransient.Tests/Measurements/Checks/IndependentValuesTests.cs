@@ -1,6 +1,6 @@
 using CircuitTransient.Measurements.Checks;
 
-namespace CircuitTransient.Tests.Measurements;
+namespace CircuitTransient.Tests.Measurements.Checks;
 
 /// <summary>Comparisons with a route that estimates its own error.</summary>
 public class IndependentValuesTests
