@@ -1,6 +1,7 @@
 using System.CommandLine;
 using System.CommandLine.Help;
 using System.CommandLine.Invocation;
+using System.CommandLine.Parsing;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
@@ -80,19 +81,29 @@ public static class App
 
         foreach (var error in parsed.Errors)
         {
-            streams.Complain(error.Message);
+            streams.Complain(Words(error, command));
         }
 
         streams.Error.WriteLine($"see `{Name} {command.Name} --help`");
         return ExitStatus.Mistake;
     }
 
+    /// <summary>What is missing in our words; all else says itself.</summary>
+    private static string Words(ParseError error, Command command) => error.SymbolResult switch
+    {
+        ArgumentResult { Tokens: [], Parent: CommandResult } or CommandResult { Tokens: [] } =>
+            $"say which circuit file: `{Name} {command.Name} FILE`",
+        OptionResult { Tokens: [], Option: var option } =>
+            $"`{option.Name}` needs a value: `{option.Name} {option.HelpName}`",
+        _ => error.Message,
+    };
+
     private static string Unknown(string? word, Command root)
     {
         var commands = root.Subcommands.Select(command => command.Name).ToList();
         if (word is null)
         {
-            return $"a command is missing: {string.Join(", ", commands)}";
+            return $"say what to do: {string.Join(" or ", commands)}";
         }
 
         return NearestName.Find(word, commands) is { } nearest

@@ -4,6 +4,9 @@ namespace CircuitTransient.Cli;
 public static class FileTrouble
 {
     // POSIX errno in the low bits of HResult, as .NET hands it over for errors without a type of their own.
+    private const int InputOrOutput = 5;
+    private const int IsFolder = 21;
+    private const int ReadOnly = 30;
     private const int NoSpaceLeft = 28;
     private const int TooManySymbolicLinks = 40;
 
@@ -20,6 +23,10 @@ public static class FileTrouble
         UnauthorizedAccessException => "it is not permitted",
         { HResult: NoSpaceLeft } => "the disk is full",
         { HResult: TooManySymbolicLinks } => "its links run in a circle",
-        _ => exception.Message,
+        { HResult: InputOrOutput } => "the device does not answer as it should",
+        { HResult: IsFolder } => "a folder stands in its place",
+        { HResult: ReadOnly } => "it is on a disk that can only be read",
+        // The system's own words name whole paths that the user never wrote.
+        _ => "the system refuses it",
     };
 }

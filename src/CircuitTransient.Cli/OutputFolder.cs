@@ -19,8 +19,23 @@ public static class OutputFolder
     public static string StemOf(string file) =>
         Path.GetFileNameWithoutExtension(file) is { Length: > 0 } stem ? stem : Path.GetFileName(file);
 
+    /// <summary>What in the folder's place or in it keeps files from being written; null where nothing
+    /// is seen.</summary>
+    public static string? Hindrance(string folder, IReadOnlyList<OutputFile> files)
+    {
+        if (FileInTheWay(folder) is { } obstacle)
+        {
+            return $"{obstacle} is a file, not a folder";
+        }
+
+        var places = files.Select(file => Path.Combine(folder, file.Name));
+        return places.FirstOrDefault(Directory.Exists) is { } place
+            ? $"{place} is a folder, not a file"
+            : null;
+    }
+
     /// <summary>The file that stands where a folder is needed; null where none does.</summary>
-    public static string? FileInTheWay(string folder)
+    private static string? FileInTheWay(string folder)
     {
         for (var place = folder; !string.IsNullOrEmpty(place); place = Path.GetDirectoryName(place))
         {

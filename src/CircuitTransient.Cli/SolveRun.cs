@@ -17,9 +17,12 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
     /// <returns>The worst of their exit statuses.</returns>
     public int Run(IReadOnlyList<string> files)
     {
-        if (TwoOfOneStem(files) is { } stem)
+        if (TwoOfOneStem(files) is { } twins)
         {
-            streams.Complain($"two files are named `{stem}`: their results would overwrite each other");
+            var places = twins.Select(Path.GetFullPath).Distinct(StringComparer.Ordinal);
+            streams.Complain(places.Count() < twins.Count()
+                ? $"`{twins.First()}` is given twice"
+                : $"two files are named `{twins.Key}`: their results would overwrite each other");
             return ExitStatus.Mistake;
         }
 
@@ -40,9 +43,9 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
         return answers.Max(answer => answer.Status);
     }
 
-    private static string? TwoOfOneStem(IReadOnlyList<string> files) =>
+    private static IGrouping<string, string>? TwoOfOneStem(IReadOnlyList<string> files) =>
         files.GroupBy(OutputFolder.StemOf, StringComparer.Ordinal)
-            .FirstOrDefault(group => group.Count() > 1)?.Key;
+            .FirstOrDefault(group => group.Count() > 1);
 
     private void WriteResults(int fileCount, ImmutableArray<TransientResult> results, Answer first)
     {
@@ -134,9 +137,10 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
         }
         catch (Exception trouble) when (trouble.IsFileTrouble())
         {
-            var reason = OutputFolder.FileInTheWay(folder) is { } obstacle
-                ? $"{obstacle} is a file, not a folder"
-                : FileTrouble.Reason(trouble);
+            var reason = OutputFolder.Hindrance(folder, files)
+                ?? (Directory.Exists(folder) || trouble is UnauthorizedAccessException
+                    ? FileTrouble.Reason(trouble)
+                    : "the folder cannot be made there");
             streams.Complain($"the results cannot be written to {folder}: {reason}");
             return new Answer(ExitStatus.FileTrouble, verdict, result);
         }

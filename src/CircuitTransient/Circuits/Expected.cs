@@ -37,8 +37,9 @@ internal static class Expected
     {
         if (expression is NumberSyntax { HasUnit: false, Mark: null } bare)
         {
-            state.Findings.Error(bare.Span, $"`{state.Text(bare.Span)}` has no unit; {what} is in per cent",
-                $"write `{state.Text(bare.Span)} %`");
+            var text = state.Text(bare.Span);
+            state.Findings.Error(bare.Span, $"`{text}` has no unit; {what} is in per cent",
+                char.IsDigit(text[^1]) ? $"write `{text} %`" : "write it without a prefix, such as `2 %`");
             return null;
         }
 
@@ -80,23 +81,32 @@ internal static class Expected
         {
             findings.Error(expression.Span,
                 $"`{text}` has no unit; {measure.Phrase} is in {measure.UnitWord}",
-                $"write `{text} {measure.Unit}`");
+                $"write `{UnitAdvice.WithUnit(text, measure.Unit)}`");
         }
         else
         {
             findings.Error(expression.Span, expected == Dimension.None
                 ? $"`{text}` is {Measure.Of(found).Phrase}; a pure number is expected here"
                 : $"`{text}` is {Measure.Of(found).Phrase}; {measure.Phrase} in {measure.UnitWord} is "
-                    + "expected here", Advice(plain, text, measure));
+                    + "expected here", Advice(plain, text, expected, measure));
         }
 
         return false;
     }
 
-    private static string Advice(ExpressionSyntax plain, string text, Measure measure)
+    private static string Advice(
+        ExpressionSyntax plain, string text, Dimension expected, Measure measure)
     {
         var number = new string([.. text.TakeWhile(c => char.IsDigit(c) || c is '.' or '-' or '\u2212')]);
-        return plain is NumberSyntax && number.Length > 0
+        var unit = text[number.Length..].Trim();
+        if (expected == Dimension.Time && number.Length > 0 && unit is "S" or [_, 'S'])
+        {
+            return $"`S` is siemens, a second is `s`: write `{number} {unit.Replace('S', 's')}`";
+        }
+
+        // Behind a prefix, a power of ten or a minute the bare number would be another value.
+        var isPlainUnit = Unit.TryRead(unit, out var read) && read is { Exponent: 0, Factor: 1 };
+        return plain is NumberSyntax && number.Length > 0 && isPlainUnit
             ? $"if the number is right, write `{$"{number} {measure.Unit}".TrimEnd()}`"
             : $"what is written here must come out in {measure.UnitWord}";
     }

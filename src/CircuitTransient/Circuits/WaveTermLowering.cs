@@ -97,7 +97,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         state.Findings.Error(expression.Span, isBare
             ? $"`{text}` has no unit; a source is in volts or amperes"
             : $"`{text}` is {Measure.Of(found).Phrase}; a source is in volts or amperes",
-            isBare ? $"write `{text} V` or `{text} A`"
+            isBare ? $"write `{UnitAdvice.WithUnit(text, "V")}` or `{UnitAdvice.WithUnit(text, "A")}`"
                 : "what is written here must come out in volts or amperes");
         return false;
     }

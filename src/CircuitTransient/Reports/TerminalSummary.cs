@@ -118,8 +118,10 @@ public static partial class TerminalSummary
         var scale = Math.Abs(observed.Greatest.Value ?? 0);
         yield return [observed.Name, "max", Peak(max), When(result, observed, max)];
         yield return ["", "min", Peak(min), When(result, observed, min)];
-        var final = observed.Final is null ? "no limit" : Number(observed.Final, unit, scale);
-        yield return ["", "end", Number(observed.End, unit, scale), $"tends to {final}"];
+        var final = observed.Final is null
+            ? "goes on swinging or has no limit"
+            : $"tends to {Number(observed.Final, unit, scale)}";
+        yield return ["", "end", Number(observed.End, unit, scale), final];
 
         // A value that the equations leave open has no start either; one that is missing alone is an impulse.
         string Peak(Extreme extreme) => extreme.Value is null && observed.Start is not null

@@ -38,7 +38,9 @@ internal sealed class SingularFault(Circuit circuit, int[] parts, bool hasNodes,
             return (
                 $"nothing decides how {Names(parts)} share a current{when}, and {Names(followers)} "
                 + $"{(followers.Length == 1 ? "follows" : "follow")} it",
-                "give the contacts the resistance they have: `closed resistance 1 mΩ`");
+                Any(p => p is Switch)
+                    ? "give the contacts the resistance they have: `closed resistance 1 mΩ`"
+                    : "put a resistor of some milliohms in series with one of them");
         }
 
         return hasNodes ? CutSet() : Loop();
@@ -47,8 +49,11 @@ internal sealed class SingularFault(Circuit circuit, int[] parts, bool hasNodes,
     private (string Message, string Advice) Loop() => (
         $"{Names(parts)} form a loop of {Kinds("ideal voltage sources", "closed switches")}{when}: "
         + "their current has no value",
-        "put the real resistance of a contact or lead in series, some milliohms: "
-        + "`closed resistance 1 mΩ` on a switch, or a resistor");
+        Any(p => p is Switch)
+            ? "put the real resistance of a contact or lead in series, some milliohms: "
+                + "`closed resistance 1 mΩ` on a switch, or a resistor"
+            : "put the inner resistance of a source or that of its leads in series: a resistor of some "
+                + "milliohms");
 
     private (string Message, string Advice) CutSet() => parts.Length == 1
         ? (
@@ -57,7 +62,8 @@ internal sealed class SingularFault(Circuit circuit, int[] parts, bool hasNodes,
         : (
             $"{Names(parts)} are all that joins two parts of the circuit{when}, and they force currents "
             + "that do not agree",
-            "give the current a path: a resistor across the source, or `open resistance 10 MΩ` on a switch");
+            "give the current a path: a resistor across the source"
+            + (Any(p => p is Switch) ? ", or `open resistance 10 MΩ` on a switch" : ""));
 
     private (string Message, string Advice) Coils() => (
         $"{Names(parts)} contradict each other{when}: coils coupled without leakage tie their voltages "

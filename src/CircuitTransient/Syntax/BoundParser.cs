@@ -60,8 +60,37 @@ internal static class BoundParser
                 : null;
         }
 
+        if (ReportComparison(cursor))
+        {
+            return null;
+        }
+
         cursor.Unexpected("`at most`, `at least` or `between`", "at", "between");
         return null;
+    }
+
+    /// <summary><c>&lt;=</c> and its like, which are written in words.</summary>
+    private static bool ReportComparison(StatementCursor cursor)
+    {
+        var token = cursor.Current;
+        var words = cursor.TextOf(token) switch
+        {
+            "<" or "≤" => "at most",
+            ">" or "≥" => "at least",
+            _ => null,
+        };
+        if (words is null)
+        {
+            return false;
+        }
+
+        cursor.Advance(cursor.IsSign('=', 1) && cursor.IsJoined(1) ? 2 : 1);
+        var span = cursor.SpanFrom(token.Start);
+        var here = cursor.Here;
+        var limit = ExpressionParser.ReadInClause(cursor) is { } value ? " " + cursor.Shown(value.Span) : "";
+        cursor.Return(here);
+        cursor.Error(span, $"`{cursor.Shown(span)}` is no bound", $"write `{words}{limit}`");
+        return true;
     }
 
     private static ExpressionSyntax? ReadUpper(StatementCursor cursor) =>

@@ -74,7 +74,8 @@ public static class InstantListParser
         var text = cursor.TextOf(number.Span);
         if (!number.HasUnit)
         {
-            cursor.Error(number.Span, $"`{text}` has no unit; an instant is in seconds", $"write `{text} s`");
+            cursor.Error(number.Span, $"`{text}` has no unit; an instant is in seconds",
+                $"write `{UnitAdvice.WithUnit(text, "s")}`");
             return null;
         }
 

@@ -48,10 +48,28 @@ internal static class NumberMistakes
         var span = cursor.SpanFrom(token.Start);
         var isRead = NumberParser.TakeUnit(cursor, token, out _, out _, out var hasUnit);
         var unit = hasUnit ? cursor.Shown(new TextSpan(span.End, cursor.LastEnd - span.End)) : "";
-        if (isRead)
+        if (!isRead)
         {
-            cursor.Error(span, "two numbers stand side by side",
-                $"write one number without blanks: `{text}{unit}`");
+            return;
+        }
+
+        if (IsGroupedByPoints(text) && cursor.TextOf(span) == text)
+        {
+            cursor.Error(span,
+                $"`{cursor.Shown(span)}` has more than one point; the point is the decimal mark",
+                $"if the points part thousands, write `{text.Replace(".", "")}{unit}`");
+        }
+        else
+        {
+            cursor.Error(span, "two numbers stand side by side", text.Count(c => c == '.') > 1
+                ? "write one number, with one point as its decimal mark"
+                : $"write one number without blanks: `{text}{unit}`");
         }
     }
+
+    /// <summary><c>5.000.000</c>: one to three digits, then groups of three.</summary>
+    private static bool IsGroupedByPoints(string text) =>
+        text.Split('.') is [{ Length: >= 1 and <= 3 }, _, _, ..] groups
+        && groups.Skip(1).All(group => group.Length == 3)
+        && groups.All(group => group.All(char.IsAsciiDigit));
 }

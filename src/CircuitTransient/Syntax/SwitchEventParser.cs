@@ -77,6 +77,7 @@ internal static class SwitchEventParser
         var start = cursor.Current.Start;
         if (cursor.Take("at"))
         {
+            cursor.Form = "write `at next current zero`";
             if (!cursor.Expect("next", "current", "zero"))
             {
                 return false;

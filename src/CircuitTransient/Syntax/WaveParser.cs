@@ -8,6 +8,9 @@ internal static class WaveParser
     private const string Forms =
         "a wave is a constant, `step of`, `ramp of`, `sine of`, `impulse of`, `straight lines` or another";
 
+    private const string PulseForms =
+        "one pulse: `rectangular pulse of 24 V from 1 ms to 3 ms`; several: `pulse train of …`";
+
     private static readonly string[] waveWords =
     [
         "step", "rectangular", "pulse", "ramp", "sine", "cosine", "decay", "double", "impulse", "straight",
@@ -104,7 +107,7 @@ internal static class WaveParser
             return ReadConstant(cursor);
         }
 
-        cursor.Form = Forms;
+        cursor.Form = cursor.IsWord("pulse") || cursor.IsWord("square") ? PulseForms : Forms;
         cursor.Unexpected("the value of the source", waveWords);
         return null;
     }

@@ -10,6 +10,11 @@ public sealed partial class SourceText
     public const int LargestFile = 16 * 1024 * 1024;
 
     private const int BytesShownAfterFault = 60;
+    private const int BytesThatTellText = 1000;
+
+    // Everything but the control characters; a text has of those tabs, the ends of lines and pages.
+    private static readonly SearchValues<byte> bytesOfTexts = SearchValues.Create(
+        [.. Enumerable.Range(0, 256).Where(b => b is >= 0x20 or (>= 9 and <= 13)).Select(b => (byte)b)]);
 
     /// <summary>Reads the bytes of a file as UTF-8; a byte-order mark is dropped.</summary>
     public static Outcome<SourceText> Read(string name, ReadOnlySpan<byte> bytes)
@@ -41,9 +46,18 @@ public sealed partial class SourceText
 
         return status == OperationStatus.Done
             ? new Outcome<SourceText>(new SourceText(name, new string(characters, 0, written), bytes), [])
-            : Refuse(Fault(name, text, read, $"byte {start + read + 1} (0x{text[read]:X2}) is not UTF-8",
-                "save the file as UTF-8"));
+            : Refuse(IsBinary(text)
+                ? Fault(name, text, read, $"byte {start + read + 1} is 0x{text[read]:X2}: this is not a text",
+                    "a circuit file is plain UTF-8 text")
+                : Fault(name, text, read, $"byte {start + read + 1} (0x{text[read]:X2}) is not UTF-8",
+                    "save the file as UTF-8"));
     }
+
+    /// <summary>Whether control characters near the start tell a picture or a program from a text in
+    /// another encoding.</summary>
+    private static bool IsBinary(ReadOnlySpan<byte> text) =>
+        text[..Math.Min(text.Length, BytesThatTellText)]
+            .IndexOfAnyExcept(bytesOfTexts) >= 0;
 
     /// <summary>The error for a file over <see cref="LargestFile"/>, which need not be read to be
     /// refused.</summary>

@@ -1,3 +1,5 @@
+using System.Globalization;
+
 namespace CircuitTransient.Text;
 
 /// <summary>What to write in place of something that is not a unit.</summary>
@@ -22,6 +24,11 @@ public static class UnitAdvice
     /// <summary>Advice for a word that stands where a unit should, behind a number.</summary>
     public static string For(string word, string number)
     {
+        if (ForLongTime(word, number) is { } time)
+        {
+            return time;
+        }
+
         if ((SymbolOf(word) ?? PrefixedSymbolOf(word)) is { } symbol)
         {
             return $"write `{number} {symbol}`";
@@ -42,6 +49,39 @@ public static class UnitAdvice
 
         return $"units: {string.Join(' ', Unit.Symbols)} min h deg %; prefixes: {Prefix.All}; "
             + $"a product: `{number} * {word}`";
+    }
+
+    /// <summary>A number without a unit and the unit it lacks; a prefix that stands alone joins it:
+    /// <c>2.2k</c> is <c>2.2 kΩ</c>.</summary>
+    public static string WithUnit(string number, string unit)
+    {
+        var bare = number.Length > 1 ? number[..^1].TrimEnd() : "";
+        return bare is [.., >= '0' and <= '9'] && Prefix.TryRead(number[^1], out var exponent)
+            ? $"{bare} {Prefix.Write(exponent)}{unit}"
+            : $"{number} {unit}";
+    }
+
+    /// <summary>A day and what is longer has no unit of its own.</summary>
+    private static string? ForLongTime(string word, string number)
+    {
+        var hours = word switch
+        {
+            "d" or "day" or "days" => 24,
+            "week" or "weeks" => 168,
+            "month" or "months" or "year" or "years" => 0,
+            _ => -1,
+        };
+        if (hours < 0)
+        {
+            return null;
+        }
+
+        const string units = "the units of time are `s`, `min` and `h`";
+        return hours > 0 && number.Length < 10
+            && decimal.TryParse(number, NumberStyles.AllowDecimalPoint, CultureInfo.InvariantCulture,
+                out var count)
+            ? $"{units}: write `{(count * hours).ToString("0.############", CultureInfo.InvariantCulture)} h`"
+            : $"{units}, with prefixes `ms`, `µs`, `ns`";
     }
 
     /// <summary>The symbol of a unit written out.</summary>

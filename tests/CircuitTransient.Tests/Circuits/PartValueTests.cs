@@ -33,6 +33,58 @@ public class PartValueTests
                 resistor R1 at a : 5 V
                 """));
 
+    [Theory]
+    [InlineData(
+        "resistor R1 at a : 2.2k",
+        """
+        plant.cause:1:20: error: `2.2k` has no unit; a resistance is in ohms
+          resistor R1 at a : 2.2k
+                             ^^^^
+          → write `2.2 kΩ`
+        """)]
+    [InlineData(
+        "resistor R1 at a : 2.2 u",
+        """
+        plant.cause:1:20: error: `2.2 u` has no unit; a resistance is in ohms
+          resistor R1 at a : 2.2 u
+                             ^^^^^
+          → write `2.2 µΩ`
+        """)]
+    [InlineData(
+        "resistor R1 at a : 1 µF",
+        """
+        plant.cause:1:20: error: `1 µF` is a capacitance; a resistance in ohms is expected here
+          resistor R1 at a : 1 µF
+                             ^^^^
+          → what is written here must come out in ohms
+        """)]
+    [InlineData(
+        "resistor R1 at a : 1e3 V",
+        """
+        plant.cause:1:20: error: `1e3 V` is a voltage; a resistance in ohms is expected here
+          resistor R1 at a : 1e3 V
+                             ^^^^^
+          → what is written here must come out in ohms
+        """)]
+    [InlineData(
+        "source S1 at a : step of 5 V at 10 mS",
+        """
+        plant.cause:1:33: error: `10 mS` is a conductance; a time in seconds is expected here
+          source S1 at a : step of 5 V at 10 mS
+                                          ^^^^^
+          → `S` is siemens, a second is `s`: write `10 ms`
+        """)]
+    [InlineData(
+        "source S1 at a : 2.2 k",
+        """
+        plant.cause:1:18: error: `2.2 k` has no unit; a source is in volts or amperes
+          source S1 at a : 2.2 k
+                           ^^^^^
+          → write `2.2 kV` or `2.2 kA`
+        """)]
+    public void A_prefix_or_a_power_of_ten_is_never_lost_in_advice(string statement, string message) =>
+        Assert.Equal(message, Checking.Messages(statement + "\nresistor R2 at a : 1 Ω"));
+
     [Fact]
     public void An_expression_of_the_wrong_dimension_is_named() =>
         Assert.Equal(

@@ -9,7 +9,7 @@ public sealed class AppTests : IDisposable
     public void Dispose() => commandLine.Dispose();
 
     [Theory]
-    [InlineData("", "error: a command is missing: check, solve\nsee `circuit-transient --help`\n")]
+    [InlineData("", "error: say what to do: check or solve\nsee `circuit-transient --help`\n")]
     [InlineData("slove",
         "error: there is no command `slove`; did you mean `solve`?\nsee `circuit-transient --help`\n")]
     [InlineData("draw",
@@ -19,6 +19,15 @@ public sealed class AppTests : IDisposable
         + "see `circuit-transient solve --help`\n")]
     [InlineData("solve a.cause --samples many",
         "error: `many` is not a whole number from 2 to 1000000\nsee `circuit-transient solve --help`\n")]
+    [InlineData("solve",
+        "error: say which circuit file: `circuit-transient solve FILE`\n"
+        + "see `circuit-transient solve --help`\n")]
+    [InlineData("check",
+        "error: say which circuit file: `circuit-transient check FILE`\n"
+        + "see `circuit-transient check --help`\n")]
+    [InlineData("solve a.cause --out",
+        "error: `--out` needs a value: `--out DIR`\nsee `circuit-transient solve --help`\n")]
+    [InlineData("solve a.cause ./a.cause", "error: `a.cause` is given twice\n")]
     [InlineData("solve a/x.cause b/x.cause",
         "error: two files are named `x`: their results would overwrite each other\n")]
     public void A_wrong_command_line_is_answered_on_stderr_in_a_sentence(string line, string answer)

@@ -41,6 +41,35 @@ public sealed class BadFileTests : IDisposable
         Assert.Contains("The requirement holds.", run.Output);
     }
 
+    [Fact]
+    public void A_folder_where_a_file_of_results_should_be_is_named()
+    {
+        Directory.CreateDirectory(Path.Combine(commandLine.Results, "filter", "results.json"));
+
+        var run = commandLine.Solve(commandLine.Circuit("filter.cause", Circuits.Holding));
+
+        Assert.Equal(ExitStatus.FileTrouble, run.Status);
+        Assert.Equal(
+            $"error: the results cannot be written to {commandLine.Results}/filter: "
+            + $"{commandLine.Results}/filter/results.json is a folder, not a file\n",
+            run.Error);
+    }
+
+    [Fact]
+    public void A_folder_of_results_that_cannot_be_made_is_said_in_words_of_our_own()
+    {
+        // No file system takes a name of 300 characters.
+        var folder = new string('x', 300);
+
+        var run = commandLine.Run(
+            "solve", "--out", folder, commandLine.Circuit("filter.cause", Circuits.Holding));
+
+        Assert.Equal(ExitStatus.FileTrouble, run.Status);
+        Assert.Equal(
+            $"error: the results cannot be written to {folder}/filter: the folder cannot be made there\n",
+            run.Error);
+    }
+
     [Theory]
     [InlineData("check")]
     [InlineData("solve")]

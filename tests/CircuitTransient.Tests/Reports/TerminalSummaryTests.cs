@@ -177,6 +177,15 @@ public class TerminalSummaryTests
     }
 
     [Fact]
+    public void A_wave_without_a_limit_is_not_said_to_tend_anywhere()
+    {
+        var result = SampleResults.Bare();
+        var wave = result.Observations[0] with { End = 5, Final = null };
+        var lines = TerminalSummary.Write(result with { Observations = [wave] }, []).Split('\n');
+        Assert.Contains("                end  5.000 V  goes on swinging or has no limit", lines);
+    }
+
+    [Fact]
     public void What_rounding_left_over_is_written_as_zero()
     {
         var result = SampleResults.Bare();

@@ -93,6 +93,23 @@ public sealed class SingularDiagnosisTests
     }
 
     [Fact]
+    public void Advice_speaks_of_a_switch_only_where_one_is_at_fault()
+    {
+        var sources = Assert.Single(Unsolvable(
+            "source V1 at a : 10 V\nsource V2 at a : 5 V\nresistor R at a : 1 Ω\nuntil 5 ms"));
+        var contact = Assert.Single(Unsolvable(
+            "source V1 at a : 10 V\nswitch S at a : closed\nresistor R at a : 1 Ω\nuntil 5 ms"));
+        Assert.Equal(
+            "put the inner resistance of a source or that of its leads in series: a resistor of some "
+            + "milliohms",
+            sources.Advice);
+        Assert.Equal(
+            "put the real resistance of a contact or lead in series, some milliohms: "
+            + "`closed resistance 1 mΩ` on a switch, or a resistor",
+            contact.Advice);
+    }
+
+    [Fact]
     public void One_planted_fault_among_random_parts_is_never_misdiagnosed() =>
         Gen.Select(Gen.Int[0, 6], Gen.Int[3, 10], Gen.Int[1, 4], Gen.Int.Array[30]).Sample(
             (kind, nodes, length, draws) =>

@@ -144,7 +144,7 @@ public class ClauseMessageTests
         a.cause:1:50: error: `current` stands where `next` should
           switch K5 from a to b : closed, opens at 5 ms at current zero
                                                            ^^^^^^^
-          → write `closes at 1.8 s`, `opens at 5 ms after K1 opens`, `closes when voltage of bus …`
+          → write `at next current zero`
 
         """)]
     [InlineData(

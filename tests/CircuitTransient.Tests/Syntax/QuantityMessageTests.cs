@@ -96,4 +96,53 @@ public class QuantityMessageTests
         """)]
     public void A_quantity_that_is_none_is_named_with_the_one_meant(string text, string expected) =>
         Assert.Equal(expected, Reading.Messages(text));
+
+    [Theory]
+    [InlineData(
+        "require voltage of b <= 5 V",
+        """
+        a.cause:1:22: error: `<=` is no bound
+          require voltage of b <= 5 V
+                               ^^
+          → write `at most 5 V`
+
+        """)]
+    [InlineData(
+        "require voltage of b >= 5 V",
+        """
+        a.cause:1:22: error: `>=` is no bound
+          require voltage of b >= 5 V
+                               ^^
+          → write `at least 5 V`
+
+        """)]
+    [InlineData(
+        "require voltage of b < 5 V",
+        """
+        a.cause:1:22: error: `<` is no bound
+          require voltage of b < 5 V
+                               ^
+          → write `at most 5 V`
+
+        """)]
+    [InlineData(
+        "require voltage of b ≥ 5 V",
+        """
+        a.cause:1:22: error: `≥` is no bound
+          require voltage of b ≥ 5 V
+                               ^
+          → write `at least 5 V`
+
+        """)]
+    [InlineData(
+        "require voltage of b <=",
+        """
+        a.cause:1:22: error: `<=` is no bound
+          require voltage of b <=
+                               ^^
+          → write `at most`
+
+        """)]
+    public void A_sign_of_comparison_is_answered_with_the_words_of_a_bound(string text, string expected) =>
+        Assert.Equal(expected, Reading.Messages(text));
 }

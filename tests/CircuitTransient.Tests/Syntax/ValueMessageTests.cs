@@ -40,6 +40,24 @@ public class ValueMessageTests
           → write one number without blanks: `1200 Ω`
 
         """)]
+    [InlineData(
+        "source S at b : 5.000.000 V",
+        """
+        a.cause:1:17: error: `5.000.000` has more than one point; the point is the decimal mark
+          source S at b : 5.000.000 V
+                          ^^^^^^^^^
+          → if the points part thousands, write `5000000 V`
+
+        """)]
+    [InlineData(
+        "source S at b : 1.5 2.5 V",
+        """
+        a.cause:1:17: error: two numbers stand side by side
+          source S at b : 1.5 2.5 V
+                          ^^^^^^^
+          → write one number, with one point as its decimal mark
+
+        """)]
     public void A_decimal_comma_is_never_guessed_at(string text, string expected) =>
         Assert.Equal(expected, Reading.Messages(text));
 
@@ -123,6 +141,33 @@ public class ValueMessageTests
           source S at a : sine of 5 V at 10 hz
                                             ^^
           → case matters: write `10 Hz`
+
+        """)]
+    [InlineData(
+        "until 1 day",
+        """
+        a.cause:1:9: error: `day` is not a unit
+          until 1 day
+                  ^^^
+          → the units of time are `s`, `min` and `h`: write `24 h`
+
+        """)]
+    [InlineData(
+        "until 1.5 days",
+        """
+        a.cause:1:11: error: `days` is not a unit
+          until 1.5 days
+                    ^^^^
+          → the units of time are `s`, `min` and `h`: write `36 h`
+
+        """)]
+    [InlineData(
+        "until 2 years",
+        """
+        a.cause:1:9: error: `years` is not a unit
+          until 2 years
+                  ^^^^^
+          → the units of time are `s`, `min` and `h`, with prefixes `ms`, `µs`, `ns`
 
         """)]
     public void A_unit_that_is_none_is_named_with_the_one_meant(string text, string expected) =>

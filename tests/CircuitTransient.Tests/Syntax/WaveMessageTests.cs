@@ -46,7 +46,16 @@ public class WaveMessageTests
         a.cause:1:25: error: `square` stands where the value of the source should
           source S6 from a to b : square of 8 A
                                   ^^^^^^
-          → a wave is a constant, `step of`, `ramp of`, `sine of`, `impulse of`, `straight lines` or another
+          → one pulse: `rectangular pulse of 24 V from 1 ms to 3 ms`; several: `pulse train of …`
+
+        """)]
+    [InlineData(
+        "source S6 from a to b : pulse of 5 V from 1 ms to 2 ms",
+        """
+        a.cause:1:25: error: `pulse` stands where the value of the source should
+          source S6 from a to b : pulse of 5 V from 1 ms to 2 ms
+                                  ^^^^^
+          → one pulse: `rectangular pulse of 24 V from 1 ms to 3 ms`; several: `pulse train of …`
 
         """)]
     [InlineData(

@@ -78,6 +78,18 @@ public class SourceTextTests
             Refusal([(byte)'a', (byte)'b', 0, 0xFF]));
 
     [Fact]
+    public void A_picture_is_no_text_in_another_encoding() =>
+        Assert.Equal(
+            """
+            a.cause:1:1: error: byte 1 is 0x89: this is not a text
+              �PNG
+              ^
+              → a circuit file is plain UTF-8 text
+
+            """,
+            Refusal([0x89, .. "PNG\r\n"u8, 0x1A, (byte)'\n', 0, 0, 0, 13]));
+
+    [Fact]
     public void A_file_in_utf16_is_named_as_such() =>
         Assert.Equal(
             """

@@ -18,6 +18,9 @@ internal sealed record IndependentValues(double Worst, double Allowed, int Compa
     /// <summary>Nothing compared yet.</summary>
     public static IndependentValues None { get; } = new(0, Least, 0, 0);
 
+    /// <summary>How many were left out, in words.</summary>
+    public string LeftOut => TooWeak == 1 ? "1 value left out" : $"{TooWeak} values left out";
+
     /// <summary>Compares all quantities at one instant.</summary>
     /// <param name="curves">The closed forms.</param>
     /// <param name="quantities">The quantities.</param>

@@ -53,7 +53,7 @@ internal static class SelfChecks
             if (values.TooWeak > 0 || values.Compared == 0)
             {
                 open.Add(new NotJudged(name, weakness ?? (values.TooWeak > 0
-                    ? $"{values.TooWeak} values left out: the route's own error estimate is over 1e-6"
+                    ? $"{values.LeftOut}: the route's own error estimate is over 1e-6"
                     : "the route gives no value for this circuit")));
             }
         }

@@ -63,7 +63,9 @@ public static partial class HtmlReport
     {
         var unit = observed.Unit;
         var rising = observed.EndsRising ? "; it is still growing at the end of the study" : "";
-        var final = observed.Final is { } limit ? $"tends to {Number(limit, unit)}" : "tends to no limit";
+        var final = observed.Final is { } limit
+            ? $"tends to {Number(limit, unit)}"
+            : "goes on swinging or has no limit";
         return Markup.Of($"""
             Highest {Strong(observed.Max, observed)}{When(result, observed.Max)}; lowest
             {Strong(observed.Min, observed)}{When(result, observed.Min)};

@@ -62,7 +62,9 @@ public static partial class PdfReport
     private static string ExtremesOf(TransientResult result, ObservationResult observed)
     {
         var unit = observed.Unit;
-        var final = observed.Final is { } limit ? $"tends to {Number(limit, unit)}" : "tends to no limit";
+        var final = observed.Final is { } limit
+            ? $"tends to {Number(limit, unit)}"
+            : "goes on swinging or has no limit";
         var rising = observed.EndsRising ? "; it is still growing at the end of the study" : "";
         return $"Highest {At(observed.Max)}; lowest {At(observed.Min)}; "
             + $"{Number(Cleaned(observed.End, observed), unit)} at the end, {final}{rising}.";
