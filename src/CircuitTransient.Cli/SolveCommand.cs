@@ -84,7 +84,8 @@ internal sealed class SolveCommand : Command
                 parsed.GetValue(json),
                 parsed.GetValue(quiet),
                 parsed.GetValue(strict),
-                parsed.GetValue(pdf)) { After = since }
+                parsed.GetValue(pdf))
+            { After = since }
             : null;
     }
 }
