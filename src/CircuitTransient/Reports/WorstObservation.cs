@@ -36,7 +36,8 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         var greatest = 0.0;
         foreach (var (quantity, used, value, what) in Uses(result))
         {
-            if (used > greatest && ObservedQuantity.Find(result, quantity) is { } observation)
+            if (used > greatest && ObservedQuantity.Find(result, quantity) is { } observation
+                && IsFinite(observation))
             {
                 var why = used > 1 ? $"the {what} exceeded most" : $"nearest to its {what}";
                 var candidate = new WorstObservation(observation, IsAtMax(observation, value), why);
@@ -55,6 +56,11 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         var required = result.Circuit.Requirements;
         for (var i = 0; i < Math.Min(required.Length, result.Requirements.Length); i++)
         {
+            if (required[i].Bound is SettlesTo)
+            {
+                continue; // when it settles is no extreme that causes could be asked for
+            }
+
             var verdict = result.Requirements[i];
             var used = Used(required[i].Bound, verdict);
             yield return (required[i].Quantity, used, verdict.Worst.Value, "requirement");
@@ -82,7 +88,6 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
             Limits { Lower: { } lower, Upper: { } upper } => Math.Max(Math.Abs(lower), Math.Abs(upper)),
             Limits { Lower: { } lower } => Math.Abs(lower),
             Limits { Upper: { } upper } => Math.Abs(upper),
-            SettlesTo settles => Math.Abs(settles.Target),
             _ => 0,
         };
         if (verdict.Margin is not { } margin || limit == 0)
@@ -104,6 +109,10 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         "A/s" => new RateOfChange(new CurrentThrough(part)),
         _ => null,
     };
+
+    // An impulse is infinite and stands among the impulses; the other extreme would explain the wrong thing.
+    private static bool IsFinite(ObservationResult observation) =>
+        observation.Max.Value is not null && observation.Min.Value is not null;
 
     private static bool IsAtMax(ObservationResult observation, double? value)
     {
