@@ -17,8 +17,6 @@ internal sealed record Scope(
     public static Scope Outermost(string reference) =>
         new("", ImmutableDictionary<string, int>.Empty, ImmutableDictionary<string, string>.Empty, reference);
 
-    public bool IsOutermost => Prefix.Length == 0;
-
     /// <summary>The name with its index as a number, without the prefix.</summary>
     public string Written(NameSyntax name, Findings findings)
     {

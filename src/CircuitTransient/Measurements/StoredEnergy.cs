@@ -9,6 +9,7 @@ namespace CircuitTransient.Measurements;
 internal sealed class StoredEnergy(CurveBuilder curves)
 {
     private readonly TransientSolution solution = curves.Solution;
+    private readonly ImpulseWork impulses = new(curves.Solution);
 
     /// <summary>Joules in all fields at the start of a segment, or at its end.</summary>
     public double At(int segment, bool end) => Terms(segment, end).Sum();
@@ -71,30 +72,10 @@ internal sealed class StoredEnergy(CurveBuilder curves)
         return before - At(segment, end: false) + SuppliedInImpulse(segment);
     }
 
-    /// <summary>Joules that sources supply within the impulses at a segment's start: the charge at the
-    /// voltage just after, the flux at the current just after.</summary>
-    public double SuppliedInImpulse(int segment)
-    {
-        double sum = 0;
-        for (var i = 0; i < solution.Circuit.Parts.Length; i++)
-        {
-            if (solution.Circuit.Parts[i] is VoltageSource or CurrentSource or DependentSource)
-            {
-                sum -= AbsorbedInImpulse(i, segment);
-            }
-        }
-
-        return sum;
-    }
-
-    private double AbsorbedInImpulse(int part, int segment)
-    {
-        var (voltage, current) = (new VoltageAcross(part), new CurrentThrough(part));
-        var charge = solution.Segments[segment].ImpulseAtStart(current);
-        var flux = solution.Segments[segment].ImpulseAtStart(voltage);
-        return (charge == 0 ? 0 : charge * Value(voltage, segment, end: false))
-            + (flux == 0 ? 0 : flux * Value(current, segment, end: false));
-    }
+    /// <summary>Joules that sources supply within the impulses at a segment's start.</summary>
+    private double SuppliedInImpulse(int segment) => -Enumerable.Range(0, solution.Circuit.Parts.Length)
+        .Where(i => solution.Circuit.Parts[i] is VoltageSource or CurrentSource or DependentSource)
+        .Sum(i => impulses.Of(i, segment, Segment.Total, Segment.Total));
 
     private double Value(Measurand quantity, int segment, bool end)
     {

@@ -20,9 +20,6 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     /// <summary>1.</summary>
     public static DoubleDouble One => new(1, 0);
 
-    /// <summary>π.</summary>
-    public static DoubleDouble Pi => new(3.141592653589793, 1.2246467991473532e-16);
-
     /// <summary>Whether the number is exactly zero.</summary>
     public bool IsZero => Hi == 0;
 

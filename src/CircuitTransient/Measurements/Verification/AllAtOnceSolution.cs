@@ -103,19 +103,6 @@ public sealed class AllAtOnceSolution
             .Value(measurand) ?? double.NaN;
     }
 
-    /// <summary>Charge of each capacitor (C) and flux linkage of each coil (Wb) at an instant, zero for
-    /// other parts; null past <see cref="Until"/>.</summary>
-    public ImmutableArray<double>? StoredAt(double time, bool before = false)
-    {
-        if (SegmentAt(time, before) is not { } segment)
-        {
-            return null;
-        }
-
-        var stored = segment.Propagator.Stored(segment.StatesAt(time), Storage.Count);
-        return [.. Storage.IndexOf.Select(index => index < 0 ? 0 : (double)stored[index])];
-    }
-
     /// <summary>The energy of all fields at an instant, joules; null past <see cref="Until"/>.</summary>
     public double? StoredEnergyAt(double time, bool before = false) =>
         SegmentAt(time, before) is { } segment

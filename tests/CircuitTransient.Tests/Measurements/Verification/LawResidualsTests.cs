@@ -1,5 +1,4 @@
 using CircuitTransient.Circuits;
-using CircuitTransient.Measurements.Verification;
 using static CircuitTransient.Tests.Measurements.Verification.HandBuilt;
 
 namespace CircuitTransient.Tests.Measurements.Verification;

@@ -1,8 +1,9 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Verification;
 using CircuitTransient.Numerics;
 
-namespace CircuitTransient.Measurements.Verification;
+namespace CircuitTransient.Tests.Measurements.Verification;
 
 /// <summary>Kirchhoff's laws and each part's own law, tried on the values of a solution at instant after
 /// instant. A residual counts relative to the largest term its law has at any of them, or to a millionth of
