@@ -34,4 +34,9 @@ public sealed record WavePiece(
     double AngularFrequency,
     double Phase,
     string Label,
-    bool IsPerpetual = false);
+    bool IsPerpetual = false)
+{
+    /// <summary>Whether it goes on from the piece before it in the wave: the next of several straight lines, the
+    /// level held after a ramp, the other exponential of an impulse.</summary>
+    public bool Continues { get; init; }
+}

@@ -13,6 +13,7 @@ namespace CircuitTransient.Solutions;
 /// which is no impulse.</param>
 internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, double[] Sizes)
 {
+    private const double Rounding = 1e-14; // of levels in double: a ramp's end against the level held after it
     private const int Orders = 4; // derivatives of a source that a network of index up to 5 can pass on
 
     /// <summary>At the start of an interval.</summary>
@@ -101,6 +102,7 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
     private static DoubleDouble[][] Derivatives(NetworkLayout layout, IEnumerable<Motion> motions)
     {
         var derivatives = new DoubleDouble[Orders][];
+        var sizes = new double[Orders, layout.InputCount];
         for (var k = 0; k < Orders; k++)
         {
             derivatives[k] = new DoubleDouble[layout.InputCount];
@@ -110,7 +112,18 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
         {
             for (var k = 0; k < Orders; k++)
             {
-                derivatives[k][forcing.Input] += forcing.DerivativeAtStart(k);
+                var derivative = forcing.DerivativeAtStart(k);
+                derivatives[k][forcing.Input] += derivative.Re;
+                sizes[k, forcing.Input] += derivative.Magnitude;
+            }
+        }
+
+        for (var k = 0; k < Orders; k++)
+        {
+            for (var i = 0; i < layout.InputCount; i++)
+            {
+                var isRounding = Math.Abs(derivatives[k][i].Hi) <= Rounding * sizes[k, i]; // sin 0 as cos(-π/2)
+                derivatives[k][i] = isRounding ? DoubleDouble.Zero : derivatives[k][i];
             }
         }
 
@@ -119,9 +132,8 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
 
     private static DoubleDouble Difference(DoubleDouble after, DoubleDouble before)
     {
-        const double rounding = 1e-24; // of double-double arithmetic over a long sine
         var difference = after - before;
-        return Math.Abs(difference.Hi) <= rounding * Math.Max(Math.Abs(after.Hi), Math.Abs(before.Hi))
+        return Math.Abs(difference.Hi) <= Rounding * Math.Max(Math.Abs(after.Hi), Math.Abs(before.Hi))
             ? DoubleDouble.Zero
             : difference;
     }
