@@ -46,7 +46,9 @@ internal static class StraightLines
                     start.Time, end.Time, start.Level, (end.Level - start.Level) / (end.Time - start.Time), 0,
                         0, 0,
                     $"line from {Amount.Of(start.Time, "s")} to {Amount.Of(end.Time, "s")}")
-                { Continues = pieces.Count > 0 });
+                {
+                    Continues = pieces.Count > 0,
+                });
             }
         }
 
@@ -54,7 +56,10 @@ internal static class StraightLines
         {
             var last = points[^1];
             pieces.Add(new WavePiece(last.Time, double.PositiveInfinity, last.Level, 0, 0, 0, 0,
-                $"hold from {Amount.Of(last.Time, "s")}") { Continues = pieces.Count > 0 });
+                $"hold from {Amount.Of(last.Time, "s")}")
+            {
+                Continues = pieces.Count > 0,
+            });
         }
 
         return pieces.ToImmutable();

@@ -2,16 +2,16 @@ using System.Collections.Immutable;
 
 namespace CircuitTransient.Circuits;
 
-/// <summary>What an engineer calls an edge of a wave: a step, a pulse's rise or fall, the change of level over a
-/// ramp or over one of several straight lines, a sine, a decay, an impulse. The edges of a wave add up to
-/// it.</summary>
+/// <summary>What an engineer calls an edge of a wave: a step, a pulse's rise or fall, the change
+/// of level over a ramp or over one of several straight lines, a sine, a decay, an impulse. The
+/// edges of a wave add up to it.</summary>
 /// <param name="Label">What it is, in the user's words: <c>rise of pulse 3 at 2 ms</c>.</param>
 /// <param name="Start">When it begins, in seconds.</param>
 /// <param name="Pieces">The pieces that make it up.</param>
 public sealed record WaveEdge(string Label, double Start, ImmutableArray<WavePiece> Pieces)
 {
-    /// <summary>The edges of a wave in the order of its pieces; what begins at one instant under one label is one
-    /// edge.</summary>
+    /// <summary>The edges of a wave in the order of its pieces; what begins at one instant
+    /// under one label is one edge.</summary>
     public static ImmutableArray<WaveEdge> Of(Wave wave)
     {
         var edges = new List<WaveEdge>();
@@ -27,7 +27,8 @@ public sealed record WaveEdge(string Label, double Start, ImmutableArray<WavePie
 
             places.Add((edge.Label, edge.Start), edges.Count);
             var used = timesUsed[edge.Label] = timesUsed.GetValueOrDefault(edge.Label) + 1;
-            edges.Add(used == 1 ? edge : edge with { Label = $"{edge.Label} ({used})" }); // alike when rounded
+            // Two instants may read alike when rounded.
+            edges.Add(used == 1 ? edge : edge with { Label = $"{edge.Label} ({used})" });
         }
 
         return [.. edges];
@@ -59,8 +60,8 @@ public sealed record WaveEdge(string Label, double Start, ImmutableArray<WavePie
         return [new WaveEdge(label, run[0].Start, run)];
     }
 
-    /// <summary>Every change of level along straight lines, as an edge that leaves the new level behind: corners
-    /// as edges would be ramps without end, which only cancel.</summary>
+    /// <summary>Every change of level along straight lines, as an edge that leaves the new level behind:
+    /// corners as edges would be ramps without end, which only cancel.</summary>
     private static IEnumerable<WaveEdge> Changes(ImmutableArray<WavePiece> lines)
     {
         const double rounding = 1e-12; // of levels that a slope was made from
@@ -105,9 +106,13 @@ public sealed record WaveEdge(string Label, double Start, ImmutableArray<WavePie
     private static WaveEdge Slope(WavePiece line)
     {
         var rise = line with { Amplitude = 0, Continues = false };
-        return new WaveEdge(line.Label, line.Start, double.IsPositiveInfinity(line.End)
-            ? [rise]
-            : [rise, Held(line.End, line.Slope * (line.End - line.Start), line.Label) with { Continues = true }]);
+        if (double.IsPositiveInfinity(line.End))
+        {
+            return new WaveEdge(line.Label, line.Start, [rise]);
+        }
+
+        var held = Held(line.End, line.Slope * (line.End - line.Start), line.Label) with { Continues = true };
+        return new WaveEdge(line.Label, line.Start, [rise, held]);
     }
 
     private static WaveEdge Step(double at, double change)

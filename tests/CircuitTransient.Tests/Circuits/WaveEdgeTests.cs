@@ -14,7 +14,8 @@ public class WaveEdgeTests
         "fall of pulse 2 at 7 ms")]
     [InlineData("ramp of 12 V from 1 s to 3 s", "ramp from 1 s to 3 s")]
     [InlineData("impulse of 6 kV 1.2/50 µs from 1 ms", "impulse from 1 ms")]
-    [InlineData("5 V + sine of 1 V at 1 kHz - step of 5 V at 2 ms", "constant", "sine at 1 kHz", "step at 2 ms")]
+    [InlineData("5 V + sine of 1 V at 1 kHz - step of 5 V at 2 ms",
+        "constant", "sine at 1 kHz", "step at 2 ms")]
     [InlineData("5 V + 3 V", "constant")]
     [InlineData("straight lines (0 s, 0 V) (1 s, 5 V) (3 s, 5 V) (3 s, 2 V) (4 s, 0 V)",
         "line from 0 s to 1 s", "step at 3 s", "line from 3 s to 4 s")]

@@ -22,11 +22,11 @@ public class EdgeCauseTests
     public void A_pulse_by_edge_is_the_pulse()
     {
         double[] at = [30e-6, 47e-6, 63e-6, 180e-6, 400e-6];
-        var pulse = SolvedText.Of(Ring + "source Feed at a : rectangular pulse of 10 V from 20 µs to 60 µs", at);
+        const string feed = "source Feed at a : rectangular pulse of 10 V from 20 µs to 60 µs";
+        var pulse = SolvedText.Of(Ring + feed, at);
         var rise = SolvedText.Of(Ring + "source Feed at a : step of 10 V at 20 µs", at);
         var fall = SolvedText.Of(Ring + "source Feed at a : step of -10 V at 60 µs", at);
-        var cut = SolvedText.By(
-            Breakdown.Edge, Ring + "source Feed at a : rectangular pulse of 10 V from 20 µs to 60 µs", at);
+        var cut = SolvedText.By(Breakdown.Edge, Ring + feed, at);
 
         Assert.Equal(
             [
@@ -40,8 +40,8 @@ public class EdgeCauseTests
             var edges = cut["voltage of c"].Samples[k].ByCause;
             Close.OfScale(20, rise["voltage of c"].Samples[k].ByCause[1]!.Value, edges[1]!.Value, 1e-12);
             Close.OfScale(20, fall["voltage of c"].Samples[k].ByCause[1]!.Value, edges[2]!.Value, 1e-12);
-            Close.OfScale(
-                20, pulse["voltage of c"].Samples[k].ByCause[1]!.Value, edges[1]!.Value + edges[2]!.Value, 1e-12);
+            var whole = pulse["voltage of c"].Samples[k].ByCause[1]!.Value;
+            Close.OfScale(20, whole, edges[1]!.Value + edges[2]!.Value, 1e-12);
         }
     }
 
@@ -152,7 +152,7 @@ public class EdgeCauseTests
 
             if (observed.Contributions.Any(c => c.Cause == "joint"))
             {
-                continue; // what two edges of one source have together is joint, where the source's own was not
+                continue; // what two edges of one source have together is joint; the source's own is not
             }
 
             for (var c = 0; c < whole.Result.Causes.Length; c++)
