@@ -27,7 +27,8 @@ internal sealed class EquationRow(SparseVector e, SparseVector g, SparseVector[]
 
     /// <summary>The row with one more input on its right side, of weight 1.</summary>
     public EquationRow WithInput(int input) => new(
-        E, G, [SparseVector.Add(R[0], DoubleDouble.One, SparseVector.From((input, DoubleDouble.One))), .. R[1..]],
+        E, G,
+        [SparseVector.Add(R[0], DoubleDouble.One, SparseVector.From((input, DoubleDouble.One))), .. R[1..]],
         Origin);
 
     /// <summary>Puts the algebraic equation <paramref name="other"/>, solved for an unknown, in the unknown's
