@@ -100,7 +100,7 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
     }
 
     /// <summary>The coefficient of sᵏ in an output's transform: of order 0 the impulse, of order 1 its
-    /// derivative's, and so on. Rounding is left in: a sum of many such is judged as a whole.</summary>
+    /// derivative's, and so on. Rounding is left in; what depends on it linearly does not mind.</summary>
     public DoubleDouble PolynomialIn(LinearOutput output, int order)
     {
         var sum = DoubleDouble.Zero;

@@ -124,7 +124,7 @@ internal sealed class SegmentSlopes
             var there = isAtEnd ? forcing.MovedBy(frame.Length) : forcing;
             for (var k = 0; k < direct.Length; k++)
             {
-                sum += direct[k][forcing.Input] * there.DerivativeAtStart(k);
+                sum += direct[k][forcing.Input] * there.DerivativeAtStart(k).Re;
             }
         }
 
@@ -132,7 +132,7 @@ internal sealed class SegmentSlopes
         {
             for (var k = 0; k < direct.Length; k++)
             {
-                sum += direct[k][forcing.Input] * forcing.DerivativeAtStart(k + 1) * shift;
+                sum += direct[k][forcing.Input] * forcing.DerivativeAtStart(k + 1).Re * shift;
             }
         }
 
