@@ -74,7 +74,7 @@ public static partial class JsonReport
             (to, observation) => WriteObservation(to, observation, result.IsAfterAsked));
         WriteArray(json, "figures", result.Figures, WriteFigure);
         WriteArray(json, "requirements", result.Requirements, WriteRequirement);
-        WriteArray(json, "parts", result.Parts, WritePart);
+        WriteParts(json, result);
         WriteArray(json, "selfChecks", result.SelfChecks, WriteSelfCheck);
         WriteArray(json, "notJudged", result.NotJudged, WriteNotJudged);
         WriteArray(json, "warnings", result.Warnings, WriteWarning);

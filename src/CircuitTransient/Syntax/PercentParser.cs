@@ -32,7 +32,8 @@ public static class PercentParser
         }
         else if (number is not null && (!number.HasUnit || number.Dimension != Dimension.None))
         {
-            cursor.Error(number.Span, $"`{cursor.TextOf(number.Span)}` is not in per cent", $"write it {Form}");
+            var text = cursor.TextOf(number.Span);
+            cursor.Error(number.Span, $"`{text}` is not in per cent", $"write it {Form}");
         }
 
         return diagnostics.Count == 0 ? new(number, []) : new(null, [.. diagnostics]);

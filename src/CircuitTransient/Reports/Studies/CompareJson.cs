@@ -50,6 +50,12 @@ public static class CompareJson
             json.WriteString("before", input.Before);
             json.WriteString("after", input.After);
         });
+        json.Objects("values", comparison.Values, change =>
+        {
+            json.WriteString("part", change.Part);
+            json.WriteString("unit", change.Unit);
+            WriteChange(json, change.Value);
+        });
         json.Objects("names", comparison.Missing.Prepend(comparison.Causes).Concat(comparison.Notes),
             change => WriteNames(json, change));
         json.Objects("renamed", comparison.Renamed, renaming =>

@@ -8,6 +8,7 @@ namespace CircuitTransient.Reports.Studies;
 public static partial class CompareSummary
 {
     private const int MostShares = 3;
+    private const int MostStresses = 12;
 
     private static void WriteObservations(SummaryText text, Comparison comparison)
     {
@@ -104,9 +105,9 @@ public static partial class CompareSummary
             text.Heading("Stresses of parts, the most changed first");
             text.Table(
                 [Prose, Prose, Right, Right, Right, Right],
-                comparison.Stresses.Take(MostRows).Select(s =>
+                comparison.Stresses.Take(MostStresses).Select(s =>
                     Row(Stress(s.Stress), s.Value, s.Unit, null)[..5].Insert(0, s.Part)));
-            WriteRest(text, comparison.Stresses.Length);
+            WriteRest(text, comparison.Stresses.Length, MostStresses);
         }
     }
 

@@ -34,8 +34,9 @@ public static partial class CompareSummary
         WriteNotes(text, comparison);
         text.Blank();
         text.Paragraph(
-            $"Overlooked are differences up to {Fraction(comparison.Within)} of a quantity's own size (of an " +
-            "observation, its greatest magnitude); a turned verdict never is.", indent: 0);
+            $"Overlooked are differences up to {Fraction(comparison.Within)} of a quantity's own size (an " +
+            "observation's is its greatest magnitude); a turned verdict never is.",
+            indent: 0);
         text.Blank();
         text.Paragraph(TerminalSummary.Closing, indent: 0);
         return text.ToString();
@@ -60,7 +61,10 @@ public static partial class CompareSummary
             (_, 0) => $"{Verdicts(worse)} turned for the worse.",
             _ => $"{Verdicts(worse)} turned for the worse, {better} for the better.",
         };
-        return $"{turned} Before, {Holding(comparison.Before)}; now {Holding(comparison.After)}.";
+        var (before, after) = (Holding(comparison.Before), Holding(comparison.After));
+        return before == after
+            ? $"{turned} In both, {after}."
+            : $"{turned} Before, {before}; now {after}.";
     }
 
     private static string Verdicts(int count) => count == 1 ? "One verdict" : $"{count} verdicts";
@@ -117,7 +121,12 @@ public static partial class CompareSummary
         _ => "broken without limit, or nothing to judge",
     };
 
-    private static string Turned(bool? before, bool? after) => $"{Word(before)} → {Word(after)}";
+    private static string Turned(bool? before, bool? after) => (before, after) switch
+    {
+        (true, true) => "held",
+        (false, false) => "still broken",
+        _ => $"{Word(before)} → {Word(after)}",
+    };
 
     private static string Word(bool? holds) => holds switch
     {
@@ -153,8 +162,10 @@ public static partial class CompareSummary
     private static void WriteInputs(SummaryText text, Comparison comparison)
     {
         var names = comparison.Missing.Prepend(comparison.Causes).Where(change => !change.IsEmpty).ToArray();
-        if (comparison.Inputs.IsEmpty && names.Length == 0 && comparison.Renamed.IsEmpty
-            && comparison.Events.IsEmpty)
+        if (names.Length == 0 && comparison is
+            {
+                Inputs.IsEmpty: true, Values.IsEmpty: true, Renamed.IsEmpty: true, Events.IsEmpty: true,
+            })
         {
             return;
         }
@@ -162,6 +173,11 @@ public static partial class CompareSummary
         text.Heading("What went in");
         text.Table([Left, Prose, Prose], comparison.Inputs.Select(input => ImmutableArray.Create(
             input.What, Short(input.Before), $"→ {Short(input.After)}")));
+        text.Table([Prose, Right, Left, Right], comparison.Values.Select(value => ImmutableArray.Create(
+            value.Part,
+            ReportWords.Number(value.Value.Before, value.Unit),
+            $"→ {ReportWords.Number(value.Value.After, value.Unit)}",
+            Relative(value.Value))));
         foreach (var renaming in comparison.Renamed)
         {
             text.Paragraph(
@@ -221,11 +237,11 @@ public static partial class CompareSummary
         }
     }
 
-    private static void WriteRest(SummaryText text, int count)
+    private static void WriteRest(SummaryText text, int count, int most = MostRows)
     {
-        if (count > MostRows)
+        if (count > most)
         {
-            text.Paragraph($"and {count - MostRows} more, with --json");
+            text.Paragraph($"and {count - most} more, with --json");
         }
     }
 }

@@ -5,6 +5,7 @@ namespace CircuitTransient.Studies.Comparing;
 /// <summary>What differs between two results documents.</summary>
 /// <param name="Within">Differences up to this fraction of a quantity's own size are none.</param>
 /// <param name="Inputs">What differs in the circuit and the study.</param>
+/// <param name="Values">The values of parts that differ.</param>
 /// <param name="Causes">Causes by name.</param>
 /// <param name="Events">Switchings whose instant differs, or that only one has.</param>
 /// <param name="Observations">Every observation that both have.</param>
@@ -21,6 +22,7 @@ public sealed record Comparison(
     ResultsDocument After,
     double Within,
     ImmutableArray<InputChange> Inputs,
+    ImmutableArray<StressChange> Values,
     NameChange Causes,
     ImmutableArray<EventChange> Events,
     ImmutableArray<ObservationChange> Observations,
@@ -42,7 +44,7 @@ public sealed record Comparison(
     public bool IsSame =>
         Causes.IsEmpty && Events.IsEmpty && Stresses.IsEmpty && Renamed.IsEmpty && Checks.IsEmpty
         && Missing.All(m => m.IsEmpty) && Notes.All(n => n.IsEmpty)
-        && Inputs.All(i => i.IsOfFile)
+        && Inputs.All(i => i.IsOfFile) && Values.IsEmpty
         && !Observations.Any(o => o.Differs) && !Figures.Any(f => f.Value.Differs)
         && !Requirements.Any(r => r.Differs) && !Ratings.Any(r => r.Differs);
 }
@@ -147,7 +149,7 @@ public sealed record RatingChange(
         || Before.Rated != After.Rated;
 }
 
-/// <summary>A stress of a part.</summary>
+/// <summary>A stress of a part, or its value.</summary>
 public sealed record StressChange(string Part, string Stress, string Unit, NumberChange Value);
 
 /// <summary>Something with the same figures under another name.</summary>

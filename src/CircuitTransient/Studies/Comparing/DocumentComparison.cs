@@ -34,6 +34,7 @@ public static class DocumentComparison
             after,
             within,
             InputsOf(before, after),
+            ValuesOf(parts),
             Names("cause", before.Causes, after.Causes),
             EventsOf(before, after, sizes),
             [.. observations.Pairs.Select(pair => Observation(pair.Before, pair.After, sizes))],
@@ -85,6 +86,15 @@ public static class DocumentComparison
         ];
         return [.. all.Where(input => input.Before != input.After)];
     }
+
+    // A value is what was written: any difference is meant.
+    private static ImmutableArray<StressChange> ValuesOf(NamedPairs<DocumentPart> parts) =>
+    [
+        .. parts.Pairs.Where(pair => pair.Before.Value is not null && pair.After.Value is not null
+                && pair.Before.Value != pair.After.Value)
+            .Select(pair => new StressChange(pair.Before.Name, "value", pair.Before.ValueUnit,
+                new NumberChange(pair.Before.Value, pair.After.Value, Differs: true))),
+    ];
 
     // Ten digits, so that a difference that counts is seen.
     private static string Time(double seconds) => EngineeringNumber.Format(seconds, "s", 10);

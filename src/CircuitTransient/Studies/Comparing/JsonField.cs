@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using System.Text.Json;
 
 namespace CircuitTransient.Studies.Comparing;
@@ -60,7 +59,7 @@ internal sealed class JsonField
             : null;
 
     /// <summary>The items of an array.</summary>
-    public ImmutableArray<T> Items<T>(Func<JsonField, T> read)
+    public IEnumerable<JsonField> Items()
     {
         if (!IsArray)
         {
@@ -68,8 +67,8 @@ internal sealed class JsonField
             return [];
         }
 
-        return [.. element.EnumerateArray().Select((item, i) =>
-            read(new JsonField(item, JsonPath.Item(path, i), faults)))];
+        return element.EnumerateArray().Select((item, i) =>
+            new JsonField(item, JsonPath.Item(path, i), faults));
     }
 
     /// <summary>A text.</summary>

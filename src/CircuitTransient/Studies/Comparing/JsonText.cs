@@ -81,7 +81,7 @@ internal sealed class JsonText : IDisposable
         }
         catch (JsonException)
         {
-            var isDeep = reader.CurrentDepth >= Deepest;
+            var isDeep = reader.CurrentDepth >= Deepest - 1; // the deepest that opened counts from zero
             faults.Add((Math.Min(reader.BytesConsumed, bytes.Length), 1, isDeep
                 ? $"the values are nested deeper than {Deepest}"
                 : "this is not JSON from here on"));

@@ -68,7 +68,14 @@ public sealed record DocumentRequirement(
 /// <summary>A part with its stresses and ratings.</summary>
 public sealed record DocumentPart(
     string Name, string Kind, ImmutableArray<DocumentStress> Stresses,
-    ImmutableArray<DocumentRating> Ratings, DocumentLimit? LinearUpTo);
+    ImmutableArray<DocumentRating> Ratings, DocumentLimit? LinearUpTo)
+{
+    /// <summary>Its value in SI; null where it has none, or an older document does not say it.</summary>
+    public double? Value { get; init; }
+
+    /// <summary>The unit of its value.</summary>
+    public string ValueUnit { get; init; } = "";
+}
 
 /// <summary>A stress of a part, in SI.</summary>
 public sealed record DocumentStress(string Name, string Unit, double? Value);

@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Studies.Comparing;
@@ -35,7 +36,8 @@ public static class ResultsReader
         using var text = json.Value;
         var faults = new List<(string Path, string Message)>();
         var root = new JsonField(text.Document.RootElement, faults);
-        var documents = root.IsArray ? root.Items(Document) : [Document(root)];
+        ImmutableArray<ResultsDocument> documents =
+            root.IsArray ? [.. root.Items().Select(Document)] : [Document(root)];
         if (documents.IsEmpty)
         {
             root.Fault("the array holds no results document");
@@ -83,17 +85,18 @@ public static class ResultsReader
                 circuit["title"].TextOrNull(), circuit["file"].Text(), circuit["sha256"].Text(),
                 circuit["parts"].Count(), circuit["nodes"].Count(), circuit["storedQuantities"].Count()),
             new DocumentStudy(study["until"].Number(), study["start"].Text()),
-            json["causes"].Items(cause => cause["name"].Text()),
-            json.Member("events") is { } events ? events.Items(Event) : [],
-            json["observations"].Items(Observation),
-            json["figures"].Items(f =>
-                new DocumentFigure(f["name"].Text(), f["unit"].Text(), f["value"].NumberOrNull())),
-            json["requirements"].Items(Requirement),
-            json["parts"].Items(Part),
-            json["selfChecks"].Items(c => new DocumentCheck(c["name"].Text(), c["holds"].Truth())),
-            json["notJudged"].Items(n => n["name"].Text()),
-            json["warnings"].Items(w => w["text"].Text()),
-            json["cautions"].Items(c => $"{c["severity"].Text()}: {c["text"].Text()}"));
+            [.. json["causes"].Items().Select(cause => cause["name"].Text())],
+            json.Member("events") is { } events ? [.. events.Items().Select(Event)] : [],
+            [.. json["observations"].Items().Select(Observation)],
+            [.. json["figures"].Items().Select(f =>
+                new DocumentFigure(f["name"].Text(), f["unit"].Text(), f["value"].NumberOrNull()))],
+            [.. json["requirements"].Items().Select(Requirement)],
+            [.. json["parts"].Items().Select(Part)],
+            [.. json["selfChecks"].Items().Select(c =>
+                new DocumentCheck(c["name"].Text(), c["holds"].Truth()))],
+            [.. json["notJudged"].Items().Select(n => n["name"].Text())],
+            [.. json["warnings"].Items().Select(w => w["text"].Text())],
+            [.. json["cautions"].Items().Select(c => $"{c["severity"].Text()}: {c["text"].Text()}")]);
     }
 
     private static DocumentEvent Event(JsonField json) =>
@@ -108,8 +111,8 @@ public static class ResultsReader
         json["final"].NumberOrNull(),
         Peak(json["max"]),
         Peak(json["min"]),
-        json["contributions"].Items(c => new DocumentContribution(
-            c["cause"].Text(), c["atMax"].NumberOrNull(), c["atMin"].NumberOrNull())));
+        [.. json["contributions"].Items().Select(c => new DocumentContribution(
+            c["cause"].Text(), c["atMax"].NumberOrNull(), c["atMin"].NumberOrNull()))]);
 
     private static DocumentRequirement Requirement(JsonField json) => new(
         json["statement"].Text(),
@@ -131,8 +134,12 @@ public static class ResultsReader
                 new DocumentStress("energy", "J", json["energy"].NumberOrNull()),
                 new DocumentStress("jouleIntegral", "A²s", json["jouleIntegral"].NumberOrNull()),
             ],
-            json["ratings"].Items(Rating),
-            linear.IsNothing ? null : Limit(linear));
+            [.. json["ratings"].Items().Select(Rating)],
+            linear.IsNothing ? null : Limit(linear))
+        {
+            Value = json.Member("value")?.NumberOrNull(),
+            ValueUnit = json.Member("unit")?.Text() ?? "",
+        };
     }
 
     private static DocumentRating Rating(JsonField json) => new(
