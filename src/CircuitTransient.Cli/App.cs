@@ -50,11 +50,8 @@ public static class App
         {
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),
-<<<<<<< HEAD
             new OverlayCommand(streams, cancellation),
-=======
             new CompareCommand(streams, cancellation),
->>>>>>> main
         };
         var help = root.Options.OfType<HelpOption>().Single();
         help.Aliases.Clear();

@@ -18,16 +18,33 @@ internal sealed class OverlayCommand : Command
         Arity = ArgumentArity.OneOrMore,
     };
 
-    private readonly Option<string[]> shows = Each("--as", "QUANTITY", "What a record shows, such as \"voltage of x\".");
-    private readonly Option<string[]> channel = Each("--channel", "NAME", "The column to read, by title or number.");
-    private readonly Option<string[]> interval = Each("--interval", "TIME", "Sample interval, where there is no time column.");
+    private readonly Option<string[]> shows =
+        Each("--as", "QUANTITY", "What a record shows, such as \"voltage of x\".");
+
+    private readonly Option<string[]> channel =
+        Each("--channel", "NAME", "The column to read, by title or number.");
+
+    private readonly Option<string[]> interval =
+        Each("--interval", "TIME", "Sample interval, where there is no time column.");
+
     private readonly Option<string[]> mark = Each("--decimal", "MARK", "The decimal mark: point or comma.");
-    private readonly Option<string[]> offset = Each("--offset", "TIME", "Record time less study time; else estimated.");
+
+    private readonly Option<string[]> offset =
+        Each("--offset", "TIME", "Record time less study time; else estimated.");
+
     private readonly Option<string[]> gain = Each("--gain", "NUMBER", "Record over model; else estimated.");
-    private readonly Option<string[]> level = Each("--level", "VALUE", "Record where the model is zero; else estimated.");
-    private readonly Option<string[]> with = Each("--with", "PART", "A part added for a record: \"loaded.csv: capacitor C9 at x : 1 nF\".");
-    private readonly Option<string[]> input = Each("--scope-input", "VALUES", "The instrument's input: \"10 MΩ parallel 12 pF\".");
-    private readonly Option<string[]> generator = Each("--generator", "VALUE", "Resistance of a source: \"50 Ω\" or \"Edge: 50 Ω\".");
+
+    private readonly Option<string[]> level =
+        Each("--level", "VALUE", "Record where the model is zero; else estimated.");
+
+    private readonly Option<string[]> with =
+        Each("--with", "PART", "A part added for a record: \"capacitor C9 at x : 1 nF\".");
+
+    private readonly Option<string[]> input =
+        Each("--scope-input", "VALUES", "The instrument's input: \"10 MΩ parallel 12 pF\".");
+
+    private readonly Option<string[]> generator =
+        Each("--generator", "VALUE", "Resistance of a source: \"50 Ω\" or \"Edge: 50 Ω\".");
 
     private readonly Option<string> fit = new("--fit")
     {

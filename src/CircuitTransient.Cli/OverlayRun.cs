@@ -5,6 +5,7 @@ using CircuitTransient.Reports.Html;
 using CircuitTransient.Reports.Studies;
 using CircuitTransient.Studies.Overlays;
 using CircuitTransient.Studies.Records;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
 
@@ -27,6 +28,12 @@ public sealed class OverlayRun(OverlayOptions options, Streams streams, Cancella
             return Math.Max(ExitStatus.Mistake, reading.Status);
         }
 
+        if (options.Fitted is { } path && NewFile.Hindrance(path) is { } hindrance)
+        {
+            streams.Complain($"{path} cannot be written: {hindrance}");
+            return ExitStatus.Mistake;
+        }
+
         using var progress = new Progress(file, streams);
         var circuit = checkedCircuit.Value;
         var placed = ImmutableArray.CreateBuilder<PlacedRecord>();
@@ -39,7 +46,10 @@ public sealed class OverlayRun(OverlayOptions options, Streams streams, Cancella
             }
         }
 
-        var outcome = OverlayStudy.Compare(circuit, placed.ToImmutable(), cancellation);
+        var outcome = Targets(circuit) is { } named
+            ? named.Then(targets => FitStudy.Run(
+                circuit, placed.ToImmutable(), targets, reading.ReadBeside, cancellation))
+            : OverlayStudy.Compare(circuit, placed.ToImmutable(), cancellation);
         cancellation.ThrowIfCancellationRequested();
         progress.Dispose();
         streams.Report(outcome.Diagnostics);
@@ -49,7 +59,34 @@ public sealed class OverlayRun(OverlayOptions options, Streams streams, Cancella
                 is NoUniqueSolution ? ExitStatus.NoUniqueSolution : ExitStatus.Mistake;
         }
 
-        return HandOver(file, outcome.Value, reading);
+        var given = HandOver(file, outcome.Value, reading);
+        return Math.Max(given, WriteFitted(outcome.Value, reading));
+    }
+
+    private Outcome<TargetList>? Targets(Circuit circuit) =>
+        options.Fit is { } fit ? FitTargets.Read(circuit, new SourceText("--fit", fit)) : null;
+
+    /// <summary>Writes the circuit with the fitted values, where that was asked for and every value is
+    /// determined.</summary>
+    private int WriteFitted(OverlayResult result, CircuitFile reading)
+    {
+        if (options.Fitted is not { } path || result.Fit is not { } fit)
+        {
+            return ExitStatus.Success;
+        }
+
+        if (!fit.IsResolved)
+        {
+            streams.Complain($"{path} is not written: the records do not determine every value");
+            return ExitStatus.RequirementBroken;
+        }
+
+        var text = Targets(result.Circuit)!.Then(targets =>
+            FittedText.Write(result.Circuit, targets, fit, reading.ReadBeside));
+        streams.Report(text.Diagnostics);
+        return !text.Succeeded ? ExitStatus.Mistake
+            : NewFile.TryWrite(path, text.Value, streams) ? ExitStatus.Success
+            : ExitStatus.FileTrouble;
     }
 
     private int Place(

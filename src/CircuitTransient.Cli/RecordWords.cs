@@ -22,7 +22,8 @@ internal sealed class RecordWords(string option, IReadOnlyList<string> values)
         return found;
     }
 
-    /// <summary>The one thing said for a record, what names it before what does not; null for nothing.</summary>
+    /// <summary>The one thing said for a record, what names it before what does not; null for
+    /// nothing.</summary>
     public string? OneFor(string record, IReadOnlyList<string> records)
     {
         var own = values.Select(v => Split(v, records)).Where(s => s.Name == record).ToArray();

@@ -11,14 +11,17 @@ public sealed record LeastSquaresResult(double[] X, RowTriangle Triangle, bool C
     public double Cost => Triangle.SquareSum;
 }
 
-/// <summary>Nonlinear least squares by Levenberg and Marquardt's method in Moré's trust-region form.</summary>
+/// <summary>Nonlinear least squares by Levenberg and Marquardt's method in Moré's trust-region
+/// form.</summary>
 /// <remarks>J. J. Moré, The Levenberg-Marquardt algorithm: implementation and theory (1978), from memory:
 /// scaling by the largest column norms seen, the damping found from the radius by a few Newton steps. Ends
 /// with plain Gauss-Newton steps while they make the gradient smaller, which the sum of squares no longer
 /// shows.</remarks>
 public static class LeastSquares
 {
-    private const double Tolerance = 4e-16; // relative reduction of Σ r² that is left in double precision
+    /// <summary>The relative reduction of Σ r² that is left in double precision.</summary>
+    public const double Finest = 4e-16;
+
     private const double Accepted = 1e-4; // least part of the promised reduction that must come true (Moré)
     private const int Polishing = 50;
     private const double Unseen = 1e-9; // Σ r² may rise by rounding where the gradient still falls
@@ -28,8 +31,10 @@ public static class LeastSquares
     /// <param name="linearise">Residuals and slopes at x; null where x is outside what can be solved.</param>
     /// <param name="radius">First radius, in multiples of the scaled start.</param>
     /// <param name="mostSteps">The most linearisations.</param>
+    /// <param name="tolerance">The relative reduction of Σ r² that is not worth a step.</param>
     public static LeastSquaresResult? Minimise(
-        double[] start, Func<double[], RowTriangle?> linearise, double radius = 100, int mostSteps = 2000)
+        double[] start, Func<double[], RowTriangle?> linearise, double radius = 100, int mostSteps = 2000,
+        double tolerance = Finest)
     {
         var x = (double[])start.Clone();
         if (linearise(x) is not { } system)
@@ -57,7 +62,7 @@ public static class LeastSquares
                 var next = linearise(trial);
                 steps++;
                 var judged = region.Judge(system, next, step, scale);
-                converged = judged.Promised <= Tolerance && Math.Abs(judged.Reached) <= Tolerance;
+                converged = judged.Promised <= tolerance && Math.Abs(judged.Reached) <= tolerance;
                 converged |= region.Radius <= 1e-16 * Norm(scale, x);
                 if (next is not null && judged.Ratio >= Accepted)
                 {
@@ -66,7 +71,7 @@ public static class LeastSquares
             }
         }
 
-        (x, system) = Polish(x, system, linearise);
+        (x, system) = tolerance > Finest ? (x, system) : Polish(x, system, linearise);
         return new LeastSquaresResult(x, system, converged, steps);
     }
 

@@ -20,8 +20,8 @@ public static class GivenNumberParser
         var tokens = new List<Token>();
         if (!new StatementLexer(source).Next(tokens))
         {
-            return new(null,
-                [Diagnostic.Error(source, new TextSpan(0, source.Content.Length), "no value is given", form)]);
+            var nothing = new TextSpan(0, source.Content.Length);
+            return new(null, [Diagnostic.Error(source, nothing, "no value is given", form)]);
         }
 
         var cursor = new StatementCursor(source, tokens, diagnostics) { Form = form };
@@ -44,8 +44,9 @@ public static class GivenNumberParser
         }
         else if (!number.HasUnit && !wanted.Contains(Dimension.None))
         {
-            var symbol = Unit.SymbolOf(wanted[0]);
-            cursor.Error(number.Span, $"`{text}` has no unit", $"write `{UnitAdvice.WithUnit(text, symbol!)}`");
+            var symbol = Unit.SymbolOf(wanted[0])!;
+            cursor.Error(number.Span, $"`{text}` has no unit",
+                $"write `{UnitAdvice.WithUnit(text, symbol)}`");
         }
         else if (!wanted.Contains(number.Dimension))
         {

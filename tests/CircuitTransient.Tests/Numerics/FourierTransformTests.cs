@@ -9,13 +9,14 @@ public class FourierTransformTests
     public void The_transform_is_its_defining_sum()
     {
         Complex[] x = [1, 2.5, -3, new(0, 1), 4, 0, -1, 7];
-        var expected = Enumerable.Range(0, 8).Select(k => Enumerable.Range(0, 8)
-            .Aggregate(Complex.Zero, (sum, n) => sum + (x[n] * Complex.Exp(new(0, -2 * Math.PI * k * n / 8)))));
+        var expected = Enumerable.Range(0, 8).Select(k => Enumerable.Range(0, 8).Aggregate(
+            Complex.Zero, (sum, n) => sum + (x[n] * Complex.Exp(new(0, -2 * Math.PI * k * n / 8)))));
 
         var transformed = (Complex[])x.Clone();
         FourierTransform.Transform(transformed);
 
-        Assert.All(expected.Zip(transformed), pair => Assert.Equal(0, (pair.First - pair.Second).Magnitude, 1e-13));
+        Assert.All(
+            expected.Zip(transformed), pair => Assert.Equal(0, (pair.First - pair.Second).Magnitude, 1e-13));
     }
 
     [Fact]

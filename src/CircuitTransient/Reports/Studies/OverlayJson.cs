@@ -156,7 +156,7 @@ public static class OverlayJson
             json.WriteString("name", value.Name);
             json.WriteString("unit", value.Unit);
             json.Number("nominal", value.Nominal);
-            json.Number("value", value.Value);
+            json.Number("value", value.IsResolved ? value.Value : null);
             json.Number("relativeError", value.RelativeError);
             json.WriteBoolean("resolved", value.IsResolved);
         });

@@ -3,7 +3,8 @@ using CircuitTransient.Studies.Overlays;
 
 namespace CircuitTransient.Reports.Studies;
 
-/// <summary>The picture of an overlay: each record with the model over it, and below it what is left.</summary>
+/// <summary>The picture of an overlay: each record with the model over it, and below it what is
+/// left.</summary>
 public static class OverlayPlot
 {
     private const double Left = 76;
@@ -60,7 +61,8 @@ public static class OverlayPlot
         shapes.Add(new TextShape(
             Left, y, $"{source.Name}, SHA-256 {source.Sha256[..12]}… · a linear model, a calculation aid", 11,
             PlotStyle.Grey));
-        return new Drawing(PlotPanel.Width, y + 18, $"Records over the model of {title}", shapes.ToImmutable());
+        return new Drawing(
+            PlotPanel.Width, y + 18, $"Records over the model of {title}", shapes.ToImmutable());
     }
 
     private static double AddRecord(
@@ -70,7 +72,8 @@ public static class OverlayPlot
         var width = PlotPanel.Width - Left - 20;
         var heading = $"{record.File} over {record.Observation}: {OverlayWords.Verdict(record)}";
         shapes.Add(new TextShape(
-            Left, top - 14, fonts.Fitted(heading, 14, width, isStrong: true), 14, PlotStyle.Ink, IsStrong: true));
+            Left, top - 14, fonts.Fitted(heading, 14, width, isStrong: true), 14, PlotStyle.Ink,
+            IsStrong: true));
         var time = new PlotScale(trace.Times[0], trace.Times[^1], Left, Right);
         var (low, high) = Range(trace.Record.Concat(trace.Model));
         var level = new PlotScale(low, high, top + MainHeight, top);

@@ -23,7 +23,8 @@ public static class OverlaySection
         <th scope="col">In the file</th><th scope="col">Determined</th></tr></thead>
         <tbody>{Markup.Join(fit.Values.Select(v => Markup.Of($"""
             <tr><th scope="row">{Markup.Name(v.Name)}</th>
-            <td>{OverlayWords.Value(v.Value, v.Unit, 5)}</td><td>{OverlayWords.Error(v.RelativeError)}</td>
+            <td>{(v.IsResolved ? OverlayWords.Value(v.Value, v.Unit, 5) : "no value")}</td>
+            <td>{OverlayWords.Error(v.RelativeError)}</td>
             <td>{OverlayWords.Value(v.Nominal, v.Unit, 4)}</td><td>{(v.IsResolved ? "yes" : "no")}</td></tr>
             """)))}{Markup.Join(fit.Determined.Select(d => Markup.Of($"""
             <tr><th scope="row">{Markup.Name(d.Words)}</th>
@@ -45,7 +46,8 @@ public static class OverlaySection
         {OverlayWords.Value(record.Lowest.Model, record.Unit, 4)}.
         {(record.Ring is { } ring
             ? $"Rings at {OverlayWords.Mode(ring.Record)}; the model at "
-                + $"{OverlayWords.Value(ring.ModelFrequency, "Hz", 4)} ({OverlayWords.Change(ring.Difference)})."
+                + $"{OverlayWords.Value(ring.ModelFrequency, "Hz", 4)} "
+                + $"({OverlayWords.Change(ring.Difference)})."
             : "")}</p>
         <ul>{Markup.Join(record.Added.Select(a => Markup.Of($"<li>taken with {a}</li>\n")))}
         {Markup.Join(record.Remarks.Select(r => Markup.Of($"<li>{r}</li>\n")))}
@@ -54,9 +56,12 @@ public static class OverlaySection
 
     private static Markup Missing(UnexplainedMode missing)
     {
-        var strays = missing.Strays.Select(s => $"{s.Words} (leaves {OverlayWords.Ratio(s.Ratio)} × the noise)");
+        var strays = missing.Strays.Select(s =>
+            $"{s.Words} (leaves {OverlayWords.Ratio(s.Ratio)} × the noise)");
         var words = missing.Strays.IsEmpty ? "no single added part was found that explains it"
             : $"would be explained by {string.Join(", or ", strays)}";
-        return Markup.Of($"<li>in the record and not in the model: {OverlayWords.Mode(missing.Mode)}; {words}</li>\n");
+        return Markup.Of($"""
+            <li>in the record and not in the model: {OverlayWords.Mode(missing.Mode)}; {words}</li>
+            """);
     }
 }

@@ -48,14 +48,17 @@ public static class OverlaySummary
     private static void WriteFit(SummaryText text, FitResult fit)
     {
         text.Heading("Fitted values, with standard errors");
-        text.Table([Left, Right, Left, Right, Prose], fit.Values.Select(v => ImmutableArray.Create(
-            v.Name, OverlayWords.Value(v.Value, v.Unit, 5), OverlayWords.Error(v.RelativeError),
-            OverlayWords.Change((v.Value / v.Nominal) - 1),
-            $"to the file's {OverlayWords.Value(v.Nominal, v.Unit, 4)}"
-                + (v.IsResolved ? "" : "; not determined, so no value"))));
+        text.Table([Left, Right, Left, Right, Prose], fit.Values.Select(v => v.IsResolved
+            ? ImmutableArray.Create(
+                v.Name, OverlayWords.Value(v.Value, v.Unit, 5), OverlayWords.Error(v.RelativeError),
+                OverlayWords.Change((v.Value / v.Nominal) - 1),
+                $"to the file's {OverlayWords.Value(v.Nominal, v.Unit, 4)}")
+            : ImmutableArray.Create(
+                v.Name, "no value", OverlayWords.Error(v.RelativeError), "",
+                $"the file's {OverlayWords.Value(v.Nominal, v.Unit, 4)} is as good as others")));
         if (!fit.Determined.IsEmpty)
         {
-            text.Paragraph("What the records do determine:");
+            text.Paragraph("What is determined, as long as each value is known to a factor of two:");
             text.Table([Left, Right, Left], fit.Determined.Select(d => ImmutableArray.Create(
                 d.Words, EngineeringNumber.Format(d.Value, "", 5), OverlayWords.Error(d.RelativeError))),
                 indent: 4);
@@ -78,7 +81,8 @@ public static class OverlaySummary
         {
             for (var j = i + 1; j < fit.Values.Length; j++)
             {
-                yield return $"{fit.Values[i].Name} with {fit.Values[j].Name} {Signed(fit.Correlation[i][j])}";
+                yield return $"{fit.Values[i].Name} with {fit.Values[j].Name} "
+                    + Signed(fit.Correlation[i][j]);
             }
         }
     }
@@ -104,7 +108,8 @@ public static class OverlaySummary
         {
             ImmutableArray.Create("offset", OverlayWords.Estimated(record.Alignment.Offset, "s"),
                 "record time less study time"),
-            ImmutableArray.Create("gain", OverlayWords.Estimated(record.Alignment.Gain, ""), "record over model"),
+            ImmutableArray.Create("gain", OverlayWords.Estimated(record.Alignment.Gain, ""),
+                "record over model"),
             ImmutableArray.Create("level", OverlayWords.Estimated(record.Alignment.Level, unit),
                 "of the record where the model is zero"),
             ImmutableArray.Create("difference", $"{OverlayWords.Value(left.Rms, unit, 4)} rms",
@@ -142,7 +147,8 @@ public static class OverlaySummary
 
     private static ImmutableArray<string> Peak(string name, PeakPair pair, string unit) =>
         ImmutableArray.Create(
-            name, $"{OverlayWords.Value(pair.Record, unit, 4)} at {OverlayWords.Value(pair.RecordAt, "s", 4)}",
+            name,
+            $"{OverlayWords.Value(pair.Record, unit, 4)} at {OverlayWords.Value(pair.RecordAt, "s", 4)}",
             $"the model's {OverlayWords.Value(pair.Model, unit, 4)} at "
             + $"{OverlayWords.Value(pair.ModelAt, "s", 4)}: {(pair.Difference > 0 ? "+" : "")}"
             + OverlayWords.Value(pair.Difference, unit, 3));
@@ -154,7 +160,8 @@ public static class OverlaySummary
             var nearest = missing.Nearest is { } model
                 ? $"; the model's nearest is {OverlayWords.Value(model, "Hz", 4)}"
                 : "; the model does not ring";
-            text.Paragraph($"In the record and not in the model: {OverlayWords.Mode(missing.Mode)}{nearest}.");
+            text.Paragraph(
+                $"In the record and not in the model: {OverlayWords.Mode(missing.Mode)}{nearest}.");
             if (missing.Strays.IsEmpty)
             {
                 text.Paragraph("No single capacitance or inductance added to the circuit was found that "

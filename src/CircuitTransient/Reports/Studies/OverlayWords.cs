@@ -43,9 +43,9 @@ internal static class OverlayWords
     };
 
     /// <summary>A fitted value's standard error.</summary>
-    public static string Error(double relative) => double.IsFinite(relative)
+    public static string Error(double relative) => relative < 10
         ? "± " + EngineeringNumber.Format(100 * relative, "%", 2)
-        : "not determined";
+        : "± more than a factor of ten";
 
     /// <summary>A ratio with as many digits as it deserves.</summary>
     public static string Ratio(double ratio) => EngineeringNumber.Format(ratio, "", 3);

@@ -48,7 +48,10 @@ internal sealed record BenchText(SourceText Source)
         var (syntax, mistakes) = CircuitParser.ParseWhatCanBe(source);
         var outcome = CircuitChecker.Check(syntax, mistakes, readBeside);
         return new(outcome.Value,
-            [.. outcome.Diagnostics.Where(d => d.Severity == Severity.Error).Select(d => Own(d, source, places))]);
+            [
+                .. outcome.Diagnostics.Where(d => d.Severity == Severity.Error)
+                    .Select(d => Own(d, source, places)),
+            ]);
     }
 
     private static Diagnostic Own(

@@ -24,7 +24,8 @@ internal static class GeneratorPlacement
         {
             var names = string.Join(", ", sources.Take(10).Select(s => $"`{s.Name}`"));
             return Mistake(text, $"there are {sources.Length} sources; which is the generator?",
-                sources.Length == 0 ? "leave it out" : $"write `{sources[0].Name}: {value}`; there are {names}");
+                sources.Length == 0 ? "leave it out"
+                    : $"write `{sources[0].Name}: {value}`; there are {names}");
         }
 
         var source = name is null ? sources[0] : Array.Find(sources, s => s.Name == name);
@@ -44,7 +45,8 @@ internal static class GeneratorPlacement
                 "write the resistance into the circuit file");
         }
 
-        var (from, to) = (BenchText.Name(circuit.Nodes[source.From]), BenchText.Name(circuit.Nodes[source.To]));
+        var (from, to) = (
+            BenchText.Name(circuit.Nodes[source.From]), BenchText.Name(circuit.Nodes[source.To]));
         if (source is CurrentSource)
         {
             return new(bench.With(Option, value,

@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
 using CircuitTransient.Solutions;
@@ -37,8 +36,8 @@ internal sealed class ModelCurve
     /// <summary>Takes a quantity from a solution.</summary>
     public static Outcome<ModelCurve> Of(TransientSolution solution, Observation observation)
     {
-        var coefficients = new double[solution.Segments.Length][];
-        for (var s = 0; s < coefficients.Length; s++)
+        var rows = new double[solution.Segments.Length][];
+        for (var s = 0; s < rows.Length; s++)
         {
             if (solution.Segments[s].Coefficients(observation.Quantity) is not { } known)
             {
@@ -46,10 +45,10 @@ internal sealed class ModelCurve
                     $"the equations leave `{observation.Name}` open", "observe another quantity")]);
             }
 
-            coefficients[s] = known;
+            rows[s] = known;
         }
 
-        return new(new ModelCurve(solution, coefficients), []);
+        return new(new ModelCurve(solution, rows), []);
     }
 
     /// <summary>The coefficients of the functions of a segment.</summary>

@@ -73,7 +73,8 @@ public sealed record Differences(
     public bool AreWhite => Math.Abs(Correlation) <= CorrelationBound;
 }
 
-/// <summary>An extreme of the record's samples and of the model on the same instants, in the record's unit and
+/// <summary>An extreme of the record's samples and of the model on the same instants, in the record's unit
+/// and
 /// study time.</summary>
 public sealed record PeakPair(double Record, double RecordAt, double Model, double ModelAt)
 {

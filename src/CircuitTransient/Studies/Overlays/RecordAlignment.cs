@@ -37,13 +37,16 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
     /// <summary>Aligns; null where no part of the record lies within the study.</summary>
     public Aligned? Find(RecordSamples samples)
     {
-        var candidates = given.Offset is { } offset ? [offset] : OffsetSearch.Candidates(samples, model, given);
+        var candidates = given.Offset is { } offset
+            ? [offset]
+            : OffsetSearch.Candidates(samples, model, given);
         var few = samples.Thinned(Trial);
         double[]? best = null;
         var least = double.PositiveInfinity;
         foreach (var candidate in candidates)
         {
-            if (Refine(few, Start(few, candidate)) is { } tried && Cost(few, tried) is var cost && cost < least)
+            if (Refine(few, Start(few, candidate)) is { } tried && Cost(few, tried) is var cost
+                && cost < least)
             {
                 (best, least) = (tried, cost);
             }
@@ -98,7 +101,8 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
             }
 
             var fit = LeastSquares.Minimise(
-                Free(now), x => Linearise(inside, Full(x, start)).Reduced(), radius: 1, mostSteps: 60);
+                Free(now), x => Linearise(inside, Full(x, start)).Reduced(), radius: 1, mostSteps: 60,
+                tolerance: 1e-12);
             if (fit is null)
             {
                 return null;

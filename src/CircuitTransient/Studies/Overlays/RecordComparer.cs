@@ -78,8 +78,8 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
         var comparison = new RecordComparison(
             record.Name, record.Sha256, record.Channel, placed.Observation.Name, placed.Observation.Unit,
             placed.Added, [.. remarks], record.RowCount, clipped, samples.Count - aligned.Compared.Count,
-            alignment.Describe(aligned, Math.Max(left.Rms * left.Rms, noise.Value * noise.Value)), noise, left,
-            PeakOf(aligned, 1), PeakOf(aligned, -1), ring.Strongest, [], TraceOf(aligned));
+            alignment.Describe(aligned, Math.Max(left.Rms * left.Rms, noise.Value * noise.Value)), noise,
+            left, PeakOf(aligned, 1), PeakOf(aligned, -1), ring.Strongest, [], TraceOf(aligned));
         cancellation.ThrowIfCancellationRequested();
         var missing = comparison.IsExplained ? [] : ring.Missing;
         return new(comparison with
@@ -127,7 +127,8 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
 
         var (correlation, lag) = Correlation(differences, sum);
         var interval = (times[^1] - times[0]) / Math.Max(1, times.Length - 1);
-        // Some sixty lags are looked at: 4.5 standard errors are passed by chance once in two thousand records.
+        // Some sixty lags are looked at: 4.5 standard errors are passed by chance once in two thousand
+        // records.
         return new Differences(
             values.Length, Math.Sqrt(aligned.Variance(alignment.Unknowns)), differences[worst],
             times[worst] - aligned.Offset, correlation, lag * interval, 4.5 / Math.Sqrt(values.Length));

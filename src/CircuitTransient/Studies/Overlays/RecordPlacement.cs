@@ -1,7 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Studies.Records;
-using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Studies.Overlays;
@@ -10,7 +9,8 @@ namespace CircuitTransient.Studies.Overlays;
 /// <param name="Record">The record.</param>
 /// <param name="Shows">The quantity it shows; null where that follows from its title or unit.</param>
 /// <param name="With">Parts that were added for it, as statements.</param>
-/// <param name="ScopeInput">The instrument's input, <c>10 MΩ parallel 12 pF</c>; null for an ideal one.</param>
+/// <param name="ScopeInput">The instrument's input, <c>10 MΩ parallel 12 pF</c>; null for an ideal
+/// one.</param>
 /// <param name="Generator">The resistance of a source, <c>50 Ω</c> or <c>Edge: 50 Ω</c>; null for
 /// none.</param>
 /// <param name="Given">What of the alignment is given.</param>

@@ -156,7 +156,8 @@ internal sealed class RingFit
         }
 
         StartAmplitudes(start, modes);
-        var fit = LeastSquares.Minimise(start, x => Linearise(x, linear), radius: 0.1, mostSteps: 100);
+        var fit = LeastSquares.Minimise(
+            start, x => Linearise(x, linear), radius: 0.1, mostSteps: 100, tolerance: 1e-12);
         if (fit is null || TriangleSolver.InverseProduct(fit.Triangle) is not { } inverse)
         {
             return null;

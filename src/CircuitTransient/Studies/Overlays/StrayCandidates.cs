@@ -19,7 +19,10 @@ internal sealed record StrayPlace(int From, int To, int Series = -1)
             {
                 Parts = circuit.Parts.Add(new Capacitor(value, null)
                 {
-                    Name = "stray", From = From, To = To, Span = circuit.Parts[0].Span,
+                    Name = "stray",
+                    From = From,
+                    To = To,
+                    Span = circuit.Parts[0].Span,
                 }),
             };
         }
@@ -32,7 +35,10 @@ internal sealed record StrayPlace(int From, int To, int Series = -1)
             Nodes = circuit.Nodes.Add("stray"),
             Parts = circuit.Parts.SetItem(Series, moved).Add(new Inductor(value, CurrentOf(part))
             {
-                Name = "stray", From = part.From, To = node, Span = part.Span,
+                Name = "stray",
+                From = part.From,
+                To = node,
+                Span = part.Span,
             }),
         };
     }

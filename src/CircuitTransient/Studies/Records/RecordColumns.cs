@@ -56,10 +56,14 @@ internal sealed record RecordColumns(
         var cells = notation.Delimiter switch
         {
             '\0' => [text],
-            ' ' => text.TrimStart('#', '%').Split([' ', '\t'], StringSplitOptions.RemoveEmptyEntries),
+            // A blank before a unit in brackets parts no columns.
+            ' ' => text.TrimStart('#', '%').Replace(" (", "(").Replace(" [", "[")
+                .Split([' ', '\t'], StringSplitOptions.RemoveEmptyEntries),
             _ => text.Split(notation.Delimiter),
         };
-        return cells.Length == notation.Columns && Array.Exists(cells, c => c.Any(char.IsLetter)) ? cells : null;
+        return cells.Length == notation.Columns && Array.Exists(cells, c => c.Any(char.IsLetter))
+            ? cells
+            : null;
     }
 
     private static ImmutableArray<string> Numbered(RecordNotation notation) =>

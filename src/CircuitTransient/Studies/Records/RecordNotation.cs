@@ -9,7 +9,9 @@ namespace CircuitTransient.Studies.Records;
 /// <param name="FirstRow">Index among the head's lines of the first row.</param>
 internal sealed record RecordNotation(char Delimiter, char Mark, int Columns, int FirstRow)
 {
-    private const int Enough = 40; // rows by which a notation is judged
+    private const int Enough = 40; // rows by which commas are judged
+    private const int FewestAbove = 3; // numbers above a line of titles that are no rows yet
+    private const int MostCells = 256;
 
     private static readonly (char Delimiter, char Mark)[] Notations =
     [
@@ -30,7 +32,7 @@ internal sealed record RecordNotation(char Delimiter, char Mark, int Columns, in
     public static Outcome<RecordNotation> Of(RecordHead head, char? mark)
     {
         RecordNotation? best = null;
-        var length = 0;
+        var most = 0;
         foreach (var (delimiter, decimals) in Notations)
         {
             if (mark is not null && decimals != mark)
@@ -38,10 +40,10 @@ internal sealed record RecordNotation(char Delimiter, char Mark, int Columns, in
                 continue;
             }
 
-            var (notation, rows) = LongestRun(head, delimiter, decimals);
-            if (rows > length || (rows == length && rows > 0 && notation.Columns > best!.Columns))
+            var (notation, rows) = MostRows(head, new RecordNotation(delimiter, decimals, 0, 0));
+            if (rows > most || (rows == most && rows > 0 && notation.Columns > best!.Columns))
             {
-                (best, length) = (notation, rows);
+                (best, most) = (notation, rows);
             }
         }
 
@@ -113,42 +115,62 @@ internal sealed record RecordNotation(char Delimiter, char Mark, int Columns, in
         }
     }
 
-    private static (RecordNotation Notation, int Rows) LongestRun(
-        RecordHead head, char delimiter, char mark)
+    /// <summary>The count of cells that the most rows of numbers have, and the first of those rows.</summary>
+    private static (RecordNotation Notation, int Rows) MostRows(RecordHead head, RecordNotation notation)
     {
-        var notation = new RecordNotation(delimiter, mark, 0, 0);
-        var (best, length) = (notation, 0);
-        var (columns, first) = (0, 0);
-        for (var i = 0; i <= head.Lines.Count; i++)
+        var cells = Enumerable.Range(0, head.Lines.Count)
+            .Select(i => notation.CellsOfRow(head.Content(i))).ToArray();
+        var usual = cells.Where(c => c > 0).GroupBy(c => c)
+            .OrderByDescending(g => g.Count()).ThenByDescending(g => g.Key).FirstOrDefault();
+        if (usual is null)
         {
-            var cells = i < head.Lines.Count ? notation.CellsOfRow(head.Content(i)) : 0;
-            if (cells != columns)
-            {
-                if (columns > 0 && i - first > length)
-                {
-                    (best, length) = (notation with { Columns = columns, FirstRow = first }, i - first);
-                }
+            return (notation, 0);
+        }
 
-                (columns, first) = (cells, i);
-            }
+        var first = Array.IndexOf(cells, usual.Key);
+        for (var (i, above) = (first, 0); i < cells.Length && above <= FewestAbove; i++)
+        {
+            above += cells[i] == usual.Key ? 1 : 0;
+            var next = Array.IndexOf(cells, usual.Key, i);
 
-            if (columns > 0 && i - first >= Enough && i - first > length)
+            // A line of titles that stands below a few numbers tells that those are not rows yet.
+            if (cells[i] == 0 && next > i && notation.IsOfTitles(head.Content(i), usual.Key))
             {
-                return (notation with { Columns = columns, FirstRow = first }, Enough);
+                first = next;
             }
         }
 
-        return (best, Math.Min(length, Enough));
+        return (notation with { Columns = usual.Key, FirstRow = first }, usual.Count());
+    }
+
+    /// <summary>Whether a line has a text in each of so many cells.</summary>
+    private bool IsOfTitles(ReadOnlySpan<byte> line, int columns)
+    {
+        Span<int> starts = stackalloc int[MostCells];
+        Span<int> ends = stackalloc int[MostCells];
+        if (Split(line, starts, ends) != columns)
+        {
+            return false;
+        }
+
+        for (var c = 0; c < columns; c++)
+        {
+            if (RecordNumber.Read(line[starts[c]..ends[c]], Mark, out _) != CellKind.Text)
+            {
+                return false;
+            }
+        }
+
+        return true;
     }
 
     /// <summary>How many cells a row of numbers has; 0 where the line is none.</summary>
     private int CellsOfRow(ReadOnlySpan<byte> line)
     {
-        const int most = 256;
-        Span<int> starts = stackalloc int[most];
-        Span<int> ends = stackalloc int[most];
+        Span<int> starts = stackalloc int[MostCells];
+        Span<int> ends = stackalloc int[MostCells];
         var count = Split(line, starts, ends);
-        if (count > most)
+        if (count > MostCells)
         {
             return 0;
         }

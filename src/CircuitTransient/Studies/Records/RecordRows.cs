@@ -141,7 +141,7 @@ internal sealed class RecordRows
 
         repeats.IsPaired &= isRepeat == (times.Count % 2 == 1);
         times.Add(time);
-        values.Add(0.5 * (value + second));
+        values.Add(channel.Second < 0 ? value : 0.5 * (value + second));
         if (channel.Second >= 0)
         {
             halves.Add(0.5 * Math.Abs(second - value));
