@@ -89,7 +89,8 @@ public sealed class FormulaRun(
             return circuit.Observations.RemoveAll(o => o.Quantity is Figure);
         }
 
-        var found = asked.Select(words => AskedQuantity.Find(circuit, new SourceText("--of", words))).ToArray();
+        var found = asked.Select(words => AskedQuantity.Find(circuit, new SourceText("--of", words)))
+            .ToArray();
         streams.Report([.. found.SelectMany(f => f.Diagnostics)]);
         return found.All(f => f.Succeeded) ? [.. found.Select(f => f.Value!)] : null;
     }

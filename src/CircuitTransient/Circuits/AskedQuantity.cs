@@ -32,10 +32,11 @@ public static class AskedQuantity
 
         var names = CircuitChecker.NamesOf(circuit).ReportingTo(findings);
         var quantity = Measurands.Lower(names, syntax, Scope.Outermost(circuit.Nodes[0]));
+        var everything = new Window(null, null);
         return new(
             quantity is null
                 ? null
-                : new Observation(quantity.Name, quantity.Unit, quantity.Quantity, new(null, null), syntax.Span),
+                : new Observation(quantity.Name, quantity.Unit, quantity.Quantity, everything, syntax.Span),
             findings.InOrder());
     }
 }

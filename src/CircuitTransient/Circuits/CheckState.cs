@@ -42,7 +42,7 @@ internal sealed record PartDeclaration(
 /// <summary>What is known of a circuit while it is checked.</summary>
 internal sealed class CheckState(
     Findings findings, NamedValues values, ParameterList parameters,
-    Func<string, Outcome<SourceText>> readFile)
+    Func<string, Outcome<SourceText>> readFile, CircuitOverrides overrides)
 {
     public Findings Findings => findings;
 
@@ -53,6 +53,8 @@ internal sealed class CheckState(
     public ParameterList Parameters => parameters;
 
     public Func<string, Outcome<SourceText>> ReadFile => readFile;
+
+    public CircuitOverrides Overrides => overrides;
 
     public NameTable<PartDeclaration> Names { get; private init; } = new("part", findings);
 
@@ -66,7 +68,7 @@ internal sealed class CheckState(
     public Part?[] Parts { get; set; } = [];
 
     /// <summary>The same names, for a text of its own: what that text gets wrong is reported there.</summary>
-    public CheckState ReportingTo(Findings other) => new(other, values, parameters, readFile)
+    public CheckState ReportingTo(Findings other) => new(other, values, parameters, readFile, overrides)
     {
         Names = Names.ReportingTo(other),
         Nodes = Nodes.ReportingTo(other),

@@ -22,7 +22,7 @@ public static class QuantityTextParser
         var quantity = QuantityParser.ReadWithFigures(cursor);
         if (quantity is not null && !cursor.IsAtEnd)
         {
-            cursor.Unexpected("nothing more");
+            cursor.Unexpected("the end");
         }
 
         return diagnostics.Count == 0 ? new(quantity, []) : new(null, [.. diagnostics]);

@@ -57,11 +57,13 @@ public enum TermOrigin
 /// <param name="Name">Its name or label.</param>
 /// <param name="Unit">Its unit in SI.</param>
 /// <param name="Factor">What the product is multiplied by.</param>
+/// <param name="FactorUnit">Its unit.</param>
 /// <param name="First">Name of one linear quantity.</param>
 /// <param name="Second">Name of the other; the same one of a square.</param>
 /// <param name="IsIntegrated">Whether it is the product's integral since t = 0.</param>
 public sealed record ClosedProduct(
-    string Name, string Unit, double Factor, string First, string Second, bool IsIntegrated);
+    string Name, string Unit, double Factor, string FactorUnit,
+    string First, string Second, bool IsIntegrated);
 
 /// <summary>An interval between switchings with the network's own modes.</summary>
 /// <param name="From">In seconds.</param>

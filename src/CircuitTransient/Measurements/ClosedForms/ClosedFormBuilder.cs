@@ -23,7 +23,8 @@ public sealed class ClosedFormBuilder
 
     /// <summary>The closed forms of observations; quadratic ones are given by their factors.</summary>
     public static ClosedFormStudy Study(
-        TransientSolution solution, ImmutableArray<Observation> asked, CancellationToken cancellation = default)
+        TransientSolution solution, ImmutableArray<Observation> asked,
+        CancellationToken cancellation = default)
     {
         var builder = new ClosedFormBuilder(solution);
         var circuit = solution.Circuit;
@@ -40,8 +41,11 @@ public sealed class ClosedFormBuilder
             var first = builder.Factor(factors.First, observation.Window);
             var second = builder.Factor(factors.Second, observation.Window);
             linear.AddRange(first == second ? [first] : [first, second]);
-            products.Add(new ClosedProduct(observation.Name, observation.Unit, factors.Factor, first.Name,
-                second.Name, factors.IsIntegrated));
+            var factorUnit =
+                observation.Unit != "J" || factors.IsIntegrated ? "" : first.Unit == "V" ? "F" : "H";
+            products.Add(new ClosedProduct(
+                observation.Name, observation.Unit, factors.Factor, factorUnit, first.Name, second.Name,
+                factors.IsIntegrated));
         }
 
         var forms = linear.DistinctBy(o => (o.Name, o.Window)).Select(o =>
@@ -56,20 +60,23 @@ public sealed class ClosedFormBuilder
             circuit, solution.Until, 
             [.. solution.Causes
                 .Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
-            [.. solution.Intervals.Select(builder.Interval)], forms, products.ToImmutable(), checks, notJudged);
+            [.. solution.Intervals.Select(builder.Interval)], forms, products.ToImmutable(), checks,
+            notJudged);
     }
 
     private Observation Factor(Measurand quantity, Window window) => quantity switch
     {
-        VoltageAcross v => new($"voltage across {solution.Circuit.Parts[v.Part].Name}", "V", v, window, default),
-        CurrentThrough c => new($"current through {solution.Circuit.Parts[c.Part].Name}", "A", c, window, default),
+        VoltageAcross v => new($"voltage across {NameOf(v.Part)}", "V", v, window, default),
+        CurrentThrough c => new($"current through {NameOf(c.Part)}", "A", c, window, default),
         _ => throw new System.Diagnostics.UnreachableException($"no factor is {quantity}"),
     };
+
+    private string NameOf(int part) => solution.Circuit.Parts[part].Name;
 
     private ClosedInterval Interval(SolvedInterval interval) => new(
         interval.From, interval.Until,
         [.. interval.StartsWith.Select(o =>
-            $"{solution.Circuit.Parts[o.Event.Part].Name} {(o.Closes ? "closes" : "opens")}")],
+            $"{NameOf(o.Event.Part)} {(o.Closes ? "closes" : "opens")}")],
         [.. PoleGroups.Of(interval.Model.Blocks)
             .Select(p => new Pole(p.Value.Real, p.Value.Imaginary, p.Multiplicity))]);
 

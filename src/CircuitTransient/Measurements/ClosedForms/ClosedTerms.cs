@@ -28,16 +28,11 @@ internal static class ClosedTerms
                     .Where(t => !t.Amplitude.IsZero),
             ];
             NewtonTerm[] plain = [.. newton.SelectMany(Plain)];
-            var isPlain = Size(plain) <= MostCancelling * Size(newton);
-            foreach (var term in isPlain ? plain : newton)
-            {
-                sums.Add(term);
-            }
+            var isPlain = sums.SizeWith(plain, plain) <= MostCancelling * sums.SizeWith(newton, plain);
+            sums.Add(isPlain ? plain : newton);
         }
 
         return sums.Finish();
-
-        double Size(IEnumerable<NewtonTerm> terms) => terms.Sum(t => t.Bound(segment.Length));
     }
 
     private static IEnumerable<NewtonTerm> Plain(NewtonTerm term)
@@ -54,14 +49,36 @@ internal static class ClosedTerms
     {
         private readonly List<(ImmutableArray<Complex> Rates, NewtonTerm Term, double Size)> terms = [];
 
-        public void Add(NewtonTerm term)
+        public void Add(IEnumerable<NewtonTerm> more)
+        {
+            foreach (var term in more)
+            {
+                Add(term);
+            }
+        }
+
+        /// <summary>The size of some terms, added to those of the sum that share a rate with
+        /// others.</summary>
+        public double SizeWith(NewtonTerm[] more, NewtonTerm[] others)
+        {
+            var together = new TermSums(length);
+            together.Add(terms.Select(t => t.Term).Where(t => others.Any(o => o.Nodes[0] == t.Nodes[0])));
+            together.Add(more);
+            return together.terms.Sum(t => t.Term.Bound(length));
+        }
+
+        private void Add(NewtonTerm term)
         {
             if (term.Nodes[0].Im.IsNegative && term.Nodes.All(p => p == term.Nodes[0]))
             {
-                term = new(term.Amplitude.Conjugate, [.. term.Nodes.Select(p => p.Conjugate)], term.PoleCount);
+                term = term with
+                {
+                    Amplitude = term.Amplitude.Conjugate,
+                    Nodes = [.. term.Nodes.Select(p => p.Conjugate)],
+                };
             }
 
-            ImmutableArray<Complex> rates = [.. term.Nodes.Select(p => (Complex)p)];
+            ImmutableArray<Complex> rates = [.. term.Nodes.Select(p => PoleGroups.OnAxis((Complex)p))];
             var twin = terms.FindIndex(t => t.Rates.AsSpan().SequenceEqual(rates.AsSpan()));
             if (twin < 0)
             {

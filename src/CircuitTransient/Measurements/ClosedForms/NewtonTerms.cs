@@ -44,25 +44,35 @@ internal static class NewtonTerms
         Mode mode, Func<int, Complex> coefficient, double length)
     {
         DoubleDoubleComplex[] nodes = [.. Enumerable.Range(0, mode.Order).Select(i => mode.Triangle[i, i])];
-        if (mode.Kind == ModeKind.Forced || mode.Rows == 1)
+        if (mode.Kind == ModeKind.Forced || mode.Order == 1)
         {
             return Terms(mode, coefficient, nodes, mode.Kind == ModeKind.Forced ? 0 : 1);
         }
 
-        var mean = DoubleDoubleComplex.Zero;
-        for (var i = 0; i < mode.Rows; i++)
-        {
-            mean += nodes[i] / (DoubleDouble)mode.Rows;
-        }
-
+        // A lone pole beside a source's exponent goes to that, a block to its mean.
+        var place = mode.Rows == 1 ? nodes[1] : Mean(nodes.AsSpan(0, mode.Rows));
         DoubleDoubleComplex[] together =
-            [.. Enumerable.Repeat(mean, mode.Rows), .. nodes[mode.Rows..], .. Enumerable.Repeat(mean, Further)];
+        [
+            .. Enumerable.Repeat(place, mode.Rows), .. nodes[mode.Rows..],
+            .. Enumerable.Repeat(place, Further),
+        ];
         var merged = Terms(mode, coefficient, together, mode.Rows);
         var cost = merged.Skip(mode.Order).Sum(t => t.Bound(length));
         var whole = merged.Take(mode.Order).Sum(t => t.Bound(length));
         return cost <= Coincidence * whole
             ? merged[..mode.Order]
             : Terms(mode, coefficient, nodes, mode.Rows);
+    }
+
+    private static DoubleDoubleComplex Mean(ReadOnlySpan<DoubleDoubleComplex> poles)
+    {
+        var mean = DoubleDoubleComplex.Zero;
+        foreach (var pole in poles)
+        {
+            mean += pole / (DoubleDouble)poles.Length;
+        }
+
+        return mean;
     }
 
     private static ImmutableArray<NewtonTerm> Terms(

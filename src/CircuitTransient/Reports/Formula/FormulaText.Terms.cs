@@ -22,7 +22,8 @@ public static partial class FormulaText
 
         if (notes.Impulse)
         {
-            text.Paragraph("δ(τ) is an impulse at the start of the stretch; its weight stands before it.", 0, 2);
+            text.Paragraph(
+                "δ(τ) is an impulse at the start of the stretch; its weight stands before it.", 0, 2);
         }
 
         if (notes.Divided)
@@ -57,19 +58,21 @@ public static partial class FormulaText
             case ExponentialFactor e:
                 return $"e^({(e.Grows ? "" : "-")}τ/{Number(e.TimeConstant)})";
             case ApproachFactor a:
-                return a.Grows ? $"(e^(τ/{Number(a.TimeConstant)}) - 1)" : $"(1 - e^(-τ/{Number(a.TimeConstant)}))";
+                return a.Grows
+                    ? $"(e^(τ/{Number(a.TimeConstant)}) - 1)"
+                    : $"(1 - e^(-τ/{Number(a.TimeConstant)}))";
             case HyperbolicFactor h:
                 return $"{(h.IsSine ? "sinh" : "cosh")}(τ/{Number(h.TimeConstant)})";
             case OscillationFactor o:
                 notes.Angle |= o.Degrees != 0;
-                var angle = o.Degrees == 0 ? ""
-                    : $" {(o.Degrees < 0 ? '-' : '+')} {FormulaWords.Degrees(Math.Abs(o.Degrees), o.Decimals)}°";
+                var degrees = FormulaWords.Degrees(Math.Abs(o.Degrees), o.Decimals);
+                var angle = o.Degrees == 0 ? "" : $" {(o.Degrees < 0 ? '-' : '+')} {degrees}°";
                 return $"{(o.IsSine ? "sin" : "cos")}(2π·{Number(o.Frequency)}·τ{angle})";
             case DividedFactor d:
                 notes.Divided = true;
                 var difference = $"D[{string.Join(", ", d.Rates.Select(r => Rate(r, d.Digits)))}]";
-                return d.Rates.All(r => r.Imaginary == 0)
-                    ? difference
+                return d.Rates.All(r => r.Imaginary == 0) ? difference
+                    : d.Degrees == 0 ? $"Re({difference})"
                     : $"Re(e^(j·{FormulaWords.Degrees(d.Degrees, d.Decimals)}°)·{difference})";
             default:
                 throw new UnreachableException($"no words for {factor}");

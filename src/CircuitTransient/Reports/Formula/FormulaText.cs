@@ -1,7 +1,3 @@
-using System.Collections.Immutable;
-using System.Diagnostics;
-using System.Text;
-using CircuitTransient.Measurements;
 using CircuitTransient.Measurements.ClosedForms;
 using CircuitTransient.Text;
 
@@ -23,7 +19,7 @@ public static partial class FormulaText
         text.Title(study.Circuit.Title ?? study.Circuit.Source.Name);
         foreach (var product in study.Products)
         {
-            text.Paragraph(FormulaWords.Product(product) + ": see there", 0, 2);
+            text.Paragraph(FormulaWords.Product(product) + ", written out below", 2, 2);
         }
 
         var notes = new Notes();
@@ -82,26 +78,32 @@ public static partial class FormulaText
         var from = FormulaWords.Instant(stretch.From, error);
         var interval = study.Intervals[stretch.Interval];
         var starts = stretch.StartsInterval && !interval.StartsWith.IsEmpty
-            ? $", from when {string.Join(" and ", interval.StartsWith)}" : "";
+            ? $", when {string.Join(" and ", interval.StartsWith)}," : "";
+        var active = sums.Where(s => IsThere(s.Sum, s.Printed)).ToArray();
+        var heading = $"From {from}{starts} until {FormulaWords.Instant(stretch.Until, error)}";
         text.Blank();
-        text.Paragraph(
-            $"From {from} until {FormulaWords.Instant(stretch.Until, error)}{starts}; "
-            + $"τ = t{(stretch.From == 0 ? "" : " - " + from)}", 2, 2);
-        foreach (var pole in FormulaWords.PolesIn(interval, all.SelectMany(s => s.Printed)))
+        if (total is null || active.Length == 0)
         {
-            text.Paragraph(FormulaWords.Mode(pole), 4, 2);
-        }
-
-        if (total is null)
-        {
-            text.Paragraph("the equations leave it open here", 4);
+            text.Paragraph(
+                heading + (total is null ? ": the equations leave it open"
+                    : $": {Idle(sums.Sum(s => s.Printed.LeftOut), form)}"), 2, 2);
             return;
         }
 
-        var active = sums.Where(s => IsThere(s.Sum, s.Printed)).ToArray();
+        text.Paragraph($"{heading}; τ = t{(stretch.From == 0 ? "" : " - " + from)}", 2, 2);
+        string[] modes = [.. FormulaWords.Modes(interval, all.SelectMany(s => s.Printed))];
+        if (stretch.StartsInterval || !modes.SequenceEqual(notes.Modes))
+        {
+            notes.Modes = modes;
+            foreach (var mode in modes)
+            {
+                text.Paragraph(mode, 4, 2);
+            }
+        }
+
         if (active is not [_])
         {
-            WriteSum(text, active.Length == 0 ? "nothing" : "all causes together", stretch.Total!, total, form, notes);
+            WriteSum(text, "all causes together", stretch.Total!, total, form, notes);
         }
 
         foreach (var (sum, printed) in active)
@@ -115,9 +117,12 @@ public static partial class FormulaText
             var size = idle.Sum(s => s.Printed.LeftOut);
             text.Paragraph(
                 $"from {string.Join(", ", idle.Select(s => s.Sum.Cause))}: "
-                + (size == 0 ? "nothing" : $"at most {EngineeringNumber.Format(size, form.Unit, 2)}"), 4, 2);
+                + Idle(size, form), 4, 2);
         }
     }
+
+    private static string Idle(double size, ClosedForm form) =>
+        size == 0 ? "nothing" : $"at most {EngineeringNumber.Format(size, form.Unit, 2)}";
 
     private static bool IsThere(ClosedSum sum, FormulaSum printed) =>
         !printed.Terms.IsEmpty || sum.Impulse != 0;
@@ -145,14 +150,17 @@ public static partial class FormulaText
 
         if (printed.LeftOut > 0)
         {
-            text.Paragraph(
-                $"terms left out: at most {EngineeringNumber.Format(printed.LeftOut, form.Unit, 2)} in sum", 6, 4);
+            var bound = EngineeringNumber.Format(printed.LeftOut, form.Unit, 2);
+            text.Paragraph($"terms left out: at most {bound} in sum", 6, 4);
         }
     }
 
-    /// <summary>Which remarks the printed terms call for.</summary>
+    /// <summary>What is known of the text so far.</summary>
     private sealed class Notes
     {
+        /// <summary>The modes last listed.</summary>
+        public string[] Modes { get; set; } = [];
+
         public bool Angle { get; set; }
 
         public bool Impulse { get; set; }

@@ -29,8 +29,8 @@ internal static class FormulaWords
     {
         for (var digits = 4; digits < 17; digits++)
         {
-            var rounded = double.Parse(
-                time.ToString("E" + (digits - 1), CultureInfo.InvariantCulture), CultureInfo.InvariantCulture);
+            var written = time.ToString("E" + (digits - 1), CultureInfo.InvariantCulture);
+            var rounded = double.Parse(written, CultureInfo.InvariantCulture);
             if (Math.Abs(rounded - time) <= error)
             {
                 return Trimmed(EngineeringNumber.Format(time, "s", digits));
@@ -49,8 +49,13 @@ internal static class FormulaWords
         return 0.1 * Math.Pow(10, -digits) / fastest;
     }
 
-    /// <summary>The poles of an interval that show in printed terms.</summary>
-    public static ImmutableArray<Pole> PolesIn(ClosedInterval interval, IEnumerable<ClosedTerm> printed)
+    /// <summary>The modes of an interval that show in printed terms, in words; those whose words agree in one
+    /// line.</summary>
+    public static IEnumerable<string> Modes(ClosedInterval interval, IEnumerable<ClosedTerm> printed) =>
+        PolesIn(interval, printed).Select(Mode).GroupBy(words => words)
+            .Select(g => g.Key + (g.Count() > 1 ? $"; {g.Count()} such, apart by less than shows here" : ""));
+
+    private static ImmutableArray<Pole> PolesIn(ClosedInterval interval, IEnumerable<ClosedTerm> printed)
     {
         var rates = printed.Where(t => t.Origin != TermOrigin.Source).SelectMany(t => t.Rates).Distinct()
             .ToArray();
@@ -60,7 +65,7 @@ internal static class FormulaWords
     }
 
     /// <summary>A mode: its time constant, or natural frequency, damping ratio and quality factor.</summary>
-    public static string Mode(Pole pole)
+    private static string Mode(Pole pole)
     {
         var times = pole.Multiplicity == 1 ? "" : $", {pole.Multiplicity} times";
         var magnitude = double.Hypot(pole.Re, pole.Im);
@@ -70,7 +75,8 @@ internal static class FormulaWords
         }
 
         var decay = pole.Re == 0 ? "undamped"
-            : $"{(pole.Re > 0 ? "grows with" : "decays with")} {EngineeringNumber.Format(1 / Math.Abs(pole.Re), "s")}";
+            : (pole.Re > 0 ? "grows in " : "decays in ")
+                + EngineeringNumber.Format(1 / Math.Abs(pole.Re), "s");
         if (pole.Im == 0)
         {
             return $"time constant {EngineeringNumber.Format(1 / magnitude, "s")}"
@@ -80,7 +86,8 @@ internal static class FormulaWords
         var damping = pole.Re == 0 ? ""
             : $"damping ratio {EngineeringNumber.Format(-pole.Re / magnitude, "")}, quality factor "
                 + $"{EngineeringNumber.Format(magnitude / (-2 * pole.Re), "")}, ";
-        return $"natural frequency {EngineeringNumber.Format(magnitude / double.Tau, "Hz")}, {damping}{decay}{times}";
+        var frequency = EngineeringNumber.Format(magnitude / double.Tau, "Hz");
+        return $"natural frequency {frequency}, {damping}{decay}{times}";
     }
 
     /// <summary>An angle in degrees with a number of decimals.</summary>
@@ -90,14 +97,15 @@ internal static class FormulaWords
     /// <summary>Unit of an impulse's weight: the quantity's times seconds.</summary>
     public static string ImpulseUnit(string unit) => unit == "A" ? "C" : unit + "s";
 
-    /// <summary>A product in words: <c>2.8 mF times the square of voltage across Cbus</c>.</summary>
+    /// <summary>A product in words: <c>energy in Cbus is 2.8 mF times the square of voltage across
+    /// Cbus</c>.</summary>
     public static string Product(ClosedProduct product)
     {
         var factor = product.Factor switch
         {
             1 => "",
             -1 => "minus ",
-            _ => $"{EngineeringNumber.Format(product.Factor, "")} times ",
+            _ => $"{EngineeringNumber.Format(product.Factor, product.FactorUnit)} times ",
         };
         var what = product.First == product.Second
             ? $"the square of {product.First}"
