@@ -21,7 +21,9 @@ public static class PoleGroups
     /// <summary>A pole, on the imaginary axis where only rounding in double-double keeps it off: a lossless
     /// network neither decays nor grows.</summary>
     public static Complex OnAxis(Complex pole) =>
-        Math.Abs(pole.Real) <= AxisRounding * Math.Abs(pole.Imaginary) ? new Complex(0, pole.Imaginary) : pole;
+        Math.Abs(pole.Real) <= AxisRounding * Math.Abs(pole.Imaginary)
+            ? new Complex(0, pole.Imaginary)
+            : pole;
 
     /// <summary>The poles of all blocks of a matrix, smallest first.</summary>
     public static ImmutableArray<PoleGroup> Of(ImmutableArray<SpectralBlock> blocks)

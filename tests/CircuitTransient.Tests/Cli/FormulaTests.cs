@@ -106,8 +106,8 @@ public sealed class FormulaTests : IDisposable
     [Theory]
     [InlineData("", "no quantity is given")]
     [InlineData("voltage", "ends where `of`, `from` or `across` should stand")]
-    [InlineData("speed of b", "`speed` stands where a quantity should stand")]
-    [InlineData("voltage of b at 2 ms", "`at` stands where the end should stand")]
+    [InlineData("speed of b", "`speed` stands where a quantity should")]
+    [InlineData("voltage of b at 2 ms", "`at` stands where the end should")]
     public void Words_that_are_no_quantity_are_explained(string words, string wrong)
     {
         var run = Run("--of", words);

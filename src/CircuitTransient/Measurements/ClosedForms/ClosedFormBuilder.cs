@@ -57,7 +57,7 @@ public sealed class ClosedFormBuilder
         var (checks, notJudged) =
             SelfChecks.Run(curves, new StoredEnergy(curves), s => GramIntegral.Of(solution.Segments[s]));
         return new ClosedFormStudy(
-            circuit, solution.Until, 
+            circuit, solution.Until,
             [.. solution.Causes
                 .Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
             [.. solution.Intervals.Select(builder.Interval)], forms, products.ToImmutable(), checks,
