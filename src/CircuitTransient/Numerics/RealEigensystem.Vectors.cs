@@ -2,14 +2,14 @@ namespace CircuitTransient.Numerics;
 
 public sealed partial class RealEigensystem
 {
-    private double norm;
+    private double largestEntry;
 
     private void FindVectors()
     {
-        norm = Tiny;
+        largestEntry = Tiny;
         for (var i = 0; i < n * n; i++)
         {
-            norm = Math.Max(norm, Math.Abs(t[i]));
+            largestEntry = Math.Max(largestEntry, Math.Abs(t[i]));
         }
 
         for (var k = n - 1; k >= 0; k--)
@@ -100,9 +100,9 @@ public sealed partial class RealEigensystem
         // (a + i s)(d + i s) − b c
         var (detRe, detIm) = ((a * d) - (s * s) - (b * c), s * (a + d));
         (y[i], z[i]) = Quotient(
-            (d * p0) - (s * q0) - (b * p1), (d * q0) + (s * p0) - (b * q1), detRe, detIm, norm);
+            (d * p0) - (s * q0) - (b * p1), (d * q0) + (s * p0) - (b * q1), detRe, detIm, largestEntry);
         (y[i + 1], z[i + 1]) = Quotient(
-            (a * p1) - (s * q1) - (c * p0), (a * q1) + (s * p1) - (c * q0), detRe, detIm, norm);
+            (a * p1) - (s * q1) - (c * p0), (a * q1) + (s * p1) - (c * q0), detRe, detIm, largestEntry);
     }
 
     private double Sum(int row, int from, int to, ReadOnlySpan<double> y)
@@ -119,14 +119,14 @@ public sealed partial class RealEigensystem
     /// <summary>A divisor that equal eigenvalues make zero is put at rounding: their vectors come out
     /// parallel to rounding, or independent where nothing couples them.</summary>
     private double Divisor(double value) =>
-        Math.Abs(value) >= Rounding * Rounding * norm ? value : Rounding * Rounding * norm;
+        Math.Abs(value) >= Rounding * Rounding * largestEntry ? value : Rounding * Rounding * largestEntry;
 
     private (double Re, double Im) Quotient(double a, double b, double c, double d, double factor = 1)
     {
         var size = Math.Max(Math.Abs(c), Math.Abs(d));
-        if (size < Rounding * Rounding * norm * factor)
+        if (size < Rounding * Rounding * largestEntry * factor)
         {
-            (c, d) = (Rounding * Rounding * norm * factor, 0);
+            (c, d) = (Rounding * Rounding * largestEntry * factor, 0);
             size = c;
         }
 
