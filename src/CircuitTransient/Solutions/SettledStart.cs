@@ -69,7 +69,8 @@ internal static class SettledStart
         return [.. layout.Stores.Select(p => ValueOf(model, motion, layout.Held(p)))];
     }
 
-    private static DoubleDouble ValueOf(IntervalModel model, Motion motion, Measurand quantity)
+    /// <summary>A voltage or current at the start of a motion.</summary>
+    public static DoubleDouble ValueOf(IntervalModel model, Motion motion, Measurand quantity)
     {
         var projection = model.Project(quantity);
         var sum = DoubleDouble.Zero;
@@ -86,7 +87,7 @@ internal static class SettledStart
         {
             for (var k = 0; k < projection.Output.Direct.Length; k++)
             {
-                sum += projection.Output.Direct[k][forcing.Input] * forcing.DerivativeAtStart(k);
+                sum += projection.Output.Direct[k][forcing.Input] * forcing.DerivativeAtStart(k).Re;
             }
         }
 
@@ -131,8 +132,8 @@ internal static class SettledStart
 
                 var part = layout.Circuit.Parts[cause.Source];
                 var how = forcing.Exponent.IsZero
-                    ? $"`{cause.Name}` drives a charge or current that nothing limits"
-                    : $"`{cause.Name}` drives an undamped mode at its own frequency of "
+                    ? $"`{part.Name}` drives a charge or current that nothing limits"
+                    : $"`{part.Name}` drives an undamped mode at its own frequency of "
                         + EngineeringNumber.Format(Math.Abs(forcing.Exponent.Im.Hi) / (2 * Math.PI), "Hz");
                 return Diagnostic.Error(
                     layout.Circuit.Source, part.Span, $"there is no settled state to start from: {how}",
@@ -165,7 +166,9 @@ internal static class SettledStart
         return false;
     }
 
-    private static bool IsAtPole(SpectralBlock block, DoubleDoubleComplex exponent)
+    /// <summary>Whether an exponent is one of a block's poles, to rounding of the values in the
+    /// file.</summary>
+    public static bool IsAtPole(SpectralBlock block, DoubleDoubleComplex exponent)
     {
         const double rounding = 1e-13; // of the values in the file
         for (var i = 0; i < block.Size; i++)
