@@ -2,7 +2,8 @@ namespace CircuitTransient.Studies.Draws;
 
 /// <summary>The instrumented circuit with its switches in given positions, in double precision and in
 /// coordinates in which the nominal circuit is modal: z′ = A z + B u + Bσ σ, z(0⁺) = Bₓ x,
-/// y = C_y z + D_y u + D₁_y u′ + D_yx x + D_yσ σ, and the rows likewise. All matrices stand row by row.</summary>
+/// y = C_y z + D_y u + D₁_y u′ + D_yx x + D_yσ σ, and the rows likewise. All matrices stand row by
+/// row.</summary>
 internal sealed class VariedForm
 {
     /// <summary>How many state variables.</summary>
