@@ -23,8 +23,8 @@ public sealed class OverlayTests : IDisposable
         Assert.Contains("The model explains the record to within its noise.", run.Output);
         Assert.Equal(
             [
-                "load-pin/overlay.csv", "load-pin/overlay.json", "load-pin/overlay.png", "load-pin/overlay.svg",
-                "load-pin/report.html",
+                "load-pin/overlay.csv", "load-pin/overlay.json", "load-pin/overlay.png",
+                "load-pin/overlay.svg", "load-pin/report.html",
             ],
             commandLine.Written);
         Assert.Contains("Records over the model",
@@ -44,7 +44,8 @@ public sealed class OverlayTests : IDisposable
     [Fact]
     public void A_part_said_to_be_added_explains_the_record()
     {
-        var run = commandLine.Run("overlay", Plant, Record("loaded"), "--no-files", "--json", "--with", Added);
+        var run = commandLine.Run(
+            "overlay", Plant, Record("loaded"), "--no-files", "--json", "--with", Added);
 
         Assert.Equal((ExitStatus.Success, ""), (run.Status, run.Error));
         Assert.Empty(OverlaySchema.Faults(run.Output));
@@ -106,7 +107,8 @@ public sealed class OverlayTests : IDisposable
 
     [Theory]
     [InlineData(ExitStatus.FileTrouble, "missing.csv cannot be read: there is no such file", "missing.csv")]
-    [InlineData(ExitStatus.Mistake, "--as:1:12: error: there is no node `nowhere`", "--as", "voltage of nowhere")]
+    [InlineData(ExitStatus.Mistake, "--as:1:12: error: there is no node `nowhere`", "--as",
+        "voltage of nowhere")]
     [InlineData(ExitStatus.Mistake, "--with:1:30: error: `220` has no unit", "--with",
         "capacitor C9 from x to pad : 220")]
     [InlineData(ExitStatus.Mistake, "--fit:1:6: error: there is no named value `Lp` ", "--fit", "Llp, Lp")]
