@@ -34,6 +34,26 @@ public static class OutputFolder
             : null;
     }
 
+    /// <summary>Writes all files, or says why that cannot be done.</summary>
+    public static bool TryWrite(
+        string folder, IReadOnlyList<OutputFile> files, Streams streams, CancellationToken cancellation)
+    {
+        try
+        {
+            Write(folder, files, cancellation);
+            return true;
+        }
+        catch (Exception trouble) when (trouble.IsFileTrouble())
+        {
+            var reason = Hindrance(folder, files)
+                ?? (Directory.Exists(folder) || trouble is UnauthorizedAccessException
+                    ? FileTrouble.Reason(trouble)
+                    : "the folder cannot be made there");
+            streams.Complain($"the results cannot be written to {folder}: {reason}");
+            return false;
+        }
+    }
+
     /// <summary>The file that stands where a folder is needed; null where none does.</summary>
     private static string? FileInTheWay(string folder)
     {

@@ -130,20 +130,9 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
 
         var folder = OutputFolder.For(options.Folder, file);
         var files = ResultFiles.Of(result, options.CommandFor(file), options.IsPdf);
-        try
-        {
-            OutputFolder.Write(folder, files, cancellation);
-            return new(status, verdict, result) { Written = [.. files.Select(f => $"{folder}/{f.Name}")] };
-        }
-        catch (Exception trouble) when (trouble.IsFileTrouble())
-        {
-            var reason = OutputFolder.Hindrance(folder, files)
-                ?? (Directory.Exists(folder) || trouble is UnauthorizedAccessException
-                    ? FileTrouble.Reason(trouble)
-                    : "the folder cannot be made there");
-            streams.Complain($"the results cannot be written to {folder}: {reason}");
-            return new Answer(ExitStatus.FileTrouble, verdict, result);
-        }
+        return OutputFolder.TryWrite(folder, files, streams, cancellation)
+            ? new(status, verdict, result) { Written = [.. files.Select(f => $"{folder}/{f.Name}")] }
+            : new(ExitStatus.FileTrouble, verdict, result);
     }
 
     private sealed record Answer(int Status, string Verdict, TransientResult? Result = null)

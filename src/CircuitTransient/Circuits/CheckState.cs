@@ -42,7 +42,7 @@ internal sealed record PartDeclaration(
 /// <summary>What is known of a circuit while it is checked.</summary>
 internal sealed class CheckState(
     Findings findings, NamedValues values, ParameterList parameters,
-    Func<string, Outcome<SourceText>> readFile)
+    Func<string, Outcome<SourceText>> readFile, CircuitOverrides overrides)
 {
     public Findings Findings => findings;
 
@@ -53,6 +53,8 @@ internal sealed class CheckState(
     public ParameterList Parameters => parameters;
 
     public Func<string, Outcome<SourceText>> ReadFile => readFile;
+
+    public CircuitOverrides Overrides => overrides;
 
     public NameTable<PartDeclaration> Names { get; } = new("part", findings);
 

@@ -33,10 +33,15 @@ public sealed record Circuit(
 /// <summary>A value a study may vary: a named value or a part's own value that has a tolerance.</summary>
 /// <param name="Name">The user's name: a value's, or a part's with what of it (<c>Rpre</c>, <c>Cbus initial
 /// charge</c>).</param>
+/// <param name="Unit">Its SI unit.</param>
 /// <param name="Nominal">Nominal value in SI.</param>
-/// <param name="Tolerance">Its tolerance, null for a plain named value.</param>
-/// <param name="Span">Where it stands.</param>
-public sealed record Parameter(string Name, double Nominal, Tolerance? Tolerance, TextSpan Span);
+/// <param name="Tolerance">Its tolerance; null where none is written.</param>
+/// <param name="Span">Where its owner's name stands.</param>
+/// <param name="ValueSpan">Where the value itself is written, without its tolerance.</param>
+/// <param name="ToleranceSpan">Where its tolerance is written; null where none is.</param>
+public sealed record Parameter(
+    string Name, string Unit, double Nominal, Tolerance? Tolerance, TextSpan Span, TextSpan ValueSpan,
+    TextSpan? ToleranceSpan);
 
 /// <summary>The range of a value: absolute limits in SI, and the distribution between them.</summary>
 public sealed record Tolerance(double Lowest, double Highest, bool IsNormal);

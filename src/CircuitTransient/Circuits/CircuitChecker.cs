@@ -12,10 +12,11 @@ public static class CircuitChecker
     /// <param name="earlier">What reading the text found; with an error in it there is no circuit.</param>
     /// <param name="readFile">Reads a file of wave points by its path relative to the circuit's folder; null
     /// where no file can be read.</param>
+    /// <param name="overrides">What a study says in place of the text; null for nothing.</param>
     /// <returns>The circuit, or errors in the order of the file; warnings come with either.</returns>
     public static Outcome<Circuit> Check(
         CircuitSyntax syntax, ImmutableArray<Diagnostic> earlier,
-        Func<string, Outcome<SourceText>>? readFile = null)
+        Func<string, Outcome<SourceText>>? readFile = null, CircuitOverrides? overrides = null)
     {
         var findings = new Findings(syntax.Source);
         foreach (var diagnostic in earlier)
@@ -23,12 +24,15 @@ public static class CircuitChecker
             findings.Add(diagnostic);
         }
 
-        var circuit = Build(syntax, findings, readFile ?? (_ => new Outcome<SourceText>(null, [])));
+        var circuit = Build(
+            syntax, findings, readFile ?? (_ => new Outcome<SourceText>(null, [])),
+            overrides ?? CircuitOverrides.None);
         return new Outcome<Circuit>(findings.HasErrors ? null : circuit, findings.InOrder());
     }
 
     private static Circuit? Build(
-        CircuitSyntax syntax, Findings findings, Func<string, Outcome<SourceText>> readFile)
+        CircuitSyntax syntax, Findings findings, Func<string, Outcome<SourceText>> readFile,
+        CircuitOverrides overrides)
     {
         if (syntax.Statements.IsEmpty)
         {
@@ -39,7 +43,7 @@ public static class CircuitChecker
         findings.LacksNames |= !Unreadable.Excuse(syntax.Statements, findings) && findings.HasErrors;
         var settings = StudySettings.Read(syntax, findings);
         var parameters = new ParameterList();
-        var values = new NamedValues(findings, parameters);
+        var values = new NamedValues(findings, parameters, overrides);
         var statements = Expansion.WriteOut(syntax, settings.Reference, findings, values);
         if (statements.IsEmpty)
         {
@@ -47,7 +51,7 @@ public static class CircuitChecker
             return null;
         }
 
-        var state = new CheckState(findings, values, parameters, readFile)
+        var state = new CheckState(findings, values, parameters, readFile, overrides)
         {
             Nodes = new NodeTable(settings.Reference, findings, settings.ReferenceSpan),
         };

@@ -11,10 +11,13 @@ internal sealed class NamedValues
     private readonly NameTable<Definition> table;
     private readonly List<Definition> inProgress = [];
 
-    public NamedValues(Findings findings, ParameterList parameters)
+    private readonly CircuitOverrides overrides;
+
+    public NamedValues(Findings findings, ParameterList parameters, CircuitOverrides overrides)
     {
         this.findings = findings;
         this.parameters = parameters;
+        this.overrides = overrides;
         table = new NameTable<Definition>("value", findings);
         Evaluator = new ExpressionEvaluator(findings, this);
     }
@@ -92,6 +95,11 @@ internal sealed class NamedValues
         if (result is { } given && !MatchesOwn(definition, given))
         {
             result = null;
+        }
+
+        if (result is not null && overrides.NamedValues.TryGetValue(definition.Name, out var other))
+        {
+            result = new Evaluated(other, result.Value.Dimension);
         }
 
         if (result is { } plain)

@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
@@ -21,13 +22,17 @@ internal sealed class ParameterList
     /// <param name="owner">The name of the value or part.</param>
     /// <param name="aspect">What of a part: <c>initial charge</c>; null for the value itself.</param>
     /// <param name="isNamedValue">Whether the owner is a named value.</param>
+    /// <param name="written">Its value as written, with its tolerance.</param>
     public Formula Add(
-        string owner, string? aspect, bool isNamedValue, double nominal, Tolerance? tolerance, TextSpan span)
+        string owner, string? aspect, bool isNamedValue, Evaluated value, Tolerance? tolerance,
+        TextSpan span, ToleratedSyntax written)
     {
         var name = aspect is not null ? $"{owner} {aspect}"
             : shared.Contains(owner) ? (isNamedValue ? "value " : "part ") + owner
             : owner;
-        list.Add(new Parameter(name, nominal, tolerance, span));
+        list.Add(new Parameter(
+            name, Measure.Of(value.Dimension).Unit, value.Value, tolerance, span, written.Value.Span,
+            written.Tolerance?.Span));
         return new ParameterFormula(list.Count - 1);
     }
 

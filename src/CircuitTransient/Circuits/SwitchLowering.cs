@@ -118,7 +118,10 @@ internal static class SwitchLowering
     {
         if (syntax.Trigger is AtInstantSyntax at)
         {
-            return Instants.Lower(state, at.Time, part.Scope) is { } instant ? new AtInstant(instant) : null;
+            return Instants.Lower(state, at.Time, part.Scope) is not { } instant ? null
+                : state.Overrides.EventTimes.TryGetValue((part.Name, syntax.Closes), out var other)
+                ? new AtInstant(instant with { Delay = other })
+                : new AtInstant(instant);
         }
 
         var when = (WhenCrossesSyntax)syntax.Trigger;

@@ -28,7 +28,7 @@ internal static class Tolerances
             return value;
         }
 
-        var own = parameters.Add(owner, aspect, isNamedValue, value.Value, tolerance, span);
+        var own = parameters.Add(owner, aspect, isNamedValue, value, tolerance, span, syntax);
         return value.Formula is null
             ? value with { Formula = own, Size = 1 }
             : value with { Formula = OnTopOf(value, own), Size = value.Size + 4 };

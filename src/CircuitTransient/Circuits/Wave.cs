@@ -34,4 +34,9 @@ public sealed record WavePiece(
     double AngularFrequency,
     double Phase,
     string Label,
-    bool IsPerpetual = false);
+    bool IsPerpetual = false)
+{
+    /// <summary>The phase at t = 0 as stated for a sine or cosine, in radians; null for other
+    /// waves.</summary>
+    public double? StatedPhase { get; init; }
+}

@@ -10,10 +10,10 @@ internal sealed class ObservationMeasurement(
     CurveBuilder curves, WindowTimes times, Infinities infinities, SinceEventBreakdown since,
     AnalysisOptions options)
 {
-    private const int MostStretches = 3_000_000; // a million crests, three stretches each
     private const int MostStretchesOfACause = 200_000;
 
     private readonly TransientSolution solution = curves.Solution;
+    private readonly ObservedExtremes extremes = new(infinities);
 
     /// <summary>Measures one observation; its waveforms are still to be filled in from the curves, the
     /// total's first.</summary>
@@ -30,7 +30,7 @@ internal sealed class ObservationMeasurement(
             total = curves.Of(observation.Quantity, from: open.From)!;
         }
 
-        var (max, min) = Extremes(observation.Quantity, total, open);
+        var (max, min) = extremes.Of(observation.Quantity, total, open);
         var shares = Shares(observation.Quantity, open);
         var result = new ObservationResult(
             observation.Name,
@@ -47,19 +47,6 @@ internal sealed class ObservationMeasurement(
             [],
             []);
         return (result, [total, .. shares.Select(s => s.Curve)]);
-    }
-
-    private (Extreme Max, Extreme Min) Extremes(Measurand quantity, Curve total,
-        (double From, double To) window)
-    {
-        var max = ExtremeSearch.Greatest(total, window.From, window.To, MostStretches);
-        var min = ExtremeSearch.Least(total, window.From, window.To, MostStretches);
-        var (up, down) = infinities.Of(quantity, window.From, window.To);
-        return (
-            up is { } high ? new Extreme(null, high, InstantSide.After, null)
-                : new Extreme(max.Value, max.Time, max.Side, max.Bound),
-            down is { } low ? new Extreme(null, low, InstantSide.After, null)
-                : new Extreme(min.Value, min.Time, min.Side, min.Bound));
     }
 
     private List<(string Name, Share Share, int Cause, Curve Curve)> Shares(

@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using System.Reflection;
 using System.Security.Cryptography;
 using System.Text;
@@ -16,7 +17,9 @@ public static partial class HtmlReport
     /// <summary>The page.</summary>
     /// <param name="result">What it reports.</param>
     /// <param name="command">The command that makes it again, as typed.</param>
-    public static string Write(TransientResult result, string command)
+    /// <param name="sections">What a study adds; shown right after the verdict.</param>
+    public static string Write(
+        TransientResult result, string command, params ImmutableArray<StudySection> sections)
     {
         using var fonts = new PlotFonts();
         var style = Resource("report.css");
@@ -39,6 +42,7 @@ public static partial class HtmlReport
             {Head(result, title)}
             <main>
             {Verdict(result)}
+            {Markup.Join(sections.Select((section, index) => Section(section, index)))}
             {Cautions(result)}
             {Events(result, fonts)}
             {Observations(result, fonts)}
@@ -74,6 +78,14 @@ public static partial class HtmlReport
             {Markup.Join(notes)}</header>
             """);
     }
+
+    private static Markup Section(StudySection section, int index) => Markup.Of($"""
+        <section class="study-section" aria-labelledby="study-{index}">
+        <h2 id="study-{index}">{Markup.Name(section.Title)}</h2>
+        {section.Body}
+        </section>
+
+        """);
 
     private static string Hash(string content) =>
         $"sha256-{Convert.ToBase64String(SHA256.HashData(Encoding.UTF8.GetBytes(content)))}";
