@@ -29,13 +29,13 @@ public sealed record ScanPlan(VariedCircuit Varied, ImmutableArray<ScanAxis> Axe
         }
 
         var targets = ranged.Select(ScanTargets.Of).ToList();
-        var scattered = scatter is null ? null : ScanScatter.Target(scatter, scanned);
-        if (scattered is { Mistake: { } mistake })
+        var scattered = scatter is null ? default : ScanScatter.Target(scatter, scanned);
+        if (scattered.Mistake is { } mistake)
         {
             return new(null, [mistake]);
         }
 
-        if (scattered?.Event is { } target)
+        if (scattered.Event is { } target)
         {
             targets.Add(target);
         }

@@ -1,0 +1,217 @@
+using System.Collections.Immutable;
+using CircuitTransient.Studies;
+using CircuitTransient.Studies.Scans;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <content>The tables.</content>
+public static partial class ScanSummary
+{
+    private static void WriteJudged(SummaryText text, ScanResult result)
+    {
+        var judged = result.Findings.Where(f => f.IsJudged).OrderBy(f => f.Room).ToArray();
+        if (judged.Length == 0)
+        {
+            return;
+        }
+
+        text.Heading("What is required and rated, the tightest first, each at its worst");
+        text.Table(
+            [Prose, Prose, Prose],
+            judged.Take(MostFindings).Select(f => ImmutableArray.Create(
+                Held(result, f), ScanWords.Statement(result.Circuit, f.Figure), Worst(result, f))));
+        if (judged.Length > MostFindings)
+        {
+            text.Paragraph($"and {judged.Length - MostFindings} more, in scan.json");
+        }
+    }
+
+    /// <summary>Over which stretches something judged holds.</summary>
+    internal static string Held(ScanResult result, FigureScan finding) => result.Axes is [var axis]
+        ? ScanWords.Holding(axis, finding.Holding)
+        : finding.HoldsThroughout ? "holds throughout" : "breaks";
+
+    /// <summary>Something judged at its worst.</summary>
+    internal static string Worst(ScanResult result, FigureScan finding)
+    {
+        if (finding.Worst is not { } worst)
+        {
+            return "no value to judge";
+        }
+
+        var reached = ScanWords.Reached(result.Circuit, finding.Figure) is { } line
+            ? $"{EngineeringNumber.Format(line.Of(worst.Value), line.Unit)}, "
+            : "";
+        return $"{reached}{ScanWords.Verdict(finding.Figure, worst.Value)} at "
+            + $"{ScanWords.Place(result.Axes, worst.At)} ({ScanWords.How(worst.How)})";
+    }
+
+    private static void WriteObserved(SummaryText text, ScanResult result)
+    {
+        var observed = result.Findings.Where(f => !f.IsJudged && IsWanted(result, f)).ToArray();
+        if (observed.Length == 0)
+        {
+            return;
+        }
+
+        text.Heading("What is observed: greatest and least on and between the points");
+        text.Table(
+            [Prose, Left, Right, Prose],
+            observed.Take(MostFindings).SelectMany(f => Rows(result, f)));
+        if (observed.Length > MostFindings)
+        {
+            text.Paragraph($"and {observed.Length - MostFindings} more figures, in scan.json");
+        }
+    }
+
+    // Node voltages that nobody asked for would crowd out what is required.
+    private static bool IsWanted(ScanResult result, FigureScan finding) =>
+        result.Circuit.Requirements.IsEmpty
+        || !result.Circuit.Observations[finding.Figure.Index].IsByDefault;
+
+    private static IEnumerable<ImmutableArray<string>> Rows(ScanResult result, FigureScan finding)
+    {
+        if (finding.Greatest is not { } greatest || finding.Least is not { } least)
+        {
+            yield return [finding.Figure.Name, "", "none", ""];
+            yield break;
+        }
+
+        yield return [finding.Figure.Name, "greatest", Value(greatest), Where(greatest)];
+        yield return ["", "least", Value(least), Where(least)];
+        foreach (var jump in finding.Jumps)
+        {
+            var (before, after) = (
+                ScanWords.Value(finding.Figure, jump.Before), ScanWords.Value(finding.Figure, jump.After));
+            yield return ["", "jumps", $"{before} → {after}", ScanWords.Place(result.Axes[0], jump.At)];
+        }
+
+        string Value(ScanPlace place) => ScanWords.Value(finding.Figure, place.Value);
+
+        string Where(ScanPlace place) =>
+            $"at {ScanWords.Place(result.Axes, place.At)} ({ScanWords.How(place.How)})";
+    }
+
+    /// <summary>Some of the points with the figures that matter most.</summary>
+    private static void WriteTable(SummaryText text, ScanResult result)
+    {
+        if (result.Axes is not [var axis])
+        {
+            return;
+        }
+
+        var columns = ScanColumn.Of(result).Take(3).ToArray();
+        var count = Math.Min(MostRows - 1, result.Points.Length);
+        var shown = Enumerable.Range(0, count)
+            .Select(k => result.Points[count == 1 ? 0 : k * (result.Points.Length - 1) / (count - 1)]);
+        text.Heading($"Some of the {result.Points.Length} points");
+        text.Table(
+            [Right, .. columns.Select(_ => Right)],
+            shown.Select(point => ImmutableArray.Create(
+                [axis.Say(point.At[0]), .. columns.Select(c => c.Say(point.Found))]))
+            .Prepend(ImmutableArray.Create([ScanWords.Subject(axis), .. columns.Select(c => c.Heading)])));
+    }
+
+    private static void WriteScatter(SummaryText text, ScatterResult scatter)
+    {
+        text.Heading($"With {Words(scatter)}, each instant as likely");
+        var rows = scatter.Figures
+            .Where(f => f.Quantiles.Length > 0)
+            .OrderBy(f => f.Scan.Room ?? double.PositiveInfinity)
+            .Take(MostFindings)
+            .Select(f => ImmutableArray.Create(
+                f.Scan.Figure.Name,
+                Said(f, f.Scan.Least?.Value),
+                Said(f, At(f, 0.05)),
+                Said(f, At(f, 0.5)),
+                Said(f, At(f, 0.95)),
+                Said(f, f.Scan.Greatest?.Value),
+                f.Holding is { } holding ? $"{ReportWords.Percent(holding)} hold" : ""));
+        text.Table(
+            [Prose, Right, Right, Right, Right, Right, Right],
+            rows.Prepend(["", "least", "5 %", "median", "95 %", "greatest", ""]));
+
+        static double? At(FigureScatter figure, double fraction) =>
+            figure.Quantiles.FirstOrDefault(q => q.Fraction == fraction)?.Value;
+
+        static string Said(FigureScatter figure, double? value) => ScanWords.Value(figure.Scan.Figure, value);
+    }
+
+    private static void WriteTroubles(SummaryText text, ScanResult result)
+    {
+        if (result.UnsolvedCount == 0)
+        {
+            return;
+        }
+
+        var axes = result.Axes;
+        var all = result.Points.Select(p => (Axes: axes, Point: p));
+        if (result.Scatter is { } scatter)
+        {
+            all = all.Concat(scatter.Points.Select(p => (ImmutableArray.Create(scatter.Axis), p)));
+        }
+
+        var unsolved = all.Where(p => p.Point.Found is null).ToArray();
+        text.Heading(unsolved.Length == 1
+            ? "One point has no solution"
+            : $"{unsolved.Length} points have no solution, and nothing is said of them");
+        foreach (var (own, point) in unsolved.Take(MostTroubles))
+        {
+            text.Paragraph($"{ScanWords.Place(own, point.At)}: {point.Trouble}", hanging: 2);
+        }
+
+        if (unsolved.Length > MostTroubles)
+        {
+            text.Paragraph($"and {unsolved.Length - MostTroubles} more, in scan.json");
+        }
+    }
+}
+
+/// <summary>A column of the table of points.</summary>
+/// <param name="Heading">What it shows.</param>
+/// <param name="Say">Its words at a point, empty where that has no solution.</param>
+internal sealed record ScanColumn(string Heading, Func<StudyPoint?, string> Say)
+{
+    /// <summary>The columns that matter, the tightest requirement first.</summary>
+    public static IEnumerable<ScanColumn> Of(ScanResult result) => result.Findings
+        .Select((finding, index) => (finding, index))
+        .Where(f => f.finding.IsJudged
+            || !result.Circuit.Observations[f.finding.Figure.Index].IsByDefault
+            || result.Circuit.Requirements.IsEmpty)
+        .OrderBy(f => f.finding.Room ?? double.PositiveInfinity)
+        .Select(f => Column(result, f.finding.Figure, f.index));
+
+    private static ScanColumn Column(ScanResult result, StudyFigure figure, int index)
+    {
+        var line = ScanWords.Reached(result.Circuit, figure);
+        return new ScanColumn(line?.Name ?? figure.Name, found => found is null ? "no solution"
+            : line is null ? ScanWords.Value(figure, found.Values[index])
+            : found.Values[index] is { } margin && double.IsFinite(margin)
+                ? EngineeringNumber.Format(line.Of(margin), line.Unit)
+                : "without limit");
+    }
+}
+
+/// <summary>Stretches of a scanned value taken together.</summary>
+internal static class ScanStretches
+{
+    /// <summary>Where all of several lists of stretches are open.</summary>
+    public static ImmutableArray<ScanStretch> Common(IEnumerable<ImmutableArray<ScanStretch>> lists)
+    {
+        ImmutableArray<ScanStretch>? common = null;
+        foreach (var list in lists)
+        {
+            common = common is { } known
+                ?
+                [
+                    .. known.SelectMany(a => list.Select(b =>
+                            new ScanStretch(Math.Max(a.From, b.From), Math.Min(a.To, b.To))))
+                        .Where(s => s.From <= s.To).OrderBy(s => s.From),
+                ]
+                : list;
+        }
+
+        return common ?? [];
+    }
+}
