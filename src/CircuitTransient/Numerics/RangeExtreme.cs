@@ -19,6 +19,9 @@ public enum RangeExtremeKind
 
     /// <summary>Found by comparing values, because no slope was known there.</summary>
     Compared,
+
+    /// <summary>The function does not change over the range.</summary>
+    Flat,
 }
 
 /// <summary>The greatest or least value found.</summary>

@@ -30,7 +30,7 @@ internal sealed class ScanCurvePanel
         (this.axis, this.finding) = (axis, finding);
         line = ScanWords.Reached(result.Circuit, finding.Figure);
         scale = new ScanScale(axis, ScanFrame.Left, ScanFrame.Right);
-        (name, unit) = (line?.Name ?? finding.Figure.Name, line?.Unit ?? finding.Figure.Unit);
+        (name, unit) = (ScanWords.Title(result.Circuit, finding.Figure), line?.Unit ?? finding.Figure.Unit);
         if (finding.Figure.Kind == StudyFigureKind.RatingUsed)
         {
             (unit, limit, limitWords) = ("%", 100, "100 % of the rating");
@@ -82,7 +82,7 @@ internal sealed class ScanCurvePanel
 
         if (limit is { } value)
         {
-            foreach (var shape in frame.Limit(value, limitWords))
+            foreach (var shape in frame.Limit(value, limitWords, isLeft: IsWorstRight))
             {
                 yield return shape;
             }
@@ -98,6 +98,13 @@ internal sealed class ScanCurvePanel
             yield return shape;
         }
     }
+
+    /// <summary>The place that is marked: the worst of what is judged, the extreme of what is observed.</summary>
+    private ScanPlace? Marked => finding.Worst
+        ?? (finding.Figure.Kind == StudyFigureKind.Minimum ? finding.Least : finding.Greatest);
+
+    private bool IsWorstRight =>
+        Marked is { } marked && scale.Place(marked.At[0]) > (ScanFrame.Left + ScanFrame.Right) / 2;
 
     /// <summary>A margin as the value that was reached, a rating's use in per cent.</summary>
     private double Shown(double value) => line is not null ? line.Of(value)
@@ -150,7 +157,7 @@ internal sealed class ScanCurvePanel
         var x = scale.Place(nominal);
         yield return new LineShape(x, frame.Top, x, frame.Bottom, new Stroke(PlotStyle.Axis, 1, [2, 3]));
         yield return new TextShape(
-            x + 4, frame.Bottom - 6, "as written", ScanFrame.Small, PlotStyle.Grey, HasHalo: true);
+            x + 4, frame.Bottom - 22, "as written", ScanFrame.Small, PlotStyle.Grey, HasHalo: true);
     }
 
     private IEnumerable<Shape> Marks()
@@ -159,10 +166,10 @@ internal sealed class ScanCurvePanel
         {
             var x = scale.Place(found.At[0]);
             yield return new LineShape(x, frame.Top, x, frame.Bottom, new Stroke(PlotStyle.Limit, 1));
-            yield return Label(x, frame.Top + 13, axis.Say(found.At[0]), PlotStyle.Limit);
+            yield return Label(x, frame.Bottom - 6, axis.Say(found.At[0]), PlotStyle.Limit);
         }
 
-        if ((finding.Worst ?? finding.Greatest) is { } worst)
+        if (Marked is { } worst)
         {
             var (x, y) = (scale.Place(worst.At[0]), frame.Level.Place(Shown(worst.Value)));
             var words = $"{EngineeringNumber.Format(Shown(worst.Value), unit)} at {axis.Say(worst.At[0])}";

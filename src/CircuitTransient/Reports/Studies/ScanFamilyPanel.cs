@@ -18,7 +18,8 @@ internal static class ScanFamilyPanel
     {
         var (from, to) = Window(family);
         var lines = family.Members.Select(m => (
-            Member: m, Samples: PlotTrace.Within(m.Times, m.Values, from, to))).ToArray();
+            Member: m,
+            Samples: PlotTrace.Within([.. m.Times.Select(t => t - m.Origin)], m.Values, from, to))).ToArray();
         var limits = Limits(result.Circuit, family);
         var drawn = lines.SelectMany(l => l.Samples.Select(s => s.Y)).ToArray();
         var (least, greatest) = ScanFrame.Range(drawn);
@@ -28,7 +29,7 @@ internal static class ScanFamilyPanel
         var ticks = time.Ticks("s", 9);
         var frame = new ScanFrame(
             fonts, top + 26, Height, [.. ticks.Marks.Select(m => (time.Place(m.Value), m.Label))],
-            $"time ({ticks.Unit})", new PlotScale(least, greatest, top + 26 + Height, top + 26), family.Unit);
+            family.Event is null ? $"time ({ticks.Unit})" : $"{ticks.Unit} after {family.Event}", new PlotScale(least, greatest, top + 26 + Height, top + 26), family.Unit);
         return (
             [
                 .. frame.Shapes($"{family.Name}, with {ScanWords.Range(result)}"),
@@ -41,19 +42,24 @@ internal static class ScanFamilyPanel
             Height + 26 + 40);
     }
 
-    // From the earliest switching to some time past the latest peak, where that is a small part of the study.
+    // From the earliest switching to some time past the latest peak, where that is a small part of the study;
+    // of a scanned event all count from it.
     private static (double From, double To) Window(ScanFamily family)
     {
-        var (start, peak, end) = (
-            family.Members.Min(m => m.Start), family.Members.Max(m => m.Peak), family.Members.Max(m => m.End));
+        var start = family.Members.Min(m => m.Start - m.Origin);
+        var peak = family.Members.Max(m => m.Peak - m.Origin);
         var length = peak - start;
-        var until = family.Members.Max(m => m.Times[^1]);
-        if (length <= 0 || length > Short * until)
+        var first = family.Members.Max(m => -m.Origin);
+        var last = family.Members.Min(m => m.Times[^1] - m.Origin);
+        if (length <= 0 || length > Short * (last - first))
         {
-            return (0, until);
+            return family.Event is null
+                ? (first, last)
+                : (Math.Max(first, -0.1 * last), Math.Max(last, peak + (0.1 * length)));
         }
 
-        return (Math.Max(0, start - (0.06 * length)), Math.Min(end, peak + (AfterPeak * length)));
+        return (start - (0.06 * length), Math.Min(family.Members.Max(m => m.End - m.Origin),
+            peak + (AfterPeak * length)));
     }
 
     private static ImmutableArray<(double Value, string Words)> Limits(Circuit circuit, ScanFamily family)

@@ -77,21 +77,20 @@ internal sealed record ScanFrame(
         return (least - (0.12 * room), greatest + (0.14 * room));
     }
 
-    /// <summary>The line of a limit with its words at the right end.</summary>
-    public IEnumerable<Shape> Limit(double value, string words)
+    /// <summary>The line of a limit with its words at one end.</summary>
+    public IEnumerable<Shape> Limit(double value, string words, bool isLeft = false)
     {
         var y = Level.Place(value);
+        var (x, anchor) = isLeft ? (Left + 6, TextAnchor.Start) : (Right - 6, TextAnchor.End);
         if (y < Top || y > Bottom)
         {
             yield return new TextShape(
-                Right - 6, y < Top ? Top + 14 : Bottom - 6,
-                $"{words}: {(y < Top ? "above" : "below")} this panel", Small, PlotStyle.Limit, TextAnchor.End,
-                HasHalo: true);
+                x, y < Top ? Top + 14 : Bottom - 6, $"{words}: {(y < Top ? "above" : "below")} this panel",
+                Small, PlotStyle.Limit, anchor, HasHalo: true);
             yield break;
         }
 
         yield return new LineShape(Left, y, Right, y, new Stroke(PlotStyle.Limit, 1.2, [8, 4]));
-        yield return new TextShape(
-            Right - 6, y - 5, words, Small, PlotStyle.Limit, TextAnchor.End, HasHalo: true);
+        yield return new TextShape(x, y - 5, words, Small, PlotStyle.Limit, anchor, HasHalo: true);
     }
 }

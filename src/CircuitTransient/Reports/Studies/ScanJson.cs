@@ -148,6 +148,7 @@ public static class ScanJson
                 RangeExtremeKind.Kink => "kink",
                 RangeExtremeKind.Jump => "jump",
                 RangeExtremeKind.Compared => "compared",
+                RangeExtremeKind.Flat => "flat",
                 _ => "end",
             });
         });

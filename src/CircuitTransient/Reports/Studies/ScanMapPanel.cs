@@ -67,7 +67,7 @@ internal sealed class ScanMapPanel
     {
         yield return new TextShape(
             ScanFrame.Left, top - 12,
-            fonts.Fitted(line?.Name ?? finding.Figure.Name, 14, Right - ScanFrame.Left, isStrong: true), 14,
+            fonts.Fitted(ScanWords.Title(result.Circuit, finding.Figure), 14, Right - ScanFrame.Left, isStrong: true), 14,
             PlotStyle.Ink, IsStrong: true);
         foreach (var shape in Cells().Concat(Axes()).Concat(Contours()).Concat(Breaks()).Concat(Worst()))
         {
@@ -160,7 +160,7 @@ internal sealed class ScanMapPanel
                 .Select(s => (A: Placed(s.A), B: Placed(s.B))).ToArray();
             foreach (var (a, b) in strokes)
             {
-                yield return new LineShape(a.X, a.Y, b.X, b.Y, new Stroke(PlotStyle.Ink, 0.8));
+                yield return new LineShape(a.X, a.Y, b.X, b.Y, new Stroke(PlotStyle.Ink, 0.7));
             }
 
             if (strokes.Length > 0)
@@ -186,12 +186,20 @@ internal sealed class ScanMapPanel
         return a + ((b - a) * (number - left));
     }
 
+    // The line follows the points as the other lines do; the dots on it were solved for.
     private IEnumerable<Shape> Breaks()
     {
+        var limit = finding.Figure.Kind == StudyFigureKind.RatingUsed ? 100 : line?.Limit ?? 0;
+        foreach (var (a, b) in finding.IsJudged ? ContourLines.Of(values, limit) : [])
+        {
+            var (from, to) = (Placed(a), Placed(b));
+            yield return new LineShape(from.X, from.Y, to.X, to.Y, new Stroke(PlotStyle.Limit, 1.6));
+        }
+
         foreach (var found in finding.Breaks)
         {
             yield return new DiscShape(
-                across.Place(found.At[0]), upwards.Place(found.At[1]), 2.2, PlotStyle.Limit);
+                across.Place(found.At[0]), upwards.Place(found.At[1]), 2.4, PlotStyle.Limit);
         }
 
         if (!finding.Breaks.IsEmpty)

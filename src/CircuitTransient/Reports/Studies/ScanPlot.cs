@@ -1,5 +1,5 @@
 using System.Collections.Immutable;
-using CircuitTransient.Studies;
+using CircuitTransient.Numerics;
 using CircuitTransient.Studies.Scans;
 
 namespace CircuitTransient.Reports.Studies;
@@ -61,7 +61,7 @@ public static class ScanPlot
             yield return top => ScanFamilyPanel.Draw(result, family, fonts, top);
         }
 
-        var wanted = Wanted(result, result.Findings);
+        var wanted = Wanted(result.Findings);
         switch (result.Axes)
         {
             case [var axis]:
@@ -84,7 +84,7 @@ public static class ScanPlot
         if (result.Scatter is { } scatter)
         {
             foreach (var (finding, index) in
-                Wanted(result, [.. scatter.Figures.Select(f => f.Scan)]).Take(MostCurves / 2))
+                Wanted([.. scatter.Figures.Select(f => f.Scan)]).Take(MostCurves / 2))
             {
                 yield return top =>
                     ScanCurvePanel.Draw(result, scatter.Axis, scatter.Points, finding, index, fonts, top);
@@ -92,12 +92,11 @@ public static class ScanPlot
         }
     }
 
-    /// <summary>What is judged, the tightest first, then what was asked to be observed.</summary>
+    /// <summary>What is judged, the tightest first, then what was asked to be observed; what does not change
+    /// makes no picture.</summary>
     private static IEnumerable<(FigureScan Finding, int Index)> Wanted(
-        ScanResult result, ImmutableArray<FigureScan> findings) => findings
+        ImmutableArray<FigureScan> findings) => findings
         .Select((finding, index) => (Finding: finding, Index: index))
-        .Where(f => f.Finding.Greatest is not null
-            && (f.Finding.IsJudged || result.Circuit.Requirements.IsEmpty
-                || !result.Circuit.Observations[f.Finding.Figure.Index].IsByDefault))
+        .Where(f => f.Finding.Greatest is { How: not RangeExtremeKind.Flat })
         .OrderBy(f => f.Finding.Room ?? double.PositiveInfinity);
 }

@@ -51,7 +51,7 @@ internal sealed record ScanScale(ScanAxis Axis, double Start, double End)
     private PlotTicks Decades()
     {
         var count = Math.Log10(Axis.To / Axis.From);
-        int[] digits = count > 6 ? [1] : count > 3 ? [1, 3] : [1, 2, 5];
+        int[] digits = count > 6 ? [1] : count > 3 ? [1, 3] : count > 1.2 ? [1, 2, 5] : [1, 2, 3, 4, 5, 6, 8];
         var ticks = ImmutableArray.CreateBuilder<(double, string)>();
         for (var decade = (int)Math.Floor(Math.Log10(Axis.From)); decade <= Math.Log10(Axis.To); decade++)
         {

@@ -43,54 +43,65 @@ public static partial class ScanSummary
         var reached = ScanWords.Reached(result.Circuit, finding.Figure) is { } line
             ? $"{EngineeringNumber.Format(line.Of(worst.Value), line.Unit)}, "
             : "";
-        return $"{reached}{ScanWords.Verdict(finding.Figure, worst.Value)} at "
-            + $"{ScanWords.Place(result.Axes, worst.At)} ({ScanWords.How(worst.How)})";
+        var said = $"{reached}{ScanWords.Verdict(finding.Figure, worst.Value)}";
+        return worst.How == Numerics.RangeExtremeKind.Flat
+            ? $"{said} throughout"
+            : $"{said} at {ScanWords.Place(result.Axes, worst.At)} ({ScanWords.How(worst.How)})";
     }
 
     private static void WriteObserved(SummaryText text, ScanResult result)
     {
-        var observed = result.Findings.Where(f => !f.IsJudged && IsWanted(result, f)).ToArray();
+        var observed = result.Findings.Where(f => !f.IsJudged).ToArray();
         if (observed.Length == 0)
         {
             return;
         }
 
-        text.Heading("What is observed: greatest and least on and between the points");
+        text.Heading("What is observed: the least and the greatest on and between the points");
         text.Table(
-            [Prose, Left, Right, Prose],
-            observed.Take(MostFindings).SelectMany(f => Rows(result, f)));
+            [Prose, Right, Prose, Right, Prose],
+            observed.Take(MostFindings).Select(f => Row(result, f))
+                .Prepend(["", "least", "", "greatest", ""]));
         if (observed.Length > MostFindings)
         {
             text.Paragraph($"and {observed.Length - MostFindings} more figures, in scan.json");
         }
+
+        WriteJumps(text, result);
     }
 
-    // Node voltages that nobody asked for would crowd out what is required.
-    private static bool IsWanted(ScanResult result, FigureScan finding) =>
-        result.Circuit.Requirements.IsEmpty
-        || !result.Circuit.Observations[finding.Figure.Index].IsByDefault;
-
-    private static IEnumerable<ImmutableArray<string>> Rows(ScanResult result, FigureScan finding)
+    private static ImmutableArray<string> Row(ScanResult result, FigureScan finding)
     {
-        if (finding.Greatest is not { } greatest || finding.Least is not { } least)
+        if (finding is not { Greatest: { } greatest, Least: { } least })
         {
-            yield return [finding.Figure.Name, "", "none", ""];
-            yield break;
+            return [finding.Figure.Name, "none", "", "none", ""];
         }
 
-        yield return [finding.Figure.Name, "greatest", Value(greatest), Where(greatest)];
-        yield return ["", "least", Value(least), Where(least)];
-        foreach (var jump in finding.Jumps)
-        {
-            var (before, after) = (
-                ScanWords.Value(finding.Figure, jump.Before), ScanWords.Value(finding.Figure, jump.After));
-            yield return ["", "jumps", $"{before} → {after}", ScanWords.Place(result.Axes[0], jump.At)];
-        }
+        return greatest.How == Numerics.RangeExtremeKind.Flat
+            ? [finding.Figure.Name, Value(greatest), "throughout", "", ""]
+            : [finding.Figure.Name, Value(least), Where(least), Value(greatest), Where(greatest)];
 
         string Value(ScanPlace place) => ScanWords.Value(finding.Figure, place.Value);
 
         string Where(ScanPlace place) =>
-            $"at {ScanWords.Place(result.Axes, place.At)} ({ScanWords.How(place.How)})";
+            $"at {string.Join(", ", result.Axes.Select((axis, i) => axis.Say(place.At[i])))}";
+    }
+
+    private static void WriteJumps(SummaryText text, ScanResult result)
+    {
+        var jumps = result.Findings.SelectMany(f => f.Jumps.Select(jump => (f.Figure, Jump: jump))).ToArray();
+        foreach (var (figure, jump) in jumps.Take(MostFindings))
+        {
+            var (before, after) = (ScanWords.Value(figure, jump.Before), ScanWords.Value(figure, jump.After));
+            text.Paragraph(
+                $"{figure.Name} jumps from {before} to {after} at {ScanWords.Place(result.Axes[0], jump.At)}",
+                hanging: 2);
+        }
+
+        if (jumps.Length > MostFindings)
+        {
+            text.Paragraph($"and {jumps.Length - MostFindings} more jumps, in scan.json");
+        }
     }
 
     /// <summary>Some of the points with the figures that matter most.</summary>
@@ -102,6 +113,11 @@ public static partial class ScanSummary
         }
 
         var columns = ScanColumn.Of(result).Take(3).ToArray();
+        if (columns.Length == 0)
+        {
+            return;
+        }
+
         var count = Math.Min(MostRows - 1, result.Points.Length);
         var shown = Enumerable.Range(0, count)
             .Select(k => result.Points[count == 1 ? 0 : k * (result.Points.Length - 1) / (count - 1)]);
@@ -113,29 +129,36 @@ public static partial class ScanSummary
             .Prepend(ImmutableArray.Create([ScanWords.Subject(axis), .. columns.Select(c => c.Heading)])));
     }
 
-    private static void WriteScatter(SummaryText text, ScatterResult scatter)
+    private static void WriteScatter(SummaryText text, ScanResult result, ScatterResult scatter)
     {
         text.Heading($"With {Words(scatter)}, each instant as likely");
         var rows = scatter.Figures
             .Where(f => f.Quantiles.Length > 0)
             .OrderBy(f => f.Scan.Room ?? double.PositiveInfinity)
             .Take(MostFindings)
-            .Select(f => ImmutableArray.Create(
-                f.Scan.Figure.Name,
-                Said(f, f.Scan.Least?.Value),
-                Said(f, At(f, 0.05)),
-                Said(f, At(f, 0.5)),
-                Said(f, At(f, 0.95)),
-                Said(f, f.Scan.Greatest?.Value),
-                f.Holding is { } holding ? $"{ReportWords.Percent(holding)} hold" : ""));
+            .Select(f => Row(result, f));
         text.Table(
             [Prose, Right, Right, Right, Right, Right, Right],
             rows.Prepend(["", "least", "5 %", "median", "95 %", "greatest", ""]));
+    }
 
-        static double? At(FigureScatter figure, double fraction) =>
-            figure.Quantiles.FirstOrDefault(q => q.Fraction == fraction)?.Value;
+    private static ImmutableArray<string> Row(ScanResult result, FigureScatter figure)
+    {
+        var line = ScanWords.Reached(result.Circuit, figure.Scan.Figure);
+        ImmutableArray<double?> values =
+            [figure.Scan.Least?.Value, At(0.05), At(0.5), At(0.95), figure.Scan.Greatest?.Value];
+        if (line is { Sign: < 0 })
+        {
+            values = [.. values.Reverse()]; // the least margin is the greatest value
+        }
 
-        static string Said(FigureScatter figure, double? value) => ScanWords.Value(figure.Scan.Figure, value);
+        var shown = values.Select(v => line is not null && v is { } margin && double.IsFinite(margin)
+            ? EngineeringNumber.Format(line.Of(margin), line.Unit)
+            : ScanWords.Value(figure.Scan.Figure, v));
+        return [ScanWords.Title(result.Circuit, figure.Scan.Figure), .. shown,
+            figure.Holding is { } holding ? $"{ReportWords.Percent(holding)} hold" : ""];
+
+        double? At(double fraction) => figure.Quantiles.FirstOrDefault(q => q.Fraction == fraction)?.Value;
     }
 
     private static void WriteTroubles(SummaryText text, ScanResult result)
@@ -174,18 +197,24 @@ public static partial class ScanSummary
 internal sealed record ScanColumn(string Heading, Func<StudyPoint?, string> Say)
 {
     /// <summary>The columns that matter, the tightest requirement first.</summary>
-    public static IEnumerable<ScanColumn> Of(ScanResult result) => result.Findings
-        .Select((finding, index) => (finding, index))
-        .Where(f => f.finding.IsJudged
-            || !result.Circuit.Observations[f.finding.Figure.Index].IsByDefault
-            || result.Circuit.Requirements.IsEmpty)
-        .OrderBy(f => f.finding.Room ?? double.PositiveInfinity)
-        .Select(f => Column(result, f.finding.Figure, f.index));
+    public static IEnumerable<ScanColumn> Of(ScanResult result)
+    {
+        var wanted = result.Findings
+            .Select((finding, index) => (Finding: finding, Index: index))
+            .Where(f => f.Finding.Greatest is not { How: Numerics.RangeExtremeKind.Flat })
+            .OrderBy(f => f.Finding.Room ?? double.PositiveInfinity).ToArray();
+        var names = wanted.Select(f => ScanWords.Reached(result.Circuit, f.Finding.Figure)?.Name).ToList();
+        return wanted.Select((f, k) => Column(
+            result, f.Finding.Figure, f.Index, names.Count(n => n == names[k]) > 1));
+    }
 
-    private static ScanColumn Column(ScanResult result, StudyFigure figure, int index)
+    private static ScanColumn Column(ScanResult result, StudyFigure figure, int index, bool isAmbiguous)
     {
         var line = ScanWords.Reached(result.Circuit, figure);
-        return new ScanColumn(line?.Name ?? figure.Name, found => found is null ? "no solution"
+        var heading = line is null ? figure.Name
+            : isAmbiguous ? result.Circuit.Requirements[figure.Index].Statement
+            : line.Name;
+        return new ScanColumn(heading, found => found is null ? "no solution"
             : line is null ? ScanWords.Value(figure, found.Values[index])
             : found.Values[index] is { } margin && double.IsFinite(margin)
                 ? EngineeringNumber.Format(line.Of(margin), line.Unit)

@@ -36,7 +36,7 @@ public static partial class ScanSummary
 
         if (result.Scatter is { } scatter)
         {
-            WriteScatter(text, scatter);
+            WriteScatter(text, result, scatter);
         }
 
         WriteTroubles(text, result);

@@ -65,11 +65,12 @@ internal static class ScanWords
     /// <summary>How an extreme was found.</summary>
     public static string How(RangeExtremeKind how) => how switch
     {
-        RangeExtremeKind.Smooth => "slope zero there",
-        RangeExtremeKind.Kink => "at a kink: another crest takes over",
-        RangeExtremeKind.End => "at an end of the range",
+        RangeExtremeKind.Smooth => "slope zero",
+        RangeExtremeKind.Kink => "a kink: another crest takes over",
+        RangeExtremeKind.End => "end of the range",
         RangeExtremeKind.Jump => "beside a jump",
-        RangeExtremeKind.Compared => "by comparing values",
+        RangeExtremeKind.Compared => "values compared",
+        RangeExtremeKind.Flat => "the same throughout",
         _ => throw new System.Diagnostics.UnreachableException($"no words for {how}"),
     };
 
@@ -100,6 +101,21 @@ internal static class ScanWords
         : value >= 0
             ? $"{Value(figure, value)} to spare"
             : double.IsFinite(value) ? $"broken by {Value(figure, -value)}" : "broken without limit";
+
+    /// <summary>What a panel shows: <c>greatest current through Ls (at most 200 A from 1.8 s to 6
+    /// s)</c>.</summary>
+    public static string Title(Circuit circuit, StudyFigure figure)
+    {
+        if (Reached(circuit, figure) is not { } line)
+        {
+            return figure.Name;
+        }
+
+        var requirement = circuit.Requirements[figure.Index];
+        return requirement.Statement.StartsWith(requirement.Name + " ", StringComparison.Ordinal)
+            ? $"{line.Name} ({requirement.Statement[(requirement.Name.Length + 1)..]})"
+            : line.Name;
+    }
 
     /// <summary>The extreme that a margin speaks of and its limit, where the bound is one-sided or the same to
     /// both sides.</summary>

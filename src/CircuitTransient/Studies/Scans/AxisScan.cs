@@ -6,8 +6,15 @@ namespace CircuitTransient.Studies.Scans;
 
 /// <summary>What one figure does along one scanned value: jumps, extremes and breaks, on the points and
 /// between them.</summary>
-internal sealed class AxisScan(Circuit circuit, StudyFigure figure, Func<double, SlopedSample> function)
+/// <param name="circuit">The circuit.</param>
+/// <param name="figure">The figure.</param>
+/// <param name="function">The figure anywhere in the range.</param>
+/// <param name="scale">How large the figure, or what it is the extreme of, is over the points.</param>
+internal sealed class AxisScan(
+    Circuit circuit, StudyFigure figure, Func<double, SlopedSample> function, double scale)
 {
+    private const double Rounding = 1e-10; // of the scale: what is less is no change of the figure
+
     private readonly bool isJudged = FigureScan.IsJudgedKind(figure.Kind);
 
     /// <summary>Searches.</summary>
@@ -16,6 +23,11 @@ internal sealed class AxisScan(Circuit circuit, StudyFigure figure, Func<double,
     /// <param name="timeAt">When the figure stands at a place.</param>
     public FigureScan Run(ImmutableArray<SlopedSample> given, Func<double, double?> timeAt)
     {
+        if (IsFlat(given))
+        {
+            return Flat(given, timeAt);
+        }
+
         var jumps = RangeJump.Find(given, function);
         var looked = Merge(given, jumps.SelectMany(j => new[] { j.Before, j.After }));
         var greatest = RangeExtremeSearch.Greatest(looked, function);
@@ -31,6 +43,23 @@ internal sealed class AxisScan(Circuit circuit, StudyFigure figure, Func<double,
             breaks,
             holding,
             !isJudged || looked.All(s => double.IsNaN(s.Y) || Judged(s).Y >= 0));
+        return findings with { Room = ScanRoom.Of(circuit, findings) };
+    }
+
+    private bool IsFlat(ImmutableArray<SlopedSample> given)
+    {
+        var values = given.Select(s => s.Y).ToArray();
+        return values.All(double.IsFinite) && values.Max() - values.Min() <= Rounding * scale;
+    }
+
+    private FigureScan Flat(ImmutableArray<SlopedSample> given, Func<double, double?> timeAt)
+    {
+        var (first, last) = (given[0], given[^1]);
+        var value = Math.Abs(first.Y) <= Rounding * scale ? 0 : first.Y;
+        var place = new ScanPlace([first.X], value, timeAt(first.X), RangeExtremeKind.Flat);
+        var holds = !isJudged || Judged(first).Y >= 0;
+        var findings = new FigureScan(
+            figure, place, place, [], [], isJudged && holds ? [new ScanStretch(first.X, last.X)] : [], holds);
         return findings with { Room = ScanRoom.Of(circuit, findings) };
     }
 

@@ -11,7 +11,9 @@ namespace CircuitTransient.Studies.Scans;
 internal static class FamilyScan
 {
     private const int MostSpread = 9;
-    private const int SampleCount = 900;
+    private const int SampleCount = 700;
+    private const int CloseUpCount = 400;
+    private const double CloseUpLength = 6; // times as long as from the switching to the peak
 
     /// <summary>The family; null where there is no waveform to draw.</summary>
     public static ScanFamily? Of(
@@ -27,7 +29,8 @@ internal static class FamilyScan
             .Select(place => Member(plan, subject, place.At, place.Role, cancellation))
             .OfType<FamilyMember>().ToImmutableArray();
         return members.IsEmpty ? null
-            : new ScanFamily(subject.Name, subject.Unit, subject.Requirement, members);
+            : new ScanFamily(
+                subject.Name, subject.Unit, subject.Requirement, Moved(plan)?.Name, members);
     }
 
     /// <summary>The quantity of the requirement that comes nearest to breaking; where none is, of what was
@@ -68,12 +71,16 @@ internal static class FamilyScan
         var count = Math.Min(MostSpread, solved.Length);
         var spread = Enumerable.Range(0, count)
             .Select(k => solved[count == 1 ? 0 : k * (solved.Length - 1) / (count - 1)].At);
+        ImmutableArray<double> written = [.. plan.Axes.Select((_, i) => plan.Varied.Values[i].Nominal)];
         foreach (var at in plan.Axes.Length == 1 ? spread : Corners(plan))
         {
-            yield return (at, FamilyRole.Spread);
+            if (!at.SequenceEqual(written) && !(worst is { } w && at.SequenceEqual(w)))
+            {
+                yield return (at, FamilyRole.Spread);
+            }
         }
 
-        yield return ([.. plan.Axes.Select((_, i) => plan.Varied.Values[i].Nominal)], FamilyRole.AsWritten);
+        yield return (written, FamilyRole.AsWritten);
         if (worst is { } place)
         {
             yield return (place, FamilyRole.Worst);
@@ -108,12 +115,26 @@ internal static class FamilyScan
 
         var max = ExtremeSearch.Greatest(curve, open.From, open.To);
         var min = ExtremeSearch.Least(curve, open.From, open.To);
-        var times = SampleTimes.Of(
-            solution, SampleCount, [max.Time, min.Time], ModeRelevance.Of(solution, [curve]));
         var peak = Math.Abs(min.Value) > Math.Abs(max.Value) ? min.Time : max.Time;
-        var start = solution.Occurrences.LastOrDefault(o => o.Time <= peak)?.Time ?? 0;
+        var start = Math.Max(solution.Occurrences.LastOrDefault(o => o.Time <= peak)?.Time ?? 0, open.From);
+        var times = SampleTimes.Of(
+            solution, SampleCount, [max.Time, min.Time, .. CloseUp(start, peak, solution.Until)],
+            ModeRelevance.Of(solution, [curve]));
         return new FamilyMember(
-            at, role, times, Waveform.Of([curve], solution, times)[0], Math.Max(start, open.From), peak, open.To);
+            at, role, times, Waveform.Of([curve], solution, times)[0],
+            solution.Occurrences.FirstOrDefault(o => o.Event == Moved(plan)?.Event)?.Time ?? 0, start, peak,
+            open.To);
+    }
+
+    /// <summary>The event that is scanned; null where none is.</summary>
+    private static VariedValue? Moved(ScanPlan plan) =>
+        plan.Axes.FirstOrDefault(a => a.Varied.Kind == VariedKind.EventTime)?.Varied;
+
+    /// <summary>Instants close together about a peak that is short in the whole study.</summary>
+    private static IEnumerable<double> CloseUp(double start, double peak, double until)
+    {
+        var length = Math.Min(CloseUpLength * (peak - start), until - start);
+        return Enumerable.Range(0, CloseUpCount).Select(k => start + (length * k / CloseUpCount));
     }
 }
 

@@ -108,20 +108,22 @@ public sealed record ScanStretch(double From, double To);
 /// <param name="Unit">Its unit.</param>
 /// <param name="Requirement">Index of the requirement on it that comes nearest to breaking; −1 where none
 /// is.</param>
+/// <param name="Event">The scanned event; null where none is.</param>
 public sealed record ScanFamily(
-    string Name, string Unit, int Requirement, ImmutableArray<FamilyMember> Members);
+    string Name, string Unit, int Requirement, string? Event, ImmutableArray<FamilyMember> Members);
 
 /// <summary>One waveform of a family.</summary>
 /// <param name="At">The scanned values in SI.</param>
 /// <param name="Role">Why it was taken.</param>
 /// <param name="Times">In seconds.</param>
 /// <param name="Values">In the family's unit.</param>
+/// <param name="Origin">When the scanned event takes place, in seconds; 0 where none is scanned.</param>
 /// <param name="Start">The last switching before its peak, or when it begins to count, in seconds.</param>
 /// <param name="Peak">When its magnitude is greatest while it counts, in seconds.</param>
 /// <param name="End">Until when it counts, in seconds.</param>
 public sealed record FamilyMember(
     ImmutableArray<double> At, FamilyRole Role, ImmutableArray<double> Times, ImmutableArray<double> Values,
-    double Start, double Peak, double End);
+    double Origin, double Start, double Peak, double End);
 
 /// <summary>Why a waveform stands for its family.</summary>
 public enum FamilyRole

@@ -21,7 +21,7 @@ public sealed class Scanner
     private Scanner(ScanPlan plan, Action solved, CancellationToken cancellation)
     {
         (this.plan, this.solved, this.cancellation) = (plan, solved, cancellation);
-        figures = StudyFigures.Of(plan.Varied.Circuit);
+        figures = [.. StudyFigures.Of(plan.Varied.Circuit).Where(IsWanted)];
         nominal = [.. plan.Varied.Values.Select(v => v.Nominal)];
         function = new ScanFunction(plan.Varied, figures, cancellation);
     }
@@ -37,6 +37,12 @@ public sealed class Scanner
     /// <param name="cancellation">Stops the work.</param>
     public static ScanResult Run(ScanPlan plan, Action solved, CancellationToken cancellation = default) =>
         new Scanner(plan, solved, cancellation).Run();
+
+    /// <summary>Node voltages that are only observed because nothing else was would crowd out what is
+    /// required.</summary>
+    private bool IsWanted(StudyFigure figure) => FigureScan.IsJudgedKind(figure.Kind)
+        || plan.Varied.Circuit.Requirements.IsEmpty
+        || !plan.Varied.Circuit.Observations[figure.Index].IsByDefault;
 
     private ScanResult Run()
     {
@@ -70,7 +76,7 @@ public sealed class Scanner
         {
             var samples = Samples(axis, points, f);
             found[f] = new AxisScan(
-                plan.Varied.Circuit, figures[f], function.Along(index, nominal, f))
+                plan.Varied.Circuit, figures[f], function.Along(index, nominal, f), Scale(points, f))
                 .Run(samples, x => function.Time(Put(index, x), f));
         });
         return ImmutableCollectionsMarshal.AsImmutableArray(found);
@@ -84,6 +90,19 @@ public sealed class Scanner
             ScanFunction.Judged(figures[figure], p.Found, p.Found?.Values[figure]),
             p.Slopes.IsDefaultOrEmpty ? double.NaN : p.Slopes[figure])),
     ];
+
+    /// <summary>The greatest magnitude of a figure over the points; of an extreme that of the other extreme
+    /// too.</summary>
+    private double Scale(ImmutableArray<ScanPoint> points, int figure)
+    {
+        var own = figures[figure];
+        var isExtreme = own.Kind is StudyFigureKind.Maximum or StudyFigureKind.Minimum;
+        var alike = Enumerable.Range(0, figures.Length).Where(f => f == figure
+            || (isExtreme && figures[f].Index == own.Index
+                && figures[f].Kind is StudyFigureKind.Maximum or StudyFigureKind.Minimum)).ToArray();
+        return points.SelectMany(p => alike.Select(f => Math.Abs(p.Found?.Values[f] ?? 0)))
+            .Where(double.IsFinite).DefaultIfEmpty().Max();
+    }
 
     private double[] Put(int index, double value)
     {
