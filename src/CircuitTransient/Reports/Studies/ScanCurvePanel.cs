@@ -113,7 +113,7 @@ internal sealed class ScanCurvePanel
 
     private ImmutableArray<PlotPoint> Samples(ImmutableArray<ScanPoint> points, int index)
     {
-        var samples = points
+        var shown = points
             .Select((p, i) => (X: axis.Values[i], Y: Shown(p.Found?.Values[index] ?? double.NaN)))
             .Concat(new[] { finding.Greatest, finding.Least }.OfType<ScanPlace>()
                 .Select(p => (X: p.At[0], Y: Shown(p.Value))))
@@ -123,7 +123,7 @@ internal sealed class ScanCurvePanel
                 (X: j.At, Y: double.NaN),
                 (X: Math.BitIncrement(j.At), Y: Shown(j.After)),
             }));
-        return [.. samples.OrderBy(s => s.X).Select(s => new PlotPoint(scale.Map(s.X), s.Y))];
+        return [.. shown.OrderBy(s => s.X).Select(s => new PlotPoint(scale.Map(s.X), s.Y))];
     }
 
     private IEnumerable<Shape> BrokenStretches()

@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using CircuitTransient.Studies.Scans;
 
 namespace CircuitTransient.Reports.Studies;
 

@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using System.Text.Json;
 using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
@@ -174,7 +173,7 @@ public static class ScanJson
             });
             if (figure.Scan.IsJudged)
             {
-                json.Number("holding", figure.Holding);
+                json.Number("holdingFraction", figure.Holding);
             }
         });
     }

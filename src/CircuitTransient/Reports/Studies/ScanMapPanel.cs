@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Scans;
 using CircuitTransient.Text;

@@ -138,24 +138,24 @@ public static partial class ScanSummary
             .Take(MostFindings)
             .Select(f => Row(result, f));
         text.Table(
-            [Prose, Right, Right, Right, Right, Right, Right],
-            rows.Prepend(["", "least", "5 %", "median", "95 %", "greatest", ""]));
+            [Prose, Right, Right, Right, Right, Right],
+            rows.Prepend(["", "least", "median", "95 %", "greatest", ""]));
     }
 
     private static ImmutableArray<string> Row(ScanResult result, FigureScatter figure)
     {
         var line = ScanWords.Reached(result.Circuit, figure.Scan.Figure);
         ImmutableArray<double?> values =
-            [figure.Scan.Least?.Value, At(0.05), At(0.5), At(0.95), figure.Scan.Greatest?.Value];
+            [figure.Scan.Least?.Value, At(0.5), At(0.95), figure.Scan.Greatest?.Value];
         if (line is { Sign: < 0 })
         {
-            values = [.. values.Reverse()]; // the least margin is the greatest value
+            values = [figure.Scan.Greatest?.Value, At(0.5), At(0.05), figure.Scan.Least?.Value];
         }
 
         var shown = values.Select(v => line is not null && v is { } margin && double.IsFinite(margin)
             ? EngineeringNumber.Format(line.Of(margin), line.Unit)
             : ScanWords.Value(figure.Scan.Figure, v));
-        return [ScanWords.Title(result.Circuit, figure.Scan.Figure), .. shown,
+        return [line?.Name ?? figure.Scan.Figure.Name, .. shown,
             figure.Holding is { } holding ? $"{ReportWords.Percent(holding)} hold" : ""];
 
         double? At(double fraction) => figure.Quantiles.FirstOrDefault(q => q.Fraction == fraction)?.Value;

@@ -1,7 +1,7 @@
 using System.Collections.Immutable;
+using CircuitTransient.Numerics;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Scans;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Reports.Studies;
 
@@ -129,12 +129,16 @@ public static partial class ScanSummary
     internal static string Searched(ScanResult result)
     {
         var scans = result.Findings.Concat(result.Scatter?.Figures.Select(f => f.Scan) ?? []).ToArray();
-        var compared = scans.Any(s => s.Breaks.Any(b => !b.IsBySlope)
-            || s.Greatest?.How == Numerics.RangeExtremeKind.Compared
-            || s.Least?.How == Numerics.RangeExtremeKind.Compared);
-        var how = compared
-            ? "root-finding on exact slopes, and where there is none by comparing exact values"
-            : "root-finding on exact slopes";
+        var kinds = scans.SelectMany(s => new[] { s.Greatest?.How, s.Least?.How }).ToArray();
+        var breaks = scans.SelectMany(s => s.Breaks).ToArray();
+        var isCompared = kinds.Contains(RangeExtremeKind.Compared) || breaks.Any(b => !b.IsBySlope);
+        var isBySlope = result.HasSlopes || breaks.Any(b => b.IsBySlope);
+        var how = (isBySlope, isCompared) switch
+        {
+            (true, false) => "root-finding on exact slopes",
+            (true, true) => "root-finding on exact slopes, and where there is none by comparing exact values",
+            _ => "comparing exact values",
+        };
         return "Every figure is an exact solution of its own. Between the points extremes and breaks were "
             + $"searched by {how}; what rises and falls again between two neighbouring points, without showing "
             + "at either, is not seen.";

@@ -26,6 +26,10 @@ public sealed record ScanResult(
     /// <summary>The points at which the circuit has no unique solution, or is none.</summary>
     public int UnsolvedCount => Points.Count(p => p.Found is null) + (Scatter?.UnsolvedCount ?? 0);
 
+    /// <summary>Whether slopes were known at any point.</summary>
+    public bool HasSlopes => Points.Concat(Scatter?.Points ?? [])
+        .Any(p => p.Slopes.Any(double.IsFinite));
+
     /// <summary>Whether every requirement and rating holds at every point and between them, as far as was
     /// searched.</summary>
     public bool AllHold => Findings.All(f => f.HoldsThroughout)
