@@ -8,6 +8,7 @@ namespace CircuitTransient.Studies.Scans;
 public sealed class Scanner
 {
     private const int ScatterSteps = 240;
+    private const double Step = 1e-5; // of the range: short beside the spacing of points, long beside rounding
 
     private static readonly ImmutableArray<double> Fractions = [0.01, 0.05, 0.25, 0.5, 0.75, 0.95, 0.99];
 
@@ -47,6 +48,14 @@ public sealed class Scanner
     private ScanResult Run()
     {
         var written = function.Point(nominal, [.. plan.Axes.Select((_, i) => nominal[i])]);
+        for (var axis = 0; axis < plan.Axes.Length; axis++)
+        {
+            var values = plan.Axes[axis].Values;
+            function.Compare(
+                axis, [values[values.Length / 4], values[values.Length / 2], values[3 * values.Length / 4]],
+                Step * (values[^1] - values[0]), nominal);
+        }
+
         var points = plan.Axes.IsEmpty
             ? []
             : ScanGrid.Solve(ScanGrid.Places(plan.Axes), At, solved, cancellation);
@@ -66,7 +75,7 @@ public sealed class Scanner
     {
         var values = (double[])nominal.Clone();
         at.CopyTo(values);
-        return function.Point(values, at);
+        return function.Point(values, at, plan.Axes.Length == 1 ? 0 : -1);
     }
 
     private ImmutableArray<FigureScan> Between(ScanAxis axis, int index, ImmutableArray<ScanPoint> points)
@@ -120,7 +129,8 @@ public sealed class Scanner
                     .Select(i => scatter.From + ((scatter.To - scatter.From) * i / ScatterSteps)),
             ]);
         var points = ScanGrid.Solve(
-            ScanGrid.Places([axis]), at => function.Point(Put(scatter.Index, at[0]), at), solved, cancellation);
+            ScanGrid.Places([axis]), 
+            at => function.Point(Put(scatter.Index, at[0]), at, scatter.Index), solved, cancellation);
         var scans = Between(axis, scatter.Index, points);
         return new ScatterResult(
             scatter, axis, points,

@@ -23,6 +23,7 @@ public class ScannerTests
 
         var found = Assert.Single(margin.Breaks);
         Assert.Equal(1500, found.At[0], 1e-8);
+        Assert.True(found.IsBySlope);
         Assert.False(found.HoldsBelow);
         Assert.Equal([new ScanStretch(found.At[0], 5000)], margin.Holding);
         Assert.Equal((500, 4 - (10 / 1.5)), (margin.Worst!.At[0], margin.Worst.Value));
@@ -36,7 +37,7 @@ public class ScannerTests
             .Findings[^1];
 
         Assert.Equal(25.0 / 40, rating.Greatest!.Value, 1e-12);
-        Assert.Equal(1000, rating.Greatest.At[0], 1e-3); // the crest is flat
+        Assert.Equal(1000, rating.Greatest.At[0], 1e-4); // the slope's root, not the flat crest's
         Assert.True(rating.HoldsThroughout);
     }
 
@@ -56,8 +57,8 @@ public class ScannerTests
             ("--phase", "E from -64° to 60° in 9° steps")).Of("max of current through L");
 
         Assert.Equal(2.551751173, current.Greatest!.Value, 1e-9);
-        Assert.Equal(0, current.Greatest.At[0], 1e-4);
-        Assert.Equal(RangeExtremeKind.Compared, current.Greatest.How);
+        Assert.Equal(0, current.Greatest.At[0], 1e-8); // radians
+        Assert.Equal(RangeExtremeKind.Smooth, current.Greatest.How);
     }
 
     [Fact]
@@ -111,6 +112,7 @@ public class ScannerTests
         var margin = result.Findings[^1];
         Assert.Equal(1e-3 * Math.Log(2), Assert.Single(margin.Breaks).At[0], 1e-12);
         Assert.True(margin.Breaks[0].HoldsBelow);
+        Assert.False(margin.Breaks[0].IsBySlope); // parts' derivatives know nothing of a pulse's width
     }
 
     [Fact]
