@@ -67,9 +67,10 @@ internal sealed class ScanCommand : Command
     {
         // In the order they were said: the first runs across a map, the second upwards.
         var scanned = parsed.Tokens.Zip(parsed.Tokens.Skip(1))
-            .Select(pair => (Kind: KindOf(pair.First.Value), Option: pair.First.Value, Text: pair.Second.Value))
+            .Select(pair => (Kind: KindOf(pair.First.Value), Words: new SourceText(
+                pair.First.Value, pair.Second.Value)))
             .Where(said => said.Kind is not null)
-            .Select(said => ScannedParser.Parse(new SourceText(said.Option, said.Text), said.Kind!.Value))
+            .Select(said => ScannedParser.Parse(said.Words, said.Kind!.Value))
             .ToImmutableArray();
         var words = parsed.GetValue(scatter);
         var scattered = words is null ? null : ScatterParser.Parse(new SourceText(scatter.Name, words));

@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports.Html;
 using CircuitTransient.Reports.Studies;
@@ -38,10 +37,10 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
         var (all, done) = (Scanner.PointCount(plan), 0);
         var result = Scanner.Run(plan, Count, cancellation);
         progress.Dispose();
-        if (result.Points.All(p => p.Found is null) && result.Scatter?.Points.All(p => p.Found is null) != false)
+        var points = result.Points.Concat(result.Scatter?.Points ?? []).ToArray();
+        if (points.All(p => p.Found is null))
         {
-            var trouble = result.Points.Concat(result.Scatter?.Points ?? []).First().Trouble;
-            streams.Complain($"{file}: no point of the scan has a solution: {trouble}");
+            streams.Complain($"{file}: no point of the scan has a solution: {points[0].Trouble}");
             return ExitStatus.NoUniqueSolution;
         }
 

@@ -48,7 +48,8 @@ public sealed record StepsADecadeSyntax(TextSpan Span, int Count) : SpacingSynta
 /// <param name="Series">How many values a decade: 3, 6, 12, 24, 48, 96 or 192.</param>
 public sealed record PreferredValuesSyntax(TextSpan Span, int Series) : SpacingSyntax(Span);
 
-/// <summary>By how much the instant of an event scatters, as written: <c>Kmain closes by 0.5 ms</c>.</summary>
+/// <summary>By how much the instant of an event scatters, as written: <c>Kmain closes by 0.5
+/// ms</c>.</summary>
 /// <param name="Switch">The switch; null where only the time was written.</param>
 /// <param name="NameSpan">Where the event is named.</param>
 /// <param name="By">How far to either side, in seconds.</param>

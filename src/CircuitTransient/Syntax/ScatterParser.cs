@@ -63,7 +63,8 @@ public static class ScatterParser
         }
         else if (by.Value <= 0)
         {
-            cursor.Error(by.Span, $"a scatter of `{text}` is none", "write how far to either side, more than 0 s");
+            cursor.Error(by.Span, $"a scatter of `{text}` is none",
+                "write how far to either side, more than 0 s");
         }
         else
         {

@@ -33,7 +33,8 @@ public sealed class ScanTests : IDisposable
         Assert.Equal((ExitStatus.RequirementBroken, ""), (run.Status, run.Error));
         var lines = run.Output.Split('\n');
         // 48 V (1 + exp(−π ζ/√(1 − ζ²))) = 80 V with ζ = R/2 · √(C/L): R = 0.1619 Ω
-        Assert.Equal("For R everything required and rated breaks below 161.9 mΩ, holds from there on.", lines[1]);
+        Assert.Equal(
+            "For R everything required and rated breaks below 161.9 mΩ, holds from there on.", lines[1]);
         Assert.All(lines, line => Assert.True(line.Length <= 100, line));
         Assert.Equal(
             ["plant/report.html", "plant/scan.csv", "plant/scan.json", "plant/scan.png", "plant/scan.svg"],
@@ -92,7 +93,8 @@ public sealed class ScanTests : IDisposable
 
         var page = File.ReadAllText(Path.Combine(commandLine.Results, "plant", "report.html"));
         Assert.Contains("For R everything required and rated", page);
-        Assert.Contains("circuit-transient scan plant.cause --part &#39;R from 50 mΩ to 1 Ω in 4 steps&#39;", page);
+        Assert.Contains(
+            "circuit-transient scan plant.cause --part &#39;R from 50 mΩ to 1 Ω in 4 steps&#39;", page);
     }
 
     [Theory]

@@ -13,7 +13,8 @@ public class RangeExtremeSearchTests
 
         Assert.Equal(RangeExtremeKind.Smooth, found.Kind);
         Assert.Equal(1, found.At.Y, 1e-15);
-        Assert.Equal(Math.PI / 2, found.At.X, 1e-9); // the slope is exact, so the place is as good as the value
+        // the slope is exact, so the place is as good as the value
+        Assert.Equal(Math.PI / 2, found.At.X, 1e-9);
     }
 
     [Fact]

@@ -32,7 +32,7 @@ public class RangeJumpTests
     {
         static SlopedSample Step(double x) => new(x, x < 0.5001 ? 7 : 25, double.NaN);
 
-        Assert.Equal(0.5001,
-            Assert.Single(RangeJump.Find(RangeExtremeSearchTests.Samples(Step, 0, 1, 3), Step)).After.X, 1e-10);
+        var jump = Assert.Single(RangeJump.Find(RangeExtremeSearchTests.Samples(Step, 0, 1, 3), Step));
+        Assert.Equal(0.5001, jump.After.X, 1e-10);
     }
 }

@@ -34,8 +34,13 @@ public class ScannedParserTests
     }
 
     [Fact]
-    public void A_name_may_stand_alone() =>
-        Assert.Null(ScannedParser.Parse(new SourceText("--event", "KB opens"), ScannedKind.Event).Value!.Range);
+    public void A_name_may_stand_alone()
+    {
+        var scanned = ScannedParser.Parse(new SourceText("--event", "KB opens"), ScannedKind.Event).Value!;
+
+        Assert.Equal(("KB", false), (scanned.Name, scanned.Closes));
+        Assert.Null(scanned.Range);
+    }
 
     [Theory]
     [InlineData(

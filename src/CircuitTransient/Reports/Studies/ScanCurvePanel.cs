@@ -5,8 +5,8 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Reports.Studies;
 
-/// <summary>A figure against the scanned value: its line through the points, the limit, the worst place, where
-/// it begins to break, the value as written.</summary>
+/// <summary>A figure against the scanned value: its line through the points, the limit, the worst place,
+/// where it begins to break, the value as written.</summary>
 internal sealed class ScanCurvePanel
 {
     private const double Height = 190;
@@ -48,7 +48,8 @@ internal sealed class ScanCurvePanel
         samples = Samples(points, index);
         var shown = samples.Select(s => s.Y).ToArray();
         var (least, greatest) = ScanFrame.Range(shown);
-        if (limit is { } l && l > least - (1.5 * (greatest - least)) && l < greatest + (1.5 * (greatest - least)))
+        var reach = 1.5 * (greatest - least);
+        if (limit is { } l && l > least - reach && l < greatest + reach)
         {
             (least, greatest) = ScanFrame.Range([.. shown, l]);
         }
@@ -99,7 +100,8 @@ internal sealed class ScanCurvePanel
         }
     }
 
-    /// <summary>The place that is marked: the worst of what is judged, the extreme of what is observed.</summary>
+    /// <summary>The place that is marked: the worst of what is judged, the extreme of what is
+    /// observed.</summary>
     private ScanPlace? Marked => finding.Worst
         ?? (finding.Figure.Kind == StudyFigureKind.Minimum ? finding.Least : finding.Greatest);
 

@@ -23,13 +23,15 @@ internal static class ScanFamilyPanel
         var limits = Limits(result.Circuit, family);
         var drawn = lines.SelectMany(l => l.Samples.Select(s => s.Y)).ToArray();
         var (least, greatest) = ScanFrame.Range(drawn);
-        var near = limits.Where(l => l.Value > least - (greatest - least) && l.Value < greatest + (greatest - least));
+        var span = greatest - least;
+        var near = limits.Where(l => l.Value > least - span && l.Value < greatest + span);
         (least, greatest) = ScanFrame.Range([.. drawn, .. near.Select(l => l.Value)]);
         var time = new PlotScale(from, to, ScanFrame.Left, ScanFrame.Right);
         var ticks = time.Ticks("s", 9);
         var frame = new ScanFrame(
             fonts, top + 26, Height, [.. ticks.Marks.Select(m => (time.Place(m.Value), m.Label))],
-            family.Event is null ? $"time ({ticks.Unit})" : $"{ticks.Unit} after {family.Event}", new PlotScale(least, greatest, top + 26 + Height, top + 26), family.Unit);
+            family.Event is null ? $"time ({ticks.Unit})" : $"{ticks.Unit} after {family.Event}",
+            new PlotScale(least, greatest, top + 26 + Height, top + 26), family.Unit);
         return (
             [
                 .. frame.Shapes($"{family.Name}, with {ScanWords.Range(result)}"),
@@ -64,7 +66,8 @@ internal static class ScanFamilyPanel
 
     private static ImmutableArray<(double Value, string Words)> Limits(Circuit circuit, ScanFamily family)
     {
-        if (family.Requirement < 0 || circuit.Requirements[family.Requirement].Bound is not Circuits.Limits limits)
+        if (family.Requirement < 0
+            || circuit.Requirements[family.Requirement].Bound is not Circuits.Limits limits)
         {
             return [];
         }
@@ -115,14 +118,22 @@ internal static class ScanFamilyPanel
             yield return new TextShape(
                 ScanFrame.Right + 20, places[i] + 4,
                 frame.Fonts.Fitted(name, 11, PlotPanel.Width - ScanFrame.Right - 24, isStrong), 11,
-                isStrong ? PlotStyle.Ink : member.Role == FamilyRole.AsWritten ? PlotStyle.Accent : PlotStyle.Grey,
-                IsStrong: isStrong);
+                InkOf(member.Role), IsStrong: isStrong);
         }
     }
+
+    private static string InkOf(FamilyRole role) => role switch
+    {
+        FamilyRole.Worst => PlotStyle.Ink,
+        FamilyRole.AsWritten => PlotStyle.Accent,
+        _ => PlotStyle.Grey,
+    };
 
     private static double LastPlace(ScanFrame frame, ImmutableArray<PlotPoint> samples)
     {
         var last = samples.LastOrDefault(s => double.IsFinite(s.Y), new PlotPoint(0, double.NaN)).Y;
-        return double.IsFinite(last) ? Math.Clamp(frame.Level.Place(last), frame.Top, frame.Bottom) : double.NaN;
+        return double.IsFinite(last)
+            ? Math.Clamp(frame.Level.Place(last), frame.Top, frame.Bottom)
+            : double.NaN;
     }
 }

@@ -48,8 +48,8 @@ internal sealed record ScanFrame(
 
         yield return new TextShape(
             Right + 22, Bottom + 16,
-            Fonts.Fitted(AcrossName, Small, PlotPanel.Width - Right - 26, isStrong: true), Small, PlotStyle.Ink,
-            IsStrong: true);
+            Fonts.Fitted(AcrossName, Small, PlotPanel.Width - Right - 26, isStrong: true), Small,
+            PlotStyle.Ink, IsStrong: true);
     }
 
     /// <summary>The marks of a scanned value, and its name with the unit they are in.</summary>

@@ -24,7 +24,8 @@ internal sealed class ScanMapPanel
 
     private ScanMapPanel(ScanResult result, FigureScan finding, int index, PlotFonts fonts, double top)
     {
-        (this.result, this.finding, this.index, this.fonts, this.top) = (result, finding, index, fonts, top + 26);
+        (this.result, this.finding, this.index) = (result, finding, index);
+        (this.fonts, this.top) = (fonts, top + 26);
         across = new ScanScale(result.Axes[0], ScanFrame.Left, Right);
         upwards = new ScanScale(result.Axes[1], this.top + Height, this.top);
         line = ScanWords.Reached(result.Circuit, finding.Figure);
@@ -66,8 +67,9 @@ internal sealed class ScanMapPanel
     {
         yield return new TextShape(
             ScanFrame.Left, top - 12,
-            fonts.Fitted(ScanWords.Title(result.Circuit, finding.Figure), 14, Right - ScanFrame.Left, isStrong: true), 14,
-            PlotStyle.Ink, IsStrong: true);
+            fonts.Fitted(
+                ScanWords.Title(result.Circuit, finding.Figure), 14, Right - ScanFrame.Left, isStrong: true),
+            14, PlotStyle.Ink, IsStrong: true);
         foreach (var shape in Cells().Concat(Axes()).Concat(Contours()).Concat(Breaks()).Concat(Worst()))
         {
             yield return shape;
@@ -141,7 +143,8 @@ internal sealed class ScanMapPanel
         var unit = ticks.Unit.Length > 0 ? $" ({ticks.Unit})" : "";
         yield return new TextShape(
             Right + 22, top + 12,
-            fonts.Fitted($"upwards: {ScanWords.Subject(upwards.Axis)}{unit}", ScanFrame.Small, 184, isStrong: true),
+            fonts.Fitted(
+                $"upwards: {ScanWords.Subject(upwards.Axis)}{unit}", ScanFrame.Small, 184, isStrong: true),
             ScanFrame.Small, PlotStyle.Ink, IsStrong: true);
     }
 

@@ -37,7 +37,8 @@ public static class ScanPlot
             ScanFrame.Left, 34, fonts.Fitted(title, 19, width, isStrong: true), 19, PlotStyle.Ink,
             IsStrong: true));
         shapes.Add(new TextShape(
-            ScanFrame.Left, 55, fonts.Fitted(ScanSummary.Verdict(result), 12.5, width), 12.5, PlotStyle.Grey));
+            ScanFrame.Left, 55, fonts.Fitted(ScanSummary.Verdict(result), 12.5, width), 12.5,
+            PlotStyle.Grey));
         var y = 76.0;
         foreach (var panel in Panels(result, fonts))
         {

@@ -18,7 +18,8 @@ public static class ScanSection
 
     private static Markup Judged(ScanResult result)
     {
-        var judged = result.Findings.Where(f => f.IsJudged && f.Worst is not null).OrderBy(f => f.Room).ToArray();
+        var judged = result.Findings.Where(f => f.IsJudged && f.Worst is not null)
+            .OrderBy(f => f.Room).ToArray();
         if (judged.Length == 0)
         {
             return default;

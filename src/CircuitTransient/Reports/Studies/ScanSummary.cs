@@ -96,10 +96,26 @@ public static partial class ScanSummary
         }
 
         var common = ScanStretches.Common(judged.Select(f => f.Holding));
-        return common.IsEmpty
+        return (common.IsEmpty
             ? $"Something is broken throughout {range}."
             : $"For {ScanWords.Subject(axis)} everything required and rated "
-                + $"{ScanWords.Holding(axis, common)}.";
+                + $"{ScanWords.Holding(axis, common)}.") + PreferredThatHold(axis, common);
+    }
+
+    /// <summary>Which of the preferred values hold, for only those can be bought.</summary>
+    private static string PreferredThatHold(ScanAxis axis, ImmutableArray<ScanStretch> common)
+    {
+        const int few = 6;
+        if (axis.Spacing != ScanSpacing.Preferred)
+        {
+            return "";
+        }
+
+        var holding = axis.Values.Where(v => common.Any(s => v >= s.From && v <= s.To)).ToArray();
+        var named = holding.Length is 0 or > few
+            ? ""
+            : $": {string.Join(", ", holding.Select(v => axis.Say(v, 3)))}";
+        return $" Of the {axis.Values.Length} preferred values {holding.Length} hold{named}.";
     }
 
     private static string ScatterVerdict(ScatterResult scatter)
@@ -115,7 +131,8 @@ public static partial class ScanSummary
         var fraction = common.Sum(s => s.To - s.From) / (scatter.Axis.To - scatter.Axis.From);
         return judged.All(f => f.Scan.HoldsThroughout)
             ? $"With {range} everything required and rated holds."
-            : $"With {range} everything required and rated holds in {ReportWords.Percent(fraction)} of cases.";
+            : $"With {range} everything required and rated holds in {ReportWords.Percent(fraction)} of "
+                + "cases.";
     }
 
     private static string Words(ScatterResult scatter) =>
@@ -140,7 +157,7 @@ public static partial class ScanSummary
             _ => "comparing exact values",
         };
         return "Every figure is an exact solution of its own. Between the points extremes and breaks were "
-            + $"searched by {how}; what rises and falls again between two neighbouring points, without showing "
-            + "at either, is not seen.";
+            + $"searched by {how}; what rises and falls again between two neighbouring points, without "
+            + "showing at either, is not seen.";
     }
 }

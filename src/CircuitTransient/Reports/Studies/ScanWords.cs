@@ -96,11 +96,13 @@ internal static class ScanWords
     }
 
     /// <summary>The margin or use at a place in words: <c>41 V to spare</c>, <c>broken by 12 A</c>.</summary>
-    public static string Verdict(StudyFigure figure, double value) => figure.Kind == StudyFigureKind.RatingUsed
-        ? $"{Value(figure, value)} used"
-        : value >= 0
-            ? $"{Value(figure, value)} to spare"
-            : double.IsFinite(value) ? $"broken by {Value(figure, -value)}" : "broken without limit";
+    public static string Verdict(StudyFigure figure, double value) => (figure.Kind, value) switch
+    {
+        (StudyFigureKind.RatingUsed, _) => $"{Value(figure, value)} used",
+        (_, >= 0) => $"{Value(figure, value)} to spare",
+        _ when double.IsFinite(value) => $"broken by {Value(figure, -value)}",
+        _ => "broken without limit",
+    };
 
     /// <summary>What a panel shows: <c>greatest current through Ls (at most 200 A from 1.8 s to 6
     /// s)</c>.</summary>
@@ -117,8 +119,8 @@ internal static class ScanWords
             : line.Name;
     }
 
-    /// <summary>The extreme that a margin speaks of and its limit, where the bound is one-sided or the same to
-    /// both sides.</summary>
+    /// <summary>The extreme that a margin speaks of and its limit, where the bound is one-sided or the same
+    /// to both sides.</summary>
     public static ReachedLine? Reached(Circuit circuit, StudyFigure figure)
     {
         if (figure.Kind != StudyFigureKind.Margin)

@@ -108,7 +108,8 @@ internal sealed class AxisScan(
         double? start = null;
         for (var i = 0; i < looked.Length; i++)
         {
-            var passed = breaks.FirstOrDefault(b => i > 0 && b.At[0] >= looked[i - 1].X && b.At[0] <= looked[i].X);
+            var before = i > 0 ? looked[i - 1].X : double.PositiveInfinity;
+            var passed = breaks.FirstOrDefault(b => b.At[0] >= before && b.At[0] <= looked[i].X);
             if (Judged(looked[i]).Y >= 0)
             {
                 start ??= passed?.At[0] ?? looked[i].X;

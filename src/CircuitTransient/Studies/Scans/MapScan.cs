@@ -90,12 +90,11 @@ internal sealed class MapScan(
         var others = (double[])nominal.Clone();
         place.CopyTo(others, 0);
         var along = function.Along(axis, others, figure);
-        double[] at =
-        [
-            .. new[] { ticks[Math.Max(0, low)], place[axis], ticks[Math.Min(ticks.Length - 1, high)] }.Distinct(),
-        ];
-        var samples = at.Select(along).ToImmutableArray();
-        return sign > 0 ? RangeExtremeSearch.Greatest(samples, along) : RangeExtremeSearch.Least(samples, along);
+        double[] at = [ticks[Math.Max(0, low)], place[axis], ticks[Math.Min(ticks.Length - 1, high)]];
+        var samples = at.Distinct().Select(along).ToImmutableArray();
+        return sign > 0
+            ? RangeExtremeSearch.Greatest(samples, along)
+            : RangeExtremeSearch.Least(samples, along);
     }
 
     private ImmutableArray<ScanBreak> Breaks(int figure, double[] values)

@@ -22,7 +22,7 @@ public sealed record ScanAxis(
 
     /// <summary>One of its values in words: <c>62.4 Ω</c>, <c>35°</c>.</summary>
     public string Say(double value, int digits = 4) => IsAngle
-        ? EngineeringNumber.Format(value * 180 / Math.PI, "°", digits).Replace(" ", "", StringComparison.Ordinal)
+        ? EngineeringNumber.Format(value * 180 / Math.PI, "", digits) + "°"
         : EngineeringNumber.Format(value, Varied.Unit, digits);
 }
 

@@ -92,9 +92,14 @@ internal sealed class ScanAxisLowering(Circuit circuit, ScannedSyntax scanned, V
         {
             Say(range.From.Span, "an event before t = 0 is before the study", "begin at `0 s`");
         }
+        else if (varied.Kind == VariedKind.EventTime && StudyEnd() is { } end && to > end)
+        {
+            Say(range.To.Span, $"the study ends at {Said(end)}, before the event", "end the range by then");
+        }
         else if (Positive() is { } what && (what == "resistance" ? from <= 0 && to >= 0 : from <= 0))
         {
-            Say(range.From.Span, $"the range reaches a {what} of zero, at which `{varied.Name}` is no such part",
+            Say(range.From.Span,
+                $"the range reaches a {what} of zero, at which `{varied.Name}` is no such part",
                 $"begin above zero, such as at `{Said(to / 1000)}`");
         }
         else
@@ -105,9 +110,17 @@ internal sealed class ScanAxisLowering(Circuit circuit, ScannedSyntax scanned, V
         return false;
     }
 
+    /// <summary>The end of the study as a delay of the event; null where it is not stated, or where the event
+    /// follows another.</summary>
+    private double? StudyEnd() => varied.Event is { } e
+        && ((Switch)circuit.Parts[e.Part]).Events[e.Event].Trigger is AtInstant { Instant.After: null }
+        ? circuit.Until
+        : null;
+
     /// <summary>What of a part cannot be zero; null where zero is a value like any other.</summary>
     private string? Positive() =>
-        varied.Kind == VariedKind.Parameter && circuit.Parts.FirstOrDefault(p => p.Name == scanned.Name) is { } part
+        varied.Kind == VariedKind.Parameter
+        && circuit.Parts.FirstOrDefault(p => p.Name == scanned.Name) is { } part
             ? part switch
             {
                 Resistor => "resistance",

@@ -2,8 +2,8 @@ using CircuitTransient.Circuits;
 
 namespace CircuitTransient.Studies.Scans;
 
-/// <summary>How far what is judged is from breaking, as a fraction of what is allowed, so that requirements of
-/// different quantities can be compared.</summary>
+/// <summary>How far what is judged is from breaking, as a fraction of what is allowed, so that requirements
+/// of different quantities can be compared.</summary>
 internal static class ScanRoom
 {
     /// <summary>The room at the worst place; null of what is only observed.</summary>

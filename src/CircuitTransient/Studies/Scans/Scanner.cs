@@ -8,7 +8,8 @@ namespace CircuitTransient.Studies.Scans;
 public sealed class Scanner
 {
     private const int ScatterSteps = 240;
-    private const double Step = 1e-5; // of the range: short beside the spacing of points, long beside rounding
+    // of the range: short beside the spacing of points, long beside rounding
+    private const double Step = 1e-5;
 
     private static readonly ImmutableArray<double> Fractions = [0.01, 0.05, 0.25, 0.5, 0.75, 0.95, 0.99];
 
@@ -129,7 +130,7 @@ public sealed class Scanner
                     .Select(i => scatter.From + ((scatter.To - scatter.From) * i / ScatterSteps)),
             ]);
         var points = ScanGrid.Solve(
-            ScanGrid.Places([axis]), 
+            ScanGrid.Places([axis]),
             at => function.Point(Put(scatter.Index, at[0]), at, scatter.Index), solved, cancellation);
         var scans = Between(axis, scatter.Index, points);
         return new ScatterResult(

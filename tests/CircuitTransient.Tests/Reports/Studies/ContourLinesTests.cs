@@ -1,4 +1,3 @@
-using CircuitTransient.Reports;
 using CircuitTransient.Reports.Studies;
 
 namespace CircuitTransient.Tests.Reports.Studies;
@@ -20,7 +19,9 @@ public class ContourLinesTests
         var pieces = ContourLines.Of(values, 3.5).ToArray();
 
         Assert.NotEmpty(pieces);
-        Assert.All(pieces.SelectMany(p => new[] { p.A, p.B }), at => Assert.Equal(3.5, (2 * at.X) + at.Y, 1e-12));
+        Assert.All(
+            pieces.SelectMany(p => new[] { p.A, p.B }),
+            at => Assert.Equal(3.5, (2 * at.X) + at.Y, 1e-12));
     }
 
     [Fact]

@@ -1,4 +1,3 @@
-using CircuitTransient.Studies.Scans;
 
 namespace CircuitTransient.Tests.Studies.Scans;
 
@@ -83,6 +82,9 @@ public class ScanPlanTests
     [InlineData("--event", "K1 closes from -1 ms to 5 ms",
         "--event:1:16: error: an event before t = 0 is before the study\n  K1 closes from -1 ms to 5 ms\n"
         + "                 ^^^^^\n  → begin at `0 s`")]
+    [InlineData("--event", "K1 closes from 0 s to 50 ms",
+        "--event:1:23: error: the study ends at 40.00 ms, before the event\n"
+        + "  K1 closes from 0 s to 50 ms\n                        ^^^^^\n  → end the range by then")]
     [InlineData("--scatter", "1 ms",
         "--scatter:1:1: error: which event scatters is not said\n  1 ms\n  ^^^^\n"
         + "  → write `Kmain closes by 1 ms`")]
@@ -93,7 +95,8 @@ public class ScanPlanTests
     public void A_map_of_a_million_points_is_refused_with_the_figure()
     {
         var plan = Scanning.Plan(
-            Plant, ("--part", "R1 from 1 Ω to 2 Ω in 999 steps"), ("--part", "C1 from 1 µF to 2 µF in 999 steps"));
+            Plant, ("--part", "R1 from 1 Ω to 2 Ω in 999 steps"),
+            ("--part", "C1 from 1 µF to 2 µF in 999 steps"));
 
         Assert.Equal(
             "1000 × 1000 points are 1000000, more than the 100000 that a scan takes",

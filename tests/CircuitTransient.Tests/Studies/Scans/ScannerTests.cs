@@ -1,5 +1,6 @@
 using CircuitTransient.Numerics;
 using CircuitTransient.Studies.Scans;
+using CircuitTransient.Tests.Project;
 
 namespace CircuitTransient.Tests.Studies.Scans;
 
@@ -90,7 +91,8 @@ public class ScannerTests
     [Fact]
     public void A_named_value_inside_a_wave_is_scanned_with_its_true_effect()
     {
-        // A pulse of 10 V and width Wide onto 1 kΩ and 1 µF peaks at 10 V (1 − exp(−Wide/1 ms)): 5 V at ln 2 ms.
+        // A pulse of 10 V and width Wide onto 1 kΩ and 1 µF peaks at 10 V (1 − exp(−Wide/1 ms)): 5 V at ln 2
+        // ms.
         var result = Scanning.Run(
             """
             value Wide : 1 ms
@@ -195,5 +197,33 @@ public class ScannerTests
         Assert.Equal(first.Select(f => f.Greatest!.Value), second.Select(f => f.Greatest!.Value));
         static IEnumerable<FigureScan> Once() =>
             Scanning.Run(Divider, ("--part", "R1 from 500 Ω to 5 kΩ in 30 steps")).Findings;
+    }
+
+    // The demo plant's own figures: 31.3 A with 56 Ω (computed twice by sampled methods, good to 0.2 %).
+    [Fact]
+    public void The_second_inrush_of_the_demo_follows_the_charging_resistor()
+    {
+        var result = Scanning.Run(
+            Repository.Read("netlists/bullwheel-bus.cause"), ("--part", "Rpre from 56 Ω to 82 Ω in 1 steps"));
+        var margin = result.Findings.First(f => f.Worst is not null && f.Figure.Unit == "A").Figure;
+        var index = result.Figures.IndexOf(margin);
+
+        Assert.Equal(31.3, 200 - result.Points[0].Found!.Values[index]!.Value, 0.002 * 31.3);
+        Assert.Equal(129.5, 200 - result.Points[1].Found!.Values[index]!.Value, 0.002 * 129.5);
+    }
+
+    // With the sources on for ever nothing tells a later closing from another phase.
+    [Fact]
+    public void Closing_later_is_closing_at_another_phase()
+    {
+        var text = Repository.Read("netlists/bank-gallery.cause").Replace("until 30 ms", "until 22 ms");
+        var later = Scanning.Run(text, ("--event", "KB closes from 18.5 ms to 20 ms in 3 steps"))
+            .Of("max of current through KB").Greatest!;
+        var turned = Scanning.Run(text, ("--phase", "Grid from 63° to 90° in 3 steps"))
+            .Of("max of current through KB").Greatest!;
+
+        Assert.Equal(turned.Value, later.Value, 1e-9 * turned.Value);
+        Assert.Equal(turned.At[0], (Math.PI / 2) + (double.Tau * ((50 * later.At[0]) - 1)), 1e-7);
+        Assert.Equal(RangeExtremeKind.Smooth, later.How);
     }
 }
