@@ -8,8 +8,6 @@ namespace CircuitTransient.Studies.Scans;
 public sealed class Scanner
 {
     private const int ScatterSteps = 240;
-    // of the range: short beside the spacing of points, long beside rounding
-    private const double Step = 1e-5;
 
     private static readonly ImmutableArray<double> Fractions = [0.01, 0.05, 0.25, 0.5, 0.75, 0.95, 0.99];
 
@@ -49,14 +47,6 @@ public sealed class Scanner
     private ScanResult Run()
     {
         var written = function.Point(nominal, [.. plan.Axes.Select((_, i) => nominal[i])]);
-        for (var axis = 0; axis < plan.Axes.Length; axis++)
-        {
-            var values = plan.Axes[axis].Values;
-            function.Compare(
-                axis, [values[values.Length / 4], values[values.Length / 2], values[3 * values.Length / 4]],
-                Step * (values[^1] - values[0]), nominal);
-        }
-
         var points = plan.Axes.IsEmpty
             ? []
             : ScanGrid.Solve(ScanGrid.Places(plan.Axes), At, solved, cancellation);
