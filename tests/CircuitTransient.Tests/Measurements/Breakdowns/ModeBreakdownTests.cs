@@ -181,9 +181,13 @@ public class ModeBreakdownTests
         {
             var extreme = first[name].Max;
             var breakdown = first[name].ByMode!.AtMax!;
+            if (extreme.Side == InstantSide.Before)
+            {
+                continue; // a sample at a jump is the value after it
+            }
+
             var there = SolvedText.Of(text, extreme.Time);
-            var stored = energies.Sum(e => there.Sample(e, 0));
-            Close.To(stored, breakdown.StoredEnergy, extreme.Side == InstantSide.At ? 1e-9 : 1e-6);
+            Close.To(energies.Sum(e => there.Sample(e, 0)), breakdown.StoredEnergy);
         }
     }
 }
