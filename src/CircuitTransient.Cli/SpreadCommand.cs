@@ -1,0 +1,57 @@
+using System.CommandLine;
+using CircuitTransient.Studies.Spreads;
+
+namespace CircuitTransient.Cli;
+
+/// <summary><c>spread FILE</c>: what the tolerances in the file come to.</summary>
+internal sealed class SpreadCommand : Command
+{
+    private readonly Argument<string> file = Words.File();
+
+    private readonly Option<long> draws = new("--draws")
+    {
+        Description = "How many random draws to make after the hard extremes; 0 for none.",
+        HelpName = "N",
+        DefaultValueFactory = _ => SpreadOptions.UsualDraws,
+        CustomParser = Words.LongNumber(0, SpreadOptions.MostDraws),
+    };
+
+    private readonly Option<long> seed = new("--seed")
+    {
+        Description = "Seed of the draws; the same seed gives the same results.",
+        HelpName = "S",
+        DefaultValueFactory = _ => 1,
+        CustomParser = Words.LongNumber(0, long.MaxValue),
+    };
+
+    private readonly Option<string> worst = new("--write-worst")
+    {
+        Description = "Write the circuit of the worst case, with its values in place of the tolerances.",
+        HelpName = "FILE",
+    };
+
+    private readonly Option<bool> resume = new("--resume")
+    {
+        Description = "Go on with the draws that an interruption left unfinished.",
+    };
+
+    private readonly StudyWords words = new();
+
+    /// <summary>The command, writing to these streams.</summary>
+    public SpreadCommand(Streams streams, CancellationToken cancellation)
+        : base("spread", "Find what the tolerances come to: extremes, draws, and what drives them.")
+    {
+        Add(file);
+        foreach (var option in (Option[])[draws, seed, worst, resume])
+        {
+            Add(option);
+        }
+
+        words.AddTo(this);
+        SetAction(parsed => new SpreadRun(
+            new SpreadOptions(
+                parsed.GetValue(draws), (ulong)parsed.GetValue(seed), Environment.ProcessorCount),
+            words.Read(parsed), parsed.GetValue(worst), parsed.GetValue(resume), streams, cancellation)
+            .Run(parsed.GetRequiredValue(file)));
+    }
+}

@@ -1,0 +1,175 @@
+using System.Collections.Immutable;
+using CircuitTransient.Measurements;
+
+namespace CircuitTransient.Studies.Spreads;
+
+/// <summary>Finds how far the tolerances can carry every figure, and solves what it found by the exact
+/// engine.</summary>
+internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
+{
+    private readonly ValueRanges ranges = new(batch.Varied.Values);
+    private readonly BestPoints best = new(batch.Figures.Length);
+    private readonly Dictionary<string, CauseReading?> readings = new(StringComparer.Ordinal);
+    private double largestCorrection;
+
+    /// <summary>Searches.</summary>
+    public (SearchAccount Account, ImmutableArray<FigureRange> Figures) Run(Action<SpreadProgress> report)
+    {
+        var alone = Alone();
+        var all = ranges.Count <= SpreadOptions.MostValuesAtCorners;
+        var corners = new CornerSearch(batch, ranges, best);
+        var count = Math.Pow(2, ranges.Count);
+        var before = best.Solved;
+        if (all)
+        {
+            corners.SolveAll(done => report(new SpreadProgress("corners", done, (long)count)));
+        }
+        else
+        {
+            corners.Search(alone, _ => report(new SpreadProgress("corners", best.Solved - before, 0)));
+        }
+
+        var cornerPoints = best.Solved - before;
+        var inside = new InteriorSearch(batch, ranges, best)
+            .Run(done => report(new SpreadProgress("between the corners", done, 0)));
+        var figures = ImmutableArray.CreateBuilder<FigureRange>();
+        for (var f = 0; f < batch.Figures.Length; f++)
+        {
+            report(new SpreadProgress("worst cases", f, batch.Figures.Length));
+            figures.Add(Range(f, alone));
+        }
+
+        var worseInside = figures.SelectMany(f => new[] { f.Least, f.Greatest })
+            .Count(p => p is { IsCorner: false });
+        return (
+            new SearchAccount(
+                count, all, cornerPoints, inside, worseInside, best.Unsolvable,
+                best.UnsolvablePoint is { } point ? [.. point] : null, largestCorrection),
+            figures.ToImmutable());
+    }
+
+    /// <summary>Every value alone at its lower and at its upper end, after all at nominal.</summary>
+    private BatchFigures Alone()
+    {
+        var points = new List<double>();
+        for (var i = 0; i < ranges.Count; i++)
+        {
+            points.AddRange(With(ranges.Nominal, i, ranges.Lowest(i)));
+            points.AddRange(With(ranges.Nominal, i, ranges.Highest(i)));
+        }
+
+        best.Add(ranges.Nominal, batch.At(ranges.Nominal));
+        double[] all = [.. points];
+        var found = batch.At(all);
+        best.Add(all, found);
+        return found;
+    }
+
+    private FigureRange Range(int f, BatchFigures alone)
+    {
+        var figure = batch.Figures[f];
+        var circuit = batch.Varied.At(ranges.Nominal).Value!;
+        var own = StudySolver.At(circuit, [figure], batch.Cancellation).Value;
+        var value = own?.Values[0];
+        var (least, greatest) = (Extreme(f, -1), Extreme(f, 1));
+        var (reached, causes) = Reading(ranges.Nominal)?.Read(figure, value ?? double.NaN) ?? (null, []);
+        return new FigureRange(
+            figure, value, own?.Times[0], least, greatest,
+            [.. Enumerable.Range(0, ranges.Count)
+                .Select(i => new ValueEffect(alone.Value(2 * i, f), alone.Value((2 * i) + 1, f)))],
+            Holds(f, least, greatest), best.Missing(f))
+        {
+            NominalCauses = causes,
+            NominalReached = reached,
+        };
+    }
+
+    private bool? Holds(int f, ExtremePoint? least, ExtremePoint? greatest)
+    {
+        var figure = batch.Figures[f];
+        if (!Judgement.IsJudged(figure))
+        {
+            return null;
+        }
+
+        // A rating that is open everywhere (the current of one of two ideal contacts) is not exceeded.
+        var isOpen = figure.Kind == StudyFigureKind.RatingUsed
+            && nominal.Parts[figure.Index].Ratings[figure.Rating] is { Used: null, Holds: true };
+        return (isOpen || best.Missing(f) == 0)
+            && (least is null || Judgement.Holds(figure, least.Value))
+            && (greatest is null || Judgement.Holds(figure, greatest.Value));
+    }
+
+    private ExtremePoint? Extreme(int f, int sign)
+    {
+        var found = best[f, sign];
+        if (found.Point.Length == 0)
+        {
+            return null;
+        }
+
+        var (point, matters) = WithoutIdle(f, found);
+        var figure = batch.Figures[f];
+        var exact = StudySolver.At(batch.Varied.At(point).Value!, [figure], batch.Cancellation).Value;
+        var value = exact?.Values[0] ?? found.Value;
+        var scale = Math.Max(Math.Abs(value), Math.Abs(nominal.Until > 0 ? found.Value : 0));
+        if (scale > 0 && double.IsFinite(scale))
+        {
+            largestCorrection = Math.Max(largestCorrection, Math.Abs(value - found.Value) / scale);
+        }
+
+        var (reached, causes) = Reading(point)?.Read(figure, value) ?? (null, []);
+        var moves = BestPoints.IsBeyond(value, best[f, -sign].Value, sign, InteriorSearch.Beyond);
+        return new ExtremePoint(
+            [.. point], matters, value, exact?.Times[0], ranges.IsCorner(point), Returns(f, point))
+        {
+            Reached = Judgement.IsJudged(figure) ? reached : value,
+            Causes = causes,
+            Jumps = moves ? [.. new JumpSearch(batch, ranges.Nominal).Find(f, point)] : [],
+        };
+    }
+
+    /// <summary>The point with every value that changes nothing back at nominal.</summary>
+    private (double[] Point, ImmutableArray<bool> Matters) WithoutIdle(int f, BestPoints.Best found)
+    {
+        var returns = Returns(f, found.Point);
+        bool[] matters = [.. returns.Select((value, i) =>
+            found.Point[i] != ranges.Nominal[i] && IsOther(value, found.Value))];
+        double[] point = [.. found.Point.Select((value, i) => matters[i] ? value : ranges.Nominal[i])];
+        var all = batch.At(point);
+        return all.Solved[0] && !IsOther(all.Value(0, f), found.Value)
+            ? (point, [.. matters])
+            : (found.Point, [.. found.Point.Select((value, i) => value != ranges.Nominal[i])]);
+    }
+
+    private static bool IsOther(double value, double than) =>
+        !(value == than
+            || Math.Abs(value - than) <= InteriorSearch.Beyond * Math.Max(Math.Abs(value), Math.Abs(than)));
+
+    private ImmutableArray<double> Returns(int f, double[] point)
+    {
+        var found = batch.At([.. Enumerable.Range(0, ranges.Count)
+            .SelectMany(i => With(point, i, ranges.Nominal[i]))]);
+        return [.. Enumerable.Range(0, ranges.Count).Select(i => found.Value(i, f))];
+    }
+
+    private static double[] With(double[] point, int value, double other)
+    {
+        var changed = (double[])point.Clone();
+        changed[value] = other;
+        return changed;
+    }
+
+    private CauseReading? Reading(double[] point)
+    {
+        var key = string.Join(' ', point);
+        if (!readings.TryGetValue(key, out var reading))
+        {
+            var circuit = batch.Varied.At(point).Value;
+            reading = circuit is null ? null : CauseReading.Of(circuit, batch.Cancellation);
+            readings.Add(key, reading);
+        }
+
+        return reading;
+    }
+}
