@@ -37,10 +37,12 @@ public sealed class UnfinishedFile : IDisposable
         }
     }
 
-    /// <summary>Puts the file in its place, over what stood there.</summary>
-    public void Finish()
+    /// <summary>Puts the file in its place.</summary>
+    /// <param name="overwrites">Whether what stood there goes; else it is an error that something
+    /// does.</param>
+    public void Finish(bool overwrites = true)
     {
-        File.Move(temporaryPath, path, overwrite: true);
+        File.Move(temporaryPath, path, overwrites);
         Unfinished.TryRemove(temporaryPath, out _);
     }
 

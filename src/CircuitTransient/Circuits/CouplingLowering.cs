@@ -1,7 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
-using MathNet.Numerics.LinearAlgebra;
 
 namespace CircuitTransient.Circuits;
 
@@ -9,9 +8,6 @@ namespace CircuitTransient.Circuits;
 /// energy.</summary>
 internal static class CouplingLowering
 {
-    // k = 1 works exactly; eigenvalues of sets of dozens are good to 1e-14
-    private const double Rounding = 1e-12;
-
     public static ImmutableArray<Coupling> Lower(CheckState state)
     {
         var couplings = ImmutableArray.CreateBuilder<Coupling>();
@@ -107,7 +103,7 @@ internal static class CouplingLowering
         }
 
         var most = Math.Sqrt(a.Inductance.Nominal * b.Inductance.Nominal);
-        if (Math.Abs(value.Value) <= most * (1 + Rounding))
+        if (Math.Abs(value.Value) <= most * (1 + CoilSets.Rounding))
         {
             return true;
         }
@@ -121,47 +117,14 @@ internal static class CouplingLowering
 
     private static void CheckEnergy(CheckState state, IReadOnlyCollection<Coupling> couplings)
     {
-        var sets = new DisjointSets(state.Parts.Length);
-        foreach (var coupling in couplings)
+        foreach (var set in CoilSets.StoringNegativeEnergy(state.Parts, couplings))
         {
-            sets.Join(coupling.First, coupling.Second);
-        }
-
-        foreach (var set in couplings.GroupBy(c => sets.Find(c.First).Root))
-        {
-            int[] coils = [.. set.SelectMany(c => new[] { c.First, c.Second }).Distinct().Order()];
-            if (coils.Length > 2 && coils.All(c => state.Parts[c] is Inductor))
-            {
-                CheckEnergy(state, coils, [.. set]);
-            }
+            var names = string.Join(", ", set.Coils.Select(c => $"`{state.Declared[c].Name}`"));
+            state.Findings.Error(set.First.Span,
+                $"{names} so coupled can store {EngineeringNumber.Format(set.Least, "", 3)} times their own "
+                    + "energy",
+                "coils close to a third one are close to each other: lower a factor, or raise or add "
+                    + "another");
         }
     }
-
-    // Stored energy ½ iᵀ L i is never negative if and only if the factors' matrix has no negative eigenvalue.
-    private static void CheckEnergy(CheckState state, int[] coils, Coupling[] set)
-    {
-        var factors = Matrix<double>.Build.DenseIdentity(coils.Length);
-        foreach (var coupling in set)
-        {
-            var (i, j) = (Array.IndexOf(coils, coupling.First), Array.IndexOf(coils, coupling.Second));
-            factors[i, j] = factors[j, i] = Factor(state, coupling);
-        }
-
-        var least = factors.Evd(Symmetricity.Symmetric).EigenValues.Min(v => v.Real);
-        if (least >= -Rounding * coils.Length)
-        {
-            return;
-        }
-
-        var names = string.Join(", ", coils.Select(c => $"`{state.Declared[c].Name}`"));
-        state.Findings.Error(set[0].Span,
-            $"{names} so coupled can store {EngineeringNumber.Format(least, "", 3)} times their own energy",
-            "coils close to a third one are close to each other: lower a factor, or raise or add another");
-    }
-
-    private static double Factor(CheckState state, Coupling coupling) => coupling.IsFactor
-        ? coupling.Value.Nominal
-        : coupling.Value.Nominal / Math.Sqrt(
-            ((Inductor)state.Parts[coupling.First]!).Inductance.Nominal
-            * ((Inductor)state.Parts[coupling.Second]!).Inductance.Nominal);
 }

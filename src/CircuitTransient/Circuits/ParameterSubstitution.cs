@@ -6,8 +6,6 @@ namespace CircuitTransient.Circuits;
 /// <summary>The same circuit with other values of its parameters.</summary>
 public static class ParameterSubstitution
 {
-    private const double Rounding = 1e-12; // k = 1 works exactly
-
     /// <summary>Puts values in place of the nominal ones.</summary>
     /// <param name="circuit">The circuit.</param>
     /// <param name="parameters">A value in SI for each of <see cref="Circuit.Parameters"/>.</param>
@@ -35,6 +33,13 @@ public static class ParameterSubstitution
             {
                 return new(null, [Diagnostic.Error(circuit.Source, coupling.Span, mistake)]);
             }
+        }
+
+        if (CoilSets.StoringNegativeEnergy(parts, couplings).FirstOrDefault() is { } set)
+        {
+            var names = string.Join(", ", set.Coils.Select(c => $"`{parts[c].Name}`"));
+            return new(null, [Diagnostic.Error(
+                circuit.Source, set.First.Span, $"{names} so coupled could store negative energy")]);
         }
 
         return new(
@@ -117,7 +122,7 @@ public static class ParameterSubstitution
         var most = coupling.IsFactor ? 1
             : Math.Sqrt(((Inductor)parts[coupling.First]).Inductance.Nominal
                 * ((Inductor)parts[coupling.Second]).Inductance.Nominal);
-        return Math.Abs(coupling.Value.Nominal) <= most * (1 + Rounding) ? null
+        return Math.Abs(coupling.Value.Nominal) <= most * (1 + CoilSets.Rounding) ? null
             : $"`{coupling.Name}` would couple `{parts[coupling.First].Name}` and "
                 + $"`{parts[coupling.Second].Name}` by more than all their flux";
     }

@@ -111,6 +111,28 @@ public class VariedCircuitTests
     }
 
     [Fact]
+    public void Coils_that_could_store_negative_energy_are_no_circuit()
+    {
+        var varied = Varied(
+            """
+            source Feed at a : 1 V
+            resistor R1 from a to b : 1 Ω
+            inductor L1 at b : 1 mH
+            inductor L2 at b : 1 mH
+            inductor L3 at b : 1 mH
+            coupling M12 of L1 and L2 : 0.5
+            coupling M23 of L2 and L3 : 0.5
+            coupling M13 of L1 and L3 : 0.5
+            until 1 ms
+            """,
+            new PartValueTarget("M13"));
+        Assert.True(varied.At([-0.49]).Succeeded);
+        Assert.Equal(
+            "`L1`, `L2`, `L3` so coupled could store negative energy",
+            Assert.Single(varied.At([-0.51]).Diagnostics).Message);
+    }
+
+    [Fact]
     public void Slopes_of_formulas_are_those_of_their_differences()
     {
         Formula formula = new BinaryFormula('/',

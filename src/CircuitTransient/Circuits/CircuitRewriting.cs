@@ -1,0 +1,100 @@
+using System.Collections.Immutable;
+using System.Globalization;
+using System.Text;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Circuits;
+
+/// <summary>Writes a circuit's text with other values in it, all else left as it stands.</summary>
+public static class CircuitRewriting
+{
+    private const int MostDigits = 17; // read back to the same bits
+
+    /// <summary>Puts values into the text.</summary>
+    /// <param name="circuit">The circuit.</param>
+    /// <param name="values">New values in SI, by index in <see cref="Circuit.Parameters"/>.</param>
+    /// <param name="keepsTolerances">Whether tolerances stay where the new value lies within reach of them:
+    /// always in per cent, between limits only if it lies between them.</param>
+    /// <returns>The text, or which value has no place of its own in it.</returns>
+    public static Outcome<string> Put(
+        Circuit circuit, IReadOnlyDictionary<int, double> values, bool keepsTolerances)
+    {
+        var edits = new SortedDictionary<int, (TextSpan Span, string Text)>();
+        foreach (var (index, value) in values)
+        {
+            var parameter = circuit.Parameters[index];
+            if (Sharing(circuit, values, index) is { } other)
+            {
+                return new(null, [Diagnostic.Error(
+                    circuit.Source, parameter.ValueSpan,
+                    $"`{parameter.Name}` and `{other}` stand in one text, and their values differ",
+                    "write the parts out one by one")]);
+            }
+
+            edits[parameter.ValueSpan.Start] = (parameter.ValueSpan, Written(value, parameter.Unit));
+            if (parameter.ToleranceSpan is { } tolerance && !(keepsTolerances && Holds(circuit, index, value)))
+            {
+                edits[tolerance.Start] = (tolerance, "");
+            }
+        }
+
+        return new(Edited(circuit.Source.Content, edits.Values), []);
+    }
+
+    /// <summary>A value with its unit, as few digits as read back to the same bits.</summary>
+    public static string Written(double value, string unit)
+    {
+        var digits = 1;
+        while (digits < MostDigits && double.Parse(
+            value.ToString($"E{digits - 1}", CultureInfo.InvariantCulture), CultureInfo.InvariantCulture)
+            != value)
+        {
+            digits++;
+        }
+
+        return EngineeringNumber.Format(value, unit, digits);
+    }
+
+    /// <summary>Another value written in the same place that becomes different; null where there is
+    /// none.</summary>
+    private static string? Sharing(Circuit circuit, IReadOnlyDictionary<int, double> values, int index)
+    {
+        var span = circuit.Parameters[index].ValueSpan;
+        for (var i = 0; i < circuit.Parameters.Length; i++)
+        {
+            var own = circuit.Parameters[i];
+            if (i != index && own.ValueSpan == span
+                && values.GetValueOrDefault(i, own.Nominal) != values[index])
+            {
+                return own.Name;
+            }
+        }
+
+        return null;
+    }
+
+    private static bool Holds(Circuit circuit, int index, double value)
+    {
+        var parameter = circuit.Parameters[index];
+        var isAbsolute = circuit.Source[parameter.ToleranceSpan!.Value]
+            .StartsWith("between", StringComparison.Ordinal);
+        return !isAbsolute
+            || (value >= parameter.Tolerance!.Lowest && value <= parameter.Tolerance.Highest);
+    }
+
+    private static string Edited(string text, IEnumerable<(TextSpan Span, string Text)> edits)
+    {
+        var written = new StringBuilder(text.Length + 64);
+        var place = 0;
+        foreach (var (span, replacement) in edits)
+        {
+            var start = replacement.Length == 0 && span.Start > place && text[span.Start - 1] == ' '
+                ? span.Start - 1
+                : span.Start;
+            written.Append(text, place, start - place).Append(replacement);
+            place = span.End;
+        }
+
+        return written.Append(text, place, text.Length - place).ToString();
+    }
+}
