@@ -50,6 +50,7 @@ public static class App
         {
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),
+            new SpreadCommand(streams, cancellation),
         };
         var help = root.Options.OfType<HelpOption>().Single();
         help.Aliases.Clear();

@@ -6,22 +6,22 @@ namespace CircuitTransient.Cli;
 /// <summary><c>spread FILE</c>: what the tolerances in the file come to.</summary>
 internal sealed class SpreadCommand : Command
 {
-    private readonly Argument<string> file = Words.File();
+    private readonly Argument<string[]> files = Words.Files();
 
-    private readonly Option<long> draws = new("--draws")
+    private readonly Option<int> draws = new("--draws")
     {
         Description = "How many random draws to make after the hard extremes; 0 for none.",
         HelpName = "N",
         DefaultValueFactory = _ => SpreadOptions.UsualDraws,
-        CustomParser = Words.LongNumber(0, SpreadOptions.MostDraws),
+        CustomParser = Words.WholeNumber(0, SpreadOptions.MostDraws),
     };
 
-    private readonly Option<long> seed = new("--seed")
+    private readonly Option<int> seed = new("--seed")
     {
         Description = "Seed of the draws; the same seed gives the same results.",
         HelpName = "S",
         DefaultValueFactory = _ => 1,
-        CustomParser = Words.LongNumber(0, long.MaxValue),
+        CustomParser = Words.WholeNumber(0, int.MaxValue),
     };
 
     private readonly Option<string> worst = new("--write-worst")
@@ -41,17 +41,27 @@ internal sealed class SpreadCommand : Command
     public SpreadCommand(Streams streams, CancellationToken cancellation)
         : base("spread", "Find what the tolerances come to: extremes, draws, and what drives them.")
     {
-        Add(file);
+        Add(files);
         foreach (var option in (Option[])[draws, seed, worst, resume])
         {
             Add(option);
         }
 
         words.AddTo(this);
-        SetAction(parsed => new SpreadRun(
-            new SpreadOptions(
-                parsed.GetValue(draws), (ulong)parsed.GetValue(seed), Environment.ProcessorCount),
-            words.Read(parsed), parsed.GetValue(worst), parsed.GetValue(resume), streams, cancellation)
-            .Run(parsed.GetRequiredValue(file)));
+        SetAction(parsed =>
+        {
+            if (parsed.GetRequiredValue(files) is not [var file])
+            {
+                streams.Complain("`spread` studies one circuit at a time");
+                return ExitStatus.Mistake;
+            }
+
+            var options = new SpreadOptions(
+                parsed.GetRequiredValue(draws), (ulong)parsed.GetRequiredValue(seed),
+                Environment.ProcessorCount);
+            return new SpreadRun(
+                options, words.Read(parsed), parsed.GetValue(worst), parsed.GetValue(resume), streams,
+                cancellation).Run(file);
+        });
     }
 }

@@ -34,7 +34,7 @@ internal sealed class DrawStudy
         design = new LatinHypercube(options.Seed, batch.ValueCount, options.Draws);
         var capacity = options.Draws * batch.Figures.Length <= MostKept ? (int)options.Draws : 0;
         tallies = [.. batch.Figures.Select((figure, f) => Tally(figure, capacity, ranges[f]))];
-        rows = new double[Math.Min(options.Draws, MostRows) * batch.Figures.Length];
+        rows = new double[RowCount * batch.Figures.Length];
     }
 
     /// <summary>How many draws are made.</summary>
@@ -62,13 +62,22 @@ internal sealed class DrawStudy
     }
 
     /// <summary>The values of the first draws, one draw after another.</summary>
-    public double[] FirstPoints(int count) => Points(0)[..(count * batch.ValueCount)];
+    public double[] FirstPoints(long count)
+    {
+        var points = new List<double>();
+        for (long cube = 0; points.Count < count * batch.ValueCount; cube++)
+        {
+            points.AddRange(Points(cube));
+        }
+
+        return [.. points.Take((int)(count * batch.ValueCount))];
+    }
 
     /// <summary>What the draws tell.</summary>
     public DrawFindings Finish(ImmutableArray<WaveformBand> envelopes) => new(
         Done, unsolvable, [.. unsolvableDraws],
         [.. tallies.Select(tally => tally.Statistics(Done))],
-        [.. rows], rows.Length / Math.Max(1, batch.Figures.Length), envelopes);
+        [.. rows], [.. FirstPoints(RowCount)], (int)RowCount, envelopes);
 
     /// <summary>Writes what was gathered so far.</summary>
     public void Save(BinaryWriter to)
@@ -108,6 +117,8 @@ internal sealed class DrawStudy
             rows[i] = from.ReadDouble();
         }
     }
+
+    private long RowCount => Math.Min(options.Draws, MostRows);
 
     private int RowNumbers => (int)Math.Min(rows.Length, Done * batch.Figures.Length);
 

@@ -10,6 +10,7 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
     private readonly ValueRanges ranges = new(batch.Varied.Values);
     private readonly BestPoints best = new(batch.Figures.Length);
     private readonly Dictionary<string, CauseReading?> readings = new(StringComparer.Ordinal);
+    private readonly ExactFigures exact = new(batch.Figures, batch.Cancellation);
     private double largestCorrection;
 
     /// <summary>Searches.</summary>
@@ -69,12 +70,12 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
     {
         var figure = batch.Figures[f];
         var circuit = batch.Varied.At(ranges.Nominal).Value!;
-        var own = StudySolver.At(circuit, [figure], batch.Cancellation).Value;
-        var value = own?.Values[0];
+        var own = exact.At(circuit, f);
+        var value = own.Value;
         var (least, greatest) = (Extreme(f, -1), Extreme(f, 1));
         var (reached, causes) = Reading(ranges.Nominal)?.Read(figure, value ?? double.NaN) ?? (null, []);
         return new FigureRange(
-            figure, value, own?.Times[0], least, greatest,
+            figure, value, own.Time, least, greatest,
             [.. Enumerable.Range(0, ranges.Count)
                 .Select(i => new ValueEffect(alone.Value(2 * i, f), alone.Value((2 * i) + 1, f)))],
             Holds(f, least, greatest), best.Missing(f))
@@ -110,9 +111,9 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
 
         var (point, matters) = WithoutIdle(f, found);
         var figure = batch.Figures[f];
-        var exact = StudySolver.At(batch.Varied.At(point).Value!, [figure], batch.Cancellation).Value;
-        var value = exact?.Values[0] ?? found.Value;
-        var scale = Math.Max(Math.Abs(value), Math.Abs(nominal.Until > 0 ? found.Value : 0));
+        var solved = exact.At(batch.Varied.At(point).Value!, f);
+        var value = solved.Value ?? found.Value;
+        var scale = Math.Max(Math.Abs(value), Math.Abs(found.Value));
         if (scale > 0 && double.IsFinite(scale))
         {
             largestCorrection = Math.Max(largestCorrection, Math.Abs(value - found.Value) / scale);
@@ -121,7 +122,7 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         var (reached, causes) = Reading(point)?.Read(figure, value) ?? (null, []);
         var moves = BestPoints.IsBeyond(value, best[f, -sign].Value, sign, InteriorSearch.Beyond);
         return new ExtremePoint(
-            [.. point], matters, value, exact?.Times[0], ranges.IsCorner(point), Returns(f, point))
+            [.. point], matters, value, solved.Time, ranges.IsCorner(point), Returns(f, point))
         {
             Reached = Judgement.IsJudged(figure) ? reached : value,
             Causes = causes,

@@ -21,6 +21,25 @@ internal sealed class FigureEvaluator(VariedCircuit varied, ImmutableArray<Study
             times[f] = solved?.Times[f] ?? double.NaN;
         }
 
+        Clean(values);
         return solved is not null;
+    }
+
+    // What rounding left of nothing is nothing: beside the other extreme of the same observation it has no
+    // digits.
+    private void Clean(Span<double> values)
+    {
+        const double rounding = 1e-11;
+        for (var f = 0; f + 1 < figures.Length; f++)
+        {
+            if (figures[f].Kind == StudyFigureKind.Maximum
+                && figures[f + 1].Kind == StudyFigureKind.Minimum
+                && figures[f].Index == figures[f + 1].Index)
+            {
+                var size = Math.Max(Math.Abs(values[f]), Math.Abs(values[f + 1]));
+                values[f] = Math.Abs(values[f]) < rounding * size ? 0 : values[f];
+                values[f + 1] = Math.Abs(values[f + 1]) < rounding * size ? 0 : values[f + 1];
+            }
+        }
     }
 }

@@ -13,7 +13,7 @@ public sealed record SpreadOptions(long Draws, ulong Seed, int Threads)
     public const int MostValuesAtCorners = 16;
 
     /// <summary>The most draws of a study.</summary>
-    public const long MostDraws = 100_000_000;
+    public const int MostDraws = 100_000_000;
 }
 
 /// <summary>How far a long study has come.</summary>

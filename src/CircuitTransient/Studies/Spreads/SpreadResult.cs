@@ -111,11 +111,13 @@ public sealed record WorstCase(int Figure, ExtremePoint Point, double Used, Tran
 /// <param name="Figures">What each figure came to, in their order.</param>
 /// <param name="Rows">The figures of the first draws, one draw after another; NaN where there is
 /// none.</param>
+/// <param name="Points">The values of the same draws, one draw after another, in SI.</param>
 /// <param name="RowCount">How many draws those are.</param>
 /// <param name="Envelopes">The band of each observed waveform.</param>
 public sealed record DrawFindings(
     long Draws, long Unsolvable, ImmutableArray<long> UnsolvableDraws,
-    ImmutableArray<FigureStatistics> Figures, ImmutableArray<double> Rows, int RowCount,
+    ImmutableArray<FigureStatistics> Figures, ImmutableArray<double> Rows, ImmutableArray<double> Points,
+    int RowCount,
     ImmutableArray<WaveformBand> Envelopes);
 
 /// <summary>Between what an observed waveform runs from draw to draw, at fixed instants.</summary>

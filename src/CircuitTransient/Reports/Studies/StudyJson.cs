@@ -1,0 +1,97 @@
+using System.Buffers;
+using System.Collections.Immutable;
+using System.Text;
+using System.Text.Encodings.Web;
+using System.Text.Json;
+using System.Text.Unicode;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>JSON as the studies' documents write it: doubles that read back to the same bits, null for what
+/// is infinite or left open.</summary>
+internal static class StudyJson
+{
+    // Letters of every script stay readable; < > & ' are escaped, so that it may stand inside a page.
+    private static readonly JsonWriterOptions Options = new()
+    {
+        Indented = true,
+        NewLine = "\n",
+        Encoder = JavaScriptEncoder.Create(UnicodeRanges.All),
+    };
+
+    /// <summary>A whole document, with a final line break.</summary>
+    public static string Document(Action<Utf8JsonWriter> write)
+    {
+        var buffer = new ArrayBufferWriter<byte>();
+        using (var json = new Utf8JsonWriter(buffer, Options))
+        {
+            write(json);
+        }
+
+        return Encoding.UTF8.GetString(buffer.WrittenSpan) + "\n";
+    }
+
+    /// <summary>The schema that is embedded under a name.</summary>
+    public static string Schema(string name)
+    {
+        using var stream = typeof(StudyJson).Assembly.GetManifestResourceStream(name)
+            ?? throw new InvalidOperationException($"{name} is not embedded");
+        using var reader = new StreamReader(stream, Encoding.UTF8);
+        return reader.ReadToEnd();
+    }
+
+    /// <summary>A member that is an object.</summary>
+    public static void Object(this Utf8JsonWriter json, string name, Action write)
+    {
+        json.WriteStartObject(name);
+        write();
+        json.WriteEndObject();
+    }
+
+    /// <summary>A member that is an array.</summary>
+    public static void Array<T>(
+        this Utf8JsonWriter json, string name, IEnumerable<T> items, Action<T> write)
+    {
+        json.WriteStartArray(name);
+        foreach (var item in items)
+        {
+            write(item);
+        }
+
+        json.WriteEndArray();
+    }
+
+    /// <summary>A member that is an array of objects.</summary>
+    public static void Objects<T>(
+        this Utf8JsonWriter json, string name, IEnumerable<T> items, Action<T> write) =>
+        json.Array(name, items, item =>
+        {
+            json.WriteStartObject();
+            write(item);
+            json.WriteEndObject();
+        });
+
+    /// <summary>A member that is an array of texts.</summary>
+    public static void Texts(this Utf8JsonWriter json, string name, ImmutableArray<string> texts) =>
+        json.Array(name, texts, json.WriteStringValue);
+
+    /// <summary>A member that is a number, or null.</summary>
+    public static void Number(this Utf8JsonWriter json, string name, double? value)
+    {
+        json.WritePropertyName(name);
+        json.NumberValue(value);
+    }
+
+    /// <summary>A number, or null.</summary>
+    public static void NumberValue(this Utf8JsonWriter json, double? value)
+    {
+        if (value is { } number && double.IsFinite(number))
+        {
+            json.WriteNumberValue(number + 0.0); // turns the negative zero into the plain one
+        }
+        else
+        {
+            json.WriteNullValue();
+        }
+    }
+}
