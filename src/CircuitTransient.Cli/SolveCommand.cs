@@ -1,4 +1,5 @@
 using System.CommandLine;
+using CircuitTransient.Measurements;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
@@ -26,6 +27,14 @@ internal sealed class SolveCommand : Command
     {
         Description = "Break peaks down anew since an event: \"Kmain closes\", an instant, or last.",
         HelpName = "EVENT",
+    };
+
+    private readonly Option<Breakdown> by = new("--by")
+    {
+        Description = "What peaks are broken down by: origin (the default), edge, switching or mode.",
+        HelpName = "KIND",
+        DefaultValueFactory = _ => Breakdown.Origin,
+        CustomParser = ByWords.Read,
     };
 
     private readonly Option<int> samples = new("--samples")
@@ -56,8 +65,9 @@ internal sealed class SolveCommand : Command
     public SolveCommand(Streams streams, CancellationToken cancellation)
         : base("solve", "Solve circuits, print a summary and write the results.")
     {
+        by.CompletionSources.Add([.. ByWords.All]);
         Add(files);
-        foreach (var option in (Option[])[folder, at, after, samples, json, pdf, noFiles, quiet, strict])
+        foreach (var option in (Option[])[folder, at, by, after, samples, json, pdf, noFiles, quiet, strict])
         {
             Add(option);
         }
@@ -85,7 +95,7 @@ internal sealed class SolveCommand : Command
                 parsed.GetValue(quiet),
                 parsed.GetValue(strict),
                 parsed.GetValue(pdf))
-            { After = since }
+            { After = since, By = parsed.GetValue(by) }
             : null;
     }
 }

@@ -1,3 +1,4 @@
+using CircuitTransient.Measurements;
 using CircuitTransient.Syntax;
 
 namespace CircuitTransient.Cli;
@@ -17,6 +18,9 @@ public sealed record SolveOptions(
     /// asked for.</summary>
     public AfterWords? After { get; init; }
 
+    /// <summary>What peaks are broken down by.</summary>
+    public Breakdown By { get; init; }
+
     /// <summary>How many samples are aimed at where nothing is said.</summary>
     public const int UsualSampleCount = 2000;
 
@@ -30,7 +34,8 @@ public sealed record SolveOptions(
         var at = At.Instants.Any() ? $" --at \"{At.Source.Content}\"" : "";
         var samples = SampleCount == UsualSampleCount ? "" : $" --samples {SampleCount}";
         var after = After is { } words ? $" --after \"{words.Text.Replace("\"", "")}\"" : "";
+        var by = By == Breakdown.Origin ? "" : $" --by {ByWords.Of(By)}";
         var pdf = IsPdf ? " --pdf" : "";
-        return $"circuit-transient solve {quoted}{at}{after}{samples}{pdf}";
+        return $"circuit-transient solve {quoted}{at}{by}{after}{samples}{pdf}";
     }
 }

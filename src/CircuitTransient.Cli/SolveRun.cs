@@ -11,7 +11,8 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
 {
     private AnalysisOptions Analysis =>
         new([.. options.At.Instants.Select(instant => instant.Value)], options.SampleCount,
-            options.After?.Event);
+            options.After?.Event)
+        { By = options.By };
 
     /// <summary>Solves the files in order.</summary>
     /// <returns>The worst of their exit statuses.</returns>

@@ -30,7 +30,15 @@ public static class TransientAnalysis
         }
 
         var circuit = checkedCircuit.Value;
-        var solution = TransientSolver.Solve(circuit, CauseList.FromStart(circuit), cancellation);
+        var (causes, problem) = options.By == Breakdown.Edge
+            ? CauseList.ByEdge(circuit)
+            : (CauseList.FromStart(circuit), null);
+        if (problem is not null)
+        {
+            return new Mistakes([.. checkedCircuit.Diagnostics, problem]);
+        }
+
+        var solution = TransientSolver.Solve(circuit, causes, cancellation);
         var warnings = checkedCircuit.Diagnostics;
         return solution.Succeeded
             ? new Solved(ResultBuilder.Measure(solution.Value, warnings, options, cancellation))

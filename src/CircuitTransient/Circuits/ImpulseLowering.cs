@@ -39,7 +39,7 @@ internal sealed class ImpulseLowering(CheckState state, Scope scope)
         return
         [
             Exponential(start, crest * wave.Factor, wave.Tail, name + ", tail"),
-            Exponential(start, -crest * wave.Factor, wave.Front, name + ", front"),
+            Exponential(start, -crest * wave.Factor, wave.Front, name + ", front") with { Continues = true },
         ];
     }
 

@@ -45,7 +45,10 @@ internal static class StraightLines
                 pieces.Add(new WavePiece(
                     start.Time, end.Time, start.Level, (end.Level - start.Level) / (end.Time - start.Time), 0,
                         0, 0,
-                    $"line from {Amount.Of(start.Time, "s")} to {Amount.Of(end.Time, "s")}"));
+                    $"line from {Amount.Of(start.Time, "s")} to {Amount.Of(end.Time, "s")}")
+                {
+                    Continues = pieces.Count > 0,
+                });
             }
         }
 
@@ -53,7 +56,10 @@ internal static class StraightLines
         {
             var last = points[^1];
             pieces.Add(new WavePiece(last.Time, double.PositiveInfinity, last.Level, 0, 0, 0, 0,
-                $"hold from {Amount.Of(last.Time, "s")}"));
+                $"hold from {Amount.Of(last.Time, "s")}")
+            {
+                Continues = pieces.Count > 0,
+            });
         }
 
         return pieces.ToImmutable();

@@ -5,15 +5,13 @@ namespace CircuitTransient.Circuits;
 /// <summary>A source's value over time: the sum of its pieces.</summary>
 /// <param name="Pieces">In the order written; a pulse is a rise and a delayed fall.</param>
 /// <param name="Scale">A factor on the whole wave that carries what its level follows from; nominally 1, or 0
-/// where the
-/// level is zero and the pieces are those of a level of 1.</param>
+/// where the level is zero and the pieces are those of a level of 1.</param>
 public sealed record Wave(ImmutableArray<WavePiece> Pieces, Quantity Scale);
 
-/// <summary>One piece of a wave: (A + S·τ)·e^(−d·τ)·cos(ω·τ + φ) with τ = t − Start, for Start ≤ t &lt; End;
-/// zero elsewhere.
-/// A step, a corner, a sine, a decay are all of this form. Ramps and straight lines are stretches with an end
-/// each,
-/// then the last value held: sums of unending ramps would lose digits long after the corner.</summary>
+/// <summary>One piece of a wave: (A + S·τ)·e^(−d·τ)·cos(ω·τ + φ) with τ = t − Start, for Start ≤ t
+/// &lt; End; zero elsewhere. A step, a corner, a sine, a decay are all of this form. Ramps and
+/// straight lines are stretches with an end each, then the last value held: sums of unending ramps
+/// would lose digits long after the corner.</summary>
 /// <param name="Start">In seconds; negative infinity is not allowed, see
 /// <paramref name="IsPerpetual"/>.</param>
 /// <param name="End">In seconds; positive infinity where it never ends.</param>
@@ -23,8 +21,8 @@ public sealed record Wave(ImmutableArray<WavePiece> Pieces, Quantity Scale);
 /// <param name="AngularFrequency">ω in rad/s, zero for a piece that does not oscillate.</param>
 /// <param name="Phase">φ in radians at τ = 0.</param>
 /// <param name="Label">What the piece is in the user's words: <c>step at 2 ms</c>.</param>
-/// <param name="IsPerpetual">Whether it has been on for ever in a settled start (a constant or a sine without
-/// a start).</param>
+/// <param name="IsPerpetual">Whether it has been on for ever in a settled start (a
+/// constant or a sine without a start).</param>
 public sealed record WavePiece(
     double Start,
     double End,
@@ -36,7 +34,11 @@ public sealed record WavePiece(
     string Label,
     bool IsPerpetual = false)
 {
-    /// <summary>The phase at t = 0 as stated for a sine or cosine, in radians; null for other
-    /// waves.</summary>
+    /// <summary>Whether it goes on from the piece before it in the wave: the next of several straight lines,
+    /// the level held after a ramp, the other exponential of an impulse.</summary>
+    public bool Continues { get; init; }
+
+    /// <summary>The phase at t = 0 as stated for a sine or cosine, in radians;
+    /// null for other waves.</summary>
     public double? StatedPhase { get; init; }
 }

@@ -155,8 +155,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         for (var i = 0; i < (int)n; i++)
         {
             var rise = start + (i * p);
-            pieces.Add(Held(rise, level, $"pulse {i + 1} rises at {Time(rise)}"));
-            pieces.Add(Held(rise + w, -level, $"pulse {i + 1} falls at {Time(rise + w)}"));
+            pieces.Add(Held(rise, level, $"rise of pulse {i + 1} at {Time(rise)}"));
+            pieces.Add(Held(rise + w, -level, $"fall of pulse {i + 1} at {Time(rise + w)}"));
         }
 
         return pieces.ToImmutable();
@@ -168,7 +168,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
             [
                 new WavePiece(span.From, span.To, 0, level / (span.To - span.From), 0, 0, 0,
                     $"ramp from {Time(span.From)} to {Time(span.To)}"),
-                Held(span.To, level, $"hold from {Time(span.To)}"),
+                Held(span.To, level, $"hold from {Time(span.To)}") with { Continues = true },
             ]
             : null;
 

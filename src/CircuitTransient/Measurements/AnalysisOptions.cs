@@ -10,8 +10,27 @@ namespace CircuitTransient.Measurements;
 public sealed record AnalysisOptions(ImmutableArray<double> At, int SampleCount = 2000, AfterEvent? After =
     null)
 {
+    /// <summary>What causes are told apart.</summary>
+    public Breakdown By { get; init; } = Breakdown.Origin;
+
     /// <summary>Nothing asked for.</summary>
     public static AnalysisOptions Default { get; } = new([]);
+}
+
+/// <summary>Into what peaks are broken down.</summary>
+public enum Breakdown
+{
+    /// <summary>The sources and what was stored at the start.</summary>
+    Origin,
+
+    /// <summary>Each source by its edges.</summary>
+    Edge,
+
+    /// <summary>The effect of each switching, beside the origin.</summary>
+    Switching,
+
+    /// <summary>The modes of the network, beside the origin.</summary>
+    Mode,
 }
 
 /// <summary>The event that a second breakdown begins with.</summary>

@@ -82,7 +82,8 @@ internal sealed class ObservationMeasurement(
         }
 
         var from = curves.IsAccumulated(quantity) ? window.From : 0;
-        var without = curves.Of(quantity, Share.Without, share.Cause, from)!;
+        // Nothing else asks for it: kept, it would hold the memory of every cause on every segment.
+        var without = new CurveBuilder(curves).Of(quantity, Share.Without, share.Cause, from)!;
         return new Contribution(
             share.Name, atMax, atMin, ownMax, ownMin,
             Search(without, window, greatest: true), Search(without, window, greatest: false));

@@ -63,8 +63,7 @@ public static class ResultBuilder
             circuit,
             solution.Until,
             solution.UntilReason,
-            [.. solution.Causes
-                .Select(c => new CauseName(c.Name, c.Source >= 0 ? CauseKind.Source : CauseKind.Stored))],
+            [.. solution.Causes.Select(c => NameOf(circuit, c))],
             intervalResults,
             eventResults,
             waves.Times,
@@ -82,6 +81,13 @@ public static class ResultBuilder
             FollowedWaves = new(() => FollowedWaves.Of(curves, times, waves.Times)),
         };
     }
+
+    private static CauseName NameOf(Circuit circuit, Cause cause) => cause switch
+    {
+        { IsEdge: true } => new(cause.Name, CauseKind.Edge, circuit.Parts[cause.Source].Name),
+        { Source: >= 0 } => new(cause.Name, CauseKind.Source),
+        _ => new(cause.Name, CauseKind.Stored),
+    };
 
     private static IEnumerable<double> Peaks(ObservationResult result) => [result.Max.Time, result.Min.Time];
 

@@ -21,7 +21,8 @@ public static partial class TerminalSummary
         var unit = worst.Observation.Unit;
         text.Heading(HeadingOf(result, worst));
         text.Paragraph($"From the start: {FromStart(result)}, carried through every switching");
-        WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without");
+        WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without",
+            result.Causes.Any(cause => cause.Kind == CauseKind.Edge) ? "others together" : "smaller ones");
         if (DecidedByAnswer(result) is { } decided)
         {
             text.Paragraph($"instants of the full answer kept for {decided}", hanging: 2);
@@ -65,7 +66,7 @@ public static partial class TerminalSummary
     private static string FromStart(TransientResult result)
     {
         var sources = result.Causes.Any(cause => cause.Kind == CauseKind.Edge)
-            ? "the sources' pieces"
+            ? "the edges of the sources"
             : "the sources";
         var apart = result.Circuit.StartsSettled ? " apart from them" : "";
         return $"{sources}, and what was stored at t = 0{apart}";
@@ -85,7 +86,8 @@ public static partial class TerminalSummary
         ImmutableArray<Share> shares,
         double total,
         string unit,
-        string? without)
+        string? without,
+        string others = "smaller ones")
     {
         var ordered = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
         var shown = ordered.Length <= MostCauses ? ordered : ordered[..(MostCauses - 1)];
@@ -104,7 +106,7 @@ public static partial class TerminalSummary
         {
             var rest = ordered[shown.Length..];
             var sum = rest.Sum(share => share.Value ?? 0);
-            var count = $"{rest.Length} smaller ones";
+            var count = $"{rest.Length} {others}";
             rows.Add([count, Signed(sum, unit, largest), PercentOf(sum, total), "", "", ""]);
         }
 

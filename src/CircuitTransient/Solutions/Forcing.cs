@@ -4,8 +4,8 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>A source's part on a segment: (amplitude + slope τ) e^(exponent τ), τ from the segment's start.
-/// A sine is two of these with conjugate exponents.</summary>
+/// <summary>A source's part on a segment: (amplitude + slope τ) e^(exponent τ), τ from the segment's start. A
+/// sine is two of these with conjugate exponents.</summary>
 /// <param name="Input">Index of the input.</param>
 internal sealed record Forcing(
     int Input, DoubleDoubleComplex Exponent, DoubleDoubleComplex Amplitude, DoubleDoubleComplex Slope)
@@ -73,9 +73,9 @@ internal sealed record Forcing(
         return this with { Amplitude = (Amplitude + (Slope * time)) * growth, Slope = Slope * growth };
     }
 
-    /// <summary>The k-th derivative at the segment's start, real part: a real source's two halves add up to
-    /// it.</summary>
-    public DoubleDouble DerivativeAtStart(int k)
+    /// <summary>The k-th derivative at the segment's start; the real parts of a real source's
+    /// two halves add up to its own.</summary>
+    public DoubleDoubleComplex DerivativeAtStart(int k)
     {
         var (amplitude, slope) = (Amplitude, Slope);
         for (; k > 0; k--)
@@ -83,6 +83,6 @@ internal sealed record Forcing(
             (amplitude, slope) = (slope + (Exponent * amplitude), Exponent * slope);
         }
 
-        return amplitude.Re;
+        return amplitude;
     }
 }

@@ -3,16 +3,17 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Solutions;
 
-/// <summary>What sets in at a segment's start, and so may come as an impulse: at a switching everything that
-/// is stored and every source as it stands (the equations begin anew), at a corner what the sources change
-/// by.</summary>
-/// <param name="Jumps">For each order of derivative, the change of each input's derivative of that
-/// order.</param>
+/// <summary>What sets in at a segment's start, and so may come as an impulse: at a switching
+/// everything that is stored and every source as it stands (the equations begin anew), at a
+/// corner what the sources change by.</summary>
+/// <param name="Jumps">For each order of derivative, the change of each input's
+/// derivative of that order.</param>
 /// <param name="Stored">What is stored at the start, for each input; zeros at a corner.</param>
-/// <param name="Sizes">The size each input has had so far: a current cut at its zero leaves its rounding,
-/// which is no impulse.</param>
+/// <param name="Sizes">The size each input has had so far: a current cut at its zero leaves its
+/// rounding, which is no impulse.</param>
 internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, double[] Sizes)
 {
+    private const double Rounding = 1e-14; // of levels in double: a ramp's end, the level held after it
     private const int Orders = 4; // derivatives of a source that a network of index up to 5 can pass on
 
     /// <summary>At the start of an interval.</summary>
@@ -50,8 +51,8 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
         return new Onset(jumps, new DoubleDouble[layout.InputCount], new double[layout.InputCount]);
     }
 
-    /// <summary>Whether an output carries more than an impulse: an impulse's derivative, or that
-    /// one's.</summary>
+    /// <summary>Whether an output carries more than an impulse: an impulse's
+    /// derivative, or that one's.</summary>
     public bool IsBeyondImpulseIn(LinearOutput output)
     {
         for (var order = 1; order < output.Direct.Length; order++)
@@ -101,6 +102,7 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
     private static DoubleDouble[][] Derivatives(NetworkLayout layout, IEnumerable<Motion> motions)
     {
         var derivatives = new DoubleDouble[Orders][];
+        var sizes = new double[Orders, layout.InputCount];
         for (var k = 0; k < Orders; k++)
         {
             derivatives[k] = new DoubleDouble[layout.InputCount];
@@ -110,7 +112,20 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
         {
             for (var k = 0; k < Orders; k++)
             {
-                derivatives[k][forcing.Input] += forcing.DerivativeAtStart(k);
+                var derivative = forcing.DerivativeAtStart(k);
+                derivatives[k][forcing.Input] += derivative.Re;
+                sizes[k, forcing.Input] += derivative.Magnitude;
+            }
+        }
+
+        for (var k = 0; k < Orders; k++)
+        {
+            for (var i = 0; i < layout.InputCount; i++)
+            {
+                if (Math.Abs(derivatives[k][i].Hi) <= Rounding * sizes[k, i]) // sin 0 written as cos(-π/2)
+                {
+                    derivatives[k][i] = DoubleDouble.Zero;
+                }
             }
         }
 
@@ -119,9 +134,8 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
 
     private static DoubleDouble Difference(DoubleDouble after, DoubleDouble before)
     {
-        const double rounding = 1e-24; // of double-double arithmetic over a long sine
         var difference = after - before;
-        return Math.Abs(difference.Hi) <= rounding * Math.Max(Math.Abs(after.Hi), Math.Abs(before.Hi))
+        return Math.Abs(difference.Hi) <= Rounding * Math.Max(Math.Abs(after.Hi), Math.Abs(before.Hi))
             ? DoubleDouble.Zero
             : difference;
     }

@@ -86,7 +86,7 @@ internal static class SettledStart
         {
             for (var k = 0; k < projection.Output.Direct.Length; k++)
             {
-                sum += projection.Output.Direct[k][forcing.Input] * forcing.DerivativeAtStart(k);
+                sum += projection.Output.Direct[k][forcing.Input] * forcing.DerivativeAtStart(k).Re;
             }
         }
 
@@ -131,8 +131,8 @@ internal static class SettledStart
 
                 var part = layout.Circuit.Parts[cause.Source];
                 var how = forcing.Exponent.IsZero
-                    ? $"`{cause.Name}` drives a charge or current that nothing limits"
-                    : $"`{cause.Name}` drives an undamped mode at its own frequency of "
+                    ? $"`{part.Name}` drives a charge or current that nothing limits"
+                    : $"`{part.Name}` drives an undamped mode at its own frequency of "
                         + EngineeringNumber.Format(Math.Abs(forcing.Exponent.Im.Hi) / (2 * Math.PI), "Hz");
                 return Diagnostic.Error(
                     layout.Circuit.Source, part.Span, $"there is no settled state to start from: {how}",

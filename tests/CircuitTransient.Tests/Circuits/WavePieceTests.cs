@@ -37,7 +37,7 @@ public class WavePieceTests
         var pieces = Checking.Wave("pulse train of 5 V width 1 ms every 4 ms from 2 ms count 3");
 
         Assert.Equal([0.002, 0.003, 0.006, 0.007, 0.010, 0.011], pieces.Select(p => Math.Round(p.Start, 12)));
-        Assert.Equal("pulse 3 falls at 11 ms", pieces[^1].Label);
+        Assert.Equal("fall of pulse 3 at 11 ms", pieces[^1].Label);
         Assert.Equal(0, pieces.Sum(p => p.Amplitude));
     }
 
@@ -46,7 +46,7 @@ public class WavePieceTests
         Assert.Equal(
             [
                 new WavePiece(1, 3, 0, 6, 0, 0, 0, "ramp from 1 s to 3 s"),
-                new WavePiece(3, Forever, 12, 0, 0, 0, 0, "hold from 3 s"),
+                new WavePiece(3, Forever, 12, 0, 0, 0, 0, "hold from 3 s") { Continues = true },
             ],
             Checking.Wave("ramp of 12 V from 1 s to 3 s"));
 
@@ -107,7 +107,8 @@ public class WavePieceTests
                 new WavePiece(0.001, Forever, 6000 * wave.Factor, 0, 1 / wave.Tail, 0, 0,
                     "impulse from 1 ms, tail"),
                 new WavePiece(0.001, Forever, -6000 * wave.Factor, 0, 1 / wave.Front, 0, 0,
-                    "impulse from 1 ms, front"),
+                    "impulse from 1 ms, front")
+                { Continues = true },
             ],
             pieces);
     }
@@ -123,8 +124,8 @@ public class WavePieceTests
         Assert.Equal(
             [
                 new WavePiece(0, 1, 0, 5, 0, 0, 0, "line from 0 s to 1 s"),
-                new WavePiece(1, 2, 3, -1, 0, 0, 0, "line from 1 s to 2 s"),
-                new WavePiece(2, Forever, 2, 0, 0, 0, 0, "hold from 2 s"),
+                new WavePiece(1, 2, 3, -1, 0, 0, 0, "line from 1 s to 2 s") { Continues = true },
+                new WavePiece(2, Forever, 2, 0, 0, 0, 0, "hold from 2 s") { Continues = true },
             ],
             Checking.Wave("straight lines (0 s, 0 V) (1 s, 5 V), (1 s, 3 V) (2 s, 2 V)"));
 

@@ -21,10 +21,16 @@ internal sealed class SolvedText
     public static SolvedText Of(string text, params double[] at) => WithWaveform(text, 16, at);
 
     /// <summary>Solves a text with a number of waveform samples.</summary>
-    public static SolvedText WithWaveform(string text, int samples, params double[] at)
+    public static SolvedText WithWaveform(string text, int samples, params double[] at) =>
+        With(text, new AnalysisOptions([.. at], samples));
+
+    /// <summary>Solves a text and breaks it down in a way.</summary>
+    public static SolvedText By(Breakdown by, string text, params double[] at) =>
+        With(text, new AnalysisOptions([.. at], 16) { By = by });
+
+    private static SolvedText With(string text, AnalysisOptions options)
     {
-        var outcome = TransientAnalysis.Run(
-            new SourceText("check.cause", text), new AnalysisOptions([.. at], samples), NoFile);
+        var outcome = TransientAnalysis.Run(new SourceText("check.cause", text), options, NoFile);
         var solved = outcome switch
         {
             Solved s => s.Result,
