@@ -11,8 +11,6 @@ internal static class BandPanel
     private const double Right = PlotPanel.Width - 210;
     private const double Height = 200;
     private const double Small = 11.5;
-    private const string Light = "#dfe8ed";
-    private const string Strong = "#b4c9d5";
 
     /// <summary>Draws the panel below a height.</summary>
     /// <returns>How high it is.</returns>
@@ -20,18 +18,18 @@ internal static class BandPanel
         SpreadResult spread, WaveformBand band, ObservationResult observation, PlotWindow window,
         PlotFonts fonts, ImmutableArray<Shape>.Builder shapes, double top)
     {
-        var shown = Enumerable.Range(0, band.Times.Length)
-            .Where(t => band.Times[t] >= window.From && band.Times[t] <= window.To
-                && double.IsFinite(band.Least[t] + band.Greatest[t]))
+        var waves = new[] { band.Nominal, band.Least, band.Low, band.High, band.Greatest }
+            .Select(values => PlotTrace.Within(band.Times, values, window.From, window.To)
+                .RemoveAll(p => !double.IsFinite(p.Y)))
             .ToArray();
-        if (shown.Length < 2)
+        if (waves.Any(wave => wave.Length < 2))
         {
             return 0;
         }
 
         var limits = PlotLimit.On(spread.Nominal, observation)
             .RemoveAll(limit => limit.To <= window.From || limit.From >= window.To);
-        var (from, to) = (shown.Min(t => band.Least[t]), shown.Max(t => band.Greatest[t]));
+        var (from, to) = (waves[1].Min(p => p.Y), waves[4].Max(p => p.Y));
         foreach (var limit in limits.Where(l => l.Value > from - (0.8 * (to - from))
             && l.Value < to + (0.8 * (to - from))))
         {
@@ -49,13 +47,15 @@ internal static class BandPanel
             shapes, fonts.Fitted(title, 14, Right - Left, isStrong: true), ("s", observation.Unit),
             unit => window.OriginName is null ? $"time ({unit})"
                 : fonts.Fitted($"{unit} after {window.OriginName}", Small, 180, isStrong: true));
-        var at = new Place(frame, window.Origin, band.Times, shown);
-        shapes.Add(at.Area(band.Least, band.Greatest, Light));
-        shapes.Add(at.Area(band.Low, band.High, Strong));
-        shapes.Add(new PolylineShape(at.Line(band.Nominal), PlotStyle.Total));
+        shapes.Add(new AreaShape([.. Line(waves[1]), .. Line(waves[4]).Reverse()], PlotStyle.WideBand));
+        shapes.Add(new AreaShape([.. Line(waves[2]), .. Line(waves[3]).Reverse()], PlotStyle.Band));
+        shapes.Add(new PolylineShape(Line(waves[0]), PlotStyle.Total));
         AddLimits(shapes, frame, window, limits);
         AddKey(shapes, plotTop);
         return Height + 68;
+
+        ImmutableArray<PlotPoint> Line(ImmutableArray<PlotPoint> wave) =>
+            [.. wave.Select(p => new PlotPoint(frame.X.Place(p.X - window.Origin), frame.Y.Place(p.Y)))];
     }
 
     private static void AddLimits(
@@ -76,24 +76,12 @@ internal static class BandPanel
     {
         var x = Right + 22;
         shapes.Add(new LineShape(x, top + 8, x + 18, top + 8, PlotStyle.Total));
-        shapes.Add(new RectangleShape(x, top + 22, 18, 10, Strong));
-        shapes.Add(new RectangleShape(x, top + 40, 18, 10, Light));
+        shapes.Add(new RectangleShape(x, top + 22, 18, 10, PlotStyle.Band));
+        shapes.Add(new RectangleShape(x, top + 40, 18, 10, PlotStyle.WideBand));
         foreach (var (row, words) in ((int, string)[])
             [(0, "nominal"), (1, "9 of 10 draws"), (2, "every draw")])
         {
             shapes.Add(new TextShape(x + 26, top + 12 + (18 * row), words, Small, PlotStyle.Ink));
         }
-    }
-
-    private sealed record Place(PlotFrame Frame, double Origin, ImmutableArray<double> Times, int[] Shown)
-    {
-        public ImmutableArray<PlotPoint> Line(ImmutableArray<double> values) =>
-            [.. Shown.Where(t => double.IsFinite(values[t])).Select(t => Point(t, values[t]))];
-
-        public AreaShape Area(ImmutableArray<double> low, ImmutableArray<double> high, string fill) =>
-            new([.. Line(low), .. Line(high).Reverse()], fill);
-
-        private PlotPoint Point(int t, double value) =>
-            new(Frame.X.Place(Times[t] - Origin), Frame.Y.Place(value));
     }
 }

@@ -49,16 +49,22 @@ internal static class EffectPanel
                 plotTop + 6 + (Row * r));
         }
 
-        frame.Mark(shapes, scale.At(nominal), "", new Stroke(PlotStyle.Ink, 1.2));
-        shapes.Add(new TextShape(
-            frame.X.Place(scale.At(nominal)), bottom + 30,
-            $"nominal {Number(scale.At(nominal), scale.Unit)}", Small, PlotStyle.Ink, TextAnchor.Middle));
-        if (scale.Limit is { } limit)
+        AddMark(shapes, frame, scale.At(nominal), $"nominal {Number(scale.At(nominal), scale.Unit)}",
+            new Stroke(PlotStyle.Ink, 1.2), bottom + 31);
+        if (scale.Limit is { } limit && limit >= from && limit <= to)
         {
-            frame.Mark(shapes, limit, scale.LimitWords, new Stroke(PlotStyle.Limit, 1.2, [8, 4]));
+            AddMark(shapes, frame, limit, scale.LimitWords, new Stroke(PlotStyle.Limit, 1.2, [8, 4]), bottom + 45);
         }
 
-        return bottom + 48 - top;
+        return bottom + 66 - top;
+    }
+
+    private static void AddMark(
+        ImmutableArray<Shape>.Builder shapes, PlotFrame frame, double value, string words, Stroke stroke, double y)
+    {
+        var x = frame.X.Place(value);
+        shapes.Add(new LineShape(x, frame.Y.End, x, frame.Y.Start + 4, stroke));
+        shapes.Add(new TextShape(x, y, words, Small, stroke.Colour, TextAnchor.Middle));
     }
 
     /// <summary>A range with room about all ends, and the limit if it is near.</summary>

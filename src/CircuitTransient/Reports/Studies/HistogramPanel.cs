@@ -69,7 +69,7 @@ internal static class HistogramPanel
             {
                 shapes.Add(new RectangleShape(
                     Math.Min(one, other), y, Math.Max(1.5, Math.Abs(other - one) - 1), frame.Y.Start - y,
-                    "#9db8c6"));
+                    PlotStyle.Band));
             }
         }
     }

@@ -20,7 +20,7 @@ internal sealed record PlotFrame(PlotScale X, PlotScale Y)
     {
         var (left, right, top, bottom) = (X.Start, X.End, Y.End, Y.Start);
         shapes.Add(new TextShape(left, top - 12, title, 14, PlotStyle.Ink, IsStrong: true));
-        shapes.Add(new RectangleShape(left, top, right - left, bottom - top, "#fbfcfc"));
+        shapes.Add(new RectangleShape(left, top, right - left, bottom - top, PlotStyle.Ground));
         if (units.Y is { } up)
         {
             var levels = Y.Ticks(up, 5);

@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using System.Globalization;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Spreads;
 using CircuitTransient.Studies.Statistics;
@@ -53,13 +52,9 @@ public static partial class SpreadSummary
     /// <summary>How often it held, with the exact interval of that probability.</summary>
     private static ImmutableArray<string> Probability(string name, HoldingEstimate held) =>
     [
-        name, $"{held.Holding:N0}", Share(held.Fraction),
-        $"{Share(held.Interval.Low)} to {Share(held.Interval.High)}",
+        name, $"{held.Holding:N0}", SpreadWords.Share(held.Fraction),
+        $"{SpreadWords.Share(held.Interval.Low)} to {SpreadWords.Share(held.Interval.High)}",
     ];
-
-    private static string Share(double fraction) =>
-        (100 * fraction).ToString(fraction is > 0.99 and < 1 or > 0 and < 0.01 ? "0.###" : "0.#",
-            CultureInfo.InvariantCulture) + " %";
 
     private static ImmutableArray<string> Row(StudyFigure figure, FigureStatistics statistics) =>
     [

@@ -83,7 +83,10 @@ public static partial class SpreadSummary
             text.Heading("The worst case");
             text.Paragraph($"{SpreadWords.Name(spread, range.Figure)}: {reached}{when}{used}", hanging: 2);
             text.Paragraph($"at {SpreadWords.Point(spread, worst.Point)}", hanging: 2);
-            WriteWhy(text, spread, range, worst.Point);
+            foreach (var words in SpreadWords.Why(spread, range, worst.Point))
+            {
+                text.Paragraph(words, hanging: 2);
+            }
         }
 
         text.Blank();
@@ -92,28 +95,6 @@ public static partial class SpreadSummary
         {
             var values = spread.Varied.Values.Select((v, i) => $"{v.Name} {Number(point[i], v.Unit)}");
             text.Paragraph($"No unique solution at {string.Join(", ", values)}.", indent: 0, hanging: 2);
-        }
-    }
-
-    private static void WriteWhy(
-        SummaryText text, SpreadResult spread, FigureRange range, ExtremePoint point)
-    {
-        if (SpreadWords.Driver(spread, range, point) is { } driver)
-        {
-            text.Paragraph(driver, hanging: 2);
-        }
-
-        var unit = range.Figure.Kind == StudyFigureKind.RatingUsed
-            ? SpreadWords.Rating(spread, range.Figure).Unit
-            : range.Figure.Unit;
-        if (SpreadWords.Causes(range, point, unit) is { } causes)
-        {
-            text.Paragraph($"by cause, from the start: {causes}", hanging: 2);
-        }
-
-        foreach (var jump in point.Jumps)
-        {
-            text.Paragraph(SpreadWords.Jump(range.Figure, jump), hanging: 2);
         }
     }
 

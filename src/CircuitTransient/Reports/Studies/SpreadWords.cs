@@ -239,6 +239,39 @@ internal static class SpreadWords
                 + "another crest takes over";
     }
 
+    /// <summary>What drives an extreme: the value, the causes, the jumps on the way.</summary>
+    public static IEnumerable<string> Why(SpreadResult spread, FigureRange range, ExtremePoint point)
+    {
+        var unit = range.Figure.Kind == StudyFigureKind.RatingUsed
+            ? Rating(spread, range.Figure).Unit
+            : range.Figure.Unit;
+        if (Driver(spread, range, point) is { } driver)
+        {
+            yield return driver;
+        }
+
+        if (Causes(range, point, unit) is { } causes)
+        {
+            yield return $"by cause, from the start: {causes}";
+        }
+
+        foreach (var jump in point.Jumps)
+        {
+            yield return Jump(range.Figure, jump);
+        }
+    }
+
+    /// <summary>How the draws were made, and what their intervals mean.</summary>
+    public static string Method(SpreadResult spread) =>
+        $"{Design(spread.Draws!.Draws)}, seed {spread.Options.Seed}; each value evenly within its limits, or normal "
+            + "and cut at them, three standard deviations from the middle. The intervals are those of independent "
+            + "draws, and cautious for these, which are spread more evenly.";
+
+    /// <summary>A probability in per cent, with more digits near 0 and 1.</summary>
+    public static string Share(double fraction) =>
+        (100 * fraction).ToString(fraction is (> 0.99 and < 1) or (> 0 and < 0.01) ? "0.###" : "0.#",
+            CultureInfo.InvariantCulture) + " %";
+
     /// <summary>The judged figures of a kind.</summary>
     public static ImmutableArray<FigureRange> Judged(SpreadResult spread, StudyFigureKind kind) =>
         spread.Figures.RemoveAll(f => f.Figure.Kind != kind);

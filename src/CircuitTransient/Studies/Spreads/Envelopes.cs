@@ -11,13 +11,16 @@ namespace CircuitTransient.Studies.Spreads;
 internal static class Envelopes
 {
     private const int MostDraws = 500;
-    private const int MostInstants = 240;
+    private const int MostInstants = 200;
+    private const int MostPeaks = 8;
+    private const int AboutPeak = 24; // samples before and after a peak
     private const int MostNumbers = 4_000_000; // 32 MB
 
     /// <summary>How many draws the bands are made of.</summary>
     public static int DrawCount(TransientResult nominal, long draws)
     {
-        var numbers = Math.Max(1, Observed(nominal.Circuit).Length) * MostInstants;
+        var numbers = Math.Max(1, Observed(nominal.Circuit).Length)
+            * (MostInstants + (2 * AboutPeak * MostPeaks));
         return (int)Math.Min(draws, Math.Clamp(MostNumbers / numbers, 20, MostDraws));
     }
 
@@ -49,17 +52,22 @@ internal static class Envelopes
         [.. Enumerable.Range(0, circuit.Observations.Length)
             .Where(o => circuit.Observations[o].Quantity is not Figure)];
 
-    /// <summary>Instants among the nominal samples, which are dense where the waveforms move; the nominal peaks
-    /// are among them.</summary>
+    /// <summary>Instants among the nominal samples, which are dense where the waveforms move: some over the
+    /// whole study, and those about every nominal peak.</summary>
     private static double[] Instants(TransientResult nominal)
     {
         var samples = nominal.SampleTimes;
         var stride = Math.Max(1, (samples.Length + MostInstants - 1) / MostInstants);
+        var peaks = nominal.Observations.SelectMany(o => new[] { o.Max.Time, o.Min.Time }).ToArray();
+        var about = peaks.Take(MostPeaks).SelectMany(peak =>
+        {
+            var place = samples.BinarySearch(peak);
+            place = place < 0 ? ~place : place;
+            return samples.Skip(place - AboutPeak).Take(2 * AboutPeak);
+        });
         return
         [
-            .. samples.Where((_, i) => i % stride == 0)
-                .Concat(nominal.Observations.SelectMany(o => new[] { o.Max.Time, o.Min.Time }))
-                .Append(nominal.Until)
+            .. samples.Where((_, i) => i % stride == 0).Concat(about).Concat(peaks).Append(nominal.Until)
                 .Where(t => t <= nominal.Until)
                 .Distinct().Order(),
         ];
