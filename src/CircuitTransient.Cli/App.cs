@@ -51,6 +51,7 @@ public static class App
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),
             new SpreadCommand(streams, cancellation),
+            new CompareCommand(streams, cancellation),
         };
         var help = root.Options.OfType<HelpOption>().Single();
         help.Aliases.Clear();

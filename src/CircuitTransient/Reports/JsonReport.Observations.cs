@@ -1,4 +1,5 @@
 using System.Text.Json;
+using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 
 namespace CircuitTransient.Reports;
@@ -122,11 +123,35 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WritePart(Utf8JsonWriter json, PartResult part)
+    private static void WriteParts(Utf8JsonWriter json, TransientResult result)
+    {
+        json.WriteStartArray("parts");
+        for (var i = 0; i < result.Parts.Length; i++)
+        {
+            WritePart(json, result.Parts[i], result.Circuit.Parts.ElementAtOrDefault(i));
+        }
+
+        json.WriteEndArray();
+    }
+
+    private static void WritePart(Utf8JsonWriter json, PartResult part, Part? stated)
     {
         json.WriteStartObject();
         json.WriteString("name", part.Name);
         json.WriteString("kind", part.Kind);
+        (Quantity Quantity, string Unit)? value = stated switch
+        {
+            Resistor r => (r.Resistance, "Ω"),
+            Capacitor c => (c.Capacitance, "F"),
+            Inductor l => (l.Inductance, "H"),
+            _ => null,
+        };
+        if (value is { } own)
+        {
+            WriteNumber(json, "value", own.Quantity.Nominal);
+            json.WriteString("unit", own.Unit);
+        }
+
         WriteTimed(json, "peakVoltage", part.PeakVoltage);
         WriteTimed(json, "peakCurrent", part.PeakCurrent);
         WriteTimed(json, "peakPower", part.PeakPower);

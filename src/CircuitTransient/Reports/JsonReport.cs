@@ -6,6 +6,7 @@ using System.Text.Json;
 using System.Text.Unicode;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
+using CircuitTransient.Studies.Comparing;
 
 namespace CircuitTransient.Reports;
 
@@ -14,7 +15,7 @@ namespace CircuitTransient.Reports;
 public static partial class JsonReport
 {
     /// <summary>Name and number of the format; the number changes when a field changes or goes.</summary>
-    public const string Format = "circuit-transient results 1";
+    public const string Format = ResultsDocument.Format;
 
     // Letters of every script stay readable; < > & ' are escaped, so that it may stand inside a page.
     private static readonly JsonWriterOptions Options = new()
@@ -73,7 +74,7 @@ public static partial class JsonReport
             (to, observation) => WriteObservation(to, observation, result.IsAfterAsked));
         WriteArray(json, "figures", result.Figures, WriteFigure);
         WriteArray(json, "requirements", result.Requirements, WriteRequirement);
-        WriteArray(json, "parts", result.Parts, WritePart);
+        WriteParts(json, result);
         WriteArray(json, "selfChecks", result.SelfChecks, WriteSelfCheck);
         WriteArray(json, "notJudged", result.NotJudged, WriteNotJudged);
         WriteArray(json, "warnings", result.Warnings, WriteWarning);
