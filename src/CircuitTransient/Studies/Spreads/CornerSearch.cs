@@ -7,7 +7,9 @@ namespace CircuitTransient.Studies.Spreads;
 internal sealed class CornerSearch(PointBatch batch, ValueRanges ranges, BestPoints best)
 {
     private const int CornersInBatch = 4096;
-    private const int RandomCorners = 512;
+    /// <summary>How many random corners a search starts from.</summary>
+    public const int RandomCorners = 512;
+
     private const int MostRounds = 24;
     private const ulong Stream = 0x5EED; // a fixed design: the extremes do not depend on the seed of the draws
 
@@ -26,9 +28,11 @@ internal sealed class CornerSearch(PointBatch batch, ValueRanges ranges, BestPoi
     /// <summary>Starts from the corners that each value's own effect points to and from random ones, and goes
     /// on exchanging single values as long as that makes a figure greater or less.</summary>
     /// <param name="alone">The figures with each value alone at its lower, then at its upper end.</param>
-    public void Search(BatchFigures alone, Action<long> report)
+    /// <param name="randomCorners">How many random corners to start from.</param>
+    /// <param name="report">Is told of every round.</param>
+    public void Search(BatchFigures alone, int randomCorners, Action<long> report)
     {
-        var starts = RandomOnes();
+        var starts = RandomOnes(randomCorners);
         best.Add(starts, batch.At(starts));
         starts = PointedTo(alone);
         best.Add(starts, batch.At(starts));
@@ -50,10 +54,10 @@ internal sealed class CornerSearch(PointBatch batch, ValueRanges ranges, BestPoi
         }
     }
 
-    private double[] RandomOnes()
+    private double[] RandomOnes(int count)
     {
         var generator = new CounterGenerator(Stream);
-        var points = new double[RandomCorners * ranges.Count];
+        var points = new double[count * ranges.Count];
         for (var j = 0; j < points.Length; j++)
         {
             var i = j % ranges.Count;

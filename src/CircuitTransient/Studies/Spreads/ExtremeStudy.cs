@@ -27,7 +27,7 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         }
         else
         {
-            corners.Search(alone, _ => report(new SpreadProgress("corners", best.Solved - before, 0)));
+            corners.Search(alone, CornerSearch.RandomCorners, _ => report(new SpreadProgress("corners", best.Solved - before, 0)));
         }
 
         var cornerPoints = best.Solved - before;
