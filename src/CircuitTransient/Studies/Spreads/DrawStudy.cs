@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using CircuitTransient.Measurements;
 using CircuitTransient.Studies.Designs;
 using CircuitTransient.Studies.Statistics;
 

@@ -24,7 +24,7 @@ public class WorstCornerTests
         {
             var range = spread.Figures[f];
             var values = every.Select(p => p[f]).OfType<double>().ToArray();
-            var scale = 1e-9 * values.Max(Math.Abs);
+            var scale = Scale(every, f);
             Assert.InRange(values.Max() - range.Greatest!.Value, double.NegativeInfinity, scale);
             Assert.InRange(range.Least!.Value - values.Min(), double.NegativeInfinity, scale);
             Assert.True(!range.Greatest.IsCorner || Math.Abs(values.Max() - range.Greatest.Value) <= scale);
@@ -53,11 +53,15 @@ public class WorstCornerTests
         for (var f = 0; f < batch.Figures.Length; f++)
         {
             var values = every.Select(p => p[f]).OfType<double>().ToArray();
-            var scale = 1e-9 * values.Max(Math.Abs);
+            var scale = Scale(every, f);
             Assert.Equal(values.Max(), best[f, 1].Value, scale);
             Assert.Equal(values.Min(), best[f, -1].Value, scale);
         }
     }
+
+    // A least value of nothing has the digits of the greatest one beside it.
+    private static double Scale(List<ImmutableArray<double?>> every, int figure) =>
+        1e-9 * every.Max(p => Math.Max(Math.Abs(p[figure] ?? 0), Math.Abs(p[figure ^ 1] ?? 0)));
 
     /// <summary>The figures at every corner by the exact engine, no search.</summary>
     private static List<ImmutableArray<double?>> EveryCorner(string text)
