@@ -15,6 +15,7 @@ public static class SpreadFiles
         OutputFile.OfText("spread.csv", SpreadCsv.Write(spread)),
         OutputFile.OfText("spread.svg", SpreadPlot.Svg(spread)),
         new OutputFile("spread.png", SpreadPlot.Png(spread)),
-        OutputFile.OfText("report.html", HtmlReport.Write(spread.Nominal, command, [SpreadSection.Of(spread)])),
+        OutputFile.OfText(
+            "report.html", HtmlReport.Write(spread.Nominal, command, [SpreadSection.Of(spread)])),
     ];
 }

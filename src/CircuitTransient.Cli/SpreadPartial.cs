@@ -6,8 +6,8 @@ using CircuitTransient.Studies.Spreads;
 
 namespace CircuitTransient.Cli;
 
-/// <summary>The file in which an interrupted study of tolerances leaves its draws, with everything they depend
-/// on, so that only the same study takes them up.</summary>
+/// <summary>The file in which an interrupted study of tolerances leaves its draws, with everything they
+/// depend on, so that only the same study takes them up.</summary>
 public static class SpreadPartial
 {
     /// <summary>Its name in the folder of results.</summary>

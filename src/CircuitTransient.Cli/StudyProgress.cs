@@ -2,8 +2,8 @@ using System.Diagnostics;
 
 namespace CircuitTransient.Cli;
 
-/// <summary>A line on the terminal's stderr while a study takes longer than half a second: what it is doing, how
-/// much of it is done, how fast, and how long it will still take.</summary>
+/// <summary>A line on the terminal's stderr while a study takes longer than half a second: what it is
+/// doing, how much of it is done, how fast, and how long it will still take.</summary>
 public sealed class StudyProgress : IDisposable
 {
     private static readonly TimeSpan Patience = TimeSpan.FromMilliseconds(500);

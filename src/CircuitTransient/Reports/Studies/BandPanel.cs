@@ -59,7 +59,8 @@ internal static class BandPanel
     }
 
     private static void AddLimits(
-        ImmutableArray<Shape>.Builder shapes, PlotFrame frame, PlotWindow window, ImmutableArray<PlotLimit> limits)
+        ImmutableArray<Shape>.Builder shapes, PlotFrame frame, PlotWindow window,
+        ImmutableArray<PlotLimit> limits)
     {
         foreach (var limit in limits.Where(l => l.Value >= frame.Y.From && l.Value <= frame.Y.To))
         {

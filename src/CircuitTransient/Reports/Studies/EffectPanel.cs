@@ -18,7 +18,8 @@ internal static class EffectPanel
     /// <summary>Draws the panel below a height.</summary>
     /// <returns>How high it is.</returns>
     public static double Draw(
-        SpreadResult spread, WorstCase worst, PlotFonts fonts, ImmutableArray<Shape>.Builder shapes, double top)
+        SpreadResult spread, WorstCase worst, PlotFonts fonts, ImmutableArray<Shape>.Builder shapes,
+        double top)
     {
         var range = spread.Figures[worst.Figure];
         var scale = JudgedScale.Of(spread, range);
@@ -38,7 +39,8 @@ internal static class EffectPanel
         var bottom = plotTop + (Row * order.Length) + 12;
         var frame = new PlotFrame(
             new PlotScale(from, to, Left, Right), new PlotScale(0, 1, bottom, plotTop));
-        var title = $"{scale.Name}: what each value alone does to it, from one end of its tolerance to the other";
+        var title = $"{scale.Name}: what each value alone does to it, from one end of its tolerance to the "
+            + "other";
         frame.Draw(
             shapes, fonts.Fitted(title, 14, PlotPanel.Width - Left - 20, isStrong: true), (scale.Unit, null),
             unit => unit);
@@ -53,14 +55,17 @@ internal static class EffectPanel
             new Stroke(PlotStyle.Ink, 1.2), bottom + 31);
         if (scale.Limit is { } limit && limit >= from && limit <= to)
         {
-            AddMark(shapes, frame, limit, scale.LimitWords, new Stroke(PlotStyle.Limit, 1.2, [8, 4]), bottom + 45);
+            AddMark(
+                shapes, frame, limit, scale.LimitWords, new Stroke(PlotStyle.Limit, 1.2, [8, 4]),
+                bottom + 45);
         }
 
         return bottom + 66 - top;
     }
 
     private static void AddMark(
-        ImmutableArray<Shape>.Builder shapes, PlotFrame frame, double value, string words, Stroke stroke, double y)
+        ImmutableArray<Shape>.Builder shapes, PlotFrame frame, double value, string words, Stroke stroke,
+        double y)
     {
         var x = frame.X.Place(value);
         shapes.Add(new LineShape(x, frame.Y.End, x, frame.Y.Start + 4, stroke));
@@ -85,13 +90,15 @@ internal static class EffectPanel
         ImmutableArray<Shape>.Builder shapes, PlotFrame frame, VariedValue value, ValueEffect effect,
         JudgedScale scale, PlotFonts fonts, double top)
     {
-        var (low, high) = (frame.X.Place(scale.At(effect.AtLowest)), frame.X.Place(scale.At(effect.AtHighest)));
+        var low = frame.X.Place(scale.At(effect.AtLowest));
+        var high = frame.X.Place(scale.At(effect.AtHighest));
         var (left, right) = (Math.Min(low, high), Math.Max(low, high));
-        var base1 = top + Row - 10;
+        var baseline = top + Row - 10;
         var words = $"{value.Name} {Number(value.Tolerance!.Lowest, value.Unit)} to "
             + Number(value.Tolerance.Highest, value.Unit);
         shapes.Add(new TextShape(
-            Left - 12, base1, fonts.Fitted(words, Small, Left - 32), Small, PlotStyle.Ink, TextAnchor.End));
+            Left - 12, baseline, fonts.Fitted(words, Small, Left - 32), Small, PlotStyle.Ink,
+            TextAnchor.End));
         shapes.Add(new RectangleShape(left, top + 3, Math.Max(1.5, right - left), Row - 9, PlotStyle.Accent));
         if (right - left < 3)
         {
@@ -99,8 +106,8 @@ internal static class EffectPanel
         }
 
         // Which end of the tolerance stands at which end of the bar.
-        AddEnd(shapes, low, low <= high, Off(value, value.Tolerance.Lowest), base1);
-        AddEnd(shapes, high, low > high, Off(value, value.Tolerance.Highest), base1);
+        AddEnd(shapes, low, low <= high, Off(value, value.Tolerance.Lowest), baseline);
+        AddEnd(shapes, high, low > high, Off(value, value.Tolerance.Highest), baseline);
     }
 
     private static string Off(VariedValue value, double end) => value.Nominal == 0
@@ -110,6 +117,6 @@ internal static class EffectPanel
     private static void AddEnd(
         ImmutableArray<Shape>.Builder shapes, double x, bool isLeft, string words, double y) =>
         shapes.Add(new TextShape(
-            x + (isLeft ? -5 : 5), y, words, Small, PlotStyle.Grey, isLeft ? TextAnchor.End : TextAnchor.Start,
-            HasHalo: true));
+            x + (isLeft ? -5 : 5), y, words, Small, PlotStyle.Grey,
+            isLeft ? TextAnchor.End : TextAnchor.Start, HasHalo: true));
 }

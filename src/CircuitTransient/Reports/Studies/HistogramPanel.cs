@@ -34,13 +34,14 @@ internal static class HistogramPanel
         var frame = new PlotFrame(
             new PlotScale(from, to, Left, Right),
             new PlotScale(0, 1.25 * histogram.Counts.Max(), plotTop + Height, plotTop));
-        var title = $"{scale.Name} in {SpreadWords.Count(draws.Draws, "random draw")}, seed {spread.Options.Seed}";
+        var title = $"{scale.Name} in {SpreadWords.Count(draws.Draws, "random draw")}, "
+            + $"seed {spread.Options.Seed}";
         frame.Draw(
             shapes, fonts.Fitted(title, 14, Right - Left, isStrong: true), (scale.Unit, ""), unit => unit);
         AddBars(shapes, frame, scale, histogram);
         var grey = new Stroke(PlotStyle.Grey, 1.2, [2, 3]);
-        frame.Mark(shapes, scale.At(range.Least?.Value ?? double.NaN), Extreme(range.Least), grey);
-        frame.Mark(shapes, scale.At(range.Greatest?.Value ?? double.NaN), Extreme(range.Greatest), grey, row: 1);
+        MarkExtreme(range.Least, 0);
+        MarkExtreme(range.Greatest, 1);
         frame.Mark(
             shapes, scale.At(range.Nominal ?? double.NaN), "nominal", new Stroke(PlotStyle.Ink, 1.2), row: 2);
         if (scale.Limit is { } limit)
@@ -50,8 +51,11 @@ internal static class HistogramPanel
 
         return Height + 68;
 
-        string Extreme(ExtremePoint? point) =>
-            point is null ? "" : $"hard extreme {Number(scale.At(point.Value), scale.Unit)}";
+        void MarkExtreme(ExtremePoint? point, int row)
+        {
+            var value = scale.At(point?.Value ?? double.NaN);
+            frame.Mark(shapes, value, $"hard extreme {Number(value, scale.Unit)}", grey, row);
+        }
     }
 
     private static void AddBars(

@@ -54,7 +54,10 @@ internal sealed record JudgedScale(string Unit, string Name, double? Limit, stri
             };
 
         JudgedScale Lower(double limit) =>
-            new(figure.Unit, requirement.Name, limit, $"at least {Number(limit, figure.Unit)}") { Shift = limit };
+            new(figure.Unit, requirement.Name, limit, $"at least {Number(limit, figure.Unit)}")
+            {
+                Shift = limit,
+            };
     }
 
     /// <summary>A figure's value on this scale.</summary>

@@ -51,7 +51,8 @@ internal sealed record PlotFrame(PlotScale X, PlotScale Y)
         }
     }
 
-    /// <summary>A line across the panel at a place along it, named at its upper end; nothing outside.</summary>
+    /// <summary>A line across the panel at a place along it, named at its upper end; nothing
+    /// outside.</summary>
     public void Mark(
         ImmutableArray<Shape>.Builder shapes, double value, string words, Stroke stroke, double row = 0)
     {
@@ -64,7 +65,7 @@ internal sealed record PlotFrame(PlotScale X, PlotScale Y)
         var anchor = x > X.End - 150 ? TextAnchor.End : TextAnchor.Start;
         shapes.Add(new LineShape(x, Y.End, x, Y.Start, stroke));
         shapes.Add(new TextShape(
-            x + (anchor == TextAnchor.End ? -5 : 5), Y.End + 13 + (row * 14), words, Small, stroke.Colour, anchor,
-            HasHalo: true));
+            x + (anchor == TextAnchor.End ? -5 : 5), Y.End + 13 + (row * 14), words, Small, stroke.Colour,
+            anchor, HasHalo: true));
     }
 }

@@ -156,8 +156,9 @@ public static class SpreadJson
                     json.Number(spread.Varied.Values[i].Name, worst.Point.Point[i]);
                 }
             });
-            json.WriteString("drivenBy", SpreadWords.Drivers(worst.Point).Select(i => spread.Varied.Values[i].Name)
-                .FirstOrDefault());
+            json.WriteString(
+                "drivenBy", SpreadWords.Drivers(worst.Point).Select(i => spread.Varied.Values[i].Name)
+                    .FirstOrDefault());
             json.Array("selfChecks", worst.Result.SelfChecks, check => WriteCheck(json, "worst", check));
         });
     }

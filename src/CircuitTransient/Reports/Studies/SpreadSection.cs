@@ -64,12 +64,14 @@ public static class SpreadSection
         var range = spread.Figures[worst.Figure];
         var when = worst.Point.Time is { } time ? $" {InstantWords.At(worst.Result, time)}" : "";
         var used = double.IsFinite(worst.Used) ? $", {Percent(worst.Used)} of what is allowed" : "";
+        var reached =
+            SpreadWords.Reached(spread, range.Figure, worst.Point.Value, worst.Point.Reached);
         var why = SpreadWords.Why(spread, range, worst.Point)
             .Select(words => Markup.Of($"<li>{Markup.Name(words)}</li>\n"));
         return Markup.Of($"""
             <h3>The worst case</h3>
             <p>{Markup.Name(SpreadWords.Name(spread, range.Figure))}:
-            {SpreadWords.Reached(spread, range.Figure, worst.Point.Value, worst.Point.Reached)}{when}{used}.</p>
+            {reached}{when}{used}.</p>
             <ul>
             <li>at {Markup.Name(SpreadWords.Point(spread, worst.Point))}</li>
             {Markup.Join(why)}</ul>
@@ -136,8 +138,9 @@ public static class SpreadSection
             range.Nominal, range.Least?.Value, range.Greatest?.Value, statistics?.Mean, statistics?.Deviation,
             Quantile(statistics, 0.05), Quantile(statistics, 0.95),
         ];
-        var written = cells.Select(cell => Markup.Of(
-            $"<td class=\"number\">{(cell is { } number && double.IsFinite(number) ? Number(number, range.Figure.Unit) : "")}</td>"));
+        var written = cells.Select(cell =>
+            cell is { } number && double.IsFinite(number) ? Number(number, range.Figure.Unit) : "")
+            .Select(words => Markup.Of($"<td class=\"number\">{words}</td>"));
         return Markup.Of(
             $"<tr><th scope=\"row\">{Markup.Name(range.Figure.Name)}</th>{Markup.Join(written)}</tr>\n");
     }

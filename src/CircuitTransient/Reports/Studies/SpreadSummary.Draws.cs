@@ -20,12 +20,14 @@ public static partial class SpreadSummary
         }
 
         text.Heading($"{draws.Draws:N0} random draws (seed {spread.Options.Seed}), apart from the extremes");
-        var judged = spread.Figures.Zip(draws.Figures).Where(pair => pair.Second.Holding is not null).ToArray();
+        var judged = spread.Figures.Zip(draws.Figures)
+            .Where(pair => pair.Second.Holding is not null).ToArray();
         if (judged.Length > 0)
         {
             var rows = judged.Take(MostFigures).Select(pair =>
                 Probability(SpreadWords.Name(spread, pair.First.Figure), pair.Second.Holding!));
-            text.Table([Prose, Right, Right, Left], rows.Prepend(["", "held in", "probability", "95 % sure"]));
+            text.Table(
+                [Prose, Right, Right, Left], rows.Prepend(["", "held in", "probability", "95 % sure"]));
             text.Blank();
         }
 
@@ -44,8 +46,8 @@ public static partial class SpreadSummary
         {
             var numbers = string.Join(", ", draws.UnsolvableDraws.Take(5));
             text.Paragraph(
-                $"{SpreadWords.Count(draws.Unsolvable, "draw")} had no unique solution (the first: {numbers}); "
-                + "nothing is counted as holding in them", hanging: 2);
+                $"{SpreadWords.Count(draws.Unsolvable, "draw")} had no unique solution (the first: "
+                + $"{numbers}); nothing is counted as holding in them", hanging: 2);
         }
     }
 
@@ -93,5 +95,7 @@ public static partial class SpreadSummary
     }
 
     private static double Width(ValueEffect effect) =>
-        double.IsFinite(effect.AtHighest - effect.AtLowest) ? Math.Abs(effect.AtHighest - effect.AtLowest) : 0;
+        double.IsFinite(effect.AtHighest - effect.AtLowest)
+            ? Math.Abs(effect.AtHighest - effect.AtLowest)
+            : 0;
 }

@@ -113,7 +113,8 @@ public static partial class SpreadSummary
             Value(f, f.Least?.Value),
             Value(f, f.Greatest?.Value),
             f.Worst is { IsCorner: false } ? "between the corners" : ""));
-        text.Table([Prose, Right, Right, Right, Left], rows.Prepend(["", "nominal", "least", "greatest", ""]));
+        text.Table(
+            [Prose, Right, Right, Right, Left], rows.Prepend(["", "nominal", "least", "greatest", ""]));
         if (observed.Length > MostFigures)
         {
             text.Paragraph($"and {observed.Length - MostFigures} more, in spread.json");
@@ -127,7 +128,8 @@ public static partial class SpreadSummary
             .Where(pair => spread.Worst is null || pair.f != spread.Figures[spread.Worst.Figure]))
         {
             text.Paragraph(
-                $"{SpreadWords.Name(spread, range.Figure)}: {SpreadWords.Jump(range.Figure, jump)}", hanging: 2);
+                $"{SpreadWords.Name(spread, range.Figure)}: {SpreadWords.Jump(range.Figure, jump)}",
+                hanging: 2);
         }
     }
 

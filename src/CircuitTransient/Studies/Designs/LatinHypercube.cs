@@ -1,8 +1,8 @@
 namespace CircuitTransient.Studies.Designs;
 
 /// <summary>Random points in the unit cube of which each slice of each coordinate gets its share (McKay,
-/// Beckman and Conover, Technometrics 21 (1979) 239; from memory). A long series is a row of cubes, so that it
-/// streams; every cube follows from the seed and its own number alone.</summary>
+/// Beckman and Conover, Technometrics 21 (1979) 239; from memory). A long series is a row of cubes, so that
+/// it streams; every cube follows from the seed and its own number alone.</summary>
 /// <param name="seed">The seed of the whole series.</param>
 /// <param name="coordinates">How many coordinates a point has.</param>
 /// <param name="count">How many points the series has.</param>
@@ -40,7 +40,8 @@ public sealed class LatinHypercube(ulong seed, int coordinates, long count)
         return points;
     }
 
-    // Every order equally likely: Durstenfeld's exchange (Communications of the ACM 7, 1964, 420; from memory).
+    // Every order equally likely: Durstenfeld's exchange (Communications of the ACM 7, 1964, 420; from
+    // memory).
     private void Shuffle(int[] slices, ulong stream)
     {
         for (var i = 0; i < slices.Length; i++)

@@ -42,7 +42,11 @@ internal sealed class BestPoints(int figureCount)
     }
 
     /// <summary>Compares points, one after another, with the best so far.</summary>
-    public void Add(double[] points, BatchFigures found)
+    /// <param name="points">The points.</param>
+    /// <param name="found">Their figures.</param>
+    /// <param name="fraction">By which fraction of its size a value must lie further out than the best so
+    /// far.</param>
+    public void Add(double[] points, BatchFigures found, double fraction = 0)
     {
         var k = points.Length / found.Solved.Length;
         for (var i = 0; i < found.Solved.Length; i++)
@@ -64,7 +68,7 @@ internal sealed class BestPoints(int figureCount)
             for (var b = 0; b < best.Length; b++)
             {
                 var value = found.Value(i, b / 2);
-                if (IsBeyond(value, best[b].Value, (2 * (b % 2)) - 1))
+                if (IsBeyond(value, best[b].Value, (2 * (b % 2)) - 1, fraction))
                 {
                     best[b] = new Best(point.ToArray(), value);
                 }

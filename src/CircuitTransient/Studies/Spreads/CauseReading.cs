@@ -56,8 +56,8 @@ internal sealed class CauseReading
                 solution.Causes[c].Name,
                 curves.Of(quantity, Share.Own, c, from)?.ValueAt(solution, extreme.Time, isBefore)));
         return QuantityFactors.IsQuadratic(quantity)
-            ? (reached, [.. causes, new CauseValue(
-                "joint", curves.Of(quantity, Share.Joint, -1, from)?.ValueAt(solution, extreme.Time, isBefore))])
+            ? (reached, [.. causes, new CauseValue("joint", curves.Of(quantity, Share.Joint, -1, from)
+                ?.ValueAt(solution, extreme.Time, isBefore))])
             : (reached, [.. causes]);
     }
 
@@ -78,7 +78,8 @@ internal sealed class CauseReading
                     ? requirement.Window with { From = settles.By }
                     : requirement.Window);
             default:
-                return Rated(figure.Index, circuit.Parts[figure.Index].Ratings[figure.Rating].Kind) is { } rated
+                var kind = circuit.Parts[figure.Index].Ratings[figure.Rating].Kind;
+                return Rated(figure.Index, kind) is { } rated
                     ? (rated, new Window(null, null))
                     : null;
         }

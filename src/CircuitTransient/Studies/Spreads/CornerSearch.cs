@@ -2,8 +2,8 @@ using CircuitTransient.Studies.Designs;
 
 namespace CircuitTransient.Studies.Spreads;
 
-/// <summary>The corners of the tolerances: all of them where there are few, else those that a search by single
-/// exchanges finds.</summary>
+/// <summary>The corners of the tolerances: all of them where there are few, else those that a search by
+/// single exchanges finds.</summary>
 internal sealed class CornerSearch(PointBatch batch, ValueRanges ranges, BestPoints best)
 {
     private const int CornersInBatch = 4096;
@@ -11,7 +11,7 @@ internal sealed class CornerSearch(PointBatch batch, ValueRanges ranges, BestPoi
     public const int RandomCorners = 512;
 
     private const int MostRounds = 24;
-    private const ulong Stream = 0x5EED; // a fixed design: the extremes do not depend on the seed of the draws
+    private const ulong Stream = 0x5EED; // fixed: the extremes do not depend on the seed of the draws
 
     /// <summary>Solves every corner.</summary>
     public void SolveAll(Action<long> report)

@@ -4,8 +4,9 @@ using CircuitTransient.Studies.Statistics;
 
 namespace CircuitTransient.Studies.Spreads;
 
-/// <summary>Random draws of all values within their tolerances, a Latin hypercube a block. Memory does not grow
-/// with the draws: figures are counted as they come, and of single draws only the first are kept.</summary>
+/// <summary>Random draws of all values within their tolerances, a Latin hypercube a block. Memory does not
+/// grow with the draws: figures are counted as they come, and of single draws only the first are
+/// kept.</summary>
 internal sealed class DrawStudy
 {
     /// <summary>How many draws are kept with all their figures.</summary>

@@ -36,7 +36,11 @@ internal static class Envelopes
         var times = Instants(nominal);
         var k = varied.Values.Length;
         var waves = new double[]?[points.Length / k];
-        var options = new ParallelOptions { MaxDegreeOfParallelism = threads, CancellationToken = cancellation };
+        var options = new ParallelOptions
+        {
+            MaxDegreeOfParallelism = threads,
+            CancellationToken = cancellation,
+        };
         Parallel.For(0, waves.Length, options, i =>
             waves[i] = varied.At(points.AsSpan(i * k, k)).Value is { } circuit
                 ? Waves(circuit, observed, times, cancellation)

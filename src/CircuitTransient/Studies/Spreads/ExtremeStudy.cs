@@ -27,7 +27,9 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         }
         else
         {
-            corners.Search(alone, CornerSearch.RandomCorners, _ => report(new SpreadProgress("corners", best.Solved - before, 0)));
+            corners.Search(
+                alone, CornerSearch.RandomCorners,
+                _ => report(new SpreadProgress("corners", best.Solved - before, 0)));
         }
 
         var cornerPoints = best.Solved - before;
@@ -45,7 +47,8 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         return (
             new SearchAccount(
                 count, all, cornerPoints, inside, worseInside, best.Unsolvable,
-                best.UnsolvablePoint is { } point ? [.. point] : null, largestCorrection),
+                best.UnsolvablePoint is { } point ? [.. point] : null, largestCorrection,
+                batch.WhyExact),
             figures.ToImmutable());
     }
 
@@ -120,7 +123,7 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         }
 
         var (reached, causes) = Reading(point)?.Read(figure, value) ?? (null, []);
-        var moves = BestPoints.IsBeyond(value, best[f, -sign].Value, sign, InteriorSearch.Beyond);
+        var moves = BestPoints.IsBeyond(value, best[f, -sign].Value, sign, batch.Resolution);
         return new ExtremePoint(
             [.. point], matters, value, solved.Time, ranges.IsCorner(point), Returns(f, point))
         {
@@ -143,9 +146,9 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
             : (found.Point, [.. found.Point.Select((value, i) => value != ranges.Nominal[i])]);
     }
 
-    private static bool IsOther(double value, double than) =>
+    private bool IsOther(double value, double than) =>
         !(value == than
-            || Math.Abs(value - than) <= InteriorSearch.Beyond * Math.Max(Math.Abs(value), Math.Abs(than)));
+            || Math.Abs(value - than) <= batch.Resolution * Math.Max(Math.Abs(value), Math.Abs(than)));
 
     private ImmutableArray<double> Returns(int f, double[] point)
     {

@@ -9,13 +9,10 @@ internal sealed class InteriorSearch(PointBatch batch, ValueRanges ranges, BestP
     /// <summary>Points spread over the inside.</summary>
     public const int PointCount = 500;
 
-    private const ulong Seed = 0x1D5; // a fixed design: the extremes do not depend on the seed of the draws
+    private const ulong Seed = 0x1D5; // fixed: the extremes do not depend on the seed of the draws
     private const double FirstStep = 0.25; // of a range
     private const double LastStep = 1e-4; // an extreme between the corners is flat: the value is good to 1e-8
     private const int MostSteps = 200;
-
-    /// <summary>What stands out by more than rounding, as a fraction of the value.</summary>
-    public const double Beyond = 1e-9;
 
     /// <summary>Searches.</summary>
     /// <returns>How many points were solved.</returns>
@@ -29,12 +26,12 @@ internal sealed class InteriorSearch(PointBatch batch, ValueRanges ranges, BestP
         var corners = targets.ToArray();
         var inside = ranges.Stretched(
             new LatinHypercube(Seed, ranges.Count, PointCount).Points(0));
-        best.Add(inside, batch.At(inside));
+        best.Add(inside, batch.At(inside), batch.Resolution);
         var inwards = Inwards(corners.Select(c => c.Corner.Point));
-        best.Add(inwards, batch.At(inwards));
+        best.Add(inwards, batch.At(inwards), batch.Resolution);
         foreach (var (figure, sign, corner) in corners)
         {
-            if (BestPoints.IsBeyond(best[figure, sign].Value, corner.Value, sign, Beyond))
+            if (BestPoints.IsBeyond(best[figure, sign].Value, corner.Value, sign, batch.Resolution))
             {
                 report(best.Solved - before);
                 Climb(figure, sign);

@@ -6,7 +6,7 @@ internal sealed class JumpSearch(PointBatch batch, double[] nominal)
 {
     private const int Stretches = 32;
     private const int Halvings = 30;
-    private const double Share = 1e-2; // of the whole change along the line: a smaller jump is not worth a word
+    private const double Share = 1e-2; // of the whole change along the line: less is not worth a word
     private const double Rounding = 1e-7; // of the figure or the instant
 
     /// <summary>The jumps of one figure on the way to a point; at most one of its value and one of its
@@ -17,8 +17,12 @@ internal sealed class JumpSearch(PointBatch batch, double[] nominal)
         var found = batch.At([.. line.SelectMany(s => Between(point, s))]);
         var values = line.Select((_, i) => found.Value(i, figure)).ToArray();
         var times = line.Select((_, i) => found.Time(i, figure)).ToArray();
-        var ofValue = Largest(values) is { } v && IsLarge(values, v) ? Halve(figure, point, line, v, false) : null;
-        var ofTime = Largest(times) is { } t && IsLarge(times, t) ? Halve(figure, point, line, t, true) : null;
+        var ofValue = Largest(values) is { } v && IsLarge(values, v)
+            ? Halve(figure, point, line, v, isTime: false)
+            : null;
+        var ofTime = Largest(times) is { } t && IsLarge(times, t)
+            ? Halve(figure, point, line, t, isTime: true)
+            : null;
         if (ofValue is not null && Stays(ofValue.ValueBefore, ofValue.ValueAfter, values))
         {
             yield return ofValue;

@@ -31,9 +31,12 @@ public sealed record SpreadResult(
 /// <param name="UnsolvablePoint">One of them; null where there is none.</param>
 /// <param name="LargestCorrection">By how much, as a fraction, the exact engine at most corrected an extreme
 /// that the fast evaluation found.</param>
+/// <param name="WhyExact">Why some or all figures went to the exact engine at every point; null where none
+/// did.</param>
 public sealed record SearchAccount(
     double Corners, bool AllCorners, long CornerPoints, long InteriorPoints, int WorseInside,
-    long Unsolvable, ImmutableArray<double>? UnsolvablePoint, double LargestCorrection);
+    long Unsolvable, ImmutableArray<double>? UnsolvablePoint, double LargestCorrection,
+    string? WhyExact);
 
 /// <summary>A figure and how far the tolerances carry it.</summary>
 /// <param name="Nominal">With every value nominal; null where it has none.</param>

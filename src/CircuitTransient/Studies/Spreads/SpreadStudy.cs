@@ -62,8 +62,8 @@ public sealed class SpreadStudy
         .. figures.Select(f => $"{f.Figure.Name} {f.Nominal:R} {f.Least?.Value:R} {f.Greatest?.Value:R}"),
     ];
 
-    /// <summary>The range over which a figure's values are counted; an interior extreme may still lie a little
-    /// outside what the search saw.</summary>
+    /// <summary>The range over which a figure's values are counted; an interior extreme may still lie a
+    /// little outside what the search saw.</summary>
     private static (double From, double To) Between(FigureRange figure)
     {
         var (low, high) = (figure.Least?.Value ?? 0, figure.Greatest?.Value ?? 0);
@@ -79,7 +79,8 @@ public sealed class SpreadStudy
         var circuit = batch.Varied.Circuit;
         var ranked = Enumerable.Range(0, figures.Length)
             .Where(f => figures[f].Worst is not null)
-            .Select(f => (Index: f, Used: Judgement.Used(circuit, figures[f].Figure, figures[f].Worst!.Value)))
+            .Select(f =>
+                (Index: f, Used: Judgement.Used(circuit, figures[f].Figure, figures[f].Worst!.Value)))
             .ToArray();
         var isJudged = ranked.Any(r => !double.IsNaN(r.Used));
         var chosen = ranked

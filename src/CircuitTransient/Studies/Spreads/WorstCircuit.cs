@@ -33,7 +33,8 @@ public static class WorstCircuit
         }
 
         var figure = spread.Figures[worst.Figure].Figure;
-        var text = $"# The worst case of {OneLine(Path.GetFileName(circuit.Source.Name))} with every tolerance, "
+        var file = OneLine(Path.GetFileName(circuit.Source.Name));
+        var text = $"# The worst case of {file} with every tolerance, "
             + $"for the {OneLine(figure.Name)}.\n# SHA-256 of that file: {circuit.Source.Sha256}\n"
             + rewritten.Value;
         return Figure(spread, text, figure, readBeside) is { } found

@@ -3,8 +3,8 @@ using System.Collections.Immutable;
 namespace CircuitTransient.Studies.Statistics;
 
 /// <summary>A figure's values as they come, in bounded memory: all of them where there are few, else how many
-/// fall in each of 65 536 classes of one width. Values are added in the order of the draws, so that the result
-/// does not depend on who worked them out.</summary>
+/// fall in each of 65 536 classes of one width. Values are added in the order of the draws, so that the
+/// result does not depend on who worked them out.</summary>
 public sealed class FigureTally
 {
     private const int ClassCount = 1 << 16;
@@ -139,8 +139,8 @@ public sealed class FigureTally
             high > count ? double.PositiveInfinity : kept is not null ? ordered[high - 1] : Edge(high, 1)));
     }
 
-    /// <summary>A place in the class of the value of that rank: 0 its lower end, 1 its upper one; never beyond
-    /// the least and the greatest value.</summary>
+    /// <summary>A place in the class of the value of that rank: 0 its lower end, 1 its upper one; never
+    /// beyond the least and the greatest value.</summary>
     private double Edge(long rank, double place)
     {
         long below = 0;

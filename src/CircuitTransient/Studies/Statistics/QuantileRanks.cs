@@ -21,9 +21,9 @@ public static class QuantileRanks
 
     /// <summary>The ranks, counted from 1, of the two ordered values that enclose the quantile with at least
     /// the confidence, whatever the distribution; 0 and n + 1 where the sample is too small for an end.
-    /// P(X₍ₗ₎ &gt; q) = P(B ≤ l − 1) and P(X₍ᵤ₎ &lt; q) = P(B ≥ u), B binomial of n and p; each at most half of
-    /// what the confidence leaves over (Conover, Practical Nonparametric Statistics, 1999, section 3.2; from
-    /// memory).</summary>
+    /// P(X₍ₗ₎ &gt; q) = P(B ≤ l − 1) and P(X₍ᵤ₎ &lt; q) = P(B ≥ u), B binomial of n and p; each at most
+    /// half of what the confidence leaves over (Conover, Practical Nonparametric Statistics, 1999, section
+    /// 3.2; from memory).</summary>
     public static (long Low, long High) Enclosing(
         double fraction, long count, double confidence = ConfidenceInterval.Confidence)
     {

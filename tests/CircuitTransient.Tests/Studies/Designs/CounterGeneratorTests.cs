@@ -7,8 +7,9 @@ public class CounterGeneratorTests
     [Fact]
     public void The_mixing_is_the_published_one()
     {
-        // The first outputs from the state 0x0123456789ABCDEF, which counts on by the golden number: as stated
-        // in a public implementation of the generator, opened (the first whole, the second in its upper digits).
+        // The first outputs from the state 0x0123456789ABCDEF, which counts on by the golden number: as
+        // stated in a public implementation of the generator, opened (the first whole, the second in its
+        // upper digits).
         const ulong golden = 0x9E3779B97F4A7C15;
         const ulong state = 0x0123456789ABCDEF;
 
@@ -46,7 +47,8 @@ public class CounterGeneratorTests
         }
 
         // Each mean is that of a correlation: 1/√n = 0.0071 wide; four times that.
-        Assert.All((double[])[streams, seeds, neighbours], sum => Assert.InRange(sum / count, -0.0283, 0.0283));
+        Assert.All(
+            (double[])[streams, seeds, neighbours], sum => Assert.InRange(sum / count, -0.0283, 0.0283));
     }
 
     [Fact]

@@ -44,8 +44,8 @@ public class LatinHypercubeTests
     [Fact]
     public void The_mean_of_a_sum_is_far_better_than_by_independent_points()
     {
-        // McKay, Beckman and Conover 1979 (from memory): of a sum of functions of single coordinates the slices
-        // leave only what varies within them, 1/n each instead of 1/√n.
+        // McKay, Beckman and Conover 1979 (from memory): of a sum of functions of single coordinates the
+        // slices leave only what varies within them, 1/n each instead of 1/√n.
         const int count = 1000;
         var points = new LatinHypercube(3, 5, count).Points(0);
         var mean = Enumerable.Range(0, count).Average(i => points.AsSpan(i * 5, 5).ToArray().Sum(Math.Exp));

@@ -36,7 +36,8 @@ public class ToleranceLawTests
     public void Its_variance_is_that_of_its_own_quantiles()
     {
         const int count = 20_000;
-        var values = Enumerable.Range(0, count).Select(i => ToleranceLaw.At(Normal, (i + 0.5) / count)).ToArray();
+        var values = Enumerable.Range(0, count)
+            .Select(i => ToleranceLaw.At(Normal, (i + 0.5) / count)).ToArray();
         var mean = values.Average();
 
         Assert.Equal(ToleranceLaw.Variance(Normal), values.Average(v => (v - mean) * (v - mean)), 1e-5);

@@ -2,8 +2,8 @@ using CircuitTransient.Tests.Project;
 
 namespace CircuitTransient.Tests.Studies.Spreads;
 
-/// <summary>The corners of the demonstration plants, each computed twice by independent methods (state space and
-/// matrix exponential, sampled, good to 0.2 %).</summary>
+/// <summary>The corners of the demonstration plants, each computed twice by independent methods (state
+/// space and matrix exponential, sampled, good to 0.2 %).</summary>
 public class DemoPlantCornerTests
 {
     private const double Sampled = 2e-3;

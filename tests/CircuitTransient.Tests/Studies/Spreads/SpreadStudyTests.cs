@@ -28,14 +28,15 @@ public class SpreadStudyTests
         Assert.Equal(least, range.Least!.Value, 1e-9);
         Assert.Equal(9 - (11 * (1 - Math.Exp(-1.5e-3 / (0.8e3 * 0.9e-6)))),
             spread.Figure("margin of voltage of a at most 9 V from 0 s to 1.5 ms").Least!.Value, 1e-9);
-        Assert.Equal(greatest / 10.5, spread.Figure("peak voltage of C1 against its rating").Greatest!.Value, 1e-9);
+        var used = spread.Figure("peak voltage of C1 against its rating").Greatest!.Value;
+        Assert.Equal(greatest / 10.5, used, 1e-9);
     }
 
     [Fact]
     public void What_does_not_matter_is_left_nominal()
     {
-        var spread = Spreading.Of(Charging.Replace("until", "resistor R2 from in to ground : 50 Ω ±5 %\nuntil",
-            StringComparison.Ordinal));
+        var spread = Spreading.Of(Charging.Replace(
+            "until", "resistor R2 from in to ground : 50 Ω ±5 %\nuntil", StringComparison.Ordinal));
         var greatest = spread.Figure("max of voltage of a").Greatest!;
 
         Assert.Equal([true, true, true, false], greatest.Matters);
@@ -49,8 +50,8 @@ public class SpreadStudyTests
         var spread = Spreading.Of(Charging, draws: 4000);
         var holding = spread.Draws!.Figures[2].Holding!;
 
-        // The probability that 10 V·u (1 − e^(−1.5/(r c))) stays below 9 V, u even in 1 ± 0.1, c even in 1 ± 0.1,
-        // r normal in 1 ± 0.2: by summing over a fine grid of the same laws.
+        // The probability that 10 V·u (1 − e^(−1.5/(r c))) stays below 9 V, u even in 1 ± 0.1, c even in 1
+        // ± 0.1, r normal in 1 ± 0.2: by summing over a fine grid of the same laws.
         Assert.InRange(Probability(), holding.Interval.Low, holding.Interval.High);
         Assert.Equal(4000, holding.All);
     }
@@ -77,7 +78,8 @@ public class SpreadStudyTests
     [Fact]
     public void Draws_that_were_broken_off_are_taken_up_to_the_same_bytes()
     {
-        using var stop = CancellationTokenSource.CreateLinkedTokenSource(TestContext.Current.CancellationToken);
+        using var stop =
+            CancellationTokenSource.CreateLinkedTokenSource(TestContext.Current.CancellationToken);
         var first = Spreading.Study(Charging, draws: 1600, cancellation: stop.Token);
         Assert.Throws<OperationCanceledException>(() => first.Finish(p =>
         {

@@ -36,7 +36,8 @@ public class WorstCornerTests
     [MemberData(nameof(Seeds))]
     public void Single_exchanges_find_the_worst_corner_too(ulong seed)
     {
-        // The search that stands in where there are too many corners, on circuits whose corners can be counted.
+        // The search that stands in where there are too many corners, on circuits whose corners can be
+        // counted.
         var text = RandomText(seed);
         var (varied, _) = Spreading.Varied(text);
         var batch = new PointBatch(
@@ -85,7 +86,8 @@ public class WorstCornerTests
         var generator = new CounterGenerator(seed);
         ulong next = 0;
         string Value(double low, double high, string unit) =>
-            (low * Math.Pow(high / low, generator.Uniform(0, next++))).ToString("0.###e0", CultureInfo.InvariantCulture)
+            (low * Math.Pow(high / low, generator.Uniform(0, next++)))
+                .ToString("0.###e0", CultureInfo.InvariantCulture)
             + $" {unit} ±{5 + generator.Below(20, 1, next++)} %";
         return $"""
             source    Feed at s : {Value(5, 500, "V")}

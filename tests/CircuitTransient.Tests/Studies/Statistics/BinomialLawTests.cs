@@ -5,7 +5,8 @@ namespace CircuitTransient.Tests.Studies.Statistics;
 public class BinomialLawTests
 {
     [Theory]
-    // SciPy's documentation of BinomTestResult.proportion_ci, opened: 7 of 50 at 95 %, its roots good to 1e-12.
+    // SciPy's documentation of BinomTestResult.proportion_ci, opened: 7 of 50 at 95 %, its roots good to
+    // 1e-12.
     [InlineData(7, 50, 0.95, 0.05819170033997342, 0.26739600249700846, 1e-12)]
     // A public table of exact intervals (codingace.net, Clopper-Pearson interval), opened: four digits.
     [InlineData(3, 20, 0.95, 0.0321, 0.3789, 5e-5)]

@@ -43,11 +43,12 @@ public class MomentsTests
     [Fact]
     public void The_interval_of_a_normal_deviation_is_wide_by_one_over_the_root_of_two_n()
     {
-        // For a normal law the fourth moment is 3 σ⁴, so s varies by σ/√(2n): a law of large samples, checked on
-        // the law's own quantiles.
+        // For a normal law the fourth moment is 3 σ⁴, so s varies by σ/√(2n): a law of large samples,
+        // checked on the law's own quantiles.
         const int n = 20_000;
         var normal = new MathNet.Numerics.Distributions.Normal(3, 0.5);
-        var moments = Of(Enumerable.Range(0, n).Select(i => normal.InverseCumulativeDistribution((i + 0.5) / n)));
+        var moments = Of(Enumerable.Range(0, n)
+            .Select(i => normal.InverseCumulativeDistribution((i + 0.5) / n)));
         var half = 1.959964 * 0.5 / Math.Sqrt(2.0 * n);
 
         Assert.Equal(0.5 - half, moments.DeviationInterval.Low, 2e-4);

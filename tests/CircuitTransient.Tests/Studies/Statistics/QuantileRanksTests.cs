@@ -4,8 +4,8 @@ namespace CircuitTransient.Tests.Studies.Statistics;
 
 public class QuantileRanksTests
 {
-    // Twelve resistivities of silicon wafers in Ω·cm: NIST/SEMATECH e-Handbook of Statistical Methods, 7.2.6.2,
-    // opened; there the 90th percentile by definition 6, p (N + 1) = 11.7, is 95.1981.
+    // Twelve resistivities of silicon wafers in Ω·cm: NIST/SEMATECH e-Handbook of Statistical Methods,
+    // 7.2.6.2, opened; there the 90th percentile by definition 6, p (N + 1) = 11.7, is 95.1981.
     private static readonly double[] Wafers =
     [
         95.0610, 95.0925, 95.1065, 95.1195, 95.1442, 95.1567, 95.1591, 95.1682, 95.1772, 95.1937, 95.1959,
@@ -24,8 +24,8 @@ public class QuantileRanksTests
     [Fact]
     public void Each_value_stands_at_its_median_rank()
     {
-        // p(k) = (k − 1/3)/(n + 1/3), approximately the median of F(x[k]) (SciPy's documentation of mquantiles,
-        // type 8, opened).
+        // p(k) = (k − 1/3)/(n + 1/3), approximately the median of F(x[k]) (SciPy's documentation of
+        // mquantiles, type 8, opened).
         for (var k = 1; k <= Wafers.Length; k++)
         {
             var fraction = (k - (1.0 / 3)) / (Wafers.Length + (1.0 / 3));
@@ -41,8 +41,8 @@ public class QuantileRanksTests
     }
 
     [Theory]
-    // A textbook's table of intervals for a median (table A.7 as published on coursehero.com, opened), those of
-    // the least width with at least 95 %.
+    // A textbook's table of intervals for a median (table A.7 as published on coursehero.com, opened),
+    // those of the least width with at least 95 %.
     [InlineData(6, 1, 6)]
     [InlineData(9, 2, 8)]
     [InlineData(10, 2, 9)]
