@@ -61,9 +61,9 @@ internal static partial class SpreadWords
         var toleranced = values == 1 ? "the one value that has" : $"the {values} values that have";
         var corners = account.AllCorners
             ? $"All {account.Corners:N0} corners of {toleranced} a tolerance were solved"
-            : $"{account.CornerPoints:N0} of the {all} corners of {toleranced} a tolerance were solved, chosen "
-                + "by each value's own effect, at random, and by exchanging single values for as long as that "
-                + "helped";
+            : $"{account.CornerPoints:N0} of the {all} corners of {toleranced} a tolerance were solved, "
+                + "chosen by each value's own effect, at random, and by exchanging single values for as long "
+                + "as that helped";
         return account.WorseInside == 0
             ? $"{corners}; {inside} gave nothing worse: searched there, not proven."
             : $"{corners}, and {inside}; {Count(account.WorseInside, "extreme")} lie"
