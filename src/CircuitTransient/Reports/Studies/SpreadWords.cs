@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using System.Globalization;
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Designs;

@@ -7,6 +7,8 @@ namespace CircuitTransient.Studies.Spreads;
 /// engine.</summary>
 internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
 {
+    private const double Idle = 1e-10; // of the figure: a value that changes it by less does not matter
+
     private readonly ValueRanges ranges = new(batch.Varied.Values);
     private readonly BestPoints best = new(batch.Figures.Length);
     private readonly Dictionary<string, CauseReading?> readings = new(StringComparer.Ordinal);
@@ -112,9 +114,8 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
             return null;
         }
 
-        var (point, matters) = WithoutIdle(f, found);
         var figure = batch.Figures[f];
-        var solved = exact.At(batch.Varied.At(point).Value!, f);
+        var (point, matters, solved) = WithoutIdle(f, found);
         var value = solved.Value ?? found.Value;
         var scale = Math.Max(Math.Abs(value), Math.Abs(found.Value));
         if (scale > 0 && double.IsFinite(scale))
@@ -134,21 +135,26 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
     }
 
     /// <summary>The point with every value that changes nothing back at nominal.</summary>
-    private (double[] Point, ImmutableArray<bool> Matters) WithoutIdle(int f, BestPoints.Best found)
+    private (double[] Point, ImmutableArray<bool> Matters, (double? Value, double? Time) Solved) WithoutIdle(
+        int f, BestPoints.Best found)
     {
         var returns = Returns(f, found.Point);
         bool[] matters = [.. returns.Select((value, i) =>
             found.Point[i] != ranges.Nominal[i] && IsOther(value, found.Value))];
         double[] point = [.. found.Point.Select((value, i) => matters[i] ? value : ranges.Nominal[i])];
-        var all = batch.At(point);
-        return all.Solved[0] && !IsOther(all.Value(0, f), found.Value)
-            ? (point, [.. matters])
-            : (found.Point, [.. found.Point.Select((value, i) => value != ranges.Nominal[i])]);
+        var whole = Exact(found.Point, f);
+        var bare = Exact(point, f);
+        return bare.Value is { } value && whole.Value is { } all && !IsOther(value, all)
+            ? (point, [.. matters], bare)
+            : (found.Point, [.. found.Point.Select((place, i) => place != ranges.Nominal[i])], whole);
     }
 
-    private bool IsOther(double value, double than) =>
+    private (double? Value, double? Time) Exact(double[] point, int f) =>
+        batch.Varied.At(point).Value is { } circuit ? exact.At(circuit, f) : (null, null);
+
+    private static bool IsOther(double value, double than) =>
         !(value == than
-            || Math.Abs(value - than) <= batch.Resolution * Math.Max(Math.Abs(value), Math.Abs(than)));
+            || Math.Abs(value - than) <= Idle * Math.Max(Math.Abs(value), Math.Abs(than)));
 
     private ImmutableArray<double> Returns(int f, double[] point)
     {

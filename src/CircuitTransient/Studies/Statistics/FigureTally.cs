@@ -133,10 +133,17 @@ public sealed class FigureTally
         var (low, high) = QuantileRanks.Enclosing(fraction, count);
         var value = kept is not null
             ? QuantileRanks.Quantile(ordered, fraction)
-            : Edge((long)Math.Ceiling(QuantileRanks.Of(fraction, count)), 0.5);
+            : Between(QuantileRanks.Of(fraction, count));
         return new QuantileEstimate(fraction, value, new ConfidenceInterval(
             low == 0 ? double.NegativeInfinity : kept is not null ? ordered[low - 1] : Edge(low, 0),
             high > count ? double.PositiveInfinity : kept is not null ? ordered[high - 1] : Edge(high, 1)));
+    }
+
+    private double Between(double rank)
+    {
+        var below = (long)Math.Floor(rank);
+        var low = Edge(below, 0.5);
+        return low + ((rank - below) * (Edge(Math.Min(below + 1, moments.Count), 0.5) - low));
     }
 
     /// <summary>A place in the class of the value of that rank: 0 its lower end, 1 its upper one; never

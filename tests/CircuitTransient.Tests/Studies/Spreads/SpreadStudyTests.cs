@@ -1,6 +1,5 @@
 using System.Text;
 using CircuitTransient.Reports.Studies;
-using CircuitTransient.Studies.Spreads;
 
 namespace CircuitTransient.Tests.Studies.Spreads;
 
@@ -96,7 +95,8 @@ public class SpreadStudyTests
         }
 
         memory.Position = 0;
-        var second = Spreading.Study(Charging, draws: 1600);
+        var second = Spreading.Study(
+            Charging, draws: 1600, cancellation: TestContext.Current.CancellationToken);
         second.LoadDraws(new BinaryReader(memory));
 
         Assert.Equal(first.DrawsDone, second.DrawsDone);
