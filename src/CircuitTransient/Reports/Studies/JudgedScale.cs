@@ -27,7 +27,8 @@ internal sealed record JudgedScale(string Unit, string Name, double? Limit, stri
             var part = spread.Varied.Circuit.Parts[figure.Index].Name;
             return new JudgedScale(
                 rating.Unit, $"{Rated(rating.Unit)} of {part}", rating.Rated,
-                $"rated {Number(rating.Rated, rating.Unit)}") { Factor = rating.Rated };
+                $"rated {Number(rating.Rated, rating.Unit)}")
+            { Factor = rating.Rated };
         }
 
         if (figure.Kind != StudyFigureKind.Margin)
