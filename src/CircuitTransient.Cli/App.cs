@@ -50,9 +50,10 @@ public static class App
         {
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),
-            new OverlayCommand(streams, cancellation),
+            new SpreadCommand(streams, cancellation),
             new ScanCommand(streams, cancellation),
             new FormulaCommand(streams, cancellation),
+            new OverlayCommand(streams, cancellation),
             new CompareCommand(streams, cancellation),
         };
         var help = root.Options.OfType<HelpOption>().Single();
