@@ -25,6 +25,12 @@ internal sealed class EquationRow(SparseVector e, SparseVector g, SparseVector[]
     /// <summary>Whether its right side is zero.</summary>
     public bool HasNoRight => Array.TrueForAll(R, v => v.IsEmpty);
 
+    /// <summary>The row with one more input on its right side, of weight 1.</summary>
+    public EquationRow WithInput(int input) => new(
+        E, G,
+        [SparseVector.Add(R[0], DoubleDouble.One, SparseVector.From((input, DoubleDouble.One))), .. R[1..]],
+        Origin);
+
     /// <summary>Puts the algebraic equation <paramref name="other"/>, solved for an unknown, in the unknown's
     /// place: in the algebraic part as it is, under the derivative with its right side multiplied by
     /// s.</summary>

@@ -40,7 +40,12 @@ internal sealed class NetworkEquations
         equations.WriteCurrentLaws();
         for (var i = 0; i < layout.Circuit.Parts.Length; i++)
         {
+            var law = equations.rows.Count;
             equations.WritePartLaw(i, layout.Circuit.Parts[i]);
+            if (layout.Disturbance(i) is >= 0 and var input)
+            {
+                equations.rows[law] = equations.rows[law].WithInput(input);
+            }
         }
 
         return equations.rows;

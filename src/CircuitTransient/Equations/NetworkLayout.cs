@@ -6,7 +6,7 @@ namespace CircuitTransient.Equations;
 /// <summary>Which place each unknown and each input of a circuit has in its equations, whatever its switches
 /// do. Unknowns are the node voltages to the reference, then a current of every part (two of a transformer).
 /// Inputs are the independent sources, then what is stored in every capacitor (a voltage) and inductor (a
-/// current).</summary>
+/// current), then a disturbance on the right side of each law that is to have one.</summary>
 public sealed class NetworkLayout
 {
     private readonly ImmutableArray<int> currents;
@@ -14,8 +14,17 @@ public sealed class NetworkLayout
 
     /// <summary>Lays out a circuit.</summary>
     public NetworkLayout(Circuit circuit)
+        : this(circuit, [])
+    {
+    }
+
+    /// <summary>Lays out a circuit with further inputs.</summary>
+    /// <param name="circuit">The circuit.</param>
+    /// <param name="disturbed">The parts whose law has an input of its own on its right side.</param>
+    public NetworkLayout(Circuit circuit, ImmutableArray<int> disturbed)
     {
         Circuit = circuit;
+        Disturbed = disturbed;
         var next = circuit.Nodes.Length - 1;
         var places = ImmutableArray.CreateBuilder<int>();
         foreach (var part in circuit.Parts)
@@ -56,8 +65,11 @@ public sealed class NetworkLayout
     /// sources.</summary>
     public ImmutableArray<int> Stores { get; }
 
+    /// <summary>The parts whose laws have a disturbance; their inputs come last.</summary>
+    public ImmutableArray<int> Disturbed { get; }
+
     /// <summary>The number of inputs.</summary>
-    public int InputCount => Sources.Length + Stores.Length;
+    public int InputCount => Sources.Length + Stores.Length + Disturbed.Length;
 
     /// <summary>The unknown that is a node's voltage; −1 for the reference.</summary>
     public static int Voltage(int node) => node - 1;
@@ -70,6 +82,13 @@ public sealed class NetworkLayout
 
     /// <summary>The input of an independent source, or of what a capacitor or inductor stores.</summary>
     public int Input(int part) => inputs[part];
+
+    /// <summary>The input that disturbs a part's law; −1 where none does.</summary>
+    public int Disturbance(int part)
+    {
+        var place = Disturbed.IndexOf(part);
+        return place < 0 ? -1 : Sources.Length + Stores.Length + place;
+    }
 
     /// <summary>What a part stores by: a capacitor's voltage, a coil's current.</summary>
     public Measurand Held(int part) =>

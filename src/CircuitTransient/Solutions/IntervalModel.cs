@@ -14,10 +14,17 @@ public sealed class IntervalModel
 
     /// <summary>Splits a normal form.</summary>
     public IntervalModel(NormalForm form, ImmutableArray<bool> isClosed)
+        : this(form, isClosed, SpectralBlocks.Of(form.A).Blocks)
+    {
+    }
+
+    /// <summary>A normal form whose blocks are known, as of the same network with fewer inputs.</summary>
+    internal IntervalModel(
+        NormalForm form, ImmutableArray<bool> isClosed, ImmutableArray<SpectralBlock> blocks)
     {
         Form = form;
         IsClosed = isClosed;
-        Blocks = SpectralBlocks.Of(form.A).Blocks;
+        Blocks = blocks;
         drives = new DoubleDoubleComplex[Blocks.Length][][];
         for (var b = 0; b < Blocks.Length; b++)
         {

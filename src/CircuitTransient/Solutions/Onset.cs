@@ -99,6 +99,22 @@ internal sealed record Onset(DoubleDouble[][] Jumps, DoubleDouble[] Stored, doub
         return Math.Abs(sum.Hi) <= rounding * scale ? 0 : (double)sum;
     }
 
+    /// <summary>The coefficient of sᵏ in an output's transform: of order 0 the impulse, of order 1 its
+    /// derivative's, and so on. Rounding is left in; what depends on it linearly does not mind.</summary>
+    public DoubleDouble PolynomialIn(LinearOutput output, int order)
+    {
+        var sum = DoubleDouble.Zero;
+        for (var k = order; k < output.Direct.Length && k - order <= Orders; k++)
+        {
+            for (var i = 0; i < Stored.Length; i++)
+            {
+                sum += output.Direct[k][i] * (k == order ? Stored[i] : Jumps[k - order - 1][i]);
+            }
+        }
+
+        return sum;
+    }
+
     private static DoubleDouble[][] Derivatives(NetworkLayout layout, IEnumerable<Motion> motions)
     {
         var derivatives = new DoubleDouble[Orders][];

@@ -69,7 +69,8 @@ internal static class SettledStart
         return [.. layout.Stores.Select(p => ValueOf(model, motion, layout.Held(p)))];
     }
 
-    private static DoubleDouble ValueOf(IntervalModel model, Motion motion, Measurand quantity)
+    /// <summary>A voltage or current at the start of a motion.</summary>
+    public static DoubleDouble ValueOf(IntervalModel model, Motion motion, Measurand quantity)
     {
         var projection = model.Project(quantity);
         var sum = DoubleDouble.Zero;
@@ -165,7 +166,9 @@ internal static class SettledStart
         return false;
     }
 
-    private static bool IsAtPole(SpectralBlock block, DoubleDoubleComplex exponent)
+    /// <summary>Whether an exponent is one of a block's poles, to rounding of the values in the
+    /// file.</summary>
+    public static bool IsAtPole(SpectralBlock block, DoubleDoubleComplex exponent)
     {
         const double rounding = 1e-13; // of the values in the file
         for (var i = 0; i < block.Size; i++)

@@ -1,0 +1,126 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Solutions;
+using CircuitTransient.Solutions.Curves;
+using CircuitTransient.Studies;
+using CircuitTransient.Studies.Sensitivities;
+using CircuitTransient.Tests.Circuits;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Tests.Studies.Sensitivities;
+
+/// <summary>A circuit text derived with respect to some values, and the same derivatives by differences of
+/// whole solutions.</summary>
+internal sealed class Derived
+{
+    private readonly double[] nominal;
+
+    private Derived(VariedCircuit varied)
+    {
+        Varied = varied;
+        nominal = [.. varied.Values.Select(v => v.Nominal)];
+        var outcome = SensitivityAnalysis.Of(varied, nominal, TestContext.Current.CancellationToken);
+        Assert.True(outcome.Succeeded, DiagnosticText.Render(outcome.Diagnostics));
+        Analysis = outcome.Value;
+    }
+
+    /// <summary>The circuit.</summary>
+    public VariedCircuit Varied { get; }
+
+    /// <summary>Its derivatives.</summary>
+    public SensitivityAnalysis Analysis { get; }
+
+    /// <summary>Derives a text.</summary>
+    public static Derived Of(string text, params ImmutableArray<StudyTarget> targets)
+    {
+        var outcome = VariedCircuit.Of(Checking.Circuit(text), targets, _ => new(null, []));
+        Assert.True(outcome.Succeeded, DiagnosticText.Render(outcome.Diagnostics));
+        return new Derived(outcome.Value);
+    }
+
+    /// <summary>The figure with that name, derived.</summary>
+    public FigureSlopes Figure(string name) =>
+        Analysis.Of(StudyFigures.Of(Varied.Circuit).Single(f => f.Name == name))!;
+
+    /// <summary>Relative sensitivities of a figure, by the values' names.</summary>
+    public Dictionary<string, double> Relative(FigureSlopes figure) => Varied.Values
+        .Select((v, k) => (v.Name, Slope: figure.Slopes[k]!.Value * nominal[k] / figure.Value))
+        .ToDictionary(p => p.Name, p => p.Slope);
+
+    /// <summary>The worst disagreement of derivatives at fixed instants with differences, relative to the
+    /// largest derivative of the same quantity with respect to the same value; a derivative of less than 1 %
+    /// per 100 % is judged as that, since differences lose it in rounding.</summary>
+    public double WorstAgainstDifferences(IReadOnlyList<Measurand> quantities, double[] times)
+    {
+        double worst = 0;
+        for (var v = 0; v < nominal.Length; v++)
+        {
+            var size = nominal[v] == 0 ? 1 : Math.Abs(nominal[v]);
+            var values = Read(new CurveBuilder(Analysis.Solution));
+            var differences = Differences(v, Read);
+            for (var q = 0; q < quantities.Count; q++)
+            {
+                var own = differences.AsSpan(q * times.Length, times.Length).ToArray();
+                double[] exact = [.. times.Select(t => Analysis.ValueSlopes(quantities[q], t)[v]!.Value)];
+                var scale = own.Concat(exact).Max(Math.Abs)
+                    + (1e-2 * values.AsSpan(q * times.Length, times.Length).ToArray().Max(Math.Abs) / size);
+                for (var k = 0; k < times.Length && scale > 0; k++)
+                {
+                    worst = Math.Max(worst, Math.Abs(own[k] - exact[k]) / scale);
+                }
+            }
+        }
+
+        return worst;
+
+        double[] Read(CurveBuilder curves) =>
+            [.. quantities.SelectMany(q => times.Select(t => curves.Of(q)!.ValueAt(curves.Solution, t)))];
+    }
+
+    /// <summary>∂figure/∂value number v by differences.</summary>
+    public double FigureDifference(string name, int v, double step = 1e-3)
+    {
+        var figure = StudyFigures.Of(Varied.Circuit).Single(f => f.Name == name);
+        var stop = TestContext.Current.CancellationToken;
+        return Richardson(v, step, values =>
+            StudySolver.At(Varied.At(values).Value!, [figure], stop).Value!.Values[0]!.Value);
+    }
+
+    private double[] Differences(int v, Func<CurveBuilder, double[]> read)
+    {
+        var (a, b, c) = (Central(2e-4), Central(1e-4), Central(0.5e-4));
+        return [.. a.Select((x, k) => (x - (20 * b[k]) + (64 * c[k])) / 45)];
+
+        double[] Central(double relative)
+        {
+            var step = relative * (nominal[v] == 0 ? 1 : nominal[v]);
+            var (up, down) = (read(Solved(v, step)), read(Solved(v, -step)));
+            return [.. up.Select((x, k) => (x - down[k]) / (2 * step))];
+        }
+    }
+
+    private double Richardson(int v, double relative, Func<double[], double> read)
+    {
+        var (a, b, c) = (Central(4 * relative), Central(2 * relative), Central(relative));
+        return (a - (20 * b) + (64 * c)) / 45;
+
+        double Central(double size)
+        {
+            var step = size * (nominal[v] == 0 ? 1 : nominal[v]);
+            double[] up = [.. nominal], down = [.. nominal];
+            (up[v], down[v]) = (nominal[v] + step, nominal[v] - step);
+            return (read(up) - read(down)) / (up[v] - down[v]);
+        }
+    }
+
+    private CurveBuilder Solved(int v, double step)
+    {
+        double[] values = [.. nominal];
+        values[v] += step;
+        var circuit = Varied.At(values).Value!;
+        var outcome = TransientSolver.Solve(
+            circuit, CauseList.FromStart(circuit), TestContext.Current.CancellationToken);
+        Assert.True(outcome.Succeeded, DiagnosticText.Render(outcome.Diagnostics));
+        return new CurveBuilder(outcome.Value);
+    }
+}
