@@ -50,6 +50,7 @@ public static class App
         {
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),
+            new SizeCommand(streams, cancellation),
             new CompareCommand(streams, cancellation),
         };
         var help = root.Options.OfType<HelpOption>().Single();

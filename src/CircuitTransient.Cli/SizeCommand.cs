@@ -11,14 +11,20 @@ namespace CircuitTransient.Cli;
 /// <summary><c>size FILE</c>: the words of a sizing.</summary>
 internal sealed class SizeCommand : Command
 {
-    private readonly Argument<string> file = Words.File();
+    private readonly Argument<string[]> file = Words.Files();
 
     private readonly Option<string[]> part = new("--part")
     {
         Description = "The part whose value is sought, such as Rsn or \"Rsn from 1 Ω to 10 kΩ\"; one or two.",
         HelpName = "PART",
         Arity = ArgumentArity.OneOrMore,
-        AllowMultipleArgumentsPerToken = false,
+    };
+
+    private readonly Option<string[]> value = new("--value")
+    {
+        Description = "A named value that is sought in place of a part, likewise.",
+        HelpName = "VALUE",
+        Arity = ArgumentArity.OneOrMore,
     };
 
     private readonly Option<string> series = new("--series")
@@ -58,7 +64,7 @@ internal sealed class SizeCommand : Command
         : base("size", "Find the values of one or two parts for which everything holds.")
     {
         Add(file);
-        foreach (var option in (Option[])[part, series, least, greatest, withSpread, writeSized])
+        foreach (var option in (Option[])[part, value, series, least, greatest, withSpread, writeSized])
         {
             Add(option);
         }
@@ -66,12 +72,18 @@ internal sealed class SizeCommand : Command
         words.AddTo(this);
         SetAction(parsed => Read(parsed, streams) is { } request
             ? new SizeRun(request, parsed.GetValue(writeSized), words.Read(parsed), streams, cancellation)
-                .Run(parsed.GetRequiredValue(file))
+                .Run(parsed.GetRequiredValue(file)[0])
             : ExitStatus.Mistake);
     }
 
     private SizeRequest? Read(ParseResult parsed, Streams streams)
     {
+        if (parsed.GetRequiredValue(file).Length > 1)
+        {
+            streams.Complain("size takes one circuit file at a time");
+            return null;
+        }
+
         var parts = Parts(parsed, streams);
         var isRead = TryReadSeries(parsed, streams, out var preferred);
         var (low, high) = (parsed.GetValue(least), parsed.GetValue(greatest));
@@ -94,16 +106,21 @@ internal sealed class SizeCommand : Command
 
     private ImmutableArray<SizedPartSyntax> Parts(ParseResult parsed, Streams streams)
     {
-        var said = parsed.GetValue(part) ?? [];
-        if (said.Length is 0 or > 2)
+        var (parts, values) = (parsed.GetValue(part) ?? [], parsed.GetValue(value) ?? []);
+        var count = parts.Length + values.Length;
+        if (count is 0 or > 2)
         {
-            streams.Complain(said.Length == 0
+            streams.Complain(count == 0
                 ? "say which part's value is sought: `--part Rsn`"
-                : $"size finds the values of one or two parts, not {said.Length} at once");
+                : $"size finds the values of one or two parts, not of {count} at once");
             return [];
         }
 
-        var read = said.Select(text => SizedPartParser.Parse(new SourceText(part.Name, text))).ToArray();
+        Outcome<SizedPartSyntax>[] read =
+        [
+            .. parts.Select(text => SizedPartParser.Parse(new SourceText(part.Name, text))),
+            .. values.Select(text => SizedPartParser.Parse(new SourceText(value.Name, text))),
+        ];
         streams.Report([.. read.SelectMany(outcome => outcome.Diagnostics)]);
         if (read is [{ Value: { } first }, { Value: { } second }] && first.Name == second.Name)
         {
@@ -111,7 +128,9 @@ internal sealed class SizeCommand : Command
             return [];
         }
 
-        return read.All(outcome => outcome.Succeeded) ? [.. read.Select(outcome => outcome.Value!)] : [];
+        return read.All(outcome => outcome.Succeeded)
+            ? [.. read.Select((outcome, i) => outcome.Value! with { IsNamedValue = i >= parts.Length })]
+            : [];
     }
 
     private bool TryReadSeries(ParseResult parsed, Streams streams, out PreferredSeries? preferred)

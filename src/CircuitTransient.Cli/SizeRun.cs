@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using CircuitTransient.Reports.Html;
 using CircuitTransient.Reports.Studies;
 using CircuitTransient.Studies.Sizes;
 using CircuitTransient.Text;
@@ -49,7 +50,7 @@ public sealed class SizeRun(
             return ExitStatus.NoUniqueSolution;
         }
 
-        var status = !result.Proposed.ChecksHold ? ExitStatus.SelfCheckFailed
+        var status = !result.ChecksHold ? ExitStatus.SelfCheckFailed
             : result.IsFound ? ExitStatus.Success
             : ExitStatus.RequirementBroken;
         status = new StudyDelivery(options, streams, cancellation).HandOver(
@@ -58,11 +59,36 @@ public sealed class SizeRun(
         return writeSized is null || !result.IsFound ? status : Math.Max(status, WriteSized(result));
     }
 
-    private static ImmutableArray<OutputFile> Files(SizeResult result, string file) =>
-    [
-        OutputFile.OfText("size.json", SizeJson.Write(result)),
-        OutputFile.OfText("size.csv", SizeCsv.Write(result)),
-    ];
+    private ImmutableArray<OutputFile> Files(SizeResult result, string file)
+    {
+        var picture = Task.Run(() => SizePlot.Png(result));
+        return
+        [
+            OutputFile.OfText("size.json", SizeJson.Write(result)),
+            OutputFile.OfText("size.csv", SizeCsv.Write(result)),
+            OutputFile.OfText("size.svg", SizePlot.Svg(result)),
+            new OutputFile("size.png", picture.GetAwaiter().GetResult()),
+            OutputFile.OfText(
+                "report.html", HtmlReport.Write(result.Proposed, CommandFor(file), SizeSection.Of(result))),
+        ];
+    }
+
+    private string CommandFor(string file)
+    {
+        string[] words =
+        [
+            "circuit-transient", "size", Path.GetFileName(file),
+            .. request.Parts.SelectMany(p => new[] { p.IsNamedValue ? "--value" : "--part", p.Source.Content }),
+            .. request.Series is { } series ? new[] { "--series", $"{series}" } : [],
+            .. request.Aim is Extremal aim ? new[] { aim.Of.Name, aim.Of.Content } : [],
+            .. request.WithSpread ? new[] { "--with-spread" } : [],
+        ];
+        return string.Join(' ', words.Select(Quoted));
+    }
+
+    private static string Quoted(string word) => word.Any(c => char.IsWhiteSpace(c) || c is '"' or '\'')
+        ? $"\"{word.Replace("\"", "\\\"", StringComparison.Ordinal)}\""
+        : word;
 
     private int WriteSized(SizeResult result)
     {

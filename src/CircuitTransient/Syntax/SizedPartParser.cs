@@ -9,7 +9,11 @@ namespace CircuitTransient.Syntax;
 /// <param name="Lowest">The least value to look at; null where no range is said.</param>
 /// <param name="Highest">The greatest.</param>
 public sealed record SizedPartSyntax(
-    SourceText Source, string Name, TextSpan Span, NumberSyntax? Lowest, NumberSyntax? Highest);
+    SourceText Source, string Name, TextSpan Span, NumberSyntax? Lowest, NumberSyntax? Highest)
+{
+    /// <summary>Whether it is a named value that parts follow, not a part.</summary>
+    public bool IsNamedValue { get; init; }
+}
 
 /// <summary>Reads what a sizing seeks: a part's name and, if said, its range.</summary>
 public static class SizedPartParser

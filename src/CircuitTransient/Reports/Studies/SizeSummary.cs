@@ -56,17 +56,14 @@ public static class SizeSummary
             return;
         }
 
-        var aim = result.Problem.AimSign == 0 || result.Problem.AimPart >= 0
-            ? ""
-            : $": {SizeWords.AimValue(result, chosen)}";
+        var aim = SizeWords.HasOwnAim(result) ? $": {SizeWords.AimValue(result, chosen)}" : "";
         text.Paragraph(
             $"Of the values that hold, these have the {SizeWords.Aim(result)}{aim}.", indent: 0);
         if (result.Request.Series is not null && result.Exact is { } exact)
         {
-            var exactAim = result.Problem.AimSign == 0 || result.Problem.AimPart >= 0
-                ? "" : $" ({SizeWords.AimValue(result, exact)})";
+            aim = SizeWords.HasOwnAim(result) ? $" ({SizeWords.AimValue(result, exact)})" : "";
             text.Paragraph(
-                $"Not bound to {result.Request.Series}, it would be {SizeWords.Values(result, exact)}{exactAim}.",
+                $"Not bound to {result.Request.Series}, it would be {SizeWords.Values(result, exact)}{aim}.",
                 indent: 0);
         }
 
@@ -92,30 +89,13 @@ public static class SizeSummary
             return;
         }
 
-        var constraints = result.Problem.Constraints;
         text.Blank();
-        if (!conflict.Alone.IsEmpty)
+        foreach (var words in SizeWords.Conflict(result))
         {
-            foreach (var index in conflict.Alone)
-            {
-                text.Paragraph($"Whatever the value, this is broken: {constraints[index].Name}", hanging: 2);
-            }
-        }
-        else if (conflict is { First: { } first, Second: { } second, PairNearest: { } nearest })
-        {
-            text.Paragraph("These two exclude each other: each can be held, but not both.");
-            text.Paragraph($"{constraints[first].Name}", indent: 4, hanging: 2);
-            text.Paragraph($"{constraints[second].Name}", indent: 4, hanging: 2);
-            text.Paragraph(
-                $"They come nearest with {SizeWords.Values(result, nearest)}: " +
-                $"{SizeWords.Margin(constraints[first], nearest.Shares[first])}, and " +
-                $"{SizeWords.Margin(constraints[second], nearest.Shares[second])}.", hanging: 2);
-        }
-        else
-        {
-            text.Paragraph("No two of them exclude each other, but all together do.");
+            text.Paragraph(words, hanging: 2);
         }
 
+        var constraints = result.Problem.Constraints;
         text.Heading($"The least broken: {SizeWords.Values(result, conflict.Nearest)}");
         text.Table([Right, Prose], constraints
             .Select((constraint, i) => (constraint, Share: conflict.Nearest.Shares[i]))
@@ -138,8 +118,8 @@ public static class SizeSummary
             text.Paragraph(
                 $"{SizeWords.Value(interval.From.Values[0], part.Unit)} to " +
                 $"{SizeWords.Value(interval.To.Values[0], part.Unit)}");
-            text.Paragraph($"below it: {End(result, interval.Below)}", indent: 4, hanging: 2);
-            text.Paragraph($"above it: {End(result, interval.Above)}", indent: 4, hanging: 2);
+            text.Paragraph($"below it: {SizeWords.End(result, interval.Below)}", indent: 4, hanging: 2);
+            text.Paragraph($"above it: {SizeWords.End(result, interval.Above)}", indent: 4, hanging: 2);
         }
 
         if (result.Intervals.Length > MostIntervals)
@@ -147,10 +127,6 @@ public static class SizeSummary
             text.Paragraph($"and {result.Intervals.Length - MostIntervals} more, in size.json");
         }
     }
-
-    private static string End(SizeResult result, int? constraint) => constraint is { } index
-        ? $"broken is {result.Problem.Constraints[index].Name}"
-        : "the range ends";
 
     // The best few, so that the one proposed is seen among its like.
     private static void WriteOthers(SummaryText text, SizeResult result)
@@ -164,17 +140,22 @@ public static class SizeSummary
         var holding = result.Preferred.Where(point => point.Holds && (sign == 0 || point.Aim is not null))
             .OrderBy(point => sign == 0 ? -point.Worst : sign * point.Aim!.Value)
             .ThenByDescending(point => point.Worst).ToArray();
-        text.Heading($"{holding.Length} of {result.Preferred.Length} {result.Request.Series} values looked at hold; the best");
+        var kind = $"{result.Request.Series} {(result.Problem.Parts.Length == 1 ? "values" : "pairs of values")}";
+        text.Heading($"{holding.Length} of {result.Preferred.Length} {kind} hold; the best of them");
         ImmutableArray<TextColumn> columns =
-            [.. result.Problem.Parts.Select(_ => Right), .. sign == 0 || result.Problem.AimPart >= 0 ? [] : new[] { Right }, Right, Prose];
+        [
+            .. result.Problem.Parts.Select(_ => Right),
+            .. SizeWords.HasOwnAim(result) ? [Right] : Array.Empty<TextColumn>(),
+            Right,
+            Prose,
+        ];
         text.Table(columns, holding.Take(MostRows).Select(point => Row(result, point)));
     }
 
     private static ImmutableArray<string> Row(SizeResult result, SizePoint point)
     {
         var tightest = result.Problem.Constraints[SizeWords.Tightest(point)];
-        string[] aim = result.Problem.AimSign == 0 || result.Problem.AimPart >= 0
-            ? [] : [SizeWords.AimValue(result, point)];
+        string[] aim = SizeWords.HasOwnAim(result) ? [SizeWords.AimValue(result, point)] : [];
         return
         [
             .. result.Problem.Parts.Select((part, i) => SizeWords.Value(point.Values[i], part.Unit)),

@@ -28,9 +28,9 @@ internal static class SizeWords
         var parts = string.Join(" and ", result.Problem.Parts.Select(part => part.Name));
         if (result.Chosen is { } chosen)
         {
-            return result.Proposed.ChecksHold
+            return result.IsFound
                 ? $"{Values(result, chosen)}: everything holds, {Confirmed(result)}."
-                : $"{Values(result, chosen)} would do, but a self-check of its solution failed: do not use it.";
+                : $"{Values(result, chosen)} is not confirmed: a self-check of its full solution failed.";
         }
 
         return result.Conflict is null && result.Exact is { } exact
@@ -46,6 +46,38 @@ internal static class SizeWords
         Extremal aim => $"greatest {aim.Of.Content.Trim()}",
         _ => "most room to the nearest bound",
     };
+
+    /// <summary>Whether what is made least or greatest is a figure that the values do not show
+    /// themselves.</summary>
+    public static bool HasOwnAim(SizeResult result) =>
+        result.Problem is { AimSign: not 0, AimPart: < 0 };
+
+    /// <summary>What breaks at the end of a stretch of values.</summary>
+    public static string End(SizeResult result, int? constraint) => constraint is { } index
+        ? $"broken is {result.Problem.Constraints[index].Name}"
+        : "the range ends";
+
+    /// <summary>Why nothing holds.</summary>
+    public static ImmutableArray<string> Conflict(SizeResult result)
+    {
+        var constraints = result.Problem.Constraints;
+        return result.Conflict switch
+        {
+            null => [],
+            { Alone: { IsEmpty: false } alone } =>
+                [.. alone.Select(i => $"Whatever the value, this is broken: {constraints[i].Name}.")],
+            { First: { } first, Second: { } second, PairNearest: { } nearest } =>
+            [
+                "These two exclude each other: each can be held, but not both.",
+                $"First: {constraints[first].Name}.",
+                $"Second: {constraints[second].Name}.",
+                $"They come nearest with {Values(result, nearest)}: " +
+                    $"the first {Margin(constraints[first], nearest.Shares[first])}, " +
+                    $"the second {Margin(constraints[second], nearest.Shares[second])}.",
+            ],
+            _ => ["No two of them exclude each other, but all together do."],
+        };
+    }
 
     /// <summary>The value of what is made least or greatest.</summary>
     public static string AimValue(SizeResult result, SizePoint point) =>
@@ -72,6 +104,14 @@ internal static class SizeWords
                 "narrower than the scan's step that never comes near a bound at a scanned value would be missed."
             : $"{result.Points.Length} pairs of values were solved exactly, {result.Axes[0].Length} by " +
                 $"{result.Axes[1].Length}; a region smaller than a cell of that grid may be missed.");
+        foreach (var (part, i) in result.Problem.Parts.Select((part, i) => (part, i)))
+        {
+            if (result.Chosen is { } chosen && result.AtEnd(chosen.Values[i], part))
+            {
+                words.Add($"{part.Name} is proposed at the end of its range: a wider one may do better.");
+            }
+        }
+
         if (result.Unsolved > 0)
         {
             words.Add($"{result.Unsolved} of them have no unique solution and count as broken.");
@@ -87,7 +127,8 @@ internal static class SizeWords
 
     private static string Confirmed(SizeResult result) => result.Request.WithSpread
         && !result.Problem.Corners.Toleranced.IsEmpty
-        ? $"at {CornerCount(result)} of the tolerances too; confirmed by a full solution with its self-checks"
+        ? $"at {CornerCount(result)} of the tolerances too; confirmed by full solutions with self-checks, nominal " +
+            $"and at the {result.Confirmed.Length} worst corners"
         : "confirmed by a full solution with its self-checks";
 
     private static string CornerCount(SizeResult result) => result.Problem.Corners.IsComplete

@@ -128,8 +128,9 @@ public sealed class SizeProblem
                 "say what has to hold: `require voltage of bus at most 60 V`")]);
         }
 
-        var targets = request.Parts.Select(StudyTarget (part) =>
-            new PartValueTarget(part.Name) { Written = part.Source, Span = part.Span });
+        var targets = request.Parts.Select(StudyTarget (part) => part.IsNamedValue
+            ? new NamedValueTarget(part.Name) { Written = part.Source, Span = part.Span }
+            : new PartValueTarget(part.Name) { Written = part.Source, Span = part.Span });
         var varied = VariedCircuit.Of(
             circuit, [.. targets, .. request.WithSpread ? [new EveryTolerance()] : Array.Empty<StudyTarget>()],
             readBeside);

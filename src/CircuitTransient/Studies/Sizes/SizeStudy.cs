@@ -13,6 +13,8 @@ public sealed class SizeStudy
     private const int PlaneCount = 37; // twelve a decade over the usual range
     private const int MostPlanePoints = 6000;
     private const int Neighbours = 12; // of a fine series, on either side of the best values
+    private const int MostJudged = 8192; // solutions, some seconds of work
+    private const int MostConfirmed = 8; // a full solution takes some tens of milliseconds
     private const int MostRounds = 12; // each adds corners of the tolerances that decide
 
     private readonly SizeProblem problem;
@@ -48,10 +50,10 @@ public sealed class SizeStudy
         {
             var search = new SizeSearch(problem, corners, cancellation);
             var found = problem.Parts.Length == 1 ? OnLine(search) : InPlane(search);
-            var broken = Confirm(found.Candidates, out var chosen);
-            if (broken.IsEmpty || chosen is not null || round == MostRounds)
+            var broken = Confirm(found, out var chosen);
+            if (broken.IsEmpty || round == MostRounds)
             {
-                return Conclude(found, chosen, corners);
+                return Conclude(Judged(found), chosen, corners);
             }
 
             corners = corners.Union(broken).ToImmutableArray();
@@ -115,6 +117,8 @@ public sealed class SizeStudy
     private static double Reach(ImmutableArray<double> axis) =>
         axis.Length < 2 ? 0.1 : 2 * Math.Log(axis[^1] / axis[0]) / (axis.Length - 1);
 
+    private bool LooksAtCorners => request.WithSpread && !problem.Corners.Toleranced.IsEmpty;
+
     private bool IsPreferredGrid => request.Series is { } series
         && problem.Parts.Length == 2
         && Values(series, 0).Length * Values(series, 1).Length is > 0 and <= MostPlanePoints;
@@ -143,7 +147,7 @@ public sealed class SizeStudy
     /// middle of the range.</summary>
     private ImmutableArray<UInt128> DecidingCorners()
     {
-        if (!request.WithSpread || problem.Corners.Toleranced.IsEmpty)
+        if (!LooksAtCorners)
         {
             return [];
         }
@@ -176,24 +180,30 @@ public sealed class SizeStudy
     }
 
     /// <summary>Takes the first candidate that holds at every corner.</summary>
-    /// <returns>The corners that broke the best candidate, where it was broken.</returns>
-    private ImmutableArray<UInt128> Confirm(ImmutableArray<SizePoint> candidates, out SizePoint? chosen)
+    /// <returns>The corners that broke the best candidate or an end of a stretch; the search is not done
+    /// before there are none.</returns>
+    private ImmutableArray<UInt128> Confirm(Finding found, out SizePoint? chosen)
     {
-        ImmutableArray<UInt128> broken = [];
-        foreach (var candidate in candidates)
+        if (!LooksAtCorners)
         {
-            if (!request.WithSpread || problem.Corners.Toleranced.IsEmpty)
-            {
-                chosen = candidate;
-                return [];
-            }
+            chosen = found.Candidates.FirstOrDefault();
+            return [];
+        }
 
+        ImmutableArray<UInt128> broken =
+        [
+            .. found.Intervals.SelectMany(interval => new[] { interval.From, interval.To })
+                .Select(end => WorstCorners(end.Values))
+                .Where(worst => !worst.Point.Holds).SelectMany(worst => worst.Corners).Distinct(),
+        ];
+        foreach (var candidate in found.Candidates)
+        {
             var (corners, point) = WorstCorners(candidate.Values);
             point = point with { Shares = [.. point.Shares.Zip(candidate.Shares, Math.Min)] };
             if (point.Holds)
             {
                 chosen = point;
-                return [];
+                return broken;
             }
 
             broken = broken.IsEmpty ? corners : broken;
@@ -201,6 +211,35 @@ public sealed class SizeStudy
 
         chosen = null;
         return broken;
+    }
+
+    /// <summary>The points that hold at the deciding corners, judged at every corner, where that is not too
+    /// much work.</summary>
+    private Finding Judged(Finding found)
+    {
+        var corners = problem.Corners.All;
+        var isGrid = found.Preferred == found.Points;
+        if (!LooksAtCorners || !problem.Corners.IsComplete)
+        {
+            return found;
+        }
+
+        var points = Judge(found.Points);
+        return found with { Points = points, Preferred = isGrid ? points : Judge(found.Preferred) };
+
+        ImmutableArray<SizePoint> Judge(ImmutableArray<SizePoint> looked)
+        {
+            if (looked.Count(point => point.Holds) * corners.Length > MostJudged)
+            {
+                return looked;
+            }
+
+            var judged = looked.ToArray();
+            var options = new ParallelOptions { CancellationToken = cancellation };
+            Parallel.For(0, judged.Length, options, i =>
+                judged[i] = judged[i].Holds ? problem.At(judged[i].Values, corners, cancellation) : judged[i]);
+            return [.. judged];
+        }
     }
 
     private Outcome<SizeResult> Conclude(Finding found, SizePoint? chosen, ImmutableArray<UInt128> corners)
@@ -216,8 +255,32 @@ public sealed class SizeStudy
                 chosen, found.Conflict, corners,
                 ResultBuilder.Measure(
                     solved.Value, solved.Diagnostics, AnalysisOptions.Default, cancellation),
-                text), [])
+                text,
+                chosen is null ? [] : ConfirmedCorners(chosen)), [])
             : new(null, solved.Diagnostics);
+    }
+
+    /// <summary>The corners that are worst for the proposed values, solved in full.</summary>
+    private ImmutableArray<ConfirmedCorner> ConfirmedCorners(SizePoint chosen)
+    {
+        if (!LooksAtCorners)
+        {
+            return [];
+        }
+
+        var corners = WorstCorners(chosen.Values).Corners.Take(MostConfirmed).ToArray();
+        var confirmed = new ConfirmedCorner[corners.Length];
+        var options = new ParallelOptions { CancellationToken = cancellation };
+        Parallel.For(0, corners.Length, options, i =>
+        {
+            var solved = problem.CircuitAt(chosen.Values, corners[i])
+                .Then(c => TransientSolver.Solve(c, CauseList.FromStart(c), cancellation));
+            var result = solved.Succeeded
+                ? ResultBuilder.Measure(solved.Value, [], AnalysisOptions.Default, cancellation)
+                : null;
+            confirmed[i] = new(corners[i], result is { AllHold: true }, result is { ChecksHold: true });
+        });
+        return [.. confirmed];
     }
 
     private Outcome<Circuit> Read(SourceText source)

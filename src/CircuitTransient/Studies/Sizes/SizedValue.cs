@@ -1,4 +1,4 @@
-using CircuitTransient.Circuits;
+using System.Globalization;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
@@ -25,10 +25,10 @@ public sealed record SizedValue(
     public static (SizedValue? Value, Diagnostic? Mistake) Of(
         SizedPartSyntax part, VariedValue value, int partCount)
     {
-        if (value.Unit is not ("Ω" or "F" or "H") || value.Kind != VariedKind.Parameter)
+        if (value.Unit is not ("Ω" or "F" or "H"))
         {
-            return Refuse(part.Source, part.Span, $"`{part.Name}` is no resistor, capacitor or inductor",
-                "size finds the values of those");
+            return Refuse(part.Source, part.Span,
+                $"`{part.Name}` is neither resistance, capacitance nor inductance", "size finds values of those");
         }
 
         if (value.Nominal <= 0)
@@ -40,8 +40,8 @@ public sealed record SizedValue(
         var reach = partCount == 1 ? ReachOfOne : ReachOfTwo;
         if (part is not { Lowest: { } from, Highest: { } to })
         {
-            return (new(value.Name, value.Unit, value.Nominal, value.Nominal / reach, value.Nominal * reach,
-                IsRangeStated: false), null);
+            return (new(value.Name, value.Unit, value.Nominal, TwoDigits(value.Nominal / reach),
+                TwoDigits(value.Nominal * reach), IsRangeStated: false), null);
         }
 
         foreach (var limit in new[] { from, to })
@@ -57,6 +57,10 @@ public sealed record SizedValue(
             : Refuse(part.Source, TextSpan.Between(from.Span, to.Span), "the range ends where it begins, or below",
                 $"write `{part.Name} from {part.Source[to.Span]} to {part.Source[from.Span]}`");
     }
+
+    // A range that nobody stated is a round one.
+    private static double TwoDigits(double value) =>
+        double.Parse(value.ToString("E1", CultureInfo.InvariantCulture), CultureInfo.InvariantCulture);
 
     private static Diagnostic? Mistake(SourceText source, NumberSyntax limit, string unit)
     {
