@@ -35,8 +35,8 @@ internal sealed class SizeCommand : Command
 
     private readonly Option<string> least = new("--least")
     {
-        Description = "Of the values that hold, those that make this least: a sought part, or a quantity such as " +
-            "\"energy in Rsn\".",
+        Description =
+            "Of the values that hold, those that make this least: a sought part, or \"energy in Rsn\".",
         HelpName = "QUANTITY",
     };
 

@@ -78,7 +78,7 @@ public sealed class SizeRun(
         string[] words =
         [
             "circuit-transient", "size", Path.GetFileName(file),
-            .. request.Parts.SelectMany(p => new[] { p.IsNamedValue ? "--value" : "--part", p.Source.Content }),
+            .. request.Parts.SelectMany(part => new[] { part.Source.Name, part.Source.Content }),
             .. request.Series is { } series ? new[] { "--series", $"{series}" } : [],
             .. request.Aim is Extremal aim ? new[] { aim.Of.Name, aim.Of.Content } : [],
             .. request.WithSpread ? new[] { "--with-spread" } : [],

@@ -73,6 +73,7 @@ public static class SizedPartParser
     private static string WrittenOut(NameSyntax name)
     {
         var owner = name.Owner is { } outer ? $"{WrittenOut(outer)}/" : "";
-        return name.Index is { Counter: null } index ? $"{owner}{name.Text}[{index.Offset}]" : owner + name.Text;
+        var index = name.Index is { Counter: null } numbered ? $"[{numbered.Offset}]" : "";
+        return owner + name.Text + index;
     }
 }

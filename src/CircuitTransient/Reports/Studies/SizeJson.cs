@@ -82,7 +82,7 @@ public static class SizeJson
         json.Object("confirmation", () =>
         {
             json.WriteBoolean("holds", result.Chosen is not null && result.Proposed.AllHold);
-            json.WriteBoolean("selfChecksHold", result.Proposed.ChecksHold);
+            json.WriteBoolean("selfChecksHold", result.ChecksHold);
             json.WriteBoolean("withSpread", result.Request.WithSpread);
             json.Array("tolerances", result.Problem.Corners.Toleranced,
                 place => json.WriteStringValue(result.Problem.NameOf(place)));
@@ -91,6 +91,7 @@ public static class SizeJson
                     ? result.Problem.Corners.All.Length
                     : 0);
             json.WriteBoolean("everyCorner", result.Problem.Corners.IsComplete);
+            json.WriteNumber("inFull", result.Confirmed.Length);
         });
 
     private static void WriteConflict(Utf8JsonWriter json, SizeResult result)

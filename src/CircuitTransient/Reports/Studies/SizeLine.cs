@@ -10,8 +10,8 @@ internal sealed class SizeLine
     private const double Width = PlotPanel.Width;
     private const double Left = 84;
     private const double Right = 760;
-    private const double Top = 56;
-    private const double Bottom = 420;
+    private const double Top = 76;
+    private const double Bottom = 440;
     private const int MostShown = 6;
     private const string Held = "#dbe6ec";
 
@@ -33,12 +33,15 @@ internal sealed class SizeLine
     public static Drawing Draw(SizeResult result, PlotFonts fonts)
     {
         var line = new SizeLine(result, fonts);
+        line.shapes.Add(new TextShape(
+            Left, 28, fonts.Fitted(SizeWords.PictureTitle(result), 15, Right - Left, isStrong: true), 15,
+            PlotStyle.Ink, IsStrong: true));
         line.AddHeld();
         line.AddAxes();
         line.AddRooms();
         line.AddPlaces();
         return new Drawing(
-            Width, Bottom + 56, $"Where {result.Problem.Parts[0].Name} holds", line.shapes.ToImmutable());
+            Width, Bottom + 44, SizeWords.PictureTitle(result), line.shapes.ToImmutable());
     }
 
     private void AddHeld()
@@ -64,12 +67,14 @@ internal sealed class SizeLine
         foreach (var (value, label) in level.Ticks("%", 6).Marks)
         {
             var y = level.Place(value);
-            shapes.Add(new LineShape(Left, y, Right, y, new Stroke(value == 0 ? PlotStyle.Axis : PlotStyle.Grid, 1)));
+            var stroke = new Stroke(value == 0 ? PlotStyle.Axis : PlotStyle.Grid, 1);
+            shapes.Add(new LineShape(Left, y, Right, y, stroke));
             shapes.Add(new TextShape(Left - 8, y + 4, label, 11.5, PlotStyle.Grey, TextAnchor.End));
         }
 
         shapes.Add(new TextShape(Right + 24, Bottom + 18, part.Name, 13, PlotStyle.Ink, IsStrong: true));
-        shapes.Add(new TextShape(Left, Top - 14, "room to each bound, in % of it (below 0: broken)", 11.5, PlotStyle.Ink));
+        shapes.Add(new TextShape(
+            Left, Top - 12, "room to each bound, in % of it (below 0: broken)", 11.5, PlotStyle.Grey));
     }
 
     private void AddRooms()
@@ -85,15 +90,14 @@ internal sealed class SizeLine
 
             y += 22;
             shapes.Add(new LineShape(Right + 24, y - 4, Right + 54, y - 4, stroke));
-            var name = fonts.Fitted(
-                result.Problem.Constraints[i].Name, 11.5, Width - Right - 70, isStrong: false);
-            shapes.Add(new TextShape(Right + 62, y, name, 11.5, PlotStyle.Ink));
+            y = LegendText.Add(shapes, fonts, result.Problem.Constraints[i].Name, Right + 62, y);
         }
 
         var hidden = result.Problem.Constraints.Length - MostShown;
         if (hidden > 0)
         {
-            shapes.Add(new TextShape(Right + 24, y + 22, $"and {hidden} more, in size.csv", 11.5, PlotStyle.Grey));
+            shapes.Add(new TextShape(
+                Right + 24, y + 22, $"and {hidden} more, in size.csv", 11.5, PlotStyle.Grey));
         }
     }
 
@@ -139,7 +143,8 @@ internal sealed class SizeLine
 
         if (result.Chosen is { } chosen)
         {
-            var (x, y) = (across.Place(chosen.Values[0]), level.Place(Math.Min(level.To, 100 * chosen.Worst)));
+            var x = across.Place(chosen.Values[0]);
+            var y = level.Place(Math.Min(level.To, 100 * chosen.Worst));
             shapes.Add(new DiscShape(x, y, 6, PlotStyle.Ink));
             var isRight = x > (Left + Right) / 2;
             shapes.Add(new TextShape(

@@ -10,8 +10,8 @@ internal sealed class SizeMap
     private const double Width = PlotPanel.Width;
     private const double Left = 96;
     private const double Right = 760;
-    private const double Top = 56;
-    private const double Bottom = 640;
+    private const double Top = 64;
+    private const double Bottom = 648;
     private const int MostShown = 6;
 
     // One hue, the more room the deeper: equal steps of lightness between the paper and the accent.
@@ -37,13 +37,15 @@ internal sealed class SizeMap
     public static Drawing Draw(SizeResult result, PlotFonts fonts)
     {
         var map = new SizeMap(result, fonts);
+        map.shapes.Add(new TextShape(
+            Left, 28, fonts.Fitted(SizeWords.PictureTitle(result), 15, Right - Left, isStrong: true), 15,
+            PlotStyle.Ink, IsStrong: true));
         map.AddCells();
         map.AddAxes();
         map.AddBounds();
         map.AddPlaces();
         return new Drawing(
-            Width, Bottom + 64, $"Where {result.Problem.Parts[0].Name} and {result.Problem.Parts[1].Name} hold",
-            map.shapes.ToImmutable());
+            Width, Bottom + 48, SizeWords.PictureTitle(result), map.shapes.ToImmutable());
     }
 
     private static LogScale Scale(ImmutableArray<double> axis, double start, double end)
@@ -134,32 +136,10 @@ internal sealed class SizeMap
 
             y += 22;
             shapes.Add(new LineShape(Right + 24, y - 4, Right + 54, y - 4, stroke));
-            y = AddWrapped(result.Problem.Constraints[i].Name, Right + 62, y);
+            y = LegendText.Add(shapes, fonts, result.Problem.Constraints[i].Name, Right + 62, y);
         }
 
         AddLegend(y + 34);
-    }
-
-    private double AddWrapped(string words, double x, double y)
-    {
-        var room = Width - x - 8;
-        var line = "";
-        foreach (var word in words.Split(' '))
-        {
-            var longer = line.Length == 0 ? word : $"{line} {word}";
-            if (line.Length > 0 && fonts.Width(longer, 11.5) > room)
-            {
-                shapes.Add(new TextShape(x, y, line, 11.5, PlotStyle.Ink));
-                (line, y) = (word, y + 15);
-            }
-            else
-            {
-                line = longer;
-            }
-        }
-
-        shapes.Add(new TextShape(x, y, fonts.Fitted(line, 11.5, room, isStrong: false), 11.5, PlotStyle.Ink));
-        return y;
     }
 
     private void AddLegend(double y)
@@ -195,7 +175,8 @@ internal sealed class SizeMap
             var stroke = new Stroke(PlotStyle.Ink, 1.6);
             shapes.Add(new LineShape(x - 6, y - 6, x + 6, y + 6, stroke));
             shapes.Add(new LineShape(x - 6, y + 6, x + 6, y - 6, stroke));
-            shapes.Add(new TextShape(x - 10, y + 4, "now", 11.5, PlotStyle.Ink, TextAnchor.End, HasHalo: true));
+            shapes.Add(new TextShape(
+                x - 10, y + 4, "now", 11.5, PlotStyle.Ink, TextAnchor.End, HasHalo: true));
         }
 
         if (result.Chosen is { } chosen)

@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using CircuitTransient.Reports.Html;
 using CircuitTransient.Studies.Sizes;
 
@@ -36,7 +35,8 @@ public static class SizeSection
             """);
     }
 
-    private static string Exact(SizeResult result) => result is { Request.Series: { } series, Exact: { } exact }
+    private static string Exact(SizeResult result) =>
+        result is { Request.Series: { } series, Exact: { } exact }
         ? $"Not bound to {series}, it would be {SizeWords.Values(result, exact)}."
         : "";
 
@@ -96,7 +96,8 @@ public static class SizeSection
         return Markup.Of($"""
             <div class="wide"><table>
             <caption>Every value of {Markup.Name(part.Name)} that holds</caption>
-            <thead><tr><th scope="col">Values</th><th scope="col">Below</th><th scope="col">Above</th></tr></thead>
+            <thead><tr><th scope="col">Values</th><th scope="col">Below</th>
+            <th scope="col">Above</th></tr></thead>
             <tbody>
             {Markup.Join(rows)}</tbody></table></div>
 

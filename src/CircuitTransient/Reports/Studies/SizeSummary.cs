@@ -78,7 +78,8 @@ public static class SizeSummary
             var limit = part.LinearUpTo!;
             text.Paragraph(
                 $"{part.Name} is linear up to {ReportWords.Number(limit.Declared, limit.Unit)} but reaches " +
-                $"{ReportWords.Number(limit.Reached, limit.Unit)}: what holds here holds for the model", hanging: 2);
+                $"{ReportWords.Number(limit.Reached, limit.Unit)}: what holds here holds for the model",
+                hanging: 2);
         }
     }
 
@@ -140,7 +141,8 @@ public static class SizeSummary
         var holding = result.Preferred.Where(point => point.Holds && (sign == 0 || point.Aim is not null))
             .OrderBy(point => sign == 0 ? -point.Worst : sign * point.Aim!.Value)
             .ThenByDescending(point => point.Worst).ToArray();
-        var kind = $"{result.Request.Series} {(result.Problem.Parts.Length == 1 ? "values" : "pairs of values")}";
+        var kind = result.Problem.Parts.Length == 1 ? "values" : "pairs of values";
+        kind = $"{result.Request.Series} {kind}";
         text.Heading($"{holding.Length} of {result.Preferred.Length} {kind} hold; the best of them");
         ImmutableArray<TextColumn> columns =
         [

@@ -34,8 +34,8 @@ internal static class SizeWords
         }
 
         return result.Conflict is null && result.Exact is { } exact
-            ? $"No {result.Request.Series} value of {parts} holds, though {Values(result, exact)} would: try a " +
-                "finer series."
+            ? $"No {result.Request.Series} values of {parts} hold, though {Values(result, exact)} would: " +
+                "try a finer series."
             : $"No value of {parts} in the range looked at meets every requirement and rating.";
     }
 
@@ -46,6 +46,15 @@ internal static class SizeWords
         Extremal aim => $"greatest {aim.Of.Content.Trim()}",
         _ => "most room to the nearest bound",
     };
+
+    /// <summary>What a picture shows.</summary>
+    public static string PictureTitle(SizeResult result)
+    {
+        var circuit = result.Problem.File;
+        var parts = string.Join(" and ", result.Problem.Parts.Select(part => part.Name));
+        var hold = result.Axes.Length == 1 ? "holds" : "hold";
+        return $"{circuit.Title ?? circuit.Source.Name}: where {parts} {hold}";
+    }
 
     /// <summary>Whether what is made least or greatest is a figure that the values do not show
     /// themselves.</summary>
@@ -100,8 +109,9 @@ internal static class SizeWords
         }
 
         words.Add(result.Problem.Parts.Length == 1
-            ? $"{result.Points.Length} values were solved exactly; boundaries are bisected to 1e-12. A stretch " +
-                "narrower than the scan's step that never comes near a bound at a scanned value would be missed."
+            ? $"{result.Points.Length} values were solved exactly; boundaries are bisected to 1e-12. A " +
+                "stretch narrower than the scan's step that comes near no bound at a scanned value would " +
+                "be missed."
             : $"{result.Points.Length} pairs of values were solved exactly, {result.Axes[0].Length} by " +
                 $"{result.Axes[1].Length}; a region smaller than a cell of that grid may be missed.");
         foreach (var (part, i) in result.Problem.Parts.Select((part, i) => (part, i)))
@@ -127,8 +137,8 @@ internal static class SizeWords
 
     private static string Confirmed(SizeResult result) => result.Request.WithSpread
         && !result.Problem.Corners.Toleranced.IsEmpty
-        ? $"at {CornerCount(result)} of the tolerances too; confirmed by full solutions with self-checks, nominal " +
-            $"and at the {result.Confirmed.Length} worst corners"
+        ? $"at {CornerCount(result)} of the tolerances too; confirmed by full solutions with self-checks, " +
+            $"nominal and at the worst corner of each ({result.Confirmed.Length})"
         : "confirmed by a full solution with its self-checks";
 
     private static string CornerCount(SizeResult result) => result.Problem.Corners.IsComplete
@@ -146,9 +156,9 @@ internal static class SizeWords
         var names = string.Join(", ", corners.Toleranced.Select(result.Problem.NameOf));
         var scanned = $"The scan looked at {result.Corners.Length} that decide";
         return corners.IsComplete
-            ? $"{scanned}, the proposed values were solved at all {corners.All.Length} corners of {names}; a worst " +
-                "case inside the tolerances, away from every corner, is not excluded."
-            : $"{scanned}, the proposed values were solved with each of {names} at a limit of its own against all " +
-                $"others ({corners.All.Length} corners of 2^{corners.Toleranced.Length}).";
+            ? $"{scanned}, the proposed values were solved at all {corners.All.Length} corners of {names}; " +
+                "a worst case inside the tolerances, away from every corner, is not excluded."
+            : $"{scanned}, the proposed values were solved with each of {names} at a limit of its own " +
+                $"against all others ({corners.All.Length} corners of 2^{corners.Toleranced.Length}).";
     }
 }

@@ -67,7 +67,8 @@ internal static class LinearCorners
         return corner.All(double.IsFinite) ? corner : null;
     }
 
-    private static double[]? Meet((double[] A, double B) p, (double[] A, double B) q, (double[] A, double B) r)
+    private static double[]? Meet(
+        (double[] A, double B) p, (double[] A, double B) q, (double[] A, double B) r)
     {
         var determinant = Determinant(p.A, q.A, r.A);
         var corner = new double[3];

@@ -8,7 +8,7 @@ namespace CircuitTransient.Studies.Sizes;
 internal sealed class PlaneSearch(SizeSearch search)
 {
     private const int MostSteps = 80;
-    private const int MostRows = 14; // the constraints nearest to their bounds; others cannot matter in a step
+    private const int MostRows = 14; // the constraints nearest to their bounds: others matter in no step
     private const int MostCorrections = 6;
     private const double Difference = 1e-5; // of a logarithm: rounding of 1e-11 leaves a slope good to 1e-6
     private const double Smallest = 1e-10;

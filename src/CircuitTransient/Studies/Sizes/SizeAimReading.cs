@@ -41,7 +41,7 @@ internal sealed record SizeAimReading(
         {
             return new(null, [Diagnostic.Error(aim.Of, new TextSpan(0, aim.Of.Content.Length),
                 "this is neither a sized part nor a quantity",
-                $"write `{request.Parts[0].Name}`, or a quantity such as `energy in {request.Parts[0].Name}`")]);
+                $"write `{request.Parts[0].Name}`, or a quantity: `energy in {request.Parts[0].Name}`")]);
         }
 
         return WithObservation(circuit, aim, words, readBeside).Then(observed =>

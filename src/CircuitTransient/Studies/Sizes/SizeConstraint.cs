@@ -55,6 +55,7 @@ public sealed record SizeConstraint(string Name, string Unit, double Scale, Stud
             _ => ("steepest current", "A/s"),
         };
         var rated = EngineeringNumber.Format(rating.Limit, unit);
-        return new SizeConstraint($"{what} of {part.Name} at most the rated {rated}", unit, rating.Limit, figure);
+        return new SizeConstraint(
+            $"{what} of {part.Name} at most the rated {rated}", unit, rating.Limit, figure);
     }
 }

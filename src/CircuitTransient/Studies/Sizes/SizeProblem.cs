@@ -13,8 +13,8 @@ public sealed class SizeProblem
     private readonly SizeAimReading aim;
 
     private SizeProblem(
-        Circuit file, VariedCircuit varied, ImmutableArray<SizedValue> parts, ImmutableArray<SizeConstraint> constraints,
-        SizeAimReading aim)
+        Circuit file, VariedCircuit varied, ImmutableArray<SizedValue> parts,
+        ImmutableArray<SizeConstraint> constraints, SizeAimReading aim)
     {
         File = file;
         this.varied = varied;
@@ -131,19 +131,18 @@ public sealed class SizeProblem
         var targets = request.Parts.Select(StudyTarget (part) => part.IsNamedValue
             ? new NamedValueTarget(part.Name) { Written = part.Source, Span = part.Span }
             : new PartValueTarget(part.Name) { Written = part.Source, Span = part.Span });
-        var varied = VariedCircuit.Of(
-            circuit, [.. targets, .. request.WithSpread ? [new EveryTolerance()] : Array.Empty<StudyTarget>()],
-            readBeside);
-        if (!varied.Succeeded)
+        StudyTarget[] others = request.WithSpread ? [new EveryTolerance()] : [];
+        var found = VariedCircuit.Of(circuit, [.. targets, .. others], readBeside);
+        if (!found.Succeeded)
         {
-            return new(null, varied.Diagnostics);
+            return new(null, found.Diagnostics);
         }
 
         var parts = ImmutableArray.CreateBuilder<SizedValue>();
         for (var i = 0; i < request.Parts.Length; i++)
         {
             var (value, mistake) = SizedValue.Of(
-                request.Parts[i], varied.Value.Values[i], request.Parts.Length);
+                request.Parts[i], found.Value.Values[i], request.Parts.Length);
             if (value is null)
             {
                 return new(null, [mistake!]);
@@ -152,6 +151,6 @@ public sealed class SizeProblem
             parts.Add(value);
         }
 
-        return new(new SizeProblem(file, varied.Value, parts.ToImmutable(), constraints, aim), []);
+        return new(new SizeProblem(file, found.Value, parts.ToImmutable(), constraints, aim), []);
     }
 }

@@ -35,7 +35,8 @@ public sealed record SizeResult(
     string? ProposedText,
     ImmutableArray<ConfirmedCorner> Confirmed)
 {
-    /// <summary>Whether values were found, and the full solution with its self-checks confirms them.</summary>
+    /// <summary>Whether values were found, and full solutions with their self-checks confirm
+    /// them.</summary>
     public bool IsFound =>
         Chosen is not null && Proposed.AllHold && ChecksHold && Confirmed.All(corner => corner.Holds);
 

@@ -5,7 +5,8 @@ namespace CircuitTransient.Studies.Sizes;
 /// <summary>What every search of a sizing shares: the problem, the corners looked at, and how points are
 /// ranked.</summary>
 /// <param name="Problem">The problem.</param>
-/// <param name="Corners">The corners of the tolerances that are looked at besides the nominal circuit.</param>
+/// <param name="Corners">The corners of the tolerances that are looked at besides the nominal
+/// circuit.</param>
 /// <param name="Cancellation">Stops the work.</param>
 internal sealed record SizeSearch(
     SizeProblem Problem, ImmutableArray<UInt128> Corners, CancellationToken Cancellation)
@@ -18,7 +19,8 @@ internal sealed record SizeSearch(
     {
         var points = new SizePoint[values.Count];
         var options = new ParallelOptions { CancellationToken = Cancellation };
-        Parallel.For(0, points.Length, options, i => points[i] = Problem.At(values[i], Corners, Cancellation));
+        Parallel.For(
+            0, points.Length, options, i => points[i] = Problem.At(values[i], Corners, Cancellation));
         return [.. points];
     }
 

@@ -13,13 +13,12 @@ public sealed class SizeStudy
     private const int PlaneCount = 37; // twelve a decade over the usual range
     private const int MostPlanePoints = 6000;
     private const int Neighbours = 12; // of a fine series, on either side of the best values
-    private const int MostJudged = 8192; // solutions, some seconds of work
-    private const int MostConfirmed = 8; // a full solution takes some tens of milliseconds
     private const int MostRounds = 12; // each adds corners of the tolerances that decide
 
     private readonly SizeProblem problem;
     private readonly SizeRequest request;
     private readonly Func<string, Outcome<SourceText>> readBeside;
+    private readonly CornerJudge judge;
     private readonly CancellationToken cancellation;
 
     private SizeStudy(
@@ -30,6 +29,7 @@ public sealed class SizeStudy
         this.request = request;
         this.readBeside = readBeside;
         this.cancellation = cancellation;
+        judge = new CornerJudge(problem, request.WithSpread, cancellation);
     }
 
     /// <summary>Runs a sizing.</summary>
@@ -45,12 +45,12 @@ public sealed class SizeStudy
 
     private Outcome<SizeResult> Run()
     {
-        var corners = DecidingCorners();
+        var corners = judge.Deciding();
         for (var round = 1; ; round++)
         {
             var search = new SizeSearch(problem, corners, cancellation);
             var found = problem.Parts.Length == 1 ? OnLine(search) : InPlane(search);
-            var broken = Confirm(found, out var chosen);
+            var broken = judge.Confirm(found.Intervals, found.Candidates, out var chosen);
             if (broken.IsEmpty || round == MostRounds)
             {
                 return Conclude(Judged(found), chosen, corners);
@@ -84,7 +84,8 @@ public sealed class SizeStudy
     private Finding InPlane(SizeSearch search)
     {
         var axes = PlaneAxes();
-        var scanned = search.At([.. axes[1].SelectMany(y => axes[0].Select(x => ImmutableArray.Create(x, y)))]);
+        var scanned = search.At(
+            [.. axes[1].SelectMany(y => axes[0].Select(x => ImmutableArray.Create(x, y)))]);
         var plane = new PlaneSearch(search);
         var reach = Math.Max(Reach(axes[0]), Reach(axes[1]));
         var start = search.Ranked(scanned).FirstOrDefault() ?? FirstHolding(plane, search, scanned, reach);
@@ -117,8 +118,6 @@ public sealed class SizeStudy
     private static double Reach(ImmutableArray<double> axis) =>
         axis.Length < 2 ? 0.1 : 2 * Math.Log(axis[^1] / axis[0]) / (axis.Length - 1);
 
-    private bool LooksAtCorners => request.WithSpread && !problem.Corners.Toleranced.IsEmpty;
-
     private bool IsPreferredGrid => request.Series is { } series
         && problem.Parts.Length == 2
         && Values(series, 0).Length * Values(series, 1).Length is > 0 and <= MostPlanePoints;
@@ -126,7 +125,8 @@ public sealed class SizeStudy
     private ImmutableArray<double> Values(PreferredSeries series, int part) =>
         [.. PreferredValues.Between(series, problem.Parts[part].Lowest, problem.Parts[part].Highest)];
 
-    private ImmutableArray<ImmutableArray<double>> PlaneAxes() => request.Series is { } series && IsPreferredGrid
+    private ImmutableArray<ImmutableArray<double>> PlaneAxes() =>
+        request.Series is { } series && IsPreferredGrid
         ? [Values(series, 0), Values(series, 1)]
         : [SizeSearch.Spread(problem.Parts[0], PlaneCount), SizeSearch.Spread(problem.Parts[1], PlaneCount)];
 
@@ -143,109 +143,21 @@ public sealed class SizeStudy
         }
     }
 
-    /// <summary>For each constraint the corner that is worst for it at the circuit's own values and at the
-    /// middle of the range.</summary>
-    private ImmutableArray<UInt128> DecidingCorners()
-    {
-        if (!LooksAtCorners)
-        {
-            return [];
-        }
-
-        ImmutableArray<double>[] places =
-        [
-            [.. problem.Parts.Select(part => Math.Clamp(part.Nominal, part.Lowest, part.Highest))],
-            [.. problem.Parts.Select(part => Math.Sqrt(part.Lowest * part.Highest))],
-        ];
-        return [.. places.SelectMany(values => WorstCorners(values).Corners).Distinct()];
-    }
-
-    private (ImmutableArray<UInt128> Corners, SizePoint Point) WorstCorners(ImmutableArray<double> values)
-    {
-        var corners = problem.Corners.All;
-        var points = new SizePoint[corners.Length];
-        var options = new ParallelOptions { CancellationToken = cancellation };
-        Parallel.For(0, points.Length, options,
-            i => points[i] = problem.AtCorner(values, corners[i], cancellation));
-        var worst = Enumerable.Range(0, problem.Constraints.Length)
-            .Select(c => corners[Enumerable.Range(0, points.Length).MinBy(i => points[i].Shares[c])]);
-        return ([.. worst.Distinct()], problem.AtCorner(values, null, cancellation) with
-        {
-            Shares =
-            [
-                .. Enumerable.Range(0, problem.Constraints.Length)
-                    .Select(c => points.Min(point => point.Shares[c])),
-            ],
-        });
-    }
-
-    /// <summary>Takes the first candidate that holds at every corner.</summary>
-    /// <returns>The corners that broke the best candidate or an end of a stretch; the search is not done
-    /// before there are none.</returns>
-    private ImmutableArray<UInt128> Confirm(Finding found, out SizePoint? chosen)
-    {
-        if (!LooksAtCorners)
-        {
-            chosen = found.Candidates.FirstOrDefault();
-            return [];
-        }
-
-        ImmutableArray<UInt128> broken =
-        [
-            .. found.Intervals.SelectMany(interval => new[] { interval.From, interval.To })
-                .Select(end => WorstCorners(end.Values))
-                .Where(worst => !worst.Point.Holds).SelectMany(worst => worst.Corners).Distinct(),
-        ];
-        foreach (var candidate in found.Candidates)
-        {
-            var (corners, point) = WorstCorners(candidate.Values);
-            point = point with { Shares = [.. point.Shares.Zip(candidate.Shares, Math.Min)] };
-            if (point.Holds)
-            {
-                chosen = point;
-                return broken;
-            }
-
-            broken = broken.IsEmpty ? corners : broken;
-        }
-
-        chosen = null;
-        return broken;
-    }
-
-    /// <summary>The points that hold at the deciding corners, judged at every corner, where that is not too
-    /// much work.</summary>
     private Finding Judged(Finding found)
     {
-        var corners = problem.Corners.All;
-        var isGrid = found.Preferred == found.Points;
-        if (!LooksAtCorners || !problem.Corners.IsComplete)
+        var points = judge.AtEveryCorner(found.Points);
+        return found with
         {
-            return found;
-        }
-
-        var points = Judge(found.Points);
-        return found with { Points = points, Preferred = isGrid ? points : Judge(found.Preferred) };
-
-        ImmutableArray<SizePoint> Judge(ImmutableArray<SizePoint> looked)
-        {
-            if (looked.Count(point => point.Holds) * corners.Length > MostJudged)
-            {
-                return looked;
-            }
-
-            var judged = looked.ToArray();
-            var options = new ParallelOptions { CancellationToken = cancellation };
-            Parallel.For(0, judged.Length, options, i =>
-                judged[i] = judged[i].Holds ? problem.At(judged[i].Values, corners, cancellation) : judged[i]);
-            return [.. judged];
-        }
+            Points = points,
+            Preferred = found.Preferred == found.Points ? points : judge.AtEveryCorner(found.Preferred),
+        };
     }
 
     private Outcome<SizeResult> Conclude(Finding found, SizePoint? chosen, ImmutableArray<UInt128> corners)
     {
         var text = chosen is null ? null : problem.TextWith(chosen.Values).Value;
-        var circuit = text is not null ? Read(new SourceText($"{problem.File.Source.Name} with these values", text))
+        var name = $"{problem.File.Source.Name} with these values";
+        var circuit = text is not null ? Read(new SourceText(name, text))
             : chosen is not null ? problem.CircuitAt(chosen.Values, null)
             : new(problem.File, []);
         var solved = circuit.Then(c => TransientSolver.Solve(c, CauseList.FromStart(c), cancellation));
@@ -256,31 +168,8 @@ public sealed class SizeStudy
                 ResultBuilder.Measure(
                     solved.Value, solved.Diagnostics, AnalysisOptions.Default, cancellation),
                 text,
-                chosen is null ? [] : ConfirmedCorners(chosen)), [])
+                chosen is null ? [] : judge.InFull(chosen)), [])
             : new(null, solved.Diagnostics);
-    }
-
-    /// <summary>The corners that are worst for the proposed values, solved in full.</summary>
-    private ImmutableArray<ConfirmedCorner> ConfirmedCorners(SizePoint chosen)
-    {
-        if (!LooksAtCorners)
-        {
-            return [];
-        }
-
-        var corners = WorstCorners(chosen.Values).Corners.Take(MostConfirmed).ToArray();
-        var confirmed = new ConfirmedCorner[corners.Length];
-        var options = new ParallelOptions { CancellationToken = cancellation };
-        Parallel.For(0, corners.Length, options, i =>
-        {
-            var solved = problem.CircuitAt(chosen.Values, corners[i])
-                .Then(c => TransientSolver.Solve(c, CauseList.FromStart(c), cancellation));
-            var result = solved.Succeeded
-                ? ResultBuilder.Measure(solved.Value, [], AnalysisOptions.Default, cancellation)
-                : null;
-            confirmed[i] = new(corners[i], result is { AllHold: true }, result is { ChecksHold: true });
-        });
-        return [.. confirmed];
     }
 
     private Outcome<Circuit> Read(SourceText source)

@@ -28,7 +28,8 @@ public sealed record SizedValue(
         if (value.Unit is not ("Ω" or "F" or "H"))
         {
             return Refuse(part.Source, part.Span,
-                $"`{part.Name}` is neither resistance, capacitance nor inductance", "size finds values of those");
+                $"`{part.Name}` is neither resistance, capacitance nor inductance",
+                "size finds values of those");
         }
 
         if (value.Nominal <= 0)
@@ -54,7 +55,8 @@ public sealed record SizedValue(
 
         return from.Value < to.Value
             ? (new(value.Name, value.Unit, value.Nominal, from.Value, to.Value, IsRangeStated: true), null)
-            : Refuse(part.Source, TextSpan.Between(from.Span, to.Span), "the range ends where it begins, or below",
+            : Refuse(part.Source, TextSpan.Between(from.Span, to.Span),
+                "the range does not end above its start",
                 $"write `{part.Name} from {part.Source[to.Span]} to {part.Source[from.Span]}`");
     }
 
@@ -81,7 +83,8 @@ public sealed record SizedValue(
             : Diagnostic.Error(source, limit.Span, $"`{text}` is not above zero");
     }
 
-    private static string? SymbolOf(NumberSyntax number) => CircuitTransient.Text.Unit.SymbolOf(number.Dimension);
+    private static string? SymbolOf(NumberSyntax number) =>
+        CircuitTransient.Text.Unit.SymbolOf(number.Dimension);
 
     private static (SizedValue?, Diagnostic?) Refuse(
         SourceText source, TextSpan span, string message, string advice) =>
