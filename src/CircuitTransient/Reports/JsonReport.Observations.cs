@@ -192,7 +192,7 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WriteSelfCheck(Utf8JsonWriter json, SelfCheck check)
+    internal static void WriteSelfCheck(Utf8JsonWriter json, SelfCheck check)
     {
         json.WriteStartObject();
         json.WriteString("name", check.Name);
@@ -202,7 +202,7 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WriteNotJudged(Utf8JsonWriter json, NotJudged check)
+    internal static void WriteNotJudged(Utf8JsonWriter json, NotJudged check)
     {
         json.WriteStartObject();
         json.WriteString("name", check.Name);
