@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using System.CommandLine;
-using System.CommandLine.Parsing;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Sizes;
 using CircuitTransient.Syntax;

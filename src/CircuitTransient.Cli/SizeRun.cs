@@ -2,7 +2,6 @@ using System.Collections.Immutable;
 using CircuitTransient.Reports.Html;
 using CircuitTransient.Reports.Studies;
 using CircuitTransient.Studies.Sizes;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
 

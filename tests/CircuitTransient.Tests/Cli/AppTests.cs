@@ -10,7 +10,8 @@ public sealed class AppTests : IDisposable
 
     [Theory]
     [InlineData("",
-        "error: say what to do: check, solve, scan, size, formula or compare\nsee `circuit-transient --help`\n")]
+        "error: say what to do: check, solve, scan, size, formula or compare\n"
+        + "see `circuit-transient --help`\n")]
     [InlineData("slove",
         "error: there is no command `slove`; did you mean `solve`?\nsee `circuit-transient --help`\n")]
     [InlineData("draw",

@@ -1,6 +1,5 @@
 using System.Globalization;
 using CircuitTransient.Studies;
-using CircuitTransient.Studies.Sizes;
 using CircuitTransient.Tests.Studies.Sizes;
 
 namespace CircuitTransient.Tests.OutsideChecks;

@@ -96,7 +96,8 @@ public sealed class SizeProblem
         if (point is null)
         {
             return new SizePoint(
-                sized, [.. Constraints.Select(_ => double.NegativeInfinity)], null) { IsSolved = false };
+                sized, [.. Constraints.Select(_ => double.NegativeInfinity)], null)
+            { IsSolved = false };
         }
 
         return new SizePoint(

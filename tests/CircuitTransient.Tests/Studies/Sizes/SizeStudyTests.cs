@@ -1,5 +1,4 @@
 using CircuitTransient.Studies;
-using CircuitTransient.Studies.Sizes;
 
 namespace CircuitTransient.Tests.Studies.Sizes;
 
