@@ -119,8 +119,8 @@ internal sealed class ScanCurvePanel
         var known = points.Select((p, i) => new SlopedSample(
             axis.Values[i], p.Found?.Values[index] ?? double.NaN,
             p.Slopes.IsEmpty ? double.NaN : p.Slopes[index])).ToArray();
-        var shown = known.Concat(known.Zip(known.Skip(1)).SelectMany(pair => Between(pair.First, pair.Second)))
-            .Select(s => (s.X, Y: Shown(s.Y)))
+        var between = known.Zip(known.Skip(1)).SelectMany(pair => Between(pair.First, pair.Second));
+        var shown = known.Concat(between).Select(s => (s.X, Y: Shown(s.Y)))
             .Concat(new[] { finding.Greatest, finding.Least }.OfType<ScanPlace>()
                 .Select(p => (X: p.At[0], Y: Shown(p.Value))))
             .Concat(finding.Jumps.SelectMany(j => new[]
@@ -185,7 +185,8 @@ internal sealed class ScanCurvePanel
         var isMarkedLow = Marked is { } marked
             && frame.Level.Place(Shown(marked.Value)) > frame.Top + (Height / 2);
         yield return new TextShape(
-            x + 4, isMarkedLow ? frame.Top + 13 : frame.Bottom - 22, "as written", ScanFrame.Small, PlotStyle.Grey, HasHalo: true);
+            x + 4, isMarkedLow ? frame.Top + 13 : frame.Bottom - 22, "as written", ScanFrame.Small,
+            PlotStyle.Grey, HasHalo: true);
     }
 
     private IEnumerable<Shape> Marks()

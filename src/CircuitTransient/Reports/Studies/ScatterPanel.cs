@@ -78,7 +78,8 @@ internal static class ScatterPanel
             var (value, at) = points.MinBy(p => Math.Abs(p.Share - share));
             var (x, y) = (across.Place(value), frame.Level.Place(at));
             var isLeft = x > (ScanFrame.Left + ScanFrame.Right) / 2;
-            var words = $"{EngineeringNumber.Format(value, unit)} in {ReportWords.Percent(at / 100)} of cases";
+            var cases = ReportWords.Percent(at / 100);
+            var words = $"{EngineeringNumber.Format(value, unit)} in {cases} of cases";
             yield return new DiscShape(x, y, 3.5, PlotStyle.Ink);
             yield return new TextShape(
                 isLeft ? x - 8 : x + 8, y + 4, words, ScanFrame.Small, PlotStyle.Ink,
