@@ -12,9 +12,23 @@ public static class ScanSection
         Markup.Of($"""
             <p class="lead">{ScanSummary.Verdict(result)}</p>
             {Judged(result)}
-            <figure class="picture">{Markup.Picture(ScanPlot.Svg(result))}</figure>
+            {Picture(result)}
             <p class="aside">{ScanSummary.Searched(result)} All points stand in scan.csv and scan.json.</p>
             """));
+
+    // Lines follow the reader's colours; the shades of a map are made for white paper and keep it.
+    private static Markup Picture(ScanResult result)
+    {
+        using var fonts = new PlotFonts();
+        var drawing = ScanPlot.Draw(result, fonts);
+        return result.Axes.Length > 1
+            ? Markup.Of($"""
+                <div class="wide"><figure class="map">{Markup.Picture(SvgRenderer.Write(drawing))}</figure></div>
+                """)
+            : Markup.Of($"""
+                <div class="wide"><figure class="picture">{HtmlReport.Themed(drawing)}</figure></div>
+                """);
+    }
 
     private static Markup Judged(ScanResult result)
     {
