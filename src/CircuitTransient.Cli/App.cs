@@ -52,6 +52,7 @@ public static class App
             new SolveCommand(streams, cancellation),
             new SpreadCommand(streams, cancellation),
             new ScanCommand(streams, cancellation),
+            new SizeCommand(streams, cancellation),
             new FormulaCommand(streams, cancellation),
             new CompareCommand(streams, cancellation),
         };
