@@ -164,7 +164,8 @@ internal sealed class ScanCurvePanel
             if (stretch.From > edge)
             {
                 var (left, right) = (scale.Place(edge), scale.Place(stretch.From));
-                yield return new RectangleShape(left, frame.Top, right - left, frame.Height, PlotStyle.WideBand);
+                yield return new RectangleShape(
+                    left, frame.Top, right - left, frame.Height, PlotStyle.WideBand);
             }
 
             edge = Math.Max(edge, stretch.To);

@@ -21,13 +21,11 @@ public static class ScanSection
     {
         using var fonts = new PlotFonts();
         var drawing = ScanPlot.Draw(result, fonts);
-        return result.Axes.Length > 1
-            ? Markup.Of($"""
-                <div class="wide"><figure class="map">{Markup.Picture(SvgRenderer.Write(drawing))}</figure></div>
-                """)
-            : Markup.Of($"""
-                <div class="wide"><figure class="picture">{HtmlReport.Themed(drawing)}</figure></div>
-                """);
+        var svg = result.Axes.Length > 1
+            ? Markup.Picture(SvgRenderer.Write(drawing))
+            : HtmlReport.Themed(drawing);
+        var kind = result.Axes.Length > 1 ? "map" : "picture";
+        return Markup.Of($"""<div class="wide"><figure class="{kind}">{svg}</figure></div>""");
     }
 
     private static Markup Judged(ScanResult result)
