@@ -39,7 +39,7 @@ internal sealed record ScanFrame(
         }
 
         yield return new TextShape(
-            Left - 8, Top - 6, levels.Unit, Small, PlotStyle.Ink, TextAnchor.End, IsStrong: true);
+            Left - 8, Top - 12, levels.Unit, Small, PlotStyle.Ink, TextAnchor.End, IsStrong: true);
         foreach (var (x, label) in Across)
         {
             yield return new LineShape(x, Top, x, Bottom, new Stroke(PlotStyle.Grid, 1));

@@ -9,7 +9,7 @@ namespace CircuitTransient.Reports.Studies;
 internal sealed class ScanMapPanel
 {
     private const double Height = 420;
-    private const int MostCells = 140; // a side; finer maps are drawn from every second point or fewer
+    private const int MostCells = 80; // a side; finer maps are drawn from every second point or fewer
     private const double Right = ScanFrame.Right;
 
     private readonly ScanResult result;
