@@ -30,7 +30,8 @@ internal static class SensitivityJson
         });
     });
 
-    private static void WriteFigure(Utf8JsonWriter json, SpreadResult spread, FigureSlopes? slopes, int figure)
+    private static void WriteFigure(
+        Utf8JsonWriter json, SpreadResult spread, FigureSlopes? slopes, int figure)
     {
         var values = spread.Varied.Values;
         var all = Enumerable.Range(0, values.Length);

@@ -9,10 +9,11 @@ namespace CircuitTransient.Reports.Studies;
 /// value.</summary>
 internal static class SensitivityWords
 {
+    private const int MostNamed = 6;
     private const double Least = 5e-4; // per cent per per cent: less is not worth a word
 
-    /// <summary>Per cent of a figure, on the scale a reader knows, for one per cent of a value; null where that
-    /// has no meaning.</summary>
+    /// <summary>Per cent of a figure, on the scale a reader knows, for one per cent of a value; null where
+    /// that has no meaning.</summary>
     public static double? Relative(SpreadResult spread, int figure, int value)
     {
         if (spread.Sensitivities.Figures.ElementAtOrDefault(figure) is not { } slopes
@@ -28,7 +29,9 @@ internal static class SensitivityWords
 
     /// <summary>Per cent of an instant for one per cent of a value.</summary>
     public static double? RelativeTime(FigureSlopes slopes, double nominal, int value) =>
-        slopes.Time is { } time && time != 0 && nominal != 0 ? slopes.TimeSlopes[value] * nominal / time : null;
+        slopes.Time is { } time && time != 0 && nominal != 0
+            ? slopes.TimeSlopes[value] * nominal / time
+            : null;
 
     /// <summary>The values that move a figure, the strongest first: <c>Cbus +3.63, Rpre +3.26</c>.</summary>
     public static string Ranked(SpreadResult spread, int figure) =>
@@ -60,7 +63,8 @@ internal static class SensitivityWords
         var magnitude = pole.Pole.Magnitude;
         return pole.Pole.Imaginary == 0
             ? $"time constant {Number(Math.Abs(1 / pole.Pole.Real), "s")}"
-            : $"{Number(magnitude / (2 * Math.PI), "Hz")}, damping ratio {Number(-pole.Pole.Real / magnitude, "")}";
+            : $"{Number(magnitude / (2 * Math.PI), "Hz")}, damping ratio "
+                + Number(-pole.Pole.Real / magnitude, "");
     }
 
     /// <summary>A number with its sign.</summary>
@@ -73,7 +77,9 @@ internal static class SensitivityWords
         var ranked = Enumerable.Range(0, spread.Varied.Values.Length)
             .Select(i => (spread.Varied.Values[i].Name, Relative: of(i)))
             .Where(p => p.Relative is { } r && Math.Abs(r) >= Least)
-            .OrderByDescending(p => Math.Abs(p.Relative!.Value));
-        return string.Join(", ", ranked.Select(p => $"{p.Name} {Signed(p.Relative)}"));
+            .OrderByDescending(p => Math.Abs(p.Relative!.Value))
+            .Select(p => $"{p.Name} {Signed(p.Relative)}").ToArray();
+        return string.Join(", ", ranked.Take(MostNamed))
+            + (ranked.Length > MostNamed ? $" and {ranked.Length - MostNamed} more" : "");
     }
 }

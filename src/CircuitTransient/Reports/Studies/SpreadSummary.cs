@@ -128,8 +128,8 @@ public static partial class SpreadSummary
         }
     }
 
-    /// <summary>Jumps of a figure, and those of the instant at which a judged one is worst; those of the worst
-    /// case have been told.</summary>
+    /// <summary>Jumps of a figure, and those of the instant at which a judged one is worst; those of the
+    /// worst case have been told.</summary>
     private static void WriteJumps(
         SummaryText text, SpreadResult spread, FigureRange range, ExtremePoint? point, string to)
     {

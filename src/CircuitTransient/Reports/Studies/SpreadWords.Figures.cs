@@ -103,7 +103,8 @@ internal static partial class SpreadWords
 
     /// <summary>What the derivatives at the worst case prove; null where they prove nothing.</summary>
     public static string? Steepness(WorstCase worst) => worst.IsSteepest == true
-        ? "there every value's own derivative points out of its tolerance: no small change within makes it worse"
+        ? "there every value's own derivative points out of its tolerance: no small change within makes it "
+            + "worse"
         : null;
 
     /// <summary>Which value drives an extreme most: the one whose return to nominal changes it

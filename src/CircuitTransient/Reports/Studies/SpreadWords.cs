@@ -67,7 +67,8 @@ internal static partial class SpreadWords
         return account.WorseInside == 0
             ? $"{corners}; {inside} gave nothing worse: searched there, not proven.{exact}"
             : $"{corners}, and {inside}; {Count(account.WorseInside, "extreme")} lie"
-                + $"{(account.WorseInside == 1 ? "s" : "")} between the corners: searched there, not proven.{exact}";
+                + $"{(account.WorseInside == 1 ? "s" : "")} between the corners: searched there, not "
+                + $"proven.{exact}";
     }
 
     /// <summary>The values of a point that matter: <c>Supply 1.025 kV (+10 %)</c>.</summary>

@@ -20,7 +20,9 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
     public (SearchAccount Account, ImmutableArray<FigureRange> Figures) Run(Action<SpreadProgress> report)
     {
         var alone = Alone();
-        var all = ranges.Count <= SpreadOptions.MostValuesAtCorners;
+        var all = ranges.Count <= (batch.WhyExact is null
+            ? SpreadOptions.MostValuesAtCorners
+            : SpreadOptions.MostValuesAtExactCorners);
         var corners = new CornerSearch(batch, ranges, best);
         var count = Math.Pow(2, ranges.Count);
         var before = best.Solved;

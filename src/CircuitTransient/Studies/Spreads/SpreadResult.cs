@@ -110,8 +110,8 @@ public sealed record FigureJump(
 /// <param name="Used">How much of what is allowed it takes; over 1 where it is broken; NaN where nothing is
 /// required or rated.</param>
 /// <param name="Result">The circuit at that point, measured and checked like any other.</param>
-/// <param name="IsSteepest">Whether at that point every value's own derivative points out of its range, so that
-/// no small change within the ranges makes it worse; null where a derivative is not known.</param>
+/// <param name="IsSteepest">Whether at that point every value's own derivative points out of its range, so
+/// that no small change within the ranges makes it worse; null where a derivative is not known.</param>
 public sealed record WorstCase(
     int Figure, ExtremePoint Point, double Used, TransientResult Result, bool? IsSteepest);
 
