@@ -162,8 +162,8 @@ internal static class SizeWords
         if (result.Chosen is null)
         {
             return corners.IsComplete
-                ? $"All {corners.All.Length} corners of {names} were solved in the middle of the range, and " +
-                    $"the scan looked at the worst of them ({result.Corners.Length})."
+                ? $"All {corners.All.Length} corners of {names} were solved in the middle of the range, " +
+                    $"and the scan looked at the worst of them ({result.Corners.Length})."
                 : $"The scan looked at the worst corners of {names} found one value at a time " +
                     $"({result.Corners.Length}).";
         }
