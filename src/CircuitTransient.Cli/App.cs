@@ -50,6 +50,10 @@ public static class App
         {
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),
+            new SpreadCommand(streams, cancellation),
+            new ScanCommand(streams, cancellation),
+            new SizeCommand(streams, cancellation),
+            new FormulaCommand(streams, cancellation),
             new CompareCommand(streams, cancellation),
         };
         var help = root.Options.OfType<HelpOption>().Single();
@@ -104,7 +108,7 @@ public static class App
         var commands = root.Subcommands.Select(command => command.Name).ToList();
         if (word is null)
         {
-            return $"say what to do: {string.Join(" or ", commands)}";
+            return $"say what to do: {string.Join(", ", commands[..^1])} or {commands[^1]}";
         }
 
         return NearestName.Find(word, commands) is { } nearest

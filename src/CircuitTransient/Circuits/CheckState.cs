@@ -56,7 +56,7 @@ internal sealed class CheckState(
 
     public CircuitOverrides Overrides => overrides;
 
-    public NameTable<PartDeclaration> Names { get; } = new("part", findings);
+    public NameTable<PartDeclaration> Names { get; private init; } = new("part", findings);
 
     public List<PartDeclaration> Declared { get; } = [];
 
@@ -66,6 +66,13 @@ internal sealed class CheckState(
 
     /// <summary>The parts that came out well so far, by index.</summary>
     public Part?[] Parts { get; set; } = [];
+
+    /// <summary>The same names, for a text of its own: what that text gets wrong is reported there.</summary>
+    public CheckState ReportingTo(Findings other) => new(other, values, parameters, readFile, overrides)
+    {
+        Names = Names.ReportingTo(other),
+        Nodes = Nodes.ReportingTo(other),
+    };
 
     /// <summary>The statement a part came from.</summary>
     public PartDeclaration DeclarationOf(Part part) => Names.TryGet(part.Name, out var declared)

@@ -30,6 +30,16 @@ public static class CircuitChecker
         return new Outcome<Circuit>(findings.HasErrors ? null : circuit, findings.InOrder());
     }
 
+    /// <summary>The names in a circuit that was checked, for what is asked outside its file.</summary>
+    internal static CheckState NamesOf(Circuit circuit)
+    {
+        var findings = new Findings(circuit.Source);
+        var syntax = CircuitParser.ParseWhatCanBe(circuit.Source).Syntax;
+        var settings = StudySettings.Read(syntax, findings);
+        return DeclaredIn(
+            syntax, settings, findings, _ => new Outcome<SourceText>(null, []), CircuitOverrides.None).State;
+    }
+
     private static Circuit? Build(
         CircuitSyntax syntax, Findings findings, Func<string, Outcome<SourceText>> readFile,
         CircuitOverrides overrides)
@@ -42,22 +52,30 @@ public static class CircuitChecker
 
         findings.LacksNames |= !Unreadable.Excuse(syntax.Statements, findings) && findings.HasErrors;
         var settings = StudySettings.Read(syntax, findings);
-        var parameters = new ParameterList();
-        var values = new NamedValues(findings, parameters, overrides);
-        var statements = Expansion.WriteOut(syntax, settings.Reference, findings, values);
+        var (state, statements) = DeclaredIn(syntax, settings, findings, readFile, overrides);
         if (statements.IsEmpty)
         {
             ReportEmpty(findings);
             return null;
         }
 
+        state.Values.EvaluateAll();
+        return Lower(state, settings, statements);
+    }
+
+    private static (CheckState State, ImmutableArray<PlacedStatement> Statements) DeclaredIn(
+        CircuitSyntax syntax, StudySettings settings, Findings findings,
+        Func<string, Outcome<SourceText>> readFile, CircuitOverrides overrides)
+    {
+        var parameters = new ParameterList();
+        var values = new NamedValues(findings, parameters, overrides);
+        var statements = Expansion.WriteOut(syntax, settings.Reference, findings, values);
         var state = new CheckState(findings, values, parameters, readFile, overrides)
         {
             Nodes = new NodeTable(settings.Reference, findings, settings.ReferenceSpan),
         };
         Declarations.Declare(state, statements);
-        values.EvaluateAll();
-        return Lower(state, settings, statements);
+        return (state, statements);
     }
 
     private static Circuit Lower(

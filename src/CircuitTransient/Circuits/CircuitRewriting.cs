@@ -32,7 +32,8 @@ public static class CircuitRewriting
             }
 
             edits[parameter.ValueSpan.Start] = (parameter.ValueSpan, Written(value, parameter.Unit));
-            if (parameter.ToleranceSpan is { } tolerance && !(keepsTolerances && Holds(circuit, index, value)))
+            if (parameter.ToleranceSpan is { } tolerance
+                && !(keepsTolerances && Holds(circuit, index, value)))
             {
                 edits[tolerance.Start] = (tolerance, "");
             }

@@ -12,6 +12,19 @@ internal sealed class NameTable<T>(string noun, Findings findings)
 
     public IReadOnlyList<string> Names => names;
 
+    /// <summary>The same names, with what is not among them reported elsewhere.</summary>
+    public NameTable<T> ReportingTo(Findings other)
+    {
+        var table = new NameTable<T>(noun, other);
+        foreach (var name in names)
+        {
+            table.entries.Add(name, entries[name]);
+            table.names.Add(name);
+        }
+
+        return table;
+    }
+
     /// <summary>Gives a thing its name; a name that is taken, or differs from one only in case, is an
     /// error.</summary>
     public bool Declare(string name, TextSpan span, T item)

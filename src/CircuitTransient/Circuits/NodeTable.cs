@@ -20,6 +20,14 @@ internal sealed class NodeTable
         touches.Add(new Touch(0, span));
     }
 
+    private NodeTable(NodeTable known, Findings findings)
+    {
+        this.findings = findings;
+        Reference = known.Reference;
+        names = known.names.ReportingTo(findings);
+        touches = known.touches;
+    }
+
     public string Reference { get; }
 
     public ImmutableArray<string> Names => [.. names.Names];
@@ -27,6 +35,9 @@ internal sealed class NodeTable
     public int Count => touches.Count;
 
     public string this[int index] => names.Names[index];
+
+    /// <summary>The same nodes, with what is not among them reported elsewhere.</summary>
+    public NodeTable ReportingTo(Findings other) => new(this, other);
 
     /// <summary>How many terminals touch a node, where it was first named and by which part.</summary>
     public Touch TouchOf(int node) => touches[node];

@@ -16,6 +16,14 @@ public static class PoleGroups
     private const double Slack = 8; // on the root of it; trials spread by up to 4
     private const double Widest = 0.2; // what the eye tells apart is not one pole, whatever its blur
     private const double SemisimpleRounding = 1e-13;
+    private const double AxisRounding = 1e-22; // a resistance that small beside a reactance is no part's
+
+    /// <summary>A pole, on the imaginary axis where only rounding in double-double keeps it off: a lossless
+    /// network neither decays nor grows.</summary>
+    public static Complex OnAxis(Complex pole) =>
+        Math.Abs(pole.Real) <= AxisRounding * Math.Abs(pole.Imaginary)
+            ? new Complex(0, pole.Imaginary)
+            : pole;
 
     /// <summary>The poles of all blocks of a matrix, smallest first.</summary>
     public static ImmutableArray<PoleGroup> Of(ImmutableArray<SpectralBlock> blocks)
@@ -62,7 +70,7 @@ public static class PoleGroups
                 double im = isReal ? 0 : (double)mean.Im;
                 if (im >= 0)
                 {
-                    yield return new(new Complex((double)mean.Re, im), found.Count);
+                    yield return new(OnAxis(new Complex((double)mean.Re, im)), found.Count);
                 }
             }
         }

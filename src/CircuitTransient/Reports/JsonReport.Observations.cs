@@ -8,7 +8,7 @@ namespace CircuitTransient.Reports;
 public static partial class JsonReport
 {
     private static void WriteObservation(
-        Utf8JsonWriter json, ObservationResult observation, bool isAfterAsked)
+        Utf8JsonWriter json, TransientResult result, ObservationResult observation)
     {
         json.WriteStartObject();
         json.WriteString("name", observation.Name);
@@ -20,7 +20,7 @@ public static partial class JsonReport
         WriteExtreme(json, "min", observation.Min);
         json.WriteBoolean("endsRising", observation.EndsRising);
         WriteArray(json, "contributions", observation.Contributions, WriteContribution);
-        if (isAfterAsked && observation.After is { } after)
+        if (result.IsAfterAsked && observation.After is { } after)
         {
             json.WriteStartObject("contributionsAfter");
             WriteSinceEvent(json, "atMax", after.AtMax);
@@ -28,6 +28,7 @@ public static partial class JsonReport
             json.WriteEndObject();
         }
 
+        WriteBreakdowns(json, result, observation);
         WriteArray(json, "samples", observation.Samples, (to, at) => WriteSample(to, observation, at));
         json.WriteEndObject();
     }
@@ -192,7 +193,7 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WriteSelfCheck(Utf8JsonWriter json, SelfCheck check)
+    internal static void WriteSelfCheck(Utf8JsonWriter json, SelfCheck check)
     {
         json.WriteStartObject();
         json.WriteString("name", check.Name);
@@ -202,7 +203,7 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WriteNotJudged(Utf8JsonWriter json, NotJudged check)
+    internal static void WriteNotJudged(Utf8JsonWriter json, NotJudged check)
     {
         json.WriteStartObject();
         json.WriteString("name", check.Name);

@@ -26,16 +26,7 @@ public static partial class JsonReport
     };
 
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema
-    {
-        get
-        {
-            using var stream = typeof(JsonReport).Assembly.GetManifestResourceStream("results.schema.json")
-                ?? throw new InvalidOperationException("results.schema.json is not embedded");
-            using var reader = new StreamReader(stream, Encoding.UTF8);
-            return reader.ReadToEnd();
-        }
-    }
+    public static string Schema => SchemaNamed("results.schema.json");
 
     /// <summary>The document of one circuit.</summary>
     public static string Write(TransientResult result) => WriteWith(json => WriteDocument(json, result));
@@ -44,7 +35,16 @@ public static partial class JsonReport
     public static string Write(ImmutableArray<TransientResult> results) =>
         WriteWith(json => WriteArray(json, results, WriteDocument));
 
-    private static string WriteWith(Action<Utf8JsonWriter> write)
+    /// <summary>A schema that the assembly carries.</summary>
+    internal static string SchemaNamed(string name)
+    {
+        using var stream = typeof(JsonReport).Assembly.GetManifestResourceStream(name)
+            ?? throw new InvalidOperationException($"{name} is not embedded");
+        using var reader = new StreamReader(stream, Encoding.UTF8);
+        return reader.ReadToEnd();
+    }
+
+    internal static string WriteWith(Action<Utf8JsonWriter> write)
     {
         var buffer = new ArrayBufferWriter<byte>();
         using (var json = new Utf8JsonWriter(buffer, Options))
@@ -71,7 +71,7 @@ public static partial class JsonReport
         WriteArray(json, "intervals", result.Intervals, WriteInterval);
         WriteArray(json, "events", result.Events, WriteEvent);
         WriteArray(json, "observations", result.Observations,
-            (to, observation) => WriteObservation(to, observation, result.IsAfterAsked));
+            (to, observation) => WriteObservation(to, result, observation));
         WriteArray(json, "figures", result.Figures, WriteFigure);
         WriteArray(json, "requirements", result.Requirements, WriteRequirement);
         WriteParts(json, result);
@@ -82,7 +82,7 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WriteCircuit(Utf8JsonWriter json, Circuit circuit)
+    internal static void WriteCircuit(Utf8JsonWriter json, Circuit circuit)
     {
         json.WriteStartObject();
         json.WriteString("title", circuit.Title);
@@ -94,7 +94,7 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WriteCause(Utf8JsonWriter json, CauseName cause)
+    internal static void WriteCause(Utf8JsonWriter json, CauseName cause)
     {
         json.WriteStartObject();
         json.WriteString("name", cause.Name);
@@ -106,6 +106,7 @@ public static partial class JsonReport
             _ => throw new System.Diagnostics.UnreachableException($"no word for {cause.Kind}"),
         });
         WriteOptional(json, "of", cause.Of);
+        WriteOptional(json, "pulse", cause.Pulse);
         json.WriteEndObject();
     }
 
@@ -169,14 +170,14 @@ public static partial class JsonReport
         json.WriteEndObject();
     }
 
-    private static void WriteArray<T>(
+    internal static void WriteArray<T>(
         Utf8JsonWriter json, string name, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
     {
         json.WritePropertyName(name);
         WriteArray(json, items, write);
     }
 
-    private static void WriteArray<T>(
+    internal static void WriteArray<T>(
         Utf8JsonWriter json, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
     {
         json.WriteStartArray();
@@ -188,13 +189,13 @@ public static partial class JsonReport
         json.WriteEndArray();
     }
 
-    private static void WriteNumber(Utf8JsonWriter json, string name, double? value)
+    internal static void WriteNumber(Utf8JsonWriter json, string name, double? value)
     {
         json.WritePropertyName(name);
         WriteNumber(json, value);
     }
 
-    private static void WriteNumber(Utf8JsonWriter json, double? value)
+    internal static void WriteNumber(Utf8JsonWriter json, double? value)
     {
         if (value is { } number && double.IsFinite(number))
         {
@@ -206,7 +207,7 @@ public static partial class JsonReport
         }
     }
 
-    private static void WriteOptional(Utf8JsonWriter json, string name, string? text)
+    internal static void WriteOptional(Utf8JsonWriter json, string name, string? text)
     {
         if (text is not null)
         {

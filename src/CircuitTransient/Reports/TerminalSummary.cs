@@ -38,7 +38,7 @@ public static partial class TerminalSummary
         WriteFigures(text, result);
         WriteRatings(text, result);
         WriteImpulses(text, result);
-        WriteSelfChecks(text, result);
+        WriteSelfChecks(text, result.SelfChecks, result.NotJudged);
         WriteWarnings(text, result);
         WriteCautions(text, result);
         WriteFiles(text, files);
@@ -185,15 +185,17 @@ public static partial class TerminalSummary
         }
     }
 
-    private static void WriteSelfChecks(SummaryText text, TransientResult result)
+    /// <summary>What the solution checked of itself.</summary>
+    internal static void WriteSelfChecks(
+        SummaryText text, ImmutableArray<SelfCheck> checks, ImmutableArray<NotJudged> notJudged)
     {
-        if (result.SelfChecks.IsEmpty && result.NotJudged.IsEmpty)
+        if (checks.IsEmpty && notJudged.IsEmpty)
         {
             return;
         }
 
         text.Blank();
-        var failed = result.SelfChecks.Where(check => !check.Holds).ToArray();
+        var failed = checks.Where(check => !check.Holds).ToArray();
         if (failed.Length > 0)
         {
             text.Title("Self-checks: FAILED, do not use these figures");
@@ -202,10 +204,10 @@ public static partial class TerminalSummary
                 failed.Select(check => ImmutableArray.Create(
                     check.Name, $"worst {Ratio(check.Worst)}, allowed {Ratio(check.Allowed)}")));
         }
-        else if (!result.SelfChecks.IsEmpty)
+        else if (!checks.IsEmpty)
         {
-            var closest = result.SelfChecks.MaxBy(check => check.Worst / check.Allowed)!;
-            var count = result.SelfChecks is [_] ? "it holds" : $"all {result.SelfChecks.Length} hold";
+            var closest = checks.MaxBy(check => check.Worst / check.Allowed)!;
+            var count = checks is [_] ? "it holds" : $"all {checks.Length} hold";
             text.Paragraph(
                 $"Self-checks: {count}; nearest to its limit is {closest.Name}, {Ratio(closest.Worst)} of " +
                 $"{Ratio(closest.Allowed)} allowed.",
@@ -213,7 +215,7 @@ public static partial class TerminalSummary
                 hanging: 2);
         }
 
-        foreach (var check in result.NotJudged)
+        foreach (var check in notJudged)
         {
             text.Paragraph($"Not judged: {check.Name}: {check.Reason}.", indent: 0, hanging: 2);
         }

@@ -9,11 +9,14 @@ public sealed class AppTests : IDisposable
     public void Dispose() => commandLine.Dispose();
 
     [Theory]
-    [InlineData("", "error: say what to do: check or solve or compare\nsee `circuit-transient --help`\n")]
+    [InlineData("",
+        "error: say what to do: check, solve, spread, scan, size, formula or compare\n"
+        + "see `circuit-transient --help`\n")]
     [InlineData("slove",
         "error: there is no command `slove`; did you mean `solve`?\nsee `circuit-transient --help`\n")]
     [InlineData("draw",
-        "error: there is no command `draw`, only check, solve, compare\nsee `circuit-transient --help`\n")]
+        "error: there is no command `draw`, only check, solve, spread, scan, size, formula, compare\n"
+        + "see `circuit-transient --help`\n")]
     [InlineData("solve a.cause --strct",
         "error: there is no option `--strct`; did you mean `--strict`?\n"
         + "see `circuit-transient solve --help`\n")]

@@ -118,7 +118,7 @@ function followTable(view, scales) {
   const table = view.section.querySelector("table.causes:not(.since)");
   if (!table) return;
   const cells = [...table.querySelectorAll("[data-cause] td, .peak")];
-  view.section.querySelectorAll(".since, .cancelling").forEach((e) => { e.hidden = !isSolved(scales); });
+  view.section.querySelectorAll(".since, .cancelling, .words, .breakdown").forEach((e) => { e.hidden = !isSolved(scales); });
   if (isSolved(scales)) {
     cells.forEach(restore);
     return;

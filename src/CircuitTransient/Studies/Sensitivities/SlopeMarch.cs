@@ -35,7 +35,7 @@ internal sealed class SlopeMarch
         shifts = [.. variations.Select(v => new EventShifts(solution, v))];
         frames = new SegmentFrame[solution.Segments.Length];
         slopes = [.. solution.Segments.Select(_ => new SegmentSlopes?[variations.Length])];
-        refusals = new Refusal?[variations.Length];
+        refusals = [.. variations.Select(v => v.Hidden is { } reason ? new Refusal(0, reason) : null)];
         starts = [.. solution.Intervals.Select(_ => new double[variations.Length])];
         stored = new DoubleDouble[variations.Length][];
         reading = new SlopeReading(solution, variations, frames, slopes, starts);
@@ -54,11 +54,18 @@ internal sealed class SlopeMarch
     /// <summary>Reads derivatives of quantities.</summary>
     public SlopeReading Reading => reading;
 
+    /// <summary>The values.</summary>
+    public ImmutableArray<Variation> Variations => variations;
+
     /// <summary>Why a value's derivatives end, by value.</summary>
     public IReadOnlyList<Refusal?> Refusals => refusals;
 
     /// <summary>How instants go with each value.</summary>
     public IReadOnlyList<EventShifts> Shifts => shifts;
+
+    /// <summary>How the study's end goes with a value; null where that is not known.</summary>
+    public double? EndShift(int value) => StudyEndSlope.Of(
+        solution, ModelOf(solution.Intervals.Length - 1), variations[value], starts[^1][value]);
 
     /// <summary>An interval's network with its laws disturbed.</summary>
     public IntervalModel ModelOf(int interval) => models.For(solution.Intervals[interval].Model)!;
@@ -84,6 +91,7 @@ internal sealed class SlopeMarch
             for (var v = 0; v < variations.Length; v++)
             {
                 MoveStart(q, v);
+                RefuseWhatIsOpen(model, interval.From, v);
             }
 
             foreach (var segment in interval.Momentary)
@@ -126,7 +134,7 @@ internal sealed class SlopeMarch
             }
             else if (solution.Circuit.StartsSettled)
             {
-                refusals[v] = new Refusal(
+                refusals[v] ??= new Refusal(
                     0, "the settled start has no derivative: the value drives what nothing limits");
             }
         }
@@ -143,6 +151,17 @@ internal sealed class SlopeMarch
             var form = DescriptorReduction.Reduce(
                 layout, NetworkEquations.Assemble(layout, positions), out _);
             return form is null ? null : new IntervalModel(form, positions);
+        }
+    }
+
+    /// <summary>A value that multiplies what the equations leave open decides it, and there is no
+    /// derivative.</summary>
+    private void RefuseWhatIsOpen(IntervalModel model, double from, int v)
+    {
+        if (refusals[v] is null && variations[v].Terms(model.IsClosed).Any(t =>
+            !model.Project(t.Quantity is RateOfChange rate ? rate.Of : t.Quantity).Output.IsDetermined))
+        {
+            refusals[v] = new Refusal(from, "it multiplies a current that the equations leave open");
         }
     }
 
@@ -188,12 +207,17 @@ internal sealed class SlopeMarch
         }
 
         var length = solution.Segments[segment].Length;
-        return QuantityFactors.OfAny(solution.Circuit, quantity) is not { IsIntegrated: true }
-            && reading.At(quantity, segment, length) is { } nominal
-            && Math.Abs(nominal.Slope) * length > tangent * Math.Abs(nominal.Value)
-            && nominal.Slope != 0
-            && reading.SlopeOf(quantity, segment, length, v) is { } derivative
-            ? -derivative.Value / nominal.Slope : null;
+        if (reading.At(quantity, segment, length) is not { } nominal
+            || reading.ValueSlope(quantity, segment, length, v) is not { } derivative)
+        {
+            return null;
+        }
+
+        // Of an integral, its integrand was read.
+        var isIntegral = QuantityFactors.OfAny(solution.Circuit, quantity) is { IsIntegrated: true };
+        var rate = isIntegral ? nominal.Value : nominal.Slope;
+        return rate == 0 || (!isIntegral && Math.Abs(rate) * length <= tangent * Math.Abs(nominal.Value))
+            ? null : -derivative / rate;
     }
 
     /// <summary>An interval that ends as it begins: what is stored just after it began goes on.</summary>
