@@ -54,6 +54,7 @@ public static class App
             new ScanCommand(streams, cancellation),
             new SizeCommand(streams, cancellation),
             new FormulaCommand(streams, cancellation),
+            new OverlayCommand(streams, cancellation),
             new CompareCommand(streams, cancellation),
         };
         var help = root.Options.OfType<HelpOption>().Single();

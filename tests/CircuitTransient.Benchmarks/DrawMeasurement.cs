@@ -89,8 +89,8 @@ internal static class DrawMeasurement
 
         var draws = tallies.Sum(t => t.Draws);
         Console.WriteLine(
-            $"  {threads} thread{(threads > 1 ? "s" : "")}: {draws / elapsed.Elapsed.TotalSeconds:F0} draws a "
-            + $"second, {tallies.Sum(t => t.Bytes) / (double)draws:F2} bytes allocated a draw, "
+            $"  threads: {threads}, {draws / elapsed.Elapsed.TotalSeconds:F0} draws a second, "
+            + $"{tallies.Sum(t => t.Bytes) / (double)draws:F2} bytes allocated a draw, "
             + $"{tallies.Sum(t => t.Doubtful) / (double)draws:P3} doubtful");
     }
 
@@ -98,7 +98,8 @@ internal static class DrawMeasurement
     {
         var random = new Random(seed);
         var workspace = kernel.CreateWorkspace();
-        var (values, found, times) = (new double[kernel.ValueCount], new double[figures], new double[figures]);
+        var values = new double[kernel.ValueCount];
+        var (found, times) = (new double[figures], new double[figures]);
         kernel.Evaluate(workspace, [.. varied.Values.Select(v => v.Nominal)], found, times);
         var before = GC.GetAllocatedBytesForCurrentThread();
         var elapsed = Stopwatch.StartNew();

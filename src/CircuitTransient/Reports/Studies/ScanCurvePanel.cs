@@ -11,7 +11,6 @@ namespace CircuitTransient.Reports.Studies;
 internal sealed class ScanCurvePanel
 {
     private const double Height = 190;
-    private const string Broken = "#f4efe9"; // the limit's hue, thinned to a wash
 
     private readonly ScanAxis axis;
     private readonly FigureScan finding;
@@ -165,7 +164,8 @@ internal sealed class ScanCurvePanel
             if (stretch.From > edge)
             {
                 var (left, right) = (scale.Place(edge), scale.Place(stretch.From));
-                yield return new RectangleShape(left, frame.Top, right - left, frame.Height, Broken);
+                yield return new RectangleShape(
+                    left, frame.Top, right - left, frame.Height, PlotStyle.WideBand);
             }
 
             edge = Math.Max(edge, stretch.To);

@@ -21,7 +21,8 @@ public sealed class DrawRefusalTests
     [Fact]
     public void Events_that_the_answer_decides_go_to_the_exact_engine()
     {
-        var drawn = DrawnText.Of(Charging.Replace("closes at 4 ms", "closes when voltage of b rises above 5 V"));
+        var drawn = DrawnText.Of(
+            Charging.Replace("closes at 4 ms", "closes when voltage of b rises above 5 V"));
 
         Assert.Null(drawn.Kernel);
         Assert.Equal("the answer decides when `T` acts", drawn.Reason);
@@ -105,6 +106,7 @@ public sealed class DrawRefusalTests
     {
         var (one, other) = (DrawnText.Of(Charging), DrawnText.Of(Charging));
 
-        Assert.Throws<ArgumentException>(() => one.Evaluate([10, 1e3, 1e-6], other.Kernel!.CreateWorkspace()));
+        Assert.Throws<ArgumentException>(
+            () => one.Evaluate([10, 1e3, 1e-6], other.Kernel!.CreateWorkspace()));
     }
 }

@@ -51,7 +51,8 @@ public sealed class DrawnPartsTests
         value Rk : 2 mΩ ±50 %
         source E at s : 540 V ±10 %
         inductor L from s to a : 100 µH ±10 %
-        switch K from a to b : open, closed resistance Rk, open resistance 10 kΩ, closes at 1 ms, opens at 5 ms
+        switch K from a to b : open, closed resistance Rk, open resistance 10 kΩ,
+            closes at 1 ms, opens at 5 ms
         capacitor C from b to ground : 1 mF ±20 %, charged to 100 V ±50 %, rated 2 kJ
         resistor R from b to ground : 10 Ω ±5 %, rated 40 kW, rated 1 kJ
         observe voltage of b
