@@ -4,9 +4,13 @@ if (args is ["solve", var program, var circuit])
 {
     SolveMeasurement.Print(program, circuit);
 }
-else if (args is ["draws", .. var circuits])
+else if (args is ["draws", .. var drawn])
 {
-    DrawMeasurement.Print(circuits);
+    DrawMeasurement.Print(drawn);
+}
+else if (args is ["by", .. var circuits])
+{
+    BreakdownMeasurement.Print(circuits);
 }
 else
 {
