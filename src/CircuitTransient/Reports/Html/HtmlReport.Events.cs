@@ -19,9 +19,9 @@ public static partial class HtmlReport
         var rows = result.Events.Select(e => Markup.Of($"""
             <tr><td class="number">{Number(e.Time, "s")}</td>
             <th scope="row">{Markup.Name(InstantWords.Name(e))}{Remark(e)}</th>
-            <td class="number">{Number(e.VoltageBefore, "V")}</td>
+            <td class="number">{Before(e, e.VoltageBefore, "V")}</td>
             <td class="number">{Number(e.VoltageAfter, "V")}</td>
-            <td class="number">{Number(e.CurrentBefore, "A")}</td>
+            <td class="number">{Before(e, e.CurrentBefore, "A")}</td>
             <td class="number">{Number(e.CurrentAfter, "A")}</td></tr>
 
             """));

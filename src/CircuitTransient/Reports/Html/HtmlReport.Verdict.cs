@@ -126,10 +126,17 @@ public static partial class HtmlReport
         : Markup.Of($"""
             <h3>Warnings</h3>
             <ul>
-            {Markup.Join(result.Warnings.Select(w =>
-                Markup.Of($"<li>{(w.Line > 0 ? $"line {w.Line}: " : "")}{w.Text}</li>\n")))}</ul>
+            {Markup.Join(result.Warnings.Select(WarningItem))}</ul>
 
             """);
+
+    private static Markup WarningItem(Notice warning)
+    {
+        var advice = warning.Diagnostic?.Advice is { } words
+            ? Markup.Of($"<br><span class=\"aside\">{words}</span>")
+            : default;
+        return Markup.Of($"<li>{(warning.Line > 0 ? $"line {warning.Line}: " : "")}{warning.Text}{advice}</li>\n");
+    }
 
     private static Markup Cautions(TransientResult result) => result.Cautions.IsEmpty
         ? default

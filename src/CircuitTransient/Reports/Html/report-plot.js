@@ -219,8 +219,9 @@ function drawPeaks(svg, frame, model, time, level) {
 function drawPanel(svg, model, window, axis, width, clip) {
   const isNarrow = width < 640;
   const height = isNarrow ? 250 : 300;
+  const names = Math.max(0, ...model.lines.map((line) => widthOf([...line.name].slice(0, 60).join(""))));
   const frame = {
-    left: isNarrow ? 46 : 62, right: width - (isNarrow ? 96 : 178), top: 30, bottom: height - 44, width,
+    left: isNarrow ? 46 : 62, right: width - (isNarrow ? 96 : Math.min(0.26 * width, Math.max(178, names + 36))), top: 30, bottom: height - 44, width,
   };
   const time = timeScale(window, axis, frame.left, frame.right);
   const [from, to] = levels(model, window);

@@ -8,13 +8,16 @@ function bytesOf(text) {
 
 const data = JSON.parse(document.getElementById("data").textContent);
 const allTimes = new Float64Array(bytesOf(data.times));
+const decoded = (term) => ({ ...term, samples: new Float32Array(bytesOf(term.samples)) });
 const waves = data.waves.map((wave) => {
   const index = wave.index && new Int32Array(bytesOf(wave.index));
   return {
     quadratic: wave.quadratic,
+    factor: wave.factor,
     fixed: wave.terms.every((term) => term.cause === undefined),
     times: index ? Float64Array.from(index, (i) => allTimes[i]) : allTimes,
-    terms: wave.terms.map((term) => ({ ...term, samples: new Float32Array(bytesOf(term.samples)) })),
+    terms: wave.terms.map(decoded),
+    others: wave.others.map((other) => ({ ...other, terms: other.terms.map(decoded) })),
   };
 });
 
@@ -22,8 +25,20 @@ const weight = (term, scales) =>
   term.cause === undefined ? 1 : scales[term.cause] * (term.with === undefined ? 1 : scales[term.with]);
 
 function sumOf(wave, scales, chosen = () => true) {
+  if (wave.factor === undefined) return sumOfTerms(wave, wave.terms, scales, chosen);
+  const [first, second] = factorsOf(wave).map((terms) => sumOfTerms(wave, terms, scales, chosen));
+  return first.map((v, i) => wave.factor * v * (second ?? first)[i]);
+}
+
+// The terms of a product's factors; one list where it is a square.
+function factorsOf(wave) {
+  const half = wave.terms.length / 2;
+  return wave.terms.filter((t) => t.cause === 0).length === 1 ? [wave.terms] : [wave.terms.slice(0, half), wave.terms.slice(half)];
+}
+
+function sumOfTerms(wave, terms, scales, chosen) {
   const sum = new Float64Array(wave.times.length);
-  for (const term of wave.terms) {
+  for (const term of terms) {
     const w = chosen(term) ? weight(term, scales) : 0;
     if (w === 0) continue;
     const samples = term.samples;
@@ -37,7 +52,18 @@ function partsOf(wave, scales) {
   if (wave.fixed) return [];
   const own = data.causes.map((_, c) =>
     sumOf(wave, scales, (t) => t.cause === c && (t.with === undefined || t.with === c)));
-  return wave.quadratic ? [...own, sumOf(wave, scales, (t) => t.with !== undefined && t.with !== t.cause)] : own;
+  if (!wave.quadratic) return own;
+  return [...own, wave.factor === undefined
+    ? sumOf(wave, scales, (t) => t.with !== undefined && t.with !== t.cause)
+    : sumOf(wave, scales).map((v, i) => own.reduce((rest, part) => rest - part[i], v))];
+}
+
+// One waveform for each cause of another breakdown: it grows with the causes that it comes from.
+function partsBy(other, scales) {
+  return other.terms.map(({ weights, samples }) => {
+    const w = weights.reduce((sum, [cause, share]) => sum + share * scales[cause], 0);
+    return Float64Array.from(samples, (v) => w * v);
+  });
 }
 
 // The first sample not before an instant.
