@@ -30,7 +30,6 @@ internal sealed class OtherBreakdowns
         (times, results) = (waves.Times, waves.Observations);
     }
 
-
     /// <summary>The breakdowns there is room for.</summary>
     public static ImmutableArray<OtherBreakdown> Of(
         TransientSolution solution, SampledWaves waves, CancellationToken cancellation)
