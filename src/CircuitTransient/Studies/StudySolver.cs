@@ -22,9 +22,18 @@ public static class StudySolver
     {
         var solved = TransientSolver.Solve(circuit, CauseList.FromStart(circuit), cancellation);
         return solved.Succeeded
-            ? new(new FigureReader(solved.Value).Read(figures, cancellation), solved.Diagnostics)
+            ? new(Read(solved.Value, figures, cancellation), solved.Diagnostics)
             : new(null, solved.Diagnostics);
     }
+
+    /// <summary>Measures a solution.</summary>
+    /// <param name="solution">The solution.</param>
+    /// <param name="figures">The figures wanted.</param>
+    /// <param name="cancellation">Stops the work.</param>
+    public static StudyPoint Read(
+        TransientSolution solution, ImmutableArray<StudyFigure> figures,
+        CancellationToken cancellation = default) =>
+        new FigureReader(solution).Read(figures, cancellation);
 
     private sealed class FigureReader
     {

@@ -58,6 +58,7 @@ internal sealed class FigureMeasurement(CurveBuilder curves, WindowTimes times, 
         _ => throw new System.Diagnostics.UnreachableException($"no definition for {figure.Kind}"),
     };
 
-    private static ImpulseTimes ImpulseTimesOf(Figure figure) =>
+    /// <summary>The rules for an impulse of a quantity's kind.</summary>
+    public static ImpulseTimes ImpulseTimesOf(Figure figure) =>
         figure.Of is VoltageBetween or VoltageAcross ? ImpulseTimes.OfVoltage : ImpulseTimes.OfCurrent;
 }

@@ -3,16 +3,21 @@ namespace CircuitTransient.Measurements.Figures;
 /// <summary>Front time and time to half-value of an impulse, as testers measure them.</summary>
 internal sealed record ImpulseTimes
 {
-    private readonly double lowFraction;
-    private readonly double frontFactor;
-    private readonly double originFraction;
-
     private ImpulseTimes(double lowFraction, double frontFactor, double originFraction)
     {
-        this.lowFraction = lowFraction;
-        this.frontFactor = frontFactor;
-        this.originFraction = originFraction;
+        LowFraction = lowFraction;
+        FrontFactor = frontFactor;
+        OriginFraction = originFraction;
     }
+
+    /// <summary>The lower of the two levels, of the peak.</summary>
+    public double LowFraction { get; }
+
+    /// <summary>The front time over the time between the two levels.</summary>
+    public double FrontFactor { get; }
+
+    /// <summary>How long before the lower level the virtual origin lies, of the front time.</summary>
+    public double OriginFraction { get; }
 
     /// <summary>A voltage: T1 = (t90 − t30)/0.6, virtual origin t30 − 0.3·T1. IEC 60060-1, as an
     /// impulse-measurement maker's evaluation page quotes it.</summary>
@@ -34,12 +39,12 @@ internal sealed record ImpulseTimes
         : "from the virtual origin t10 - 0.1·T1, T1 = 1.25·(t90 - t10), to the first fall to half the peak "
             + "after it";
 
-    private bool IsVoltage => lowFraction > 0.2;
+    private bool IsVoltage => LowFraction > 0.2;
 
     /// <summary>Reads the front time.</summary>
     public FigureReading Front(WindowedCurve curve) =>
         Crossings(curve) is { } t
-            ? new FigureReading(frontFactor * (t.High - t.Low), t.High)
+            ? new FigureReading(FrontFactor * (t.High - t.Low), t.High)
             : FigureReading.None(curve);
 
     /// <summary>Reads the time to half-value.</summary>
@@ -51,7 +56,7 @@ internal sealed record ImpulseTimes
         }
 
         var peak = curve.Peak;
-        var origin = t.Low - (originFraction * frontFactor * (t.High - t.Low));
+        var origin = t.Low - (OriginFraction * FrontFactor * (t.High - t.Low));
         return curve.FirstReach(-Math.Sign(peak.Value), peak.Value / 2, peak.Time) is { } half
             ? new FigureReading(half - origin, half)
             : FigureReading.None(curve);
@@ -61,7 +66,7 @@ internal sealed record ImpulseTimes
     {
         var peak = curve.Peak.Value;
         var sign = Math.Sign(peak);
-        return sign != 0 && curve.FirstReach(sign, lowFraction * peak, curve.From) is { } low
+        return sign != 0 && curve.FirstReach(sign, LowFraction * peak, curve.From) is { } low
             && curve.FirstReach(sign, 0.9 * peak, low) is { } high
             ? (low, high)
             : null;

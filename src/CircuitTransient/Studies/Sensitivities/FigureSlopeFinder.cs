@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
+using CircuitTransient.Measurements.Figures;
 using CircuitTransient.Solutions;
 using CircuitTransient.Solutions.Curves;
 
@@ -18,6 +19,7 @@ internal sealed class FigureSlopeFinder
     private readonly WindowTimes times;
     private readonly Infinities infinities;
     private readonly ExtremeSlopes extremes;
+    private readonly FigureMeasurement readings;
 
     public FigureSlopeFinder(
         TransientSolution solution, ImmutableArray<Variation> variations, SlopeMarch march)
@@ -29,6 +31,7 @@ internal sealed class FigureSlopeFinder
         times = new WindowTimes(solution);
         infinities = new Infinities(curves);
         extremes = new ExtremeSlopes(march);
+        readings = new FigureMeasurement(curves, times, infinities);
     }
 
     /// <summary>A figure with its derivatives; null where it has no value.</summary>
@@ -42,13 +45,16 @@ internal sealed class FigureSlopeFinder
                 return WindowOf(observed.Window) is { } window
                     ? Extreme(observed.Quantity, window, figure.Kind == StudyFigureKind.Maximum ? 1 : -1)
                     : null;
+            case StudyFigureKind.Reading:
+                var shown = circuit.Observations[figure.Index];
+                return Reading((Figure)shown.Quantity, shown.Window);
             case StudyFigureKind.Margin:
                 return Margin(circuit.Requirements[figure.Index]);
             case StudyFigureKind.RatingUsed:
                 return new RatingSlopes(solution, variations, curves, infinities, extremes, march)
                     .Of(figure.Index, circuit.Parts[figure.Index].Ratings[figure.Rating], Whole);
             default:
-                return null;
+                throw new System.Diagnostics.UnreachableException($"no slopes of {figure.Kind}");
         }
     }
 
@@ -74,6 +80,19 @@ internal sealed class FigureSlopeFinder
         return Gathered(found.Value, found.Time, v => extremes.Of(quantity, curve, found, window, v));
     }
 
+    private FigureSlopes? Reading(Figure figure, Window window)
+    {
+        if (readings.Read(figure, window) is not { Value: { } value, Time: var time }
+            || WindowOf(window) is not { } open)
+        {
+            return null;
+        }
+
+        var curve = curves.Of(figure.Of, from: curves.IsAccumulated(figure.Of) ? open.From : 0)!;
+        return Gathered(
+            value, time, v => new ReadingSlopes(march, extremes, figure, curve, open, v).Find());
+    }
+
     private FigureSlopes? Margin(Requirement requirement)
     {
         if (requirement.Bound is SettlesTo settles)
@@ -83,7 +102,16 @@ internal sealed class FigureSlopeFinder
         }
 
         var limits = (Limits)requirement.Bound;
-        if (requirement.Quantity is Figure || WindowOf(requirement.Window) is not { } window)
+        if (requirement.Quantity is Figure figure)
+        {
+            return Reading(figure, requirement.Window) is not { } shown ? null
+                : shown.Value - limits.Lower < (limits.Upper ?? double.PositiveInfinity) - shown.Value
+                    || limits.Upper is not { } most
+                    ? shown.Times(1, -limits.Lower!.Value)
+                    : shown.Times(-1, most);
+        }
+
+        if (WindowOf(requirement.Window) is not { } window)
         {
             return null;
         }

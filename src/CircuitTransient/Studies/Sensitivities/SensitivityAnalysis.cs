@@ -39,20 +39,28 @@ public sealed class SensitivityAnalysis
         }
 
         var solved = TransientSolver.Solve(at.Value, CauseList.FromStart(at.Value), cancellation);
-        return solved.Succeeded ? Of(varied, solved.Value, cancellation) : new(null, solved.Diagnostics);
+        return solved.Succeeded
+            ? Of(varied, values, solved.Value, cancellation) : new(null, solved.Diagnostics);
     }
 
     /// <summary>Derives a solution of a varied circuit.</summary>
     /// <param name="varied">The circuit.</param>
-    /// <param name="solution">The solution at some values.</param>
+    /// <param name="values">One in SI for each of its values.</param>
+    /// <param name="solution">The solution with these values.</param>
     /// <param name="cancellation">Stops the work.</param>
     public static Outcome<SensitivityAnalysis> Of(
-        VariedCircuit varied, TransientSolution solution, CancellationToken cancellation = default)
+        VariedCircuit varied, ReadOnlySpan<double> values, TransientSolution solution,
+        CancellationToken cancellation = default)
     {
-        ImmutableArray<Variation> moving =
-            [.. varied.Values.Select(v => Variation.Of(solution.Circuit, v))];
-        return SlopeMarch.Of(solution, moving, cancellation) is { } derived
-            ? new(new SensitivityAnalysis(solution, moving, derived), [])
+        var moving = ImmutableArray.CreateBuilder<Variation>();
+        for (var v = 0; v < values.Length; v++)
+        {
+            moving.Add(Variation.Of(
+                solution.Circuit, varied.Values[v], HiddenReach.Of(varied, solution.Circuit, values, v)));
+        }
+
+        return SlopeMarch.Of(solution, moving.ToImmutable(), cancellation) is { } derived
+            ? new(new SensitivityAnalysis(solution, moving.ToImmutable(), derived), [])
             : new(null, [Diagnostic.Error(
                 solution.Circuit.Source, default,
                 "the solution has no derivatives: a value decides whether the equations have a solution",

@@ -35,7 +35,7 @@ internal sealed class SlopeMarch
         shifts = [.. variations.Select(v => new EventShifts(solution, v))];
         frames = new SegmentFrame[solution.Segments.Length];
         slopes = [.. solution.Segments.Select(_ => new SegmentSlopes?[variations.Length])];
-        refusals = new Refusal?[variations.Length];
+        refusals = [.. variations.Select(v => v.Hidden is { } reason ? new Refusal(0, reason) : null)];
         starts = [.. solution.Intervals.Select(_ => new double[variations.Length])];
         stored = new DoubleDouble[variations.Length][];
         reading = new SlopeReading(solution, variations, frames, slopes, starts);
@@ -53,6 +53,9 @@ internal sealed class SlopeMarch
 
     /// <summary>Reads derivatives of quantities.</summary>
     public SlopeReading Reading => reading;
+
+    /// <summary>The values.</summary>
+    public ImmutableArray<Variation> Variations => variations;
 
     /// <summary>Why a value's derivatives end, by value.</summary>
     public IReadOnlyList<Refusal?> Refusals => refusals;
@@ -126,7 +129,7 @@ internal sealed class SlopeMarch
             }
             else if (solution.Circuit.StartsSettled)
             {
-                refusals[v] = new Refusal(
+                refusals[v] ??= new Refusal(
                     0, "the settled start has no derivative: the value drives what nothing limits");
             }
         }

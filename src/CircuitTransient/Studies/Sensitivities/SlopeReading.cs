@@ -84,6 +84,25 @@ internal sealed class SlopeReading(
             ? Integrals.Of(quantity, (0, 0), segment, tau, value)
             : SlopeOf(quantity, segment, tau, value)?.Value;
 
+    /// <summary>The derivative of the limit of a quantity for t → ∞ if a segment went on; null where there is
+    /// none, or where it is not known.</summary>
+    public double? FinalSlope(Measurand quantity, int segment, int value)
+    {
+        if (QuantityFactors.OfAny(solution.Circuit, quantity) is not { } product)
+        {
+            return Limit(SlopesIn(segment, quantity, value));
+        }
+
+        var (a, b) = (Limit(NominalIn(segment, product.First)), Limit(NominalIn(segment, product.Second)));
+        var (da, db) = (Limit(SlopesIn(segment, product.First, value)),
+            Limit(SlopesIn(segment, product.Second, value)));
+        return product.IsIntegrated ? null
+            : (FactorSlope(quantity, value) * a * b) + (product.Factor * ((da * b) + (a * db)));
+
+        double? Limit(double[]? sum) => sum is null ? null
+            : FinalSlopes.Of(frames[segment].Driven.Basis, sum, solution.Segments[segment].Length);
+    }
+
     /// <summary>How the factor of a product goes with a value: half a capacitance or inductance, a mutual
     /// inductance.</summary>
     public double FactorSlope(Measurand quantity, int value) => quantity switch

@@ -25,12 +25,15 @@ internal sealed class Variation
         parameters = [.. circuit.Parameters.Select(p => p.Nominal)];
     }
 
-    /// <summary>A value of a varied circuit, where the circuit has the values to start from.</summary>
-    public static Variation Of(Circuit circuit, VariedValue value) =>
-        new(circuit, value.Parameter, value.Source, value.Event);
+    /// <summary>A value of a varied circuit.</summary>
+    /// <param name="circuit">The circuit with the values to start from.</param>
+    /// <param name="value">The value.</param>
+    /// <param name="hidden">What it sets beside quantities that have a formula; null where nothing.</param>
+    public static Variation Of(Circuit circuit, VariedValue value, string? hidden) =>
+        new(circuit, value.Parameter, value.Source, value.Event) { Hidden = hidden };
 
-    /// <summary>A parameter.</summary>
-    public static Variation OfParameter(Circuit circuit, int parameter) => new(circuit, parameter, -1, null);
+    /// <summary>Why the value has no derivative; null where it has.</summary>
+    public string? Hidden { get; private init; }
 
     /// <summary>How a quantity goes with the value.</summary>
     public double SlopeOf(Quantity? quantity) => parameter < 0 || quantity is null

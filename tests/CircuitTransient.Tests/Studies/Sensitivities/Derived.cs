@@ -5,6 +5,7 @@ using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Sensitivities;
 using CircuitTransient.Tests.Circuits;
+using CircuitTransient.Tests.OutsideChecks;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Tests.Studies.Sensitivities;
@@ -77,46 +78,51 @@ internal sealed class Derived
             [.. quantities.SelectMany(q => times.Select(t => curves.Of(q)!.ValueAt(curves.Solution, t)))];
     }
 
-    /// <summary>∂figure/∂value number v by differences.</summary>
-    public double FigureDifference(string name, int v, double step = 1e-3)
+    /// <summary>Asserts that figures' derivatives agree with differences of whole studies.</summary>
+    /// <param name="names">The figures.</param>
+    /// <param name="step">Relative step of the differences.</param>
+    /// <param name="rounding">Of a figure over a value: what differences lose.</param>
+    public void AssertFiguresAgree(IReadOnlyList<string> names, double step, double rounding)
     {
-        var figure = StudyFigures.Of(Varied.Circuit).Single(f => f.Name == name);
+        ImmutableArray<StudyFigure> figures =
+            [.. names.Select(n => StudyFigures.Of(Varied.Circuit).Single(f => f.Name == n))];
+        FigureSlopes[] slopes = [.. figures.Select(f => Analysis.Of(f)!)];
         var stop = TestContext.Current.CancellationToken;
-        return Richardson(v, step, values =>
-            StudySolver.At(Varied.At(values).Value!, [figure], stop).Value!.Values[0]!.Value);
-    }
-
-    private double[] Differences(int v, Func<CurveBuilder, double[]> read)
-    {
-        var (a, b, c) = (Central(2e-4), Central(1e-4), Central(0.5e-4));
-        return [.. a.Select((x, k) => (x - (20 * b[k]) + (64 * c[k])) / 45)];
-
-        double[] Central(double relative)
+        for (var v = 0; v < nominal.Length; v++)
         {
-            var step = relative * (nominal[v] == 0 ? 1 : nominal[v]);
-            var (up, down) = (read(Solved(v, step)), read(Solved(v, -step)));
-            return [.. up.Select((x, k) => (x - down[k]) / (2 * step))];
+            var expected = Richardson(v, step, values =>
+                [.. StudySolver.At(Varied.At(values).Value!, figures, stop).Value!.Values
+                    .Select(x => x!.Value)]);
+            for (var k = 0; k < figures.Length; k++)
+            {
+                var size = Math.Abs(slopes[k].Value / (nominal[v] == 0 ? 1 : nominal[v]));
+                Close.Within(
+                    (1e-7 * Math.Abs(expected[k])) + (rounding * size) + 1e-15, expected[k],
+                    slopes[k].Slopes[v]!.Value);
+            }
         }
     }
 
-    private double Richardson(int v, double relative, Func<double[], double> read)
+    private double[] Differences(int v, Func<CurveBuilder, double[]> read) =>
+        Richardson(v, 0.5e-4, values => read(Solved(values)));
+
+    /// <summary>Three central differences, their errors of second and fourth order taken out.</summary>
+    private double[] Richardson(int v, double relative, Func<double[], double[]> read)
     {
         var (a, b, c) = (Central(4 * relative), Central(2 * relative), Central(relative));
-        return (a - (20 * b) + (64 * c)) / 45;
+        return [.. a.Select((x, k) => (x - (20 * b[k]) + (64 * c[k])) / 45)];
 
-        double Central(double size)
+        double[] Central(double size)
         {
             var step = size * (nominal[v] == 0 ? 1 : nominal[v]);
             double[] up = [.. nominal], down = [.. nominal];
             (up[v], down[v]) = (nominal[v] + step, nominal[v] - step);
-            return (read(up) - read(down)) / (up[v] - down[v]);
+            return [.. read(up).Zip(read(down), (x, y) => (x - y) / (up[v] - down[v]))];
         }
     }
 
-    private CurveBuilder Solved(int v, double step)
+    private CurveBuilder Solved(double[] values)
     {
-        double[] values = [.. nominal];
-        values[v] += step;
         var circuit = Varied.At(values).Value!;
         var outcome = TransientSolver.Solve(
             circuit, CauseList.FromStart(circuit), TestContext.Current.CancellationToken);

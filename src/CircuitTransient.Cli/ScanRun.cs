@@ -1,0 +1,95 @@
+using System.Collections.Immutable;
+using CircuitTransient.Measurements;
+using CircuitTransient.Reports.Html;
+using CircuitTransient.Reports.Studies;
+using CircuitTransient.Studies.Scans;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>One call of <c>scan</c>.</summary>
+public sealed class ScanRun(ScanOptions options, Streams streams, CancellationToken cancellation)
+{
+    /// <summary>Scans the circuit of a file.</summary>
+    /// <returns>One of <see cref="ExitStatus"/>.</returns>
+    public int Run(string file)
+    {
+        var reading = CircuitFile.Read(file, streams);
+        if (reading.Source is not { } source)
+        {
+            return reading.Status;
+        }
+
+        var circuit = TransientAnalysis.Check(source, reading.ReadBeside);
+        streams.Report(circuit.Diagnostics);
+        if (circuit.Value is not { } known)
+        {
+            return Math.Max(ExitStatus.Mistake, reading.Status);
+        }
+
+        var planned = ScanPlan.Of(known, options.Scanned, options.Scatter, reading.ReadBeside);
+        streams.Report(planned.Diagnostics);
+        return planned.Value is { } plan ? Run(file, plan, reading) : ExitStatus.Mistake;
+    }
+
+    private int Run(string file, ScanPlan plan, CircuitFile reading)
+    {
+        using var progress = new StudyProgress(streams);
+        var (all, done) = (Scanner.PointCount(plan), 0);
+        var result = Scanner.Run(plan, Count, cancellation);
+        progress.Dispose();
+        var points = result.Points.Concat(result.Scatter?.Points ?? []).ToArray();
+        if (points.All(p => p.Found is null))
+        {
+            streams.Complain($"{file}: no point of the scan has a solution: {points[0].Trouble}");
+            return ExitStatus.NoUniqueSolution;
+        }
+
+        return new StudyDelivery(options.Study, streams, cancellation).HandOver(
+            file, () => Files(file, result, reading), ScanJson.Write(result),
+            written => ScanSummary.Write(result, written, streams.IsColoured),
+            result.AllHold ? ExitStatus.Success : ExitStatus.RequirementBroken);
+
+        void Count()
+        {
+            var count = Interlocked.Increment(ref done);
+            if (count < all)
+            {
+                progress.Report("points", count, all);
+            }
+            else
+            {
+                progress.Report("searching between the points", 0, 0);
+            }
+        }
+    }
+
+    private ImmutableArray<OutputFile> Files(string file, ScanResult result, CircuitFile reading)
+    {
+        // The picture takes as long as all else together, and a second core is mostly there.
+        var picture = Task.Run(() => ScanPlot.Png(result));
+        var files = ImmutableArray.CreateBuilder<OutputFile>();
+        files.Add(OutputFile.OfText("scan.json", ScanJson.Write(result)));
+        files.Add(OutputFile.OfText("scan.csv", ScanCsv.Write(result)));
+        files.Add(OutputFile.OfText("scan.svg", ScanPlot.Svg(result)));
+        if (Page(file, result, reading) is { } page)
+        {
+            files.Add(page);
+        }
+
+        files.Add(new OutputFile("scan.png", picture.GetAwaiter().GetResult()));
+        return files.ToImmutable();
+    }
+
+    /// <summary>The report of the circuit as written with what the scan found; nothing where the circuit as
+    /// written has no solution.</summary>
+    private OutputFile? Page(string file, ScanResult result, CircuitFile reading)
+    {
+        var written = TransientAnalysis.Run(
+            result.Circuit.Source, new AnalysisOptions([], SolveOptions.UsualSampleCount), reading.ReadBeside,
+            cancellation);
+        return written is Solved { Result: var nominal }
+            ? OutputFile.OfText(
+                "report.html", HtmlReport.Write(nominal, options.CommandFor(file), ScanSection.Of(result)))
+            : null;
+    }
+}

@@ -1,0 +1,95 @@
+using System.Diagnostics;
+
+namespace CircuitTransient.Cli;
+
+/// <summary>A line on the terminal's stderr while a study takes longer than half a second: what it is
+/// doing, how much of it is done, how fast, and how long it will still take.</summary>
+public sealed class StudyProgress : IDisposable
+{
+    private static readonly TimeSpan Patience = TimeSpan.FromMilliseconds(500);
+
+    private readonly TextWriter terminal;
+    private readonly Stopwatch elapsed = Stopwatch.StartNew();
+    private readonly Lock turn = new();
+    private readonly Timer? timer;
+    private string stage = "starting";
+    private long done;
+    private long all;
+    private long doneAtStart;
+    private TimeSpan startOfStage;
+    private bool isShown;
+    private bool isOver;
+
+    /// <summary>Starts to wait.</summary>
+    public StudyProgress(Streams streams)
+    {
+        terminal = streams.Error;
+        if (streams.ErrorIsTerminal)
+        {
+            timer = new Timer(_ => Show(), null, Patience, Patience);
+        }
+    }
+
+    /// <summary>Says how far the work has come.</summary>
+    /// <param name="stage">What is being done, in words.</param>
+    /// <param name="done">How much of it is done.</param>
+    /// <param name="all">How much there is; 0 where that is not known.</param>
+    public void Report(string stage, long done, long all)
+    {
+        lock (turn)
+        {
+            if (this.stage != stage)
+            {
+                (this.stage, doneAtStart, startOfStage) = (stage, done, elapsed.Elapsed);
+            }
+
+            (this.done, this.all) = (done, all);
+        }
+    }
+
+    /// <inheritdoc/>
+    public void Dispose()
+    {
+        lock (turn)
+        {
+            timer?.Dispose();
+            if (isShown && !isOver)
+            {
+                terminal.Write("\r\e[K");
+            }
+
+            isOver = true;
+        }
+    }
+
+    /// <summary>The line: <c>draws 120,000 of 1,000,000, 24,000 a second, 37 s left</c>.</summary>
+    public static string Words(string stage, long done, long all, double rate)
+    {
+        var words = all > 0 ? $"{stage} {done:N0} of {all:N0}" : done > 0 ? $"{stage} {done:N0}" : stage;
+        if (rate <= 0)
+        {
+            return words;
+        }
+
+        words += $", {(rate >= 10 ? rate.ToString("N0") : rate.ToString("0.#"))} a second";
+        var left = (all - done) / rate;
+        return all <= 0 ? words
+            : left < 90 ? $"{words}, {left:0} s left"
+            : left < 5400 ? $"{words}, {left / 60:0} min left"
+            : $"{words}, {left / 3600:0.#} h left";
+    }
+
+    private void Show()
+    {
+        lock (turn)
+        {
+            if (!isOver)
+            {
+                isShown = true;
+                var time = (elapsed.Elapsed - startOfStage).TotalSeconds;
+                var rate = time > 0 ? (done - doneAtStart) / time : 0;
+                terminal.Write($"\r\e[K{Words(stage, done, all, rate)}");
+            }
+        }
+    }
+}

@@ -1,0 +1,95 @@
+using System.Collections.Immutable;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>The frame of a panel: title, grid, labels of both axes.</summary>
+/// <param name="Across">What runs from left to right, its marks with their places, and its name.</param>
+/// <param name="Level">What runs upwards.</param>
+/// <param name="Unit">Its unit.</param>
+internal sealed record ScanFrame(
+    PlotFonts Fonts, double Top, double Height, ImmutableArray<(double Place, string Label)> Across,
+    string AcrossName, PlotScale Level, string Unit)
+{
+    /// <summary>Left edge of every panel.</summary>
+    public const double Left = 76;
+
+    /// <summary>Right edge of every panel.</summary>
+    public const double Right = PlotPanel.Width - 210;
+
+    /// <summary>Height of the letters in panels.</summary>
+    public const double Small = 11.5;
+
+    /// <summary>Lower edge.</summary>
+    public double Bottom => Top + Height;
+
+    /// <summary>The shapes, below everything else in the panel.</summary>
+    public IEnumerable<Shape> Shapes(string title)
+    {
+        yield return new TextShape(
+            Left, Top - 12, Fonts.Fitted(title, 14, PlotPanel.Width - Left - 20, isStrong: true), 14,
+            PlotStyle.Ink, IsStrong: true);
+        yield return new RectangleShape(Left, Top, Right - Left, Height, "#fbfcfc");
+        var levels = Level.Ticks(Unit, 5);
+        foreach (var (value, label) in levels.Marks)
+        {
+            var y = Level.Place(value);
+            yield return new LineShape(
+                Left, y, Right, y, new Stroke(value == 0 ? PlotStyle.Axis : PlotStyle.Grid, 1));
+            yield return new TextShape(Left - 8, y + 4, label, Small, PlotStyle.Grey, TextAnchor.End);
+        }
+
+        yield return new TextShape(
+            Left - 8, Top - 6, levels.Unit, Small, PlotStyle.Ink, TextAnchor.End, IsStrong: true);
+        foreach (var (x, label) in Across)
+        {
+            yield return new LineShape(x, Top, x, Bottom, new Stroke(PlotStyle.Grid, 1));
+            yield return new TextShape(x, Bottom + 16, label, Small, PlotStyle.Grey, TextAnchor.Middle);
+        }
+
+        yield return new TextShape(
+            Right + 22, Bottom + 16,
+            Fonts.Fitted(AcrossName, Small, PlotPanel.Width - Right - 26, isStrong: true), Small,
+            PlotStyle.Ink, IsStrong: true);
+    }
+
+    /// <summary>The marks of a scanned value, and its name with the unit they are in.</summary>
+    public static (ImmutableArray<(double Place, string Label)> Marks, string Name) AcrossOf(ScanScale scale)
+    {
+        var ticks = scale.Ticks(9);
+        var unit = ticks.Unit.Length > 0 ? $" ({ticks.Unit})" : "";
+        return ([.. ticks.Marks.Select(m => (scale.Place(m.Value), m.Label))],
+            ScanWords.Subject(scale.Axis) + unit);
+    }
+
+    /// <summary>Room round what is drawn; zero is kept in sight where it is near.</summary>
+    public static (double Least, double Greatest) Range(IEnumerable<double> values)
+    {
+        var finite = values.Where(double.IsFinite).ToArray();
+        var (least, greatest) = finite.Length == 0 ? (0, 1) : (finite.Min(), finite.Max());
+        var far = Math.Max(Math.Abs(least), Math.Abs(greatest));
+        if (least * greatest > 0 && Math.Min(Math.Abs(least), Math.Abs(greatest)) < 0.5 * far)
+        {
+            (least, greatest) = (Math.Min(0, least), Math.Max(0, greatest));
+        }
+
+        var room = greatest > least ? greatest - least : far > 0 ? far : 1;
+        return (least - (0.12 * room), greatest + (0.14 * room));
+    }
+
+    /// <summary>The line of a limit with its words at one end.</summary>
+    public IEnumerable<Shape> Limit(double value, string words, bool isLeft = false)
+    {
+        var y = Level.Place(value);
+        var (x, anchor) = isLeft ? (Left + 6, TextAnchor.Start) : (Right - 6, TextAnchor.End);
+        if (y < Top || y > Bottom)
+        {
+            yield return new TextShape(
+                x, y < Top ? Top + 14 : Bottom - 6, $"{words}: {(y < Top ? "above" : "below")} this panel",
+                Small, PlotStyle.Limit, anchor, HasHalo: true);
+            yield break;
+        }
+
+        yield return new LineShape(Left, y, Right, y, new Stroke(PlotStyle.Limit, 1.2, [8, 4]));
+        yield return new TextShape(x, y - 5, words, Small, PlotStyle.Limit, anchor, HasHalo: true);
+    }
+}

@@ -1,0 +1,103 @@
+using System.Collections.Immutable;
+using CircuitTransient.Numerics;
+using CircuitTransient.Studies.Scans;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>The picture of a scan: the family of waveforms, each figure against the scanned value, or maps
+/// over two.</summary>
+public static class ScanPlot
+{
+    private const int MostCurves = 8;
+    private const int MostMaps = 3;
+    private const double PixelsPerPoint = 2;
+    private const double Margin = 20;
+
+    /// <summary>The picture as SVG.</summary>
+    public static string Svg(ScanResult result)
+    {
+        using var fonts = new PlotFonts();
+        return SvgRenderer.Write(Draw(result, fonts));
+    }
+
+    /// <summary>The picture as PNG, two pixels a point.</summary>
+    public static byte[] Png(ScanResult result)
+    {
+        using var fonts = new PlotFonts();
+        return PngRenderer.Write(Draw(result, fonts), fonts, PixelsPerPoint);
+    }
+
+    /// <summary>The picture before it is rendered.</summary>
+    public static Drawing Draw(ScanResult result, PlotFonts fonts)
+    {
+        var shapes = ImmutableArray.CreateBuilder<Shape>();
+        var title = result.Circuit.Title ?? result.Circuit.Source.Name;
+        var width = PlotPanel.Width - ScanFrame.Left - Margin;
+        shapes.Add(new TextShape(
+            ScanFrame.Left, 34, fonts.Fitted(title, 19, width, isStrong: true), 19, PlotStyle.Ink,
+            IsStrong: true));
+        shapes.Add(new TextShape(
+            ScanFrame.Left, 55, fonts.Fitted(ScanSummary.Verdict(result), 12.5, width), 12.5,
+            PlotStyle.Grey));
+        var y = 76.0;
+        foreach (var panel in Panels(result, fonts))
+        {
+            var (drawn, height) = panel(y);
+            shapes.AddRange(drawn);
+            y += height;
+        }
+
+        var source = result.Circuit.Source;
+        var foot = $"{source.Name}, SHA-256 {source.Sha256[..12]}… · a linear model, a calculation aid";
+        shapes.Add(new TextShape(
+            ScanFrame.Left, y + 10, fonts.Fitted(foot, 11, width), 11, PlotStyle.Grey));
+        return new Drawing(PlotPanel.Width, y + 26, $"Scan of {title}", shapes.ToImmutable());
+    }
+
+    private static IEnumerable<Func<double, (IEnumerable<Shape> Shapes, double Height)>> Panels(
+        ScanResult result, PlotFonts fonts)
+    {
+        if (result.Family is { } family)
+        {
+            yield return top => ScanFamilyPanel.Draw(result, family, fonts, top);
+        }
+
+        var wanted = Wanted(result.Findings);
+        switch (result.Axes)
+        {
+            case [var axis]:
+                foreach (var (finding, index) in wanted.Take(MostCurves))
+                {
+                    yield return top =>
+                        ScanCurvePanel.Draw(result, axis, result.Points, finding, index, fonts, top);
+                }
+
+                break;
+            case [_, _]:
+                foreach (var (finding, index) in wanted.Take(MostMaps))
+                {
+                    yield return top => ScanMapPanel.Draw(result, finding, index, fonts, top);
+                }
+
+                break;
+        }
+
+        if (result.Scatter is { } scatter)
+        {
+            foreach (var (finding, index) in
+                Wanted([.. scatter.Figures.Select(f => f.Scan)]).Take(MostCurves / 2))
+            {
+                yield return top =>
+                    ScanCurvePanel.Draw(result, scatter.Axis, scatter.Points, finding, index, fonts, top);
+            }
+        }
+    }
+
+    /// <summary>What is judged, the tightest first, then what was asked to be observed; what does not change
+    /// makes no picture.</summary>
+    private static IEnumerable<(FigureScan Finding, int Index)> Wanted(
+        ImmutableArray<FigureScan> findings) => findings
+        .Select((finding, index) => (Finding: finding, Index: index))
+        .Where(f => f.Finding.Greatest is { How: not RangeExtremeKind.Flat })
+        .OrderBy(f => f.Finding.Room ?? double.PositiveInfinity);
+}

@@ -1,0 +1,163 @@
+using System.Collections.Immutable;
+using CircuitTransient.Numerics;
+using CircuitTransient.Studies;
+using CircuitTransient.Studies.Scans;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>The summary of a scan for the terminal: where everything holds, the worst place, a short
+/// table.</summary>
+public static partial class ScanSummary
+{
+    private const int MostRows = 12;
+    private const int MostFindings = 12;
+    private const int MostTroubles = 3;
+
+    private static readonly TextColumn Left = new();
+    private static readonly TextColumn Right = new(IsRight: true);
+    private static readonly TextColumn Prose = new(IsProse: true);
+
+    /// <summary>The summary.</summary>
+    /// <param name="result">What was found.</param>
+    /// <param name="files">Where the files are; may be empty.</param>
+    /// <param name="colour">Whether headings are bold.</param>
+    public static string Write(ScanResult result, ImmutableArray<string> files, bool colour = false)
+    {
+        var text = new SummaryText(colour);
+        var source = result.Circuit.Source.Name;
+        text.Title(result.Circuit.Title is { } title ? $"{title} ({source})" : source);
+        text.Paragraph(Verdict(result), indent: 0);
+        if (!result.Axes.IsEmpty)
+        {
+            WriteJudged(text, result);
+            WriteObserved(text, result);
+            WriteTable(text, result);
+        }
+
+        if (result.Scatter is { } scatter)
+        {
+            WriteScatter(text, result, scatter);
+        }
+
+        WriteTroubles(text, result);
+        text.Blank();
+        text.Paragraph(Searched(result), indent: 0);
+        if (!files.IsEmpty)
+        {
+            text.Heading("Files");
+            foreach (var file in files)
+            {
+                text.Paragraph(file);
+            }
+        }
+
+        text.Blank();
+        text.Paragraph(TerminalSummary.Closing, indent: 0);
+        return text.ToString();
+    }
+
+    /// <summary>The verdict in one or two sentences.</summary>
+    public static string Verdict(ScanResult result)
+    {
+        var said = new List<string>();
+        if (!result.Axes.IsEmpty)
+        {
+            said.Add(ScanVerdict(result));
+        }
+
+        if (result.Scatter is { } scatter)
+        {
+            said.Add(ScatterVerdict(scatter));
+        }
+
+        return string.Join(" ", said);
+    }
+
+    private static string ScanVerdict(ScanResult result)
+    {
+        var judged = result.Findings.Where(f => f.IsJudged).ToArray();
+        var range = ScanWords.Range(result);
+        if (judged.Length == 0)
+        {
+            return $"Scanned {range}: nothing was required or rated, so there is no verdict.";
+        }
+
+        if (judged.All(f => f.HoldsThroughout))
+        {
+            return $"Everything required and rated holds for {range}.";
+        }
+
+        if (result.Axes is not [var axis])
+        {
+            var holding = result.Points.Count(p => p.Found is { } found
+                && judged.All(f => Holds(f.Figure, found.Values[result.Figures.IndexOf(f.Figure)])));
+            return $"Everything required and rated holds at {holding} of {result.Points.Length} points of "
+                + $"{range}; the lines where it begins to break are in the map.";
+        }
+
+        var common = ScanStretches.Common(judged.Select(f => f.Holding));
+        return (common.IsEmpty
+            ? $"Something is broken throughout {range}."
+            : $"For {ScanWords.Subject(axis)} everything required and rated "
+                + $"{ScanWords.Holding(axis, common)}.") + PreferredThatHold(axis, common);
+    }
+
+    /// <summary>Which of the preferred values hold, for only those can be bought.</summary>
+    private static string PreferredThatHold(ScanAxis axis, ImmutableArray<ScanStretch> common)
+    {
+        const int few = 6;
+        if (axis.Spacing != ScanSpacing.Preferred)
+        {
+            return "";
+        }
+
+        var holding = axis.Values.Where(v => common.Any(s => v >= s.From && v <= s.To)).ToArray();
+        var named = holding.Length is 0 or > few
+            ? ""
+            : $": {string.Join(", ", holding.Select(v => axis.Say(v, 3)))}";
+        return $" Of the {axis.Values.Length} preferred values {holding.Length} hold{named}.";
+    }
+
+    private static string ScatterVerdict(ScatterResult scatter)
+    {
+        var judged = scatter.Figures.Where(f => f.Scan.IsJudged).ToArray();
+        var range = Words(scatter);
+        if (judged.Length == 0)
+        {
+            return $"With {range} nothing was required or rated, so there is no verdict.";
+        }
+
+        var common = ScanStretches.Common(judged.Select(f => f.Scan.Holding));
+        var fraction = common.Sum(s => s.To - s.From) / (scatter.Axis.To - scatter.Axis.From);
+        return judged.All(f => f.Scan.HoldsThroughout)
+            ? $"With {range} everything required and rated holds."
+            : $"With {range} everything required and rated holds in {ReportWords.Percent(fraction)} of "
+                + "cases.";
+    }
+
+    private static string Words(ScatterResult scatter) =>
+        $"{ScanWords.Subject(scatter.Axis)} anywhere from {scatter.Axis.Say(scatter.Axis.From)} to "
+        + scatter.Axis.Say(scatter.Axis.To);
+
+    private static bool Holds(StudyFigure figure, double? value) =>
+        figure.Kind == StudyFigureKind.RatingUsed ? value <= 1 : value >= 0;
+
+    /// <summary>What was solved, what was searched and what was not.</summary>
+    internal static string Searched(ScanResult result)
+    {
+        var scans = result.Findings.Concat(result.Scatter?.Figures.Select(f => f.Scan) ?? []).ToArray();
+        var kinds = scans.SelectMany(s => new[] { s.Greatest?.How, s.Least?.How }).ToArray();
+        var breaks = scans.SelectMany(s => s.Breaks).ToArray();
+        var isCompared = kinds.Contains(RangeExtremeKind.Compared) || breaks.Any(b => !b.IsBySlope);
+        var isBySlope = result.HasSlopes || breaks.Any(b => b.IsBySlope);
+        var how = (isBySlope, isCompared) switch
+        {
+            (true, false) => "root-finding on exact slopes",
+            (true, true) => "root-finding on exact slopes, and where there is none by comparing exact values",
+            _ => "comparing exact values",
+        };
+        return "Every figure is an exact solution of its own. Between the points extremes and breaks were "
+            + $"searched by {how}; what rises and falls again between two neighbouring points, without "
+            + "showing at either, is not seen.";
+    }
+}

@@ -1,0 +1,135 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Numerics;
+
+namespace CircuitTransient.Studies.Scans;
+
+/// <summary>What one figure does along one scanned value: jumps, extremes and breaks, on the points and
+/// between them.</summary>
+/// <param name="circuit">The circuit.</param>
+/// <param name="figure">The figure.</param>
+/// <param name="function">The figure anywhere in the range.</param>
+/// <param name="scale">How large the figure, or what it is the extreme of, is over the points.</param>
+internal sealed class AxisScan(
+    Circuit circuit, StudyFigure figure, Func<double, SlopedSample> function, double scale)
+{
+    private const double Rounding = 1e-10; // of the scale: what is less is no change of the figure
+
+    private readonly bool isJudged = FigureScan.IsJudgedKind(figure.Kind);
+
+    /// <summary>Searches.</summary>
+    /// <param name="given">The figure at the points, by place: infinite where it breaks without limit, NaN
+    /// where the circuit has no solution.</param>
+    /// <param name="timeAt">When the figure stands at a place.</param>
+    public FigureScan Run(ImmutableArray<SlopedSample> given, Func<double, double?> timeAt)
+    {
+        if (IsFlat(given))
+        {
+            return Flat(given, timeAt);
+        }
+
+        var jumps = RangeJump.Find(given, function);
+        var looked = Merge(given, jumps.SelectMany(j => new[] { j.Before, j.After }));
+        var greatest = RangeExtremeSearch.Greatest(looked, function);
+        var least = RangeExtremeSearch.Least(looked, function);
+        looked = Merge(looked, [.. greatest?.Looked ?? [], .. least?.Looked ?? []]);
+        var breaks = isJudged ? Breaks(looked) : [];
+        var holding = isJudged ? Holding(looked, breaks) : [];
+        var findings = new FigureScan(
+            figure,
+            Place(greatest, jumps, timeAt),
+            Place(least, jumps, timeAt),
+            [.. jumps.Select(j => new ScanJump(j.After.X, j.Before.Y, j.After.Y))],
+            breaks,
+            holding,
+            !isJudged || looked.All(s => double.IsNaN(s.Y) || Judged(s).Y >= 0));
+        return findings with { Room = ScanRoom.Of(circuit, findings) };
+    }
+
+    private bool IsFlat(ImmutableArray<SlopedSample> given)
+    {
+        var values = given.Select(s => s.Y).ToArray();
+        return values.All(double.IsFinite) && values.Max() - values.Min() <= Rounding * scale;
+    }
+
+    private FigureScan Flat(ImmutableArray<SlopedSample> given, Func<double, double?> timeAt)
+    {
+        var (first, last) = (given[0], given[^1]);
+        var value = Math.Abs(first.Y) <= Rounding * scale ? 0 : first.Y;
+        var place = new ScanPlace([first.X], value, timeAt(first.X), RangeExtremeKind.Flat);
+        var holds = !isJudged || Judged(first).Y >= 0;
+        var findings = new FigureScan(
+            figure, place, place, [], [], isJudged && holds ? [new ScanStretch(first.X, last.X)] : [], holds);
+        return findings with { Room = ScanRoom.Of(circuit, findings) };
+    }
+
+    private static ScanPlace? Place(
+        RangeExtreme? extreme, ImmutableArray<RangeJump> jumps, Func<double, double?> timeAt)
+    {
+        if (extreme is null)
+        {
+            return null;
+        }
+
+        var at = extreme.At;
+        var isAtJump = jumps.Any(j => j.Before.X == at.X || j.After.X == at.X);
+        return new ScanPlace(
+            [at.X], at.Y, timeAt(at.X), isAtJump ? RangeExtremeKind.Jump : extreme.Kind);
+    }
+
+    /// <summary>Positive or zero where it holds, negative where it breaks.</summary>
+    private SlopedSample Judged(SlopedSample sample) => figure.Kind == StudyFigureKind.RatingUsed
+        ? new SlopedSample(sample.X, 1 - sample.Y, -sample.Slope)
+        : sample;
+
+    private ImmutableArray<ScanBreak> Breaks(ImmutableArray<SlopedSample> looked)
+    {
+        var breaks = ImmutableArray.CreateBuilder<ScanBreak>();
+        for (var i = 0; i + 1 < looked.Length; i++)
+        {
+            var (left, right) = (Judged(looked[i]), Judged(looked[i + 1]));
+            if (left.HasValue && right.HasValue && left.Y >= 0 != right.Y >= 0
+                && RangeCrossing.Between(left, right, x => Judged(function(x))) is { } crossing)
+            {
+                breaks.Add(new ScanBreak(
+                    [crossing.X], 0, left.Y >= 0, crossing.IsJump, crossing.IsBySlope));
+            }
+        }
+
+        return breaks.ToImmutable();
+    }
+
+    /// <summary>From each place where it begins to hold to the next where it ceases; where the circuit has no
+    /// solution nothing is known to hold.</summary>
+    private ImmutableArray<ScanStretch> Holding(
+        ImmutableArray<SlopedSample> looked, ImmutableArray<ScanBreak> breaks)
+    {
+        var stretches = ImmutableArray.CreateBuilder<ScanStretch>();
+        double? start = null;
+        for (var i = 0; i < looked.Length; i++)
+        {
+            var before = i > 0 ? looked[i - 1].X : double.PositiveInfinity;
+            var passed = breaks.FirstOrDefault(b => b.At[0] >= before && b.At[0] <= looked[i].X);
+            if (Judged(looked[i]).Y >= 0)
+            {
+                start ??= passed?.At[0] ?? looked[i].X;
+            }
+            else if (start is { } from)
+            {
+                stretches.Add(new ScanStretch(from, passed?.At[0] ?? looked[i - 1].X));
+                start = null;
+            }
+        }
+
+        if (start is { } open)
+        {
+            stretches.Add(new ScanStretch(open, looked[^1].X));
+        }
+
+        return stretches.ToImmutable();
+    }
+
+    private static ImmutableArray<SlopedSample> Merge(
+        ImmutableArray<SlopedSample> samples, IEnumerable<SlopedSample> more) =>
+        [.. samples.Concat(more).DistinctBy(s => s.X).OrderBy(s => s.X)];
+}

@@ -1,0 +1,151 @@
+using System.Collections.Immutable;
+using System.Runtime.InteropServices;
+using CircuitTransient.Numerics;
+
+namespace CircuitTransient.Studies.Scans;
+
+/// <summary>What every figure does over two scanned values: extremes between the points, and where a
+/// requirement or rating begins to break on the lines through the points.</summary>
+internal sealed class MapScan(
+    ScanPlan plan, ImmutableArray<StudyFigure> figures, ScanFunction function, double[] nominal,
+    ImmutableArray<ScanPoint> points)
+{
+    private const int MostRounds = 6;
+    private const double Settled = 1e-10; // of the value: a round that gains less ends the search
+    private const int MostCrossings = 4000; // of one figure; a finer map is not drawn finer
+
+    private readonly ImmutableArray<double> first = plan.Axes[0].Values;
+    private readonly ImmutableArray<double> second = plan.Axes[1].Values;
+
+    /// <summary>Searches each figure.</summary>
+    public ImmutableArray<FigureScan> Run(CancellationToken cancellation)
+    {
+        var found = new FigureScan[figures.Length];
+        Parallel.For(0, figures.Length, new ParallelOptions { CancellationToken = cancellation }, f =>
+            found[f] = Of(f));
+        return ImmutableCollectionsMarshal.AsImmutableArray(found);
+    }
+
+    private FigureScan Of(int figure)
+    {
+        var kind = figures[figure].Kind;
+        var isJudged = FigureScan.IsJudgedKind(kind);
+        var values = points
+            .Select(p => ScanFunction.Judged(figures[figure], p.Found, p.Found?.Values[figure])).ToArray();
+        var greatest = Extreme(figure, values, 1);
+        var least = Extreme(figure, values, -1);
+        var breaks = isJudged ? Breaks(figure, values) : [];
+        var worst = kind == StudyFigureKind.RatingUsed ? 1 - greatest?.Value : least?.Value;
+        var holds = !isJudged
+            || (values.All(v => double.IsNaN(v) || Margin(kind, v) >= 0) && worst is null or >= 0);
+        var scan = new FigureScan(figures[figure], greatest, least, [], breaks, [], holds);
+        return scan with { Room = ScanRoom.Of(plan.Varied.Circuit, scan) };
+    }
+
+    private static double Margin(StudyFigureKind kind, double value) =>
+        kind == StudyFigureKind.RatingUsed ? 1 - value : value;
+
+    /// <summary>From the best point on, line by line along each value in turn, until neither gains.</summary>
+    private ScanPlace? Extreme(int figure, double[] values, int sign)
+    {
+        var best = Enumerable.Range(0, values.Length).Where(i => double.IsFinite(values[i]))
+            .DefaultIfEmpty(-1).MaxBy(i => i < 0 ? double.NaN : sign * values[i]);
+        if (best < 0)
+        {
+            return null;
+        }
+
+        double[] place = [first[best / second.Length], second[best % second.Length]];
+        var value = values[best];
+        var how = RangeExtremeKind.End;
+        for (var round = 0; round < MostRounds; round++)
+        {
+            var before = value;
+            for (var axis = 0; axis < 2; axis++)
+            {
+                if (OnLine(figure, place, axis, sign) is { } found && sign * found.At.Y >= sign * value)
+                {
+                    (place[axis], value) = (found.At.X, found.At.Y);
+                    how = found.Kind == RangeExtremeKind.End ? how : found.Kind;
+                }
+            }
+
+            if (Math.Abs(value - before) <= Settled * Math.Abs(value))
+            {
+                break;
+            }
+        }
+
+        var all = (double[])nominal.Clone();
+        place.CopyTo(all, 0);
+        return new ScanPlace([.. place], value, function.Time(all, figure), how);
+    }
+
+    /// <summary>The extreme along one value between the neighbours of where the search stands.</summary>
+    private RangeExtreme? OnLine(int figure, double[] place, int axis, int sign)
+    {
+        var ticks = axis == 0 ? first : second;
+        var next = ticks.BinarySearch(place[axis]);
+        var (low, high) = next >= 0 ? (next - 1, next + 1) : (~next - 1, ~next);
+        var others = (double[])nominal.Clone();
+        place.CopyTo(others, 0);
+        var along = function.Along(axis, others, figure);
+        double[] at = [ticks[Math.Max(0, low)], place[axis], ticks[Math.Min(ticks.Length - 1, high)]];
+        var samples = at.Distinct().Select(along).ToImmutableArray();
+        return sign > 0
+            ? RangeExtremeSearch.Greatest(samples, along)
+            : RangeExtremeSearch.Least(samples, along);
+    }
+
+    private ImmutableArray<ScanBreak> Breaks(int figure, double[] values)
+    {
+        var breaks = ImmutableArray.CreateBuilder<ScanBreak>();
+        for (var i = 0; i < first.Length; i++)
+        {
+            for (var j = 0; j < second.Length && breaks.Count < MostCrossings; j++)
+            {
+                var here = (i * second.Length) + j;
+                if (i + 1 < first.Length)
+                {
+                    AddBreak(breaks, figure, values, here, here + second.Length, 0);
+                }
+
+                if (j + 1 < second.Length)
+                {
+                    AddBreak(breaks, figure, values, here, here + 1, 1);
+                }
+            }
+        }
+
+        return breaks.ToImmutable();
+    }
+
+    private void AddBreak(
+        ImmutableArray<ScanBreak>.Builder breaks, int figure, double[] values, int one, int other, int axis)
+    {
+        var kind = figures[figure].Kind;
+        var (a, b) = (Margin(kind, values[one]), Margin(kind, values[other]));
+        if (!double.IsFinite(a) || !double.IsFinite(b) || a >= 0 == b >= 0)
+        {
+            return;
+        }
+
+        var others = (double[])nominal.Clone();
+        points[one].At.CopyTo(others);
+        var along = function.Along(axis, others, figure);
+        var crossing = RangeCrossing.Between(
+            new SlopedSample(points[one].At[axis], a, double.NaN),
+            new SlopedSample(points[other].At[axis], b, double.NaN),
+            x => Judged(kind, along(x)));
+        if (crossing is not null)
+        {
+            breaks.Add(new ScanBreak(
+                points[one].At.SetItem(axis, crossing.X), axis, a >= 0, crossing.IsJump, crossing.IsBySlope));
+        }
+    }
+
+    private static SlopedSample Judged(StudyFigureKind kind, SlopedSample sample) =>
+        kind == StudyFigureKind.RatingUsed
+            ? new SlopedSample(sample.X, 1 - sample.Y, -sample.Slope)
+            : sample;
+}

@@ -1,0 +1,105 @@
+using System.Collections.Immutable;
+using CircuitTransient.Numerics;
+using CircuitTransient.Solutions;
+using CircuitTransient.Studies.Sensitivities;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Studies.Scans;
+
+/// <summary>The figures of a circuit as a function of its varied values: each point solved exactly, and
+/// differentiated exactly where the figure has a derivative.</summary>
+internal sealed class ScanFunction
+{
+    private readonly VariedCircuit varied;
+    private readonly ImmutableArray<StudyFigure> figures;
+    private readonly CancellationToken cancellation;
+
+    public ScanFunction(
+        VariedCircuit varied, ImmutableArray<StudyFigure> figures, CancellationToken cancellation)
+    {
+        (this.varied, this.figures, this.cancellation) = (varied, figures, cancellation);
+    }
+
+    /// <summary>All figures at a point.</summary>
+    /// <param name="values">A value for each that varies.</param>
+    /// <param name="at">The scanned ones among them.</param>
+    /// <param name="axis">The value whose slopes are wanted; −1 for none.</param>
+    public ScanPoint Point(double[] values, ImmutableArray<double> at, int axis = -1)
+    {
+        var solved = Solve(values);
+        if (solved.Value is not { } solution)
+        {
+            return new ScanPoint(at, null, [], Reason(solved.Diagnostics));
+        }
+
+        ImmutableArray<int> all = [.. Enumerable.Range(0, figures.Length)];
+        var (found, slopes) = axis < 0
+            ? (StudySolver.Read(solution, figures, cancellation), [])
+            : Derived(solution, values, axis, all);
+        return new ScanPoint(at, found, slopes, null);
+    }
+
+    /// <summary>When a figure stands at a point; null where there is no instant.</summary>
+    public double? Time(double[] values, int figure) => Solve(values).Value is { } solution
+        ? StudySolver.Read(solution, [figures[figure]], cancellation).Times[0]
+        : null;
+
+    /// <summary>One figure as a function of one of the values.</summary>
+    public Func<double, SlopedSample> Along(int axis, double[] others, int figure) => x =>
+    {
+        var values = (double[])others.Clone();
+        values[axis] = x;
+        if (Solve(values).Value is not { } solution)
+        {
+            return new SlopedSample(x, double.NaN, double.NaN);
+        }
+
+        var (found, slopes) = Derived(solution, values, axis, [figure]);
+        return new SlopedSample(x, Judged(figures[figure], found, found.Values[0]), slopes[0]);
+    };
+
+    /// <summary>A figure as the searches take it: infinite where what is judged breaks without limit, NaN
+    /// where there is none.</summary>
+    public static double Judged(StudyFigure figure, StudyPoint? found, double? value) =>
+        (found, value, figure.Kind) switch
+        {
+            (null, _, _) => double.NaN,
+            (_, { } known, _) => known,
+            (_, _, StudyFigureKind.Margin) => double.NegativeInfinity,
+            (_, _, StudyFigureKind.RatingUsed) => double.PositiveInfinity,
+            _ => double.NaN,
+        };
+
+    private Outcome<TransientSolution> Solve(double[] values)
+    {
+        cancellation.ThrowIfCancellationRequested();
+        return varied.At(values)
+            .Then(c => TransientSolver.Solve(c, CauseList.FromStart(c), cancellation));
+    }
+
+    /// <summary>Figures with their slopes; what has no derivative is measured alone.</summary>
+    private (StudyPoint Found, ImmutableArray<double> Slopes) Derived(
+        TransientSolution solution, double[] values, int axis, ImmutableArray<int> wanted)
+    {
+        var analysis = SensitivityAnalysis.Of(varied, values, solution, cancellation).Value;
+        var derived = wanted.Select(f => analysis?.Of(figures[f])).ToArray();
+        var others = StudySolver.Read(
+            solution, [.. wanted.Where((_, k) => derived[k] is null).Select(f => figures[f])], cancellation);
+        var found = ImmutableArray.CreateBuilder<double?>();
+        var times = ImmutableArray.CreateBuilder<double?>();
+        var slopes = ImmutableArray.CreateBuilder<double>();
+        var next = 0;
+        for (var k = 0; k < derived.Length; k++)
+        {
+            found.Add(derived[k] is { } known ? known.Value : others.Values[next]);
+            times.Add(derived[k] is { } timed ? timed.Time : others.Times[next]);
+            slopes.Add(derived[k]?.Slopes[axis] ?? double.NaN);
+            next += derived[k] is null ? 1 : 0;
+        }
+
+        return (new StudyPoint(found.ToImmutable(), times.ToImmutable()), slopes.ToImmutable());
+    }
+
+    private static string Reason(ImmutableArray<Diagnostic> diagnostics) =>
+        diagnostics.FirstOrDefault(d => d.Severity == Severity.Error)?.Message ?? "there is no solution";
+}

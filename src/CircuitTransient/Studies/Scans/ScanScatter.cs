@@ -1,0 +1,57 @@
+using System.Collections.Immutable;
+using CircuitTransient.Syntax;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Studies.Scans;
+
+/// <summary>An event whose instant is anywhere within a distance of the one stated, each instant as likely as
+/// any other.</summary>
+/// <param name="Varied">The event.</param>
+/// <param name="Index">Its index in the values of the varied circuit.</param>
+/// <param name="By">How far to either side, in seconds.</param>
+public sealed record ScanScatter(VariedValue Varied, int Index, double By)
+{
+    /// <summary>The earliest instant, in seconds; not before t = 0.</summary>
+    public double From => Math.Max(0, Varied.Nominal - By);
+
+    /// <summary>The latest instant, in seconds.</summary>
+    public double To => Varied.Nominal + By;
+
+    /// <summary>Which event scatters: the one named, or the only event that is scanned.</summary>
+    internal static (EventTimeTarget? Event, Diagnostic? Mistake) Target(
+        ScatterSyntax scatter, ImmutableArray<ScannedSyntax> scanned)
+    {
+        if (scatter.Switch is { } name)
+        {
+            return (new EventTimeTarget(name, scatter.Closes)
+            {
+                Written = scatter.Source,
+                Span = scatter.NameSpan,
+            }, null);
+        }
+
+        return scanned.Where(s => s.Kind == ScannedKind.Event).ToArray() is [var only]
+            ? ((EventTimeTarget)ScanTargets.Of(only), null)
+            : (null, Diagnostic.Error(scatter.Source, scatter.By.Span, "which event scatters is not said",
+                $"write `Kmain closes by {scatter.Source[scatter.By.Span]}`"));
+    }
+
+    /// <summary>The scatter in the varied circuit; its event is the last of the values, or one of the
+    /// axes.</summary>
+    internal static ScanScatter? Of(VariedCircuit varied, ScatterSyntax? scatter)
+    {
+        if (scatter is null)
+        {
+            return null;
+        }
+
+        var index = varied.Values.Length - 1;
+        if (scatter.Switch is null)
+        {
+            index = Enumerable.Range(0, varied.Values.Length)
+                .First(i => varied.Values[i].Kind == VariedKind.EventTime);
+        }
+
+        return new ScanScatter(varied.Values[index], index, scatter.By.Value);
+    }
+}
