@@ -19,8 +19,11 @@ public static class ResultFiles
         var svg = OutputFile.OfText("waveforms.svg", WaveformPlot.Svg(result));
         var page = OutputFile.OfText("report.html", HtmlReport.Write(result, command));
         var png = new OutputFile("waveforms.png", picture.GetAwaiter().GetResult());
-        return isPdf
-            ? [json, csv, svg, png, page, new OutputFile("report.pdf", PdfReport.Write(result, command))]
+        ImmutableArray<OutputFile> files = BreakdownCsv.Write(result) is { } breakdown
+            ? [json, csv, OutputFile.OfText("breakdown.csv", breakdown), svg, png, page]
             : [json, csv, svg, png, page];
+        return isPdf
+            ? [.. files, new OutputFile("report.pdf", PdfReport.Write(result, command))]
+            : files;
     }
 }

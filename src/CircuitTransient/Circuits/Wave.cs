@@ -38,6 +38,10 @@ public sealed record WavePiece(
     /// the level held after a ramp, the other exponential of an impulse.</summary>
     public bool Continues { get; init; }
 
+    /// <summary>The pulse whose rise or fall it is, <c>pulse 3 from 131 µs</c>;
+    /// null for what is none.</summary>
+    public string? Pulse { get; init; }
+
     /// <summary>The phase at t = 0 as stated for a sine or cosine, in radians;
     /// null for other waves.</summary>
     public double? StatedPhase { get; init; }

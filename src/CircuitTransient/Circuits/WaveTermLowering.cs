@@ -116,10 +116,11 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
             return null;
         }
 
+        var name = $"pulse from {Time(span.From)}";
         return
         [
-            Held(span.From, level, $"rise at {Time(span.From)}"),
-            Held(span.To, -level, $"fall at {Time(span.To)}"),
+            Held(span.From, level, $"rise at {Time(span.From)}") with { Pulse = name },
+            Held(span.To, -level, $"fall at {Time(span.To)}") with { Pulse = name },
         ];
     }
 
@@ -155,8 +156,10 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         for (var i = 0; i < (int)n; i++)
         {
             var rise = start + (i * p);
-            pieces.Add(Held(rise, level, $"rise of pulse {i + 1} at {Time(rise)}"));
-            pieces.Add(Held(rise + w, -level, $"fall of pulse {i + 1} at {Time(rise + w)}"));
+            var (pulse, fall) = ($"pulse {i + 1}", rise + w);
+            var whole = $"{pulse} from {Time(rise)}";
+            pieces.Add(Held(rise, level, $"rise of {pulse} at {Time(rise)}") with { Pulse = whole });
+            pieces.Add(Held(fall, -level, $"fall of {pulse} at {Time(fall)}") with { Pulse = whole });
         }
 
         return pieces.ToImmutable();

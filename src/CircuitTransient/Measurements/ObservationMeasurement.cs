@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Breakdowns;
 using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
 
@@ -8,12 +9,14 @@ namespace CircuitTransient.Measurements;
 /// <summary>Measures an observed quantity: its extremes and what each cause has in them.</summary>
 internal sealed class ObservationMeasurement(
     CurveBuilder curves, WindowTimes times, Infinities infinities, SinceEventBreakdown since,
-    AnalysisOptions options)
+    AnalysisOptions options, CancellationToken cancellation)
 {
     private const int MostStretchesOfACause = 200_000;
 
     private readonly TransientSolution solution = curves.Solution;
     private readonly ObservedExtremes extremes = new(infinities);
+    private readonly ModeSplit modes = new(curves.Solution);
+    private readonly SwitchingEffects switchings = new(curves, cancellation);
 
     /// <summary>Measures one observation; its waveforms are still to be filled in from the curves, the
     /// total's first.</summary>
@@ -45,7 +48,13 @@ internal sealed class ObservationMeasurement(
             new ContributionsAfter(Since(observation.Quantity, max), Since(observation.Quantity, min)),
             [.. options.At.Select(t => Sample(t, total, shares))],
             [],
-            []);
+            [])
+        {
+            BySwitching = options.By == Breakdown.Switching
+                ? switchings.Of(observation.Quantity, open.From, max, min)
+                : null,
+            ByMode = modes.Of(observation.Quantity, max, min),
+        };
         return (result, [total, .. shares.Select(s => s.Curve)]);
     }
 

@@ -32,7 +32,8 @@ public static class ResultBuilder
         var intervals = new IntervalMeasurement(solution, energy);
         var events = new EventMeasurement(curves);
         var observing = new ObservationMeasurement(
-            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options);
+            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options,
+            cancellation);
         var reading = new FigureMeasurement(curves, times, infinities);
         var judging = new RequirementMeasurement(curves, times, infinities, reading);
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
@@ -79,6 +80,7 @@ public static class ResultBuilder
             new CautionFinder(curves, parts, intervalResults, eventResults).Find())
         {
             IsAfterAsked = options.After is not null,
+            By = options.By,
             FollowedWaves = new(() => FollowedWaves.Of(curves, times, waves.Times)),
             OtherWaves = new(() => OtherBreakdowns.Of(solution, waves, cancellation)),
         };
@@ -86,7 +88,10 @@ public static class ResultBuilder
 
     private static CauseName NameOf(Circuit circuit, Cause cause) => cause switch
     {
-        { IsEdge: true } => new(cause.Name, CauseKind.Edge, circuit.Parts[cause.Source].Name),
+        { IsEdge: true } => new(cause.Name, CauseKind.Edge, circuit.Parts[cause.Source].Name)
+        {
+            Pulse = cause.Pulse is { } pulse ? $"{circuit.Parts[cause.Source].Name} {pulse}" : null,
+        },
         { Source: >= 0 } => new(cause.Name, CauseKind.Source),
         _ => new(cause.Name, CauseKind.Stored),
     };

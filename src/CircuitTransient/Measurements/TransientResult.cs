@@ -54,6 +54,9 @@ public sealed record TransientResult(
     /// <summary>Those waveforms, evaluated when somebody looks.</summary>
     internal Lazy<ImmutableArray<OtherBreakdown>> OtherWaves { get; init; } = new([]);
 
+    /// <summary>What peaks were asked to be broken down by.</summary>
+    public Breakdown By { get; init; }
+
     /// <summary>Whether the breakdown since an event was asked for, so that it stands in the results
     /// document.</summary>
     public bool IsAfterAsked { get; init; }
@@ -81,7 +84,12 @@ public enum CauseKind
 
 /// <summary>A cause by the user's own name.</summary>
 /// <param name="Of">The source a piece belongs to; null for the others.</param>
-public sealed record CauseName(string Name, CauseKind Kind, string? Of = null);
+public sealed record CauseName(string Name, CauseKind Kind, string? Of = null)
+{
+    /// <summary>The pulse whose rise or fall it is, <c>Feed pulse 3 from 131 µs</c>; null for what is
+    /// none.</summary>
+    public string? Pulse { get; init; }
+}
 
 /// <summary>A value and when it stood; the value is null where it is infinite or undetermined.</summary>
 public sealed record TimedValue(double? Value, double Time);
@@ -156,6 +164,12 @@ public sealed record ObservationResult(
     ImmutableArray<double> Total,
     ImmutableArray<ImmutableArray<double>> ByCause)
 {
+    /// <summary>What each switching has done to the extremes; null where not asked for.</summary>
+    public SwitchingBreakdowns? BySwitching { get; init; }
+
+    /// <summary>The extremes by causes and modes; null where the quantity is undetermined.</summary>
+    public ModeBreakdowns? ByMode { get; init; }
+
     /// <summary>The extreme of greater magnitude.</summary>
     public Extreme Greatest => Math.Abs(Min.Value ?? 0) > Math.Abs(Max.Value ?? 0) ? Min : Max;
 }

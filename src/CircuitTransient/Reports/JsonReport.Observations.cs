@@ -8,7 +8,7 @@ namespace CircuitTransient.Reports;
 public static partial class JsonReport
 {
     private static void WriteObservation(
-        Utf8JsonWriter json, ObservationResult observation, bool isAfterAsked)
+        Utf8JsonWriter json, TransientResult result, ObservationResult observation)
     {
         json.WriteStartObject();
         json.WriteString("name", observation.Name);
@@ -20,7 +20,7 @@ public static partial class JsonReport
         WriteExtreme(json, "min", observation.Min);
         json.WriteBoolean("endsRising", observation.EndsRising);
         WriteArray(json, "contributions", observation.Contributions, WriteContribution);
-        if (isAfterAsked && observation.After is { } after)
+        if (result.IsAfterAsked && observation.After is { } after)
         {
             json.WriteStartObject("contributionsAfter");
             WriteSinceEvent(json, "atMax", after.AtMax);
@@ -28,6 +28,7 @@ public static partial class JsonReport
             json.WriteEndObject();
         }
 
+        WriteBreakdowns(json, result, observation);
         WriteArray(json, "samples", observation.Samples, (to, at) => WriteSample(to, observation, at));
         json.WriteEndObject();
     }

@@ -71,7 +71,7 @@ public static partial class JsonReport
         WriteArray(json, "intervals", result.Intervals, WriteInterval);
         WriteArray(json, "events", result.Events, WriteEvent);
         WriteArray(json, "observations", result.Observations,
-            (to, observation) => WriteObservation(to, observation, result.IsAfterAsked));
+            (to, observation) => WriteObservation(to, result, observation));
         WriteArray(json, "figures", result.Figures, WriteFigure);
         WriteArray(json, "requirements", result.Requirements, WriteRequirement);
         WriteParts(json, result);
@@ -106,6 +106,7 @@ public static partial class JsonReport
             _ => throw new System.Diagnostics.UnreachableException($"no word for {cause.Kind}"),
         });
         WriteOptional(json, "of", cause.Of);
+        WriteOptional(json, "pulse", cause.Pulse);
         json.WriteEndObject();
     }
 

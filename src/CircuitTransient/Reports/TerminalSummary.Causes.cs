@@ -20,6 +20,16 @@ public static partial class TerminalSummary
 
         var unit = worst.Observation.Unit;
         text.Heading(HeadingOf(result, worst));
+        if (PeakWords.Of(result, worst.Observation, worst.AtMax) is { } words)
+        {
+            text.Paragraph(words);
+        }
+
+        if (PhaseWords.Of(result, worst.Observation, worst.AtMax) is { } phase)
+        {
+            text.Paragraph(phase);
+        }
+
         text.Paragraph($"From the start: {FromStart(result)}, carried through every switching");
         WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without",
             result.Causes.Any(cause => cause.Kind == CauseKind.Edge) ? "others together" : "smaller ones");
@@ -28,6 +38,8 @@ public static partial class TerminalSummary
             text.Paragraph($"instants of the full answer kept for {decided}", hanging: 2);
         }
 
+        WriteSwitchings(text, result, worst);
+        WriteModes(text, result, worst);
         if (worst.Since is not null)
         {
             WriteSince(text, result, worst);

@@ -17,6 +17,9 @@ public sealed record Cause(
 {
     /// <summary>Whether it is one edge of its source.</summary>
     public bool IsEdge { get; init; }
+
+    /// <summary>The pulse whose rise or fall it is; null for what is none.</summary>
+    public string? Pulse { get; init; }
 }
 
 /// <summary>The lists of causes.</summary>
@@ -79,6 +82,7 @@ public static class CauseList
                 isPlain ? cause.Name : $"{cause.Name} {e.Label}", cause.Source, e.Pieces, -1, 0)
             {
                 IsEdge = true,
+                Pulse = e.Pieces[0].Pulse,
             }));
         }
 

@@ -52,8 +52,8 @@ public sealed class Segment
     /// <summary>The total's index where a cause's is asked for.</summary>
     public const int Total = -1;
 
-    /// <summary>The coefficients of a linear quantity, of one cause or of the total; null where it is
-    /// undetermined.</summary>
+    /// <summary>The coefficients of a linear quantity, of one cause or of the total; null
+    /// where it is undetermined.</summary>
     public double[]? Coefficients(Measurand measurand, int cause = Total)
     {
         lock (coefficients)
@@ -83,6 +83,13 @@ public sealed class Segment
             return rounded;
         }
     }
+
+    /// <summary>The coefficients with every pole's own motion in its own mode, however near a source is to
+    /// it; null where the quantity is undetermined.</summary>
+    internal DoubleDoubleComplex[][]? CoefficientsByMode(Measurand measurand, int cause) =>
+        Model.Project(measurand) is { Output.IsDetermined: true } projection
+            ? modes.Coefficients(projection, cause == Total ? total : motions[cause], isBeside: false)
+            : null;
 
     /// <summary>A linear quantity at the segment's end in double-double.</summary>
     internal DoubleDouble ValueAtEnd(Measurand measurand, int cause)
@@ -117,13 +124,13 @@ public sealed class Segment
         return sum;
     }
 
-    /// <summary>The impulse of a voltage (V·s) or current (C) at the segment's start; zero where there is
-    /// none.</summary>
+    /// <summary>The impulse of a voltage (V·s) or current (C) at the segment's start;
+    /// zero where there is none.</summary>
     public double ImpulseAtStart(Measurand measurand, int cause = Total) =>
         (cause == Total ? onset : onsetOf(cause)).ImpulseIn(Model.Project(measurand).Output);
 
-    /// <summary>Whether a voltage or current carries a derivative of an impulse at the segment's start: it is
-    /// infinite both ways.</summary>
+    /// <summary>Whether a voltage or current carries a derivative of an impulse at the segment's
+    /// start: it is infinite both ways.</summary>
     public bool IsBeyondImpulseAtStart(Measurand measurand) =>
         onset.IsBeyondImpulseIn(Model.Project(measurand).Output);
 

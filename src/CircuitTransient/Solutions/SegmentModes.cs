@@ -47,7 +47,11 @@ internal sealed class SegmentModes
 
     /// <summary>The coefficients of an output, mode by mode; the output is the real part of the sum of
     /// products.</summary>
-    public DoubleDoubleComplex[][] Coefficients(Projection projection, Motion motion)
+    /// <param name="projection">The output.</param>
+    /// <param name="motion">Whose motion.</param>
+    /// <param name="isBeside">Whether a pole with a source joined to it is written beside the source's
+    /// exponential, which keeps the last digit; else it stands in its own mode.</param>
+    public DoubleDoubleComplex[][] Coefficients(Projection projection, Motion motion, bool isBeside = true)
     {
         var sums = new DoubleDoubleComplex[Basis.Modes.Length][];
         for (var m = 0; m < sums.Length; m++)
@@ -62,7 +66,7 @@ internal sealed class SegmentModes
 
         for (var b = 0; b < model.Blocks.Length; b++)
         {
-            AddBlock(sums, b, projection.Rows[b], motion);
+            AddBlock(sums, b, projection.Rows[b], motion, isBeside);
         }
 
         return sums;
@@ -103,7 +107,8 @@ internal sealed class SegmentModes
         AddForcedTerms(sums, forcing.Exponent, a, s);
     }
 
-    private void AddBlock(DoubleDoubleComplex[][] sums, int b, DoubleDoubleComplex[] row, Motion motion)
+    private void AddBlock(
+        DoubleDoubleComplex[][] sums, int b, DoubleDoubleComplex[] row, Motion motion, bool isBeside)
     {
         var block = model.Blocks[b];
         var mode = Basis.Modes[b];
@@ -132,7 +137,8 @@ internal sealed class SegmentModes
             AddForcedTerms(sums, forcing.Exponent, a * factor, s * factor);
         }
 
-        if (block.Size == 1 && motion.Forcings.FirstOrDefault(f => IsJoined(b, f, out _)) is { } kept)
+        if (isBeside && block.Size == 1
+            && motion.Forcings.FirstOrDefault(f => IsJoined(b, f, out _)) is { } kept)
         {
             AddBesideForced(sums, b, kept, row[0] * free[0] * factor);
             return;

@@ -26,8 +26,8 @@ public class WavePieceTests
     public void A_pulse_is_a_rise_and_a_delayed_fall() =>
         Assert.Equal(
             [
-                new WavePiece(0.001, Forever, 5, 0, 0, 0, 0, "rise at 1 ms"),
-                new WavePiece(0.003, Forever, -5, 0, 0, 0, 0, "fall at 3 ms"),
+                new WavePiece(0.001, Forever, 5, 0, 0, 0, 0, "rise at 1 ms") { Pulse = "pulse from 1 ms" },
+                new WavePiece(0.003, Forever, -5, 0, 0, 0, 0, "fall at 3 ms") { Pulse = "pulse from 1 ms" },
             ],
             Checking.Wave("rectangular pulse of 5 V from 1 ms to 3 ms"));
 

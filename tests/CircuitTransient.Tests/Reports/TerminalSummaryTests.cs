@@ -50,6 +50,8 @@ public class TerminalSummaryTests
 
         What makes the 129.3 A of current through Ls (at 1.802 s, 1.500 ms after Kmain closes; the
         requirement exceeded most)
+          Supply makes 150.2 A of it, Cbus initial charge takes 20.88 A off. Cbus initial charge holds it
+          down: without it the highest value would be 150.2 A.
           From the start: the sources, and what was stored at t = 0, carried through every switching
                                                                          its own peak  max without
             Supply               +150.2 A  116.1 %        ██████   150.2 A at 1.802 s     -20.88 A

@@ -28,11 +28,12 @@ public class EdgeCauseTests
         var fall = SolvedText.Of(Ring + "source Feed at a : step of -10 V at 60 µs", at);
         var cut = SolvedText.By(Breakdown.Edge, Ring + feed, at);
 
+        const string pulseName = "Feed pulse from 20 µs";
         Assert.Equal(
             [
                 new CauseName("C initial charge", CauseKind.Stored),
-                new CauseName("Feed rise at 20 µs", CauseKind.Edge, "Feed"),
-                new CauseName("Feed fall at 60 µs", CauseKind.Edge, "Feed"),
+                new CauseName("Feed rise at 20 µs", CauseKind.Edge, "Feed") { Pulse = pulseName },
+                new CauseName("Feed fall at 60 µs", CauseKind.Edge, "Feed") { Pulse = pulseName },
             ],
             cut.Result.Causes);
         for (var k = 0; k < at.Length; k++)

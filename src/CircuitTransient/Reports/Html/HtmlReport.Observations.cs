@@ -47,7 +47,8 @@ public static partial class HtmlReport
             <div class="plots" data-observation="{index}"></div>
             {still}<figcaption class="aside">{Caption(observed)}</figcaption>
             </figure>
-            {CauseTable(result, observed, atMax)}{SinceTable(observed, atMax)}</section>
+            {CauseTable(result, observed, atMax)}{Breakdowns(result, observed, atMax)}
+            {SinceTable(observed, atMax)}</section>
 
             """);
     }
@@ -116,6 +117,7 @@ public static partial class HtmlReport
             .OrderByDescending(i => Math.Abs(At(i) ?? 0))
             .Select(i => CauseRow(observed, i, atMax, total, largest));
         return Markup.Of($"""
+            {Words(result, observed, atMax)}
             <div class="wide"><table class="causes" data-at="{(atMax ? "max" : "min")}">
             <caption>What made the {word} value, <span
             class="peak">{Number(total, observed.Unit)}{When(result, extreme)}</span></caption>

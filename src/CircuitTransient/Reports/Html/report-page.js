@@ -55,7 +55,7 @@ function tools(view) {
     button("Whole study", () => main().whole()));
   const { others } = waves[view.observation.wave];
   if (others.length > 0) {
-    const list = make("select", { class: "breakdown", "aria-label": "How its contributions are counted" },
+    const list = make("select", { class: "counted", "aria-label": "How its contributions are counted" },
       make("option", { value: "" }, "Causes from the start"),
       ...others.map((o) => make("option", { value: o.breakdown }, `Causes ${data.breakdowns[o.breakdown].words.slice(0, 80)}`)));
     list.addEventListener("change", () => {
@@ -139,7 +139,8 @@ function followTable(view, scales) {
   } else {
     restore(caption);
   }
-  view.section.querySelectorAll(".since, .cancelling").forEach((e) => { e.hidden = isOther || !isSolved(scales); });
+  view.section.querySelectorAll(".since, .cancelling, .breakdown").forEach((e) => { e.hidden = isOther || !isSolved(scales); });
+  view.section.querySelectorAll(".words").forEach((e) => { e.hidden = !isSolved(scales); });
   table.parentElement.hidden = isOther;
   view.other?.remove();
   if (isOther) {

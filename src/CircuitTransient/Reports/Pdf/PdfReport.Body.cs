@@ -92,7 +92,7 @@ public static partial class PdfReport
             .OrderByDescending(s => Math.Abs(s.Value ?? 0)).ToArray();
         var largest = Math.Max(shares.Max(s => Math.Abs(s.Value ?? 0)), double.Epsilon);
         var count = Math.Max(shares.Length, SinceOf(observed, atMax)?.Parts.Length ?? 0);
-        pages.SideBySide(AddShares, () => AddSince(pages, observed, atMax, total), 58 + (22 * count));
+        pages.SideBySide(AddShares, () => AddSince(pages, observed, atMax, total), 100 + (22 * count));
 
         void AddShares()
         {
@@ -101,6 +101,11 @@ public static partial class PdfReport
                     + When(result, extreme),
                 9.5,
                 isStrong: true);
+            if (PeakWords.Of(result, observed, atMax) is { } words)
+            {
+                pages.Paragraph(words, 9.5);
+            }
+
             PdfTable.Add(
                 pages,
                 [

@@ -29,6 +29,17 @@ public sealed class CurveBuilder
         tables = other.tables;
     }
 
+    /// <summary>Tabulates the segments of a solution, sharing what another has of them.</summary>
+    public CurveBuilder(TransientSolution solution, CurveBuilder other)
+    {
+        this.solution = solution;
+        impulses = new ImpulseWork(solution);
+        tables = [.. solution.Segments.Select((s, i) =>
+            i < other.tables.Length && ReferenceEquals(other.tables[i].Segment, s)
+                ? other.tables[i]
+                : new SegmentTable(s))];
+    }
+
     /// <summary>The solution.</summary>
     public TransientSolution Solution => solution;
 

@@ -68,7 +68,7 @@ public class BreakdownMenuTests(Browser browser)
         await using var opened = await browser.Open(SolvedPages.Page(Steps()));
         var section = await opened.Observation(0);
         var before = await section.InnerTextAsync();
-        await section.Locator("select.breakdown").FocusAsync();
+        await section.Locator("select.counted").FocusAsync();
         await opened.Page.Keyboard.PressAsync("ArrowDown");
         Assert.Contains("by edge", await opened.Text("#observation-0 .other caption"));
 
@@ -117,7 +117,7 @@ public class BreakdownMenuTests(Browser browser)
     private static async Task<(string Name, double Then)[]> Rows(OpenPage opened, int index, string choice)
     {
         var section = await opened.Observation(index);
-        await section.Locator("select.breakdown")
+        await section.Locator("select.counted")
             .SelectOptionAsync(new SelectOptionValue { Label = choice });
         var rows = await section.Locator(".other tbody tr").AllAsync();
         var read = new List<(string, double)>();

@@ -1,0 +1,43 @@
+using System.Collections.Immutable;
+using System.Numerics;
+
+namespace CircuitTransient.Measurements.Breakdowns;
+
+/// <summary>An extreme's value taken apart by causes and by the modes of the network in the interval it
+/// stands in: natural ones, and the sources' own courses.</summary>
+/// <param name="Modes">The modes that have a part in it, the largest first.</param>
+/// <param name="Causes">What each cause has in each of them.</param>
+/// <param name="Joint">What is left where the quantity is a product: it belongs to no single
+/// cause and mode; zero for others.</param>
+/// <param name="StoredEnergy">Joules in all fields at the instant.</param>
+/// <param name="JointEnergy">Joules of them that no mode holds alone.</param>
+public sealed record ModeBreakdown(
+    ImmutableArray<ModeResult> Modes, ImmutableArray<CauseByMode> Causes, double Joint, double StoredEnergy,
+    double JointEnergy);
+
+/// <summary>A mode by name, with what it has in the value.</summary>
+/// <param name="Name">By natural frequency or time constant and the parts that hold its energy; a
+/// forced one by its source's course.</param>
+/// <param name="IsForced">Whether it is a course of the sources rather than a motion of the network.</param>
+/// <param name="IsDriven">Whether a natural one holds the part of the sources that follows it so closely,
+/// over the interval, that the two cannot be told apart.</param>
+/// <param name="Rate">Its pole or the exponent of the sources, in 1/s and rad/s; of poles
+/// that are not parted their mean.</param>
+/// <param name="Multiplicity">How many poles (or pairs) it holds; 1 for a forced one.</param>
+/// <param name="Parts">The parts that hold its energy, with their shares; empty for a forced one.</param>
+/// <param name="Energy">Joules it would hold at the instant if it were alone.</param>
+/// <param name="Value">What all causes have in it, in the quantity's unit.</param>
+public sealed record ModeResult(
+    string Name, bool IsForced, bool IsDriven, Complex Rate, int Multiplicity,
+    ImmutableArray<PartShare> Parts, double Energy, double Value);
+
+/// <summary>A part's share of a mode's stored energy, a fraction; the mutual part of coupled
+/// coils is halved between them.</summary>
+public sealed record PartShare(string Part, double Share);
+
+/// <summary>What one cause has in each mode, in the order of <see cref="ModeBreakdown.Modes"/>.</summary>
+public sealed record CauseByMode(string Cause, ImmutableArray<double> Values);
+
+/// <summary>The breakdowns by mode at both extremes; null where an extreme is infinite or open, or the
+/// quantity is an integral over time.</summary>
+public sealed record ModeBreakdowns(ModeBreakdown? AtMax, ModeBreakdown? AtMin);

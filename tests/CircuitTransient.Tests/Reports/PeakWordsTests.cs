@@ -1,0 +1,154 @@
+using CircuitTransient.Measurements;
+using CircuitTransient.Reports;
+using CircuitTransient.Tests.OutsideChecks;
+using CircuitTransient.Tests.Project;
+using CircuitTransient.Text;
+
+namespace CircuitTransient.Tests.Reports;
+
+/// <summary>The sentences on what made a peak. 150.4 A and 20.9 A, 26.36 V, 25.07 kHz, 38.6 Hz, 356.8 Hz,
+/// 4.197 kHz and 43.12 MHz were computed twice by other methods.</summary>
+public class PeakWordsTests
+{
+    [Theory]
+    [InlineData("bullwheel-bus",
+        "Supply makes 150.4 A of it, Cbus initial charge takes 20.91 A off; it swings at 158.5 Hz (Ls "
+        + "with Cbus). What drives it is the 26.36 V between Supply (932.0 V) and Cbus charge when Kmain "
+        + "closes (905.6 V): each volt less between them takes 4.911 A off.")]
+    [InlineData("cabin-dock",
+        "Charger alone makes it; 42.73 V of it swing at 25.07 kHz (Lcab with Cin). Nothing stored adds "
+        + "to it; without that swing 53.33 V would be left at that instant.")]
+    [InlineData("caliper-deck",
+        "Lcoil initial current makes 993.3 V of it and Coilsupply 211.3 V; 950.1 V of it swing at "
+        + "38.58 Hz (Lcoil with Csn). Of what was stored, change Lcoil initial current first: without it "
+        + "the highest value would be 275.5 V.")]
+    [InlineData("bank-gallery",
+        "Grid makes 10.09 kV of it and CB initial charge 1.928 kV; 4.068 kV of it swing at 4.197 kHz "
+        + "(CB with LA and LB) and 2.906 kV at 356.8 Hz (Ls with CA and CB). Of what was stored, change "
+        + "CB initial charge first: without it the highest value would be 10.09 kV.")]
+    [InlineData("intake-bay",
+        "Ll initial current makes 97.2 % of it; it swings at 1.101 kHz (Cl with Ll). Of what was "
+        + "stored, change Ll initial current first: without it the lowest value would be -8.632 kV.")]
+    [InlineData("load-pin",
+        "Edge alone makes it; 10.38 V of it swing at 43.12 MHz (Llp with Cn). Nothing stored adds to "
+        + "it; without that swing 11.99 V would be left at that instant.")]
+    public void The_worst_peak_of_each_plant_is_explained(string plant, string words)
+    {
+        var result = SolvedText.Of(Repository.Read($"netlists/{plant}.cause")).Result;
+        var worst = WorstObservation.Find(result)!;
+
+        Assert.Equal(words, PeakWords.Of(result, worst.Observation, worst.AtMax));
+        Assert.Null(PhaseWords.Of(result, worst.Observation, worst.AtMax));
+    }
+
+    [Fact]
+    public void A_charge_that_holds_a_peak_down_is_said_to()
+    {
+        var result = SolvedText.Of(
+            """
+            source Feed at a : step of 100 V
+            resistor R from a to b : 10 Ω
+            capacitor C at b : 1 mF, charged to 40 V
+            observe current through R
+            until 30 ms
+            """).Result;
+
+        Assert.Equal(
+            "Feed makes 10.00 A of it, C initial charge takes 4.000 A off. C initial charge holds it "
+            + "down: without it the highest value would be 10.00 A.",
+            PeakWords.Of(result, result.Observations[0], atMax: true));
+    }
+
+    [Fact]
+    public void A_product_has_a_part_that_no_cause_has_alone()
+    {
+        var result = SolvedText.Of(
+            """
+            source Feed at a : step of 100 V
+            resistor R from a to b : 10 Ω
+            capacitor C at b : 1 mF, charged to -40 V
+            observe power in R
+            until 30 ms
+            """).Result;
+
+        // (10 A + 4 A)² · 10 Ω = 1000 W + 160 W + 2 · 10 A · 4 A · 10 Ω
+        Assert.Equal(
+            "Feed makes 1.000 kW of it, what no cause has alone 800.0 W and C initial charge 160.0 W. "
+            + "Of what was stored, change C initial charge first: without it the highest value would be "
+            + "1.000 kW.",
+            PeakWords.Of(result, result.Observations[0], atMax: true));
+    }
+
+    [Fact]
+    public void Nothing_is_said_of_what_is_nothing_or_infinite()
+    {
+        var result = SolvedText.Of(
+            """
+            source Feed at a : step of 1 V at 1 ms
+            capacitor C at a : 1 mF
+            resistor R at a : 10 Ω
+            observe current through C
+            observe voltage of a
+            until 3 ms
+            """).Result;
+
+        Assert.Null(PeakWords.Of(result, result.Observations[0], atMax: true));
+        Assert.Null(PeakWords.Of(result, result.Observations[1], atMax: false));
+    }
+
+    [Fact]
+    public void Of_a_train_the_pulses_in_phase_with_the_ring_are_told()
+    {
+        // The ring's period is 62.8 µs: pulses come in phase, and the later the less they have decayed.
+        var result = SolvedText.By(
+            Breakdown.Edge,
+            """
+            source Feed at a : pulse train of 10 V width 10 µs every 63 µs from 5 µs count 200
+            resistor R from a to b : 3 Ω
+            inductor L from b to c : 100 µH
+            capacitor C at c : 1 µF
+            observe voltage of c
+            until 400 µs
+            """).Result;
+
+        Assert.Equal(
+            $"In phase with it swing Feed pulse 6 from 320 µs (+{Ring(320e-6)}), Feed pulse 5 from 257 µs "
+            + $"(+{Ring(257e-6)}) and Feed pulse 4 from 194 µs (+{Ring(194e-6)}); none against it.",
+            PhaseWords.Of(result, result.Observations[0], atMax: true));
+        Assert.StartsWith(
+            $"Feed pulse 6 from 320 µs makes {Ring(320e-6)} of it, ",
+            PeakWords.Of(result, result.Observations[0], atMax: true));
+
+        // what a step of ±10 V swings by: ∓10 V e^(−σt) (cos ωt + σ/ω sin ωt), of the rise and of the fall
+        string Ring(double from)
+        {
+            var time = result.Observations[0].Max.Time;
+            var sigma = 3 / (2 * 100e-6);
+            var omega = Math.Sqrt((1 / (100e-6 * 1e-6)) - (sigma * sigma));
+            return EngineeringNumber.Format(Step(time - from - 10e-6) - Step(time - from), "V");
+
+            double Step(double t) =>
+                10 * Math.Exp(-sigma * t) * (Math.Cos(omega * t) + (sigma / omega * Math.Sin(omega * t)));
+        }
+    }
+
+    [Fact]
+    public void An_edge_that_comes_against_the_ring_is_told()
+    {
+        // half a period of the undamped ring, 2π √(L C) / 2 = 31.4 µs, after the first step
+        var result = SolvedText.By(
+            Breakdown.Edge,
+            """
+            source Feed at a : step of 10 V at 0 s + step of 3 V at 62.83 µs + step of 3 V at 94.25 µs
+            resistor R from a to b : 0.1 Ω
+            inductor L from b to c : 100 µH
+            capacitor C at c : 1 µF
+            observe voltage of c from 150 µs to 170 µs
+            until 170 µs
+            """).Result;
+        var words = PhaseWords.Of(result, result.Observations[0], atMax: true);
+
+        Assert.StartsWith("In phase with it swing Feed step at 0 s (+9.", words);
+        Assert.Contains("; against it Feed step at 94.25 µs (-2.", words);
+    }
+}
