@@ -1,3 +1,4 @@
+using System.Text.RegularExpressions;
 using CircuitTransient.Reports;
 
 namespace CircuitTransient.Tests.Reports;
@@ -29,4 +30,16 @@ public class PlotStyleTests
             Enumerable.Range(0, 6).Select(i => PlotStyle.Cause(i).Colour)
                 .Select(colour => ColourSight.Contrast(colour, PlotStyle.Paper)),
             contrast => Assert.InRange(contrast, 3.5, 21));
+
+    [Fact]
+    public void Every_word_in_a_picture_reads_at_the_ratio_for_text()
+    {
+        var svg = WaveformPlot.Svg(SampleResults.Inrush());
+        var inks = Regex.Matches(svg, "<text[^>]* fill=\"(#[0-9a-f]{6})\"", RegexOptions.None, TimeSpan.FromSeconds(1))
+            .Select(m => m.Groups[1].Value).Distinct().ToArray();
+
+        Assert.NotEmpty(inks);
+        // WCAG 2.2, success criterion 1.4.3 (from memory)
+        Assert.All(inks, ink => Assert.InRange(ColourSight.Contrast(ink, PlotStyle.Paper), 4.5, 21));
+    }
 }

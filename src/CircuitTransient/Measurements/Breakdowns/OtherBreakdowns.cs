@@ -106,8 +106,10 @@ internal sealed class OtherBreakdowns
             yield break;
         }
 
+        // At the start itself only a settled one holds what sources have made.
         var starts = Enumerable.Range(0, solution.Intervals.Length).Where(i =>
-            solution.Intervals[i].From > 0 && !solution.Intervals[i].StartsWith.IsEmpty);
+            !solution.Intervals[i].StartsWith.IsEmpty
+            && (solution.Intervals[i].From > 0 || solution.Circuit.StartsSettled));
         foreach (var interval in starts.Take(MostSwitchings))
         {
             yield return HasRoom(sources.Length + stores.Length) ? Since(interval, sources) : null;
@@ -119,14 +121,13 @@ internal sealed class OtherBreakdowns
     private OtherBreakdown Since(int interval, Cause[] sources)
     {
         var switching = SwitchingWords.Of(solution, interval);
-        var before = solution.Segments[solution.Intervals[interval].FirstSegment - 1];
+        var held = Held(interval);
         var causes = sources.Select(s => (
             Cause: s, Weights: ImmutableArray.Create((Owner(s.Source, -1), 1.0)))).ToList();
-        foreach (var store in solution.Layout.Stores)
+        foreach (var (k, store) in solution.Layout.Stores.Index())
         {
-            var held = solution.Layout.Held(store);
             var weights = Enumerable.Range(0, solution.Causes.Length)
-                .Select(c => (Cause: c, Weight: (double)before.ValueAtEnd(held, c)))
+                .Select(c => (Cause: c, Weight: (double)held[c][k]))
                 .Where(w => w.Weight != 0).ToImmutableArray();
             if (!weights.IsEmpty)
             {
@@ -144,6 +145,20 @@ internal sealed class OtherBreakdowns
                     .Select((wave, n) => new BreakdownTerm(own[n].Name, causes[n].Weights, wave))
                     .ToImmutableArray()
                 : [])]);
+    }
+
+    /// <summary>What every cause holds in every store just before an interval.</summary>
+    private DoubleDouble[][] Held(int interval)
+    {
+        var layout = solution.Layout;
+        if (solution.Intervals[interval].FirstSegment is > 0 and var first)
+        {
+            return [.. solution.Causes.Select((_, c) => layout.Stores
+                .Select(s => solution.Segments[first - 1].ValueAtEnd(layout.Held(s), c)).ToArray())];
+        }
+
+        var model = new IntervalModels(layout).For(new Timeline(solution.Circuit).IsClosed);
+        return SettledStart.Find(model!, layout, solution.Causes).Stored;
     }
 
     private bool HasRoom(int more)

@@ -32,6 +32,7 @@ function timeScale(window, axis, left, right) {
   return {
     left, right, from: window.from, to: window.to,
     place: (t) => left + (f(t) - a) / (b - a) * (right - left),
+    timeAt: (x) => back(a + (x - left) / (right - left) * (b - a)),
     time: (x) => back(a + (Math.min(right, Math.max(left, x)) - left) / (right - left) * (b - a)),
   };
 }
@@ -62,7 +63,14 @@ function pathOf(times, values, scale, place) {
       [pen, column] = [false, -1e9];
       continue;
     }
-    const next = Math.floor(scale.place(times[i]) * 2);
+    const here = scale.place(times[i]);
+    if (times === allTimes && i > start && Number.isFinite(values[i - 1]) && here - scale.place(times[i - 1]) > 6) {
+      flush();
+      column = -1e9;
+      const first = Math.max(scale.place(times[i - 1]) + 3, scale.left - 6);
+      for (let x = first; x < Math.min(here - 1, scale.right + 6); x += 3) put(x, place(between(times, values, i, scale.timeAt(x))));
+    }
+    const next = Math.floor(here * 2);
     if (next !== column) {
       flush();
       [column, entry] = [next, { first: i, least: i, greatest: i, last: i }];

@@ -81,7 +81,33 @@ function valueAt(times, values, time) {
   if (i >= times.length) return values[times.length - 1];
   if (times[i] === time) return values[i + 1 < times.length && times[i + 1] === time ? i + 1 : i];
   if (i === 0) return values[0];
-  return values[i - 1] + (time - times[i - 1]) / (times[i] - times[i - 1]) * (values[i] - values[i - 1]);
+  return times === allTimes ? between(times, values, i, time)
+    : values[i - 1] + (time - times[i - 1]) / (times[i] - times[i - 1]) * (values[i] - values[i - 1]);
+}
+
+// The slope at a sample, by the parabola through it and two others on its side of any jump; the samples of a
+// wave that was not thinned are as dense as it moves, and a corner stands twice.
+function slopeAt(times, values, i, side) {
+  const has = (k) => k >= 0 && k < times.length && Number.isFinite(values[k]);
+  const rise = (a, b) => (has(a) && has(b) && times[b] > times[a] ? (values[b] - values[a]) / (times[b] - times[a]) : undefined);
+  const [left, right] = [rise(i - 1, i), rise(i, i + 1)];
+  if (left !== undefined && right !== undefined) {
+    const [a, b] = [times[i] - times[i - 1], times[i + 1] - times[i]];
+    return (left * b + right * a) / (a + b);
+  }
+  const [near, far] = side > 0 ? [right, rise(i + 1, i + 2)] : [left, rise(i - 2, i - 1)];
+  if (near === undefined || far === undefined) return near ?? 0;
+  const [a, b] = side > 0 ? [times[i + 1] - times[i], times[i + 2] - times[i + 1]] : [times[i] - times[i - 1], times[i - 1] - times[i - 2]];
+  return near + (near - far) * a / (a + b);
+}
+
+// The cubic between samples i - 1 and i.
+function between(times, values, i, time) {
+  const h = times[i] - times[i - 1];
+  const u = (time - times[i - 1]) / h;
+  const [v0, v1] = [values[i - 1], values[i]];
+  const [s0, s1] = [h * slopeAt(times, values, i - 1, 1), h * slopeAt(times, values, i, -1)];
+  return v0 + u * (s0 + u * (3 * (v1 - v0) - 2 * s0 - s1 + u * (2 * (v0 - v1) + s0 + s1)));
 }
 
 // The greatest (sign 1) or least (sign -1) value in a closed window: among the samples, then on the parabola

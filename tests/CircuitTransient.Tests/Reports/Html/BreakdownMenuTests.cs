@@ -36,7 +36,7 @@ public class BreakdownMenuTests(Browser browser)
     }
 
     [Theory]
-    [InlineData(0, 1)]
+    [InlineData(0.5, 1)]
     [InlineData(1.5, 0.4)]
     public async Task They_follow_the_scales_of_the_causes_they_come_from(double feed, double charge)
     {
@@ -132,8 +132,8 @@ public class BreakdownMenuTests(Browser browser)
 
     private static TransientResult Steps(
         double feed = 1, double charge = 1, Breakdown by = Breakdown.Origin) => SolvedPages.Solve($"""
-        source    Feed at a : step of {100 * feed} V at 1 ms
-                              + rectangular pulse of {40 * feed} V from 3 ms to 5 ms
+        source    Feed at a : step of {100 * feed} V at 1 ms +
+                              rectangular pulse of {40 * feed} V from 3 ms to 5 ms
         source    Aid at d : sine of 40 V at 200 Hz
         resistor  R1 from a to b : 3 Ω
         inductor  L1 from b to c : 10 mH
