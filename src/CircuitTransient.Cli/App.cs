@@ -50,6 +50,7 @@ public static class App
         {
             new CheckCommand(streams, cancellation),
             new SolveCommand(streams, cancellation),
+            new SpreadCommand(streams, cancellation),
             new ScanCommand(streams, cancellation),
             new FormulaCommand(streams, cancellation),
             new CompareCommand(streams, cancellation),

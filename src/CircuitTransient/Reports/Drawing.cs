@@ -20,6 +20,9 @@ public sealed record LineShape(double X1, double Y1, double X2, double Y2, Strok
 /// <summary>A filled rectangle.</summary>
 public sealed record RectangleShape(double X, double Y, double Width, double Height, string Fill) : Shape;
 
+/// <summary>A filled area within a closed line through points.</summary>
+public sealed record AreaShape(ImmutableArray<PlotPoint> Points, string Fill) : Shape;
+
 /// <summary>A filled disc with a rim of the paper's colour.</summary>
 public sealed record DiscShape(double X, double Y, double Radius, string Fill) : Shape;
 

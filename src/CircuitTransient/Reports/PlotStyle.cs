@@ -27,6 +27,15 @@ public static class PlotStyle
     /// <summary>Limits of requirements.</summary>
     public const string Limit = "#7a3f1d";
 
+    /// <summary>The ground of a panel.</summary>
+    public const string Ground = "#fbfcfc";
+
+    /// <summary>The band of most of many waveforms, and the bars of a histogram.</summary>
+    public const string Band = "#a9c1ce";
+
+    /// <summary>The band of all of them.</summary>
+    public const string WideBand = "#dfe8ed";
+
     /// <summary>The total.</summary>
     public static Stroke Total { get; } = new(Ink, 2);
 

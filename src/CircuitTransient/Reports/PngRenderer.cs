@@ -45,6 +45,9 @@ public static class PngRenderer
                 case RectangleShape box:
                     DrawRectangle(canvas, box);
                     break;
+                case AreaShape area:
+                    DrawArea(canvas, area);
+                    break;
                 case DiscShape disc:
                     DrawDisc(canvas, disc);
                     break;
@@ -59,16 +62,28 @@ public static class PngRenderer
 
     private static void DrawPolyline(SKCanvas canvas, PolylineShape line)
     {
+        using var path = Path(line.Points);
+        using var paint = Paint(line.Stroke);
+        canvas.DrawPath(path, paint);
+    }
+
+    private static void DrawArea(SKCanvas canvas, AreaShape area)
+    {
+        using var path = Path(area.Points);
+        using var fill = Fill(area.Fill);
+        canvas.DrawPath(path, fill); // a fill closes the line
+    }
+
+    private static SKPath Path(ImmutableArray<PlotPoint> points)
+    {
         using var builder = new SKPathBuilder();
-        builder.MoveTo((float)line.Points[0].X, (float)line.Points[0].Y);
-        foreach (var point in line.Points.AsSpan()[1..])
+        builder.MoveTo((float)points[0].X, (float)points[0].Y);
+        foreach (var point in points.AsSpan()[1..])
         {
             builder.LineTo((float)point.X, (float)point.Y);
         }
 
-        using var path = builder.Detach();
-        using var paint = Paint(line.Stroke);
-        canvas.DrawPath(path, paint);
+        return builder.Detach();
     }
 
     private static void DrawLine(SKCanvas canvas, LineShape line)

@@ -15,7 +15,8 @@ internal static class SampleCurve
         ImmutableArray<double> times, ImmutableArray<double> values, double from, double to)
     {
         var step = (to - from) / FinestStep;
-        var (refined, curve) = (ImmutableArray.CreateBuilder<double>(), ImmutableArray.CreateBuilder<double>());
+        var refined = ImmutableArray.CreateBuilder<double>();
+        var curve = ImmutableArray.CreateBuilder<double>();
         for (var i = 0; i < times.Length; i++)
         {
             refined.Add(times[i]);

@@ -37,6 +37,7 @@ public static class SvgRenderer
             RectangleShape box =>
                 $"<rect x=\"{Number(box.X)}\" y=\"{Number(box.Y)}\" width=\"{Number(box.Width)}\""
                     + $" height=\"{Number(box.Height)}\" fill=\"{box.Fill}\"/>",
+            AreaShape area => $"<polygon points=\"{Points(area.Points)}\" fill=\"{area.Fill}\"/>",
             DiscShape disc =>
                 $"<circle cx=\"{Number(disc.X)}\" cy=\"{Number(disc.Y)}\" r=\"{Number(disc.Radius)}\""
                     + $" fill=\"{disc.Fill}\" stroke=\"{PlotStyle.Paper}\"/>",

@@ -7,6 +7,12 @@ namespace CircuitTransient.Solutions;
 /// <summary>Where a study ends whose file does not say.</summary>
 internal static class StudyEnd
 {
+    /// <summary>How many periods of an undamped mode are looked at.</summary>
+    public const double Periods = 20;
+
+    /// <summary>How many time constants of a decaying mode are looked at: to 0.1 %.</summary>
+    public static readonly double TimeConstants = Math.Log(1000);
+
     /// <summary>When the slowest decaying mode of the last interval has fallen to 0.1 %, or after 20 periods
     /// of the slowest undamped one, counted from the last event or source corner; null where neither
     /// exists.</summary>
@@ -20,14 +26,13 @@ internal static class StudyEnd
             for (var i = 0; i < block.Size; i++)
             {
                 var (re, im) = (block.T[i, i].Re.Hi, Math.Abs(block.T[i, i].Im.Hi));
-                // a loss below rounding of the parts' values
-                var isUndamped = im > 0 && Math.Abs(re) < 1e-12 * im;
+                var isUndamped = IsUndamped(re, im);
                 if (!isUndamped && re >= 0)
                 {
                     continue;
                 }
 
-                var time = isUndamped ? 20 * 2 * Math.PI / im : Math.Log(1000) / -re;
+                var time = isUndamped ? Periods * 2 * Math.PI / im : TimeConstants / -re;
                 if (time > longest)
                 {
                     longest = time;
@@ -41,6 +46,9 @@ internal static class StudyEnd
         return longest > 0 ? (start + longest, reason) : null;
     }
 
+    /// <summary>Whether a mode loses no more than rounding of the parts' values.</summary>
+    public static bool IsUndamped(double re, double im) => im > 0 && Math.Abs(re) < 1e-12 * im;
+
     /// <summary>What is said where nothing decays.</summary>
     public static Diagnostic Unknown(Circuit circuit) => Diagnostic.Error(
         circuit.Source,
@@ -50,7 +58,8 @@ internal static class StudyEnd
 
     private static string Format(double value, string unit) => EngineeringNumber.Format(value, unit);
 
-    private static double LastCorner(Circuit circuit)
+    /// <summary>The last instant at which a source has a corner, in seconds.</summary>
+    public static double LastCorner(Circuit circuit)
     {
         double last = 0;
         foreach (var part in circuit.Parts)

@@ -1,4 +1,3 @@
-using System.Text.RegularExpressions;
 using CircuitTransient.Reports;
 
 namespace CircuitTransient.Tests.Reports;
@@ -35,8 +34,9 @@ public class PlotStyleTests
     public void Every_word_in_a_picture_reads_at_the_ratio_for_text()
     {
         var svg = WaveformPlot.Svg(SampleResults.Inrush());
-        var inks = Regex.Matches(svg, "<text[^>]* fill=\"(#[0-9a-f]{6})\"", RegexOptions.None, TimeSpan.FromSeconds(1))
-            .Select(m => m.Groups[1].Value).Distinct().ToArray();
+        var inks = svg.Split("<text ").Skip(1)
+            .Select(text => text[(text.IndexOf("fill=\"", StringComparison.Ordinal) + 6)..][..7])
+            .Distinct().ToArray();
 
         Assert.NotEmpty(inks);
         // WCAG 2.2, success criterion 1.4.3 (from memory)

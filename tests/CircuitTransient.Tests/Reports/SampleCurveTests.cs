@@ -13,8 +13,8 @@ public sealed class SampleCurveTests
             SampleCurve.Refined(times, [.. times.Select(t => Math.Sin(double.Tau * t))], 0, 2);
 
         Assert.InRange(refined.Length, 150, 400);
-        // Straight lines would be off by (2π/16)²/8 = 0.019.
-        Assert.All(refined.Zip(values), p => Assert.Equal(Math.Sin(double.Tau * p.First), p.Second, 3e-3));
+        // Straight lines would be off by (2π/16)²/8 = 0.019; most is lost where the samples end.
+        Assert.All(refined.Zip(values), p => Assert.Equal(Math.Sin(double.Tau * p.First), p.Second, 4e-3));
     }
 
     [Fact]

@@ -109,7 +109,7 @@ public static partial class HtmlReport
     }
 
     // A picture whose colours follow the reader's setting; each colour of the style has a variable.
-    private static Markup Themed(Drawing drawing)
+    internal static Markup Themed(Drawing drawing)
     {
         var svg = SvgRenderer.Write(drawing);
         foreach (var (colour, variable) in Variables)
@@ -128,7 +128,10 @@ public static partial class HtmlReport
         (PlotStyle.Grid, "grid"),
         (PlotStyle.Axis, "axis"),
         (PlotStyle.Limit, "limit"),
-        ("#fbfcfc", "ground"),
+        (PlotStyle.Accent, "accent"),
+        (PlotStyle.Band, "band"),
+        (PlotStyle.WideBand, "band-wide"),
+        (PlotStyle.Ground, "ground"),
         .. Enumerable.Range(0, 6).Select(i => (PlotStyle.Cause(i).Colour, $"cause-{i}")),
     ];
 }

@@ -84,9 +84,9 @@ public static partial class HtmlReport
     }
 
     // A number and its unit stay in one line.
-    private static string Whole(string words) => NumberBeforeUnit().Replace(words, "$1\u00a0");
+    private static string Whole(string words) => NumberBeforeUnit().Replace(words, "\u00a0");
 
-    [GeneratedRegex(@"(\d) (?=[fpnµmkMGT]?[VAWJCsH])", RegexOptions.None, 1000)]
+    [GeneratedRegex(@"(?<=\d) (?=[fpnµmkMGT]?[VAWJCsH])", RegexOptions.ExplicitCapture, 1000)]
     private static partial Regex NumberBeforeUnit();
 
     private static Markup Caption(ObservationResult observed)

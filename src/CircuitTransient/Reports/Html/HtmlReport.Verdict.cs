@@ -135,7 +135,8 @@ public static partial class HtmlReport
         var advice = warning.Diagnostic?.Advice is { } words
             ? Markup.Of($"<br><span class=\"aside\">{words}</span>")
             : default;
-        return Markup.Of($"<li>{(warning.Line > 0 ? $"line {warning.Line}: " : "")}{warning.Text}{advice}</li>\n");
+        var place = warning.Line > 0 ? $"line {warning.Line}: " : "";
+        return Markup.Of($"<li>{place}{warning.Text}{advice}</li>\n");
     }
 
     private static Markup Cautions(TransientResult result) => result.Cautions.IsEmpty

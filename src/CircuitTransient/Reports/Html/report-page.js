@@ -157,7 +157,7 @@ function followTable(view, scales) {
   const wave = waves[view.observation.wave];
   const sign = side === "max" ? 1 : -1;
   const { value: total, time, index } = extremes[side];
-  const then = parts.map((values) => (index >= 0 ? values[index] : valueAt(times, values, time)));
+  const then = parts.map((values) => (times[index] === time ? values[index] : valueAt(times, values, time)));
   const largest = Math.max(...then.map(Math.abs), 1e-300);
   rewrite(table.querySelector(".peak"), `${engineering(total, unit)} at ${engineering(time, "s")}, as scaled`);
   for (const row of table.querySelectorAll("[data-cause]")) {
@@ -189,7 +189,7 @@ function otherTable(view) {
   const isEarlier = extremes[side].time < since;
   const { value, time, index } = isEarlier ? extremeOf(times, total, from, to, side === "max" ? 1 : -1) : extremes[side];
   const word = side === "max" ? "highest" : "lowest";
-  const then = parts.map((values) => (index >= 0 ? values[index] : valueAt(times, values, time)));
+  const then = parts.map((values) => (times[index] === time ? values[index] : valueAt(times, values, time)));
   const largest = Math.max(...then.map(Math.abs), 1e-300);
   const number = (...content) => make("td", { class: "number" }, ...content);
   const rows = names.map((name, c) => c).sort((a, b) => Math.abs(then[b]) - Math.abs(then[a])).map((c) => {

@@ -115,7 +115,7 @@ internal sealed class ExtremeSlopes(SlopeMarch march)
         }
 
         var end = isFrom ? moves.From : moves.To;
-        return end is null ? (true, null, "it stands at the study's end, which is not stated")
+        return end is null ? (true, null, "it stands at the study's end, which modes that coincide decide")
             : start is { } other && other != end
                 ? (true, null, "it stands where an end of its window meets a switching or a corner")
                 : (true, end, null);

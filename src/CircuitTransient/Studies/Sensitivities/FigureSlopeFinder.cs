@@ -157,6 +157,6 @@ internal sealed class FigureSlopeFinder
         return new MovingWindow(open.From, open.To, v => (
             open.From <= 0 || window.From is null ? 0 : march.Shifts[v].Of(window.From) ?? 0,
             window.To is { } to && open.To < solution.Until ? march.Shifts[v].Of(to)
-                : solution.Circuit.Until is null ? null : 0));
+                : march.EndShift(v)));
     }
 }

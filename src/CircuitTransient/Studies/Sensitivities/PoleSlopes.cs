@@ -36,7 +36,8 @@ internal static class PoleSlopes
         return [.. poles.OrderBy(p => p.Pole.Magnitude)];
     }
 
-    private static Complex Slope(IntervalModel model, int b, Variation variation)
+    /// <summary>The derivative of a block's mean pole.</summary>
+    public static Complex Slope(IntervalModel model, int b, Variation variation)
     {
         DoubleDoubleComplex sum = default;
         foreach (var term in variation.Terms(model.IsClosed))

@@ -81,16 +81,31 @@ internal sealed class RatingSlopes(
         return FigureSlopes.Gathered(
             ((AccumulatedPiece)curve.Pieces[^1]).AtEnd, null, [.. Values.Select(Slope)]);
 
-        PointSlope Slope(int v) =>
-            march.Refusals[v] is { } refusal ? PointSlope.Unknown(refusal.Reason)
-            : whole.Moves(v).To is null
-                ? PointSlope.Unknown("it is taken to the study's end, which is not stated")
-            : extremes.ValueSlope(quantity, whole, last, solution.Segments[last].Length, v) is { } slope
-                ? new PointSlope(slope, null, null)
-                : PointSlope.Unknown("an impulse passes what is integrated");
+        PointSlope Slope(int v)
+        {
+            var length = solution.Segments[last].Length;
+            return march.Refusals[v] is { } refusal ? PointSlope.Unknown(refusal.Reason)
+                : whole.Moves(v).To is not { } end
+                    ? PointSlope.Unknown("it is taken to the study's end, which modes that coincide decide")
+                : extremes.ValueSlope(quantity, whole, last, length, v) is { } slope
+                    ? new PointSlope(
+                        slope + (end * extremes.Rates(quantity, last, length)!.Value.Slope), null, null)
+                    : PointSlope.Unknown("an impulse passes what is integrated");
+        }
     }
 
-    private FigureSlopes? Mean(int part, MovingWindow whole) =>
-        solution.Circuit.Parts[part] is Capacitor or Inductor
-            ? null : Integral(new EnergyIn(part), whole)?.Times(1 / solution.Until, 0);
+    private FigureSlopes? Mean(int part, MovingWindow whole)
+    {
+        if (solution.Circuit.Parts[part] is Capacitor or Inductor
+            || Integral(new EnergyIn(part), whole) is not { } energy)
+        {
+            return null;
+        }
+
+        var mean = energy.Times(1 / solution.Until, 0);
+        return mean with
+        {
+            Slopes = [.. mean.Slopes.Select((s, v) => s - (mean.Value * whole.Moves(v).To / solution.Until))],
+        };
+    }
 }

@@ -75,22 +75,18 @@ internal sealed class SettledSlopes
     private bool FeelsWhatIsHeld(Measurand quantity)
     {
         var projection = model.Project(quantity);
-        for (var b = 0; b < model.Blocks.Length; b++)
+        double size = 0;
+        foreach (var block in model.Blocks)
         {
-            double size = 0;
             for (var i = 0; i < model.Form.Order; i++)
             {
-                size += Math.Abs(projection.Output.State[i].Hi) * model.Blocks[b].V[i, 0].Magnitude;
-            }
-
-            if (SettledStart.IsAtPole(model.Blocks[b], default)
-                && Array.Exists(projection.Rows[b], x => x.Magnitude > Rounding * size))
-            {
-                return true;
+                size = Math.Max(size, Math.Abs(projection.Output.State[i].Hi) * block.V[i, 0].Magnitude);
             }
         }
 
-        return false;
+        return Enumerable.Range(0, model.Blocks.Length).Any(b =>
+            SettledStart.IsAtPole(model.Blocks[b], default)
+            && Array.Exists(projection.Rows[b], x => x.Magnitude > Rounding * size));
     }
 
     private static void Add(
@@ -107,32 +103,40 @@ internal sealed class SettledSlopes
         }
     }
 
-    /// <summary>The multiple of e^(μ t) in a quantity's forced response.</summary>
+    /// <summary>The multiple of e^(μ t) in a quantity's forced response; a sum that cancels, such as a
+    /// capacitor's current at rest, is zero.</summary>
     private DoubleDoubleComplex Phasor(Measurand quantity, DoubleDoubleComplex exponent)
     {
         var projection = model.Project(quantity);
         DoubleDoubleComplex sum = default;
+        double size = 0;
         foreach (var forcing in sources.GetValueOrDefault(exponent) ?? [])
         {
             var power = forcing.Amplitude;
             foreach (var direct in projection.Output.Direct)
             {
-                sum += power * direct[forcing.Input];
+                Add(power * direct[forcing.Input]);
                 power *= exponent;
             }
 
             for (var b = 0; b < model.Blocks.Length; b++)
             {
-                sum += Dot(projection.Rows[b], b, forcing, exponent, isMirrored: false);
+                Add(Dot(projection.Rows[b], b, forcing, exponent, isMirrored: false));
                 if (!model.Blocks[b].IsReal)
                 {
                     // the block that this one stands for: all of it conjugated
-                    sum += Dot(projection.Rows[b], b, forcing, exponent, isMirrored: true);
+                    Add(Dot(projection.Rows[b], b, forcing, exponent, isMirrored: true));
                 }
             }
         }
 
-        return sum;
+        return sum.Magnitude <= Rounding * size ? default : sum;
+
+        void Add(DoubleDoubleComplex term)
+        {
+            sum += term;
+            size += term.Magnitude;
+        }
     }
 
     private DoubleDoubleComplex Dot(

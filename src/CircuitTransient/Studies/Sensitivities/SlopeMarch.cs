@@ -63,6 +63,10 @@ internal sealed class SlopeMarch
     /// <summary>How instants go with each value.</summary>
     public IReadOnlyList<EventShifts> Shifts => shifts;
 
+    /// <summary>How the study's end goes with a value; null where that is not known.</summary>
+    public double? EndShift(int value) => StudyEndSlope.Of(
+        solution, ModelOf(solution.Intervals.Length - 1), variations[value], starts[^1][value]);
+
     /// <summary>An interval's network with its laws disturbed.</summary>
     public IntervalModel ModelOf(int interval) => models.For(solution.Intervals[interval].Model)!;
 
@@ -87,6 +91,7 @@ internal sealed class SlopeMarch
             for (var v = 0; v < variations.Length; v++)
             {
                 MoveStart(q, v);
+                RefuseWhatIsOpen(model, interval.From, v);
             }
 
             foreach (var segment in interval.Momentary)
@@ -149,6 +154,17 @@ internal sealed class SlopeMarch
         }
     }
 
+    /// <summary>A value that multiplies what the equations leave open decides it, and there is no
+    /// derivative.</summary>
+    private void RefuseWhatIsOpen(IntervalModel model, double from, int v)
+    {
+        if (refusals[v] is null && variations[v].Terms(model.IsClosed).Any(t =>
+            !model.Project(t.Quantity is RateOfChange rate ? rate.Of : t.Quantity).Output.IsDetermined))
+        {
+            refusals[v] = new Refusal(from, "it multiplies a current that the equations leave open");
+        }
+    }
+
     /// <summary>Moves the start of an interval with a value: what is stored there goes on at its rate just
     /// before.</summary>
     private void MoveStart(int q, int v)
@@ -191,12 +207,17 @@ internal sealed class SlopeMarch
         }
 
         var length = solution.Segments[segment].Length;
-        return QuantityFactors.OfAny(solution.Circuit, quantity) is not { IsIntegrated: true }
-            && reading.At(quantity, segment, length) is { } nominal
-            && Math.Abs(nominal.Slope) * length > tangent * Math.Abs(nominal.Value)
-            && nominal.Slope != 0
-            && reading.SlopeOf(quantity, segment, length, v) is { } derivative
-            ? -derivative.Value / nominal.Slope : null;
+        if (reading.At(quantity, segment, length) is not { } nominal
+            || reading.ValueSlope(quantity, segment, length, v) is not { } derivative)
+        {
+            return null;
+        }
+
+        // Of an integral, its integrand was read.
+        var isIntegral = QuantityFactors.OfAny(solution.Circuit, quantity) is { IsIntegrated: true };
+        var rate = isIntegral ? nominal.Value : nominal.Slope;
+        return rate == 0 || (!isIntegral && Math.Abs(rate) * length <= tangent * Math.Abs(nominal.Value))
+            ? null : -derivative / rate;
     }
 
     /// <summary>An interval that ends as it begins: what is stored just after it began goes on.</summary>

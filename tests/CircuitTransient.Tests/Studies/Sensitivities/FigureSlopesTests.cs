@@ -65,6 +65,27 @@ public class FigureSlopesTests
         derived.AssertFiguresAgree(["max of it", "min of it"], step: 1e-4, rounding: 1e-8);
     }
 
+    [Fact]
+    public void A_study_without_a_stated_end_ends_with_its_slowest_mode_and_that_moves()
+    {
+        var derived = Derived.Of(
+            """
+            source    Feed at in : step of 10 V at 1 ms
+            resistor  R1 from in to a : 1 kΩ, rated 10 mW, rated 50 µJ
+            capacitor C1 from a to b : 1 µF, charged to 2 V, rated 20 V
+            resistor  R2 from b to ground : 100 Ω, rated 5 mA, rated 1e-3 A²s
+            switch    K1 from a to c : open, closes when I²t through R2 rises above 20e-9 A²s
+            resistor  R3 from c to ground : 4 kΩ
+            observe voltage across C1
+            observe current through R1
+            require settling of voltage of a to 8 V within 5 % by 6 ms
+            """,
+            [.. new[] { "R1", "C1", "R2", "R3", "Feed" }.Select(n => new PartValueTarget(n))]);
+        Assert.Single(derived.Analysis.Solution.Occurrences);
+        derived.AssertFiguresAgree(
+            [.. StudyFigures.Of(derived.Varied.Circuit).Select(f => f.Name)], step: 1e-4, rounding: 1e-8);
+    }
+
     private static Derived BullwheelBus() =>
         Derived.Of(Repository.Read("netlists/bullwheel-bus.cause"), new EveryTolerance());
 }

@@ -1,0 +1,69 @@
+using System.Collections.Immutable;
+using CircuitTransient.Studies.Spreads;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>The picture of a study of tolerances: what each value does to the worst figure, how the draws are
+/// spread, and the band of every observed waveform.</summary>
+public static class SpreadPlot
+{
+    private const int MostBands = 12;
+    private const double PixelsPerPoint = 2;
+    private const double Left = 76;
+    private const double Margin = 20;
+
+    /// <summary>The picture as SVG.</summary>
+    public static string Svg(SpreadResult spread)
+    {
+        using var fonts = new PlotFonts();
+        return SvgRenderer.Write(Draw(spread, fonts));
+    }
+
+    /// <summary>The picture as PNG, two pixels a point.</summary>
+    public static byte[] Png(SpreadResult spread)
+    {
+        using var fonts = new PlotFonts();
+        return PngRenderer.Write(Draw(spread, fonts), fonts, PixelsPerPoint);
+    }
+
+    /// <summary>The picture before it is rendered.</summary>
+    public static Drawing Draw(SpreadResult spread, PlotFonts fonts)
+    {
+        var circuit = spread.Varied.Circuit;
+        var shapes = ImmutableArray.CreateBuilder<Shape>();
+        var width = PlotPanel.Width - Left - Margin;
+        var title = $"{circuit.Title ?? circuit.Source.Name}: every tolerance";
+        shapes.Add(new TextShape(
+            Left, 34, fonts.Fitted(title, 19, width, isStrong: true), 19, PlotStyle.Ink, IsStrong: true));
+        shapes.Add(new TextShape(
+            Left, 55, fonts.Fitted(SpreadWords.Verdict(spread), 12.5, width), 12.5, PlotStyle.Grey));
+        var y = 76.0;
+        if (spread.Worst is { } worst)
+        {
+            y += EffectPanel.Draw(spread, worst, fonts, shapes, y);
+            y += HistogramPanel.Draw(spread, worst.Figure, fonts, shapes, y);
+        }
+
+        foreach (var band in (spread.Draws?.Envelopes ?? []).Take(MostBands))
+        {
+            var observation = spread.Nominal.Observations.FirstOrDefault(o =>
+                o.Name == circuit.Observations[band.Observation].Name);
+            if (observation is null)
+            {
+                continue;
+            }
+
+            var whole = PlotWindow.Whole(spread.Nominal, observation);
+            y += BandPanel.Draw(spread, band, observation, whole, fonts, shapes, y);
+            if (PlotWindow.Enlarged(spread.Nominal, observation) is { } enlarged)
+            {
+                y += BandPanel.Draw(spread, band, observation, enlarged, fonts, shapes, y);
+            }
+        }
+
+        var foot = $"{circuit.Source.Name}, SHA-256 {circuit.Source.Sha256[..12]}… · a linear model, a "
+            + "calculation aid";
+        shapes.Add(new TextShape(Left, y + 10, fonts.Fitted(foot, 11, width), 11, PlotStyle.Grey));
+        return new Drawing(PlotPanel.Width, y + 26, $"Tolerances of {title}", shapes.ToImmutable());
+    }
+}

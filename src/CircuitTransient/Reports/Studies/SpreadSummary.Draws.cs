@@ -1,0 +1,101 @@
+using System.Collections.Immutable;
+using CircuitTransient.Studies;
+using CircuitTransient.Studies.Spreads;
+using CircuitTransient.Studies.Statistics;
+using static CircuitTransient.Reports.ReportWords;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <content>Random draws, and what drives the spread.</content>
+public static partial class SpreadSummary
+{
+    private const int MostDrivers = 12;
+    private const int BarCells = 24;
+
+    private static void WriteDraws(SummaryText text, SpreadResult spread)
+    {
+        if (spread.Draws is not { } draws)
+        {
+            return;
+        }
+
+        text.Heading($"{draws.Draws:N0} random draws (seed {spread.Options.Seed}), apart from the extremes");
+        var judged = spread.Figures.Zip(draws.Figures)
+            .Where(pair => pair.Second.Holding is not null).ToArray();
+        if (judged.Length > 0)
+        {
+            var rows = judged.Take(MostFigures).Select(pair =>
+                Probability(SpreadWords.Name(spread, pair.First.Figure), pair.Second.Holding!));
+            text.Table(
+                [Prose, Right, Right, Left], rows.Prepend(["", "held in", "probability", "95 % sure"]));
+            text.Blank();
+        }
+
+        var observed = Enumerable.Range(0, spread.Figures.Length)
+            .Where(i => spread.Figures[i].Holds is null && draws.Figures[i].Count > 0).ToArray();
+        if (observed.Length > 0)
+        {
+            var figures = observed.Take(MostFigures)
+                .Select(i => Row(spread.Figures[i].Figure, draws.Figures[i]));
+            text.Table(
+                [Prose, Right, Right, Right, Right, Right],
+                figures.Prepend(["", "mean", "deviation", "5 %", "median", "95 %"]));
+        }
+
+        if (draws.Unsolvable > 0)
+        {
+            var numbers = string.Join(", ", draws.UnsolvableDraws.Take(5));
+            text.Paragraph(
+                $"{SpreadWords.Count(draws.Unsolvable, "draw")} had no unique solution (the first: "
+                + $"{numbers}); nothing is counted as holding in them", hanging: 2);
+        }
+    }
+
+    /// <summary>How often it held, with the exact interval of that probability.</summary>
+    private static ImmutableArray<string> Probability(string name, HoldingEstimate held) =>
+    [
+        name, $"{held.Holding:N0}", SpreadWords.Share(held.Fraction),
+        $"{SpreadWords.Share(held.Interval.Low)} to {SpreadWords.Share(held.Interval.High)}",
+    ];
+
+    private static ImmutableArray<string> Row(StudyFigure figure, FigureStatistics statistics) =>
+    [
+        figure.Name,
+        Number(statistics.Mean, figure.Unit),
+        Number(statistics.Deviation, figure.Unit),
+        Number(Quantile(statistics, 0.05), figure.Unit),
+        Number(Quantile(statistics, 0.5), figure.Unit),
+        Number(Quantile(statistics, 0.95), figure.Unit),
+    ];
+
+    private static double? Quantile(FigureStatistics statistics, double fraction) =>
+        statistics.Quantiles.FirstOrDefault(q => q.Fraction == fraction)?.Value;
+
+    private static void WriteDrivers(SummaryText text, SpreadResult spread)
+    {
+        if (spread.Worst is not { } worst)
+        {
+            return;
+        }
+
+        var range = spread.Figures[worst.Figure];
+        var order = Enumerable.Range(0, range.Alone.Length)
+            .OrderByDescending(i => Width(range.Alone[i]))
+            .Take(MostDrivers).ToArray();
+        text.Heading($"What each value alone does to it, from one end of its tolerance to the other");
+        var largest = order.Max(i => Width(range.Alone[i]));
+        text.Table(
+            [Prose, Right, Right, Left],
+            order.Select(i => ImmutableArray.Create(
+                spread.Varied.Values[i].Name,
+                SpreadWords.Quantity(spread, range, range.Alone[i].AtLowest),
+                $"to {SpreadWords.Quantity(spread, range, range.Alone[i].AtHighest)}",
+                largest > 0
+                    ? new string('█', (int)Math.Round(BarCells * Width(range.Alone[i]) / largest)) : "")));
+    }
+
+    private static double Width(ValueEffect effect) =>
+        double.IsFinite(effect.AtHighest - effect.AtLowest)
+            ? Math.Abs(effect.AtHighest - effect.AtLowest)
+            : 0;
+}

@@ -1,0 +1,138 @@
+using System.Collections.Immutable;
+using CircuitTransient.Studies;
+using CircuitTransient.Studies.Spreads;
+using static CircuitTransient.Reports.ReportWords;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>What the tolerances come to, for the terminal: verdict first, within 100 columns.</summary>
+public static partial class SpreadSummary
+{
+    private const int MostFigures = 40;
+
+    private static readonly TextColumn Left = new();
+    private static readonly TextColumn Right = new(IsRight: true);
+    private static readonly TextColumn Prose = new(IsProse: true);
+
+    /// <summary>The summary.</summary>
+    /// <param name="spread">What was found.</param>
+    /// <param name="files">Where the files are; may be empty.</param>
+    /// <param name="colour">Whether headings and bars carry terminal attributes.</param>
+    public static string Write(SpreadResult spread, ImmutableArray<string> files, bool colour = false)
+    {
+        var text = new SummaryText(colour);
+        var source = spread.Varied.Circuit.Source.Name;
+        text.Title(spread.Varied.Circuit.Title is { } title ? $"{title} ({source})" : source);
+        text.Paragraph(SpreadWords.Verdict(spread), indent: 0);
+        WriteJudged(text, spread);
+        WriteWorst(text, spread);
+        WriteExtremes(text, spread);
+        WriteDraws(text, spread);
+        WriteDrivers(text, spread);
+        if (!files.IsEmpty)
+        {
+            text.Heading("Files");
+            foreach (var file in files)
+            {
+                text.Paragraph(file);
+            }
+        }
+
+        text.Blank();
+        text.Paragraph(TerminalSummary.Closing, indent: 0);
+        return text.ToString();
+    }
+
+    private static void WriteJudged(SummaryText text, SpreadResult spread)
+    {
+        var judged = spread.Figures.Where(f => f.Holds is not null)
+            .OrderBy(f => f.Holds)
+            .ThenByDescending(f => f.Figure.Kind == StudyFigureKind.RatingUsed ? f.Worst?.Value : 0)
+            .ToArray();
+        if (judged.Length == 0)
+        {
+            return;
+        }
+
+        text.Blank();
+        text.Table(
+            [Left, Prose, Right, Right],
+            judged.Take(MostFigures).Select(f => ImmutableArray.Create(
+                SpreadWords.Held(spread, f),
+                SpreadWords.Name(spread, f.Figure) + Because(spread, f.Figure),
+                $"nominal {SpreadWords.Reached(spread, f.Figure, f.Nominal, f.NominalReached)}",
+                f.Worst is { } worst
+                    ? $"worst {SpreadWords.Reached(spread, f.Figure, worst.Value, worst.Reached)}" : "")));
+    }
+
+    private static string Because(SpreadResult spread, StudyFigure figure) =>
+        figure.Kind == StudyFigureKind.Margin
+            && spread.Varied.Circuit.Requirements[figure.Index] is { } requirement
+            ? (requirement.Reason is { } reason ? $" because \"{reason}\"" : "")
+                + $" (line {spread.Varied.Circuit.Source.LineOf(requirement.Span.Start)})"
+            : "";
+
+    private static void WriteWorst(SummaryText text, SpreadResult spread)
+    {
+        if (spread.Worst is { } worst)
+        {
+            var range = spread.Figures[worst.Figure];
+            var used = double.IsFinite(worst.Used) ? $", {Percent(worst.Used)} of what is allowed" : "";
+            var reached = SpreadWords.Reached(spread, range.Figure, worst.Point.Value, worst.Point.Reached);
+            var when = worst.Point.Time is { } time ? $" {InstantWords.At(worst.Result, time)}" : "";
+            text.Heading("The worst case");
+            text.Paragraph($"{SpreadWords.Name(spread, range.Figure)}: {reached}{when}{used}", hanging: 2);
+            text.Paragraph($"at {SpreadWords.Point(spread, worst.Point)}", hanging: 2);
+            foreach (var words in SpreadWords.Why(spread, range, worst.Point))
+            {
+                text.Paragraph(words, hanging: 2);
+            }
+        }
+
+        text.Blank();
+        text.Paragraph(SpreadWords.Account(spread), indent: 0, hanging: 2);
+        if (spread.Account.UnsolvablePoint is { } point)
+        {
+            var values = spread.Varied.Values.Select((v, i) => $"{v.Name} {Number(point[i], v.Unit)}");
+            text.Paragraph($"No unique solution at {string.Join(", ", values)}.", indent: 0, hanging: 2);
+        }
+    }
+
+    private static void WriteExtremes(SummaryText text, SpreadResult spread)
+    {
+        var observed = spread.Figures.RemoveAll(f => f.Holds is not null);
+        if (observed.IsEmpty)
+        {
+            return;
+        }
+
+        text.Heading("Hard extremes of what is observed");
+        var rows = observed.Take(MostFigures).Select(f => ImmutableArray.Create(
+            f.Figure.Name,
+            Value(f, f.Nominal),
+            Value(f, f.Least?.Value),
+            Value(f, f.Greatest?.Value),
+            f.Worst is { IsCorner: false } ? "between the corners" : ""));
+        text.Table(
+            [Prose, Right, Right, Right, Left], rows.Prepend(["", "nominal", "least", "greatest", ""]));
+        if (observed.Length > MostFigures)
+        {
+            text.Paragraph($"and {observed.Length - MostFigures} more, in spread.json");
+        }
+
+        foreach (var (range, jump) in spread.Figures
+            .SelectMany(f => new[] { f.Least, f.Greatest }.Where(p => p is not null)
+                .SelectMany(p => p!.Jumps
+                    .Where(j => j.IsOfValue || (p == f.Worst && f.Holds is not null))
+                    .Select(j => (f, j))))
+            .Where(pair => spread.Worst is null || pair.f != spread.Figures[spread.Worst.Figure]))
+        {
+            text.Paragraph(
+                $"{SpreadWords.Name(spread, range.Figure)}: {SpreadWords.Jump(range.Figure, jump)}",
+                hanging: 2);
+        }
+    }
+
+    private static string Value(FigureRange range, double? value) =>
+        value is { } number && double.IsFinite(number) ? Number(number, range.Figure.Unit) : "none";
+}

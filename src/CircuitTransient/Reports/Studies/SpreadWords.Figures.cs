@@ -1,0 +1,162 @@
+using CircuitTransient.Circuits;
+using CircuitTransient.Studies;
+using CircuitTransient.Studies.Spreads;
+using static CircuitTransient.Reports.ReportWords;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <content>Single figures, and what drives them.</content>
+internal static partial class SpreadWords
+{
+    /// <summary>What a judged quantity reaches; a figure's own value in its unit.</summary>
+    public static string Reached(SpreadResult spread, StudyFigure figure, double? value, double? reached)
+    {
+        switch (figure.Kind)
+        {
+            case StudyFigureKind.Margin when value is { } margin && double.IsInfinity(margin):
+                return "no finite value";
+            case StudyFigureKind.Margin:
+                return reached is { } quantity
+                    ? Number(quantity, figure.Unit)
+                    : $"a margin of {Number(value, figure.Unit)}";
+            case StudyFigureKind.RatingUsed:
+                var rating = Rating(spread, figure);
+                return value is { } used ? Number(used * rating.Rated, rating.Unit) : "no finite value";
+            default:
+                return value is { } plain && double.IsFinite(plain) ? Number(plain, figure.Unit) : "none";
+        }
+    }
+
+    /// <summary>What is reached where a figure has some value: of a margin the quantity itself, where its
+    /// bound tells that.</summary>
+    public static string Quantity(SpreadResult spread, FigureRange range, double value)
+    {
+        if (!double.IsFinite(value))
+        {
+            return "without a finite value";
+        }
+
+        if (range.Figure.Kind != StudyFigureKind.Margin)
+        {
+            return Reached(spread, range.Figure, value, null);
+        }
+
+        var sign = Math.Sign(range.Worst?.Reached ?? 1);
+        double? reached = spread.Varied.Circuit.Requirements[range.Figure.Index].Bound switch
+        {
+            Limits { Lower: null, Upper: { } upper } => upper - value,
+            Limits { Lower: { } lower, Upper: null } => lower + value,
+            Limits { Lower: { } lower, Upper: { } upper } when lower == -upper => sign * (upper - value),
+            _ => null,
+        };
+        return reached is { } quantity
+            ? Number(quantity, range.Figure.Unit)
+            : $"{Number(value, range.Figure.Unit)} to spare";
+    }
+
+    /// <summary>The verdict on a judged figure over all tolerances.</summary>
+    public static string Held(SpreadResult spread, FigureRange range)
+    {
+        if (range.Missing > 0 && range.Holds == false && range.Worst is null)
+        {
+            return "broken: nothing to judge";
+        }
+
+        var worst = range.Worst?.Value ?? double.NaN;
+        if (range.Figure.Kind == StudyFigureKind.RatingUsed)
+        {
+            var rating = Rating(spread, range.Figure);
+            return range.Holds == true ? $"held, {Percent(Math.Max(0, worst))} used"
+                : double.IsFinite(worst) && worst > 1
+                ? $"exceeded by {Number((worst - 1) * rating.Rated, rating.Unit)}"
+                : "exceeded without limit";
+        }
+
+        return range.Holds == true ? $"held, {Number(worst, range.Figure.Unit)} to spare"
+            : range.Missing > 0 && !(worst < 0)
+            ? $"broken: nothing to judge at {Count(range.Missing, "point")}"
+            : double.IsInfinity(worst) ? "broken without limit"
+            : $"broken by {Number(-worst, range.Figure.Unit)}";
+    }
+
+    /// <summary>What drives an extreme: the value, the causes, the jumps on the way.</summary>
+    public static IEnumerable<string> Why(SpreadResult spread, FigureRange range, ExtremePoint point)
+    {
+        var unit = range.Figure.Kind == StudyFigureKind.RatingUsed
+            ? Rating(spread, range.Figure).Unit
+            : range.Figure.Unit;
+        if (Driver(spread, range, point) is { } driver)
+        {
+            yield return driver;
+        }
+
+        if (Causes(range, point, unit) is { } causes)
+        {
+            yield return $"by cause, from the start: {causes}";
+        }
+
+        foreach (var jump in point.Jumps)
+        {
+            yield return Jump(range.Figure, jump);
+        }
+    }
+
+    /// <summary>Which value drives an extreme most: the one whose return to nominal changes it
+    /// most.</summary>
+    public static string? Driver(SpreadResult spread, FigureRange range, ExtremePoint point)
+    {
+        var leader = Drivers(point).FirstOrDefault(-1);
+        if (leader < 0 || range.Nominal is null)
+        {
+            return null;
+        }
+
+        var value = spread.Varied.Values[leader];
+        var without = point.Returns[leader];
+        return $"{value.Name} drives it most: with {value.Name} alone back at its nominal "
+            + $"{Number(value.Nominal, value.Unit)} it would be {Quantity(spread, range, without)}";
+    }
+
+    /// <summary>The values that matter, the one whose return changes most first.</summary>
+    public static IEnumerable<int> Drivers(ExtremePoint point) =>
+        Enumerable.Range(0, point.Returns.Length).Where(i => point.Matters[i])
+            .OrderByDescending(i => Step(point, i));
+
+    /// <summary>Which cause dominates an extreme, and which one grows most on the way there; null where it is
+    /// not split.</summary>
+    public static string? Causes(FigureRange range, ExtremePoint point, string unit)
+    {
+        var largest = point.Causes.Where(c => c.Value is not null).MaxBy(c => Math.Abs(c.Value!.Value));
+        if (largest is null || point.Reached is not { } reached)
+        {
+            return null;
+        }
+
+        var words = $"{largest.Cause} makes {Signed(largest.Value, unit)} of the {Number(reached, unit)}";
+        var grown = point.Causes
+            .Select(c => (c.Cause, Growth: c.Value
+                - range.NominalCauses.FirstOrDefault(n => n.Cause == c.Cause)?.Value))
+            .Where(c => c.Growth is not null)
+            .MaxBy(c => Math.Abs(c.Growth!.Value));
+        return range.NominalReached is { } nominal && grown.Growth is { } growth
+            && Math.Abs(reached - nominal) > 1e-9 * Math.Abs(reached)
+            ? $"{words}; of the change of {Signed(reached - nominal, unit)} from nominal, {grown.Cause} "
+                + $"brings {Signed(growth, unit)}"
+            : words;
+    }
+
+    /// <summary>A jump in words.</summary>
+    public static string Jump(StudyFigure figure, FigureJump jump)
+    {
+        var unit = figure.Kind == StudyFigureKind.RatingUsed ? "" : figure.Unit;
+        var where = $"{Percent(jump.Place)} of the way from nominal to that point";
+        return jump.IsOfValue
+            ? $"it jumps from {Number(jump.ValueBefore, unit)} to {Number(jump.ValueAfter, unit)} at {where}"
+            : $"its instant jumps from {Number(jump.TimeBefore, "s")} to {Number(jump.TimeAfter, "s")} at "
+                + $"{where}: another crest takes over";
+    }
+
+    private static double Step(ExtremePoint point, int value) => double.IsFinite(point.Returns[value])
+        ? Math.Abs(point.Value - point.Returns[value])
+        : double.PositiveInfinity;
+}

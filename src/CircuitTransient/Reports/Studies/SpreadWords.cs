@@ -1,0 +1,172 @@
+using System.Collections.Immutable;
+using System.Globalization;
+using CircuitTransient.Measurements;
+using CircuitTransient.Studies;
+using CircuitTransient.Studies.Designs;
+using CircuitTransient.Studies.Spreads;
+using static CircuitTransient.Reports.ReportWords;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>What the tolerances come to in sentences, alike on the terminal and on the page.</summary>
+internal static partial class SpreadWords
+{
+    private const int MostValuesNamed = 16;
+
+    /// <summary>The verdict in one sentence.</summary>
+    public static string Verdict(SpreadResult spread)
+    {
+        if (!spread.Nominal.ChecksHold || spread.Worst?.Result.ChecksHold == false)
+        {
+            return "A self-check failed: do not use these figures.";
+        }
+
+        var required = Judged(spread, StudyFigureKind.Margin);
+        var rated = Judged(spread, StudyFigureKind.RatingUsed);
+        var unsolvable = spread.Account.Unsolvable switch
+        {
+            0 => "",
+            1 => "at one of the points solved the circuit has no unique solution",
+            var count => $"at {count} of the points solved the circuit has no unique solution",
+        };
+        if (required.Length + rated.Length == 0)
+        {
+            return "Nothing was required or rated, so there is no verdict"
+                + (unsolvable.Length > 0 ? $"; {unsolvable}." : ".");
+        }
+
+        string[] said =
+        [
+            .. new[]
+            {
+                Tally(required, "requirement", "is broken", "are broken"),
+                Tally(rated, "rating", "is exceeded", "are exceeded"),
+                unsolvable,
+            }.Where(words => words.Length > 0),
+        ];
+        var opening = spread.AllHold ? "Holds with every tolerance"
+            : !spread.Nominal.AllHold ? "Does not hold even with every value nominal"
+            : "Does not hold with every tolerance";
+        return $"{opening}: {string.Join("; ", said)}.";
+    }
+
+    /// <summary>What was solved, and what of it is proven.</summary>
+    public static string Account(SpreadResult spread)
+    {
+        var account = spread.Account;
+        var values = spread.Varied.Values.Length;
+        var inside = $"{account.InteriorPoints:N0} points between them";
+        var all = account.Corners.ToString("0.#e0", CultureInfo.InvariantCulture);
+        var toleranced = values == 1 ? "the one value that has" : $"the {values} values that have";
+        var corners = account.AllCorners
+            ? $"All {account.Corners:N0} corners of {toleranced} a tolerance were solved"
+            : $"{account.CornerPoints:N0} of the {all} corners of {toleranced} a tolerance were solved, "
+                + "chosen by each value's own effect, at random, and by exchanging single values for as long "
+                + "as that helped";
+        return account.WorseInside == 0
+            ? $"{corners}; {inside} gave nothing worse: searched there, not proven."
+            : $"{corners}, and {inside}; {Count(account.WorseInside, "extreme")} lie"
+                + $"{(account.WorseInside == 1 ? "s" : "")} between the corners: searched there, not proven.";
+    }
+
+    /// <summary>The values of a point that matter: <c>Supply 1.025 kV (+10 %)</c>.</summary>
+    public static string Point(SpreadResult spread, ExtremePoint point)
+    {
+        var values = spread.Varied.Values;
+        var moved = Enumerable.Range(0, values.Length).Where(i => point.Matters[i]).ToArray();
+        if (moved.Length == 0)
+        {
+            return "every value nominal";
+        }
+
+        var rest = values.Length - moved.Length;
+        var named = moved.OrderByDescending(i => Step(point, i)).Take(MostValuesNamed)
+            .Select(i => (Value: values[i], Place: point.Point[i]))
+            .Select(v => $"{v.Value.Name} {Number(v.Place, v.Value.Unit)}{Off(v.Value, v.Place)}");
+        return string.Join(", ", named)
+            + (moved.Length > MostValuesNamed ? $" and {moved.Length - MostValuesNamed} more" : "")
+            + rest switch
+            {
+                0 => "",
+                1 => "; one value does not matter",
+                _ => $"; {rest} values do not matter",
+            };
+    }
+
+    /// <summary>How far a value stands from its nominal one, in per cent; empty where that is zero.</summary>
+    public static string Off(VariedValue value, double place)
+    {
+        if (value.Nominal == 0)
+        {
+            return "";
+        }
+
+        var percent = 100 * ((place / value.Nominal) - 1);
+        return $" ({(percent > 0 ? "+" : "")}{percent.ToString("0.##", CultureInfo.InvariantCulture)} %)";
+    }
+
+    /// <summary>A figure's name as it is judged: the requirement's own words, or whose rating.</summary>
+    public static string Name(SpreadResult spread, StudyFigure figure) => figure.Kind switch
+    {
+        StudyFigureKind.Margin => spread.Varied.Circuit.Requirements[figure.Index].Statement,
+        StudyFigureKind.RatingUsed =>
+            $"{Rated(Rating(spread, figure).Unit)} of "
+            + $"{spread.Varied.Circuit.Parts[figure.Index].Name} at most "
+            + Number(Rating(spread, figure).Rated, Rating(spread, figure).Unit),
+        _ => figure.Name,
+    };
+
+    /// <summary>The rating a figure is of.</summary>
+    public static RatingResult Rating(SpreadResult spread, StudyFigure figure) =>
+        spread.Nominal.Parts[figure.Index].Ratings[figure.Rating];
+
+    /// <summary>How the draws were made, and what their intervals mean.</summary>
+    public static string Method(SpreadResult spread) =>
+        $"{Design(spread.Draws!.Draws)}, seed {spread.Options.Seed}; each value evenly within its limits, or "
+            + "normal and cut at them, three standard deviations from the middle. The intervals are those of "
+            + "independent draws, and cautious for these, which are spread more evenly.";
+
+    /// <summary>A probability in per cent, with more digits near 0 and 1.</summary>
+    public static string Share(double fraction) =>
+        (100 * fraction).ToString(fraction is (> 0.99 and < 1) or (> 0 and < 0.01) ? "0.###" : "0.#",
+            CultureInfo.InvariantCulture) + " %";
+
+    /// <summary>The judged figures of a kind.</summary>
+    public static ImmutableArray<FigureRange> Judged(SpreadResult spread, StudyFigureKind kind) =>
+        spread.Figures.RemoveAll(f => f.Figure.Kind != kind);
+
+    /// <summary>A figure's kind in one word.</summary>
+    public static string Kind(StudyFigure figure) => figure.Kind switch
+    {
+        StudyFigureKind.Maximum => "maximum",
+        StudyFigureKind.Minimum => "minimum",
+        StudyFigureKind.Reading => "figure",
+        StudyFigureKind.Margin => "margin",
+        StudyFigureKind.RatingUsed => "rating",
+        _ => throw new System.Diagnostics.UnreachableException($"no word for {figure.Kind}"),
+    };
+
+    /// <summary>How the draws are spread.</summary>
+    public static string Design(long draws) => draws <= LatinHypercube.MostInCube
+        ? "Latin hypercube"
+        : $"Latin hypercubes of {LatinHypercube.MostInCube:N0} draws each";
+
+    /// <summary>A number and its noun.</summary>
+    public static string Count(long count, string noun) => count == 1 ? $"one {noun}" : $"{count:N0} {noun}s";
+
+    private static string Tally(ImmutableArray<FigureRange> figures, string noun, string one, string many)
+    {
+        var broken = figures.Count(f => f.Holds == false);
+        return (broken, figures.Length) switch
+        {
+            (_, 0) => "",
+            (0, 1) => $"the {noun} holds",
+            (0, 2) => $"both {noun}s hold",
+            (0, var all) => $"all {all} {noun}s hold",
+            (1, 1) => $"the {noun} {one}",
+            (1, var all) => $"one of {all} {noun}s {one}",
+            (2, 2) => $"both {noun}s {many}",
+            var (some, all) => some == all ? $"all {all} {noun}s {many}" : $"{some} of {all} {noun}s {many}",
+        };
+    }
+}
