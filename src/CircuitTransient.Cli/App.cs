@@ -52,7 +52,9 @@ public static class App
             new SolveCommand(streams, cancellation),
             new SpreadCommand(streams, cancellation),
             new ScanCommand(streams, cancellation),
+            new SizeCommand(streams, cancellation),
             new FormulaCommand(streams, cancellation),
+            new OverlayCommand(streams, cancellation),
             new CompareCommand(streams, cancellation),
         };
         var help = root.Options.OfType<HelpOption>().Single();

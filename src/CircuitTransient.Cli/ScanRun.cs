@@ -47,7 +47,9 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
         return new StudyDelivery(options.Study, streams, cancellation).HandOver(
             file, () => Files(file, result, reading), ScanJson.Write(result),
             written => ScanSummary.Write(result, written, streams.IsColoured),
-            result.AllHold ? ExitStatus.Success : ExitStatus.RequirementBroken);
+            result.UnsolvedCount > 0 ? ExitStatus.NoUniqueSolution
+                : result.AllHold ? ExitStatus.Success
+                : ExitStatus.RequirementBroken);
 
         void Count()
         {

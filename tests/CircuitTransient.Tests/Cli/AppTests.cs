@@ -10,12 +10,12 @@ public sealed class AppTests : IDisposable
 
     [Theory]
     [InlineData("",
-        "error: say what to do: check, solve, spread, scan, formula or compare\n"
+        "error: say what to do: check, solve, spread, scan, size, formula, overlay or compare\n"
         + "see `circuit-transient --help`\n")]
     [InlineData("slove",
         "error: there is no command `slove`; did you mean `solve`?\nsee `circuit-transient --help`\n")]
     [InlineData("draw",
-        "error: there is no command `draw`, only check, solve, spread, scan, formula, compare\n"
+        "error: there is no command `draw`, only check, solve, spread, scan, size, formula, overlay, compare\n"
         + "see `circuit-transient --help`\n")]
     [InlineData("solve a.cause --strct",
         "error: there is no option `--strct`; did you mean `--strict`?\n"

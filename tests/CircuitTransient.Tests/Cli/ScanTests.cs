@@ -124,6 +124,27 @@ public sealed class ScanTests : IDisposable
         Assert.Contains("no point of the scan has a solution", run.Error);
     }
 
+    [Fact]
+    public void Points_without_a_solution_are_shown_and_end_with_3()
+    {
+        // v = g·v has any current as its solution where g = 1.
+        var file = commandLine.Circuit(
+            "plant.cause",
+            """
+            source Feed at a : 1 V
+            resistor R from a to b : 1 kΩ
+            dependent source E from b to ground : 2 times voltage of b
+            observe current through R
+            until 1 ms
+            """);
+
+        var run = commandLine.Run("scan", file, "--no-files", "--part", "E from 0.5 to 1.5 in 4 steps");
+
+        Assert.Equal(ExitStatus.NoUniqueSolution, run.Status);
+        Assert.Contains("One point has no solution.", run.Output.Replace("\n", " "));
+        Assert.Contains("  E = 1.000: ", run.Output);
+    }
+
     private CommandLineAnswer Scan(params string[] words) => commandLine.Run(
         ["scan", commandLine.Circuit("plant.cause", Ringing), "--out", commandLine.Results, .. words]);
 }

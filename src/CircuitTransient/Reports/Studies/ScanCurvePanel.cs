@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using CircuitTransient.Numerics;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Scans;
 using CircuitTransient.Text;
@@ -10,7 +11,6 @@ namespace CircuitTransient.Reports.Studies;
 internal sealed class ScanCurvePanel
 {
     private const double Height = 190;
-    private const string Broken = "#f4efe9"; // the limit's hue, thinned to a wash
 
     private readonly ScanAxis axis;
     private readonly FigureScan finding;
@@ -115,8 +115,11 @@ internal sealed class ScanCurvePanel
 
     private ImmutableArray<PlotPoint> Samples(ImmutableArray<ScanPoint> points, int index)
     {
-        var shown = points
-            .Select((p, i) => (X: axis.Values[i], Y: Shown(p.Found?.Values[index] ?? double.NaN)))
+        var known = points.Select((p, i) => new SlopedSample(
+            axis.Values[i], p.Found?.Values[index] ?? double.NaN,
+            p.Slopes.IsEmpty ? double.NaN : p.Slopes[index])).ToArray();
+        var between = known.Zip(known.Skip(1)).SelectMany(pair => Between(pair.First, pair.Second));
+        var shown = known.Concat(between).Select(s => (s.X, Y: Shown(s.Y)))
             .Concat(new[] { finding.Greatest, finding.Least }.OfType<ScanPlace>()
                 .Select(p => (X: p.At[0], Y: Shown(p.Value))))
             .Concat(finding.Jumps.SelectMany(j => new[]
@@ -126,6 +129,26 @@ internal sealed class ScanCurvePanel
                 (X: Math.BitIncrement(j.At), Y: Shown(j.After)),
             }));
         return [.. shown.OrderBy(s => s.X).Select(s => new PlotPoint(scale.Map(s.X), s.Y))];
+    }
+
+    /// <summary>The cubic between two points with slopes, where they are far enough apart to show.</summary>
+    private IEnumerable<SlopedSample> Between(SlopedSample left, SlopedSample right)
+    {
+        const double apart = 6; // points of the screen
+        var width = scale.Place(right.X) - scale.Place(left.X);
+        var isJumped = finding.Jumps.Any(j => j.At >= left.X && j.At <= right.X);
+        if (width < apart || isJumped || !left.HasSlope || !right.HasSlope
+            || !left.HasValue || !right.HasValue)
+        {
+            yield break;
+        }
+
+        var count = (int)Math.Ceiling(width / apart);
+        for (var k = 1; k < count; k++)
+        {
+            var x = left.X + ((right.X - left.X) * k / count);
+            yield return new SlopedSample(x, SlopedSample.Cubic(left, right, x), double.NaN);
+        }
     }
 
     private IEnumerable<Shape> BrokenStretches()
@@ -141,7 +164,8 @@ internal sealed class ScanCurvePanel
             if (stretch.From > edge)
             {
                 var (left, right) = (scale.Place(edge), scale.Place(stretch.From));
-                yield return new RectangleShape(left, frame.Top, right - left, frame.Height, Broken);
+                yield return new RectangleShape(
+                    left, frame.Top, right - left, frame.Height, PlotStyle.WideBand);
             }
 
             edge = Math.Max(edge, stretch.To);
@@ -158,8 +182,11 @@ internal sealed class ScanCurvePanel
 
         var x = scale.Place(nominal);
         yield return new LineShape(x, frame.Top, x, frame.Bottom, new Stroke(PlotStyle.Axis, 1, [2, 3]));
+        var isMarkedLow = Marked is { } marked
+            && frame.Level.Place(Shown(marked.Value)) > frame.Top + (Height / 2);
         yield return new TextShape(
-            x + 4, frame.Bottom - 22, "as written", ScanFrame.Small, PlotStyle.Grey, HasHalo: true);
+            x + 4, isMarkedLow ? frame.Top + 13 : frame.Bottom - 22, "as written", ScanFrame.Small,
+            PlotStyle.Grey, HasHalo: true);
     }
 
     private IEnumerable<Shape> Marks()

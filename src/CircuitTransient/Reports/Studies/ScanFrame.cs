@@ -28,7 +28,7 @@ internal sealed record ScanFrame(
         yield return new TextShape(
             Left, Top - 12, Fonts.Fitted(title, 14, PlotPanel.Width - Left - 20, isStrong: true), 14,
             PlotStyle.Ink, IsStrong: true);
-        yield return new RectangleShape(Left, Top, Right - Left, Height, "#fbfcfc");
+        yield return new RectangleShape(Left, Top, Right - Left, Height, PlotStyle.Ground);
         var levels = Level.Ticks(Unit, 5);
         foreach (var (value, label) in levels.Marks)
         {
@@ -39,7 +39,7 @@ internal sealed record ScanFrame(
         }
 
         yield return new TextShape(
-            Left - 8, Top - 6, levels.Unit, Small, PlotStyle.Ink, TextAnchor.End, IsStrong: true);
+            Left - 8, Top - 12, levels.Unit, Small, PlotStyle.Ink, TextAnchor.End, IsStrong: true);
         foreach (var (x, label) in Across)
         {
             yield return new LineShape(x, Top, x, Bottom, new Stroke(PlotStyle.Grid, 1));

@@ -10,6 +10,7 @@ public static class ScanPlot
 {
     private const int MostCurves = 8;
     private const int MostMaps = 3;
+    private const int MostDistributions = 2;
     private const double PixelsPerPoint = 2;
     private const double Margin = 20;
 
@@ -84,6 +85,13 @@ public static class ScanPlot
 
         if (result.Scatter is { } scatter)
         {
+            foreach (var figure in scatter.Figures
+                .Where(f => f.Quantiles.Length > 0 && f.Scan.Greatest?.How != RangeExtremeKind.Flat)
+                .OrderBy(f => f.Scan.Room ?? double.PositiveInfinity).Take(MostDistributions))
+            {
+                yield return top => ScatterPanel.Draw(result, scatter, figure, fonts, top);
+            }
+
             foreach (var (finding, index) in
                 Wanted([.. scatter.Figures.Select(f => f.Scan)]).Take(MostCurves / 2))
             {

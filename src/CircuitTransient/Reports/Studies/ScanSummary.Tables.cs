@@ -176,9 +176,7 @@ public static partial class ScanSummary
         }
 
         var unsolved = all.Where(p => p.Point.Found is null).ToArray();
-        text.Heading(unsolved.Length == 1
-            ? "One point has no solution"
-            : $"{unsolved.Length} points have no solution, and nothing is said of them");
+        text.Heading("Points without a solution, of which nothing is said");
         foreach (var (own, point) in unsolved.Take(MostTroubles))
         {
             text.Paragraph($"{ScanWords.Place(own, point.At)}: {point.Trouble}", hanging: 2);

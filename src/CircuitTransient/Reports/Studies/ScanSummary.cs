@@ -70,6 +70,13 @@ public static partial class ScanSummary
             said.Add(ScatterVerdict(scatter));
         }
 
+        if (result.UnsolvedCount > 0)
+        {
+            said.Add(result.UnsolvedCount == 1
+                ? "One point has no solution."
+                : $"{result.UnsolvedCount} points have no solution.");
+        }
+
         return string.Join(" ", said);
     }
 

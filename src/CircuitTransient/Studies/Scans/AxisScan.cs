@@ -13,6 +13,7 @@ namespace CircuitTransient.Studies.Scans;
 internal sealed class AxisScan(
     Circuit circuit, StudyFigure figure, Func<double, SlopedSample> function, double scale)
 {
+    private const int MostCrests = 4;
     private const double Rounding = 1e-10; // of the scale: what is less is no change of the figure
 
     private readonly bool isJudged = FigureScan.IsJudgedKind(figure.Kind);
@@ -28,6 +29,7 @@ internal sealed class AxisScan(
             return Flat(given, timeAt);
         }
 
+        given = Sloped(given);
         var jumps = RangeJump.Find(given, function);
         var looked = Merge(given, jumps.SelectMany(j => new[] { j.Before, j.After }));
         var greatest = RangeExtremeSearch.Greatest(looked, function);
@@ -44,6 +46,30 @@ internal sealed class AxisScan(
             holding,
             !isJudged || looked.All(s => double.IsNaN(s.Y) || Judged(s).Y >= 0));
         return findings with { Room = ScanRoom.Of(circuit, findings) };
+    }
+
+    /// <summary>The slopes about the highest and lowest points, where they were not all taken.</summary>
+    private ImmutableArray<SlopedSample> Sloped(ImmutableArray<SlopedSample> given)
+    {
+        if (given.Any(s => s.HasSlope))
+        {
+            return given;
+        }
+
+        var wanted = Crests(given, 1).Concat(Crests(given, -1))
+            .SelectMany(i => new[] { i - 1, i, i + 1 })
+            .Where(i => i >= 0 && i < given.Length).Distinct().ToHashSet();
+        return [.. given.Select((sample, i) => wanted.Contains(i) ? function(sample.X) : sample)];
+    }
+
+    private static IEnumerable<int> Crests(ImmutableArray<SlopedSample> given, int sign)
+    {
+        return Enumerable.Range(0, given.Length)
+            .Where(i => given[i].HasValue && !(Height(i - 1) > Height(i)) && !(Height(i + 1) > Height(i)))
+            .OrderByDescending(Height)
+            .Take(MostCrests);
+
+        double Height(int i) => i >= 0 && i < given.Length ? sign * given[i].Y : double.NaN;
     }
 
     private bool IsFlat(ImmutableArray<SlopedSample> given)

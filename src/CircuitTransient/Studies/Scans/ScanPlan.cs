@@ -51,7 +51,7 @@ public sealed record ScanPlan(VariedCircuit Varied, ImmutableArray<ScanAxis> Axe
         var mistakes = new List<Diagnostic>();
         for (var i = 0; i < ranged.Length; i++)
         {
-            if (i > 0 && varied.Values.Length <= i)
+            if (i > 0 && ScanTargets.AreAlike(ranged[i], ranged[i - 1]))
             {
                 mistakes.Add(Diagnostic.Error(ranged[i].Source, ranged[i].NameSpan,
                     $"`{ranged[i].Name}` is scanned twice", "scan two different values, or one"));

@@ -45,13 +45,12 @@ public sealed record ScanScatter(VariedValue Varied, int Index, double By)
             return null;
         }
 
-        var index = varied.Values.Length - 1;
-        if (scatter.Switch is null)
-        {
-            index = Enumerable.Range(0, varied.Values.Length)
-                .First(i => varied.Values[i].Kind == VariedKind.EventTime);
-        }
-
+        // An event that is scanned too stands with the axes, any other behind them.
+        var events = Enumerable.Range(0, varied.Values.Length)
+            .Where(i => varied.Values[i].Kind == VariedKind.EventTime);
+        var index = scatter.Switch is not { } name
+            ? events.First()
+            : events.First(i => varied.Values[i].Name == $"{name} {(scatter.Closes ? "closes" : "opens")}");
         return new ScanScatter(varied.Values[index], index, scatter.By.Value);
     }
 }

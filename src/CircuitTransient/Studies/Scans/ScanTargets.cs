@@ -12,6 +12,9 @@ internal static class ScanTargets
         Span = scanned.NameSpan,
     };
 
+    /// <summary>Whether two are the same value.</summary>
+    public static bool AreAlike(ScannedSyntax one, ScannedSyntax other) => Target(one) == Target(other);
+
     private static StudyTarget Target(ScannedSyntax scanned) => scanned.Kind switch
     {
         ScannedKind.Value => new NamedValueTarget(scanned.Name),

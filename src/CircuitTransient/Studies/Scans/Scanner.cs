@@ -9,7 +9,10 @@ public sealed class Scanner
 {
     private const int ScatterSteps = 240;
 
-    private static readonly ImmutableArray<double> Fractions = [0.01, 0.05, 0.25, 0.5, 0.75, 0.95, 0.99];
+    private const int MostSloped = 1000; // points whose slopes are all taken; of more only where they matter
+
+    private static readonly ImmutableArray<double> Fractions =
+        [.. Enumerable.Range(0, 101).Select(k => k / 100.0)];
 
     private readonly ScanPlan plan;
     private readonly ImmutableArray<StudyFigure> figures;
@@ -66,7 +69,8 @@ public sealed class Scanner
     {
         var values = (double[])nominal.Clone();
         at.CopyTo(values);
-        return function.Point(values, at, plan.Axes.Length == 1 ? 0 : -1);
+        var isSloped = plan.Axes is [var only] && only.Values.Length <= MostSloped;
+        return function.Point(values, at, isSloped ? 0 : -1);
     }
 
     private ImmutableArray<FigureScan> Between(ScanAxis axis, int index, ImmutableArray<ScanPoint> points)

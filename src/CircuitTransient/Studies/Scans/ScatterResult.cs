@@ -19,7 +19,8 @@ public sealed record ScatterResult(
 /// <summary>The distribution of one figure.</summary>
 /// <param name="Scan">Its extremes and where it breaks.</param>
 /// <param name="Mean">Its mean; null where it has no value anywhere.</param>
-/// <param name="Quantiles">The value that is not exceeded in such a fraction of cases.</param>
+/// <param name="Quantiles">For each hundredth the value that is not exceeded in such a fraction of
+/// cases.</param>
 /// <param name="Holding">In which fraction of cases the requirement or rating holds; null of what is only
 /// observed.</param>
 public sealed record FigureScatter(

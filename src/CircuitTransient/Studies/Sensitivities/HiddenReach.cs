@@ -23,13 +23,23 @@ internal static class HiddenReach
         }
 
         double[] other = [.. values];
-        other[index] += Step * (other[index] == 0 ? 1 : other[index]);
-        if (varied.At(other) is not { Succeeded: true, Value: var read }
-            || Put(circuit, value, other[index]) is not { Succeeded: true, Value: var put })
+        var step = Step * (other[index] == 0 ? 1 : other[index]);
+        foreach (var moved in new[] { values[index] + step, values[index] - step })
         {
-            return null;
+            other[index] = moved;
+            if (varied.At(other) is { Succeeded: true, Value: var read }
+                && Put(circuit, value, moved) is { Succeeded: true, Value: var put })
+            {
+                return Difference(read, put);
+            }
         }
 
+        return "the circuit allows no other value near it";
+    }
+
+    /// <summary>What a circuit read anew has that one with other parameters has not.</summary>
+    private static string? Difference(Circuit read, Circuit put)
+    {
         if (read.Parts.Length != put.Parts.Length)
         {
             return "it sets how many parts there are";
@@ -45,8 +55,12 @@ internal static class HiddenReach
             }
         }
 
-        return read.Requirements.Zip(put.Requirements).All(r => Agree(r.First.Bound, r.Second.Bound))
-            ? null : "it sets what is required";
+        return !read.Requirements.Zip(put.Requirements)
+                .All(r => Agree(r.First.Bound, r.Second.Bound) && r.First.Quantity == r.Second.Quantity)
+                ? "it sets what is required"
+            : !read.Observations.Zip(put.Observations).All(o => o.First.Quantity == o.Second.Quantity)
+                ? "it sets what is observed"
+            : null;
     }
 
     private static Text.Outcome<Circuit> Put(Circuit circuit, VariedValue value, double given)

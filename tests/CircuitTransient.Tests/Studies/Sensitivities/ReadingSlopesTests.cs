@@ -53,6 +53,18 @@ public class ReadingSlopesTests
         Close.To(1e-6 * Math.Log(100), settling.Slopes[0]!.Value);
     }
 
+    [Theory]
+    [InlineData("require voltage of b at most Low", "it sets what is required")]
+    [InlineData("observe time after which voltage of b stays below Low", "it sets what is observed")]
+    [InlineData("switch K1 at b : open, closes when voltage of b rises above Low",
+        "it sets a level or a ratio of K1")]
+    public void A_value_that_sets_a_level_has_no_derivative_and_it_is_said(string statement, string reason)
+    {
+        var derived = Derived.Of(
+            $"value Low : 4 V\n{Ringing}\n{statement}\nuntil 2 ms", new NamedValueTarget("Low"));
+        Assert.Equal(reason, derived.Analysis.Refusals[0]!.Reason);
+    }
+
     [Fact]
     public void A_value_that_shapes_a_wave_has_no_derivative_and_it_is_said()
     {

@@ -1,0 +1,164 @@
+using System.Collections.Immutable;
+using CircuitTransient.Circuits;
+using CircuitTransient.Studies.Sizes;
+
+namespace CircuitTransient.Reports.Studies;
+
+/// <summary>A sizing in words, alike on the terminal, on the page and in pictures.</summary>
+internal static class SizeWords
+{
+    /// <summary>A part's value: as few digits as a preferred one has, else six.</summary>
+    public static string Value(double value, string unit) => Amount.Of(value, unit);
+
+    /// <summary>Values by part: <c>Rsn 560 Ω, Csn 10 µF</c>.</summary>
+    public static string Values(SizeResult result, SizePoint point) => string.Join(", ",
+        result.Problem.Parts.Select((part, i) => $"{part.Name} {Value(point.Values[i], part.Unit)}"));
+
+    /// <summary>A constraint's margin.</summary>
+    public static string Margin(SizeConstraint constraint, double share) => share switch
+    {
+        double.NegativeInfinity => "broken without limit, or not judged",
+        >= 0 => $"{ReportWords.Number(share * constraint.Scale, constraint.Unit)} to spare",
+        _ => $"broken by {ReportWords.Number(-share * constraint.Scale, constraint.Unit)}",
+    };
+
+    /// <summary>The verdict in one sentence.</summary>
+    public static string Verdict(SizeResult result)
+    {
+        var parts = string.Join(" and ", result.Problem.Parts.Select(part => part.Name));
+        if (result.Chosen is { } chosen)
+        {
+            return result.IsFound
+                ? $"{Values(result, chosen)}: everything holds, {Confirmed(result)}."
+                : $"{Values(result, chosen)} is not confirmed: a self-check of its full solution failed.";
+        }
+
+        return result.Conflict is null && result.Exact is { } exact
+            ? $"No {result.Request.Series} values of {parts} hold, though {Values(result, exact)} would: " +
+                "try a finer series."
+            : $"No value of {parts} in the range looked at meets every requirement and rating.";
+    }
+
+    /// <summary>What is made least or greatest.</summary>
+    public static string Aim(SizeResult result) => result.Request.Aim switch
+    {
+        Extremal { IsGreatest: false } aim => $"least {aim.Of.Content.Trim()}",
+        Extremal aim => $"greatest {aim.Of.Content.Trim()}",
+        _ => "most room to the nearest bound",
+    };
+
+    /// <summary>What a picture shows.</summary>
+    public static string PictureTitle(SizeResult result)
+    {
+        var circuit = result.Problem.File;
+        var parts = string.Join(" and ", result.Problem.Parts.Select(part => part.Name));
+        var hold = result.Axes.Length == 1 ? "holds" : "hold";
+        return $"{circuit.Title ?? circuit.Source.Name}: where {parts} {hold}";
+    }
+
+    /// <summary>Whether what is made least or greatest is a figure that the values do not show
+    /// themselves.</summary>
+    public static bool HasOwnAim(SizeResult result) =>
+        result.Problem is { AimSign: not 0, AimPart: < 0 };
+
+    /// <summary>What breaks at the end of a stretch of values.</summary>
+    public static string End(SizeResult result, int? constraint) => constraint is { } index
+        ? $"broken is {result.Problem.Constraints[index].Name}"
+        : "the range ends";
+
+    /// <summary>Why nothing holds.</summary>
+    public static ImmutableArray<string> Conflict(SizeResult result)
+    {
+        var constraints = result.Problem.Constraints;
+        return result.Conflict switch
+        {
+            null => [],
+            { Alone: { IsEmpty: false } alone } =>
+                [.. alone.Select(i => $"Whatever the value, this is broken: {constraints[i].Name}.")],
+            { First: { } first, Second: { } second, PairNearest: { } nearest } =>
+            [
+                "These two exclude each other: each can be held, but not both.",
+                $"First: {constraints[first].Name}.",
+                $"Second: {constraints[second].Name}.",
+                $"They come nearest with {Values(result, nearest)}: " +
+                    $"the first {Margin(constraints[first], nearest.Shares[first])}, " +
+                    $"the second {Margin(constraints[second], nearest.Shares[second])}.",
+            ],
+            _ => ["No two of them exclude each other, but all together do."],
+        };
+    }
+
+    /// <summary>The value of what is made least or greatest.</summary>
+    public static string AimValue(SizeResult result, SizePoint point) =>
+        result.Problem.AimPart >= 0
+            ? Value(point.Aim ?? 0, result.Problem.AimUnit!)
+            : ReportWords.Number(point.Aim, result.Problem.AimUnit ?? "");
+
+    /// <summary>The constraint with the least room.</summary>
+    public static int Tightest(SizePoint point) => point.Shares.IndexOf(point.Worst);
+
+    /// <summary>What was searched, and how.</summary>
+    public static ImmutableArray<string> Searched(SizeResult result)
+    {
+        var words = ImmutableArray.CreateBuilder<string>();
+        foreach (var part in result.Problem.Parts)
+        {
+            var range = $"{Value(part.Lowest, part.Unit)} to {Value(part.Highest, part.Unit)}";
+            words.Add($"{part.Name} (now {Value(part.Nominal, part.Unit)}) was sought from {range}"
+                + (part.IsRangeStated ? "." : ", the range taken where none is said."));
+        }
+
+        words.Add(result.Problem.Parts.Length == 1
+            ? $"{result.Points.Length} values were solved exactly; boundaries are bisected to 1e-12. A " +
+                "stretch narrower than the scan's step that comes near no bound at a scanned value would " +
+                "be missed."
+            : $"{result.Points.Length} pairs of values were solved exactly, {result.Axes[0].Length} by " +
+                $"{result.Axes[1].Length}; a region smaller than a cell of that grid may be missed.");
+        foreach (var (part, i) in result.Problem.Parts.Select((part, i) => (part, i)))
+        {
+            if (result.Chosen is { } chosen && result.AtEnd(chosen.Values[i], part))
+            {
+                words.Add($"{part.Name} is proposed at the end of its range: a wider one may do better.");
+            }
+        }
+
+        if (result.Unsolved > 0)
+        {
+            words.Add($"{result.Unsolved} of them have no unique solution and count as broken.");
+        }
+
+        if (result.Request.WithSpread)
+        {
+            words.Add(Spread(result));
+        }
+
+        return words.ToImmutable();
+    }
+
+    private static string Confirmed(SizeResult result) => result.Request.WithSpread
+        && !result.Problem.Corners.Toleranced.IsEmpty
+        ? $"at {CornerCount(result)} of the tolerances too; confirmed by full solutions with self-checks, " +
+            $"nominal and at the worst corner of each ({result.Confirmed.Length})"
+        : "confirmed by a full solution with its self-checks";
+
+    private static string CornerCount(SizeResult result) => result.Problem.Corners.IsComplete
+        ? $"all {result.Problem.Corners.All.Length} corners"
+        : $"{result.Problem.Corners.All.Length} corners";
+
+    private static string Spread(SizeResult result)
+    {
+        var corners = result.Problem.Corners;
+        if (corners.Toleranced.IsEmpty)
+        {
+            return "No value has a tolerance, so there were no corners to look at.";
+        }
+
+        var names = string.Join(", ", corners.Toleranced.Select(result.Problem.NameOf));
+        var scanned = $"The scan looked at {result.Corners.Length} that decide";
+        return corners.IsComplete
+            ? $"{scanned}, the proposed values were solved at all {corners.All.Length} corners of {names}; " +
+                "a worst case inside the tolerances, away from every corner, is not excluded."
+            : $"{scanned}, the proposed values were solved with each of {names} at a limit of its own " +
+                $"against all others ({corners.All.Length} corners of 2^{corners.Toleranced.Length}).";
+    }
+}

@@ -1,0 +1,124 @@
+using CircuitTransient.Cli;
+using CircuitTransient.Reports.Studies;
+using CircuitTransient.Tests.Reports;
+
+namespace CircuitTransient.Tests.Cli;
+
+public sealed class SizeTests : IDisposable
+{
+    private const string Divider =
+        """
+        circuit "A divider"
+        source    Feed at s : step of 10 V
+        resistor  R1 from s to a : 1 kΩ ±1 %
+        resistor  R2 from a to ground : 1 kΩ ±1 %, rated 50 mW
+        capacitor C1 from a to ground : 1 nF
+        require voltage of a between 5.4 V and 6 V from 20 µs
+        until 50 µs
+        """;
+
+    private static readonly StudySchema Schema = new(SizeJson.Schema);
+
+    private readonly CommandLine commandLine = new();
+
+    public void Dispose() => commandLine.Dispose();
+
+    [Fact]
+    public void Values_that_hold_are_proposed_with_their_files()
+    {
+        var run = Size("--part", "R2", "--series", "E12");
+
+        Assert.Equal((ExitStatus.Success, ""), (run.Status, run.Error));
+        var lines = run.Output.Split('\n');
+        Assert.Equal(
+            "R2 1.2 kΩ: everything holds, confirmed by a full solution with its self-checks.", lines[1]);
+        Assert.All(lines, line => Assert.True(line.Length <= 100, line));
+        Assert.Equal(
+            ["size/report.html", "size/size.csv", "size/size.json", "size/size.png", "size/size.svg"],
+            commandLine.Written);
+        var page = File.ReadAllText(Path.Combine(commandLine.Results, "size/report.html"));
+        Assert.Contains("with the proposed values", page);
+        Assert.Contains("1.2 kΩ", page);
+    }
+
+    [Fact]
+    public void No_value_at_all_ends_with_1_and_says_why()
+    {
+        var run = Size("--part", "R2 from 2 kΩ to 20 kΩ");
+
+        Assert.Equal(ExitStatus.RequirementBroken, run.Status);
+        Assert.Contains("No value of R2 in the range looked at meets every requirement", run.Output);
+        Assert.Contains("Whatever the value, this is broken: voltage of a between 5.4 V and 6 V", run.Output);
+    }
+
+    [Fact]
+    public void Two_parts_with_tolerances_get_a_map_and_a_table()
+    {
+        var run = Size(
+            "--part", "R1 from 500 Ω to 2 kΩ", "--part", "R2 from 500 Ω to 2 kΩ", "--series", "E12",
+            "--with-spread", "--least", "power in R2");
+
+        Assert.Equal((ExitStatus.Success, ""), (run.Status, run.Error));
+        Assert.Contains("at all 4 corners of the tolerances too", run.Output);
+        Assert.Contains("◆", run.Output);
+        var rows = File.ReadAllLines(Path.Combine(commandLine.Results, "size/size.csv"));
+        Assert.StartsWith("R1 (Ω),R2 (Ω),holds,power in R2 (W),margin of voltage of a", rows[0]);
+        Assert.Equal(1 + (7 * 7), rows.Length); // E12 has 560 680 820 1000 1200 1500 1800 in that range
+    }
+
+    [Theory]
+    [InlineData("R2")]
+    [InlineData("R2 from 2 kΩ to 20 kΩ")]
+    [InlineData("R2 from 1.21 kΩ to 1.4 kΩ")]
+    public void The_document_obeys_its_schema(string part)
+    {
+        Assert.Empty(Schema.Faults(Size("--part", part, "--series", "E12", "--json", "--no-files").Output));
+        var two = Size(
+            "--part", part, "--part", "R1", "--series", "E6", "--json", "--no-files", "--with-spread");
+        Assert.Empty(Schema.Faults(two.Output));
+        Assert.NotEmpty(Schema.Faults(two.Output.Replace("size 1", "size 2")));
+    }
+
+    [Fact]
+    public void The_circuit_with_the_proposed_values_becomes_a_new_file_and_never_an_old_one()
+    {
+        var sized = Path.Combine(commandLine.Folder, "sized.cause");
+        var run = Size("--part", "R2", "--series", "E12", "--no-files", "--write-sized", sized);
+
+        Assert.Equal(ExitStatus.Success, run.Status);
+        Assert.Equal(Divider.Replace("R2 from a to ground : 1 kΩ", "R2 from a to ground : 1.2 kΩ"),
+            File.ReadAllText(sized));
+        Assert.Equal(ExitStatus.Success, commandLine.Run("solve", sized, "--no-files", "--quiet").Status);
+        var again = Size("--part", "R2", "--no-files", "--write-sized", sized);
+        Assert.Equal(ExitStatus.FileTrouble, again.Status);
+        Assert.Contains("it exists already", again.Error);
+    }
+
+    [Theory]
+    [InlineData("say which part's value is sought")]
+    [InlineData("size finds the values of one or two parts", "--part", "R1", "--part", "R2", "--part", "C1")]
+    [InlineData("`R1` is named twice", "--part", "R1", "--part", "R1")]
+    [InlineData("`E13` is no series of IEC 60063", "--part", "R1", "--series", "E13")]
+    [InlineData("either --least or --greatest", "--part", "R1", "--least", "R1", "--greatest", "R1")]
+    [InlineData("there is no part `R7`", "--part", "R7")]
+    [InlineData("neither a sized part nor a quantity", "--part", "R1", "--least", "R2")]
+    public void What_cannot_be_asked_ends_with_2(string message, params string[] words)
+    {
+        var run = Size([.. words, "--no-files"]);
+
+        Assert.Equal((ExitStatus.Mistake, ""), (run.Status, run.Output));
+        Assert.Contains(message, run.Error);
+    }
+
+    [Fact]
+    public void Another_aim_chooses_another_value()
+    {
+        Assert.Contains("R2 1.2 kΩ: everything", Of("--least"));
+        Assert.Contains("R2 1.5 kΩ: everything", Of("--greatest"));
+
+        string Of(string aim) => Size("--part", "R2", "--series", "E24", aim, "R2", "--no-files").Output;
+    }
+
+    private CommandLineAnswer Size(params string[] words) => commandLine.Run(
+        ["size", commandLine.Circuit("size.cause", Divider), "--out", commandLine.Results, .. words]);
+}
