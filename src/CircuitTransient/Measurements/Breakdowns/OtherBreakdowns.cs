@@ -118,7 +118,7 @@ internal sealed class OtherBreakdowns
 
     /// <summary>Every store is solved for a unit of what it holds, so that it follows the causes that made
     /// it, also where they cancel.</summary>
-    private OtherBreakdown Since(int interval, Cause[] sources)
+    private OtherBreakdown? Since(int interval, Cause[] sources)
     {
         var switching = SwitchingWords.Of(solution, interval);
         var held = Held(interval);
@@ -135,6 +135,11 @@ internal sealed class OtherBreakdowns
                 var name = $"{solution.Circuit.Parts[store].Name} {what} when {switching}";
                 causes.Add((new Cause(name, -1, [], store, 1), weights));
             }
+        }
+
+        if (causes.Count == 1)
+        {
+            return null; // one source and nothing stored: the same as from the start
         }
 
         ImmutableArray<Cause> own = [.. causes.Select(c => c.Cause)];
