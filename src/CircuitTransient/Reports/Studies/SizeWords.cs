@@ -154,7 +154,9 @@ internal static class SizeWords
         }
 
         var names = string.Join(", ", corners.Toleranced.Select(result.Problem.NameOf));
-        var scanned = $"The scan looked at {result.Corners.Length} that decide";
+        var scanned = result.Corners.Length == 1
+            ? "The scan looked at the one corner that decides"
+            : $"The scan looked at the {result.Corners.Length} corners that decide";
         return corners.IsComplete
             ? $"{scanned}, the proposed values were solved at all {corners.All.Length} corners of {names}; " +
                 "a worst case inside the tolerances, away from every corner, is not excluded."
