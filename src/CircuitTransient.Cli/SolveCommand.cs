@@ -33,7 +33,6 @@ internal sealed class SolveCommand : Command
     {
         Description = "What peaks are broken down by: origin (the default), edge, switching or mode.",
         HelpName = "KIND",
-        DefaultValueFactory = _ => Breakdown.Origin,
         CustomParser = ByWords.Read,
     };
 

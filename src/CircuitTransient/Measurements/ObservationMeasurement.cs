@@ -15,7 +15,7 @@ internal sealed class ObservationMeasurement(
 
     private readonly TransientSolution solution = curves.Solution;
     private readonly ObservedExtremes extremes = new(infinities);
-    private readonly ModeSplit modes = new(curves.Solution);
+    private readonly ModeSplit modes = new(curves.Solution, options.By == Breakdown.Mode);
     private readonly SwitchingEffects switchings = new(curves, cancellation);
 
     /// <summary>Measures one observation; its waveforms are still to be filled in from the curves, the

@@ -71,7 +71,13 @@ public static partial class JsonReport
         }
 
         json.WriteStartObject(name);
-        WriteArray(json, "modes", breakdown.Modes, WriteMode);
+        json.WriteStartArray("modes");
+        for (var m = 0; m < breakdown.Modes.Length; m++)
+        {
+            WriteMode(json, breakdown.Modes[m], breakdown.Energies?.Own[m]);
+        }
+
+        json.WriteEndArray();
         WriteArray(json, "causes", breakdown.Causes, (to, cause) =>
         {
             to.WriteStartObject();
@@ -80,12 +86,12 @@ public static partial class JsonReport
             to.WriteEndObject();
         });
         WriteNumber(json, "joint", breakdown.Joint);
-        WriteNumber(json, "storedEnergy", breakdown.StoredEnergy);
-        WriteNumber(json, "jointEnergy", breakdown.JointEnergy);
+        WriteNumber(json, "storedEnergy", breakdown.Energies?.Stored);
+        WriteNumber(json, "jointEnergy", breakdown.Energies?.Joint);
         json.WriteEndObject();
     }
 
-    private static void WriteMode(Utf8JsonWriter json, ModeResult mode)
+    private static void WriteMode(Utf8JsonWriter json, ModeResult mode, double? energy)
     {
         json.WriteStartObject();
         json.WriteString("name", mode.Name);
@@ -101,7 +107,7 @@ public static partial class JsonReport
             WriteNumber(to, "share", part.Share);
             to.WriteEndObject();
         });
-        WriteNumber(json, "energy", mode.Energy);
+        WriteNumber(json, "energy", energy);
         WriteNumber(json, "value", mode.Value);
         json.WriteEndObject();
     }

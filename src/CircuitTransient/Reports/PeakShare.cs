@@ -3,7 +3,8 @@ using CircuitTransient.Measurements;
 
 namespace CircuitTransient.Reports;
 
-/// <summary>What a cause, or both edges of a pulse together, has in an extreme.</summary>
+/// <summary>What a cause, or both edges of a pulse together, has in an extreme; of a product the edges stand
+/// alone, since what they have together is joint.</summary>
 /// <param name="Name">The cause's name, or the pulse's.</param>
 /// <param name="Value">Its value at the extreme.</param>
 /// <param name="Kind">What it is; null for the term of a product that belongs to no single cause.</param>
@@ -11,11 +12,17 @@ namespace CircuitTransient.Reports;
 /// belongs to no single cause.</param>
 internal sealed record PeakShare(string Name, double Value, PeakShareKind Kind, double? Without)
 {
+    /// <summary>Whether an observation is a power, an energy or a Joule integral: part of it belongs to no
+    /// single cause, and what is left without two causes is not the rest.</summary>
+    public static bool IsProduct(TransientResult result, ObservationResult observed) =>
+        observed.Contributions.Length > result.Causes.Length;
+
     /// <summary>The shares in an observation's maximum or minimum, the largest first,
     /// without what rounding leaves.</summary>
     public static ImmutableArray<PeakShare> In(TransientResult result, ObservationResult observed, bool atMax)
     {
         const double nothing = 1e-9; // of the value: what every figure is exact to
+        var isProduct = IsProduct(result, observed);
         var total = Math.Abs((atMax ? observed.Max : observed.Min).Value ?? 0);
         return
         [
@@ -37,7 +44,7 @@ internal sealed record PeakShare(string Name, double Value, PeakShareKind Kind, 
             return cause switch
             {
                 null => new("what no cause has alone", value, PeakShareKind.Joint, null),
-                { Pulse: { } pulse } => new(pulse, value, PeakShareKind.Pulse, null),
+                { Pulse: { } pulse } c => new(isProduct ? c.Name : pulse, value, PeakShareKind.Pulse, null),
                 { Kind: CauseKind.Stored } c => new(c.Name, value, PeakShareKind.Stored, without),
                 { Kind: CauseKind.Edge } c when c.Name != c.Of =>
                     new(c.Name, value, PeakShareKind.Edge, without),
@@ -59,7 +66,7 @@ internal enum PeakShareKind
     /// <summary>One edge of a source.</summary>
     Edge,
 
-    /// <summary>Both edges of a pulse.</summary>
+    /// <summary>Both edges of a pulse, or one of them in a product.</summary>
     Pulse,
 
     /// <summary>What belongs to no single cause.</summary>

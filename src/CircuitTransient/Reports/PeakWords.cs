@@ -31,11 +31,14 @@ public static class PeakWords
         }
 
         var shares = PeakShare.In(result, observed, atMax);
-        var swings = Swings(atMax ? observed.ByMode?.AtMax : observed.ByMode?.AtMin, total);
+        var isProduct = PeakShare.IsProduct(result, observed);
+        var modes = atMax ? observed.ByMode?.AtMax : observed.ByMode?.AtMin;
+        var swings = isProduct || modes is null ? [] : Swings(modes, total);
         var made = Made(shares, total, observed.Unit) + Swinging(swings, total, observed.Unit);
         var since = atMax ? observed.After?.AtMax : observed.After?.AtMin;
         var extreme = new Extremum(total, observed.Unit, atMax);
         var change = Driven(since, observed.Unit) ?? First(shares, extreme)
+            ?? (isProduct ? null : FirstPulse(shares, extreme))
             ?? Damp(shares, swings, total, observed.Unit) ?? HeldDown(shares, extreme);
         return change is null ? $"{made}." : $"{made}. {change}.";
     }
@@ -88,12 +91,12 @@ public static class PeakWords
             + (isTaking ? " off" : "");
     }
 
-    private static ModeResult[] Swings(ModeBreakdown? breakdown, double total) =>
-        breakdown is not { Joint: 0 }
-            ? []
-            : [.. breakdown.Modes
-                .Where(m => !m.IsForced && m.Rate.Imaginary != 0 && m.Value / total >= WorthDamping)
-                .Take(MostSwings)];
+    private static ModeResult[] Swings(ModeBreakdown breakdown, double total) =>
+    [
+        .. breakdown.Modes
+            .Where(m => !m.IsForced && m.Rate.Imaginary != 0 && m.Value / total >= WorthDamping)
+            .Take(MostSwings),
+    ];
 
     private static string Swinging(ModeResult[] swings, double total, string unit) => swings switch
     {
@@ -129,28 +132,28 @@ public static class PeakWords
             + $"less between them takes {Number(perUnit, unit)} off";
     }
 
-    /// <summary>The stored quantity or edge without which the extreme is least, or the
-    /// pulse that has most in it.</summary>
+    /// <summary>The stored quantity or edge without which the extreme is least.</summary>
     private static string? First(ImmutableArray<PeakShare> shares, Extremum extreme)
     {
-        if (shares.Length == 1)
+        var first = shares.Where(s => s.Without is not null && IsChangeable(s))
+            .MinBy(s => extreme.Excess(s.Without!.Value));
+        if (shares.Length == 1 || first is null || -extreme.Excess(first.Without!.Value) < WorthNaming)
         {
             return null;
         }
 
-        var first = shares.Where(s => s.Without is not null && IsChangeable(s))
-            .MinBy(s => extreme.Excess(s.Without!.Value));
-        if (first is not null && -extreme.Excess(first.Without!.Value) >= WorthNaming)
-        {
-            var among = shares.Any(s => s.Kind is PeakShareKind.Edge or PeakShareKind.Pulse)
-                ? "Of the edges and of what was stored"
-                : "Of what was stored";
-            return $"{among}, change {first.Name} first: without it the {extreme.Words} would be "
-                + Number(first.Without.Value, extreme.Unit);
-        }
+        var among = shares.Any(s => s.Kind is PeakShareKind.Edge or PeakShareKind.Pulse)
+            ? "Of the edges and of what was stored"
+            : "Of what was stored";
+        return $"{among}, change {first.Name} first: without it the {extreme.Words} would be "
+            + Number(first.Without.Value, extreme.Unit);
+    }
 
+    /// <summary>The pulse that has most in it.</summary>
+    private static string? FirstPulse(ImmutableArray<PeakShare> shares, Extremum extreme)
+    {
         var pulse = shares.Where(s => s.Kind == PeakShareKind.Pulse).MaxBy(s => s.Value / extreme.Value);
-        return pulse is not null && pulse.Value / extreme.Value >= WorthNaming
+        return shares.Length > 1 && pulse is not null && pulse.Value / extreme.Value >= WorthNaming
             ? $"Of the pulses, change {pulse.Name} first: without it "
                 + $"{Number(extreme.Value - pulse.Value, extreme.Unit)} would be left at that instant"
             : null;

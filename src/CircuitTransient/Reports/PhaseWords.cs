@@ -16,7 +16,8 @@ public static class PhaseWords
     {
         var extreme = (atMax ? observed.Max : observed.Min).Value;
         var breakdown = atMax ? observed.ByMode?.AtMax : observed.ByMode?.AtMin;
-        if (result.By != Breakdown.Edge || extreme is not { } total || breakdown is not { Joint: 0 })
+        if (result.By != Breakdown.Edge || extreme is not { } total || breakdown is null
+            || PeakShare.IsProduct(result, observed))
         {
             return null;
         }

@@ -77,10 +77,13 @@ public static partial class TerminalSummary
                 hanging: 2);
         }
 
-        text.Paragraph(
-            $"stored at that instant: {Number(breakdown.StoredEnergy, "J")}, of which " +
-            $"{Number(breakdown.JointEnergy, "J", breakdown.StoredEnergy)} belongs to no mode alone",
-            indent: 4);
+        if (breakdown.Energies is { } energies)
+        {
+            text.Paragraph(
+                $"stored at that instant: {Number(energies.Stored, "J")}, of which " +
+                $"{Number(energies.Joint, "J", energies.Stored)} belongs to no mode alone",
+                indent: 4);
+        }
     }
 
     private static ImmutableArray<int> Beside(ModeBreakdown breakdown) => breakdown.Causes.Length < 2

@@ -133,6 +133,24 @@ public class PeakWordsTests
     }
 
     [Fact]
+    public void The_two_edges_of_a_pulse_are_no_pulse_in_a_product()
+    {
+        var result = SolvedText.By(
+            Breakdown.Edge,
+            """
+            source Feed at a : rectangular pulse of 10 V from 1 ms to 2 ms
+            resistor R from a to b : 10 Ω
+            capacitor C at b : 100 µF
+            observe energy in C
+            until 2.5 ms
+            """).Result;
+        var words = PeakWords.Of(result, result.Observations[0], atMax: true)!;
+
+        Assert.StartsWith("Feed rise at 1 ms", words);
+        Assert.DoesNotContain("pulse", words);
+    }
+
+    [Fact]
     public void An_edge_that_comes_against_the_ring_is_told()
     {
         // half a period of the undamped ring, 2π √(L C) / 2 = 31.4 µs, after the first step

@@ -7,11 +7,14 @@ using CircuitTransient.Solutions;
 namespace CircuitTransient.Measurements.Breakdowns;
 
 /// <summary>Breaks extremes down by causes and modes.</summary>
-internal sealed class ModeSplit(TransientSolution solution)
+/// <param name="solution">The solved study.</param>
+/// <param name="withEnergies">Whether the energy of the fields is wanted, which takes longest.</param>
+internal sealed class ModeSplit(TransientSolution solution, bool withEnergies)
 {
     private const double Rounding = 1e-12; // of the largest share: what is below is not there
 
     private readonly ModeEnergy energy = new(solution.Layout);
+    private readonly Dictionary<(IntervalModel, int), ModeResult> natural = [];
 
     /// <summary>The breakdowns of an observed quantity at both extremes.</summary>
     public ModeBreakdowns Of(Measurand quantity, Extreme max, Extreme min) =>
@@ -40,14 +43,18 @@ internal sealed class ModeSplit(TransientSolution solution)
         var shown = Enumerable.Range(0, columns.Count)
             .Where(m => sizes[m] > Rounding * Math.Max(Math.Abs(total), sizes.Max()))
             .OrderByDescending(m => Math.Abs(whole[m])).ToArray();
-        var (own, joint) = energy.At(columns);
         return new ModeBreakdown(
-            [.. shown.Select(m => Mode(segment.Model, columns, m, own[m], whole[m]))],
+            [.. shown.Select(m => Mode(segment.Model, columns, m, whole[m]))],
             [.. byCause.Select((v, c) =>
                 new CauseByMode(solution.Causes[c].Name, [.. shown.Select(m => v[m])]))],
             QuantityFactors.IsQuadratic(quantity) ? total - byCause.Sum(v => v.Sum()) : 0,
-            own.Sum() + joint,
-            joint);
+            withEnergies ? Energies(columns, shown) : null);
+    }
+
+    private EnergyByMode Energies(ModeColumns columns, int[] shown)
+    {
+        var (own, joint) = energy.At(columns);
+        return new EnergyByMode([.. shown.Select(m => own[m])], own.Sum() + joint, joint);
     }
 
     /// <summary>What each column has in a quantity: of a product, the product of what
@@ -66,21 +73,29 @@ internal sealed class ModeSplit(TransientSolution solution)
             : null;
     }
 
-    private ModeResult Mode(IntervalModel model, ModeColumns columns, int column, double own, double value)
+    private ModeResult Mode(IntervalModel model, ModeColumns columns, int column, double value)
     {
         if (column >= model.Blocks.Length)
         {
             var exponent = (Complex)columns.Exponents[column - model.Blocks.Length];
-            return new ModeResult(ModeNames.Forced(exponent), true, false, exponent, 1, [], own, value);
+            return new ModeResult(ModeNames.Forced(exponent), true, false, exponent, 1, [], value);
         }
 
-        var groups = PoleGroups.Of([model.Blocks[column]]);
+        if (!natural.TryGetValue((model, column), out var mode))
+        {
+            natural.Add((model, column), mode = Natural(model, column));
+        }
+
+        return mode with { IsDriven = columns.IsJoined[column], Value = value };
+    }
+
+    private ModeResult Natural(IntervalModel model, int block)
+    {
+        var groups = PoleGroups.Of([model.Blocks[block]]);
         var count = groups.Sum(g => g.Multiplicity);
         var pole = groups.Aggregate(Complex.Zero, (sum, g) => sum + (g.Multiplicity * g.Value)) / count;
-        var parts = energy.Shares(model, column)
+        var parts = energy.Shares(model, block)
             .OrderByDescending(p => Math.Round(p.Share, 2)).ToImmutableArray(); // halves stand as written
-        return new ModeResult(
-            ModeNames.Natural(pole, count, parts), false, columns.IsJoined[column], pole, count, parts, own,
-            value);
+        return new ModeResult(ModeNames.Natural(pole, count, parts), false, false, pole, count, parts, 0);
     }
 }

@@ -14,7 +14,7 @@ public static partial class HtmlReport
     {
         string?[] lines = [PeakWords.Of(result, observed, atMax), PhaseWords.Of(result, observed, atMax)];
         return Markup.Join(lines.OfType<string>()
-            .Select(line => Markup.Of($"<p class=\"words\">{line}</p>\n")));
+            .Select(line => Markup.Of($"<p class=\"words\">{Whole(line)}</p>\n")));
     }
 
     private static Markup Breakdowns(TransientResult result, ObservationResult observed, bool atMax)
@@ -92,8 +92,8 @@ public static partial class HtmlReport
             <tbody>
             {Markup.Join(rows)}</tbody>
             </table></div>
-            <p class="aside breakdown">{joint}Stored then: {Number(breakdown.StoredEnergy, "J")}, of which
-            {Number(breakdown.JointEnergy, "J")} belongs to no mode alone.</p>
+            <p class="aside breakdown">{joint}Stored then: {Number(breakdown.Energies?.Stored, "J")}, of
+            which {Number(breakdown.Energies?.Joint, "J")} belongs to no mode alone.</p>
 
             """);
     }
@@ -110,7 +110,7 @@ public static partial class HtmlReport
             <tr><th scope="row">{Markup.Name(mode.Name)}{driven}</th>
             <td class="number">{Signed(Cleaned(mode.Value, observed), observed.Unit)}</td>
             <td class="number">{(total != 0 ? Percent(mode.Value / total) : "")}</td>{Markup.Join(cells)}
-            <td class="number">{Number(mode.Energy, "J")}</td></tr>
+            <td class="number">{Number(breakdown.Energies?.Own[m], "J")}</td></tr>
 
             """);
     }

@@ -28,7 +28,7 @@ internal sealed record ScanFrame(
         yield return new TextShape(
             Left, Top - 12, Fonts.Fitted(title, 14, PlotPanel.Width - Left - 20, isStrong: true), 14,
             PlotStyle.Ink, IsStrong: true);
-        yield return new RectangleShape(Left, Top, Right - Left, Height, "#fbfcfc");
+        yield return new RectangleShape(Left, Top, Right - Left, Height, PlotStyle.Ground);
         var levels = Level.Ticks(Unit, 5);
         foreach (var (value, label) in levels.Marks)
         {

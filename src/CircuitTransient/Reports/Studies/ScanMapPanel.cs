@@ -10,6 +10,7 @@ internal sealed class ScanMapPanel
 {
     private const double Height = 420;
     private const int MostCells = 80; // a side; finer maps are drawn from every second point or fewer
+    private const int MostDots = 80; // more would hide their line
     private const double Right = ScanFrame.Right;
 
     private readonly ScanResult result;
@@ -198,7 +199,7 @@ internal sealed class ScanMapPanel
             yield return new LineShape(from.X, from.Y, to.X, to.Y, new Stroke(PlotStyle.Limit, 1.6));
         }
 
-        foreach (var found in finding.Breaks)
+        foreach (var found in finding.Breaks.Length <= MostDots ? finding.Breaks : [])
         {
             yield return new DiscShape(
                 across.Place(found.At[0]), upwards.Place(found.At[1]), 2.4, PlotStyle.Limit);
@@ -206,9 +207,10 @@ internal sealed class ScanMapPanel
 
         if (!finding.Breaks.IsEmpty)
         {
-            yield return new DiscShape(Right + 26, top + 32, 2.5, PlotStyle.Limit);
+            yield return new LineShape(
+                Right + 22, top + 32, Right + 36, top + 32, new Stroke(PlotStyle.Limit, 1.6));
             yield return new TextShape(
-                Right + 34, top + 36, "begins to break", ScanFrame.Small, PlotStyle.Limit);
+                Right + 42, top + 36, "begins to break", ScanFrame.Small, PlotStyle.Limit);
         }
     }
 

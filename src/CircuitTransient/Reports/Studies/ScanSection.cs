@@ -12,9 +12,21 @@ public static class ScanSection
         Markup.Of($"""
             <p class="lead">{ScanSummary.Verdict(result)}</p>
             {Judged(result)}
-            <figure class="picture">{Markup.Picture(ScanPlot.Svg(result))}</figure>
+            {Picture(result)}
             <p class="aside">{ScanSummary.Searched(result)} All points stand in scan.csv and scan.json.</p>
             """));
+
+    // Lines follow the reader's colours; the shades of a map are made for white paper and keep it.
+    private static Markup Picture(ScanResult result)
+    {
+        using var fonts = new PlotFonts();
+        var drawing = ScanPlot.Draw(result, fonts);
+        var svg = result.Axes.Length > 1
+            ? Markup.Picture(SvgRenderer.Write(drawing))
+            : HtmlReport.Themed(drawing);
+        var kind = result.Axes.Length > 1 ? "map" : "picture";
+        return Markup.Of($"""<div class="wide"><figure class="{kind}">{svg}</figure></div>""");
+    }
 
     private static Markup Judged(ScanResult result)
     {
