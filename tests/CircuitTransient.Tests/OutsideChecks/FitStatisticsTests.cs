@@ -1,6 +1,5 @@
 using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
-using CircuitTransient.Studies;
 using CircuitTransient.Studies.Overlays;
 using CircuitTransient.Studies.Records;
 using CircuitTransient.Tests.Studies.Overlays;

@@ -24,8 +24,8 @@ internal static class OverlayWords
             null => records,
             { Converged: false } => $"The fit did not come to rest. {records}",
             { IsResolved: true } fit when wrong == 0 => $"The records determine {Names(fit)}. {records}",
-            { IsResolved: true } fit => $"{records} The values are the best of this model, and no better than "
-                + $"it: {Names(fit)}.",
+            { IsResolved: true } fit => $"{records} The values of {Names(fit)} are the best this model can "
+                + "do, and no better than it.",
             { } fit => $"{Refused(fit)} {records}",
         };
     }

@@ -60,13 +60,14 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
             return null;
         }
 
-        // A ring repeats itself: among places that fit alike the one whose gain is nearest to one is likeliest.
+        // A ring repeats itself: of places that fit alike the one whose gain is nearest to one is likeliest.
         var least = tried.Min(t => t.Cost);
         var alike = tried.Where(t => t.Cost <= AsGood * least)
             .OrderBy(t => Math.Abs(Math.Log(Math.Abs(t.X[1])))).ToArray();
         var best = alike[0].X;
         var step = (samples.Times[^1] - samples.Times[0]) / samples.Count;
-        Other = alike.Select(t => (double?)t.X[0]).FirstOrDefault(o => Math.Abs(o!.Value - best[0]) > 2 * step);
+        Other = alike.Select(t => (double?)t.X[0])
+            .FirstOrDefault(o => Math.Abs(o!.Value - best[0]) > 2 * step);
         return Finish(samples, best);
     }
 

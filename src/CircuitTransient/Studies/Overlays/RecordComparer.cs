@@ -101,8 +101,8 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
     {
         if (alignment.Other is { } other)
         {
-            remarks.Add($"it fits as well at an offset of {EngineeringNumber.Format(other, "s")}: `--offset` or "
-                + "`--gain` would settle it");
+            remarks.Add($"it fits as well at an offset of {EngineeringNumber.Format(other, "s")}: `--offset` "
+                + "or `--gain` would settle it");
         }
 
         var mean = aligned.Compared.Values.Average();

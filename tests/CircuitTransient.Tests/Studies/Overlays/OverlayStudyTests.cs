@@ -96,7 +96,8 @@ public class OverlayStudyTests
     public void A_stray_inductance_is_named_with_the_part_it_is_in_series_with()
     {
         // In series with the capacitor it lets the node jump; elsewhere in the loop it would not.
-        var bench = Ring.Replace("C1 from x to ground", "C1 from y to ground") + "\ninductor L9 from x to y : 2 µH\n";
+        var bench = Ring.Replace("C1 from x to ground", "C1 from y to ground")
+            + "\ninductor L9 from x to y : 2 µH\n";
 
         var compared = Compare(Ring, Sampled(bench, 600, t => t, v => v, noise: 0.02));
 
