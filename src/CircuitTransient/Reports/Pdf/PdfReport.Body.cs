@@ -13,7 +13,7 @@ public static partial class PdfReport
     private const int LettersPerLine = 80; // of the wider column
     private const double OnePanel = PdfPages.TextWidth / PlotPanel.Width;
     private const double TwoPanels = 0.5;
-    private const double SmallestPanels = 0.4; // rather than smaller ones, the tables take a page of their own
+    private const double SmallestPanels = 0.4; // past that the tables take a page of their own
 
     private static void AddEvents(PdfPages pages, TransientResult result)
     {
@@ -102,7 +102,8 @@ public static partial class PdfReport
             .OrderByDescending(s => Math.Abs(s.Value ?? 0)).ToArray();
         var largest = Math.Max(shares.Max(s => Math.Abs(s.Value ?? 0)), double.Epsilon);
         pages.SideBySide(
-            AddShares, () => AddSince(pages, observed, atMax, total), HeightOfCauses(result, observed, atMax));
+            AddShares, () => AddSince(pages, observed, atMax, total),
+            HeightOfCauses(result, observed, atMax));
 
         void AddShares()
         {
