@@ -117,7 +117,8 @@ internal sealed class ScanFunction
         };
         return part is not null
             ? part.Ratings[figure.Rating].Kind is RatingKind.JouleIntegral or RatingKind.MeanPower
-                || (part.Ratings[figure.Rating].Kind == RatingKind.Energy && part is not (Capacitor or Inductor))
+                || (part.Ratings[figure.Rating].Kind == RatingKind.Energy
+                    && part is not (Capacitor or Inductor))
             : quantity is not null and not Circuits.Figure
                 && QuantityFactors.OfAny(circuit, quantity) is { IsIntegrated: true };
     }
