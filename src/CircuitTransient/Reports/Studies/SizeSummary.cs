@@ -25,6 +25,7 @@ public static class SizeSummary
         var circuit = result.Problem.File;
         text.Title(circuit.Title is { } title ? $"{title} ({circuit.Source.Name})" : circuit.Source.Name);
         text.Paragraph(SizeWords.Verdict(result), indent: 0);
+        text.Paragraph(SizeWords.AsItStands(result), indent: 0);
         WriteChosen(text, result);
         WriteConflict(text, result);
         WriteIntervals(text, result);
