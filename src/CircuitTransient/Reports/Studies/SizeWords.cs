@@ -81,10 +81,10 @@ internal static class SizeWords
             ? " at the corners of its tolerances"
             : "";
         var margin = Margin(tightest, point.Worst);
-        return !point.IsSolved ? $"As it stands ({Values(result, point)}) the circuit has no unique solution."
-            : point.Holds
-                ? $"As it stands ({Values(result, point)}) the circuit holds{corners}, {margin} at the tightest."
-                : $"As it stands ({Values(result, point)}) it does not hold{corners}: {tightest.Name}, {margin}.";
+        var values = Values(result, point);
+        return !point.IsSolved ? $"As it stands ({values}) the circuit has no unique solution."
+            : point.Holds ? $"As it stands ({values}) the circuit holds{corners}, {margin} at the tightest."
+            : $"As it stands ({values}) the circuit does not hold{corners}: {tightest.Name}, {margin}.";
     }
 
     /// <summary>Why nothing holds.</summary>
