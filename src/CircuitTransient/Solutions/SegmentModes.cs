@@ -137,8 +137,9 @@ internal sealed class SegmentModes
             AddForcedTerms(sums, forcing.Exponent, a * factor, s * factor);
         }
 
+        // Beside a sine nothing is at rest: a constant written as one and a swing would only cancel.
         if (isBeside && block.Size == 1
-            && motion.Forcings.FirstOrDefault(f => IsJoined(b, f, out _)) is { } kept)
+            && motion.Forcings.FirstOrDefault(f => f.Exponent.Im.IsZero && IsJoined(b, f, out _)) is { } kept)
         {
             AddBesideForced(sums, b, kept, row[0] * free[0] * factor);
             return;
