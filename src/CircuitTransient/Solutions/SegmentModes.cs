@@ -223,7 +223,7 @@ internal sealed class SegmentModes
         var drive = block.Size == 1 ? [DoubleDoubleComplex.One] : model.Drive(b, forcing.Input);
         var slopes = all.Exists(f => f.Exponent == forcing.Exponent && !f.Slope.IsZero);
         modes.Add(new Mode(ModeKind.Joined, BlockResponse.Join(block, drive, forcing.Exponent, slopes),
-            block.Size, b));
+            block.Size, model.FirstAlike(b)));
     }
 
     private bool IsNear(SpectralBlock block, DoubleDoubleComplex exponent)
@@ -240,5 +240,5 @@ internal sealed class SegmentModes
     }
 
     private (int, DoubleDoubleComplex, int) Key(int block, Forcing forcing) =>
-        (block, forcing.Exponent, model.Blocks[block].Size == 1 ? -1 : forcing.Input);
+        (model.FirstAlike(block), forcing.Exponent, model.Blocks[block].Size == 1 ? -1 : forcing.Input);
 }
