@@ -106,9 +106,10 @@ public sealed class SpreadRun(
         Directory.CreateDirectory(Path.GetDirectoryName(partial)!);
         using var unfinished = new UnfinishedFile(partial, SpreadPartial.Write(study, sha256, options));
         unfinished.Finish();
+        var folder = delivery.Folder == "output" ? "" : $" --out {delivery.Folder}";
         streams.Error.WriteLine(
-            $"stopped after {study.DrawsDone:N0} of {options.Draws:N0} draws; go on with "
-            + $"`circuit-transient spread {file} --draws {options.Draws} --seed {options.Seed} --resume`");
+            $"stopped after {study.DrawsDone:N0} of {options.Draws:N0} draws; go on with `circuit-transient "
+            + $"spread {file} --draws {options.Draws} --seed {options.Seed}{folder} --resume`");
     }
 
     private int HandOver(string file, SpreadResult result, CircuitFile reading, string? partial)

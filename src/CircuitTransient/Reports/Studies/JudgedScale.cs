@@ -13,7 +13,8 @@ namespace CircuitTransient.Reports.Studies;
 /// <param name="LimitWords">The bound in words.</param>
 internal sealed record JudgedScale(string Unit, string Name, double? Limit, string LimitWords)
 {
-    private double Factor { get; init; } = 1;
+    /// <summary>By what the figure is multiplied on the way to this scale.</summary>
+    public double Factor { get; private init; } = 1;
 
     private double Shift { get; init; }
 

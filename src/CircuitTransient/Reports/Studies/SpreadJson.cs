@@ -37,6 +37,7 @@ public static class SpreadJson
         json.Object("search", () => WriteAccount(json, spread));
         json.Objects("figures", spread.Figures, figure => WriteFigure(json, spread, figure));
         WriteWorst(json, spread);
+        SensitivityJson.Write(json, spread);
         WriteDraws(json, spread);
         json.Array("selfChecks", spread.Nominal.SelfChecks, check => WriteCheck(json, "nominal", check));
         json.WriteEndObject();
@@ -64,6 +65,7 @@ public static class SpreadJson
         json.WritePropertyName("unsolvablePoint");
         WriteNumbers(json, account.UnsolvablePoint);
         json.Number("largestCorrection", account.LargestCorrection);
+        json.WriteString("whyExact", account.WhyExact);
         json.WriteString("words", SpreadWords.Account(spread));
     }
 
@@ -108,6 +110,7 @@ public static class SpreadJson
             json.Number("time", extreme.Time);
             json.Number("reached", extreme.Reached);
             json.WriteBoolean("corner", extreme.IsCorner);
+            json.Number("atWorstCorner", extreme.AtWorstCorner);
             json.WritePropertyName("point");
             WriteNumbers(json, extreme.Point);
             json.Array("matters", extreme.Matters, json.WriteBooleanValue);
@@ -159,6 +162,16 @@ public static class SpreadJson
             json.WriteString(
                 "drivenBy", SpreadWords.Drivers(worst.Point).Select(i => spread.Varied.Values[i].Name)
                     .FirstOrDefault());
+            json.WritePropertyName("derivativesPointOut");
+            if (worst.IsSteepest is { } isSteepest)
+            {
+                json.WriteBooleanValue(isSteepest);
+            }
+            else
+            {
+                json.WriteNullValue();
+            }
+
             json.Array("selfChecks", worst.Result.SelfChecks, check => WriteCheck(json, "worst", check));
         });
     }
@@ -252,7 +265,8 @@ public static class SpreadJson
         WriteNumbers(json, [interval.Low, interval.High]);
     }
 
-    private static void WriteNumbers(Utf8JsonWriter json, ImmutableArray<double>? numbers)
+    /// <summary>An array of numbers; null where there is none.</summary>
+    internal static void WriteNumbers(Utf8JsonWriter json, ImmutableArray<double>? numbers)
     {
         if (numbers is not { } all)
         {

@@ -10,7 +10,8 @@ namespace CircuitTransient.Reports.Studies;
 public static partial class SpreadSummary
 {
     private const int MostDrivers = 12;
-    private const int BarCells = 24;
+    private const int MostPoles = 6;
+    private const int BarCells = 16;
 
     private static void WriteDraws(SummaryText text, SpreadResult spread)
     {
@@ -82,16 +83,49 @@ public static partial class SpreadSummary
         var order = Enumerable.Range(0, range.Alone.Length)
             .OrderByDescending(i => Width(range.Alone[i]))
             .Take(MostDrivers).ToArray();
-        text.Heading($"What each value alone does to it, from one end of its tolerance to the other");
+        text.Heading("What each value alone does to it, at the ends of its tolerance; then the exact slope");
         var largest = order.Max(i => Width(range.Alone[i]));
+        var shares = spread.Sensitivities.Figures.ElementAtOrDefault(worst.Figure) is { } slopes
+            ? SensitivityFindings.Shares(slopes, spread.Varied.Values)
+            : [];
+        var rows = order.Select(i => ImmutableArray.Create(
+            spread.Varied.Values[i].Name,
+            SpreadWords.Quantity(spread, range, range.Alone[i].AtLowest),
+            $"to {SpreadWords.Quantity(spread, range, range.Alone[i].AtHighest)}",
+            largest > 0 ? new string('█', (int)Math.Round(BarCells * Width(range.Alone[i]) / largest)) : "",
+            SensitivityWords.Signed(SensitivityWords.Relative(spread, worst.Figure, i)),
+            shares.ElementAtOrDefault(i) is { } share ? Percent(share) : ""));
         text.Table(
-            [Prose, Right, Right, Left],
-            order.Select(i => ImmutableArray.Create(
-                spread.Varied.Values[i].Name,
-                SpreadWords.Quantity(spread, range, range.Alone[i].AtLowest),
-                $"to {SpreadWords.Quantity(spread, range, range.Alone[i].AtHighest)}",
-                largest > 0
-                    ? new string('█', (int)Math.Round(BarCells * Width(range.Alone[i]) / largest)) : "")));
+            [Prose, Right, Right, Left, Right, Right],
+            rows.Prepend(["", "at lowest", "at highest", "", "% per %", "of the variance"]));
+        text.Paragraph("the share of the variance is that of first order, from the slopes", hanging: 2);
+        WritePoles(text, spread, worst);
+    }
+
+    /// <summary>The poles of the interval in which the worst value stands.</summary>
+    private static void WritePoles(SummaryText text, SpreadResult spread, WorstCase worst)
+    {
+        var time = worst.Point.Time ?? 0;
+        var interval = spread.Nominal.Intervals.Count(i => i.From <= time) - 1;
+        var found = spread.Sensitivities.Poles.ElementAtOrDefault(interval);
+        var poles = (found.IsDefault ? [] : found)
+            .Where(p => SensitivityWords.Moves(spread, p)).Take(MostPoles).ToArray();
+        if (poles.Length == 0)
+        {
+            return;
+        }
+
+        text.Heading("Poles there, and what moves them, in % per %");
+        text.Table([Prose, Left, Prose], poles.SelectMany(pole => pole.Pole.Imaginary == 0
+            ? new ImmutableArray<string>[]
+            {
+                [SensitivityWords.Pole(pole), "rate", SensitivityWords.RankedMagnitude(spread, pole)],
+            }
+            :
+            [
+                [SensitivityWords.Pole(pole), "frequency", SensitivityWords.RankedMagnitude(spread, pole)],
+                ["", "damping", SensitivityWords.RankedDamping(spread, pole)],
+            ]));
     }
 
     private static double Width(ValueEffect effect) =>

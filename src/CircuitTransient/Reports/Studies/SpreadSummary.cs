@@ -83,7 +83,8 @@ public static partial class SpreadSummary
             text.Heading("The worst case");
             text.Paragraph($"{SpreadWords.Name(spread, range.Figure)}: {reached}{when}{used}", hanging: 2);
             text.Paragraph($"at {SpreadWords.Point(spread, worst.Point)}", hanging: 2);
-            foreach (var words in SpreadWords.Why(spread, range, worst.Point))
+            foreach (var words in SpreadWords.Why(spread, range, worst.Point)
+                .Append(SpreadWords.Steepness(worst)).OfType<string>())
             {
                 text.Paragraph(words, hanging: 2);
             }
@@ -112,26 +113,46 @@ public static partial class SpreadSummary
             Value(f, f.Nominal),
             Value(f, f.Least?.Value),
             Value(f, f.Greatest?.Value),
-            f.Worst is { IsCorner: false } ? "between the corners" : ""));
+            Between(f)));
         text.Table(
-            [Prose, Right, Right, Right, Left], rows.Prepend(["", "nominal", "least", "greatest", ""]));
+            [Prose, Right, Right, Right, Prose], rows.Prepend(["", "nominal", "least", "greatest", ""]));
         if (observed.Length > MostFigures)
         {
             text.Paragraph($"and {observed.Length - MostFigures} more, in spread.json");
         }
 
-        foreach (var (range, jump) in spread.Figures
-            .SelectMany(f => new[] { f.Least, f.Greatest }.Where(p => p is not null)
-                .SelectMany(p => p!.Jumps
-                    .Where(j => j.IsOfValue || (p == f.Worst && f.Holds is not null))
-                    .Select(j => (f, j))))
-            .Where(pair => spread.Worst is null || pair.f != spread.Figures[spread.Worst.Figure]))
+        foreach (var range in spread.Figures)
+        {
+            WriteJumps(text, spread, range, range.Least, "its least value");
+            WriteJumps(text, spread, range, range.Greatest, "its greatest value");
+        }
+    }
+
+    /// <summary>Jumps of a figure, and those of the instant at which a judged one is worst; those of the
+    /// worst case have been told.</summary>
+    private static void WriteJumps(
+        SummaryText text, SpreadResult spread, FigureRange range, ExtremePoint? point, string to)
+    {
+        if (point is null || point == spread.Worst?.Point)
+        {
+            return;
+        }
+
+        foreach (var jump in point.Jumps
+            .Where(j => j.IsOfValue || (point == range.Worst && range.Holds is not null)))
         {
             text.Paragraph(
-                $"{SpreadWords.Name(spread, range.Figure)}: {SpreadWords.Jump(range.Figure, jump)}",
+                $"{SpreadWords.Name(spread, range.Figure)}: {SpreadWords.Jump(range.Figure, jump, to)}",
                 hanging: 2);
         }
     }
+
+    private static string Between(FigureRange range) =>
+        string.Join("; ", new[] { range.Least, range.Greatest }
+            .Where(p => p is { IsCorner: false })
+            .Select(p => p!.AtWorstCorner is { } corner
+                ? $"between the corners, at which {Number(corner, range.Figure.Unit)}"
+                : "between the corners"));
 
     private static string Value(FigureRange range, double? value) =>
         value is { } number && double.IsFinite(number) ? Number(number, range.Figure.Unit) : "none";

@@ -97,9 +97,15 @@ internal static partial class SpreadWords
 
         foreach (var jump in point.Jumps)
         {
-            yield return Jump(range.Figure, jump);
+            yield return Jump(range.Figure, jump, "that point");
         }
     }
+
+    /// <summary>What the derivatives at the worst case prove; null where they prove nothing.</summary>
+    public static string? Steepness(WorstCase worst) => worst.IsSteepest == true
+        ? "there every value's own derivative points out of its tolerance: no small change within makes it "
+            + "worse"
+        : null;
 
     /// <summary>Which value drives an extreme most: the one whose return to nominal changes it
     /// most.</summary>
@@ -146,10 +152,13 @@ internal static partial class SpreadWords
     }
 
     /// <summary>A jump in words.</summary>
-    public static string Jump(StudyFigure figure, FigureJump jump)
+    /// <param name="figure">What jumps.</param>
+    /// <param name="jump">How.</param>
+    /// <param name="to">What lies at the end of the way.</param>
+    public static string Jump(StudyFigure figure, FigureJump jump, string to)
     {
         var unit = figure.Kind == StudyFigureKind.RatingUsed ? "" : figure.Unit;
-        var where = $"{Percent(jump.Place)} of the way from nominal to that point";
+        var where = $"{Percent(jump.Place)} of the way from nominal to {to}";
         return jump.IsOfValue
             ? $"it jumps from {Number(jump.ValueBefore, unit)} to {Number(jump.ValueAfter, unit)} at {where}"
             : $"its instant jumps from {Number(jump.TimeBefore, "s")} to {Number(jump.TimeAfter, "s")} at "

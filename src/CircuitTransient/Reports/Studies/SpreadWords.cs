@@ -63,10 +63,12 @@ internal static partial class SpreadWords
             : $"{account.CornerPoints:N0} of the {all} corners of {toleranced} a tolerance were solved, "
                 + "chosen by each value's own effect, at random, and by exchanging single values for as long "
                 + "as that helped";
+        var exact = account.WhyExact is { } why ? $" The exact engine solved every point ({why})." : "";
         return account.WorseInside == 0
-            ? $"{corners}; {inside} gave nothing worse: searched there, not proven."
+            ? $"{corners}; {inside} gave nothing worse: searched there, not proven.{exact}"
             : $"{corners}, and {inside}; {Count(account.WorseInside, "extreme")} lie"
-                + $"{(account.WorseInside == 1 ? "s" : "")} between the corners: searched there, not proven.";
+                + $"{(account.WorseInside == 1 ? "s" : "")} between the corners: searched there, not "
+                + $"proven.{exact}";
     }
 
     /// <summary>The values of a point that matter: <c>Supply 1.025 kV (+10 %)</c>.</summary>
@@ -124,7 +126,8 @@ internal static partial class SpreadWords
     public static string Method(SpreadResult spread) =>
         $"{Design(spread.Draws!.Draws)}, seed {spread.Options.Seed}; each value evenly within its limits, or "
             + "normal and cut at them, three standard deviations from the middle. The intervals are those of "
-            + "independent draws, and cautious for these, which are spread more evenly.";
+            + "independent draws, and cautious for these, which are spread more evenly. "
+            + "Draws are evaluated in double precision, good to a millionth; extremes by the exact engine.";
 
     /// <summary>A probability in per cent, with more digits near 0 and 1.</summary>
     public static string Share(double fraction) =>

@@ -13,13 +13,16 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
     private readonly BestPoints best = new(batch.Figures.Length);
     private readonly Dictionary<string, CauseReading?> readings = new(StringComparer.Ordinal);
     private readonly ExactFigures exact = new(batch.Figures, batch.Cancellation);
+    private readonly List<(BestPoints.Best Least, BestPoints.Best Greatest)> corner = [];
     private double largestCorrection;
 
     /// <summary>Searches.</summary>
     public (SearchAccount Account, ImmutableArray<FigureRange> Figures) Run(Action<SpreadProgress> report)
     {
         var alone = Alone();
-        var all = ranges.Count <= SpreadOptions.MostValuesAtCorners;
+        var all = ranges.Count <= (batch.WhyExact is null
+            ? SpreadOptions.MostValuesAtCorners
+            : SpreadOptions.MostValuesAtExactCorners);
         var corners = new CornerSearch(batch, ranges, best);
         var count = Math.Pow(2, ranges.Count);
         var before = best.Solved;
@@ -35,6 +38,11 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         }
 
         var cornerPoints = best.Solved - before;
+        for (var f = 0; f < batch.Figures.Length; f++)
+        {
+            corner.Add((best[f, -1], best[f, 1]));
+        }
+
         var inside = new InteriorSearch(batch, ranges, best)
             .Run(done => report(new SpreadProgress("between the corners", done, 0)));
         var figures = ImmutableArray.CreateBuilder<FigureRange>();
@@ -128,6 +136,8 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         return new ExtremePoint(
             [.. point], matters, value, solved.Time, ranges.IsCorner(point), Returns(f, point))
         {
+            AtWorstCorner = ranges.IsCorner(point) ? null
+                : Exact(sign > 0 ? corner[f].Greatest.Point : corner[f].Least.Point, f).Value,
             Reached = Judgement.IsJudged(figure) ? reached : value,
             Causes = causes,
             Jumps = moves ? [.. new JumpSearch(batch, ranges.Nominal).Find(f, point)] : [],

@@ -24,7 +24,8 @@ internal sealed class PointBatch
     {
         (Varied, Figures, Cancellation, this.threads) = (varied, figures, cancellation, threads);
         (kernel, var reason) = DrawKernel.For(varied, figures, cancellation);
-        WhyExact = reason ?? kernel!.Unserved.FirstOrDefault(u => u is not null);
+        var unserved = kernel?.Unserved.Select((why, f) => why is null ? null : $"{figures[f].Name}: {why}");
+        WhyExact = reason ?? unserved!.FirstOrDefault(words => words is not null);
     }
 
     /// <summary>The circuit and what varies in it.</summary>

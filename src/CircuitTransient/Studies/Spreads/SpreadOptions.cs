@@ -12,6 +12,9 @@ public sealed record SpreadOptions(long Draws, ulong Seed, int Threads)
     /// <summary>The most values whose corners are all solved: 65 536 of them.</summary>
     public const int MostValuesAtCorners = 16;
 
+    /// <summary>The same where the exact engine must solve every point: 4096 of them.</summary>
+    public const int MostValuesAtExactCorners = 12;
+
     /// <summary>The most draws of a study.</summary>
     public const int MostDraws = 100_000_000;
 }

@@ -12,9 +12,11 @@ namespace CircuitTransient.Studies.Spreads;
 /// <param name="Figures">Every figure followed, with its extremes.</param>
 /// <param name="Worst">The worst case, taken apart; null where no figure has one.</param>
 /// <param name="Draws">The random draws; null where none were asked for.</param>
+/// <param name="Sensitivities">The exact derivatives with every value nominal.</param>
 public sealed record SpreadResult(
     VariedCircuit Varied, SpreadOptions Options, TransientResult Nominal, SearchAccount Account,
-    ImmutableArray<FigureRange> Figures, WorstCase? Worst, DrawFindings? Draws)
+    ImmutableArray<FigureRange> Figures, WorstCase? Worst, DrawFindings? Draws,
+    SensitivityFindings Sensitivities)
 {
     /// <summary>Whether every requirement and rating holds with every tolerance, as far as the search
     /// saw.</summary>
@@ -82,6 +84,9 @@ public sealed record ExtremePoint(
     /// <summary>What the quantity of a requirement or rating reaches; of other figures the value.</summary>
     public double? Reached { get; init; }
 
+    /// <summary>Of an extreme that stands between the corners: the figure at the worst corner.</summary>
+    public double? AtWorstCorner { get; init; }
+
     /// <summary>What each cause has in it; empty where the figure is not split.</summary>
     public ImmutableArray<CauseValue> Causes { get; init; } = [];
 
@@ -105,7 +110,10 @@ public sealed record FigureJump(
 /// <param name="Used">How much of what is allowed it takes; over 1 where it is broken; NaN where nothing is
 /// required or rated.</param>
 /// <param name="Result">The circuit at that point, measured and checked like any other.</param>
-public sealed record WorstCase(int Figure, ExtremePoint Point, double Used, TransientResult Result);
+/// <param name="IsSteepest">Whether at that point every value's own derivative points out of its range, so
+/// that no small change within the ranges makes it worse; null where a derivative is not known.</param>
+public sealed record WorstCase(
+    int Figure, ExtremePoint Point, double Used, TransientResult Result, bool? IsSteepest);
 
 /// <summary>What random draws tell.</summary>
 /// <param name="Draws">How many were made.</param>

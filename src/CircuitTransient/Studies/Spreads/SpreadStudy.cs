@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Measurements;
 using CircuitTransient.Solutions;
+using CircuitTransient.Studies.Sensitivities;
 
 namespace CircuitTransient.Studies.Spreads;
 
@@ -14,6 +15,7 @@ public sealed class SpreadStudy
     private readonly CancellationToken cancellation;
     private readonly SearchAccount account;
     private readonly ImmutableArray<FigureRange> figures;
+    private readonly SensitivityFindings sensitivities;
     private readonly DrawStudy? draws;
 
     /// <summary>Finds the extremes; the draws are still to be made.</summary>
@@ -29,6 +31,8 @@ public sealed class SpreadStudy
         (this.nominal, this.options, this.cancellation) = (nominal, options, cancellation);
         batch = new PointBatch(varied, StudyFigures.Of(varied.Circuit), options.Threads, cancellation);
         (account, figures) = new ExtremeStudy(batch, nominal).Run(report);
+        report(new SpreadProgress("sensitivities", 0, 0));
+        sensitivities = SensitivityFindings.Of(varied, batch.Figures, cancellation);
         draws = options.Draws == 0 ? null : new DrawStudy(batch, options, [.. figures.Select(Between)]);
     }
 
@@ -44,7 +48,8 @@ public sealed class SpreadStudy
             batch.Varied, nominal, draws.FirstPoints(Envelopes.DrawCount(nominal, options.Draws)),
             options.Threads, cancellation);
         return new SpreadResult(
-            batch.Varied, options, nominal, account, figures, Worst(), draws?.Finish(bands));
+            batch.Varied, options, nominal, account, figures, Worst(), draws?.Finish(bands),
+            sensitivities);
     }
 
     /// <summary>Writes the draws made so far.</summary>
@@ -97,9 +102,43 @@ public sealed class SpreadStudy
         var worst = batch.Varied.At([.. point.Point]).Value!;
         var solved = TransientSolver.Solve(worst, CauseList.FromStart(worst), cancellation);
         return solved.Value is { } solution
-            ? new WorstCase(index, point, used,
-                ResultBuilder.Measure(solution, [], AnalysisOptions.Default, cancellation))
+            ? new WorstCase(
+                index, point, used,
+                ResultBuilder.Measure(solution, [], AnalysisOptions.Default, cancellation),
+                IsSteepest(figures[index].Figure, point))
             : null;
+    }
+
+    /// <summary>Whether every derivative at a worst point points out of the ranges.</summary>
+    private bool? IsSteepest(StudyFigure figure, ExtremePoint point)
+    {
+        var derived = SensitivityAnalysis.Of(batch.Varied, point.Point.AsSpan(), cancellation).Value;
+        if (derived?.Of(figure) is not { } slopes)
+        {
+            return null;
+        }
+
+        var sign = figure.Kind is StudyFigureKind.Margin or StudyFigureKind.Minimum ? -1 : 1;
+        bool? isSteepest = true;
+        for (var i = 0; i < point.Point.Length; i++)
+        {
+            if (point.Matters[i] && slopes.Slopes[i] is null)
+            {
+                isSteepest = null;
+            }
+            else if (point.Matters[i])
+            {
+                var tolerance = batch.Varied.Values[i].Tolerance!;
+                var outwards = point.Point[i] == tolerance.Highest ? 1
+                    : point.Point[i] == tolerance.Lowest ? -1 : 0;
+                if (sign * outwards * slopes.Slopes[i] <= 0)
+                {
+                    return false;
+                }
+            }
+        }
+
+        return isSteepest;
     }
 
     private static double Growth(FigureRange figure) =>

@@ -100,7 +100,7 @@ public sealed class FigureTally
 
         foreach (var number in classes ?? [])
         {
-            to.Write(number);
+            to.Write7BitEncodedInt64(number); // most classes are empty or nearly so
         }
     }
 
@@ -118,7 +118,7 @@ public sealed class FigureTally
 
         for (var i = 0; classes is not null && i < ClassCount; i++)
         {
-            classes[i] = from.ReadInt64();
+            classes[i] = from.Read7BitEncodedInt64();
         }
     }
 

@@ -1,0 +1,200 @@
+using System.Text.Json;
+using CircuitTransient.Cli;
+using CircuitTransient.Studies.Spreads;
+using CircuitTransient.Tests.Studies.Spreads;
+
+namespace CircuitTransient.Tests.Cli;
+
+public sealed class SpreadTests : IDisposable
+{
+    private const string Divider = """
+        source   Feed at in : 10 V ±10 %
+        resistor R1 from in to a : 100 Ω ±5 %
+        resistor R2 from a to ground : 100 Ω ±5 %
+        capacitor C1 from a to ground : 1 µF
+        require voltage of a at most 5.6 V
+        until 2 ms
+        """;
+
+    private readonly CommandLine commandLine = new();
+
+    public void Dispose() => commandLine.Dispose();
+
+    [Fact]
+    public void A_circuit_that_holds_with_every_tolerance_ends_with_0_and_its_files()
+    {
+        var run = Spread(Divider.Replace("5.6 V", "6 V", StringComparison.Ordinal), "--draws", "50");
+
+        Assert.Equal((ExitStatus.Success, ""), (run.Status, run.Error));
+        Assert.Contains("Holds with every tolerance: the requirement holds.", run.Output);
+        Assert.Equal(
+            [
+                "divider/report.html", "divider/spread.csv", "divider/spread.json", "divider/spread.png",
+                "divider/spread.svg",
+            ],
+            commandLine.Written);
+    }
+
+    [Fact]
+    public void One_that_breaks_at_a_corner_ends_with_1_and_names_it()
+    {
+        var run = Spread(Divider, "--draws", "50");
+
+        // 11 V · 105/(105 + 95) = 5.775 V.
+        Assert.Equal((ExitStatus.RequirementBroken, ""), (run.Status, run.Error));
+        Assert.Contains("Does not hold with every tolerance: the requirement is broken.", run.Output);
+        Assert.Contains("5.775 V", run.Output);
+        Assert.Contains("Feed 11.00 V (+10 %)", run.Output);
+        Assert.Contains("R1 95.00 Ω (-5 %)", run.Output);
+        Assert.Contains("Feed drives it most", run.Output);
+    }
+
+    [Fact]
+    public void The_document_on_stdout_is_the_one_in_the_folder()
+    {
+        var run = Spread(Divider, "--draws", "20", "--json");
+
+        Assert.Equal(File.ReadAllText(Path.Combine(commandLine.Results, "divider/spread.json")), run.Output);
+    }
+
+    [Fact]
+    public void Without_draws_there_are_only_extremes()
+    {
+        var run = Spread(Divider, "--draws", "0", "--json", "--no-files");
+        using var document = JsonDocument.Parse(run.Output);
+
+        Assert.Equal(JsonValueKind.Null, document.RootElement.GetProperty("draws").ValueKind);
+        var worst = document.RootElement.GetProperty("worst");
+        Assert.Equal(5.775, worst.GetProperty("reached").GetDouble(), 1e-9);
+        Assert.Empty(commandLine.Written);
+    }
+
+    [Theory]
+    [InlineData("--draws many", "error: `many` is not a whole number from 0 to 100000000\n")]
+    [InlineData("--draws -1", "error: `-1` is not a whole number from 0 to 100000000\n")]
+    [InlineData("--seed x", "error: `x` is not a whole number from 0 to 2147483647\n")]
+    [InlineData("--write-worst divider.cause", " cannot be written: it exists already")]
+    [InlineData("--resume --no-files", "error: `--resume` needs the folder of results")]
+    [InlineData("--resume", "error: there is nothing to go on with: ")]
+    [InlineData("another.cause", "error: `spread` studies one circuit at a time\n")]
+    public void A_wrong_command_line_ends_with_2_and_says_why(string words, string message)
+    {
+        var circuit = commandLine.Circuit("divider.cause", Divider);
+        var args = words.Split(' ').Select(w => w == "divider.cause" ? circuit : w);
+
+        var run = commandLine.Run(["spread", circuit, "--out", commandLine.Results, .. args]);
+
+        Assert.Equal((ExitStatus.Mistake, ""), (run.Status, run.Output));
+        Assert.Contains(message, run.Error);
+        Assert.Empty(commandLine.Written);
+    }
+
+    [Fact]
+    public void A_circuit_without_tolerances_ends_with_2_and_says_how_to_write_one()
+    {
+        var run = Spread(Circuits.Holding);
+
+        Assert.Equal((ExitStatus.Mistake, ""), (run.Status, run.Output));
+        Assert.Contains("no value has a tolerance, so there is nothing to spread", run.Error);
+    }
+
+    [Fact]
+    public void A_tolerance_that_reaches_zero_ends_with_2() =>
+        Assert.Contains(
+            "the tolerance of `R1` reaches zero",
+            Spread(Divider.Replace("100 Ω ±5 %", "100 Ω ±100 %", StringComparison.Ordinal)).Error);
+
+    [Fact]
+    public void The_worst_case_is_written_as_a_circuit_that_comes_to_the_same()
+    {
+        var worst = Path.Combine(commandLine.Folder, "worst.cause");
+        Spread(Divider, "--draws", "0", "--write-worst", worst);
+
+        Assert.Contains("resistor R1 from in to a : 95 Ω\n", File.ReadAllText(worst));
+        Assert.StartsWith("# The worst case of divider.cause", File.ReadAllText(worst));
+        var again = commandLine.Solve("--json", "--no-files", worst);
+        using var document = JsonDocument.Parse(again.Output);
+        Assert.Equal(
+            5.775,
+            document.RootElement.GetProperty("requirements")[0].GetProperty("worst").GetProperty("value")
+                .GetDouble(),
+            1e-9);
+    }
+
+    [Fact]
+    public void A_worst_case_that_one_line_cannot_say_is_refused_with_the_reason()
+    {
+        var worst = Path.Combine(commandLine.Folder, "worst.cause");
+        var run = Spread(
+            """
+            source Feed at n[1] : 10 V
+            repeat 2 as k
+              resistor R[k] from n[k] to n[k+1] : 100 Ω ±5 %
+            end
+            resistor R3 from n[3] to ground : 10 Ω
+            observe voltage from n[1] to n[2]
+            require voltage from n[1] to n[2] at most 4.8 V
+            until 1 ms
+            """, "--draws", "0", "--write-worst", worst);
+
+        Assert.Equal(ExitStatus.Mistake, run.Status);
+        Assert.Contains("stand in one text, and their values differ", run.Error);
+        Assert.False(File.Exists(worst));
+    }
+
+    [Fact]
+    public void Unfinished_draws_are_taken_up_to_the_same_bytes_and_their_file_goes()
+    {
+        var whole = Spread(Divider, "--draws", "1500", "--json", "--no-files");
+        LeaveUnfinished(Divider, draws: 1500);
+
+        var resumed = Spread(Divider, "--draws", "1500", "--json", "--resume");
+
+        Assert.Equal(whole.Output, resumed.Output);
+        Assert.DoesNotContain("divider/spread.partial", commandLine.Written);
+    }
+
+    [Theory]
+    [InlineData("±10 %", "±9 %", "1500", "it is of another circuit, or the circuit has changed since")]
+    [InlineData("±10 %", "±10 %", "1600", "it was asked for --draws 1500 --seed 1")]
+    public void Unfinished_draws_of_another_study_are_refused(
+        string before, string after, string draws, string reason)
+    {
+        LeaveUnfinished(Divider, draws: 1500);
+
+        var run = Spread(
+            Divider.Replace(before, after, StringComparison.Ordinal), "--draws", draws, "--resume");
+
+        Assert.Equal((ExitStatus.Mistake, ""), (run.Status, run.Output));
+        Assert.Contains($"spread.partial cannot be taken up: {reason}", run.Error);
+    }
+
+    [Fact]
+    public void A_damaged_file_of_unfinished_draws_is_refused()
+    {
+        var path = LeaveUnfinished(Divider, draws: 1500);
+        File.WriteAllBytes(path, File.ReadAllBytes(path)[..^9]);
+
+        Assert.Contains("it is damaged", Spread(Divider, "--draws", "1500", "--resume").Error);
+    }
+
+    private CommandLineAnswer Spread(string text, params string[] args) =>
+        commandLine.Run(
+            ["spread", commandLine.Circuit("divider.cause", text), "--out", commandLine.Results, .. args]);
+
+    /// <summary>What an interruption leaves after the first draws.</summary>
+    private string LeaveUnfinished(string text, int draws)
+    {
+        using var stop =
+            CancellationTokenSource.CreateLinkedTokenSource(TestContext.Current.CancellationToken);
+        var study = Spreading.Study(text, draws, cancellation: stop.Token);
+        Assert.Throws<OperationCanceledException>(() => study.Finish(_ => stop.Cancel()));
+        Assert.InRange(study.DrawsDone, 1, draws - 1);
+        var (varied, _) = Spreading.Varied(text);
+        var path = Path.Combine(commandLine.Results, "divider", SpreadPartial.Name);
+        Directory.CreateDirectory(Path.GetDirectoryName(path)!);
+        File.WriteAllBytes(path, SpreadPartial.Write(
+            study, varied.Circuit.Source.Sha256, new SpreadOptions(draws, 1, 1)));
+        return path;
+    }
+}
