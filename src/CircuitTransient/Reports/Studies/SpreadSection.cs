@@ -19,6 +19,7 @@ public static class SpreadSection
             <div class="wide"><figure class="picture">{HtmlReport.Themed(SpreadPlot.Draw(spread, fonts))}
             </figure></div>
             {Draws(spread)}{Extremes(spread)}{Sensitivities(spread)}
+            <p>{SpreadWords.Checks(spread)}</p>
             <p class="aside">Everything stands in spread.json, the first draws one by one in spread.csv.</p>
             """));
     }

@@ -83,6 +83,11 @@ public static partial class SpreadSummary
         var order = Enumerable.Range(0, range.Alone.Length)
             .OrderByDescending(i => Width(range.Alone[i]))
             .Take(MostDrivers).ToArray();
+        if (!order.Any(i => Width(range.Alone[i]) > 0))
+        {
+            return;
+        }
+
         text.Heading("What each value alone does to it, at the ends of its tolerance; then the exact slope");
         var largest = order.Max(i => Width(range.Alone[i]));
         var shares = spread.Sensitivities.Figures.ElementAtOrDefault(worst.Figure) is { } slopes

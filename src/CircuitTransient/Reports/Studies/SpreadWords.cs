@@ -90,8 +90,8 @@ internal static partial class SpreadWords
             + rest switch
             {
                 0 => "",
-                1 => "; one value does not matter",
-                _ => $"; {rest} values do not matter",
+                1 => "; the other one nominal",
+                _ => $"; the other {rest} nominal",
             };
     }
 
@@ -148,6 +148,17 @@ internal static partial class SpreadWords
         StudyFigureKind.RatingUsed => "rating",
         _ => throw new System.Diagnostics.UnreachableException($"no word for {figure.Kind}"),
     };
+
+    /// <summary>That all self-checks hold, nominal and at the worst case.</summary>
+    public static string Checks(SpreadResult spread)
+    {
+        var checks = spread.Nominal.SelfChecks.Concat(spread.Worst?.Result.SelfChecks ?? []).ToArray();
+        var failed = checks.Count(check => !check.Holds);
+        var where = "with every value nominal" + (spread.Worst is null ? "" : " and at the worst case");
+        return failed == 0
+            ? $"Self-checks: all {checks.Length} hold, {where}."
+            : $"Self-checks: {failed} of {checks.Length} FAILED, {where}.";
+    }
 
     /// <summary>How the draws are spread.</summary>
     public static string Design(long draws) => draws <= LatinHypercube.MostInCube
