@@ -44,8 +44,9 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
             return ExitStatus.NoUniqueSolution;
         }
 
+        var document = ScanJson.Write(result);
         return new StudyDelivery(options.Study, streams, cancellation).HandOver(
-            file, () => Files(file, result, reading), ScanJson.Write(result),
+            file, () => Files(file, result, document, reading), document,
             written => ScanSummary.Write(result, written, streams.IsColoured),
             result.UnsolvedCount > 0 ? ExitStatus.NoUniqueSolution
                 : result.AllHold ? ExitStatus.Success
@@ -65,12 +66,13 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
         }
     }
 
-    private ImmutableArray<OutputFile> Files(string file, ScanResult result, CircuitFile reading)
+    private ImmutableArray<OutputFile> Files(
+        string file, ScanResult result, string document, CircuitFile reading)
     {
         // The picture takes as long as all else together, and a second core is mostly there.
         var picture = Task.Run(() => ScanPlot.Png(result));
         var files = ImmutableArray.CreateBuilder<OutputFile>();
-        files.Add(OutputFile.OfText("scan.json", ScanJson.Write(result)));
+        files.Add(OutputFile.OfText("scan.json", document));
         files.Add(OutputFile.OfText("scan.csv", ScanCsv.Write(result)));
         files.Add(OutputFile.OfText("scan.svg", ScanPlot.Svg(result)));
         if (Page(file, result, reading) is { } page)

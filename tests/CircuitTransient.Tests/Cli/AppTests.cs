@@ -15,8 +15,8 @@ public sealed class AppTests : IDisposable
     [InlineData("slove",
         "error: there is no command `slove`; did you mean `solve`?\nsee `circuit-transient --help`\n")]
     [InlineData("draw",
-        "error: there is no command `draw`, only check, solve, spread, scan, size, formula, overlay, compare\n"
-        + "see `circuit-transient --help`\n")]
+        "error: there is no command `draw`, only check, solve, spread, scan, size, formula, overlay, "
+        + "compare\nsee `circuit-transient --help`\n")]
     [InlineData("solve a.cause --strct",
         "error: there is no option `--strct`; did you mean `--strict`?\n"
         + "see `circuit-transient solve --help`\n")]

@@ -18,6 +18,7 @@ internal sealed class ScanCurvePanel
     private readonly ScanScale scale;
     private readonly ScanFrame frame;
     private readonly ImmutableArray<PlotPoint> samples;
+    private readonly ImmutableArray<double> solvedAt;
     private readonly string name;
     private readonly string unit;
     private readonly string limitWords = "";
@@ -45,6 +46,7 @@ internal sealed class ScanCurvePanel
             (limit, limitWords) = (0, "no margin left");
         }
 
+        solvedAt = [.. points.Where(p => p.Found is not null).Select(p => p.At[0])];
         samples = Samples(points, index);
         var shown = samples.Select(s => s.Y).ToArray();
         var (least, greatest) = ScanFrame.Range(shown);
@@ -151,6 +153,8 @@ internal sealed class ScanCurvePanel
         }
     }
 
+    private bool IsHeld(double x) => finding.Holding.Any(s => x >= s.From && x <= s.To);
+
     private IEnumerable<Shape> BrokenStretches()
     {
         if (!finding.IsJudged)
@@ -161,7 +165,7 @@ internal sealed class ScanCurvePanel
         var edge = axis.From;
         foreach (var stretch in finding.Holding.Append(new ScanStretch(axis.To, axis.To)))
         {
-            if (stretch.From > edge)
+            if (stretch.From > edge && solvedAt.Any(x => x >= edge && x <= stretch.From && !IsHeld(x)))
             {
                 var (left, right) = (scale.Place(edge), scale.Place(stretch.From));
                 yield return new RectangleShape(

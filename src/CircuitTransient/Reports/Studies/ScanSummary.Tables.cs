@@ -28,9 +28,12 @@ public static partial class ScanSummary
     }
 
     /// <summary>Over which stretches something judged holds.</summary>
-    internal static string Held(ScanResult result, FigureScan finding) => result.Axes is [var axis]
-        ? ScanWords.Holding(axis, finding.Holding)
-        : finding.HoldsThroughout ? "holds throughout" : "breaks";
+    internal static string Held(ScanResult result, FigureScan finding) => (result.Axes, result.HasGaps) switch
+    {
+        (_, true) when finding.HoldsThroughout => "holds wherever there is a solution",
+        ([var axis], var hasGaps) => ScanWords.Holding(axis, finding.Holding, hasGaps),
+        _ => finding.HoldsThroughout ? "holds throughout" : "breaks",
+    };
 
     /// <summary>Something judged at its worst.</summary>
     internal static string Worst(ScanResult result, FigureScan finding)

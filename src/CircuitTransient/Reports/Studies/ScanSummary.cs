@@ -106,7 +106,7 @@ public static partial class ScanSummary
         return (common.IsEmpty
             ? $"Something is broken throughout {range}."
             : $"For {ScanWords.Subject(axis)} everything required and rated "
-                + $"{ScanWords.Holding(axis, common)}.") + PreferredThatHold(axis, common);
+                + $"{ScanWords.Holding(axis, common, result.HasGaps)}.") + PreferredThatHold(axis, common);
     }
 
     /// <summary>Which of the preferred values hold, for only those can be bought.</summary>
@@ -122,7 +122,13 @@ public static partial class ScanSummary
         var named = holding.Length is 0 or > few
             ? ""
             : $": {string.Join(", ", holding.Select(v => axis.Say(v, 3)))}";
-        return $" Of the {axis.Values.Length} preferred values {holding.Length} hold{named}.";
+        var count = holding.Length switch
+        {
+            0 => "none holds",
+            1 => "one holds",
+            _ => $"{holding.Length} hold",
+        };
+        return $" Of the {axis.Values.Length} preferred values {count}{named}.";
     }
 
     private static string ScatterVerdict(ScatterResult scatter)

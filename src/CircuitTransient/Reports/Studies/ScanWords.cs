@@ -33,11 +33,19 @@ internal static class ScanWords
         $"{Subject(axis)} from {axis.Say(axis.From)} to {axis.Say(axis.To)}"));
 
     /// <summary>Over which stretches something holds.</summary>
-    public static string Holding(ScanAxis axis, ImmutableArray<ScanStretch> holding)
+    /// <param name="axis">The scanned value.</param>
+    /// <param name="holding">The stretches.</param>
+    /// <param name="hasGaps">Whether some points have no solution, so that not all else breaks.</param>
+    public static string Holding(ScanAxis axis, ImmutableArray<ScanStretch> holding, bool hasGaps)
     {
         if (holding.IsEmpty)
         {
             return "broken throughout";
+        }
+
+        if (hasGaps)
+        {
+            return $"holds only {Stretches(axis, holding)}";
         }
 
         var (first, last) = (holding[0], holding[^1]);

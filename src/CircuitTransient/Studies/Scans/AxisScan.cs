@@ -74,13 +74,16 @@ internal sealed class AxisScan(
 
     private bool IsFlat(ImmutableArray<SlopedSample> given)
     {
-        var values = given.Select(s => s.Y).ToArray();
-        return values.All(double.IsFinite) && values.Max() - values.Min() <= Rounding * scale;
+        // Of what is judged a gap parts the range, so that nothing is said to hold there.
+        var values = given.Select(s => s.Y).Where(y => isJudged || !double.IsNaN(y)).ToArray();
+        return values.Length > 0 && values.All(double.IsFinite)
+            && values.Max() - values.Min() <= Rounding * scale;
     }
 
     private FigureScan Flat(ImmutableArray<SlopedSample> given, Func<double, double?> timeAt)
     {
-        var (first, last) = (given[0], given[^1]);
+        var solved = given.Where(s => s.HasValue).ToArray();
+        var (first, last) = (solved[0], solved[^1]);
         var value = Math.Abs(first.Y) <= Rounding * scale ? 0 : first.Y;
         var place = new ScanPlace([first.X], value, timeAt(first.X), RangeExtremeKind.Flat);
         var holds = !isJudged || Judged(first).Y >= 0;

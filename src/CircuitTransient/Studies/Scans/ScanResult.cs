@@ -26,6 +26,9 @@ public sealed record ScanResult(
     /// <summary>The points at which the circuit has no unique solution, or is none.</summary>
     public int UnsolvedCount => Points.Count(p => p.Found is null) + (Scatter?.UnsolvedCount ?? 0);
 
+    /// <summary>Whether some points of the ranges have no solution.</summary>
+    public bool HasGaps => Points.Any(p => p.Found is null);
+
     /// <summary>Whether slopes were known at any point.</summary>
     public bool HasSlopes => Points.Concat(Scatter?.Points ?? [])
         .Any(p => p.Slopes.Any(double.IsFinite));
