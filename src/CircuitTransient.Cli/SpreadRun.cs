@@ -41,7 +41,8 @@ public sealed class SpreadRun(
         if (!resumes && partial is not null && File.Exists(partial))
         {
             streams.Error.WriteLine(
-                $"{partial} holds unfinished draws, which this run replaces; `--resume` would go on with them");
+                $"{partial} holds unfinished draws, which this run replaces; `--resume` would go on with "
+                + "them");
         }
 
         var reading = CircuitFile.Read(file, streams);
