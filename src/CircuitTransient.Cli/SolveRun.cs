@@ -116,7 +116,8 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
 
     private Answer Finish(string file, TransientResult result)
     {
-        foreach (var warning in result.Warnings)
+        streams.Report([.. result.Warnings.Select(w => w.Diagnostic).OfType<Diagnostic>()]);
+        foreach (var warning in result.Warnings.Where(w => w.Diagnostic is null))
         {
             var place = warning.Line > 0 ? $"{file}:{warning.Line}" : file;
             streams.Error.WriteLine($"{place}: warning: {warning.Text}");

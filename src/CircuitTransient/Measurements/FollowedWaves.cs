@@ -8,7 +8,7 @@ namespace CircuitTransient.Measurements;
 /// <summary>Takes apart by causes what is judged and what is quadratic.</summary>
 public static class FollowedWaves
 {
-    private const int MostTerms = 36;
+    private const int MostTerms = 210; // every pair of twenty causes
     private const int MostTermsInAll = 600; // some ten megabytes at two thousand samples
 
     /// <summary>The waveforms at chosen instants; what has too many terms or is undetermined is left
@@ -20,17 +20,17 @@ public static class FollowedWaves
         var count = 0;
         foreach (var (quantity, from) in Quantities(curves, times).Distinct())
         {
-            var pairs = Pairs(quantity, curves.Solution.Causes.Length).Take(MostTerms + 1).ToArray();
+            var (pairs, terms) = QuantityFactors.Of(curves.Solution.Circuit, quantity) is { } factors
+                ? Factors(factors)
+                : Terms(quantity, from);
             count += pairs.Length;
-            if (pairs.Length > MostTerms || count > MostTermsInAll)
+            if (pairs.Length <= MostTerms && count <= MostTermsInAll)
             {
-                continue;
-            }
-
-            var terms = pairs.Select(pair => Term(curves, quantity, pair, from)).OfType<Curve>().ToArray();
-            if (terms.Length == pairs.Length && terms.Length > 0)
-            {
-                found.Add((quantity, from, pairs, terms));
+                var all = terms.OfType<Curve>().ToArray();
+                if (all.Length == pairs.Length && all.Length > 0)
+                {
+                    found.Add((quantity, from, pairs, all));
+                }
             }
         }
 
@@ -39,8 +39,27 @@ public static class FollowedWaves
         return
         [
             .. found.Select(f => new FollowedWave(
-                f.Quantity, f.From, [.. f.Pairs.Select(p => new WaveTerm(p.Item1, p.Item2, waves[next++]))])),
+                f.Quantity, f.From, [.. f.Pairs.Select(p => new WaveTerm(p.Item1, p.Item2, waves[next++]))])
+            {
+                Factor = QuantityFactors.Of(curves.Solution.Circuit, f.Quantity)?.Factor,
+            }),
         ];
+
+        // A product by its two factors, cause by cause: far fewer than its pairs.
+        ((int, int?)[] Pairs, IEnumerable<Curve?> Terms) Factors(QuantityFactors factors)
+        {
+            Measurand[] sides =
+                factors.First == factors.Second ? [factors.First] : [factors.First, factors.Second];
+            var own = sides.SelectMany(side => Pairs(side, curves.Solution.Causes.Length)
+                .Select(pair => (Side: side, Pair: pair))).ToArray();
+            return ([.. own.Select(o => o.Pair)], own.Select(o => Term(curves, o.Side, o.Pair, 0)));
+        }
+
+        ((int, int?)[] Pairs, IEnumerable<Curve?> Terms) Terms(Measurand quantity, double from)
+        {
+            var pairs = Pairs(quantity, curves.Solution.Causes.Length).Take(MostTerms + 1).ToArray();
+            return (pairs, pairs.Select(pair => Term(curves, quantity, pair, from)));
+        }
     }
 
     private static Curve? Term(

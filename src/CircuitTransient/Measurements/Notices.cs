@@ -13,7 +13,7 @@ internal static class Notices
         TransientSolution solution, ImmutableArray<Diagnostic> warnings,
             ImmutableArray<ObservationResult> observations) =>
     [
-        .. warnings.Select(w => new Notice(w.Source.LineOf(w.Span.Start), w.Message)),
+        .. warnings.Select(Notice.Of),
         .. solution.NeverActed
             .Where(e => Schedule.Resolve(Declared(solution, e), solution.Circuit.Parts) is null)
             .Select(e => NeverActed(solution, e)),
@@ -30,11 +30,13 @@ internal static class Notices
     {
         var declared = Declared(solution, reference);
         var name = solution.Circuit.Parts[reference.Part].Name;
-        return new Notice(
-            solution.Circuit.Source.LineOf(declared.Span.Start),
+        return Notice.Of(Diagnostic.Warning(
+            solution.Circuit.Source,
+            declared.Span,
             declared.Closes
                 ? $"`{name}` never closes within the study: what it waits for does not happen"
                 : $"`{name}` never opens within the study: what it waits for does not happen, so it stays "
-                    + "closed");
+                    + "closed",
+            "let it wait for what is reached, or end the study later with `until`"));
     }
 }

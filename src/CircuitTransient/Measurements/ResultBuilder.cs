@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Breakdowns;
 using CircuitTransient.Measurements.Cautions;
 using CircuitTransient.Measurements.Checks;
 using CircuitTransient.Measurements.Figures;
@@ -81,6 +82,7 @@ public static class ResultBuilder
             IsAfterAsked = options.After is not null,
             By = options.By,
             FollowedWaves = new(() => FollowedWaves.Of(curves, times, waves.Times)),
+            OtherWaves = new(() => OtherBreakdowns.Of(solution, waves, cancellation)),
         };
     }
 

@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
+using CircuitTransient.Measurements.Breakdowns;
 using CircuitTransient.Measurements.Checks;
 using CircuitTransient.Numerics;
 using CircuitTransient.Solutions;
@@ -39,9 +40,7 @@ internal sealed class SinceEventBreakdown(TransientSolution solution, Cancellati
             : null;
     }
 
-    /// <summary>The switchings at an interval's start, in words: <c>Kmain closes</c>.</summary>
-    private string Words(int interval) => string.Join(" and ", solution.Intervals[interval].StartsWith
-        .Select(o => $"{solution.Circuit.Parts[o.Event.Part].Name} {(o.Closes ? "closes" : "opens")}"));
+    private string Words(int interval) => SwitchingWords.Of(solution, interval);
 
     private int LastStartedByEvent(int interval)
     {
@@ -58,17 +57,7 @@ internal sealed class SinceEventBreakdown(TransientSolution solution, Cancellati
         if (!solved.TryGetValue(first, out var known))
         {
             var causes = CausesAt(first);
-            var solver = new IntervalSolver(solution.Layout, causes, cancellation);
-            var stored = StatedStart.Of(solution.Layout, causes);
-            var segments = ImmutableArray.CreateBuilder<Segment>();
-            for (var i = first; i < solution.Intervals.Length; i++)
-            {
-                var interval = solution.Intervals[i];
-                segments.AddRange(solver.Solve(interval.Model, i, interval.From, interval.Until, stored));
-                stored = solver.StoredAtEnd(segments[^1]);
-            }
-
-            known = (causes, segments.ToImmutable());
+            known = (causes, SwitchingWords.SegmentsFrom(solution, first, causes, cancellation));
             solved.Add(first, known);
         }
 

@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements.Breakdowns;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Measurements;
 
@@ -46,6 +47,12 @@ public sealed record TransientResult(
     /// <summary>Those waveforms, evaluated when somebody looks: only a page that scales causes
     /// does.</summary>
     internal Lazy<ImmutableArray<FollowedWave>> FollowedWaves { get; init; } = new([]);
+
+    /// <summary>The observed waveforms broken down otherwise, for a reader who chooses.</summary>
+    public ImmutableArray<OtherBreakdown> OtherBreakdowns => OtherWaves.Value;
+
+    /// <summary>Those waveforms, evaluated when somebody looks.</summary>
+    internal Lazy<ImmutableArray<OtherBreakdown>> OtherWaves { get; init; } = new([]);
 
     /// <summary>What peaks were asked to be broken down by.</summary>
     public Breakdown By { get; init; }
@@ -170,7 +177,13 @@ public sealed record ObservationResult(
 /// <summary>A waveform as a sum of terms, each of which grows with the scale of one cause or with those of
 /// two.</summary>
 /// <param name="From">Since when an integral gathers, in seconds.</param>
-public sealed record FollowedWave(Measurand Quantity, double From, ImmutableArray<WaveTerm> Terms);
+public sealed record FollowedWave(Measurand Quantity, double From, ImmutableArray<WaveTerm> Terms)
+{
+    /// <summary>Where the waveform is a product, what the product of two sums of terms is multiplied by: the
+    /// first half of the terms is one factor, the second half the other; one term a cause, the sum is
+    /// squared. Null where the terms add up to it.</summary>
+    public double? Factor { get; init; }
+}
 
 /// <summary>A term of a waveform.</summary>
 /// <param name="Cause">Index of the cause it grows with.</param>
@@ -255,7 +268,16 @@ public sealed record SelfCheck(string Name, double Worst, double Allowed, bool H
 public sealed record NotJudged(string Name, string Reason);
 
 /// <summary>A warning; line 0 where it belongs to no line.</summary>
-public sealed record Notice(int Line, string Text);
+public sealed record Notice(int Line, string Text)
+{
+    /// <summary>The same with its place in the text and what to do; null where it belongs to no
+    /// place.</summary>
+    public Diagnostic? Diagnostic { get; init; }
+
+    /// <summary>A warning at a place.</summary>
+    public static Notice Of(Diagnostic diagnostic) =>
+        new(diagnostic.Source.LineOf(diagnostic.Span.Start), diagnostic.Message) { Diagnostic = diagnostic };
+}
 
 /// <summary>How grave a caution is.</summary>
 public enum CautionSeverity

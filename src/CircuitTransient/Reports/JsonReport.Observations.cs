@@ -215,7 +215,13 @@ public static partial class JsonReport
     {
         json.WriteStartObject();
         WriteNumber(json, "line", warning.Line > 0 ? warning.Line : null);
+        if (warning.Diagnostic is { } placed)
+        {
+            json.WriteNumber("column", placed.Source.ColumnOf(placed.Span.Start));
+        }
+
         json.WriteString("text", warning.Text);
+        WriteOptional(json, "advice", warning.Diagnostic?.Advice);
         json.WriteEndObject();
     }
 

@@ -30,15 +30,14 @@ internal sealed partial class PlotPanel
         for (var i = 0; i < ends.Length; i++)
         {
             var (name, stroke, y, isStrong) = ends[i];
-            var ink = isStrong ? PlotStyle.Ink : stroke.Colour;
-            shapes.Add(new LineShape(Right + 1, y, Right + 16, places[i], stroke with { Width = 1 }));
+            shapes.Add(new LineShape(Right + 1, y, Right + 19, places[i], stroke with { Width = 2 }));
             shapes.Add(
                 new TextShape(
                     Right + 22,
                     places[i] + 4,
                     fonts.Fitted(name, Small, Width - Right - 26, isStrong),
                     Small,
-                    ink,
+                    PlotStyle.Ink, // the colours of the lines are no colours for small letters
                     IsStrong: isStrong));
         }
     }

@@ -34,7 +34,7 @@ internal sealed partial class PlotPanel
         double top)
     {
         (this.result, this.observation, this.window, this.fonts) = (result, observation, window, fonts);
-        total = PlotTrace.Within(result.SampleTimes, observation.Total, window.From, window.To);
+        total = Curve(observation.Total);
         causes = LargestCauses();
         limits = PlotLimit
             .On(result, observation)
@@ -105,15 +105,17 @@ internal sealed partial class PlotPanel
                         new Trace(
                             contribution.Cause,
                             StyleOf(contribution.Cause, i),
-                            PlotTrace.Within(
-                                result.SampleTimes,
-                                observation.ByCause[i],
-                                window.From,
-                                window.To)))
+                            Curve(observation.ByCause[i])))
                 .Where(trace => trace.Magnitude > SmallestCause * span)
                 .OrderByDescending(trace => trace.Magnitude)
                 .Take(MostCauses),
         ];
+    }
+
+    private ImmutableArray<PlotPoint> Curve(ImmutableArray<double> samples)
+    {
+        var (times, values) = SampleCurve.Refined(result.SampleTimes, samples, window.From, window.To);
+        return PlotTrace.Within(times, values, window.From, window.To);
     }
 
     // A cause keeps its line in every panel; the joint term has no place in the list and comes after it.

@@ -15,6 +15,11 @@ internal static class ReportWords
             ? EngineeringNumber.Format(number, unit)
             : "undetermined";
 
+    /// <summary>What a switch saw just before it acted; nothing is known of the time before the
+    /// start.</summary>
+    public static string Before(EventResult switching, double? value, string unit) =>
+        value is null && switching.Time == 0 ? "not known before the start" : Number(value, unit);
+
     /// <summary>A figure with its sign, a plus too.</summary>
     public static string Signed(double? value, string unit) =>
         value > 0 ? $"+{Number(value, unit)}" : Number(value, unit);

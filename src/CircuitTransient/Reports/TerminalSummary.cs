@@ -80,12 +80,15 @@ public static partial class TerminalSummary
             result.Events.Select(e => ImmutableArray.Create(
                 Number(e.Time, "s"),
                 InstantWords.Name(e),
-                Number(e.VoltageBefore, "V", volts),
+                Before(e, e.VoltageBefore, "V", volts),
                 $"→ {Number(e.VoltageAfter, "V", volts)} across",
-                Number(e.CurrentBefore, "A", amperes),
+                Before(e, e.CurrentBefore, "A", amperes),
                 $"→ {Number(e.CurrentAfter, "A", amperes)} through",
                 e.Remark ?? "")));
     }
+
+    private static string Before(EventResult switching, double? value, string unit, double scale) =>
+        value is null ? ReportWords.Before(switching, value, unit) : Number(value, unit, scale);
 
     private static double Greatest(IEnumerable<double?> values) => values.Max(value => Math.Abs(value ?? 0));
 

@@ -148,13 +148,16 @@ internal static class SettledStart
     private static bool IsDriven(IntervalModel model, int b, int input)
     {
         const double rounding = 1e-22; // of the sum's largest terms; double-double leaves some 1e-30
+        const double noise = 1e-26; // of a left vector's largest entry: what rounding may leave of a zero
         var (w, drive) = (model.Blocks[b].W, model.Drive(b, input));
         for (var i = 0; i < drive.Length; i++)
         {
+            var largest = Enumerable.Range(0, w.Columns).Max(k => w[i, k].Magnitude);
             double size = 0;
             for (var k = 0; k < w.Columns; k++)
             {
-                size += w[i, k].Magnitude * Math.Abs(model.Form.B[k, input].Hi);
+                size += Math.Max(w[i, k].Magnitude, noise / rounding * largest)
+                    * Math.Abs(model.Form.B[k, input].Hi);
             }
 
             if (drive[i].Magnitude > rounding * size)

@@ -29,4 +29,17 @@ public class PlotStyleTests
             Enumerable.Range(0, 6).Select(i => PlotStyle.Cause(i).Colour)
                 .Select(colour => ColourSight.Contrast(colour, PlotStyle.Paper)),
             contrast => Assert.InRange(contrast, 3.5, 21));
+
+    [Fact]
+    public void Every_word_in_a_picture_reads_at_the_ratio_for_text()
+    {
+        var svg = WaveformPlot.Svg(SampleResults.Inrush());
+        var inks = svg.Split("<text ").Skip(1)
+            .Select(text => text[(text.IndexOf("fill=\"", StringComparison.Ordinal) + 6)..][..7])
+            .Distinct().ToArray();
+
+        Assert.NotEmpty(inks);
+        // WCAG 2.2, success criterion 1.4.3 (from memory)
+        Assert.All(inks, ink => Assert.InRange(ColourSight.Contrast(ink, PlotStyle.Paper), 4.5, 21));
+    }
 }

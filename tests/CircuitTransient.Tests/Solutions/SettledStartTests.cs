@@ -65,6 +65,28 @@ public sealed class SettledStartTests
         Close.To(7, solved["voltage across C2"].Start!.Value, 1e-14);
     }
 
+    // 100 mA into 10 Ω beside 100 Ω; the capacitor before the open contact takes no part.
+    [Fact]
+    public void A_constant_does_not_drive_what_an_open_contact_holds()
+    {
+        var solved = SolvedText.Of(
+            """
+            source J from ground to m : 0.1 A
+            resistor R from m to ground : 10 Ω
+            inductor L from m to n : 20 mH
+            capacitor C from n to ground : 47 µF
+            resistor Rl from n to ground : 100 Ω
+            capacitor Cf from n to x : 1 µF, charged to 5 V
+            switch S from x to ground : open, closes at 5 ms
+            start settled
+            observe voltage across C
+            observe voltage across Cf
+            until 50 ms
+            """);
+        Close.To(1 / 1.1, solved["voltage across C"].Start!.Value, 1e-14);
+        Close.To(5, solved["voltage across Cf"].Start!.Value, 1e-14);
+    }
+
     [Fact]
     public void A_charge_that_nothing_decides_is_an_error() => Assert.Equal(
         "plant.cause:3:1: error: the settled start leaves open what `C1`, `C2` hold: no source and no "

@@ -14,7 +14,7 @@ public static partial class HtmlReport
     {
         string?[] lines = [PeakWords.Of(result, observed, atMax), PhaseWords.Of(result, observed, atMax)];
         return Markup.Join(lines.OfType<string>()
-            .Select(line => Markup.Of($"<p class=\"words\">{line}</p>\n")));
+            .Select(line => Markup.Of($"<p class=\"words\">{Whole(line)}</p>\n")));
     }
 
     private static Markup Breakdowns(TransientResult result, ObservationResult observed, bool atMax)

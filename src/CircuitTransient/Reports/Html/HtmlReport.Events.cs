@@ -19,9 +19,9 @@ public static partial class HtmlReport
         var rows = result.Events.Select(e => Markup.Of($"""
             <tr><td class="number">{Number(e.Time, "s")}</td>
             <th scope="row">{Markup.Name(InstantWords.Name(e))}{Remark(e)}</th>
-            <td class="number">{Number(e.VoltageBefore, "V")}</td>
+            {BeforeCell(e, e.VoltageBefore, "V")}
             <td class="number">{Number(e.VoltageAfter, "V")}</td>
-            <td class="number">{Number(e.CurrentBefore, "A")}</td>
+            {BeforeCell(e, e.CurrentBefore, "A")}
             <td class="number">{Number(e.CurrentAfter, "A")}</td></tr>
 
             """));
@@ -43,6 +43,10 @@ public static partial class HtmlReport
             </section>
             """);
     }
+
+    private static Markup BeforeCell(EventResult e, double? value, string unit) => value is null
+        ? Markup.Of($"<td class=\"number unknown\">{Before(e, value, unit)}</td>")
+        : Markup.Of($"<td class=\"number\">{Number(value, unit)}</td>");
 
     private static Markup Remark(EventResult e) =>
         e.Remark is { } remark ? Markup.Of($"<br><span class=\"aside\">{remark}</span>") : default;

@@ -1,3 +1,4 @@
+using System.Text.RegularExpressions;
 using CircuitTransient.Measurements;
 using static CircuitTransient.Reports.ReportWords;
 
@@ -65,23 +66,28 @@ public static partial class HtmlReport
         var unit = observed.Unit;
         var rising = observed.EndsRising ? "; it is still growing at the end of the study" : "";
         var final = observed.Final is { } limit
-            ? $"tends to {Number(limit, unit)}"
+            ? $"tends to {Whole(Number(limit, unit))}"
             : "goes on swinging or has no limit";
         return Markup.Of($"""
-            Highest {Strong(observed.Max, observed)}{When(result, observed.Max)}; lowest
-            {Strong(observed.Min, observed)}{When(result, observed.Min)};
-            {Number(Cleaned(observed.End, observed), unit)} at the
-            end, {final}{rising}.
+            Highest {Strong(observed.Max, observed)}{Whole(When(result, observed.Max))}; lowest
+            {Strong(observed.Min, observed)}{Whole(When(result, observed.Min))};
+            {Whole(Number(Cleaned(observed.End, observed), unit))} at the end, {final}{rising}.
             """);
     }
 
     private static Markup Strong(Extreme extreme, ObservationResult observed)
     {
         var words = Cleaned(extreme.Value, observed) is { } value
-            ? Number(value, observed.Unit)
+            ? Whole(Number(value, observed.Unit))
             : "no finite value";
         return Markup.Of($"<strong>{words}</strong>");
     }
+
+    // A number and its unit stay in one line.
+    private static string Whole(string words) => NumberBeforeUnit().Replace(words, "\u00a0");
+
+    [GeneratedRegex(@"(?<=\d) (?=[fpnµmkMGT]?[VAWJCsH])", RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex NumberBeforeUnit();
 
     private static Markup Caption(ObservationResult observed)
     {

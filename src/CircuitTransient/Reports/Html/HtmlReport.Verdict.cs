@@ -126,10 +126,18 @@ public static partial class HtmlReport
         : Markup.Of($"""
             <h3>Warnings</h3>
             <ul>
-            {Markup.Join(result.Warnings.Select(w =>
-                Markup.Of($"<li>{(w.Line > 0 ? $"line {w.Line}: " : "")}{w.Text}</li>\n")))}</ul>
+            {Markup.Join(result.Warnings.Select(WarningItem))}</ul>
 
             """);
+
+    private static Markup WarningItem(Notice warning)
+    {
+        var advice = warning.Diagnostic?.Advice is { } words
+            ? Markup.Of($"<br><span class=\"aside\">{words}</span>")
+            : default;
+        var place = warning.Line > 0 ? $"line {warning.Line}: " : "";
+        return Markup.Of($"<li>{place}{warning.Text}{advice}</li>\n");
+    }
 
     private static Markup Cautions(TransientResult result) => result.Cautions.IsEmpty
         ? default

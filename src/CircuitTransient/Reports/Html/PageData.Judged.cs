@@ -162,7 +162,7 @@ internal sealed partial class PageData
     {
         if (!places.TryGetValue(followed, out var place))
         {
-            var isQuadratic = followed.Terms.Any(t => t.WithCause is not null);
+            var isQuadratic = followed.Factor is not null || followed.Terms.Any(t => t.WithCause is not null);
             place = Add(PageWave.Of(followed, isQuadratic, []));
             places.Add(followed, place);
         }

@@ -1,5 +1,3 @@
-using System.Buffers.Binary;
-using System.Collections.Immutable;
 using System.Text;
 using System.Text.Json;
 using CircuitTransient.Circuits;
@@ -39,6 +37,7 @@ internal sealed partial class PageData
         json.WriteBoolean("checksHold", result.ChecksHold);
         WriteCauses();
         WriteEvents();
+        WriteBreakdowns();
         WriteObservations();
         WriteRequirements();
         WriteRatings();
@@ -66,6 +65,20 @@ internal sealed partial class PageData
             json.WriteStartObject();
             json.WriteNumber("time", together.Key);
             json.WriteString("name", string.Join(" and ", together.Select(InstantWords.Name)));
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
+    private void WriteBreakdowns()
+    {
+        json.WriteStartArray("breakdowns");
+        foreach (var breakdown in result.OtherBreakdowns)
+        {
+            json.WriteStartObject();
+            json.WriteString("words", breakdown.Words);
+            json.WriteNumber("from", breakdown.From);
             json.WriteEndObject();
         }
 
@@ -164,93 +177,5 @@ internal sealed partial class PageData
     {
         waves.Add(wave);
         return waves.Count - 1;
-    }
-
-    private void WriteWaves()
-    {
-        var terms = Math.Max(1, waves.Sum(w => w.Terms.Length));
-        var limit = Math.Max(FewestSamples, MostValues / terms);
-        json.WriteBase64String("times", Bytes(result.SampleTimes));
-        json.WriteStartArray("waves");
-        foreach (var wave in waves)
-        {
-            var chosen = result.SampleTimes.Length > limit ? Thinned(wave, limit) : default;
-            json.WriteStartObject();
-            json.WriteBoolean("quadratic", wave.IsQuadratic);
-            if (!chosen.IsDefault)
-            {
-                json.WriteBase64String("index", Bytes(chosen));
-            }
-
-            json.WriteStartArray("terms");
-            foreach (var term in wave.Terms)
-            {
-                WriteTerm(term, chosen);
-            }
-
-            json.WriteEndArray();
-            json.WriteEndObject();
-        }
-
-        json.WriteEndArray();
-    }
-
-    private void WriteTerm(PageTerm term, ImmutableArray<int> chosen)
-    {
-        json.WriteStartObject();
-        if (term.Cause is { } cause)
-        {
-            json.WriteNumber("cause", cause);
-        }
-
-        if (term.WithCause is { } other)
-        {
-            json.WriteNumber("with", other);
-        }
-
-        var samples = chosen.IsDefault ? term.Samples : [.. chosen.Select(i => term.Samples[i])];
-        json.WriteBase64String("samples", SingleBytes(samples));
-        json.WriteEndObject();
-    }
-
-    private ImmutableArray<int> Thinned(PageWave wave, int limit)
-    {
-        var peaks = wave.Peaks.ToHashSet();
-        var kept = Enumerable.Range(0, result.SampleTimes.Length)
-            .Where(i => peaks.Contains(result.SampleTimes[i])).ToHashSet();
-        return SampleThinning.Choose(result.SampleTimes, [.. wave.Terms.Select(t => t.Samples)], kept, limit);
-    }
-
-    private static byte[] Bytes(ImmutableArray<double> values)
-    {
-        var bytes = new byte[8 * values.Length];
-        for (var i = 0; i < values.Length; i++)
-        {
-            BinaryPrimitives.WriteDoubleLittleEndian(bytes.AsSpan(8 * i), values[i]);
-        }
-
-        return bytes;
-    }
-
-    private static byte[] Bytes(ImmutableArray<int> values)
-    {
-        var bytes = new byte[4 * values.Length];
-        for (var i = 0; i < values.Length; i++)
-        {
-            BinaryPrimitives.WriteInt32LittleEndian(bytes.AsSpan(4 * i), values[i]);
-        }
-
-        return bytes;
-    }
-
-    private static byte[] SingleBytes(ImmutableArray<double> values)
-    {
-        var bytes = new byte[4 * values.Length];
-        for (var i = 0; i < values.Length; i++)
-        {
-            BinaryPrimitives.WriteSingleLittleEndian(bytes.AsSpan(4 * i), (float)values[i]);
-        }
-
-        return bytes;
     }
 }

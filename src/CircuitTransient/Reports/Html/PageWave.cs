@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
+using CircuitTransient.Measurements.Breakdowns;
 
 namespace CircuitTransient.Reports.Html;
 
@@ -11,6 +12,16 @@ namespace CircuitTransient.Reports.Html;
 internal sealed record PageWave(
     ImmutableArray<PageTerm> Terms, bool IsQuadratic, ImmutableArray<double> Peaks)
 {
+    /// <summary>What a product is multiplied by, whose terms are those of its factors; else null.</summary>
+    public double? Factor { get; init; }
+
+    /// <summary>The terms of other breakdowns, by their place in the result's list; empty where there are
+    /// none.</summary>
+    public ImmutableArray<(int Breakdown, ImmutableArray<BreakdownTerm> Terms)> Others { get; init; } = [];
+
+    /// <summary>How many waveforms it carries.</summary>
+    public int Count => Terms.Length + Others.Sum(o => o.Terms.Length);
+
     /// <summary>The waveform of an observation.</summary>
     public static PageWave Of(TransientResult result, ObservationResult observed, Observation? declared)
     {
@@ -19,7 +30,15 @@ internal sealed record PageWave(
         if (!isQuadratic)
         {
             var own = observed.ByCause.Select((samples, cause) => new PageTerm(cause, null, samples));
-            return new([.. own], false, peaks);
+            var index = result.Observations.IndexOf(observed);
+            return new([.. own], false, peaks)
+            {
+                Others =
+                [
+                    .. result.OtherBreakdowns.Select((b, n) => (n, b.Observations[index]))
+                        .Where(o => !o.Item2.IsEmpty),
+                ],
+            };
         }
 
         var followed = declared is null ? null : Followed(result, declared.Quantity, declared.Window);
@@ -30,7 +49,10 @@ internal sealed record PageWave(
 
     /// <summary>The waveform of what is judged but not observed.</summary>
     public static PageWave Of(FollowedWave followed, bool isQuadratic, ImmutableArray<double> peaks) => new(
-        [.. followed.Terms.Select(t => new PageTerm(t.Cause, t.WithCause, t.Samples))], isQuadratic, peaks);
+        [.. followed.Terms.Select(t => new PageTerm(t.Cause, t.WithCause, t.Samples))], isQuadratic, peaks)
+    {
+        Factor = followed.Factor,
+    };
 
     /// <summary>The waveform kept for a quantity; null where there is none.</summary>
     public static FollowedWave? Followed(TransientResult result, Measurand quantity, Window window)

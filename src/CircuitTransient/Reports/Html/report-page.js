@@ -53,6 +53,17 @@ function tools(view) {
   const row = make("div", { class: "tools" },
     button("Highest", go("max")), button("Lowest", go("min")), button("Closer", near("+")), button("Wider", near("-")),
     button("Whole study", () => main().whole()));
+  const { others } = waves[view.observation.wave];
+  if (others.length > 0) {
+    const list = make("select", { class: "counted", "aria-label": "How its contributions are counted" },
+      make("option", { value: "" }, "Causes from the start"),
+      ...others.map((o) => make("option", { value: o.breakdown }, `Causes ${data.breakdowns[o.breakdown].words.slice(0, 80)}`)));
+    list.addEventListener("change", () => {
+      view.breakdown = list.value === "" ? undefined : Number(list.value);
+      drawView(view);
+    });
+    row.append(list);
+  }
   if (data.events.length > 0) {
     const options = data.events.map((e, i) =>
       make("option", { value: i }, `${e.name.slice(0, 60)}, ${engineering(e.time, "s")}`));
@@ -72,17 +83,21 @@ function modelOf(view, scales) {
   const wave = waves[observation.wave];
   const total = sumOf(wave, scales);
   const solved = isSolved(scales) ? total : view.solved ?? (view.solved = sumOf(wave, solvedScales));
-  const parts = partsOf(wave, scales);
-  const names = wave.quadratic ? [...data.causes, "joint"] : data.causes;
+  const other = wave.others.find((o) => o.breakdown === view.breakdown);
+  const parts = other ? partsBy(other, scales) : partsOf(wave, scales);
+  const names = other ? other.terms.map((t) => t.name) : wave.quadratic ? [...data.causes, "joint"] : data.causes;
   const peak = (values) => values.reduce((most, v) => (Math.abs(v) > most ? Math.abs(v) : most), 0);
   const span = peak(total) || peak(solved);
-  const ranked = parts.map((values, c) => ({ values, name: names[c], style: `c${c % 6}`, peak: peak(values) }))
-    .filter((line) => line.peak > (state.lines === "all" ? 0 : 0.005 * span))
-    .sort((a, b) => b.peak - a.peak);
-  const lines = parts.length < 2 || state.lines === "none" ? [] : state.lines === "all" ? ranked : ranked.slice(0, 6);
   const extremes = extremesOf(observation, scales, total);
   const table = view.section.querySelector("table.causes:not(.since)");
   const side = table?.dataset.at ?? "max";
+  // Pulses of a train are alike: what they are at the extreme ranks them.
+  const rank = (line) => (other ? Math.abs(valueAt(wave.times, line.values, extremes[side].time)) || 0 : line.peak);
+  const ranked = parts.map((values, c) => ({ values, name: names[c], style: `c${c % 6}`, peak: peak(values) }))
+    .filter((line) => line.peak > (state.lines === "all" ? 0 : 0.005 * span))
+    .sort((a, b) => rank(b) - rank(a) || b.peak - a.peak);
+  const drawn = parts.length < 2 || state.lines === "none" ? [] : state.lines === "all" ? ranked : ranked.slice(0, 6);
+  const lines = other ? drawn.map((line, i) => ({ ...line, style: `c${i % 6}` })) : drawn;
   return { ...observation, times: wave.times, total, solved, parts, names, lines, extremes, side };
 }
 
@@ -117,8 +132,23 @@ function restore(element) {
 function followTable(view, scales) {
   const table = view.section.querySelector("table.causes:not(.since)");
   if (!table) return;
+  const isOther = view.breakdown !== undefined;
+  const caption = view.section.querySelector("figcaption");
+  if (isOther) {
+    rewrite(caption, `The thick line is the total; thin lines are contributions ${data.breakdowns[view.breakdown].words}, the six largest at its ${sideWord(view)} value.`);
+  } else {
+    restore(caption);
+  }
+  view.section.querySelectorAll(".since, .cancelling, .breakdown").forEach((e) => { e.hidden = isOther || !isSolved(scales); });
+  view.section.querySelectorAll(".words").forEach((e) => { e.hidden = !isSolved(scales); });
+  table.parentElement.hidden = isOther;
+  view.other?.remove();
+  if (isOther) {
+    view.other = otherTable(view);
+    table.parentElement.after(view.other);
+    return;
+  }
   const cells = [...table.querySelectorAll("[data-cause] td, .peak")];
-  view.section.querySelectorAll(".since, .cancelling, .words, .breakdown").forEach((e) => { e.hidden = !isSolved(scales); });
   if (isSolved(scales)) {
     cells.forEach(restore);
     return;
@@ -127,7 +157,7 @@ function followTable(view, scales) {
   const wave = waves[view.observation.wave];
   const sign = side === "max" ? 1 : -1;
   const { value: total, time, index } = extremes[side];
-  const then = parts.map((values) => (index >= 0 ? values[index] : valueAt(times, values, time)));
+  const then = parts.map((values) => (times[index] === time ? values[index] : valueAt(times, values, time)));
   const largest = Math.max(...then.map(Math.abs), 1e-300);
   rewrite(table.querySelector(".peak"), `${engineering(total, unit)} at ${engineering(time, "s")}, as scaled`);
   for (const row of table.querySelectorAll("[data-cause]")) {
@@ -147,6 +177,41 @@ function followTable(view, scales) {
       : view.model.total.map((sum, i) => sum - parts[c][i]));
     rewrite(cell("without"), without ? engineering(extremeOf(times, without, from, to, sign).value, unit) : "");
   }
+}
+
+const sideWord = (view) => (view.model.side === "max" ? "highest" : "lowest");
+
+// What made the extreme by the breakdown that was chosen, as scaled.
+function otherTable(view) {
+  const { unit, side, extremes, parts, names, times, total, to } = view.model;
+  const { words, from: since } = data.breakdowns[view.breakdown];
+  const from = Math.max(view.model.from, since);
+  const isEarlier = extremes[side].time < since;
+  const { value, time, index } = isEarlier ? extremeOf(times, total, from, to, side === "max" ? 1 : -1) : extremes[side];
+  const word = side === "max" ? "highest" : "lowest";
+  const then = parts.map((values) => (times[index] === time ? values[index] : valueAt(times, values, time)));
+  const largest = Math.max(...then.map(Math.abs), 1e-300);
+  const number = (...content) => make("td", { class: "number" }, ...content);
+  const rows = names.map((name, c) => c).sort((a, b) => Math.abs(then[b]) - Math.abs(then[a])).map((c) => {
+    const [high, low] = [1, -1].map((sign) => extremeOf(times, parts[c], from, to, sign));
+    const own = Math.abs(low.value) > Math.abs(high.value) ? low : high;
+    const without = extremeOf(times, total.map((sum, i) => sum - parts[c][i]), from, to, side === "max" ? 1 : -1);
+    const bars = make("td", { class: "bars" });
+    bars.append(barOf(then[c], largest));
+    return make("tr", {}, make("th", { scope: "row" }, make("bdi", {}, names[c])), number(signed(then[c], unit)),
+      number(value !== 0 ? percent(then[c] / value) : ""), bars,
+      number(engineering(own.value, unit), make("span", { class: "aside" }, own.value === 0 ? "" : ` at ${engineering(own.time, "s")}`)),
+      number(engineering(without.value, unit)));
+  });
+  const heads = [["Cause"], ["Then", "number"], ["Of the total", "number"], ["", ""], ["Its own peak", "number"],
+    [side === "max" ? "Highest without it" : "Lowest without it", "number"]];
+  const head = make("tr", {}, ...heads.map(([text, style]) => make("th", { scope: "col", class: style ?? "" },
+    text === "" ? make("span", { class: "hidden" }, "Bar") : text)));
+  return make("div", { class: "wide other" }, make("table", { class: "causes by" },
+    make("caption", {}, isEarlier
+      ? `What made the ${word} value ${words}, ${engineering(value, unit)} at ${engineering(time, "s")}`
+      : `What made the ${word} value, ${engineering(value, unit)} at ${engineering(time, "s")}, ${words}`),
+    make("thead", {}, head), make("tbody", {}, ...rows)));
 }
 
 function barOf(value, largest) {
@@ -312,7 +377,7 @@ function buildExplorer() {
   const controls = make("div", { class: "controls" },
     make("label", {}, "Time from ", origin), make("label", {}, log, "logarithmic time"), make("label", {}, "Contributions drawn ", lines));
   const note = make("p", { class: "note", id: "keys" },
-    "On a waveform: drag to zoom, double-click for the whole. Keys: arrows read, Shift and arrows go by sample, + and − zoom, 0 shows the whole, p goes to the peak, e to the next event. Scaling a cause keeps the instants at which switches act as solved.");
+    "On a waveform: drag to zoom, double-click for the whole. Keys: arrows read, Shift and arrows go by sample, + and − zoom, 0 shows the whole, p goes to the peak, e to the next event. Scaling a cause keeps the instants at which switches act as solved." + (data.breakdowns.length > 0 ? " Each waveform has a menu of how its contributions are counted; they follow the scales of the causes they come from." : ""));
   const causes = make("div", { class: "causes-list", role: "group", "aria-label": "Causes" }, ...rows.map((r) => r.row));
   const details = make("details", {}, make("summary", {}, "Switch causes on and off, or scale them from 0 to 2"), causes, controls, note);
   details.open = window.innerWidth > 900 && window.innerHeight > 700;

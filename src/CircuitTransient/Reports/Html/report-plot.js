@@ -32,6 +32,7 @@ function timeScale(window, axis, left, right) {
   return {
     left, right, from: window.from, to: window.to,
     place: (t) => left + (f(t) - a) / (b - a) * (right - left),
+    timeAt: (x) => back(a + (x - left) / (right - left) * (b - a)),
     time: (x) => back(a + (Math.min(right, Math.max(left, x)) - left) / (right - left) * (b - a)),
   };
 }
@@ -62,7 +63,14 @@ function pathOf(times, values, scale, place) {
       [pen, column] = [false, -1e9];
       continue;
     }
-    const next = Math.floor(scale.place(times[i]) * 2);
+    const here = scale.place(times[i]);
+    if (times === allTimes && i > start && Number.isFinite(values[i - 1]) && here - scale.place(times[i - 1]) > 6) {
+      flush();
+      column = -1e9;
+      const first = Math.max(scale.place(times[i - 1]) + 3, scale.left - 6);
+      for (let x = first; x < Math.min(here - 1, scale.right + 6); x += 3) put(x, place(between(times, values, i, scale.timeAt(x))));
+    }
+    const next = Math.floor(here * 2);
     if (next !== column) {
       flush();
       [column, entry] = [next, { first: i, least: i, greatest: i, last: i }];
@@ -219,8 +227,9 @@ function drawPeaks(svg, frame, model, time, level) {
 function drawPanel(svg, model, window, axis, width, clip) {
   const isNarrow = width < 640;
   const height = isNarrow ? 250 : 300;
+  const names = Math.max(0, ...model.lines.map((line) => widthOf([...line.name].slice(0, 60).join(""))));
   const frame = {
-    left: isNarrow ? 46 : 62, right: width - (isNarrow ? 96 : 178), top: 30, bottom: height - 44, width,
+    left: isNarrow ? 46 : 62, right: width - (isNarrow ? 96 : Math.min(0.26 * width, Math.max(178, names + 36))), top: 30, bottom: height - 44, width,
   };
   const time = timeScale(window, axis, frame.left, frame.right);
   const [from, to] = levels(model, window);

@@ -8,13 +8,16 @@ function bytesOf(text) {
 
 const data = JSON.parse(document.getElementById("data").textContent);
 const allTimes = new Float64Array(bytesOf(data.times));
+const decoded = (term) => ({ ...term, samples: new Float32Array(bytesOf(term.samples)) });
 const waves = data.waves.map((wave) => {
   const index = wave.index && new Int32Array(bytesOf(wave.index));
   return {
     quadratic: wave.quadratic,
+    factor: wave.factor,
     fixed: wave.terms.every((term) => term.cause === undefined),
     times: index ? Float64Array.from(index, (i) => allTimes[i]) : allTimes,
-    terms: wave.terms.map((term) => ({ ...term, samples: new Float32Array(bytesOf(term.samples)) })),
+    terms: wave.terms.map(decoded),
+    others: wave.others.map((other) => ({ ...other, terms: other.terms.map(decoded) })),
   };
 });
 
@@ -22,8 +25,20 @@ const weight = (term, scales) =>
   term.cause === undefined ? 1 : scales[term.cause] * (term.with === undefined ? 1 : scales[term.with]);
 
 function sumOf(wave, scales, chosen = () => true) {
+  if (wave.factor === undefined) return sumOfTerms(wave, wave.terms, scales, chosen);
+  const [first, second] = factorsOf(wave).map((terms) => sumOfTerms(wave, terms, scales, chosen));
+  return first.map((v, i) => wave.factor * v * (second ?? first)[i]);
+}
+
+// The terms of a product's factors; one list where it is a square.
+function factorsOf(wave) {
+  const half = wave.terms.length / 2;
+  return wave.terms.filter((t) => t.cause === 0).length === 1 ? [wave.terms] : [wave.terms.slice(0, half), wave.terms.slice(half)];
+}
+
+function sumOfTerms(wave, terms, scales, chosen) {
   const sum = new Float64Array(wave.times.length);
-  for (const term of wave.terms) {
+  for (const term of terms) {
     const w = chosen(term) ? weight(term, scales) : 0;
     if (w === 0) continue;
     const samples = term.samples;
@@ -37,7 +52,18 @@ function partsOf(wave, scales) {
   if (wave.fixed) return [];
   const own = data.causes.map((_, c) =>
     sumOf(wave, scales, (t) => t.cause === c && (t.with === undefined || t.with === c)));
-  return wave.quadratic ? [...own, sumOf(wave, scales, (t) => t.with !== undefined && t.with !== t.cause)] : own;
+  if (!wave.quadratic) return own;
+  return [...own, wave.factor === undefined
+    ? sumOf(wave, scales, (t) => t.with !== undefined && t.with !== t.cause)
+    : sumOf(wave, scales).map((v, i) => own.reduce((rest, part) => rest - part[i], v))];
+}
+
+// One waveform for each cause of another breakdown: it grows with the causes that it comes from.
+function partsBy(other, scales) {
+  return other.terms.map(({ weights, samples }) => {
+    const w = weights.reduce((sum, [cause, share]) => sum + share * scales[cause], 0);
+    return Float64Array.from(samples, (v) => w * v);
+  });
 }
 
 // The first sample not before an instant.
@@ -55,7 +81,33 @@ function valueAt(times, values, time) {
   if (i >= times.length) return values[times.length - 1];
   if (times[i] === time) return values[i + 1 < times.length && times[i + 1] === time ? i + 1 : i];
   if (i === 0) return values[0];
-  return values[i - 1] + (time - times[i - 1]) / (times[i] - times[i - 1]) * (values[i] - values[i - 1]);
+  return times === allTimes ? between(times, values, i, time)
+    : values[i - 1] + (time - times[i - 1]) / (times[i] - times[i - 1]) * (values[i] - values[i - 1]);
+}
+
+// The slope at a sample, by the parabola through it and two others on its side of any jump; the samples of a
+// wave that was not thinned are as dense as it moves, and a corner stands twice.
+function slopeAt(times, values, i, side) {
+  const has = (k) => k >= 0 && k < times.length && Number.isFinite(values[k]);
+  const rise = (a, b) => (has(a) && has(b) && times[b] > times[a] ? (values[b] - values[a]) / (times[b] - times[a]) : undefined);
+  const [left, right] = [rise(i - 1, i), rise(i, i + 1)];
+  if (left !== undefined && right !== undefined) {
+    const [a, b] = [times[i] - times[i - 1], times[i + 1] - times[i]];
+    return (left * b + right * a) / (a + b);
+  }
+  const [near, far] = side > 0 ? [right, rise(i + 1, i + 2)] : [left, rise(i - 2, i - 1)];
+  if (near === undefined || far === undefined) return near ?? 0;
+  const [a, b] = side > 0 ? [times[i + 1] - times[i], times[i + 2] - times[i + 1]] : [times[i] - times[i - 1], times[i - 1] - times[i - 2]];
+  return near + (near - far) * a / (a + b);
+}
+
+// The cubic between samples i - 1 and i.
+function between(times, values, i, time) {
+  const h = times[i] - times[i - 1];
+  const u = (time - times[i - 1]) / h;
+  const [v0, v1] = [values[i - 1], values[i]];
+  const [s0, s1] = [h * slopeAt(times, values, i - 1, 1), h * slopeAt(times, values, i, -1)];
+  return v0 + u * (s0 + u * (3 * (v1 - v0) - 2 * s0 - s1 + u * (2 * (v0 - v1) + s0 + s1)));
 }
 
 // The greatest (sign 1) or least (sign -1) value in a closed window: among the samples, then on the parabola

@@ -28,8 +28,8 @@ public static partial class PdfReport
             result.Events.Select(e => ImmutableArray.Create<PdfCell>(
                 Number(e.Time, "s"),
                 e.Remark is { } remark ? $"{InstantWords.Name(e)} ({remark})" : InstantWords.Name(e),
-                Number(e.VoltageBefore, "V"), Number(e.VoltageAfter, "V"),
-                Number(e.CurrentBefore, "A"), Number(e.CurrentAfter, "A"))));
+                Before(e, e.VoltageBefore, "V"), Number(e.VoltageAfter, "V"),
+                Before(e, e.CurrentBefore, "A"), Number(e.CurrentAfter, "A"))));
     }
 
     private static void AddObservation(PdfPages pages, TransientResult result, ObservationResult observed)

@@ -123,7 +123,9 @@ public static partial class PdfReport
 
         foreach (var warning in result.Warnings)
         {
-            pages.Paragraph($"Warning: {(warning.Line > 0 ? $"line {warning.Line}: " : "")}{warning.Text}");
+            var advice = warning.Diagnostic?.Advice is { } words ? $" ({words})" : "";
+            pages.Paragraph(
+                $"Warning: {(warning.Line > 0 ? $"line {warning.Line}: " : "")}{warning.Text}{advice}");
         }
     }
 
@@ -137,9 +139,10 @@ public static partial class PdfReport
         var used = i < result.Circuit.Requirements.Length
             ? Used(result.Circuit.Requirements[i].Bound, requirement)
             : null;
+        var doubt = requirement.Doubt is { } doubtful ? $"; in doubt: {doubtful}" : "";
         return
         [
-            $"{requirement.Statement}{reason}, line {requirement.Line}",
+            $"{requirement.Statement}{reason}, line {requirement.Line}{doubt}",
             Held(requirement),
             $"{worst} {InstantWords.At(result, requirement.Worst.Time)}",
             Mark(used),

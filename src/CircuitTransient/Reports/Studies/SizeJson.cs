@@ -107,9 +107,12 @@ public static class SizeJson
             WritePoint(json, "nearest", result, conflict.Nearest);
             json.Array("alone", conflict.Alone,
                 index => json.WriteStringValue(result.Problem.Constraints[index].Name));
-            WriteName(json, "first", result, conflict.First);
-            WriteName(json, "second", result, conflict.Second);
-            WritePoint(json, "pairNearest", result, conflict.PairNearest);
+            json.Objects("pairs", conflict.Pairs, pair =>
+            {
+                WriteName(json, "first", result, pair.First);
+                WriteName(json, "second", result, pair.Second);
+                WritePoint(json, "nearest", result, pair.Nearest);
+            });
         });
     }
 

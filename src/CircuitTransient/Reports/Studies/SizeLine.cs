@@ -13,7 +13,7 @@ internal sealed class SizeLine
     private const double Top = 76;
     private const double Bottom = 440;
     private const int MostShown = 6;
-    private const string Held = "#dbe6ec";
+    private const string Held = PlotStyle.WideBand;
 
     private readonly SizeResult result;
     private readonly PlotFonts fonts;
@@ -46,7 +46,7 @@ internal sealed class SizeLine
 
     private void AddHeld()
     {
-        shapes.Add(new RectangleShape(Left, Top, Right - Left, Bottom - Top, "#fbfcfc"));
+        shapes.Add(new RectangleShape(Left, Top, Right - Left, Bottom - Top, PlotStyle.Ground));
         foreach (var interval in result.Intervals)
         {
             var (from, to) = (across.Place(interval.From.Values[0]), across.Place(interval.To.Values[0]));

@@ -18,7 +18,7 @@ internal sealed class SizeMap
     private static readonly ImmutableArray<string> Shades =
         ["#dbe6ec", "#bdd0db", "#9dbac9", "#7ba3b6", "#578ba3"];
 
-    private const string Broken = "#f6f7f8";
+    private const string Broken = PlotStyle.Ground;
 
     private readonly SizeResult result;
     private readonly PlotFonts fonts;

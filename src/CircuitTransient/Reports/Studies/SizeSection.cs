@@ -9,6 +9,7 @@ public static class SizeSection
     /// <summary>The section.</summary>
     public static StudySection Of(SizeResult result)
     {
+        using var fonts = new PlotFonts();
         var notes = SizeWords.Searched(result).Select(words => Markup.Of($"{words} "));
         var circuit = result.Chosen is null
             ? "What follows below is the circuit as it stands."
@@ -16,7 +17,8 @@ public static class SizeSection
         return new StudySection("Sizing", Markup.Of($"""
             <p class="lead">{SizeWords.Verdict(result)}</p>
             {Aim(result)}{Margins(result)}{Conflict(result)}{Intervals(result)}
-            <figure class="picture">{Markup.Picture(SizePlot.Svg(result))}</figure>
+            <div class="wide"><figure
+            class="picture">{HtmlReport.Themed(SizePlot.Draw(result, fonts))}</figure></div>
             <p class="aside">{Markup.Join(notes)}All points stand in size.csv and size.json. {circuit}</p>
             """));
     }

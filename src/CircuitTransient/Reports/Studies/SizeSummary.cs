@@ -9,6 +9,7 @@ public static class SizeSummary
 {
     private const int MostRows = 12;
     private const int MostIntervals = 12;
+    private const int MostWarnings = 6;
 
     private static readonly TextColumn Left = new();
     private static readonly TextColumn Right = new(IsRight: true);
@@ -29,6 +30,7 @@ public static class SizeSummary
         WriteIntervals(text, result);
         WriteOthers(text, result);
         SizeTextMap.Write(text, result);
+        WriteWarnings(text, result);
         text.Heading("What was looked at");
         foreach (var words in SizeWords.Searched(result))
         {
@@ -80,6 +82,27 @@ public static class SizeSummary
                 $"{part.Name} is linear up to {ReportWords.Number(limit.Declared, limit.Unit)} but reaches " +
                 $"{ReportWords.Number(limit.Reached, limit.Unit)}: what holds here holds for the model",
                 hanging: 2);
+        }
+    }
+
+    private static void WriteWarnings(SummaryText text, SizeResult result)
+    {
+        var warnings = result.Proposed.Warnings;
+        if (result.Chosen is null || warnings.IsEmpty)
+        {
+            return;
+        }
+
+        text.Heading("Warnings of the circuit with these values");
+        foreach (var warning in warnings.Take(MostWarnings))
+        {
+            var place = warning.Line > 0 ? $"line {warning.Line}: " : "";
+            text.Paragraph(place + warning.Text, hanging: 2);
+        }
+
+        if (warnings.Length > MostWarnings)
+        {
+            text.Paragraph($"and {warnings.Length - MostWarnings} more, in report.html");
         }
     }
 

@@ -73,19 +73,24 @@ internal static class SizeWords
         return result.Conflict switch
         {
             null => [],
-            { Alone: { IsEmpty: false } alone } =>
-                [.. alone.Select(i => $"Whatever the value, this is broken: {constraints[i].Name}.")],
-            { First: { } first, Second: { } second, PairNearest: { } nearest } =>
+            { Alone.IsEmpty: true, Pairs.IsEmpty: true } =>
+                ["No two of them exclude each other, but all together do."],
+            var conflict =>
             [
-                "These two exclude each other: each can be held, but not both.",
-                $"First: {constraints[first].Name}.",
-                $"Second: {constraints[second].Name}.",
-                $"They come nearest with {Values(result, nearest)}: " +
-                    $"the first {Margin(constraints[first], nearest.Shares[first])}, " +
-                    $"the second {Margin(constraints[second], nearest.Shares[second])}.",
+                .. conflict.Alone.Select(i => $"Whatever the value, this is broken: {constraints[i].Name}."),
+                .. conflict.Pairs.Select(pair => Pair(result, pair)),
             ],
-            _ => ["No two of them exclude each other, but all together do."],
         };
+    }
+
+    private static string Pair(SizeResult result, ExcludedPair pair)
+    {
+        var first = result.Problem.Constraints[pair.First];
+        var second = result.Problem.Constraints[pair.Second];
+        return $"These exclude each other, each can be held but not both: {first.Name}; and {second.Name}. " +
+            $"They come nearest with {Values(result, pair.Nearest)}: the one " +
+            $"{Margin(first, pair.Nearest.Shares[pair.First])}, the other " +
+            $"{Margin(second, pair.Nearest.Shares[pair.Second])}.";
     }
 
     /// <summary>The value of what is made least or greatest.</summary>
@@ -154,7 +159,18 @@ internal static class SizeWords
         }
 
         var names = string.Join(", ", corners.Toleranced.Select(result.Problem.NameOf));
-        var scanned = $"The scan looked at {result.Corners.Length} that decide";
+        if (result.Chosen is null)
+        {
+            return corners.IsComplete
+                ? $"All {corners.All.Length} corners of {names} were solved in the middle of the range, " +
+                    $"and the scan looked at the worst of them ({result.Corners.Length})."
+                : $"The scan looked at the worst corners of {names} found one value at a time " +
+                    $"({result.Corners.Length}).";
+        }
+
+        var scanned = result.Corners.Length == 1
+            ? "The scan looked at the one corner that decides"
+            : $"The scan looked at the {result.Corners.Length} corners that decide";
         return corners.IsComplete
             ? $"{scanned}, the proposed values were solved at all {corners.All.Length} corners of {names}; " +
                 "a worst case inside the tolerances, away from every corner, is not excluded."

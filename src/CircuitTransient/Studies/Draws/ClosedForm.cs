@@ -6,7 +6,7 @@ namespace CircuitTransient.Studies.Draws;
 /// D_yσ Δ)⁻¹, A = A₀ + Bσ S C_y and everything else likewise; then ζ′ = Λ ζ + W u. A conjugate pair a ± i b
 /// stands as two real coordinates, of which q = ζ₁ − i ζ₂ has q′ = (a + i b) q. Sources that reach z through
 /// u′ are moved to u by z̃ = z − B₁ u.</summary>
-internal sealed class ClosedForm
+internal sealed partial class ClosedForm
 {
     private readonly RealEigensystem eigen;
     private readonly double[] delta;
@@ -88,6 +88,36 @@ internal sealed class ClosedForm
     /// <summary>Closes the loop and finds the modes.</summary>
     /// <returns>False where there are none to be found.</returns>
     public bool Close() => FeedBack() && eigen.Solve(a, Form.Order) && Transform();
+
+    /// <summary>Whether any source moves a mode: what only rounding leaves of W does not.</summary>
+    public bool IsDriven(int mode)
+    {
+        const double rounding = 1e-12; // of the sum's terms; an undriven mode is so by structure
+        const double noise = 1e-14; // of the left vector's largest entry
+        var (n, u) = (Form.Order, Form.Sources);
+        double largest = 0;
+        for (var i = 0; i < n; i++)
+        {
+            largest = Math.Max(largest, Math.Abs(inverse[(mode * n) + i]));
+        }
+
+        for (var s = 0; s < u; s++)
+        {
+            double size = 0;
+            for (var i = 0; i < n; i++)
+            {
+                size += Math.Max(Math.Abs(inverse[(mode * n) + i]), noise * largest)
+                    * Math.Abs(b[(i * u) + s]);
+            }
+
+            if (Math.Abs(Inputs[(mode * u) + s]) > rounding * size)
+            {
+                return true;
+            }
+        }
+
+        return false;
+    }
 
     private bool FeedBack()
     {

@@ -95,6 +95,22 @@ internal sealed partial class DrawSegment
         return sum;
     }
 
+    /// <summary>A function's value and slope at τ = 0, and what each is a sum of.</summary>
+    public StartOfRow AtStart(int function)
+    {
+        double value = 0, slope = 0, size = 0, steepness = 0;
+        for (var unit = 0; unit < Units; unit++)
+        {
+            var at = (function * Stride) + Slot[unit]; // of τ⁰; a sine is zero there
+            value += Coefficients[at];
+            slope += Slopes[at];
+            size += Math.Abs(Coefficients[at]) + (Im[unit] == 0 ? 0 : Math.Abs(Coefficients[at + 1]));
+            steepness += Math.Abs(Slopes[at]) + (Im[unit] == 0 ? 0 : Math.Abs(Slopes[at + 1]));
+        }
+
+        return new StartOfRow(value, slope, size, steepness);
+    }
+
     /// <summary>C of Re(C τᵖ e^(E τ)).</summary>
     public Complex Coefficient(int function, int unit, int power)
     {

@@ -62,6 +62,9 @@ internal struct TrackState
     /// <summary>A bound of the error of its values.</summary>
     public double Error;
 
+    /// <summary>The size of what it is made of, over the whole study.</summary>
+    public double Size;
+
     /// <summary>When it is infinitely great; not a number where it never is.</summary>
     public double Up;
 

@@ -2,7 +2,10 @@ namespace CircuitTransient.Studies.Draws;
 
 public sealed partial class DrawWorkspace
 {
-    private const double Promised = 1e-7; // relative error bound of a figure; a tenth of what draws promise
+    // Bounds of a figure's error: of its own size, a tenth of what draws promise; or of what its waveform is
+    // made of over the study, where little is left of it in a window.
+    private const double Promised = 1e-7;
+    private const double Negligible = 1e-12;
 
     internal bool Sample(int observation, ReadOnlySpan<double> instants, Span<double> samples)
     {
@@ -85,7 +88,7 @@ public sealed partial class DrawWorkspace
         var size = Math.Max(
             double.IsFinite(state.Maximum) ? Math.Abs(state.Maximum) : 0,
             double.IsFinite(state.Minimum) ? Math.Abs(state.Minimum) : 0);
-        isReliable &= state.Error <= Promised * size || state.Error == 0;
+        isReliable &= state.Error <= Promised * size || state.Error <= Negligible * state.Size;
         return true;
     }
 

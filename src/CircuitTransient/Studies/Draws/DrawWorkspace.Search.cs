@@ -198,14 +198,9 @@ public sealed partial class DrawWorkspace
     {
         var track = kernel.Figures.Tracks[t];
         var (from, to) = (windowFrom[track.Window], windowTo[track.Window]);
-        if (!IsFollowed(t) || from > segment.End || to < segment.Start)
+        if (!IsFollowed(t))
         {
             return;
-        }
-
-        if (from == to)
-        {
-            walk.Touch(segment, from, t, ref tracks[t]);
         }
 
         var (size, error) = ErrorOf(segment, track.First);
@@ -214,9 +209,21 @@ public sealed partial class DrawWorkspace
         {
             var (other, otherError) = ErrorOf(segment, track.Second);
             error = (error * other) + (size * (otherError + (inherited * other)));
+            size *= other;
         }
 
-        tracks[t].Error = Math.Max(tracks[t].Error, Math.Abs(tracks[t].Factor) * error);
+        ref var state = ref tracks[t];
+        state.Size = Math.Max(state.Size, Math.Abs(state.Factor) * size);
+        if (from > segment.End || to < segment.Start)
+        {
+            return;
+        }
+
+        state.Error = Math.Max(state.Error, Math.Abs(state.Factor) * error);
+        if (from == to)
+        {
+            walk.Touch(segment, from, t, ref state);
+        }
     }
 
     /// <summary>The segment's ends and the windows' ends inside it, in order.</summary>

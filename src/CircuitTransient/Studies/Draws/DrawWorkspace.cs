@@ -16,6 +16,7 @@ public sealed partial class DrawWorkspace
     private readonly double[] stored;
     private readonly double[] stated;
     private readonly double[] modal;
+    private readonly double[] atStart;
     private readonly Complex[] levels;
     private readonly Complex[] slopes;
     private readonly TrackState[] tracks;
@@ -48,6 +49,7 @@ public sealed partial class DrawWorkspace
         stored = new double[kernel.Circuit.Layout.Stores.Length];
         stated = new double[stored.Length];
         modal = new double[order];
+        atStart = new double[4 * order];
         levels = new Complex[exponents * factors.Length];
         slopes = new Complex[levels.Length];
         tracks = new TrackState[kernel.Figures.Tracks.Length];
@@ -114,55 +116,6 @@ public sealed partial class DrawWorkspace
             && forms[form].Close();
     }
 
-    /// <summary>The end of a study whose file does not say: as the exact engine has it.</summary>
-    private bool PutEnd()
-    {
-        if (kernel.Circuit.Original.Until is not null)
-        {
-            return true;
-        }
-
-        var form = forms[kernel.Plan.Intervals[^1].Form];
-        var start = times.Starts[^2];
-        foreach (var corner in kernel.Plan.Corners)
-        {
-            start = Math.Max(start, corner);
-        }
-
-        double longest = 0;
-        for (var k = 0; k < form.Form.Order; k++)
-        {
-            var (re, im) = (form.PoleReal[k], Math.Abs(form.PoleImaginary[k]));
-            var isNearAxis = Math.Abs(re) < 1e-11 * im || (im == 0 && re != 0 && -re < form.PoleErrors[k]);
-            if (isNearAxis)
-            {
-                return false; // whether it decays at all is for the exact engine to say
-            }
-
-            longest = re < 0 ? Math.Max(longest, Math.Log(1000) / -re) : longest;
-        }
-
-        times.End(start + longest);
-        return longest > 0;
-    }
-
-    private bool PutInitial()
-    {
-        kernel.Values.PutStored(parameters, stated);
-        if (!kernel.Circuit.Original.StartsSettled)
-        {
-            for (var k = 0; k < stored.Length; k++)
-            {
-                stored[k] = double.IsNaN(stated[k]) ? 0 : stated[k];
-            }
-
-            return true;
-        }
-
-        kernel.Waves.Put(0, perpetual: true, factors, shifts, levels, slopes);
-        return SettledValues.Put(forms[kernel.Plan.Initial], kernel.Waves, levels, stated, stored);
-    }
-
     /// <summary>Solves every segment; impulses are looked for on the way.</summary>
     private bool Solve()
     {
@@ -179,6 +132,11 @@ public sealed partial class DrawWorkspace
                 kernel.Waves.Put(start, perpetual: false, factors, shifts, levels, slopes);
                 segment.Solve(form, start, end, start == from, modal, kernel.Waves, levels, slopes);
                 PutFunctions(segment, form);
+                if (segment.BeginsInterval)
+                {
+                    CheckStart(segment, form);
+                }
+
                 if (!PutImpulses(segment, form))
                 {
                     return false;
@@ -209,21 +167,6 @@ public sealed partial class DrawWorkspace
         }
 
         return until;
-    }
-
-    private void SetState(ClosedForm form)
-    {
-        var n = form.Form.Order;
-        for (var i = 0; i < n; i++)
-        {
-            double sum = 0;
-            for (var k = 0; k < stored.Length; k++)
-            {
-                sum += form.Stores[(i * stored.Length) + k] * stored[k];
-            }
-
-            modal[i] = sum;
-        }
     }
 
     private void PutFunctions(DrawSegment segment, ClosedForm form)

@@ -90,7 +90,12 @@ internal static class KernelTrial
             };
         }
 
-        for (var i = 0; i < figures.Length && figure.Kind != StudyFigureKind.RatingUsed; i++)
+        if (figure.Kind == StudyFigureKind.RatingUsed)
+        {
+            return Math.Max(size, 1e-9); // a rating used by a billionth is not used
+        }
+
+        for (var i = 0; i < figures.Length; i++)
         {
             var isSibling = figures[i].Index == figure.Index
                 && figures[i].Kind is StudyFigureKind.Maximum or StudyFigureKind.Minimum;

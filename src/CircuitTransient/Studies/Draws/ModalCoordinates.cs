@@ -8,15 +8,21 @@ namespace CircuitTransient.Studies.Draws;
 internal sealed class ModalCoordinates
 {
     private readonly DoubleDoubleMatrix p;
-    private readonly LuFactorization inverse;
+    private readonly DoubleDoubleMatrix inverse;
+    private readonly DoubleDoubleMatrix columns; // sizes of the entries of P
+    private readonly DoubleDoubleMatrix lines; // and of its inverse
 
     private ModalCoordinates(DoubleDoubleMatrix a, DoubleDoubleMatrix p, int zeros)
     {
         this.p = p;
-        inverse = LuFactorization.Of(p);
-        Matrix = Rounded(inverse.Solve(a.Times(p)));
+        inverse = LuFactorization.Of(p).Solve(DoubleDoubleMatrix.Identity(p.Rows));
+        columns = Sizes(p.Transposed()).Transposed();
+        lines = Sizes(inverse);
+        var product = inverse.Times(a.Times(p));
+        Matrix = Cleaned(product, lines.Times(Absolute(a)).Times(columns));
         for (var i = 0; i < p.Rows; i++)
         {
+            Matrix[i, i] = (double)product[i, i]; // however small, a pole is one
             for (var j = 0; j < zeros; j++)
             {
                 Matrix[i, j] = 0;
@@ -31,16 +37,16 @@ internal sealed class ModalCoordinates
     /// <summary>The coordinates of a matrix: exact zero poles first, then by falling magnitude.</summary>
     public static ModalCoordinates Of(DoubleDoubleMatrix a)
     {
-        var columns = new List<(bool IsZero, double Size, DoubleDouble[] Column)>();
+        var directions = new List<(bool IsZero, double Size, DoubleDouble[] Column)>();
         foreach (var block in SpectralBlocks.Of(a).Blocks)
         {
             var size = Enumerable.Range(0, block.Size).Max(i => block.Pole(i).Magnitude);
             var isZero = block is { Size: 1, IsReal: true } && block.Pole(0).IsZero;
-            columns.AddRange(Independent(Directions(block), block.IsReal ? block.Size : 2 * block.Size)
+            directions.AddRange(Independent(Directions(block), block.IsReal ? block.Size : 2 * block.Size)
                 .Select(c => (isZero, size, c)));
         }
 
-        var ordered = columns.OrderByDescending(c => c.IsZero).ThenByDescending(c => c.Size).ToArray();
+        var ordered = directions.OrderByDescending(c => c.IsZero).ThenByDescending(c => c.Size).ToArray();
         var basis = new DoubleDoubleMatrix(a.Rows, a.Rows);
         for (var j = 0; j < ordered.Length; j++)
         {
@@ -54,7 +60,7 @@ internal sealed class ModalCoordinates
     }
 
     /// <summary>P⁻¹ B.</summary>
-    public double[,] Inputs(DoubleDoubleMatrix b) => Rounded(inverse.Solve(b));
+    public double[,] Inputs(DoubleDoubleMatrix b) => Cleaned(inverse.Times(b), lines.Times(Absolute(b)));
 
     /// <summary>C P.</summary>
     public double[,] Outputs(DoubleDouble[][] c)
@@ -68,7 +74,7 @@ internal sealed class ModalCoordinates
             }
         }
 
-        return Rounded(matrix.Times(p), matrix);
+        return Cleaned(matrix.Times(p), Absolute(matrix).Times(columns));
     }
 
     /// <summary>Powers of two that make what the instruments feed back about as large in each row as in its
@@ -166,17 +172,54 @@ internal sealed class ModalCoordinates
         return sum;
     }
 
-    /// <summary>The nearest doubles; an entry far below the rounding of its row's largest is zero.</summary>
-    private static double[,] Rounded(DoubleDoubleMatrix matrix, DoubleDoubleMatrix? terms = null)
+    /// <summary>The nearest doubles to a product; an entry far below the terms it is a sum of is
+    /// zero.</summary>
+    private static double[,] Cleaned(DoubleDoubleMatrix product, DoubleDoubleMatrix terms)
     {
         const double rounding = 1e-22; // double-double leaves some 1e-30, a poor basis costs some digits
-        var result = matrix.ToDoubles();
+        var result = product.ToDoubles();
+        for (var i = 0; i < product.Rows; i++)
+        {
+            for (var j = 0; j < product.Columns; j++)
+            {
+                result[i, j] = Math.Abs(result[i, j]) <= rounding * terms[i, j].Hi ? 0 : result[i, j];
+            }
+        }
+
+        return result;
+    }
+
+    /// <summary>Magnitudes, those of a row's small entries raised: rounding may have left them where nothing
+    /// is.</summary>
+    private static DoubleDoubleMatrix Sizes(DoubleDoubleMatrix matrix)
+    {
+        const double least = 1e-6; // times the rounding above: 1e-28 of a vector's length
+        var sizes = Absolute(matrix);
         for (var i = 0; i < matrix.Rows; i++)
         {
-            var largest = (terms ?? matrix).Row(i).Hi.ToArray().Select(Math.Abs).DefaultIfEmpty(0).Max();
+            double largest = 0;
             for (var j = 0; j < matrix.Columns; j++)
             {
-                result[i, j] = Math.Abs(result[i, j]) <= rounding * largest ? 0 : result[i, j];
+                largest = Math.Max(largest, sizes[i, j].Hi);
+            }
+
+            for (var j = 0; j < matrix.Columns; j++)
+            {
+                sizes[i, j] = Math.Max(sizes[i, j].Hi, least * largest);
+            }
+        }
+
+        return sizes;
+    }
+
+    private static DoubleDoubleMatrix Absolute(DoubleDoubleMatrix matrix)
+    {
+        var result = new DoubleDoubleMatrix(matrix.Rows, matrix.Columns);
+        for (var i = 0; i < matrix.Rows; i++)
+        {
+            for (var j = 0; j < matrix.Columns; j++)
+            {
+                result[i, j] = Math.Abs(matrix[i, j].Hi);
             }
         }
 

@@ -10,7 +10,7 @@ internal sealed partial class SegmentWalk
 {
     private const double Turn = 0.4; // |E| h: 16 steps a period; cubic pieces then miss 1e-4 of a mode
     private const double Fall = 0.5; // of a time constant: less is hidden in a monotone function
-    private const double Matters = 1e-7; // of a function's size: less moves no peak by what is promised
+    private const double Matters = 1e-9; // of a function's size: less moves no peak by what is promised
     private const double Settled = 1e-9; // of a function's size
     private const int StepsBetweenBounds = 4;
     private const int MostSteps = 40_000; // a segment with more goes the exact route

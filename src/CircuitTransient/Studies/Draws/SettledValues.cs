@@ -97,7 +97,7 @@ internal static class SettledValues
         {
             var isPair = form.PoleImaginary[j] != 0;
             var pole = new Complex(form.PoleReal[j], form.PoleImaginary[j]);
-            if (pole == Complex.Zero && form.Inputs.AsSpan(j * sources, sources).IndexOfAnyExcept(0.0) < 0)
+            if (pole == Complex.Zero && !form.IsDriven(j))
             {
                 continue;
             }

@@ -7,7 +7,7 @@ namespace CircuitTransient.Studies.Sizes;
 /// exact solution confirms it.</summary>
 internal sealed class PlaneSearch(SizeSearch search)
 {
-    private const int MostSteps = 80;
+    private const int MostSteps = 50;
     private const int MostRows = 14; // the constraints nearest to their bounds: others matter in no step
     private const int MostCorrections = 6;
     private const double Difference = 1e-5; // of a logarithm: rounding of 1e-11 leaves a slope good to 1e-6
@@ -49,8 +49,9 @@ internal sealed class PlaneSearch(SizeSearch search)
             var gain = rank(trial) - rank(point);
             if (isAllowed(trial) && gain > 1e-13 * Math.Abs(rank(point)))
             {
+                // A gain that no longer shows in ten digits is the end coming near.
+                size = gain > 1e-10 * Math.Abs(rank(point)) ? Math.Min(reach, 2 * size) : size / 4;
                 (point, slopes) = (trial, null);
-                size = Math.Min(reach, 2 * size);
             }
             else
             {
@@ -103,16 +104,17 @@ internal sealed class PlaneSearch(SizeSearch search)
     private static IEnumerable<int> Tightest(SizePoint point, ImmutableArray<int> among) =>
         among.Where(i => double.IsFinite(point.Shares[i])).OrderBy(i => point.Shares[i]).Take(MostRows);
 
-    private SizePoint Moved(SizePoint point, ReadOnlySpan<double> move)
-    {
-        var values = new double[2];
-        for (var k = 0; k < 2; k++)
-        {
-            var part = search.Problem.Parts[k];
-            values[k] = Math.Clamp(point.Values[k] * Math.Exp(move[k]), part.Lowest, part.Highest);
-        }
+    private SizePoint Moved(SizePoint point, params ReadOnlySpan<double> move) =>
+        search.At(ValuesAt(point, move[0], move[1]).AsSpan());
 
-        return search.At(values);
+    private ImmutableArray<double> ValuesAt(SizePoint point, double first, double second)
+    {
+        var (across, up) = (search.Problem.Parts[0], search.Problem.Parts[1]);
+        return
+        [
+            Math.Clamp(point.Values[0] * Math.Exp(first), across.Lowest, across.Highest),
+            Math.Clamp(point.Values[1] * Math.Exp(second), up.Lowest, up.Highest),
+        ];
     }
 
     // Straight towards the bound that is broken most, a little past it: boundaries are curved.
@@ -123,7 +125,7 @@ internal sealed class PlaneSearch(SizeSearch search)
         var square = (slope[0] * slope[0]) + (slope[1] * slope[1]);
         var factor = -(trial.Worst * (1 + 1e-6)) / square;
         return double.IsFinite(factor)
-            ? Moved(trial, [factor * slope[0], factor * slope[1]])
+            ? Moved(trial, factor * slope[0], factor * slope[1])
             : trial;
     }
 
@@ -131,9 +133,14 @@ internal sealed class PlaneSearch(SizeSearch search)
     {
         var shares = point.Shares.Select(_ => new double[2]).ToArray();
         var aim = new double[2];
+        var around = search.At(
+        [
+            ValuesAt(point, Difference, 0), ValuesAt(point, -Difference, 0),
+            ValuesAt(point, 0, Difference), ValuesAt(point, 0, -Difference),
+        ]);
         for (var k = 0; k < 2; k++)
         {
-            var (up, down) = (Beside(point, k, Difference), Beside(point, k, -Difference));
+            var (up, down) = (around[2 * k], around[(2 * k) + 1]);
             var width = Math.Log(up.Values[k] / down.Values[k]);
             if (!up.IsSolved || !down.IsSolved || width == 0)
             {
@@ -149,13 +156,6 @@ internal sealed class PlaneSearch(SizeSearch search)
         }
 
         return new Slopes(shares, aim);
-    }
-
-    private SizePoint Beside(SizePoint point, int part, double step)
-    {
-        var move = new double[2];
-        move[part] = step;
-        return Moved(point, move);
     }
 
     private sealed record Slopes(double[][] Shares, double[] Aim);

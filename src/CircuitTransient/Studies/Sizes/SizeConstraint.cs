@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
-using CircuitTransient.Text;
 
 namespace CircuitTransient.Studies.Sizes;
 
@@ -54,7 +53,7 @@ public sealed record SizeConstraint(string Name, string Unit, double Scale, Stud
             RatingKind.VoltageRate => ("steepest voltage", "V/s"),
             _ => ("steepest current", "A/s"),
         };
-        var rated = EngineeringNumber.Format(rating.Limit, unit);
+        var rated = Amount.Of(rating.Limit, unit);
         return new SizeConstraint(
             $"{what} of {part.Name} at most the rated {rated}", unit, rating.Limit, figure);
     }

@@ -12,6 +12,7 @@ public sealed class SizeStudy
 {
     private const int PlaneCount = 37; // twelve a decade over the usual range
     private const int MostPlanePoints = 6000;
+    private const int MostRegions = 2; // each is improved from its own best point
     private const int Neighbours = 12; // of a fine series, on either side of the best values
     private const int MostRounds = 12; // each adds corners of the tolerances that decide
 
@@ -88,8 +89,15 @@ public sealed class SizeStudy
             [.. axes[1].SelectMany(y => axes[0].Select(x => ImmutableArray.Create(x, y)))]);
         var plane = new PlaneSearch(search);
         var reach = Math.Max(Reach(axes[0]), Reach(axes[1]));
-        var start = search.Ranked(scanned).FirstOrDefault() ?? FirstHolding(plane, search, scanned, reach);
-        var exact = start is null ? null : plane.Improve(start, reach);
+        var starts = HeldRegions.Of(scanned, axes[0].Length)
+            .Select(region => search.Ranked(region).FirstOrDefault()).OfType<SizePoint>()
+            .Take(MostRegions).ToArray();
+        if (starts.Length == 0 && FirstHolding(plane, search, scanned, reach) is { } between)
+        {
+            starts = [between];
+        }
+
+        var exact = search.Ranked(starts.Select(start => plane.Improve(start, reach))).FirstOrDefault();
         var preferred = request.Series is not { } series ? []
             : IsPreferredGrid ? scanned
             : exact is null ? []

@@ -17,6 +17,8 @@ public sealed record SizedValue(
     // Common practice, no source: a hundredfold either way for one part, some thirtyfold for each of two.
     private const double ReachOfOne = 100;
     private const double ReachOfTwo = 31.622776601683793;
+    private const double Least = 1e-18; // an attofarad and a petaohm are past every part
+    private const double Most = 1e15;
 
     /// <summary>The range of a value, or what is wrong with it.</summary>
     /// <param name="part">The part as asked for.</param>
@@ -32,10 +34,12 @@ public sealed record SizedValue(
                 "size finds values of those");
         }
 
-        if (value.Nominal <= 0)
+        if (value.Nominal is < Least or > Most)
         {
-            return Refuse(part.Source, part.Span, $"`{part.Name}` is negative, which is nothing to buy",
-                "size finds values above zero");
+            return Refuse(part.Source, part.Span, value.Nominal <= 0
+                ? $"`{part.Name}` is negative, which is nothing to buy"
+                : $"`{part.Name}` is no value of a part",
+                "size finds values above zero, from 1e-18 to 1e15 of their unit");
         }
 
         var reach = partCount == 1 ? ReachOfOne : ReachOfTwo;
@@ -78,9 +82,12 @@ public sealed record SizedValue(
             return Diagnostic.Error(source, limit.Span, $"`{text}` is not in {unit}");
         }
 
-        return limit.Value > 0 && double.IsFinite(limit.Value)
-            ? null
-            : Diagnostic.Error(source, limit.Span, $"`{text}` is not above zero");
+        return limit.Value switch
+        {
+            <= 0 => Diagnostic.Error(source, limit.Span, $"`{text}` is not above zero"),
+            < Least or > Most => Diagnostic.Error(source, limit.Span, $"`{text}` is no value of a part"),
+            _ => null,
+        };
     }
 
     private static string? SymbolOf(NumberSyntax number) =>

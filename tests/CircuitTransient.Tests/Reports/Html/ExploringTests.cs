@@ -130,7 +130,8 @@ public partial class ExploringTests(Browser browser)
         Assert.Equal(expected!.Value, Number(text), Math.Max(scale, 1e-12) * PlottingAccuracy);
     }
 
-    private static double Number(string text)
+    /// <summary>The number that a text begins with or holds first, in SI.</summary>
+    internal static double Number(string text)
     {
         var match = Written().Match(text);
         Assert.True(match.Success, $"no number in `{text}`");

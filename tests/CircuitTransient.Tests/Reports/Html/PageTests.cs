@@ -71,7 +71,7 @@ public class PageTests(Browser browser)
         await using var opened = await browser.Open(SolvedPages.Page(SolvedPages.AsItStands));
         await opened.Observation(0);
         var panel = opened.Page.Locator("#observation-0 .panel").First;
-        await opened.Page.Locator("#observation-0 .tools select").FocusAsync();
+        await opened.Page.Locator("#observation-0 .tools select:last-child").FocusAsync();
         await opened.Page.Keyboard.PressAsync("Tab");
         Assert.Equal("slider", await opened.Page.Locator(":focus").GetAttributeAsync("role"));
 

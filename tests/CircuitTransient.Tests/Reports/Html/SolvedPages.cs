@@ -50,11 +50,12 @@ internal static class SolvedPages
     public static string Page(TransientResult result) =>
         HtmlReport.Write(result, $"circuit-transient solve {result.Circuit.Source.Name}");
 
-    private static TransientResult Solve(string text, string name)
+    /// <summary>A circuit written here, solved.</summary>
+    public static TransientResult Solve(string text, string name, AnalysisOptions? options = null)
     {
         var outcome = TransientAnalysis.Run(
             new SourceText(name, text),
-            AnalysisOptions.Default,
+            options ?? AnalysisOptions.Default,
             path => throw new InvalidOperationException($"the circuit names {path}"),
             TestContext.Current.CancellationToken);
         return Assert.IsType<CircuitTransient.Solved>(outcome).Result;

@@ -119,7 +119,7 @@ public sealed class SizeStudyTests
     [Fact]
     public void Two_requirements_that_exclude_each_other_are_named_with_what_is_missing()
     {
-        // I·R at most 1 V and at least 1.21 V: nearest in ratio of the bounds where both are missed alike.
+        // I·R at most 1 V and at least 1.5 V: nearest where both are missed by the same fraction.
         var result = Sizing.Run(
             """
             source   Feed from ground to a : 1 mA
@@ -135,11 +135,12 @@ public sealed class SizeStudyTests
         Assert.False(result.IsFound);
         var conflict = result.Conflict!;
         Assert.Empty(conflict.Alone);
-        Assert.Equal((0, 1), (conflict.First, conflict.Second));
+        var pair = Assert.Single(conflict.Pairs);
+        Assert.Equal((0, 1), (pair.First, pair.Second));
         // (V − 1)/1 = (1.5 − V)/1.5 at V = 1.2: each is missed by a fifth.
-        Assert.Equal(1200, conflict.PairNearest!.Values[0], 1e-6);
-        Assert.Equal(-0.2, conflict.PairNearest.Shares[0], 1e-9);
-        Assert.Equal(-0.2, conflict.PairNearest.Shares[1], 1e-9);
+        Assert.Equal(1200, pair.Nearest.Values[0], 1e-6);
+        Assert.Equal(-0.2, pair.Nearest.Shares[0], 1e-9);
+        Assert.Equal(-0.2, pair.Nearest.Shares[1], 1e-9);
     }
 
     [Fact]
