@@ -45,10 +45,7 @@ public static partial class SpreadSummary
 
         if (draws.Unsolvable > 0)
         {
-            var numbers = string.Join(", ", draws.UnsolvableDraws.Take(5));
-            text.Paragraph(
-                $"{SpreadWords.Count(draws.Unsolvable, "draw")} had no unique solution (the first: "
-                + $"{numbers}); nothing is counted as holding in them", hanging: 2);
+            text.Paragraph(SpreadWords.Unsolvable(draws).Trim(), hanging: 2);
         }
     }
 

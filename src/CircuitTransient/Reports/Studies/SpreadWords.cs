@@ -129,6 +129,11 @@ internal static partial class SpreadWords
             + "independent draws, and cautious for these, which are spread more evenly. "
             + "Draws are evaluated in double precision, good to a millionth; extremes by the exact engine.";
 
+    /// <summary>What is said of draws without a solution; empty where there is none.</summary>
+    public static string Unsolvable(DrawFindings draws) => draws.Unsolvable == 0 ? ""
+        : $" {draws.Unsolvable:N0} of them had no unique solution (the first: "
+            + $"{string.Join(", ", draws.UnsolvableDraws.Take(5))}); nothing is counted as holding in them.";
+
     /// <summary>A probability in per cent, with more digits near 0 and 1.</summary>
     public static string Share(double fraction) =>
         (100 * fraction).ToString(fraction is (> 0.99 and < 1) or (> 0 and < 0.01) ? "0.###" : "0.#",
