@@ -10,6 +10,7 @@ namespace CircuitTransient.Solutions;
 public sealed class IntervalModel
 {
     private readonly DoubleDoubleComplex[][][] drives;
+    private readonly int[] firstAlike;
     private readonly Dictionary<Measurand, Projection> projections = [];
 
     /// <summary>Splits a normal form.</summary>
@@ -25,6 +26,8 @@ public sealed class IntervalModel
         Form = form;
         IsClosed = isClosed;
         Blocks = blocks;
+        firstAlike = [.. Blocks.Select((one, b) => one.Size > 1 ? b : Blocks.ToList().FindIndex(
+            other => other.Size == 1 && other.IsReal == one.IsReal && other.T[0, 0] == one.T[0, 0]))];
         drives = new DoubleDoubleComplex[Blocks.Length][][];
         for (var b = 0; b < Blocks.Length; b++)
         {
@@ -49,6 +52,10 @@ public sealed class IntervalModel
 
     /// <summary>The blocks of poles.</summary>
     public ImmutableArray<SpectralBlock> Blocks { get; }
+
+    /// <summary>The first block of the very same lone pole: charges that several floating capacitors hold
+    /// have zero poles in common, and what of them cancels is to cancel before it is rounded.</summary>
+    internal int FirstAlike(int block) => firstAlike[block];
 
     /// <summary>How an input drives a block: W b, one number for each row of the block.</summary>
     internal DoubleDoubleComplex[] Drive(int block, int input) => drives[block][input];

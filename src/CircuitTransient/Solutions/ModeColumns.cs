@@ -25,7 +25,7 @@ public sealed class ModeColumns
         var forced = ImmutableArray.CreateBuilder<DoubleDoubleComplex>();
         for (var m = 0; m < modes.Length; m++)
         {
-            columns[m] = modes[m].Block;
+            columns[m] = modes[m].Block < 0 ? -1 : segment.Model.FirstAlike(modes[m].Block);
             if (modes[m].Kind == ModeKind.Forced)
             {
                 columns[m] = segment.Model.Blocks.Length + forced.Count;

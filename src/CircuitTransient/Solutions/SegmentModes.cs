@@ -137,8 +137,9 @@ internal sealed class SegmentModes
             AddForcedTerms(sums, forcing.Exponent, a * factor, s * factor);
         }
 
+        // Beside a sine nothing is at rest: a constant written as one and a swing would only cancel.
         if (isBeside && block.Size == 1
-            && motion.Forcings.FirstOrDefault(f => IsJoined(b, f, out _)) is { } kept)
+            && motion.Forcings.FirstOrDefault(f => f.Exponent.Im.IsZero && IsJoined(b, f, out _)) is { } kept)
         {
             AddBesideForced(sums, b, kept, row[0] * free[0] * factor);
             return;
@@ -222,7 +223,7 @@ internal sealed class SegmentModes
         var drive = block.Size == 1 ? [DoubleDoubleComplex.One] : model.Drive(b, forcing.Input);
         var slopes = all.Exists(f => f.Exponent == forcing.Exponent && !f.Slope.IsZero);
         modes.Add(new Mode(ModeKind.Joined, BlockResponse.Join(block, drive, forcing.Exponent, slopes),
-            block.Size, b));
+            block.Size, model.FirstAlike(b)));
     }
 
     private bool IsNear(SpectralBlock block, DoubleDoubleComplex exponent)
@@ -239,5 +240,5 @@ internal sealed class SegmentModes
     }
 
     private (int, DoubleDoubleComplex, int) Key(int block, Forcing forcing) =>
-        (block, forcing.Exponent, model.Blocks[block].Size == 1 ? -1 : forcing.Input);
+        (model.FirstAlike(block), forcing.Exponent, model.Blocks[block].Size == 1 ? -1 : forcing.Input);
 }

@@ -32,6 +32,7 @@ public sealed class SizeTests : IDisposable
         var lines = run.Output.Split('\n');
         Assert.Equal(
             "R2 1.2 kΩ: everything holds, confirmed by a full solution with its self-checks.", lines[1]);
+        Assert.Contains("As it stands (R2 1 kΩ) the circuit does not hold: voltage of a between", run.Output);
         Assert.All(lines, line => Assert.True(line.Length <= 100, line));
         Assert.Equal(
             ["size/report.html", "size/size.csv", "size/size.json", "size/size.png", "size/size.svg"],

@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
+using CircuitTransient.Numerics;
 using CircuitTransient.Solutions;
 
 namespace CircuitTransient.Measurements.Breakdowns;
@@ -35,20 +36,29 @@ internal sealed class ModeEnergy
     /// over a cycle where it oscillates; vectors of poles that are not parted count alike.</summary>
     public ImmutableArray<PartShare> Shares(IntervalModel model, int block)
     {
-        var vectors = layout.Stores.Select(p => model.Project(layout.Held(p)).Rows[block]).ToArray();
-        var shares = new double[vectors.Length];
-        for (var j = 0; j < model.Blocks[block].Size; j++)
+        var shares = new double[rows.Length];
+        var count = 0;
+        for (var b = block; b < model.Blocks.Length; b++)
         {
-            var energies = vectors.Select((v, k) => rows[k].Sum(r =>
-                r.Inertia * (v[j].Conjugate * vectors[r.Store][j]).Re.Hi)).ToArray();
-            var sum = energies.Sum();
-            for (var k = 0; k < shares.Length && sum > 0; k++)
+            for (var j = 0; j < model.Blocks[b].Size && model.FirstAlike(b) == block; j++, count++)
             {
-                shares[k] += energies[k] / sum / model.Blocks[block].Size;
+                AddShares(shares, [.. layout.Stores.Select(p => model.Project(layout.Held(p)).Rows[b][j])]);
             }
         }
 
-        return [.. shares.Select((s, k) => new PartShare(layout.Circuit.Parts[layout.Stores[k]].Name, s))];
+        return [.. shares.Select((s, k) =>
+            new PartShare(layout.Circuit.Parts[layout.Stores[k]].Name, s / count))];
+    }
+
+    private void AddShares(double[] shares, DoubleDoubleComplex[] vector)
+    {
+        var energies = vector.Select((v, k) =>
+            rows[k].Sum(r => r.Inertia * (v.Conjugate * vector[r.Store]).Re.Hi)).ToArray();
+        var sum = energies.Sum();
+        for (var k = 0; k < shares.Length && sum > 0; k++)
+        {
+            shares[k] += energies[k] / sum;
+        }
     }
 
     private static double Inertia(Part part) => part switch

@@ -91,7 +91,7 @@ internal sealed class ModeSplit(TransientSolution solution, bool withEnergies)
 
     private ModeResult Natural(IntervalModel model, int block)
     {
-        var groups = PoleGroups.Of([model.Blocks[block]]);
+        var groups = PoleGroups.Of([.. model.Blocks.Where((_, b) => model.FirstAlike(b) == block)]);
         var count = groups.Sum(g => g.Multiplicity);
         var pole = groups.Aggregate(Complex.Zero, (sum, g) => sum + (g.Multiplicity * g.Value)) / count;
         var parts = energy.Shares(model, block)

@@ -22,6 +22,7 @@ public static class SizeJson
         WriteCircuit(json, result.Problem.File);
         WriteAsked(json, result);
         json.WriteBoolean("found", result.IsFound);
+        WritePoint(json, "asItStands", result, result.AsItStands);
         WritePoint(json, "proposed", result, result.Chosen);
         WritePoint(json, "exact", result, result.Exact);
         WriteConfirmation(json, result);
@@ -117,7 +118,12 @@ public static class SizeJson
     }
 
     private static void WriteName(Utf8JsonWriter json, string name, SizeResult result, int? constraint) =>
-        json.WriteString(name, constraint is { } index ? result.Problem.Constraints[index].Name : null);
+        json.WriteString(name, constraint switch
+        {
+            null => null,
+            FeasibleInterval.Unsolvable => SizeWords.NoSolution,
+            { } index => result.Problem.Constraints[index].Name,
+        });
 
     private static void WritePoint(Utf8JsonWriter json, string name, SizeResult result, SizePoint? point)
     {

@@ -16,7 +16,8 @@ public static class SizeSection
             : "What follows below is the circuit with the proposed values.";
         return new StudySection("Sizing", Markup.Of($"""
             <p class="lead">{SizeWords.Verdict(result)}</p>
-            {Aim(result)}{Margins(result)}{Conflict(result)}{Intervals(result)}
+            {Aim(result)}<p>{SizeWords.AsItStands(result)}</p>
+            {Margins(result)}{Conflict(result)}{Intervals(result)}
             <div class="wide"><figure
             class="picture">{HtmlReport.Themed(SizePlot.Draw(result, fonts))}</figure></div>
             <p class="aside">{Markup.Join(notes)}All points stand in size.csv and size.json. {circuit}</p>

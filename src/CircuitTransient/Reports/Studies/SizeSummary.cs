@@ -25,6 +25,8 @@ public static class SizeSummary
         var circuit = result.Problem.File;
         text.Title(circuit.Title is { } title ? $"{title} ({circuit.Source.Name})" : circuit.Source.Name);
         text.Paragraph(SizeWords.Verdict(result), indent: 0);
+        WriteAim(text, result);
+        text.Paragraph(SizeWords.AsItStands(result), indent: 0);
         WriteChosen(text, result);
         WriteConflict(text, result);
         WriteIntervals(text, result);
@@ -51,7 +53,7 @@ public static class SizeSummary
         return text.ToString();
     }
 
-    private static void WriteChosen(SummaryText text, SizeResult result)
+    private static void WriteAim(SummaryText text, SizeResult result)
     {
         if (result.Chosen is not { } chosen)
         {
@@ -67,6 +69,14 @@ public static class SizeSummary
             text.Paragraph(
                 $"Not bound to {result.Request.Series}, it would be {SizeWords.Values(result, exact)}{aim}.",
                 indent: 0);
+        }
+    }
+
+    private static void WriteChosen(SummaryText text, SizeResult result)
+    {
+        if (result.Chosen is not { } chosen)
+        {
+            return;
         }
 
         text.Blank();

@@ -62,9 +62,30 @@ internal static class SizeWords
         result.Problem is { AimSign: not 0, AimPart: < 0 };
 
     /// <summary>What breaks at the end of a stretch of values.</summary>
-    public static string End(SizeResult result, int? constraint) => constraint is { } index
-        ? $"broken is {result.Problem.Constraints[index].Name}"
-        : "the range ends";
+    public static string End(SizeResult result, int? constraint) => constraint switch
+    {
+        null => "the range ends",
+        FeasibleInterval.Unsolvable => NoSolution,
+        { } index => $"broken is {result.Problem.Constraints[index].Name}",
+    };
+
+    /// <summary>What stands in place of a constraint where there is nothing to judge.</summary>
+    public const string NoSolution = "there is no unique solution";
+
+    /// <summary>How the circuit does as its file has it.</summary>
+    public static string AsItStands(SizeResult result)
+    {
+        var (point, problem) = (result.AsItStands, result.Problem);
+        var tightest = problem.Constraints[Tightest(point)];
+        var corners = result.Request.WithSpread && !problem.Corners.Toleranced.IsEmpty
+            ? " at the corners of its tolerances"
+            : "";
+        var margin = Margin(tightest, point.Worst);
+        var values = Values(result, point);
+        return !point.IsSolved ? $"As it stands ({values}) the circuit has no unique solution."
+            : point.Holds ? $"As it stands ({values}) the circuit holds{corners}, {margin} at the tightest."
+            : $"As it stands ({values}) the circuit does not hold{corners}: {tightest.Name}, {margin}.";
+    }
 
     /// <summary>Why nothing holds.</summary>
     public static ImmutableArray<string> Conflict(SizeResult result)

@@ -25,7 +25,8 @@ internal static class FamilyScan
             return null;
         }
 
-        var members = Places(plan, points, subject.Worst).AsParallel().AsOrdered()
+        var members = Places(plan, points, subject.Worst)
+            .AsParallel().AsOrdered().WithCancellation(cancellation)
             .Select(place => Member(plan, subject, place.At, place.Role, cancellation))
             .OfType<FamilyMember>().ToImmutableArray();
         return members.IsEmpty ? null

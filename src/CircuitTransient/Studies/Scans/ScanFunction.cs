@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
 using CircuitTransient.Solutions;
 using CircuitTransient.Studies.Sensitivities;
@@ -14,10 +15,14 @@ internal sealed class ScanFunction
     private readonly ImmutableArray<StudyFigure> figures;
     private readonly CancellationToken cancellation;
 
+    // Derivatives of integrals cost more than all else of a point: they are taken only where they matter.
+    private readonly ImmutableArray<bool> isIntegrated;
+
     public ScanFunction(
         VariedCircuit varied, ImmutableArray<StudyFigure> figures, CancellationToken cancellation)
     {
         (this.varied, this.figures, this.cancellation) = (varied, figures, cancellation);
+        isIntegrated = [.. figures.Select(f => IsIntegrated(varied.Circuit, f))];
     }
 
     /// <summary>All figures at a point.</summary>
@@ -35,7 +40,7 @@ internal sealed class ScanFunction
         ImmutableArray<int> all = [.. Enumerable.Range(0, figures.Length)];
         var (found, slopes) = axis < 0
             ? (StudySolver.Read(solution, figures, cancellation), [])
-            : Derived(solution, values, axis, all);
+            : Derived(solution, values, axis, all, f => !isIntegrated[f]);
         return new ScanPoint(at, found, slopes, null);
     }
 
@@ -54,7 +59,7 @@ internal sealed class ScanFunction
             return new SlopedSample(x, double.NaN, double.NaN);
         }
 
-        var (found, slopes) = Derived(solution, values, axis, [figure]);
+        var (found, slopes) = Derived(solution, values, axis, [figure], _ => true);
         return new SlopedSample(x, Judged(figures[figure], found, found.Values[0]), slopes[0]);
     };
 
@@ -79,10 +84,11 @@ internal sealed class ScanFunction
 
     /// <summary>Figures with their slopes; what has no derivative is measured alone.</summary>
     private (StudyPoint Found, ImmutableArray<double> Slopes) Derived(
-        TransientSolution solution, double[] values, int axis, ImmutableArray<int> wanted)
+        TransientSolution solution, double[] values, int axis, ImmutableArray<int> wanted,
+        Func<int, bool> isDerived)
     {
         var analysis = SensitivityAnalysis.Of(varied, values, solution, cancellation).Value;
-        var derived = wanted.Select(f => analysis?.Of(figures[f])).ToArray();
+        var derived = wanted.Select(f => isDerived(f) ? analysis?.Of(figures[f]) : null).ToArray();
         var others = StudySolver.Read(
             solution, [.. wanted.Where((_, k) => derived[k] is null).Select(f => figures[f])], cancellation);
         var found = ImmutableArray.CreateBuilder<double?>();
@@ -98,6 +104,23 @@ internal sealed class ScanFunction
         }
 
         return (new StudyPoint(found.ToImmutable(), times.ToImmutable()), slopes.ToImmutable());
+    }
+
+    private static bool IsIntegrated(Circuit circuit, StudyFigure figure)
+    {
+        var part = figure.Kind == StudyFigureKind.RatingUsed ? circuit.Parts[figure.Index] : null;
+        Measurand? quantity = figure.Kind switch
+        {
+            StudyFigureKind.Maximum or StudyFigureKind.Minimum => circuit.Observations[figure.Index].Quantity,
+            StudyFigureKind.Margin => circuit.Requirements[figure.Index].Quantity,
+            _ => null,
+        };
+        return part is not null
+            ? part.Ratings[figure.Rating].Kind is RatingKind.JouleIntegral or RatingKind.MeanPower
+                || (part.Ratings[figure.Rating].Kind == RatingKind.Energy
+                    && part is not (Capacitor or Inductor))
+            : quantity is not null and not Circuits.Figure
+                && QuantityFactors.OfAny(circuit, quantity) is { IsIntegrated: true };
     }
 
     private static string Reason(ImmutableArray<Diagnostic> diagnostics) =>

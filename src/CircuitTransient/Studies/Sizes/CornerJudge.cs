@@ -51,6 +51,19 @@ internal sealed class CornerJudge(SizeProblem problem, bool withSpread, Cancella
         });
     }
 
+    /// <summary>One set of values, at every corner where corners are looked at.</summary>
+    public SizePoint Of(ImmutableArray<double> values)
+    {
+        var nominal = problem.AtCorner(values, null, cancellation);
+        if (!looks)
+        {
+            return nominal;
+        }
+
+        var worst = WorstCorners(values).Point;
+        return worst with { Shares = [.. worst.Shares.Zip(nominal.Shares, Math.Min)] };
+    }
+
     /// <summary>Takes the first candidate that holds at every corner.</summary>
     /// <returns>The corners that broke the best candidate or an end of a stretch; the search is not done
     /// before there are none.</returns>

@@ -7,7 +7,12 @@ namespace CircuitTransient.Studies.Sizes;
 /// <param name="To">Its greatest value; it holds there.</param>
 /// <param name="Below">The constraint that breaks below it; null where the range looked at ends.</param>
 /// <param name="Above">The constraint that breaks above it; null where the range looked at ends.</param>
-public sealed record FeasibleInterval(SizePoint From, SizePoint To, int? Below, int? Above);
+public sealed record FeasibleInterval(SizePoint From, SizePoint To, int? Below, int? Above)
+{
+    /// <summary>Stands for a constraint where the circuit has no unique solution beyond the
+    /// boundary.</summary>
+    public const int Unsolvable = -1;
+}
 
 /// <summary>Finds the values of one part for which everything holds: a scan, its turning points refined, and
 /// every boundary between two scanned points bisected.</summary>
@@ -115,7 +120,7 @@ internal sealed class LineSearch(SizeSearch search)
             (holds, broken) = middle.Holds ? (middle, broken) : (holds, middle);
         }
 
-        return (holds, broken.Shares.IndexOf(broken.Worst));
+        return (holds, broken.IsSolved ? broken.Shares.IndexOf(broken.Worst) : FeasibleInterval.Unsolvable);
     }
 
     private SizePoint Section(double low, double high, Func<SizePoint, double> value)

@@ -35,6 +35,9 @@ public sealed record SizeResult(
     string? ProposedText,
     ImmutableArray<ConfirmedCorner> Confirmed)
 {
+    /// <summary>The values of the file, judged like the proposed ones.</summary>
+    public required SizePoint AsItStands { get; init; }
+
     /// <summary>Whether values were found, and full solutions with their self-checks confirm
     /// them.</summary>
     public bool IsFound =>

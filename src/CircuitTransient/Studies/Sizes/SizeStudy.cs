@@ -176,7 +176,10 @@ public sealed class SizeStudy
                 ResultBuilder.Measure(
                     solved.Value, solved.Diagnostics, AnalysisOptions.Default, cancellation),
                 text,
-                chosen is null ? [] : judge.InFull(chosen)), [])
+                chosen is null ? [] : judge.InFull(chosen))
+            {
+                AsItStands = judge.Of([.. problem.Parts.Select(part => part.Nominal)]),
+            }, [])
             : new(null, solved.Diagnostics);
     }
 

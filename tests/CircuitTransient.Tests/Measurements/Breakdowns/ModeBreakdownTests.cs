@@ -59,6 +59,7 @@ public class ModeBreakdownTests
     [Theory]
     [InlineData(31)]
     [InlineData(32)]
+    [InlineData(33)]
     [InlineData(35)]
     [InlineData(34)]
     public void Energies_of_modes_and_what_is_joint_sum_to_what_is_stored(int seed)

@@ -55,6 +55,8 @@ public sealed class SizeStudyTests
 
         Assert.Equal(1500, result.Chosen!.Values[0], 1e-9);
         Assert.True(result.IsFound);
+        // 1 kΩ leaves 0.5 V of 1.5 V.
+        Assert.Equal(1 / 3.0, result.AsItStands.Shares[0], 1e-8);
         Assert.Contains("resistor  R1 from a to ground : 1.5 kΩ ±10 %, rated 1 W", result.ProposedText);
         Assert.Equal(result.Preferred.Count(p => p.Holds), result.Preferred.Count(p => p.Values[0] <= 1500));
     }
@@ -187,6 +189,7 @@ public sealed class SizeStudyTests
             Sizing.Ask(["L1 from 0.1 H to 10 H"]));
 
         Assert.Equal(1, result.Unsolved);
+        Assert.False(result.AsItStands.IsSolved);
         Assert.DoesNotContain(result.Intervals,
             interval => interval.From.Values[0] <= 1 && interval.To.Values[0] >= 1);
     }
