@@ -1,10 +1,5 @@
-using System.Buffers;
 using System.Collections.Immutable;
-using System.Text;
-using System.Text.Encodings.Web;
 using System.Text.Json;
-using System.Text.Unicode;
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Studies.Comparing;
 
@@ -21,7 +16,8 @@ public static partial class JsonReport
     public static string Schema => JsonWriting.Schema("results.schema.json");
 
     /// <summary>The document of one circuit.</summary>
-    public static string Write(TransientResult result) => JsonWriting.Document(json => WriteDocument(json, result));
+    public static string Write(TransientResult result) =>
+        JsonWriting.Document(json => WriteDocument(json, result));
 
     /// <summary>The documents of several circuits, as an array.</summary>
     public static string Write(ImmutableArray<TransientResult> results) =>

@@ -1,5 +1,4 @@
 using System.Text.Json;
-using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Scans;

@@ -1,5 +1,4 @@
 using System.Text.Json;
-using CircuitTransient.Circuits;
 using CircuitTransient.Studies.Sizes;
 
 namespace CircuitTransient.Reports.Studies;

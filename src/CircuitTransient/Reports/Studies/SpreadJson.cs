@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using System.Text.Json;
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Studies.Spreads;
 using CircuitTransient.Studies.Statistics;
