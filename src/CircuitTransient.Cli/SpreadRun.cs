@@ -38,6 +38,13 @@ public sealed class SpreadRun(
             return ExitStatus.Mistake;
         }
 
+        if (!resumes && partial is not null && File.Exists(partial))
+        {
+            streams.Error.WriteLine(
+                $"{partial} holds unfinished draws, which this run replaces; `--resume` would go on with "
+                + "them");
+        }
+
         var reading = CircuitFile.Read(file, streams);
         if (reading.Source is not { } source)
         {

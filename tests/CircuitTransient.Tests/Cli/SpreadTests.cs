@@ -122,6 +122,25 @@ public sealed class SpreadTests : IDisposable
     }
 
     [Fact]
+    public void A_tolerance_on_top_of_a_named_value_is_written_as_what_both_come_to()
+    {
+        var worst = Path.Combine(commandLine.Folder, "worst.cause");
+        var run = Spread(
+            """
+            value    Rn : 100 Ω ±10 %
+            source   Feed at in : 10 V
+            resistor R1 from in to a : Rn*2 ±5 %
+            resistor R2 from a to ground : 100 Ω
+            observe voltage of a
+            until 1 ms
+            """, "--draws", "0", "--write-worst", worst);
+
+        Assert.Equal(ExitStatus.Success, run.Status);
+        Assert.Contains("value    Rn : 90 Ω\n", File.ReadAllText(worst));
+        Assert.Contains("resistor R1 from in to a : 171 Ω\n", File.ReadAllText(worst)); // 2 · 90 Ω · 0.95
+    }
+
+    [Fact]
     public void A_worst_case_that_one_line_cannot_say_is_refused_with_the_reason()
     {
         var worst = Path.Combine(commandLine.Folder, "worst.cause");

@@ -20,15 +20,17 @@ internal static class EventLine
         var labels = Labels(result, time, fonts);
         var rows = labels.Select(l => l.Row + 1).DefaultIfEmpty(1).Max();
         var axis = 14 + (rows * 17.0);
-        foreach (var (x, start, row, text) in labels)
+        foreach (var (x, _, row, text) in labels)
         {
             var y = axis - 10 - (row * 17);
             var top = text.Length == 0 ? axis - 10 : y + 4;
             shapes.Add(new LineShape(x, top, x, axis, new(PlotStyle.Axis, 1)));
             shapes.Add(new DiscShape(x, axis, 4.5, PlotStyle.Ink));
-            shapes.Add(new TextShape(start, y, text, Size, PlotStyle.Ink, HasHalo: true));
         }
 
+        // Words after the lines, so that no stem of a later event strikes them through.
+        shapes.AddRange(labels.Select(label => new TextShape(
+            label.Start, axis - 10 - (label.Row * 17), label.Text, Size, PlotStyle.Ink, HasHalo: true)));
         shapes.Insert(0, new LineShape(Left, axis, Right, axis, new(PlotStyle.Axis, 1.5)));
         var ticks = time.Ticks("s", 9);
         foreach (var (value, label) in ticks.Marks)

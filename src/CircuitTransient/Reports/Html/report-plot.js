@@ -226,7 +226,7 @@ function drawPeaks(svg, frame, model, time, level) {
 // Draws a panel anew and returns what pointing at it needs.
 function drawPanel(svg, model, window, axis, width, clip) {
   const isNarrow = width < 640;
-  const height = isNarrow ? 250 : 300;
+  const height = state.printWidth ? 232 : isNarrow ? 250 : 300;
   const names = Math.max(0, ...model.lines.map((line) => widthOf([...line.name].slice(0, 60).join(""))));
   const frame = {
     left: isNarrow ? 46 : 62, right: width - (isNarrow ? 96 : Math.min(0.26 * width, Math.max(178, names + 36))), top: 30, bottom: height - 44, width,

@@ -67,6 +67,9 @@ internal sealed class PdfPages : IDisposable
         (y, ColumnLeft, ColumnWidth) = (Math.Max(y, end), Left, TextWidth);
     }
 
+    /// <summary>What is left of the page.</summary>
+    public double Room => canvas is null ? Bottom - Top : Bottom - y;
+
     /// <summary>Makes room, on a new page where this one has too little.</summary>
     public void Need(double height)
     {

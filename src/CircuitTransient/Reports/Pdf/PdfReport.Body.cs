@@ -10,8 +10,10 @@ public static partial class PdfReport
 {
     private const int MostPolePictures = 12;
     private const int MostLines = 5000;
+    private const int LettersPerLine = 80; // of the wider column
     private const double OnePanel = PdfPages.TextWidth / PlotPanel.Width;
-    private const double TwoPanels = 0.5; // with the tables of a few causes they just fill a page
+    private const double TwoPanels = 0.5;
+    private const double SmallestPanels = 0.4; // past that the tables take a page of their own
 
     private static void AddEvents(PdfPages pages, TransientResult result)
     {
@@ -37,26 +39,34 @@ public static partial class PdfReport
         pages.NewPage();
         pages.Heading(observed.Name, 14, 100);
         pages.Paragraph(ExtremesOf(result, observed));
-        var closeUp = PlotWindow.Enlarged(result, observed);
-        var scale = closeUp is null ? OnePanel : TwoPanels;
-        AddPanel(pages, result, observed, PlotWindow.Whole(result, observed), scale);
-        if (closeUp is not null)
-        {
-            AddPanel(pages, result, observed, closeUp, scale);
-        }
-
         var worst = WorstObservation.Find(result);
         var atMax = ReferenceEquals(worst?.Observation, observed)
             ? worst!.AtMax
             : observed.Greatest == observed.Max;
+        PlotWindow?[] windows = [PlotWindow.Whole(result, observed), PlotWindow.Enlarged(result, observed)];
+        var panels = windows.OfType<PlotWindow>().Select(window =>
+        {
+            var (shapes, height) = PlotPanel.Draw(result, observed, window, pages.Fonts, 0);
+            return new Drawing(PlotPanel.Width, height, observed.Name, shapes);
+        }).ToArray();
+        var usual = panels.Length == 1 ? OnePanel : TwoPanels;
+        var fitting = (pages.Room - HeightOfCauses(result, observed, atMax) - (8 * panels.Length))
+            / panels.Sum(panel => panel.Height);
+        var scale = fitting < SmallestPanels ? usual : Math.Min(usual, fitting);
+        foreach (var panel in panels)
+        {
+            pages.Picture(panel, scale);
+        }
+
         AddCauses(pages, result, observed, atMax);
     }
 
-    private static void AddPanel(
-        PdfPages pages, TransientResult result, ObservationResult observed, PlotWindow window, double scale)
+    /// <summary>What the tables of causes take, with words of some length and names that wrap.</summary>
+    private static double HeightOfCauses(TransientResult result, ObservationResult observed, bool atMax)
     {
-        var (shapes, height) = PlotPanel.Draw(result, observed, window, pages.Fonts, 0);
-        pages.Picture(new Drawing(PlotPanel.Width, height, observed.Name, shapes), scale);
+        var count = Math.Max(observed.Contributions.Length, SinceOf(observed, atMax)?.Parts.Length ?? 0);
+        var letters = PeakWords.Of(result, observed, atMax)?.Length ?? 0;
+        return 56 + (13 * ((letters + LettersPerLine - 1) / LettersPerLine)) + (20 * count);
     }
 
     private static string ExtremesOf(TransientResult result, ObservationResult observed)
@@ -91,8 +101,9 @@ public static partial class PdfReport
                 Without: atMax ? c.MaxWithout : c.MinWithout))
             .OrderByDescending(s => Math.Abs(s.Value ?? 0)).ToArray();
         var largest = Math.Max(shares.Max(s => Math.Abs(s.Value ?? 0)), double.Epsilon);
-        var count = Math.Max(shares.Length, SinceOf(observed, atMax)?.Parts.Length ?? 0);
-        pages.SideBySide(AddShares, () => AddSince(pages, observed, atMax, total), 100 + (22 * count));
+        pages.SideBySide(
+            AddShares, () => AddSince(pages, observed, atMax, total),
+            HeightOfCauses(result, observed, atMax));
 
         void AddShares()
         {

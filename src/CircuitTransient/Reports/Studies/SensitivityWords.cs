@@ -37,6 +37,12 @@ internal static class SensitivityWords
     public static string Ranked(SpreadResult spread, int figure) =>
         Ranked(spread, value => Relative(spread, figure, value));
 
+    /// <summary>The values that move a figure's instant, the strongest first.</summary>
+    public static string RankedTime(SpreadResult spread, int figure) =>
+        spread.Sensitivities.Figures[figure] is { } slopes
+            ? Ranked(spread, value => RelativeTime(slopes, spread.Varied.Values[value].Nominal, value))
+            : "";
+
     /// <summary>The values that move the magnitude of a pole, the strongest first.</summary>
     public static string RankedMagnitude(SpreadResult spread, PoleSlope pole) => Ranked(spread, value =>
         ((pole.Pole.Real * pole.Slopes[value].Real) + (pole.Pole.Imaginary * pole.Slopes[value].Imaginary))

@@ -18,7 +18,8 @@ public static class SpreadSection
             <p>{SpreadWords.Account(spread)}</p>
             <div class="wide"><figure class="picture">{HtmlReport.Themed(SpreadPlot.Draw(spread, fonts))}
             </figure></div>
-            {Draws(spread)}{Extremes(spread)}{Sensitivities(spread)}
+            {Draws(spread)}{Extremes(spread)}{SensitivitySection.Of(spread)}
+            <p>{SpreadWords.Checks(spread)}</p>
             <p class="aside">Everything stands in spread.json, the first draws one by one in spread.csv.</p>
             """));
     }
@@ -102,7 +103,7 @@ public static class SpreadSection
             """);
         return Markup.Of($"""
             <h3>{SpreadWords.Count(draws.Draws, "random draw")}</h3>
-            <p>{SpreadWords.Method(spread)}</p>
+            <p>{SpreadWords.Method(spread)}{SpreadWords.Unsolvable(draws)}</p>
             {table}
             """);
     }
@@ -126,27 +127,6 @@ public static class SpreadSection
             <thead><tr><th scope="col">Figure</th><th scope="col">Nominal</th><th scope="col">Least</th>
             <th scope="col">Greatest</th><th scope="col">Mean of the draws</th><th scope="col">Standard
             deviation</th><th scope="col">5 % below</th><th scope="col">5 % above</th></tr></thead>
-            <tbody>
-            {Markup.Join(rows)}</tbody></table></div>
-
-            """);
-    }
-
-    private static Markup Sensitivities(SpreadResult spread)
-    {
-        var found = spread.Sensitivities;
-        var rows = Enumerable.Range(0, found.Figures.Length)
-            .Select(f => (Figure: spread.Figures[f], Words: SensitivityWords.Ranked(spread, f)))
-            .Where(row => row.Words.Length > 0)
-            .Select(row => Markup.Of($"""
-                <tr><th scope="row">{Markup.Name(JudgedScale.Of(spread, row.Figure).Name)}</th>
-                <td>{Markup.Name(row.Words)}</td></tr>
-
-                """));
-        return found.WhyNone is { } why ? Markup.Of($"<p>No sensitivities: {why}.</p>\n") : Markup.Of($"""
-            <div class="wide"><table>
-            <caption>Exact sensitivities with every value nominal, in % per %, the strongest first</caption>
-            <thead><tr><th scope="col">Figure</th><th scope="col">Goes by this for 1 % of</th></tr></thead>
             <tbody>
             {Markup.Join(rows)}</tbody></table></div>
 

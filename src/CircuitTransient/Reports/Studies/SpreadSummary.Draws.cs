@@ -45,10 +45,7 @@ public static partial class SpreadSummary
 
         if (draws.Unsolvable > 0)
         {
-            var numbers = string.Join(", ", draws.UnsolvableDraws.Take(5));
-            text.Paragraph(
-                $"{SpreadWords.Count(draws.Unsolvable, "draw")} had no unique solution (the first: "
-                + $"{numbers}); nothing is counted as holding in them", hanging: 2);
+            text.Paragraph(SpreadWords.Unsolvable(draws).Trim(), hanging: 2);
         }
     }
 
@@ -83,6 +80,11 @@ public static partial class SpreadSummary
         var order = Enumerable.Range(0, range.Alone.Length)
             .OrderByDescending(i => Width(range.Alone[i]))
             .Take(MostDrivers).ToArray();
+        if (!order.Any(i => Width(range.Alone[i]) > 0))
+        {
+            return;
+        }
+
         text.Heading("What each value alone does to it, at the ends of its tolerance; then the exact slope");
         var largest = order.Max(i => Width(range.Alone[i]));
         var shares = spread.Sensitivities.Figures.ElementAtOrDefault(worst.Figure) is { } slopes

@@ -29,6 +29,8 @@ public static partial class SpreadSummary
         WriteExtremes(text, spread);
         WriteDraws(text, spread);
         WriteDrivers(text, spread);
+        text.Blank();
+        text.Paragraph(SpreadWords.Checks(spread), indent: 0, hanging: 2);
         if (!files.IsEmpty)
         {
             text.Heading("Files");
@@ -115,7 +117,12 @@ public static partial class SpreadSummary
             Value(f, f.Greatest?.Value),
             Between(f)));
         text.Table(
-            [Prose, Right, Right, Right, Prose], rows.Prepend(["", "nominal", "least", "greatest", ""]));
+            [Prose, Right, Right, Right, Left], rows.Prepend(["", "nominal", "least", "greatest", ""]));
+        if (observed.Any(f => Between(f).Length > 0))
+        {
+            text.Paragraph("inside: between the corners; the worst corner stands in spread.json", hanging: 2);
+        }
+
         if (observed.Length > MostFigures)
         {
             text.Paragraph($"and {observed.Length - MostFigures} more, in spread.json");
@@ -147,12 +154,13 @@ public static partial class SpreadSummary
         }
     }
 
-    private static string Between(FigureRange range) =>
-        string.Join("; ", new[] { range.Least, range.Greatest }
-            .Where(p => p is { IsCorner: false })
-            .Select(p => p!.AtWorstCorner is { } corner
-                ? $"between the corners, at which {Number(corner, range.Figure.Unit)}"
-                : "between the corners"));
+    private static string Between(FigureRange range) => (range.Least, range.Greatest) switch
+    {
+        ({ IsCorner: false }, { IsCorner: false }) => "both inside",
+        ({ IsCorner: false }, _) => "least inside",
+        (_, { IsCorner: false }) => "greatest inside",
+        _ => "",
+    };
 
     private static string Value(FigureRange range, double? value) =>
         value is { } number && double.IsFinite(number) ? Number(number, range.Figure.Unit) : "none";

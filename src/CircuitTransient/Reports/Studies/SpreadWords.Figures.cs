@@ -138,6 +138,11 @@ internal static partial class SpreadWords
             return null;
         }
 
+        if (point.Causes is [_])
+        {
+            return $"{largest.Cause} makes all of it";
+        }
+
         var words = $"{largest.Cause} makes {Signed(largest.Value, unit)} of the {Number(reached, unit)}";
         var grown = point.Causes
             .Select(c => (c.Cause, Growth: c.Value

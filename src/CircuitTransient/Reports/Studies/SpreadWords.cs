@@ -90,8 +90,8 @@ internal static partial class SpreadWords
             + rest switch
             {
                 0 => "",
-                1 => "; one value does not matter",
-                _ => $"; {rest} values do not matter",
+                1 => "; the other one nominal",
+                _ => $"; the other {rest} nominal",
             };
     }
 
@@ -129,6 +129,11 @@ internal static partial class SpreadWords
             + "independent draws, and cautious for these, which are spread more evenly. "
             + "Draws are evaluated in double precision, good to a millionth; extremes by the exact engine.";
 
+    /// <summary>What is said of draws without a solution; empty where there is none.</summary>
+    public static string Unsolvable(DrawFindings draws) => draws.Unsolvable == 0 ? ""
+        : $" {draws.Unsolvable:N0} of them had no unique solution (the first: "
+            + $"{string.Join(", ", draws.UnsolvableDraws.Take(5))}); nothing is counted as holding in them.";
+
     /// <summary>A probability in per cent, with more digits near 0 and 1.</summary>
     public static string Share(double fraction) =>
         (100 * fraction).ToString(fraction is (> 0.99 and < 1) or (> 0 and < 0.01) ? "0.###" : "0.#",
@@ -148,6 +153,17 @@ internal static partial class SpreadWords
         StudyFigureKind.RatingUsed => "rating",
         _ => throw new System.Diagnostics.UnreachableException($"no word for {figure.Kind}"),
     };
+
+    /// <summary>That all self-checks hold, nominal and at the worst case.</summary>
+    public static string Checks(SpreadResult spread)
+    {
+        var checks = spread.Nominal.SelfChecks.Concat(spread.Worst?.Result.SelfChecks ?? []).ToArray();
+        var failed = checks.Count(check => !check.Holds);
+        var where = "with every value nominal" + (spread.Worst is null ? "" : " and at the worst case");
+        return failed == 0
+            ? $"Self-checks: all {checks.Length} hold, {where}."
+            : $"Self-checks: {failed} of {checks.Length} FAILED, {where}.";
+    }
 
     /// <summary>How the draws are spread.</summary>
     public static string Design(long draws) => draws <= LatinHypercube.MostInCube

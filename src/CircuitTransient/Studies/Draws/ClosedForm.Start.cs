@@ -3,7 +3,7 @@ using System.Numerics;
 namespace CircuitTransient.Studies.Draws;
 
 /// <summary>A row's value and slope, and what each is a sum of without cancellation.</summary>
-internal readonly record struct StartOfRow(double Value, double Slope, double Size, double Steepness);
+internal readonly record struct StartOfRow(double Value, double Slope, double Size = 0, double Steepness = 0);
 
 internal sealed partial class ClosedForm
 {

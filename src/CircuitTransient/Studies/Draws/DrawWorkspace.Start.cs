@@ -67,13 +67,10 @@ public sealed partial class DrawWorkspace
     }
 
     /// <summary>Holds every function's value and slope at an interval's start, made of its modes, against
-    /// the same from the equations that were not taken apart; what they differ by is an error that all that
-    /// follows inherits.</summary>
+    /// the same from the equations that were not taken apart.</summary>
     private void CheckStart(DrawSegment segment, ClosedForm form)
     {
-        const double rounding = 1e-14; // of sums of some dozen terms; less is in the bounds already
         form.PutStart(stored, kernel.Waves, levels, slopes, atStart);
-        double worst = 0;
         for (var f = 0; f < served.Length; f++)
         {
             var function = kernel.Figures.Functions[f];
@@ -84,13 +81,31 @@ public sealed partial class DrawWorkspace
 
             var start = form.RowAtStart(function.Row, kernel.Waves, levels, slopes, atStart);
             var modes = segment.AtStart(f);
+            var (sizes, errors) = (startSizes[f], startErrors[f]);
+            startSizes[f] = new StartOfRow(
+                Math.Max(sizes.Value, modes.Size + start.Size),
+                Math.Max(sizes.Slope, modes.Steepness + start.Steepness));
+            startErrors[f] = new StartOfRow(
+                Math.Max(errors.Value, Math.Abs(modes.Value - start.Value)),
+                Math.Max(errors.Slope, Math.Abs(modes.Slope - start.Slope)));
+        }
+    }
+
+    /// <summary>What the two differed by, of a function's size in the study, is an error that all
+    /// inherits.</summary>
+    private void InheritStarts()
+    {
+        const double rounding = 1e-14; // of sums of some dozen terms; less is in the bounds already
+        double worst = 0;
+        for (var f = 0; f < served.Length; f++)
+        {
             worst = Math.Max(worst, Math.Max(
-                Relative(modes.Value - start.Value, modes.Size + start.Size),
-                Relative(modes.Slope - start.Slope, modes.Steepness + start.Steepness)));
+                Relative(startErrors[f].Value, startSizes[f].Value),
+                Relative(startErrors[f].Slope, startSizes[f].Slope)));
         }
 
         inherited += worst > rounding ? worst : 0;
 
-        static double Relative(double error, double size) => size > 0 ? Math.Abs(error) / size : 0;
+        static double Relative(double error, double size) => size > 0 ? error / size : 0;
     }
 }

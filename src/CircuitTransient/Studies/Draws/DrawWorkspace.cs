@@ -17,6 +17,8 @@ public sealed partial class DrawWorkspace
     private readonly double[] stated;
     private readonly double[] modal;
     private readonly double[] atStart;
+    private readonly StartOfRow[] startSizes;
+    private readonly StartOfRow[] startErrors;
     private readonly Complex[] levels;
     private readonly Complex[] slopes;
     private readonly TrackState[] tracks;
@@ -50,6 +52,8 @@ public sealed partial class DrawWorkspace
         stated = new double[stored.Length];
         modal = new double[order];
         atStart = new double[4 * order];
+        startSizes = new StartOfRow[kernel.Figures.Functions.Length];
+        startErrors = new StartOfRow[startSizes.Length];
         levels = new Complex[exponents * factors.Length];
         slopes = new Complex[levels.Length];
         tracks = new TrackState[kernel.Figures.Tracks.Length];
@@ -120,6 +124,8 @@ public sealed partial class DrawWorkspace
     private bool Solve()
     {
         ClearTracks();
+        Array.Clear(startSizes);
+        Array.Clear(startErrors);
         for (var k = 0; k < kernel.Plan.Intervals.Length; k++)
         {
             var form = forms[kernel.Plan.Intervals[k].Form];
@@ -153,6 +159,7 @@ public sealed partial class DrawWorkspace
             TakeStored(Segment(segmentCount - 1));
         }
 
+        InheritStarts();
         return double.IsFinite(inherited);
     }
 

@@ -9,6 +9,7 @@ internal static class KernelTrial
 {
     private const int Trials = 5;
     private const double Allowed = 1e-6; // relative: what draws promise
+    private const double Nothing = 1e-30; // in SI units: what has died away is rounding
 
     /// <summary>Why the kernel cannot be used; null where it agrees with the exact engine.</summary>
     public static string? Find(
@@ -71,7 +72,7 @@ internal static class KernelTrial
     private static bool Agree(double found, double? exact, double size) =>
         exact is not { } value || !double.IsFinite(value)
             ? double.IsNaN(found) || found == exact
-            : Math.Abs(found - value) <= (Allowed * size) + 1e-300;
+            : Math.Abs(found - value) <= (Allowed * size) + Nothing;
 
     /// <summary>What an error is measured by: an extreme by the larger of its observation's two, a margin by
     /// the limit, too, that it is the distance to.</summary>

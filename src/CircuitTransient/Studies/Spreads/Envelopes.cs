@@ -1,19 +1,17 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
-using CircuitTransient.Solutions;
-using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Studies.Statistics;
 
 namespace CircuitTransient.Studies.Spreads;
 
-/// <summary>The bands of the observed waveforms over the first draws, solved by the exact engine.</summary>
+/// <summary>The bands of the observed waveforms over the first draws.</summary>
 internal static class Envelopes
 {
     private const int MostDraws = 500;
-    private const int MostInstants = 200;
+    private const int MostInstants = 640;
     private const int MostPeaks = 8;
-    private const int AboutPeak = 24; // samples before and after a peak
+    private const int AboutPeak = 40; // samples before and after a peak
     private const int MostNumbers = 4_000_000; // 32 MB
 
     /// <summary>How many draws the bands are made of.</summary>
@@ -25,29 +23,39 @@ internal static class Envelopes
     }
 
     /// <summary>The bands.</summary>
-    /// <param name="varied">The circuit.</param>
+    /// <param name="batch">The circuit.</param>
     /// <param name="nominal">Its nominal result, whose samples give the instants.</param>
     /// <param name="points">The draws, one after another.</param>
+    /// <param name="threads">How many threads work.</param>
     public static ImmutableArray<WaveformBand> Of(
-        VariedCircuit varied, TransientResult nominal, double[] points, int threads,
-        CancellationToken cancellation)
+        PointBatch batch, TransientResult nominal, double[] points, int threads)
     {
-        var observed = Observed(varied.Circuit);
+        var observed = Observed(batch.Varied.Circuit);
         var times = Instants(nominal);
-        var k = varied.Values.Length;
+        var k = batch.ValueCount;
+        double[] place = [.. batch.Varied.Values.Select(v => v.Nominal)];
+        if (observed.Length == 0 || new WaveSampler(batch, observed, times).Exact(place) is not { } own)
+        {
+            return [];
+        }
+
         var waves = new double[]?[points.Length / k];
         var options = new ParallelOptions
         {
             MaxDegreeOfParallelism = threads,
-            CancellationToken = cancellation,
+            CancellationToken = batch.Cancellation,
         };
-        Parallel.For(0, waves.Length, options, i =>
-            waves[i] = varied.At(points.AsSpan(i * k, k)).Value is { } circuit
-                ? Waves(circuit, observed, times, cancellation)
-                : null);
+        Parallel.For(
+            0, waves.Length, options,
+            () => new WaveSampler(batch, observed, times),
+            (i, _, sampler) =>
+            {
+                waves[i] = sampler.At(points.AsSpan(i * k, k));
+                return sampler;
+            },
+            _ => { });
         double[][] solved = [.. waves.OfType<double[]>()];
-        var own = Waves(varied.Circuit, observed, times, cancellation);
-        return own is null || solved.Length == 0
+        return solved.Length == 0
             ? []
             : [.. observed.Select((o, i) => Band(o, i, times, own, solved))];
     }
@@ -77,41 +85,6 @@ internal static class Envelopes
         ];
     }
 
-    private static double[]? Waves(
-        Circuit circuit, int[] observed, double[] times, CancellationToken cancellation)
-    {
-        var solved = TransientSolver.Solve(circuit, CauseList.FromStart(circuit), cancellation);
-        if (solved.Value is not { } solution)
-        {
-            return null;
-        }
-
-        var curves = new CurveBuilder(solution);
-        var windows = new WindowTimes(solution);
-        var values = new double[observed.Length * times.Length];
-        values.AsSpan().Fill(double.NaN);
-        for (var o = 0; o < observed.Length; o++)
-        {
-            var observation = circuit.Observations[observed[o]];
-            var window = windows.Of(observation.Window);
-            var from = curves.IsAccumulated(observation.Quantity) ? window?.From ?? 0 : 0;
-            if (window is not { } open || curves.Of(observation.Quantity, from: from) is not { } curve)
-            {
-                continue;
-            }
-
-            for (var t = 0; t < times.Length; t++)
-            {
-                if (times[t] >= open.From && times[t] <= open.To)
-                {
-                    values[(o * times.Length) + t] = curve.ValueAt(solution, times[t]);
-                }
-            }
-        }
-
-        return values;
-    }
-
     private static WaveformBand Band(
         int observation, int place, double[] times, double[] own, double[][] solved)
     {
@@ -124,7 +97,10 @@ internal static class Envelopes
         for (var t = 0; t < times.Length; t++)
         {
             var at = (place * times.Length) + t;
-            double[] values = [.. solved.Select(w => w[at]).Where(double.IsFinite).Order()];
+            // Outside its window an observation has no nominal value, and no band.
+            double[] values = double.IsNaN(own[at])
+                ? []
+                : [.. solved.Select(w => w[at]).Where(double.IsFinite).Order()];
             var isEmpty = values.Length == 0;
             bands[0][t] = isEmpty ? double.NaN : values[0];
             bands[1][t] = isEmpty ? double.NaN : QuantileRanks.Quantile(values, 0.05);

@@ -10,7 +10,6 @@ internal sealed class PointBatch
     private const int PointsInPiece = 16; // enough to spread the cost of handing them out
 
     private readonly int threads;
-    private readonly DrawKernel? kernel;
     private readonly ConcurrentBag<FigureEvaluator> idle = [];
 
     /// <summary>Prepares the fast evaluation.</summary>
@@ -23,8 +22,8 @@ internal sealed class PointBatch
         CancellationToken cancellation)
     {
         (Varied, Figures, Cancellation, this.threads) = (varied, figures, cancellation, threads);
-        (kernel, var reason) = DrawKernel.For(varied, figures, cancellation);
-        var unserved = kernel?.Unserved.Select((why, f) => why is null ? null : $"{figures[f].Name}: {why}");
+        (Kernel, var reason) = DrawKernel.For(varied, figures, cancellation);
+        var unserved = Kernel?.Unserved.Select((why, f) => why is null ? null : $"{figures[f].Name}: {why}");
         WhyExact = reason ?? unserved!.FirstOrDefault(words => words is not null);
     }
 
@@ -33,6 +32,9 @@ internal sealed class PointBatch
 
     /// <summary>The figures that are followed.</summary>
     public ImmutableArray<StudyFigure> Figures { get; }
+
+    /// <summary>The fast evaluation; null where there is none.</summary>
+    public DrawKernel? Kernel { get; }
 
     /// <summary>Stops the work.</summary>
     public CancellationToken Cancellation { get; }
@@ -43,7 +45,7 @@ internal sealed class PointBatch
 
     /// <summary>What two values of a figure must differ by to be told apart, as a fraction: the fast
     /// evaluation is good to less than that.</summary>
-    public double Resolution => kernel is null ? 1e-9 : 1e-7;
+    public double Resolution => Kernel is null ? 1e-9 : 1e-7;
 
     /// <summary>How many values vary.</summary>
     public int ValueCount => Varied.Values.Length;
@@ -75,7 +77,7 @@ internal sealed class PointBatch
     private void Solve(double[] points, BatchFigures found, int from, int to)
     {
         var (k, f) = (ValueCount, Figures.Length);
-        var evaluator = idle.TryTake(out var taken) ? taken : new FigureEvaluator(Varied, Figures, kernel);
+        var evaluator = idle.TryTake(out var taken) ? taken : new FigureEvaluator(Varied, Figures, Kernel);
         for (var i = from; i < to; i++)
         {
             Cancellation.ThrowIfCancellationRequested();

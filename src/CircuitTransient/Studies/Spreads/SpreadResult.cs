@@ -72,7 +72,8 @@ public sealed record FigureRange(
 /// <summary>An extreme, solved by the exact engine.</summary>
 /// <param name="Point">One value in SI for each varied value; what does not matter stands at its nominal
 /// value.</param>
-/// <param name="Matters">Whether the figure changes when that value alone goes back to nominal.</param>
+/// <param name="Matters">Whether the value is off its nominal one and the figure changes when it alone goes
+/// back.</param>
 /// <param name="Value">The figure there; infinite where it is.</param>
 /// <param name="Time">When it stands, in seconds.</param>
 /// <param name="IsCorner">Whether every value that matters stands at an end of its range.</param>

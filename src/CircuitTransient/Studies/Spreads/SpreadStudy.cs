@@ -45,8 +45,7 @@ public sealed class SpreadStudy
         draws?.Run(report);
         report(new SpreadProgress("waveforms", 0, 0));
         var bands = draws is null ? [] : Envelopes.Of(
-            batch.Varied, nominal, draws.FirstPoints(Envelopes.DrawCount(nominal, options.Draws)),
-            options.Threads, cancellation);
+            batch, nominal, draws.FirstPoints(Envelopes.DrawCount(nominal, options.Draws)), options.Threads);
         return new SpreadResult(
             batch.Varied, options, nominal, account, figures, Worst(), draws?.Finish(bands),
             sensitivities);

@@ -20,12 +20,14 @@ public static class WorstCircuit
         var worst = spread.Worst
             ?? throw new ArgumentException("there is no worst case", nameof(spread));
         var circuit = spread.Varied.Circuit;
-        var values = new Dictionary<int, double>();
+        var given = circuit.Parameters.Select(p => p.Nominal).ToArray();
         for (var i = 0; i < spread.Varied.Values.Length; i++)
         {
-            values[spread.Varied.Values[i].Parameter] = Rounded(worst.Point.Point[i]);
+            given[spread.Varied.Values[i].Parameter] = worst.Point.Point[i];
         }
 
+        var values = spread.Varied.Values.ToDictionary(
+            v => v.Parameter, v => Rounded(WrittenValues.Of(circuit, v.Parameter, given)));
         var rewritten = CircuitRewriting.Put(circuit, values, keepsTolerances: false);
         if (!rewritten.Succeeded)
         {
@@ -43,9 +45,8 @@ public static class WorstCircuit
             ? new(text, [])
             : new(null, [Diagnostic.Error(
                 circuit.Source, circuit.Parameters[spread.Varied.Values[0].Parameter].Span,
-                "the worst case cannot be written by putting values in place of the ones that stand here",
-                "a value that follows from named values has a tolerance of its own on top: "
-                    + "write that as a factor that is a named value")]);
+                "the worst case cannot be written by putting other values in the places of these",
+                "give each value that has a tolerance a number of its own")]);
     }
 
     private static double? Figure(
