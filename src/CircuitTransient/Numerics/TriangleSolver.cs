@@ -71,6 +71,36 @@ public static class TriangleSolver
         return product;
     }
 
+    /// <summary>(RᵀR)⁻¹ with every unknown held where its column has nothing but rounding left: what the rows
+    /// do not determine comes out huge, the others as they are.</summary>
+    public static double[,] HeldInverseProduct(RowTriangle system)
+    {
+        const double smallest = 1e-13; // of a column: less than its rounding
+        var n = system.Columns;
+        var held = new RowTriangle(n);
+        var row = new double[n];
+        for (var i = 0; i < n; i++)
+        {
+            for (var j = 0; j < n; j++)
+            {
+                row[j] = system[i, j];
+            }
+
+            held.Add(row, 0);
+        }
+
+        for (var i = 0; i < n; i++)
+        {
+            Array.Clear(row);
+            var norm = system.ColumnNorm(i);
+            row[i] = smallest * (norm > 0 ? norm : 1);
+            held.Add(row, 0);
+        }
+
+        return InverseProduct(held.Reduced())
+            ?? throw new InvalidOperationException("a held system is singular");
+    }
+
     /// <summary>Rᵀ y = c for y, with c in x's place.</summary>
     internal static double[] Forward(RowTriangle system, double[] c)
     {

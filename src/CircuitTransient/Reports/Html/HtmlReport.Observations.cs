@@ -7,6 +7,7 @@ namespace CircuitTransient.Reports.Html;
 /// <content>The observations: waveform, extremes, and what made the peak.</content>
 public static partial class HtmlReport
 {
+    private const int MostSinceRows = 24; // of a large circuit; all stand in results.json with `--after`
     private const int MostStillLetters = 600_000; // of pictures for readers without scripts
 
     private static Markup Observations(TransientResult result, PlotFonts fonts)
@@ -203,7 +204,18 @@ public static partial class HtmlReport
         }
 
         var largest = since.Parts.Max(p => Math.Abs(p.Value ?? 0));
-        var rows = since.Parts.OrderByDescending(p => Math.Abs(p.Value ?? 0)).Select(p => Markup.Of($"""
+        var parts = since.Parts.OrderByDescending(p => Math.Abs(p.Value ?? 0)).ToArray();
+        if (parts.Length > MostSinceRows)
+        {
+            var rest = parts[(MostSinceRows - 1)..];
+            parts =
+            [
+                .. parts[..(MostSinceRows - 1)],
+                new CauseValue($"{rest.Length} smaller ones together", rest.Sum(p => p.Value)),
+            ];
+        }
+
+        var rows = parts.Select(p => Markup.Of($"""
             <tr><th scope="row">{Markup.Name(p.Cause)}</th>
             <td class="number">{Signed(p.Value, observed.Unit)}</td>
             <td class="number">{(p.Value is { } v && total != 0 ? Percent(v / total.Value) : "")}</td>

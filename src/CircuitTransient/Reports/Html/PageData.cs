@@ -9,7 +9,7 @@ namespace CircuitTransient.Reports.Html;
 /// them, as JSON.</summary>
 internal sealed partial class PageData
 {
-    private const int MostValues = 600_000; // samples of all terms: 3.2 MB in base 64
+    private const int MostValues = 500_000; // samples of all terms: 2.7 MB in base 64
     private const int FewestSamples = 120;
 
     private readonly TransientResult result;

@@ -14,14 +14,18 @@ internal static class OverlayWords
         {
             (1, 0) => "The model explains the record to within its noise.",
             (1, _) => "The model does not explain the record.",
+            (2, 0) => "The model explains both records to within their noise.",
             (var n, 0) => $"The model explains all {n} records to within their noise.",
+            (2, 2) => "The model explains neither record.",
             (var n, var w) => $"The model does not explain {w} of {n} records.",
         };
         return result.Fit switch
         {
             null => records,
             { Converged: false } => $"The fit did not come to rest. {records}",
-            { IsResolved: true } fit => $"{Fitted(fit)} {records}",
+            { IsResolved: true } fit when wrong == 0 => $"The records determine {Names(fit)}. {records}",
+            { IsResolved: true } fit => $"{records} The values of {Names(fit)} are the best this model can "
+                + "do, and no better than it.",
             { } fit => $"{Refused(fit)} {records}",
         };
     }
@@ -39,6 +43,7 @@ internal static class OverlayWords
     public static string Estimated(Estimate estimate, string unit) => estimate switch
     {
         { IsGiven: true } => $"{Value(estimate.Value, unit, 4)}, given",
+        { StandardError: > 1 } when unit == "s" => $"{Value(estimate.Value, unit, 4)}, not told by slopes",
         _ => $"{Value(estimate.Value, unit, 4)} ± {Value(estimate.StandardError, unit, 2)}",
     };
 
@@ -62,9 +67,6 @@ internal static class OverlayWords
     public static string Mode(RingMode mode) =>
         $"{Value(mode.Frequency, "Hz", 4)} ± {Value(mode.FrequencyError, "Hz", 2)}, damping ratio "
         + EngineeringNumber.Format(mode.Damping, "", 3);
-
-    private static string Fitted(FitResult fit) =>
-        $"The records determine {Names(fit)}.";
 
     private static string Refused(FitResult fit)
     {

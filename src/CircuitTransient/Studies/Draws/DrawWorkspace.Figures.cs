@@ -2,8 +2,8 @@ namespace CircuitTransient.Studies.Draws;
 
 public sealed partial class DrawWorkspace
 {
-    // Bounds of a figure's error: of its own size, what draws promise; or of what its waveform is made of over
-    // the study, where little is left of it in a window.
+    // Bounds of a figure's error: of its own size, what draws promise; or of what its waveform is made of
+    // over the study, where little is left of it in a window.
     private const double Promised = 1e-6;
     private const double Negligible = 1e-12;
 

@@ -4,8 +4,9 @@ namespace CircuitTransient.Studies.Overlays;
 /// its range leaves them.</summary>
 internal static class ClippedSamples
 {
-    private const int ShortestRun = 4;
+    private const int ShortestRun = 3;
     private const double LongerThanElsewhere = 4; // times the longest run of equal values inside the range
+    private const double SteepCodes = 1.5;
 
     /// <summary>Marks what may be clipped; null where nothing is.</summary>
     public static bool[]? Candidates(double[] values)
@@ -16,6 +17,7 @@ internal static class ClippedSamples
             return null;
         }
 
+        var step = RecordNoise.StepOf(values);
         var elsewhere = 1;
         var atEnds = new List<(int From, int Count)>();
         for (var from = 0; from < values.Length;)
@@ -30,7 +32,7 @@ internal static class ClippedSamples
             {
                 elsewhere = Math.Max(elsewhere, end - from);
             }
-            else
+            else if (end - from >= ShortestRun)
             {
                 atEnds.Add((from, end - from));
             }
@@ -38,8 +40,8 @@ internal static class ClippedSamples
             from = end;
         }
 
-        var least = Math.Max(ShortestRun, LongerThanElsewhere * elsewhere);
-        atEnds.RemoveAll(run => run.Count < least);
+        atEnds.RemoveAll(run => run.Count < LongerThanElsewhere * elsewhere
+            && !(IsSteep(run.From - 1, run.From) && IsSteep(run.From + run.Count, run.From)));
         var marked = atEnds.Sum(run => run.Count);
         if (marked == 0 || 2 * marked > values.Length)
         {
@@ -53,30 +55,41 @@ internal static class ClippedSamples
         }
 
         return marks;
+
+        // A waveform that turns within the range comes and goes by single codes.
+        bool IsSteep(int outside, int inside) =>
+            outside < 0 || outside == values.Length
+            || Math.Abs(values[outside] - values[inside]) > SteepCodes * step;
     }
 
-    /// <summary>Whether the model, aligned without the marked samples, goes beyond the range where they
-    /// are: a waveform that really stands there is no clipping.</summary>
-    public static bool AreBeyond(
+    /// <summary>Those of the marked runs in which the model, aligned without them, goes beyond the range: a
+    /// waveform that really stands there is no clipping. Null where none is left.</summary>
+    public static bool[]? Beyond(
         double[] times, double[] values, bool[] marks, Aligned aligned, ModelCurve model, double noise)
     {
         var (low, high) = (values.Min(), values.Max());
-        var instants = times.Where((_, k) => marks[k]).Select(t => t - aligned.Offset).ToArray();
-        var expected = new double[instants.Length];
-        model.Evaluate(instants, expected, null);
-        var (beyond, judged, n) = (0, 0, 0);
-        for (var k = 0; k < values.Length; k++)
+        var expected = new double[values.Length];
+        model.Evaluate(Array.ConvertAll(times, t => t - aligned.Offset), expected, null);
+        var kept = new bool[values.Length];
+        for (var from = 0; from < values.Length;)
         {
-            if (!marks[k])
+            var end = from + 1;
+            while (end < values.Length && marks[end] && marks[from] && values[end] == values[from])
             {
-                continue;
+                end++;
             }
 
-            var seen = aligned.Level + (aligned.Gain * expected[n++]);
-            judged++;
-            beyond += values[k] == high ? (seen > high + noise ? 1 : 0) : seen < low - noise ? 1 : 0;
+            var beyond = 0;
+            for (var k = from; k < end && marks[from]; k++)
+            {
+                var seen = aligned.Level + (aligned.Gain * expected[k]);
+                beyond += values[k] == high ? (seen > high + noise ? 1 : 0) : seen < low - noise ? 1 : 0;
+            }
+
+            kept.AsSpan(from, end - from).Fill(2 * beyond > end - from);
+            from = end;
         }
 
-        return 2 * beyond > judged;
+        return kept.Contains(true) ? kept : null;
     }
 }

@@ -10,7 +10,6 @@ namespace CircuitTransient.Studies.Overlays;
 /// not.</summary>
 internal static class FitDescription
 {
-    private const double Smallest = 1e-13; // of a column: less than its rounding
 
     /// <summary>Describes a fit.</summary>
     /// <param name="circuit">The circuit as the file has it.</param>
@@ -28,7 +27,7 @@ internal static class FitDescription
         var freedom = Math.Max(1, fit.Triangle.RowCount - fit.X.Length);
         var variance = fit.Triangle.Remainder / freedom;
         var covariance = Matrix<double>.Build.Dense(n, n);
-        var inverse = Inverse(fit.Triangle);
+        var inverse = TriangleSolver.HeldInverseProduct(fit.Triangle);
         for (var i = 0; i < n; i++)
         {
             for (var j = 0; j < n; j++)
@@ -48,42 +47,5 @@ internal static class FitDescription
             Math.Sqrt(sizes.Max() / Math.Max(sizes.Min(), double.Epsilon)), steps, fit.Converged,
             fitted.All(v => v.IsResolved) ? []
                 : DeterminedProducts.Find(circuit, fitted, fit.Triangle, variance, own), records);
-    }
-
-    /// <summary>(JᵀJ)⁻¹, a direction without any slope held by rounding alone.</summary>
-    private static double[,] Inverse(RowTriangle system)
-    {
-        var n = system.Columns;
-        var held = new RowTriangle(n);
-        var row = new double[n];
-        for (var i = 0; i < n; i++)
-        {
-            for (var j = 0; j < n; j++)
-            {
-                row[j] = system[i, j];
-            }
-
-            held.Add(row, 0);
-        }
-
-        for (var i = 0; i < n; i++)
-        {
-            Array.Clear(row);
-            row[i] = Smallest * Math.Max(system.ColumnNorm(i), double.Epsilon / Smallest);
-            held.Add(row, 0);
-        }
-
-        return TriangleSolver.InverseProduct(held.Reduced()) ?? Everything(n);
-    }
-
-    private static double[,] Everything(int n)
-    {
-        var huge = new double[n, n];
-        for (var i = 0; i < n; i++)
-        {
-            huge[i, i] = 1 / (Smallest * Smallest);
-        }
-
-        return huge;
     }
 }

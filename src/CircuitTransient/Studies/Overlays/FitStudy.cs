@@ -94,7 +94,7 @@ public static class FitStudy
                 return new(null, [mistake!]);
             }
 
-            var noise = RecordNoise.FromDifferences(placed.Record.Values).Value;
+            var noise = RecordNoise.FromDifferences(placed.Record.Times, placed.Record.Values).Value;
             var floor = RecordNoise.StepOf(placed.Record.Values) / Math.Sqrt(12);
             prepared.Add(new FittedRecord(
                 placed, varied.Value, samples.Thinned(MostSamples),

@@ -54,8 +54,8 @@ internal sealed class ModelCurve
     /// <summary>The coefficients of the functions of a segment.</summary>
     public ReadOnlySpan<double> Coefficients(int segment) => coefficients[segment];
 
-    /// <summary>Values and slopes at ascending instants; outside the study those of its ends, without
-    /// slope.</summary>
+    /// <summary>Values and slopes at ascending instants, at a jump after it; of an instant that stands twice,
+    /// first before it. Outside the study those of its ends, without slope.</summary>
     public void Evaluate(double[] times, double[] values, double[]? rates)
     {
         var count = (times.Length + Stretch - 1) / Stretch;
@@ -80,12 +80,14 @@ internal sealed class ModelCurve
     private void Evaluate(double[] times, double[] values, double[]? rates, int from, int until)
     {
         var segments = Solution.Segments;
-        var index = from < until ? Solution.SegmentAt(Math.Clamp(times[from], 0, Until)) : 0;
+        var index = from < until ? Solution.SegmentAt(Math.Clamp(times[from], 0, Until), before: true) : 0;
         var phi = new double[segments.Max(s => s.Basis.Width)];
         for (var k = from; k < until; k++)
         {
             var time = Math.Clamp(times[k], 0, Until);
-            while (index + 1 < segments.Length && segments[index].End <= time)
+            var isBefore = k + 1 < times.Length && times[k + 1] == times[k];
+            while (index + 1 < segments.Length
+                && (segments[index].End < time || (!isBefore && segments[index].End == time)))
             {
                 index++;
             }

@@ -7,7 +7,9 @@ internal static class OffsetSearch
 {
     private const int FinestModel = 4096; // steps over the study
     private const int MostSteps = 1 << 17; // steps over the record
-    private const int MostCandidates = 6;
+    private const int FewestCandidates = 4;
+    private const double WorthTrying = 4; // times the squares that the likeliest leaves
+    private const int MostCandidates = 24;
 
     /// <summary>Offsets in seconds, the likeliest first.</summary>
     public static List<double> Candidates(
@@ -99,7 +101,8 @@ internal static class OffsetSearch
         }
 
         least.Sort((a, b) => scores[a].CompareTo(scores[b]) is not 0 and var order ? order : a.CompareTo(b));
-        return least.Count > MostCandidates ? least[..MostCandidates] : least;
+        var worthTrying = least.Count(i => scores[i] <= WorthTrying * scores[least[0]]);
+        return least[..Math.Clamp(worthTrying, Math.Min(FewestCandidates, least.Count), MostCandidates)];
     }
 }
 

@@ -5,7 +5,7 @@ namespace CircuitTransient.Studies.Overlays;
 /// <summary>A record laid over the model.</summary>
 /// <param name="Compared">The samples within the study.</param>
 /// <param name="Model">The model's values there, gain and level applied.</param>
-/// <param name="Inverse">Of the product of the slopes by what was estimated; null where singular.</param>
+/// <param name="Inverse">Of the product of the slopes by what was estimated; null where nothing was.</param>
 internal sealed record Aligned(
     double Offset, double Gain, double Level, RecordSamples Compared, double[] Model, double[,]? Inverse)
 {
@@ -31,6 +31,11 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
     private const int Usual = 20_000; // samples while the offset is refined
     private const int FewestCompared = 8;
 
+    private const double AsGood = 1.1; // in squares
+
+    /// <summary>Another offset at which the record fits as well; null where there is none.</summary>
+    public double? Other { get; private set; }
+
     private int Estimated =>
         (given.Offset is null ? 1 : 0) + (given.Gain is null ? 1 : 0) + (given.Level is null ? 1 : 0);
 
@@ -41,18 +46,29 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
             ? [offset]
             : OffsetSearch.Candidates(samples, model, given);
         var few = samples.Thinned(Trial);
-        double[]? best = null;
-        var least = double.PositiveInfinity;
+        var tried = new List<(double[] X, double Cost)>();
         foreach (var candidate in candidates)
         {
-            if (Refine(few, Start(few, candidate)) is { } tried && Cost(few, tried) is var cost
-                && cost < least)
+            if (Refine(few, Start(few, candidate)) is { } found)
             {
-                (best, least) = (tried, cost);
+                tried.Add((found, Cost(few, found)));
             }
         }
 
-        return best is null ? null : Finish(samples, best);
+        if (tried.Count == 0)
+        {
+            return null;
+        }
+
+        // A ring repeats itself: of places that fit alike the one whose gain is nearest to one is likeliest.
+        var least = tried.Min(t => t.Cost);
+        var alike = tried.Where(t => t.Cost <= AsGood * least)
+            .OrderBy(t => Math.Abs(Math.Log(Math.Abs(t.X[1])))).ToArray();
+        var best = alike[0].X;
+        var step = (samples.Times[^1] - samples.Times[0]) / samples.Count;
+        Other = alike.Select(t => (double?)t.X[0])
+            .FirstOrDefault(o => Math.Abs(o!.Value - best[0]) > 2 * step);
+        return Finish(samples, best);
     }
 
     /// <summary>Refines an alignment that is known nearly.</summary>
@@ -150,7 +166,7 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
         }
 
         return new Aligned(found[0], found[1], found[2], inside, values,
-            Estimated == 0 ? null : TriangleSolver.InverseProduct(system));
+            Estimated == 0 ? null : TriangleSolver.HeldInverseProduct(system));
     }
 
     /// <summary>The standard errors of what was estimated.</summary>

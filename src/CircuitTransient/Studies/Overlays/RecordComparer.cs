@@ -36,16 +36,18 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
         var aligned = alignment.Find(samples);
         if (aligned is not null && marks is not null)
         {
-            var noise = RecordNoise.FromDifferences(record.Values).Value;
-            if (ClippedSamples.AreBeyond(record.Times, record.Values, marks, aligned, model, noise))
+            var noise = RecordNoise.FromDifferences(record.Times, record.Values).Value;
+            var beyond = ClippedSamples.Beyond(record.Times, record.Values, marks, aligned, model, noise);
+            clipped = beyond?.Count(m => m) ?? 0;
+            if (clipped > 0)
             {
-                clipped = marks.Count(m => m);
                 remarks.Add($"{clipped} clipped sample{(clipped == 1 ? "" : "s")} left out: the range of the "
                     + "instrument ends there and the model goes on");
             }
-            else
+
+            if (clipped < marks.Count(m => m))
             {
-                samples = RecordSamples.Of(record, null);
+                samples = RecordSamples.Of(record, beyond);
                 aligned = alignment.Find(samples);
             }
         }
@@ -71,7 +73,7 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
         }
 
         cancellation.ThrowIfCancellationRequested();
-        var noise = RecordNoise.Of(record.Values, aligned);
+        var noise = RecordNoise.Of(record.Times, record.Values, aligned);
         var left = DifferencesOf(aligned);
         SayWhatIsOdd(aligned, left);
         var ring = new RingAnalysis(model, aligned, noise.Value);
@@ -97,6 +99,12 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
 
     private void SayWhatIsOdd(Aligned aligned, Differences left)
     {
+        if (alignment.Other is { } other)
+        {
+            remarks.Add($"it fits as well at an offset of {EngineeringNumber.Format(other, "s")}: `--offset` "
+                + "or `--gain` would settle it");
+        }
+
         var mean = aligned.Compared.Values.Average();
         var own = Math.Sqrt(aligned.Compared.Values.Sum(v => (v - mean) * (v - mean))
             / aligned.Compared.Count);

@@ -15,11 +15,18 @@ internal static class RecordNoise
     private const double MostHidden = 3; // times: more is no noise but a model that lies wrong
     private const int MostSamples = 1 << 20;
     private const int MostCodes = 4096;
+    private const int FewestCodes = 8; // fewer are the levels of a square wave, not of a converter
+    private const double LeastOfSpan = 1e-6; // fewer digits than any table of a bench has
 
     /// <summary>From the differences of neighbouring samples, of the lowest order from which on a higher one
     /// no longer lowers them: the waveform has gone by then, the noise stays.</summary>
-    public static NoiseEstimate FromDifferences(double[] values)
+    public static NoiseEstimate FromDifferences(double[] times, double[] values)
     {
+        if (!IsEven(times))
+        {
+            return FromNeighbours(times, values);
+        }
+
         var x = values.AsSpan(0, Math.Min(values.Length, MostSamples)).ToArray();
         var before = double.PositiveInfinity;
         var order = 0;
@@ -47,9 +54,9 @@ internal static class RecordNoise
 
     /// <summary>The noise by differences, unless the samples before the model moves show another: noise that
     /// moves slowly escapes the differences. Never less than what the steps of the converter leave.</summary>
-    public static NoiseEstimate Of(double[] all, Aligned aligned)
+    public static NoiseEstimate Of(double[] times, double[] all, Aligned aligned)
     {
-        var noise = FromDifferences(all);
+        var noise = FromDifferences(times, all);
         var count = Leading(aligned.Model, 0.2 * noise.Value);
         if (count >= FewestQuiet)
         {
@@ -64,8 +71,50 @@ internal static class RecordNoise
         }
 
         var floor = StepOf(all) / Math.Sqrt(12);
-        return noise.Value >= floor ? noise
-            : new NoiseEstimate(floor, 0.05, "the steps of the converter, which hide a smaller noise");
+        var digits = LeastOfSpan * (all.Max() - all.Min());
+        return noise.Value >= Math.Max(floor, digits) ? noise
+            : floor >= digits
+                ? new NoiseEstimate(floor, 0.05, "the steps of the converter, which hide a smaller noise")
+                : new NoiseEstimate(digits, 0, "a millionth of the record's span, less is not looked at");
+    }
+
+    /// <summary>Whether instants stand evenly, but for a few gaps.</summary>
+    public static bool IsEven(double[] times)
+    {
+        const double odd = 0.05; // of a step, and of all steps
+        var sorted = new double[times.Length - 1];
+        for (var k = 0; k < sorted.Length; k++)
+        {
+            sorted[k] = times[k + 1] - times[k];
+        }
+
+        Array.Sort(sorted);
+        var usual = sorted[sorted.Length / 2];
+        var strange = sorted.Count(s => Math.Abs(s - usual) > odd * usual);
+        return strange <= odd * sorted.Length;
+    }
+
+    /// <summary>From the distance of each sample to the straight line through its neighbours: the waveform's
+    /// bend is in it, so it is an upper estimate where samples are far apart.</summary>
+    private static NoiseEstimate FromNeighbours(double[] times, double[] values)
+    {
+        var distances = new List<double>();
+        for (var k = 1; k + 1 < Math.Min(values.Length, MostSamples); k++)
+        {
+            var gap = times[k + 1] - times[k - 1];
+            if (gap > 0)
+            {
+                var share = (times[k] - times[k - 1]) / gap;
+                var line = values[k - 1] + (share * (values[k + 1] - values[k - 1]));
+                distances.Add((values[k] - line)
+                    / Math.Sqrt(1 + (share * share) + ((1 - share) * (1 - share))));
+            }
+        }
+
+        return new NoiseEstimate(
+            distances.Count == 0 ? 0 : MedianOfBlocks([.. distances]),
+            1.6 / Math.Sqrt(Math.Max(1, distances.Count)),
+            "the distance of samples to the line through their neighbours");
     }
 
     /// <summary>The smallest distance of two codes; zero where values do not come in steps.</summary>
@@ -81,7 +130,7 @@ internal static class RecordNoise
             }
         }
 
-        if (codes.Count * 4 > values.Length || codes.Count < 2)
+        if (codes.Count * 4 > values.Length || codes.Count < FewestCodes)
         {
             return 0;
         }

@@ -17,7 +17,7 @@ internal sealed class RingFit
     private readonly double span;
 
     /// <summary>Takes samples.</summary>
-    /// <param name="samples">The samples, evenly spaced.</param>
+    /// <param name="samples">The samples.</param>
     /// <param name="realRates">Decays in 1/s that may lie beneath.</param>
     public RingFit(RecordSamples samples, IEnumerable<double> realRates)
     {
@@ -113,9 +113,18 @@ internal sealed class RingFit
     {
         var size = (int)BitOperations.RoundUpToPowerOf2((uint)(4 * left.Length));
         var x = new Complex[size];
-        for (var k = 0; k < left.Length; k++)
+        for (int k = 0, at = 0; k < left.Length; k++)
         {
-            x[k] = left[k];
+            // On an even grid: where the samples are not, the straight line between neighbours.
+            var time = span * k / (left.Length - 1);
+            while (at + 2 < times.Length && times[at + 1] < time)
+            {
+                at++;
+            }
+
+            var gap = times[at + 1] - times[at];
+            var share = gap > 0 ? (time - times[at]) / gap : 0;
+            x[k] = left[at] + (share * (left[at + 1] - left[at]));
         }
 
         FourierTransform.Transform(x);

@@ -132,12 +132,16 @@ internal sealed class ValueFit(
                 continue;
             }
 
-            var left = near.Variance(0);
+            // Against the samples' own spread: where the record is flat, anything fits.
+            var mean = begin.Values.Average();
+            var left = near.Variance(0) / (begin.Values.Average(v => (v - mean) * (v - mean)) + Tiny(record));
             (best, least) = left < least ? ((near.Offset, near.Gain, near.Level), left) : (best, least);
         }
 
         return best;
     }
+
+    private static double Tiny(FittedRecord record) => 1e-3 * record.Noise * record.Noise;
 
     /// <summary>When the model first moves by a hundredth of its range.</summary>
     private static double OnsetOf(ModelCurve curve)

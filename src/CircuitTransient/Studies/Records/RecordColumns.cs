@@ -39,6 +39,13 @@ internal sealed record RecordColumns(
         return new RecordColumns([.. split.Select(s => s.Title)], [.. split.Select(s => s.Unit)], 1, true);
     }
 
+    /// <summary>The same with a unit for every column that has none and is no time; where it is null, as they
+    /// are.</summary>
+    public RecordColumns WithUnit(Unit? unit) => this with
+    {
+        Units = [.. Units.Select((own, c) => own ?? (IsTime(c) || IsCount(c) ? null : unit))],
+    };
+
     /// <summary>Whether a column is titled as the time.</summary>
     public bool IsTime(int column) => Units[column] is { } unit
         ? unit.Dimension == Dimension.Time
@@ -55,7 +62,7 @@ internal sealed record RecordColumns(
         var text = head.Text(line);
         var cells = notation.Delimiter switch
         {
-            '\0' => [text],
+            '\0' => text.AsSpan().ContainsAny(",;:=") ? [] : [text], // else it states something
             // A blank before a unit in brackets parts no columns.
             ' ' => text.TrimStart('#', '%').Replace(" (", "(").Replace(" [", "[")
                 .Split([' ', '\t'], StringSplitOptions.RemoveEmptyEntries),

@@ -3,7 +3,7 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Studies.Records;
 
-/// <summary>The sample interval that the lines above a table state.</summary>
+/// <summary>What the lines above a table state: the sample interval, the unit of the values.</summary>
 internal static class RecordInterval
 {
     /// <summary>Looks for an interval or a sampling rate, in seconds; null where none is stated.</summary>
@@ -11,8 +11,7 @@ internal static class RecordInterval
     {
         for (var i = 0; i < lines; i++)
         {
-            var cells = head.Text(i).TrimStart('#', '%').Split([',', ';', '\t', ':', '='],
-                StringSplitOptions.TrimEntries | StringSplitOptions.RemoveEmptyEntries);
+            var cells = Cells(head, i);
             for (var c = 0; c + 1 < cells.Length; c++)
             {
                 if (ValueOf(cells, c) is { } interval and > 0)
@@ -24,6 +23,29 @@ internal static class RecordInterval
 
         return null;
     }
+
+    /// <summary>Looks for the unit of the values; null where none is stated.</summary>
+    public static Unit? FindUnit(RecordHead head, int lines)
+    {
+        for (var i = 0; i < lines; i++)
+        {
+            var cells = Cells(head, i);
+            for (var c = 0; c + 1 < cells.Length; c++)
+            {
+                if (cells[c].Contains("unit", StringComparison.OrdinalIgnoreCase)
+                    && RecordUnit.Read(cells[c + 1]) is { } unit && unit.Dimension != Dimension.Time)
+                {
+                    return unit;
+                }
+            }
+        }
+
+        return null;
+    }
+
+    private static string[] Cells(RecordHead head, int line) =>
+        head.Text(line).TrimStart('#', '%').Split([',', ';', '\t', ':', '='],
+            StringSplitOptions.TrimEntries | StringSplitOptions.RemoveEmptyEntries);
 
     private static double? ValueOf(string[] cells, int place)
     {

@@ -53,6 +53,7 @@ internal sealed record RecordNotation(char Delimiter, char Mark, int Columns, in
                 "give a table with a time and a value in each line")]);
         }
 
+        best = best.Columns == 1 ? best with { Delimiter = '\0' } : best;
         return mark is null && IsAmbiguous(head, best)
             ? new(null, [head.Fault(best.FirstRow,
                 "a comma here may part two columns or mark the decimals",

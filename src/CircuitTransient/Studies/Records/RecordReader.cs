@@ -34,7 +34,9 @@ public static class RecordReader
         return RecordNotation.Of(head, options.Mark).Then(notation =>
         {
             var columns = RecordColumns.Of(head, notation);
-            var stated = RecordInterval.Find(head, Math.Max(0, notation.FirstRow - columns.Lines));
+            var above = Math.Max(0, notation.FirstRow - columns.Lines);
+            var stated = RecordInterval.Find(head, above);
+            columns = columns.WithUnit(RecordInterval.FindUnit(head, above));
             return TimeColumn.Find(head, notation, columns, options.Interval ?? stated).Then(time =>
                 RecordChannel.Choose(head, notation, columns, time.Column, options.Channel).Then(channel =>
                 {

@@ -60,6 +60,11 @@ public class RecordReaderTests
     }
 
     [Fact]
+    public void A_unit_stated_above_the_table_is_that_of_the_values() =>
+        Assert.Equal([1.25e-3, 2.5e-3],
+            Read("Sample Interval,1.0e-9,s\nVertical Units,mV\n1.25\n2.5\n").Values);
+
+    [Fact]
     public void A_given_interval_takes_the_place_of_a_time_column() =>
         Assert.Equal([0, 0.5, 1], Read("1.25\n2.25\n3.25\n", new RecordOptions(Interval: 0.5)).Times);
 
