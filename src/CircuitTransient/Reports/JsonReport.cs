@@ -1,10 +1,5 @@
-using System.Buffers;
 using System.Collections.Immutable;
-using System.Text;
-using System.Text.Encodings.Web;
 using System.Text.Json;
-using System.Text.Unicode;
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Studies.Comparing;
 
@@ -17,50 +12,22 @@ public static partial class JsonReport
     /// <summary>Name and number of the format; the number changes when a field changes or goes.</summary>
     public const string Format = ResultsDocument.Format;
 
-    // Letters of every script stay readable; < > & ' are escaped, so that it may stand inside a page.
-    private static readonly JsonWriterOptions Options = new()
-    {
-        Indented = true,
-        NewLine = "\n",
-        Encoder = JavaScriptEncoder.Create(UnicodeRanges.All),
-    };
-
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema => SchemaNamed("results.schema.json");
+    public static string Schema => JsonWriting.Schema("results.schema.json");
 
     /// <summary>The document of one circuit.</summary>
-    public static string Write(TransientResult result) => WriteWith(json => WriteDocument(json, result));
+    public static string Write(TransientResult result) =>
+        JsonWriting.Document(json => WriteDocument(json, result));
 
     /// <summary>The documents of several circuits, as an array.</summary>
     public static string Write(ImmutableArray<TransientResult> results) =>
-        WriteWith(json => WriteArray(json, results, WriteDocument));
-
-    /// <summary>A schema that the assembly carries.</summary>
-    internal static string SchemaNamed(string name)
-    {
-        using var stream = typeof(JsonReport).Assembly.GetManifestResourceStream(name)
-            ?? throw new InvalidOperationException($"{name} is not embedded");
-        using var reader = new StreamReader(stream, Encoding.UTF8);
-        return reader.ReadToEnd();
-    }
-
-    internal static string WriteWith(Action<Utf8JsonWriter> write)
-    {
-        var buffer = new ArrayBufferWriter<byte>();
-        using (var json = new Utf8JsonWriter(buffer, Options))
-        {
-            write(json);
-        }
-
-        return Encoding.UTF8.GetString(buffer.WrittenSpan) + "\n";
-    }
+        JsonWriting.Document(json => WriteArray(json, results, WriteDocument));
 
     private static void WriteDocument(Utf8JsonWriter json, TransientResult result)
     {
         json.WriteStartObject();
         json.WriteString("format", Format);
-        json.WritePropertyName("circuit");
-        WriteCircuit(json, result.Circuit);
+        json.Circuit(result.Circuit);
         json.WriteStartObject("study");
         WriteNumber(json, "from", 0);
         WriteNumber(json, "until", result.Until);
@@ -79,18 +46,6 @@ public static partial class JsonReport
         WriteArray(json, "notJudged", result.NotJudged, WriteNotJudged);
         WriteArray(json, "warnings", result.Warnings, WriteWarning);
         WriteArray(json, "cautions", result.Cautions, WriteCaution);
-        json.WriteEndObject();
-    }
-
-    internal static void WriteCircuit(Utf8JsonWriter json, Circuit circuit)
-    {
-        json.WriteStartObject();
-        json.WriteString("title", circuit.Title);
-        json.WriteString("file", circuit.Source.Name);
-        json.WriteString("sha256", circuit.Source.Sha256);
-        json.WriteNumber("parts", circuit.Parts.Length);
-        json.WriteNumber("nodes", circuit.Nodes.Length);
-        json.WriteNumber("storedQuantities", circuit.Parts.Count(part => part is Capacitor or Inductor));
         json.WriteEndObject();
     }
 

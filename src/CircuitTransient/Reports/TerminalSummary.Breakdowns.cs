@@ -31,12 +31,20 @@ public static partial class TerminalSummary
         text.Paragraph("By switching: the answer with each and those before it, less that without it");
         var scale = breakdown.Effects.Select(e => Math.Abs(e.Value ?? 0))
             .Append(Math.Abs(breakdown.Base)).Max();
-        var rows = breakdown.Effects.Select(e => ImmutableArray.Create(
+        var shown = Largest(breakdown.Effects);
+        var rows = shown.Select(e => ImmutableArray.Create(
             e.Event,
             $"at {Number(e.Time, "s")}",
             e.Value is null ? "" : Signed(e.Value, unit, scale),
             e.Value is null ? "" : PercentOf(e.Value, total),
             e.Reason ?? "")).ToList();
+        if (shown.Length < breakdown.Effects.Length)
+        {
+            var rest = breakdown.Effects.Sum(e => e.Value ?? 0) - shown.Sum(e => e.Value ?? 0);
+            rows.Add([$"{breakdown.Effects.Length - shown.Length} others together", "",
+                Signed(rest, unit, scale), PercentOf(rest, total), ""]);
+        }
+
         rows.Insert(0, [breakdown.BaseWords, "", Number(breakdown.Base, unit, scale),
             PercentOf(breakdown.Base, total), ""]);
         text.Table([Prose, Left, Right, Right, Prose], rows, indent: 4);
@@ -45,6 +53,13 @@ public static partial class TerminalSummary
             text.Paragraph("instants of the full answer kept", indent: 4);
         }
     }
+
+    /// <summary>All effects where they are few, else the largest, in the order of time.</summary>
+    private static ImmutableArray<SwitchingEffect> Largest(ImmutableArray<SwitchingEffect> effects) =>
+        effects.Length <= MostCauses
+            ? effects
+            : [.. effects.OrderByDescending(e => Math.Abs(e.Value ?? 0)).Take(MostCauses - 1)
+                .OrderBy(e => e.Time)];
 
     private static void WriteModes(SummaryText text, TransientResult result, WorstObservation worst)
     {

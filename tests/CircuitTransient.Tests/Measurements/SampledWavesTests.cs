@@ -29,19 +29,23 @@ public class SampledWavesTests
     }
 
     [Fact]
-    public void The_terms_of_a_quadratic_quantity_add_up_to_it()
+    public void The_factors_of_a_power_multiply_to_it()
     {
         var declared = Bypass.Circuit.Observations.Single(o => o.Name == "power in Rpre");
         var power = Bypass.Observations.Single(o => o.Name == "power in Rpre");
         var followed = Bypass.Followed.Single(f => f.Quantity == declared.Quantity);
 
-        // Two causes: each alone, and the two together.
-        Assert.Equal([(0, 0), (0, 1), (1, 1)], followed.Terms.Select(t => (t.Cause, t.WithCause!.Value)));
+        // Voltage and current, each by two causes.
+        Assert.Equal(
+            [(0, null), (1, null), (0, null), (1, null)],
+            followed.Terms.Select(t => (t.Cause, t.WithCause)));
+        Assert.Equal(1, followed.Factor);
         for (var i = 0; i < Bypass.SampleTimes.Length; i += 50)
         {
-            // Sums of a dozen terms of that size round within a few hundred units.
-            var sum = followed.Terms.Sum(t => t.Samples[i]);
-            Assert.Equal(power.Total[i], sum, 1e-9 * power.Max.Value!.Value);
+            // Products of sums of a dozen terms of that size round within a few hundred units.
+            var voltage = followed.Terms[0].Samples[i] + followed.Terms[1].Samples[i];
+            var current = followed.Terms[2].Samples[i] + followed.Terms[3].Samples[i];
+            Assert.Equal(power.Total[i], voltage * current, 1e-9 * power.Max.Value!.Value);
         }
     }
 

@@ -22,22 +22,21 @@ public static class FormulaJson
         + "An impulse at tau = 0 is not among the terms.";
 
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema => JsonReport.SchemaNamed("formula.schema.json");
+    public static string Schema => JsonWriting.Schema("formula.schema.json");
 
     /// <summary>The document of one study.</summary>
     public static string Write(ClosedFormStudy study) =>
-        JsonReport.WriteWith(json => WriteDocument(json, study));
+        JsonWriting.Document(json => WriteDocument(json, study));
 
     /// <summary>The documents of several, as an array.</summary>
     public static string Write(ImmutableArray<ClosedFormStudy> studies) =>
-        JsonReport.WriteWith(json => JsonReport.WriteArray(json, studies, WriteDocument));
+        JsonWriting.Document(json => JsonReport.WriteArray(json, studies, WriteDocument));
 
     private static void WriteDocument(Utf8JsonWriter json, ClosedFormStudy study)
     {
         json.WriteStartObject();
         json.WriteString("format", Format);
-        json.WritePropertyName("circuit");
-        JsonReport.WriteCircuit(json, study.Circuit);
+        json.Circuit(study.Circuit);
         json.WriteStartObject("study");
         JsonReport.WriteNumber(json, "from", 0);
         JsonReport.WriteNumber(json, "until", study.Until);

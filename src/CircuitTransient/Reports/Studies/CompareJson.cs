@@ -11,10 +11,10 @@ public static class CompareJson
     public const string Format = "circuit-transient compare 1";
 
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema => StudyJson.Schema("compare.schema.json");
+    public static string Schema => JsonWriting.Schema("compare.schema.json");
 
     /// <summary>One document, or an array where several pairs of results were compared.</summary>
-    public static string Write(ImmutableArray<Comparison> comparisons) => StudyJson.Document(json =>
+    public static string Write(ImmutableArray<Comparison> comparisons) => JsonWriting.Document(json =>
     {
         if (comparisons is [var single])
         {

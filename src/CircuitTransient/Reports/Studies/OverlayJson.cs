@@ -1,5 +1,4 @@
 using System.Text.Json;
-using CircuitTransient.Circuits;
 using CircuitTransient.Studies.Overlays;
 
 namespace CircuitTransient.Reports.Studies;
@@ -12,14 +11,14 @@ public static class OverlayJson
     public const string Format = "circuit-transient overlay 1";
 
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema => StudyJson.Schema("overlay.schema.json");
+    public static string Schema => JsonWriting.Schema("overlay.schema.json");
 
     /// <summary>The document.</summary>
-    public static string Write(OverlayResult result) => StudyJson.Document(json =>
+    public static string Write(OverlayResult result) => JsonWriting.Document(json =>
     {
         json.WriteStartObject();
         json.WriteString("format", Format);
-        json.Object("circuit", () => WriteCircuit(json, result.Circuit));
+        json.Circuit(result.Circuit);
         json.WriteBoolean("agrees", result.Agrees);
         json.WriteString("verdict", OverlayWords.Verdict(result));
         json.Objects("records", result.Records, record => WriteRecord(json, record));
@@ -34,16 +33,6 @@ public static class OverlayJson
 
         json.WriteEndObject();
     });
-
-    private static void WriteCircuit(Utf8JsonWriter json, Circuit circuit)
-    {
-        json.WriteString("title", circuit.Title);
-        json.WriteString("file", circuit.Source.Name);
-        json.WriteString("sha256", circuit.Source.Sha256);
-        json.WriteNumber("parts", circuit.Parts.Length);
-        json.WriteNumber("nodes", circuit.Nodes.Length);
-        json.WriteNumber("storedQuantities", circuit.Parts.Count(part => part is Capacitor or Inductor));
-    }
 
     private static void WriteRecord(Utf8JsonWriter json, RecordComparison record)
     {

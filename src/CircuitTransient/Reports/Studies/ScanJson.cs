@@ -1,5 +1,4 @@
 using System.Text.Json;
-using CircuitTransient.Circuits;
 using CircuitTransient.Numerics;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Scans;
@@ -14,14 +13,14 @@ public static class ScanJson
     public const string Format = "circuit-transient scan 1";
 
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema => StudyJson.Schema("scan.schema.json");
+    public static string Schema => JsonWriting.Schema("scan.schema.json");
 
     /// <summary>The document.</summary>
-    public static string Write(ScanResult result) => StudyJson.Document(json =>
+    public static string Write(ScanResult result) => JsonWriting.Document(json =>
     {
         json.WriteStartObject();
         json.WriteString("format", Format);
-        json.Object("circuit", () => WriteCircuit(json, result.Circuit));
+        json.Circuit(result.Circuit);
         json.Objects("scanned", result.Axes, axis => WriteAxis(json, axis));
         json.Objects("figures", result.Figures, figure =>
         {
@@ -41,16 +40,6 @@ public static class ScanJson
 
         json.WriteEndObject();
     });
-
-    private static void WriteCircuit(Utf8JsonWriter json, Circuit circuit)
-    {
-        json.WriteString("title", circuit.Title);
-        json.WriteString("file", circuit.Source.Name);
-        json.WriteString("sha256", circuit.Source.Sha256);
-        json.WriteNumber("parts", circuit.Parts.Length);
-        json.WriteNumber("nodes", circuit.Nodes.Length);
-        json.WriteNumber("storedQuantities", circuit.Parts.Count(part => part is Capacitor or Inductor));
-    }
 
     private static void WriteAxis(Utf8JsonWriter json, ScanAxis axis)
     {

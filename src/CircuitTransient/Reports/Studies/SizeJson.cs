@@ -1,5 +1,4 @@
 using System.Text.Json;
-using CircuitTransient.Circuits;
 using CircuitTransient.Studies.Sizes;
 
 namespace CircuitTransient.Reports.Studies;
@@ -12,14 +11,14 @@ public static class SizeJson
     public const string Format = "circuit-transient size 1";
 
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema => StudyJson.Schema("size.schema.json");
+    public static string Schema => JsonWriting.Schema("size.schema.json");
 
     /// <summary>The document.</summary>
-    public static string Write(SizeResult result) => StudyJson.Document(json =>
+    public static string Write(SizeResult result) => JsonWriting.Document(json =>
     {
         json.WriteStartObject();
         json.WriteString("format", Format);
-        WriteCircuit(json, result.Problem.File);
+        json.Circuit(result.Problem.File);
         WriteAsked(json, result);
         json.WriteBoolean("found", result.IsFound);
         WritePoint(json, "asItStands", result, result.AsItStands);
@@ -37,16 +36,6 @@ public static class SizeJson
         json.Array("preferred", result.Preferred, point => WritePoint(json, result, point));
         json.Array("points", result.Points, point => WritePoint(json, result, point));
         json.WriteEndObject();
-    });
-
-    private static void WriteCircuit(Utf8JsonWriter json, Circuit circuit) => json.Object("circuit", () =>
-    {
-        json.WriteString("title", circuit.Title);
-        json.WriteString("file", circuit.Source.Name);
-        json.WriteString("sha256", circuit.Source.Sha256);
-        json.WriteNumber("parts", circuit.Parts.Length);
-        json.WriteNumber("nodes", circuit.Nodes.Length);
-        json.WriteNumber("storedQuantities", circuit.Parts.Count(part => part is Capacitor or Inductor));
     });
 
     private static void WriteAsked(Utf8JsonWriter json, SizeResult result)

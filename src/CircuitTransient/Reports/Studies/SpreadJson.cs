@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using System.Text.Json;
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Studies.Spreads;
 using CircuitTransient.Studies.Statistics;
@@ -15,14 +14,14 @@ public static class SpreadJson
     public const string Format = "circuit-transient spread 1";
 
     /// <summary>The JSON Schema (draft 2020-12) of the document.</summary>
-    public static string Schema => StudyJson.Schema("spread.schema.json");
+    public static string Schema => JsonWriting.Schema("spread.schema.json");
 
     /// <summary>The document.</summary>
-    public static string Write(SpreadResult spread) => StudyJson.Document(json =>
+    public static string Write(SpreadResult spread) => JsonWriting.Document(json =>
     {
         json.WriteStartObject();
         json.WriteString("format", Format);
-        json.Object("circuit", () => WriteCircuit(json, spread.Varied.Circuit));
+        json.Circuit(spread.Varied.Circuit);
         json.WriteString("verdict", SpreadWords.Verdict(spread));
         json.WriteBoolean("holds", spread.AllHold);
         json.Objects("values", spread.Varied.Values, value =>
@@ -42,16 +41,6 @@ public static class SpreadJson
         json.Array("selfChecks", spread.Nominal.SelfChecks, check => WriteCheck(json, "nominal", check));
         json.WriteEndObject();
     });
-
-    private static void WriteCircuit(Utf8JsonWriter json, Circuit circuit)
-    {
-        json.WriteString("title", circuit.Title);
-        json.WriteString("file", circuit.Source.Name);
-        json.WriteString("sha256", circuit.Source.Sha256);
-        json.WriteNumber("parts", circuit.Parts.Length);
-        json.WriteNumber("nodes", circuit.Nodes.Length);
-        json.WriteNumber("storedQuantities", circuit.Parts.Count(part => part is Capacitor or Inductor));
-    }
 
     private static void WriteAccount(Utf8JsonWriter json, SpreadResult spread)
     {

@@ -1,5 +1,6 @@
 using CircuitTransient.Measurements;
 using CircuitTransient.Measurements.Breakdowns;
+using CircuitTransient.Reports;
 using CircuitTransient.Tests.OutsideChecks;
 
 namespace CircuitTransient.Tests.Measurements.Breakdowns;
@@ -85,6 +86,27 @@ public class SwitchingEffectTests
         var heat = solved["energy in Rl"].BySwitching!.AtMax!;
         Assert.Equal(
             ["Q closes", "P closes", "Q opens", "P opens and D closes"], heat.Effects.Select(e => e.Event));
+    }
+
+    [Fact]
+    public void Of_many_switchings_the_summary_shows_the_largest_and_the_sum_of_the_rest()
+    {
+        var events = Enumerable.Range(0, 40)
+            .Select(k => $"{(k % 2 == 0 ? "closes" : "opens")} at {50 + (50 * k)} µs");
+        var solved = SolvedText.By(
+            Breakdown.Switching,
+            $"""
+            source E at a : 48 V
+            switch Q from a to b : open, {string.Join(", ", events)}
+            resistor R from b to c : 50 Ω
+            capacitor C at c : 100 µF
+            observe voltage of c
+            until 2.1 ms
+            """);
+        var lines = TerminalSummary.Write(solved.Result, []).Split('\n');
+
+        Assert.Equal(11, lines.Count(l => l.Contains("    Q closes ") || l.Contains("    Q opens ")));
+        Assert.Contains(lines, l => l.StartsWith("    29 others together ", StringComparison.Ordinal));
     }
 
     [Fact]

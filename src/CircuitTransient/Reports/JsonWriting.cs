@@ -4,12 +4,13 @@ using System.Text;
 using System.Text.Encodings.Web;
 using System.Text.Json;
 using System.Text.Unicode;
+using CircuitTransient.Circuits;
 
-namespace CircuitTransient.Reports.Studies;
+namespace CircuitTransient.Reports;
 
-/// <summary>JSON as the studies' documents write it: doubles that read back to the same bits, null for what
-/// is infinite or left open.</summary>
-internal static class StudyJson
+/// <summary>JSON as every document writes it: doubles that read back to the same bits, null for what is
+/// infinite or left open.</summary>
+internal static class JsonWriting
 {
     // Letters of every script stay readable; < > & ' are escaped, so that it may stand inside a page.
     private static readonly JsonWriterOptions Options = new()
@@ -34,10 +35,23 @@ internal static class StudyJson
     /// <summary>The schema that is embedded under a name.</summary>
     public static string Schema(string name)
     {
-        using var stream = typeof(StudyJson).Assembly.GetManifestResourceStream(name)
+        using var stream = typeof(JsonWriting).Assembly.GetManifestResourceStream(name)
             ?? throw new InvalidOperationException($"{name} is not embedded");
         using var reader = new StreamReader(stream, Encoding.UTF8);
         return reader.ReadToEnd();
+    }
+
+    /// <summary>The member <c>circuit</c>: which circuit the document speaks of.</summary>
+    public static void Circuit(this Utf8JsonWriter json, Circuit circuit)
+    {
+        json.WriteStartObject("circuit");
+        json.WriteString("title", circuit.Title);
+        json.WriteString("file", circuit.Source.Name);
+        json.WriteString("sha256", circuit.Source.Sha256);
+        json.WriteNumber("parts", circuit.Parts.Length);
+        json.WriteNumber("nodes", circuit.Nodes.Length);
+        json.WriteNumber("storedQuantities", circuit.Parts.Count(part => part is Capacitor or Inductor));
+        json.WriteEndObject();
     }
 
     /// <summary>A member that is an object.</summary>
