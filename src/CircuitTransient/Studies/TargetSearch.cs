@@ -57,7 +57,10 @@ internal static class TargetSearch
         }
 
         var names = circuit.Parameters.Select(p => p.Name).Where(n => !owners.Contains(Owner(n))).ToArray();
-        return Missing(target, name, $"there is no named value `{name}` that has a number of its own", names);
+        return Missing(target, name, $"there is no named value `{name}` that has a number of its own", names,
+            owners.Contains(name)
+                ? $"`{name}` is a part: vary it with `--part`"
+                : "no value of the circuit has a name; parts are varied with `--part`");
     }
 
     private static (ImmutableArray<VariedValue>, Diagnostic?) PartValue(
@@ -87,7 +90,8 @@ internal static class TargetSearch
         {
             return ([], Diagnostic.Error(
                 circuit.Source, SpanOf(circuit, name), $"`{name}` has no single value that could vary",
-                "resistors, inductors, capacitors, couplings, gains and sources of one constant level have"));
+                "name a resistor, an inductor, a capacitor, a coupling, a gain or a source of one constant "
+                + "level"));
         }
 
         string[] names = [.. circuit.Parts.Where(p => OwnValue(p)?.Formula is not null).Select(p => p.Name),
@@ -135,7 +139,9 @@ internal static class TargetSearch
             }], null)
             : ([], Diagnostic.Error(
                 circuit.Source, circuit.Parts[index].Span,
-                $"`{name}` is made of {phases.Length} sines; a phase is that of one",
+                phases.Length == 0
+                    ? $"`{name}` is no sine, so it has no phase"
+                    : $"`{name}` is made of {phases.Length} sines; a phase is that of one",
                 "name a source that is one sine or cosine"));
     }
 
@@ -188,12 +194,13 @@ internal static class TargetSearch
     private static string Owner(string parameter) => parameter.Split(' ')[0];
 
     private static (ImmutableArray<VariedValue>, Diagnostic?) Missing(
-        StudyTarget target, string name, string headline, IReadOnlyList<string> known)
+        StudyTarget target, string name, string headline, IReadOnlyList<string> known,
+        string? otherwise = null)
     {
         var source = target.Written ?? new SourceText("the study", name);
         var span = target.Written is null ? new TextSpan(0, name.Length) : target.Span;
         var advice = NearestName.Find(name, known) is { } nearest ? $"did you mean `{nearest}`?"
-            : known.Count == 0 ? null
+            : known.Count == 0 ? otherwise
             : $"there are {string.Join(", ", known.Take(10).Select(k => $"`{k}`"))}";
         return ([], Diagnostic.Error(source, span, headline, advice));
     }

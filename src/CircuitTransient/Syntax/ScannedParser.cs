@@ -60,12 +60,12 @@ public static class ScannedParser
         return (name, closes);
     }
 
-    private static string FormOf(ScannedKind kind) => kind switch
+    private static string FormOf(ScannedKind kind, string? name = null) => kind switch
     {
-        ScannedKind.Value => "write `Rdamp from 1 Ω to 10 Ω in 50 steps`",
-        ScannedKind.Part => "write `Rsn from 10 Ω to 1 kΩ in 20 steps a decade`",
-        ScannedKind.Phase => "write `Grid from 0° to 360° in 5° steps`",
-        _ => "write `Kmain closes from 0 s to 20 ms in 200 steps`",
+        ScannedKind.Value => $"write `{name ?? "Rdamp"} from 1 Ω to 10 Ω in 50 steps`",
+        ScannedKind.Part => $"write `{name ?? "Rsn"} from 10 Ω to 1 kΩ in 20 steps a decade`",
+        ScannedKind.Phase => $"write `{name ?? "Grid"} from 0° to 360° in 5° steps`",
+        _ => $"write `{name ?? "Kmain closes"} from 0 s to 20 ms in 200 steps`",
     };
 
     private static ScannedSyntax? Read(StatementCursor cursor, SourceText source, ScannedKind kind)
@@ -94,6 +94,7 @@ public static class ScannedParser
         }
 
         var span = cursor.SpanFrom(start);
+        cursor.Form = FormOf(kind, source[span]);
         if (cursor.IsAtEnd)
         {
             return new(source, kind, name, span, closes, null);

@@ -141,7 +141,7 @@ public sealed class ScanTests : IDisposable
         var run = commandLine.Run("scan", file, "--no-files", "--part", "E from 0.5 to 1.5 in 4 steps");
 
         Assert.Equal(ExitStatus.NoUniqueSolution, run.Status);
-        Assert.Contains("One point has no solution.", run.Output.Replace("\n", " "));
+        Assert.Contains("One of 5 points has no solution.", run.Output.Replace("\n", " "));
         Assert.Contains("  E = 1.000: ", run.Output);
     }
 

@@ -68,7 +68,7 @@ internal sealed class ScanCurvePanel
         PlotFonts fonts, double top)
     {
         var panel = new ScanCurvePanel(result, axis, points, finding, index, fonts, top);
-        return (panel.Shapes(), Height + 26 + 40);
+        return (panel.Shapes().OrderBy(s => s is TextShape), Height + 26 + 40);
     }
 
     private IEnumerable<Shape> Shapes()

@@ -32,7 +32,7 @@ internal static class ScanFamilyPanel
             fonts, top + 26, Height, [.. ticks.Marks.Select(m => (time.Place(m.Value), m.Label))],
             family.Event is null ? $"time ({ticks.Unit})" : $"{ticks.Unit} after {family.Event}",
             new PlotScale(least, greatest, top + 26 + Height, top + 26), family.Unit);
-        return (
+        Shape[] shapes =
             [
                 .. frame.Shapes($"{family.Name}, with {ScanWords.Range(result)}"),
                 .. limits.SelectMany(l => frame.Limit(l.Value, l.Words)),
@@ -40,28 +40,44 @@ internal static class ScanFamilyPanel
                     PlotTrace.Lines(l.Samples, time, frame.Level)
                         .Select(line => new PolylineShape(line, StrokeOf(l.Member.Role, i, lines.Length)))),
                 .. Names(result, frame, lines),
-            ],
-            Height + 26 + 40);
+            ];
+        return (shapes.OrderBy(s => s is TextShape), Height + 26 + 40);
     }
 
     // From the earliest switching to some time past the latest peak, where that is a small part of the study;
-    // of a scanned event all count from it.
+    // where the family's peaks lie far apart, about that of the worst alone. Of a scanned event all count from
+    // it.
     private static (double From, double To) Window(ScanFamily family)
     {
-        var start = family.Members.Min(m => m.Start - m.Origin);
-        var peak = family.Members.Max(m => m.Peak - m.Origin);
-        var length = peak - start;
         var first = family.Members.Max(m => -m.Origin);
         var last = family.Members.Min(m => m.Times[^1] - m.Origin);
-        if (length <= 0 || length > Short * (last - first))
-        {
-            return family.Event is null
+        var worst = family.Members.Where(m => m.Role == FamilyRole.Worst).ToImmutableArray();
+        return CloseUp(family.Members, last - first) ?? CloseUp(worst, last - first)
+            ?? (family.Event is null
                 ? (first, last)
-                : (Math.Max(first, -0.1 * last), Math.Max(last, peak + (0.1 * length)));
+                : (Math.Max(first, -0.1 * last), Math.Max(last, Reach(family.Members))));
+    }
+
+    private static double Reach(ImmutableArray<FamilyMember> members)
+    {
+        var peak = members.Max(m => m.Peak - m.Origin);
+        return peak + (0.1 * (peak - members.Min(m => m.Start - m.Origin)));
+    }
+
+    private static (double From, double To)? CloseUp(ImmutableArray<FamilyMember> members, double whole)
+    {
+        if (members.IsEmpty)
+        {
+            return null;
         }
 
-        return (start - (0.06 * length), Math.Min(family.Members.Max(m => m.End - m.Origin),
-            peak + (AfterPeak * length)));
+        var start = members.Min(m => m.Start - m.Origin);
+        var peak = members.Max(m => m.Peak - m.Origin);
+        var length = peak - start;
+        return length <= 0 || length > Short * whole
+            ? null
+            : (start - (0.06 * length),
+                Math.Min(members.Max(m => m.End - m.Origin), peak + (AfterPeak * length)));
     }
 
     private static ImmutableArray<(double Value, string Words)> Limits(Circuit circuit, ScanFamily family)
@@ -105,7 +121,7 @@ internal static class ScanFamilyPanel
         for (var i = 0; i < ends.Length; i++)
         {
             var (member, y) = ends[i];
-            var words = string.Join(", ", result.Axes.Select((axis, k) => axis.Say(member.At[k], 3)));
+            var words = string.Join(", ", result.Axes.Select((axis, k) => axis.Say(member.At[k], fewer: 1)));
             var name = member.Role switch
             {
                 FamilyRole.Worst => $"{words}, the worst",

@@ -33,6 +33,7 @@ public static class ScanJson
         json.WriteNumber("unsolved", result.UnsolvedCount);
         json.WriteBoolean("allHold", result.AllHold);
         json.Objects("findings", result.Findings, finding => WriteFinding(json, finding));
+        json.Objects("linearRanges", result.Linear, linear => WriteLinear(json, linear));
         if (result.Scatter is { } scatter)
         {
             json.Object("scatter", () => WriteScatter(json, scatter));
@@ -70,6 +71,7 @@ public static class ScanJson
         {
             json.Array("values", found.Values, json.NumberValue);
             json.Array("times", found.Times, json.NumberValue);
+            json.WriteBoolean("inDoubt", point.IsInDoubt);
         }
         else
         {
@@ -130,6 +132,7 @@ public static class ScanJson
             json.Number("value", place.Value);
             json.Array("at", place.At, value => json.NumberValue(value));
             json.Number("time", place.Time);
+            json.WriteBoolean("inDoubt", place.IsInDoubt);
             json.WriteString("how", place.How switch
             {
                 RangeExtremeKind.Smooth => "slope zero",
@@ -142,6 +145,21 @@ public static class ScanJson
         });
     }
 
+    private static void WriteLinear(Utf8JsonWriter json, LinearScan linear)
+    {
+        json.WriteString("part", linear.Part);
+        json.Number("limit", linear.Limit);
+        json.WriteString("unit", linear.Unit);
+        json.WriteBoolean("kept", linear.Scan.HoldsThroughout);
+        json.Number("greatest", linear.Scan.Greatest?.Value * linear.Limit);
+        json.Array("at", linear.Scan.Greatest?.At ?? [], value => json.NumberValue(value));
+        json.Objects("keptOver", linear.Scan.Holding, stretch =>
+        {
+            json.Number("from", stretch.From);
+            json.Number("to", stretch.To);
+        });
+    }
+
     private static void WriteScatter(Utf8JsonWriter json, ScatterResult scatter)
     {
         json.WriteString("event", scatter.Scatter.Varied.Name);
@@ -151,6 +169,7 @@ public static class ScanJson
         json.Number("to", scatter.Scatter.To);
         json.WriteNumber("unsolved", scatter.UnsolvedCount);
         json.Objects("points", scatter.Points, point => WritePoint(json, point));
+        json.Objects("linearRanges", scatter.Linear, linear => WriteLinear(json, linear));
         json.Objects("figures", scatter.Figures, figure =>
         {
             WriteFinding(json, figure.Scan);

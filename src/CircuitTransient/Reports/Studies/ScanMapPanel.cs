@@ -71,7 +71,8 @@ internal sealed class ScanMapPanel
             fonts.Fitted(
                 ScanWords.Title(result.Circuit, finding.Figure), 14, Right - ScanFrame.Left, isStrong: true),
             14, PlotStyle.Ink, IsStrong: true);
-        foreach (var shape in Cells().Concat(Axes()).Concat(Contours()).Concat(Breaks()).Concat(Worst()))
+        foreach (var shape in Cells()
+            .Concat(Contours().Concat(Breaks()).Concat(Axes()).Concat(Worst()).OrderBy(s => s is TextShape)))
         {
             yield return shape;
         }
@@ -157,25 +158,75 @@ internal sealed class ScanMapPanel
             yield break;
         }
 
-        foreach (var (level, label) in new PlotScale(finite.Min(), finite.Max(), 0, 1).Ticks(Unit, 7).Marks)
+        var middles = Middles();
+        var levels = new PlotScale(finite.Min(), finite.Max(), 0, 1).Ticks(Unit, 7).Marks;
+        var step = levels.Length > 1 ? levels[1].Value - levels[0].Value : finite.Max() - finite.Min();
+        var taken = WorstLabel() is { } worst ? new List<(double, double, double, double)> { Box(worst) } : [];
+        foreach (var (level, _) in levels)
         {
-            var strokes = ContourLines.Of(values, level)
+            var strokes = MapLines.Equal(values, middles, level, step)
                 .Select(s => (A: Placed(s.A), B: Placed(s.B))).ToArray();
             foreach (var (a, b) in strokes)
             {
                 yield return new LineShape(a.X, a.Y, b.X, b.Y, new Stroke(PlotStyle.Ink, 0.7));
             }
 
-            if (strokes.Length > 0)
+            if (Label(strokes, EngineeringNumber.Format(level, Unit, 3), taken) is { } label)
             {
-                var middle = strokes[strokes.Length / 2].A;
-                yield return new TextShape(
-                    Math.Clamp(middle.X, ScanFrame.Left + 24, Right - 24),
-                    Math.Clamp(middle.Y + 4, top + 12, top + Height - 4),
-                    EngineeringNumber.Format(level, Unit, 3), 10.5, PlotStyle.Ink, TextAnchor.Middle,
-                    HasHalo: true);
+                taken.Add(Box(label));
+                yield return label;
             }
         }
+    }
+
+    /// <summary>The label of a line of equal value where it meets no other; null where there is no such
+    /// place.</summary>
+    private TextShape? Label(
+        (PlotPoint A, PlotPoint B)[] strokes, string words, List<(double, double, double, double)> taken)
+    {
+        double[] shares = [0.5, 0.25, 0.75, 0.1, 0.9];
+        return shares.Where(_ => strokes.Length > 0)
+            .Select(share => strokes[(int)(share * (strokes.Length - 1))].A)
+            .Select(at => new TextShape(
+                Math.Clamp(at.X, ScanFrame.Left + 24, Right - 24),
+                Math.Clamp(at.Y + 4, top + 12, top + Height - 4), words, 10.5, PlotStyle.Ink,
+                TextAnchor.Middle, HasHalo: true))
+            .FirstOrDefault(label => !taken.Any(other => Overlap(other, Box(label))));
+    }
+
+    private (double, double, double, double) Box(TextShape text)
+    {
+        const double apart = 3;
+        var width = fonts.Width(text.Text, text.Size, text.IsStrong);
+        var left = text.X - (text.Anchor switch
+        {
+            TextAnchor.Middle => width / 2,
+            TextAnchor.End => width,
+            _ => 0,
+        });
+        return (left - apart, text.Y - text.Size - apart, left + width + apart, text.Y + apart);
+    }
+
+    private static bool Overlap(
+        (double Left, double Top, double Right, double Bottom) a,
+        (double Left, double Top, double Right, double Bottom) b) =>
+        a.Left < b.Right && b.Left < a.Right && a.Top < b.Bottom && b.Top < a.Bottom;
+
+    private double[,]? Middles()
+    {
+        if (result.Middles.IsEmpty)
+        {
+            return null;
+        }
+
+        var (columns, rows) = (values.GetLength(0) - 1, values.GetLength(1) - 1);
+        var found = new double[columns, rows];
+        for (var k = 0; k < columns * rows; k++)
+        {
+            found[k / rows, k % rows] = Shown(result.Middles[k].Found?.Values[index] ?? double.NaN);
+        }
+
+        return found;
     }
 
     /// <summary>A place between points, by their numbers.</summary>
@@ -189,11 +240,10 @@ internal sealed class ScanMapPanel
         return a + ((b - a) * (number - left));
     }
 
-    // The line follows the points as the other lines do; the dots on it were solved for.
+    // The line joins places that were solved for, on the lines between the points.
     private IEnumerable<Shape> Breaks()
     {
-        var limit = finding.Figure.Kind == StudyFigureKind.RatingUsed ? 100 : line?.Limit ?? 0;
-        foreach (var (a, b) in finding.IsJudged ? ContourLines.Of(values, limit) : [])
+        foreach (var (a, b) in MapLines.Breaking(result.Axes, finding.Breaks))
         {
             var (from, to) = (Placed(a), Placed(b));
             yield return new LineShape(from.X, from.Y, to.X, to.Y, new Stroke(PlotStyle.Limit, 1.6));
@@ -216,16 +266,27 @@ internal sealed class ScanMapPanel
 
     private IEnumerable<Shape> Worst()
     {
-        if ((finding.Worst ?? finding.Greatest) is not { } worst)
+        if (Marked is { } worst && WorstLabel() is { } label)
         {
-            yield break;
+            yield return new DiscShape(
+                across.Place(worst.At[0]), upwards.Place(worst.At[1]), 4.5, PlotStyle.Ink);
+            yield return label;
+        }
+    }
+
+    private ScanPlace? Marked => finding.Worst ?? finding.Greatest;
+
+    private TextShape? WorstLabel()
+    {
+        if (Marked is not { } worst)
+        {
+            return null;
         }
 
         var (x, y) = (across.Place(worst.At[0]), upwards.Place(worst.At[1]));
         var words = EngineeringNumber.Format(Shown(worst.Value), Unit);
         var anchor = x > (ScanFrame.Left + Right) / 2 ? TextAnchor.End : TextAnchor.Start;
-        yield return new DiscShape(x, y, 4.5, PlotStyle.Ink);
-        yield return new TextShape(
+        return new TextShape(
             x + (anchor == TextAnchor.End ? -8 : 8), Math.Clamp(y + 4, top + 14, top + Height - 6), words,
             ScanFrame.Small, PlotStyle.Ink, anchor, IsStrong: true, HasHalo: true);
     }

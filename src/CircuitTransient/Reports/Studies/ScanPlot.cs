@@ -13,6 +13,7 @@ public static class ScanPlot
     private const int MostDistributions = 2;
     private const double PixelsPerPoint = 2;
     private const double Margin = 20;
+    private const double VerdictSize = 12.5;
 
     /// <summary>The picture as SVG.</summary>
     public static string Svg(ScanResult result)
@@ -37,10 +38,14 @@ public static class ScanPlot
         shapes.Add(new TextShape(
             ScanFrame.Left, 34, fonts.Fitted(title, 19, width, isStrong: true), 19, PlotStyle.Ink,
             IsStrong: true));
-        shapes.Add(new TextShape(
-            ScanFrame.Left, 55, fonts.Fitted(ScanSummary.Verdict(result), 12.5, width), 12.5,
-            PlotStyle.Grey));
-        var y = 76.0;
+        var y = 55.0;
+        foreach (var row in Rows(ScanSummary.Verdict(result), fonts, width))
+        {
+            shapes.Add(new TextShape(ScanFrame.Left, y, row, VerdictSize, PlotStyle.Grey));
+            y += 17;
+        }
+
+        y += 4;
         foreach (var panel in Panels(result, fonts))
         {
             var (drawn, height) = panel(y);
@@ -53,6 +58,25 @@ public static class ScanPlot
         shapes.Add(new TextShape(
             ScanFrame.Left, y + 10, fonts.Fitted(foot, 11, width), 11, PlotStyle.Grey));
         return new Drawing(PlotPanel.Width, y + 26, $"Scan of {title}", shapes.ToImmutable());
+    }
+
+    private static List<string> Rows(string text, PlotFonts fonts, double width)
+    {
+        List<string> rows = [""];
+        foreach (var word in text.Split(' '))
+        {
+            var longer = rows[^1].Length == 0 ? word : $"{rows[^1]} {word}";
+            if (rows[^1].Length == 0 || fonts.Width(longer, VerdictSize) <= width)
+            {
+                rows[^1] = longer;
+            }
+            else
+            {
+                rows.Add(word);
+            }
+        }
+
+        return rows;
     }
 
     private static IEnumerable<Func<double, (IEnumerable<Shape> Shapes, double Height)>> Panels(

@@ -11,6 +11,7 @@ public static class ScanSection
         result.Axes.IsEmpty ? "Scatter" : "Scan",
         Markup.Of($"""
             <p class="lead">{ScanSummary.Verdict(result)}</p>
+            {Markup.Join(ScanSummary.Remarks(result).Select(r => Markup.Of($"<p>{r}</p>")))}
             {Judged(result)}
             {Picture(result)}
             <p class="aside">{ScanSummary.Searched(result)} All points stand in scan.csv and scan.json.</p>

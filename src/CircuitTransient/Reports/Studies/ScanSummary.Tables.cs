@@ -47,9 +47,10 @@ public static partial class ScanSummary
             ? $"{EngineeringNumber.Format(line.Of(worst.Value), line.Unit)}, "
             : "";
         var said = $"{reached}{ScanWords.Verdict(finding.Figure, worst.Value)}";
+        var doubt = worst.IsInDoubt ? "; in doubt" : "";
         return worst.How == Numerics.RangeExtremeKind.Flat
-            ? $"{said} throughout"
-            : $"{said} at {ScanWords.Place(result.Axes, worst.At)} ({ScanWords.How(worst.How)})";
+            ? $"{said} throughout{doubt}"
+            : $"{said} at {ScanWords.Place(result.Axes, worst.At)} ({ScanWords.How(worst.How)}){doubt}";
     }
 
     private static void WriteObserved(SummaryText text, ScanResult result)
@@ -135,17 +136,24 @@ public static partial class ScanSummary
     private static void WriteScatter(SummaryText text, ScanResult result, ScatterResult scatter)
     {
         text.Heading($"With {Words(scatter)}, each instant as likely");
-        var rows = scatter.Figures
+        var shown = scatter.Figures
             .Where(f => f.Quantiles.Length > 0)
             .OrderBy(f => f.Scan.Room ?? double.PositiveInfinity)
-            .Take(MostFindings)
-            .Select(f => Row(result, f));
+            .Take(MostFindings).ToArray();
+        var names = shown.Select(f => Name(f)).ToArray();
+        var rows = shown.Select((f, k) => Row(
+            result, f, names.Count(n => n == names[k]) > 1
+                ? ScanWords.Title(result.Circuit, f.Scan.Figure)
+                : names[k]));
         text.Table(
             [Prose, Right, Right, Right, Right, Right],
             rows.Prepend(["", "least", "median", "95 %", "greatest", ""]));
+
+        string Name(FigureScatter f) =>
+            ScanWords.Reached(result.Circuit, f.Scan.Figure)?.Name ?? f.Scan.Figure.Name;
     }
 
-    private static ImmutableArray<string> Row(ScanResult result, FigureScatter figure)
+    private static ImmutableArray<string> Row(ScanResult result, FigureScatter figure, string name)
     {
         var line = ScanWords.Reached(result.Circuit, figure.Scan.Figure);
         ImmutableArray<double?> values =
@@ -158,7 +166,7 @@ public static partial class ScanSummary
         var shown = values.Select(v => line is not null && v is { } margin && double.IsFinite(margin)
             ? EngineeringNumber.Format(line.Of(margin), line.Unit)
             : ScanWords.Value(figure.Scan.Figure, v));
-        return [line?.Name ?? figure.Scan.Figure.Name, .. shown,
+        return [name, .. shown,
             figure.Holding is { } holding ? $"{ReportWords.Percent(holding)} hold" : ""];
 
         double? At(double fraction) => figure.Quantiles.FirstOrDefault(q => q.Fraction == fraction)?.Value;

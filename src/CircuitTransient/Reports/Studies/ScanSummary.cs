@@ -27,6 +27,11 @@ public static partial class ScanSummary
         var source = result.Circuit.Source.Name;
         text.Title(result.Circuit.Title is { } title ? $"{title} ({source})" : source);
         text.Paragraph(Verdict(result), indent: 0);
+        foreach (var remark in Remarks(result))
+        {
+            text.Paragraph(remark, indent: 0);
+        }
+
         if (!result.Axes.IsEmpty)
         {
             WriteJudged(text, result);
@@ -70,28 +75,37 @@ public static partial class ScanSummary
             said.Add(ScatterVerdict(scatter));
         }
 
+        var count = result.Points.Length + (result.Scatter?.Points.Length ?? 0);
         if (result.UnsolvedCount > 0)
         {
             said.Add(result.UnsolvedCount == 1
-                ? "One point has no solution."
-                : $"{result.UnsolvedCount} points have no solution.");
+                ? $"One of {count} points has no solution."
+                : $"{result.UnsolvedCount} of {count} points have no solution.");
         }
 
         return string.Join(" ", said);
     }
 
+    /// <summary>What the verdict does not cover: windows a moved event leaves, parts past their
+    /// range.</summary>
+    internal static IEnumerable<string> Remarks(ScanResult result) =>
+        ScanWindows.Left(result).Concat(ScanDoubt.Reasons(result).Select(reason => $"{reason}."));
+
     private static string ScanVerdict(ScanResult result)
     {
         var judged = result.Findings.Where(f => f.IsJudged).ToArray();
         var range = ScanWords.Range(result);
+        var doubt = ScanDoubt.Of(result) is { } words ? $"; {words}." : ".";
         if (judged.Length == 0)
         {
-            return $"Scanned {range}: nothing was required or rated, so there is no verdict.";
+            return $"Scanned {range}: nothing was required or rated, so there is no verdict{doubt}";
         }
 
         if (judged.All(f => f.HoldsThroughout))
         {
-            return $"Everything required and rated holds for {range}.";
+            return result.HasGaps
+                ? $"Wherever there is a solution everything required and rated holds for {range}{doubt}"
+                : $"Everything required and rated holds for {range}{doubt}";
         }
 
         if (result.Axes is not [var axis])
@@ -99,14 +113,16 @@ public static partial class ScanSummary
             var holding = result.Points.Count(p => p.Found is { } found
                 && judged.All(f => Holds(f.Figure, found.Values[result.Figures.IndexOf(f.Figure)])));
             return $"Everything required and rated holds at {holding} of {result.Points.Length} points of "
-                + $"{range}; the lines where it begins to break are in the map.";
+                + $"{range}; the lines where it begins to break are in the map{doubt}";
         }
 
         var common = ScanStretches.Common(judged.Select(f => f.Holding));
+        var where = result.HasGaps ? "wherever there is a solution, for" : "throughout";
         return (common.IsEmpty
-            ? $"Something is broken throughout {range}."
+            ? $"Something is broken {where} {range}"
             : $"For {ScanWords.Subject(axis)} everything required and rated "
-                + $"{ScanWords.Holding(axis, common, result.HasGaps)}.") + PreferredThatHold(axis, common);
+                + ScanWords.Holding(axis, common, result.HasGaps))
+            + doubt + PreferredThatHold(axis, common);
     }
 
     /// <summary>Which of the preferred values hold, for only those can be bought.</summary>
@@ -121,7 +137,7 @@ public static partial class ScanSummary
         var holding = axis.Values.Where(v => common.Any(s => v >= s.From && v <= s.To)).ToArray();
         var named = holding.Length is 0 or > few
             ? ""
-            : $": {string.Join(", ", holding.Select(v => axis.Say(v, 3)))}";
+            : $": {string.Join(", ", holding.Select(v => axis.Say(v, fewer: 1)))}";
         var count = holding.Length switch
         {
             0 => "none holds",
@@ -142,15 +158,22 @@ public static partial class ScanSummary
 
         var common = ScanStretches.Common(judged.Select(f => f.Scan.Holding));
         var fraction = common.Sum(s => s.To - s.From) / (scatter.Axis.To - scatter.Axis.From);
+        var hasGaps = scatter.UnsolvedCount > 0;
+        var doubt = ScanDoubt.Of(scatter) is { } words ? $"; {words}." : ".";
         return judged.All(f => f.Scan.HoldsThroughout)
-            ? $"With {range} everything required and rated holds."
-            : $"With {range} everything required and rated holds in {ReportWords.Percent(fraction)} of "
-                + "cases.";
+            ? $"With {range} everything required and rated holds"
+                + (hasGaps ? " wherever there is a solution" : "") + doubt
+            : $"With {range} everything required and rated holds in {ReportWords.Percent(fraction)} of cases"
+                + (hasGaps ? ", those without a solution counted as not holding" : "") + doubt;
     }
 
-    private static string Words(ScatterResult scatter) =>
-        $"{ScanWords.Subject(scatter.Axis)} anywhere from {scatter.Axis.Say(scatter.Axis.From)} to "
-        + scatter.Axis.Say(scatter.Axis.To);
+    private static string Words(ScatterResult scatter)
+    {
+        var axis = scatter.Axis;
+        var from = axis.Say(axis.From) + (scatter.Scatter.IsCutBelow ? " (cut there: nothing is earlier)" : "");
+        var to = axis.Say(axis.To) + (scatter.Scatter.IsCutAbove ? " (cut there: the study ends)" : "");
+        return $"{ScanWords.Subject(axis)} anywhere from {from} to {to}";
+    }
 
     private static bool Holds(StudyFigure figure, double? value) =>
         figure.Kind == StudyFigureKind.RatingUsed ? value <= 1 : value >= 0;

@@ -40,7 +40,7 @@ internal static class ScanWords
     {
         if (holding.IsEmpty)
         {
-            return "broken throughout";
+            return hasGaps ? "broken wherever there is a solution" : "broken throughout";
         }
 
         if (hasGaps)
@@ -157,6 +157,12 @@ internal static class ScanWords
 /// <param name="Bound">The requirement's word: <c>at most</c>.</param>
 internal sealed record ReachedLine(string Name, string Unit, double Limit, int Sign, string Bound)
 {
+    private const double Rounding = 1e-13; // of the limit: what the difference of two such leaves of zero
+
     /// <summary>The value reached with a margin.</summary>
-    public double Of(double margin) => Limit + (Sign * margin);
+    public double Of(double margin)
+    {
+        var reached = Limit + (Sign * margin);
+        return Math.Abs(reached) <= Rounding * Math.Abs(Limit) ? 0 : reached;
+    }
 }

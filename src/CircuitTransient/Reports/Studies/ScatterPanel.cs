@@ -33,7 +33,7 @@ internal static class ScatterPanel
         var title = $"{ScanWords.Title(result.Circuit, of)}: in how many cases it stays below, with "
             + $"{ScanWords.Subject(scatter.Axis)} from {scatter.Axis.Say(scatter.Axis.From)} to "
             + scatter.Axis.Say(scatter.Axis.To);
-        return (
+        Shape[] shapes =
             [
                 .. frame.Shapes(title),
                 .. limit is { } l ? Limit(frame, across, l, unit) : [],
@@ -41,8 +41,8 @@ internal static class ScatterPanel
                         [.. points.Select(p => new PlotPoint(p.Value, p.Share))], across, frame.Level)
                     .Select(curve => new PolylineShape(curve, new Stroke(PlotStyle.Accent, 2))),
                 .. Marks(frame, across, points, unit),
-            ],
-            Height + 26 + 40);
+            ];
+        return (shapes.OrderBy(s => s is TextShape), Height + 26 + 40);
     }
 
     private static (double Least, double Greatest) Range(double least, double greatest, double? limit)

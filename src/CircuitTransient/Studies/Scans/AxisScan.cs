@@ -14,7 +14,6 @@ internal sealed class AxisScan(
     Circuit circuit, StudyFigure figure, Func<double, SlopedSample> function, double scale)
 {
     private const int MostCrests = 4;
-    private const double Rounding = 1e-10; // of the scale: what is less is no change of the figure
 
     private readonly bool isJudged = FigureScan.IsJudgedKind(figure.Kind);
 
@@ -24,7 +23,7 @@ internal sealed class AxisScan(
     /// <param name="timeAt">When the figure stands at a place.</param>
     public FigureScan Run(ImmutableArray<SlopedSample> given, Func<double, double?> timeAt)
     {
-        if (IsFlat(given))
+        if (FigureSizes.IsFlat([.. given.Select(s => s.Y)], scale, isJudged))
         {
             return Flat(given, timeAt);
         }
@@ -72,19 +71,11 @@ internal sealed class AxisScan(
         double Height(int i) => i >= 0 && i < given.Length ? sign * given[i].Y : double.NaN;
     }
 
-    private bool IsFlat(ImmutableArray<SlopedSample> given)
-    {
-        // Of what is judged a gap parts the range, so that nothing is said to hold there.
-        var values = given.Select(s => s.Y).Where(y => isJudged || !double.IsNaN(y)).ToArray();
-        return values.Length > 0 && values.All(double.IsFinite)
-            && values.Max() - values.Min() <= Rounding * scale;
-    }
-
     private FigureScan Flat(ImmutableArray<SlopedSample> given, Func<double, double?> timeAt)
     {
         var solved = given.Where(s => s.HasValue).ToArray();
         var (first, last) = (solved[0], solved[^1]);
-        var value = Math.Abs(first.Y) <= Rounding * scale ? 0 : first.Y;
+        var value = Math.Abs(first.Y) <= FigureSizes.Rounding * scale ? 0 : first.Y;
         var place = new ScanPlace([first.X], value, timeAt(first.X), RangeExtremeKind.Flat);
         var holds = !isJudged || Judged(first).Y >= 0;
         var findings = new FigureScan(

@@ -32,6 +32,11 @@ internal sealed class MapScan(
         var isJudged = FigureScan.IsJudgedKind(kind);
         var values = points
             .Select(p => ScanFunction.Judged(figures[figure], p.Found, p.Found?.Values[figure])).ToArray();
+        if (FigureSizes.IsFlat(values, FigureSizes.Of(figures, points, figure), isJudged))
+        {
+            return Flat(figure, isJudged);
+        }
+
         var greatest = Extreme(figure, values, 1);
         var least = Extreme(figure, values, -1);
         var breaks = isJudged ? Breaks(figure, values) : [];
@@ -39,6 +44,16 @@ internal sealed class MapScan(
         var holds = !isJudged
             || (values.All(v => double.IsNaN(v) || Margin(kind, v) >= 0) && worst is null or >= 0);
         var scan = new FigureScan(figures[figure], greatest, least, [], breaks, [], holds);
+        return scan with { Room = ScanRoom.Of(plan.Varied.Circuit, scan) };
+    }
+
+    private FigureScan Flat(int figure, bool isJudged)
+    {
+        var (kind, first) = (figures[figure].Kind, points.First(p => p.Found?.Values[figure] is not null));
+        var value = first.Found!.Values[figure]!.Value;
+        var place = new ScanPlace(first.At, value, first.Found.Times[figure], RangeExtremeKind.Flat);
+        var scan = new FigureScan(
+            figures[figure], place, place, [], [], [], !isJudged || Margin(kind, value) >= 0);
         return scan with { Room = ScanRoom.Of(plan.Varied.Circuit, scan) };
     }
 
@@ -140,7 +155,10 @@ internal sealed class MapScan(
         if (crossing is not null)
         {
             breaks.Add(new ScanBreak(
-                points[one].At.SetItem(axis, crossing.X), axis, a >= 0, crossing.IsJump, crossing.IsBySlope));
+                points[one].At.SetItem(axis, crossing.X), axis, a >= 0, crossing.IsJump, crossing.IsBySlope)
+            {
+                Before = one,
+            });
         }
     }
 

@@ -20,10 +20,20 @@ public sealed record ScanAxis(
     /// <summary>The greatest value.</summary>
     public double To => Values[^1];
 
+    private double Greatest => Math.Max(Math.Abs(From), Math.Abs(To));
+
+    /// <summary>How many digits tell its values apart; four, and more where the range is
+    /// narrow.</summary>
+    public int Digits => To > From
+        ? Math.Clamp(2 + (int)Math.Ceiling(Math.Log10(Greatest / (To - From))), 4, 15)
+        : 4;
+
     /// <summary>One of its values in words: <c>62.4 Ω</c>, <c>35°</c>.</summary>
-    public string Say(double value, int digits = 4) => IsAngle
-        ? EngineeringNumber.Format(value * 180 / Math.PI, "", digits) + "°"
-        : EngineeringNumber.Format(value, Varied.Unit, digits);
+    /// <param name="value">In SI.</param>
+    /// <param name="fewer">By how many digits less than would tell the values apart.</param>
+    public string Say(double value, int fewer = 0) => IsAngle
+        ? EngineeringNumber.Format(value * 180 / Math.PI, "", Digits - fewer) + "°"
+        : EngineeringNumber.Format(value, Varied.Unit, Digits - fewer);
 }
 
 /// <summary>How the values of a range follow each other.</summary>

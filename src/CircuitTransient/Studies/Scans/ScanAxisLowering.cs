@@ -92,7 +92,7 @@ internal sealed class ScanAxisLowering(Circuit circuit, ScannedSyntax scanned, V
         {
             Say(range.From.Span, "an event before t = 0 is before the study", "begin at `0 s`");
         }
-        else if (varied.Kind == VariedKind.EventTime && StudyEnd() is { } end && to > end)
+        else if (varied.Kind == VariedKind.EventTime && StudyEnd(circuit, varied) is { } end && to > end)
         {
             Say(range.To.Span, $"the study ends at {Said(end)}, before the event", "end the range by then");
         }
@@ -112,7 +112,7 @@ internal sealed class ScanAxisLowering(Circuit circuit, ScannedSyntax scanned, V
 
     /// <summary>The end of the study as a delay of the event; null where it is not stated, or where the event
     /// follows another.</summary>
-    private double? StudyEnd() => varied.Event is { } e
+    public static double? StudyEnd(Circuit circuit, VariedValue varied) => varied.Event is { } e
         && ((Switch)circuit.Parts[e.Part]).Events[e.Event].Trigger is AtInstant { Instant.After: null }
         ? circuit.Until
         : null;

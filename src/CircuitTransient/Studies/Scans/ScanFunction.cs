@@ -14,6 +14,7 @@ internal sealed class ScanFunction
     private readonly VariedCircuit varied;
     private readonly ImmutableArray<StudyFigure> figures;
     private readonly CancellationToken cancellation;
+    private readonly LinearRanges linear;
 
     // Derivatives of integrals cost more than all else of a point: they are taken only where they matter.
     private readonly ImmutableArray<bool> isIntegrated;
@@ -22,6 +23,7 @@ internal sealed class ScanFunction
         VariedCircuit varied, ImmutableArray<StudyFigure> figures, CancellationToken cancellation)
     {
         (this.varied, this.figures, this.cancellation) = (varied, figures, cancellation);
+        linear = new LinearRanges(varied.Circuit);
         isIntegrated = [.. figures.Select(f => IsIntegrated(varied.Circuit, f))];
     }
 
@@ -41,8 +43,24 @@ internal sealed class ScanFunction
         var (found, slopes) = axis < 0
             ? (StudySolver.Read(solution, figures, cancellation), [])
             : Derived(solution, values, axis, all, f => !isIntegrated[f]);
-        return new ScanPoint(at, found, slopes, null);
+        return new ScanPoint(at, found, slopes, null) { LinearUsed = linear.Used(solution) };
     }
+
+    /// <summary>The stated linear ranges.</summary>
+    public LinearRanges Linear => linear;
+
+    /// <summary>What is used of a stated linear range as a function of one of the values.</summary>
+    public Func<double, SlopedSample> LinearAlong(int axis, double[] others, int index) => x =>
+    {
+        var values = (double[])others.Clone();
+        values[axis] = x;
+        return new SlopedSample(
+            x, Solve(values).Value is { } solution ? linear.Used(solution)[index] : double.NaN, double.NaN);
+    };
+
+    /// <summary>Whether at a point some part is past the range its value is good for.</summary>
+    public bool IsInDoubt(double[] values) => linear.Count > 0
+        && Solve(values).Value is { } solution && linear.Used(solution).Any(used => used > 1);
 
     /// <summary>When a figure stands at a point; null where there is no instant.</summary>
     public double? Time(double[] values, int figure) => Solve(values).Value is { } solution

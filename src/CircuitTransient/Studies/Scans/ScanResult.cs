@@ -23,6 +23,13 @@ public sealed record ScanResult(
     ScanFamily? Family,
     ScatterResult? Scatter)
 {
+    /// <summary>Of each part with a stated linear range, where the scan keeps within it.</summary>
+    public ImmutableArray<LinearScan> Linear { get; init; } = [];
+
+    /// <summary>The middles of the fields between the points of two scanned values, the second running
+    /// fastest; empty where the points lie so close that none were solved.</summary>
+    public ImmutableArray<ScanPoint> Middles { get; init; } = [];
+
     /// <summary>The points at which the circuit has no unique solution, or is none.</summary>
     public int UnsolvedCount => Points.Count(p => p.Found is null) + (Scatter?.UnsolvedCount ?? 0);
 
@@ -46,7 +53,15 @@ public sealed record ScanResult(
 /// where no slopes were asked for.</param>
 /// <param name="Trouble">Why there is no solution; else null.</param>
 public sealed record ScanPoint(
-    ImmutableArray<double> At, StudyPoint? Found, ImmutableArray<double> Slopes, string? Trouble);
+    ImmutableArray<double> At, StudyPoint? Found, ImmutableArray<double> Slopes, string? Trouble)
+{
+    /// <summary>What is used of each stated linear range, as a fraction; empty where none is stated or there
+    /// is no solution.</summary>
+    public ImmutableArray<double> LinearUsed { get; init; } = [];
+
+    /// <summary>Whether some part is past the range its value is good for.</summary>
+    public bool IsInDoubt => LinearUsed.Any(used => used > 1);
+}
 
 /// <summary>What was found of one figure.</summary>
 /// <param name="Figure">The figure.</param>
@@ -93,7 +108,11 @@ public sealed record FigureScan(
 /// <param name="Time">When it stood, in seconds; null where there is no instant.</param>
 /// <param name="How">How it was found.</param>
 public sealed record ScanPlace(
-    ImmutableArray<double> At, double Value, double? Time, RangeExtremeKind How);
+    ImmutableArray<double> At, double Value, double? Time, RangeExtremeKind How)
+{
+    /// <summary>Whether some part is past the range its value is good for.</summary>
+    public bool IsInDoubt { get; init; }
+}
 
 /// <summary>Where a figure jumps as the scanned value passes.</summary>
 public sealed record ScanJump(double At, double Before, double After);
@@ -105,7 +124,11 @@ public sealed record ScanJump(double At, double Before, double After);
 /// <param name="IsJump">Whether the figure jumps there.</param>
 /// <param name="IsBySlope">Whether exact slopes led there; else values were compared.</param>
 public sealed record ScanBreak(
-    ImmutableArray<double> At, int Axis, bool HoldsBelow, bool IsJump, bool IsBySlope);
+    ImmutableArray<double> At, int Axis, bool HoldsBelow, bool IsJump, bool IsBySlope)
+{
+    /// <summary>Of two scanned values, the number of the point before it on its line.</summary>
+    public int Before { get; init; }
+}
 
 /// <summary>A stretch of a scanned value.</summary>
 public sealed record ScanStretch(double From, double To);

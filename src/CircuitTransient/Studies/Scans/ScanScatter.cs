@@ -14,8 +14,18 @@ public sealed record ScanScatter(VariedValue Varied, int Index, double By)
     /// <summary>The earliest instant, in seconds; not before t = 0.</summary>
     public double From => Math.Max(0, Varied.Nominal - By);
 
-    /// <summary>The latest instant, in seconds.</summary>
-    public double To => Varied.Nominal + By;
+    /// <summary>The latest instant, in seconds; not past the study.</summary>
+    public double To => Math.Min(Until ?? double.PositiveInfinity, Varied.Nominal + By);
+
+    /// <summary>The end of the study as an instant of the event; null where it is not stated, or where the
+    /// event follows another.</summary>
+    public double? Until { get; init; }
+
+    /// <summary>Whether it would begin before t = 0.</summary>
+    public bool IsCutBelow => Varied.Nominal - By < 0;
+
+    /// <summary>Whether it would go past the study.</summary>
+    public bool IsCutAbove => Varied.Nominal + By > Until;
 
     /// <summary>Which event scatters: the one named, or the only event that is scanned.</summary>
     internal static (EventTimeTarget? Event, Diagnostic? Mistake) Target(
@@ -51,6 +61,9 @@ public sealed record ScanScatter(VariedValue Varied, int Index, double By)
         var index = scatter.Switch is not { } name
             ? events.First()
             : events.First(i => varied.Values[i].Name == $"{name} {(scatter.Closes ? "closes" : "opens")}");
-        return new ScanScatter(varied.Values[index], index, scatter.By.Value);
+        return new ScanScatter(varied.Values[index], index, scatter.By.Value)
+        {
+            Until = ScanAxisLowering.StudyEnd(varied.Circuit, varied.Values[index]),
+        };
     }
 }

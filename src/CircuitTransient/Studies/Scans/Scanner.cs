@@ -9,6 +9,8 @@ public sealed class Scanner
 {
     private const int ScatterSteps = 240;
 
+    private const int MostMiddles = 6400;
+
     private const int MostSloped = 1000; // points whose slopes are all taken; of more only where they matter
 
     private static readonly ImmutableArray<double> Fractions =
@@ -52,7 +54,8 @@ public sealed class Scanner
         var written = function.Point(nominal, [.. plan.Axes.Select((_, i) => nominal[i])]);
         var points = plan.Axes.IsEmpty
             ? []
-            : ScanGrid.Solve(ScanGrid.Places(plan.Axes), At, solved, cancellation);
+            : FigureSizes.Cleaned(
+                figures, ScanGrid.Solve(ScanGrid.Places(plan.Axes), At, solved, cancellation));
         var findings = plan.Axes.Length switch
         {
             0 => [],
@@ -60,9 +63,73 @@ public sealed class Scanner
             _ => new MapScan(plan, figures, function, nominal, points).Run(cancellation),
         };
         var scatter = plan.Scatter is { } s ? Scatter(s) : null;
+        findings = Completed(findings, points, 0);
         return new ScanResult(
             plan.Varied.Circuit, plan.Axes, figures, points, written, findings,
-            FamilyScan.Of(plan, points, findings, cancellation), scatter);
+            FamilyScan.Of(plan, points, findings, cancellation), scatter)
+        {
+            Linear = plan.Axes switch
+            {
+                [] => [],
+                [var only] => Linear(only, 0, points),
+                _ => [.. Enumerable.Range(0, function.Linear.Count)
+                    .Select(k => function.Linear.Over(k, points))],
+            },
+            Middles = Middles(),
+        };
+    }
+
+    /// <summary>The middles of the fields between the points of two values, which tell whether a figure
+    /// passes from one to the next without a jump or a kink.</summary>
+    private ImmutableArray<ScanPoint> Middles()
+    {
+        if (plan.Axes is not [var first, var second]
+            || first.Values.Length * second.Values.Length > MostMiddles)
+        {
+            return [];
+        }
+
+        var places = Between(first).SelectMany(_ => Between(second), (a, b) => ImmutableArray.Create(a, b));
+        return ScanGrid.Solve([.. places], At, () => { }, cancellation);
+
+        static IEnumerable<double> Between(ScanAxis axis) =>
+            axis.Values.Zip(axis.Values.Skip(1), (a, b) => (a + b) / 2);
+    }
+
+    private ImmutableArray<LinearScan> Linear(ScanAxis axis, int index, ImmutableArray<ScanPoint> points) =>
+    [
+        .. Enumerable.Range(0, function.Linear.Count).Select(k => function.Linear.Along(
+            k,
+            [.. points.Select((p, i) => new SlopedSample(
+                axis.Values[i], p.Found is null ? double.NaN : p.LinearUsed[k], double.NaN))],
+            function.LinearAlong(index, nominal, k))),
+    ];
+
+    /// <summary>The findings with the doubt at their places, and rounding left of zero as zero.</summary>
+    private ImmutableArray<FigureScan> Completed(
+        ImmutableArray<FigureScan> scans, ImmutableArray<ScanPoint> points, int index)
+    {
+        return [.. scans.Select((scan, f) => scan with
+        {
+            Greatest = Complete(scan.Greatest, f),
+            Least = Complete(scan.Least, f),
+        })];
+
+        ScanPlace? Complete(ScanPlace? place, int figure)
+        {
+            if (place is null)
+            {
+                return null;
+            }
+
+            var values = (double[])nominal.Clone();
+            place.At.CopyTo(values, index);
+            return place with
+            {
+                IsInDoubt = function.IsInDoubt(values),
+                Value = FigureSizes.Clean(place.Value, FigureSizes.Of(figures, points, figure)),
+            };
+        }
     }
 
     private ScanPoint At(ImmutableArray<double> at)
@@ -80,7 +147,8 @@ public sealed class Scanner
         {
             var samples = Samples(axis, points, f);
             found[f] = new AxisScan(
-                plan.Varied.Circuit, figures[f], function.Along(index, nominal, f), Scale(points, f))
+                plan.Varied.Circuit, figures[f], function.Along(index, nominal, f),
+                FigureSizes.Of(figures, points, f))
                 .Run(samples, x => function.Time(Put(index, x), f));
         });
         return ImmutableCollectionsMarshal.AsImmutableArray(found);
@@ -94,19 +162,6 @@ public sealed class Scanner
             ScanFunction.Judged(figures[figure], p.Found, p.Found?.Values[figure]),
             p.Slopes.IsDefaultOrEmpty ? double.NaN : p.Slopes[figure])),
     ];
-
-    /// <summary>The greatest magnitude of a figure over the points; of an extreme that of the other extreme
-    /// too.</summary>
-    private double Scale(ImmutableArray<ScanPoint> points, int figure)
-    {
-        var own = figures[figure];
-        var isExtreme = own.Kind is StudyFigureKind.Maximum or StudyFigureKind.Minimum;
-        var alike = Enumerable.Range(0, figures.Length).Where(f => f == figure
-            || (isExtreme && figures[f].Index == own.Index
-                && figures[f].Kind is StudyFigureKind.Maximum or StudyFigureKind.Minimum)).ToArray();
-        return points.SelectMany(p => alike.Select(f => Math.Abs(p.Found?.Values[f] ?? 0)))
-            .Where(double.IsFinite).DefaultIfEmpty().Max();
-    }
 
     private double[] Put(int index, double value)
     {
@@ -123,13 +178,16 @@ public sealed class Scanner
                 .. Enumerable.Range(0, ScatterSteps + 1)
                     .Select(i => scatter.From + ((scatter.To - scatter.From) * i / ScatterSteps)),
             ]);
-        var points = ScanGrid.Solve(
+        var points = FigureSizes.Cleaned(figures, ScanGrid.Solve(
             ScanGrid.Places([axis]),
-            at => function.Point(Put(scatter.Index, at[0]), at, scatter.Index), solved, cancellation);
-        var scans = Between(axis, scatter.Index, points);
+            at => function.Point(Put(scatter.Index, at[0]), at, scatter.Index), solved, cancellation));
+        var scans = Completed(Between(axis, scatter.Index, points), points, scatter.Index);
         return new ScatterResult(
             scatter, axis, points,
-            [.. scans.Select((scan, f) => Distribute(scan, axis, Samples(axis, points, f)))]);
+            [.. scans.Select((scan, f) => Distribute(scan, axis, Samples(axis, points, f)))])
+        {
+            Linear = Linear(axis, scatter.Index, points),
+        };
     }
 
     private static FigureScatter Distribute(
@@ -143,6 +201,11 @@ public sealed class Scanner
             ? new FigureScatter(scan, null, [], holding)
             : new FigureScatter(
                 scan, distribution.Mean,
-                [.. Fractions.Select(f => new Quantile(f, distribution.Quantile(f)))], holding);
+                [.. Fractions.Select(f => new Quantile(f, Within(distribution.Quantile(f))))], holding);
+
+        // Between the instants the distribution is interpolated, the extremes are found.
+        double Within(double value) => scan is { Least.Value: var low, Greatest.Value: var high } && low <= high
+            ? Math.Clamp(value, low, high)
+            : value;
     }
 }

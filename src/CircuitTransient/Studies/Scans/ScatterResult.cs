@@ -12,6 +12,9 @@ public sealed record ScatterResult(
     ScanScatter Scatter, ScanAxis Axis, ImmutableArray<ScanPoint> Points,
     ImmutableArray<FigureScatter> Figures)
 {
+    /// <summary>Of each part with a stated linear range, where the scatter keeps within it.</summary>
+    public ImmutableArray<LinearScan> Linear { get; init; } = [];
+
     /// <summary>The instants without a unique solution.</summary>
     public int UnsolvedCount => Points.Count(p => p.Found is null);
 }
