@@ -29,8 +29,8 @@ internal static class MapLines
         }
     }
 
-    /// <summary>Pieces of a line of equal value, in the four triangles about the middle of each field; none in
-    /// a field whose middle shows that the value does not pass smoothly through it.</summary>
+    /// <summary>Pieces of a line of equal value, in the four triangles about the middle of each field; none
+    /// in a field whose middle shows that the value does not pass smoothly through it.</summary>
     /// <param name="values">At the points.</param>
     /// <param name="middles">At the middles of the fields; null where they were not solved.</param>
     /// <param name="level">The value of the line.</param>

@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
 using CircuitTransient.Studies.Scans;
 

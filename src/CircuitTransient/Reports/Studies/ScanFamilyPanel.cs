@@ -45,8 +45,8 @@ internal static class ScanFamilyPanel
     }
 
     // From the earliest switching to some time past the latest peak, where that is a small part of the study;
-    // where the family's peaks lie far apart, about that of the worst alone. Of a scanned event all count from
-    // it.
+    // where the family's peaks lie far apart, about that of the worst alone. Of a scanned event all count
+    // from it.
     private static (double From, double To) Window(ScanFamily family)
     {
         var first = family.Members.Max(m => -m.Origin);

@@ -161,7 +161,12 @@ internal sealed class ScanMapPanel
         var middles = Middles();
         var levels = new PlotScale(finite.Min(), finite.Max(), 0, 1).Ticks(Unit, 7).Marks;
         var step = levels.Length > 1 ? levels[1].Value - levels[0].Value : finite.Max() - finite.Min();
-        var taken = WorstLabel() is { } worst ? new List<(double, double, double, double)> { Box(worst) } : [];
+        var taken = new List<(double, double, double, double)>();
+        if (WorstLabel() is { } worst)
+        {
+            taken.Add(Box(worst));
+        }
+
         foreach (var (level, _) in levels)
         {
             var strokes = MapLines.Equal(values, middles, level, step)

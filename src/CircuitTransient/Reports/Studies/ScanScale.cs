@@ -41,7 +41,8 @@ internal sealed record ScanScale(ScanAxis Axis, double Start, double End)
         var ticks = ImmutableArray.CreateBuilder<(double, string)>();
         for (var k = Math.Ceiling((from / step) - 1e-9); k * step <= to + (1e-9 * step); k++)
         {
-            ticks.Add((k * step * Math.PI / 180, ((k * step) + 0.0).ToString("0.##", CultureInfo.InvariantCulture)));
+            var degrees = (k * step) + 0.0; // no -0
+            ticks.Add((degrees * Math.PI / 180, degrees.ToString("0.##", CultureInfo.InvariantCulture)));
         }
 
         return new PlotTicks(ticks.ToImmutable(), "°");

@@ -170,7 +170,8 @@ public static partial class ScanSummary
     private static string Words(ScatterResult scatter)
     {
         var axis = scatter.Axis;
-        var from = axis.Say(axis.From) + (scatter.Scatter.IsCutBelow ? " (cut there: nothing is earlier)" : "");
+        var from = axis.Say(axis.From)
+            + (scatter.Scatter.IsCutBelow ? " (cut there: nothing is earlier)" : "");
         var to = axis.Say(axis.To) + (scatter.Scatter.IsCutAbove ? " (cut there: the study ends)" : "");
         return $"{ScanWords.Subject(axis)} anywhere from {from} to {to}";
     }

@@ -204,8 +204,9 @@ public sealed class Scanner
                 [.. Fractions.Select(f => new Quantile(f, Within(distribution.Quantile(f))))], holding);
 
         // Between the instants the distribution is interpolated, the extremes are found.
-        double Within(double value) => scan is { Least.Value: var low, Greatest.Value: var high } && low <= high
-            ? Math.Clamp(value, low, high)
-            : value;
+        double Within(double value) =>
+            scan is { Least.Value: var low, Greatest.Value: var high } && low <= high
+                ? Math.Clamp(value, low, high)
+                : value;
     }
 }
