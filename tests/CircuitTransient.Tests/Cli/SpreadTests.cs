@@ -138,7 +138,8 @@ public sealed class SpreadTests : IDisposable
 
         var other = Spread("circuit \"Another\"\n" + Divider, "--draws", "0");
         var edited = Spread(
-            "circuit \"Another\"\n" + Divider.Replace("2 ms", "3 ms", StringComparison.Ordinal), "--draws", "0");
+            "circuit \"Another\"\n" + Divider.Replace("2 ms", "3 ms", StringComparison.Ordinal),
+            "--draws", "0");
 
         Assert.Contains("held the results of another circuit, \"One\"; these replace them", other.Error);
         Assert.Equal(ExitStatus.RequirementBroken, other.Status);

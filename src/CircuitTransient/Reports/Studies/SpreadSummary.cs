@@ -166,8 +166,8 @@ public static partial class SpreadSummary
     }
 
     private static string Between(SpreadResult spread, FigureRange range) =>
-        (SpreadWords.IsInside(spread, range, range.Least), SpreadWords.IsInside(spread, range, range.Greatest))
-        switch
+        (SpreadWords.IsInside(spread, range, range.Least),
+            SpreadWords.IsInside(spread, range, range.Greatest)) switch
         {
             (true, true) => "both inside",
             (true, _) => "least inside",

@@ -78,8 +78,8 @@ internal static partial class SpreadWords
                 + $"corners: searched there, not proven.{exact}";
     }
 
-    /// <summary>Whether an extreme stands between the corners and is worse than the worst corner in the digits
-    /// shown, or turns a verdict that the corner does not.</summary>
+    /// <summary>Whether an extreme stands between the corners and is worse than the worst corner in the
+    /// digits shown, or turns a verdict that the corner does not.</summary>
     public static bool IsInside(SpreadResult spread, FigureRange range, ExtremePoint? extreme) =>
         extreme is { IsCorner: false }
         && (extreme.AtWorstCorner is not { } corner
@@ -156,8 +156,8 @@ internal static partial class SpreadWords
     {
         null => "spread.csv has no draws, for none were made",
         { } draws when draws.RowCount < draws.Draws =>
-            $"spread.csv holds the first {draws.RowCount:N0} of the {draws.Draws:N0} draws; every figure told "
-            + "of draws is of all of them",
+            $"spread.csv holds the first {draws.RowCount:N0} of the {draws.Draws:N0} draws; the counts and "
+            + "quantiles are of all of them",
         _ => "spread.csv holds the draws one by one",
     };
 

@@ -1,6 +1,5 @@
 using System.Text.Json;
 using CircuitTransient.Reports.Studies;
-using CircuitTransient.Studies.Spreads;
 using CircuitTransient.Studies.Statistics;
 using CircuitTransient.Tests.Studies.Spreads;
 
@@ -73,7 +72,8 @@ public class SpreadHonestyTests
     [Fact]
     public void Bands_have_both_sides_of_a_jump_and_follow_every_crest_in_the_enlarged_stretch()
     {
-        var study = Spreading.Study(Ringing, draws: 20);
+        var study = Spreading.Study(
+            Ringing, draws: 20, cancellation: TestContext.Current.CancellationToken);
         var nominal = Spreading.Varied(Ringing).Nominal;
         var details = SpreadPlot.Details(nominal);
         var bands = study.Finish(_ => { }, details).Draws!.Envelopes;
