@@ -56,7 +56,7 @@ public class SpreadHonestyTests
         var margin = document.RootElement.GetProperty("figures").EnumerateArray()
             .Single(f => f.GetProperty("kind").GetString() == "margin");
         Assert.Equal(doubt, margin.GetProperty("doubt").GetString());
-        Assert.Empty(new StudySchema(SpreadJson.Schema).Faults(SpreadJson.Write(spread)));
+        Assert.Empty(SpreadReportTests.Schema.Faults(SpreadJson.Write(spread)));
     }
 
     [Fact]
