@@ -14,6 +14,19 @@ public static class NewFile
             ? "there is no such folder"
         : null;
 
+    /// <summary>Says what keeps a file from being made new at a path.</summary>
+    /// <returns>The exit status for it; null where nothing is seen.</returns>
+    public static int? Refusal(string path, Streams streams)
+    {
+        if (Hindrance(path) is not { } hindrance)
+        {
+            return null;
+        }
+
+        streams.Complain($"{path} cannot be written: {hindrance}");
+        return File.Exists(path) ? ExitStatus.Mistake : ExitStatus.FileTrouble;
+    }
+
     /// <summary>Writes the whole file, or says why not.</summary>
     public static bool TryWrite(string path, string text, Streams streams)
     {
