@@ -21,10 +21,9 @@ public sealed class SpreadRun(
     /// <returns>One of <see cref="ExitStatus"/>.</returns>
     public int Run(string file)
     {
-        if (worstFile is not null && NewFile.Hindrance(worstFile) is { } hindrance)
+        if (worstFile is not null && NewFile.Refusal(worstFile, streams) is { } refusal)
         {
-            streams.Complain($"{worstFile} cannot be written: {hindrance}");
-            return ExitStatus.Mistake;
+            return refusal;
         }
 
         var partial = delivery.Folder is { } root
