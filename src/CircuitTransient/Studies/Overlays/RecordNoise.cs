@@ -46,7 +46,7 @@ internal static class RecordNoise
             (before, order) = (now, k);
         }
 
-        // High differences are correlated, a median is less sharp than a mean, the lowest order is chosen. Not
+        // High differences are correlated, a median is less sharp than a mean, the lowest order counts. Not
         // derived: with 1.6/√n ten of 400 seeded records of 700 samples passed three errors.
         var error = 2.2 / Math.Sqrt(Math.Max(1, x.Length));
         return new NoiseEstimate(order == 0 ? 0 : before, error,
