@@ -123,7 +123,8 @@ public static partial class TerminalSummary
         string others = "smaller ones")
     {
         var later = shares.Count(share => share.IsLater);
-        var ordered = shares.Where(share => !share.IsLater).OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
+        var ordered = shares.Where(share => !share.IsLater)
+            .OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
         var shown = ordered.Length <= MostCauses ? ordered : ordered[..(MostCauses - 1)];
         var largest = shown.Select(share => Math.Abs(share.Value ?? 0)).DefaultIfEmpty().Max();
         var bars = new SignedBars(
@@ -133,7 +134,8 @@ public static partial class TerminalSummary
         var rows = shown.Select(share => Row(share, total, unit, bars, without is not null)).ToList();
         if (without is not null)
         {
-            rows.Insert(0, ["", "", "", "", shares.Any(s => s.Own is not null) ? "its own peak" : "", without]);
+            var own = shares.Any(share => share.Own is not null) ? "its own peak" : "";
+            rows.Insert(0, ["", "", "", "", own, without]);
         }
 
         if (shown.Length < ordered.Length)

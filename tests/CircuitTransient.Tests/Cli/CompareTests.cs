@@ -148,7 +148,8 @@ public sealed class CompareTests : IDisposable
         var run = Compare(Plain, less);
 
         Assert.Equal(ExitStatus.Success, run.Status);
-        Assert.StartsWith("One requirement is no longer judged. Of what both judge,", run.Output.Split('\n')[1]);
+        Assert.StartsWith(
+            "One requirement is no longer judged. Of what both judge,", run.Output.Split('\n')[1]);
         Assert.DoesNotContain("different circuits", run.Output);
     }
 }

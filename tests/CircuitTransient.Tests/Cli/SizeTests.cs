@@ -93,7 +93,8 @@ public sealed class SizeTests : IDisposable
         var again = Size("--part", "R2", "--no-files", "--write-sized", sized);
         Assert.Equal(ExitStatus.Mistake, again.Status);
         Assert.Contains("it exists already", again.Error);
-        var nowhere = Size("--part", "R2", "--no-files", "--write-sized", Path.Combine(sized, "nowhere.cause"));
+        var inFile = Path.Combine(sized, "nowhere.cause");
+        var nowhere = Size("--part", "R2", "--no-files", "--write-sized", inFile);
         Assert.Equal(ExitStatus.FileTrouble, nowhere.Status);
     }
 

@@ -167,7 +167,8 @@ public class PeakWordsTests
         // pulse 7 has the most at that instant, yet a later pulse makes nearly the same peak without it
         Assert.True(observed.Pulses.Max(p => p.AtMax) > observed.Max.Value / 2);
         Assert.EndsWith(
-            "No one pulse makes it: without Drv pulse 6 from 250 µs the highest value would still be 65.42 V.",
+            "No one pulse makes it: without Drv pulse 6 from 250 µs the highest value would still be "
+            + "65.42 V.",
             PeakWords.Of(result, observed, atMax: true));
         var summary = TerminalSummary.Write(result, []);
         Assert.Matches(@"10 others, after that +nothing", summary);

@@ -58,8 +58,8 @@ internal static class SizeWords
                 + "model.");
         var rising = result.Proposed.Observations.Where(observed => observed.EndsRising)
             .Select(observed => $"In doubt: {observed.Name} still rises at the study's end, "
-                + $"{ReportWords.Number(result.Problem.File.Until, "s")}: a later `until` may break what holds "
-                + "here.");
+                + $"{ReportWords.Number(result.Problem.File.Until, "s")}: a later `until` may break what "
+                + "holds here.");
         return passed.Concat(rising);
     }
 

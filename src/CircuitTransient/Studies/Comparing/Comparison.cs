@@ -43,7 +43,8 @@ public sealed record Comparison(
     /// <summary>The requirements that are judged no longer.</summary>
     public int RequirementsGone => Requirements.Count(r => r.After is null);
 
-    /// <summary>The ratings that are judged no longer; one of a part that now bears another name is.</summary>
+    /// <summary>The ratings that are judged no longer; a part that now bears another name may still
+    /// be.</summary>
     public int RatingsGone => Ratings.Count(gone => gone.After is null && !Renamed.Any(part =>
         part.Before == gone.Part
         && Ratings.Any(r => r.Before is null && r.Part == part.After && r.Unit == gone.Unit)));

@@ -151,7 +151,8 @@ public sealed class DocumentComparisonTests
         var cautions = DocumentComparison.Compare(before, after).Notes.Single(n => n.Kind == "caution");
 
         Assert.Equal(
-            new WordsChange("C12 stores up to 900.0 mJ (at 1.000 kV)", "C12 stores up to 1.200 J (at 950.0 V)"),
+            new WordsChange(
+                "C12 stores up to 900.0 mJ (at 1.000 kV)", "C12 stores up to 1.200 J (at 950.0 V)"),
             Assert.Single(cautions.Changed));
         Assert.Equal(["R1 burns"], cautions.Gone);
         Assert.Equal(["R2 burns"], cautions.New);
