@@ -80,6 +80,13 @@ public sealed class OverlayRun(OverlayOptions options, Streams streams, Cancella
             return ExitStatus.RequirementBroken;
         }
 
+        if (!result.Agrees)
+        {
+            streams.Complain($"{path} is not written: with these values the model does not explain "
+                + (result.Records.Length == 1 ? "the record" : "every record"));
+            return ExitStatus.RequirementBroken;
+        }
+
         var text = Targets(result.Circuit)!.Then(targets =>
             FittedText.Write(result.Circuit, targets, fit, reading.ReadBeside));
         streams.Report(text.Diagnostics);

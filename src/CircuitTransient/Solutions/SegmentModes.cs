@@ -137,9 +137,10 @@ internal sealed class SegmentModes
             AddForcedTerms(sums, forcing.Exponent, a * factor, s * factor);
         }
 
-        // Beside a sine nothing is at rest: a constant written as one and a swing would only cancel.
-        if (isBeside && block.Size == 1
-            && motion.Forcings.FirstOrDefault(f => f.Exponent.Im.IsZero && IsJoined(b, f, out _)) is { } kept)
+        // What is at rest beside a slow sine is no swing: written as a constant and one, the two would only
+        // cancel.
+        if (isBeside && block.Size == 1 && motion.Forcings.FirstOrDefault(
+            f => (f.Exponent.Im.IsZero || !block.IsReal) && IsJoined(b, f, out _)) is { } kept)
         {
             AddBesideForced(sums, b, kept, row[0] * free[0] * factor);
             return;

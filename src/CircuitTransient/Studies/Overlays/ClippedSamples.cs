@@ -4,11 +4,11 @@ namespace CircuitTransient.Studies.Overlays;
 /// its range leaves them.</summary>
 internal static class ClippedSamples
 {
-    private const int ShortestRun = 3;
-    private const double LongerThanElsewhere = 4; // times the longest run of equal values inside the range
-    private const double SteepCodes = 1.5;
+    private const int ShortestRun = 2; // one sample at an end is what every record has
+    private const int FewestLeft = 16; // to align by, without those that are marked
 
-    /// <summary>Marks what may be clipped; null where nothing is.</summary>
+    /// <summary>Marks what may be clipped, be it ever so little: whether it is, the model decides. Null where
+    /// nothing is.</summary>
     public static bool[]? Candidates(double[] values)
     {
         var (low, high) = (values.Min(), values.Max());
@@ -17,9 +17,8 @@ internal static class ClippedSamples
             return null;
         }
 
-        var step = RecordNoise.StepOf(values);
-        var elsewhere = 1;
-        var atEnds = new List<(int From, int Count)>();
+        var marks = new bool[values.Length];
+        var left = values.Length;
         for (var from = 0; from < values.Length;)
         {
             var end = from + 1;
@@ -28,38 +27,16 @@ internal static class ClippedSamples
                 end++;
             }
 
-            if (values[from] != low && values[from] != high)
+            if ((values[from] == low || values[from] == high) && end - from >= ShortestRun)
             {
-                elsewhere = Math.Max(elsewhere, end - from);
-            }
-            else if (end - from >= ShortestRun)
-            {
-                atEnds.Add((from, end - from));
+                marks.AsSpan(from, end - from).Fill(true);
+                left -= end - from;
             }
 
             from = end;
         }
 
-        atEnds.RemoveAll(run => run.Count < LongerThanElsewhere * elsewhere
-            && !(IsSteep(run.From - 1, run.From) && IsSteep(run.From + run.Count, run.From)));
-        var marked = atEnds.Sum(run => run.Count);
-        if (marked == 0 || 2 * marked > values.Length)
-        {
-            return null;
-        }
-
-        var marks = new bool[values.Length];
-        foreach (var (from, count) in atEnds)
-        {
-            marks.AsSpan(from, count).Fill(true);
-        }
-
-        return marks;
-
-        // A waveform that turns within the range comes and goes by single codes.
-        bool IsSteep(int outside, int inside) =>
-            outside < 0 || outside == values.Length
-            || Math.Abs(values[outside] - values[inside]) > SteepCodes * step;
+        return left < values.Length && left >= FewestLeft ? marks : null;
     }
 
     /// <summary>Those of the marked runs in which the model, aligned without them, goes beyond the range: a

@@ -29,9 +29,11 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
 {
     private const int Trial = 2048; // samples while candidates are tried
     private const int Usual = 20_000; // samples while the offset is refined
-    private const int FewestCompared = 8;
 
     private const double AsGood = 1.1; // in squares
+
+    /// <summary>The fewest samples that are laid over the model.</summary>
+    public const int FewestCompared = 8;
 
     /// <summary>Another offset at which the record fits as well; null where there is none.</summary>
     public double? Other { get; private set; }

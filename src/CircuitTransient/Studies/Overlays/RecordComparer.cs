@@ -57,12 +57,23 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
             return (samples, aligned);
         }
 
-        mistake = Diagnostic.Error(new SourceText(record.Name, ""), new TextSpan(0, 0),
-            "no part of this record lies within the study",
-            $"the study runs from 0 s to {EngineeringNumber.Format(model.Until, "s")}; give the record's "
-                + "time of the study's 0 s with `--offset`");
+        var (message, advice) = WhyNotAligned();
+        mistake = Diagnostic.Error(new SourceText(record.Name, ""), new TextSpan(0, 0), message, advice);
         return null;
     }
+
+    private (string Message, string Advice) WhyNotAligned() => record.Values.Distinct().Take(2).Count() switch
+    {
+        < 2 => ("every sample of this record has the same value, which tells neither offset nor gain",
+            "choose a channel that moves, with `--channel`, or give `--offset` and `--gain`"),
+        _ when record.Values.Length < RecordAlignment.FewestCompared => (
+            $"this record has {record.Values.Length} samples, and {RecordAlignment.FewestCompared} are the "
+                + "fewest that can be laid over the model",
+            "take a longer record, or one with a shorter interval"),
+        _ => ("no part of this record lies within the study",
+            $"the study runs from 0 s to {EngineeringNumber.Format(model.Until, "s")}; give the record's "
+                + "time of the study's 0 s with `--offset`"),
+    };
 
     /// <summary>Everything that is told of the record.</summary>
     public Outcome<RecordComparison> Compare(CancellationToken cancellation)

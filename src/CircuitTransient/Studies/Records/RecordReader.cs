@@ -41,6 +41,12 @@ public static class RecordReader
                 RecordChannel.Choose(head, notation, columns, time.Column, options.Channel).Then(channel =>
                 {
                     Describe(remarks, notation, columns, time, options, channel);
+                    AddIf(remarks, above switch
+                    {
+                        0 => null,
+                        1 => "one line above the table is looked at for interval and unit only",
+                        _ => $"{above} lines above the table are looked at for interval and unit only",
+                    });
                     var table = new RecordRows(read.Value, head, notation, columns, channel).Read();
                     return table.Then(rows => Finish(
                         name, bytes, columns, channel, time, rows, remarks));

@@ -53,6 +53,46 @@ public class OverlayStudyTests
         Assert.Equal(1, compared.Alignment.Gain.Value, 1e-9);
     }
 
+    [Theory]
+    [InlineData(10.1)] // most of the record stands there
+    [InlineData(13)]
+    [InlineData(17)]
+    [InlineData(17.9)] // the first crest only
+    public void However_much_is_clipped_of_a_noisy_record_it_is_left_out(double limit)
+    {
+        var noisy = Sampled(Ring, 600, t => t, v => v, noise: 0.05);
+        var record = noisy with
+        {
+            Values = [.. noisy.Values.Select(v => Math.Min(Math.Round(v / 0.08) * 0.08, limit))],
+        };
+
+        var compared = Compare(Ring, record);
+
+        Assert.True(compared.ClippedCount > 0);
+        Assert.True(compared.IsExplained);
+        Assert.Equal(1, compared.Alignment.Gain.Value, 0.01);
+    }
+
+    [Fact]
+    public void A_flat_record_cannot_be_aligned_and_is_told_why()
+    {
+        var record = Sampled(Ring, 600, t => t, v => 0, noise: 0);
+
+        Assert.Equal(
+            "every sample of this record has the same value, which tells neither offset nor gain",
+            Assert.Single(Outcome(Ring, record).Diagnostics).Message);
+    }
+
+    [Fact]
+    public void A_record_of_two_samples_is_too_short_to_be_aligned()
+    {
+        var record = Sampled(Ring, 2, t => t, v => v, noise: 0.01);
+
+        Assert.Equal(
+            "this record has 2 samples, and 8 are the fewest that can be laid over the model",
+            Assert.Single(Outcome(Ring, record).Diagnostics).Message);
+    }
+
     [Fact]
     public void A_waveform_that_really_stands_at_its_ends_is_not_clipped()
     {
@@ -123,13 +163,17 @@ public class OverlayStudyTests
             estimate.Value - expected, -4 * estimate.StandardError, 4 * estimate.StandardError);
 
     private static RecordComparison Compare(
+        string text, OscilloscopeRecord record, AlignmentGiven? given = null) =>
+        Assert.Single(Outcome(text, record, given).Value!.Records);
+
+    private static Outcome<OverlayResult> Outcome(
         string text, OscilloscopeRecord record, AlignmentGiven? given = null)
     {
         var circuit = Check(text);
         var placed = RecordPlacement.Place(
             circuit, new RecordRequest(record, null, [], null, null, given ?? new AlignmentGiven()),
             NoFile).Value!;
-        return Assert.Single(OverlayStudy.Compare(circuit, [placed]).Value!.Records);
+        return OverlayStudy.Compare(circuit, [placed]);
     }
 
     private static OscilloscopeRecord Sampled(
