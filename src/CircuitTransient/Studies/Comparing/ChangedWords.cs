@@ -4,8 +4,13 @@ using System.Text.RegularExpressions;
 namespace CircuitTransient.Studies.Comparing;
 
 /// <summary>Notes of two documents, paired though their figures differ.</summary>
-internal static partial class ChangedWords
+internal static class ChangedWords
 {
+    // A number that is no part of a name, with its unit: `900.0 µC`, `1.200 mC`.
+    private static readonly Regex Figure = new(
+        @"(?<before>^|[^\w.])[-+−]?\d+(\.\d+)?([eE][-+]?\d+)?( [pnµmkMGT]?[A-ZΩs])?",
+        RegexOptions.NonBacktracking | RegexOptions.ExplicitCapture | RegexOptions.CultureInvariant);
+
     /// <summary>Which notes are gone, new, or the same with other figures.</summary>
     public static NameChange Of(
         string kind, ImmutableArray<string> before, ImmutableArray<string> after)
@@ -21,9 +26,5 @@ internal static partial class ChangedWords
         };
     }
 
-    private static string WithoutFigures(string words) => Figure().Replace(words, "#");
-
-    // A number that is no part of a name, with the prefix of its unit: `900.0 µC`, `1.200 mC`.
-    [GeneratedRegex(@"(?<![\w.])[-+−]?\d+(\.\d+)?([eE][-+]?\d+)?( [pnµmkMGT]?(?=[A-ZΩs]))?")]
-    private static partial Regex Figure();
+    private static string WithoutFigures(string words) => Figure.Replace(words, "${before}#");
 }
