@@ -14,8 +14,9 @@ public static class NewFile
             ? "there is no such folder"
         : null;
 
-    /// <summary>Says what keeps a file from being made new at a path.</summary>
-    /// <returns>The exit status for it; null where nothing is seen.</returns>
+    /// <summary>Says why a file cannot be made new at a path.</summary>
+    /// <returns>The status to end with before any work: a mistake where something stands there, trouble with
+    /// files where it cannot be written; null where nothing is seen.</returns>
     public static int? Refusal(string path, Streams streams)
     {
         if (Hindrance(path) is not { } hindrance)
@@ -32,9 +33,8 @@ public static class NewFile
     {
         try
         {
-            if (Hindrance(path) is { } hindrance)
+            if (Refusal(path, streams) is not null)
             {
-                streams.Complain($"{path} cannot be written: {hindrance}");
                 return false;
             }
 
