@@ -24,7 +24,10 @@ internal sealed class CompareCommand : Command
 
     /// <summary>The command, writing to these streams.</summary>
     public CompareCommand(Streams streams, CancellationToken cancellation)
-        : base("compare", "Compare two results documents: what changed in inputs, figures and verdicts.")
+        : base("compare", "Compare two results documents: what changed in inputs, figures and verdicts. " +
+            "Ends with 1 where a verdict turned for the worse, or is missing because the two are of " +
+            "different circuits; a " +
+            "requirement taken out of the same circuit is said and ends with 0.")
     {
         Add(before);
         Add(after);

@@ -14,7 +14,8 @@ public sealed class CompareRun(
     double within, bool isJson, bool isQuiet, Streams streams, CancellationToken cancellation)
 {
     /// <summary>Compares two files.</summary>
-    /// <returns>Success where no verdict turned for the worse.</returns>
+    /// <returns>Success where no verdict turned for the worse, nor is missing because the circuits are
+    /// different ones.</returns>
     public int Run(string before, string after)
     {
         var (first, firstStatus) = DocumentFile.Read(before, streams);
@@ -39,7 +40,7 @@ public sealed class CompareRun(
         ImmutableArray<Comparison> comparisons =
             [.. pairs.Both.Select(pair => DocumentComparison.Compare(pair.Before, pair.After, within))];
         Say(comparisons, before, after);
-        return comparisons.Any(comparison => comparison.Turned(VerdictTurn.Worse) > 0)
+        return comparisons.Any(comparison => comparison.IsWorse)
             ? ExitStatus.RequirementBroken
             : ExitStatus.Success;
     }

@@ -14,14 +14,27 @@ public static class NewFile
             ? "there is no such folder"
         : null;
 
+    /// <summary>Says why a file cannot be made new at a path.</summary>
+    /// <returns>The status to end with before any work: a mistake where something stands there, trouble with
+    /// files where it cannot be written; null where nothing is seen.</returns>
+    public static int? Refusal(string path, Streams streams)
+    {
+        if (Hindrance(path) is not { } hindrance)
+        {
+            return null;
+        }
+
+        streams.Complain($"{path} cannot be written: {hindrance}");
+        return File.Exists(path) ? ExitStatus.Mistake : ExitStatus.FileTrouble;
+    }
+
     /// <summary>Writes the whole file, or says why not.</summary>
     public static bool TryWrite(string path, string text, Streams streams)
     {
         try
         {
-            if (Hindrance(path) is { } hindrance)
+            if (Refusal(path, streams) is not null)
             {
-                streams.Complain($"{path} cannot be written: {hindrance}");
                 return false;
             }
 

@@ -28,10 +28,9 @@ public sealed class OverlayRun(OverlayOptions options, Streams streams, Cancella
             return Math.Max(ExitStatus.Mistake, reading.Status);
         }
 
-        if (options.Fitted is { } path && NewFile.Hindrance(path) is { } hindrance)
+        if (options.Fitted is { } path && NewFile.Refusal(path, streams) is { } refusal)
         {
-            streams.Complain($"{path} cannot be written: {hindrance}");
-            return ExitStatus.Mistake;
+            return refusal;
         }
 
         using var progress = new Progress(file, streams);

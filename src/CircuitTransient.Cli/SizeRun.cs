@@ -20,10 +20,9 @@ public sealed class SizeRun(
     /// <returns>Success where values were found and confirmed; broken where there are none.</returns>
     public int Run(string file)
     {
-        if (writeSized is { } path && NewFile.Hindrance(path) is { } hindrance)
+        if (writeSized is { } path && NewFile.Refusal(path, streams) is { } refusal)
         {
-            streams.Complain($"{path} cannot be written: {hindrance}");
-            return ExitStatus.FileTrouble;
+            return refusal;
         }
 
         var reading = CircuitFile.Read(file, streams);

@@ -69,7 +69,7 @@ public static class SpreadPartial
             ("it is not the unfinished draws of a spread", Format),
             ("it was left by version {} of this program", version),
             ("it is of another circuit, or the circuit has changed since", sha256),
-            ("it was asked for {}", $"--draws {options.Draws} --seed {options.Seed}"),
+            ("it was asked for {}, which goes on with it", $"--draws {options.Draws} --seed {options.Seed}"),
             ("a file that the circuit reads has changed since", Convert.ToHexStringLower(inputs)),
         ];
     }

@@ -21,10 +21,9 @@ public sealed class SpreadRun(
     /// <returns>One of <see cref="ExitStatus"/>.</returns>
     public int Run(string file)
     {
-        if (worstFile is not null && NewFile.Hindrance(worstFile) is { } hindrance)
+        if (worstFile is not null && NewFile.Refusal(worstFile, streams) is { } refusal)
         {
-            streams.Complain($"{worstFile} cannot be written: {hindrance}");
-            return ExitStatus.Mistake;
+            return refusal;
         }
 
         var partial = delivery.Folder is { } root
@@ -86,14 +85,15 @@ public sealed class SpreadRun(
             File.ReadAllBytes(partial!), study, nominal.Circuit.Source.Sha256, options) is { } refusal)
         {
             progress.Dispose();
-            streams.Complain($"{partial} cannot be taken up: {refusal}");
+            streams.Complain($"{partial} cannot be taken up: {refusal}; without `--resume` the study "
+                + "begins anew and replaces it");
             return ExitStatus.Mistake;
         }
 
         SpreadResult result;
         try
         {
-            result = study.Finish(Show);
+            result = study.Finish(Show, SpreadPlot.Details(nominal));
         }
         catch (OperationCanceledException) when (partial is not null && study.DrawsDone > 0)
         {

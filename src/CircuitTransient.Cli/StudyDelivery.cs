@@ -24,8 +24,15 @@ public sealed class StudyDelivery(StudyOptions options, Streams streams, Cancell
         {
             var folder = OutputFolder.For(root, file);
             var contents = files();
+            var replaced = ReplacedCircuit.In(folder, contents);
             if (OutputFolder.TryWrite(folder, contents, streams, cancellation))
             {
+                if (replaced is not null)
+                {
+                    streams.Error.WriteLine(
+                        $"{folder} held the results of another circuit, \"{replaced}\"; these replace them");
+                }
+
                 written = [.. contents.Select(f => $"{folder}/{f.Name}")];
             }
             else

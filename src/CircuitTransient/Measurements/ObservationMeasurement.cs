@@ -12,6 +12,7 @@ internal sealed class ObservationMeasurement(
     AnalysisOptions options, CancellationToken cancellation)
 {
     private const int MostStretchesOfACause = 200_000;
+    private const double WorthNaming = 0.05; // of the extreme: a pulse that has less does not make it
 
     private readonly TransientSolution solution = curves.Solution;
     private readonly ObservedExtremes extremes = new(infinities);
@@ -35,6 +36,8 @@ internal sealed class ObservationMeasurement(
 
         var (max, min) = extremes.Of(observation.Quantity, total, open);
         var shares = Shares(observation.Quantity, open);
+        ImmutableArray<Contribution> contributions =
+            [.. shares.Select(s => Contribution(observation.Quantity, s, max, min, open))];
         var result = new ObservationResult(
             observation.Name,
             observation.Unit,
@@ -44,12 +47,15 @@ internal sealed class ObservationMeasurement(
             max,
             min,
             EndsRising(total, max, min),
-            [.. shares.Select(s => Contribution(observation.Quantity, s, max, min, open))],
+            contributions,
             new ContributionsAfter(Since(observation.Quantity, max), Since(observation.Quantity, min)),
             [.. options.At.Select(t => Sample(t, total, shares))],
             [],
             [])
         {
+            Pulses = QuantityFactors.IsQuadratic(observation.Quantity)
+                ? []
+                : [.. Pulses(observation.Quantity, contributions, max, min, open)],
             BySwitching = options.By == Breakdown.Switching
                 ? switchings.Of(observation.Quantity, open.From, max, min)
                 : null,
@@ -96,6 +102,31 @@ internal sealed class ObservationMeasurement(
         return new Contribution(
             share.Name, atMax, atMin, ownMax, ownMin,
             Search(without, window, greatest: true), Search(without, window, greatest: false));
+    }
+
+    private IEnumerable<PulseShare> Pulses(
+        Measurand quantity, ImmutableArray<Contribution> contributions, Extreme max, Extreme min,
+        (double From, double To) window)
+    {
+        var pulses = Enumerable.Range(0, solution.Causes.Length)
+            .Where(c => solution.Causes[c].Pulse is not null)
+            .GroupBy(c => (solution.Causes[c].Source, solution.Causes[c].Pulse));
+        foreach (var pulse in pulses)
+        {
+            var atMax = pulse.Sum(c => contributions[c].AtMax);
+            var atMin = pulse.Sum(c => contributions[c].AtMin);
+            if (IsWorth(atMax, max) || IsWorth(atMin, min))
+            {
+                var without = new CurveBuilder(curves).WithoutAll(quantity, [.. pulse])!;
+                yield return new PulseShare(
+                    $"{solution.Circuit.Parts[pulse.Key.Source].Name} {pulse.Key.Pulse}",
+                    max.Value is null ? null : atMax, min.Value is null ? null : atMin,
+                    Search(without, window, greatest: true), Search(without, window, greatest: false));
+            }
+        }
+
+        static bool IsWorth(double? share, Extreme extreme) => extreme.Value is { } value
+            && Math.Abs(share ?? 0) >= WorthNaming * Math.Abs(value) && share is not 0;
     }
 
     /// <summary>The value where an extreme stands; null where that is infinite and so is its share.</summary>

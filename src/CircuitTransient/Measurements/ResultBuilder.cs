@@ -91,6 +91,7 @@ public static class ResultBuilder
         { IsEdge: true } => new(cause.Name, CauseKind.Edge, circuit.Parts[cause.Source].Name)
         {
             Pulse = cause.Pulse is { } pulse ? $"{circuit.Parts[cause.Source].Name} {pulse}" : null,
+            From = cause.Pieces[0].Start,
         },
         { Source: >= 0 } => new(cause.Name, CauseKind.Source),
         _ => new(cause.Name, CauseKind.Stored),

@@ -89,6 +89,9 @@ public sealed record CauseName(string Name, CauseKind Kind, string? Of = null)
     /// <summary>The pulse whose rise or fall it is, <c>Feed pulse 3 from 131 µs</c>; null for what is
     /// none.</summary>
     public string? Pulse { get; init; }
+
+    /// <summary>When it begins, in seconds; null where it has been on from the start.</summary>
+    public double? From { get; init; }
 }
 
 /// <summary>A value and when it stood; the value is null where it is infinite or undetermined.</summary>
@@ -164,6 +167,10 @@ public sealed record ObservationResult(
     ImmutableArray<double> Total,
     ImmutableArray<ImmutableArray<double>> ByCause)
 {
+    /// <summary>The pulses that have a share worth naming in an extreme, where sources are broken down by
+    /// edge; none of a product.</summary>
+    public ImmutableArray<PulseShare> Pulses { get; init; } = [];
+
     /// <summary>What each switching has done to the extremes; null where not asked for.</summary>
     public SwitchingBreakdowns? BySwitching { get; init; }
 
@@ -202,6 +209,15 @@ public sealed record Contribution(
     string Cause, double? AtMax, double? AtMin, TimedValue? OwnMax, TimedValue? OwnMin,
     TimedValue? MaxWithout,
     TimedValue? MinWithout);
+
+/// <summary>What the edges of one pulse have together in an observation.</summary>
+/// <param name="Pulse">As the causes name it: <c>Feed pulse 3 from 131 µs</c>.</param>
+/// <param name="AtMax">Its value at the total's maximum; null where that is infinite.</param>
+/// <param name="AtMin">Its value at the total's minimum.</param>
+/// <param name="MaxWithout">Greatest value of the total without the pulse.</param>
+/// <param name="MinWithout">Least value of the total without the pulse.</param>
+public sealed record PulseShare(
+    string Pulse, double? AtMax, double? AtMin, TimedValue MaxWithout, TimedValue MinWithout);
 
 /// <summary>The breakdown since an event, at both extremes; null where the event comes after the
 /// extreme.</summary>
@@ -278,19 +294,3 @@ public sealed record Notice(int Line, string Text)
     public static Notice Of(Diagnostic diagnostic) =>
         new(diagnostic.Source.LineOf(diagnostic.Span.Start), diagnostic.Message) { Diagnostic = diagnostic };
 }
-
-/// <summary>How grave a caution is.</summary>
-public enum CautionSeverity
-{
-    /// <summary>Worth knowing.</summary>
-    Note,
-
-    /// <summary>May do damage.</summary>
-    Warning,
-
-    /// <summary>May kill or burn.</summary>
-    Danger,
-}
-
-/// <summary>A caution with its figure in words and the standard to verify it in.</summary>
-public sealed record Caution(CautionSeverity Severity, string Text, string Standard);

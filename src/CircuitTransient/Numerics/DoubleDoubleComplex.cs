@@ -114,6 +114,10 @@ public readonly record struct DoubleDoubleComplex(DoubleDouble Re, DoubleDouble 
         return new(re, z.Im.Hi < 0 ? -im : im);
     }
 
+    /// <summary>Both parts; what a record would write of itself has no end, its conjugate being another
+    /// one.</summary>
+    public override string ToString() => $"({Re}) + ({Im}) i";
+
     /// <summary>z · 2ⁿ.</summary>
     public DoubleDoubleComplex ScaleByPowerOfTwo(int n) =>
         new(DoubleDouble.ScaleByPowerOfTwo(Re, n), DoubleDouble.ScaleByPowerOfTwo(Im, n));

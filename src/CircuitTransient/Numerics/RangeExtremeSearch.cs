@@ -47,11 +47,11 @@ public sealed class RangeExtremeSearch
     public static RangeExtreme? Least(
         ImmutableArray<SlopedSample> given, Func<double, SlopedSample> function)
     {
-        var found = Greatest([.. given.Select(s => s.Negated)], x => function(x).Negated);
+        var found = Greatest([.. given.Select(s => s.Negate())], x => function(x).Negate());
         return found is null ? null : found with
         {
-            At = found.At.Negated,
-            Looked = [.. found.Looked.Select(s => s.Negated)],
+            At = found.At.Negate(),
+            Looked = [.. found.Looked.Select(s => s.Negate())],
         };
     }
 

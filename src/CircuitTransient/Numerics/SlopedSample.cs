@@ -12,7 +12,7 @@ public readonly record struct SlopedSample(double X, double Y, double Slope)
     public bool HasSlope => double.IsFinite(Slope);
 
     /// <summary>The sample of the function with its sign turned.</summary>
-    public SlopedSample Negated => new(X, -Y, -Slope);
+    public SlopedSample Negate() => new(X, -Y, -Slope);
 
     /// <summary>The cubic through two samples with their slopes (Hermite), at a place between.</summary>
     public static double Cubic(in SlopedSample left, in SlopedSample right, double x)

@@ -9,6 +9,8 @@ namespace CircuitTransient.Reports;
 /// <c>breakdown.csv</c>: a row for each switching, or each mode and cause, at each extreme.</summary>
 public static class BreakdownCsv
 {
+    private const double Rounding = 1e-17; // of the extreme: less is no digit of it
+
     /// <summary>The file's text; null where neither breakdown was asked for.</summary>
     public static string? Write(TransientResult result)
     {
@@ -79,10 +81,14 @@ public static class BreakdownCsv
         string?[] cells =
         [
             observed.Name, observed.Unit, which, Figure(extreme.Time), by, name, cause,
-            value is { } number ? Figure(number) : "",
+            value is { } number ? Figure(Unless(number, extreme)) : "",
         ];
         text.AppendJoin(',', cells.Select(Quoted)).Append("\r\n");
     }
+
+    /// <summary>Nothing where a value lies below what rounding leaves of the extreme.</summary>
+    private static double Unless(double value, Extreme extreme) =>
+        Math.Abs(value) <= Rounding * Math.Abs(extreme.Value ?? 0) ? 0 : value;
 
     private static string Figure(double value) => (value + 0.0).ToString("R", CultureInfo.InvariantCulture);
 

@@ -20,6 +20,11 @@ public static partial class JsonReport
         WriteExtreme(json, "min", observation.Min);
         json.WriteBoolean("endsRising", observation.EndsRising);
         WriteArray(json, "contributions", observation.Contributions, WriteContribution);
+        if (!observation.Pulses.IsEmpty)
+        {
+            WriteArray(json, "pulses", observation.Pulses, WritePulse);
+        }
+
         if (result.IsAfterAsked && observation.After is { } after)
         {
             json.WriteStartObject("contributionsAfter");
@@ -59,6 +64,17 @@ public static partial class JsonReport
         WriteTimed(json, "ownMin", contribution.OwnMin);
         WriteTimed(json, "maxWithout", contribution.MaxWithout);
         WriteTimed(json, "minWithout", contribution.MinWithout);
+        json.WriteEndObject();
+    }
+
+    private static void WritePulse(Utf8JsonWriter json, PulseShare pulse)
+    {
+        json.WriteStartObject();
+        json.WriteString("pulse", pulse.Pulse);
+        WriteNumber(json, "atMax", pulse.AtMax);
+        WriteNumber(json, "atMin", pulse.AtMin);
+        WriteTimed(json, "maxWithout", pulse.MaxWithout);
+        WriteTimed(json, "minWithout", pulse.MinWithout);
         json.WriteEndObject();
     }
 

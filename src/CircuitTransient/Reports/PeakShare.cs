@@ -8,8 +8,8 @@ namespace CircuitTransient.Reports;
 /// <param name="Name">The cause's name, or the pulse's.</param>
 /// <param name="Value">Its value at the extreme.</param>
 /// <param name="Kind">What it is; null for the term of a product that belongs to no single cause.</param>
-/// <param name="Without">The extreme without it; null for a pulse and for what
-/// belongs to no single cause.</param>
+/// <param name="Without">The extreme without it over the whole study; null for a pulse that has little in it
+/// and for what belongs to no single cause.</param>
 internal sealed record PeakShare(string Name, double Value, PeakShareKind Kind, double? Without)
 {
     /// <summary>Whether an observation is a power, an energy or a Joule integral: part of it belongs to no
@@ -41,10 +41,13 @@ internal sealed record PeakShare(string Name, double Value, PeakShareKind Kind, 
         {
             var value = (atMax ? contribution.AtMax : contribution.AtMin) ?? 0;
             var without = (atMax ? contribution.MaxWithout : contribution.MinWithout)?.Value;
+            var pulsed = observed.Pulses.FirstOrDefault(p => p.Pulse == cause?.Pulse);
             return cause switch
             {
                 null => new("what no cause has alone", value, PeakShareKind.Joint, null),
-                { Pulse: { } pulse } c => new(isProduct ? c.Name : pulse, value, PeakShareKind.Pulse, null),
+                { Pulse: { } pulse } c => new(
+                    isProduct ? c.Name : pulse, value, PeakShareKind.Pulse,
+                    (atMax ? pulsed?.MaxWithout : pulsed?.MinWithout)?.Value),
                 { Kind: CauseKind.Stored } c => new(c.Name, value, PeakShareKind.Stored, without),
                 { Kind: CauseKind.Edge } c when c.Name != c.Of =>
                     new(c.Name, value, PeakShareKind.Edge, without),

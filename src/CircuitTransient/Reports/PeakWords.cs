@@ -38,7 +38,7 @@ public static class PeakWords
         var since = atMax ? observed.After?.AtMax : observed.After?.AtMin;
         var extreme = new Extremum(total, observed.Unit, atMax);
         var change = Driven(since, observed.Unit) ?? First(shares, extreme)
-            ?? (isProduct ? null : FirstPulse(shares, extreme))
+            ?? NoOnePulse(shares, extreme)
             ?? Damp(shares, swings, total, observed.Unit) ?? HeldDown(shares, extreme);
         return change is null ? $"{made}." : $"{made}. {change}.";
     }
@@ -132,7 +132,7 @@ public static class PeakWords
             + $"less between them takes {Number(perUnit, unit)} off";
     }
 
-    /// <summary>The stored quantity or edge without which the extreme is least.</summary>
+    /// <summary>The stored quantity, edge or pulse without which the extreme is least.</summary>
     private static string? First(ImmutableArray<PeakShare> shares, Extremum extreme)
     {
         var first = shares.Where(s => s.Without is not null && IsChangeable(s))
@@ -142,20 +142,33 @@ public static class PeakWords
             return null;
         }
 
-        var among = shares.Any(s => s.Kind is PeakShareKind.Edge or PeakShareKind.Pulse)
-            ? "Of the edges and of what was stored"
-            : "Of what was stored";
-        return $"{among}, change {first.Name} first: without it the {extreme.Words} would be "
+        return $"{Among(shares)}, change {first.Name} first: without it the {extreme.Words} would be "
             + Number(first.Without.Value, extreme.Unit);
     }
 
-    /// <summary>The pulse that has most in it.</summary>
-    private static string? FirstPulse(ImmutableArray<PeakShare> shares, Extremum extreme)
+    private static string Among(ImmutableArray<PeakShare> shares)
     {
-        var pulse = shares.Where(s => s.Kind == PeakShareKind.Pulse).MaxBy(s => s.Value / extreme.Value);
-        return shares.Length > 1 && pulse is not null && pulse.Value / extreme.Value >= WorthNaming
-            ? $"Of the pulses, change {pulse.Name} first: without it "
-                + $"{Number(extreme.Value - pulse.Value, extreme.Unit)} would be left at that instant"
+        (PeakShareKind Kind, string Words)[] kinds =
+        [
+            (PeakShareKind.Pulse, "of the pulses"),
+            (PeakShareKind.Edge, "of the edges"),
+            (PeakShareKind.Stored, "of what was stored"),
+        ];
+        var words = string.Join(" and ", kinds
+            .Where(kind => shares.Any(s => s.Kind == kind.Kind && s.Without is not null))
+            .Select(kind => kind.Words));
+        return $"O{words[1..]}";
+    }
+
+    /// <summary>Where several pulses make an extreme, and without any one of them it is hardly
+    /// less.</summary>
+    private static string? NoOnePulse(ImmutableArray<PeakShare> shares, Extremum extreme)
+    {
+        var best = shares.Where(s => s is { Kind: PeakShareKind.Pulse, Without: not null })
+            .MinBy(s => extreme.Excess(s.Without!.Value));
+        return shares.Length > 1 && best is not null
+            ? $"No one pulse makes it: without {best.Name} the {extreme.Words} would still be "
+                + Number(best.Without!.Value, extreme.Unit)
             : null;
     }
 
@@ -186,7 +199,7 @@ public static class PeakWords
     }
 
     private static bool IsChangeable(PeakShare share) =>
-        share.Kind is PeakShareKind.Stored or PeakShareKind.Edge;
+        share.Kind is PeakShareKind.Stored or PeakShareKind.Edge or PeakShareKind.Pulse;
 
     private sealed record Extremum(double Value, string Unit, bool IsMax)
     {

@@ -31,8 +31,10 @@ public static partial class TerminalSummary
         }
 
         text.Paragraph($"From the start: {FromStart(result)}, carried through every switching");
-        WriteShares(text, SharesFromStart(worst), total, unit, worst.AtMax ? "max without" : "min without",
+        var without = worst.AtMax ? "max without" : "min without";
+        WriteShares(text, SharesFromStart(result, worst), total, unit, without,
             result.Causes.Any(cause => cause.Kind == CauseKind.Edge) ? "others together" : "smaller ones");
+        WritePulses(text, worst, total, without);
         if (DecidedByAnswer(result) is { } decided)
         {
             text.Paragraph($"instants of the full answer kept for {decided}", hanging: 2);
@@ -49,6 +51,24 @@ public static partial class TerminalSummary
             text.Heading(HeadingOf(result, other));
             WriteSince(text, result, other);
         }
+    }
+
+    private static void WritePulses(SummaryText text, WorstObservation worst, double total, string without)
+    {
+        if (worst.Observation.Pulses.IsEmpty)
+        {
+            return;
+        }
+
+        text.Paragraph("Pulses, their edges together:");
+        WriteShares(
+            text,
+            [
+                .. worst.Observation.Pulses.Select(p => new Share(
+                    p.Pulse, worst.AtMax ? p.AtMax : p.AtMin, null,
+                    worst.AtMax ? p.MaxWithout : p.MinWithout)),
+            ],
+            total, worst.Observation.Unit, without, "more");
     }
 
     private static string HeadingOf(TransientResult result, WorstObservation worst)
@@ -84,13 +104,14 @@ public static partial class TerminalSummary
         return $"{sources}, and what was stored at t = 0{apart}";
     }
 
-    private static ImmutableArray<Share> SharesFromStart(WorstObservation worst) =>
+    private static ImmutableArray<Share> SharesFromStart(TransientResult result, WorstObservation worst) =>
         [
-            .. worst.Observation.Contributions.Select(c => new Share(
+            .. worst.Observation.Contributions.Select((c, i) => new Share(
                 c.Cause,
                 worst.Share(c),
                 Math.Abs(c.OwnMin?.Value ?? 0) > Math.Abs(c.OwnMax?.Value ?? 0) ? c.OwnMin : c.OwnMax,
-                worst.AtMax ? c.MaxWithout : c.MinWithout)),
+                worst.AtMax ? c.MaxWithout : c.MinWithout,
+                i < result.Causes.Length && result.Causes[i].From > worst.Extreme.Time)),
         ];
 
     private static void WriteShares(
@@ -101,7 +122,9 @@ public static partial class TerminalSummary
         string? without,
         string others = "smaller ones")
     {
-        var ordered = shares.OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
+        var later = shares.Count(share => share.IsLater);
+        var ordered = shares.Where(share => !share.IsLater)
+            .OrderByDescending(share => Math.Abs(share.Value ?? 0)).ToArray();
         var shown = ordered.Length <= MostCauses ? ordered : ordered[..(MostCauses - 1)];
         var largest = shown.Select(share => Math.Abs(share.Value ?? 0)).DefaultIfEmpty().Max();
         var bars = new SignedBars(
@@ -111,7 +134,8 @@ public static partial class TerminalSummary
         var rows = shown.Select(share => Row(share, total, unit, bars, without is not null)).ToList();
         if (without is not null)
         {
-            rows.Insert(0, ["", "", "", "", "its own peak", without]);
+            var own = shares.Any(share => share.Own is not null) ? "its own peak" : "";
+            rows.Insert(0, ["", "", "", "", own, without]);
         }
 
         if (shown.Length < ordered.Length)
@@ -120,6 +144,12 @@ public static partial class TerminalSummary
             var sum = rest.Sum(share => share.Value ?? 0);
             var count = $"{rest.Length} {others}";
             rows.Add([count, Signed(sum, unit, largest), PercentOf(sum, total), "", "", ""]);
+        }
+
+        if (later > 0)
+        {
+            rows.Add([later == 1 ? "one other, after that instant" : $"{later} others, after that instant",
+                "nothing", "", "", "", ""]);
         }
 
         text.Table([Prose, Right, Right, Left, Right, Right], rows, indent: 4);
@@ -174,7 +204,8 @@ public static partial class TerminalSummary
         string Cause,
         double? Value,
         TimedValue? Own = null,
-        TimedValue? Without = null);
+        TimedValue? Without = null,
+        bool IsLater = false);
 
     /// <summary>Bars to both sides of a common zero, in half cells.</summary>
     private sealed record SignedBars(double Largest, bool HasNegative, bool HasPositive)

@@ -115,4 +115,41 @@ public sealed class CompareTests : IDisposable
 
     private CommandLineAnswer Compare(string before, string after, params string[] more) => commandLine.Run(
         ["compare", commandLine.Circuit("a.json", before), commandLine.Circuit("b.json", after), .. more]);
+
+    [Fact]
+    public void Documents_of_different_circuits_are_said_to_be_and_end_with_1_where_a_verdict_is_gone()
+    {
+        var other = SampleDocuments.Json(
+            """
+            source   Supply at in : 1 V
+            resistor Rload at in : 1 Ω
+            observe current through Rload
+            until 1 ms
+            """, "other.cause");
+
+        var run = Compare(Plain, other);
+
+        Assert.Equal(ExitStatus.RequirementBroken, run.Status);
+        var lines = run.Output.Split('\n');
+        Assert.StartsWith(
+            "2 requirements and ratings are no longer judged. The two documents are of different circuits,",
+            lines[1]);
+        Assert.StartsWith("rc.cause and other.cause. Of what both judge, no verdict turned.", lines[2]);
+        Assert.Empty(Schema.Faults(Compare(Plain, other, "--json").Output));
+        Assert.Equal(ExitStatus.Success, Compare(other, Plain).Status);
+    }
+
+    [Fact]
+    public void A_requirement_taken_out_of_the_same_circuit_is_said_first_and_ends_with_0()
+    {
+        var less = SampleDocuments.Json(
+            SampleDocuments.Text().Replace("require voltage of b at most 9 V", ""));
+
+        var run = Compare(Plain, less);
+
+        Assert.Equal(ExitStatus.Success, run.Status);
+        Assert.StartsWith(
+            "One requirement is no longer judged. Of what both judge,", run.Output.Split('\n')[1]);
+        Assert.DoesNotContain("different circuits", run.Output);
+    }
 }

@@ -91,8 +91,39 @@ public sealed class SizeTests : IDisposable
             File.ReadAllText(sized));
         Assert.Equal(ExitStatus.Success, commandLine.Run("solve", sized, "--no-files", "--quiet").Status);
         var again = Size("--part", "R2", "--no-files", "--write-sized", sized);
-        Assert.Equal(ExitStatus.FileTrouble, again.Status);
+        Assert.Equal(ExitStatus.Mistake, again.Status);
         Assert.Contains("it exists already", again.Error);
+        var inFile = Path.Combine(sized, "nowhere.cause");
+        var nowhere = Size("--part", "R2", "--no-files", "--write-sized", inFile);
+        Assert.Equal(ExitStatus.FileTrouble, nowhere.Status);
+    }
+
+    [Fact]
+    public void What_lies_on_its_bound_is_said_to_and_doubts_stand_beneath_the_verdict()
+    {
+        // 5 V of the divider is the bound itself; C1 is still charging at the end.
+        var circuit = commandLine.Circuit("late.cause",
+            """
+            source    Feed at s : 10 V
+            resistor  R1 from s to a : 1 kΩ
+            resistor  R2 from a to ground : 1 kΩ
+            capacitor C1 from s to ground : 1 nF, linear up to 8 V
+            source    Slow at r : step of 10 V
+            resistor  R3 from r to b : 1 kΩ
+            capacitor C2 from b to ground : 1 µF
+            require voltage of a at most 5 V
+            observe voltage of b
+            until 1 ms
+            """);
+        var run = commandLine.Run("size", circuit, "--part", "R2", "--greatest", "R2", "--no-files");
+
+        Assert.Equal(ExitStatus.Success, run.Status);
+        var lines = run.Output.Split('\n');
+        Assert.StartsWith("R2 1 kΩ: everything holds", lines[1]);
+        Assert.StartsWith("In doubt: C1 is linear up to 8.000 V but reaches 10.00 V", lines[2]);
+        Assert.Contains(lines[3..6], line =>
+            line.StartsWith("In doubt: voltage of b still rises at the study's end, 1.000 ms"));
+        Assert.Contains("on the bound  voltage of a at most 5 V", run.Output);
     }
 
     [Theory]

@@ -122,6 +122,31 @@ public sealed class SpreadTests : IDisposable
     }
 
     [Fact]
+    public void A_worst_case_that_goes_into_no_folder_is_trouble_with_a_file()
+    {
+        var run = Spread(Divider, "--write-worst", Path.Combine(commandLine.Folder, "none/worst.cause"));
+
+        Assert.Equal((ExitStatus.FileTrouble, ""), (run.Status, run.Output));
+        Assert.Contains("cannot be written: there is no such folder", run.Error);
+        Assert.Empty(commandLine.Written);
+    }
+
+    [Fact]
+    public void Results_of_a_circuit_with_another_title_are_replaced_with_a_word()
+    {
+        Spread("circuit \"One\"\n" + Divider, "--draws", "0");
+
+        var other = Spread("circuit \"Another\"\n" + Divider, "--draws", "0");
+        var edited = Spread(
+            "circuit \"Another\"\n" + Divider.Replace("2 ms", "3 ms", StringComparison.Ordinal),
+            "--draws", "0");
+
+        Assert.Contains("held the results of another circuit, \"One\"; these replace them", other.Error);
+        Assert.Equal(ExitStatus.RequirementBroken, other.Status);
+        Assert.Equal("", edited.Error);
+    }
+
+    [Fact]
     public void A_tolerance_on_top_of_a_named_value_is_written_as_what_both_come_to()
     {
         var worst = Path.Combine(commandLine.Folder, "worst.cause");
@@ -175,7 +200,7 @@ public sealed class SpreadTests : IDisposable
 
     [Theory]
     [InlineData("±10 %", "±9 %", "1500", "it is of another circuit, or the circuit has changed since")]
-    [InlineData("±10 %", "±10 %", "1600", "it was asked for --draws 1500 --seed 1")]
+    [InlineData("±10 %", "±10 %", "1600", "it was asked for --draws 1500 --seed 1, which goes on with it")]
     public void Unfinished_draws_of_another_study_are_refused(
         string before, string after, string draws, string reason)
     {
@@ -186,6 +211,7 @@ public sealed class SpreadTests : IDisposable
 
         Assert.Equal((ExitStatus.Mistake, ""), (run.Status, run.Output));
         Assert.Contains($"spread.partial cannot be taken up: {reason}", run.Error);
+        Assert.Contains("without `--resume` the study begins anew", run.Error);
     }
 
     [Fact]

@@ -26,5 +26,24 @@ public class PublicTypeTests
         Assert.Empty(types.Select(DocumentationName).Where(name => !documented.Contains(name)).ToList());
     }
 
+    /// <summary>A record writes all its properties: one that makes another of its own kind would be written
+    /// without end.</summary>
+    [Theory]
+    [MemberData(nameof(Assemblies))]
+    public void No_record_is_written_without_end(Assembly assembly)
+    {
+        const BindingFlags own = BindingFlags.Instance | BindingFlags.Public | BindingFlags.NonPublic
+            | BindingFlags.DeclaredOnly;
+        var endless = assembly.GetTypes()
+            .Where(type => type.GetMethod("PrintMembers", own) is not null
+                && type.GetMethod("ToString", own, [])?
+                    .IsDefined(typeof(System.Runtime.CompilerServices.CompilerGeneratedAttribute)) == true)
+            .SelectMany(type => type.GetProperties(BindingFlags.Instance | BindingFlags.Public))
+            .Where(property => property.PropertyType == property.DeclaringType
+                && property.DeclaringType!.GetField($"<{property.Name}>k__BackingField", own) is null);
+
+        Assert.Empty(endless.Select(property => $"{property.DeclaringType}.{property.Name}"));
+    }
+
     private static string DocumentationName(Type type) => $"T:{type.FullName!.Replace('+', '.')}";
 }

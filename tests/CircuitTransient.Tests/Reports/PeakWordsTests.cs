@@ -132,6 +132,68 @@ public class PeakWordsTests
         }
     }
 
+    private static string Train(int count, string until = "600 µs") =>
+        $"""
+        source    Drv at a : pulse train of 24 V width 20 µs every 50 µs count {count}
+        resistor  R from a to b : 3 Ω
+        inductor  L from b to c : 100 µH
+        capacitor C at c : 680 nF
+        observe voltage of c
+        until {until}
+        """;
+
+    [Fact]
+    public void Without_a_pulse_the_peak_over_the_whole_study_is_told()
+    {
+        var result = SolvedText.By(Breakdown.Edge, Train(2, "90 µs")).Result;
+        var observed = result.Observations[0];
+        // the same circuit without its second pulse
+        var alone = SolvedText.Of(Train(1, "90 µs")).Max("voltage of c");
+
+        Assert.Equal(alone, observed.Pulses[^1].MaxWithout.Value!.Value, 1e-9);
+        var least = observed.Pulses.MinBy(p => p.MaxWithout.Value)!;
+        Assert.EndsWith(
+            $"Of the pulses, change {least.Pulse} first: without it the highest value would be "
+            + $"{EngineeringNumber.Format(least.MaxWithout.Value!.Value, "V")}.",
+            PeakWords.Of(result, observed, atMax: true));
+    }
+
+    [Fact]
+    public void Where_no_one_pulse_makes_the_peak_none_is_advised_and_later_edges_are_no_rows()
+    {
+        var result = SolvedText.By(Breakdown.Edge, Train(12)).Result;
+        var observed = result.Observations[0];
+
+        // pulse 7 has the most at that instant, yet a later pulse makes nearly the same peak without it
+        Assert.True(observed.Pulses.Max(p => p.AtMax) > observed.Max.Value / 2);
+        Assert.EndsWith(
+            "No one pulse makes it: without Drv pulse 6 from 250 µs the highest value would still be "
+            + "65.42 V.",
+            PeakWords.Of(result, observed, atMax: true));
+        var summary = TerminalSummary.Write(result, []);
+        Assert.Matches(@"10 others, after that +nothing", summary);
+        Assert.Matches(@"Drv pulse 6 from 250 µs +\+17\.15 V +26\.2 % +█+▌? +65\.42 V", summary);
+    }
+
+    [Fact]
+    public void Shares_below_rounding_are_zero_in_the_breakdown_file()
+    {
+        // the charge has died away by e^(−400) when the feed rises
+        var result = SolvedText.By(
+            Breakdown.Mode,
+            """
+            source    Feed at a : step of 10 V at 400 µs
+            resistor  R from a to b : 1 Ω
+            capacitor C at b : 1 µF, charged to 1 V
+            observe voltage of b from 450 µs
+            until 500 µs
+            """).Result;
+
+        var file = BreakdownCsv.Write(result)!;
+        Assert.Contains("C initial charge", file);
+        Assert.DoesNotMatch(@"E-\d{3}", file);
+    }
+
     [Fact]
     public void The_two_edges_of_a_pulse_are_no_pulse_in_a_product()
     {

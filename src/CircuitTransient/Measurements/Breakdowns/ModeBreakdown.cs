@@ -4,7 +4,7 @@ using System.Numerics;
 namespace CircuitTransient.Measurements.Breakdowns;
 
 /// <summary>An extreme's value taken apart by causes and by the modes of the network in the interval it
-/// stands in: natural ones, and the sources' own courses.</summary>
+/// stands in: natural ones, and those the sources impose.</summary>
 /// <param name="Modes">The modes that have a part in it, the largest first.</param>
 /// <param name="Causes">What each cause has in each of them.</param>
 /// <param name="Joint">What is left where the quantity is a product: it belongs to no single cause and mode;
@@ -16,8 +16,8 @@ public sealed record ModeBreakdown(
 
 /// <summary>A mode by name, with what it has in the value.</summary>
 /// <param name="Name">By natural frequency or time constant and the parts that hold its energy; a forced one
-/// by its source's course.</param>
-/// <param name="IsForced">Whether it is a course of the sources rather than a motion of the network.</param>
+/// by its source's exponent.</param>
+/// <param name="IsForced">Whether the sources impose it, rather than a motion of the network.</param>
 /// <param name="IsDriven">Whether a natural one holds the part of the sources that follows it so closely,
 /// over the interval, that the two cannot be told apart.</param>
 /// <param name="Rate">Its pole or the exponent of the sources, in 1/s and rad/s; of poles that are not parted

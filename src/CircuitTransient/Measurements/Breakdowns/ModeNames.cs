@@ -25,7 +25,7 @@ internal static class ModeNames
         return $"{rate}{times}: {Holders(parts)}";
     }
 
-    /// <summary>A course of the sources by its exponent.</summary>
+    /// <summary>What the sources impose, by its exponent.</summary>
     public static string Forced(Complex exponent)
     {
         if (exponent == Complex.Zero)

@@ -42,6 +42,8 @@ public static class CompareJson
         {
             json.WriteNumber("worse", comparison.Turned(VerdictTurn.Worse));
             json.WriteNumber("better", comparison.Turned(VerdictTurn.Better));
+            json.WriteNumber("gone", comparison.RequirementsGone + comparison.RatingsGone);
+            json.WriteBoolean("differentCircuits", comparison.IsOfDifferentCircuits);
             json.WriteBoolean("same", comparison.IsSame);
         });
         json.Objects("inputs", comparison.Inputs, input =>
@@ -109,6 +111,11 @@ public static class CompareJson
         json.WriteString("kind", change.Kind);
         json.Texts("gone", change.Gone);
         json.Texts("new", change.New);
+        json.Objects("changed", change.Changed, words =>
+        {
+            json.WriteString("before", words.Before);
+            json.WriteString("after", words.After);
+        });
     }
 
     private static void WriteRequirement(Utf8JsonWriter json, RequirementChange change)

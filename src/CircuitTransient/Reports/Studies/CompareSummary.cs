@@ -42,45 +42,6 @@ public static partial class CompareSummary
         return text.ToString();
     }
 
-    /// <summary>The verdict in one or two sentences.</summary>
-    public static string Verdict(Comparison comparison)
-    {
-        var worse = comparison.Turned(VerdictTurn.Worse);
-        var better = comparison.Turned(VerdictTurn.Better);
-        if (comparison.IsSame)
-        {
-            return comparison.Inputs.IsEmpty
-                ? "The two are the same."
-                : "Nothing that is computed differs; only the file does.";
-        }
-
-        var turned = (worse, better) switch
-        {
-            (0, 0) => "No verdict turned.",
-            (0, _) => $"{Verdicts(better)} turned for the better, none for the worse.",
-            (_, 0) => $"{Verdicts(worse)} turned for the worse.",
-            _ => $"{Verdicts(worse)} turned for the worse, {better} for the better.",
-        };
-        var (before, after) = (Holding(comparison.Before), Holding(comparison.After));
-        return before == after
-            ? $"{turned} In both, {after}."
-            : $"{turned} Before, {before}; now {after}.";
-    }
-
-    private static string Verdicts(int count) => count == 1 ? "One verdict" : $"{count} verdicts";
-
-    private static string Holding(ResultsDocument document)
-    {
-        bool[] all =
-        [
-            .. document.Requirements.Select(r => r.Holds),
-            .. document.Parts.SelectMany(p => p.Ratings).Select(r => r.Holds),
-        ];
-        return all.Length == 0
-            ? "nothing was required or rated"
-            : $"{all.Count(holds => holds)} of {all.Length} requirements and ratings hold";
-    }
-
     private static void WriteRequirements(SummaryText text, Comparison comparison)
     {
         var shown = comparison.Requirements.Where(r => r.Differs)
@@ -214,6 +175,11 @@ public static partial class CompareSummary
         if (!change.New.IsEmpty)
         {
             text.Paragraph($"{change.Kind} new: {string.Join("; ", change.New)}", hanging: 2);
+        }
+
+        foreach (var words in change.Changed)
+        {
+            text.Paragraph($"{change.Kind} changed: {words.Before} → {words.After}", hanging: 2);
         }
     }
 

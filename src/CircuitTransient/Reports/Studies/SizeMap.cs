@@ -162,7 +162,8 @@ internal sealed class SizeMap
         shapes.Add(new TextShape(
             Right + 24 + (34 * Shades.Length), y + 37, ReportWords.Percent(most), 11.5, PlotStyle.Grey,
             TextAnchor.End));
-        shapes.Add(new RectangleShape(Right + 24, y + 48, 34, 14, Broken));
+        shapes.Add(new RectangleShape(Right + 24, y + 48, 34, 14, PlotStyle.Axis));
+        shapes.Add(new RectangleShape(Right + 25, y + 49, 32, 12, Broken));
         shapes.Add(new TextShape(Right + 66, y + 59, "broken", 11.5, PlotStyle.Grey));
     }
 

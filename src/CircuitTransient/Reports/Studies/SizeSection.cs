@@ -16,13 +16,16 @@ public static class SizeSection
             : "What follows below is the circuit with the proposed values.";
         return new StudySection("Sizing", Markup.Of($"""
             <p class="lead">{SizeWords.Verdict(result)}</p>
-            {Aim(result)}<p>{SizeWords.AsItStands(result)}</p>
+            {Doubts(result)}{Aim(result)}<p>{SizeWords.AsItStands(result)}</p>
             {Margins(result)}{Conflict(result)}{Intervals(result)}
             <div class="wide"><figure
             class="picture">{HtmlReport.Themed(SizePlot.Draw(result, fonts))}</figure></div>
             <p class="aside">{Markup.Join(notes)}All points stand in size.csv and size.json. {circuit}</p>
             """));
     }
+
+    private static Markup Doubts(SizeResult result) =>
+        Markup.Join(SizeWords.Doubts(result).Select(doubt => Markup.Of($"<p>{doubt}</p>\n")));
 
     private static Markup Aim(SizeResult result)
     {

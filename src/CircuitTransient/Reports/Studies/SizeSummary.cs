@@ -25,6 +25,11 @@ public static class SizeSummary
         var circuit = result.Problem.File;
         text.Title(circuit.Title is { } title ? $"{title} ({circuit.Source.Name})" : circuit.Source.Name);
         text.Paragraph(SizeWords.Verdict(result), indent: 0);
+        foreach (var doubt in SizeWords.Doubts(result))
+        {
+            text.Paragraph(doubt, indent: 0);
+        }
+
         WriteAim(text, result);
         text.Paragraph(SizeWords.AsItStands(result), indent: 0);
         WriteChosen(text, result);
@@ -85,14 +90,6 @@ public static class SizeSummary
             .OrderBy(pair => pair.Share)
             .Select(pair => ImmutableArray.Create(
                 SizeWords.Margin(pair.constraint, pair.Share), pair.constraint.Name)));
-        foreach (var part in result.Proposed.Parts.Where(part => part.LinearUpTo is { Holds: false }))
-        {
-            var limit = part.LinearUpTo!;
-            text.Paragraph(
-                $"{part.Name} is linear up to {ReportWords.Number(limit.Declared, limit.Unit)} but reaches " +
-                $"{ReportWords.Number(limit.Reached, limit.Unit)}: what holds here holds for the model",
-                hanging: 2);
-        }
     }
 
     private static void WriteWarnings(SummaryText text, SizeResult result)

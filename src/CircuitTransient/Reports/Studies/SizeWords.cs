@@ -7,6 +7,8 @@ namespace CircuitTransient.Reports.Studies;
 /// <summary>A sizing in words, alike on the terminal, on the page and in pictures.</summary>
 internal static class SizeWords
 {
+    private const double OnBound = 1e-9; // of the bound: as exact as every figure is
+
     /// <summary>A part's value: as few digits as a preferred one has, else six.</summary>
     public static string Value(double value, string unit) => Amount.Of(value, unit);
 
@@ -18,6 +20,7 @@ internal static class SizeWords
     public static string Margin(SizeConstraint constraint, double share) => share switch
     {
         double.NegativeInfinity => "broken without limit, or not judged",
+        >= 0 and <= OnBound => "on the bound",
         >= 0 => $"{ReportWords.Number(share * constraint.Scale, constraint.Unit)} to spare",
         _ => $"broken by {ReportWords.Number(-share * constraint.Scale, constraint.Unit)}",
     };
@@ -37,6 +40,27 @@ internal static class SizeWords
             ? $"No {result.Request.Series} values of {parts} hold, though {Values(result, exact)} would: " +
                 "try a finer series."
             : $"No value of {parts} in the range looked at meets every requirement and rating.";
+    }
+
+    /// <summary>What makes the verdict on the proposed values doubtful, a sentence each.</summary>
+    public static IEnumerable<string> Doubts(SizeResult result)
+    {
+        if (result.Chosen is null)
+        {
+            return [];
+        }
+
+        var passed = result.Proposed.Parts.Where(part => part.LinearUpTo is { Holds: false })
+            .Select(part => (part.Name, Limit: part.LinearUpTo!))
+            .Select(part => $"In doubt: {part.Name} is linear up to "
+                + $"{ReportWords.Number(part.Limit.Declared, part.Limit.Unit)} but reaches "
+                + $"{ReportWords.Number(part.Limit.Reached, part.Limit.Unit)}: what holds here holds for the "
+                + "model.");
+        var rising = result.Proposed.Observations.Where(observed => observed.EndsRising)
+            .Select(observed => $"In doubt: {observed.Name} still rises at the study's end, "
+                + $"{ReportWords.Number(result.Problem.File.Until, "s")}: a later `until` may break what "
+                + "holds here.");
+        return passed.Concat(rising);
     }
 
     /// <summary>What is made least or greatest.</summary>

@@ -36,6 +36,7 @@ public static class SpreadJson
         json.Object("search", () => WriteAccount(json, spread));
         json.Objects("figures", spread.Figures, figure => WriteFigure(json, spread, figure));
         WriteWorst(json, spread);
+        SpreadDoubts.Write(json, spread);
         SensitivityJson.Write(json, spread);
         WriteDraws(json, spread);
         json.Array("selfChecks", spread.Nominal.SelfChecks, check => WriteCheck(json, "nominal", check));
@@ -70,6 +71,10 @@ public static class SpreadJson
         if (figure.Holds is { } holds)
         {
             json.WriteBoolean("holds", holds);
+            if (SpreadDoubts.Of(spread) is { } doubt)
+            {
+                json.WriteString("doubt", doubt);
+            }
         }
 
         json.WriteNumber("missing", figure.Missing);

@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using CircuitTransient.Measurements;
 using CircuitTransient.Studies.Spreads;
 
 namespace CircuitTransient.Reports.Studies;
@@ -11,6 +12,15 @@ public static class SpreadPlot
     private const double PixelsPerPoint = 2;
     private const double Left = 76;
     private const double Margin = 20;
+
+    /// <summary>The stretches of time that the picture enlarges.</summary>
+    public static ImmutableArray<WaveformDetail> Details(TransientResult nominal) =>
+    [
+        .. from observation in nominal.Observations.Take(MostBands)
+           let window = PlotWindow.Enlarged(nominal, observation)
+           where window is not null
+           select new WaveformDetail(observation.Name, window.From, window.To),
+    ];
 
     /// <summary>The picture as SVG.</summary>
     public static string Svg(SpreadResult spread)

@@ -14,15 +14,18 @@ public static class SpreadSection
         using var fonts = new PlotFonts();
         return new StudySection("Tolerances", Markup.Of($"""
             <p class="lead">{SpreadWords.Verdict(spread)}</p>
-            {Judged(spread)}{Worst(spread)}
+            {Judged(spread)}{Doubts(spread)}{Worst(spread)}
             <p>{SpreadWords.Account(spread)}</p>
             <div class="wide"><figure class="picture">{HtmlReport.Themed(SpreadPlot.Draw(spread, fonts))}
             </figure></div>
             {Draws(spread)}{Extremes(spread)}{SensitivitySection.Of(spread)}
             <p>{SpreadWords.Checks(spread)}</p>
-            <p class="aside">Everything stands in spread.json, the first draws one by one in spread.csv.</p>
+            <p class="aside">Everything stands in spread.json; {SpreadWords.Table(spread)}.</p>
             """));
     }
+
+    private static Markup Doubts(SpreadResult spread) => Markup.Join(
+        SpreadDoubts.Words(spread).Select(words => Markup.Of($"<p>{Markup.Name(words)}.</p>\n")));
 
     private static Markup Judged(SpreadResult spread)
     {
@@ -32,10 +35,11 @@ public static class SpreadSection
             return default;
         }
 
+        var doubt = SpreadDoubts.Of(spread) is { } words ? $"; in doubt: {words}" : "";
         var rows = judged.Select(f => Markup.Of($"""
             <tr{(f.Holds == false ? Markup.Of($" class=\"broken\"") : default)}>
             <th scope="row">{Markup.Name(SpreadWords.Name(spread, f.Figure))}</th>
-            <td class="verdict">{SpreadWords.Held(spread, f)}</td>
+            <td class="verdict">{SpreadWords.Held(spread, f)}{doubt}</td>
             <td>{SpreadWords.Reached(spread, f.Figure, f.Nominal, f.NominalReached)}</td>
             <td>{Reached(spread, f)}</td></tr>
 
@@ -108,12 +112,15 @@ public static class SpreadSection
             """);
     }
 
-    private static Markup Probability(string name, HoldingEstimate held) => Markup.Of($"""
-        <tr><th scope="row">{Markup.Name(name)}</th><td>{$"{held.Holding:N0} of {held.All:N0}"}</td>
-        <td>{SpreadWords.Share(held.Fraction)}</td>
-        <td>{SpreadWords.Share(held.Interval.Low)} to {SpreadWords.Share(held.Interval.High)}</td></tr>
+    private static Markup Probability(string name, HoldingEstimate held)
+    {
+        var (probability, interval) = SpreadWords.Shares(held);
+        return Markup.Of($"""
+            <tr><th scope="row">{Markup.Name(name)}</th><td>{$"{held.Holding:N0} of {held.All:N0}"}</td>
+            <td>{probability}</td><td>{interval}</td></tr>
 
-        """);
+            """);
+    }
 
     private static Markup Extremes(SpreadResult spread)
     {

@@ -50,11 +50,11 @@ public static partial class SpreadSummary
     }
 
     /// <summary>How often it held, with the exact interval of that probability.</summary>
-    private static ImmutableArray<string> Probability(string name, HoldingEstimate held) =>
-    [
-        name, $"{held.Holding:N0}", SpreadWords.Share(held.Fraction),
-        $"{SpreadWords.Share(held.Interval.Low)} to {SpreadWords.Share(held.Interval.High)}",
-    ];
+    private static ImmutableArray<string> Probability(string name, HoldingEstimate held)
+    {
+        var (probability, interval) = SpreadWords.Shares(held);
+        return [name, $"{held.Holding:N0}", probability, interval];
+    }
 
     private static ImmutableArray<string> Row(StudyFigure figure, FigureStatistics statistics) =>
     [
@@ -117,7 +117,7 @@ public static partial class SpreadSummary
             return;
         }
 
-        text.Heading("Poles there, and what moves them, in % per %");
+        text.Heading("Poles at that instant with every value nominal, and what moves them, in % per %");
         text.Table([Prose, Left, Prose], poles.SelectMany(pole => pole.Pole.Imaginary == 0
             ? new ImmutableArray<string>[]
             {

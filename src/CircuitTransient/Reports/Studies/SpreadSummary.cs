@@ -25,6 +25,11 @@ public static partial class SpreadSummary
         text.Title(spread.Varied.Circuit.Title is { } title ? $"{title} ({source})" : source);
         text.Paragraph(SpreadWords.Verdict(spread), indent: 0);
         WriteJudged(text, spread);
+        foreach (var doubt in SpreadDoubts.Words(spread))
+        {
+            text.Paragraph(doubt, hanging: 2);
+        }
+
         WriteWorst(text, spread);
         WriteExtremes(text, spread);
         WriteDraws(text, spread);
@@ -37,6 +42,11 @@ public static partial class SpreadSummary
             foreach (var file in files)
             {
                 text.Paragraph(file);
+            }
+
+            if (spread.Draws is { } draws && draws.RowCount < draws.Draws)
+            {
+                text.Paragraph(SpreadWords.Table(spread), hanging: 2);
             }
         }
 
@@ -61,7 +71,8 @@ public static partial class SpreadSummary
             [Left, Prose, Right, Right],
             judged.Take(MostFigures).Select(f => ImmutableArray.Create(
                 SpreadWords.Held(spread, f),
-                SpreadWords.Name(spread, f.Figure) + Because(spread, f.Figure),
+                SpreadWords.Name(spread, f.Figure) + Because(spread, f.Figure)
+                    + (SpreadDoubts.Of(spread) is { } doubt ? $"; in doubt: {doubt}" : ""),
                 $"nominal {SpreadWords.Reached(spread, f.Figure, f.Nominal, f.NominalReached)}",
                 f.Worst is { } worst
                     ? $"worst {SpreadWords.Reached(spread, f.Figure, worst.Value, worst.Reached)}" : "")));
@@ -115,10 +126,10 @@ public static partial class SpreadSummary
             Value(f, f.Nominal),
             Value(f, f.Least?.Value),
             Value(f, f.Greatest?.Value),
-            Between(f)));
+            Between(spread, f)));
         text.Table(
             [Prose, Right, Right, Right, Left], rows.Prepend(["", "nominal", "least", "greatest", ""]));
-        if (observed.Any(f => Between(f).Length > 0))
+        if (observed.Any(f => Between(spread, f).Length > 0))
         {
             text.Paragraph("inside: between the corners; the worst corner stands in spread.json", hanging: 2);
         }
@@ -154,13 +165,15 @@ public static partial class SpreadSummary
         }
     }
 
-    private static string Between(FigureRange range) => (range.Least, range.Greatest) switch
-    {
-        ({ IsCorner: false }, { IsCorner: false }) => "both inside",
-        ({ IsCorner: false }, _) => "least inside",
-        (_, { IsCorner: false }) => "greatest inside",
-        _ => "",
-    };
+    private static string Between(SpreadResult spread, FigureRange range) =>
+        (SpreadWords.IsInside(spread, range, range.Least),
+            SpreadWords.IsInside(spread, range, range.Greatest)) switch
+        {
+            (true, true) => "both inside",
+            (true, _) => "least inside",
+            (_, true) => "greatest inside",
+            _ => "",
+        };
 
     private static string Value(FigureRange range, double? value) =>
         value is { } number && double.IsFinite(number) ? Number(number, range.Figure.Unit) : "none";

@@ -4,6 +4,7 @@ using CircuitTransient.Measurements;
 using CircuitTransient.Studies;
 using CircuitTransient.Studies.Designs;
 using CircuitTransient.Studies.Spreads;
+using CircuitTransient.Studies.Statistics;
 using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports.Studies;
@@ -12,6 +13,7 @@ namespace CircuitTransient.Reports.Studies;
 internal static partial class SpreadWords
 {
     private const int MostValuesNamed = 16;
+    private const int MostShareDigits = 12; // what a double of nearly 100 still tells apart
 
     /// <summary>The verdict in one sentence.</summary>
     public static string Verdict(SpreadResult spread)
@@ -29,10 +31,12 @@ internal static partial class SpreadWords
             1 => "at one of the points solved the circuit has no unique solution",
             var count => $"at {count} of the points solved the circuit has no unique solution",
         };
+        var doubt = SpreadDoubts.Of(spread) ?? "";
         if (required.Length + rated.Length == 0)
         {
-            return "Nothing was required or rated, so there is no verdict"
-                + (unsolvable.Length > 0 ? $"; {unsolvable}." : ".");
+            string[] noted = [.. new[] { unsolvable, doubt }.Where(words => words.Length > 0)];
+            return string.Join("; ", noted.Prepend("Nothing was required or rated, so there is no verdict"))
+                + ".";
         }
 
         string[] said =
@@ -42,6 +46,7 @@ internal static partial class SpreadWords
                 Tally(required, "requirement", "is broken", "are broken"),
                 Tally(rated, "rating", "is exceeded", "are exceeded"),
                 unsolvable,
+                doubt,
             }.Where(words => words.Length > 0),
         ];
         var opening = spread.AllHold ? "Holds with every tolerance"
@@ -64,12 +69,24 @@ internal static partial class SpreadWords
                 + "chosen by each value's own effect, at random, and by exchanging single values for as long "
                 + "as that helped";
         var exact = account.WhyExact is { } why ? $" The exact engine solved every point ({why})." : "";
-        return account.WorseInside == 0
-            ? $"{corners}; {inside} gave nothing worse: searched there, not proven.{exact}"
-            : $"{corners}, and {inside}; {Count(account.WorseInside, "extreme")} lie"
-                + $"{(account.WorseInside == 1 ? "s" : "")} between the corners: searched there, not "
-                + $"proven.{exact}";
+        var worse = spread.Figures.Sum(f =>
+            (IsInside(spread, f, f.Least) ? 1 : 0) + (IsInside(spread, f, f.Greatest) ? 1 : 0));
+        var shown = account.WorseInside > 0 ? " in the four digits shown" : "";
+        return worse == 0
+            ? $"{corners}; {inside} gave nothing worse{shown}: searched there, not proven.{exact}"
+            : $"{corners}, and {inside}; {Count(worse, "extreme")} lie{(worse == 1 ? "s" : "")} between the "
+                + $"corners: searched there, not proven.{exact}";
     }
+
+    /// <summary>Whether an extreme stands between the corners and is worse than the worst corner in the
+    /// digits shown, or turns a verdict that the corner does not.</summary>
+    public static bool IsInside(SpreadResult spread, FigureRange range, ExtremePoint? extreme) =>
+        extreme is { IsCorner: false }
+        && (extreme.AtWorstCorner is not { } corner
+            || Reached(spread, range.Figure, corner, null)
+                != Reached(spread, range.Figure, extreme.Value, null)
+            || (Judgement.IsJudged(range.Figure)
+                && Judgement.Holds(range.Figure, corner) != Judgement.Holds(range.Figure, extreme.Value)));
 
     /// <summary>The values of a point that matter: <c>Supply 1.025 kV (+10 %)</c>.</summary>
     public static string Point(SpreadResult spread, ExtremePoint point)
@@ -134,10 +151,37 @@ internal static partial class SpreadWords
         : $" {draws.Unsolvable:N0} of them had no unique solution (the first: "
             + $"{string.Join(", ", draws.UnsolvableDraws.Take(5))}); nothing is counted as holding in them.";
 
-    /// <summary>A probability in per cent, with more digits near 0 and 1.</summary>
-    public static string Share(double fraction) =>
-        (100 * fraction).ToString(fraction is (> 0.99 and < 1) or (> 0 and < 0.01) ? "0.###" : "0.#",
-            CultureInfo.InvariantCulture) + " %";
+    /// <summary>What spread.csv holds.</summary>
+    public static string Table(SpreadResult spread) => spread.Draws switch
+    {
+        null => "spread.csv has no draws, for none were made",
+        { } draws when draws.RowCount < draws.Draws =>
+            $"spread.csv holds the first {draws.RowCount:N0} of the {draws.Draws:N0} draws; the counts and "
+            + "quantiles are of all of them",
+        _ => "spread.csv holds the draws one by one",
+    };
+
+    /// <summary>A probability and its interval in per cent, with as many digits as it takes to tell the ends
+    /// apart, and what is less than certain from 100 %.</summary>
+    public static (string Probability, string Interval) Shares(HoldingEstimate held)
+    {
+        var (low, high) = held.Interval;
+        var digits = held.Fraction is (> 0.99 and < 1) or (> 0 and < 0.01) ? 3 : 1;
+        while (digits < MostShareDigits
+            && !(low == high || Share(low, digits) != Share(high, digits)
+                && new[] { low, held.Fraction, high }.All(share => IsFair(share, digits))))
+        {
+            digits++;
+        }
+
+        return (Share(held.Fraction, digits), $"{Share(low, digits)} to {Share(high, digits)}");
+    }
+
+    private static bool IsFair(double share, int digits) => share is 0 or 1
+        || (Share(share, digits) != Share(0, digits) && Share(share, digits) != Share(1, digits));
+
+    private static string Share(double fraction, int digits) =>
+        (100 * fraction).ToString($"0.{new string('#', digits)}", CultureInfo.InvariantCulture) + " %";
 
     /// <summary>The judged figures of a kind.</summary>
     public static ImmutableArray<FigureRange> Judged(SpreadResult spread, StudyFigureKind kind) =>

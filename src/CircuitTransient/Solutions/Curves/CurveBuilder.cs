@@ -69,6 +69,29 @@ public sealed class CurveBuilder
         return curve;
     }
 
+    /// <summary>A linear quantity without several causes; null where the equations leave it open.</summary>
+    /// <param name="linear">The quantity.</param>
+    /// <param name="causes">Indices of the causes.</param>
+    public Curve? WithoutAll(Measurand linear, ImmutableArray<int> causes)
+    {
+        var pieces = ImmutableArray.CreateBuilder<CurvePiece>(tables.Length);
+        for (var s = 0; s < tables.Length; s++)
+        {
+            var segment = tables[s].Segment;
+            var left = causes.Aggregate(
+                segment.Coefficients(linear),
+                (rest, cause) => Difference(rest, segment.Coefficients(linear, cause)));
+            if (Piece(s, left) is not { } piece)
+            {
+                return null;
+            }
+
+            pieces.Add(piece);
+        }
+
+        return new Curve(pieces.ToImmutable());
+    }
+
     /// <summary>What two causes have together in a quadratic quantity; of one cause with itself, its own
     /// part.</summary>
     /// <param name="measurand">The quantity.</param>

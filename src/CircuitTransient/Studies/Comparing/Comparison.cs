@@ -40,6 +40,39 @@ public sealed record Comparison(
         Requirements.Count(r => r.Turn == turn) + Ratings.Count(r => r.Turn == turn)
         + Checks.Count(c => c.Turn == turn);
 
+    /// <summary>The requirements that are judged no longer.</summary>
+    public int RequirementsGone => Requirements.Count(r => r.After is null);
+
+    /// <summary>The ratings that are judged no longer; a part that now bears another name may still
+    /// be.</summary>
+    public int RatingsGone => Ratings.Count(gone => gone.After is null && !Renamed.Any(part =>
+        part.Before == gone.Part
+        && Ratings.Any(r => r.Before is null && r.Part == part.After && r.Unit == gone.Unit)));
+
+    /// <summary>Whether the two are of different circuits: neither the file nor the title is the same, and
+    /// fewer than half of the parts of the smaller one are in the other.</summary>
+    public bool IsOfDifferentCircuits
+    {
+        get
+        {
+            var (one, other) = (Before.Circuit, After.Circuit);
+            if (one.File == other.File || (one.Title is { } title && title == other.Title))
+            {
+                return false;
+            }
+
+            var common = Before.Parts.Select(part => part.Name)
+                .Intersect(After.Parts.Select(part => part.Name), StringComparer.Ordinal).Count()
+                + Renamed.Count(renaming => renaming.Kind == "part");
+            return 2 * common < Math.Min(Before.Parts.Length, After.Parts.Length);
+        }
+    }
+
+    /// <summary>Whether a verdict turned for the worse, or one is missing because the circuits are
+    /// different ones.</summary>
+    public bool IsWorse => Turned(VerdictTurn.Worse) > 0
+        || (IsOfDifferentCircuits && RequirementsGone + RatingsGone > 0);
+
     /// <summary>Whether nothing at all differs but the names and contents of the files.</summary>
     public bool IsSame =>
         Causes.IsEmpty && Events.IsEmpty && Stresses.IsEmpty && Renamed.IsEmpty && Checks.IsEmpty
@@ -86,9 +119,15 @@ public sealed record InputChange(string What, string Before, string After, bool 
 /// <param name="New">Only after.</param>
 public sealed record NameChange(string Kind, ImmutableArray<string> Gone, ImmutableArray<string> New)
 {
+    /// <summary>What both have, with other figures in it.</summary>
+    public ImmutableArray<WordsChange> Changed { get; init; } = [];
+
     /// <summary>Whether there are none.</summary>
-    public bool IsEmpty => Gone.IsEmpty && New.IsEmpty;
+    public bool IsEmpty => Gone.IsEmpty && New.IsEmpty && Changed.IsEmpty;
 }
+
+/// <summary>Words before and after, alike but for the figures in them.</summary>
+public sealed record WordsChange(string Before, string After);
 
 /// <summary>A switching; an instant is null where it is in one document only.</summary>
 public sealed record EventChange(string Name, double? Before, double? After);

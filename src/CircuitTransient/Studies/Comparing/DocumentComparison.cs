@@ -53,10 +53,10 @@ public static class DocumentComparison
             ],
             ChecksOf(before, after),
             [
-                Names("doubt", Doubts(before), Doubts(after)),
-                Names("warning", before.Warnings, after.Warnings),
-                Names("caution", before.Cautions, after.Cautions),
-                Names("check without judgement", before.NotJudged, after.NotJudged),
+                ChangedWords.Of("doubt", Doubts(before), Doubts(after)),
+                ChangedWords.Of("warning", before.Warnings, after.Warnings),
+                ChangedWords.Of("caution", before.Cautions, after.Cautions),
+                ChangedWords.Of("check without judgement", before.NotJudged, after.NotJudged),
             ]);
     }
 

@@ -11,7 +11,8 @@ namespace CircuitTransient.Studies.Sizes;
 /// <param name="Intervals">Of one part: the stretches that hold.</param>
 /// <param name="Preferred">The preferred values looked at; empty where none are asked for.</param>
 /// <param name="Exact">The best values of any size; null where none hold.</param>
-/// <param name="Chosen">The values proposed; null where there are none.</param>
+/// <param name="Chosen">The values proposed, to six digits where that holds too; null where there are
+/// none.</param>
 /// <param name="Conflict">Why none hold; null where some do.</param>
 /// <param name="Corners">The corners of the tolerances that decided; empty where they were not looked
 /// at.</param>

@@ -163,6 +163,11 @@ public sealed class SizeStudy
 
     private Outcome<SizeResult> Conclude(Finding found, SizePoint? chosen, ImmutableArray<UInt128> corners)
     {
+        if (chosen is not null && request.Series is null)
+        {
+            chosen = ShortValues.Of(chosen, problem.Parts, judge.Of);
+        }
+
         var text = chosen is null ? null : problem.TextWith(chosen.Values).Value;
         var name = $"{problem.File.Source.Name} with these values";
         var circuit = text is not null ? Read(new SourceText(name, text))

@@ -40,12 +40,16 @@ public sealed class SpreadStudy
     public long DrawsDone => draws?.Done ?? 0;
 
     /// <summary>Makes the draws that are left, and puts everything together.</summary>
-    public SpreadResult Finish(Action<SpreadProgress> report)
+    /// <param name="report">Is told how far the work has come.</param>
+    /// <param name="details">Stretches in which the waveforms' bands are sampled closely.</param>
+    public SpreadResult Finish(
+        Action<SpreadProgress> report, ImmutableArray<WaveformDetail> details = default)
     {
         draws?.Run(report);
         report(new SpreadProgress("waveforms", 0, 0));
         var bands = draws is null ? [] : Envelopes.Of(
-            batch, nominal, draws.FirstPoints(Envelopes.DrawCount(nominal, options.Draws)), options.Threads);
+            batch, nominal, details.IsDefault ? [] : details,
+            draws.FirstPoints(Envelopes.DrawCount(nominal, options.Draws)), options.Threads);
         return new SpreadResult(
             batch.Varied, options, nominal, account, figures, Worst(), draws?.Finish(bands),
             sensitivities);

@@ -10,25 +10,25 @@ namespace CircuitTransient.Studies.Spreads;
 /// kernel can, else by the exact engine.</summary>
 /// <param name="batch">Whose draws.</param>
 /// <param name="observed">Indices of the observations.</param>
-/// <param name="times">Instants in seconds, in order.</param>
-internal sealed class WaveSampler(PointBatch batch, int[] observed, double[] times)
+/// <param name="times">For each of them instants in seconds, in order.</param>
+internal sealed class WaveSampler(PointBatch batch, int[] observed, double[][] times)
 {
     private readonly DrawWorkspace? workspace = batch.Kernel?.CreateWorkspace();
     private readonly double[] values = new double[batch.Figures.Length];
     private readonly double[] instants = new double[batch.Figures.Length];
 
-    /// <summary>The waveforms of a draw, one after another; NaN outside an observation's window. Null
+    /// <summary>The waveforms of a draw; NaN outside an observation's window. Null
     /// where the circuit has no unique solution.</summary>
-    public double[]? At(ReadOnlySpan<double> point)
+    public double[][]? At(ReadOnlySpan<double> point)
     {
-        var waves = new double[observed.Length * times.Length];
+        double[][] waves = [.. times.Select(own => new double[own.Length])];
         var isFast = batch.Kernel is { } kernel
             && kernel.Evaluate(workspace!, point, values, instants) == DrawStatus.Reliable;
         var left = new List<int>();
         for (var o = 0; o < observed.Length; o++)
         {
             if (!isFast || !batch.Kernel!.Sample(
-                workspace!, observed[o], times, waves.AsSpan(o * times.Length, times.Length)))
+                workspace!, observed[o], times[o], waves[o]))
             {
                 left.Add(o);
             }
@@ -38,13 +38,13 @@ internal sealed class WaveSampler(PointBatch batch, int[] observed, double[] tim
     }
 
     /// <summary>The waveforms by the exact engine alone.</summary>
-    public double[]? Exact(ReadOnlySpan<double> point)
+    public double[][]? Exact(ReadOnlySpan<double> point)
     {
-        var waves = new double[observed.Length * times.Length];
+        double[][] waves = [.. times.Select(own => new double[own.Length])];
         return TryExact(point, [.. Enumerable.Range(0, observed.Length)], waves) ? waves : null;
     }
 
-    private bool TryExact(ReadOnlySpan<double> point, List<int> asked, double[] waves)
+    private bool TryExact(ReadOnlySpan<double> point, List<int> asked, double[][] waves)
     {
         if (batch.Varied.At(point).Value is not { } circuit
             || TransientSolver.Solve(circuit, CauseList.FromStart(circuit), batch.Cancellation).Value
@@ -57,18 +57,17 @@ internal sealed class WaveSampler(PointBatch batch, int[] observed, double[] tim
         var windows = new WindowTimes(solution);
         foreach (var o in asked)
         {
-            Sample(solution, curves, windows, circuit.Observations[observed[o]],
-                waves.AsSpan(o * times.Length, times.Length));
+            Sample(solution, curves, windows, circuit.Observations[observed[o]], times[o], waves[o]);
         }
 
         return true;
     }
 
-    private void Sample(
+    private static void Sample(
         TransientSolution solution, CurveBuilder curves, WindowTimes windows, Observation observation,
-        Span<double> wave)
+        double[] instants, double[] wave)
     {
-        wave.Fill(double.NaN);
+        Array.Fill(wave, double.NaN);
         var window = windows.Of(observation.Window);
         var from = curves.IsAccumulated(observation.Quantity) ? window?.From ?? 0 : 0;
         if (window is not { } open || curves.Of(observation.Quantity, from: from) is not { } curve)
@@ -76,11 +75,11 @@ internal sealed class WaveSampler(PointBatch batch, int[] observed, double[] tim
             return;
         }
 
-        for (var t = 0; t < times.Length; t++)
+        for (var t = 0; t < instants.Length; t++)
         {
-            if (times[t] >= open.From && times[t] <= open.To)
+            if (instants[t] >= open.From && instants[t] <= open.To)
             {
-                wave[t] = curve.ValueAt(solution, times[t]);
+                wave[t] = curve.ValueAt(solution, instants[t]);
             }
         }
     }

@@ -141,4 +141,30 @@ public sealed class DocumentComparisonTests
             }),
         ],
     };
+
+    [Fact]
+    public void A_caution_whose_figure_changed_is_neither_gone_nor_new()
+    {
+        var before = Plain with { Cautions = ["C12 stores up to 900.0 mJ (at 1.000 kV)", "R1 burns"] };
+        var after = Plain with { Cautions = ["C12 stores up to 1.200 J (at 950.0 V)", "R2 burns"] };
+
+        var cautions = DocumentComparison.Compare(before, after).Notes.Single(n => n.Kind == "caution");
+
+        Assert.Equal(
+            new WordsChange(
+                "C12 stores up to 900.0 mJ (at 1.000 kV)", "C12 stores up to 1.200 J (at 950.0 V)"),
+            Assert.Single(cautions.Changed));
+        Assert.Equal(["R1 burns"], cautions.Gone);
+        Assert.Equal(["R2 burns"], cautions.New);
+    }
+
+    [Fact]
+    public void A_rating_of_a_part_that_bears_another_name_is_still_judged()
+    {
+        var comparison = DocumentComparison.Compare(
+            Plain, SampleDocuments.Of(SampleDocuments.Text(name: "Rnew")));
+
+        Assert.Equal((0, 0), (comparison.RequirementsGone, comparison.RatingsGone));
+        Assert.False(comparison.IsOfDifferentCircuits);
+    }
 }

@@ -68,7 +68,7 @@ public sealed class SizeStudyTests
             Charged, Sizing.Ask(["R1"], greatest: "R1", withSpread: true));
 
         // The worst corner has R1 at +10 %: I·1.1·R·(1 − e^(−20 ms/(1.1·R·0.8 µF))) is the bound.
-        var r = 1.1 * result.Chosen!.Values[0];
+        var r = 1.1 * result.Exact!.Values[0];
         Assert.Equal(1.5, 1e-3 * r * (1 - Math.Exp(-20e-3 / (r * 0.8e-6))), 1e-11);
         Assert.Equal(4, result.Problem.Corners.All.Length);
         Assert.True(result.IsFound);
@@ -101,7 +101,7 @@ public sealed class SizeStudyTests
         var result = Sizing.Run(Step, Sizing.Ask(["R1", "C1"], greatest: "C1"));
 
         Assert.Equal(1000, result.Chosen!.Values[0], 1e-5);
-        Assert.Equal(1e-3 / (1000 * Math.Log(10)), result.Chosen.Values[1], 1e-14);
+        Assert.Equal(1e-3 / (1000 * Math.Log(10)), result.Exact!.Values[1], 1e-14);
         Assert.True(result.IsFound);
     }
 
@@ -203,4 +203,45 @@ public sealed class SizeStudyTests
         require current through R1 at most 10 mA
         until 1 ms
         """;
+
+    [Fact]
+    public void A_value_between_the_scanned_ones_is_proposed_to_six_digits_on_the_side_that_holds()
+    {
+        // The step charges C1: 0.9 of it at 1 ms, so R1 is at most 1 ms/(C·ln 10) = 434.294482 Ω.
+        const string circuit =
+            """
+            source    Feed at s : step of 10 V
+            resistor  R1 from s to a : 100 Ω
+            capacitor C1 from a to ground : 1 µF
+            require voltage of a at least 9 V from 1 ms
+            until 2 ms
+            """;
+
+        var result = Sizing.Run(circuit, Sizing.Ask(["R1"], greatest: "R1"));
+
+        Assert.Equal(1e-3 / (1e-6 * Math.Log(10)), result.Exact!.Values[0], 1e-7);
+        Assert.Equal(434.294, result.Chosen!.Values[0]);
+        Assert.True(result.IsFound);
+        Assert.Contains("R1 from s to a : 434.294 Ω", result.ProposedText);
+    }
+
+    [Fact]
+    public void Where_no_short_value_holds_all_digits_stay()
+    {
+        // 100 µV of 10 V to either side of 434.2944819 Ω leave no room for six digits.
+        const string circuit =
+            """
+            source    Feed at s : step of 10 V
+            resistor  R1 from s to a : 434.2944819 Ω
+            capacitor C1 from a to ground : 1 µF
+            require voltage of a between 8.9999999 V and 9.0000001 V from 1 ms to 1 ms
+            until 2 ms
+            """;
+
+        var result = Sizing.Run(circuit, Sizing.Ask(["R1"]));
+
+        Assert.True(result.IsFound);
+        Assert.Equal(434.2944819, result.Chosen!.Values[0], 1e-4);
+        Assert.Equal(result.Exact!.Values[0], result.Chosen.Values[0]);
+    }
 }

@@ -41,7 +41,7 @@ public class QuantileRanksTests
     }
 
     [Theory]
-    // A textbook's table of intervals for a median (table A.7 as published on coursehero.com, opened),
+    // A textbook's table of intervals for a median (its table A.7, a copy was opened),
     // those of the least width with at least 95 %.
     [InlineData(6, 1, 6)]
     [InlineData(9, 2, 8)]
