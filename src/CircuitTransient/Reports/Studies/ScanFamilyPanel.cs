@@ -45,17 +45,22 @@ internal static class ScanFamilyPanel
     }
 
     // From the earliest switching to some time past the latest peak, where that is a small part of the study;
-    // where the family's peaks lie far apart, about that of the worst alone. Of a scanned event all count
-    // from it.
+    // where the family's peaks lie far apart, about that of the worst alone, or as written where the worst
+    // stands at a switching. Of a scanned event all count from it.
     private static (double From, double To) Window(ScanFamily family)
     {
         var first = family.Members.Max(m => -m.Origin);
         var last = family.Members.Min(m => m.Times[^1] - m.Origin);
-        var worst = family.Members.Where(m => m.Role == FamilyRole.Worst).ToImmutableArray();
-        return CloseUp(family.Members, last - first) ?? CloseUp(worst, last - first)
+        var isMap = family.Members[0].At.Length > 1; // of corners far apart, whose peaks may be anywhere
+        return (isMap ? null : CloseUp(family.Members, last - first))
+            ?? CloseUp(Of(FamilyRole.Worst), last - first)
+            ?? CloseUp(Of(FamilyRole.AsWritten), last - first)
+            ?? CloseUp(family.Members, last - first)
             ?? (family.Event is null
                 ? (first, last)
                 : (Math.Max(first, -0.1 * last), Math.Max(last, Reach(family.Members))));
+
+        ImmutableArray<FamilyMember> Of(FamilyRole role) => [.. family.Members.Where(m => m.Role == role)];
     }
 
     private static double Reach(ImmutableArray<FamilyMember> members)
