@@ -118,14 +118,19 @@ internal static class FamilyScan
         var min = ExtremeSearch.Least(curve, open.From, open.To);
         var peak = Math.Abs(min.Value) > Math.Abs(max.Value) ? min.Time : max.Time;
         var start = Math.Max(solution.Occurrences.LastOrDefault(o => o.Time <= peak)?.Time ?? 0, open.From);
+        var origin = solution.Occurrences.FirstOrDefault(o => o.Event == Moved(plan)?.Event)?.Time ?? 0;
         var times = SampleTimes.Of(
-            solution, SampleCount, [max.Time, min.Time, .. CloseUp(start, peak, solution.Until)],
+            solution, SampleCount,
+            [max.Time, min.Time, .. CloseUp(start, peak, solution.Until), .. After(origin, solution.Until)],
             ModeRelevance.Of(solution, [curve]));
         return new FamilyMember(
             at, role, times, Waveform.Of([curve], solution, times)[0],
-            solution.Occurrences.FirstOrDefault(o => o.Event == Moved(plan)?.Event)?.Time ?? 0, start, peak,
-            open.To);
+            origin, start, peak, open.To);
     }
+
+    /// <summary>Instants ever closer towards an event, so that any enlargement about it is smooth.</summary>
+    private static IEnumerable<double> After(double origin, double until) => Enumerable.Range(0, CloseUpCount)
+        .Select(k => origin + ((until - origin) * Math.Pow(1e-5, (k + 1.0) / CloseUpCount)));
 
     /// <summary>The event that is scanned; null where none is.</summary>
     private static VariedValue? Moved(ScanPlan plan) =>
