@@ -32,8 +32,8 @@ public class EdgeCauseTests
         Assert.Equal(
             [
                 new CauseName("C initial charge", CauseKind.Stored),
-                new CauseName("Feed rise at 20 µs", CauseKind.Edge, "Feed") { Pulse = pulseName },
-                new CauseName("Feed fall at 60 µs", CauseKind.Edge, "Feed") { Pulse = pulseName },
+                new CauseName("Feed rise at 20 µs", CauseKind.Edge, "Feed") { Pulse = pulseName, From = 20e-6 },
+                new CauseName("Feed fall at 60 µs", CauseKind.Edge, "Feed") { Pulse = pulseName, From = 60e-6 },
             ],
             cut.Result.Causes);
         for (var k = 0; k < at.Length; k++)
