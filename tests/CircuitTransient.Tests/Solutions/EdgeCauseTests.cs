@@ -28,12 +28,12 @@ public class EdgeCauseTests
         var fall = SolvedText.Of(Ring + "source Feed at a : step of -10 V at 60 µs", at);
         var cut = SolvedText.By(Breakdown.Edge, Ring + feed, at);
 
-        const string pulseName = "Feed pulse from 20 µs";
+        const string whole = "Feed pulse from 20 µs";
         Assert.Equal(
             [
                 new CauseName("C initial charge", CauseKind.Stored),
-                new CauseName("Feed rise at 20 µs", CauseKind.Edge, "Feed") { Pulse = pulseName, From = 20e-6 },
-                new CauseName("Feed fall at 60 µs", CauseKind.Edge, "Feed") { Pulse = pulseName, From = 60e-6 },
+                new CauseName("Feed rise at 20 µs", CauseKind.Edge, "Feed") { Pulse = whole, From = 20e-6 },
+                new CauseName("Feed fall at 60 µs", CauseKind.Edge, "Feed") { Pulse = whole, From = 60e-6 },
             ],
             cut.Result.Causes);
         for (var k = 0; k < at.Length; k++)
@@ -41,8 +41,8 @@ public class EdgeCauseTests
             var edges = cut["voltage of c"].Samples[k].ByCause;
             Close.OfScale(20, rise["voltage of c"].Samples[k].ByCause[1]!.Value, edges[1]!.Value, 1e-12);
             Close.OfScale(20, fall["voltage of c"].Samples[k].ByCause[1]!.Value, edges[2]!.Value, 1e-12);
-            var whole = pulse["voltage of c"].Samples[k].ByCause[1]!.Value;
-            Close.OfScale(20, whole, edges[1]!.Value + edges[2]!.Value, 1e-12);
+            var all = pulse["voltage of c"].Samples[k].ByCause[1]!.Value;
+            Close.OfScale(20, all, edges[1]!.Value + edges[2]!.Value, 1e-12);
         }
     }
 
