@@ -49,13 +49,13 @@ public static partial class JsonReport
 
         json.WriteStartObject(name);
         json.WriteString("baseIs", breakdown.BaseWords);
-        WriteNumber(json, "base", breakdown.Base);
+        json.Number("base", breakdown.Base);
         WriteArray(json, "effects", breakdown.Effects, (to, effect) =>
         {
             to.WriteStartObject();
             to.WriteString("event", effect.Event);
-            WriteNumber(to, "time", effect.Time);
-            WriteNumber(to, "value", effect.Value);
+            to.Number("time", effect.Time);
+            to.Number("value", effect.Value);
             WriteOptional(to, "reason", effect.Reason);
             to.WriteEndObject();
         });
@@ -85,9 +85,9 @@ public static partial class JsonReport
             WriteArray(to, "values", cause.Values, (inner, value) => inner.WriteNumberValue(value));
             to.WriteEndObject();
         });
-        WriteNumber(json, "joint", breakdown.Joint);
-        WriteNumber(json, "storedEnergy", breakdown.Energies?.Stored);
-        WriteNumber(json, "jointEnergy", breakdown.Energies?.Joint);
+        json.Number("joint", breakdown.Joint);
+        json.Number("storedEnergy", breakdown.Energies?.Stored);
+        json.Number("jointEnergy", breakdown.Energies?.Joint);
         json.WriteEndObject();
     }
 
@@ -97,18 +97,18 @@ public static partial class JsonReport
         json.WriteString("name", mode.Name);
         json.WriteString("kind", mode.IsForced ? "forced" : "natural");
         json.WriteBoolean("driven", mode.IsDriven);
-        WriteNumber(json, "re", mode.Rate.Real);
-        WriteNumber(json, "im", mode.Rate.Imaginary);
+        json.Number("re", mode.Rate.Real);
+        json.Number("im", mode.Rate.Imaginary);
         json.WriteNumber("multiplicity", mode.Multiplicity);
         WriteArray(json, "parts", mode.Parts, (to, part) =>
         {
             to.WriteStartObject();
             to.WriteString("part", part.Part);
-            WriteNumber(to, "share", part.Share);
+            to.Number("share", part.Share);
             to.WriteEndObject();
         });
-        WriteNumber(json, "energy", energy);
-        WriteNumber(json, "value", mode.Value);
+        json.Number("energy", energy);
+        json.Number("value", mode.Value);
         json.WriteEndObject();
     }
 }

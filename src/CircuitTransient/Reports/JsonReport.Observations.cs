@@ -13,9 +13,9 @@ public static partial class JsonReport
         json.WriteStartObject();
         json.WriteString("name", observation.Name);
         json.WriteString("unit", observation.Unit);
-        WriteNumber(json, "start", observation.Start);
-        WriteNumber(json, "end", observation.End);
-        WriteNumber(json, "final", observation.Final);
+        json.Number("start", observation.Start);
+        json.Number("end", observation.End);
+        json.Number("final", observation.Final);
         WriteExtreme(json, "max", observation.Max);
         WriteExtreme(json, "min", observation.Min);
         json.WriteBoolean("endsRising", observation.EndsRising);
@@ -41,8 +41,8 @@ public static partial class JsonReport
     private static void WriteExtreme(Utf8JsonWriter json, string name, Extreme extreme)
     {
         json.WriteStartObject(name);
-        WriteNumber(json, "value", extreme.Value);
-        WriteNumber(json, "time", extreme.Time);
+        json.Number("value", extreme.Value);
+        json.Number("time", extreme.Time);
         json.WriteString("side", extreme.Side switch
         {
             InstantSide.Before => "before",
@@ -50,7 +50,7 @@ public static partial class JsonReport
             InstantSide.After => "after",
             _ => throw new System.Diagnostics.UnreachableException($"no word for {extreme.Side}"),
         });
-        WriteNumber(json, "bound", extreme.Bound);
+        json.Number("bound", extreme.Bound);
         json.WriteEndObject();
     }
 
@@ -58,8 +58,8 @@ public static partial class JsonReport
     {
         json.WriteStartObject();
         json.WriteString("cause", contribution.Cause);
-        WriteNumber(json, "atMax", contribution.AtMax);
-        WriteNumber(json, "atMin", contribution.AtMin);
+        json.Number("atMax", contribution.AtMax);
+        json.Number("atMin", contribution.AtMin);
         WriteTimed(json, "ownMax", contribution.OwnMax);
         WriteTimed(json, "ownMin", contribution.OwnMin);
         WriteTimed(json, "maxWithout", contribution.MaxWithout);
@@ -71,8 +71,8 @@ public static partial class JsonReport
     {
         json.WriteStartObject();
         json.WriteString("pulse", pulse.Pulse);
-        WriteNumber(json, "atMax", pulse.AtMax);
-        WriteNumber(json, "atMin", pulse.AtMin);
+        json.Number("atMax", pulse.AtMax);
+        json.Number("atMin", pulse.AtMin);
         WriteTimed(json, "maxWithout", pulse.MaxWithout);
         WriteTimed(json, "minWithout", pulse.MinWithout);
         json.WriteEndObject();
@@ -88,7 +88,7 @@ public static partial class JsonReport
 
         json.WriteStartObject(name);
         json.WriteString("event", since.Event);
-        WriteNumber(json, "time", since.Time);
+        json.Number("time", since.Time);
         WriteArray(json, "parts", since.Parts, WriteCauseValue);
         json.WriteEndObject();
     }
@@ -97,19 +97,19 @@ public static partial class JsonReport
     {
         json.WriteStartObject();
         json.WriteString("cause", part.Cause);
-        WriteNumber(json, "value", part.Value);
+        json.Number("value", part.Value);
         json.WriteEndObject();
     }
 
     private static void WriteSample(Utf8JsonWriter json, ObservationResult observation, SampleAt sample)
     {
         json.WriteStartObject();
-        WriteNumber(json, "time", sample.Time);
-        WriteNumber(json, "value", sample.Value);
+        json.Number("time", sample.Time);
+        json.Number("value", sample.Value);
         json.WriteStartObject("byCause");
         for (var i = 0; i < sample.ByCause.Length; i++)
         {
-            WriteNumber(json, observation.Contributions[i].Cause, sample.ByCause[i]);
+            json.Number(observation.Contributions[i].Cause, sample.ByCause[i]);
         }
 
         json.WriteEndObject();
@@ -121,7 +121,7 @@ public static partial class JsonReport
         json.WriteStartObject();
         json.WriteString("name", figure.Name);
         json.WriteString("unit", figure.Unit);
-        WriteNumber(json, "value", figure.Value);
+        json.Number("value", figure.Value);
         json.WriteString("definition", figure.Definition);
         json.WriteEndObject();
     }
@@ -133,7 +133,7 @@ public static partial class JsonReport
         json.WriteNumber("line", requirement.Line);
         json.WriteBoolean("holds", requirement.Holds);
         WriteTimed(json, "worst", requirement.Worst);
-        WriteNumber(json, "margin", requirement.Margin);
+        json.Number("margin", requirement.Margin);
         json.WriteString("unit", requirement.Unit);
         WriteOptional(json, "because", requirement.Reason);
         WriteOptional(json, "doubt", requirement.Doubt);
@@ -165,7 +165,7 @@ public static partial class JsonReport
         };
         if (value is { } own)
         {
-            WriteNumber(json, "value", own.Quantity.Nominal);
+            json.Number("value", own.Quantity.Nominal);
             json.WriteString("unit", own.Unit);
         }
 
@@ -174,8 +174,8 @@ public static partial class JsonReport
         WriteTimed(json, "peakPower", part.PeakPower);
         WriteTimed(json, "peakVoltageRate", part.PeakVoltageRate);
         WriteTimed(json, "peakCurrentRate", part.PeakCurrentRate);
-        WriteNumber(json, "energy", part.Energy);
-        WriteNumber(json, "jouleIntegral", part.JouleIntegral);
+        json.Number("energy", part.Energy);
+        json.Number("jouleIntegral", part.JouleIntegral);
         WriteArray(json, "ratings", part.Ratings, WriteRating);
         WriteLinearUpTo(json, part.LinearUpTo);
         json.WriteEndObject();
@@ -184,10 +184,10 @@ public static partial class JsonReport
     private static void WriteRating(Utf8JsonWriter json, RatingResult rating)
     {
         json.WriteStartObject();
-        WriteNumber(json, "rated", rating.Rated);
+        json.Number("rated", rating.Rated);
         json.WriteString("unit", rating.Unit);
-        WriteNumber(json, "reached", rating.Reached);
-        WriteNumber(json, "used", rating.Used);
+        json.Number("reached", rating.Reached);
+        json.Number("used", rating.Used);
         json.WriteBoolean("holds", rating.Holds);
         json.WriteEndObject();
     }
@@ -201,8 +201,8 @@ public static partial class JsonReport
         }
 
         json.WriteStartObject("linearUpTo");
-        WriteNumber(json, "declared", linear.Declared);
-        WriteNumber(json, "reached", linear.Reached);
+        json.Number("declared", linear.Declared);
+        json.Number("reached", linear.Reached);
         json.WriteBoolean("holds", linear.Holds);
         json.WriteString("unit", linear.Unit);
         WriteOptional(json, "direction", linear.Direction);
@@ -213,8 +213,8 @@ public static partial class JsonReport
     {
         json.WriteStartObject();
         json.WriteString("name", check.Name);
-        WriteNumber(json, "worst", check.Worst);
-        WriteNumber(json, "allowed", check.Allowed);
+        json.Number("worst", check.Worst);
+        json.Number("allowed", check.Allowed);
         json.WriteBoolean("holds", check.Holds);
         json.WriteEndObject();
     }
@@ -230,7 +230,7 @@ public static partial class JsonReport
     private static void WriteWarning(Utf8JsonWriter json, Notice warning)
     {
         json.WriteStartObject();
-        WriteNumber(json, "line", warning.Line > 0 ? warning.Line : null);
+        json.Number("line", warning.Line > 0 ? warning.Line : null);
         if (warning.Diagnostic is { } placed)
         {
             json.WriteNumber("column", placed.Source.ColumnOf(placed.Span.Start));
@@ -265,8 +265,8 @@ public static partial class JsonReport
         }
 
         json.WriteStartObject(name);
-        WriteNumber(json, "value", timed.Value);
-        WriteNumber(json, "time", timed.Time);
+        json.Number("value", timed.Value);
+        json.Number("time", timed.Time);
         json.WriteEndObject();
     }
 }

@@ -29,8 +29,8 @@ public static partial class JsonReport
         json.WriteString("format", Format);
         json.Circuit(result.Circuit);
         json.WriteStartObject("study");
-        WriteNumber(json, "from", 0);
-        WriteNumber(json, "until", result.Until);
+        json.Number("from", 0);
+        json.Number("until", result.Until);
         json.WriteString("start", result.Circuit.StartsSettled ? "settled" : "as stated");
         WriteOptional(json, "untilReason", result.UntilReason);
         json.WriteEndObject();
@@ -68,8 +68,8 @@ public static partial class JsonReport
     private static void WriteInterval(Utf8JsonWriter json, IntervalResult interval)
     {
         json.WriteStartObject();
-        WriteNumber(json, "from", interval.From);
-        WriteNumber(json, "until", interval.Until);
+        json.Number("from", interval.From);
+        json.Number("until", interval.Until);
         json.WriteStartArray("startsWith");
         foreach (var switching in interval.StartsWith)
         {
@@ -79,15 +79,15 @@ public static partial class JsonReport
         json.WriteEndArray();
         WriteArray(json, "poles", interval.Poles, WritePole);
         WriteArray(json, "impulses", interval.Impulses, WriteImpulse);
-        WriteNumber(json, "energyLost", interval.EnergyLost);
+        json.Number("energyLost", interval.EnergyLost);
         json.WriteEndObject();
     }
 
     private static void WritePole(Utf8JsonWriter json, Pole pole)
     {
         json.WriteStartObject();
-        WriteNumber(json, "re", pole.Re);
-        WriteNumber(json, "im", pole.Im);
+        json.Number("re", pole.Re);
+        json.Number("im", pole.Im);
         json.WriteNumber("multiplicity", pole.Multiplicity);
         json.WriteEndObject();
     }
@@ -95,16 +95,16 @@ public static partial class JsonReport
     private static void WriteImpulse(Utf8JsonWriter json, ImpulseResult impulse)
     {
         json.WriteStartObject();
-        WriteNumber(json, "time", impulse.Time);
+        json.Number("time", impulse.Time);
         json.WriteString("part", impulse.Part);
         if (impulse.Charge is not null)
         {
-            WriteNumber(json, "charge", impulse.Charge);
+            json.Number("charge", impulse.Charge);
         }
 
         if (impulse.VoltSeconds is not null)
         {
-            WriteNumber(json, "voltSeconds", impulse.VoltSeconds);
+            json.Number("voltSeconds", impulse.VoltSeconds);
         }
 
         WriteOptional(json, "remedy", impulse.Remedy);
@@ -114,13 +114,13 @@ public static partial class JsonReport
     private static void WriteEvent(Utf8JsonWriter json, EventResult switching)
     {
         json.WriteStartObject();
-        WriteNumber(json, "time", switching.Time);
+        json.Number("time", switching.Time);
         json.WriteString("switch", switching.Switch);
         json.WriteString("action", switching.Closes ? "closes" : "opens");
-        WriteNumber(json, "voltageBefore", switching.VoltageBefore);
-        WriteNumber(json, "voltageAfter", switching.VoltageAfter);
-        WriteNumber(json, "currentBefore", switching.CurrentBefore);
-        WriteNumber(json, "currentAfter", switching.CurrentAfter);
+        json.Number("voltageBefore", switching.VoltageBefore);
+        json.Number("voltageAfter", switching.VoltageAfter);
+        json.Number("currentBefore", switching.CurrentBefore);
+        json.Number("currentAfter", switching.CurrentAfter);
         WriteOptional(json, "remark", switching.Remark);
         json.WriteEndObject();
     }
@@ -142,24 +142,6 @@ public static partial class JsonReport
         }
 
         json.WriteEndArray();
-    }
-
-    internal static void WriteNumber(Utf8JsonWriter json, string name, double? value)
-    {
-        json.WritePropertyName(name);
-        WriteNumber(json, value);
-    }
-
-    internal static void WriteNumber(Utf8JsonWriter json, double? value)
-    {
-        if (value is { } number && double.IsFinite(number))
-        {
-            json.WriteNumberValue(number + 0.0); // turns the negative zero into the plain one
-        }
-        else
-        {
-            json.WriteNullValue();
-        }
     }
 
     internal static void WriteOptional(Utf8JsonWriter json, string name, string? text)

@@ -9,7 +9,7 @@ public sealed class CompareTests : IDisposable
 {
     private static readonly string Plain = SampleDocuments.Json(SampleDocuments.Text());
     private static readonly string Halved = SampleDocuments.Json(SampleDocuments.Text(ohms: 500));
-    private static readonly StudySchema Schema = new(CompareJson.Schema);
+    private static readonly DocumentSchema Schema = new(CompareJson.Schema);
 
     private readonly CommandLine commandLine = new();
 

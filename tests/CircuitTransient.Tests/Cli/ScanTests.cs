@@ -19,7 +19,7 @@ public sealed class ScanTests : IDisposable
         until 200 µs
         """;
 
-    private static readonly StudySchema Schema = new(ScanJson.Schema);
+    private static readonly DocumentSchema Schema = new(ScanJson.Schema);
 
     private readonly CommandLine commandLine = new();
 

@@ -17,7 +17,7 @@ public sealed class SizeTests : IDisposable
         until 50 µs
         """;
 
-    private static readonly StudySchema Schema = new(SizeJson.Schema);
+    private static readonly DocumentSchema Schema = new(SizeJson.Schema);
 
     private readonly CommandLine commandLine = new();
 

@@ -1,6 +1,4 @@
-using System.Text.Json;
 using CircuitTransient.Reports.Studies;
-using Json.Schema;
 
 namespace CircuitTransient.Tests.Reports;
 
@@ -8,20 +6,8 @@ namespace CircuitTransient.Tests.Reports;
 /// tests.</summary>
 internal static class OverlaySchema
 {
-    private static readonly JsonSchema Schema = JsonSchema.FromText(OverlayJson.Schema);
+    private static readonly DocumentSchema Schema = new(OverlayJson.Schema);
 
     /// <summary>What a document breaks, each with its place; empty where it obeys.</summary>
-    public static string[] Faults(string json)
-    {
-        using var document = JsonDocument.Parse(json);
-        var options = new EvaluationOptions { OutputFormat = OutputFormat.List };
-        var verdict = Schema.Evaluate(document.RootElement, options);
-        string[] faults =
-        [
-            .. (verdict.Details ?? [])
-                .Where(detail => detail.Errors is not null)
-                .Select(detail => $"{detail.InstanceLocation}: {string.Join(", ", detail.Errors!.Values)}"),
-        ];
-        return verdict.IsValid ? [] : ["not valid", .. faults];
-    }
+    public static string[] Faults(string json) => Schema.Faults(json);
 }

@@ -38,8 +38,8 @@ public static class FormulaJson
         json.WriteString("format", Format);
         json.Circuit(study.Circuit);
         json.WriteStartObject("study");
-        JsonReport.WriteNumber(json, "from", 0);
-        JsonReport.WriteNumber(json, "until", study.Until);
+        json.Number("from", 0);
+        json.Number("until", study.Until);
         json.WriteString("start", study.Circuit.StartsSettled ? "settled" : "as stated");
         json.WriteEndObject();
         json.WriteString("meaning", Meaning);
@@ -55,8 +55,8 @@ public static class FormulaJson
     private static void WriteInterval(Utf8JsonWriter json, ClosedInterval interval)
     {
         json.WriteStartObject();
-        JsonReport.WriteNumber(json, "from", interval.From);
-        JsonReport.WriteNumber(json, "until", interval.Until);
+        json.Number("from", interval.From);
+        json.Number("until", interval.Until);
         json.WriteStartArray("startsWith");
         foreach (var switching in interval.StartsWith)
         {
@@ -73,14 +73,13 @@ public static class FormulaJson
         var magnitude = double.Hypot(pole.Re, pole.Im);
         var isPair = pole.Im != 0;
         json.WriteStartObject();
-        JsonReport.WriteNumber(json, "re", pole.Re);
-        JsonReport.WriteNumber(json, "im", pole.Im);
+        json.Number("re", pole.Re);
+        json.Number("im", pole.Im);
         json.WriteNumber("multiplicity", pole.Multiplicity);
-        JsonReport.WriteNumber(json, "timeConstant", pole.Re == 0 ? null : 1 / Math.Abs(pole.Re));
-        JsonReport.WriteNumber(json, "naturalFrequency", isPair ? magnitude / double.Tau : null);
-        JsonReport.WriteNumber(json, "dampingRatio", isPair ? -pole.Re / magnitude : null);
-        JsonReport.WriteNumber(
-            json, "qualityFactor", isPair && pole.Re != 0 ? magnitude / (-2 * pole.Re) : null);
+        json.Number("timeConstant", pole.Re == 0 ? null : 1 / Math.Abs(pole.Re));
+        json.Number("naturalFrequency", isPair ? magnitude / double.Tau : null);
+        json.Number("dampingRatio", isPair ? -pole.Re / magnitude : null);
+        json.Number("qualityFactor", isPair && pole.Re != 0 ? magnitude / (-2 * pole.Re) : null);
         json.WriteEndObject();
     }
 
@@ -89,7 +88,7 @@ public static class FormulaJson
         json.WriteStartObject();
         json.WriteString("name", product.Name);
         json.WriteString("unit", product.Unit);
-        JsonReport.WriteNumber(json, "factor", product.Factor);
+        json.Number("factor", product.Factor);
         json.WriteString("first", product.First);
         json.WriteString("second", product.Second);
         json.WriteBoolean("integrated", product.IsIntegrated);
@@ -108,8 +107,8 @@ public static class FormulaJson
     private static void WriteStretch(Utf8JsonWriter json, ClosedStretch stretch)
     {
         json.WriteStartObject();
-        JsonReport.WriteNumber(json, "from", stretch.From);
-        JsonReport.WriteNumber(json, "until", stretch.Until);
+        json.Number("from", stretch.From);
+        json.Number("until", stretch.Until);
         json.WriteNumber("interval", stretch.Interval);
         json.WritePropertyName("total");
         if (stretch.Total is { } total)
@@ -131,7 +130,7 @@ public static class FormulaJson
         JsonReport.WriteOptional(json, "cause", sum.Cause);
         if (sum.Impulse != 0)
         {
-            JsonReport.WriteNumber(json, "impulse", sum.Impulse);
+            json.Number("impulse", sum.Impulse);
         }
 
         if (sum.IsBeyondImpulse)
@@ -154,7 +153,7 @@ public static class FormulaJson
             _ => throw new UnreachableException($"no word for {term.Origin}"),
         });
         WriteComplex(json, term.Amplitude);
-        JsonReport.WriteNumber(json, "bound", term.Bound);
+        json.Number("bound", term.Bound);
         JsonReport.WriteArray(json, "rates", term.Rates, (to, rate) =>
         {
             to.WriteStartObject();
@@ -166,7 +165,7 @@ public static class FormulaJson
 
     private static void WriteComplex(Utf8JsonWriter json, Complex value)
     {
-        JsonReport.WriteNumber(json, "re", value.Real);
-        JsonReport.WriteNumber(json, "im", value.Imaginary);
+        json.Number("re", value.Real);
+        json.Number("im", value.Imaginary);
     }
 }

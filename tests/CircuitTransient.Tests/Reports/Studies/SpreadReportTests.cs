@@ -8,7 +8,7 @@ namespace CircuitTransient.Tests.Reports.Studies;
 
 public class SpreadReportTests
 {
-    internal static readonly StudySchema Schema = new(SpreadJson.Schema);
+    internal static readonly DocumentSchema Schema = new(SpreadJson.Schema);
 
     private static readonly Lazy<SpreadResult> Release = new(() => Spreading.Of(
         """

@@ -3,9 +3,9 @@ using Json.Schema;
 
 namespace CircuitTransient.Tests.Reports;
 
-/// <summary>A study's shipped schema; one of a name is read once, for its reader keeps one list by name for
-/// all tests.</summary>
-internal sealed class StudySchema(string text)
+/// <summary>A document's shipped schema; one of a name is read once, for its reader keeps one list by name
+/// for all tests.</summary>
+internal sealed class DocumentSchema(string text)
 {
     private readonly JsonSchema schema = JsonSchema.FromText(text);
 
