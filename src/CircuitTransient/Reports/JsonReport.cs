@@ -17,41 +17,40 @@ public static partial class JsonReport
 
     /// <summary>The document of one circuit.</summary>
     public static string Write(TransientResult result) =>
-        JsonWriting.Document(json => WriteDocument(json, result));
+        JsonWriting.Document(result, WriteDocument);
 
     /// <summary>The documents of several circuits, as an array.</summary>
     public static string Write(ImmutableArray<TransientResult> results) =>
-        JsonWriting.Document(json => WriteArray(json, results, WriteDocument));
+        JsonWriting.Documents(results, WriteDocument);
 
     private static void WriteDocument(Utf8JsonWriter json, TransientResult result)
     {
-        json.WriteStartObject();
         json.WriteString("format", Format);
         json.Circuit(result.Circuit);
-        json.WriteStartObject("study");
-        json.Number("from", 0);
-        json.Number("until", result.Until);
-        json.WriteString("start", result.Circuit.StartsSettled ? "settled" : "as stated");
-        WriteOptional(json, "untilReason", result.UntilReason);
-        json.WriteEndObject();
-        WriteArray(json, "causes", result.Causes, WriteCause);
-        WriteArray(json, "intervals", result.Intervals, WriteInterval);
-        WriteArray(json, "events", result.Events, WriteEvent);
-        WriteArray(json, "observations", result.Observations,
+        json.Object("study", () =>
+        {
+            json.Number("from", 0);
+            json.Number("until", result.Until);
+            json.WriteString("start", result.Circuit.StartsSettled ? "settled" : "as stated");
+            json.Text("untilReason", result.UntilReason);
+        });
+        json.Objects("causes", result.Causes, WriteCause);
+        json.Objects("intervals", result.Intervals, WriteInterval);
+        json.Objects("events", result.Events, WriteEvent);
+        json.Objects("observations", result.Observations,
             (to, observation) => WriteObservation(to, result, observation));
-        WriteArray(json, "figures", result.Figures, WriteFigure);
-        WriteArray(json, "requirements", result.Requirements, WriteRequirement);
-        WriteParts(json, result);
-        WriteArray(json, "selfChecks", result.SelfChecks, WriteSelfCheck);
-        WriteArray(json, "notJudged", result.NotJudged, WriteNotJudged);
-        WriteArray(json, "warnings", result.Warnings, WriteWarning);
-        WriteArray(json, "cautions", result.Cautions, WriteCaution);
-        json.WriteEndObject();
+        json.Objects("figures", result.Figures, WriteFigure);
+        json.Objects("requirements", result.Requirements, WriteRequirement);
+        var stated = result.Circuit.Parts;
+        json.Objects("parts", result.Parts.Select((part, i) => (part, stated.ElementAtOrDefault(i))), WritePart);
+        json.Objects("selfChecks", result.SelfChecks, WriteSelfCheck);
+        json.Objects("notJudged", result.NotJudged, WriteNotJudged);
+        json.Objects("warnings", result.Warnings, WriteWarning);
+        json.Objects("cautions", result.Cautions, WriteCaution);
     }
 
     internal static void WriteCause(Utf8JsonWriter json, CauseName cause)
     {
-        json.WriteStartObject();
         json.WriteString("name", cause.Name);
         json.WriteString("kind", cause.Kind switch
         {
@@ -60,41 +59,29 @@ public static partial class JsonReport
             CauseKind.Edge => "edge",
             _ => throw new System.Diagnostics.UnreachableException($"no word for {cause.Kind}"),
         });
-        WriteOptional(json, "of", cause.Of);
-        WriteOptional(json, "pulse", cause.Pulse);
-        json.WriteEndObject();
+        json.Text("of", cause.Of);
+        json.Text("pulse", cause.Pulse);
     }
 
     private static void WriteInterval(Utf8JsonWriter json, IntervalResult interval)
     {
-        json.WriteStartObject();
         json.Number("from", interval.From);
         json.Number("until", interval.Until);
-        json.WriteStartArray("startsWith");
-        foreach (var switching in interval.StartsWith)
-        {
-            json.WriteStringValue(switching);
-        }
-
-        json.WriteEndArray();
-        WriteArray(json, "poles", interval.Poles, WritePole);
-        WriteArray(json, "impulses", interval.Impulses, WriteImpulse);
+        json.Texts("startsWith", interval.StartsWith);
+        json.Objects("poles", interval.Poles, WritePole);
+        json.Objects("impulses", interval.Impulses, WriteImpulse);
         json.Number("energyLost", interval.EnergyLost);
-        json.WriteEndObject();
     }
 
     private static void WritePole(Utf8JsonWriter json, Pole pole)
     {
-        json.WriteStartObject();
         json.Number("re", pole.Re);
         json.Number("im", pole.Im);
         json.WriteNumber("multiplicity", pole.Multiplicity);
-        json.WriteEndObject();
     }
 
     private static void WriteImpulse(Utf8JsonWriter json, ImpulseResult impulse)
     {
-        json.WriteStartObject();
         json.Number("time", impulse.Time);
         json.WriteString("part", impulse.Part);
         if (impulse.Charge is not null)
@@ -107,13 +94,11 @@ public static partial class JsonReport
             json.Number("voltSeconds", impulse.VoltSeconds);
         }
 
-        WriteOptional(json, "remedy", impulse.Remedy);
-        json.WriteEndObject();
+        json.Text("remedy", impulse.Remedy);
     }
 
     private static void WriteEvent(Utf8JsonWriter json, EventResult switching)
     {
-        json.WriteStartObject();
         json.Number("time", switching.Time);
         json.WriteString("switch", switching.Switch);
         json.WriteString("action", switching.Closes ? "closes" : "opens");
@@ -121,34 +106,6 @@ public static partial class JsonReport
         json.Number("voltageAfter", switching.VoltageAfter);
         json.Number("currentBefore", switching.CurrentBefore);
         json.Number("currentAfter", switching.CurrentAfter);
-        WriteOptional(json, "remark", switching.Remark);
-        json.WriteEndObject();
-    }
-
-    internal static void WriteArray<T>(
-        Utf8JsonWriter json, string name, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
-    {
-        json.WritePropertyName(name);
-        WriteArray(json, items, write);
-    }
-
-    internal static void WriteArray<T>(
-        Utf8JsonWriter json, ImmutableArray<T> items, Action<Utf8JsonWriter, T> write)
-    {
-        json.WriteStartArray();
-        foreach (var item in items)
-        {
-            write(json, item);
-        }
-
-        json.WriteEndArray();
-    }
-
-    internal static void WriteOptional(Utf8JsonWriter json, string name, string? text)
-    {
-        if (text is not null)
-        {
-            json.WriteString(name, text);
-        }
+        json.Text("remark", switching.Remark);
     }
 }

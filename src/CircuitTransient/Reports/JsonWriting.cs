@@ -32,6 +32,23 @@ internal static class JsonWriting
         return Encoding.UTF8.GetString(buffer.WrittenSpan) + "\n";
     }
 
+    /// <summary>A whole document that is one object.</summary>
+    public static string Document<T>(T item, Action<Utf8JsonWriter, T> write) =>
+        Document(json => json.Object(item, write));
+
+    /// <summary>A whole document that is an array of objects.</summary>
+    public static string Documents<T>(ImmutableArray<T> items, Action<Utf8JsonWriter, T> write) =>
+        Document(json =>
+        {
+            json.WriteStartArray();
+            foreach (var item in items)
+            {
+                json.Object(item, write);
+            }
+
+            json.WriteEndArray();
+        });
+
     /// <summary>The schema that is embedded under a name.</summary>
     public static string Schema(string name)
     {
@@ -62,6 +79,22 @@ internal static class JsonWriting
         json.WriteEndObject();
     }
 
+    /// <summary>A member that is an object, or null.</summary>
+    public static void Object<T>(
+        this Utf8JsonWriter json, string name, T? item, Action<Utf8JsonWriter, T> write)
+        where T : class
+    {
+        json.WritePropertyName(name);
+        if (item is null)
+        {
+            json.WriteNullValue();
+        }
+        else
+        {
+            json.Object(item, write);
+        }
+    }
+
     /// <summary>A member that is an array.</summary>
     public static void Array<T>(
         this Utf8JsonWriter json, string name, IEnumerable<T> items, Action<T> write)
@@ -78,16 +111,25 @@ internal static class JsonWriting
     /// <summary>A member that is an array of objects.</summary>
     public static void Objects<T>(
         this Utf8JsonWriter json, string name, IEnumerable<T> items, Action<T> write) =>
-        json.Array(name, items, item =>
-        {
-            json.WriteStartObject();
-            write(item);
-            json.WriteEndObject();
-        });
+        json.Objects(name, items, (_, item) => write(item));
+
+    /// <summary>A member that is an array of objects.</summary>
+    public static void Objects<T>(
+        this Utf8JsonWriter json, string name, IEnumerable<T> items, Action<Utf8JsonWriter, T> write) =>
+        json.Array(name, items, item => json.Object(item, write));
 
     /// <summary>A member that is an array of texts.</summary>
     public static void Texts(this Utf8JsonWriter json, string name, ImmutableArray<string> texts) =>
         json.Array(name, texts, json.WriteStringValue);
+
+    /// <summary>A member that is a text; left out where there is none.</summary>
+    public static void Text(this Utf8JsonWriter json, string name, string? text)
+    {
+        if (text is not null)
+        {
+            json.WriteString(name, text);
+        }
+    }
 
     /// <summary>A member that is a number, or null.</summary>
     public static void Number(this Utf8JsonWriter json, string name, double? value)
@@ -107,5 +149,12 @@ internal static class JsonWriting
         {
             json.WriteNullValue();
         }
+    }
+
+    private static void Object<T>(this Utf8JsonWriter json, T item, Action<Utf8JsonWriter, T> write)
+    {
+        json.WriteStartObject();
+        write(json, item);
+        json.WriteEndObject();
     }
 }

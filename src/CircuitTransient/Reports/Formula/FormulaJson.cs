@@ -26,53 +26,43 @@ public static class FormulaJson
 
     /// <summary>The document of one study.</summary>
     public static string Write(ClosedFormStudy study) =>
-        JsonWriting.Document(json => WriteDocument(json, study));
+        JsonWriting.Document(study, WriteDocument);
 
     /// <summary>The documents of several, as an array.</summary>
     public static string Write(ImmutableArray<ClosedFormStudy> studies) =>
-        JsonWriting.Document(json => JsonReport.WriteArray(json, studies, WriteDocument));
+        JsonWriting.Documents(studies, WriteDocument);
 
     private static void WriteDocument(Utf8JsonWriter json, ClosedFormStudy study)
     {
-        json.WriteStartObject();
         json.WriteString("format", Format);
         json.Circuit(study.Circuit);
-        json.WriteStartObject("study");
-        json.Number("from", 0);
-        json.Number("until", study.Until);
-        json.WriteString("start", study.Circuit.StartsSettled ? "settled" : "as stated");
-        json.WriteEndObject();
+        json.Object("study", () =>
+        {
+            json.Number("from", 0);
+            json.Number("until", study.Until);
+            json.WriteString("start", study.Circuit.StartsSettled ? "settled" : "as stated");
+        });
         json.WriteString("meaning", Meaning);
-        JsonReport.WriteArray(json, "causes", study.Causes, JsonReport.WriteCause);
-        JsonReport.WriteArray(json, "intervals", study.Intervals, WriteInterval);
-        JsonReport.WriteArray(json, "products", study.Products, WriteProduct);
-        JsonReport.WriteArray(json, "quantities", study.Forms, WriteForm);
-        JsonReport.WriteArray(json, "selfChecks", study.SelfChecks, JsonReport.WriteSelfCheck);
-        JsonReport.WriteArray(json, "notJudged", study.NotJudged, JsonReport.WriteNotJudged);
-        json.WriteEndObject();
+        json.Objects("causes", study.Causes, JsonReport.WriteCause);
+        json.Objects("intervals", study.Intervals, WriteInterval);
+        json.Objects("products", study.Products, WriteProduct);
+        json.Objects("quantities", study.Forms, WriteForm);
+        json.Objects("selfChecks", study.SelfChecks, JsonReport.WriteSelfCheck);
+        json.Objects("notJudged", study.NotJudged, JsonReport.WriteNotJudged);
     }
 
     private static void WriteInterval(Utf8JsonWriter json, ClosedInterval interval)
     {
-        json.WriteStartObject();
         json.Number("from", interval.From);
         json.Number("until", interval.Until);
-        json.WriteStartArray("startsWith");
-        foreach (var switching in interval.StartsWith)
-        {
-            json.WriteStringValue(switching);
-        }
-
-        json.WriteEndArray();
-        JsonReport.WriteArray(json, "modes", interval.Poles, WriteMode);
-        json.WriteEndObject();
+        json.Texts("startsWith", interval.StartsWith);
+        json.Objects("modes", interval.Poles, WriteMode);
     }
 
     private static void WriteMode(Utf8JsonWriter json, Pole pole)
     {
         var magnitude = double.Hypot(pole.Re, pole.Im);
         var isPair = pole.Im != 0;
-        json.WriteStartObject();
         json.Number("re", pole.Re);
         json.Number("im", pole.Im);
         json.WriteNumber("multiplicity", pole.Multiplicity);
@@ -80,54 +70,37 @@ public static class FormulaJson
         json.Number("naturalFrequency", isPair ? magnitude / double.Tau : null);
         json.Number("dampingRatio", isPair ? -pole.Re / magnitude : null);
         json.Number("qualityFactor", isPair && pole.Re != 0 ? magnitude / (-2 * pole.Re) : null);
-        json.WriteEndObject();
     }
 
     private static void WriteProduct(Utf8JsonWriter json, ClosedProduct product)
     {
-        json.WriteStartObject();
         json.WriteString("name", product.Name);
         json.WriteString("unit", product.Unit);
         json.Number("factor", product.Factor);
         json.WriteString("first", product.First);
         json.WriteString("second", product.Second);
         json.WriteBoolean("integrated", product.IsIntegrated);
-        json.WriteEndObject();
     }
 
     private static void WriteForm(Utf8JsonWriter json, ClosedForm form)
     {
-        json.WriteStartObject();
         json.WriteString("name", form.Name);
         json.WriteString("unit", form.Unit);
-        JsonReport.WriteArray(json, "stretches", form.Stretches, WriteStretch);
-        json.WriteEndObject();
+        json.Objects("stretches", form.Stretches, WriteStretch);
     }
 
     private static void WriteStretch(Utf8JsonWriter json, ClosedStretch stretch)
     {
-        json.WriteStartObject();
         json.Number("from", stretch.From);
         json.Number("until", stretch.Until);
         json.WriteNumber("interval", stretch.Interval);
-        json.WritePropertyName("total");
-        if (stretch.Total is { } total)
-        {
-            WriteSum(json, total);
-        }
-        else
-        {
-            json.WriteNullValue();
-        }
-
-        JsonReport.WriteArray(json, "byCause", stretch.ByCause, WriteSum);
-        json.WriteEndObject();
+        json.Object("total", stretch.Total, WriteSum);
+        json.Objects("byCause", stretch.ByCause, WriteSum);
     }
 
     private static void WriteSum(Utf8JsonWriter json, ClosedSum sum)
     {
-        json.WriteStartObject();
-        JsonReport.WriteOptional(json, "cause", sum.Cause);
+        json.Text("cause", sum.Cause);
         if (sum.Impulse != 0)
         {
             json.Number("impulse", sum.Impulse);
@@ -138,13 +111,11 @@ public static class FormulaJson
             json.WriteBoolean("beyondImpulse", true);
         }
 
-        JsonReport.WriteArray(json, "terms", sum.Terms, WriteTerm);
-        json.WriteEndObject();
+        json.Objects("terms", sum.Terms, WriteTerm);
     }
 
     private static void WriteTerm(Utf8JsonWriter json, ClosedTerm term)
     {
-        json.WriteStartObject();
         json.WriteString("origin", term.Origin switch
         {
             TermOrigin.Network => "network",
@@ -154,13 +125,7 @@ public static class FormulaJson
         });
         WriteComplex(json, term.Amplitude);
         json.Number("bound", term.Bound);
-        JsonReport.WriteArray(json, "rates", term.Rates, (to, rate) =>
-        {
-            to.WriteStartObject();
-            WriteComplex(to, rate);
-            to.WriteEndObject();
-        });
-        json.WriteEndObject();
+        json.Objects("rates", term.Rates, WriteComplex);
     }
 
     private static void WriteComplex(Utf8JsonWriter json, Complex value)

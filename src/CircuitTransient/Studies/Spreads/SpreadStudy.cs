@@ -62,15 +62,6 @@ public sealed class SpreadStudy
     /// <summary>Takes up draws that were saved by the same study.</summary>
     public void LoadDraws(BinaryReader from) => draws?.Load(from);
 
-    /// <summary>Everything the saved draws depend on, in one line each: another study's are not taken
-    /// up.</summary>
-    public ImmutableArray<string> Inputs =>
-    [
-        .. batch.Varied.Values.Select(v =>
-            $"{v.Name} {v.Tolerance!.Lowest:R} {v.Tolerance.Highest:R} {v.Tolerance.IsNormal}"),
-        .. figures.Select(f => $"{f.Figure.Name} {f.Nominal:R} {f.Least?.Value:R} {f.Greatest?.Value:R}"),
-    ];
-
     /// <summary>The range over which a figure's values are counted; an interior extreme may still lie a
     /// little outside what the search saw.</summary>
     private static (double From, double To) Between(FigureRange figure)
