@@ -1,5 +1,6 @@
 using System.Numerics;
 using CircuitTransient.Numerics;
+using CircuitTransient.Numerics.Sparse;
 
 namespace CircuitTransient.Measurements.Verification;
 
@@ -10,111 +11,111 @@ internal sealed class ContourSystem
 {
     private readonly DescriptorEquations equations;
     private readonly InputModel inputs;
-    private readonly (int Row, int Column)[] places;
+    private readonly SparsePattern pattern;
     private readonly double[] g;
     private readonly double[] e;
-    private EliminationProgram? program;
-    private Complex[] values = [];
+    private readonly Complex[] values;
+    private readonly SparseLu<Complex> lu;
     private readonly Complex[] right;
-    private readonly Complex[] work;
+    private readonly Complex[] solution;
+    private readonly Complex[] residual;
+    private readonly double[] terms;
 
     /// <summary>The system of some equations.</summary>
     public ContourSystem(DescriptorEquations equations, InputModel inputs)
     {
         (this.equations, this.inputs) = (equations, inputs);
-        var elements = new Dictionary<(int, int), (DoubleDouble G, DoubleDouble E)>();
-        foreach (var element in equations.Conductances)
-        {
-            var old = elements.GetValueOrDefault((element.Row, element.Column));
-            elements[(element.Row, element.Column)] = (old.G + element.Value, old.E);
-        }
-
-        foreach (var (row, column, value) in equations.StorageElements())
-        {
-            var old = elements.GetValueOrDefault((row, column));
-            elements[(row, column)] = (old.G, old.E + value);
-        }
-
-        places = [.. elements.Keys];
-        g = [.. elements.Values.Select(pair => (double)pair.G)];
-        e = [.. elements.Values.Select(pair => (double)pair.E)];
-        right = new Complex[2 * Size];
-        work = new Complex[Size];
+        MatrixElement[] storage = [.. equations.StorageElements()];
+        pattern = SparsePattern.Of(
+            Size, [.. equations.Conductances.Concat(storage).Select(at => (at.Row, at.Column))]);
+        (g, e) = (Sum(equations.Conductances, 0), Sum(storage, equations.Conductances.Length));
+        values = new Complex[pattern.Count];
+        lu = new SparseLu<Complex>(pattern);
+        (right, solution) = (new Complex[2 * Size], new Complex[2 * Size]);
+        (residual, terms) = (new Complex[Size], new double[Size]);
     }
 
     /// <summary>Number of unknowns.</summary>
     public int Size => equations.Unknowns.UnknownCount;
 
-    /// <summary>Complex multiply-adds of one point, once a point was solved.</summary>
-    public long Cost => program?.Cost ?? 0;
+    /// <summary>Complex multiply-adds of one point, about, once a point was solved.</summary>
+    public long Cost => 20 * lu.FactorCount;
 
     /// <summary>X at a point: the segment's unknowns, then the probe's. Null where there is no
     /// solution.</summary>
     public ReadOnlySpan<Complex> At(Complex z, ReadOnlySpan<double> states, ReadOnlySpan<double> probe)
     {
-        if (program is null && !Prepare(z))
+        for (var p = 0; p < values.Length; p++)
         {
-            return default;
+            values[p] = g[p] + (z * e[p]);
         }
 
-        if (!(Attempt(z, states, probe) < 1e-9) && (!Prepare(z) || !(Attempt(z, states, probe) < 1e-6)))
-        {
-            return default;
-        }
-
-        return right;
-    }
-
-    private bool Prepare(Complex z)
-    {
-        Fill(z, places.Length);
-        program = EliminationProgram.Of(Size, places, values[..places.Length]);
-        return program is not null;
-    }
-
-    // Solves and returns the residual relative to the terms that make it.
-    private double Attempt(Complex z, ReadOnlySpan<double> states, ReadOnlySpan<double> probe)
-    {
-        Fill(z, program!.ValueCount);
         FillRight(z, states, probe);
-        program.Solve(values, right, work);
-        var terms = new double[Size];
-        var residual = new Complex[Size];
-        for (var k = 0; k < places.Length; k++)
+        right.CopyTo(solution, 0);
+        return lu.Factorise(values) && Solves(0) && Solves(Size) ? solution : default;
+    }
+
+    private double[] Sum(IEnumerable<MatrixElement> elements, int firstSlot)
+    {
+        var sum = new DoubleDouble[pattern.Count];
+        foreach (var (k, element) in elements.Index())
         {
-            var term = (g[k] + (z * e[k])) * right[Size + places[k].Column];
-            residual[places[k].Row] += term;
-            terms[places[k].Row] += Math.Abs(term.Real) + Math.Abs(term.Imaginary);
+            sum[pattern.Slots[firstSlot + k]] += element.Value;
         }
 
-        foreach (var row in equations.StorageRows)
+        return [.. sum.Select(value => (double)value)];
+    }
+
+    // One of the right-hand sides, refined until what is left of it is rounding of its terms.
+    private bool Solves(int first)
+    {
+        const int MostTurns = 4;
+        const double Rounding = 1e-15;
+        const double Enough = 1e-9;
+        var x = solution.AsSpan(first, Size);
+        lu.Solve(x);
+        var left = Residual(first);
+        for (var turn = 0; turn < MostTurns && left > Rounding; turn++)
         {
-            residual[row.Place] -= row.Sign * probe[row.Index];
-            terms[row.Place] += Math.Abs(probe[row.Index]);
+            lu.Solve(residual);
+            for (var i = 0; i < Size; i++)
+            {
+                x[i] += residual[i];
+            }
+
+            left = Residual(first);
+        }
+
+        return left < Enough;
+    }
+
+    // Relative to the terms that make it; far down a ladder they fall below all numbers with full digits.
+    private double Residual(int first)
+    {
+        const double Vanished = 1e-250;
+        for (var i = 0; i < Size; i++)
+        {
+            residual[i] = right[first + i];
+            terms[i] = Complex.Abs(residual[i]);
+        }
+
+        for (var j = 0; j < Size; j++)
+        {
+            for (var p = pattern.Starts[j]; p < pattern.Starts[j + 1]; p++)
+            {
+                var term = values[p] * solution[first + j];
+                residual[pattern.Rows[p]] -= term;
+                terms[pattern.Rows[p]] += Math.Abs(term.Real) + Math.Abs(term.Imaginary);
+            }
         }
 
         var worst = 0.0;
         for (var i = 0; i < Size; i++)
         {
-            worst = Math.Max(worst, terms[i] == 0 ? 0 : Complex.Abs(residual[i]) / terms[i]);
+            worst = Math.Max(worst, terms[i] < Vanished ? 0 : Complex.Abs(residual[i]) / terms[i]);
         }
 
-        return worst;
-    }
-
-    private void Fill(Complex z, int count)
-    {
-        if (values.Length < count)
-        {
-            values = new Complex[count];
-        }
-
-        for (var k = 0; k < places.Length; k++)
-        {
-            values[k] = g[k] + (z * e[k]);
-        }
-
-        Array.Clear(values, places.Length, values.Length - places.Length);
+        return double.IsNaN(worst) ? double.PositiveInfinity : worst;
     }
 
     private void FillRight(Complex z, ReadOnlySpan<double> states, ReadOnlySpan<double> probe)
