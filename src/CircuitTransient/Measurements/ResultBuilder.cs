@@ -37,7 +37,6 @@ public static class ResultBuilder
         var reading = new FigureMeasurement(curves, times, infinities);
         var judging = new RequirementMeasurement(curves, times, infinities, reading);
         var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
-        var stresses = new PartStresses(curves, infinities, s => grams[s]);
 
         var own = new CurveBuilder(curves);
         var checking =
@@ -45,8 +44,7 @@ public static class ResultBuilder
 
         var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
             .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
-        var parts = Enumerable.Range(0, circuit.Parts.Length)
-            .Select(i => Unless(stresses.Measure(i), cancellation)).ToImmutableArray();
+        var parts = PartStresses.Of(curves, s => grams[s], cancellation);
         var requirements =
             circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation) with
             {
