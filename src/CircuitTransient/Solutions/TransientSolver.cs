@@ -43,8 +43,8 @@ public sealed class TransientSolver
     /// <param name="cancellation">Stops the work.</param>
     /// <returns>The solution, or why some interval has none.</returns>
     public static Outcome<TransientSolution> Solve(
-        Circuit circuit, ImmutableArray<Cause> causes, CancellationToken cancellation = default) =>
-        new TransientSolver(circuit, causes, cancellation).Run();
+        Circuit circuit, CauseList causes, CancellationToken cancellation = default) =>
+        new TransientSolver(circuit, causes.Causes, cancellation).Run();
 
     private Outcome<TransientSolution> Run()
     {

@@ -68,7 +68,7 @@ internal sealed class AnswersUpTo
     /// that is held as one.</summary>
     private ImmutableArray<Cause> Causes() =>
     [
-        .. CauseList.FromStart(solution.Circuit).Where(c => c.Source >= 0),
+        .. CauseList.FromStart(solution.Circuit).Causes.Where(c => c.Source >= 0),
         new Cause("what is held", -1, [], -1, 0),
     ];
 
