@@ -19,13 +19,10 @@ public static class KnownIntervals
         double now = 0;
         while (true)
         {
-            var waiting = timeline.Waiting().Where(w => w.Event is { Trigger: AtInstant, CutAtMost: null })
-                .Select(w => (w.Reference, Due: timeline.Due(w.Reference, w.Event))).ToArray();
-            var next = waiting.Select(w => w.Due).DefaultIfEmpty(double.PositiveInfinity).Min();
+            var (next, events) = timeline.NextFixed();
             if (next <= now)
             {
-                timeline.Act(now, waiting.Where(w => w.Due <= now).Select(w => w.Reference),
-                    isDecidedByAnswer: false);
+                timeline.Act(now, events, isDecidedByAnswer: false);
                 continue;
             }
 
