@@ -48,8 +48,9 @@ public static class TransientAnalysis
 
     /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have
     /// no unique solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) =>
-        KnownIntervals.FindUnsolvable(circuit);
+    public static ImmutableArray<Diagnostic> FindUnsolvable(
+        Circuit circuit, CancellationToken cancellation) =>
+        KnownIntervals.FindUnsolvable(circuit, cancellation);
 }
 
 /// <summary>What came of an analysis.</summary>

@@ -10,7 +10,8 @@ public static class KnownIntervals
 {
     /// <summary>An error for each set of positions, met at a known instant, whose equations have no unique
     /// solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit)
+    public static ImmutableArray<Diagnostic> FindUnsolvable(
+        Circuit circuit, CancellationToken cancellation)
     {
         var layout = new NetworkLayout(circuit);
         var timeline = new Timeline(circuit);
@@ -19,6 +20,7 @@ public static class KnownIntervals
         double now = 0;
         while (true)
         {
+            cancellation.ThrowIfCancellationRequested();
             var (next, events) = timeline.NextFixed();
             if (next <= now)
             {

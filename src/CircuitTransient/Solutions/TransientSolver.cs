@@ -34,7 +34,7 @@ public sealed class TransientSolver
         this.causes = causes;
         layout = new NetworkLayout(circuit);
         timeline = new Timeline(circuit);
-        models = new IntervalModels(layout);
+        models = new IntervalModels(layout, cancellation);
         solver = new IntervalSolver(layout, causes, cancellation);
         watched = new WatchedQuantities(circuit);
     }

@@ -162,7 +162,7 @@ internal sealed class OtherBreakdowns
                 .Select(s => solution.Segments[first - 1].ValueAtEnd(layout.Held(s), c)).ToArray())];
         }
 
-        var model = new IntervalModels(layout).For(new Timeline(solution.Circuit).IsClosed);
+        var model = new IntervalModels(layout, cancellation).For(new Timeline(solution.Circuit).IsClosed);
         return SettledStart.Find(model!, layout, solution.Causes).Stored;
     }
 
