@@ -121,7 +121,7 @@ internal sealed class OverlayCommand : Command
     private RecordOrder? OrderOf(string name, string[] names, ParseResult parsed, Streams streams)
     {
         string? Said(Option<string[]> option) =>
-            new RecordWords(option.Name, parsed.GetValue(option) ?? []).OneFor(name, names);
+            new RecordWords(parsed.GetValue(option) ?? []).OneFor(name, names);
 
         var numbers = new Numbers(streams);
         var reading = new RecordOptions(
@@ -152,7 +152,7 @@ internal sealed class OverlayCommand : Command
         return numbers.AreRead
             ? new RecordOrder(
                 name, reading, Said(shows),
-                [.. new RecordWords(with.Name, parsed.GetValue(with) ?? []).For(name, names)], Said(input),
+                [.. new RecordWords(parsed.GetValue(with) ?? []).For(name, names)], Said(input),
                 Said(generator), given)
             : null;
     }
