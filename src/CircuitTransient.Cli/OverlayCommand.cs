@@ -123,20 +123,20 @@ internal sealed class OverlayCommand : Command
         string? Said(Option<string[]> option) =>
             new RecordWords(parsed.GetValue(option) ?? []).OneFor(name, names);
 
-        var numbers = new Numbers(streams);
-        var reading = new RecordOptions(
-            Said(channel), numbers.Read(interval.Name, Said(interval), "such as `1 ns`", Dimension.Time),
-            Said(mark) switch { null => null, "comma" => ',', "point" => '.', _ => ' ' });
-        var given = new AlignmentGiven(
-            numbers.Read(offset.Name, Said(offset), "such as `3.3 ns`", Dimension.Time),
-            numbers.Read(gain.Name, Said(gain), "such as `1.012` or `10`", Dimension.None),
-            numbers.Read(level.Name, Said(level), "such as `60 mV`", Dimension.Voltage, Dimension.Current));
-        if (reading.Mark == ' ')
+        if (Said(mark) is not (null or "comma" or "point"))
         {
             streams.Complain("--decimal: say `point` or `comma`");
             return null;
         }
 
+        var numbers = new Numbers(streams);
+        var reading = new RecordOptions(
+            Said(channel), numbers.Read(interval.Name, Said(interval), "such as `1 ns`", Dimension.Time),
+            Said(mark) switch { null => null, "comma" => ',', _ => '.' });
+        var given = new AlignmentGiven(
+            numbers.Read(offset.Name, Said(offset), "such as `3.3 ns`", Dimension.Time),
+            numbers.Read(gain.Name, Said(gain), "such as `1.012` or `10`", Dimension.None),
+            numbers.Read(level.Name, Said(level), "such as `60 mV`", Dimension.Voltage, Dimension.Current));
         if (reading.Interval <= 0)
         {
             streams.Complain("--interval: a sample interval is more than zero");
