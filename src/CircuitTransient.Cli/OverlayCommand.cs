@@ -112,10 +112,11 @@ internal sealed class OverlayCommand : Command
             orders.Add(order);
         }
 
-        var words = string.Join(' ', parsed.Tokens.Select(t => Quoted(t.Value)));
+        var words = parsed.Tokens.Select(t =>
+            Path.IsPathRooted(t.Value) ? Path.GetFileName(t.Value) : t.Value);
         return new OverlayOptions(
             orders.ToImmutable(), parsed.GetValue(fit), parsed.GetValue(fitted),
-            $"circuit-transient {words}", study.Read(parsed));
+            CommandText.Of(words), study.Read(parsed));
     }
 
     private RecordOrder? OrderOf(string name, string[] names, ParseResult parsed, Streams streams)
@@ -155,14 +156,6 @@ internal sealed class OverlayCommand : Command
                 [.. new RecordWords(parsed.GetValue(with) ?? []).For(name, names)], Said(input),
                 Said(generator), given)
             : null;
-    }
-
-    private static string Quoted(string word)
-    {
-        var name = Path.IsPathRooted(word) ? Path.GetFileName(word) : word;
-        return name.Length > 0 && name.All(c => char.IsAsciiLetterOrDigit(c) || c is '.' or '-' or '_' or '/')
-            ? name
-            : $"\"{name.Replace("\"", "'")}\"";
     }
 
     /// <summary>Reads numbers with units; says what is wrong with one.</summary>
