@@ -71,14 +71,18 @@ public sealed class SizeRun(
         ];
     }
 
-    private string CommandFor(string file) => CommandText.Of(
-    [
-        "size", Path.GetFileName(file),
-        .. request.Parts.SelectMany(part => new[] { part.Source.Name, part.Source.Content }),
-        .. request.Series is { } series ? new[] { "--series", $"{series}" } : [],
-        .. request.Aim is Extremal aim ? new[] { aim.Of.Name, aim.Of.Content } : [],
-        .. request.WithSpread ? new[] { "--with-spread" } : [],
-    ]);
+    private string CommandFor(string file)
+    {
+        string[] words =
+        [
+            "size", Path.GetFileName(file),
+            .. request.Parts.SelectMany(part => new[] { part.Source.Name, part.Source.Content }),
+            .. request.Series is { } series ? new[] { "--series", $"{series}" } : [],
+            .. request.Aim is Extremal aim ? new[] { aim.Of.Name, aim.Of.Content } : [],
+            .. request.WithSpread ? new[] { "--with-spread" } : [],
+        ];
+        return CommandText.Of(words);
+    }
 
     private int WriteSized(SizeResult result)
     {

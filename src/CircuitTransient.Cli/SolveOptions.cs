@@ -26,13 +26,17 @@ public sealed record SolveOptions(
 
     /// <summary>The command that makes the same results again beside the circuit file, wherever that
     /// is.</summary>
-    public string CommandFor(string file) => CommandText.Of(
-    [
-        "solve", Path.GetFileName(file),
-        .. At.Instants.IsEmpty ? [] : new[] { "--at", At.Source.Content },
-        .. By == Breakdown.Origin ? [] : new[] { "--by", ByWords.Of(By) },
-        .. After is null ? [] : new[] { "--after", After.Text },
-        .. SampleCount == UsualSampleCount ? [] : new[] { "--samples", $"{SampleCount}" },
-        .. IsPdf ? new[] { "--pdf" } : [],
-    ]);
+    public string CommandFor(string file)
+    {
+        string[] words =
+        [
+            "solve", Path.GetFileName(file),
+            .. At.Instants.IsEmpty ? [] : new[] { "--at", At.Source.Content },
+            .. By == Breakdown.Origin ? [] : new[] { "--by", ByWords.Of(By) },
+            .. After is null ? [] : new[] { "--after", After.Text },
+            .. SampleCount == UsualSampleCount ? [] : new[] { "--samples", $"{SampleCount}" },
+            .. IsPdf ? new[] { "--pdf" } : [],
+        ];
+        return CommandText.Of(words);
+    }
 }

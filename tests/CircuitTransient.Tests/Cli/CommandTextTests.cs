@@ -10,8 +10,8 @@ public sealed class CommandTextTests
     {
         string[] words =
         [
-            "plain.cause", "a b.cause", "Rsn from 1 Ω to 10 kΩ", "$HOME `id` \\ \"quoted\" it's!", "'", "", "*",
-            "\"K 1\" closes", "a;b&c|d>e",
+            "plain.cause", "a b.cause", "Rsn from 1 Ω to 10 kΩ", "$HOME `id` \\ \"quoted\" it's!", "'", "",
+            "*", "\"K 1\" closes", "a;b&c|d>e",
         ];
         var command = CommandText.Of(words)["circuit-transient".Length..];
         Assert.Equal(
