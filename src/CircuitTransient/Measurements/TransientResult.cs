@@ -144,6 +144,9 @@ public sealed record EventResult(
 public sealed record RequirementResult(
     string Statement, string? Reason, string Unit, int Line, bool Holds, TimedValue Worst, double? Margin)
 {
+    /// <summary>What is judged, without its bound; null where that is not told apart.</summary>
+    public string? Quantity { get; init; }
+
     /// <summary>Whether there was something to judge: not where the quantity is undetermined, its window
     /// never opens, or the waveform has no such figure.</summary>
     public bool IsJudged { get; init; } = true;
