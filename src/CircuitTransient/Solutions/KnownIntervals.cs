@@ -46,8 +46,17 @@ public static class KnownIntervals
         NetworkLayout layout, Timeline timeline, double from, double until)
     {
         var rows = NetworkEquations.Assemble(layout, timeline.IsClosed);
-        return DescriptorReduction.Reduce(layout, rows, out _) is { } form
-            ? new AskedQuantities(layout.Circuit, timeline.InstantOf).LeftOpenIn(form, from, until)
-            : [SingularDiagnosis.Describe(layout, timeline.IsClosed, from)];
+        var reduction = new DescriptorReduction(layout, rows);
+        if (reduction.Singular is not null)
+        {
+            return [SingularDiagnosis.Describe(layout, timeline.IsClosed, from)];
+        }
+
+        // The normal form takes memory and time by the square and cube of the state: it is worth them only
+        // where something is open.
+        return reduction.LeavesOpen
+            ? new AskedQuantities(layout.Circuit, timeline.InstantOf)
+                .LeftOpenIn(reduction.Solve(), from, until)
+            : [];
     }
 }
