@@ -6,6 +6,7 @@ namespace CircuitTransient.Cli;
 public sealed class CircuitFile
 {
     private readonly string path;
+    private readonly SortedDictionary<string, string> beside = new(StringComparer.Ordinal);
 
     private CircuitFile(string path, SourceText? source, int status)
     {
@@ -19,6 +20,9 @@ public sealed class CircuitFile
 
     /// <summary>Success, or what kept it, or a file it names, from being read.</summary>
     public int Status { get; private set; }
+
+    /// <summary>SHA-256 of every file that was read beside it, in the order of their names.</summary>
+    public IEnumerable<string> BesideSha256 => beside.Values;
 
     /// <summary>Reads a file; what is wrong with it has been said when this returns.</summary>
     public static CircuitFile Read(string path, Streams streams)
@@ -41,10 +45,12 @@ public sealed class CircuitFile
     /// fails.</summary>
     public Outcome<SourceText> ReadBeside(string name)
     {
-        var beside = Path.Combine(Path.GetDirectoryName(path) ?? "", name);
+        var place = Path.Combine(Path.GetDirectoryName(path) ?? "", name);
         try
         {
-            return Decode(beside);
+            var text = Decode(place);
+            beside[name] = text.Value?.Sha256 ?? "";
+            return text;
         }
         catch (Exception trouble) when (trouble.IsFileTrouble())
         {

@@ -79,7 +79,7 @@ public static class OutputFolder
             foreach (var file in files)
             {
                 cancellation.ThrowIfCancellationRequested();
-                unfinished.Add(new UnfinishedFile(Path.Combine(folder, file.Name), file.Content.Span));
+                unfinished.Add(new UnfinishedFile(Path.Combine(folder, file.Name), file.Content));
             }
 
             unfinished.ForEach(file => file.Finish());

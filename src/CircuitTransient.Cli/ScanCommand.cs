@@ -31,12 +31,17 @@ internal sealed class ScanCommand : Command
         HelpName = "SCATTER",
     };
 
+    private readonly Option<bool> resume = new("--resume")
+    {
+        Description = "Go on with the scan that an interruption left unfinished.",
+    };
+
     /// <summary>The command, writing to these streams.</summary>
     public ScanCommand(Streams streams, CancellationToken cancellation)
         : base("scan", "Solve a family over one or two values; find the worst and where it breaks.")
     {
         Add(files);
-        foreach (var option in (Option[])[values, parts, phases, events, scatter])
+        foreach (var option in (Option[])[values, parts, phases, events, scatter, resume])
         {
             Add(option);
         }
@@ -93,7 +98,9 @@ internal sealed class ScanCommand : Command
             return null;
         }
 
-        return new ScanOptions([.. scanned.Select(s => s.Value!)], scattered?.Value, study.Read(parsed));
+        return new ScanOptions(
+            [.. scanned.Select(s => s.Value!)], scattered?.Value, parsed.GetValue(resume),
+            study.Read(parsed));
     }
 
     private ScannedKind? KindOf(string option) =>

@@ -13,6 +13,12 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
     /// <returns>One of <see cref="ExitStatus"/>.</returns>
     public int Run(string file)
     {
+        var partial = StudyPartial.In(options.Study.Folder, file, "scan", "points");
+        if (partial.Refusal(options.Resumes, streams) is { } refusal)
+        {
+            return refusal;
+        }
+
         var reading = CircuitFile.Read(file, streams);
         if (reading.Source is not { } source)
         {
@@ -28,15 +34,64 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
 
         var planned = ScanPlan.Of(known, options.Scanned, options.Scatter, reading.ReadBeside);
         streams.Report(planned.Diagnostics);
-        return planned.Value is { } plan ? Run(file, plan, reading) : ExitStatus.Mistake;
+        return planned.Value is { } plan ? Run(file, plan, reading, partial) : ExitStatus.Mistake;
     }
 
-    private int Run(string file, ScanPlan plan, CircuitFile reading)
+    private int Run(string file, ScanPlan plan, CircuitFile reading, StudyPartial partial)
     {
-        using var progress = new StudyProgress(streams);
+        var memory = new ScanMemory();
+        var identity = PartialIdentity.Of(reading, options.Asked);
+        if (options.Resumes)
+        {
+            if (partial.Refusal(identity, streams) is { } refusal)
+            {
+                return refusal;
+            }
+
+            partial.Load(identity, memory.Load);
+        }
+
         var (all, done) = (Scanner.PointCount(plan), 0);
-        var result = Scanner.Run(plan, Count, cancellation);
-        progress.Dispose();
+        using var progress = new StudyProgress(streams);
+        try
+        {
+            var result = Scanner.Run(plan, memory, Count, cancellation);
+            progress.Dispose();
+            var status = HandOver(file, result, reading);
+            if (status != ExitStatus.FileTrouble)
+            {
+                partial.Remove();
+            }
+
+            return status;
+        }
+        catch (OperationCanceledException) when (partial.IsWanted && memory.PointCount > 0)
+        {
+            progress.Dispose();
+            partial.Leave(
+                identity, memory.Save,
+                done < all ? $"{done:N0} of {all:N0} points" : "the points, in the search between them",
+                $"circuit-transient scan {ShellWord.Of(file)} {options.Asked}{options.Study.FolderAsked}",
+                streams);
+            throw;
+        }
+
+        void Count(int solved)
+        {
+            var count = Interlocked.Add(ref done, solved);
+            if (count < all)
+            {
+                progress.Report("points", count, all);
+            }
+            else
+            {
+                progress.Report("searching between the points", 0, 0);
+            }
+        }
+    }
+
+    private int HandOver(string file, ScanResult result, CircuitFile reading)
+    {
         var points = result.Points.Concat(result.Scatter?.Points ?? []).ToArray();
         if (points.All(p => p.Found is null))
         {
@@ -51,19 +106,6 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
             result.UnsolvedCount > 0 ? ExitStatus.NoUniqueSolution
                 : result.AllHold ? ExitStatus.Success
                 : ExitStatus.RequirementBroken);
-
-        void Count()
-        {
-            var count = Interlocked.Increment(ref done);
-            if (count < all)
-            {
-                progress.Report("points", count, all);
-            }
-            else
-            {
-                progress.Report("searching between the points", 0, 0);
-            }
-        }
     }
 
     private ImmutableArray<OutputFile> Files(

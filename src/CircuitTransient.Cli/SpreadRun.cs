@@ -26,22 +26,10 @@ public sealed class SpreadRun(
             return refusal;
         }
 
-        var partial = delivery.Folder is { } root
-            ? Path.Combine(OutputFolder.For(root, file), SpreadPartial.Name)
-            : null;
-        if (resumes && (partial is null || !File.Exists(partial)))
+        var partial = StudyPartial.In(delivery.Folder, file, "spread", "draws");
+        if (partial.Refusal(resumes, streams) is { } unresumed)
         {
-            streams.Complain(partial is null
-                ? "`--resume` needs the folder of results, and `--no-files` wants none"
-                : $"there is nothing to go on with: {partial} does not exist");
-            return ExitStatus.Mistake;
-        }
-
-        if (!resumes && partial is not null && File.Exists(partial))
-        {
-            streams.Error.WriteLine(
-                $"{partial} holds unfinished draws, which this run replaces; `--resume` would go on with "
-                + "them");
+            return unresumed;
         }
 
         var reading = CircuitFile.Read(file, streams);
@@ -70,7 +58,8 @@ public sealed class SpreadRun(
     }
 
     private int Study(
-        string file, TransientResult nominal, CircuitFile reading, string? partial, StudyProgress progress)
+        string file, TransientResult nominal, CircuitFile reading, StudyPartial partial,
+        StudyProgress progress)
     {
         var varied = VariedCircuit.Of(nominal.Circuit, [new EveryTolerance()], reading.ReadBeside);
         if (varied.Value is not { Values.IsEmpty: false } values)
@@ -80,46 +69,40 @@ public sealed class SpreadRun(
             return ExitStatus.Mistake;
         }
 
-        var study = new SpreadStudy(values, nominal, options, Show, cancellation);
-        if (resumes && SpreadPartial.Load(
-            File.ReadAllBytes(partial!), study, nominal.Circuit.Source.Sha256, options) is { } refusal)
+        var identity = PartialIdentity.Of(reading, Asked);
+        if (resumes && partial.Refusal(identity, streams) is { } refusal)
         {
             progress.Dispose();
-            streams.Complain($"{partial} cannot be taken up: {refusal}; without `--resume` the study "
-                + "begins anew and replaces it");
-            return ExitStatus.Mistake;
+            return refusal;
         }
 
-        SpreadResult result;
+        var study = new SpreadStudy(values, nominal, options, Show, cancellation);
+        if (resumes)
+        {
+            partial.Load(identity, study.LoadDraws);
+        }
+
         try
         {
-            result = study.Finish(Show, SpreadPlot.Details(nominal));
+            var result = study.Finish(Show, SpreadPlot.Details(nominal));
+            progress.Dispose();
+            return HandOver(file, result, reading, partial);
         }
-        catch (OperationCanceledException) when (partial is not null && study.DrawsDone > 0)
+        catch (OperationCanceledException) when (partial.IsWanted && study.DrawsDone > 0)
         {
             progress.Dispose();
-            Leave(file, study, nominal.Circuit.Source.Sha256, partial);
+            partial.Leave(
+                identity, study.SaveDraws, $"{study.DrawsDone:N0} of {options.Draws:N0} draws",
+                $"circuit-transient spread {ShellWord.Of(file)} {Asked}{delivery.FolderAsked}", streams);
             throw;
         }
-
-        progress.Dispose();
-        return HandOver(file, result, reading, partial);
 
         void Show(SpreadProgress p) => progress.Report(p.Stage, p.Done, p.All);
     }
 
-    private void Leave(string file, SpreadStudy study, string sha256, string partial)
-    {
-        Directory.CreateDirectory(Path.GetDirectoryName(partial)!);
-        using var unfinished = new UnfinishedFile(partial, SpreadPartial.Write(study, sha256, options));
-        unfinished.Finish();
-        var folder = delivery.Folder == "output" ? "" : $" --out {delivery.Folder}";
-        streams.Error.WriteLine(
-            $"stopped after {study.DrawsDone:N0} of {options.Draws:N0} draws; go on with `circuit-transient "
-            + $"spread {file} --draws {options.Draws} --seed {options.Seed}{folder} --resume`");
-    }
+    private string Asked => $"--draws {options.Draws} --seed {options.Seed}";
 
-    private int HandOver(string file, SpreadResult result, CircuitFile reading, string? partial)
+    private int HandOver(string file, SpreadResult result, CircuitFile reading, StudyPartial partial)
     {
         foreach (var warning in result.Nominal.Warnings)
         {
@@ -133,9 +116,9 @@ public sealed class SpreadRun(
         status = new StudyDelivery(delivery, streams, cancellation).HandOver(
             file, () => SpreadFiles.Of(result, CommandFor(file)), SpreadJson.Write(result),
             written => SpreadSummary.Write(result, written, streams.IsColoured), status);
-        if (partial is not null && File.Exists(partial) && status != ExitStatus.FileTrouble)
+        if (status != ExitStatus.FileTrouble)
         {
-            File.Delete(partial);
+            partial.Remove();
         }
 
         return worstFile is null ? status : Math.Max(status, WriteWorst(result, reading, worstFile));
@@ -158,10 +141,8 @@ public sealed class SpreadRun(
 
     private string CommandFor(string file)
     {
-        var name = Path.GetFileName(file);
-        var isPlain = name.All(c => char.IsAsciiLetterOrDigit(c) || c is '.' or '-' or '_');
         var draws = options.Draws == SpreadOptions.UsualDraws ? "" : $" --draws {options.Draws}";
         var seed = options.Seed == 1 ? "" : $" --seed {options.Seed}";
-        return $"circuit-transient spread {(isPlain ? name : $"\"{name}\"")}{draws}{seed}";
+        return $"circuit-transient spread {ShellWord.Of(Path.GetFileName(file))}{draws}{seed}";
     }
 }

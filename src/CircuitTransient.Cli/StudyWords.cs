@@ -9,7 +9,7 @@ internal sealed class StudyWords
     {
         Description = "Folder of the results; each circuit gets a folder of its own in it.",
         HelpName = "DIR",
-        DefaultValueFactory = _ => "output",
+        DefaultValueFactory = _ => StudyOptions.UsualFolder,
     };
 
     private readonly Option<bool> json = new("--json") { Description = "Print the study's document." };

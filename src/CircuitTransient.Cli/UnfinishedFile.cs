@@ -12,14 +12,23 @@ public sealed class UnfinishedFile : IDisposable
     private readonly string temporaryPath;
 
     /// <summary>Writes the whole content beside its place.</summary>
-    public UnfinishedFile(string path, ReadOnlySpan<byte> content)
+    public UnfinishedFile(string path, ReadOnlyMemory<byte> content)
+        : this(path, file => file.Write(content.Span))
+    {
+    }
+
+    /// <summary>Writes the whole content beside its place.</summary>
+    /// <param name="path">Its place.</param>
+    /// <param name="write">Writes the content.</param>
+    public UnfinishedFile(string path, Action<Stream> write)
     {
         this.path = path;
         temporaryPath = $"{path}.{Environment.ProcessId}.unfinished";
         Unfinished[temporaryPath] = 0;
         try
         {
-            File.WriteAllBytes(temporaryPath, content);
+            using var file = File.Create(temporaryPath);
+            write(file);
         }
         catch
         {

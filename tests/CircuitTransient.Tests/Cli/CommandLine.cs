@@ -44,6 +44,16 @@ public sealed class CommandLine : IDisposable
         return new CommandLineAnswer(status, output.ToString(), error.ToString());
     }
 
+    /// <summary>Puts the unfinished work of a study into the folder of results.</summary>
+    public void Leave(string study, string stem, string sha256, string asked, Action<BinaryWriter> save)
+    {
+        using var error = new StringWriter();
+        using var streams = new Streams(TextWriter.Null, error);
+        StudyPartial.In(Results, $"{stem}.cause", study, "work")
+            .Leave(new PartialIdentity(sha256, "", asked), save, "a part", "the command", streams);
+        Assert.StartsWith("stopped after a part; go on with `the command --resume`", error.ToString());
+    }
+
     /// <inheritdoc/>
     public void Dispose() => folder.Delete(recursive: true);
 }

@@ -1,7 +1,9 @@
 using System.Text.Json;
 using CircuitTransient.Cli;
 using CircuitTransient.Reports.Studies;
+using CircuitTransient.Studies.Scans;
 using CircuitTransient.Tests.Reports;
+using CircuitTransient.Tests.Studies.Scans;
 
 namespace CircuitTransient.Tests.Cli;
 
@@ -18,6 +20,8 @@ public sealed class ScanTests : IDisposable
         require voltage of c at most 80 V because "the input's limit"
         until 200 µs
         """;
+
+    private const string Range = "R from 50 mΩ to 1 Ω in 4 steps";
 
     private static readonly DocumentSchema Schema = new(ScanJson.Schema);
 
@@ -143,6 +147,87 @@ public sealed class ScanTests : IDisposable
         Assert.Equal(ExitStatus.NoUniqueSolution, run.Status);
         Assert.Contains("One of 5 points has no solution.", run.Output.Replace("\n", " "));
         Assert.Contains("  E = 1.000: ", run.Output);
+    }
+
+    [Theory]
+    [InlineData(3)] // of the five points
+    [InlineData(5)] // in the search between them
+    public void An_unfinished_scan_is_gone_on_with_to_the_same_bytes_and_its_file_goes(int solved)
+    {
+        Scan("--part", Range, "--quiet");
+        var whole = commandLine.Written.ToDictionary(name => name, Content);
+        LeaveUnfinished(solved);
+
+        var resumed = Scan("--part", Range, "--quiet", "--resume");
+
+        Assert.Equal((ExitStatus.RequirementBroken, ""), (resumed.Status, resumed.Error));
+        Assert.Equal(whole.Keys, commandLine.Written);
+        Assert.All(whole, file => Assert.Equal(file.Value, Content(file.Key)));
+
+        byte[] Content(string name) => File.ReadAllBytes(Path.Combine(commandLine.Results, name));
+    }
+
+    [Theory]
+    [InlineData("100 mΩ", "110 mΩ", Range, "it is of another circuit, or the circuit has changed since")]
+    [InlineData("100 mΩ", "100 mΩ", "R from 50 mΩ to 1 Ω in 3 steps",
+        $"it was asked for --part '{Range}', which goes on with it")]
+    public void An_unfinished_scan_of_something_else_is_refused(
+        string before, string after, string range, string reason)
+    {
+        LeaveUnfinished(solved: 3);
+        var circuit = commandLine.Circuit(
+            "plant.cause", Ringing.Replace(before, after, StringComparison.Ordinal));
+
+        var run = commandLine.Run(
+            "scan", circuit, "--out", commandLine.Results, "--part", range, "--resume");
+
+        Assert.Equal((ExitStatus.Mistake, ""), (run.Status, run.Output));
+        Assert.Contains($"scan.partial cannot be taken up: {reason}; without `--resume`", run.Error);
+        Assert.Equal(["plant/scan.partial"], commandLine.Written);
+    }
+
+    [Fact]
+    public void A_new_scan_replaces_an_unfinished_one_and_says_so()
+    {
+        LeaveUnfinished(solved: 3);
+
+        var run = Scan("--part", Range, "--quiet");
+
+        Assert.Contains(
+            "scan.partial holds unfinished points, which this run replaces; `--resume`", run.Error);
+        Assert.DoesNotContain("plant/scan.partial", commandLine.Written);
+    }
+
+    [Theory]
+    [InlineData("error: there is nothing to go on with: ", "--resume")]
+    [InlineData("error: `--resume` needs the folder of results", "--resume", "--no-files")]
+    public void Nothing_can_be_gone_on_with_where_nothing_was_left(string message, params string[] words)
+    {
+        var run = Scan(["--part", Range, .. words]);
+
+        Assert.Equal((ExitStatus.Mistake, ""), (run.Status, run.Output));
+        Assert.StartsWith(message, run.Error);
+    }
+
+    /// <summary>What an interruption leaves after some points.</summary>
+    private void LeaveUnfinished(int solved)
+    {
+        using var stop =
+            CancellationTokenSource.CreateLinkedTokenSource(TestContext.Current.CancellationToken);
+        var plan = Scanning.Plan(Ringing, ("--part", Range)).Value!;
+        var memory = new ScanMemory();
+        var left = solved;
+        Assert.ThrowsAny<OperationCanceledException>(() => Scanner.Run(plan, memory, Count, stop.Token));
+        commandLine.Leave(
+            "scan", "plant", plan.Varied.Circuit.Source.Sha256, $"--part '{Range}'", memory.Save);
+
+        void Count(int more)
+        {
+            if (Interlocked.Add(ref left, -more) <= 0)
+            {
+                stop.Cancel();
+            }
+        }
     }
 
     private CommandLineAnswer Scan(params string[] words) => commandLine.Run(

@@ -35,6 +35,7 @@ public static class SpreadJson
         });
         json.Object("search", () => WriteAccount(json, spread));
         json.Objects("figures", spread.Figures, figure => WriteFigure(json, spread, figure));
+        SpreadJumps.Write(json, spread);
         WriteWorst(json, spread);
         SpreadDoubts.Write(json, spread);
         SensitivityJson.Write(json, spread);

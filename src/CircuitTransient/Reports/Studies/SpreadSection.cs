@@ -15,7 +15,8 @@ public static class SpreadSection
         return new StudySection("Tolerances", Markup.Of($"""
             <p class="lead">{SpreadWords.Verdict(spread)}</p>
             {Judged(spread)}{Doubts(spread)}{Worst(spread)}
-            <p>{SpreadWords.Account(spread)}</p>
+            <p>{SpreadWords.Account(spread)} {SpreadJumps.Account(spread)}</p>
+            {SpreadJumps.Section(spread)}
             <div class="wide"><figure class="picture">{HtmlReport.Themed(SpreadPlot.Draw(spread, fonts))}
             </figure></div>
             {Draws(spread)}{Extremes(spread)}{SensitivitySection.Of(spread)}

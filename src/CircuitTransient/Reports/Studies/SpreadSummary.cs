@@ -31,6 +31,7 @@ public static partial class SpreadSummary
         }
 
         WriteWorst(text, spread);
+        SpreadJumps.Write(text, spread);
         WriteExtremes(text, spread);
         WriteDraws(text, spread);
         WriteDrivers(text, spread);
@@ -105,6 +106,7 @@ public static partial class SpreadSummary
 
         text.Blank();
         text.Paragraph(SpreadWords.Account(spread), indent: 0, hanging: 2);
+        text.Paragraph(SpreadJumps.Account(spread), indent: 0, hanging: 2);
         if (spread.Account.UnsolvablePoint is { } point)
         {
             var values = spread.Varied.Values.Select((v, i) => $"{v.Name} {Number(point[i], v.Unit)}");

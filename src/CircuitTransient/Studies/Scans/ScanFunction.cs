@@ -13,6 +13,7 @@ internal sealed class ScanFunction
 {
     private readonly VariedCircuit varied;
     private readonly ImmutableArray<StudyFigure> figures;
+    private readonly ScanMemory memory;
     private readonly CancellationToken cancellation;
     private readonly LinearRanges linear;
 
@@ -20,9 +21,10 @@ internal sealed class ScanFunction
     private readonly ImmutableArray<bool> isIntegrated;
 
     public ScanFunction(
-        VariedCircuit varied, ImmutableArray<StudyFigure> figures, CancellationToken cancellation)
+        VariedCircuit varied, ImmutableArray<StudyFigure> figures, ScanMemory memory,
+        CancellationToken cancellation)
     {
-        (this.varied, this.figures, this.cancellation) = (varied, figures, cancellation);
+        (this.varied, this.figures, this.memory, this.cancellation) = (varied, figures, memory, cancellation);
         linear = new LinearRanges(varied.Circuit);
         isIntegrated = [.. figures.Select(f => IsIntegrated(varied.Circuit, f))];
     }
@@ -32,6 +34,22 @@ internal sealed class ScanFunction
     /// <param name="at">The scanned ones among them.</param>
     /// <param name="axis">The value whose slopes are wanted; −1 for none.</param>
     public ScanPoint Point(double[] values, ImmutableArray<double> at, int axis = -1)
+    {
+        if (Recalled(values, at, axis) is { } known)
+        {
+            return known;
+        }
+
+        var point = Solved(values, at, axis);
+        memory.Keep(values, axis, point);
+        return point;
+    }
+
+    /// <summary>A point that was solved before; null where it was not.</summary>
+    public ScanPoint? Recalled(double[] values, ImmutableArray<double> at, int axis = -1) =>
+        memory.Point(values, axis) is { } known ? known with { At = at } : null;
+
+    private ScanPoint Solved(double[] values, ImmutableArray<double> at, int axis)
     {
         var solved = Solve(values);
         if (solved.Value is not { } solution)
@@ -54,8 +72,8 @@ internal sealed class ScanFunction
     {
         var values = (double[])others.Clone();
         values[axis] = x;
-        return new SlopedSample(
-            x, Solve(values).Value is { } solution ? linear.Used(solution)[index] : double.NaN, double.NaN);
+        return memory.Look(values, axis, -1 - index, () => new SlopedSample(
+            x, Solve(values).Value is { } solution ? linear.Used(solution)[index] : double.NaN, double.NaN));
     };
 
     /// <summary>Whether at a point some part is past the range its value is good for.</summary>
@@ -72,14 +90,20 @@ internal sealed class ScanFunction
     {
         var values = (double[])others.Clone();
         values[axis] = x;
+        return memory.Look(values, axis, figure, () => Look(values, axis, figure));
+    };
+
+    private SlopedSample Look(double[] values, int axis, int figure)
+    {
         if (Solve(values).Value is not { } solution)
         {
-            return new SlopedSample(x, double.NaN, double.NaN);
+            return new SlopedSample(values[axis], double.NaN, double.NaN);
         }
 
         var (found, slopes) = Derived(solution, values, axis, [figure], _ => true);
-        return new SlopedSample(x, Judged(figures[figure], found, found.Values[0]), slopes[0]);
-    };
+        return new SlopedSample(
+            values[axis], Judged(figures[figure], found, found.Values[0]), slopes[0]);
+    }
 
     /// <summary>A figure as the searches take it: infinite where what is judged breaks without limit, NaN
     /// where there is none.</summary>

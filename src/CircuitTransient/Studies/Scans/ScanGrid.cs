@@ -21,18 +21,36 @@ internal static class ScanGrid
 
     /// <summary>Solves all of them.</summary>
     /// <param name="places">The scanned values of each point.</param>
-    /// <param name="solve">Solves one point.</param>
-    /// <param name="solved">Told after each point, from any thread.</param>
+    /// <param name="axis">The value whose slopes are wanted; −1 for none.</param>
+    /// <param name="put">All values at a point.</param>
+    /// <param name="function">Remembers or solves it.</param>
+    /// <param name="solved">Told how many are known beforehand, then of each one solved, from any
+    /// thread.</param>
     /// <param name="cancellation">Stops the work.</param>
     public static ImmutableArray<ScanPoint> Solve(
-        ImmutableArray<ImmutableArray<double>> places, Func<ImmutableArray<double>, ScanPoint> solve,
-        Action solved, CancellationToken cancellation)
+        ImmutableArray<ImmutableArray<double>> places, int axis,
+        Func<ImmutableArray<double>, double[]> put, ScanFunction function, Action<int> solved,
+        CancellationToken cancellation)
     {
         var points = new ScanPoint[places.Length];
-        Parallel.For(0, places.Length, new ParallelOptions { CancellationToken = cancellation }, i =>
+        var left = new List<int>();
+        for (var i = 0; i < points.Length; i++)
         {
-            points[i] = solve(places[i]);
-            solved();
+            if (function.Recalled(put(places[i]), places[i], axis) is { } known)
+            {
+                points[i] = known;
+            }
+            else
+            {
+                left.Add(i);
+            }
+        }
+
+        solved(points.Length - left.Count);
+        Parallel.ForEach(left, new ParallelOptions { CancellationToken = cancellation }, i =>
+        {
+            points[i] = function.Point(put(places[i]), places[i], axis);
+            solved(1);
         });
         return ImmutableCollectionsMarshal.AsImmutableArray(points);
     }

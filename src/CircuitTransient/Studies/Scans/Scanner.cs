@@ -20,15 +20,16 @@ public sealed class Scanner
     private readonly ImmutableArray<StudyFigure> figures;
     private readonly double[] nominal;
     private readonly ScanFunction function;
-    private readonly Action solved;
+    private readonly Action<int> solved;
     private readonly CancellationToken cancellation;
 
-    private Scanner(ScanPlan plan, Action solved, CancellationToken cancellation)
+    private Scanner(
+        ScanPlan plan, ScanMemory memory, Action<int> solved, CancellationToken cancellation)
     {
         (this.plan, this.solved, this.cancellation) = (plan, solved, cancellation);
         figures = [.. StudyFigures.Of(plan.Varied.Circuit).Where(IsWanted)];
         nominal = [.. plan.Varied.Values.Select(v => v.Nominal)];
-        function = new ScanFunction(plan.Varied, figures, cancellation);
+        function = new ScanFunction(plan.Varied, figures, memory, cancellation);
     }
 
     /// <summary>How many points a plan solves before it searches between them.</summary>
@@ -38,10 +39,13 @@ public sealed class Scanner
 
     /// <summary>Runs a plan.</summary>
     /// <param name="plan">What to scan.</param>
-    /// <param name="solved">Told after each point, from any thread.</param>
+    /// <param name="memory">What the same plan has solved before, and gets what is solved now.</param>
+    /// <param name="solved">Told how many points were solved before, then of each one, from any
+    /// thread.</param>
     /// <param name="cancellation">Stops the work.</param>
-    public static ScanResult Run(ScanPlan plan, Action solved, CancellationToken cancellation = default) =>
-        new Scanner(plan, solved, cancellation).Run();
+    public static ScanResult Run(
+        ScanPlan plan, ScanMemory memory, Action<int> solved, CancellationToken cancellation = default) =>
+        new Scanner(plan, memory, solved, cancellation).Run();
 
     /// <summary>Node voltages that are only observed because nothing else was would crowd out what is
     /// required.</summary>
@@ -55,7 +59,8 @@ public sealed class Scanner
         var points = plan.Axes.IsEmpty
             ? []
             : FigureSizes.Cleaned(
-                figures, ScanGrid.Solve(ScanGrid.Places(plan.Axes), At, solved, cancellation));
+                figures, ScanGrid.Solve(
+                    ScanGrid.Places(plan.Axes), Sloped, Put, function, solved, cancellation));
         var findings = plan.Axes.Length switch
         {
             0 => [],
@@ -90,7 +95,7 @@ public sealed class Scanner
         }
 
         var places = Between(first).SelectMany(_ => Between(second), (a, b) => ImmutableArray.Create(a, b));
-        return ScanGrid.Solve([.. places], At, () => { }, cancellation);
+        return ScanGrid.Solve([.. places], -1, Put, function, _ => { }, cancellation);
 
         static IEnumerable<double> Between(ScanAxis axis) =>
             axis.Values.Zip(axis.Values.Skip(1), (a, b) => (a + b) / 2);
@@ -132,12 +137,14 @@ public sealed class Scanner
         }
     }
 
-    private ScanPoint At(ImmutableArray<double> at)
+    /// <summary>The axis whose slopes are taken at every point; −1 where they are not.</summary>
+    private int Sloped => plan.Axes is [var only] && only.Values.Length <= MostSloped ? 0 : -1;
+
+    private double[] Put(ImmutableArray<double> at)
     {
         var values = (double[])nominal.Clone();
         at.CopyTo(values);
-        var isSloped = plan.Axes is [var only] && only.Values.Length <= MostSloped;
-        return function.Point(values, at, isSloped ? 0 : -1);
+        return values;
     }
 
     private ImmutableArray<FigureScan> Between(ScanAxis axis, int index, ImmutableArray<ScanPoint> points)
@@ -179,8 +186,8 @@ public sealed class Scanner
                     .Select(i => scatter.From + ((scatter.To - scatter.From) * i / ScatterSteps)),
             ]);
         var points = FigureSizes.Cleaned(figures, ScanGrid.Solve(
-            ScanGrid.Places([axis]),
-            at => function.Point(Put(scatter.Index, at[0]), at, scatter.Index), solved, cancellation));
+            ScanGrid.Places([axis]), scatter.Index, at => Put(scatter.Index, at[0]), function, solved,
+            cancellation));
         var scans = Completed(Between(axis, scatter.Index, points), points, scatter.Index);
         return new ScatterResult(
             scatter, axis, points,

@@ -7,11 +7,17 @@ namespace CircuitTransient.Studies.Spreads;
 internal sealed class CornerSearch(PointBatch batch, ValueRanges ranges, BestPoints best)
 {
     private const int CornersInBatch = 4096;
+
     /// <summary>How many random corners a search starts from.</summary>
     public const int RandomCorners = 512;
 
     private const int MostRounds = 24;
     private const ulong Stream = 0x5EED; // fixed: the extremes do not depend on the seed of the draws
+
+    private readonly List<double[]> visited = [];
+
+    /// <summary>The corners whose neighbours the search went through, in its order.</summary>
+    public IReadOnlyList<double[]> Visited => visited;
 
     /// <summary>Solves every corner.</summary>
     public void SolveAll(Action<long> report)
@@ -97,6 +103,7 @@ internal sealed class CornerSearch(PointBatch batch, ValueRanges ranges, BestPoi
                 if (best[f, sign].Point is { Length: > 0 } point && seen.Add(string.Join(' ', point)))
                 {
                     AddExchanges(points, point);
+                    visited.Add(point);
                 }
             }
         }

@@ -17,7 +17,8 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
     private double largestCorrection;
 
     /// <summary>Searches.</summary>
-    public (SearchAccount Account, ImmutableArray<FigureRange> Figures) Run(Action<SpreadProgress> report)
+    public (SearchAccount Account, ImmutableArray<FigureRange> Figures, JumpFindings Jumps) Run(
+        Action<SpreadProgress> report)
     {
         var alone = Alone();
         var all = ranges.Count <= (batch.WhyExact is null
@@ -52,6 +53,11 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
             figures.Add(Range(f, alone));
         }
 
+        report(new SpreadProgress("between neighbouring corners", 0, 0));
+        var jumps = new EdgeSurvey(batch, ranges).Run(
+            corner.SelectMany(c => new[] { c.Greatest.Point, c.Least.Point }).Where(p => p.Length > 0)
+                .Concat(corners.Visited.Reverse()),
+            cornerPoints);
         var worseInside = figures.SelectMany(f => new[] { f.Least, f.Greatest })
             .Count(p => p is { IsCorner: false });
         return (
@@ -59,7 +65,7 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
                 count, all, cornerPoints, inside, worseInside, best.Unsolvable,
                 best.UnsolvablePoint is { } point ? [.. point] : null, largestCorrection,
                 batch.WhyExact),
-            figures.ToImmutable());
+            figures.ToImmutable(), jumps);
     }
 
     /// <summary>Every value alone at its lower and at its upper end, after all at nominal.</summary>

@@ -9,7 +9,6 @@ internal sealed class PointBatch
 {
     private const int PointsInPiece = 16; // enough to spread the cost of handing them out
 
-    private readonly int threads;
     private readonly ConcurrentBag<FigureEvaluator> idle = [];
 
     /// <summary>Prepares the fast evaluation.</summary>
@@ -21,7 +20,7 @@ internal sealed class PointBatch
         VariedCircuit varied, ImmutableArray<StudyFigure> figures, int threads,
         CancellationToken cancellation)
     {
-        (Varied, Figures, Cancellation, this.threads) = (varied, figures, cancellation, threads);
+        (Varied, Figures, Cancellation, Threads) = (varied, figures, cancellation, threads);
         (Kernel, var reason) = DrawKernel.For(varied, figures, cancellation);
         var unserved = Kernel?.Unserved.Select((why, f) => why is null ? null : $"{figures[f].Name}: {why}");
         WhyExact = reason ?? unserved!.FirstOrDefault(words => words is not null);
@@ -38,6 +37,9 @@ internal sealed class PointBatch
 
     /// <summary>Stops the work.</summary>
     public CancellationToken Cancellation { get; }
+
+    /// <summary>How many threads work.</summary>
+    public int Threads { get; }
 
     /// <summary>Why some or all figures go to the exact engine at every point; null where none
     /// does.</summary>
@@ -58,7 +60,7 @@ internal sealed class PointBatch
             new double[count * Figures.Length], new double[count * Figures.Length], new bool[count],
             Figures.Length);
         var pieces = (count + PointsInPiece - 1) / PointsInPiece;
-        if (pieces <= 1 || threads == 1)
+        if (pieces <= 1 || Threads == 1)
         {
             Solve(points, found, 0, count);
             return found;
@@ -66,7 +68,7 @@ internal sealed class PointBatch
 
         var options = new ParallelOptions
         {
-            MaxDegreeOfParallelism = threads,
+            MaxDegreeOfParallelism = Threads,
             CancellationToken = Cancellation,
         };
         Parallel.For(0, pieces, options, piece => Solve(

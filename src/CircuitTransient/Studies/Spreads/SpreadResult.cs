@@ -10,12 +10,13 @@ namespace CircuitTransient.Studies.Spreads;
 /// <param name="Nominal">The circuit with every value nominal.</param>
 /// <param name="Account">What was solved to find the extremes.</param>
 /// <param name="Figures">Every figure followed, with its extremes.</param>
+/// <param name="Jumps">What jumps between neighbouring corners.</param>
 /// <param name="Worst">The worst case, taken apart; null where no figure has one.</param>
 /// <param name="Draws">The random draws; null where none were asked for.</param>
 /// <param name="Sensitivities">The exact derivatives with every value nominal.</param>
 public sealed record SpreadResult(
     VariedCircuit Varied, SpreadOptions Options, TransientResult Nominal, SearchAccount Account,
-    ImmutableArray<FigureRange> Figures, WorstCase? Worst, DrawFindings? Draws,
+    ImmutableArray<FigureRange> Figures, JumpFindings Jumps, WorstCase? Worst, DrawFindings? Draws,
     SensitivityFindings Sensitivities)
 {
     /// <summary>Whether every requirement and rating holds with every tolerance, as far as the search

@@ -15,6 +15,7 @@ public sealed class SpreadStudy
     private readonly CancellationToken cancellation;
     private readonly SearchAccount account;
     private readonly ImmutableArray<FigureRange> figures;
+    private readonly JumpFindings jumps;
     private readonly SensitivityFindings sensitivities;
     private readonly DrawStudy? draws;
 
@@ -30,7 +31,7 @@ public sealed class SpreadStudy
     {
         (this.nominal, this.options, this.cancellation) = (nominal, options, cancellation);
         batch = new PointBatch(varied, StudyFigures.Of(varied.Circuit), options.Threads, cancellation);
-        (account, figures) = new ExtremeStudy(batch, nominal).Run(report);
+        (account, figures, jumps) = new ExtremeStudy(batch, nominal).Run(report);
         report(new SpreadProgress("sensitivities", 0, 0));
         sensitivities = SensitivityFindings.Of(varied, batch.Figures, cancellation);
         draws = options.Draws == 0 ? null : new DrawStudy(batch, options, [.. figures.Select(Between)]);
@@ -51,7 +52,7 @@ public sealed class SpreadStudy
             batch, nominal, details.IsDefault ? [] : details,
             draws.FirstPoints(Envelopes.DrawCount(nominal, options.Draws)), options.Threads);
         return new SpreadResult(
-            batch.Varied, options, nominal, account, figures, Worst(), draws?.Finish(bands),
+            batch.Varied, options, nominal, account, figures, jumps, Worst(), draws?.Finish(bands),
             sensitivities);
     }
 
@@ -60,15 +61,6 @@ public sealed class SpreadStudy
 
     /// <summary>Takes up draws that were saved by the same study.</summary>
     public void LoadDraws(BinaryReader from) => draws?.Load(from);
-
-    /// <summary>Everything the saved draws depend on, in one line each: another study's are not taken
-    /// up.</summary>
-    public ImmutableArray<string> Inputs =>
-    [
-        .. batch.Varied.Values.Select(v =>
-            $"{v.Name} {v.Tolerance!.Lowest:R} {v.Tolerance.Highest:R} {v.Tolerance.IsNormal}"),
-        .. figures.Select(f => $"{f.Figure.Name} {f.Nominal:R} {f.Least?.Value:R} {f.Greatest?.Value:R}"),
-    ];
 
     /// <summary>The range over which a figure's values are counted; an interior extreme may still lie a
     /// little outside what the search saw.</summary>

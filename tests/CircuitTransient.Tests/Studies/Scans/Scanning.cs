@@ -24,7 +24,7 @@ internal static class Scanning
     {
         var plan = Plan(circuit, said);
         Assert.True(plan.Succeeded, Messages(plan.Diagnostics));
-        return Scanner.Run(plan.Value, () => { }, TestContext.Current.CancellationToken);
+        return Scanner.Run(plan.Value, new ScanMemory(), _ => { }, TestContext.Current.CancellationToken);
     }
 
     /// <summary>What was found of a figure.</summary>
