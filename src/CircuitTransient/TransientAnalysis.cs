@@ -23,23 +23,17 @@ public static class TransientAnalysis
         Func<string, Outcome<SourceText>> readBeside,
         CancellationToken cancellation = default)
     {
-        var checkedCircuit = Check(source, readBeside);
-        if (!checkedCircuit.Succeeded)
+        var circuit = Check(source, readBeside);
+        var causes = circuit.Then(c => options.By == Breakdown.Edge
+            ? CauseList.ByEdge(c)
+            : new(CauseList.FromStart(c), []));
+        if (!circuit.Succeeded || !causes.Succeeded)
         {
-            return new Mistakes(checkedCircuit.Diagnostics);
+            return new Mistakes(causes.Diagnostics);
         }
 
-        var circuit = checkedCircuit.Value;
-        var (causes, problem) = options.By == Breakdown.Edge
-            ? CauseList.ByEdge(circuit)
-            : (CauseList.FromStart(circuit), null);
-        if (problem is not null)
-        {
-            return new Mistakes([.. checkedCircuit.Diagnostics, problem]);
-        }
-
-        var solution = TransientSolver.Solve(circuit, causes, cancellation);
-        var warnings = checkedCircuit.Diagnostics;
+        var solution = TransientSolver.Solve(circuit.Value, causes.Value, cancellation);
+        var warnings = circuit.Diagnostics;
         return solution.Succeeded
             ? new Solved(ResultBuilder.Measure(solution.Value, warnings, options, cancellation))
             : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
@@ -54,8 +48,9 @@ public static class TransientAnalysis
 
     /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have
     /// no unique solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) =>
-        KnownIntervals.FindUnsolvable(circuit);
+    public static ImmutableArray<Diagnostic> FindUnsolvable(
+        Circuit circuit, CancellationToken cancellation) =>
+        KnownIntervals.FindUnsolvable(circuit, cancellation);
 }
 
 /// <summary>What came of an analysis.</summary>

@@ -14,25 +14,8 @@ public static class ScannedParser
     private static readonly int[] series = [3, 6, 12, 24, 48, 96, 192];
 
     /// <summary>Reads one; errors point into its own text.</summary>
-    public static Outcome<ScannedSyntax> Parse(SourceText source, ScannedKind kind)
-    {
-        var diagnostics = new List<Diagnostic>();
-        var tokens = new List<Token>();
-        if (!new StatementLexer(source).Next(tokens))
-        {
-            var nothing = new TextSpan(0, source.Content.Length);
-            return new(null, [Diagnostic.Error(source, nothing, "nothing is named", FormOf(kind))]);
-        }
-
-        var cursor = new StatementCursor(source, tokens, diagnostics) { Form = FormOf(kind) };
-        var read = Read(cursor, source, kind);
-        if (read is not null && !cursor.IsAtEnd)
-        {
-            cursor.Unexpected("the end");
-        }
-
-        return diagnostics.Count == 0 ? new(read, []) : new(null, [.. diagnostics]);
-    }
+    public static Outcome<ScannedSyntax> Parse(SourceText source, ScannedKind kind) =>
+        OptionText.Parse(source, "nothing is named", FormOf(kind), cursor => Read(cursor, source, kind));
 
     /// <summary>The name of a part, source, switch or value with its index and the assemblies it stands in;
     /// null where an error was reported.</summary>
