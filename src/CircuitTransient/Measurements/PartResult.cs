@@ -3,7 +3,8 @@ using System.Collections.Immutable;
 namespace CircuitTransient.Measurements;
 
 /// <summary>Stresses of a part; null where undetermined or infinite.</summary>
-/// <param name="Energy">Absorbed over the study, joules.</param>
+/// <param name="Energy">In joules: the greatest that a capacitor or coil stores, what any other part absorbs
+/// over the study.</param>
 /// <param name="JouleIntegral">∫ i² dt over the study, A²s.</param>
 public sealed record PartResult(
     string Name, string Kind, TimedValue? PeakVoltage, TimedValue? PeakCurrent, TimedValue? PeakPower,

@@ -104,7 +104,8 @@ internal static class TargetSearch
         DependentSource d => d.Gain,
         VoltageSource s => s.Wave.Scale,
         CurrentSource s => s.Wave.Scale,
-        _ => null,
+        Switch or IdealTransformer => null,
+        _ => throw new System.Diagnostics.UnreachableException($"no value of {part}"),
     };
 
     private static bool Reads(Formula formula, int parameter) => formula switch

@@ -22,7 +22,7 @@ public static class ScannedParser
     internal static string? ReadName(StatementCursor cursor, string what)
     {
         var name = NameParser.ReadPart(cursor, what);
-        return name is null ? null : Written(cursor, name);
+        return name is null ? null : WrittenName.Of(cursor, name);
     }
 
     /// <summary>A switch and what it does: <c>Kmain closes</c>.</summary>
@@ -189,26 +189,5 @@ public static class ScannedParser
                 Span = cursor.SpanFrom(start),
                 Value = isNegative ? -number.Value : number.Value,
             };
-    }
-
-    private static string? Written(StatementCursor cursor, NameSyntax name)
-    {
-        var owner = name.Owner is { } outer ? Written(cursor, outer) : "";
-        if (owner is null)
-        {
-            return null;
-        }
-
-        if (name.Index is { Counter: { } counter } index)
-        {
-            cursor.Error(index.Span, $"there is no counter `{counter}` on the command line",
-                $"write which one, such as `{name.Text}[1]`");
-            return null;
-        }
-
-        var text = name.Index is { } number
-            ? string.Create(CultureInfo.InvariantCulture, $"{name.Text}[{number.Offset}]")
-            : name.Text;
-        return owner.Length > 0 ? $"{owner}/{text}" : text;
     }
 }
