@@ -64,7 +64,8 @@ public static class TransientAnalysis
         var solution = TransientSolver.Solve(circuit.Value, causes, cancellation);
         var warnings = circuit.Diagnostics;
         return solution.Succeeded
-            ? new WrittenOut(ClosedFormBuilder.Study(solution.Value, quantities.Value, cancellation), warnings)
+            ? new WrittenOut(
+                ClosedFormBuilder.Study(solution.Value, quantities.Value, cancellation), warnings)
             : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
     }
 
