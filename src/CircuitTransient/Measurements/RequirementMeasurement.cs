@@ -27,6 +27,7 @@ internal sealed class RequirementMeasurement(
             requirement.Statement, requirement.Reason, requirement.Unit, line, verdict.Holds, verdict.Worst,
             verdict.Margin)
         {
+            Quantity = requirement.Judged,
             IsJudged = verdict.IsJudged,
         };
     }

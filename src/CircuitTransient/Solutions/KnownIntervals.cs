@@ -10,7 +10,8 @@ public static class KnownIntervals
 {
     /// <summary>An error for each set of positions, met at a known instant, whose equations have no unique
     /// solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit)
+    public static ImmutableArray<Diagnostic> FindUnsolvable(
+        Circuit circuit, CancellationToken cancellation)
     {
         var layout = new NetworkLayout(circuit);
         var timeline = new Timeline(circuit);
@@ -19,13 +20,11 @@ public static class KnownIntervals
         double now = 0;
         while (true)
         {
-            var waiting = timeline.Waiting().Where(w => w.Event is { Trigger: AtInstant, CutAtMost: null })
-                .Select(w => (w.Reference, Due: timeline.Due(w.Reference, w.Event))).ToArray();
-            var next = waiting.Select(w => w.Due).DefaultIfEmpty(double.PositiveInfinity).Min();
+            cancellation.ThrowIfCancellationRequested();
+            var (next, events) = timeline.NextFixed();
             if (next <= now)
             {
-                timeline.Act(now, waiting.Where(w => w.Due <= now).Select(w => w.Reference),
-                    isDecidedByAnswer: false);
+                timeline.Act(now, events, isDecidedByAnswer: false);
                 continue;
             }
 

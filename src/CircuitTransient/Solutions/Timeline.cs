@@ -54,6 +54,30 @@ internal sealed class Timeline
         return Math.Max(previous, instant);
     }
 
+    /// <summary>The next instant that does not depend on the answer, and the events that act then; infinity
+    /// where nothing more is fixed to happen.</summary>
+    public (double Due, ImmutableArray<EventReference> Events) NextFixed()
+    {
+        var due = double.PositiveInfinity;
+        var events = ImmutableArray.CreateBuilder<EventReference>();
+        foreach (var (reference, declared) in Waiting().Where(w => IsFixed(w.Event)))
+        {
+            var time = Due(reference, declared);
+            if (time < due)
+            {
+                due = time;
+                events.Clear();
+            }
+
+            if (time == due && !double.IsPositiveInfinity(time))
+            {
+                events.Add(reference);
+            }
+        }
+
+        return (due, events.ToImmutable());
+    }
+
     /// <summary>The instant in seconds; infinity while its event has not taken place.</summary>
     public double InstantOf(Instant instant) =>
         instant.After is null ? instant.Delay.Nominal

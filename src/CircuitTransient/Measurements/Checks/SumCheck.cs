@@ -44,11 +44,9 @@ internal static class SumCheck
             : $"not compared beyond {EngineeringNumber.Format(until, "s")}: switches act twice at once");
         return compared == 0
             ? (null, rest ?? "the other route gave no value")
-            : (worst.Select((w, q) => Relative(w, sizes.Of(quantities[q]))).DefaultIfEmpty(0).Max(), rest);
+            : (worst.Select((w, q) => StudySizes.Relative(w, sizes.Of(quantities[q])))
+                .DefaultIfEmpty(0).Max(), rest);
     }
-
-    private static double Relative(double difference, double size) =>
-        difference == 0 ? 0 : size == 0 ? double.PositiveInfinity : difference / size;
 
     private static void Compare(
         TransientSolution solution, Segment segment, double tau, ImmutableArray<Measurand> quantities,
