@@ -74,8 +74,10 @@ public static class ContourInversion
         var points = 0;
         for (var attempt = 0; attempt < MostAttempts && latest > 0; attempt++)
         {
-            var elapsed = latest * Math.Pow(earliest / latest, attempt / (MostAttempts - 1.0));
-            if (!EnclosesSources(inputs, states.AsSpan(storage.Count), elapsed))
+            // as long as the instant that is told says: far from zero it is rounded
+            var elapsed = segment.Start
+                + (latest * Math.Pow(earliest / latest, attempt / (MostAttempts - 1.0))) - segment.Start;
+            if (elapsed <= 0 || !EnclosesSources(inputs, states.AsSpan(storage.Count), elapsed))
             {
                 continue;
             }

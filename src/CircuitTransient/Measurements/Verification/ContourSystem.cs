@@ -52,7 +52,12 @@ internal sealed class ContourSystem
 
         FillRight(z, states, probe);
         right.CopyTo(solution, 0);
-        return lu.Factorise(values) && Solves(0) && Solves(Size) ? solution : default;
+        if (!lu.Factorise(values))
+        {
+            return default;
+        }
+
+        return Refine(0) < 1e-9 && Refine(Size) < 1e-9 ? solution : default;
     }
 
     private double[] Sum(IEnumerable<MatrixElement> elements, int firstSlot)
@@ -66,33 +71,25 @@ internal sealed class ContourSystem
         return [.. sum.Select(value => (double)value)];
     }
 
-    // One of the right-hand sides, refined until what is left of it is rounding of its terms.
-    private bool Solves(int first)
+    // Solves for one of the right-hand sides, refines once and tells what is left of it.
+    private double Refine(int first)
     {
-        const int MostTurns = 4;
-        const double Rounding = 1e-15;
-        const double Enough = 1e-9;
         var x = solution.AsSpan(first, Size);
         lu.Solve(x);
-        var left = Residual(first);
-        for (var turn = 0; turn < MostTurns && left > Rounding; turn++)
+        Residual(first);
+        lu.Solve(residual);
+        for (var i = 0; i < Size; i++)
         {
-            lu.Solve(residual);
-            for (var i = 0; i < Size; i++)
-            {
-                x[i] += residual[i];
-            }
-
-            left = Residual(first);
+            x[i] += residual[i];
         }
 
-        return left < Enough;
+        return Residual(first);
     }
 
-    // Relative to the terms that make it; far down a ladder they fall below all numbers with full digits.
+    // Relative to the largest terms of any row, rows in one scale: where a row's own terms are zero but for
+    // rounding, as round a part that a contact shorts, they measure nothing.
     private double Residual(int first)
     {
-        const double Vanished = 1e-250;
         for (var i = 0; i < Size; i++)
         {
             residual[i] = right[first + i];
@@ -109,13 +106,14 @@ internal sealed class ContourSystem
             }
         }
 
-        var worst = 0.0;
+        var (worst, largest) = (0.0, 0.0);
         for (var i = 0; i < Size; i++)
         {
-            worst = Math.Max(worst, terms[i] < Vanished ? 0 : Complex.Abs(residual[i]) / terms[i]);
+            worst = Math.Max(worst, Complex.Abs(residual[i]) * lu.RowScale(i));
+            largest = Math.Max(largest, terms[i] * lu.RowScale(i));
         }
 
-        return double.IsNaN(worst) ? double.PositiveInfinity : worst;
+        return largest == 0 ? 0 : worst / largest;
     }
 
     private void FillRight(Complex z, ReadOnlySpan<double> states, ReadOnlySpan<double> probe)

@@ -73,6 +73,9 @@ public sealed class SparseLu<T>(SparsePattern pattern)
         }
     }
 
+    /// <summary>The power of two by which a row was multiplied.</summary>
+    internal double RowScale(int row) => scale.Row(row);
+
     /// <summary>The largest magnitude of a solution, each unknown in the scale of its column.</summary>
     internal double ScaledSize(ReadOnlySpan<T> x)
     {
