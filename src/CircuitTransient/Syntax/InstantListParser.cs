@@ -38,7 +38,8 @@ public static class InstantListParser
         return new InstantList(source, instants.ToImmutable());
     }
 
-    private static NumberSyntax? ReadInstant(StatementCursor cursor)
+    /// <summary>One instant; null where an error was reported.</summary>
+    internal static NumberSyntax? ReadInstant(StatementCursor cursor)
     {
         if (cursor.IsSign('-'))
         {
