@@ -13,7 +13,8 @@ public sealed class LapsedEventTests
         var solved = SolvedText.Of("""
             source S at a : 10 V
             resistor R from a to c : 1 Ω
-            switch K from c to ground : closed, opens at 5 ms at next current zero, closes at 10 ms, opens at 20 ms
+            switch K from c to ground : closed, opens at 5 ms at next current zero,
+                closes at 10 ms, opens at 20 ms
             observe current through K
             until 60 ms
             """, 12e-3, 30e-3);
