@@ -62,7 +62,7 @@ internal sealed class CauseReading
     }
 
     private double Since(Measurand quantity, (double From, double To) window) =>
-        curves.IsAccumulated(quantity) ? window.From : 0;
+        CurveBuilder.GatheredFrom(quantity, window.From);
 
     private (Measurand Quantity, Window Window)? Watched(StudyFigure figure)
     {
