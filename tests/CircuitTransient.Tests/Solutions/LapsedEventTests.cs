@@ -1,4 +1,3 @@
-using CircuitTransient.Measurements;
 using CircuitTransient.Tests.OutsideChecks;
 
 namespace CircuitTransient.Tests.Solutions;
