@@ -28,7 +28,8 @@ public static class KnownIntervals
                 continue;
             }
 
-            if (models.Add(string.Concat(timeline.IsClosed.Select(c => c ? '1' : '0'))))
+            if (!timeline.MayHaveTurned(now)
+                && models.Add(string.Concat(timeline.IsClosed.Select(c => c ? '1' : '0'))))
             {
                 found.AddRange(Find(layout, timeline, now, Math.Min(next, circuit.Until ?? next)));
             }

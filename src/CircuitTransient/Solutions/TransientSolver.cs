@@ -71,7 +71,7 @@ public sealed class TransientSolver
 
             var horizon = Growth.Horizon(model, now, stored);
             var until = Math.Min(timeline.NextFixed().Due, Math.Min(end.Time, horizon));
-            var solved = solver.Solve(model, intervals.Count, now, until, stored);
+            var solved = solver.Solve(model, Place(model), now, until, stored);
             var resolution = SameInstant * (double.IsFinite(end.Time) ? end.Time : until);
             if (new DecidedEvents(timeline, watched, resolution).FirstIn(solved) is { } decided
                 && decided.Time < until)
@@ -141,9 +141,19 @@ public sealed class TransientSolver
             return;
         }
 
-        var kept = until < solved[^1].End ? solver.Solve(model, intervals.Count, now, until, stored) : solved;
-        intervals.Add(new SolvedInterval(now, until, model, segments.Count, kept.Length, startsWith,
-            momentary));
+        var place = Place(model);
+        var kept = until < solved[^1].End ? solver.Solve(model, place, now, until, stored) : solved;
+        if (place < intervals.Count)
+        {
+            var last = intervals[place];
+            intervals[place] = last with { Until = until, SegmentCount = last.SegmentCount + kept.Length };
+        }
+        else
+        {
+            intervals.Add(new SolvedInterval(
+                now, until, model, segments.Count, kept.Length, startsWith, momentary));
+        }
+
         segments.AddRange(kept);
         stored = solver.StoredAtEnd(kept[^1]);
         watched.Gather(kept);
@@ -151,6 +161,13 @@ public sealed class TransientSolver
         momentary = [];
         now = until;
     }
+
+    /// <summary>The place of the interval that begins now; that of the last one where nothing switched and it
+    /// goes on.</summary>
+    private int Place(IntervalModel model) =>
+        startsWith.IsEmpty && momentary.IsEmpty && intervals is [.., var last] && last.Model == model
+            ? intervals.Count - 1
+            : intervals.Count;
 
     /// <summary>Sets what every store holds at t = 0⁻, cause by cause; an error where no settled state
     /// exists.</summary>
@@ -204,7 +221,8 @@ public sealed class TransientSolver
                     [.. intervals],
                     [.. segments],
                     [.. timeline.Occurrences],
-                    [.. timeline.Waiting().Select(w => w.Reference)],
-                    [.. layout.Stores.Select((_, k) => initial.Sum(own => (double)own[k]))]),
+                    [.. timeline.Left()],
+                    [.. layout.Stores.Select((_, k) => initial.Sum(own => (double)own[k]))])
+                { Lapsed = [.. timeline.Lapsed] },
                 []);
 }

@@ -41,7 +41,8 @@ internal static class SumCheck
 
         var rest = other.Rest?.Reason ?? (double.IsPositiveInfinity(until)
             ? null
-            : $"not compared beyond {EngineeringNumber.Format(until, "s")}: switches act twice at once");
+            : $"not compared beyond {EngineeringNumber.Format(until, "s")}: a switch acts there at once upon "
+                + "another or upon the start");
         return compared == 0
             ? (null, rest ?? "the other route gave no value")
             : (worst.Select((w, q) => StudySizes.Relative(w, sizes.Of(quantities[q])))
