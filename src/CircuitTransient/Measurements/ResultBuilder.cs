@@ -58,6 +58,8 @@ public sealed class ResultBuilder
         var intervals = solution.Intervals.Select(new IntervalMeasurement(solution, energy).Measure)
             .ToImmutableArray();
         var events = solution.Occurrences.Select(new EventMeasurement(curves).Measure).ToImmutableArray();
+        var followed = options.IsForPage ? FollowedWaves.Of(curves, times, waves.Times) : [];
+        var otherwise = options.IsForPage ? OtherBreakdowns.Of(solution, waves, cancellation) : [];
         var (checks, notJudged) = checking.GetAwaiter().GetResult();
         return new TransientResult(
             circuit,
@@ -78,8 +80,8 @@ public sealed class ResultBuilder
         {
             IsAfterAsked = options.After is not null,
             By = options.By,
-            FollowedWaves = new(() => FollowedWaves.Of(curves, times, waves.Times)),
-            OtherWaves = new(() => OtherBreakdowns.Of(solution, waves, cancellation)),
+            Followed = followed,
+            OtherBreakdowns = otherwise,
         };
     }
 
