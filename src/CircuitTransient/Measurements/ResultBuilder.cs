@@ -57,7 +57,7 @@ public sealed class ResultBuilder
         var waves = Sample(observed, requirements);
         var intervals = solution.Intervals.Select(new IntervalMeasurement(solution, energy).Measure)
             .ToImmutableArray();
-        var events = solution.Occurrences.Select(new EventMeasurement(curves).Measure).ToImmutableArray();
+        var events = solution.Occurrences.Select(new EventMeasurement(curves, cancellation).Measure).ToImmutableArray();
         var (checks, notJudged) = checking.GetAwaiter().GetResult();
         return new TransientResult(
             circuit,
