@@ -5,8 +5,10 @@ namespace CircuitTransient.Cli;
 public static class CommandText
 {
     /// <summary>The program with its words.</summary>
-    public static string Of(params IEnumerable<string> words) =>
-        $"circuit-transient {string.Join(' ', words.Select(Quoted))}";
+    public static string Of(params IEnumerable<string> words) => $"circuit-transient {Joined(words)}";
+
+    /// <summary>The words alone.</summary>
+    public static string Joined(params IEnumerable<string> words) => string.Join(' ', words.Select(Quoted));
 
     /// <summary>One word, in quotes where a shell needs them: double ones, which every shell has, unless the
     /// word holds what a shell still reads within them.</summary>
