@@ -24,6 +24,8 @@ internal static class SpreadDoubts
             [
                 Reached(part),
                 part.Range.Passed == 0 ? null
+                    : part.Range.Passed == part.Range.Corners
+                    ? $"passes that at each of the {part.Range.Corners:N0} corners solved"
                     : $"passes that at {part.Range.Passed:N0} of the {part.Range.Corners:N0} corners solved",
                 Most(part),
                 part.Drawn > 0

@@ -83,8 +83,8 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         var found = best[f, 1].Point;
         var isInfinite = best.Missing(f) > 0;
         return new LinearRange(
-            batch.Figures[f].Index, isInfinite || found.Length == 0 ? null : Exact(found, f).Value, [.. found],
-            passed, corners);
+            batch.Figures[f].Index, isInfinite || found.Length == 0 ? null : Exact(found, f).Value,
+            [.. found], passed, corners);
     }
 
     /// <summary>Every value alone at its lower and at its upper end, after all at nominal.</summary>

@@ -36,9 +36,9 @@ public class SpreadHonestyTests
     {
         var spread = Spreading.Of(Ceramic);
         const string doubt = "C1 leaves the range its value is good for";
-        const string reach = "C1 is linear up to 10.50 V but reaches 11.00 V at the worst case; passes that at "
-            + "4 of the 8 corners solved: a class 2 ceramic loses capacitance with voltage, and then the true "
-            + "peak is higher than shown";
+        const string reach = "C1 is linear up to 10.50 V but reaches 11.00 V at the worst case; passes that "
+            + "at 4 of the 8 corners solved: a class 2 ceramic loses capacitance with voltage, and then the "
+            + "true peak is higher than shown";
 
         Assert.True(spread.AllHold);
         Assert.Contains(doubt, SpreadWords.Verdict(spread));
@@ -76,8 +76,8 @@ public class SpreadHonestyTests
         Assert.InRange(drawn, 299, 301); // a Latin hypercube of 1000 strata
         var words = Assert.Single(SpreadDoubts.Words(spread));
         Assert.StartsWith(
-            "C1 is linear up to 10.40 V but passes that at 4 of the 8 corners solved; reaches 11.00 V at most; "
-            + $"passes it in {drawn} of the 1,000 draws: a class 2 ceramic", words);
+            "C1 is linear up to 10.40 V but passes that at 4 of the 8 corners solved; reaches 11.00 V at "
+            + $"most; passes it in {drawn} of the 1,000 draws: a class 2 ceramic", words);
         Assert.Contains("C1 leaves the range its value is good for", SpreadWords.Verdict(spread));
         using var document = JsonDocument.Parse(SpreadJson.Write(spread));
         var written = Assert.Single(document.RootElement.GetProperty("linearUpTo").EnumerateArray());
