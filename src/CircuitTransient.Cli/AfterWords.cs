@@ -10,44 +10,18 @@ namespace CircuitTransient.Cli;
 /// <param name="Event">What they mean.</param>
 public sealed record AfterWords(string Text, AfterEvent Event)
 {
-    private const string Form =
-        "write a switching such as `Kmain closes`, an instant such as `6 s`, or `last`";
-
     /// <summary>Reads the words; null where they mean nothing, which is said.</summary>
     public static AfterWords? Read(string text, Streams streams)
     {
-        var words = text.Trim();
-        if (words == "last")
+        var read = AfterParser.Parse(new SourceText("--after", text));
+        streams.Report(read.Diagnostics);
+        return read.Value switch
         {
-            return new(text, new AfterLast());
-        }
-
-        foreach (var (ending, closes) in new[] { (" closes", true), (" opens", false) })
-        {
-            if (words.EndsWith(ending, StringComparison.Ordinal))
-            {
-                var name = words[..^ending.Length].Trim().Trim('"');
-                return new(text, new AfterSwitching(name, closes));
-            }
-        }
-
-        if (words is not [>= '0' and <= '9' or '-', ..])
-        {
-            streams.Complain($"--after `{text}` names no event: {Form}");
-            return null;
-        }
-
-        var instants = InstantListParser.Parse(new SourceText("--after", text));
-        streams.Report(instants.Diagnostics);
-        if (instants.Value is { Instants.Length: > 1 })
-        {
-            streams.Complain($"--after `{text}` names several instants: {Form}");
-            return null;
-        }
-
-        return instants.Value is { Instants: [var instant] }
-            ? new(text, new AfterInstant(instant.Value))
-            : null;
+            AfterLastSyntax => new(text, new AfterLast()),
+            AfterInstantSyntax { Instant.Value: var instant } => new(text, new AfterInstant(instant)),
+            AfterSwitchingSyntax(var name, var closes) => new(text, new AfterSwitching(name, closes)),
+            _ => null,
+        };
     }
 
     /// <summary>Why a study has no such event; null where it has.</summary>

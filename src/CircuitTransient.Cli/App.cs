@@ -39,7 +39,7 @@ public static class App
         }
         catch (Exception defect)
         {
-            streams.Complain($"a defect of {Name}, not a mistake of yours: {defect.Message}");
+            streams.Complain($"a defect of {Name}, not a mistake of yours:\n{defect}");
             return ExitStatus.SelfCheckFailed;
         }
     }

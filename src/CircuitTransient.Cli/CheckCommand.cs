@@ -25,8 +25,8 @@ internal sealed class CheckCommand : Command
         }
 
         var outcome = TransientAnalysis.Check(source, reading.ReadBeside);
-        cancellation.ThrowIfCancellationRequested();
-        var unsolvable = outcome.Succeeded ? TransientAnalysis.FindUnsolvable(outcome.Value) : [];
+        var unsolvable =
+            outcome.Succeeded ? TransientAnalysis.FindUnsolvable(outcome.Value, cancellation) : [];
         cancellation.ThrowIfCancellationRequested();
         streams.Report([.. outcome.Diagnostics, .. unsolvable]);
         if (!outcome.Succeeded)

@@ -29,7 +29,7 @@ public sealed class CircuitFile
     {
         try
         {
-            var text = Decode(path, path);
+            var text = Decode(path);
             streams.Report(text.Diagnostics);
             return new(path, text.Value, text.Succeeded ? ExitStatus.Success : ExitStatus.Mistake);
         }
@@ -48,7 +48,7 @@ public sealed class CircuitFile
         var place = Path.Combine(Path.GetDirectoryName(path) ?? "", name);
         try
         {
-            var text = Decode(place, place);
+            var text = Decode(place);
             beside[name] = text.Value?.Sha256 ?? "";
             return text;
         }
@@ -59,20 +59,6 @@ public sealed class CircuitFile
         }
     }
 
-    private static Outcome<SourceText> Decode(string name, string path)
-    {
-        using var stream = File.OpenRead(path);
-        var bytes = new byte[1 << 16];
-        var length = 0;
-        while (length <= SourceText.LargestFile && stream.Read(bytes.AsSpan(length)) is > 0 and var count)
-        {
-            length += count;
-            if (length == bytes.Length)
-            {
-                Array.Resize(ref bytes, 2 * length);
-            }
-        }
-
-        return SourceText.Read(name, bytes.AsSpan(0, length));
-    }
+    private static Outcome<SourceText> Decode(string path) =>
+        SourceText.Read(path, BoundedFile.Read(path, SourceText.LargestFile));
 }

@@ -24,13 +24,14 @@ internal static class DocumentFile
                 return (null, ExitStatus.Mistake);
             }
 
-            if (new FileInfo(path) is { Exists: true, Length: > ResultsReader.LargestFile })
+            var bytes = BoundedFile.Read(path, ResultsReader.LargestFile);
+            if (bytes.Length > ResultsReader.LargestFile)
             {
                 streams.Complain($"{path} has more than 256 MiB: compare does not read it");
                 return (null, ExitStatus.Mistake);
             }
 
-            var text = Strict.GetString(File.ReadAllBytes(path)).TrimStart('\uFEFF');
+            var text = Strict.GetString(bytes).TrimStart('\uFEFF');
             var read = ResultsReader.Read(new SourceText(path, text));
             streams.Report(read.Diagnostics);
             return (read.Value, read.Succeeded ? ExitStatus.Success : ExitStatus.Mistake);

@@ -1,8 +1,7 @@
 using System.Collections.Immutable;
-using CircuitTransient.Circuits;
+using System.Diagnostics;
 using CircuitTransient.Measurements.ClosedForms;
 using CircuitTransient.Reports.Formula;
-using CircuitTransient.Solutions;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
@@ -56,42 +55,26 @@ public sealed class FormulaRun(
         }
 
         using var progress = new Progress(file, streams);
-        var circuit = TransientAnalysis.Check(source, reading.ReadBeside);
-        streams.Report(circuit.Diagnostics);
-        if (!circuit.Succeeded)
+        var outcome = TransientAnalysis.WriteOut(
+            source, [.. asked.Select(words => new SourceText("--of", words))], reading.ReadBeside,
+            cancellation);
+        progress.Dispose();
+        switch (outcome)
         {
-            return Math.Max(ExitStatus.Mistake, reading.Status);
+            case WrittenOut written:
+                streams.Report(written.Warnings);
+                studies.Add(written.Study);
+                return written.Study.SelfChecks.All(c => c.Holds)
+                    ? ExitStatus.Success
+                    : ExitStatus.SelfCheckFailed;
+            case NoUniqueSolution trouble:
+                streams.Report(trouble.Diagnostics);
+                return ExitStatus.NoUniqueSolution;
+            case Mistakes mistakes:
+                streams.Report(mistakes.Diagnostics);
+                return Math.Max(ExitStatus.Mistake, reading.Status);
+            default:
+                throw new UnreachableException($"no status for {outcome}");
         }
-
-        if (Quantities(circuit.Value) is not { } quantities)
-        {
-            return ExitStatus.Mistake;
-        }
-
-        var solution = TransientSolver.Solve(
-            circuit.Value, CauseList.FromStart(circuit.Value), cancellation);
-        streams.Report(solution.Diagnostics);
-        if (!solution.Succeeded)
-        {
-            return ExitStatus.NoUniqueSolution;
-        }
-
-        var study = ClosedFormBuilder.Study(solution.Value, quantities, cancellation);
-        studies.Add(study);
-        return study.SelfChecks.All(c => c.Holds) ? ExitStatus.Success : ExitStatus.SelfCheckFailed;
-    }
-
-    /// <summary>What was asked for; null where some of it means nothing, which is said.</summary>
-    private ImmutableArray<Observation>? Quantities(Circuit circuit)
-    {
-        if (asked.IsEmpty)
-        {
-            return circuit.Observations.RemoveAll(o => o.Quantity is Figure);
-        }
-
-        var found = asked.Select(words => AskedQuantity.Find(circuit, new SourceText("--of", words)))
-            .ToArray();
-        streams.Report([.. found.SelectMany(f => f.Diagnostics)]);
-        return found.All(f => f.Succeeded) ? [.. found.Select(f => f.Value!)] : null;
     }
 }

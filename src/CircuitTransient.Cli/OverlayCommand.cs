@@ -112,31 +112,32 @@ internal sealed class OverlayCommand : Command
             orders.Add(order);
         }
 
-        var words = string.Join(' ', parsed.Tokens.Select(t => Quoted(t.Value)));
+        var words = parsed.Tokens.Select(t =>
+            Path.IsPathRooted(t.Value) ? Path.GetFileName(t.Value) : t.Value);
         return new OverlayOptions(
             orders.ToImmutable(), parsed.GetValue(fit), parsed.GetValue(fitted),
-            $"circuit-transient {words}", study.Read(parsed));
+            CommandText.Of(words), study.Read(parsed));
     }
 
     private RecordOrder? OrderOf(string name, string[] names, ParseResult parsed, Streams streams)
     {
         string? Said(Option<string[]> option) =>
-            new RecordWords(option.Name, parsed.GetValue(option) ?? []).OneFor(name, names);
+            new RecordWords(parsed.GetValue(option) ?? []).OneFor(name, names);
 
-        var numbers = new Numbers(streams);
-        var reading = new RecordOptions(
-            Said(channel), numbers.Read(interval.Name, Said(interval), "such as `1 ns`", Dimension.Time),
-            Said(mark) switch { null => null, "comma" => ',', "point" => '.', _ => ' ' });
-        var given = new AlignmentGiven(
-            numbers.Read(offset.Name, Said(offset), "such as `3.3 ns`", Dimension.Time),
-            numbers.Read(gain.Name, Said(gain), "such as `1.012` or `10`", Dimension.None),
-            numbers.Read(level.Name, Said(level), "such as `60 mV`", Dimension.Voltage, Dimension.Current));
-        if (reading.Mark == ' ')
+        if (Said(mark) is not (null or "comma" or "point"))
         {
             streams.Complain("--decimal: say `point` or `comma`");
             return null;
         }
 
+        var numbers = new Numbers(streams);
+        var reading = new RecordOptions(
+            Said(channel), numbers.Read(interval.Name, Said(interval), "such as `1 ns`", Dimension.Time),
+            Said(mark) switch { null => null, "comma" => ',', _ => '.' });
+        var given = new AlignmentGiven(
+            numbers.Read(offset.Name, Said(offset), "such as `3.3 ns`", Dimension.Time),
+            numbers.Read(gain.Name, Said(gain), "such as `1.012` or `10`", Dimension.None),
+            numbers.Read(level.Name, Said(level), "such as `60 mV`", Dimension.Voltage, Dimension.Current));
         if (reading.Interval <= 0)
         {
             streams.Complain("--interval: a sample interval is more than zero");
@@ -152,17 +153,9 @@ internal sealed class OverlayCommand : Command
         return numbers.AreRead
             ? new RecordOrder(
                 name, reading, Said(shows),
-                [.. new RecordWords(with.Name, parsed.GetValue(with) ?? []).For(name, names)], Said(input),
+                [.. new RecordWords(parsed.GetValue(with) ?? []).For(name, names)], Said(input),
                 Said(generator), given)
             : null;
-    }
-
-    private static string Quoted(string word)
-    {
-        var name = Path.IsPathRooted(word) ? Path.GetFileName(word) : word;
-        return name.Length > 0 && name.All(c => char.IsAsciiLetterOrDigit(c) || c is '.' or '-' or '_' or '/')
-            ? name
-            : $"\"{name.Replace("\"", "'")}\"";
     }
 
     /// <summary>Reads numbers with units; says what is wrong with one.</summary>

@@ -123,13 +123,14 @@ public sealed class OverlayRun(OverlayOptions options, Streams streams, Cancella
     {
         try
         {
-            if (new FileInfo(path) is { Exists: true, Length: > RecordReader.LargestFile })
+            var bytes = BoundedFile.Read(path, RecordReader.LargestFile);
+            if (bytes.Length <= RecordReader.LargestFile)
             {
-                streams.Complain($"{path} cannot be read: it has more than 512 MiB");
-                return null;
+                return bytes;
             }
 
-            return File.ReadAllBytes(path);
+            streams.Complain($"{path} cannot be read: it has more than 512 MiB");
+            return null;
         }
         catch (Exception trouble) when (trouble.IsFileTrouble())
         {

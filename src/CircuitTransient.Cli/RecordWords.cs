@@ -2,9 +2,8 @@ namespace CircuitTransient.Cli;
 
 /// <summary>Words that may be meant for one record: <c>loaded.csv: voltage of x</c>; without a record's name
 /// before a colon they are meant for all.</summary>
-/// <param name="option">The option's name.</param>
 /// <param name="values">What was said, as often as it was.</param>
-internal sealed class RecordWords(string option, IReadOnlyList<string> values)
+internal sealed class RecordWords(IReadOnlyList<string> values)
 {
     /// <summary>What was said for a record, in the order said.</summary>
     public IReadOnlyList<string> For(string record, IReadOnlyList<string> records)
@@ -30,9 +29,6 @@ internal sealed class RecordWords(string option, IReadOnlyList<string> values)
         var general = values.Select(v => Split(v, records)).Where(s => s.Name is null).ToArray();
         return own.Length > 0 ? own[^1].Said : general.Length > 0 ? general[^1].Said : null;
     }
-
-    /// <summary>The option's name, for messages.</summary>
-    public string Option => option;
 
     private static (string? Name, string Said) Split(string value, IReadOnlyList<string> records)
     {

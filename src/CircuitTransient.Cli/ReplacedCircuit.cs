@@ -1,4 +1,5 @@
 using System.Text.Json;
+using CircuitTransient.Studies.Comparing;
 
 namespace CircuitTransient.Cli;
 
@@ -20,7 +21,8 @@ internal static class ReplacedCircuit
         var path = Path.Combine(folder, document.Name);
         try
         {
-            return File.Exists(path) && TitleIn(File.ReadAllBytes(path)) is { } before
+            return File.Exists(path)
+                && TitleIn(BoundedFile.Read(path, ResultsReader.LargestFile)) is { } before
                 && before != TitleIn(document.Content)
                 ? before
                 : null;

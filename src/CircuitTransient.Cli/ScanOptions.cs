@@ -12,13 +12,15 @@ namespace CircuitTransient.Cli;
 public sealed record ScanOptions(
     ImmutableArray<ScannedSyntax> Scanned, ScatterSyntax? Scatter, bool Resumes, StudyOptions Study)
 {
-    /// <summary>What is to be scanned, as written on the command line.</summary>
-    public string Asked => string.Join(
-        ' ', Scanned.Select(s => s.Source).Append(Scatter?.Source).OfType<SourceText>()
-            .Select(s => $"{s.Name} {ShellWord.Of(s.Content)}"));
+    /// <summary>What is to be scanned, in the words of the command line.</summary>
+    public ImmutableArray<string> Asked =>
+    [
+        .. Scanned.Select(s => s.Source).Append(Scatter?.Source).OfType<SourceText>()
+            .SelectMany(s => new[] { s.Name, s.Content }),
+    ];
 
     /// <summary>The command that makes the same results again beside the circuit file, wherever that
     /// is.</summary>
     public string CommandFor(string file) =>
-        $"circuit-transient scan {ShellWord.Of(Path.GetFileName(file))} {Asked}";
+        CommandText.Of(["scan", Path.GetFileName(file), .. Asked]);
 }

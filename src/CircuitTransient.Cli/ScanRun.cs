@@ -40,7 +40,7 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
     private int Run(string file, ScanPlan plan, CircuitFile reading, StudyPartial partial)
     {
         var memory = new ScanMemory();
-        var identity = PartialIdentity.Of(reading, options.Asked);
+        var identity = PartialIdentity.Of(reading, CommandText.Joined(options.Asked));
         if (options.Resumes)
         {
             if (partial.Refusal(identity, streams) is { } refusal)
@@ -71,8 +71,7 @@ public sealed class ScanRun(ScanOptions options, Streams streams, CancellationTo
             partial.Leave(
                 identity, memory.Save,
                 done < all ? $"{done:N0} of {all:N0} points" : "the points, in the search between them",
-                $"circuit-transient scan {ShellWord.Of(file)} {options.Asked}{options.Study.FolderAsked}",
-                streams);
+                ["scan", file, .. options.Asked, .. options.Study.FolderAsked], streams);
             throw;
         }
 

@@ -75,18 +75,14 @@ public sealed class SizeRun(
     {
         string[] words =
         [
-            "circuit-transient", "size", Path.GetFileName(file),
+            "size", Path.GetFileName(file),
             .. request.Parts.SelectMany(part => new[] { part.Source.Name, part.Source.Content }),
             .. request.Series is { } series ? new[] { "--series", $"{series}" } : [],
             .. request.Aim is Extremal aim ? new[] { aim.Of.Name, aim.Of.Content } : [],
             .. request.WithSpread ? new[] { "--with-spread" } : [],
         ];
-        return string.Join(' ', words.Select(Quoted));
+        return CommandText.Of(words);
     }
-
-    private static string Quoted(string word) => word.Any(c => char.IsWhiteSpace(c) || c is '"' or '\'')
-        ? $"\"{word.Replace("\"", "\\\"", StringComparison.Ordinal)}\""
-        : word;
 
     private int WriteSized(SizeResult result)
     {

@@ -28,14 +28,15 @@ public sealed record SolveOptions(
     /// is.</summary>
     public string CommandFor(string file)
     {
-        var name = Path.GetFileName(file);
-        var isPlain = name.All(c => char.IsAsciiLetterOrDigit(c) || c is '.' or '-' or '_');
-        var quoted = isPlain ? name : $"\"{name}\"";
-        var at = At.Instants.Any() ? $" --at \"{At.Source.Content}\"" : "";
-        var samples = SampleCount == UsualSampleCount ? "" : $" --samples {SampleCount}";
-        var after = After is { } words ? $" --after \"{words.Text.Replace("\"", "")}\"" : "";
-        var by = By == Breakdown.Origin ? "" : $" --by {ByWords.Of(By)}";
-        var pdf = IsPdf ? " --pdf" : "";
-        return $"circuit-transient solve {quoted}{at}{by}{after}{samples}{pdf}";
+        string[] words =
+        [
+            "solve", Path.GetFileName(file),
+            .. At.Instants.IsEmpty ? [] : new[] { "--at", At.Source.Content },
+            .. By == Breakdown.Origin ? [] : new[] { "--by", ByWords.Of(By) },
+            .. After is null ? [] : new[] { "--after", After.Text },
+            .. SampleCount == UsualSampleCount ? [] : new[] { "--samples", $"{SampleCount}" },
+            .. IsPdf ? new[] { "--pdf" } : [],
+        ];
+        return CommandText.Of(words);
     }
 }

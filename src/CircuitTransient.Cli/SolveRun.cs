@@ -27,11 +27,12 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
             return ExitStatus.Mistake;
         }
 
+        var keeps = files.Count == 1 || options.IsJson; // a result holds its whole solution
         var answers = new List<Answer>();
         foreach (var file in files)
         {
             var answer = Solve(file);
-            answers.Add(answer);
+            answers.Add(keeps ? answer : answer with { Result = null });
             if (files.Count > 1 && !options.IsJson && !options.IsQuiet)
             {
                 streams.Output.WriteLine($"{file}: {answer.Verdict}");

@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using System.Diagnostics;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports.Studies;
@@ -69,7 +70,7 @@ public sealed class SpreadRun(
             return ExitStatus.Mistake;
         }
 
-        var identity = PartialIdentity.Of(reading, Asked);
+        var identity = PartialIdentity.Of(reading, CommandText.Joined(Asked));
         if (resumes && partial.Refusal(identity, streams) is { } refusal)
         {
             progress.Dispose();
@@ -93,14 +94,14 @@ public sealed class SpreadRun(
             progress.Dispose();
             partial.Leave(
                 identity, study.SaveDraws, $"{study.DrawsDone:N0} of {options.Draws:N0} draws",
-                $"circuit-transient spread {ShellWord.Of(file)} {Asked}{delivery.FolderAsked}", streams);
+                ["spread", file, .. Asked, .. delivery.FolderAsked], streams);
             throw;
         }
 
         void Show(SpreadProgress p) => progress.Report(p.Stage, p.Done, p.All);
     }
 
-    private string Asked => $"--draws {options.Draws} --seed {options.Seed}";
+    private ImmutableArray<string> Asked => ["--draws", $"{options.Draws}", "--seed", $"{options.Seed}"];
 
     private int HandOver(string file, SpreadResult result, CircuitFile reading, StudyPartial partial)
     {
@@ -141,8 +142,8 @@ public sealed class SpreadRun(
 
     private string CommandFor(string file)
     {
-        var draws = options.Draws == SpreadOptions.UsualDraws ? "" : $" --draws {options.Draws}";
-        var seed = options.Seed == 1 ? "" : $" --seed {options.Seed}";
-        return $"circuit-transient spread {ShellWord.Of(Path.GetFileName(file))}{draws}{seed}";
+        string[] draws = options.Draws == SpreadOptions.UsualDraws ? [] : ["--draws", $"{options.Draws}"];
+        string[] seed = options.Seed == 1 ? [] : ["--seed", $"{options.Seed}"];
+        return CommandText.Of(["spread", Path.GetFileName(file), .. draws, .. seed]);
     }
 }

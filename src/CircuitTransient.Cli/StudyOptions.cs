@@ -1,3 +1,5 @@
+using System.Collections.Immutable;
+
 namespace CircuitTransient.Cli;
 
 /// <summary>What every study is asked for besides its own words.</summary>
@@ -9,6 +11,6 @@ public sealed record StudyOptions(string? Folder, bool IsJson, bool IsQuiet)
     /// <summary>Where results go unless a folder is named.</summary>
     public const string UsualFolder = "output";
 
-    /// <summary>The words that ask for the folder, after a space; empty for the usual one.</summary>
-    public string FolderAsked => Folder is null or UsualFolder ? "" : $" --out {ShellWord.Of(Folder)}";
+    /// <summary>The words that ask for the folder; none for the usual one.</summary>
+    public ImmutableArray<string> FolderAsked => Folder is null or UsualFolder ? [] : ["--out", Folder];
 }

@@ -78,17 +78,19 @@ public sealed class StudyPartial(string study, string holds, string? path)
     /// <param name="identity">The study.</param>
     /// <param name="save">Writes what it has worked out.</param>
     /// <param name="after">How far it came: <c>57 of 200 points</c>.</param>
-    /// <param name="command">The command that was stopped, without <c>--resume</c>.</param>
+    /// <param name="words">The command that was stopped, without <c>--resume</c>.</param>
     /// <param name="streams">Where to say it.</param>
     public void Leave(
-        PartialIdentity identity, Action<BinaryWriter> save, string after, string command, Streams streams)
+        PartialIdentity identity, Action<BinaryWriter> save, string after, ImmutableArray<string> words,
+        Streams streams)
     {
         try
         {
             Directory.CreateDirectory(Path.GetDirectoryName(path!)!);
             using var unfinished = new UnfinishedFile(path!, file => Write(file, identity, save));
             unfinished.Finish();
-            streams.Error.WriteLine($"stopped after {after}; go on with `{command} --resume`");
+            var command = CommandText.Of([.. words, "--resume"]);
+            streams.Error.WriteLine($"stopped after {after}; go on with `{command}`");
         }
         catch (Exception trouble) when (trouble.IsFileTrouble())
         {

@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
+using CircuitTransient.Measurements.ClosedForms;
 using CircuitTransient.Solutions;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
@@ -23,25 +24,48 @@ public static class TransientAnalysis
         Func<string, Outcome<SourceText>> readBeside,
         CancellationToken cancellation = default)
     {
-        var checkedCircuit = Check(source, readBeside);
-        if (!checkedCircuit.Succeeded)
+        var circuit = Check(source, readBeside);
+        var causes = circuit.Then(c => options.By == Breakdown.Edge
+            ? CauseList.ByEdge(c)
+            : new(CauseList.FromStart(c), []));
+        if (!circuit.Succeeded || !causes.Succeeded)
         {
-            return new Mistakes(checkedCircuit.Diagnostics);
+            return new Mistakes(causes.Diagnostics);
         }
 
-        var circuit = checkedCircuit.Value;
-        var (causes, problem) = options.By == Breakdown.Edge
-            ? CauseList.ByEdge(circuit)
-            : (CauseList.FromStart(circuit), null);
-        if (problem is not null)
-        {
-            return new Mistakes([.. checkedCircuit.Diagnostics, problem]);
-        }
-
-        var solution = TransientSolver.Solve(circuit, causes, cancellation);
-        var warnings = checkedCircuit.Diagnostics;
+        var solution = TransientSolver.Solve(circuit.Value, causes.Value, cancellation);
+        var warnings = circuit.Diagnostics;
         return solution.Succeeded
             ? new Solved(ResultBuilder.Measure(solution.Value, warnings, options, cancellation))
+            : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
+    }
+
+    /// <summary>Reads, checks and solves a circuit and writes quantities out in closed form.</summary>
+    /// <param name="source">The circuit file's text.</param>
+    /// <param name="asked">The quantities; none for every observed waveform.</param>
+    /// <param name="readBeside">Reads a file that the circuit names, by its path relative to the circuit
+    /// file.</param>
+    /// <param name="cancellation">Stops the work.</param>
+    /// <exception cref="OperationCanceledException">The work was stopped.</exception>
+    public static AnalysisOutcome WriteOut(
+        SourceText source,
+        ImmutableArray<SourceText> asked,
+        Func<string, Outcome<SourceText>> readBeside,
+        CancellationToken cancellation = default)
+    {
+        var circuit = Check(source, readBeside);
+        var quantities = circuit.Then(c => AskedQuantity.FindAll(c, asked));
+        if (!circuit.Succeeded || !quantities.Succeeded)
+        {
+            return new Mistakes(quantities.Diagnostics);
+        }
+
+        var causes = CauseList.FromStart(circuit.Value);
+        var solution = TransientSolver.Solve(circuit.Value, causes, cancellation);
+        var warnings = circuit.Diagnostics;
+        return solution.Succeeded
+            ? new WrittenOut(
+                ClosedFormBuilder.Study(solution.Value, quantities.Value, cancellation), warnings)
             : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
     }
 
@@ -54,8 +78,9 @@ public static class TransientAnalysis
 
     /// <summary>Finds the intervals, among those whose switch positions are known without solving, that have
     /// no unique solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit) =>
-        KnownIntervals.FindUnsolvable(circuit);
+    public static ImmutableArray<Diagnostic> FindUnsolvable(
+        Circuit circuit, CancellationToken cancellation) =>
+        KnownIntervals.FindUnsolvable(circuit, cancellation);
 }
 
 /// <summary>What came of an analysis.</summary>
@@ -63,6 +88,9 @@ public abstract record AnalysisOutcome;
 
 /// <summary>The circuit was solved.</summary>
 public sealed record Solved(TransientResult Result) : AnalysisOutcome;
+
+/// <summary>Its quantities were written out.</summary>
+public sealed record WrittenOut(ClosedFormStudy Study, ImmutableArray<Diagnostic> Warnings) : AnalysisOutcome;
 
 /// <summary>No circuit can be built from the text.</summary>
 public sealed record Mistakes(ImmutableArray<Diagnostic> Diagnostics) : AnalysisOutcome;

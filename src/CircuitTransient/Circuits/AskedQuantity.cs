@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
@@ -6,6 +7,22 @@ namespace CircuitTransient.Circuits;
 /// <summary>Looks up a quantity that is asked for outside the circuit's file.</summary>
 public static class AskedQuantity
 {
+    /// <summary>All quantities asked for; every waveform the file observes where none is.</summary>
+    public static Outcome<IReadOnlyList<Observation>> FindAll(
+        Circuit circuit, ImmutableArray<SourceText> asked)
+    {
+        if (asked.IsEmpty)
+        {
+            return new([.. circuit.Observations.Where(o => o.Quantity is not Figure)], []);
+        }
+
+        var found = asked.Select(text => Find(circuit, text)).ToArray();
+        ImmutableArray<Diagnostic> diagnostics = [.. found.SelectMany(f => f.Diagnostics)];
+        return found.All(f => f.Succeeded)
+            ? new([.. found.Select(f => f.Value!)], diagnostics)
+            : new(null, diagnostics);
+    }
+
     /// <summary>The quantity as an observation over the whole study; an observation of the file by its own
     /// name or label. Errors point into the text asked.</summary>
     public static Outcome<Observation> Find(Circuit circuit, SourceText asked)

@@ -41,7 +41,18 @@ public sealed record Circuit(
 /// <param name="ToleranceSpan">Where its tolerance is written; null where none is.</param>
 public sealed record Parameter(
     string Name, string Unit, double Nominal, Tolerance? Tolerance, TextSpan Span, TextSpan ValueSpan,
-    TextSpan? ToleranceSpan);
+    TextSpan? ToleranceSpan)
+{
+    /// <summary>The name of the value or part it belongs to.</summary>
+    public required string Owner { get; init; }
+
+    /// <summary>What of a part it is, <c>initial charge</c>; null for a part's or a named value
+    /// itself.</summary>
+    public string? Aspect { get; init; }
+
+    /// <summary>Whether it is a named value, not a part's.</summary>
+    public bool IsNamedValue { get; init; }
+}
 
 /// <summary>The range of a value: absolute limits in SI, and the distribution between them.</summary>
 public sealed record Tolerance(double Lowest, double Highest, bool IsNormal);

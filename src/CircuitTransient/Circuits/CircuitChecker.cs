@@ -83,6 +83,7 @@ public static class CircuitChecker
     {
         var until = settings.End(state, Scope.Outermost(settings.Reference));
         LowerParts(state);
+        StoreCount.Check(state);
         var couplings = CouplingLowering.Lower(state);
         SwitchOrder.Check(state, until);
         var observations = Observations.Lower(state, statements, until);

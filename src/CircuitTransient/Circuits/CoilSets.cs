@@ -5,7 +5,8 @@ namespace CircuitTransient.Circuits;
 /// <summary>Coils that are coupled with one another, directly or through others.</summary>
 /// <param name="Coils">Indices of the coils.</param>
 /// <param name="First">The first coupling among them.</param>
-/// <param name="Least">The least stored energy, relative to what the coils store alone.</param>
+/// <param name="Least">The least stored energy, relative to what the coils store alone; no number where it
+/// was not computed.</param>
 internal sealed record CoilSet(int[] Coils, Coupling First, double Least);
 
 /// <summary>Finds the sets of coils that could store negative energy.</summary>
@@ -14,9 +15,31 @@ internal static class CoilSets
     /// <summary>k = 1 works exactly; eigenvalues of sets of dozens are good to 1e-14.</summary>
     public const double Rounding = 1e-12;
 
+    /// <summary>The most coils whose couplings may hang together: judging a set costs their cube.</summary>
+    public const int MostCoils = 300;
+
     /// <summary>The sets of three coils and more that do; a coil that is missing leaves its set
     /// unjudged.</summary>
     public static IEnumerable<CoilSet> StoringNegativeEnergy(
+        IReadOnlyList<Part?> parts, IReadOnlyCollection<Coupling> couplings)
+    {
+        foreach (var (coils, set) in Sets(parts, couplings))
+        {
+            if (coils.Length is > 2 and <= MostCoils && coils.All(c => parts[c] is Inductor)
+                && LeastEnergy(parts, coils, set) is var least && least < -Rounding * coils.Length)
+            {
+                yield return new CoilSet(coils, set.First(), least);
+            }
+        }
+    }
+
+    /// <summary>The sets of more coils than are judged.</summary>
+    public static IEnumerable<CoilSet> TooLarge(
+        IReadOnlyList<Part?> parts, IReadOnlyCollection<Coupling> couplings) =>
+        Sets(parts, couplings).Where(s => s.Coils.Length > MostCoils)
+            .Select(s => new CoilSet(s.Coils, s.Couplings.First(), double.NaN));
+
+    private static IEnumerable<(int[] Coils, IEnumerable<Coupling> Couplings)> Sets(
         IReadOnlyList<Part?> parts, IReadOnlyCollection<Coupling> couplings)
     {
         var sets = new DisjointSets(parts.Count);
@@ -25,15 +48,9 @@ internal static class CoilSets
             sets.Join(coupling.First, coupling.Second);
         }
 
-        foreach (var set in couplings.GroupBy(c => sets.Find(c.First).Root))
-        {
-            int[] coils = [.. set.SelectMany(c => new[] { c.First, c.Second }).Distinct().Order()];
-            if (coils.Length > 2 && coils.All(c => parts[c] is Inductor)
-                && LeastEnergy(parts, coils, set) is var least && least < -Rounding * coils.Length)
-            {
-                yield return new CoilSet(coils, set.First(), least);
-            }
-        }
+        return couplings.GroupBy(c => sets.Find(c.First).Root).Select(set =>
+            (set.SelectMany(c => new[] { c.First, c.Second }).Distinct().Order().ToArray(),
+                (IEnumerable<Coupling>)set));
     }
 
     // Stored energy ½ iᵀ L i is never negative if and only if the factors' matrix has no negative eigenvalue.
@@ -43,7 +60,8 @@ internal static class CoilSets
         var factors = Matrix<double>.Build.DenseIdentity(coils.Length);
         foreach (var coupling in couplings)
         {
-            var (i, j) = (Array.IndexOf(coils, coupling.First), Array.IndexOf(coils, coupling.Second));
+            var i = Array.BinarySearch(coils, coupling.First);
+            var j = Array.BinarySearch(coils, coupling.Second);
             factors[i, j] = factors[j, i] = Factor(parts, coupling);
         }
 

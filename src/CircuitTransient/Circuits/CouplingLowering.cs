@@ -117,6 +117,13 @@ internal static class CouplingLowering
 
     private static void CheckEnergy(CheckState state, IReadOnlyCollection<Coupling> couplings)
     {
+        foreach (var set in CoilSets.TooLarge(state.Parts, couplings))
+        {
+            state.Findings.Error(set.First.Span,
+                $"{set.Coils.Length} coils hang together by couplings; {CoilSets.MostCoils} are the most",
+                "leave out the weak couplings between distant coils");
+        }
+
         foreach (var set in CoilSets.StoringNegativeEnergy(state.Parts, couplings))
         {
             var names = string.Join(", ", set.Coils.Select(c => $"`{state.Declared[c].Name}`"));

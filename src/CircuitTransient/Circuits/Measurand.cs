@@ -85,7 +85,11 @@ public sealed record Observation(string Name, string Unit, Measurand Quantity, W
 public sealed record Requirement(
     string Statement, string? Reason, string Name, string Unit, Measurand Quantity, Bound Bound,
     Window Window,
-    TextSpan Span);
+    TextSpan Span)
+{
+    /// <summary>What is judged, without its bound: <c>settling of voltage of bus</c>.</summary>
+    public string Judged => Bound is SettlesTo ? $"settling of {Name}" : Name;
+}
 
 /// <summary>The bound of a requirement.</summary>
 public abstract record Bound;

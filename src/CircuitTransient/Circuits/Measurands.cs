@@ -59,6 +59,14 @@ internal static class Measurands
             return null;
         }
 
+        if (part.Statement is TransformerStatement
+            && syntax.Kind is PartQuantityKind.PowerIn or PartQuantityKind.EnergyIn)
+        {
+            state.Findings.Error(syntax.Span, $"`{name}` is ideal: no power is lost or stored in it",
+                "ask what its secondary feeds, such as `power in` the load");
+            return null;
+        }
+
         var isDelivered = syntax.Kind is PartQuantityKind.CurrentDelivered or PartQuantityKind.PowerDelivered
             or PartQuantityKind.EnergyDelivered;
         if (isDelivered && part.Statement is not (SourceStatement or DependentSourceStatement))

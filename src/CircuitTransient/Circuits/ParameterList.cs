@@ -32,7 +32,12 @@ internal sealed class ParameterList
             : owner;
         list.Add(new Parameter(
             name, Measure.Of(value.Dimension).Unit, value.Value, tolerance, span, written.Value.Span,
-            written.Tolerance?.Span));
+            written.Tolerance?.Span)
+        {
+            Owner = owner,
+            Aspect = aspect,
+            IsNamedValue = isNamedValue,
+        });
         return new ParameterFormula(list.Count - 1);
     }
 

@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using System.Diagnostics;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Circuits;
@@ -81,14 +82,15 @@ public static class ParameterSubstitution
             OpenResistance = PutOptional(s.OpenResistance, values),
             Events = [.. s.Events.Select(e => e with { Trigger = Put(e.Trigger, values) })],
         },
-        _ => part,
+        IdealTransformer => part,
+        _ => throw new UnreachableException($"no values of {part}"),
     };
 
     private static Trigger Put(Trigger trigger, double[] values) => trigger switch
     {
         AtInstant at => new AtInstant(Put(at.Instant, values)!),
         WhenCrosses crossing => crossing with { After = Put(crossing.After, values) },
-        _ => trigger,
+        _ => throw new UnreachableException($"no values of {trigger}"),
     };
 
     private static Window Put(Window window, double[] values) =>

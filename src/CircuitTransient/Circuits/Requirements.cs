@@ -26,10 +26,12 @@ internal static class Requirements
             return null;
         }
 
-        var name = b.Bound is SettlesTo ? "settling of " + quantity.Name : quantity.Name;
-        return new Requirement($"{name} {b.Words}{Windows.Words(state, window)}", syntax.Reason,
-            quantity.Name,
-            quantity.Unit, quantity.Quantity, b.Bound, window, syntax.Span);
+        var requirement = new Requirement(
+            "", syntax.Reason, quantity.Name, quantity.Unit, quantity.Quantity, b.Bound, window, syntax.Span);
+        return requirement with
+        {
+            Statement = $"{requirement.Judged} {b.Words}{Windows.Words(state, window)}",
+        };
     }
 
     private static (Bound Bound, string Words)? Limits(

@@ -110,11 +110,14 @@ internal static class SwitchOrder
                     return;
                 }
 
-                if (time > until)
+                if (time >= until)
                 {
                     state.Findings.Warn(e.Span,
-                        $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, after the study ends at "
-                            + $"{Amount.Of(until.Value, "s")}",
+                        time > until
+                            ? $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, after the study ends at "
+                                + Amount.Of(until.Value, "s")
+                            : $"`{part.Name}` {acts} at {Amount.Of(time, "s")}, where the study ends: "
+                                + "nothing is seen of it",
                         $"end the study later, such as `until {Amount.Of(2 * time, "s")}`");
                 }
 

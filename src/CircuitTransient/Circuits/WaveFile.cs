@@ -47,18 +47,11 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
     private static WaveFile? Parse(
         SourceText text, Findings findings, StraightLinesFileSyntax syntax, Dimension? expected)
     {
-        void Wrong(TextSpan span, string message, string advice) =>
-            findings.Add(Diagnostic.Error(text, span, message, advice));
-
-        var header = Cells(text, 1);
-        if (header.Length < 2
-            || UnitOf(header[0]) is not { } time || time.Dimension != Dimension.Time
-            || UnitOf(header[1]) is not { } level
-            || (level.Dimension != Dimension.Voltage && level.Dimension != Dimension.Current))
+        if (Header(text) is not var (time, level))
         {
-            Wrong(LineSpan(text, 1),
+            findings.Add(Wrong(text, 1,
                 "the first line does not name a time and a voltage or current with their units",
-                "write `time (s),level (V)`");
+                "write `time (s),level (V)`"));
             return null;
         }
 
@@ -78,35 +71,11 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
                 break; // the line break after the last line
             }
 
-            var cells = Cells(text, line);
-            if (cells.Length < 2 || cells[0].Length == 0 || cells[1].Length == 0)
+            if (AddPoint(points, text, line, time.Scale, level.Scale) is { } mistake)
             {
-                Wrong(LineSpan(text, line), "a time or a value is missing in this line",
-                    "fill the gap or delete the line");
+                findings.Add(mistake);
                 return null;
             }
-
-            if (Number(cells[0]) is not { } t || Number(cells[1]) is not { } v)
-            {
-                Wrong(LineSpan(text, line), "this line does not hold two numbers",
-                    "write numbers with a decimal point, parted by a comma");
-                return null;
-            }
-
-            if (StraightLines.Mistake(points, t * time.Scale) is { } mistake)
-            {
-                Wrong(LineSpan(text, line), mistake.Message, mistake.Advice);
-                return null;
-            }
-
-            if (points.Count == MostPoints)
-            {
-                Wrong(LineSpan(text, line), "this file has more than 100 000 points",
-                    "keep every second point, or fewer");
-                return null;
-            }
-
-            points.Add((t * time.Scale, v * level.Scale));
         }
 
         if (points.Count > 0)
@@ -114,9 +83,51 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
             return new WaveFile(points, level.Dimension);
         }
 
-        Wrong(LineSpan(text, 1), "this file has no points", "add lines such as `0,0` and `1e-3,5`");
+        findings.Add(Wrong(text, 1, "this file has no points", "add lines such as `0,0` and `1e-3,5`"));
         return null;
     }
+
+    private static ((Dimension Dimension, double Scale), (Dimension Dimension, double Scale))? Header(
+        SourceText text) =>
+        Cells(text, 1) is [var first, var second, ..]
+            && UnitOf(first) is { } time && time.Dimension == Dimension.Time
+            && UnitOf(second) is { } level
+            && (level.Dimension == Dimension.Voltage || level.Dimension == Dimension.Current)
+            ? (time, level)
+            : null;
+
+    private static Diagnostic? AddPoint(
+        List<(double Time, double Level)> points, SourceText text, int line, double second, double unit)
+    {
+        if (Cells(text, line) is not [{ Length: > 0 } first, { Length: > 0 } other, ..])
+        {
+            return Wrong(text, line, "a time or a value is missing in this line",
+                "fill the gap or delete the line");
+        }
+
+        if (Number(first) is not { } time || Number(other) is not { } level)
+        {
+            return Wrong(text, line, "this line does not hold two numbers",
+                "write numbers with a decimal point, parted by a comma");
+        }
+
+        if (StraightLines.Mistake(points, time * second) is { } mistake)
+        {
+            return Wrong(text, line, mistake.Message, mistake.Advice);
+        }
+
+        if (points.Count == MostPoints)
+        {
+            return Wrong(text, line, "this file has more than 100 000 points",
+                "keep every second point, or fewer");
+        }
+
+        points.Add((time * second, level * unit));
+        return null;
+    }
+
+    private static Diagnostic Wrong(SourceText text, int line, string message, string advice) =>
+        Diagnostic.Error(text, text.SpanOfLine(line), message, advice);
 
     private static string[] Cells(SourceText text, int line) =>
         text.Line(line).Trim('\uFEFF').Split(',', StringSplitOptions.TrimEntries);
@@ -133,16 +144,5 @@ internal sealed record WaveFile(IReadOnlyList<(double Time, double Level)> Point
             && Unit.TryRead(title.AsSpan(open + 1, title.Length - open - 2), out var unit)
             ? (unit.Dimension, Math.Pow(10, unit.Exponent) * unit.Factor)
             : null;
-    }
-
-    private static TextSpan LineSpan(SourceText text, int number)
-    {
-        var start = 0;
-        for (var line = 1; line < number; line++)
-        {
-            start = text.Content.IndexOf('\n', start) + 1;
-        }
-
-        return new TextSpan(start, text.Line(number).Length);
     }
 }

@@ -51,7 +51,7 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         var level = ReadLevel(LevelOf(piece)!);
         var pieces = piece switch
         {
-            ConstantSyntax constant => Constant(constant, level ?? 0),
+            ConstantSyntax => [Constant(level ?? 0)],
             StepSyntax step => Step(step, level ?? 0),
             PulseSyntax pulse => Pulse(pulse, level ?? 0),
             PulseTrainSyntax train => Train(train, level ?? 0),
@@ -102,9 +102,8 @@ internal sealed class WaveTermLowering(CheckState state, Scope scope, Dimension?
         return false;
     }
 
-    private static ImmutableArray<WavePiece> Constant(ConstantSyntax constant, double level) =>
-        [new WavePiece(0, double.PositiveInfinity, level, 0, 0, 0, 0, "constant",
-            IsPerpetual: constant is not null)];
+    private static WavePiece Constant(double level) =>
+        new(0, double.PositiveInfinity, level, 0, 0, 0, 0, "constant", IsPerpetual: true);
 
     private ImmutableArray<WavePiece>? Step(StepSyntax step, double level) =>
         Instants.Fixed(state, step.At, scope) is { } at ? [Held(at, level, $"step at {Time(at)}")] : null;

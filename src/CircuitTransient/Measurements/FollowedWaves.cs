@@ -119,7 +119,7 @@ public static class FollowedWaves
         }
 
         (Measurand, double) Since(Measurand quantity, Window window) =>
-            (quantity, curves.IsAccumulated(quantity) ? times.Of(window)?.From ?? 0 : 0);
+            (quantity, CurveBuilder.GatheredFrom(quantity, times.Of(window)?.From ?? 0));
     }
 
     /// <summary>The quantity whose waveform tells how far a part's value may be believed.</summary>

@@ -32,6 +32,15 @@ internal sealed class Infinities(CurveBuilder curves)
         return (up, down);
     }
 
+    /// <summary>When an infinity first breaks a bound: an impulse breaks bounds on either side, an integral
+    /// that it makes infinite only the upper one.</summary>
+    public double? BreaksAt(Measurand quantity, Limits limits, double from, double until)
+    {
+        var (up, down) = Of(quantity, from, until);
+        return quantity is JouleIntegral ? (limits.Upper is null ? null : up)
+            : up is null || down < up ? down : up;
+    }
+
     private bool IsBothWays(Measurand quantity, int s) => quantity switch
     {
         RateOfChange rate => solution.Segments[s].ImpulseAtStart(rate.Of) != 0 || IsBothWays(rate.Of, s),

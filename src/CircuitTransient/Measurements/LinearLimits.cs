@@ -10,7 +10,8 @@ internal static class LinearLimits
     public static string? Direction(Part part, LinearLimit limit) => part switch
     {
         Capacitor when limit.IsVoltage =>
-            "a class 2 ceramic loses capacitance with voltage, and then the true peak is higher than shown",
+            "a class 2 ceramic loses capacitance with voltage, and then the true voltage peak is higher than "
+            + "shown",
         Inductor when !limit.IsVoltage =>
             "a coil loses inductance as its core saturates, so the true current is higher than shown",
         _ => null,

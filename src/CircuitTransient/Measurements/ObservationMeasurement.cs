@@ -29,10 +29,8 @@ internal sealed class ObservationMeasurement(
             return (Undetermined(observation), []);
         }
 
-        if (curves.IsAccumulated(observation.Quantity))
-        {
-            total = curves.Of(observation.Quantity, from: open.From)!;
-        }
+        var gathered = CurveBuilder.GatheredFrom(observation.Quantity, open.From);
+        total = gathered > 0 ? curves.Of(observation.Quantity, from: gathered)! : total;
 
         var (max, min) = extremes.Of(observation.Quantity, total, open);
         var shares = Shares(observation.Quantity, open);
@@ -57,7 +55,7 @@ internal sealed class ObservationMeasurement(
                 ? []
                 : [.. Pulses(observation.Quantity, contributions, max, min, open)],
             BySwitching = options.By == Breakdown.Switching
-                ? switchings.Of(observation.Quantity, open.From, max, min)
+                ? switchings.Of(observation.Quantity, gathered, max, min)
                 : null,
             ByMode = modes.Of(observation.Quantity, max, min),
         };
@@ -68,7 +66,7 @@ internal sealed class ObservationMeasurement(
         Measurand quantity, (double From, double To) window)
     {
         var shares = new List<(string, Share, int, Curve)>();
-        var from = curves.IsAccumulated(quantity) ? window.From : 0;
+        var from = CurveBuilder.GatheredFrom(quantity, window.From);
         for (var c = 0; c < solution.Causes.Length; c++)
         {
             shares.Add((solution.Causes[c].Name, Share.Own, c, curves.Of(quantity, Share.Own, c, from)!));
@@ -96,7 +94,7 @@ internal sealed class ObservationMeasurement(
             return new Contribution(share.Name, atMax, atMin, ownMax, ownMin, null, null);
         }
 
-        var from = curves.IsAccumulated(quantity) ? window.From : 0;
+        var from = CurveBuilder.GatheredFrom(quantity, window.From);
         // Nothing else asks for it: kept, it would hold the memory of every cause on every segment.
         var without = new CurveBuilder(curves).Of(quantity, Share.Without, share.Cause, from)!;
         return new Contribution(
@@ -137,7 +135,7 @@ internal sealed class ObservationMeasurement(
     private SinceEvent? Since(Measurand quantity, Extreme extreme) =>
         extreme.Value is null || curves.IsAccumulated(quantity)
             ? null
-            : since.At(quantity, extreme.Time, extreme.Side == InstantSide.Before,
+            : since.At(quantity, extreme.Time, extreme.Side != InstantSide.After,
                 times.IntervalOf(options.After));
 
     private static TimedValue Search(Curve curve, (double From, double To) window, bool greatest)

@@ -27,6 +27,7 @@ internal sealed class RequirementMeasurement(
             requirement.Statement, requirement.Reason, requirement.Unit, line, verdict.Holds, verdict.Worst,
             verdict.Margin)
         {
+            Quantity = requirement.Judged,
             IsJudged = verdict.IsJudged,
         };
     }
@@ -38,16 +39,14 @@ internal sealed class RequirementMeasurement(
             return NotJudged(requirement);
         }
 
-        var from = curves.IsAccumulated(requirement.Quantity) ? window.From : 0;
+        var from = CurveBuilder.GatheredFrom(requirement.Quantity, window.From);
         if (curves.Of(requirement.Quantity, from: from) is not { } curve)
         {
             return NotJudged(requirement);
         }
 
-        var (up, down) = infinities.Of(requirement.Quantity, window.From, window.To);
-        if ((limits.Upper is not null && up is not null) || (limits.Lower is not null && down is not null))
+        if (infinities.BreaksAt(requirement.Quantity, limits, window.From, window.To) is { } time)
         {
-            var time = (limits.Upper is null ? down : up) ?? down!.Value;
             return new Verdict(false, new TimedValue(null, time), null);
         }
 

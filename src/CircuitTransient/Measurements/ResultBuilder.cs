@@ -11,8 +11,31 @@ using CircuitTransient.Text;
 namespace CircuitTransient.Measurements;
 
 /// <summary>Measures a solved study: from closed forms to every figure a user is told.</summary>
-public static class ResultBuilder
+public sealed class ResultBuilder
 {
+    private readonly TransientSolution solution;
+    private readonly Circuit circuit;
+    private readonly AnalysisOptions options;
+    private readonly CancellationToken cancellation;
+    private readonly CurveBuilder curves;
+    private readonly WindowTimes times;
+    private readonly Infinities infinities;
+    private readonly StoredEnergy energy;
+    private readonly FigureMeasurement reading;
+    private readonly double[][,] grams;
+
+    private ResultBuilder(TransientSolution solution, AnalysisOptions options, CancellationToken cancellation)
+    {
+        (this.solution, this.options, this.cancellation) = (solution, options, cancellation);
+        circuit = solution.Circuit;
+        curves = new CurveBuilder(solution);
+        times = new WindowTimes(solution);
+        infinities = new Infinities(curves);
+        energy = new StoredEnergy(curves);
+        reading = new FigureMeasurement(curves, times, infinities);
+        grams = [.. solution.Segments.Select(GramIntegral.Of)];
+    }
+
     /// <summary>Takes all measurements.</summary>
     /// <param name="solution">The solved study.</param>
     /// <param name="warnings">The warnings of the stages before.</param>
@@ -22,62 +45,36 @@ public static class ResultBuilder
         TransientSolution solution,
         ImmutableArray<Diagnostic> warnings,
         AnalysisOptions options,
-        CancellationToken cancellation = default)
+        CancellationToken cancellation = default) =>
+        new ResultBuilder(solution, options, cancellation).Measure(warnings);
+
+    private TransientResult Measure(ImmutableArray<Diagnostic> warnings)
     {
-        var circuit = solution.Circuit;
-        var curves = new CurveBuilder(solution);
-        var times = new WindowTimes(solution);
-        var infinities = new Infinities(curves);
-        var energy = new StoredEnergy(curves);
-        var intervals = new IntervalMeasurement(solution, energy);
-        var events = new EventMeasurement(curves);
-        var observing = new ObservationMeasurement(
-            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options,
-            cancellation);
-        var reading = new FigureMeasurement(curves, times, infinities);
-        var judging = new RequirementMeasurement(curves, times, infinities, reading);
-        var grams = solution.Segments.Select(GramIntegral.Of).ToArray();
-        var stresses = new PartStresses(curves, infinities, s => grams[s]);
-
-        var own = new CurveBuilder(curves);
-        var checking =
-            Task.Run(() => SelfChecks.Run(own, new StoredEnergy(own), s => grams[s]), cancellation);
-
-        var observed = circuit.Observations.Where(o => o.Quantity is not Figure)
-            .Select(o => Unless(observing.Measure(o), cancellation)).ToArray();
-        var parts = Enumerable.Range(0, circuit.Parts.Length)
-            .Select(i => Unless(stresses.Measure(i), cancellation)).ToImmutableArray();
-        var requirements =
-            circuit.Requirements.Select(r => Unless(judging.Judge(r), cancellation) with
-            {
-                Doubt = LinearLimits.Doubt(parts),
-            }).ToImmutableArray();
-        var waves = SampledWaves.Of(
-            solution, observed, options.SampleCount,
-            [
-                .. observed.SelectMany(o => Peaks(o.Result)),
-                .. requirements.Select(r => r.Worst.Time).Where(t => t >= 0 && t <= solution.Until),
-            ]);
-        var intervalResults = solution.Intervals.Select(intervals.Measure).ToImmutableArray();
-        var eventResults = solution.Occurrences.Select(events.Measure).ToImmutableArray();
+        var checking = Check();
+        var observed = Observe();
+        var parts = Stress();
+        var requirements = Judge(LinearLimits.Doubt(parts));
+        var waves = Sample(observed, requirements);
+        var intervals = solution.Intervals.Select(new IntervalMeasurement(solution, energy).Measure)
+            .ToImmutableArray();
+        var events = solution.Occurrences.Select(new EventMeasurement(curves).Measure).ToImmutableArray();
         var (checks, notJudged) = checking.GetAwaiter().GetResult();
         return new TransientResult(
             circuit,
             solution.Until,
             solution.UntilReason,
-            [.. solution.Causes.Select(c => NameOf(circuit, c))],
-            intervalResults,
-            eventResults,
+            [.. solution.Causes.Select(NameOf)],
+            intervals,
+            events,
             waves.Times,
             waves.Observations,
-            [.. circuit.Observations.Where(o => o.Quantity is Figure)
-                .Select(o => Unless(reading.Measure(o), cancellation))],
+            Read(),
             requirements,
             parts,
             checks,
             notJudged,
             Notices.Of(solution, warnings, waves.Observations),
-            new CautionFinder(curves, parts, intervalResults, eventResults).Find())
+            new CautionFinder(curves, parts, intervals, events).Find())
         {
             IsAfterAsked = options.After is not null,
             By = options.By,
@@ -86,7 +83,56 @@ public static class ResultBuilder
         };
     }
 
-    private static CauseName NameOf(Circuit circuit, Cause cause) => cause switch
+    /// <summary>The self-checks run beside the measurements, on curves of their own.</summary>
+    private Task<(ImmutableArray<SelfCheck> Checks, ImmutableArray<NotJudged> NotJudged)> Check()
+    {
+        var own = new CurveBuilder(curves);
+        return Task.Run(() => SelfChecks.Run(own, new StoredEnergy(own), s => grams[s]), cancellation);
+    }
+
+    private (ObservationResult Result, ImmutableArray<Curve> Curves)[] Observe()
+    {
+        var observing = new ObservationMeasurement(
+            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options,
+            cancellation);
+        return [.. Each(circuit.Observations.Where(o => o.Quantity is not Figure), observing.Measure)];
+    }
+
+    private ImmutableArray<FigureResult> Read() =>
+        [.. Each(circuit.Observations.Where(o => o.Quantity is Figure), reading.Measure)];
+
+    private ImmutableArray<PartResult> Stress()
+    {
+        var stresses = new PartStresses(curves, infinities, s => grams[s]);
+        return [.. Each(Enumerable.Range(0, circuit.Parts.Length), stresses.Measure)];
+    }
+
+    private ImmutableArray<RequirementResult> Judge(string? doubt)
+    {
+        var judging = new RequirementMeasurement(curves, times, infinities, reading);
+        return [.. Each(circuit.Requirements, judging.Judge).Select(r => r with { Doubt = doubt })];
+    }
+
+    private SampledWaves Sample(
+        (ObservationResult Result, ImmutableArray<Curve> Curves)[] observed,
+        ImmutableArray<RequirementResult> requirements) =>
+        SampledWaves.Of(
+            solution, observed, options.SampleCount,
+            [
+                .. observed.SelectMany(o => (double[])[o.Result.Max.Time, o.Result.Min.Time]),
+                .. requirements.Select(r => r.Worst.Time).Where(t => t >= 0 && t <= solution.Until),
+            ]);
+
+    private IEnumerable<TResult> Each<T, TResult>(IEnumerable<T> all, Func<T, TResult> measure)
+    {
+        foreach (var one in all)
+        {
+            yield return measure(one);
+            cancellation.ThrowIfCancellationRequested();
+        }
+    }
+
+    private CauseName NameOf(Cause cause) => cause switch
     {
         { IsEdge: true } => new(cause.Name, CauseKind.Edge, circuit.Parts[cause.Source].Name)
         {
@@ -96,12 +142,4 @@ public static class ResultBuilder
         { Source: >= 0 } => new(cause.Name, CauseKind.Source),
         _ => new(cause.Name, CauseKind.Stored),
     };
-
-    private static IEnumerable<double> Peaks(ObservationResult result) => [result.Max.Time, result.Min.Time];
-
-    private static T Unless<T>(T value, CancellationToken cancellation)
-    {
-        cancellation.ThrowIfCancellationRequested();
-        return value;
-    }
 }

@@ -71,7 +71,7 @@ internal sealed class SinceEventBreakdown(TransientSolution solution, Cancellati
         var layout = solution.Layout;
         var switching = Words(first);
         var causes = ImmutableArray.CreateBuilder<Cause>();
-        causes.AddRange(CauseList.FromStart(circuit).Where(c => c.Source >= 0));
+        causes.AddRange(CauseList.FromStart(circuit).Causes.Where(c => c.Source >= 0));
         for (var k = 0; k < layout.Stores.Length; k++)
         {
             var held = HeldBefore(first, k);

@@ -12,23 +12,6 @@ public sealed class ComplexLuFactorization
         _order = order;
     }
 
-    /// <summary>Whether some pivot is exactly zero, so that nothing can be solved.</summary>
-    public bool IsSingular
-    {
-        get
-        {
-            for (int i = 0; i < _lu.Rows; i++)
-            {
-                if (_lu[i, i].IsZero)
-                {
-                    return true;
-                }
-            }
-
-            return false;
-        }
-    }
-
     /// <summary>Factorises a copy of <paramref name="a"/>.</summary>
     public static ComplexLuFactorization Of(DoubleDoubleComplexMatrix a)
     {

@@ -46,9 +46,6 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
         return new(p, Math.FusedMultiplyAdd(a, b, -p));
     }
 
-    /// <summary>a / b.</summary>
-    public static DoubleDouble FromQuotient(double a, double b) => (DoubleDouble)a / b;
-
     /// <summary>a + b without rounding, for |a| ≥ |b| or a = 0.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     internal static DoubleDouble FromOrderedSum(double a, double b)

@@ -6,54 +6,10 @@ public sealed class LuFactorization
     private readonly DoubleDoubleMatrix _lu;
     private readonly int[] _order;
 
-    private LuFactorization(DoubleDoubleMatrix lu, int[] order, int sign)
+    private LuFactorization(DoubleDoubleMatrix lu, int[] order)
     {
         _lu = lu;
         _order = order;
-        Determinant = sign;
-        for (int i = 0; i < lu.Rows; i++)
-        {
-            Determinant *= lu[i, i];
-        }
-    }
-
-    /// <summary>The determinant.</summary>
-    public DoubleDouble Determinant { get; }
-
-    /// <summary>Whether some pivot is exactly zero, so that nothing can be solved.</summary>
-    public bool IsSingular
-    {
-        get
-        {
-            for (int i = 0; i < _lu.Rows; i++)
-            {
-                if (_lu[i, i].IsZero)
-                {
-                    return true;
-                }
-            }
-
-            return false;
-        }
-    }
-
-    /// <summary>Smallest over largest pivot magnitude; a rough measure of how near to singular. 1 for order
-    /// zero.
-    /// </summary>
-    public double PivotRatio
-    {
-        get
-        {
-            double smallest = double.PositiveInfinity;
-            double largest = 0;
-            for (int i = 0; i < _lu.Rows; i++)
-            {
-                smallest = Math.Min(smallest, Math.Abs(_lu[i, i].Hi));
-                largest = Math.Max(largest, Math.Abs(_lu[i, i].Hi));
-            }
-
-            return _lu.Rows == 0 ? 1 : smallest == 0 ? 0 : smallest / largest;
-        }
     }
 
     /// <summary>Factorises a copy of <paramref name="a"/>.</summary>
@@ -64,7 +20,6 @@ public sealed class LuFactorization
         int n = a.Rows;
         DoubleDoubleMatrix lu = a.Copy();
         int[] order = [.. Enumerable.Range(0, n)];
-        int sign = 1;
         for (int k = 0; k < n; k++)
         {
             int pivot = LargestBelow(lu, k);
@@ -72,13 +27,12 @@ public sealed class LuFactorization
             {
                 Exchange(lu, k, pivot);
                 (order[k], order[pivot]) = (order[pivot], order[k]);
-                sign = -sign;
             }
 
             Eliminate(lu, k);
         }
 
-        return new(lu, order, sign);
+        return new(lu, order);
     }
 
     /// <summary>X of A X = <paramref name="b"/>.</summary>

@@ -37,7 +37,12 @@ public static class InstantWords
         var names = Names(result, last.Time);
         if (time - last.Time <= RoundingOfTimes * time)
         {
-            return side == InstantSide.Before ? $"just before {names}" : $"just after {names}";
+            return side switch
+            {
+                InstantSide.Before => $"just before {names}",
+                InstantSide.At => $"when {names}",
+                _ => $"just after {names}",
+            };
         }
 
         return $"{EngineeringNumber.Format(time - last.Time, "s")} after {names}";

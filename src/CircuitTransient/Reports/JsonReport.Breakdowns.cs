@@ -58,7 +58,8 @@ public static partial class JsonReport
 
     private static void WriteModes(Utf8JsonWriter json, ModeBreakdown breakdown)
     {
-        json.Objects("modes", breakdown.Modes.Select((mode, m) => (mode, breakdown.Energies?.Own[m])), WriteMode);
+        json.Objects(
+            "modes", breakdown.Modes.Select((mode, m) => (mode, breakdown.Energies?.Own[m])), WriteMode);
         json.Objects("causes", breakdown.Causes, (to, cause) =>
         {
             to.WriteString("cause", cause.Cause);

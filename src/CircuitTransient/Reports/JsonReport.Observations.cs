@@ -108,6 +108,7 @@ public static partial class JsonReport
     private static void WriteRequirement(Utf8JsonWriter json, RequirementResult requirement)
     {
         json.WriteString("statement", requirement.Statement);
+        json.Text("quantity", requirement.Quantity);
         json.WriteNumber("line", requirement.Line);
         json.WriteBoolean("holds", requirement.Holds);
         json.Object("worst", requirement.Worst, WriteTimed);

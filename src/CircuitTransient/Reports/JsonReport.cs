@@ -42,7 +42,8 @@ public static partial class JsonReport
         json.Objects("figures", result.Figures, WriteFigure);
         json.Objects("requirements", result.Requirements, WriteRequirement);
         var stated = result.Circuit.Parts;
-        json.Objects("parts", result.Parts.Select((part, i) => (part, stated.ElementAtOrDefault(i))), WritePart);
+        json.Objects(
+            "parts", result.Parts.Select((part, i) => (part, stated.ElementAtOrDefault(i))), WritePart);
         json.Objects("selfChecks", result.SelfChecks, WriteSelfCheck);
         json.Objects("notJudged", result.NotJudged, WriteNotJudged);
         json.Objects("warnings", result.Warnings, WriteWarning);

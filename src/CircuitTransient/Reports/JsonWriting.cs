@@ -50,13 +50,7 @@ internal static class JsonWriting
         });
 
     /// <summary>The schema that is embedded under a name.</summary>
-    public static string Schema(string name)
-    {
-        using var stream = typeof(JsonWriting).Assembly.GetManifestResourceStream(name)
-            ?? throw new InvalidOperationException($"{name} is not embedded");
-        using var reader = new StreamReader(stream, Encoding.UTF8);
-        return reader.ReadToEnd();
-    }
+    public static string Schema(string name) => EmbeddedText.Of(name);
 
     /// <summary>The member <c>circuit</c>: which circuit the document speaks of.</summary>
     public static void Circuit(this Utf8JsonWriter json, Circuit circuit)

@@ -109,11 +109,8 @@ public static class PeakWords
                 + At(other),
     };
 
-    // `25.07 kHz: Lcab with Cin` within a sentence
     private static string At(ModeResult mode) =>
-        mode.Name.IndexOf(": ", StringComparison.Ordinal) is > 0 and var colon
-            ? $"{mode.Name[..colon]} ({mode.Name[(colon + 2)..]})"
-            : mode.Name;
+        mode.Holders is null ? mode.Pace : $"{mode.Pace} ({mode.Holders})";
 
     /// <summary>Two large causes that act by what is left between them.</summary>
     private static string? Driven(SinceEvent? since, string unit)

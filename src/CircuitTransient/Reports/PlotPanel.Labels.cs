@@ -83,7 +83,9 @@ internal sealed partial class PlotPanel
 
     private void AddPeak(Extreme extreme, bool isMax)
     {
-        if (extreme.Value is not { } value || IsRounding(value) || !window.Holds(extreme.Time))
+        // A mark at nothing, or at what rounding left of nothing, tells nothing.
+        if (extreme.Value is not { } value || ReportWords.IsRounding(value, observation)
+            || !window.Holds(extreme.Time))
         {
             return;
         }
@@ -117,10 +119,6 @@ internal sealed partial class PlotPanel
                 IsStrong: true,
                 HasHalo: true));
     }
-
-    // A mark at nothing, or at what rounding left of nothing, tells nothing.
-    private bool IsRounding(double value) =>
-        Math.Abs(value) <= 1e-12 * Math.Abs(observation.Greatest.Value ?? 0);
 
     // Past the lines of the causes where they run close by, so that the label hides none of them.
     private double PeakLabelPlace(double peak, bool isMax)

@@ -15,6 +15,18 @@ internal static class ReportWords
             ? EngineeringNumber.Format(number, unit)
             : "undetermined";
 
+    /// <summary>A figure beside greater ones; what rounding left of nothing is nothing.</summary>
+    public static string Number(double? value, string unit, double scale) =>
+        Number(value is { } number && IsRounding(number, scale) ? 0 : value, unit);
+
+    /// <summary>Whether a figure is what rounding left of two equal ones of a size: the engine owes 1e-11 of
+    /// it.</summary>
+    public static bool IsRounding(double value, double scale) => Math.Abs(value) <= 1e-12 * scale;
+
+    /// <summary>Whether a value of an observation is what rounding left of nothing.</summary>
+    public static bool IsRounding(double value, ObservationResult observed) =>
+        IsRounding(value, Math.Abs(observed.Greatest.Value ?? 0));
+
     /// <summary>What a switch saw just before it acted; nothing is known of the time before the
     /// start.</summary>
     public static string Before(EventResult switching, double? value, string unit) =>
@@ -23,6 +35,10 @@ internal static class ReportWords
     /// <summary>A figure with its sign, a plus too.</summary>
     public static string Signed(double? value, string unit) =>
         value > 0 ? $"+{Number(value, unit)}" : Number(value, unit);
+
+    /// <summary>A figure beside greater ones with its sign.</summary>
+    public static string Signed(double? value, string unit, double scale) =>
+        value is { } number && IsRounding(number, scale) ? Number(0, unit) : Signed(value, unit);
 
     /// <summary>A fraction in per cent.</summary>
     public static string Percent(double fraction)
@@ -137,7 +153,5 @@ internal static class ReportWords
 
     /// <summary>A value of an observation; what rounding left of nothing is nothing.</summary>
     public static double? Cleaned(double? value, ObservationResult observed) =>
-        value is { } figure && Math.Abs(figure) < 1e-12 * Math.Abs(observed.Greatest.Value ?? 0)
-            ? 0
-            : value;
+        value is { } figure && IsRounding(figure, observed) ? 0 : value;
 }

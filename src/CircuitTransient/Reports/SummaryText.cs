@@ -55,6 +55,22 @@ internal sealed class SummaryText(bool colour)
         }
     }
 
+    /// <summary>Where the files are, and the sentence every summary ends with.</summary>
+    public void End(ImmutableArray<string> files)
+    {
+        if (!files.IsEmpty)
+        {
+            Heading("Files");
+            foreach (var file in files)
+            {
+                Paragraph(file);
+            }
+        }
+
+        Blank();
+        Paragraph(TerminalSummary.Closing, indent: 0);
+    }
+
     /// <inheritdoc/>
     public override string ToString() => text.ToString();
 

@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using CircuitTransient.Measurements;
 using CircuitTransient.Measurements.Breakdowns;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports;
 
@@ -104,7 +105,7 @@ public static partial class TerminalSummary
     private static ImmutableArray<int> Beside(ModeBreakdown breakdown) => breakdown.Causes.Length < 2
         ? []
         : [.. Enumerable.Range(0, breakdown.Causes.Length)
-            .Where(c => breakdown.Causes[c].Values.Any(v => Math.Abs(v) > 1e-12 * Largest(breakdown)))
+            .Where(c => breakdown.Causes[c].Values.Any(v => !IsRounding(v, Largest(breakdown))))
             .OrderByDescending(c => breakdown.Causes[c].Values.Select(Math.Abs).DefaultIfEmpty().Max())
             .Take(MostCausesBeside).Order()];
 

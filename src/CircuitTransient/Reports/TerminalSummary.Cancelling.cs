@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Measurements;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports;
 

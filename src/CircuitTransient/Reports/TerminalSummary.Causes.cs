@@ -1,7 +1,7 @@
 using System.Collections.Immutable;
-using System.Globalization;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports;
 
@@ -186,19 +186,8 @@ public static partial class TerminalSummary
         return decided.Length == 0 ? null : string.Join(", ", decided);
     }
 
-    private static string Signed(double? value, string unit, double scale) =>
-        value > 1e-12 * scale ? $"+{Number(value, unit)}" : Number(value, unit, scale);
-
     private static string PercentOf(double? value, double total) =>
         value is { } share && total != 0 ? Percent(share / total) : "";
-
-    private static string Percent(double fraction)
-    {
-        var percent = Math.Round(100 * fraction, 1) + 0.0; // never a negative zero
-        var digits = Math.Abs(percent) >= 1000 ? "0" : "0.0";
-        var text = percent.ToString(digits, CultureInfo.InvariantCulture);
-        return text + " %";
-    }
 
     private sealed record Share(
         string Cause,

@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using CircuitTransient.Measurements;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports;
 
@@ -77,26 +78,18 @@ public static partial class TerminalSummary
 
     private static ImmutableArray<string> RowOf(TransientResult result, RequirementResult requirement)
     {
-        var verdict = (requirement.Holds, requirement.Margin) switch
-        {
-            _ when !requirement.IsJudged => "broken: nothing to judge",
-            (true, { } margin) => $"held, {Number(margin, requirement.Unit)} to spare",
-            (true, null) => "held",
-            (false, { } margin) => $"broken by {Number(-margin, requirement.Unit)}",
-            (false, null) => "broken without limit",
-        };
         var because = requirement.Reason is { } reason ? $" because \"{reason}\"" : "";
         var statement = $"{requirement.Statement}{because} (line {requirement.Line})" +
             (requirement.Doubt is { } doubt ? $"; in doubt: {doubt}" : "");
         if (!requirement.IsJudged)
         {
-            return [verdict, statement, "there is no such value in this study"];
+            return [Held(requirement), statement, "there is no such value in this study"];
         }
 
-        var worst = Finite(requirement.Worst.Value, requirement.Unit);
+        var worst = Peak(requirement.Worst, requirement.Unit);
         var when = InstantWords.At(result, requirement.Worst.Time);
         var joint = when.Length == 0 ? "" : when.StartsWith("at ", StringComparison.Ordinal) ? " " : ", ";
-        return [verdict, statement, worst + joint + when];
+        return [Held(requirement), statement, worst + joint + when];
     }
 
     private static void WriteRatings(SummaryText text, TransientResult result)
@@ -127,29 +120,7 @@ public static partial class TerminalSummary
     private static ImmutableArray<string> RowOf(string part, RatingResult rating)
     {
         var used = rating.Used is { } fraction ? Percent(fraction) : "";
-        var over = rating.Reached - rating.Rated;
-        var verdict = (rating.Holds, over) switch
-        {
-            (true, _) => "held",
-            (false, { } excess) => $"exceeded by {Number(excess, rating.Unit)}",
-            (false, null) => "exceeded without limit",
-        };
-        var reached = Finite(rating.Reached, rating.Unit);
-        return [part, Rated(rating.Unit), reached, $"of {Number(rating.Rated, rating.Unit)}", used, verdict];
+        return [part, Rated(rating.Unit), Reached(rating), $"of {Number(rating.Rated, rating.Unit)}", used,
+            Held(rating)];
     }
-
-    private static string Finite(double? value, string unit) =>
-        value is null ? "no finite value" : Number(value, unit);
-
-    private static string Rated(string unit) => unit switch
-    {
-        "V" => "peak voltage",
-        "A" => "peak current",
-        "W" => "mean power",
-        "J" => "energy",
-        "A²s" => "I²t",
-        "V/s" => "rate of change of voltage",
-        "A/s" => "rate of change of current",
-        _ => "rating",
-    };
 }

@@ -1,7 +1,7 @@
 using System.Collections.Immutable;
-using System.Globalization;
 using CircuitTransient.Measurements;
 using CircuitTransient.Text;
+using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports;
 
@@ -41,9 +41,7 @@ public static partial class TerminalSummary
         WriteSelfChecks(text, result.SelfChecks, result.NotJudged);
         WriteWarnings(text, result);
         WriteCautions(text, result);
-        WriteFiles(text, files);
-        text.Blank();
-        text.Paragraph(Closing, indent: 0);
+        text.End(files);
         return text.ToString();
     }
 
@@ -146,8 +144,9 @@ public static partial class TerminalSummary
         }
 
         // The bound is owed within 1e-9 of the value; where it fell short, the reader is told.
-        var rounding = 1e-12 * Math.Abs(observation.Greatest.Value ?? 0);
-        return extreme.Bound is { } bound && Math.Abs(bound - value) > (2e-9 * Math.Abs(value)) + rounding
+        return extreme.Bound is { } bound
+            && !IsRounding(bound - value, observation)
+            && Math.Abs(bound - value) > 2e-9 * Math.Abs(value)
             ? when + $"; proven only not to pass {Number(bound, observation.Unit)}"
             : when;
     }
@@ -205,15 +204,15 @@ public static partial class TerminalSummary
             text.Table(
                 [Prose, Left],
                 failed.Select(check => ImmutableArray.Create(
-                    check.Name, $"worst {Ratio(check.Worst)}, allowed {Ratio(check.Allowed)}")));
+                    check.Name, $"worst {Small(check.Worst)}, allowed {Small(check.Allowed)}")));
         }
         else if (!checks.IsEmpty)
         {
             var closest = checks.MaxBy(check => check.Worst / check.Allowed)!;
             var count = checks is [_] ? "it holds" : $"all {checks.Length} hold";
             text.Paragraph(
-                $"Self-checks: {count}; nearest to its limit is {closest.Name}, {Ratio(closest.Worst)} of " +
-                $"{Ratio(closest.Allowed)} allowed.",
+                $"Self-checks: {count}; nearest to its limit is {closest.Name}, {Small(closest.Worst)} of " +
+                $"{Small(closest.Allowed)} allowed.",
                 indent: 0,
                 hanging: 2);
         }
@@ -254,27 +253,4 @@ public static partial class TerminalSummary
             }
         }
     }
-
-    private static void WriteFiles(SummaryText text, ImmutableArray<string> files)
-    {
-        if (!files.IsEmpty)
-        {
-            text.Heading("Files");
-            foreach (var file in files)
-            {
-                text.Paragraph(file);
-            }
-        }
-    }
-
-    private static string Number(double? value, string unit) =>
-        value is { } number && double.IsFinite(number)
-            ? EngineeringNumber.Format(number, unit)
-            : "undetermined";
-
-    // What is left of two equal figures after rounding is no figure: the engine owes 1e-11 of the scale.
-    private static string Number(double? value, string unit, double scale) =>
-        value is { } number && Math.Abs(number) <= 1e-12 * scale ? Number(0, unit) : Number(value, unit);
-
-    private static string Ratio(double value) => value.ToString("0.#e-0", CultureInfo.InvariantCulture);
 }

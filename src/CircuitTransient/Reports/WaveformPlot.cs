@@ -8,22 +8,12 @@ namespace CircuitTransient.Reports;
 public static class WaveformPlot
 {
     private const int MostPanels = 24;
-    private const double PixelsPerPoint = 2;
-    private const double Margin = 20;
 
     /// <summary>The picture as SVG.</summary>
-    public static string Svg(TransientResult result)
-    {
-        using var fonts = new PlotFonts();
-        return SvgRenderer.Write(Draw(result, fonts));
-    }
+    public static string Svg(TransientResult result) => PlotPage.Svg(fonts => Draw(result, fonts));
 
     /// <summary>The picture as PNG, two pixels a point.</summary>
-    public static byte[] Png(TransientResult result)
-    {
-        using var fonts = new PlotFonts();
-        return PngRenderer.Write(Draw(result, fonts), fonts, PixelsPerPoint);
-    }
+    public static byte[] Png(TransientResult result) => PlotPage.Png(fonts => Draw(result, fonts));
 
     /// <summary>The picture before it is rendered.</summary>
     public static Drawing Draw(TransientResult result, PlotFonts fonts)
@@ -33,23 +23,8 @@ public static class WaveformPlot
             .ToArray();
         var shapes = ImmutableArray.CreateBuilder<Shape>();
         var title = result.Circuit.Title ?? result.Circuit.Source.Name;
-        var left = 76;
-        shapes.Add(
-            new TextShape(
-                left,
-                34,
-                fonts.Fitted(title, 19, PlotPanel.Width - left - Margin, isStrong: true),
-                19,
-                PlotStyle.Ink,
-                IsStrong: true));
-        var verdict = TerminalSummary.Verdict(result);
-        shapes.Add(
-            new TextShape(
-                left,
-                55,
-                fonts.Fitted(verdict, 12.5, PlotPanel.Width - left - Margin),
-                12.5,
-                PlotStyle.Grey));
+        shapes.Add(PlotPage.Title(title, fonts));
+        shapes.Add(PlotPage.Remark(TerminalSummary.Verdict(result), 55, fonts));
         var y = 76.0;
         foreach (var (observation, window) in panels.Take(MostPanels))
         {
@@ -62,20 +37,11 @@ public static class WaveformPlot
         {
             var words =
                 $"{panels.Length - MostPanels} more panels are left out; waveforms.csv has them all.";
-            shapes.Add(new TextShape(left, y + 12, words, 12.5, PlotStyle.Grey));
+            shapes.Add(PlotPage.Remark(words, y + 12, fonts));
             y += 24;
         }
 
-        var source = result.Circuit.Source;
-        var foot =
-            $"{source.Name}, SHA-256 {source.Sha256[..12]}… · a linear model, a calculation aid";
-        shapes.Add(
-            new TextShape(
-                left,
-                y + 10,
-                fonts.Fitted(foot, 11, PlotPanel.Width - left - Margin),
-                11,
-                PlotStyle.Grey));
+        shapes.Add(PlotPage.Foot(result.Circuit, y + 10, fonts));
         return new Drawing(PlotPanel.Width, y + 26, $"Waveforms of {title}", shapes.ToImmutable());
     }
 

@@ -64,6 +64,11 @@ internal sealed class AskedQuantities(Circuit circuit, Func<Instant, double> ins
                 {
                     yield return ([condition.Quantity], declared.Span, "waited for");
                 }
+                else if (declared is { CutAtMost: not null, Trigger: AtInstant at }
+                    && instantOf(at.Instant) < until)
+                {
+                    yield return ([new CurrentThrough(i)], declared.Span, "waited for");
+                }
             }
         }
     }

@@ -22,17 +22,16 @@ public sealed record Cause(
     public string? Pulse { get; init; }
 }
 
-/// <summary>The lists of causes.</summary>
-public static class CauseList
+/// <summary>The causes of a study, in the order of the parts.</summary>
+public sealed record CauseList(ImmutableArray<Cause> Causes)
 {
     /// <summary>The most causes that edges may make: each is followed from edge to edge and to
     /// every observation, so time and memory grow with the square of their number (300: some 5 s
     /// and 0.4 GB for two observations).</summary>
     public const int MostEdges = 300;
 
-    /// <summary>From the start: every source, and every stored quantity that is not zero,
-    /// in the order of the parts.</summary>
-    public static ImmutableArray<Cause> FromStart(Circuit circuit)
+    /// <summary>From the start: every source, and every stored quantity that is not zero.</summary>
+    public static CauseList FromStart(Circuit circuit)
     {
         var causes = ImmutableArray.CreateBuilder<Cause>();
         for (var i = 0; i < circuit.Parts.Length; i++)
@@ -54,16 +53,16 @@ public static class CauseList
             }
         }
 
-        return causes.ToImmutable();
+        return new(causes.ToImmutable());
     }
 
     /// <summary>By edge: the edges of every source that begin within the study, and what is stored as from
     /// the start. A source of one edge that has always been on keeps its plain name.</summary>
-    /// <returns>The causes; or, as a problem, which source has too many edges to be told apart.</returns>
-    public static (ImmutableArray<Cause> Causes, Diagnostic? Problem) ByEdge(Circuit circuit)
+    /// <returns>The causes; or which source has too many edges to be told apart.</returns>
+    public static Outcome<CauseList> ByEdge(Circuit circuit)
     {
         var causes = ImmutableArray.CreateBuilder<Cause>();
-        foreach (var cause in FromStart(circuit))
+        foreach (var cause in FromStart(circuit).Causes)
         {
             if (WaveOf(circuit, cause.Source) is not { } wave)
             {
@@ -74,7 +73,7 @@ public static class CauseList
             var edges = WaveEdge.Of(wave).Where(e => e.Start == 0 || !(e.Start >= circuit.Until)).ToArray();
             if (causes.Count + edges.Length > MostEdges)
             {
-                return ([], TooMany(circuit, cause, edges.Length));
+                return new(null, [TooMany(circuit, cause, edges.Length)]);
             }
 
             var isPlain = edges is [{ Pieces: [{ IsPerpetual: true }] }];
@@ -86,7 +85,7 @@ public static class CauseList
             }));
         }
 
-        return (causes.ToImmutable(), null);
+        return new(new(causes.ToImmutable()), []);
     }
 
     private static Diagnostic TooMany(Circuit circuit, Cause cause, int edges) => Diagnostic.Error(

@@ -26,8 +26,7 @@ public sealed class IntervalModel
         Form = form;
         IsClosed = isClosed;
         Blocks = blocks;
-        firstAlike = [.. Blocks.Select((one, b) => one.Size > 1 ? b : Blocks.ToList().FindIndex(
-            other => other.Size == 1 && other.IsReal == one.IsReal && other.T[0, 0] == one.T[0, 0]))];
+        firstAlike = FirstAlikes(blocks);
         drives = new DoubleDoubleComplex[Blocks.Length][][];
         for (var b = 0; b < Blocks.Length; b++)
         {
@@ -73,6 +72,19 @@ public sealed class IntervalModel
 
             return projection;
         }
+    }
+
+    private static int[] FirstAlikes(ImmutableArray<SpectralBlock> blocks)
+    {
+        var first = new int[blocks.Length];
+        var seen = new Dictionary<(bool IsReal, DoubleDoubleComplex Pole), int>();
+        foreach (var (b, block) in blocks.Index())
+        {
+            var isNew = block.Size > 1 || seen.TryAdd((block.IsReal, block.T[0, 0]), b);
+            first[b] = isNew ? b : seen[(block.IsReal, block.T[0, 0])];
+        }
+
+        return first;
     }
 }
 

@@ -10,7 +10,8 @@ public static class KnownIntervals
 {
     /// <summary>An error for each set of positions, met at a known instant, whose equations have no unique
     /// solution.</summary>
-    public static ImmutableArray<Diagnostic> FindUnsolvable(Circuit circuit)
+    public static ImmutableArray<Diagnostic> FindUnsolvable(
+        Circuit circuit, CancellationToken cancellation)
     {
         var layout = new NetworkLayout(circuit);
         var timeline = new Timeline(circuit);
@@ -19,17 +20,16 @@ public static class KnownIntervals
         double now = 0;
         while (true)
         {
-            var waiting = timeline.Waiting().Where(w => w.Event is { Trigger: AtInstant, CutAtMost: null })
-                .Select(w => (w.Reference, Due: timeline.Due(w.Reference, w.Event))).ToArray();
-            var next = waiting.Select(w => w.Due).DefaultIfEmpty(double.PositiveInfinity).Min();
+            cancellation.ThrowIfCancellationRequested();
+            var (next, events) = timeline.NextFixed();
             if (next <= now)
             {
-                timeline.Act(now, waiting.Where(w => w.Due <= now).Select(w => w.Reference),
-                    isDecidedByAnswer: false);
+                timeline.Act(now, events, isDecidedByAnswer: false);
                 continue;
             }
 
-            if (models.Add(string.Concat(timeline.IsClosed.Select(c => c ? '1' : '0'))))
+            if (!timeline.MayHaveTurned(now)
+                && models.Add(string.Concat(timeline.IsClosed.Select(c => c ? '1' : '0'))))
             {
                 found.AddRange(Find(layout, timeline, now, Math.Min(next, circuit.Until ?? next)));
             }
@@ -47,8 +47,17 @@ public static class KnownIntervals
         NetworkLayout layout, Timeline timeline, double from, double until)
     {
         var rows = NetworkEquations.Assemble(layout, timeline.IsClosed);
-        return DescriptorReduction.Reduce(layout, rows, out _) is { } form
-            ? new AskedQuantities(layout.Circuit, timeline.InstantOf).LeftOpenIn(form, from, until)
-            : [SingularDiagnosis.Describe(layout, timeline.IsClosed, from)];
+        var reduction = new DescriptorReduction(layout, rows);
+        if (reduction.Singular is not null)
+        {
+            return [SingularDiagnosis.Describe(layout, timeline.IsClosed, from)];
+        }
+
+        // The normal form takes memory and time by the square and cube of the state: it is worth them only
+        // where something is open.
+        return reduction.LeavesOpen
+            ? new AskedQuantities(layout.Circuit, timeline.InstantOf)
+                .LeftOpenIn(reduction.Solve(), from, until)
+            : [];
     }
 }

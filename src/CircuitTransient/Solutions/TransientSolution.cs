@@ -25,6 +25,9 @@ public sealed record TransientSolution(
     ImmutableArray<EventReference> NeverActed,
     ImmutableArray<double> Initial)
 {
+    /// <summary>Every event that had not come when the next one of its switch was due.</summary>
+    public ImmutableArray<Lapse> Lapsed { get; init; } = [];
+
     /// <summary>Index of the segment that holds an instant; at a boundary the later one, unless the earlier
     /// is asked for.</summary>
     public int SegmentAt(double time, bool before = false)
@@ -56,6 +59,12 @@ public sealed record TransientSolution(
 public sealed record SolvedInterval(
     double From, double Until, IntervalModel Model, int FirstSegment, int SegmentCount,
     ImmutableArray<Occurrence> StartsWith, ImmutableArray<Segment> Momentary);
+
+/// <summary>A declared event that had not come when the next one of its switch was due, and then no longer
+/// could.</summary>
+/// <param name="Event">Which.</param>
+/// <param name="Time">When the next one was due, in seconds.</param>
+public sealed record Lapse(EventReference Event, double Time);
 
 /// <summary>A switching that took place.</summary>
 /// <param name="Time">In seconds.</param>

@@ -11,6 +11,7 @@ namespace CircuitTransient.Solutions;
 public sealed class TransientSolver
 {
     private const int MostAtOnce = 100; // switchings in no time: more is chatter
+    private const double SameInstant = 1e-12; // of the study: as finely as decided instants are found
 
     private readonly Circuit circuit;
     private readonly NetworkLayout layout;
@@ -25,6 +26,7 @@ public sealed class TransientSolver
     private ImmutableArray<Segment> momentary = [];
     private DoubleDouble[][] stored = [];
     private double now;
+    private int atOnce;
 
     private TransientSolver(Circuit circuit, ImmutableArray<Cause> causes, CancellationToken cancellation)
     {
@@ -32,7 +34,7 @@ public sealed class TransientSolver
         this.causes = causes;
         layout = new NetworkLayout(circuit);
         timeline = new Timeline(circuit);
-        models = new IntervalModels(layout);
+        models = new IntervalModels(layout, cancellation);
         solver = new IntervalSolver(layout, causes, cancellation);
         watched = new WatchedQuantities(circuit);
     }
@@ -43,8 +45,8 @@ public sealed class TransientSolver
     /// <param name="cancellation">Stops the work.</param>
     /// <returns>The solution, or why some interval has none.</returns>
     public static Outcome<TransientSolution> Solve(
-        Circuit circuit, ImmutableArray<Cause> causes, CancellationToken cancellation = default) =>
-        new TransientSolver(circuit, causes, cancellation).Run();
+        Circuit circuit, CauseList causes, CancellationToken cancellation = default) =>
+        new TransientSolver(circuit, causes.Causes, cancellation).Run();
 
     private Outcome<TransientSolution> Run()
     {
@@ -54,7 +56,6 @@ public sealed class TransientSolver
         }
 
         var initial = stored;
-        var atOnce = 0;
         while (true)
         {
             ActDue();
@@ -69,41 +70,46 @@ public sealed class TransientSolver
             }
 
             var horizon = Growth.Horizon(model, now, stored);
-            var until = Math.Min(NextFixed().Due, Math.Min(end.Time, horizon));
-            var solved = solver.Solve(model, intervals.Count, now, until, stored);
-            if (new DecidedEvents(timeline, watched, 1e-12 * end.Time).FirstIn(solved) is { } decided
+            var until = Math.Min(timeline.NextFixed().Due, Math.Min(end.Time, horizon));
+            var solved = solver.Solve(model, Place(model), now, until, stored);
+            var resolution = SameInstant * (double.IsFinite(end.Time) ? end.Time : until);
+            if (new DecidedEvents(timeline, watched, resolution).FirstIn(solved) is { } decided
                 && decided.Time < until)
             {
-                atOnce = decided.Time - now <= 1e-12 * end.Time ? atOnce + 1 : 0;
-                if (atOnce > MostAtOnce)
+                if (!IsLater(decided.Time, resolution))
                 {
                     return Failed(Chatter(decided.Events[0], now));
                 }
 
                 Advance(model, decided.Time, solved);
                 startsWith = [.. startsWith, .. timeline.Act(now, decided.Events, isDecidedByAnswer: true)];
-                continue;
             }
-
-            if (until >= horizon)
+            else if (until >= horizon)
             {
                 return Failed(Growth.Describe(circuit, model, horizon));
             }
-
-            Advance(model, until, solved);
-            if (until >= end.Time)
+            else
             {
-                var leftOpen = LeftOpen();
-                return leftOpen.IsEmpty
-                    ? new Outcome<TransientSolution>(Finish(end, initial), [])
-                    : new Outcome<TransientSolution>(null, leftOpen);
+                Advance(model, until, solved);
+                if (until >= end.Time)
+                {
+                    return Finish(end, initial);
+                }
             }
         }
     }
 
+    /// <summary>Whether time goes on to a decided switching, or at least has not stood still for too many of
+    /// them.</summary>
+    private bool IsLater(double decided, double resolution)
+    {
+        atOnce = decided - now <= resolution ? atOnce + 1 : 0;
+        return atOnce <= MostAtOnce;
+    }
+
     private void ActDue()
     {
-        var (due, events) = NextFixed();
+        var (due, events) = timeline.NextFixed();
         if (due <= now)
         {
             startsWith = [.. startsWith, .. timeline.Act(now, events, isDecidedByAnswer: false)];
@@ -119,7 +125,7 @@ public sealed class TransientSolver
             return (stated, null);
         }
 
-        return double.IsPositiveInfinity(NextFixed().Due)
+        return double.IsPositiveInfinity(timeline.NextFixed().Due)
             ? StudyEnd.Of(circuit, model, now)
             : (double.PositiveInfinity, null);
     }
@@ -135,9 +141,19 @@ public sealed class TransientSolver
             return;
         }
 
-        var kept = until < solved[^1].End ? solver.Solve(model, intervals.Count, now, until, stored) : solved;
-        intervals.Add(new SolvedInterval(now, until, model, segments.Count, kept.Length, startsWith,
-            momentary));
+        var place = Place(model);
+        var kept = until < solved[^1].End ? solver.Solve(model, place, now, until, stored) : solved;
+        if (place < intervals.Count)
+        {
+            var last = intervals[place];
+            intervals[place] = last with { Until = until, SegmentCount = last.SegmentCount + kept.Length };
+        }
+        else
+        {
+            intervals.Add(new SolvedInterval(
+                now, until, model, segments.Count, kept.Length, startsWith, momentary));
+        }
+
         segments.AddRange(kept);
         stored = solver.StoredAtEnd(kept[^1]);
         watched.Gather(kept);
@@ -146,27 +162,12 @@ public sealed class TransientSolver
         now = until;
     }
 
-    private (double Due, ImmutableArray<EventReference> Events) NextFixed()
-    {
-        var due = double.PositiveInfinity;
-        var events = ImmutableArray.CreateBuilder<EventReference>();
-        foreach (var (reference, declared) in timeline.Waiting().Where(w => Timeline.IsFixed(w.Event)))
-        {
-            var time = timeline.Due(reference, declared);
-            if (time < due)
-            {
-                due = time;
-                events.Clear();
-            }
-
-            if (time == due && !double.IsPositiveInfinity(time))
-            {
-                events.Add(reference);
-            }
-        }
-
-        return (due, events.ToImmutable());
-    }
+    /// <summary>The place of the interval that begins now; that of the last one where nothing switched and it
+    /// goes on.</summary>
+    private int Place(IntervalModel model) =>
+        startsWith.IsEmpty && momentary.IsEmpty && intervals is [.., var last] && last.Model == model
+            ? intervals.Count - 1
+            : intervals.Count;
 
     /// <summary>Sets what every store holds at t = 0⁻, cause by cause; an error where no settled state
     /// exists.</summary>
@@ -207,15 +208,21 @@ public sealed class TransientSolver
 
     private static Outcome<TransientSolution> Failed(Diagnostic diagnostic) => new(null, [diagnostic]);
 
-    private TransientSolution Finish((double Time, string? Reason) end, DoubleDouble[][] initial) => new(
-        circuit,
-        layout,
-        end.Time,
-        end.Reason,
-        causes,
-        [.. intervals],
-        [.. segments],
-        [.. timeline.Occurrences],
-        [.. timeline.Waiting().Select(w => w.Reference)],
-        [.. Enumerable.Range(0, layout.Stores.Length).Select(k => initial.Sum(own => (double)own[k]))]);
+    private Outcome<TransientSolution> Finish((double Time, string? Reason) end, DoubleDouble[][] initial) =>
+        LeftOpen() is { IsEmpty: false } open
+            ? new(null, open)
+            : new(
+                new TransientSolution(
+                    circuit,
+                    layout,
+                    end.Time,
+                    end.Reason,
+                    causes,
+                    [.. intervals],
+                    [.. segments],
+                    [.. timeline.Occurrences],
+                    [.. timeline.Left()],
+                    [.. layout.Stores.Select((_, k) => initial.Sum(own => (double)own[k]))])
+                { Lapsed = [.. timeline.Lapsed] },
+                []);
 }

@@ -104,7 +104,7 @@ public static class StudySolver
             {
                 var observation = solution.Circuit.Observations[index];
                 var window = times.Of(observation.Window);
-                var from = curves.IsAccumulated(observation.Quantity) ? window?.From ?? 0 : 0;
+                var from = CurveBuilder.GatheredFrom(observation.Quantity, window?.From ?? 0);
                 found = window is { } open && curves.Of(observation.Quantity, from: from) is { } total
                     ? extremes.Of(observation.Quantity, total, open)
                     : null;

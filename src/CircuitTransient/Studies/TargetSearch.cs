@@ -45,20 +45,17 @@ internal static class TargetSearch
         Circuit circuit, NamedValueTarget target)
     {
         var name = target.Name;
-        var owners = circuit.Parts.Select(p => p.Name).Concat(circuit.Couplings.Select(c => c.Name))
-            .ToHashSet(StringComparer.Ordinal);
         for (var i = 0; i < circuit.Parameters.Length; i++)
         {
-            var known = circuit.Parameters[i].Name;
-            if (known == $"value {name}" || (known == name && !owners.Contains(name)))
+            if (circuit.Parameters[i] is { IsNamedValue: true } named && named.Owner == name)
             {
                 return ([Parameter(circuit, i, VariedKind.NamedValue) with { Name = name }], null);
             }
         }
 
-        var names = circuit.Parameters.Select(p => p.Name).Where(n => !owners.Contains(Owner(n))).ToArray();
+        var names = circuit.Parameters.Where(p => p.IsNamedValue).Select(p => p.Owner).ToArray();
         return Missing(target, name, $"there is no named value `{name}` that has a number of its own", names,
-            owners.Contains(name)
+            circuit.Parts.Any(p => p.Name == name) || circuit.Couplings.Any(c => c.Name == name)
                 ? $"`{name}` is a part: vary it with `--part`"
                 : "no value of the circuit has a name; parts are varied with `--part`");
     }
@@ -74,8 +71,8 @@ internal static class TargetSearch
         {
             for (var i = 0; i < circuit.Parameters.Length; i++)
             {
-                if ((circuit.Parameters[i].Name == name || circuit.Parameters[i].Name == $"part {name}")
-                    && Reads(own, i))
+                if (circuit.Parameters[i] is { IsNamedValue: false, Aspect: null } value
+                    && value.Owner == name && Reads(own, i))
                 {
                     return ([Parameter(circuit, i, VariedKind.Parameter)], null);
                 }
@@ -107,7 +104,8 @@ internal static class TargetSearch
         DependentSource d => d.Gain,
         VoltageSource s => s.Wave.Scale,
         CurrentSource s => s.Wave.Scale,
-        _ => null,
+        Switch or IdealTransformer => null,
+        _ => throw new System.Diagnostics.UnreachableException($"no value of {part}"),
     };
 
     private static bool Reads(Formula formula, int parameter) => formula switch
@@ -190,8 +188,6 @@ internal static class TargetSearch
     private static TextSpan SpanOf(Circuit circuit, string name) =>
         circuit.Parts.FirstOrDefault(p => p.Name == name)?.Span
         ?? circuit.Couplings.First(c => c.Name == name).Span;
-
-    private static string Owner(string parameter) => parameter.Split(' ')[0];
 
     private static (ImmutableArray<VariedValue>, Diagnostic?) Missing(
         StudyTarget target, string name, string headline, IReadOnlyList<string> known,

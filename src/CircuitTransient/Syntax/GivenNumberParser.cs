@@ -14,47 +14,37 @@ public static class GivenNumberParser
     /// <param name="source">The option's name and its text.</param>
     /// <param name="wanted">The dimensions that will do; with none among them a bare number will.</param>
     /// <param name="form">How it is written, for advice.</param>
-    public static Outcome<GivenNumber> Parse(SourceText source, ReadOnlySpan<Dimension> wanted, string form)
-    {
-        var diagnostics = new List<Diagnostic>();
-        var tokens = new List<Token>();
-        if (!new StatementLexer(source).Next(tokens))
-        {
-            var nothing = new TextSpan(0, source.Content.Length);
-            return new(null, [Diagnostic.Error(source, nothing, "no value is given", form)]);
-        }
+    public static Outcome<GivenNumber> Parse(
+        SourceText source, IReadOnlyCollection<Dimension> wanted, string form) =>
+        OptionText.Parse(source, "no value is given", form, cursor => Read(cursor, wanted, form));
 
-        var cursor = new StatementCursor(source, tokens, diagnostics) { Form = form };
+    private static GivenNumber? Read(
+        StatementCursor cursor, IReadOnlyCollection<Dimension> wanted, string form)
+    {
         var isNegative = cursor.Take('-');
         if (cursor.Current.Kind != TokenKind.Number)
         {
             cursor.Unexpected("a number");
-            return new(null, [.. diagnostics]);
+            return null;
         }
 
         if (NumberParser.Read(cursor) is not { } number)
         {
-            return new(null, [.. diagnostics]);
+            return null;
         }
 
         var text = cursor.TextOf(number.Span);
-        if (!cursor.IsAtEnd)
+        if (cursor.IsAtEnd && !number.HasUnit && !wanted.Contains(Dimension.None))
         {
-            cursor.Unexpected("the end");
-        }
-        else if (!number.HasUnit && !wanted.Contains(Dimension.None))
-        {
-            var symbol = Unit.SymbolOf(wanted[0])!;
+            var symbol = Unit.SymbolOf(wanted.First())!;
             cursor.Error(number.Span, $"`{text}` has no unit",
                 $"write `{UnitAdvice.WithUnit(text, symbol)}`");
         }
-        else if (!wanted.Contains(number.Dimension))
+        else if (cursor.IsAtEnd && !wanted.Contains(number.Dimension))
         {
             cursor.Error(number.Span, $"`{text}` has another unit than is asked for", form);
         }
 
-        return diagnostics.Count > 0
-            ? new(null, [.. diagnostics])
-            : new(new GivenNumber(isNegative ? -number.Value : number.Value, number.Dimension), []);
+        return new GivenNumber(isNegative ? -number.Value : number.Value, number.Dimension);
     }
 }

@@ -18,41 +18,28 @@ public static class InstantListParser
     private const string Form = "such as `1 ms, 2.5 ms`";
 
     /// <summary>Reads a list; errors point into its own text.</summary>
-    public static Outcome<InstantList> Parse(SourceText source)
-    {
-        var diagnostics = new List<Diagnostic>();
-        var tokens = new List<Token>();
-        var lexer = new StatementLexer(source);
-        if (!lexer.Next(tokens))
-        {
-            var nothing = new TextSpan(0, source.Content.Length);
-            return new(null, [Diagnostic.Error(source, nothing, "no instant is given", Form)]);
-        }
+    public static Outcome<InstantList> Parse(SourceText source) =>
+        OptionText.Parse(source, "no instant is given", Form, cursor => Read(cursor, source), end: "`,`");
 
-        var cursor = new StatementCursor(source, tokens, diagnostics) { Form = Form };
+    private static InstantList? Read(StatementCursor cursor, SourceText source)
+    {
         var instants = ImmutableArray.CreateBuilder<NumberSyntax>();
         do
         {
             if (ReadInstant(cursor) is not { } instant)
             {
-                return new(null, [.. diagnostics]);
+                return null;
             }
 
             instants.Add(instant);
         }
         while (cursor.Take(','));
 
-        if (!cursor.IsAtEnd)
-        {
-            cursor.Unexpected("`,`");
-        }
-
-        return diagnostics.Count == 0
-            ? new(new InstantList(source, instants.ToImmutable()), [])
-            : new(null, [.. diagnostics]);
+        return new InstantList(source, instants.ToImmutable());
     }
 
-    private static NumberSyntax? ReadInstant(StatementCursor cursor)
+    /// <summary>One instant; null where an error was reported.</summary>
+    internal static NumberSyntax? ReadInstant(StatementCursor cursor)
     {
         if (cursor.IsSign('-'))
         {

@@ -14,32 +14,15 @@ public static class ScannedParser
     private static readonly int[] series = [3, 6, 12, 24, 48, 96, 192];
 
     /// <summary>Reads one; errors point into its own text.</summary>
-    public static Outcome<ScannedSyntax> Parse(SourceText source, ScannedKind kind)
-    {
-        var diagnostics = new List<Diagnostic>();
-        var tokens = new List<Token>();
-        if (!new StatementLexer(source).Next(tokens))
-        {
-            var nothing = new TextSpan(0, source.Content.Length);
-            return new(null, [Diagnostic.Error(source, nothing, "nothing is named", FormOf(kind))]);
-        }
-
-        var cursor = new StatementCursor(source, tokens, diagnostics) { Form = FormOf(kind) };
-        var read = Read(cursor, source, kind);
-        if (read is not null && !cursor.IsAtEnd)
-        {
-            cursor.Unexpected("the end");
-        }
-
-        return diagnostics.Count == 0 ? new(read, []) : new(null, [.. diagnostics]);
-    }
+    public static Outcome<ScannedSyntax> Parse(SourceText source, ScannedKind kind) =>
+        OptionText.Parse(source, "nothing is named", FormOf(kind), cursor => Read(cursor, source, kind));
 
     /// <summary>The name of a part, source, switch or value with its index and the assemblies it stands in;
     /// null where an error was reported.</summary>
     internal static string? ReadName(StatementCursor cursor, string what)
     {
         var name = NameParser.ReadPart(cursor, what);
-        return name is null ? null : Written(cursor, name);
+        return name is null ? null : WrittenName.Of(cursor, name);
     }
 
     /// <summary>A switch and what it does: <c>Kmain closes</c>.</summary>
@@ -206,26 +189,5 @@ public static class ScannedParser
                 Span = cursor.SpanFrom(start),
                 Value = isNegative ? -number.Value : number.Value,
             };
-    }
-
-    private static string? Written(StatementCursor cursor, NameSyntax name)
-    {
-        var owner = name.Owner is { } outer ? Written(cursor, outer) : "";
-        if (owner is null)
-        {
-            return null;
-        }
-
-        if (name.Index is { Counter: { } counter } index)
-        {
-            cursor.Error(index.Span, $"there is no counter `{counter}` on the command line",
-                $"write which one, such as `{name.Text}[1]`");
-            return null;
-        }
-
-        var text = name.Index is { } number
-            ? string.Create(CultureInfo.InvariantCulture, $"{name.Text}[{number.Offset}]")
-            : name.Text;
-        return owner.Length > 0 ? $"{owner}/{text}" : text;
     }
 }

@@ -9,25 +9,8 @@ public static class ScatterParser
     private const string Form = "write `Kmain closes by 0.5 ms`: half a millisecond to either side";
 
     /// <summary>Reads it; errors point into its own text.</summary>
-    public static Outcome<ScatterSyntax> Parse(SourceText source)
-    {
-        var diagnostics = new List<Diagnostic>();
-        var tokens = new List<Token>();
-        if (!new StatementLexer(source).Next(tokens))
-        {
-            var nothing = new TextSpan(0, source.Content.Length);
-            return new(null, [Diagnostic.Error(source, nothing, "no scatter is given", Form)]);
-        }
-
-        var cursor = new StatementCursor(source, tokens, diagnostics) { Form = Form };
-        var read = Read(cursor, source);
-        if (read is not null && !cursor.IsAtEnd)
-        {
-            cursor.Unexpected("the end");
-        }
-
-        return diagnostics.Count == 0 ? new(read, []) : new(null, [.. diagnostics]);
-    }
+    public static Outcome<ScatterSyntax> Parse(SourceText source) =>
+        OptionText.Parse(source, "no scatter is given", Form, cursor => Read(cursor, source));
 
     private static ScatterSyntax? Read(StatementCursor cursor, SourceText source)
     {

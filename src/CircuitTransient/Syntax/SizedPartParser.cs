@@ -43,19 +43,19 @@ public static class SizedPartParser
 
     private static SizedPartSyntax? Read(StatementCursor cursor, SourceText source)
     {
-        if (NameParser.ReadPart(cursor) is not { } name)
+        if (NameParser.ReadPart(cursor) is not { } name || WrittenName.Of(cursor, name) is not { } written)
         {
             return null;
         }
 
         if (cursor.IsAtEnd)
         {
-            return new SizedPartSyntax(source, WrittenOut(name), name.Span, null, null);
+            return new SizedPartSyntax(source, written, name.Span, null, null);
         }
 
         return cursor.Expect("from") && ReadLimit(cursor) is { } lowest
             && cursor.Expect("to") && ReadLimit(cursor) is { } highest
-            ? new SizedPartSyntax(source, WrittenOut(name), name.Span, lowest, highest)
+            ? new SizedPartSyntax(source, written, name.Span, lowest, highest)
             : null;
     }
 
@@ -68,12 +68,5 @@ public static class SizedPartParser
 
         cursor.Unexpected("a value with its unit");
         return null;
-    }
-
-    private static string WrittenOut(NameSyntax name)
-    {
-        var owner = name.Owner is { } outer ? $"{WrittenOut(outer)}/" : "";
-        var index = name.Index is { Counter: null } numbered ? $"[{numbered.Offset}]" : "";
-        return owner + name.Text + index;
     }
 }

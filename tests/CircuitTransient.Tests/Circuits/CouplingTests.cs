@@ -24,6 +24,21 @@ public class CouplingTests
                 """));
 
     [Fact]
+    public void More_coils_than_can_be_judged_together_are_refused()
+    {
+        var text = string.Join('\n', Enumerable.Range(1, 301).Select(k => $"inductor L{k} at a : 1 mH")
+            .Concat(Enumerable.Range(1, 300).Select(k => $"coupling M{k} of L{k} and L{k + 1} : 0.1")));
+        Assert.Equal(
+            """
+            plant.cause:303:1: error: 301 coils hang together by couplings; 300 are the most
+              coupling M1 of L1 and L2 : 0.1
+              ^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^
+              → leave out the weak couplings between distant coils
+            """,
+            Checking.Messages($"source Feed at a : 10 V\n{text}"));
+    }
+
+    [Fact]
     public void A_factor_above_one_is_refused() =>
         Assert.Equal(
             """

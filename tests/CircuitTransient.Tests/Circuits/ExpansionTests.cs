@@ -39,6 +39,24 @@ public class ExpansionTests
                 """));
 
     [Fact]
+    public void More_stored_quantities_than_can_be_solved_are_refused_before_memory_is_spent() =>
+        Assert.Equal(
+            """
+            plant.cause:3:11: error: the circuit has 2500 capacitors and inductors; 2000 are the most
+              capacitor C[k] at n[k] : 1 nF
+                        ^^^^
+              → lump neighbouring sections of a ladder into fewer
+            """,
+            Checking.Messages(
+                """
+                repeat 2500 as k
+                resistor R[k] from n[k] to n[k+1] : 1 Ω
+                capacitor C[k] at n[k] : 1 nF
+                end
+                resistor Rend at n[2501] : 1 Ω
+                """));
+
+    [Fact]
     public void A_broken_count_is_refused() =>
         Assert.Equal(
             """

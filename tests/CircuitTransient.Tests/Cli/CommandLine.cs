@@ -50,8 +50,8 @@ public sealed class CommandLine : IDisposable
         using var error = new StringWriter();
         using var streams = new Streams(TextWriter.Null, error);
         StudyPartial.In(Results, $"{stem}.cause", study, "work")
-            .Leave(new PartialIdentity(sha256, "", asked), save, "a part", "the command", streams);
-        Assert.StartsWith("stopped after a part; go on with `the command --resume`", error.ToString());
+            .Leave(new PartialIdentity(sha256, "", asked), save, "a part", [study], streams);
+        Assert.StartsWith("stopped after a part; go on with `circuit-transient ", error.ToString());
     }
 
     /// <inheritdoc/>

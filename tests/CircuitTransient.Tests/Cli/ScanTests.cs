@@ -98,7 +98,7 @@ public sealed class ScanTests : IDisposable
         var page = File.ReadAllText(Path.Combine(commandLine.Results, "plant", "report.html"));
         Assert.Contains("For R everything required and rated", page);
         Assert.Contains(
-            "circuit-transient scan plant.cause --part &#39;R from 50 mΩ to 1 Ω in 4 steps&#39;", page);
+            "circuit-transient scan plant.cause --part &quot;R from 50 mΩ to 1 Ω in 4 steps&quot;", page);
     }
 
     [Theory]
@@ -170,7 +170,7 @@ public sealed class ScanTests : IDisposable
     [Theory]
     [InlineData("100 mΩ", "110 mΩ", Range, "it is of another circuit, or the circuit has changed since")]
     [InlineData("100 mΩ", "100 mΩ", "R from 50 mΩ to 1 Ω in 3 steps",
-        $"it was asked for --part '{Range}', which goes on with it")]
+        $"it was asked for --part \"{Range}\", which goes on with it")]
     public void An_unfinished_scan_of_something_else_is_refused(
         string before, string after, string range, string reason)
     {
@@ -219,7 +219,7 @@ public sealed class ScanTests : IDisposable
         var left = solved;
         Assert.ThrowsAny<OperationCanceledException>(() => Scanner.Run(plan, memory, Count, stop.Token));
         commandLine.Leave(
-            "scan", "plant", plan.Varied.Circuit.Source.Sha256, $"--part '{Range}'", memory.Save);
+            "scan", "plant", plan.Varied.Circuit.Source.Sha256, $"--part \"{Range}\"", memory.Save);
 
         void Count(int more)
         {

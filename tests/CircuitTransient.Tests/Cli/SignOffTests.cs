@@ -64,10 +64,12 @@ public sealed class SignOffTests : IDisposable
     [InlineData("1 ms",
         "error: FILE: --after: no switch acts up to 1.000 ms; the first is Kmain closes at 150.0 ms\n")]
     [InlineData("1 s", "error: FILE: --after: the study ends before 1.000 s, at 155.0 ms\n")]
-    [InlineData("soon", "error: --after `soon` names no event: write a switching such as `Kmain closes`, an "
-        + "instant such as `6 s`, or `last`\n")]
-    [InlineData("1 ms, 2 ms", "error: --after `1 ms, 2 ms` names several instants: write a switching such as "
-        + "`Kmain closes`, an instant such as `6 s`, or `last`\n")]
+    [InlineData("soon", "--after:1:5: error: the statement ends where `closes` or `opens` should stand\n"
+        + "  soon\n      ^\n"
+        + "  → write a switching such as `Kmain closes`, an instant such as `6 s`, or `last`\n")]
+    [InlineData("1 ms, 2 ms", "--after:1:5: error: `,` stands where the end should\n"
+        + "  1 ms, 2 ms\n      ^\n"
+        + "  → write a switching such as `Kmain closes`, an instant such as `6 s`, or `last`\n")]
     public void An_event_that_is_not_there_is_a_mistake_and_nothing_is_written(string after, string message)
     {
         var run = Solve("--after", after);

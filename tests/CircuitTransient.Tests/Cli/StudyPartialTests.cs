@@ -27,7 +27,7 @@ public sealed class StudyPartialTests : IDisposable
     [Fact]
     public void What_is_left_is_taken_up_again()
     {
-        partial.Leave(Identity, to => to.Write(12.5), "3 of 5 draws", "circuit-transient spread", streams);
+        partial.Leave(Identity, to => to.Write(12.5), "3 of 5 draws", ["spread", "a b.cause"], streams);
         var found = 0.0;
         var refusal = partial.Refusal(Identity, streams);
         partial.Load(Identity, from => found = from.ReadDouble());
@@ -35,7 +35,8 @@ public sealed class StudyPartialTests : IDisposable
         Assert.Null(refusal);
         Assert.Equal(12.5, found);
         Assert.Equal(
-            "stopped after 3 of 5 draws; go on with `circuit-transient spread --resume`\n", error.ToString());
+            "stopped after 3 of 5 draws; go on with `circuit-transient spread \"a b.cause\" --resume`\n",
+            error.ToString());
         Assert.Equal(["plant/spread.partial"], commandLine.Written);
         partial.Remove();
         Assert.Empty(commandLine.Written);
@@ -95,11 +96,11 @@ public sealed class StudyPartialTests : IDisposable
     {
         Directory.CreateDirectory(Path.Combine(commandLine.Results, "plant", "spread.partial"));
 
-        partial.Leave(Identity, _ => { }, "3 of 5 draws", "circuit-transient spread", streams);
+        partial.Leave(Identity, _ => { }, "3 of 5 draws", ["spread", "a b.cause"], streams);
 
         Assert.StartsWith("error: stopped after 3 of 5 draws, which cannot be kept in ", error.ToString());
         Assert.Empty(commandLine.Written);
     }
 
-    private void Leave() => partial.Leave(Identity, to => to.Write(12.5), "a part", "the command", streams);
+    private void Leave() => partial.Leave(Identity, to => to.Write(12.5), "a part", ["spread"], streams);
 }

@@ -185,7 +185,7 @@ public sealed class OpenQuantityTests
     {
         var source = new SourceText("open.cause", text);
         var circuit = TransientAnalysis.Check(source, _ => throw new InvalidOperationException()).Value!;
-        var found = TransientAnalysis.FindUnsolvable(circuit);
+        var found = TransientAnalysis.FindUnsolvable(circuit, TestContext.Current.CancellationToken);
         var solved = TransientSolver.Solve(
             circuit, CauseList.FromStart(circuit), TestContext.Current.CancellationToken);
         Assert.Equal(solved.Diagnostics.Select(d => d.Message), found.Select(d => d.Message));

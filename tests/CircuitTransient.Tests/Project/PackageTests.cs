@@ -26,10 +26,52 @@ public partial class PackageTests
     }
 
     [Fact]
+    public void Every_central_version_is_of_a_package_that_is_used() =>
+        Assert.Empty(
+            Repository.Xml("Directory.Packages.props").Descendants("PackageVersion")
+                .Select(v => (string?)v.Attribute("Include"))
+                .Except(Projects.Append("Directory.Build.props")
+                    .SelectMany(path => Repository.Xml(path).Descendants("PackageReference"))
+                    .Select(reference => (string?)reference.Attribute("Include"))));
+
+    [Fact]
+    public void A_package_that_is_only_downloaded_takes_its_version_from_there_too()
+    {
+        var downloads = Repository.Files.Where(path => path.EndsWith(".targets", StringComparison.Ordinal))
+            .SelectMany(path => Repository.Xml(path).Descendants("PackageDownload"))
+            .ToList();
+
+        Assert.NotEmpty(downloads);
+        Assert.All(downloads, download =>
+        {
+            var property = Property().Match((string)download.Attribute("Version")!).Groups["name"].Value;
+            var version = Assert.Single(Repository.Xml("Directory.Packages.props").Descendants(property));
+            Assert.Matches(ExactVersion(), version.Value);
+        });
+    }
+
+    [Fact]
+    public void Every_package_that_is_shipped_is_in_the_notices()
+    {
+        var notices = Repository.Read("THIRD-PARTY-NOTICES.md");
+        var shipped = Projects.Where(path => path.StartsWith("src/", StringComparison.Ordinal))
+            .SelectMany(path => Repository.Xml(path).Descendants("PackageReference"))
+            .Where(reference => reference.Attribute("PrivateAssets") is null)
+            .Select(reference => (string)reference.Attribute("Include")!)
+            .ToList();
+
+        Assert.NotEmpty(shipped);
+        Assert.All(shipped, package => Assert.Contains($"| {package} |", notices));
+    }
+
+    [Fact]
     public void Every_project_has_its_lock_file() =>
         Assert.Empty(Projects
             .Select(path => $"{Path.GetDirectoryName(path)!.Replace('\\', '/')}/packages.lock.json")
             .Except(Repository.Files));
+
+    [GeneratedRegex(@"^\[\$\((?<name>\w+)\)\]$", RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex Property();
 
     [GeneratedRegex(@"^\d+\.\d+\.\d+(-[\w.]+)?$", RegexOptions.ExplicitCapture, 1000)]
     private static partial Regex ExactVersion();

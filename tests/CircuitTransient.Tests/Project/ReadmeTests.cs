@@ -48,6 +48,16 @@ public sealed partial class ReadmeTests : IDisposable
         Assert.Equal((ExitStatus.Success, ""), (run.Status, run.Error));
     }
 
+    [Fact]
+    public void The_program_lies_where_its_name_is_said_to_lead()
+    {
+        var path = ProgramPath().Match(Readme).Groups["path"].Value;
+        var configuration = new DirectoryInfo(AppContext.BaseDirectory).Parent!.Name;
+
+        Assert.NotEmpty(path);
+        Assert.True(File.Exists(Path.Combine(Repository.Root, path.Replace("Release", configuration))), path);
+    }
+
     /// <summary>The text without the self-checks' figures, which are rounding and may differ between
     /// processors; that all of them hold stays.</summary>
     private static string Plain(string text) =>
@@ -63,6 +73,10 @@ public sealed partial class ReadmeTests : IDisposable
     [GeneratedRegex(@"^```(?<language>\w+)\n(?<text>.*?)^```$",
         RegexOptions.Multiline | RegexOptions.Singleline | RegexOptions.ExplicitCapture, 1000)]
     private static partial Regex Block();
+
+    [GeneratedRegex("""^alias circuit-transient="dotnet '\$PWD/(?<path>.*)'"$""",
+        RegexOptions.Multiline | RegexOptions.ExplicitCapture, 1000)]
+    private static partial Regex ProgramPath();
 
     [GeneratedRegex("^dotnet run .* -- (?<words>.*)$",
         RegexOptions.Multiline | RegexOptions.ExplicitCapture, 1000)]

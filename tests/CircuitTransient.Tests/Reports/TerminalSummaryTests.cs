@@ -72,7 +72,7 @@ public class TerminalSummaryTests
           no rating given: Ls
 
         Impulses: ideal parts joined or parted with more than they could hold
-          at 1.800 s, just after Kmain closes: 1.200 µC through Resr; a contact resistance makes it finite
+          at 1.800 s, when Kmain closes: 1.200 µC through Resr; a contact resistance makes it finite
           at 6.000 s, 4.200 s after Kmain closes: 20.00 mVs across Ls
           lost in them: 250.0 µJ
 

@@ -214,6 +214,6 @@ public sealed class SingularDiagnosisTests
         var circuit = TransientAnalysis.Check(
             new SourceText("fault.cause", text), _ => throw new InvalidOperationException());
         Assert.True(circuit.Succeeded, string.Join('\n', circuit.Diagnostics.Select(DiagnosticText.Render)));
-        return [.. TransientAnalysis.FindUnsolvable(circuit.Value)];
+        return [.. TransientAnalysis.FindUnsolvable(circuit.Value, TestContext.Current.CancellationToken)];
     }
 }

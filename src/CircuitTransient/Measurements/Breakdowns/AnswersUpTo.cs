@@ -62,13 +62,13 @@ internal sealed class AnswersUpTo
 
     private IntervalModel? ModelBefore(int interval) => interval > 0
         ? solution.Intervals[interval - 1].Model
-        : new IntervalModels(solution.Layout).For(new Timeline(solution.Circuit).IsClosed);
+        : new IntervalModels(solution.Layout, cancellation).For(new Timeline(solution.Circuit).IsClosed);
 
     /// <summary>Only their sum is asked for: the sources as they go on, and all
     /// that is held as one.</summary>
     private ImmutableArray<Cause> Causes() =>
     [
-        .. CauseList.FromStart(solution.Circuit).Where(c => c.Source >= 0),
+        .. CauseList.FromStart(solution.Circuit).Causes.Where(c => c.Source >= 0),
         new Cause("what is held", -1, [], -1, 0),
     ];
 

@@ -15,8 +15,9 @@ public sealed record ModeBreakdown(
     EnergyByMode? Energies);
 
 /// <summary>A mode by name, with what it has in the value.</summary>
-/// <param name="Name">By natural frequency or time constant and the parts that hold its energy; a forced one
-/// by its source's exponent.</param>
+/// <param name="Pace">Its natural frequency or time constant in words; of a forced one its source's
+/// exponent.</param>
+/// <param name="Holders">The parts that hold its energy, in words; null for a forced one.</param>
 /// <param name="IsForced">Whether the sources impose it, rather than a motion of the network.</param>
 /// <param name="IsDriven">Whether a natural one holds the part of the sources that follows it so closely,
 /// over the interval, that the two cannot be told apart.</param>
@@ -27,8 +28,12 @@ public sealed record ModeBreakdown(
 /// forced one.</param>
 /// <param name="Value">What all causes have in it, in the quantity's unit.</param>
 public sealed record ModeResult(
-    string Name, bool IsForced, bool IsDriven, Complex Rate, int Multiplicity,
-    ImmutableArray<PartShare> Parts, double Value);
+    string Pace, string? Holders, bool IsForced, bool IsDriven, Complex Rate, int Multiplicity,
+    ImmutableArray<PartShare> Parts, double Value)
+{
+    /// <summary>Both: <c>25.01 kHz: Lcab with Cin</c>.</summary>
+    public string Name => Holders is null ? Pace : $"{Pace}: {Holders}";
+}
 
 /// <summary>The energy of all fields at an instant, by modes.</summary>
 /// <param name="Own">Joules each mode would hold if it were alone, in the order of

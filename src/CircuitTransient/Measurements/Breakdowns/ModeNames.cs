@@ -14,15 +14,15 @@ internal static class ModeNames
 
     private const int MostParts = 3; // more do not help to see which
 
-    /// <summary>A natural mode by its poles and the parts that hold its energy.</summary>
-    public static string Natural(Complex pole, int multiplicity, ImmutableArray<PartShare> parts)
+    /// <summary>A natural mode by its poles.</summary>
+    public static string Natural(Complex pole, int multiplicity)
     {
         var growing = pole.Real > 0 ? ", growing" : "";
         var rate = pole == Complex.Zero ? "held for ever"
             : pole.Imaginary != 0 ? EngineeringNumber.Format(pole.Magnitude / (2 * Math.PI), "Hz") + growing
             : EngineeringNumber.Format(Math.Abs(1 / pole.Real), "s") + growing;
         var times = multiplicity > 1 ? $" ({multiplicity} poles)" : "";
-        return $"{rate}{times}: {Holders(parts)}";
+        return rate + times;
     }
 
     /// <summary>What the sources impose, by its exponent.</summary>
@@ -41,7 +41,8 @@ internal static class ModeNames
         return $"source{frequency}{decay}";
     }
 
-    private static string Holders(ImmutableArray<PartShare> parts)
+    /// <summary>The parts that hold a mode's energy.</summary>
+    public static string Holders(ImmutableArray<PartShare> parts)
     {
         var named = parts.Where(p => p.Share >= LeastShare).Take(MostParts).Select(p => p.Part).ToArray();
         return named.Length switch

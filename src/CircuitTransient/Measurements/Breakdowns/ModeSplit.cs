@@ -78,7 +78,7 @@ internal sealed class ModeSplit(TransientSolution solution, bool withEnergies)
         if (column >= model.Blocks.Length)
         {
             var exponent = (Complex)columns.Exponents[column - model.Blocks.Length];
-            return new ModeResult(ModeNames.Forced(exponent), true, false, exponent, 1, [], value);
+            return new ModeResult(ModeNames.Forced(exponent), null, true, false, exponent, 1, [], value);
         }
 
         if (!natural.TryGetValue((model, column), out var mode))
@@ -96,6 +96,7 @@ internal sealed class ModeSplit(TransientSolution solution, bool withEnergies)
         var pole = groups.Aggregate(Complex.Zero, (sum, g) => sum + (g.Multiplicity * g.Value)) / count;
         var parts = energy.Shares(model, block)
             .OrderByDescending(p => Math.Round(p.Share, 2)).ToImmutableArray(); // halves stand as written
-        return new ModeResult(ModeNames.Natural(pole, count, parts), false, false, pole, count, parts, 0);
+        return new ModeResult(
+            ModeNames.Natural(pole, count), ModeNames.Holders(parts), false, false, pole, count, parts, 0);
     }
 }

@@ -40,10 +40,10 @@ internal sealed class OtherBreakdowns
 
     private OtherBreakdown? ByEdge()
     {
-        var (edges, problem) = CauseList.ByEdge(solution.Circuit);
-        if (problem is not null || edges.Length > MostEdges || edges.Length == solution.Causes.Length
-            || solution.Causes.Any(c => c.IsEdge) || !HasRoom(Math.Min(edges.Length, 2 * TermsNamed))
-            || TransientSolver.Solve(solution.Circuit, edges, cancellation) is not { Succeeded: true } other
+        if (CauseList.ByEdge(solution.Circuit).Value is not { Causes: { Length: <= MostEdges } edges } list
+            || edges.Length == solution.Causes.Length || solution.Causes.Any(c => c.IsEdge)
+            || !HasRoom(Math.Min(edges.Length, 2 * TermsNamed))
+            || TransientSolver.Solve(solution.Circuit, list, cancellation) is not { Succeeded: true } other
             || other.Value.Segments.Length != solution.Segments.Length)
         {
             return null;
@@ -99,7 +99,7 @@ internal sealed class OtherBreakdowns
 
     private IEnumerable<OtherBreakdown?> SinceSwitchings()
     {
-        var sources = CauseList.FromStart(solution.Circuit).Where(c => c.Source >= 0).ToArray();
+        var sources = CauseList.FromStart(solution.Circuit).Causes.Where(c => c.Source >= 0).ToArray();
         var stores = solution.Layout.Stores;
         if (sources.Length + stores.Length > MostParts || solution.Causes.Any(c => c.IsEdge))
         {
@@ -162,7 +162,7 @@ internal sealed class OtherBreakdowns
                 .Select(s => solution.Segments[first - 1].ValueAtEnd(layout.Held(s), c)).ToArray())];
         }
 
-        var model = new IntervalModels(layout).For(new Timeline(solution.Circuit).IsClosed);
+        var model = new IntervalModels(layout, cancellation).For(new Timeline(solution.Circuit).IsClosed);
         return SettledStart.Find(model!, layout, solution.Causes).Stored;
     }
 

@@ -65,10 +65,9 @@ internal sealed class SwitchingEffects(CurveBuilder curves, CancellationToken ca
         }
 
         return new SwitchingBreakdown(words, levels[first].Value!.Value, effects.ToImmutable());
-    }
 
-    private string Words(int interval) => string.Join(" and ", solution.Intervals[interval].StartsWith
-        .Select(o => $"{solution.Circuit.Parts[o.Event.Part].Name} {(o.Closes ? "closes" : "opens")}"));
+        string Words(int interval) => SwitchingWords.Of(solution, interval);
+    }
 
     private (double? Value, string? Reason) Without(
         int interval, Measurand quantity, double since, double time, bool before)

@@ -47,7 +47,10 @@ internal sealed class CautionFinder(
                 $"{parts[i].Name} stores up to {Say(parts[i].Energy, "J")} "
                 + $"(at {Say(Math.Abs(parts[i].PeakVoltage!.Value!.Value), "V")})")));
         return held is null ? null : new Caution(
-            CautionSeverity.Danger, held + "; over 10 J at over 100 V", CautionThresholds.StoredEnergy.Words);
+            CautionSeverity.Danger,
+            $"{held}; over {CautionThresholds.StoredEnergy.Value} J at over "
+                + $"{CautionThresholds.StoredEnergyVoltage.Value} V",
+            CautionThresholds.StoredEnergy.Words);
     }
 
     /// <summary>A capacitor left charged: at the end of the study, else five seconds after the last
@@ -59,7 +62,8 @@ internal sealed class CautionFinder(
         {
             return new Caution(
                 CautionSeverity.Warning,
-                $"{atEnd} at the end of the study, {Say(solution.Until, "s")}; over 60 V and over 45 µC",
+                $"{atEnd} at the end of the study, {Say(solution.Until, "s")}; over {volts.Value} V and over "
+                    + $"{Micro(CautionThresholds.TouchCharge)} µC",
                 $"common thresholds, verify in {volts.Source} and {CautionThresholds.TouchCharge.Source}");
         }
 
@@ -67,7 +71,10 @@ internal sealed class CautionFinder(
         var judged = opening?.Time + CautionThresholds.RestDelay.Value;
         return judged <= solution.Until && Charged(judged.Value, volts.Value, coulombs) is { } later
             ? new Caution(
-                CautionSeverity.Warning, $"{later} 5 s after {opening!.Switch} opens; over 60 V", volts.Words)
+                CautionSeverity.Warning,
+                $"{later} {CautionThresholds.RestDelay.Value} s after {opening!.Switch} opens; over "
+                    + $"{volts.Value} V",
+                volts.Words)
             : null;
     }
 
@@ -80,7 +87,8 @@ internal sealed class CautionFinder(
         return Charged(solution.Until, volts, CautionThresholds.ExemptCharge.Value) is null
             && Charged(solution.Until, volts, limit.Value) is { } charged
             ? new Caution(
-                CautionSeverity.Warning, $"{charged} at the end of the study; over 45 µC", limit.Words)
+                CautionSeverity.Warning, $"{charged} at the end of the study; over {Micro(limit)} µC",
+                limit.Words)
             : null;
     }
 
@@ -93,17 +101,41 @@ internal sealed class CautionFinder(
 
     private Caution? OpenedCoils()
     {
-        var opened = Named(events.Where(e => !e.Closes).Select(e =>
-        {
-            var coils = solution.Circuit.Parts.Select((p, i) => p is Inductor ? CurrentBefore(i, e.Time) : 0)
-                .DefaultIfEmpty(0).Max();
-            return (Current: Math.Min(Math.Abs(e.CurrentBefore ?? coils), coils), Event: e);
-        }).Where(o => o.Current > CautionThresholds.ArcCurrent.Value)
-            .Select(o => (o.Current, $"{o.Event.Switch} opens {Say(o.Current, "A")} that a coil carries")));
+        var opened = Named(events.Where(e => !e.Closes).SelectMany(Opened));
         return opened is null ? null : new Caution(
             CautionSeverity.Warning,
             opened + ": a real contact draws an arc, which the result leaves out",
             "switching of inductive loads: see IEC 60947 and the switch's own data");
+    }
+
+    private IEnumerable<(double Size, string Words)> Opened(EventResult opening)
+    {
+        var (coil, carried) = Coils().Where(i => Feels(i, opening.Time))
+            .Select(i => (Coil: i, Current: CurrentBefore(i, opening.Time)))
+            .DefaultIfEmpty().MaxBy(c => c.Current);
+        var cut = Math.Abs(opening.CurrentBefore ?? carried);
+        if (Math.Min(cut, carried) > CautionThresholds.ArcCurrent.Value)
+        {
+            var name = parts[coil].Name;
+            yield return (Math.Min(cut, carried),
+                $"{opening.Switch} opens {Say(cut, "A")} while {name} carries {Say(carried, "A")}");
+        }
+    }
+
+    /// <summary>Whether a coil's voltage jumps at an instant: else what parts there does not cut its current.
+    /// At t = 0 the voltage before is not known.</summary>
+    private bool Feels(int coil, double time)
+    {
+        const double rounding = 1e-9; // of the largest voltage in the circuit
+        var curve = curves.Of(new VoltageAcross(coil));
+        if (time == 0 || curve is null || intervals.SelectMany(i => i.Impulses)
+            .Any(i => i.Time == time && i.VoltSeconds is not null && i.Part == parts[coil].Name))
+        {
+            return true;
+        }
+
+        var jump = curve.ValueAt(solution, time, before: false) - curve.ValueAt(solution, time, before: true);
+        return Math.Abs(jump) > rounding * parts.Max(p => Math.Abs(p.PeakVoltage?.Value ?? 0));
     }
 
     private double CurrentBefore(int coil, double time)
@@ -135,7 +167,8 @@ internal sealed class CautionFinder(
             .GroupBy(p => Say(p.Current, "A"))
             .Select(g => (g.First().Current, $"{g.Key} through {Names([.. g.Select(p => p.Name)])}")));
         return great is null ? null : new Caution(
-            CautionSeverity.Warning, great + ": over 1 kA, forces and contacts count",
+            CautionSeverity.Warning,
+            $"{great}: over {CautionThresholds.GreatCurrent.Value / 1e3} kA, forces and contacts count",
             CautionThresholds.GreatCurrent.Words);
     }
 
@@ -170,6 +203,11 @@ internal sealed class CautionFinder(
             + "which a linear network does not show: short-circuit and earth before work",
             "no threshold; known of every capacitor") : null;
     }
+
+    private static double Micro(CautionThreshold threshold) => Math.Round(threshold.Value * 1e6, 6);
+
+    private IEnumerable<int> Coils() =>
+        Enumerable.Range(0, parts.Length).Where(i => solution.Circuit.Parts[i] is Inductor);
 
     private IEnumerable<int> Capacitors() =>
         Enumerable.Range(0, parts.Length).Where(i => solution.Circuit.Parts[i] is Capacitor);

@@ -1,6 +1,8 @@
+using System.Diagnostics;
 using CircuitTransient.Circuits;
 using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
+using Switch = CircuitTransient.Circuits.Switch;
 
 namespace CircuitTransient.Measurements.Checks;
 
@@ -38,7 +40,7 @@ internal static class EnergyCheck
 
             largest = Math.Max(largest, size);
             size = Math.Max(size, rounding * largest);
-            worst = Math.Max(worst, size == 0 ? 0 : Math.Abs(supplied - heat - stored) / size);
+            worst = Math.Max(worst, StudySizes.Relative(Math.Abs(supplied - heat - stored), size));
         }
 
         return worst;
@@ -101,6 +103,7 @@ internal static class EnergyCheck
         Switch s when isClosed => s.ClosedResistance?.Nominal ?? 0,
         Switch s => s.OpenResistance?.Nominal ?? 0,
         Capacitor or Inductor or IdealTransformer => 0,
-        _ => null,
+        VoltageSource or CurrentSource or DependentSource => null,
+        _ => throw new UnreachableException($"no heat known of {part}"),
     };
 }

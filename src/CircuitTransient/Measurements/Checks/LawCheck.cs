@@ -1,7 +1,9 @@
+using System.Diagnostics;
 using CircuitTransient.Circuits;
 using CircuitTransient.Equations;
 using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
+using Switch = CircuitTransient.Circuits.Switch;
 
 namespace CircuitTransient.Measurements.Checks;
 
@@ -31,15 +33,24 @@ internal sealed class LawCheck
             scales[part.From] = Math.Max(scales[part.From], current);
             scales[part.To] = Math.Max(scales[part.To], current);
             scales[circuit.Nodes.Length + i] = part is Capacitor or CurrentSource
-                || part is Switch { OpenResistance: null }
+                || part is Switch { OpenResistance: null } || part is DependentSource { SetsVoltage: false }
                 ? current
                 : sizes.Of(new VoltageAcross(i));
             var trace = part switch
             {
                 Capacitor c => c.Capacitance.Nominal * sizes.RateTrace(isCurrent: false),
                 Inductor l => l.Inductance.Nominal * sizes.RateTrace(isCurrent: true),
+                DependentSource d => Math.Abs(d.Gain.Nominal) * sizes.Of(d.Control),
+                IdealTransformer t => Math.Abs(t.Ratio) * sizes.Of(Secondary(t)),
                 _ => 0,
             };
+            if (part is IdealTransformer transformer)
+            {
+                var secondary = Math.Abs(transformer.Ratio) * current;
+                scales[transformer.SecondaryFrom] = Math.Max(scales[transformer.SecondaryFrom], secondary);
+                scales[transformer.SecondaryTo] = Math.Max(scales[transformer.SecondaryTo], secondary);
+            }
+
             scales[circuit.Nodes.Length + i] = Math.Max(scales[circuit.Nodes.Length + i], trace);
         }
     }
@@ -61,7 +72,7 @@ internal sealed class LawCheck
         double worst = 0;
         for (var k = 0; k < check.residuals.Length; k++)
         {
-            worst = Math.Max(worst, check.scales[k] == 0 ? 0 : check.residuals[k] / check.scales[k]);
+            worst = Math.Max(worst, StudySizes.Relative(check.residuals[k], check.scales[k]));
         }
 
         return worst;
@@ -99,7 +110,18 @@ internal sealed class LawCheck
         var time = segment.Start + tau;
         for (var i = 0; i < circuit.Parts.Length; i++)
         {
-            PartLaw(i, segment.Model, time, tau == segment.Length, voltages, currents);
+            if (voltages[i] is { } voltage && currents[i] is { } current)
+            {
+                var source = circuit.Parts[i] switch
+                {
+                    VoltageSource v => WaveValue.At(v.Wave, time, before: tau == segment.Length),
+                    CurrentSource c => WaveValue.At(c.Wave, time, before: tau == segment.Length),
+                    DependentSource d => Value(s, d.Control, phi)?.Value * d.Gain.Nominal,
+                    IdealTransformer t => Value(s, Secondary(t), phi)?.Value * t.Ratio,
+                    _ => 0,
+                };
+                PartLaw(i, segment.Model, source, voltage, current, currents);
+            }
         }
     }
 
@@ -121,19 +143,11 @@ internal sealed class LawCheck
         for (var i = 0; i < currents.Length; i++)
         {
             var part = circuit.Parts[i];
-            if (part is IdealTransformer || currents[i] is not { } current)
+            Join(part.From, part.To, currents[i]?.Value);
+            if (part is IdealTransformer t)
             {
-                isOpen[part.From] = isOpen[part.To] = true;
-                if (part is IdealTransformer t)
-                {
-                    isOpen[t.SecondaryFrom] = isOpen[t.SecondaryTo] = true;
-                }
-
-                continue;
+                Join(t.SecondaryFrom, t.SecondaryTo, -t.Ratio * currents[i]?.Value); // no power is lost
             }
-
-            sums[part.From] += current.Value;
-            sums[part.To] -= current.Value;
         }
 
         for (var node = 0; node < sums.Length; node++)
@@ -143,13 +157,29 @@ internal sealed class LawCheck
                 Note(node, sums[node]);
             }
         }
+
+        void Join(int from, int to, double? current)
+        {
+            isOpen[from] |= current is null;
+            isOpen[to] |= current is null;
+            sums[from] += current ?? 0;
+            sums[to] -= current ?? 0;
+        }
     }
 
+    /// <summary>Notes by how much a part misses its law.</summary>
+    /// <param name="i">Index of the part.</param>
+    /// <param name="model">Which switches are closed.</param>
+    /// <param name="set">What a source, or the other side of a transformer, sets; null where that is
+    /// open.</param>
+    /// <param name="v">The part's voltage.</param>
+    /// <param name="c">Its current.</param>
+    /// <param name="currents">All currents, for coupled coils.</param>
     private void PartLaw(
-        int i, IntervalModel model, double time, bool before,
-        (double Value, double Slope)?[] voltages, (double Value, double Slope)?[] currents)
+        int i, IntervalModel model, double? set, (double Value, double Slope) v,
+        (double Value, double Slope) c, (double Value, double Slope)?[] currents)
     {
-        if (voltages[i] is not { } v || currents[i] is not { } c)
+        if (set is not { } given)
         {
             return;
         }
@@ -169,11 +199,11 @@ internal sealed class LawCheck
                 // near k = 1 two large terms leave a small voltage, and with it their rounding
                 scales[place] = Math.Max(scales[place], Math.Abs(own));
                 break;
-            case VoltageSource source:
-                Note(place, v.Value - WaveValue.At(source.Wave, time, before));
+            case VoltageSource or DependentSource { SetsVoltage: true } or IdealTransformer:
+                Note(place, v.Value - given);
                 break;
-            case CurrentSource source:
-                Note(place, c.Value - WaveValue.At(source.Wave, time, before));
+            case CurrentSource or DependentSource:
+                Note(place, c.Value - given);
                 break;
             case Switch s when model.IsClosed[i]:
                 Note(place, v.Value - ((s.ClosedResistance?.Nominal ?? 0) * c.Value));
@@ -184,8 +214,12 @@ internal sealed class LawCheck
             case Switch:
                 Note(place, c.Value);
                 break;
+            default:
+                throw new UnreachableException($"no law for {circuit.Parts[i]}");
         }
     }
+
+    private static VoltageBetween Secondary(IdealTransformer t) => new(t.SecondaryFrom, t.SecondaryTo);
 
     private double Induced(int coil, (double Value, double Slope)?[] currents) =>
         circuit.Couplings.Where(k => k.First == coil || k.Second == coil).Sum(k =>

@@ -34,6 +34,10 @@ internal sealed class StudySizes
             <= noise * largestVoltage / resistors.Max(r => Math.Abs(r.Resistance.Nominal));
     }
 
+    /// <summary>A difference over what it is measured by; no size excuses none.</summary>
+    public static double Relative(double difference, double size) =>
+        difference == 0 ? 0 : size == 0 ? double.PositiveInfinity : difference / size;
+
     /// <summary>The trace that structure leaves in rates of change: a voltage or current that is zero keeps
     /// <see cref="Equations.SparseVector.Cancelled"/> of the largest, and the fastest mode multiplies
     /// that.</summary>

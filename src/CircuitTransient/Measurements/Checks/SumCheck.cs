@@ -41,14 +41,13 @@ internal static class SumCheck
 
         var rest = other.Rest?.Reason ?? (double.IsPositiveInfinity(until)
             ? null
-            : $"not compared beyond {EngineeringNumber.Format(until, "s")}: switches act twice at once");
+            : $"not compared beyond {EngineeringNumber.Format(until, "s")}: a switch acts there at once upon "
+                + "another or upon the start");
         return compared == 0
             ? (null, rest ?? "the other route gave no value")
-            : (worst.Select((w, q) => Relative(w, sizes.Of(quantities[q]))).DefaultIfEmpty(0).Max(), rest);
+            : (worst.Select((w, q) => StudySizes.Relative(w, sizes.Of(quantities[q])))
+                .DefaultIfEmpty(0).Max(), rest);
     }
-
-    private static double Relative(double difference, double size) =>
-        difference == 0 ? 0 : size == 0 ? double.PositiveInfinity : difference / size;
 
     private static void Compare(
         TransientSolution solution, Segment segment, double tau, ImmutableArray<Measurand> quantities,

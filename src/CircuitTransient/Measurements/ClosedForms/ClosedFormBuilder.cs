@@ -23,7 +23,7 @@ public sealed class ClosedFormBuilder
 
     /// <summary>The closed forms of observations; quadratic ones are given by their factors.</summary>
     public static ClosedFormStudy Study(
-        TransientSolution solution, ImmutableArray<Observation> asked,
+        TransientSolution solution, IReadOnlyList<Observation> asked,
         CancellationToken cancellation = default)
     {
         var builder = new ClosedFormBuilder(solution);

@@ -21,7 +21,7 @@ internal sealed class FigureMeasurement(CurveBuilder curves, WindowTimes times, 
     public FigureReading? Read(Figure figure, Window window)
     {
         if (times.Of(window) is not { } open
-            || curves.Of(figure.Of, from: curves.IsAccumulated(figure.Of) ? open.From : 0) is not { } total)
+            || curves.Of(figure.Of, from: CurveBuilder.GatheredFrom(figure.Of, open.From)) is not { } total)
         {
             return null;
         }

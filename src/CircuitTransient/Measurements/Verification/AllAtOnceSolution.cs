@@ -43,11 +43,11 @@ public sealed class AllAtOnceSolution
     /// <summary>Solves a study.</summary>
     /// <param name="initial">For each part the voltage of a capacitor or the current of a coil at t = 0⁻;
     /// null for what the statements say.</param>
-    /// <param name="budget">Multiply-adds of double-doubles that may be spent; some 5e8 take a
+    /// <param name="budget">Multiply-adds of double-doubles that may be spent; some 1.5e9 take a
     /// second.</param>
     public static AllAtOnceSolution Solve(
         Circuit circuit, SwitchingSchedule schedule, ImmutableArray<double>? initial = null,
-        double budget = 1e8)
+        double budget = 5e9)
     {
         var layout = StorageLayout.Of(circuit);
         var sources = InputModel.Of(circuit);

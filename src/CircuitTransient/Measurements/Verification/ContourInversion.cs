@@ -22,7 +22,7 @@ public static class ContourInversion
     /// allows.</summary>
     /// <param name="budget">Complex multiply-adds that may be spent; some 3e8 take a second.</param>
     public static (ImmutableArray<ContourSample> Samples, ImmutableArray<NotJudged> NotJudged) Samples(
-        AllAtOnceSolution solution, double budget = 1e6)
+        AllAtOnceSolution solution, double budget = 3e7)
     {
         var longest = new Dictionary<Propagator, Segment>();
         foreach (var segment in solution.Segments)

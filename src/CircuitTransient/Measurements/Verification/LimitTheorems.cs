@@ -91,27 +91,11 @@ public static class LimitTheorems
     // X(s) and Q(s) with the quantities stored just before the span.
     private static Sample? SampleAt(AllAtOnceSolution solution, Segment segment, double s)
     {
-        if (ShiftedSolve.At(segment.Equations, solution.Inputs, s) is not { } solve)
-        {
-            return null;
-        }
-
-        var count = solve.Scale.Length;
+        var count = solution.Storage.Count + solution.Inputs.StateCount;
         var states = segment.Propagator.Stored(segment.Before, count);
-        var row = new SplitMatrix(1, count);
-        for (var i = 0; i < count; i++)
-        {
-            row[0, i] = DoubleDouble.ScaleByPowerOfTwo(states[i], -solve.Scale[i]);
-        }
-
-        var (x, q) = (row * solve.Unknowns, row * solve.Storage);
-        var stored = new DoubleDouble[solution.Storage.Count];
-        for (var i = 0; i < stored.Length; i++)
-        {
-            stored[i] = DoubleDouble.ScaleByPowerOfTwo(q[0, i], solve.Scale[i]);
-        }
-
-        return new Sample(s, [.. Enumerable.Range(0, x.Columns).Select(i => x[0, i])], stored);
+        return ShiftedSolve.Of(segment.Equations, solution.Inputs, s, states) is var (unknowns, stored)
+            ? new Sample(s, unknowns, stored)
+            : null;
     }
 
     // The first three coefficients of the polynomial through the samples, lowest power first (Newton's form).
@@ -209,10 +193,14 @@ public sealed class LimitValues
     internal LimitValues(CircuitReading better, CircuitReading worse) =>
         (this.better, this.worse) = (better, worse);
 
-    /// <summary>A voltage, current or power, and by how much two extrapolations differ. NaN where the
+    // As for inversions: a difference of two approximations tells the size of an error, not its bound. Of an
+    // initial value after a large impulse it is a difference of two roundings.
+    private const double Doubt = 10;
+
+    /// <summary>A voltage, current or power, and tenfold by how much two extrapolations differ. NaN where the
     /// equations leave it open, null for quantities that are not of one instant.</summary>
     public (double Value, double EstimatedError)? ValueOf(Measurand measurand) =>
         better.Value(measurand) is { } value && worse.Value(measurand) is { } other
-            ? (value, Math.Abs(value - other))
+            ? (value, Doubt * Math.Abs(value - other))
             : null;
 }

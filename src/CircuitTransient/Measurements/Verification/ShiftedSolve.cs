@@ -58,6 +58,45 @@ internal sealed record ShiftedSolve(double Shift, SplitMatrix Unknowns, SplitMat
         return solve;
     }
 
+    /// <summary>X(s) and Q(s) for the quantities stored and the source states of one instant alone, which
+    /// costs one right-hand side; null where the pencil is singular.</summary>
+    public static (DoubleDouble[] Unknowns, DoubleDouble[] Stored)? Of(
+        DescriptorEquations equations, InputModel inputs, double shift, ReadOnlySpan<DoubleDouble> states)
+    {
+        var (n, m) = (equations.Unknowns.UnknownCount, equations.Storage.Count);
+        var size = n + inputs.StateCount;
+        var system = new SplitMatrix(size, size + 1);
+        FillPencil(system, equations, inputs, shift);
+        foreach (var row in equations.StorageRows)
+        {
+            system[row.Place, size] += row.Sign * states[row.Index];
+        }
+
+        for (var state = 0; state < inputs.StateCount; state++)
+        {
+            system[n + state, size] = states[m + state];
+        }
+
+        if (SplitElimination.Solve(system, equilibrates: true) is not { } x)
+        {
+            return null;
+        }
+
+        var voltages = new DoubleDouble[m];
+        foreach (var column in equations.StorageColumns)
+        {
+            voltages[column.Index] += column.Sign * x[column.Place, 0];
+        }
+
+        var stored = new DoubleDouble[m];
+        foreach (var element in equations.Storage.Values)
+        {
+            stored[element.Row] += element.Value * voltages[element.Column];
+        }
+
+        return ([.. Enumerable.Range(0, n).Select(i => x[i, 0])], stored);
+    }
+
     private static void FillPencil(
         SplitMatrix system, DescriptorEquations equations, InputModel inputs, double shift)
     {

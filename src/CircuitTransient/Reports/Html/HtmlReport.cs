@@ -22,8 +22,8 @@ public static partial class HtmlReport
         TransientResult result, string command, params ImmutableArray<StudySection> sections)
     {
         using var fonts = new PlotFonts();
-        var style = Resource("report.css");
-        var script = $"(() => {{\n\"use strict\";\n{string.Concat(Scripts.Select(Resource))}}})();\n";
+        var style = EmbeddedText.Of("report.css");
+        var script = $"(() => {{\n\"use strict\";\n{string.Concat(Scripts.Select(EmbeddedText.Of))}}})();\n";
         var title = result.Circuit.Title ?? result.Circuit.Source.Name;
         return Markup.Of($"""
             <!DOCTYPE html>
@@ -89,14 +89,6 @@ public static partial class HtmlReport
 
     private static string Hash(string content) =>
         $"sha256-{Convert.ToBase64String(SHA256.HashData(Encoding.UTF8.GetBytes(content)))}";
-
-    private static string Resource(string name)
-    {
-        using var stream = typeof(HtmlReport).Assembly.GetManifestResourceStream(name)
-            ?? throw new InvalidOperationException($"{name} is not embedded");
-        using var reader = new StreamReader(stream, Encoding.UTF8);
-        return reader.ReadToEnd();
-    }
 
     /// <summary>The version of this library.</summary>
     internal static string Version =>

@@ -307,6 +307,7 @@ function tally(verdicts, noun, otherwise) {
   const [all, holding] = [verdicts.length, verdicts.filter((v) => v).length];
   if (all === 0) return "";
   if (all === 1) return holding === 1 ? `the ${noun} holds` : `the ${noun} is ${otherwise}`;
+  if (all === 2 && holding !== 1) return `both ${noun}s ${holding === 2 ? "hold" : `are ${otherwise}`}`;
   if (holding === 0) return `all ${all} ${noun}s are ${otherwise}`;
   if (holding === all) return `all ${all} ${noun}s hold`;
   return holding === all - 1 ? `one of ${all} ${noun}s is ${otherwise}` : `${all - holding} of ${all} ${noun}s are ${otherwise}`;

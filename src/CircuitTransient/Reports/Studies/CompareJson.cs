@@ -14,88 +14,38 @@ public static class CompareJson
     public static string Schema => JsonWriting.Schema("compare.schema.json");
 
     /// <summary>One document, or an array where several pairs of results were compared.</summary>
-    public static string Write(ImmutableArray<Comparison> comparisons) => JsonWriting.Document(json =>
-    {
-        if (comparisons is [var single])
-        {
-            WriteDocument(json, single);
-            return;
-        }
-
-        json.WriteStartArray();
-        foreach (var comparison in comparisons)
-        {
-            WriteDocument(json, comparison);
-        }
-
-        json.WriteEndArray();
-    });
+    public static string Write(ImmutableArray<Comparison> comparisons) => comparisons is [var single]
+        ? JsonWriting.Document(single, WriteDocument)
+        : JsonWriting.Documents(comparisons, WriteDocument);
 
     private static void WriteDocument(Utf8JsonWriter json, Comparison comparison)
     {
-        json.WriteStartObject();
         json.WriteString("format", Format);
         json.Number("within", comparison.Within);
-        json.Object("before", () => WriteCircuit(json, comparison.Before));
-        json.Object("after", () => WriteCircuit(json, comparison.After));
-        json.Object("verdict", () =>
-        {
-            json.WriteNumber("worse", comparison.Turned(VerdictTurn.Worse));
-            json.WriteNumber("better", comparison.Turned(VerdictTurn.Better));
-            json.WriteNumber("gone", comparison.RequirementsGone + comparison.RatingsGone);
-            json.WriteBoolean("differentCircuits", comparison.IsOfDifferentCircuits);
-            json.WriteBoolean("same", comparison.IsSame);
-        });
-        json.Objects("inputs", comparison.Inputs, input =>
-        {
-            json.WriteString("what", input.What);
-            json.WriteString("before", input.Before);
-            json.WriteString("after", input.After);
-        });
-        json.Objects("values", comparison.Values, change =>
-        {
-            json.WriteString("part", change.Part);
-            json.WriteString("unit", change.Unit);
-            WriteChange(json, change.Value);
-        });
-        json.Objects("names", comparison.Missing.Prepend(comparison.Causes).Concat(comparison.Notes),
-            change => WriteNames(json, change));
-        json.Objects("renamed", comparison.Renamed, renaming =>
-        {
-            json.WriteString("kind", renaming.Kind);
-            json.WriteString("before", renaming.Before);
-            json.WriteString("after", renaming.After);
-        });
-        json.Objects("events", comparison.Events, change =>
-        {
-            json.WriteString("name", change.Name);
-            json.Number("before", change.Before);
-            json.Number("after", change.After);
-        });
-        json.Objects("requirements", comparison.Requirements, change => WriteRequirement(json, change));
-        json.Objects("ratings", comparison.Ratings, change => WriteRating(json, change));
-        json.Objects("selfChecks", comparison.Checks, change =>
-        {
-            json.WriteString("name", change.Name);
-            WriteTruth(json, "before", change.Before);
-            WriteTruth(json, "after", change.After);
-            json.WriteString("turn", Word(change.Turn));
-        });
-        json.Objects("observations", comparison.Observations, change => WriteObservation(json, change));
-        json.Objects("figures", comparison.Figures, change =>
-        {
-            json.WriteString("name", change.Name);
-            json.WriteString("unit", change.Unit);
-            WriteChange(json, change.Value);
-        });
-        json.Objects("stresses", comparison.Stresses, change =>
-        {
-            json.WriteString("part", change.Part);
-            json.WriteString("stress", change.Stress);
-            json.WriteString("unit", change.Unit);
-            WriteChange(json, change.Value);
-        });
-        json.WriteEndObject();
+        json.Object("before", comparison.Before, WriteCircuit);
+        json.Object("after", comparison.After, WriteCircuit);
+        json.Object("verdict", comparison, WriteVerdict);
+        json.Objects("inputs", comparison.Inputs, WriteInput);
+        json.Objects("values", comparison.Values, WriteValue);
+        json.Objects(
+            "names", comparison.Missing.Prepend(comparison.Causes).Concat(comparison.Notes), WriteNames);
+        json.Objects("renamed", comparison.Renamed, WriteRenaming);
+        json.Objects("events", comparison.Events, WriteEvent);
+        json.Objects("requirements", comparison.Requirements, WriteRequirement);
+        json.Objects("ratings", comparison.Ratings, WriteRating);
+        json.Objects("selfChecks", comparison.Checks, WriteCheck);
+        json.Objects("observations", comparison.Observations, WriteObservation);
+        json.Objects("figures", comparison.Figures, WriteFigure);
+        json.Objects("stresses", comparison.Stresses, WriteStress);
+    }
+
+    private static void WriteVerdict(Utf8JsonWriter json, Comparison comparison)
+    {
+        json.WriteNumber("worse", comparison.Turned(VerdictTurn.Worse));
+        json.WriteNumber("better", comparison.Turned(VerdictTurn.Better));
+        json.WriteNumber("gone", comparison.RequirementsGone + comparison.RatingsGone);
+        json.WriteBoolean("differentCircuits", comparison.IsOfDifferentCircuits);
+        json.WriteBoolean("same", comparison.IsSame);
     }
 
     private static void WriteCircuit(Utf8JsonWriter json, ResultsDocument document)
@@ -106,43 +56,62 @@ public static class CompareJson
         json.WriteBoolean("holds", document.AllHold);
     }
 
+    private static void WriteInput(Utf8JsonWriter json, InputChange input)
+    {
+        json.WriteString("what", input.What);
+        json.WriteString("before", input.Before);
+        json.WriteString("after", input.After);
+    }
+
+    private static void WriteValue(Utf8JsonWriter json, StressChange change)
+    {
+        json.WriteString("part", change.Part);
+        json.WriteString("unit", change.Unit);
+        WriteChange(json, change.Value);
+    }
+
     private static void WriteNames(Utf8JsonWriter json, NameChange change)
     {
         json.WriteString("kind", change.Kind);
         json.Texts("gone", change.Gone);
         json.Texts("new", change.New);
-        json.Objects("changed", change.Changed, words =>
+        json.Objects("changed", change.Changed, (to, words) =>
         {
-            json.WriteString("before", words.Before);
-            json.WriteString("after", words.After);
+            to.WriteString("before", words.Before);
+            to.WriteString("after", words.After);
         });
+    }
+
+    private static void WriteRenaming(Utf8JsonWriter json, Renaming renaming)
+    {
+        json.WriteString("kind", renaming.Kind);
+        json.WriteString("before", renaming.Before);
+        json.WriteString("after", renaming.After);
+    }
+
+    private static void WriteEvent(Utf8JsonWriter json, EventChange change)
+    {
+        json.WriteString("name", change.Name);
+        json.Number("before", change.Before);
+        json.Number("after", change.After);
     }
 
     private static void WriteRequirement(Utf8JsonWriter json, RequirementChange change)
     {
         json.WriteString("turn", Word(change.Turn));
         json.WriteBoolean("differs", change.Differs);
-        WriteVerdict(json, "before", change.Before);
-        WriteVerdict(json, "after", change.After);
+        json.Object("before", change.Before, WriteJudged);
+        json.Object("after", change.After, WriteJudged);
     }
 
-    private static void WriteVerdict(Utf8JsonWriter json, string name, DocumentRequirement? requirement)
+    private static void WriteJudged(Utf8JsonWriter json, DocumentRequirement requirement)
     {
-        if (requirement is null)
-        {
-            json.WriteNull(name);
-            return;
-        }
-
-        json.Object(name, () =>
-        {
-            json.WriteString("statement", requirement.Statement);
-            json.WriteString("unit", requirement.Unit);
-            json.WriteBoolean("holds", requirement.Holds);
-            json.Number("worst", requirement.Worst.Value);
-            json.Number("time", requirement.Worst.Time);
-            json.Number("margin", requirement.Margin);
-        });
+        json.WriteString("statement", requirement.Statement);
+        json.WriteString("unit", requirement.Unit);
+        json.WriteBoolean("holds", requirement.Holds);
+        json.Number("worst", requirement.Worst.Value);
+        json.Number("time", requirement.Worst.Time);
+        json.Number("margin", requirement.Margin);
     }
 
     private static void WriteRating(Utf8JsonWriter json, RatingChange change)
@@ -151,25 +120,24 @@ public static class CompareJson
         json.WriteString("unit", change.Unit);
         json.WriteString("turn", Word(change.Turn));
         json.WriteBoolean("differs", change.Differs);
-        WriteRated(json, "before", change.Before);
-        WriteRated(json, "after", change.After);
+        json.Object("before", change.Before, WriteRated);
+        json.Object("after", change.After, WriteRated);
     }
 
-    private static void WriteRated(Utf8JsonWriter json, string name, DocumentRating? rating)
+    private static void WriteRated(Utf8JsonWriter json, DocumentRating rating)
     {
-        if (rating is null)
-        {
-            json.WriteNull(name);
-            return;
-        }
+        json.Number("rated", rating.Rated);
+        json.Number("reached", rating.Reached);
+        json.Number("used", rating.Used);
+        json.WriteBoolean("holds", rating.Holds);
+    }
 
-        json.Object(name, () =>
-        {
-            json.Number("rated", rating.Rated);
-            json.Number("reached", rating.Reached);
-            json.Number("used", rating.Used);
-            json.WriteBoolean("holds", rating.Holds);
-        });
+    private static void WriteCheck(Utf8JsonWriter json, CheckChange change)
+    {
+        json.WriteString("name", change.Name);
+        WriteTruth(json, "before", change.Before);
+        WriteTruth(json, "after", change.After);
+        json.WriteString("turn", Word(change.Turn));
     }
 
     private static void WriteObservation(Utf8JsonWriter json, ObservationChange change)
@@ -177,13 +145,28 @@ public static class CompareJson
         json.WriteString("name", change.Name);
         json.WriteString("unit", change.Unit);
         json.WriteBoolean("differs", change.Differs);
-        json.Object("max", () => WriteChange(json, change.Max));
-        json.Object("maxTime", () => WriteChange(json, change.MaxTime));
-        json.Object("min", () => WriteChange(json, change.Min));
-        json.Object("minTime", () => WriteChange(json, change.MinTime));
-        json.Object("final", () => WriteChange(json, change.Final));
-        json.Objects("atMax", change.AtMax, share => WriteShare(json, share));
-        json.Objects("atMin", change.AtMin, share => WriteShare(json, share));
+        json.Object("max", change.Max, WriteChange);
+        json.Object("maxTime", change.MaxTime, WriteChange);
+        json.Object("min", change.Min, WriteChange);
+        json.Object("minTime", change.MinTime, WriteChange);
+        json.Object("final", change.Final, WriteChange);
+        json.Objects("atMax", change.AtMax, WriteShare);
+        json.Objects("atMin", change.AtMin, WriteShare);
+    }
+
+    private static void WriteFigure(Utf8JsonWriter json, FigureChange change)
+    {
+        json.WriteString("name", change.Name);
+        json.WriteString("unit", change.Unit);
+        WriteChange(json, change.Value);
+    }
+
+    private static void WriteStress(Utf8JsonWriter json, StressChange change)
+    {
+        json.WriteString("part", change.Part);
+        json.WriteString("stress", change.Stress);
+        json.WriteString("unit", change.Unit);
+        WriteChange(json, change.Value);
     }
 
     private static void WriteShare(Utf8JsonWriter json, ContributionChange share)

@@ -37,8 +37,7 @@ public static partial class CompareSummary
             $"Overlooked are differences up to {Fraction(comparison.Within)} of a quantity's own size (an " +
             "observation's is its greatest magnitude); a turned verdict never is.",
             indent: 0);
-        text.Blank();
-        text.Paragraph(TerminalSummary.Closing, indent: 0);
+        text.End([]);
         return text.ToString();
     }
 

@@ -7,12 +7,11 @@ namespace CircuitTransient.Reports.Studies;
 /// left.</summary>
 public static class OverlayPlot
 {
-    private const double Left = 76;
+    private const double Left = PlotPage.Left;
     private const double Right = PlotPanel.Width - 210;
     private const double Small = 11.5;
     private const double MainHeight = 250;
     private const double LeftOverHeight = 90;
-    private const double PixelsPerPoint = 2;
     private const int MostRecords = 12;
 
     private static readonly Stroke RecordStroke = new("#b87b1f", 1.2);
@@ -21,29 +20,18 @@ public static class OverlayPlot
     private static readonly Stroke NoiseStroke = new(PlotStyle.Limit, 1, [6, 4]);
 
     /// <summary>The picture as SVG.</summary>
-    public static string Svg(OverlayResult result)
-    {
-        using var fonts = new PlotFonts();
-        return SvgRenderer.Write(Draw(result, fonts));
-    }
+    public static string Svg(OverlayResult result) => PlotPage.Svg(fonts => Draw(result, fonts));
 
     /// <summary>The picture as PNG, two pixels a point.</summary>
-    public static byte[] Png(OverlayResult result)
-    {
-        using var fonts = new PlotFonts();
-        return PngRenderer.Write(Draw(result, fonts), fonts, PixelsPerPoint);
-    }
+    public static byte[] Png(OverlayResult result) => PlotPage.Png(fonts => Draw(result, fonts));
 
     /// <summary>The picture before it is rendered.</summary>
     public static Drawing Draw(OverlayResult result, PlotFonts fonts)
     {
         var shapes = ImmutableArray.CreateBuilder<Shape>();
         var title = result.Circuit.Title ?? result.Circuit.Source.Name;
-        var width = PlotPanel.Width - Left - 20;
-        shapes.Add(new TextShape(
-            Left, 34, fonts.Fitted(title, 19, width, isStrong: true), 19, PlotStyle.Ink, IsStrong: true));
-        shapes.Add(new TextShape(
-            Left, 55, fonts.Fitted(OverlayWords.Verdict(result), 12.5, width), 12.5, PlotStyle.Grey));
+        shapes.Add(PlotPage.Title(title, fonts));
+        shapes.Add(PlotPage.Remark(OverlayWords.Verdict(result), 55, fonts));
         var y = 92.0;
         foreach (var record in result.Records.Take(MostRecords))
         {
@@ -52,15 +40,13 @@ public static class OverlayPlot
 
         if (result.Records.Length > MostRecords)
         {
-            shapes.Add(new TextShape(Left, y, $"{result.Records.Length - MostRecords} more records are left "
-                + "out; overlay.csv has them all.", 12.5, PlotStyle.Grey));
+            shapes.Add(PlotPage.Remark(
+                $"{result.Records.Length - MostRecords} more records are left out; overlay.csv has them all.",
+                y, fonts));
             y += 24;
         }
 
-        var source = result.Circuit.Source;
-        shapes.Add(new TextShape(
-            Left, y, $"{source.Name}, SHA-256 {source.Sha256[..12]}… · a linear model, a calculation aid", 11,
-            PlotStyle.Grey));
+        shapes.Add(PlotPage.Foot(result.Circuit, y, fonts));
         return new Drawing(
             PlotPanel.Width, y + 18, $"Records over the model of {title}", shapes.ToImmutable());
     }
@@ -69,10 +55,9 @@ public static class OverlayPlot
         ImmutableArray<Shape>.Builder shapes, RecordComparison record, PlotFonts fonts, double top)
     {
         var trace = record.Trace;
-        var width = PlotPanel.Width - Left - 20;
         var heading = $"{record.File} over {record.Observation}: {OverlayWords.Verdict(record)}";
         shapes.Add(new TextShape(
-            Left, top - 14, fonts.Fitted(heading, 14, width, isStrong: true), 14, PlotStyle.Ink,
+            Left, top - 14, fonts.Fitted(heading, 14, PlotPage.Width, isStrong: true), 14, PlotStyle.Ink,
             IsStrong: true));
         var time = new PlotScale(trace.Times[0], trace.Times[^1], Left, Right);
         var (low, high) = Range(trace.Record.Concat(trace.Model));

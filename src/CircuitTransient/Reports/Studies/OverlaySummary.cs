@@ -31,17 +31,7 @@ public static class OverlaySummary
             WriteRecord(text, record);
         }
 
-        if (!files.IsEmpty)
-        {
-            text.Heading("Files");
-            foreach (var file in files)
-            {
-                text.Paragraph(file);
-            }
-        }
-
-        text.Blank();
-        text.Paragraph(TerminalSummary.Closing, indent: 0);
+        text.End(files);
         return text.ToString();
     }
 

@@ -112,8 +112,11 @@ public static partial class ScanSummary
         {
             var holding = result.Points.Count(p => p.Found is { } found
                 && judged.All(f => Holds(f.Figure, found.Values[result.Figures.IndexOf(f.Figure)])));
-            return $"Everything required and rated holds at {holding} of {result.Points.Length} points of "
-                + $"{range}; the lines where it begins to break are in the map{doubt}";
+            return holding == result.Points.Length
+                ? $"Everything required and rated holds at all {holding} points of {range}, but breaks "
+                    + $"between them{doubt}"
+                : $"Everything required and rated holds at {holding} of {result.Points.Length} points of "
+                    + $"{range}; the lines where it begins to break are in the map{doubt}";
         }
 
         var common = ScanStretches.Common(judged.Select(f => f.Holding));
@@ -194,7 +197,32 @@ public static partial class ScanSummary
             _ => "comparing exact values",
         };
         return "Every figure is an exact solution of its own. Between the points extremes and breaks were "
-            + $"searched by {how}; what rises and falls again between two neighbouring points, without "
-            + "showing at either, is not seen.";
+            + $"searched by {how}. {Unseen(result, isBySlope)}{LeftOver(scans)}";
     }
+
+    /// <summary>What may still be missed.</summary>
+    private static string Unseen(ScanResult result, bool isBySlope)
+    {
+        if (result.Axes.Length > 1)
+        {
+            return result.Middles.IsEmpty
+                ? "A break that lies wholly between the points, without standing out at one, is not seen."
+                : "A break that lies wholly within a field of the map, without standing out at its corners "
+                    + "or its middle, is not seen.";
+        }
+
+        return isBySlope
+            ? "Where the slopes of two neighbouring points lead towards a limit, or a bend twice as sharp as "
+                + "any beside would reach it, that was followed to its end: a break between them that bends "
+                + "more sharply, there and back, is not seen."
+            : "Dips that show in the values were followed to their ends: a break that lies wholly between "
+                + "two neighbouring points, without showing at either, is not seen.";
+    }
+
+    private static string LeftOver(FigureScan[] scans) => scans.Sum(s => s.LeftOver) switch
+    {
+        0 => "",
+        1 => " One stretch that might hide one was not searched to its end.",
+        var count => $" {count} stretches that might hide one were not searched to their ends.",
+    };
 }

@@ -44,17 +44,7 @@ public static class SizeSummary
             text.Paragraph(words, hanging: 2);
         }
 
-        if (!files.IsEmpty)
-        {
-            text.Heading("Files");
-            foreach (var file in files)
-            {
-                text.Paragraph(file);
-            }
-        }
-
-        text.Blank();
-        text.Paragraph(TerminalSummary.Closing, indent: 0);
+        text.End(files);
         return text.ToString();
     }
 

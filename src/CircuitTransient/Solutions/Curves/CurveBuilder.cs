@@ -186,6 +186,11 @@ public sealed class CurveBuilder
     public bool IsAccumulated(Measurand measurand) =>
         QuantityFactors.OfAny(solution.Circuit, measurand) is { IsIntegrated: true };
 
+    /// <summary>Since when a quantity gathers that is asked for in a window: a Joule integral since the
+    /// window's start, an energy since t = 0.</summary>
+    public static double GatheredFrom(Measurand measurand, double windowStart) =>
+        measurand is JouleIntegral ? windowStart : 0;
+
     private LinearPiece? Linear(int s, Measurand measurand, Share share, int cause)
     {
         var key = (s, measurand, share, cause);

@@ -153,7 +153,7 @@ public static class DocumentComparison
     {
         var pairs = NamedPairs<DocumentRequirement>
             .Of(before.Requirements, after.Requirements, r => r.Statement)
-            .ThenBy(r => $"{QuantityOf(r.Statement)} [{r.Unit}]");
+            .ThenBy(r => $"{r.Quantity} [{r.Unit}]"); // with another bound still the same one
         return
         [
             .. pairs.Pairs.Select(pair => new RequirementChange(
@@ -169,16 +169,6 @@ public static class DocumentComparison
         sizes.Of(before.Margin, after.Margin, Math.Max(
             Math.Max(Math.Abs(before.Worst.Value ?? 0), Math.Abs(after.Worst.Value ?? 0)),
             Math.Max(Math.Abs(before.Margin ?? 0), Math.Abs(after.Margin ?? 0))));
-
-    /// <summary>What is required, without the bound: a requirement whose bound was changed is still
-    /// the same one.</summary>
-    private static string QuantityOf(string statement)
-    {
-        string[] words = [" at most ", " at least ", " between ", " to "];
-        var end = words.Select(word => statement.IndexOf(word, StringComparison.Ordinal))
-            .Where(place => place >= 0).DefaultIfEmpty(statement.Length).Min();
-        return statement[..end];
-    }
 
     private static ImmutableArray<RatingChange> RatingsOf(NamedPairs<DocumentPart> parts, ChangeSizes sizes)
     {

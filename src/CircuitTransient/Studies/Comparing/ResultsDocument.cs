@@ -62,8 +62,10 @@ public sealed record DocumentContribution(string Cause, double? AtMax, double? A
 public sealed record DocumentFigure(string Name, string Unit, double? Value);
 
 /// <summary>A verdict on a requirement.</summary>
+/// <param name="Quantity">What is judged, without its bound; the whole statement where an older document does
+/// not say it.</param>
 public sealed record DocumentRequirement(
-    string Statement, string Unit, bool Holds, DocumentPeak Worst, double? Margin);
+    string Statement, string Quantity, string Unit, bool Holds, DocumentPeak Worst, double? Margin);
 
 /// <summary>A part with its stresses and ratings.</summary>
 public sealed record DocumentPart(

@@ -116,6 +116,7 @@ public static class ResultsReader
 
     private static DocumentRequirement Requirement(JsonField json) => new(
         json["statement"].Text(),
+        json.Member("quantity")?.Text() ?? json["statement"].Text(),
         json.Member("unit")?.Text() ?? "",
         json["holds"].Truth(),
         Peak(json["worst"]),

@@ -13,9 +13,6 @@ public sealed class LatinHypercube(ulong seed, int coordinates, long count)
 
     private readonly CounterGenerator generator = new(seed);
 
-    /// <summary>How many cubes the series is made of.</summary>
-    public long CubeCount => (count + MostInCube - 1) / MostInCube;
-
     /// <summary>How many points a cube has: all have the same number, but the last one may have
     /// fewer.</summary>
     public int SizeOf(long cube) => (int)Math.Min(MostInCube, count - (cube * MostInCube));

@@ -161,11 +161,6 @@ public sealed class DrawKernel
         return IsServed(first) && IsServed(second) ? null
             : "some interval leaves it open, or it follows derivatives of sources";
 
-        static (int, int) Of(object of) => of switch
-        {
-            DrawTrack t => (t.First, t.Second),
-            DrawIntegral i => (i.First, i.Second),
-            _ => (-1, -1),
-        };
+        static (int, int) Of(DrawProduct of) => (of.First, of.Second);
     }
 }

@@ -24,12 +24,16 @@ internal enum FactorKind
 /// <param name="Index">Of the part or coupling.</param>
 internal readonly record struct TrackFactor(double Sign, FactorKind Kind, int Index);
 
-/// <summary>A function, or a product of two, whose extremes in a window are wanted.</summary>
+/// <summary>A function, or a product of two, of which something in a window is wanted.</summary>
 /// <param name="First">Index of the function.</param>
 /// <param name="Second">Index of the other factor; −1 for a function alone.</param>
 /// <param name="Factor">What it is multiplied by.</param>
 /// <param name="Window">Index of the window.</param>
+internal abstract record DrawProduct(int First, int Second, TrackFactor Factor, int Window);
+
+/// <summary>A product whose extremes are wanted.</summary>
 internal sealed record DrawTrack(int First, int Second, TrackFactor Factor, int Window)
+    : DrawProduct(First, Second, Factor, Window)
 {
     /// <summary>Whether its greatest value is wanted.</summary>
     public bool WantsMaximum { get; set; }
@@ -38,8 +42,9 @@ internal sealed record DrawTrack(int First, int Second, TrackFactor Factor, int 
     public bool WantsMinimum { get; set; }
 }
 
-/// <summary>An integral of a product over a window.</summary>
-internal sealed record DrawIntegral(int First, int Second, TrackFactor Factor, int Window);
+/// <summary>A product whose integral is wanted.</summary>
+internal sealed record DrawIntegral(int First, int Second, TrackFactor Factor, int Window)
+    : DrawProduct(First, Second, Factor, Window);
 
 /// <summary>What was found on a track.</summary>
 internal struct TrackState

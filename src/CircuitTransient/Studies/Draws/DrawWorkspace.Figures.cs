@@ -114,11 +114,10 @@ public sealed partial class DrawWorkspace
         }
 
         ref var state = ref tracks[figure.Track];
-        var up = figure.Upper is null ? double.NaN : state.Up;
-        var down = figure.Lower is null ? double.NaN : state.Down;
-        if (!double.IsNaN(up) || !double.IsNaN(down))
+        var infinite = double.MinNumber(state.Up, state.Down); // an impulse breaks bounds on either side
+        if (!double.IsNaN(infinite))
         {
-            return (double.NegativeInfinity, double.IsNaN(up) ? down : up);
+            return (double.NegativeInfinity, infinite);
         }
 
         var (margin, time) = (double.PositiveInfinity, double.NaN);

@@ -72,7 +72,7 @@ internal sealed class FigurePlan
     {
         if (IsIntegrated(observation.Quantity))
         {
-            return IsMonotone(observation.Quantity)
+            return IsServed(observation.Quantity, observation.Window)
                 ? new IntegralFigure(Integral(observation.Quantity, observation.Window), isGreatest)
                 : new ExactFigure("it is an energy that goes to and fro");
         }
@@ -87,7 +87,7 @@ internal sealed class FigurePlan
         switch (requirement.Bound)
         {
             case Limits limits when IsIntegrated(requirement.Quantity):
-                return IsMonotone(requirement.Quantity)
+                return IsServed(requirement.Quantity, requirement.Window)
                     ? new IntegralMarginFigure(
                         Integral(requirement.Quantity, requirement.Window), limits.Lower, limits.Upper)
                     : new ExactFigure("it is an energy that goes to and fro");
@@ -144,9 +144,10 @@ internal sealed class FigurePlan
     private bool IsIntegrated(Measurand quantity) =>
         QuantityFactors.OfAny(circuit, quantity) is { IsIntegrated: true };
 
-    /// <summary>Whether an integral never turns: i² t, and what resistances and contacts take up.</summary>
-    private bool IsMonotone(Measurand quantity) => quantity is JouleIntegral
-        || (quantity is EnergyIn e
+    /// <summary>Whether an integral over the window never turns: i² t, and what resistances and contacts take
+    /// up, which is counted from t = 0.</summary>
+    private bool IsServed(Measurand quantity, Window window) => quantity is JouleIntegral
+        || (quantity is EnergyIn e && window.From is null
             && circuit.Parts[e.Part] is Switch or Resistor { Resistance.Nominal: > 0 });
 
     private int Integral(Measurand quantity, Window window)

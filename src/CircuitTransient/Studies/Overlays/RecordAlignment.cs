@@ -38,7 +38,8 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
     /// <summary>Another offset at which the record fits as well; null where there is none.</summary>
     public double? Other { get; private set; }
 
-    private int Estimated =>
+    /// <summary>How many of offset, gain and level are estimated.</summary>
+    public int Estimated =>
         (given.Offset is null ? 1 : 0) + (given.Gain is null ? 1 : 0) + (given.Level is null ? 1 : 0);
 
     /// <summary>Aligns; null where no part of the record lies within the study.</summary>
@@ -128,7 +129,7 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
 
             var before = now;
             now = Full(fit.X, start);
-            if (Inside(samples, now[0]).Count == inside.Count && Math.Abs(now[0] - before[0]) == 0)
+            if (Inside(samples, now[0]).Count == inside.Count && now[0] == before[0])
             {
                 break;
             }
@@ -174,9 +175,6 @@ internal sealed class RecordAlignment(ModelCurve model, AlignmentGiven given)
     /// <summary>The standard errors of what was estimated.</summary>
     public Alignment Describe(Aligned aligned, double variance) =>
         Alignment.Of(aligned.Offset, aligned.Gain, aligned.Level, given, aligned.Inverse, variance);
-
-    /// <summary>How many of the three are estimated.</summary>
-    public int Unknowns => Estimated;
 
     private RecordSamples Inside(RecordSamples samples, double offset) =>
         samples.Between(offset, offset + model.Until);

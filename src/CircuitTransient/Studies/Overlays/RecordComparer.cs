@@ -149,7 +149,7 @@ internal sealed class RecordComparer(PlacedRecord placed, ModelCurve model)
         // Some sixty lags are looked at: 4.5 standard errors are passed by chance once in two thousand
         // records.
         return new Differences(
-            values.Length, Math.Sqrt(aligned.Variance(alignment.Unknowns)), differences[worst],
+            values.Length, Math.Sqrt(aligned.Variance(alignment.Estimated)), differences[worst],
             times[worst] - aligned.Offset, correlation, lag * interval, 4.5 / Math.Sqrt(values.Length));
     }
 

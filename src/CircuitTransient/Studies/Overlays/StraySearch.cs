@@ -108,7 +108,7 @@ internal sealed class StraySearch(PlacedRecord placed, Aligned aligned, double n
         var alignment = new RecordAlignment(solved.Value, placed.Given);
         var few = aligned.Compared.Thinned(MostSamples);
         return alignment.Near(few, aligned.Offset) is { } near
-            ? Math.Sqrt(near.Variance(alignment.Unknowns)) / noise
+            ? Math.Sqrt(near.Variance(alignment.Estimated)) / noise
             : double.PositiveInfinity;
     }
 }

@@ -7,7 +7,7 @@ namespace CircuitTransient.Studies.Records;
 public static class RecordReader
 {
     /// <summary>The largest file read, in bytes (512 MiB).</summary>
-    public const long LargestFile = 512L * 1024 * 1024;
+    public const int LargestFile = 512 * 1024 * 1024;
 
     /// <summary>Reads a channel of a record.</summary>
     /// <param name="name">The file's name as the user gave it.</param>

@@ -31,6 +31,7 @@ internal sealed class AxisScan(
         given = Sloped(given);
         var jumps = RangeJump.Find(given, function);
         var looked = Merge(given, jumps.SelectMany(j => new[] { j.Before, j.After }));
+        (looked, var leftOver) = isJudged ? WithDips(looked) : (WithCrests(looked), 0);
         var greatest = RangeExtremeSearch.Greatest(looked, function);
         var least = RangeExtremeSearch.Least(looked, function);
         looked = Merge(looked, [.. greatest?.Looked ?? [], .. least?.Looked ?? []]);
@@ -44,7 +45,38 @@ internal sealed class AxisScan(
             breaks,
             holding,
             !isJudged || looked.All(s => double.IsNaN(s.Y) || Judged(s).Y >= 0));
-        return findings with { Room = ScanRoom.Of(circuit, findings) };
+        return findings with { Room = ScanRoom.Of(circuit, findings), LeftOver = leftOver };
+    }
+
+    /// <summary>What is looked at further because a break, or an end of one, may lie between
+    /// samples.</summary>
+    private (ImmutableArray<SlopedSample> Looked, int LeftOver) WithDips(ImmutableArray<SlopedSample> looked)
+    {
+        var more = new List<SlopedSample>();
+        var dips = RangeDips.Search([.. looked.Select(Judged)], Look);
+        return (Merge(looked, more), dips.LeftOver);
+
+        SlopedSample Look(double x)
+        {
+            more.Add(function(x));
+            return Judged(more[^1]);
+        }
+    }
+
+    /// <summary>What is looked at further because an extreme between samples may be other than they
+    /// foretell.</summary>
+    private ImmutableArray<SlopedSample> WithCrests(ImmutableArray<SlopedSample> looked)
+    {
+        var more = new List<SlopedSample>();
+        RangeDips.Resolve(looked, Look);
+        RangeDips.Resolve([.. looked.Select(s => s.Negate())], x => Look(x).Negate());
+        return Merge(looked, more);
+
+        SlopedSample Look(double x)
+        {
+            more.Add(function(x));
+            return more[^1];
+        }
     }
 
     /// <summary>The slopes about the highest and lowest points, where they were not all taken.</summary>

@@ -8,8 +8,9 @@ namespace CircuitTransient.Studies.Scans;
 /// requirement or rating begins to break on the lines through the points.</summary>
 internal sealed class MapScan(
     ScanPlan plan, ImmutableArray<StudyFigure> figures, ScanFunction function, double[] nominal,
-    ImmutableArray<ScanPoint> points)
+    ImmutableArray<ScanPoint> points, ImmutableArray<ScanPoint> middles)
 {
+    private const int MostStarts = 4;
     private const int MostRounds = 6;
     private const double Settled = 1e-10; // of the value: a round that gains less ends the search
     private const int MostCrossings = 4000; // of one figure; a finer map is not drawn finer
@@ -30,19 +31,20 @@ internal sealed class MapScan(
     {
         var kind = figures[figure].Kind;
         var isJudged = FigureScan.IsJudgedKind(kind);
-        var values = points
-            .Select(p => ScanFunction.Judged(figures[figure], p.Found, p.Found?.Values[figure])).ToArray();
-        if (FigureSizes.IsFlat(values, FigureSizes.Of(figures, points, figure), isJudged))
+        var values = Values(figure, points);
+        var between = Values(figure, middles);
+        if (FigureSizes.IsFlat([.. values, .. between], FigureSizes.Of(figures, points, figure), isJudged))
         {
             return Flat(figure, isJudged);
         }
 
-        var greatest = Extreme(figure, values, 1);
-        var least = Extreme(figure, values, -1);
+        var greatest = Extreme(figure, values, between, 1);
+        var least = Extreme(figure, values, between, -1);
         var breaks = isJudged ? Breaks(figure, values) : [];
         var worst = kind == StudyFigureKind.RatingUsed ? 1 - greatest?.Value : least?.Value;
         var holds = !isJudged
-            || (values.All(v => double.IsNaN(v) || Margin(kind, v) >= 0) && worst is null or >= 0);
+            || (values.Concat(between).All(v => double.IsNaN(v) || Margin(kind, v) >= 0)
+                && worst is null or >= 0);
         var scan = new FigureScan(figures[figure], greatest, least, [], breaks, [], holds);
         return scan with { Room = ScanRoom.Of(plan.Varied.Circuit, scan) };
     }
@@ -60,18 +62,34 @@ internal sealed class MapScan(
     private static double Margin(StudyFigureKind kind, double value) =>
         kind == StudyFigureKind.RatingUsed ? 1 - value : value;
 
-    /// <summary>From the best point on, line by line along each value in turn, until neither gains.</summary>
-    private ScanPlace? Extreme(int figure, double[] values, int sign)
+    private double[] Values(int figure, ImmutableArray<ScanPoint> of) =>
+        [.. of.Select(p => ScanFunction.Judged(figures[figure], p.Found, p.Found?.Values[figure]))];
+
+    /// <summary>The extreme to which the best point or middle of a field leads. Where that does not break,
+    /// others that stand out from all about them, and might, lead on too.</summary>
+    private ScanPlace? Extreme(int figure, double[] values, double[] between, int sign)
     {
-        var best = Enumerable.Range(0, values.Length).Where(i => double.IsFinite(values[i]))
-            .DefaultIfEmpty(-1).MaxBy(i => i < 0 ? double.NaN : sign * values[i]);
-        if (best < 0)
+        var kind = figures[figure].Kind;
+        var isWorst = kind == (sign > 0 ? StudyFigureKind.RatingUsed : StudyFigureKind.Margin);
+        ScanPlace? best = null;
+        foreach (var (start, value) in new MapStarts(points, values, middles, between, second.Length)
+            .Of(sign, isWorst ? v => Margin(kind, v) : null).Take(MostStarts))
         {
-            return null;
+            var found = Climb(figure, start, value, sign);
+            best = best is null || sign * found.Value > sign * best.Value ? found : best;
+            if (isWorst && Margin(kind, best.Value) < 0)
+            {
+                break;
+            }
         }
 
-        double[] place = [first[best / second.Length], second[best % second.Length]];
-        var value = values[best];
+        return best;
+    }
+
+    /// <summary>From a place on, line by line along each value in turn, until neither gains.</summary>
+    private ScanPlace Climb(int figure, ImmutableArray<double> start, double value, int sign)
+    {
+        double[] place = [.. start];
         var how = RangeExtremeKind.End;
         for (var round = 0; round < MostRounds; round++)
         {

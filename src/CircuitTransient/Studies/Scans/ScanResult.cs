@@ -98,6 +98,10 @@ public sealed record FigureScan(
     /// breaks, negative infinity where without limit, null of what is only observed.</summary>
     public double? Room { get; init; }
 
+    /// <summary>How many stretches between points might hide a break and were not searched to the
+    /// end.</summary>
+    public int LeftOver { get; init; }
+
     /// <summary>Whether figures of a kind are judged.</summary>
     internal static bool IsJudgedKind(StudyFigureKind kind) =>
         kind is StudyFigureKind.Margin or StudyFigureKind.RatingUsed;

@@ -61,11 +61,12 @@ public sealed class Scanner
             : FigureSizes.Cleaned(
                 figures, ScanGrid.Solve(
                     ScanGrid.Places(plan.Axes), Sloped, Put, function, solved, cancellation));
+        var middles = Middles();
         var findings = plan.Axes.Length switch
         {
             0 => [],
             1 => Between(plan.Axes[0], 0, points),
-            _ => new MapScan(plan, figures, function, nominal, points).Run(cancellation),
+            _ => new MapScan(plan, figures, function, nominal, points, middles).Run(cancellation),
         };
         var scatter = plan.Scatter is { } s ? Scatter(s) : null;
         findings = Completed(findings, points, 0);
@@ -80,7 +81,7 @@ public sealed class Scanner
                 _ => [.. Enumerable.Range(0, function.Linear.Count)
                     .Select(k => function.Linear.Over(k, points))],
             },
-            Middles = Middles(),
+            Middles = middles,
         };
     }
 

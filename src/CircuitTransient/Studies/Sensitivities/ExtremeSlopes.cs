@@ -74,7 +74,9 @@ internal sealed class ExtremeSlopes(SlopeMarch march)
     public double? ValueSlope(
         Measurand quantity, MovingWindow window, int segment, double tau, int value) =>
         QuantityFactors.OfAny(solution.Circuit, quantity) is { IsIntegrated: true }
-            ? reading.Integrals.Of(quantity, (window.From, window.Moves(value).From), segment, tau, value)
+            ? reading.Integrals.Of(
+                quantity, quantity is JouleIntegral ? (window.From, window.Moves(value).From) : (0, 0),
+                segment, tau, value)
             : reading.SlopeOf(quantity, segment, tau, value)?.Value;
 
     /// <summary>A quantity's rate, and that one's.</summary>

@@ -62,7 +62,7 @@ internal sealed class FigureSlopeFinder
 
     private FigureSlopes? Extreme(Measurand quantity, MovingWindow window, int sign)
     {
-        var from = curves.IsAccumulated(quantity) ? window.From : 0;
+        var from = CurveBuilder.GatheredFrom(quantity, window.From);
         if (curves.Of(quantity, from: from) is not { } curve)
         {
             return null;
@@ -88,7 +88,7 @@ internal sealed class FigureSlopeFinder
             return null;
         }
 
-        var curve = curves.Of(figure.Of, from: curves.IsAccumulated(figure.Of) ? open.From : 0)!;
+        var curve = curves.Of(figure.Of, from: CurveBuilder.GatheredFrom(figure.Of, open.From))!;
         return Gathered(
             value, time, v => new ReadingSlopes(march, extremes, figure, curve, open, v).Find());
     }
@@ -116,8 +116,7 @@ internal sealed class FigureSlopeFinder
             return null;
         }
 
-        var (up, down) = infinities.Of(requirement.Quantity, window.From, window.To);
-        if ((limits.Upper is not null && up is not null) || (limits.Lower is not null && down is not null))
+        if (infinities.BreaksAt(requirement.Quantity, limits, window.From, window.To) is not null)
         {
             return null;
         }

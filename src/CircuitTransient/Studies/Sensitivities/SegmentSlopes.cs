@@ -27,9 +27,6 @@ internal sealed class SegmentSlopes
             layout.Disturbance(g.Key), frame.Sum(g)))];
     }
 
-    /// <summary>The segment.</summary>
-    public SegmentFrame Frame => frame;
-
     /// <summary>The coefficients of a voltage's or current's derivative, one for each function; the
     /// derivative is the real part of the sum of products.</summary>
     public DoubleDoubleComplex[][] Coefficients(Measurand quantity)

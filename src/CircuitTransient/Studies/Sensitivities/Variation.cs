@@ -105,6 +105,11 @@ internal sealed class Variation
                     var inductance = (DoubleDouble)l.Inductance.Nominal;
                     Add(i, new VoltageAcross(i), -SlopeOf(l.Inductance) / (inductance * inductance));
                     break;
+                case VoltageSource or CurrentSource or IdealTransformer:
+                    break; // sources are no terms of a law, and turns are exact
+                default:
+                    throw new System.Diagnostics.UnreachableException(
+                        $"no derivative by {circuit.Parts[i]}");
             }
         }
 

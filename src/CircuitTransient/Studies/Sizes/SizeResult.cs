@@ -47,10 +47,6 @@ public sealed record SizeResult(
     /// <summary>Whether every self-check of every full solution holds.</summary>
     public bool ChecksHold => Proposed.ChecksHold && Confirmed.All(corner => corner.ChecksHold);
 
-    /// <summary>Whether the proposed values lie at an end of the range looked at.</summary>
-    public bool IsAtRangeEnd => Chosen is { } chosen
-        && Problem.Parts.Where((part, i) => AtEnd(chosen.Values[i], part)).Any();
-
     /// <summary>How many of the points that were looked at have no unique solution.</summary>
     public int Unsolved => Points.Count(point => !point.IsSolved);
 

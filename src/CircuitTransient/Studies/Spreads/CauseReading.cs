@@ -37,7 +37,7 @@ internal sealed class CauseReading
         if (Watched(figure) is not var (quantity, window)
             || quantity is Figure
             || times.Of(window) is not { } open
-            || curves.Of(quantity, from: Since(quantity, open)) is not { } total)
+            || curves.Of(quantity, from: CurveBuilder.GatheredFrom(quantity, open.From)) is not { } total)
         {
             return (null, []);
         }
@@ -50,7 +50,7 @@ internal sealed class CauseReading
         }
 
         var isBefore = extreme.Side == InstantSide.Before;
-        var from = Since(quantity, open);
+        var from = CurveBuilder.GatheredFrom(quantity, open.From);
         var causes = Enumerable.Range(0, solution.Causes.Length)
             .Select(c => new CauseValue(
                 solution.Causes[c].Name,
@@ -60,9 +60,6 @@ internal sealed class CauseReading
                 ?.ValueAt(solution, extreme.Time, isBefore))])
             : (reached, [.. causes]);
     }
-
-    private double Since(Measurand quantity, (double From, double To) window) =>
-        curves.IsAccumulated(quantity) ? window.From : 0;
 
     private (Measurand Quantity, Window Window)? Watched(StudyFigure figure)
     {

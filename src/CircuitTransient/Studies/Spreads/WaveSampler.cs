@@ -69,7 +69,7 @@ internal sealed class WaveSampler(PointBatch batch, int[] observed, double[][] t
     {
         Array.Fill(wave, double.NaN);
         var window = windows.Of(observation.Window);
-        var from = curves.IsAccumulated(observation.Quantity) ? window?.From ?? 0 : 0;
+        var from = CurveBuilder.GatheredFrom(observation.Quantity, window?.From ?? 0);
         if (window is not { } open || curves.Of(observation.Quantity, from: from) is not { } curve)
         {
             return;

@@ -19,6 +19,27 @@ public partial class ExploringTests(Browser browser)
     };
 
     [Theory]
+    [InlineData(1.5), InlineData(2), InlineData(0.5)]
+    public async Task Two_requirements_are_spoken_of_as_in_the_summary(double scale)
+    {
+        await using var opened = await browser.Open(SolvedPages.Page(Divider(1)));
+        await opened.Scale(0, scale);
+        Assert.Equal(
+            $"With the causes as scaled: {TerminalSummary.Verdict(Divider(scale))}",
+            await opened.Text("#verdict-words"));
+
+        static TransientResult Divider(double scale) => SolvedPages.Solve($"""
+            source Feed at a : {10 * scale} V
+            resistor R1 from a to b : 1 kΩ
+            resistor R2 from b to ground : 1 kΩ
+            observe voltage of b
+            require voltage of b at most 7 V
+            require voltage of a at most 18 V
+            until 1 ms
+            """, "divider.cause");
+    }
+
+    [Theory]
     [MemberData(nameof(Scales))]
     public async Task Sum_peak_and_verdict_follow_the_scaled_causes(double feed, double aid, double charge)
     {

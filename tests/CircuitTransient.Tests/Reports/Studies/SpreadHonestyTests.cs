@@ -38,7 +38,7 @@ public class SpreadHonestyTests
         const string doubt = "C1 leaves the range its value is good for";
         const string reach = "C1 is linear up to 10.50 V but reaches 11.00 V at the worst case; passes that "
             + "at 4 of the 8 corners solved: a class 2 ceramic loses capacitance with voltage, and then the "
-            + "true peak is higher than shown";
+            + "true voltage peak is higher than shown";
 
         Assert.True(spread.AllHold);
         Assert.Contains(doubt, SpreadWords.Verdict(spread));

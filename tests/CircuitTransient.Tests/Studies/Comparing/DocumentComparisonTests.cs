@@ -68,6 +68,28 @@ public sealed class DocumentComparisonTests
     }
 
     [Fact]
+    public void Requirements_between_nodes_keep_apart_when_their_bounds_change()
+    {
+        var before = SampleDocuments.Text(more: """
+            require voltage from a to b at most 11 V
+            require voltage from a to ground at most 12 V
+            """);
+        var after = SampleDocuments.Text(more: """
+            require voltage from a to ground at most 13 V
+            require voltage from a to b at most 14 V
+            """);
+        var changes = DocumentComparison.Compare(SampleDocuments.Of(before), SampleDocuments.Of(after))
+            .Requirements.Where(change => change.Differs);
+
+        Assert.Equal(
+            [
+                "voltage from a to b at most 11 V", "voltage from a to b at most 14 V",
+                "voltage from a to ground at most 12 V", "voltage from a to ground at most 13 V",
+            ],
+            changes.SelectMany(change => new[] { change.Before!.Statement, change.After!.Statement }));
+    }
+
+    [Fact]
     public void A_requirement_whose_bound_was_changed_is_still_the_same_one()
     {
         var comparison = DocumentComparison.Compare(

@@ -1,14 +1,14 @@
 namespace CircuitTransient.Tests.Studies.Draws;
 
-/// <summary>Rings of very many periods, most of which are bounded and not walked: the fast evaluation finds the
-/// peaks that the exact engine proves.</summary>
+/// <summary>Rings of very many periods, most of which are bounded and not walked: the fast evaluation finds
+/// the peaks that the exact engine proves.</summary>
 public sealed class DrawLongRingTests
 {
     private const double Reached = 1e-10;
 
     // Two rings, one twenty times as fast, some four hundred periods.
     private const string TwoRings = """
-        source    Feed at in : step of 100 V ±10 %
+        source    Feed at in : step of 100 V
         inductor  L1 from in to b : 10 mH ±10 %
         resistor  R1 from b to c : 20 mΩ ±50 %
         capacitor C1 from c to ground : 10 µF ±10 %
@@ -36,7 +36,7 @@ public sealed class DrawLongRingTests
 
     // A ring on a ramp, on a slow decay and under a late pulse.
     private const string OnTheWay = """
-        source    Feed from in to mid : ramp of 50 V ±10 % from 1 ms to 21 ms
+        source    Feed from in to mid : ramp of 50 V from 1 ms to 21 ms
         source    Late from mid to ground : 20 V + rectangular pulse of 3 V from 24 ms to 25 ms
         resistor  R1 from in to a : 0.5 Ω
         inductor  L1 from a to b : 1 mH ±10 %
