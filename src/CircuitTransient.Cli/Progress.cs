@@ -8,7 +8,7 @@ public sealed class Progress : IDisposable
 {
     private static readonly TimeSpan Patience = TimeSpan.FromMilliseconds(500);
 
-    private readonly string file;
+    private readonly Func<TimeSpan, string> words;
     private readonly TextWriter terminal;
     private readonly Stopwatch elapsed = Stopwatch.StartNew();
     private readonly Lock turn = new();
@@ -16,10 +16,18 @@ public sealed class Progress : IDisposable
     private bool isShown;
     private bool isOver;
 
-    /// <summary>Starts to wait.</summary>
+    /// <summary>Starts to wait for a file to be solved.</summary>
     public Progress(string file, Streams streams)
+        : this(streams, elapsed => $"solving {file}, {elapsed.TotalSeconds:F1} s")
     {
-        this.file = file;
+    }
+
+    /// <summary>Starts to wait.</summary>
+    /// <param name="streams">Where to write.</param>
+    /// <param name="words">What is going on, after so long.</param>
+    public Progress(Streams streams, Func<TimeSpan, string> words)
+    {
+        this.words = words;
         terminal = streams.Error;
         if (streams.ErrorIsTerminal)
         {
@@ -49,7 +57,7 @@ public sealed class Progress : IDisposable
             if (!isOver)
             {
                 isShown = true;
-                terminal.Write($"\r\e[Ksolving {file}, {elapsed.Elapsed.TotalSeconds:F1} s");
+                terminal.Write($"\r\e[K{words(elapsed.Elapsed)}");
             }
         }
     }

@@ -79,7 +79,7 @@ internal sealed class SizeCommand : Command
     {
         if (parsed.GetRequiredValue(file).Length > 1)
         {
-            streams.Complain("size takes one circuit file at a time");
+            streams.Complain("`size` studies one circuit at a time");
             return null;
         }
 

@@ -10,13 +10,6 @@ internal sealed class SolveCommand : Command
 {
     private readonly Argument<string[]> files = Words.Files();
 
-    private readonly Option<string> folder = new("--out")
-    {
-        Description = "Folder of the results; each circuit gets a folder of its own in it.",
-        HelpName = "DIR",
-        DefaultValueFactory = _ => "output",
-    };
-
     private readonly Option<string> at = new("--at")
     {
         Description = "Instants to give exact values at, such as \"1 ms, 2.5 ms\".",
@@ -44,21 +37,14 @@ internal sealed class SolveCommand : Command
         CustomParser = Words.WholeNumber(2, 1_000_000),
     };
 
-    private readonly Option<bool> json = new("--json") { Description = "Print the results document." };
-
     private readonly Option<bool> pdf = new("--pdf") { Description = "Write the report as PDF too." };
-
-    private readonly Option<bool> noFiles = new("--no-files") { Description = "Write no files." };
-
-    private readonly Option<bool> quiet = new("--quiet")
-    {
-        Description = "Print no summary; mistakes and warnings still go to stderr.",
-    };
 
     private readonly Option<bool> strict = new("--strict")
     {
         Description = "Count warnings and passed linear ranges as broken requirements.",
     };
+
+    private readonly StudyWords words = new();
 
     /// <summary>The command, writing to these streams.</summary>
     public SolveCommand(Streams streams, CancellationToken cancellation)
@@ -66,11 +52,12 @@ internal sealed class SolveCommand : Command
     {
         by.CompletionSources.Add([.. ByWords.All]);
         Add(files);
-        foreach (var option in (Option[])[folder, at, by, after, samples, json, pdf, noFiles, quiet, strict])
+        foreach (var option in (Option[])[at, by, after, samples, pdf, strict])
         {
             Add(option);
         }
 
+        words.AddTo(this);
         SetAction(parsed => Read(parsed, streams) is { } options
             ? new SolveRun(options, streams, cancellation).Run(parsed.GetRequiredValue(files))
             : ExitStatus.Mistake);
@@ -83,15 +70,16 @@ internal sealed class SolveCommand : Command
             ? new(InstantList.Empty, [])
             : InstantListParser.Parse(new SourceText(at.Name, text));
         streams.Report(instants.Diagnostics);
-        var words = parsed.GetValue(after);
-        var since = words is null ? null : AfterWords.Read(words, streams);
-        return instants.Succeeded && (words is null || since is not null)
+        var said = parsed.GetValue(after);
+        var since = said is null ? null : AfterWords.Read(said, streams);
+        var asked = words.Read(parsed);
+        return instants.Succeeded && (said is null || since is not null)
             ? new SolveOptions(
                 instants.Value,
                 parsed.GetRequiredValue(samples),
-                parsed.GetValue(noFiles) ? null : parsed.GetRequiredValue(folder),
-                parsed.GetValue(json),
-                parsed.GetValue(quiet),
+                asked.Folder,
+                asked.IsJson,
+                asked.IsQuiet,
                 parsed.GetValue(strict),
                 parsed.GetValue(pdf))
             { After = since, By = parsed.GetValue(by) }

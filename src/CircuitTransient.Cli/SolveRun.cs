@@ -12,7 +12,7 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
     private AnalysisOptions Analysis =>
         new([.. options.At.Instants.Select(instant => instant.Value)], options.SampleCount,
             options.After?.Event)
-        { By = options.By };
+        { By = options.By, IsForPage = options.Folder is not null };
 
     /// <summary>Solves the files in order.</summary>
     /// <returns>The worst of their exit statuses.</returns>

@@ -2,33 +2,21 @@ using System.Diagnostics;
 
 namespace CircuitTransient.Cli;
 
-/// <summary>A line on the terminal's stderr while a study takes longer than half a second: what it is
-/// doing, how much of it is done, how fast, and how long it will still take.</summary>
+/// <summary>The line of a study: what it is doing, how much of it is done, how fast, and how long it will
+/// still take.</summary>
 public sealed class StudyProgress : IDisposable
 {
-    private static readonly TimeSpan Patience = TimeSpan.FromMilliseconds(500);
-
-    private readonly TextWriter terminal;
     private readonly Stopwatch elapsed = Stopwatch.StartNew();
     private readonly Lock turn = new();
-    private readonly Timer? timer;
+    private readonly Progress line;
     private string stage = "starting";
     private long done;
     private long all;
     private long doneAtStart;
     private TimeSpan startOfStage;
-    private bool isShown;
-    private bool isOver;
 
     /// <summary>Starts to wait.</summary>
-    public StudyProgress(Streams streams)
-    {
-        terminal = streams.Error;
-        if (streams.ErrorIsTerminal)
-        {
-            timer = new Timer(_ => Show(), null, Patience, Patience);
-        }
-    }
+    public StudyProgress(Streams streams) => line = new Progress(streams, _ => Now());
 
     /// <summary>Says how far the work has come.</summary>
     /// <param name="stage">What is being done, in words.</param>
@@ -48,19 +36,7 @@ public sealed class StudyProgress : IDisposable
     }
 
     /// <inheritdoc/>
-    public void Dispose()
-    {
-        lock (turn)
-        {
-            timer?.Dispose();
-            if (isShown && !isOver)
-            {
-                terminal.Write("\r\e[K");
-            }
-
-            isOver = true;
-        }
-    }
+    public void Dispose() => line.Dispose();
 
     /// <summary>The line: <c>draws 120,000 of 1,000,000, 24,000 a second, 37 s left</c>.</summary>
     public static string Words(string stage, long done, long all, double rate)
@@ -79,17 +55,12 @@ public sealed class StudyProgress : IDisposable
             : $"{words}, {left / 3600:0.#} h left";
     }
 
-    private void Show()
+    private string Now()
     {
         lock (turn)
         {
-            if (!isOver)
-            {
-                isShown = true;
-                var time = (elapsed.Elapsed - startOfStage).TotalSeconds;
-                var rate = time > 0 ? (done - doneAtStart) / time : 0;
-                terminal.Write($"\r\e[K{Words(stage, done, all, rate)}");
-            }
+            var time = (elapsed.Elapsed - startOfStage).TotalSeconds;
+            return Words(stage, done, all, time > 0 ? (done - doneAtStart) / time : 0);
         }
     }
 }

@@ -2,7 +2,7 @@ using System.CommandLine;
 
 namespace CircuitTransient.Cli;
 
-/// <summary>The words that every study's command has.</summary>
+/// <summary>The words of every command that writes files.</summary>
 internal sealed class StudyWords
 {
     private readonly Option<string> folder = new("--out")
@@ -12,7 +12,10 @@ internal sealed class StudyWords
         DefaultValueFactory = _ => StudyOptions.UsualFolder,
     };
 
-    private readonly Option<bool> json = new("--json") { Description = "Print the study's document." };
+    private readonly Option<bool> json = new("--json")
+    {
+        Description = "Print the document in place of the summary.",
+    };
 
     private readonly Option<bool> noFiles = new("--no-files") { Description = "Write no files." };
 

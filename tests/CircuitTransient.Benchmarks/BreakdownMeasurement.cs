@@ -43,7 +43,7 @@ internal static class BreakdownMeasurement
     {
         var elapsed = Stopwatch.StartNew();
         var outcome = TransientAnalysis.Run(
-            source, AnalysisOptions.Default with { By = by }, _ => new(null, []));
+            source, AnalysisOptions.Default with { By = by, IsForPage = false }, _ => new(null, []));
         var result = outcome is Solved solved
             ? solved.Result
             : throw new InvalidOperationException($"{source.Name} was not solved");

@@ -36,7 +36,8 @@ internal static class SolveMeasurement
     private static double Analyse(SourceText source)
     {
         var elapsed = Stopwatch.StartNew();
-        var outcome = TransientAnalysis.Run(source, AnalysisOptions.Default, _ => new(null, []));
+        var outcome = TransientAnalysis.Run(
+            source, AnalysisOptions.Default with { IsForPage = false }, _ => new(null, []));
         return outcome is Solved
             ? elapsed.Elapsed.TotalMilliseconds
             : throw new InvalidOperationException($"{source.Name} was not solved");

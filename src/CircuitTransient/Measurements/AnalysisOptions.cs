@@ -7,11 +7,15 @@ namespace CircuitTransient.Measurements;
 /// <param name="SampleCount">Waveform samples aimed at.</param>
 /// <param name="After">The event since which contributions are broken down a second time; null for the last
 /// before each extreme, without showing it in the results document.</param>
-public sealed record AnalysisOptions(ImmutableArray<double> At, int SampleCount = 2000, AfterEvent? After =
-    null)
+public sealed record AnalysisOptions(
+    ImmutableArray<double> At, int SampleCount = 2000, AfterEvent? After = null)
 {
     /// <summary>What causes are told apart.</summary>
     public Breakdown By { get; init; } = Breakdown.Origin;
+
+    /// <summary>Whether waveforms are taken apart in every way that the reader of a page may
+    /// choose.</summary>
+    public bool IsForPage { get; init; } = true;
 
     /// <summary>Nothing asked for.</summary>
     public static AnalysisOptions Default { get; } = new([]);

@@ -41,18 +41,12 @@ public sealed record TransientResult(
     ImmutableArray<Caution> Cautions)
 {
     /// <summary>The waveforms, taken apart by causes, of what is judged and of what is quadratic, so that a
-    /// reader can scale the causes.</summary>
-    public ImmutableArray<FollowedWave> Followed => FollowedWaves.Value;
+    /// reader can scale the causes; none where no page was asked for.</summary>
+    public ImmutableArray<FollowedWave> Followed { get; init; } = [];
 
-    /// <summary>Those waveforms, evaluated when somebody looks: only a page that scales causes
-    /// does.</summary>
-    internal Lazy<ImmutableArray<FollowedWave>> FollowedWaves { get; init; } = new([]);
-
-    /// <summary>The observed waveforms broken down otherwise, for a reader who chooses.</summary>
-    public ImmutableArray<OtherBreakdown> OtherBreakdowns => OtherWaves.Value;
-
-    /// <summary>Those waveforms, evaluated when somebody looks.</summary>
-    internal Lazy<ImmutableArray<OtherBreakdown>> OtherWaves { get; init; } = new([]);
+    /// <summary>The observed waveforms broken down otherwise, for a reader who chooses; none where no page
+    /// was asked for.</summary>
+    public ImmutableArray<OtherBreakdown> OtherBreakdowns { get; init; } = [];
 
     /// <summary>What peaks were asked to be broken down by.</summary>
     public Breakdown By { get; init; }

@@ -30,7 +30,8 @@ internal sealed class SolvedText
 
     private static SolvedText With(string text, AnalysisOptions options)
     {
-        var outcome = TransientAnalysis.Run(new SourceText("check.cause", text), options, NoFile);
+        var outcome = TransientAnalysis.Run(
+            new SourceText("check.cause", text), options with { IsForPage = false }, NoFile);
         var solved = outcome switch
         {
             Solved s => s.Result,

@@ -130,12 +130,13 @@ internal sealed class CornerJudge(SizeProblem problem, bool withSpread, Cancella
         var corners = WorstCorners(chosen.Values).Corners.Take(MostConfirmed).ToArray();
         var confirmed = new ConfirmedCorner[corners.Length];
         var options = new ParallelOptions { CancellationToken = cancellation };
+        var withoutPage = AnalysisOptions.Default with { IsForPage = false };
         Parallel.For(0, corners.Length, options, i =>
         {
             var solved = problem.CircuitAt(chosen.Values, corners[i])
                 .Then(c => TransientSolver.Solve(c, CauseList.FromStart(c), cancellation));
             var result = solved.Succeeded
-                ? ResultBuilder.Measure(solved.Value, [], AnalysisOptions.Default, cancellation)
+                ? ResultBuilder.Measure(solved.Value, [], withoutPage, cancellation)
                 : null;
             confirmed[i] = new(corners[i], result is { AllHold: true }, result is { ChecksHold: true });
         });
