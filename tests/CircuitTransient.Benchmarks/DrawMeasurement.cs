@@ -75,6 +75,7 @@ internal static class DrawMeasurement
     {
         var tallies = new Tally[threads];
         var elapsed = Stopwatch.StartNew();
+        var busy = Environment.CpuUsage.TotalTime;
         var running = Enumerable.Range(0, threads)
             .Select(t => new Thread(() => tallies[t] = Run(kernel, varied, figures, t))).ToArray();
         foreach (var thread in running)
@@ -90,6 +91,7 @@ internal static class DrawMeasurement
         var draws = tallies.Sum(t => t.Draws);
         Console.WriteLine(
             $"  threads: {threads}, {draws / elapsed.Elapsed.TotalSeconds:F0} draws a second, "
+            + $"{draws / (Environment.CpuUsage.TotalTime - busy).TotalSeconds:F0} a second of one core, "
             + $"{tallies.Sum(t => t.Bytes) / (double)draws:F2} bytes allocated a draw, "
             + $"{tallies.Sum(t => t.Doubtful) / (double)draws:P3} doubtful");
     }

@@ -12,9 +12,8 @@ public sealed record DoubleExponential(double Tail, double Front, double Factor)
 
     /// <summary>Solves for the time constants, or gives null where no double exponential has that
     /// ratio.</summary>
-    /// <param name="front">Front time in seconds: (t90 − t30)/0.6 of a voltage (IEC 60060-1), 1.25 (t90 −
-    /// t10) of a
-    /// current (IEC 62475).</param>
+    /// <param name="front">Front time in seconds: (t90 − t30)/0.6 of a voltage (IEC 60060-1, seen quoted),
+    /// 1.25 (t90 − t10) of a current (IEC 62475, from memory).</param>
     /// <param name="halfValue">Time from the virtual origin to half the crest on the tail, in
     /// seconds.</param>
     /// <param name="isVoltage">Whether the wave is a voltage.</param>

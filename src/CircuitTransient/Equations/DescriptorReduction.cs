@@ -85,7 +85,8 @@ internal sealed class DescriptorReduction
     }
 
     /// <summary>The unknown to solve an algebraic row for: one without a derivative where there is one, of
-    /// reasonable weight in the row, and in as few other rows as possible (H. M. Markowitz, 1957).</summary>
+    /// reasonable weight in the row, and in as few other rows as possible (H. M. Markowitz, 1957, from
+    /// memory).</summary>
     private int PickUnknown(EquationRow row)
     {
         const double reasonable = 0.01; // of the heaviest in the row: keeps growth small and leaves a choice

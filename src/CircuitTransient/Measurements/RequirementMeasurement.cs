@@ -39,8 +39,7 @@ internal sealed class RequirementMeasurement(
             return NotJudged(requirement);
         }
 
-        var from = CurveBuilder.GatheredFrom(requirement.Quantity, window.From);
-        if (curves.Of(requirement.Quantity, from: from) is not { } curve)
+        if (CurveOf(requirement.Quantity, window) is not { } curve)
         {
             return NotJudged(requirement);
         }
@@ -91,7 +90,7 @@ internal sealed class RequirementMeasurement(
         SettlesTo settles)
     {
         if (times.Of(new Window(settles.By, requirement.Window.To)) is not { } window
-            || curves.Of(requirement.Quantity) is not { } curve)
+            || CurveOf(requirement.Quantity, window) is not { } curve)
         {
             return NotJudged(requirement);
         }
@@ -102,6 +101,17 @@ internal sealed class RequirementMeasurement(
         var worst = high.Value - settles.Target > settles.Target - low.Value ? high : low;
         var margin = band - Math.Abs(worst.Value - settles.Target);
         return new Verdict(margin >= 0, new TimedValue(worst.Value, worst.Time), margin);
+    }
+
+    /// <summary>A quantity's curve, good within a window at least: outside it the equations may leave open
+    /// what is judged. An energy gathers from the start, so it must be known throughout.</summary>
+    private Curve? CurveOf(Measurand quantity, (double From, double To) window)
+    {
+        var from = CurveBuilder.GatheredFrom(quantity, window.From);
+        return curves.Of(quantity, from: from)
+            ?? (quantity is EnergyIn && curves.IsAccumulated(quantity)
+                ? null
+                : curves.Within(window).Of(quantity, from: from));
     }
 
     private Verdict NotJudged(Requirement requirement) =>

@@ -57,7 +57,8 @@ public sealed class ResultBuilder
         var waves = Sample(observed, requirements);
         var intervals = solution.Intervals.Select(new IntervalMeasurement(solution, energy).Measure)
             .ToImmutableArray();
-        var events = solution.Occurrences.Select(new EventMeasurement(curves).Measure).ToImmutableArray();
+        var seen = new EventMeasurement(curves, cancellation);
+        var events = solution.Occurrences.Select(seen.Measure).ToImmutableArray();
         var followed = options.IsForPage ? FollowedWaves.Of(curves, times, waves.Times) : [];
         var otherwise = options.IsForPage ? OtherBreakdowns.Of(solution, waves, cancellation) : [];
         var (checks, notJudged) = checking.GetAwaiter().GetResult();

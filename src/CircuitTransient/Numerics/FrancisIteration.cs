@@ -1,8 +1,9 @@
 namespace CircuitTransient.Numerics;
 
 /// <summary>The implicit double-shift QR iteration from Hessenberg to real Schur form.</summary>
-/// <remarks>J. G. F. Francis (1961); shifts, deflation and exceptional steps in the form of LAPACK's dlahqr,
-/// with the deflation test of M. Ahues and F. Tisseur (LAPACK Working Note 122, 1997); from memory.</remarks>
+/// <remarks>J. G. F. Francis (1961, from memory); shifts, deflation and exceptional steps in the form of
+/// LAPACK's dlahqr, with the deflation test of M. Ahues and F. Tisseur (LAPACK Working Note 122, 1997), both
+/// from memory.</remarks>
 public static class FrancisIteration
 {
     private const double UnitRoundoff = 2.465190328815662e-32; // 2⁻¹⁰⁵

@@ -8,7 +8,8 @@ namespace CircuitTransient.Studies;
 /// <param name="Unit">Its SI unit; empty for a fraction.</param>
 /// <param name="Kind">What it is.</param>
 /// <param name="Index">Index of the observation, requirement or part.</param>
-/// <param name="Rating">Index of the part's rating; −1 for all else.</param>
+/// <param name="Rating">Index of the part's rating; −1 for all else, and for the used fraction of what a part
+/// is linear up to.</param>
 public sealed record StudyFigure(
     string Name, string Unit, StudyFigureKind Kind, int Index, int Rating = -1);
 
@@ -71,6 +72,14 @@ public static class StudyFigures
 
         return figures.ToImmutable();
     }
+
+    /// <summary>Of every part that states what it is linear up to: the used fraction of that.</summary>
+    public static ImmutableArray<StudyFigure> LinearRanges(Circuit circuit) =>
+    [
+        .. Enumerable.Range(0, circuit.Parts.Length).Where(p => circuit.Parts[p].LinearUpTo is not null)
+            .Select(p => new StudyFigure(
+                $"linear range of {circuit.Parts[p].Name}", "", StudyFigureKind.RatingUsed, p)),
+    ];
 
     private static string Words(RatingKind kind) => kind switch
     {

@@ -121,6 +121,13 @@ public static class StudySolver
                 parts.Add(figure.Index, part = stresses.Measure(figure.Index));
             }
 
+            if (figure.Rating < 0)
+            {
+                var linear = part.LinearUpTo!;
+                return (linear.Reached / linear.Declared,
+                    linear.Unit == "V" ? part.PeakVoltage?.Time : part.PeakCurrent?.Time);
+            }
+
             var time = solution.Circuit.Parts[figure.Index].Ratings[figure.Rating].Kind switch
             {
                 RatingKind.PeakVoltage => part.PeakVoltage?.Time,

@@ -26,6 +26,25 @@ public sealed class WindowTests
         Assert.Equal([false, true, true], solved.Result.Requirements.Select(r => r.Holds));
     }
 
+    // Two ideal contacts share 10 A in no known way until the first opens at 1 ms.
+    [Fact]
+    public void What_is_open_outside_the_window_does_not_break_a_requirement()
+    {
+        var solved = SolvedText.Of("""
+            source S at a : 10 V
+            resistor R from a to b : 1 Ω
+            switch K1 from b to ground : closed, opens at 1 ms
+            switch K2 from b to ground : closed, opens at 2 ms
+            require current through K2 at most 20 A from 1.5 ms
+            require I²t through K2 at most 0.06 A²s from 1.5 ms
+            until 10 ms
+            """);
+
+        Assert.All(solved.Result.Requirements, r => Assert.True(r.Holds, r.Statement));
+        Assert.Equal(10, solved.Result.Requirements[0].Worst.Value!.Value, 12);
+        Close.To(0.05, solved.Result.Requirements[1].Worst.Value!.Value);
+    }
+
     [Theory]
     [InlineData("10 V", "at least -100 A")]
     [InlineData("10 V", "at most 100 A")]

@@ -23,7 +23,7 @@ internal static class SampleMatrices
     }
 
     /// <summary>The Frank matrix: a_ij = n + 1 − max(i, j) for j ≥ i − 1, else 0 (W. L. Frank
-    /// 1958).</summary>
+    /// 1958, from memory).</summary>
     public static DoubleDoubleMatrix Frank(int n)
     {
         DoubleDoubleMatrix result = new(n, n);

@@ -6,8 +6,8 @@ namespace CircuitTransient.Tests.Numerics;
 public class TriangularExponentialTests
 {
     // C. B. Moler, C. F. Van Loan, "Nineteen dubious ways to compute the exponential of a matrix" (1978), the
-    // matrix of eigenvalues −1 and −17, and two of the four tests of R. C. Ward (1977); matrices from memory,
-    // results computed with 40 digits by a second method.
+    // matrix of eigenvalues −1 and −17, and two of the four tests of R. C. Ward (1977): papers and matrices
+    // from memory, results computed with 80 digits by mpmath 1.3.0.
     [Fact]
     public void The_exponential_of_moler_and_van_loan_is_as_in_print() => AssertExponential(
         new double[,] { { -49, 24 }, { -64, 31 } },

@@ -67,9 +67,9 @@ public sealed class CapacitorBankTests
             until 1.5 ms
             """);
         Close.To(1653.68546398491, solved.Max(Inrush));
-        Close.To(486.792031755277e-6, solved[Inrush].Max.Time, Close.Instant);
+        Close.To(486.792031755276e-6, solved[Inrush].Max.Time, Close.Instant);
         Close.To(1.96036309542591 * 10181.7123641687, solved.Max("voltage of c"));
-        Close.To(968.957761836317e-6, solved["voltage of c"].Max.Time, Close.Instant);
+        Close.To(968.957761836315e-6, solved["voltage of c"].Max.Time, Close.Instant);
         Assert.True(solved.Max(Inrush) < 1666.71784301); // the rule √2 √(Isc I)
         Close.To(509.101250091381, solved.Poles()[0].Im / double.Tau);
     }

@@ -1,6 +1,10 @@
 namespace CircuitTransient.Tests.OutsideChecks;
 
 /// <summary>Asserts that figures agree as far as their source says.</summary>
+/// <remarks>Beside every figure stands where it is from, and how that was seen: <c>V1</c>, in the body's own
+/// or a primary text; <c>V2</c>, where somebody quotes it; "from memory", not opened; <c>C</c>, mathematics,
+/// computed apart from this program by closed forms or from state equations, with 40 digits in mpmath
+/// 1.3.0.</remarks>
 internal static class Close
 {
     /// <summary>What every computed value must keep.</summary>

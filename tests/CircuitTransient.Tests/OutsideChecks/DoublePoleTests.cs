@@ -2,7 +2,7 @@ namespace CircuitTransient.Tests.OutsideChecks;
 
 /// <summary>The series circuit of 200 Ω, 1 mH and 100 nF at 10 V: no eigenvectors at its double
 /// pole.</summary>
-/// <remarks>Mathematics, computed (C) with 40 digits; the peak is V/(L·a·e).</remarks>
+/// <remarks>Mathematics, computed (C); the peak is V/(L·a·e).</remarks>
 public sealed class DoublePoleTests
 {
     [Fact]

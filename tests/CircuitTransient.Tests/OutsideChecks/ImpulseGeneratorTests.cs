@@ -3,7 +3,7 @@ namespace CircuitTransient.Tests.OutsideChecks;
 /// <summary>The one-stage impulse generator of the textbooks, and the discharges of people and
 /// gauges.</summary>
 /// <remarks>Eight stages of 0.16 µF at 120 kV on 1000 pF: from memory, the question's text quoted (V2), so
-/// are the rules for its resistors; what the circuit gives is computed (C) with 40 digits.</remarks>
+/// are the rules for its resistors; what the circuit gives is computed (C).</remarks>
 public sealed class ImpulseGeneratorTests
 {
     [Theory]

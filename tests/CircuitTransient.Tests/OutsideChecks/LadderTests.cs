@@ -2,7 +2,7 @@ namespace CircuitTransient.Tests.OutsideChecks;
 
 /// <summary>Long ladders of equal sections against the Bessel functions of the infinite ones.</summary>
 /// <remarks>Gradshteyn and Ryzhik, 8th ed., transforms 103–105 (V1): s-domain forms of J_ν; the values agree
-/// with the tables of AMS 55, chapter 9 (V1: contents), and were computed (C) with 40 digits.</remarks>
+/// with the tables of AMS 55, chapter 9 (V1: contents), and were computed (C).</remarks>
 public sealed class LadderTests
 {
     /// <summary>J0 … J4 at 2ωt.</summary>

@@ -1,7 +1,7 @@
 namespace CircuitTransient.Tests.OutsideChecks;
 
 /// <summary>The step of 1/(s² + 2ζs + 1), as a series circuit of 1 H, 1 F and 2ζ Ω.</summary>
-/// <remarks>All values are mathematics, computed (C) with 40 digits.</remarks>
+/// <remarks>All values are mathematics, computed (C).</remarks>
 public sealed class SecondOrderStepTests
 {
     [Theory]

@@ -9,7 +9,7 @@ public sealed class SizingTests
 {
     // Least peak of an RC snubber across an opening switch, after the question of W. McMurray, "Optimum
     // snubbers for power semiconductors", IEEE Trans. Ind. Appl. IA-8 (1972), from memory; its chart was not
-    // seen. The values are computed with 40 digits: the damping ratio that makes the peak least for an
+    // seen. The values are computed (C): the damping ratio that makes the peak least for an
     // initial current factor χ = (I/E)·√(L/C), and that peak over E.
     [Theory]
     [InlineData(0.25, 2.0555, 1.05390)]
@@ -37,7 +37,7 @@ public sealed class SizingTests
 
     // Textbook example: M. H. Rashid, Power Electronics (from memory): L = 50 µH, 220 V, 20 A, R = 6.6 Ω,
     // limit 1.5 times the supply: C = 0.735 µF. The network with C = 0.734618916437 µF really peaks at
-    // 330.103726958 V (computed with 40 digits).
+    // 330.103726958 V (C).
     [Fact]
     public void The_textbook_snubber_is_the_smallest_capacitor_for_its_peak()
     {
@@ -59,7 +59,7 @@ public sealed class SizingTests
 
     // Parallel-damped filter, n = 4: the damping resistor that R. W. Erickson, "Optimal single resistor
     // damping of input filters", makes √((2+n)(4+3n)/(2n²(4+n))) of √(L/C) (formula from memory, confirmed by
-    // search); with it a load step of 1 A sags by 0.480615728298 V (computed with 40 digits). It is the
+    // search); with it a load step of 1 A sags by 0.480615728298 V (C). It is the
     // largest resistor that keeps to that sag.
     [Fact]
     public void The_damping_resistor_is_the_largest_that_keeps_the_sag()

@@ -2,7 +2,7 @@ namespace CircuitTransient.Tests.OutsideChecks;
 
 /// <summary>Standard surges written as sums of exponentials, and as networks that make them.</summary>
 /// <remarks>Wave constants: IEEE C62.41 and a high-voltage textbook (Kuffel, Zaengl, Kuffel), from memory;
-/// what they give is computed (C) with 40 digits. Front and tail by IEC 60060-1, quoted (V2).</remarks>
+/// what they give is computed (C). Front and tail by IEC 60060-1, quoted (V2).</remarks>
 public sealed class SurgeWaveTests
 {
     private const string Voltage = "voltage of a";

@@ -6,6 +6,27 @@ namespace CircuitTransient.Tests.Solutions;
 public sealed class SettledStartTests
 {
     // A node between 10 V over 1 kΩ and -4 V over 3 kΩ stands at (10·3 - 4·1)/4 = 7.5 V - 1 V.
+    // A divider of 1 kΩ and 3 kΩ holds 7.5 V; the step at t = 0 is not yet there just before it. The sine's
+    // phasor over R and C: 10 V·sin(60° − atan ωRC)/√(1 + (ωRC)²).
+    [Theory]
+    [InlineData("10 V + step of 4 V at 0 s", "resistor Rb at b : 3 kΩ", 7.5)]
+    [InlineData("sine of 10 V at 50 Hz phase 60°", "capacitor Cb at b : 2 µF", 3.9566418081)]
+    public void A_switch_that_acts_at_the_start_saw_the_settled_state(string wave, string part, double volts)
+    {
+        var switching = SolvedText.Of($"""
+            source S at a : {wave}
+            resistor R from a to b : 1 kΩ
+            {part}
+            switch K from b to c : open, closes at 0 s
+            resistor Rc from c to ground : 1 kΩ
+            start settled
+            until 20 ms
+            """).Result.Events.Single();
+
+        Close.Within(1e-9, volts, switching.VoltageBefore!.Value);
+        Assert.Equal(0, switching.CurrentBefore);
+    }
+
     [Fact]
     public void The_initial_charge_is_split_among_the_sources_that_made_it()
     {

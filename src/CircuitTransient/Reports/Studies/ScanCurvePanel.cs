@@ -12,6 +12,8 @@ internal sealed class ScanCurvePanel
 {
     private const double Height = 190;
 
+    private static readonly double[] asides = [6, 40, 74, 108]; // of the marked place's words
+
     private readonly ScanAxis axis;
     private readonly FigureScan finding;
     private readonly ReachedLine? line;
@@ -73,33 +75,21 @@ internal sealed class ScanCurvePanel
 
     private IEnumerable<Shape> Shapes()
     {
-        foreach (var shape in frame.Shapes(name))
-        {
-            yield return shape;
-        }
-
-        foreach (var shape in BrokenStretches().Concat(AsWritten()))
-        {
-            yield return shape;
-        }
-
-        if (limit is { } value)
-        {
-            foreach (var shape in frame.Limit(value, limitWords, isLeft: IsWorstRight))
-            {
-                yield return shape;
-            }
-        }
-
-        foreach (var points in PlotTrace.Lines(samples, scale.Even, frame.Level))
-        {
-            yield return new PolylineShape(points, new Stroke(PlotStyle.Accent, 2));
-        }
-
-        foreach (var shape in Marks())
-        {
-            yield return shape;
-        }
+        Shape[] lines =
+            [
+                .. AsWritten is { } x
+                    ? [new LineShape(x, frame.Top, x, frame.Bottom, new Stroke(PlotStyle.Axis, 1, [2, 3]))]
+                    : Array.Empty<Shape>(),
+                .. limit is { } value ? frame.Limit(value) : [],
+                .. PlotTrace.Lines(samples, scale.Even, frame.Level)
+                    .Select(points => new PolylineShape(points, new Stroke(PlotStyle.Accent, 2))),
+                .. finding.Breaks.Select(found => scale.Place(found.At[0])).Select(x =>
+                    new LineShape(x, frame.Top, x, frame.Bottom, new Stroke(PlotStyle.Limit, 1))),
+                .. Disc is { } disc ? [disc] : Array.Empty<Shape>(),
+            ];
+        var room = frame.Room();
+        room.Avoid(lines);
+        return [.. frame.Shapes(name), .. BrokenStretches(), .. lines, .. Labels(room)];
     }
 
     /// <summary>The place that is marked: the worst of what is judged, the extreme of what is
@@ -107,8 +97,13 @@ internal sealed class ScanCurvePanel
     private ScanPlace? Marked => finding.Worst
         ?? (finding.Figure.Kind == StudyFigureKind.Minimum ? finding.Least : finding.Greatest);
 
-    private bool IsWorstRight =>
-        Marked is { } marked && scale.Place(marked.At[0]) > (ScanFrame.Left + ScanFrame.Right) / 2;
+    private DiscShape? Disc => Marked is not { } marked ? null : new DiscShape(
+        scale.Place(marked.At[0]), frame.Level.Place(Shown(marked.Value)), 4, PlotStyle.Ink);
+
+    /// <summary>Where the value as written stands; null where that is outside.</summary>
+    private double? AsWritten => axis.Varied.Nominal < axis.From || axis.Varied.Nominal > axis.To
+        ? null
+        : scale.Place(axis.Varied.Nominal);
 
     /// <summary>A margin as the value that was reached, a rating's use in per cent.</summary>
     private double Shown(double value) => line is not null ? line.Of(value)
@@ -119,9 +114,12 @@ internal sealed class ScanCurvePanel
     {
         var known = points.Select((p, i) => new SlopedSample(
             axis.Values[i], p.Found?.Values[index] ?? double.NaN,
-            p.Slopes.IsEmpty ? double.NaN : p.Slopes[index])).ToArray();
+            p.Slopes.IsEmpty ? double.NaN : p.Slopes[index]))
+            .Concat(finding.Looks.Where(look => look.HasValue)).OrderBy(s => s.X).ToArray();
         var between = known.Zip(known.Skip(1)).SelectMany(pair => Between(pair.First, pair.Second));
+        var edge = finding.Figure.Kind == StudyFigureKind.RatingUsed ? 1 : 0;
         var shown = known.Concat(between).Select(s => (s.X, Y: Shown(s.Y)))
+            .Concat(finding.Breaks.Where(b => !b.IsJump).Select(b => (X: b.At[0], Y: Shown(edge))))
             .Concat(new[] { finding.Greatest, finding.Least }.OfType<ScanPlace>()
                 .Select(p => (X: p.At[0], Y: Shown(p.Value))))
             .Concat(finding.Jumps.SelectMany(j => new[]
@@ -133,13 +131,17 @@ internal sealed class ScanCurvePanel
         return [.. shown.OrderBy(s => s.X).Select(s => new PlotPoint(scale.Map(s.X), s.Y))];
     }
 
-    /// <summary>The cubic between two points with slopes, where they are far enough apart to show.</summary>
+    /// <summary>The cubic between two points with slopes, where they are far enough apart to show and it does
+    /// not swing where both slopes lead straight from one to the other.</summary>
     private IEnumerable<SlopedSample> Between(SlopedSample left, SlopedSample right)
     {
         const double apart = 6; // points of the screen
         var width = scale.Place(right.X) - scale.Place(left.X);
         var isJumped = finding.Jumps.Any(j => j.At >= left.X && j.At <= right.X);
-        if (width < apart || isJumped || !left.HasSlope || !right.HasSlope
+        var mean = (right.Y - left.Y) / (right.X - left.X);
+        var isStraight = left.Slope * mean >= 0 && right.Slope * mean >= 0
+            && Math.Max(Math.Abs(left.Slope), Math.Abs(right.Slope)) > 3 * Math.Abs(mean);
+        if (width < apart || isJumped || isStraight || !left.HasSlope || !right.HasSlope
             || !left.HasValue || !right.HasValue)
         {
             yield break;
@@ -176,46 +178,48 @@ internal sealed class ScanCurvePanel
         }
     }
 
-    private IEnumerable<Shape> AsWritten()
+    private IEnumerable<Shape> Labels(LabelRoom room)
     {
-        var nominal = axis.Varied.Nominal;
-        if (nominal < axis.From || nominal > axis.To)
+        if (Marked is { } worst && Disc is { X: var x, Y: var y })
         {
-            yield break;
+            var words = $"{EngineeringNumber.Format(Shown(worst.Value), unit)} at {axis.Say(worst.At[0])}";
+            var label = new TextShape(
+                0, 0, words, ScanFrame.Small, PlotStyle.Ink, IsStrong: true, HasHalo: true);
+            double[] heights = [y - 9, y + 18, y - 24, y + 33, y - 40, y + 49, y - 56, y - 72];
+            yield return room.Place(
+                asides.SelectMany(apart => Beside(x, heights, label, apart)));
         }
 
-        var x = scale.Place(nominal);
-        yield return new LineShape(x, frame.Top, x, frame.Bottom, new Stroke(PlotStyle.Axis, 1, [2, 3]));
-        var isMarkedLow = Marked is { } marked
-            && frame.Level.Place(Shown(marked.Value)) > frame.Top + (Height / 2);
-        yield return new TextShape(
-            x + 4, isMarkedLow ? frame.Top + 13 : frame.Bottom - 22, "as written", ScanFrame.Small,
-            PlotStyle.Grey, HasHalo: true);
-    }
-
-    private IEnumerable<Shape> Marks()
-    {
         foreach (var found in finding.Breaks)
         {
-            var x = scale.Place(found.At[0]);
-            yield return new LineShape(x, frame.Top, x, frame.Bottom, new Stroke(PlotStyle.Limit, 1));
-            yield return Label(x, frame.Bottom - 6, axis.Say(found.At[0]), PlotStyle.Limit);
+            yield return room.Place(Beside(
+                scale.Place(found.At[0]), Heights(frame.Bottom - 6, -16),
+                new TextShape(
+                    0, 0, axis.Say(found.At[0]), ScanFrame.Small, PlotStyle.Limit, HasHalo: true)));
         }
 
-        if (Marked is { } worst)
+        if (limit is { } value)
         {
-            var (x, y) = (scale.Place(worst.At[0]), frame.Level.Place(Shown(worst.Value)));
-            var words = $"{EngineeringNumber.Format(Shown(worst.Value), unit)} at {axis.Say(worst.At[0])}";
-            yield return new DiscShape(x, y, 4, PlotStyle.Ink);
-            yield return Label(x, y > frame.Top + 26 ? y - 9 : y + 18, words, PlotStyle.Ink, isStrong: true);
+            yield return room.Place(frame.LimitWords(value, limitWords));
+        }
+
+        if (AsWritten is { } written)
+        {
+            yield return room.Place(Beside(
+                written, [frame.Bottom - 22, frame.Top + 13, .. Heights(frame.Bottom - 6, -16)],
+                new TextShape(0, 0, "as written", ScanFrame.Small, PlotStyle.Grey, HasHalo: true)));
         }
     }
 
-    private TextShape Label(double x, double y, string words, string ink, bool isStrong = false)
-    {
-        var width = frame.Fonts.Width(words, ScanFrame.Small, isStrong);
-        return x + width + 8 > ScanFrame.Right
-            ? new TextShape(x - 6, y, words, ScanFrame.Small, ink, TextAnchor.End, isStrong, HasHalo: true)
-            : new TextShape(x + 6, y, words, ScanFrame.Small, ink, IsStrong: isStrong, HasHalo: true);
-    }
+    private static IEnumerable<double> Heights(double first, double step) =>
+        Enumerable.Range(0, (int)((Height - 20) / Math.Abs(step))).Select(k => first + (k * step));
+
+    /// <summary>Places to the right and to the left of something, at several heights.</summary>
+    private static IEnumerable<TextShape> Beside(
+        double x, IEnumerable<double> heights, TextShape label, double apart = 6) =>
+        heights.SelectMany(y => new[]
+        {
+            label with { X = x + apart, Y = y },
+            label with { X = x - apart, Y = y, Anchor = TextAnchor.End },
+        });
 }

@@ -32,13 +32,20 @@ internal static class ScanFamilyPanel
             fonts, top + 26, Height, [.. ticks.Marks.Select(m => (time.Place(m.Value), m.Label))],
             family.Event is null ? $"time ({ticks.Unit})" : $"{ticks.Unit} after {family.Event}",
             new PlotScale(least, greatest, top + 26 + Height, top + 26), family.Unit);
-        Shape[] shapes =
+        Shape[] drawnLines =
             [
-                .. frame.Shapes($"{family.Name}, with {ScanWords.Range(result)}"),
-                .. limits.SelectMany(l => frame.Limit(l.Value, l.Words)),
+                .. limits.SelectMany(l => frame.Limit(l.Value)),
                 .. lines.OrderBy(l => l.Member.Role).SelectMany((l, i) =>
                     PlotTrace.Lines(l.Samples, time, frame.Level)
                         .Select(line => new PolylineShape(line, StrokeOf(l.Member.Role, i, lines.Length)))),
+            ];
+        var room = frame.Room();
+        room.Avoid(drawnLines);
+        Shape[] shapes =
+            [
+                .. frame.Shapes($"{family.Name}, with {ScanWords.Range(result)}"),
+                .. drawnLines,
+                .. limits.Select(l => room.Place(frame.LimitWords(l.Value, l.Words))),
                 .. Names(result, frame, lines),
             ];
         return (shapes.OrderBy(s => s is TextShape), Height + 26 + 40);

@@ -19,6 +19,8 @@ internal sealed record ScanFrame(
     /// <summary>Height of the letters in panels.</summary>
     public const double Small = 11.5;
 
+    private static readonly double[] between = [0.75, 0.25, 0.5]; // for the words of a limit
+
     /// <summary>Lower edge.</summary>
     public double Bottom => Top + Height;
 
@@ -76,20 +78,30 @@ internal sealed record ScanFrame(
         return (least - (0.12 * room), greatest + (0.14 * room));
     }
 
-    /// <summary>The line of a limit with its words at one end.</summary>
-    public IEnumerable<Shape> Limit(double value, string words, bool isLeft = false)
+    /// <summary>The line of a limit; none where that is outside.</summary>
+    public IEnumerable<Shape> Limit(double value) => IsInside(value)
+        ? [new LineShape(
+            Left, Level.Place(value), Right, Level.Place(value), new Stroke(PlotStyle.Limit, 1.2, [8, 4]))]
+        : [];
+
+    /// <summary>Where the words of a limit may stand: above its line or below, at its ends or
+    /// between.</summary>
+    public IEnumerable<TextShape> LimitWords(double value, string words)
     {
         var y = Level.Place(value);
-        var (x, anchor) = isLeft ? (Left + 6, TextAnchor.Start) : (Right - 6, TextAnchor.End);
-        if (y < Top || y > Bottom)
-        {
-            yield return new TextShape(
-                x, y < Top ? Top + 14 : Bottom - 6, $"{words}: {(y < Top ? "above" : "below")} this panel",
-                Small, PlotStyle.Limit, anchor, HasHalo: true);
-            yield break;
-        }
-
-        yield return new LineShape(Left, y, Right, y, new Stroke(PlotStyle.Limit, 1.2, [8, 4]));
-        yield return new TextShape(x, y - 5, words, Small, PlotStyle.Limit, anchor, HasHalo: true);
+        double[] heights = IsInside(value) ? [y - 5, y + 14] : y < Top ? [Top + 14] : [Bottom - 6];
+        var said = IsInside(value) ? words : $"{words}: {(y < Top ? "above" : "below")} this panel";
+        (double X, TextAnchor Anchor)[] places =
+        [
+            (Right - 6, TextAnchor.End), (Left + 6, TextAnchor.Start),
+            .. between.Select(part => (Left + (part * (Right - Left)), TextAnchor.Middle)),
+        ];
+        return heights.SelectMany(_ => places, (height, place) => new TextShape(
+            place.X, height, said, Small, PlotStyle.Limit, place.Anchor, HasHalo: true));
     }
+
+    /// <summary>Room for labels within the frame.</summary>
+    public LabelRoom Room() => new(Fonts, Left, Top, Right, Bottom);
+
+    private bool IsInside(double value) => Level.Place(value) >= Top && Level.Place(value) <= Bottom;
 }

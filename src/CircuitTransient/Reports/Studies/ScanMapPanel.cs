@@ -11,6 +11,7 @@ internal sealed class ScanMapPanel
     private const double Height = 420;
     private const int MostCells = 80; // a side; finer maps are drawn from every second point or fewer
     private const int MostDots = 80; // more would hide their line
+    private const int MostPlaces = 40; // of a line's label
     private const double Right = ScanFrame.Right;
 
     private readonly ScanResult result;
@@ -71,8 +72,14 @@ internal sealed class ScanMapPanel
             fonts.Fitted(
                 ScanWords.Title(result.Circuit, finding.Figure), 14, Right - ScanFrame.Left, isStrong: true),
             14, PlotStyle.Ink, IsStrong: true);
-        foreach (var shape in Cells()
-            .Concat(Contours().Concat(Breaks()).Concat(Axes()).Concat(Worst()).OrderBy(s => s is TextShape)))
+        var contours = Contours().ToArray();
+        Shape[] disc = Disc is { } marked ? [marked] : [];
+        Shape[] lines = [.. contours.Select(c => c.Line), .. Breaks(), .. disc];
+        var room = new LabelRoom(fonts, ScanFrame.Left, top, Right, top + Height);
+        room.Avoid(lines);
+        Shape[] labels = [.. WorstWords(room), .. LevelWords(contours, room)];
+        var above = lines.Concat(Axes()).OrderBy(s => s is TextShape).Concat(labels);
+        foreach (var shape in Cells().Concat(above))
         {
             yield return shape;
         }
@@ -150,7 +157,7 @@ internal sealed class ScanMapPanel
             ScanFrame.Small, PlotStyle.Ink, IsStrong: true);
     }
 
-    private IEnumerable<Shape> Contours()
+    private IEnumerable<(double Level, LineShape Line)> Contours()
     {
         var finite = values.Cast<double>().Where(double.IsFinite).ToArray();
         if (finite.Length == 0 || finite.Min() == finite.Max())
@@ -161,61 +168,35 @@ internal sealed class ScanMapPanel
         var middles = Middles();
         var levels = new PlotScale(finite.Min(), finite.Max(), 0, 1).Ticks(Unit, 7).Marks;
         var step = levels.Length > 1 ? levels[1].Value - levels[0].Value : finite.Max() - finite.Min();
-        var taken = new List<(double, double, double, double)>();
-        if (WorstLabel() is { } worst)
-        {
-            taken.Add(Box(worst));
-        }
-
         foreach (var (level, _) in levels)
         {
-            var strokes = MapLines.Equal(values, middles, level, step)
-                .Select(s => (A: Placed(s.A), B: Placed(s.B))).ToArray();
-            foreach (var (a, b) in strokes)
+            foreach (var (a, b) in MapLines.Equal(values, middles, level, step))
             {
-                yield return new LineShape(a.X, a.Y, b.X, b.Y, new Stroke(PlotStyle.Ink, 0.7));
-            }
-
-            if (Label(strokes, EngineeringNumber.Format(level, Unit, 3), taken) is { } label)
-            {
-                taken.Add(Box(label));
-                yield return label;
+                var (from, to) = (Placed(a), Placed(b));
+                yield return (
+                    level, new LineShape(from.X, from.Y, to.X, to.Y, new Stroke(PlotStyle.Ink, 0.7)));
             }
         }
     }
 
-    /// <summary>The label of a line of equal value where it meets no other; null where there is no such
-    /// place.</summary>
-    private TextShape? Label(
-        (PlotPoint A, PlotPoint B)[] strokes, string words, List<(double, double, double, double)> taken)
+    /// <summary>The label of each line of equal value where it meets nothing but that line; none where it
+    /// would cover another label.</summary>
+    private IEnumerable<Shape> LevelWords(IEnumerable<(double Level, LineShape Line)> lines, LabelRoom room)
     {
-        double[] shares = [0.5, 0.25, 0.75, 0.1, 0.9];
-        return shares.Where(_ => strokes.Length > 0)
-            .Select(share => strokes[(int)(share * (strokes.Length - 1))].A)
-            .Select(at => new TextShape(
-                Math.Clamp(at.X, ScanFrame.Left + 24, Right - 24),
-                Math.Clamp(at.Y + 4, top + 12, top + Height - 4), words, 10.5, PlotStyle.Ink,
-                TextAnchor.Middle, HasHalo: true))
-            .FirstOrDefault(label => !taken.Any(other => Overlap(other, Box(label))));
-    }
-
-    private (double, double, double, double) Box(TextShape text)
-    {
-        const double apart = 3;
-        var width = fonts.Width(text.Text, text.Size, text.IsStrong);
-        var left = text.X - (text.Anchor switch
+        foreach (var equal in lines.GroupBy(l => l.Level, l => l.Line))
         {
-            TextAnchor.Middle => width / 2,
-            TextAnchor.End => width,
-            _ => 0,
-        });
-        return (left - apart, text.Y - text.Size - apart, left + width + apart, text.Y + apart);
+            var (pieces, words) = (equal.ToArray(), EngineeringNumber.Format(equal.Key, Unit, 3));
+            var places = Enumerable.Range(0, MostPlaces)
+                .Select(k => pieces[(k * (pieces.Length - 1) / (MostPlaces - 1))])
+                .Select(piece => new TextShape(
+                    piece.X1, piece.Y1 + 4, words, 10.5, PlotStyle.Ink, TextAnchor.Middle, HasHalo: true))
+                .Where(room.IsFree).ToArray();
+            if (places.Length > 0)
+            {
+                yield return room.Place(places);
+            }
+        }
     }
-
-    private static bool Overlap(
-        (double Left, double Top, double Right, double Bottom) a,
-        (double Left, double Top, double Right, double Bottom) b) =>
-        a.Left < b.Right && b.Left < a.Right && a.Top < b.Bottom && b.Top < a.Bottom;
 
     private double[,]? Middles()
     {
@@ -269,30 +250,23 @@ internal sealed class ScanMapPanel
         }
     }
 
-    private IEnumerable<Shape> Worst()
-    {
-        if (Marked is { } worst && WorstLabel() is { } label)
-        {
-            yield return new DiscShape(
-                across.Place(worst.At[0]), upwards.Place(worst.At[1]), 4.5, PlotStyle.Ink);
-            yield return label;
-        }
-    }
-
     private ScanPlace? Marked => finding.Worst ?? finding.Greatest;
 
-    private TextShape? WorstLabel()
-    {
-        if (Marked is not { } worst)
-        {
-            return null;
-        }
+    private DiscShape? Disc => Marked is { } worst
+        ? new DiscShape(across.Place(worst.At[0]), upwards.Place(worst.At[1]), 4.5, PlotStyle.Ink)
+        : null;
 
-        var (x, y) = (across.Place(worst.At[0]), upwards.Place(worst.At[1]));
-        var words = EngineeringNumber.Format(Shown(worst.Value), Unit);
-        var anchor = x > (ScanFrame.Left + Right) / 2 ? TextAnchor.End : TextAnchor.Start;
-        return new TextShape(
-            x + (anchor == TextAnchor.End ? -8 : 8), Math.Clamp(y + 4, top + 14, top + Height - 6), words,
-            ScanFrame.Small, PlotStyle.Ink, anchor, IsStrong: true, HasHalo: true);
+    private IEnumerable<Shape> WorstWords(LabelRoom room)
+    {
+        if (Marked is { } worst && Disc is { X: var x, Y: var y })
+        {
+            var label = new TextShape(
+                x + 8, y + 4, EngineeringNumber.Format(Shown(worst.Value), Unit), ScanFrame.Small,
+                PlotStyle.Ink, IsStrong: true, HasHalo: true);
+            var toTheLeft = label with { X = x - 8, Anchor = TextAnchor.End };
+            yield return room.Place(
+                label, toTheLeft, label with { Y = y - 9 }, label with { Y = y + 18 },
+                toTheLeft with { Y = y - 9 }, toTheLeft with { Y = y + 18 });
+        }
     }
 }

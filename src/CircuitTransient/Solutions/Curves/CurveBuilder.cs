@@ -10,6 +10,7 @@ public sealed class CurveBuilder
     private readonly TransientSolution solution;
     private readonly ImmutableArray<SegmentTable> tables;
     private readonly ImpulseWork impulses;
+    private readonly (double From, double To)? window;
     private readonly Dictionary<(Measurand, Share, int), Curve?> curves = [];
     private readonly Dictionary<(int, Measurand, Share, int), LinearPiece?> linears = [];
 
@@ -39,6 +40,13 @@ public sealed class CurveBuilder
                 ? other.tables[i]
                 : new SegmentTable(s))];
     }
+
+    private CurveBuilder(CurveBuilder other, (double From, double To) window)
+        : this(other) => this.window = window;
+
+    /// <summary>Makes curves that hold within a window only: what the equations leave open elsewhere counts
+    /// as nothing there.</summary>
+    public CurveBuilder Within((double From, double To) only) => new(this, only);
 
     /// <summary>The solution.</summary>
     public TransientSolution Solution => solution;
@@ -211,8 +219,14 @@ public sealed class CurveBuilder
         return piece;
     }
 
-    private LinearPiece? Piece(int s, double[]? coefficients) =>
-        coefficients is null ? null : new LinearPiece(tables[s], coefficients);
+    private LinearPiece? Piece(int s, double[]? coefficients)
+    {
+        var segment = tables[s].Segment;
+        return coefficients is not null ? new LinearPiece(tables[s], coefficients)
+            : segment.End <= window?.From || segment.Start >= window?.To
+                ? new LinearPiece(tables[s], new double[segment.Basis.Width])
+                : null;
+    }
 
     private static double[]? Difference(double[]? a, double[]? b) =>
         a is null || b is null ? null : [.. a.Zip(b, (x, y) => x - y)];

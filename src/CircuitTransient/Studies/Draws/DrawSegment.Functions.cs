@@ -17,8 +17,8 @@ internal sealed partial class DrawSegment
         int function, int row, int order, bool withSlopes, ClosedForm form, SourceWaves waves,
         ReadOnlySpan<Complex> levels, ReadOnlySpan<Complex> slopes)
     {
+        Coefficients.AsSpan(function * Stride, Stride).Clear();
         var c = Coefficients.AsSpan(function * Stride, Width);
-        c.Clear();
         for (var k = 0; k < Modes; k++)
         {
             var g = Gain(form, row, k);
@@ -45,6 +45,7 @@ internal sealed partial class DrawSegment
 
         if (withSlopes)
         {
+            Slopes.AsSpan(function * Stride, Stride).Clear();
             var d = Slopes.AsSpan(function * Stride, Width);
             Differentiate(c, d);
             Differentiate(d, Bends.AsSpan(function * Stride, Width));

@@ -63,6 +63,7 @@ internal sealed class FigurePlan
         StudyFigureKind.Maximum or StudyFigureKind.Minimum => Extreme(
             circuit.Observations[figure.Index], figure.Kind == StudyFigureKind.Maximum),
         StudyFigureKind.Margin => Margin(circuit.Requirements[figure.Index]),
+        StudyFigureKind.RatingUsed when figure.Rating < 0 => LinearUsed(figure.Index),
         StudyFigureKind.RatingUsed => Used(figure.Index, circuit.Parts[figure.Index].Ratings[figure.Rating]),
         _ => new ExactFigure("it is read off the whole waveform"),
     };
@@ -131,6 +132,13 @@ internal sealed class FigurePlan
                 return new IntegralUsedFigure(
                     Integral(voltage, current, 1, whole), rating.Limit, rating.Kind == RatingKind.MeanPower);
         }
+    }
+
+    private PeakUsedFigure LinearUsed(int part)
+    {
+        var limit = circuit.Parts[part].LinearUpTo!;
+        Measurand quantity = limit.IsVoltage ? new VoltageAcross(part) : new CurrentThrough(part);
+        return new PeakUsedFigure(Track(quantity, whole, true, true)!.Value, limit.Limit);
     }
 
     private bool IsIntegrated(Measurand quantity) =>

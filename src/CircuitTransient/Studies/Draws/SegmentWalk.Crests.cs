@@ -1,3 +1,6 @@
+using System.Runtime.InteropServices;
+using System.Runtime.Intrinsics;
+
 namespace CircuitTransient.Studies.Draws;
 
 internal sealed partial class SegmentWalk
@@ -7,21 +10,26 @@ internal sealed partial class SegmentWalk
 
     private readonly double[] factorEnvelope;
 
-    private void PutFunctions(DrawSegment segment, ReadOnlySpan<double> at)
+    private void PutFunctions(DrawSegment segment, ReadOnlySpan<double> at, ReadOnlySpan<int> functions)
     {
-        var slotsInUse = at[..segment.Width];
-        foreach (var f in used.AsSpan(0, usedCount))
+        const int lanes = 4; // strides are multiples of it, and what is beyond the width is zero
+        var places = MemoryMarshal.Cast<double, Vector256<double>>(at);
+        var coefficients = MemoryMarshal.Cast<double, Vector256<double>>(segment.Coefficients);
+        var rates = MemoryMarshal.Cast<double, Vector256<double>>(segment.Slopes);
+        var (stride, width) = (segment.Stride / lanes, (segment.Width + lanes - 1) / lanes);
+        places = places[..width];
+        foreach (var f in functions)
         {
-            var c = segment.Coefficients.AsSpan(f * segment.Stride, slotsInUse.Length);
-            var d = segment.Slopes.AsSpan(f * segment.Stride, slotsInUse.Length);
-            double value = 0, slope = 0;
-            for (var i = 0; i < slotsInUse.Length; i++)
+            var c = coefficients.Slice(f * stride, places.Length);
+            var d = rates.Slice(f * stride, places.Length);
+            var (value, slope) = (Vector256<double>.Zero, Vector256<double>.Zero);
+            for (var i = 0; i < places.Length; i++)
             {
-                value += c[i] * slotsInUse[i];
-                slope += d[i] * slotsInUse[i];
+                value += c[i] * places[i];
+                slope += d[i] * places[i];
             }
 
-            (values[f], slopes[f]) = (value, slope);
+            (values[f], slopes[f]) = (Vector256.Sum(value), Vector256.Sum(slope));
         }
     }
 
@@ -89,8 +97,8 @@ internal sealed partial class SegmentWalk
         {
             ref var state = ref states[t];
             var (least, greatest, size) = Bounds(t, state.Factor);
-            state.IsMaximumSettled |= greatest <= state.Maximum + (Settled * size);
-            state.IsMinimumSettled |= least >= state.Minimum - (Settled * size);
+            state.IsMaximumSettled |= greatest <= Floor(t, 1, state) + (Settled * size);
+            state.IsMinimumSettled |= -least <= Floor(t, -1, state) + (Settled * size);
             if (!state.IsMaximumSettled || !state.IsMinimumSettled)
             {
                 active[kept++] = t;
@@ -141,7 +149,7 @@ internal sealed partial class SegmentWalk
     private void LookFor(
         DrawSegment segment, int t, double sign, in Cell cell, ref TrackState state, int halvings)
     {
-        var best = sign > 0 ? state.Maximum : -state.Minimum;
+        var best = Floor(t, sign, state);
         var width = cell.To - cell.From;
         var mean = (cell.ValueTo - cell.ValueFrom) / width;
         if (cell.SlopeFrom > 0 && cell.SlopeTo < 0)
@@ -152,7 +160,8 @@ internal sealed partial class SegmentWalk
             var missed = 0.05 * (guess - Math.Min(cell.ValueFrom, cell.ValueTo));
             if (guess + missed > best)
             {
-                Climb(segment, t, sign, cell, crest, ref state);
+                var found = new SeenCrest(cell, crest, guess - missed, guess + missed);
+                PutOff(segment, t, sign, found, ref state);
             }
 
             return;

@@ -4,8 +4,9 @@ namespace CircuitTransient.Studies.Draws;
 
 /// <summary>Finds extremes on a segment by walking along it: steps of a sixteenth of a period of the fastest
 /// exponent that still matters, the exponentials by recurrence; a crest between two steps is told by the
-/// slopes there and settled by Newton steps on the closed form. The walk ends where a bound of what is left
-/// rules out any better value.</summary>
+/// slopes there and settled by Newton steps on the closed form. Where many periods are left, blocks of steps
+/// are bounded first, and only those that may hold a better value are walked. The walk ends where a bound of
+/// what is left rules out any better value.</summary>
 internal sealed partial class SegmentWalk
 {
     private const double Turn = 0.4; // |E| h: 16 steps a period; cubic pieces then miss 1e-4 of a mode
@@ -53,6 +54,8 @@ internal sealed partial class SegmentWalk
         factorIm = new double[units];
         weight = new double[units];
         factorEnvelope = new double[units];
+        seen = new SeenCrest[2 * tracks.Length];
+        blocks = new BlockMemory(tracks.Length, functions, units, width);
     }
 
     /// <summary>Searches a stretch of a segment for every track whose window holds it.</summary>
@@ -73,7 +76,7 @@ internal sealed partial class SegmentWalk
 
         var (tau, end) = (from - segment.Start, to - segment.Start);
         Prepare(segment, tau, end);
-        PutFunctions(segment, slots);
+        PutFunctions(segment, slots, used.AsSpan(0, usedCount));
         foreach (var t in active.AsSpan(0, activeCount))
         {
             ref var state = ref states[t];
@@ -81,12 +84,24 @@ internal sealed partial class SegmentWalk
             state.Offer(state.Value, from);
         }
 
+        if (!Walk(segment, tau, end, states))
+        {
+            return false;
+        }
+
+        ClimbAll(segment, isOpen, states);
+        return true;
+    }
+
+    private bool Walk(DrawSegment segment, double tau, double end, Span<TrackState> states)
+    {
         double step = 0;
+        var (walked, chunk) = (0, LeastBlocks);
         for (var count = 0; tau < end; count++)
         {
             if (count % StepsBetweenBounds == 0)
             {
-                if (count > MostSteps)
+                if (walked + count > MostSteps)
                 {
                     return false;
                 }
@@ -97,6 +112,11 @@ internal sealed partial class SegmentWalk
                 }
 
                 ChooseStep(segment, tau, end, ref step);
+                if (TryBlocks(segment, ref tau, end, step, ref walked, ref chunk, states))
+                {
+                    count = -1;
+                    continue;
+                }
             }
 
             var next = tau + step;
@@ -110,7 +130,7 @@ internal sealed partial class SegmentWalk
                 Advance(segment, next);
             }
 
-            PutFunctions(segment, slots);
+            PutFunctions(segment, slots, used.AsSpan(0, usedCount));
             foreach (var t in active.AsSpan(0, activeCount))
             {
                 Look(segment, t, tau, next, ref states[t]);
@@ -141,6 +161,7 @@ internal sealed partial class SegmentWalk
             }
 
             active[activeCount++] = t;
+            (seen[2 * t], seen[(2 * t) + 1]) = (SeenCrest.None, SeenCrest.None);
             states[t].IsMaximumSettled = !tracks[t].WantsMaximum;
             states[t].IsMinimumSettled = !tracks[t].WantsMinimum;
             Use(tracks[t].First);
@@ -164,6 +185,7 @@ internal sealed partial class SegmentWalk
     /// start.</summary>
     private void Prepare(DrawSegment segment, double tau, double end)
     {
+        Array.Clear(slots);
         segment.Evaluate(tau, slots);
         Array.Clear(weight);
         foreach (var f in used.AsSpan(0, usedCount))
@@ -190,7 +212,7 @@ internal sealed partial class SegmentWalk
 
     private void ChooseStep(DrawSegment segment, double tau, double end, ref double step)
     {
-        double fastest = 0;
+        (double fastest, ringing) = (0, -1);
         for (var unit = 0; unit < segment.Units; unit++)
         {
             if (weight[unit] == 0 || weight[unit] * factorEnvelope[unit] <= Matters)
@@ -200,7 +222,7 @@ internal sealed partial class SegmentWalk
 
             var (re, im) = (segment.Re[unit], segment.Im[unit]);
             var own = im == 0 ? Math.Abs(re) / Fall : Math.Sqrt((re * re) + (im * im)) / Turn;
-            fastest = Math.Max(fastest, own);
+            (fastest, ringing) = own > fastest ? (own, im == 0 ? -1 : unit) : (fastest, ringing);
             if (segment.Degree[unit] > 1)
             {
                 fastest = Math.Max(fastest, 8 / end);

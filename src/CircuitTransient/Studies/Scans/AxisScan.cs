@@ -16,6 +16,7 @@ internal sealed class AxisScan(
     private const int MostCrests = 4;
 
     private readonly bool isJudged = FigureScan.IsJudgedKind(figure.Kind);
+    private readonly List<SlopedSample> looks = [];
 
     /// <summary>Searches.</summary>
     /// <param name="given">The figure at the points, by place: infinite where it breaks without limit, NaN
@@ -29,11 +30,11 @@ internal sealed class AxisScan(
         }
 
         given = Sloped(given);
-        var jumps = RangeJump.Find(given, function);
+        var jumps = RangeJump.Find(given, Look);
         var looked = Merge(given, jumps.SelectMany(j => new[] { j.Before, j.After }));
-        (looked, var leftOver) = isJudged ? WithDips(looked) : (WithCrests(looked), 0);
-        var greatest = RangeExtremeSearch.Greatest(looked, function);
-        var least = RangeExtremeSearch.Least(looked, function);
+        (looked, var leftOver) = WithDips(looked);
+        var greatest = RangeExtremeSearch.Greatest(looked, Look);
+        var least = RangeExtremeSearch.Least(looked, Look);
         looked = Merge(looked, [.. greatest?.Looked ?? [], .. least?.Looked ?? []]);
         var breaks = isJudged ? Breaks(looked) : [];
         var holding = isJudged ? Holding(looked, breaks) : [];
@@ -45,38 +46,37 @@ internal sealed class AxisScan(
             breaks,
             holding,
             !isJudged || looked.All(s => double.IsNaN(s.Y) || Judged(s).Y >= 0));
-        return findings with { Room = ScanRoom.Of(circuit, findings), LeftOver = leftOver };
+        var places = given.Select(s => s.X).ToHashSet();
+        return findings with
+        {
+            Room = ScanRoom.Of(circuit, findings),
+            LeftOver = leftOver,
+            Looks = Merge([], looks.Where(s => !places.Contains(s.X))),
+        };
     }
 
-    /// <summary>What is looked at further because a break, or an end of one, may lie between
-    /// samples.</summary>
+    /// <summary>What is looked at further because a break, or an end of one, may lie between samples: of what
+    /// is only observed, because an extreme may be other than the samples foretell.</summary>
     private (ImmutableArray<SlopedSample> Looked, int LeftOver) WithDips(ImmutableArray<SlopedSample> looked)
     {
-        var more = new List<SlopedSample>();
-        var dips = RangeDips.Search([.. looked.Select(Judged)], Look);
-        return (Merge(looked, more), dips.LeftOver);
-
-        SlopedSample Look(double x)
+        var (before, leftOver) = (looks.Count, 0);
+        if (isJudged)
         {
-            more.Add(function(x));
-            return Judged(more[^1]);
+            leftOver = RangeDips.Search([.. looked.Select(Judged)], x => Judged(Look(x))).LeftOver;
         }
+        else
+        {
+            RangeDips.Resolve(looked, Look);
+            RangeDips.Resolve([.. looked.Select(s => s.Negate())], x => Look(x).Negate());
+        }
+
+        return (Merge(looked, looks[before..]), leftOver);
     }
 
-    /// <summary>What is looked at further because an extreme between samples may be other than they
-    /// foretell.</summary>
-    private ImmutableArray<SlopedSample> WithCrests(ImmutableArray<SlopedSample> looked)
+    private SlopedSample Look(double x)
     {
-        var more = new List<SlopedSample>();
-        RangeDips.Resolve(looked, Look);
-        RangeDips.Resolve([.. looked.Select(s => s.Negate())], x => Look(x).Negate());
-        return Merge(looked, more);
-
-        SlopedSample Look(double x)
-        {
-            more.Add(function(x));
-            return more[^1];
-        }
+        looks.Add(function(x));
+        return looks[^1];
     }
 
     /// <summary>The slopes about the highest and lowest points, where they were not all taken.</summary>
@@ -90,7 +90,7 @@ internal sealed class AxisScan(
         var wanted = Crests(given, 1).Concat(Crests(given, -1))
             .SelectMany(i => new[] { i - 1, i, i + 1 })
             .Where(i => i >= 0 && i < given.Length).Distinct().ToHashSet();
-        return [.. given.Select((sample, i) => wanted.Contains(i) ? function(sample.X) : sample)];
+        return [.. given.Select((sample, i) => wanted.Contains(i) ? Look(sample.X) : sample)];
     }
 
     private static IEnumerable<int> Crests(ImmutableArray<SlopedSample> given, int sign)
@@ -141,7 +141,7 @@ internal sealed class AxisScan(
         {
             var (left, right) = (Judged(looked[i]), Judged(looked[i + 1]));
             if (left.HasValue && right.HasValue && left.Y >= 0 != right.Y >= 0
-                && RangeCrossing.Between(left, right, x => Judged(function(x))) is { } crossing)
+                && RangeCrossing.Between(left, right, x => Judged(Look(x))) is { } crossing)
             {
                 breaks.Add(new ScanBreak(
                     [crossing.X], 0, left.Y >= 0, crossing.IsJump, crossing.IsBySlope));

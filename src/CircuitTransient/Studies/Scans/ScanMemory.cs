@@ -1,5 +1,6 @@
 using System.Collections.Concurrent;
 using System.Collections.Immutable;
+using System.Runtime.InteropServices;
 using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Studies.Scans;
@@ -119,45 +120,29 @@ public sealed class ScanMemory
 
     private static void Write(BinaryWriter to, ImmutableArray<double> numbers)
     {
+        // In one piece each: a hundred thousand points are to be written within the grace of an interrupt.
         to.Write(numbers.Length);
-        foreach (var number in numbers)
-        {
-            to.Write(number);
-        }
+        to.Write(MemoryMarshal.AsBytes(numbers.AsSpan()));
     }
 
     private static void Write(BinaryWriter to, ImmutableArray<double?> numbers)
     {
-        to.Write(numbers.Length);
-        foreach (var number in numbers)
-        {
-            to.Write(number.HasValue);
-            to.Write(number ?? 0);
-        }
+        Write(to, [.. numbers.Select(number => number ?? 0)]);
+        to.Write(numbers.Select(number => number.HasValue ? (byte)1 : (byte)0).ToArray());
     }
 
     private static ImmutableArray<double> ReadNumbers(BinaryReader from)
     {
-        var numbers = ImmutableArray.CreateBuilder<double>(from.ReadInt32());
-        while (numbers.Count < numbers.Capacity)
-        {
-            numbers.Add(from.ReadDouble());
-        }
-
-        return numbers.MoveToImmutable();
+        var numbers = new double[from.ReadInt32()];
+        from.BaseStream.ReadExactly(MemoryMarshal.AsBytes(numbers.AsSpan()));
+        return ImmutableCollectionsMarshal.AsImmutableArray(numbers);
     }
 
     private static ImmutableArray<double?> ReadOptional(BinaryReader from)
     {
-        var numbers = ImmutableArray.CreateBuilder<double?>(from.ReadInt32());
-        while (numbers.Count < numbers.Capacity)
-        {
-            var hasValue = from.ReadBoolean();
-            var number = from.ReadDouble();
-            numbers.Add(hasValue ? number : null);
-        }
-
-        return numbers.MoveToImmutable();
+        var numbers = ReadNumbers(from);
+        var isThere = from.ReadBytes(numbers.Length);
+        return [.. numbers.Select((number, i) => isThere[i] == 1 ? number : (double?)null)];
     }
 
     private readonly record struct Place(int Axis, int Figure, double First, double Second, double Third)

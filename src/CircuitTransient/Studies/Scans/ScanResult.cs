@@ -98,6 +98,9 @@ public sealed record FigureScan(
     /// breaks, negative infinity where without limit, null of what is only observed.</summary>
     public double? Room { get; init; }
 
+    /// <summary>What was looked at between the points of one scanned value, by place.</summary>
+    public ImmutableArray<SlopedSample> Looks { get; init; } = [];
+
     /// <summary>How many stretches between points might hide a break and were not searched to the
     /// end.</summary>
     public int LeftOver { get; init; }

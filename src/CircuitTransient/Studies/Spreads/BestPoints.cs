@@ -8,6 +8,7 @@ internal sealed class BestPoints(int figureCount)
         [.. Enumerable.Repeat(new Best([], double.NaN), 2 * figureCount)];
 
     private readonly long[] missing = new long[figureCount];
+    private readonly long[] overOne = new long[figureCount];
 
     /// <summary>How many points were solved.</summary>
     public long Solved { get; private set; }
@@ -20,6 +21,9 @@ internal sealed class BestPoints(int figureCount)
 
     /// <summary>At how many of the points that have a solution a figure has no value.</summary>
     public long Missing(int figure) => missing[figure];
+
+    /// <summary>At how many of the points that have a solution a figure is over 1, or infinite.</summary>
+    public long OverOne(int figure) => overOne[figure];
 
     /// <summary>The best value of a figure: the greatest for a sign of 1, the least for −1.</summary>
     public Best this[int figure, int sign] => best[(2 * figure) + (sign > 0 ? 1 : 0)];
@@ -63,6 +67,7 @@ internal sealed class BestPoints(int figureCount)
             for (var f = 0; f < missing.Length; f++)
             {
                 missing[f] += double.IsNaN(found.Value(i, f)) ? 1 : 0;
+                overOne[f] += found.Value(i, f) <= 1 ? 0 : 1;
             }
 
             for (var b = 0; b < best.Length; b++)

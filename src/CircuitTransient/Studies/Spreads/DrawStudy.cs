@@ -34,7 +34,7 @@ internal sealed class DrawStudy
         design = new LatinHypercube(options.Seed, batch.ValueCount, options.Draws);
         var capacity = options.Draws * batch.Figures.Length <= MostKept ? (int)options.Draws : 0;
         tallies = [.. batch.Figures.Select((figure, f) => Tally(figure, capacity, ranges[f]))];
-        rows = new double[RowCount * batch.Figures.Length];
+        rows = new double[RowCount * batch.Reported.Length];
     }
 
     /// <summary>How many draws are made.</summary>
@@ -76,8 +76,9 @@ internal sealed class DrawStudy
     /// <summary>What the draws tell.</summary>
     public DrawFindings Finish(ImmutableArray<WaveformBand> envelopes) => new(
         Done, unsolvable, [.. unsolvableDraws],
-        [.. tallies.Select(tally => tally.Statistics(Done))],
-        [.. rows], [.. FirstPoints(RowCount)], (int)RowCount, envelopes);
+        [.. tallies.Take(batch.Reported.Length).Select(tally => tally.Statistics(Done))],
+        [.. rows], [.. FirstPoints(RowCount)], (int)RowCount,
+        [.. tallies.Skip(batch.Reported.Length).Select(tally => tally.Statistics(Done).Holding!)], envelopes);
 
     /// <summary>Writes what was gathered so far.</summary>
     public void Save(BinaryWriter to)
@@ -120,7 +121,7 @@ internal sealed class DrawStudy
 
     private long RowCount => Math.Min(options.Draws, MostRows);
 
-    private int RowNumbers => (int)Math.Min(rows.Length, Done * batch.Figures.Length);
+    private int RowNumbers => (int)Math.Min(rows.Length, Done * batch.Reported.Length);
 
     private static FigureTally Tally(StudyFigure figure, int capacity, (double From, double To) range) =>
         new(capacity, range.From, range.To,
@@ -140,7 +141,7 @@ internal sealed class DrawStudy
 
     private void Add(BatchFigures found)
     {
-        var figures = batch.Figures.Length;
+        var figures = batch.Reported.Length;
         for (var i = 0; i < found.Solved.Length; i++, Done++)
         {
             if (!found.Solved[i])
@@ -152,10 +153,10 @@ internal sealed class DrawStudy
                 }
             }
 
-            for (var f = 0; f < figures; f++)
+            for (var f = 0; f < batch.Figures.Length; f++)
             {
                 var place = (Done * figures) + f;
-                if (place < rows.Length)
+                if (f < figures && place < rows.Length)
                 {
                     rows[place] = found.Value(i, f);
                 }

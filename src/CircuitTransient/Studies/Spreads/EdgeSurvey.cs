@@ -29,7 +29,7 @@ internal sealed class EdgeSurvey(PointBatch batch, ValueRanges ranges)
             .SelectMany(s => edges.At(edge.Corner, edge.Value, (double)s / stretches)))];
         var samples = new EdgeSamples(chosen, At(points), stretches);
         var groups =
-            from f in Enumerable.Range(0, batch.Figures.Length)
+            from f in Enumerable.Range(0, batch.Reported.Length)
             from isTime in (bool[])[false, true]
             select samples.Steps(f, isTime);
         var seen = groups.Where(steps => steps.Count > 0).ToArray();

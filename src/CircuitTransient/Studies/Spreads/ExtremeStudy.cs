@@ -17,8 +17,8 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
     private double largestCorrection;
 
     /// <summary>Searches.</summary>
-    public (SearchAccount Account, ImmutableArray<FigureRange> Figures, JumpFindings Jumps) Run(
-        Action<SpreadProgress> report)
+    public (SearchAccount Account, ImmutableArray<FigureRange> Figures, ImmutableArray<LinearRange> Linear,
+        JumpFindings Jumps) Run(Action<SpreadProgress> report)
     {
         var alone = Alone();
         var all = ranges.Count <= (batch.WhyExact is null
@@ -27,6 +27,7 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         var corners = new CornerSearch(batch, ranges, best);
         var count = Math.Pow(2, ranges.Count);
         var before = best.Solved;
+        var (unsolvable, over) = (best.Unsolvable, OverOne());
         if (all)
         {
             corners.SolveAll(done => report(new SpreadProgress("corners", done, (long)count)));
@@ -39,6 +40,8 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         }
 
         var cornerPoints = best.Solved - before;
+        long[] passed = [.. OverOne().Zip(over, (now, then) => now - then)];
+        var solved = cornerPoints - (best.Unsolvable - unsolvable);
         for (var f = 0; f < batch.Figures.Length; f++)
         {
             corner.Add((best[f, -1], best[f, 1]));
@@ -47,9 +50,9 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
         var inside = new InteriorSearch(batch, ranges, best)
             .Run(done => report(new SpreadProgress("between the corners", done, 0)));
         var figures = ImmutableArray.CreateBuilder<FigureRange>();
-        for (var f = 0; f < batch.Figures.Length; f++)
+        for (var f = 0; f < batch.Reported.Length; f++)
         {
-            report(new SpreadProgress("worst cases", f, batch.Figures.Length));
+            report(new SpreadProgress("worst cases", f, batch.Reported.Length));
             figures.Add(Range(f, alone));
         }
 
@@ -65,7 +68,23 @@ internal sealed class ExtremeStudy(PointBatch batch, TransientResult nominal)
                 count, all, cornerPoints, inside, worseInside, best.Unsolvable,
                 best.UnsolvablePoint is { } point ? [.. point] : null, largestCorrection,
                 batch.WhyExact),
-            figures.ToImmutable(), jumps);
+            figures.ToImmutable(),
+            [.. Enumerable.Range(0, passed.Length).Select(i => Linear(i, passed[i], solved))], jumps);
+    }
+
+    /// <summary>At how many points parts left the ranges they are linear in, part by part.</summary>
+    private long[] OverOne() =>
+        [.. Enumerable.Range(batch.Reported.Length, batch.Figures.Length - batch.Reported.Length)
+            .Select(best.OverOne)];
+
+    private LinearRange Linear(int index, long passed, long corners)
+    {
+        var f = batch.Reported.Length + index;
+        var found = best[f, 1].Point;
+        var isInfinite = best.Missing(f) > 0;
+        return new LinearRange(
+            batch.Figures[f].Index, isInfinite || found.Length == 0 ? null : Exact(found, f).Value,
+            [.. found], passed, corners);
     }
 
     /// <summary>Every value alone at its lower and at its upper end, after all at nominal.</summary>

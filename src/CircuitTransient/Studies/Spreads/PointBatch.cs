@@ -13,24 +13,30 @@ internal sealed class PointBatch
 
     /// <summary>Prepares the fast evaluation.</summary>
     /// <param name="varied">The circuit and what varies in it.</param>
-    /// <param name="figures">The figures to follow.</param>
+    /// <param name="figures">The figures to follow; the ranges that parts are linear in are followed
+    /// beside them.</param>
     /// <param name="threads">How many threads work.</param>
     /// <param name="cancellation">Stops the work.</param>
     public PointBatch(
         VariedCircuit varied, ImmutableArray<StudyFigure> figures, int threads,
         CancellationToken cancellation)
     {
-        (Varied, Figures, Cancellation, Threads) = (varied, figures, cancellation, threads);
-        (Kernel, var reason) = DrawKernel.For(varied, figures, cancellation);
-        var unserved = Kernel?.Unserved.Select((why, f) => why is null ? null : $"{figures[f].Name}: {why}");
+        (Varied, Cancellation, Threads) = (varied, cancellation, threads);
+        (Reported, Figures) = (figures, [.. figures, .. StudyFigures.LinearRanges(varied.Circuit)]);
+        (Kernel, var reason) = DrawKernel.For(varied, Figures, cancellation);
+        var unserved = Kernel?.Unserved.Select((why, f) => why is null ? null : $"{Figures[f].Name}: {why}");
         WhyExact = reason ?? unserved!.FirstOrDefault(words => words is not null);
     }
 
     /// <summary>The circuit and what varies in it.</summary>
     public VariedCircuit Varied { get; }
 
-    /// <summary>The figures that are followed.</summary>
+    /// <summary>The figures that are followed: those asked for, then the used fractions of the ranges that
+    /// parts are linear in.</summary>
     public ImmutableArray<StudyFigure> Figures { get; }
+
+    /// <summary>The first of them, which were asked for.</summary>
+    public ImmutableArray<StudyFigure> Reported { get; }
 
     /// <summary>The fast evaluation; null where there is none.</summary>
     public DrawKernel? Kernel { get; }

@@ -10,13 +10,15 @@ namespace CircuitTransient.Studies.Spreads;
 /// <param name="Nominal">The circuit with every value nominal.</param>
 /// <param name="Account">What was solved to find the extremes.</param>
 /// <param name="Figures">Every figure followed, with its extremes.</param>
+/// <param name="Linear">Where parts leave the range their values are good for.</param>
 /// <param name="Jumps">What jumps between neighbouring corners.</param>
 /// <param name="Worst">The worst case, taken apart; null where no figure has one.</param>
 /// <param name="Draws">The random draws; null where none were asked for.</param>
 /// <param name="Sensitivities">The exact derivatives with every value nominal.</param>
 public sealed record SpreadResult(
     VariedCircuit Varied, SpreadOptions Options, TransientResult Nominal, SearchAccount Account,
-    ImmutableArray<FigureRange> Figures, JumpFindings Jumps, WorstCase? Worst, DrawFindings? Draws,
+    ImmutableArray<FigureRange> Figures, ImmutableArray<LinearRange> Linear, JumpFindings Jumps,
+    WorstCase? Worst, DrawFindings? Draws,
     SensitivityFindings Sensitivities)
 {
     /// <summary>Whether every requirement and rating holds with every tolerance, as far as the search
@@ -126,12 +128,13 @@ public sealed record WorstCase(
 /// none.</param>
 /// <param name="Points">The values of the same draws, one draw after another, in SI.</param>
 /// <param name="RowCount">How many draws those are.</param>
+/// <param name="Linear">Of every part that states what it is linear up to: in how many draws it stays
+/// there.</param>
 /// <param name="Envelopes">The band of each observed waveform.</param>
 public sealed record DrawFindings(
     long Draws, long Unsolvable, ImmutableArray<long> UnsolvableDraws,
     ImmutableArray<FigureStatistics> Figures, ImmutableArray<double> Rows, ImmutableArray<double> Points,
-    int RowCount,
-    ImmutableArray<WaveformBand> Envelopes);
+    int RowCount, ImmutableArray<HoldingEstimate> Linear, ImmutableArray<WaveformBand> Envelopes);
 
 /// <summary>Between what an observed waveform runs from draw to draw, at fixed instants.</summary>
 /// <param name="Observation">Index of the observation.</param>

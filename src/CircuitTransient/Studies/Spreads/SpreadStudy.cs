@@ -15,6 +15,7 @@ public sealed class SpreadStudy
     private readonly CancellationToken cancellation;
     private readonly SearchAccount account;
     private readonly ImmutableArray<FigureRange> figures;
+    private readonly ImmutableArray<LinearRange> linear;
     private readonly JumpFindings jumps;
     private readonly SensitivityFindings sensitivities;
     private readonly DrawStudy? draws;
@@ -31,10 +32,12 @@ public sealed class SpreadStudy
     {
         (this.nominal, this.options, this.cancellation) = (nominal, options, cancellation);
         batch = new PointBatch(varied, StudyFigures.Of(varied.Circuit), options.Threads, cancellation);
-        (account, figures, jumps) = new ExtremeStudy(batch, nominal).Run(report);
+        (account, figures, linear, jumps) = new ExtremeStudy(batch, nominal).Run(report);
         report(new SpreadProgress("sensitivities", 0, 0));
-        sensitivities = SensitivityFindings.Of(varied, batch.Figures, cancellation);
-        draws = options.Draws == 0 ? null : new DrawStudy(batch, options, [.. figures.Select(Between)]);
+        sensitivities = SensitivityFindings.Of(varied, batch.Reported, cancellation);
+        draws = options.Draws == 0 ? null : new DrawStudy(
+            batch, options,
+            [.. figures.Select(Between), .. linear.Select(_ => (0.0, 1.0))]);
     }
 
     /// <summary>How many draws are made.</summary>
@@ -52,7 +55,7 @@ public sealed class SpreadStudy
             batch, nominal, details.IsDefault ? [] : details,
             draws.FirstPoints(Envelopes.DrawCount(nominal, options.Draws)), options.Threads);
         return new SpreadResult(
-            batch.Varied, options, nominal, account, figures, jumps, Worst(), draws?.Finish(bands),
+            batch.Varied, options, nominal, account, figures, linear, jumps, Worst(), draws?.Finish(bands),
             sensitivities);
     }
 

@@ -5,8 +5,8 @@ public static class QuantileRanks
 {
     /// <summary>The rank, counted from 1 and not whole as a rule, between whose neighbours the quantile is
     /// interpolated: h = (n + 1/3) p + 1/3, definition 8 of Hyndman and Fan, "Sample quantiles in statistical
-    /// packages", The American Statistician 50 (1996) 361, which they recommend: its median is right whatever
-    /// the distribution, very nearly.</summary>
+    /// packages", The American Statistician 50 (1996) 361 (from memory), which they recommend: its median is
+    /// right whatever the distribution, very nearly.</summary>
     public static double Of(double fraction, long count) =>
         Math.Clamp(((count + (1.0 / 3)) * fraction) + (1.0 / 3), 1, count);
 

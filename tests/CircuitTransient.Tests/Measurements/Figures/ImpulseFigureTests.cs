@@ -4,7 +4,8 @@ namespace CircuitTransient.Tests.Measurements.Figures;
 
 /// <summary>Front, half-value and rise of the waves that laboratories measure.</summary>
 /// <remarks>The constants of the waves are from memory (IEEE C62.41, IEC 61000-4-4 and textbooks); every
-/// figure is computed (C) from them with 40 digits. Definitions: voltage front by IEC 60060-1 (V2).</remarks>
+/// figure is computed (C) from them. Definitions: voltage front by IEC 60060-1
+/// (V2; the grades of <see cref="Close"/>).</remarks>
 public sealed class ImpulseFigureTests
 {
     [Fact]

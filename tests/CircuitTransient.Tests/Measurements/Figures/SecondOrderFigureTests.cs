@@ -3,7 +3,7 @@ using CircuitTransient.Tests.OutsideChecks;
 namespace CircuitTransient.Tests.Measurements.Figures;
 
 /// <summary>Overshoot, settling, peak and ring of the step of 1/(s² + 2ζs + 1).</summary>
-/// <remarks>All values are mathematics, computed (C) with 40 digits.</remarks>
+/// <remarks>All values are mathematics, computed (C, the grades of <see cref="Close"/>).</remarks>
 public sealed class SecondOrderFigureTests
 {
     [Theory]

@@ -5,8 +5,8 @@ namespace CircuitTransient.Tests.Measurements.Verification;
 
 public sealed class HyperbolicContourTests
 {
-    // K03: the rational ones of the pairs of Davies & Martin, J. Comput. Phys. 33 (1979) (list from memory);
-    // values computed with 40 digits.
+    // The rational ones of the pairs of Davies and Martin, J. Comput. Phys. 33 (1979) (list from memory);
+    // values computed with 40 digits (mpmath 1.3.0).
     public static TheoryData<string, double, double> Pairs => new()
     {
         { "1/(s+½)", 0.6065306597126334, 0.0820849986238988 },

@@ -22,7 +22,7 @@ public sealed class FormulaJsonTests
     private static readonly JsonSchema Schema = JsonSchema.FromText(FormulaJson.Schema);
 
     [Fact]
-    public void It_obeys_its_schema()
+    public void Every_document_obeys_the_schema_of_formulas()
     {
         foreach (var text in new[] { Ringing, FormulaCircuits.Loop(200) })
         {

@@ -8,7 +8,7 @@ public sealed class DrawnPartsTests
     private const double Reached = 1e-8; // a hundredth of what draws promise
 
     [Fact]
-    public void Coupled_coils() => AllAgree(
+    public void Coupled_coils_agree_with_the_exact_engine() => AllAgree(
         """
         source E at s : sine of 100 V at 50 Hz
         resistor R1 from s to p : 1 Ω ±10 %
@@ -28,7 +28,7 @@ public sealed class DrawnPartsTests
         new EveryTolerance(), new PartValueTarget("M"));
 
     [Fact]
-    public void Dependent_sources_and_their_gains() => AllAgree(
+    public void Dependent_sources_and_their_gains_agree_with_the_exact_engine() => AllAgree(
         """
         source E at s : step of 1 V at 1 ms
         resistor Rs from s to a : 1 kΩ ±10 %
@@ -46,7 +46,7 @@ public sealed class DrawnPartsTests
         new EveryTolerance(), new PartValueTarget("Amp"), new PartValueTarget("Cur"));
 
     [Fact]
-    public void Contacts_with_a_resistance() => AllAgree(
+    public void Contacts_with_a_resistance_agree_with_the_exact_engine() => AllAgree(
         """
         value Rk : 2 mΩ ±50 %
         source E at s : 540 V ±10 %
@@ -65,7 +65,7 @@ public sealed class DrawnPartsTests
 
     // The charge redistributes in no time: currents are infinite, the voltage jumps.
     [Fact]
-    public void Capacitors_joined_by_an_ideal_contact() => AllAgree(
+    public void Capacitors_joined_by_an_ideal_contact_agree_with_the_exact_engine() => AllAgree(
         """
         capacitor C1 from a to ground : 100 µF ±10 %, charged to 12 V ±5 %
         capacitor C2 from b to ground : 47 µF ±10 %
@@ -80,7 +80,7 @@ public sealed class DrawnPartsTests
         """);
 
     [Fact]
-    public void Coils_parted_by_an_ideal_contact() => AllAgree(
+    public void Coils_parted_by_an_ideal_contact_agree_with_the_exact_engine() => AllAgree(
         """
         source E at s : 10 V
         resistor R from s to a : 1 Ω ±10 %
@@ -95,7 +95,7 @@ public sealed class DrawnPartsTests
 
     // Its current is C u′, with an impulse at the step.
     [Fact]
-    public void A_capacitor_across_a_source() => AllAgree(
+    public void A_capacitor_across_a_source_agrees_with_the_exact_engine() => AllAgree(
         """
         source E at s : sine of 100 V at 50 Hz + step of 20 V at 5 ms
         capacitor C from s to ground : 1 µF ±10 %
@@ -109,7 +109,7 @@ public sealed class DrawnPartsTests
         """);
 
     [Fact]
-    public void A_settled_start_with_a_held_charge() => AllAgree(
+    public void A_settled_start_with_a_held_charge_agrees_with_the_exact_engine() => AllAgree(
         """
         source E at s : sine of 30 V at 50 Hz
         source J from ground to m : 0.1 A ±10 %
@@ -126,7 +126,7 @@ public sealed class DrawnPartsTests
         """);
 
     [Fact]
-    public void A_nominal_double_pole() => AllAgree(
+    public void A_nominal_double_pole_agrees_with_the_exact_engine() => AllAgree(
         """
         source E at s : 10 V
         resistor R from s to a : 200 Ω
@@ -139,7 +139,7 @@ public sealed class DrawnPartsTests
 
     // cos t on √(LC) = 1: a repeated pole, the amplitude grows like t
     [Fact]
-    public void A_source_at_resonance() => AllAgree(
+    public void A_source_at_resonance_agrees_with_the_exact_engine() => AllAgree(
         """
         source E at s : cosine of 1 V at 1 Hz / (2*pi)
         inductor L from s to c : 1 H
@@ -151,7 +151,7 @@ public sealed class DrawnPartsTests
 
     // a microohm, a picofarad and a megohm: twenty decades between the poles
     [Fact]
-    public void A_stiff_circuit() => AllAgree(
+    public void A_stiff_circuit_agrees_with_the_exact_engine() => AllAgree(
         """
         capacitor Bulk from a to ground : 100 µF ±10 %, charged to 400 V ±5 %
         resistor Contact from a to b : 1 µΩ ±20 %
@@ -164,7 +164,7 @@ public sealed class DrawnPartsTests
         """);
 
     [Fact]
-    public void An_end_that_follows_from_the_slowest_mode() => AllAgree(
+    public void An_end_that_follows_from_the_slowest_mode_agrees_with_the_exact_engine() => AllAgree(
         """
         source E at s : 10 V ±5 %
         resistor R from s to p : 1 Ω ±10 %
@@ -178,7 +178,7 @@ public sealed class DrawnPartsTests
         """);
 
     [Fact]
-    public void A_phase_and_an_instant() => AllAgree(
+    public void A_phase_and_an_instant_agree_with_the_exact_engine() => AllAgree(
         """
         source Grid at g : sine of 325 V at 50 Hz phase 30°
         resistor R from g to a : 0.5 Ω
