@@ -169,8 +169,8 @@ public sealed class ExtremeSearch
     {
         var piece = curve.Pieces[stretch.Piece];
         var middle = stretch.From + ((stretch.Until - stretch.From) / 2);
-        var model = piece.Between(stretch.From, stretch.Until);
-        Offer(stretch.Piece, middle, sign * piece.ValueAt(middle));
+        var model = piece.Between(stretch.From, stretch.Until, out var value);
+        Offer(stretch.Piece, middle, sign * value);
         var isSmallest = middle <= stretch.From || middle >= stretch.Until;
         if (isSmallest || model.IsMonotone || model.IsBentDown(-sign))
         {

@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using CircuitTransient.Circuits;
 using CircuitTransient.Solutions.Curves;
 using CircuitTransient.Solutions;
@@ -11,6 +12,28 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
 
     private readonly TransientSolution solution = curves.Solution;
     private readonly ImpulseWork impulses = new(curves.Solution);
+
+    /// <summary>The stresses of every part, on as many threads as there are processors, each with curves of
+    /// its own.</summary>
+    public static ImmutableArray<PartResult> Of(
+        CurveBuilder curves, Func<int, double[,]> gram, CancellationToken cancellation)
+    {
+        var results = new PartResult[curves.Solution.Circuit.Parts.Length];
+        Parallel.For(
+            0, results.Length, new ParallelOptions { CancellationToken = cancellation },
+            () =>
+            {
+                var own = new CurveBuilder(curves);
+                return new PartStresses(own, new Infinities(own), gram);
+            },
+            (part, _, stresses) =>
+            {
+                results[part] = stresses.Measure(part);
+                return stresses;
+            },
+            _ => { });
+        return [.. results];
+    }
 
     /// <summary>The stresses of one part.</summary>
     public PartResult Measure(int part)

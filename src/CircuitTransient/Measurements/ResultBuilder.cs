@@ -52,7 +52,7 @@ public sealed class ResultBuilder
     {
         var checking = Check();
         var observed = Observe();
-        var parts = Stress();
+        var parts = PartStresses.Of(curves, s => grams[s], cancellation);
         var requirements = Judge(LinearLimits.Doubt(parts));
         var waves = Sample(observed, requirements);
         var intervals = solution.Intervals.Select(new IntervalMeasurement(solution, energy).Measure)
@@ -103,12 +103,6 @@ public sealed class ResultBuilder
 
     private ImmutableArray<FigureResult> Read() =>
         [.. Each(circuit.Observations.Where(o => o.Quantity is Figure), reading.Measure)];
-
-    private ImmutableArray<PartResult> Stress()
-    {
-        var stresses = new PartStresses(curves, infinities, s => grams[s]);
-        return [.. Each(Enumerable.Range(0, circuit.Parts.Length), stresses.Measure)];
-    }
 
     private ImmutableArray<RequirementResult> Judge(string? doubt)
     {

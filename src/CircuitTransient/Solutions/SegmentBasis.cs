@@ -16,6 +16,7 @@ public sealed class SegmentBasis
         {
             places[i] = Width;
             Width += modes[i].Width;
+            Fastest = Math.Max(Fastest, modes[i].Speed);
         }
     }
 
@@ -24,6 +25,9 @@ public sealed class SegmentBasis
 
     /// <summary>How many real numbers hold all functions at an instant.</summary>
     public int Width { get; }
+
+    /// <summary>The speed of the fastest mode, 1/s.</summary>
+    public double Fastest { get; }
 
     /// <summary>Where a mode's numbers begin.</summary>
     public int Place(int mode) => places[mode];

@@ -47,7 +47,7 @@ public sealed class AllAtOnceSolution
     /// second.</param>
     public static AllAtOnceSolution Solve(
         Circuit circuit, SwitchingSchedule schedule, ImmutableArray<double>? initial = null,
-        double budget = 5e9)
+        double budget = 1.5e10)
     {
         var layout = StorageLayout.Of(circuit);
         var sources = InputModel.Of(circuit);

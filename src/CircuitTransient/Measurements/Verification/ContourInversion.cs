@@ -22,7 +22,7 @@ public static class ContourInversion
     /// allows.</summary>
     /// <param name="budget">Complex multiply-adds that may be spent; some 3e8 take a second.</param>
     public static (ImmutableArray<ContourSample> Samples, ImmutableArray<NotJudged> NotJudged) Samples(
-        AllAtOnceSolution solution, double budget = 3e7)
+        AllAtOnceSolution solution, double budget = 1e8)
     {
         var longest = new Dictionary<Propagator, Segment>();
         foreach (var segment in solution.Segments)
@@ -38,8 +38,7 @@ public static class ContourInversion
         var notJudged = ImmutableArray.CreateBuilder<NotJudged>();
         foreach (var segment in longest.Values.OrderBy(segment => segment.Start))
         {
-            double unknowns = segment.Equations.Unknowns.UnknownCount;
-            if (budget <= 0 || unknowns * unknowns > budget)
+            if (budget <= 0)
             {
                 notJudged.Add(new NotJudged(
                     Name, $"the budget ends before the span from {segment.Start:R} s"));
@@ -75,8 +74,10 @@ public static class ContourInversion
         var points = 0;
         for (var attempt = 0; attempt < MostAttempts && latest > 0; attempt++)
         {
-            var elapsed = latest * Math.Pow(earliest / latest, attempt / (MostAttempts - 1.0));
-            if (!EnclosesSources(inputs, states.AsSpan(storage.Count), elapsed))
+            // as long as the instant that is told says: far from zero it is rounded
+            var elapsed = segment.Start
+                + (latest * Math.Pow(earliest / latest, attempt / (MostAttempts - 1.0))) - segment.Start;
+            if (elapsed <= 0 || !EnclosesSources(inputs, states.AsSpan(storage.Count), elapsed))
             {
                 continue;
             }

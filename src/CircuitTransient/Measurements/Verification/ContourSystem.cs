@@ -1,5 +1,6 @@
 using System.Numerics;
 using CircuitTransient.Numerics;
+using CircuitTransient.Numerics.Sparse;
 
 namespace CircuitTransient.Measurements.Verification;
 
@@ -10,111 +11,109 @@ internal sealed class ContourSystem
 {
     private readonly DescriptorEquations equations;
     private readonly InputModel inputs;
-    private readonly (int Row, int Column)[] places;
+    private readonly SparsePattern pattern;
     private readonly double[] g;
     private readonly double[] e;
-    private EliminationProgram? program;
-    private Complex[] values = [];
+    private readonly Complex[] values;
+    private readonly SparseLu<Complex> lu;
     private readonly Complex[] right;
-    private readonly Complex[] work;
+    private readonly Complex[] solution;
+    private readonly Complex[] residual;
+    private readonly double[] terms;
 
     /// <summary>The system of some equations.</summary>
     public ContourSystem(DescriptorEquations equations, InputModel inputs)
     {
         (this.equations, this.inputs) = (equations, inputs);
-        var elements = new Dictionary<(int, int), (DoubleDouble G, DoubleDouble E)>();
-        foreach (var element in equations.Conductances)
-        {
-            var old = elements.GetValueOrDefault((element.Row, element.Column));
-            elements[(element.Row, element.Column)] = (old.G + element.Value, old.E);
-        }
-
-        foreach (var (row, column, value) in equations.StorageElements())
-        {
-            var old = elements.GetValueOrDefault((row, column));
-            elements[(row, column)] = (old.G, old.E + value);
-        }
-
-        places = [.. elements.Keys];
-        g = [.. elements.Values.Select(pair => (double)pair.G)];
-        e = [.. elements.Values.Select(pair => (double)pair.E)];
-        right = new Complex[2 * Size];
-        work = new Complex[Size];
+        MatrixElement[] storage = [.. equations.StorageElements()];
+        pattern = SparsePattern.Of(
+            Size, [.. equations.Conductances.Concat(storage).Select(at => (at.Row, at.Column))]);
+        (g, e) = (Sum(equations.Conductances, 0), Sum(storage, equations.Conductances.Length));
+        values = new Complex[pattern.Count];
+        lu = new SparseLu<Complex>(pattern);
+        (right, solution) = (new Complex[2 * Size], new Complex[2 * Size]);
+        (residual, terms) = (new Complex[Size], new double[Size]);
     }
 
     /// <summary>Number of unknowns.</summary>
     public int Size => equations.Unknowns.UnknownCount;
 
-    /// <summary>Complex multiply-adds of one point, once a point was solved.</summary>
-    public long Cost => program?.Cost ?? 0;
+    /// <summary>Complex multiply-adds of one point, about, once a point was solved.</summary>
+    public long Cost => 20 * lu.FactorCount;
 
     /// <summary>X at a point: the segment's unknowns, then the probe's. Null where there is no
     /// solution.</summary>
     public ReadOnlySpan<Complex> At(Complex z, ReadOnlySpan<double> states, ReadOnlySpan<double> probe)
     {
-        if (program is null && !Prepare(z))
+        for (var p = 0; p < values.Length; p++)
         {
-            return default;
+            values[p] = g[p] + (z * e[p]);
         }
 
-        if (!(Attempt(z, states, probe) < 1e-9) && (!Prepare(z) || !(Attempt(z, states, probe) < 1e-6)))
-        {
-            return default;
-        }
-
-        return right;
-    }
-
-    private bool Prepare(Complex z)
-    {
-        Fill(z, places.Length);
-        program = EliminationProgram.Of(Size, places, values[..places.Length]);
-        return program is not null;
-    }
-
-    // Solves and returns the residual relative to the terms that make it.
-    private double Attempt(Complex z, ReadOnlySpan<double> states, ReadOnlySpan<double> probe)
-    {
-        Fill(z, program!.ValueCount);
         FillRight(z, states, probe);
-        program.Solve(values, right, work);
-        var terms = new double[Size];
-        var residual = new Complex[Size];
-        for (var k = 0; k < places.Length; k++)
+        right.CopyTo(solution, 0);
+        if (!lu.Factorise(values))
         {
-            var term = (g[k] + (z * e[k])) * right[Size + places[k].Column];
-            residual[places[k].Row] += term;
-            terms[places[k].Row] += Math.Abs(term.Real) + Math.Abs(term.Imaginary);
+            return default;
         }
 
-        foreach (var row in equations.StorageRows)
+        return Refine(0) < 1e-9 && Refine(Size) < 1e-9 ? solution : default;
+    }
+
+    private double[] Sum(IEnumerable<MatrixElement> elements, int firstSlot)
+    {
+        var sum = new DoubleDouble[pattern.Count];
+        foreach (var (k, element) in elements.Index())
         {
-            residual[row.Place] -= row.Sign * probe[row.Index];
-            terms[row.Place] += Math.Abs(probe[row.Index]);
+            sum[pattern.Slots[firstSlot + k]] += element.Value;
         }
 
-        var worst = 0.0;
+        return [.. sum.Select(value => (double)value)];
+    }
+
+    // Solves for one of the right-hand sides, refines once and tells what is left of it.
+    private double Refine(int first)
+    {
+        var x = solution.AsSpan(first, Size);
+        lu.Solve(x);
+        Residual(first);
+        lu.Solve(residual);
         for (var i = 0; i < Size; i++)
         {
-            worst = Math.Max(worst, terms[i] == 0 ? 0 : Complex.Abs(residual[i]) / terms[i]);
+            x[i] += residual[i];
         }
 
-        return worst;
+        return Residual(first);
     }
 
-    private void Fill(Complex z, int count)
+    // Relative to the largest terms of any row, rows in one scale: where a row's own terms are zero but for
+    // rounding, as round a part that a contact shorts, they measure nothing.
+    private double Residual(int first)
     {
-        if (values.Length < count)
+        for (var i = 0; i < Size; i++)
         {
-            values = new Complex[count];
+            residual[i] = right[first + i];
+            terms[i] = Complex.Abs(residual[i]);
         }
 
-        for (var k = 0; k < places.Length; k++)
+        for (var j = 0; j < Size; j++)
         {
-            values[k] = g[k] + (z * e[k]);
+            for (var p = pattern.Starts[j]; p < pattern.Starts[j + 1]; p++)
+            {
+                var term = values[p] * solution[first + j];
+                residual[pattern.Rows[p]] -= term;
+                terms[pattern.Rows[p]] += Math.Abs(term.Real) + Math.Abs(term.Imaginary);
+            }
         }
 
-        Array.Clear(values, places.Length, values.Length - places.Length);
+        var (worst, largest) = (0.0, 0.0);
+        for (var i = 0; i < Size; i++)
+        {
+            worst = Math.Max(worst, Complex.Abs(residual[i]) * lu.RowScale(i));
+            largest = Math.Max(largest, terms[i] * lu.RowScale(i));
+        }
+
+        return largest == 0 ? 0 : worst / largest;
     }
 
     private void FillRight(Complex z, ReadOnlySpan<double> states, ReadOnlySpan<double> probe)

@@ -24,13 +24,16 @@ internal sealed record DescriptorEquations(
         new Stamps(circuit, storage, UnknownLayout.Of(circuit, closed, resistorsAsBranches)).Equations();
 
     /// <summary>The elements of E, to be added where several share a place.</summary>
-    public IEnumerable<MatrixElement> StorageElements() =>
-        from element in Storage.Values
-        from row in StorageRows
-        where row.Index == element.Row
-        from column in StorageColumns
-        where column.Index == element.Column
-        select new MatrixElement(row.Place, column.Place, element.Value * (row.Sign * column.Sign));
+    public IEnumerable<MatrixElement> StorageElements()
+    {
+        var (rows, columns) =
+            (StorageRows.ToLookup(row => row.Index), StorageColumns.ToLookup(column => column.Index));
+        return
+            from element in Storage.Values
+            from row in rows[element.Row]
+            from column in columns[element.Column]
+            select new MatrixElement(row.Place, column.Place, element.Value * (row.Sign * column.Sign));
+    }
 
     private sealed class Stamps(Circuit circuit, StorageLayout storage, UnknownLayout unknowns)
     {

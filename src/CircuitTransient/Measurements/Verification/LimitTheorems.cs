@@ -44,13 +44,14 @@ public static class LimitTheorems
 
         var segment = solution.Segments[^1];
         var sources = FinalSources(solution, segment);
+        var pencil = new SparsePencil(segment.Equations, solution.Inputs);
         var nodes = new List<Sample>();
         Sample? last = null;
         var stands = 0;
         for (var k = 1; k <= MostSteps; k++)
         {
             var s = Math.ScaleB(segment.Propagator.Radius, -8 * k);
-            if (SampleAt(solution, segment, s) is not { } sample)
+            if (SampleAt(solution, segment, pencil, s) is not { } sample)
             {
                 return null;
             }
@@ -73,11 +74,12 @@ public static class LimitTheorems
 
     private static Sample[]? Expansion(AllAtOnceSolution solution, Segment segment)
     {
+        var pencil = new SparsePencil(segment.Equations, solution.Inputs);
         var samples = new Sample[Nodes];
         for (var k = 0; k < Nodes; k++)
         {
             var s = segment.Propagator.Radius * Math.Pow(Ratio, Nodes - k);
-            if (SampleAt(solution, segment, s) is not { } sample)
+            if (SampleAt(solution, segment, pencil, s) is not { } sample)
             {
                 return null;
             }
@@ -88,12 +90,15 @@ public static class LimitTheorems
         return samples;
     }
 
-    // X(s) and Q(s) with the quantities stored just before the span.
-    private static Sample? SampleAt(AllAtOnceSolution solution, Segment segment, double s)
+    // X(s) and Q(s) with the quantities stored just before the span; by dense elimination where factors in
+    // double gain nothing on a nearly singular pencil.
+    private static Sample? SampleAt(
+        AllAtOnceSolution solution, Segment segment, SparsePencil pencil, double s)
     {
         var count = solution.Storage.Count + solution.Inputs.StateCount;
         var states = segment.Propagator.Stored(segment.Before, count);
-        return ShiftedSolve.Of(segment.Equations, solution.Inputs, s, states) is var (unknowns, stored)
+        return (pencil.At(s, states) ?? ShiftedSolve.Of(segment.Equations, solution.Inputs, s, states))
+            is var (unknowns, stored)
             ? new Sample(s, unknowns, stored)
             : null;
     }

@@ -63,73 +63,34 @@ internal sealed record ShiftedSolve(double Shift, SplitMatrix Unknowns, SplitMat
     public static (DoubleDouble[] Unknowns, DoubleDouble[] Stored)? Of(
         DescriptorEquations equations, InputModel inputs, double shift, ReadOnlySpan<DoubleDouble> states)
     {
-        var (n, m) = (equations.Unknowns.UnknownCount, equations.Storage.Count);
-        var size = n + inputs.StateCount;
-        var system = new SplitMatrix(size, size + 1);
+        var n = equations.Unknowns.UnknownCount;
+        var system = new SplitMatrix(n + inputs.StateCount, n + inputs.StateCount + 1);
         FillPencil(system, equations, inputs, shift);
-        foreach (var row in equations.StorageRows)
+        foreach (var (place, value) in AugmentedEquations.RightSide(equations, inputs, states).Index())
         {
-            system[row.Place, size] += row.Sign * states[row.Index];
+            system[place, system.Rows] = value;
         }
 
-        for (var state = 0; state < inputs.StateCount; state++)
-        {
-            system[n + state, size] = states[m + state];
-        }
-
-        if (SplitElimination.Solve(system, equilibrates: true) is not { } x)
+        if (SplitElimination.Solve(system, equilibrates: true) is not { } solution)
         {
             return null;
         }
 
-        var voltages = new DoubleDouble[m];
-        foreach (var column in equations.StorageColumns)
-        {
-            voltages[column.Index] += column.Sign * x[column.Place, 0];
-        }
-
-        var stored = new DoubleDouble[m];
-        foreach (var element in equations.Storage.Values)
-        {
-            stored[element.Row] += element.Value * voltages[element.Column];
-        }
-
-        return ([.. Enumerable.Range(0, n).Select(i => x[i, 0])], stored);
+        DoubleDouble[] x = [.. Enumerable.Range(0, n).Select(i => solution[i, 0])];
+        return (x, AugmentedEquations.StoredOf(equations, x));
     }
 
     private static void FillPencil(
         SplitMatrix system, DescriptorEquations equations, InputModel inputs, double shift)
     {
-        var n = equations.Unknowns.UnknownCount;
-        foreach (var element in equations.Conductances)
+        foreach (var element in AugmentedEquations.Constant(equations, inputs))
         {
             system[element.Row, element.Column] += element.Value;
         }
 
-        foreach (var element in equations.StorageElements())
+        foreach (var element in AugmentedEquations.Linear(equations, inputs))
         {
             system[element.Row, element.Column] += element.Value * shift;
-        }
-
-        foreach (var rate in inputs.Rates())
-        {
-            system[n + rate.Row, n + rate.Column] += -rate.Value;
-        }
-
-        for (var state = 0; state < inputs.StateCount; state++)
-        {
-            system[n + state, n + state] += shift;
-        }
-
-        foreach (var input in equations.Inputs)
-        {
-            foreach (var group in inputs.Groups)
-            {
-                if (group.Part == input.Index)
-                {
-                    system[input.Place, n + group.First] += -input.Sign;
-                }
-            }
         }
     }
 

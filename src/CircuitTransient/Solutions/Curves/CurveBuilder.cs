@@ -7,6 +7,8 @@ namespace CircuitTransient.Solutions.Curves;
 /// <summary>Makes curves of measured quantities from a solution.</summary>
 public sealed class CurveBuilder
 {
+    private const long MostNumbersKept = 8_000_000; // 64 MB
+
     private readonly TransientSolution solution;
     private readonly ImmutableArray<SegmentTable> tables;
     private readonly ImpulseWork impulses;
@@ -19,7 +21,8 @@ public sealed class CurveBuilder
     {
         this.solution = solution;
         impulses = new ImpulseWork(solution);
-        tables = [.. solution.Segments.Select(s => new SegmentTable(s))];
+        var room = new StretchRoom(MostNumbersKept);
+        tables = [.. solution.Segments.Select(s => new SegmentTable(s, room))];
     }
 
     /// <summary>Shares the tables of another: each thread has a builder of its own.</summary>
@@ -35,10 +38,11 @@ public sealed class CurveBuilder
     {
         this.solution = solution;
         impulses = new ImpulseWork(solution);
+        var room = new StretchRoom(MostNumbersKept);
         tables = [.. solution.Segments.Select((s, i) =>
             i < other.tables.Length && ReferenceEquals(other.tables[i].Segment, s)
                 ? other.tables[i]
-                : new SegmentTable(s))];
+                : new SegmentTable(s, room))];
     }
 
     private CurveBuilder(CurveBuilder other, (double From, double To) window)

@@ -45,15 +45,15 @@ public abstract class CurvePiece(SegmentTable table)
     }
 
     /// <summary>The model of the stretch from one instant to another.</summary>
-    public TaylorModel Between(double from, double until)
+    public TaylorModel Between(double from, double until) => Between(from, until, out _);
+
+    /// <summary>The model of the stretch from one instant to another, and the value half way.</summary>
+    public TaylorModel Between(double from, double until, out double middle)
     {
-        var basis = Segment.Basis;
-        var phi = new double[basis.Width];
-        var envelope = new double[basis.Width];
         var half = (until - from) / 2;
-        basis.Evaluate(from + half, phi);
-        basis.Envelope(from, until, envelope);
-        return Around(from + half, half, phi, envelope);
+        var (phi, envelope) = Table.Stretch(from, until);
+        middle = ValueAt(from + half, phi.Span);
+        return Around(from + half, half, phi.Span, envelope.Span);
     }
 
     /// <summary>Takes the values at the tabulated instants.</summary>

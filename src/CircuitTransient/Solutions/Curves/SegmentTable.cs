@@ -1,4 +1,6 @@
 
+using System.Collections.Concurrent;
+
 namespace CircuitTransient.Solutions.Curves;
 
 /// <summary>A segment's functions tabulated where they move, once for all curves on it.</summary>
@@ -8,11 +10,20 @@ public sealed class SegmentTable
     private readonly double[] envelopes;
     private readonly double[] middles;
     private readonly int width;
+    private readonly StretchRoom room;
+    private readonly ConcurrentDictionary<(double From, double Until), double[]> stretches = [];
     private readonly Lazy<(int[] Starts, double[] Weights, double[] Values)> nodes;
 
     /// <summary>Tabulates a segment.</summary>
     public SegmentTable(Segment segment)
+        : this(segment, new StretchRoom(0))
     {
+    }
+
+    /// <summary>Tabulates a segment with room for stretches that searches ask for.</summary>
+    internal SegmentTable(Segment segment, StretchRoom room)
+    {
+        this.room = room;
         Segment = segment;
         Instants = SamplingSteps.Of(segment.Basis, segment.Length, stepFraction: 1.5, mostSteps: 300);
         width = segment.Basis.Width;
@@ -44,6 +55,26 @@ public sealed class SegmentTable
         }
 
         return sum;
+    }
+
+    /// <summary>The functions half way between two instants, then their bounds over the stretch. Searches
+    /// halve the same stretches for one quantity after another, and functions cost far more than a
+    /// quantity's sum of them.</summary>
+    internal (ReadOnlyMemory<double> Middle, ReadOnlyMemory<double> Envelope) Stretch(
+        double from, double until)
+    {
+        if (!stretches.TryGetValue((from, until), out var both))
+        {
+            both = new double[2 * width];
+            Segment.Basis.Evaluate(from + ((until - from) / 2), both.AsSpan(0, width));
+            Segment.Basis.Envelope(from, until, both.AsSpan(width));
+            if (width >= StretchRoom.Worthwhile && room.Take(both.Length))
+            {
+                stretches.TryAdd((from, until), both);
+            }
+        }
+
+        return (both.AsMemory(0, width), both.AsMemory(width));
     }
 
     private (int[] Starts, double[] Weights, double[] Values) PlaceNodes()

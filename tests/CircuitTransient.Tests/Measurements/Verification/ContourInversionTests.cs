@@ -62,6 +62,29 @@ public sealed class ContourInversionTests
         Near(solution, sample, new VoltageBetween(1, 0), 5);
     }
 
+    // Drawn at random: the contacts leave rows that hold rounding alone.
+    [Fact]
+    public void Parts_that_contacts_short_do_not_drive_the_sample_to_an_earlier_instant()
+    {
+        var built = new HandBuilt();
+        built.Voltage(1, 0, Step(10), Sine(3, 1e4));
+        for (var node = 1; node <= 5; node++)
+        {
+            built.Resistor(node, node - 1, 100 * node);
+        }
+
+        built.Capacitor(3, 5, 2.05e-11, 2);
+        built.Capacitor(5, 0, 9.26e-10);
+        built.Resistor(5, 2, 1e-6);
+        built.Capacitor(3, 1, 2.55e-7);
+        built.Resistor(4, 1, 1);
+        built.Capacitor(4, 2, 7.09e-12);
+        built.Resistor(5, 0, 1.01);
+        int[] closed = [built.Switch(4, 3), built.Switch(5, 3), built.Switch(3, 1)];
+        var sample = Assert.Single(ContourInversion.Samples(built.Solve(1e-3, closed)).Samples);
+        Assert.Equal(0.4e-3, sample.Time, 1e-15);
+    }
+
     [Fact]
     public void A_spent_budget_is_said()
     {
