@@ -117,13 +117,7 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
 
     private Answer Finish(string file, TransientResult result)
     {
-        streams.Report([.. result.Warnings.Select(w => w.Diagnostic).OfType<Diagnostic>()]);
-        foreach (var warning in result.Warnings.Where(w => w.Diagnostic is null))
-        {
-            var place = warning.Line > 0 ? $"{file}:{warning.Line}" : file;
-            streams.Error.WriteLine($"{place}: warning: {warning.Text}");
-        }
-
+        streams.Warn(file, result.Warnings);
         var status = ExitStatus.Of(result, options.IsStrict);
         var verdict = TerminalSummary.Verdict(result);
         if (options.Folder is null)
