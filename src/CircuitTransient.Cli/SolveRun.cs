@@ -109,7 +109,10 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
     {
         var end = EngineeringNumber.Format(until, "s");
         var late = options.At.Instants.Where(instant => instant.Value > until).Select(instant =>
-            Diagnostic.Error(options.At.Source, instant.Span, $"the study ends before it, at {end}"));
+            Diagnostic.Error(
+                options.At.Source, instant.Span, $"the study ends before it, at {end}",
+                $"ask for one up to {end}, or end the study later: "
+                    + $"`until {options.At.Source[instant.Span]}`"));
         var mistakes = late.ToImmutableArray();
         streams.Report(mistakes);
         return mistakes.IsEmpty;
