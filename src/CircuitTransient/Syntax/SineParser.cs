@@ -3,7 +3,7 @@ namespace CircuitTransient.Syntax;
 /// <summary>Reads sines and cosines, behind their first words.</summary>
 internal static class SineParser
 {
-    private static readonly string[] options = ["phase", "from", "until", "decaying"];
+    private static readonly string[] Options = ["phase", "from", "until", "decaying"];
 
     public static SineSyntax? Read(StatementCursor cursor, int start, bool isCosine)
     {
@@ -43,7 +43,7 @@ internal static class SineParser
 
     private static bool IsOption(StatementCursor cursor)
     {
-        foreach (var option in options)
+        foreach (var option in Options)
         {
             if (cursor.IsWord(option))
             {
