@@ -104,7 +104,7 @@ internal static class StoredContradictions
 
     private static void Add(
         Dictionary<int, (double Sum, double Largest, Inductor? Coil)> sums, int node, double current,
-            Part part)
+        Part part)
     {
         var (sum, largest, coil) = sums.GetValueOrDefault(node);
         var stated = part is Inductor { InitialCurrent: not null } inductor ? inductor : null;
