@@ -61,7 +61,7 @@ internal static class SineParser
     }
 
     private static bool IsBehindComma(StatementCursor cursor) =>
-        cursor.IsSign(',') && options.Contains(cursor.Shown(cursor.Ahead(1)));
+        cursor.IsSign(',') && Options.Contains(cursor.Shown(cursor.Ahead(1)));
 
     private static void ReportComma(StatementCursor cursor, int start)
     {
