@@ -97,6 +97,9 @@ public static class App
     /// <summary>What is missing in our words; all else says itself.</summary>
     private static string Words(ParseError error, Command command) => error.SymbolResult switch
     {
+        ArgumentResult { Tokens: [], Parent: CommandResult } or CommandResult { Tokens: [] }
+            when command is CompareCommand =>
+            $"say which two results documents: `{Name} compare BEFORE AFTER`",
         ArgumentResult { Tokens: [], Parent: CommandResult } or CommandResult { Tokens: [] } =>
             $"say which circuit file: `{Name} {command.Name} FILE`",
         OptionResult { Tokens: [], Option: var option } =>

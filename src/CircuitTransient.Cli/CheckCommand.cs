@@ -36,7 +36,7 @@ internal sealed class CheckCommand : Command
 
         if (!unsolvable.IsEmpty)
         {
-            return ExitStatus.NoUniqueSolution;
+            return ExitStatus.OfUnsolved(unsolvable);
         }
 
         streams.Output.WriteLine($"{file}: no mistakes{Warnings(outcome.Diagnostics.Length)}");

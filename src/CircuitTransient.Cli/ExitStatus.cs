@@ -1,4 +1,5 @@
 using CircuitTransient.Measurements;
+using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
 
@@ -25,6 +26,13 @@ public static class ExitStatus
 
     /// <summary>Stopped by Ctrl-C.</summary>
     public const int Interrupted = 130;
+
+    /// <summary>The status of a circuit that was built and could not be solved.</summary>
+    /// <param name="diagnostics">What was said of it.</param>
+    public static int OfUnsolved(IEnumerable<Diagnostic> diagnostics) =>
+        diagnostics.Any(d => d is { Severity: Severity.Error, SaysTooLittle: false })
+            ? NoUniqueSolution
+            : Mistake;
 
     /// <summary>The status of a circuit that was solved.</summary>
     /// <param name="result">Its result.</param>

@@ -9,6 +9,8 @@ public sealed class Interruption : IDisposable
     // Half a second is promised; what is left of it is for removing unfinished files and leaving.
     private static readonly TimeSpan Grace = TimeSpan.FromMilliseconds(300);
 
+    private static readonly TimeSpan GraceOfWriting = TimeSpan.FromSeconds(5);
+
     private readonly CancellationTokenSource source = new();
     private readonly PosixSignalRegistration interrupt;
     private readonly PosixSignalRegistration terminate;
@@ -41,6 +43,9 @@ public sealed class Interruption : IDisposable
 
         source.Cancel();
         Thread.Sleep(Grace);
+
+        // What a large study leaves to go on with takes longer, and is worth it.
+        SpinWait.SpinUntil(() => !UnfinishedFile.IsAny, GraceOfWriting);
         UnfinishedFile.RemoveAll();
         Environment.Exit(ExitStatus.Interrupted);
     }

@@ -45,7 +45,7 @@ public sealed class SizeRun(
         if (outcome.Value is not { } result)
         {
             streams.Report(outcome.Diagnostics);
-            return ExitStatus.NoUniqueSolution;
+            return ExitStatus.OfUnsolved(outcome.Diagnostics);
         }
 
         var status = !result.ChecksHold ? ExitStatus.SelfCheckFailed

@@ -109,7 +109,10 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
     {
         var end = EngineeringNumber.Format(until, "s");
         var late = options.At.Instants.Where(instant => instant.Value > until).Select(instant =>
-            Diagnostic.Error(options.At.Source, instant.Span, $"the study ends before it, at {end}"));
+            Diagnostic.Error(
+                options.At.Source, instant.Span, $"the study ends before it, at {end}",
+                $"ask for one up to {end}, or end the study later: "
+                    + $"`until {options.At.Source[instant.Span]}`"));
         var mistakes = late.ToImmutableArray();
         streams.Report(mistakes);
         return mistakes.IsEmpty;
@@ -117,13 +120,7 @@ public sealed class SolveRun(SolveOptions options, Streams streams, Cancellation
 
     private Answer Finish(string file, TransientResult result)
     {
-        streams.Report([.. result.Warnings.Select(w => w.Diagnostic).OfType<Diagnostic>()]);
-        foreach (var warning in result.Warnings.Where(w => w.Diagnostic is null))
-        {
-            var place = warning.Line > 0 ? $"{file}:{warning.Line}" : file;
-            streams.Error.WriteLine($"{place}: warning: {warning.Text}");
-        }
-
+        streams.Warn(file, result.Warnings);
         var status = ExitStatus.Of(result, options.IsStrict);
         var verdict = TerminalSummary.Verdict(result);
         if (options.Folder is null)

@@ -105,12 +105,7 @@ public sealed class SpreadRun(
 
     private int HandOver(string file, SpreadResult result, CircuitFile reading, StudyPartial partial)
     {
-        foreach (var warning in result.Nominal.Warnings)
-        {
-            var place = warning.Line > 0 ? $"{file}:{warning.Line}" : file;
-            streams.Error.WriteLine($"{place}: warning: {warning.Text}");
-        }
-
+        streams.Warn(file, result.Nominal.Warnings);
         var status = !result.Nominal.ChecksHold || result.Worst?.Result.ChecksHold == false
             ? ExitStatus.SelfCheckFailed
             : result.AllHold ? ExitStatus.Success : ExitStatus.RequirementBroken;

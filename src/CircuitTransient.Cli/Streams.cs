@@ -1,5 +1,6 @@
 using System.Collections.Immutable;
 using System.Text;
+using CircuitTransient.Measurements;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
@@ -35,6 +36,17 @@ public sealed record Streams(
     /// <summary>Diagnostics with their places.</summary>
     public void Report(ImmutableArray<Diagnostic> diagnostics) =>
         Error.Write(DiagnosticText.Render(diagnostics));
+
+    /// <summary>A result's warnings: with their places in the text where they have one.</summary>
+    public void Warn(string file, ImmutableArray<Notice> warnings)
+    {
+        Report([.. warnings.Select(w => w.Diagnostic).OfType<Diagnostic>()]);
+        foreach (var warning in warnings.Where(w => w.Diagnostic is null))
+        {
+            var place = warning.Line > 0 ? $"{file}:{warning.Line}" : file;
+            Error.WriteLine($"{place}: warning: {warning.Text}");
+        }
+    }
 
     /// <inheritdoc/>
     public void Dispose()

@@ -37,6 +37,9 @@ public sealed class UnfinishedFile : IDisposable
         }
     }
 
+    /// <summary>Whether something is being written anywhere in the process.</summary>
+    public static bool IsAny => !Unfinished.IsEmpty;
+
     /// <summary>Removes what is unfinished anywhere in the process.</summary>
     public static void RemoveAll()
     {

@@ -37,6 +37,8 @@ public static class TransientAnalysis
         var warnings = circuit.Diagnostics;
         return solution.Succeeded
             ? new Solved(ResultBuilder.Measure(solution.Value, warnings, options, cancellation))
+            : solution.Diagnostics.Any(d => d.SaysTooLittle)
+            ? new Mistakes([.. warnings, .. solution.Diagnostics])
             : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
     }
 

@@ -83,6 +83,7 @@ public static class CircuitChecker
     {
         var until = settings.End(state, Scope.Outermost(settings.Reference));
         LowerParts(state);
+        CauseNames.Check(state);
         StoreCount.Check(state);
         var couplings = CouplingLowering.Lower(state);
         SwitchOrder.Check(state, until);
@@ -97,7 +98,7 @@ public static class CircuitChecker
             }
         }
 
-        CheckTopology(state, settings);
+        CheckTopology(state, settings, couplings);
         return new Circuit(
             state.Findings.Source, settings.Title, settings.Notes, state.Nodes.Names,
             [.. state.Parts.OfType<Part>()], couplings, state.Parameters.ToImmutable(), observations,
@@ -119,7 +120,8 @@ public static class CircuitChecker
         }
     }
 
-    private static void CheckTopology(CheckState state, StudySettings settings)
+    private static void CheckTopology(
+        CheckState state, StudySettings settings, ImmutableArray<Coupling> couplings)
     {
         if (state.Declared.Count == 0)
         {
@@ -136,7 +138,7 @@ public static class CircuitChecker
 
         if (!state.Findings.HasErrors)
         {
-            StoredContradictions.Check(state);
+            StoredContradictions.Check(state, couplings, settings.StartsSettled);
         }
     }
 

@@ -39,7 +39,8 @@ internal static class CoilSets
         Sets(parts, couplings).Where(s => s.Coils.Length > MostCoils)
             .Select(s => new CoilSet(s.Coils, s.Couplings.First(), double.NaN));
 
-    private static IEnumerable<(int[] Coils, IEnumerable<Coupling> Couplings)> Sets(
+    /// <summary>The sets of coils that hang together by couplings.</summary>
+    public static IEnumerable<(int[] Coils, IEnumerable<Coupling> Couplings)> Sets(
         IReadOnlyList<Part?> parts, IReadOnlyCollection<Coupling> couplings)
     {
         var sets = new DisjointSets(parts.Count);
@@ -55,20 +56,26 @@ internal static class CoilSets
 
     // Stored energy ½ iᵀ L i is never negative if and only if the factors' matrix has no negative eigenvalue.
     private static double LeastEnergy(
-        IReadOnlyList<Part?> parts, int[] coils, IEnumerable<Coupling> couplings)
+        IReadOnlyList<Part?> parts, int[] coils, IEnumerable<Coupling> couplings) =>
+        LeastEnergy(coils, couplings, c => Factor(parts, c));
+
+    /// <summary>The least stored energy of coils, relative to what they store alone.</summary>
+    public static double LeastEnergy(
+        int[] coils, IEnumerable<Coupling> couplings, Func<Coupling, double> factorOf)
     {
         var factors = Matrix<double>.Build.DenseIdentity(coils.Length);
         foreach (var coupling in couplings)
         {
             var i = Array.BinarySearch(coils, coupling.First);
             var j = Array.BinarySearch(coils, coupling.Second);
-            factors[i, j] = factors[j, i] = Factor(parts, coupling);
+            factors[i, j] = factors[j, i] = factorOf(coupling);
         }
 
         return factors.Evd(Symmetricity.Symmetric).EigenValues.Min(v => v.Real);
     }
 
-    private static double Factor(IReadOnlyList<Part?> parts, Coupling coupling) => coupling.IsFactor
+    /// <summary>The coupling factor of two coils.</summary>
+    public static double Factor(IReadOnlyList<Part?> parts, Coupling coupling) => coupling.IsFactor
         ? coupling.Value.Nominal
         : coupling.Value.Nominal / Math.Sqrt(
             ((Inductor)parts[coupling.First]!).Inductance.Nominal

@@ -21,6 +21,11 @@ internal static class CouplingLowering
         }
 
         CheckEnergy(state, couplings);
+        if (!state.Findings.HasErrors)
+        {
+            CouplingTolerances.Check(state, couplings);
+        }
+
         return couplings.ToImmutable();
     }
 

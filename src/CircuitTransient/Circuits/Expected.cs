@@ -26,7 +26,7 @@ internal static class Expected
         if (state.Parameters.FirstToleranced(value.Formula) is { } held)
         {
             state.Findings.Warn(expression.Span, $"`{held.Name}` is held at its nominal value here",
-                "its tolerance is drawn in part values, charges, currents and single waves only");
+                "its tolerance is drawn in part values, charges, currents and levels of waves only");
         }
 
         return value.Value;

@@ -26,6 +26,14 @@ internal static class Measurands
 
     private static NamedMeasurand? NodeVoltage(CheckState state, NodeVoltageSyntax syntax, Scope scope)
     {
+        if (syntax.Against is null && IsPart(state, syntax.Node, scope))
+        {
+            var part = state.Text(syntax.Node.Span);
+            state.Findings.Error(syntax.Node.Span, $"`{part}` is a part, and no node has that name",
+                $"for the voltage between its ends write `voltage across {part}`");
+            return null;
+        }
+
         var node = state.Nodes.Find(syntax.Node, scope);
         var against = syntax.Against is null ? 0 : state.Nodes.Find(syntax.Against, scope);
         if (node is not { } from || against is not { } to)
@@ -38,6 +46,10 @@ internal static class Measurands
             : $"voltage from {state.Nodes[from]} to {state.Nodes[to]}";
         return Named(new VoltageBetween(from, to), name, Dimension.Voltage);
     }
+
+    private static bool IsPart(CheckState state, NameSyntax name, Scope scope) =>
+        !state.Nodes.IsKnown(name, scope)
+        && state.Names.TryGet(scope.Full(name, state.Findings), out var part) && !part.IsCoupling;
 
     private static NamedMeasurand? OfPart(CheckState state, PartQuantitySyntax syntax, Scope scope)
     {

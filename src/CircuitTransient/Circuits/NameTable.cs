@@ -93,7 +93,13 @@ internal sealed class NameTable<T>(string noun, Findings findings)
     private void ReportTaken(string name, TextSpan span, Entry taken)
     {
         var line = findings.LineOf(taken.Span);
-        if (taken.Name == name)
+        if (taken.Span == span)
+        {
+            findings.Error(span, $"the repetition makes a second {noun} named `{name}`",
+                name.EndsWith(']') ? "let its index go with the counter"
+                    : $"number them by the counter: `{name}[k]` where the block begins with `repeat … as k`");
+        }
+        else if (taken.Name == name)
         {
             findings.Error(span, $"there are two {plural} named `{name}`",
                 $"the first stands in line {line}; give this one a name of its own");

@@ -26,6 +26,9 @@ internal sealed class NamedValues
 
     public bool IsKnown(string name) => table.TryGet(name, out _);
 
+    /// <summary>Whether a value has that name or one that differs in case.</summary>
+    public bool IsNearlyKnown(string name) => table.Names.Contains(name, StringComparer.OrdinalIgnoreCase);
+
     /// <summary>Names a value.</summary>
     /// <param name="name">Its full name.</param>
     /// <param name="span">Where the name stands.</param>

@@ -68,6 +68,9 @@ internal sealed class NodeTable
     public int? Find(NameSyntax name, Scope scope) =>
         names.Find(scope.Node(name, findings), name.Span, out var index) ? index : null;
 
+    /// <summary>Whether there is a node of that name.</summary>
+    public bool IsKnown(NameSyntax name, Scope scope) => names.TryGet(scope.Node(name, findings), out _);
+
     /// <summary>The node nearest in name to another, or null; a node that hangs loose itself is
     /// none.</summary>
     public string? NearestTo(int node) =>

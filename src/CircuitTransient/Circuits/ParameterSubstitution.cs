@@ -73,8 +73,8 @@ public static class ParameterSubstitution
             Inductance = Put(l.Inductance, values),
             InitialCurrent = PutOptional(l.InitialCurrent, values),
         },
-        VoltageSource s => s with { Wave = s.Wave with { Scale = Put(s.Wave.Scale, values) } },
-        CurrentSource s => s with { Wave = s.Wave with { Scale = Put(s.Wave.Scale, values) } },
+        VoltageSource s => s with { Wave = Put(s.Wave, values) },
+        CurrentSource s => s with { Wave = Put(s.Wave, values) },
         DependentSource d => d with { Gain = Put(d.Gain, values) },
         Switch s => s with
         {
@@ -85,6 +85,12 @@ public static class ParameterSubstitution
         IdealTransformer => part,
         _ => throw new UnreachableException($"no values of {part}"),
     };
+
+    private static Wave Put(Wave wave, double[] values) => new(
+        wave.Pieces.Any(p => p.Share is not null)
+            ? [.. wave.Pieces.Select(p => p.Share is null ? p : p.At(Put(p.Share.Factor, values).Nominal))]
+            : wave.Pieces,
+        Put(wave.Scale, values));
 
     private static Trigger Put(Trigger trigger, double[] values) => trigger switch
     {

@@ -106,6 +106,11 @@ public sealed record Switch(
 {
     /// <inheritdoc/>
     public override string Kind => "switch";
+
+    /// <summary>Whether it acts at 0 s: that is a switching with its own impulse, before which nothing
+    /// moves.</summary>
+    public bool ActsAtStart() =>
+        Events is [{ Trigger: AtInstant { Instant: { Delay.Nominal: 0, After: null } } }, ..];
 }
 
 /// <summary>A declared closing or opening.</summary>

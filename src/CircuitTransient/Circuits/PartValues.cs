@@ -76,7 +76,7 @@ internal static class PartValues
     private static Evaluated? Read(
         CheckState state, PartDeclaration part, ExpressionSyntax expression, Dimension dimension)
     {
-        if (MarkOf(expression) is not { } mark)
+        if (MarkOf(state, part, expression, dimension) is not { } mark)
         {
             return Expected.Value(state, expression, part.Scope, dimension);
         }
@@ -103,14 +103,24 @@ internal static class PartValues
 
     private static string Say(Evaluated value) => Amount.Of(value.Value, Measure.Of(value.Dimension).Unit);
 
-    // `R047` is written like a name; where a part says the unit it is the marking code.
-    private static string? MarkOf(ExpressionSyntax expression) => expression switch
+    // `R047` is written like a name; where a part says the unit it is the marking code. So is `n47`, unless a
+    // value has that name.
+    private static string? MarkOf(
+        CheckState state, PartDeclaration part, ExpressionSyntax expression, Dimension dimension)
     {
-        NumberSyntax { HasUnit: false, Mark: { } mark } => mark,
-        NameExpressionSyntax { Name: { IsQuoted: false, Index: null, Owner: null, Text: var text } }
-            when MarkingCode.TryRead(text, out _) => text,
-        _ => null,
-    };
+        switch (expression)
+        {
+            case NumberSyntax { HasUnit: false, Mark: { } mark }:
+                return mark;
+            case NameExpressionSyntax { Name: { IsQuoted: false, Index: null, Owner: null, Text: var text } }:
+                var isFree = !part.Scope.Counters.ContainsKey(text) && !state.Values.IsNearlyKnown(text)
+                    && !state.Values.IsNearlyKnown(part.Scope.Prefix + text);
+                return MarkingCode.TryRead(text, out _)
+                    || (isFree && MarkingCode.TryRead(text, dimension, out _)) ? text : null;
+            default:
+                return null;
+        }
+    }
 
     private static bool ToleranceReachesZero(
         CheckState state, PartDeclaration part, ToleratedSyntax syntax, Evaluated value, string aspect)

@@ -5,127 +5,106 @@ namespace CircuitTransient.Circuits;
 /// <summary>Starts that contradict themselves: stated charges and currents that jump at t = 0.</summary>
 internal static class StoredContradictions
 {
-    private const double Rounding = 1e-9; // stated values that agree to nine digits are meant to agree
+    private const int MostNamed = 3;
 
-    public static void Check(CheckState state)
+    /// <summary>Warns of each set of capacitors or coils whose stated quantities contradict each other, with
+    /// the jumps that follow.</summary>
+    public static void Check(CheckState state, IReadOnlyCollection<Coupling> couplings, bool startsSettled)
     {
-        CheckLoops(state);
-        CheckCutSets(state);
-    }
+        // What these do to the sharing is known when the equations are solved.
+        var isPlain = !state.Parts.Any(p => p is IdealTransformer or DependentSource
+            || (p is Switch s && s.ActsAtStart())) && !couplings.Any(c => IsTight(state, c));
+        Report(new StoredCharges(state.Parts, state.Nodes.Count).Contradictions());
+        Report(new StoredCurrents(state.Parts, state.Nodes.Count, couplings).Contradictions());
 
-    // Round a loop of sources, capacitors and closed contacts the voltages sum to zero.
-    private static void CheckLoops(CheckState state)
-    {
-        var sets = new DisjointSets(state.Nodes.Count);
-        foreach (var part in state.Parts.OfType<Switch>().Where(IsShut))
+        void Report(IEnumerable<Contradiction> found)
         {
-            sets.Join(part.From, part.To);
-        }
-
-        foreach (var source in state.Parts.OfType<VoltageSource>())
-        {
-            sets.Join(source.From, source.To, AtStart(source.Wave));
-        }
-
-        foreach (var capacitor in state.Parts.OfType<Capacitor>().Where(c => c.InitialVoltage is not null)
-            .Concat(state.Parts.OfType<Capacitor>().Where(c => c.InitialVoltage is null)))
-        {
-            var stated = capacitor.InitialVoltage?.Nominal ?? 0;
-            var (from, to) = (sets.Find(capacitor.From), sets.Find(capacitor.To));
-            if (from.Root != to.Root)
+            foreach (var contradiction in found)
             {
-                sets.Join(capacitor.From, capacitor.To, stated);
-                continue;
-            }
-
-            var imposed = from.Height - to.Height;
-            var jump = imposed - stated;
-            if (Math.Abs(jump) > Rounding * Math.Max(Math.Abs(imposed), Math.Abs(stated))
-                && Clause<ChargedToSyntax>(state, capacitor) is { } clause)
-            {
-                state.Findings.Warn(clause.Span,
-                    $"`{capacitor.Name}` is charged to {Amount.Of(stated, "V")}, but is held at "
-                        + $"{Amount.Of(imposed, "V")}",
-                    $"it jumps by {Amount.Of(jump, "V")} at once; "
-                    + $"write `charged to {Amount.Of(imposed, "V")}` if no jump is meant");
+                Warn(state, contradiction, isPlain, startsSettled);
             }
         }
     }
 
-    // Where only coils, current sources and open contacts meet, the currents sum to zero.
-    private static void CheckCutSets(CheckState state)
+    private static bool IsTight(CheckState state, Coupling coupling) =>
+        Math.Abs(CoilSets.Factor(state.Parts, coupling)) > 1 - 1e-9; // shares as a transformer does
+
+    private static void Warn(
+        CheckState state, Contradiction contradiction, bool isPlain, bool startsSettled)
     {
-        var sets = new DisjointSets(state.Nodes.Count);
-        foreach (var part in state.Parts.OfType<Part>())
+        var held = contradiction.Parts;
+        if (held.LastOrDefault(h => h.IsStated) is not { } last
+            || (startsSettled && held.Any(h => !h.IsStated))) // what is not stated follows from the sources
         {
-            if (part is not (Inductor or CurrentSource) && !(part is Switch s && IsGap(s)))
-            {
-                sets.Join(part.From, part.To);
-            }
-
-            if (part is IdealTransformer t)
-            {
-                sets.Join(t.SecondaryFrom, t.SecondaryTo);
-                sets.Join(t.From, t.SecondaryFrom); // windings tie their currents together
-            }
+            return;
         }
 
-        var sums = new Dictionary<int, (double Sum, double Largest, Inductor? Coil)>();
-        foreach (var part in state.Parts)
-        {
-            double? current = part switch
-            {
-                Inductor coil => coil.InitialCurrent?.Nominal ?? 0,
-                CurrentSource source => AtStart(source.Wave),
-                _ => null,
-            };
-            if (current is not { } i || sets.Find(part!.From).Root == sets.Find(part.To).Root)
-            {
-                continue;
-            }
-
-            Add(sums, sets.Find(part.From).Root, i, part);
-            Add(sums, sets.Find(part.To).Root, -i, part);
-        }
-
-        foreach (var (_, (sum, largest, coil)) in sums.Where(e => e.Key != sets.Find(0).Root)
-            .OrderBy(e => e.Key))
-        {
-            if (coil is not null && Math.Abs(sum) > Rounding * largest && Clause<CarryingSyntax>(state, coil)
-                is { } clause)
-            {
-                state.Findings.Warn(clause.Span,
-                    $"the current that `{coil.Name}` carries has no way on: "
-                    + $"{Amount.Of(Math.Abs(sum), "A")} is left",
-                    "it jumps at once; let coils in series carry one current");
-            }
-        }
+        var clause = state.DeclarationOf(last.Part).Clauses
+            .First(c => c is ChargedToSyntax or CarryingSyntax);
+        var (message, advice) = held is [{ After: { } after } only]
+            ? Alone(only, after)
+            : Together(held, isPlain);
+        state.Findings.Warn(clause.Span, message, advice);
     }
 
-    private static void Add(
-        Dictionary<int, (double Sum, double Largest, Inductor? Coil)> sums, int node, double current,
-            Part part)
+    private static (string Message, string Advice) Alone(HeldQuantity held, double after) =>
+        (held.Part is Capacitor
+            ? $"`{held.Part.Name}` is {Words(held, held.Before)}, but is held at {Say(held, after)}"
+            : $"`{held.Part.Name}` carries {Say(held, held.Before)}, but is held at {Say(held, after)}",
+        $"it jumps by {Say(held, after - held.Before)} at once; "
+            + $"write `{Words(held, after)}` if no jump is meant");
+
+    private static (string Message, string Advice) Together(HeldQuantity[] held, bool isPlain)
     {
-        var (sum, largest, coil) = sums.GetValueOrDefault(node);
-        var stated = part is Inductor { InitialCurrent: not null } inductor ? inductor : null;
-        sums[node] = (sum + current, Math.Max(largest, Math.Abs(current)), coil ?? stated);
+        var isCharge = held[0].Part is Capacitor;
+        var message = Joined([
+            .. held.Take(MostNamed).Select((h, n) => $"`{h.Part.Name}` "
+                + (n == 0 ? Words(h, h.Before) : (isCharge ? "to " : "") + Say(h, h.Before))),
+            .. held.Length > MostNamed ? [$"{held.Length - MostNamed} more"] : Array.Empty<string>(),
+        ]) + (isCharge ? " do not agree round their loop" : " do not agree where only they meet");
+        if (!isPlain || held.Any(h => h.After is null))
+        {
+            return (message, (isCharge
+                ? "they share their charge at once, as the impulses in the result show; charge them to "
+                : "they share their flux at once, as the impulses in the result show; let them carry ")
+                + "what fits if no jump is meant");
+        }
+
+        var moved = held.Where(h => h.Jumps).Take(MostNamed).ToArray();
+        var jumps = moved.Select((h, n) =>
+            $"`{h.Part.Name}` {(n == 0 ? "jumps by" : "by")} {Say(h, h.After!.Value - h.Before)}");
+        var edits = moved.Select(h => $"`{Words(h, h.After!.Value)}`").Distinct();
+        return (message,
+            $"{string.Join(", ", jumps)}; if no jump is meant, write {Joined([.. edits])}");
     }
 
-    private static bool IsShut(Switch part) =>
-        part is { StartsClosed: true, ClosedResistance: null } && !ActsAtStart(part);
+    private static string Joined(string[] words) => words.Length == 1
+        ? words[0]
+        : $"{string.Join(", ", words[..^1])} and {words[^1]}";
 
-    private static bool IsGap(Switch part) => part is { StartsClosed: false, OpenResistance: null }
-        && !ActsAtStart(part);
+    private static string Words(HeldQuantity held, double value) =>
+        (held.Part is Capacitor ? "charged to " : "carrying ") + Say(held, value);
 
-    // What happens when a switch acts at 0 s is a switching, with its own impulse, and no contradiction.
-    private static bool ActsAtStart(Switch part) =>
-        part.Events is [{ Trigger: AtInstant { Instant: { Delay.Nominal: 0, After: null } } }, ..];
+    // A jump found by elimination is off in the last digits; twelve are exact for what a file states.
+    private static string Say(HeldQuantity held, double value) =>
+        Amount.Of(double.Parse(value.ToString("E11")), held.Part is Capacitor ? "V" : "A");
+}
 
-    private static double AtStart(Wave wave) => wave.Scale.Nominal * wave.Pieces
-        .Where(p => p.Start <= 0 && p.End > 0)
-        .Sum(p => p.Amplitude * Math.Cos(p.Phase));
+/// <summary>Parts whose stored quantities contradict each other.</summary>
+/// <param name="Parts">All that share what is too much, in the order of the file.</param>
+internal sealed record Contradiction(HeldQuantity[] Parts);
 
-    private static T? Clause<T>(CheckState state, Part part)
-        where T : ClauseSyntax =>
-        state.DeclarationOf(part).Clauses.OfType<T>().FirstOrDefault();
+/// <summary>A capacitor's voltage or a coil's current about t = 0.</summary>
+/// <param name="Part">The part.</param>
+/// <param name="Before">What is stated, or 0; in volts or amperes.</param>
+/// <param name="IsStated">Whether the file states it.</param>
+/// <param name="After">What it jumps to; null where that is not known.</param>
+internal sealed record HeldQuantity(Part Part, double Before, bool IsStated, double? After)
+{
+    /// <summary>Stated values that agree to nine digits are meant to agree.</summary>
+    public const double Rounding = 1e-9;
+
+    /// <summary>Whether it changes by more than rounding.</summary>
+    public bool Jumps => After is { } after && Math.Abs(after - Before)
+        > Rounding * Math.Max(Math.Abs(after), Math.Abs(Before));
 }

@@ -6,7 +6,12 @@ namespace CircuitTransient.Circuits;
 /// <param name="Pieces">In the order written; a pulse is a rise and a delayed fall.</param>
 /// <param name="Scale">A factor on the whole wave that carries what its level follows from; nominally 1, or 0
 /// where the level is zero and the pieces are those of a level of 1.</param>
-public sealed record Wave(ImmutableArray<WavePiece> Pieces, Quantity Scale);
+public sealed record Wave(ImmutableArray<WavePiece> Pieces, Quantity Scale)
+{
+    /// <summary>The value just after t = 0, in volts or amperes.</summary>
+    public double AtStart() => Scale.Nominal * Pieces.Where(p => p is { Start: <= 0, End: > 0 })
+        .Sum(p => p.Amplitude * Math.Cos(p.Phase));
+}
 
 /// <summary>One piece of a wave: (A + S·τ)·e^(−d·τ)·cos(ω·τ + φ) with τ = t − Start, for Start ≤ t
 /// &lt; End; zero elsewhere. A step, a corner, a sine, a decay are all of this form. Ramps and
@@ -45,4 +50,22 @@ public sealed record WavePiece(
     /// <summary>The phase at t = 0 as stated for a sine or cosine, in radians;
     /// null for other waves.</summary>
     public double? StatedPhase { get; init; }
+
+    /// <summary>How the piece alone follows from parameters, as a term of a sum; null where only the wave's
+    /// scale moves it.</summary>
+    public WaveShare? Share { get; init; }
+
+    /// <summary>The piece with its share's factor at another value.</summary>
+    public WavePiece At(double factor) => Share is null ? this : this with
+    {
+        Amplitude = factor * Share.Amplitude,
+        Slope = factor * Share.Slope,
+        Share = Share with { Factor = Share.Factor with { Nominal = factor } },
+    };
 }
+
+/// <summary>What a piece follows from, apart from the other pieces of its wave.</summary>
+/// <param name="Factor">On the piece as written; nominally 1.</param>
+/// <param name="Amplitude">A at a factor of 1.</param>
+/// <param name="Slope">S at a factor of 1.</param>
+public sealed record WaveShare(Quantity Factor, double Amplitude, double Slope);

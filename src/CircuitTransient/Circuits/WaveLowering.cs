@@ -23,11 +23,9 @@ internal static class WaveLowering
             isGood &= lowered is not null;
             dimension ??= lowering.Dimension;
             only = lowering.Level;
-            pieces.AddRange(lowered ?? []);
-            if (syntax.Terms.Length > 1 && lowering.Level is { } level)
-            {
-                Expected.Fixed(state, WaveTermLowering.LevelOf(term.Piece)!, level);
-            }
+            pieces.AddRange(syntax.Terms.Length > 1 && lowering.Level is { Formula: not null } level
+                ? Following(state, level, term.Piece, lowered ?? [])
+                : lowered ?? []);
         }
 
         if (!isGood || dimension is null)
@@ -38,6 +36,22 @@ internal static class WaveLowering
         var single = syntax.Terms.Length == 1 ? only : null;
         var (scale, isScaled) = Scale(state, part, syntax, single);
         return isScaled ? (new Wave(pieces.ToImmutable(), scale), dimension == Dimension.Voltage) : null;
+    }
+
+    /// <summary>The pieces of a term of a sum, each moved by what the term's level follows from; a level of
+    /// zero has nothing to be moved.</summary>
+    private static ImmutableArray<WavePiece> Following(
+        CheckState state, Evaluated level, WavePieceSyntax term, ImmutableArray<WavePiece> pieces)
+    {
+        if (level.Value == 0)
+        {
+            Expected.Fixed(state, WaveTermLowering.LevelOf(term)!, level);
+            return pieces;
+        }
+
+        var factor = new Quantity(
+            1, new BinaryFormula('/', level.AsFormula, new NumberFormula(level.Value)));
+        return [.. pieces.Select(p => p with { Share = new WaveShare(factor, p.Amplitude, p.Slope) })];
     }
 
     // The tolerance of a source's level is carried by one factor on the whole wave.

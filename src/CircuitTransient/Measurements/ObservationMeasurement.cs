@@ -36,15 +36,16 @@ internal sealed class ObservationMeasurement(
         var shares = Shares(observation.Quantity, open);
         ImmutableArray<Contribution> contributions =
             [.. shares.Select(s => Contribution(observation.Quantity, s, max, min, open))];
+        var final = FinalValue.Of(total);
         var result = new ObservationResult(
             observation.Name,
             observation.Unit,
             total.ValueAt(solution, open.From),
             total.ValueAt(solution, open.To, before: open.To > open.From),
-            FinalValue.Of(total),
+            final,
             max,
             min,
-            EndsRising(total, max, min),
+            !curves.IsAccumulated(observation.Quantity) && EndsRising(total, final, max, min),
             contributions,
             new ContributionsAfter(Since(observation.Quantity, max), Since(observation.Quantity, min)),
             [.. options.At.Select(t => Sample(t, total, shares))],
@@ -58,6 +59,7 @@ internal sealed class ObservationMeasurement(
                 ? switchings.Of(observation.Quantity, gathered, max, min)
                 : null,
             ByMode = modes.Of(observation.Quantity, max, min),
+            Window = open == (0, solution.Until) ? null : open,
         };
         return (result, [total, .. shares.Select(s => s.Curve)]);
     }
@@ -151,10 +153,15 @@ internal sealed class ObservationMeasurement(
         new(time, total.ValueAt(solution, time),
             [.. shares.Select(s => (double?)s.Curve.ValueAt(solution, time))]);
 
-    private bool EndsRising(Curve total, Extreme max, Extreme min)
+    /// <summary>Whether a later end would show more. A limit that is all but reached is no news, nor is one
+    /// where the end was chosen by how far the modes have fallen.</summary>
+    private bool EndsRising(Curve total, double? final, Extreme max, Extreme min)
     {
+        const double nearly = 1e-3; // of the limit, as far as modes fall where the end is chosen
         var greatest = Math.Abs(min.Value ?? 0) > Math.Abs(max.Value ?? 0) ? min : max;
-        if (greatest.Time != solution.Until || greatest.Value is not { } value)
+        if (greatest.Time != solution.Until || greatest.Value is not { } value
+            || (final is { } limit && (solution.UntilReason is not null
+                || Math.Abs(limit - value) <= nearly * Math.Abs(limit))))
         {
             return false;
         }

@@ -9,8 +9,8 @@ namespace CircuitTransient.Measurements;
 /// <param name="End">Value at the window's end.</param>
 /// <param name="Final">Limit for t → ∞ of the last interval with its sources as they stand; null where there
 /// is none.</param>
-/// <param name="EndsRising">Whether the greatest magnitude lies at the end of the study and still
-/// rises.</param>
+/// <param name="EndsRising">Whether the greatest magnitude lies at the end of the study and still rises past
+/// what it shows; never so for an integral over time.</param>
 /// <param name="Contributions">One for each cause; quadratic quantities have one more, named
 /// <c>joint</c>.</param>
 /// <param name="After">The breakdown since an event; null where not asked for or not defined.</param>
@@ -43,6 +43,9 @@ public sealed record ObservationResult(
 
     /// <summary>The extremes by causes and modes; null where the quantity is undetermined.</summary>
     public ModeBreakdowns? ByMode { get; init; }
+
+    /// <summary>From when to when it was observed, in seconds; null for the whole study.</summary>
+    public (double From, double To)? Window { get; init; }
 
     /// <summary>The extreme of greater magnitude.</summary>
     public Extreme Greatest => Math.Abs(Min.Value ?? 0) > Math.Abs(Max.Value ?? 0) ? Min : Max;

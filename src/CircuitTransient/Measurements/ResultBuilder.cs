@@ -80,6 +80,7 @@ public sealed class ResultBuilder
             new CautionFinder(curves, parts, intervals, events).Find())
         {
             IsAfterAsked = options.After is not null,
+            After = options.After,
             By = options.By,
             Followed = followed,
             OtherBreakdowns = otherwise,

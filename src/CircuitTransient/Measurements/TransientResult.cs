@@ -55,6 +55,9 @@ public sealed record TransientResult(
     /// document.</summary>
     public bool IsAfterAsked { get; init; }
 
+    /// <summary>The event that a second breakdown was asked for since; null where none was.</summary>
+    public AfterEvent? After { get; init; }
+
     /// <summary>Whether every requirement and rating holds.</summary>
     public bool AllHold =>
         Requirements.All(r => r.Holds) && Parts.All(p => p.Ratings.All(r => r.Holds));

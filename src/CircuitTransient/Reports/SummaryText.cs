@@ -55,8 +55,9 @@ internal sealed class SummaryText(bool colour)
         }
     }
 
-    /// <summary>Where the files are, and the sentence every summary ends with.</summary>
-    public void End(ImmutableArray<string> files)
+    /// <summary>Where the files are, what is to be said of them, and the sentence every summary ends
+    /// with.</summary>
+    public void End(ImmutableArray<string> files, string? remark = null)
     {
         if (!files.IsEmpty)
         {
@@ -64,6 +65,11 @@ internal sealed class SummaryText(bool colour)
             foreach (var file in files)
             {
                 Paragraph(file);
+            }
+
+            if (remark is not null)
+            {
+                Paragraph(remark, hanging: 2);
             }
         }
 

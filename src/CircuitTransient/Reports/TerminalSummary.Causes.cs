@@ -45,8 +45,15 @@ public static partial class TerminalSummary
         if (worst.Since is not null)
         {
             WriteSince(text, result, worst);
+            return;
         }
-        else if (WorstObservation.FindSinceEvent(result) is { } other)
+
+        if (SinceWords.WhyNone(result, worst) is { } why)
+        {
+            text.Paragraph(why);
+        }
+
+        if (WorstObservation.FindSinceEvent(result) is { } other)
         {
             text.Heading(HeadingOf(result, other));
             WriteSince(text, result, other);

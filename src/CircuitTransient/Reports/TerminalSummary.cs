@@ -1,6 +1,5 @@
 using System.Collections.Immutable;
 using CircuitTransient.Measurements;
-using CircuitTransient.Text;
 using static CircuitTransient.Reports.ReportWords;
 
 namespace CircuitTransient.Reports;
@@ -92,9 +91,10 @@ public static partial class TerminalSummary
 
     private static void WriteObservations(SummaryText text, TransientResult result)
     {
-        var until = EngineeringNumber.Format(result.Until, "s");
+        var windows = result.Observations.Select(o => o.Window).Distinct().ToArray();
+        var common = windows is [{ } only] ? only : (0, result.Until);
         text.Heading(
-            $"Observed from 0 s to {until}" + (result.UntilReason is { } reason ? $" ({reason})" : ""));
+            $"Observed {Between(common)}" + (result.UntilReason is { } reason ? $" ({reason})" : ""));
         var shown = result.Observations.Take(MostObservations);
         text.Table([Prose, Left, Right, Prose], shown.SelectMany(o => RowsOf(result, o)));
         if (result.Observations.Length > MostObservations)
@@ -118,7 +118,10 @@ public static partial class TerminalSummary
         var (unit, max, min) = (observed.Unit, observed.Max, observed.Min);
         var scale = Math.Abs(observed.Greatest.Value ?? 0);
         yield return [observed.Name, "max", Peak(max), When(result, observed, max)];
-        yield return ["", "min", Peak(min), When(result, observed, min)];
+        var isApart = observed.Window is not null
+            && result.Observations.Any(o => o.Window != observed.Window);
+        var window = isApart ? $"  {Between(observed.Window!.Value)}" : "";
+        yield return [window, "min", Peak(min), When(result, observed, min)];
         var final = observed.Final is null
             ? "goes on swinging or has no limit"
             : $"tends to {Number(observed.Final, unit, scale)}";
@@ -129,6 +132,9 @@ public static partial class TerminalSummary
             ? "infinite"
             : Number(extreme.Value, unit, scale);
     }
+
+    private static string Between((double From, double To) window) =>
+        $"from {Number(window.From, "s")} to {Number(window.To, "s")}";
 
     private static string When(TransientResult result, ObservationResult observation, Extreme extreme)
     {

@@ -9,6 +9,8 @@ namespace CircuitTransient.Reports;
 /// <param name="Why">Why it was chosen, in words.</param>
 public sealed record WorstObservation(ObservationResult Observation, bool AtMax, string Why)
 {
+    private const string FirstObserved = "the first observed";
+
     /// <summary>The extreme that matters.</summary>
     public Extreme Extreme => AtMax ? Observation.Max : Observation.Min;
 
@@ -23,7 +25,12 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
 
     /// <summary>The worst of those whose extreme follows an event, and is broken down since it.</summary>
     public static WorstObservation? FindSinceEvent(TransientResult result) =>
-        Find(result, worst => worst.Since is not null) is { Since: not null } found ? found : null;
+        Find(result, worst => worst.Since is not null) is { Since: not null } found
+            ? found with
+            {
+                Why = (found.Why == FirstObserved ? "the first" : "the worst") + " that follows the event",
+            }
+            : null;
 
     private static WorstObservation? Find(TransientResult result, Func<WorstObservation, bool> isMeant)
     {
@@ -46,7 +53,7 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         }
 
         var observed = result.Observations
-            .Select(o => new WorstObservation(o, o.Greatest == o.Max, "the first observed"));
+            .Select(o => new WorstObservation(o, o.Greatest == o.Max, FirstObserved));
         return worst ?? observed.FirstOrDefault(isMeant);
     }
 

@@ -8,8 +8,10 @@ namespace CircuitTransient.Solutions;
 /// <summary>The intervals whose switch positions follow from the text alone.</summary>
 public static class KnownIntervals
 {
+    private const int MostStores = 150; // poles of more take seconds, which are left to a solve
+
     /// <summary>An error for each set of positions, met at a known instant, whose equations have no unique
-    /// solution.</summary>
+    /// solution; else one for a start that cannot settle, and one for an end that is not known.</summary>
     public static ImmutableArray<Diagnostic> FindUnsolvable(
         Circuit circuit, CancellationToken cancellation)
     {
@@ -17,6 +19,7 @@ public static class KnownIntervals
         var timeline = new Timeline(circuit);
         var models = new HashSet<string>();
         var found = ImmutableArray.CreateBuilder<Diagnostic>();
+        var isSettled = circuit.StartsSettled ? timeline.IsClosed : [];
         double now = 0;
         while (true)
         {
@@ -36,6 +39,12 @@ public static class KnownIntervals
 
             if (double.IsPositiveInfinity(next) || next >= circuit.Until)
             {
+                if (found.Count == 0 && layout.Stores.Length <= MostStores)
+                {
+                    found.AddRange(FindUnsettled(layout, isSettled, cancellation));
+                    found.AddRange(FindEndless(layout, timeline, now, cancellation));
+                }
+
                 return [.. found.DistinctBy(d => (d.Span, d.Message))];
             }
 
@@ -59,5 +68,30 @@ public static class KnownIntervals
             ? new AskedQuantities(layout.Circuit, timeline.InstantOf)
                 .LeftOpenIn(reduction.Solve(), from, until)
             : [];
+    }
+
+    /// <summary>Why no settled state exists before the start, where one is asked for.</summary>
+    private static IEnumerable<Diagnostic> FindUnsettled(
+        NetworkLayout layout, ImmutableArray<bool> isClosed, CancellationToken cancellation)
+    {
+        if (!isClosed.IsEmpty && new IntervalModels(layout, cancellation).For(isClosed) is { } model
+            && SettledStart.Find(model, layout, CauseList.FromStart(layout.Circuit).Causes) is
+            { Problem: { } problem })
+        {
+            yield return problem;
+        }
+    }
+
+    /// <summary>That nothing decays in the last positions, where these are known and no end is
+    /// stated.</summary>
+    private static IEnumerable<Diagnostic> FindEndless(
+        NetworkLayout layout, Timeline timeline, double now, CancellationToken cancellation)
+    {
+        if (layout.Circuit.Until is null && !timeline.Waiting().Any()
+            && new IntervalModels(layout, cancellation).For(timeline.IsClosed) is { } model
+            && StudyEnd.Of(layout.Circuit, model, now) is null)
+        {
+            yield return StudyEnd.Unknown(layout.Circuit, now);
+        }
     }
 }

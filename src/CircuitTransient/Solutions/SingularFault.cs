@@ -77,9 +77,14 @@ internal sealed class SingularFault(Circuit circuit, int[] parts, bool hasNodes,
         var laws = contradicts
             ? isOne ? "its law contradicts itself" : "their laws contradict each other"
             : isOne ? "its law says nothing" : "their laws say the same twice";
-        var advice = hasNodes
-            ? "change a gain, or give the current a path: a resistance across one of them"
-            : "change a gain, or put a resistance in series with one of them";
+        var contact = parts.Select(p => circuit.Parts[p]).OfType<Switch>().FirstOrDefault();
+        var change = Any(p => p is DependentSource) ? "change a gain, or " : "";
+        var advice = change + (hasNodes
+            ? "give the current a path: a resistance across one of them"
+                + (contact is null ? "" : $", or `open resistance 10 MΩ` on `{contact.Name}`")
+            : contact is null
+            ? "put a resistance in series with one of them"
+            : $"give the contact the resistance it has: `closed resistance 1 mΩ` on `{contact.Name}`");
         return ($"{Names(parts)} {(isOne ? "leaves" : "leave")} no unique solution{when}: {laws}", advice);
     }
 

@@ -50,11 +50,25 @@ internal static class StudyEnd
     public static bool IsUndamped(double re, double im) => im > 0 && Math.Abs(re) < 1e-12 * im;
 
     /// <summary>What is said where nothing decays.</summary>
-    public static Diagnostic Unknown(Circuit circuit) => Diagnostic.Error(
-        circuit.Source,
-        default,
-        "nothing in this circuit decays or rings after the last event, so the end of the study is not known",
-        "say how long to look: until 10 ms");
+    /// <param name="circuit">The circuit.</param>
+    /// <param name="now">The last event, in seconds.</param>
+    public static Diagnostic Unknown(Circuit circuit, double now)
+    {
+        const double usual = 10e-3; // a suggestion where the file has no instant at all
+        var last = Math.Max(now, LastCorner(circuit));
+        var place = circuit.Parts.OfType<Switch>().SelectMany(s => s.Events).LastOrDefault()?.Span
+            ?? (circuit.Parts.FirstOrDefault(p => p is VoltageSource or CurrentSource) ?? circuit.Parts[0])
+                .Span;
+        return Diagnostic.Error(
+            circuit.Source,
+            place,
+            "nothing in this circuit decays or rings" + (last > 0 ? $" after {Format(last, "s")}" : "")
+                + ", so the end of the study is not known",
+            "say how long to look: write "
+                + $"`until {EngineeringNumber.Format(last > 0 ? 2 * last : usual, "s", 2)}`")
+            with
+        { SaysTooLittle = true };
+    }
 
     private static string Format(double value, string unit) => EngineeringNumber.Format(value, unit);
 

@@ -66,7 +66,7 @@ public sealed class TransientSolver
 
             if (EndFor(model) is not { } end)
             {
-                return Failed(StudyEnd.Unknown(circuit));
+                return Failed(StudyEnd.Unknown(circuit, now));
             }
 
             var horizon = Growth.Horizon(model, now, stored);

@@ -53,6 +53,41 @@ internal static class ClauseParser
                 : "clauses follow a comma, comments a `#`, and a statement has its own line");
     }
 
+    /// <summary>Says that a clause stands where the value should, and goes to the end; false where none
+    /// does.</summary>
+    public static bool ReportBeforeValue(StatementCursor cursor)
+    {
+        var start = cursor.Current;
+        var isClause = start.Kind == TokenKind.Word
+            && cursor.TextOf(start) is "charged" or "carrying" or "rated" or "linear"
+            && cursor.Ahead(1).Kind is TokenKind.Number or TokenKind.Word;
+        if (!isClause)
+        {
+            return false;
+        }
+
+        cursor.SkipTo(',');
+        var clause = cursor.Shown(cursor.SpanFrom(start.Start));
+        var isValueNext = cursor.Take(',') && cursor.Current.Kind == TokenKind.Number;
+        var value = cursor.Current.Start;
+        while (!cursor.IsAtEnd && !cursor.IsSign(','))
+        {
+            cursor.Advance();
+        }
+
+        cursor.Error(start.Span,
+            $"`{cursor.TextOf(start)}` stands where the value should: the value comes first",
+            isValueNext
+                ? $"write `: {cursor.Shown(cursor.SpanFrom(value))}, {clause}`"
+                : $"write `: VALUE, {clause}`");
+        while (!cursor.IsAtEnd)
+        {
+            cursor.Advance();
+        }
+
+        return true;
+    }
+
     private static ClauseSyntax? Read(StatementCursor cursor)
     {
         var start = cursor.Current.Start;

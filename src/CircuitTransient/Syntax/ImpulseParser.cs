@@ -66,6 +66,14 @@ internal static class ImpulseParser
             return null;
         }
 
+        if (!hasOwn && !hasUnit)
+        {
+            var times = cursor.SpanFrom(first.Start);
+            cursor.Error(times, $"`{cursor.Shown(times)}` has no unit; the front and half-value times are in "
+                + "seconds", $"write `{cursor.TextOf(first)}/{cursor.TextOf(second)} µs`");
+            return null;
+        }
+
         var half = Number(cursor, second, unit, hasUnit);
         var front = Number(cursor, first, hasOwn ? own : unit, hasOwn || hasUnit);
         return front is null || half is null ? null : (front with { Span = firstEnd }, half);

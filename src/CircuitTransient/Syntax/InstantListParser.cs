@@ -43,7 +43,8 @@ public static class InstantListParser
     {
         if (cursor.IsSign('-'))
         {
-            cursor.Error(cursor.Current.Span, "an instant before t = 0 is before the study");
+            cursor.Error(cursor.Current.Span, "an instant before t = 0 is before the study",
+                "the study starts at t = 0: write a time after it, such as `1 ms`");
             return null;
         }
 
@@ -58,6 +59,13 @@ public static class InstantListParser
             return null;
         }
 
+        if (cursor.Current.Sign is '*' or '/' or '+' or '-' or '^')
+        {
+            cursor.Error(cursor.Current.Span, "an instant is one number with its unit, and no sum or product",
+                cursor.Form);
+            return null;
+        }
+
         var text = cursor.TextOf(number.Span);
         if (!number.HasUnit)
         {
@@ -68,7 +76,7 @@ public static class InstantListParser
 
         if (number.Dimension != Dimension.Time)
         {
-            cursor.Error(number.Span, $"`{text}` is not an instant, which is in seconds");
+            cursor.Error(number.Span, $"`{text}` is not an instant, which is in seconds", cursor.Form);
             return null;
         }
 

@@ -29,12 +29,37 @@ internal static class NumberMistakes
             && (Unit.TryRead(text, out _) || (text.Length == 1 && Prefix.TryRead(text[0], out _)));
         var unit = isUnit ? " " + text : "";
         cursor.Advance(isUnit ? length : 0);
+        if (number.Contains('.') || decimals.Contains('.'))
+        {
+            ReportMixedMarks(cursor, span, number, decimals, unit);
+            return;
+        }
+
         var isThousands = decimals.Length == 3 && number.Length <= 3 && number is not "0";
         cursor.Error(span, $"`{cursor.Shown(span)}` has a decimal comma; the decimal mark is a point",
             isThousands
                 ? $"write `{number}.{decimals}{unit}` or, for thousands, `{number}{decimals}{unit}`"
                 : $"write `{number}.{decimals}{unit}`");
     }
+
+    /// <summary><c>1.200,5</c> and <c>1,200.5</c>: one mark parts thousands.</summary>
+    private static void ReportMixedMarks(
+        StatementCursor cursor, TextSpan span, string number, string decimals, string unit)
+    {
+        var isComma = IsGrouped(number.Split('.')) && !decimals.Contains('.');
+        var isPoint = IsGrouped([number, decimals.Split('.')[0]]);
+        cursor.Error(span,
+            $"`{cursor.Shown(span)}` has both a comma and a point; the point is the decimal mark, and "
+                + "nothing parts thousands",
+            isComma ? $"write `{number.Replace(".", "")}.{decimals}{unit}`"
+                : isPoint ? $"write `{number}{decimals}{unit}`"
+                : "write one number, with one point as its decimal mark");
+    }
+
+    /// <summary>One to three digits, then groups of three.</summary>
+    private static bool IsGrouped(string[] groups) =>
+        groups is [{ Length: >= 1 and <= 3 }, _, ..] && groups.Skip(1).All(group => group.Length == 3)
+        && groups.All(group => group.All(char.IsAsciiDigit));
 
     public static void ReportGap(StatementCursor cursor, Token token)
     {
@@ -69,7 +94,5 @@ internal static class NumberMistakes
 
     /// <summary><c>5.000.000</c>: one to three digits, then groups of three.</summary>
     private static bool IsGroupedByPoints(string text) =>
-        text.Split('.') is [{ Length: >= 1 and <= 3 }, _, _, ..] groups
-        && groups.Skip(1).All(group => group.Length == 3)
-        && groups.All(group => group.All(char.IsAsciiDigit));
+        text.Split('.') is [_, _, _, ..] groups && IsGrouped(groups);
 }

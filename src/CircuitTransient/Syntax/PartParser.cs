@@ -18,7 +18,7 @@ internal static class PartParser
         };
         cursor.Form = $"{what} is written `{example}`";
         var head = ReadHead(cursor);
-        var value = !GoToValue(cursor) ? null
+        var value = !GoToValue(cursor) || ClauseParser.ReportBeforeValue(cursor) ? null
             : kind == SimplePartKind.Resistor ? ToleranceParser.ReadResistance(cursor, acceptsSum: true)
             : ToleranceParser.ReadTolerated(cursor, acceptsSum: true);
         var clauses = ReadClauses(cursor, value is not null);
@@ -32,7 +32,9 @@ internal static class PartParser
     {
         cursor.Form = "a source is written `source Feed from bus to minus : 540 V`";
         var head = ReadHead(cursor);
-        var wave = GoToValue(cursor) ? WaveParser.Read(cursor) : null;
+        var wave = GoToValue(cursor) && !ClauseParser.ReportBeforeValue(cursor)
+            ? WaveParser.Read(cursor)
+            : null;
         var clauses = ReadClauses(cursor, wave is not null);
         return head is null || wave is null
             ? null

@@ -20,8 +20,14 @@ internal static class SineParser
         }
 
         var sine = new SineSyntax(default, isCosine, amplitude, isRms, frequency, null, null, null, null);
-        while (IsOption(cursor))
+        while (IsOption(cursor) || IsBehindComma(cursor))
         {
+            if (cursor.IsSign(','))
+            {
+                ReportComma(cursor, start);
+                return null;
+            }
+
             var option = cursor.Current;
             if (IsGiven(sine, cursor))
             {
@@ -52,6 +58,23 @@ internal static class SineParser
         }
 
         return false;
+    }
+
+    private static bool IsBehindComma(StatementCursor cursor) =>
+        cursor.IsSign(',') && options.Contains(cursor.Shown(cursor.Ahead(1)));
+
+    private static void ReportComma(StatementCursor cursor, int start)
+    {
+        var before = cursor.TextOf(cursor.SpanFrom(start));
+        var comma = cursor.Advance();
+        var rest = cursor.Current.Start;
+        while (!cursor.IsAtEnd && !cursor.IsSign(','))
+        {
+            cursor.Advance();
+        }
+
+        cursor.Error(comma.Span, "what belongs to a sine follows it without a comma",
+            $"write `{before} {cursor.TextOf(cursor.SpanFrom(rest))}`");
     }
 
     private static bool IsGiven(SineSyntax sine, StatementCursor cursor) =>

@@ -18,9 +18,27 @@ internal static class StudyParser
             return null;
         }
 
-        return ReadWindow(cursor) is { } window
+        var place = cursor.Current.Start;
+        return ReadWindow(cursor) is { } window && !ReportLateLabel(cursor, quantity, place)
             ? new ObserveStatement(cursor.SpanFrom(start), quantity, label, window)
             : null;
+    }
+
+    /// <summary>Says that a label stands behind the window; false where none does.</summary>
+    private static bool ReportLateLabel(StatementCursor cursor, QuantitySyntax quantity, int place)
+    {
+        var word = cursor.Current;
+        if (!cursor.IsWord("as") || cursor.Ahead(1).Kind != TokenKind.Quoted)
+        {
+            return false;
+        }
+
+        var window = cursor.TextOf(cursor.SpanFrom(place));
+        var label = cursor.TextOf(cursor.Ahead(1));
+        cursor.Error(word.Span, "the label stands before the window",
+            $"write `observe {cursor.TextOf(quantity.Span)} as {label} {window}`");
+        cursor.Advance(2);
+        return true;
     }
 
     public static RequireStatement? ReadRequire(StatementCursor cursor, int start)

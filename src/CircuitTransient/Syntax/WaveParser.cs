@@ -58,6 +58,21 @@ internal static class WaveParser
             ? ToleranceParser.Read(cursor, out tolerance)
             : ToleranceParser.Refuse(cursor, "only a constant source has a tolerance behind its value",
                 "name the value: `value Peak : 325 V ±5 %`, and write `Peak` in the wave");
+        if (isRead && tolerance is not null && (cursor.IsSign('+') || cursor.IsSign('-')))
+        {
+            var level = cursor.TextOf(cursor.SpanFrom(start));
+            var joint = cursor.Current;
+            while (!cursor.IsAtEnd && !cursor.IsSign(','))
+            {
+                cursor.Advance();
+            }
+
+            cursor.Error(tolerance.Span, "a tolerance stands behind a constant that is the whole wave",
+                $"name the value: `value Level : {level}`, and write "
+                    + $"`Level {cursor.TextOf(cursor.SpanFrom(joint.Start))}`");
+            return null;
+        }
+
         return isRead ? new WaveSyntax(cursor.SpanFrom(start), terms, tolerance) : null;
     }
 

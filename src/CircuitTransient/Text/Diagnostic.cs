@@ -20,6 +20,10 @@ public enum Severity
 public sealed record Diagnostic(
     Severity Severity, SourceText Source, TextSpan Span, string Message, string? Advice)
 {
+    /// <summary>Whether the text says too little to be solved although a circuit can be built from it: a
+    /// mistake in the text, found late.</summary>
+    public bool SaysTooLittle { get; init; }
+
     /// <summary>An error at a place.</summary>
     public static Diagnostic Error(SourceText source, TextSpan span, string message, string? advice = null) =>
         new(Severity.Error, source, span, message, advice);

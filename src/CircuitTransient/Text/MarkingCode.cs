@@ -9,19 +9,20 @@ public static class MarkingCode
     // inductors, u for µ and k for K are custom and not the code.
     private const string Letters = "RLKkMGmuµμnpF";
 
-    /// <summary>Reads a code whatever it marks; the value is in the SI unit the part says.</summary>
+    /// <summary>Reads a code whatever it marks; the value is in the SI unit the part says. Of letters that
+    /// lead only R is read, since `L47`, `M2`, `n1` are names everybody gives.</summary>
     public static bool TryRead(string text, out double value)
+    {
+        value = 0;
+        return LetterOf(text) is var place && (place > 0 || text is ['R', ..]) && TryReadAny(text, out value);
+    }
+
+    private static bool TryReadAny(string text, out double value)
     {
         value = 0;
         var place = LetterOf(text);
         if (place < 0 || text.Length is < 2 or > 16 || !Letters.Contains(text[place])
             || text.AsSpan(place + 1).ContainsAnyExceptInRange('0', '9'))
-        {
-            return false;
-        }
-
-        // `L47`, `M2`, `C1` are names everybody gives; only R may lead (R047).
-        if (place == 0 && text[0] != 'R')
         {
             return false;
         }
@@ -32,10 +33,10 @@ public static class MarkingCode
         return DecimalText.TryRead(digits, Exponent(text[place]), 1, out value);
     }
 
-    /// <summary>Reads a code on a part of the dimension given: a resistor's letters
+    /// <summary>Reads a code on a part of the dimension given, whichever letter leads: a resistor's letters
     /// are not a capacitor's.</summary>
     public static bool TryRead(string text, Dimension dimension, out double value) =>
-        TryRead(text, out value) && text[LetterOf(text)] is var letter
+        TryReadAny(text, out value) && text[LetterOf(text)] is var letter
         && (dimension == Dimension.Resistance ? "RLKkMG".Contains(letter)
             : dimension == Dimension.Capacitance ? "pnuµμmF".Contains(letter)
             : dimension == Dimension.Inductance && "nuµμm".Contains(letter));

@@ -24,6 +24,17 @@ public static class UnitAdvice
     /// <summary>Advice for a word that stands where a unit should, behind a number.</summary>
     public static string For(string word, string number)
     {
+        if (word is [var lead, 'A', '²' or '^', .., 's'] && Prefix.TryRead(lead, out var power))
+        {
+            return "`A²s` takes no prefix, which could be squared or not: "
+                + $"write `{number}·10{Raised(power)} A²s`";
+        }
+
+        if (word == "K")
+        {
+            return $"kilo is `k`, and the unit follows it: write `{number} kΩ` for a resistance";
+        }
+
         if (ForLongTime(word, number) is { } time)
         {
             return time;
@@ -47,7 +58,8 @@ public static class UnitAdvice
             }
         }
 
-        return $"units: {string.Join(' ', Unit.Symbols)} min h deg %; prefixes: {Prefix.All}; "
+        return $"units: {string.Join(' ', Unit.Symbols)} A²s V/s A/s min h deg ° rad %; "
+            + $"prefixes: {Prefix.All}; "
             + $"a product: `{number} * {word}`";
     }
 
@@ -60,6 +72,10 @@ public static class UnitAdvice
             ? $"{bare} {Prefix.Write(exponent)}{unit}"
             : $"{number} {unit}";
     }
+
+    /// <summary>An exponent in raised digits: <c>⁻³</c>.</summary>
+    private static string Raised(int exponent) => string.Concat(
+        exponent.ToString(CultureInfo.InvariantCulture).Select(c => c == '-' ? '⁻' : "⁰¹²³⁴⁵⁶⁷⁸⁹"[c - '0']));
 
     /// <summary>A day and what is longer has no unit of its own.</summary>
     private static string? ForLongTime(string word, string number)

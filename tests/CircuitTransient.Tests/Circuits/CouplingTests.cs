@@ -90,6 +90,74 @@ public class CouplingTests
                 """));
 
     [Fact]
+    public void A_factor_that_may_pass_one_is_narrowed() =>
+        Assert.Equal(
+            """
+            plant.cause:4:33: error: the tolerance of `M1` passes a coupling of all flux: 0.931 to 1.029
+              coupling M1 of L1 and L2 : 0.98 ±5 %
+                                              ^^^^
+              → a factor is at most 1 in magnitude; narrow it: `between 0.931 and 1`
+            """,
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                inductor L1 at a : 1 mH
+                inductor L2 at a : 4 mH
+                coupling M1 of L1 and L2 : 0.98 ±5 %
+                """));
+
+    // 0.99 mH/(0.9 mH)
+    [Fact]
+    public void A_mutual_inductance_that_coils_may_fall_below_is_written_as_a_factor() =>
+        Assert.Equal(
+            """
+            plant.cause:4:28: warning: within the tolerances `M1` couples `L1` and `L2` by \
+            up to 1.1 of all flux
+              coupling M1 of L1 and L2 : 0.99 mH
+                                         ^^^^^^^
+              → write the factor, which goes with the coils: `0.99`
+            """.Replace("\\\n", "", StringComparison.Ordinal),
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                inductor L1 at a : 1 mH ±10 %
+                inductor L2 at a : 1 mH ±10 %
+                coupling M1 of L1 and L2 : 0.99 mH
+                """));
+
+    [Fact]
+    public void Three_coils_are_judged_within_their_tolerances_too() =>
+        Assert.Equal(
+            """
+            plant.cause:5:1: warning: within their tolerances `L1`, `L2`, `L3` so coupled \
+            can store -0.05038 times their energy
+              coupling M1 of L1 and L2 : 0.9 ±5 %
+              ^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^
+              → narrow the tolerances of the couplings, or lower a factor
+            """.Replace("\\\n", "", StringComparison.Ordinal),
+            Checking.Messages(
+                """
+                source Feed at a : 10 V
+                inductor L1 at a : 1 mH
+                inductor L2 at a : 1 mH
+                inductor L3 at a : 1 mH
+                coupling M1 of L1 and L2 : 0.9 ±5 %
+                coupling M2 of L2 and L3 : 0.9 ±5 %
+                coupling M3 of L1 and L3 : 0.65
+                """));
+
+    [Fact]
+    public void What_varies_together_keeps_its_coupling() =>
+        Assert.Empty(Checking.Messages(
+            """
+            value Lcoil : 1 mH ±10 %
+            source Feed at a : 10 V
+            inductor L1 at a : Lcoil
+            inductor L2 at a : Lcoil
+            coupling M1 of L1 and L2 : 0.99*Lcoil
+            """));
+
+    [Fact]
     public void A_pair_is_coupled_once() =>
         Assert.Equal(
             """

@@ -1,3 +1,5 @@
+using CircuitTransient.Circuits;
+
 namespace CircuitTransient.Tests.Circuits;
 
 /// <summary>Names of parts and nodes.</summary>
@@ -185,4 +187,53 @@ public class NameTests
                 observe voltage of c
                 until 0 s
                 """));
+
+    [Fact]
+    public void A_part_s_voltage_is_across_it() =>
+        Assert.Equal(
+            """
+            plant.cause:3:20: error: `R9` is a part, and no node has that name
+              observe voltage of R9
+                                 ^^
+              → for the voltage between its ends write `voltage across R9`
+            """,
+            Checking.Messages(
+                """
+                source F at b : 1 V
+                resistor R9 at b : 1 Ω
+                observe voltage of R9
+                """));
+
+    [Fact]
+    public void A_repeated_part_is_numbered() =>
+        Assert.Equal(
+            """
+            plant.cause:3:12: error: the repetition makes a second part named `R`
+              resistor R at b : 1 Ω
+                       ^
+              → number them by the counter: `R[k]` where the block begins with `repeat … as k`
+            """,
+            Checking.Messages(
+                """
+                source F at b : 1 V
+                repeat 3 as k
+                  resistor R at b : 1 Ω
+                end
+                """));
+
+    [Theory]
+    [InlineData("capacitor C at b : n47", 0.47e-9)]
+    [InlineData("capacitor C at b : µ47", 0.47e-6)]
+    [InlineData("capacitor C at b : 47p", 47e-12)]
+    public void A_letter_may_lead_a_marking_code(string text, double farads) =>
+        Assert.Equal(
+            farads,
+            Checking.Circuit(text + "\nresistor R at b : 1 Ω").Part<Capacitor>("C").Capacitance.Nominal);
+
+    [Fact]
+    public void A_named_value_goes_before_a_marking_code() =>
+        Assert.Equal(
+            3000,
+            Checking.Circuit("value k1 : 3 kΩ\nsource F at b : 1 V\nresistor R1 at b : k1")
+                .Part<Resistor>("R1").Resistance.Nominal);
 }

@@ -261,22 +261,6 @@ public class WaveTests
                 """));
 
     [Fact]
-    public void A_tolerance_a_wave_cannot_carry_is_told() =>
-        Assert.Equal(
-            """
-            plant.cause:2:20: warning: `Vdc` is held at its nominal value here
-              source Feed at a : Vdc + step of 5 V at 1 s
-                                 ^^^
-              → its tolerance is drawn in part values, charges, currents and single waves only
-            """,
-            Checking.Messages(
-                """
-                value Vdc : 10 V ±5 %
-                source Feed at a : Vdc + step of 5 V at 1 s
-                resistor R1 at a : 1 kΩ
-                """));
-
-    [Fact]
     public void A_front_too_short_to_matter_is_a_step() =>
         Assert.Equal(
             """

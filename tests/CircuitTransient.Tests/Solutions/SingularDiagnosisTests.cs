@@ -209,6 +209,26 @@ public sealed class SingularDiagnosisTests
             string.Join('\n', Enumerable.Range(1, length).Select(line)) + "\n";
     }
 
+    [Fact]
+    public void A_shorted_winding_is_told_of_its_contact() =>
+        Assert.Equal(
+            """
+            plant.cause:1:1: error: `F`, `T` and `K` leave no unique solution: \
+            their laws contradict each other
+              source F at a : 1 V
+              ^^^^^^^^^^^^^^^^^^^
+              → give the contact the resistance it has: `closed resistance 1 mΩ` on `K`
+
+            """.Replace("\\\n", "", StringComparison.Ordinal),
+            Unsolved.Message(
+                """
+                source F at a : 1 V
+                transformer T primary at a, secondary at b : turns 10 to 1
+                switch K at b : closed, opens at 1 s
+                resistor R at b : 1 Ω
+                until 2 s
+                """));
+
     private static Diagnostic[] Unsolvable(string text)
     {
         var circuit = TransientAnalysis.Check(

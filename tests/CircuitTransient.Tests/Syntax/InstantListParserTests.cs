@@ -20,8 +20,16 @@ public class InstantListParserTests
         "--at:1:1: error: `5` has no unit; an instant is in seconds\n  5\n  ^\n  → write `5 s`")]
     [InlineData(
         "1 ms, 3 V",
-        "--at:1:7: error: `3 V` is not an instant, which is in seconds\n  1 ms, 3 V\n        ^^^")]
-    [InlineData("-1 ms", "--at:1:1: error: an instant before t = 0 is before the study\n  -1 ms\n  ^")]
+        "--at:1:7: error: `3 V` is not an instant, which is in seconds\n  1 ms, 3 V\n        ^^^\n"
+        + "  → such as `1 ms, 2.5 ms`")]
+    [InlineData(
+        "-1 ms",
+        "--at:1:1: error: an instant before t = 0 is before the study\n  -1 ms\n  ^\n"
+        + "  → the study starts at t = 0: write a time after it, such as `1 ms`")]
+    [InlineData(
+        "2*1 ms",
+        "--at:1:2: error: an instant is one number with its unit, and no sum or product\n  2*1 ms\n   ^\n"
+        + "  → such as `1 ms, 2.5 ms`")]
     [InlineData(
         "1 ms 2 ms",
         "--at:1:6: error: `2` stands where `,` should\n  1 ms 2 ms\n       ^\n  → such as `1 ms, 2.5 ms`")]

@@ -8,6 +8,9 @@ public class MarkingCodeTests
     [Theory]
     [InlineData("R47", 0.47)]
     [InlineData("R047", 0.047)]
+    [InlineData("K47", 470.0)]
+    [InlineData("k47", 470.0)]
+    [InlineData("M47", 0.47e6)]
     [InlineData("4R7", 4.7)]
     [InlineData("470R", 470.0)]
     [InlineData("4K7", 4.7e3)]
@@ -32,6 +35,11 @@ public class MarkingCodeTests
     [InlineData("3u3", 3.3e-6)]
     [InlineData("2m2", 2.2e-3)]
     [InlineData("1F5", 1.5)]
+    [InlineData("n47", 0.47e-9)]
+    [InlineData("p47", 0.47e-12)]
+    [InlineData("µ47", 0.47e-6)]
+    [InlineData("u47", 0.47e-6)]
+    [InlineData("m47", 0.47e-3)]
     public void A_capacitor_is_marked_in_farads(string text, double farads)
     {
         Assert.True(MarkingCode.TryRead(text, Dimension.Capacitance, out var value));

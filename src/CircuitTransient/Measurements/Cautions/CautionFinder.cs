@@ -31,6 +31,7 @@ internal sealed class CautionFinder(
             TouchCharge(),
             OpenedCoils(),
             Impulses(),
+            Surges(),
             GreatCurrents(),
             GrowingMode(),
             ReturningVoltage(),
@@ -40,18 +41,27 @@ internal sealed class CautionFinder(
 
     private Caution? StoredEnergy()
     {
-        var held = Named(Capacitors()
+        var held = Named(Capacitors().Concat(Coils())
             .Where(i => parts[i].Energy > CautionThresholds.StoredEnergy.Value
-                && Math.Abs(parts[i].PeakVoltage?.Value ?? 0) > CautionThresholds.StoredEnergyVoltage.Value)
+                && PeakVoltage(i) > CautionThresholds.StoredEnergyVoltage.Value)
             .Select(i => (parts[i].Energy!.Value,
-                $"{parts[i].Name} stores up to {Say(parts[i].Energy, "J")} "
-                + $"(at {Say(Math.Abs(parts[i].PeakVoltage!.Value!.Value), "V")})")));
+                $"{parts[i].Name} stores up to {Say(parts[i].Energy, "J")} ({Reach(i)})")));
         return held is null ? null : new Caution(
             CautionSeverity.Danger,
             $"{held}; over {CautionThresholds.StoredEnergy.Value} J at over "
                 + $"{CautionThresholds.StoredEnergyVoltage.Value} V",
             CautionThresholds.StoredEnergy.Words);
     }
+
+    /// <summary>In volts; infinite where an impulse stands across the part.</summary>
+    private double PeakVoltage(int part) => parts[part].PeakVoltage is { } peak
+        ? Math.Abs(peak.Value ?? double.PositiveInfinity)
+        : 0;
+
+    private string Reach(int part) =>
+        !double.IsFinite(PeakVoltage(part)) ? "its current is cut in no time"
+        : solution.Circuit.Parts[part] is Capacitor ? $"at {Say(PeakVoltage(part), "V")}"
+        : $"and bears {Say(PeakVoltage(part), "V")}";
 
     /// <summary>A capacitor left charged: at the end of the study, else five seconds after the last
     /// opening.</summary>
@@ -62,7 +72,8 @@ internal sealed class CautionFinder(
         {
             return new Caution(
                 CautionSeverity.Warning,
-                $"{atEnd} at the end of the study, {Say(solution.Until, "s")}; over {volts.Value} V and over "
+                $"{atEnd} at the end of the study, {Say(solution.Until, "s")}; over {volts.Value} V and "
+                    + $"{Micro(CautionThresholds.ExemptCharge)} µC, and over "
                     + $"{Micro(CautionThresholds.TouchCharge)} µC",
                 $"common thresholds, verify in {volts.Source} and {CautionThresholds.TouchCharge.Source}");
         }
@@ -73,7 +84,7 @@ internal sealed class CautionFinder(
             ? new Caution(
                 CautionSeverity.Warning,
                 $"{later} {CautionThresholds.RestDelay.Value} s after {opening!.Switch} opens; over "
-                    + $"{volts.Value} V",
+                    + $"{volts.Value} V and {Micro(CautionThresholds.ExemptCharge)} µC",
                 volts.Words)
             : null;
     }
@@ -104,8 +115,10 @@ internal sealed class CautionFinder(
         var opened = Named(events.Where(e => !e.Closes).SelectMany(Opened));
         return opened is null ? null : new Caution(
             CautionSeverity.Warning,
-            opened + ": a real contact draws an arc, which the result leaves out",
-            "switching of inductive loads: see IEC 60947 and the switch's own data");
+            $"{opened}; over {CautionThresholds.ArcCurrent.Value} A a real contact draws an arc, which the "
+                + "result leaves out",
+            CautionThresholds.ArcCurrent.Words
+                + "; switching of inductive loads: see IEC 60947 and the switch's own data");
     }
 
     private IEnumerable<(double Size, string Words)> Opened(EventResult opening)
@@ -157,6 +170,18 @@ internal sealed class CautionFinder(
             CautionSeverity.Warning,
             charges + ": a real current is limited by stray parts alone, and may weld contacts",
             CautionThresholds.GreatCurrent.Words);
+    }
+
+    private Caution? Surges()
+    {
+        var surges = Named(intervals.SelectMany(i => i.Impulses).Where(i => i.VoltSeconds is not null)
+            .Select(i => (Math.Abs(i.VoltSeconds!.Value),
+                $"{Say(i.VoltSeconds, "Vs")} across {i.Part} in no time")));
+        return surges is null ? null : new Caution(
+            CautionSeverity.Warning,
+            surges + ": a real voltage is limited by stray capacitance, an arc or a breakdown alone, and may "
+                + "pierce insulation",
+            "no threshold; the coil's own data and its insulation decide");
     }
 
     private Caution? GreatCurrents()

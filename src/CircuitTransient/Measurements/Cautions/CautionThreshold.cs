@@ -39,9 +39,9 @@ internal static class CautionThresholds
     public static CautionThreshold RestDelay { get; } = new(5, "IEC 60204-1", SourceGrade.Quoted);
 
     /// <summary>Coulombs that may be touched: IEC 60335-1, clause 8.1.4, 45 µC from 450 V on; quoted. IEC
-    /// 61010-1, clause 6.3.1, has the same figure from memory only, so it is not named to the
-    /// reader.</summary>
-    public static CautionThreshold TouchCharge { get; } = new(45e-6, "IEC 60335-1", SourceGrade.Quoted);
+    /// 61010-1, clause 6.3.1, has the same figure, from memory.</summary>
+    public static CautionThreshold TouchCharge { get; } = new(
+        45e-6, "IEC 60335-1 (IEC 61010-1 has the same, from memory)", SourceGrade.Quoted);
 
     /// <summary>Joules that can kill or burn.</summary>
     public static CautionThreshold StoredEnergy { get; } = new(10, Practice, SourceGrade.Practice);

@@ -11,37 +11,24 @@ public static class ScanPlot
     private const int MostCurves = 8;
     private const int MostMaps = 3;
     private const int MostDistributions = 2;
-    private const double PixelsPerPoint = 2;
-    private const double Margin = 20;
     private const double VerdictSize = 12.5;
 
     /// <summary>The picture as SVG.</summary>
-    public static string Svg(ScanResult result)
-    {
-        using var fonts = new PlotFonts();
-        return SvgRenderer.Write(Draw(result, fonts));
-    }
+    public static string Svg(ScanResult result) => PlotPage.Svg(fonts => Draw(result, fonts));
 
     /// <summary>The picture as PNG, two pixels a point.</summary>
-    public static byte[] Png(ScanResult result)
-    {
-        using var fonts = new PlotFonts();
-        return PngRenderer.Write(Draw(result, fonts), fonts, PixelsPerPoint);
-    }
+    public static byte[] Png(ScanResult result) => PlotPage.Png(fonts => Draw(result, fonts));
 
     /// <summary>The picture before it is rendered.</summary>
     public static Drawing Draw(ScanResult result, PlotFonts fonts)
     {
         var shapes = ImmutableArray.CreateBuilder<Shape>();
         var title = result.Circuit.Title ?? result.Circuit.Source.Name;
-        var width = PlotPanel.Width - ScanFrame.Left - Margin;
-        shapes.Add(new TextShape(
-            ScanFrame.Left, 34, fonts.Fitted(title, 19, width, isStrong: true), 19, PlotStyle.Ink,
-            IsStrong: true));
+        shapes.Add(PlotPage.Title(title, fonts));
         var y = 55.0;
-        foreach (var row in Rows(ScanSummary.Verdict(result), fonts, width))
+        foreach (var row in Rows(ScanSummary.Verdict(result), fonts))
         {
-            shapes.Add(new TextShape(ScanFrame.Left, y, row, VerdictSize, PlotStyle.Grey));
+            shapes.Add(PlotPage.Remark(row, y, fonts, VerdictSize));
             y += 17;
         }
 
@@ -53,20 +40,17 @@ public static class ScanPlot
             y += height;
         }
 
-        var source = result.Circuit.Source;
-        var foot = $"{source.Name}, SHA-256 {source.Sha256[..12]}… · a linear model, a calculation aid";
-        shapes.Add(new TextShape(
-            ScanFrame.Left, y + 10, fonts.Fitted(foot, 11, width), 11, PlotStyle.Grey));
+        shapes.Add(PlotPage.Foot(result.Circuit, y + 10, fonts));
         return new Drawing(PlotPanel.Width, y + 26, $"Scan of {title}", shapes.ToImmutable());
     }
 
-    private static List<string> Rows(string text, PlotFonts fonts, double width)
+    private static List<string> Rows(string text, PlotFonts fonts)
     {
         List<string> rows = [""];
         foreach (var word in text.Split(' '))
         {
             var longer = rows[^1].Length == 0 ? word : $"{rows[^1]} {word}";
-            if (rows[^1].Length == 0 || fonts.Width(longer, VerdictSize) <= width)
+            if (rows[^1].Length == 0 || fonts.Width(longer, VerdictSize) <= PlotPage.Width)
             {
                 rows[^1] = longer;
             }

@@ -47,17 +47,7 @@ public static partial class ScanSummary
         WriteTroubles(text, result);
         text.Blank();
         text.Paragraph(Searched(result), indent: 0);
-        if (!files.IsEmpty)
-        {
-            text.Heading("Files");
-            foreach (var file in files)
-            {
-                text.Paragraph(file);
-            }
-        }
-
-        text.Blank();
-        text.Paragraph(TerminalSummary.Closing, indent: 0);
+        text.End(files);
         return text.ToString();
     }
 

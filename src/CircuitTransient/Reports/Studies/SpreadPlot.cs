@@ -9,9 +9,6 @@ namespace CircuitTransient.Reports.Studies;
 public static class SpreadPlot
 {
     private const int MostBands = 12;
-    private const double PixelsPerPoint = 2;
-    private const double Left = 76;
-    private const double Margin = 20;
 
     /// <summary>The stretches of time that the picture enlarges.</summary>
     public static ImmutableArray<WaveformDetail> Details(TransientResult nominal) =>
@@ -23,30 +20,19 @@ public static class SpreadPlot
     ];
 
     /// <summary>The picture as SVG.</summary>
-    public static string Svg(SpreadResult spread)
-    {
-        using var fonts = new PlotFonts();
-        return SvgRenderer.Write(Draw(spread, fonts));
-    }
+    public static string Svg(SpreadResult spread) => PlotPage.Svg(fonts => Draw(spread, fonts));
 
     /// <summary>The picture as PNG, two pixels a point.</summary>
-    public static byte[] Png(SpreadResult spread)
-    {
-        using var fonts = new PlotFonts();
-        return PngRenderer.Write(Draw(spread, fonts), fonts, PixelsPerPoint);
-    }
+    public static byte[] Png(SpreadResult spread) => PlotPage.Png(fonts => Draw(spread, fonts));
 
     /// <summary>The picture before it is rendered.</summary>
     public static Drawing Draw(SpreadResult spread, PlotFonts fonts)
     {
         var circuit = spread.Varied.Circuit;
         var shapes = ImmutableArray.CreateBuilder<Shape>();
-        var width = PlotPanel.Width - Left - Margin;
         var title = $"{circuit.Title ?? circuit.Source.Name}: every tolerance";
-        shapes.Add(new TextShape(
-            Left, 34, fonts.Fitted(title, 19, width, isStrong: true), 19, PlotStyle.Ink, IsStrong: true));
-        shapes.Add(new TextShape(
-            Left, 55, fonts.Fitted(SpreadWords.Verdict(spread), 12.5, width), 12.5, PlotStyle.Grey));
+        shapes.Add(PlotPage.Title(title, fonts));
+        shapes.Add(PlotPage.Remark(SpreadWords.Verdict(spread), 55, fonts));
         var y = 76.0;
         if (spread.Worst is { } worst)
         {
@@ -71,9 +57,7 @@ public static class SpreadPlot
             }
         }
 
-        var foot = $"{circuit.Source.Name}, SHA-256 {circuit.Source.Sha256[..12]}… · a linear model, a "
-            + "calculation aid";
-        shapes.Add(new TextShape(Left, y + 10, fonts.Fitted(foot, 11, width), 11, PlotStyle.Grey));
+        shapes.Add(PlotPage.Foot(circuit, y + 10, fonts));
         return new Drawing(PlotPanel.Width, y + 26, $"Tolerances of {title}", shapes.ToImmutable());
     }
 }

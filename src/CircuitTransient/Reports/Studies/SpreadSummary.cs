@@ -37,22 +37,9 @@ public static partial class SpreadSummary
         WriteDrivers(text, spread);
         text.Blank();
         text.Paragraph(SpreadWords.Checks(spread), indent: 0, hanging: 2);
-        if (!files.IsEmpty)
-        {
-            text.Heading("Files");
-            foreach (var file in files)
-            {
-                text.Paragraph(file);
-            }
-
-            if (spread.Draws is { } draws && draws.RowCount < draws.Draws)
-            {
-                text.Paragraph(SpreadWords.Table(spread), hanging: 2);
-            }
-        }
-
-        text.Blank();
-        text.Paragraph(TerminalSummary.Closing, indent: 0);
+        text.End(files, spread.Draws is { } draws && draws.RowCount < draws.Draws
+            ? SpreadWords.Table(spread)
+            : null);
         return text.ToString();
     }
 

@@ -61,9 +61,9 @@ public sealed partial class DrawWorkspace
                 }
             }
 
-            for (var s = 0; s < factors.Length; s++)
+            for (var s = 0; s < shifts.Length; s++)
             {
-                var rate = form.Rates[(function.Row * factors.Length) + s];
+                var rate = form.Rates[(function.Row * shifts.Length) + s];
                 if (rate != 0)
                 {
                     Add(rate * kernel.Waves.Onset(segment.Start, s, segment.BeginsInterval, factors, shifts),

@@ -41,7 +41,7 @@ public sealed partial class DrawWorkspace
     {
         this.kernel = kernel;
         parameters = new double[kernel.Values.ParameterCount];
-        factors = new double[kernel.Waves.SourceCount];
+        factors = new double[kernel.Waves.FactorCount];
         shifts = new double[kernel.Waves.SourceCount];
         forms = [.. kernel.Forms.Select(f => new ClosedForm(f))];
         isClosed = new bool[forms.Length];
@@ -54,7 +54,7 @@ public sealed partial class DrawWorkspace
         atStart = new double[4 * order];
         startSizes = new StartOfRow[kernel.Figures.Functions.Length];
         startErrors = new StartOfRow[startSizes.Length];
-        levels = new Complex[exponents * factors.Length];
+        levels = new Complex[exponents * shifts.Length];
         slopes = new Complex[levels.Length];
         tracks = new TrackState[kernel.Figures.Tracks.Length];
         integrals = new double[kernel.Figures.Integrals.Length];

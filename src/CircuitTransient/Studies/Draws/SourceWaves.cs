@@ -9,7 +9,7 @@ namespace CircuitTransient.Studies.Draws;
 internal sealed class SourceWaves
 {
     private readonly ImmutableArray<Piece> pieces;
-    private readonly ImmutableArray<Quantity> scales;
+    private readonly List<Quantity> scales = []; // of each source, then of pieces with one of their own
     private readonly ImmutableArray<int> sources;
 
     public SourceWaves(InstrumentedCircuit circuit)
@@ -17,17 +17,14 @@ internal sealed class SourceWaves
         var exponents = new List<Complex>();
         var found = ImmutableArray.CreateBuilder<Piece>();
         sources = [.. circuit.Layout.Sources.Take(circuit.SourceCount)];
-        var factors = ImmutableArray.CreateBuilder<Quantity>();
         for (var s = 0; s < sources.Length; s++)
         {
-            var wave = circuit.Original.Parts[sources[s]] switch
-            {
-                VoltageSource v => v.Wave,
-                CurrentSource c => c.Wave,
-                _ => throw new System.Diagnostics.UnreachableException("not a source"),
-            };
-            factors.Add(wave.Scale);
-            foreach (var piece in wave.Pieces)
+            scales.Add(WaveOf(circuit, s).Scale);
+        }
+
+        for (var s = 0; s < sources.Length; s++)
+        {
+            foreach (var piece in WaveOf(circuit, s).Pieces)
             {
                 var exponent = new Complex(-piece.DecayRate, piece.AngularFrequency);
                 if (!exponents.Contains(exponent))
@@ -35,12 +32,11 @@ internal sealed class SourceWaves
                     exponents.Add(exponent);
                 }
 
-                found.Add(new Piece(s, exponents.IndexOf(exponent), piece));
+                found.Add(new Piece(s, FactorOf(piece) ?? s, exponents.IndexOf(exponent), piece.At(1)));
             }
         }
 
         pieces = found.ToImmutable();
-        scales = factors.ToImmutable();
         Exponents = [.. exponents];
     }
 
@@ -50,14 +46,22 @@ internal sealed class SourceWaves
     /// <summary>How many sources there are.</summary>
     public int SourceCount => sources.Length;
 
-    /// <summary>The factor of every source's wave, and by how much its phase is turned.</summary>
+    /// <summary>How many factors there are.</summary>
+    public int FactorCount => scales.Count;
+
+    /// <summary>The factor of every wave and of every piece with one of its own, and by how much the phase
+    /// of each source is turned.</summary>
     public void PutFactors(
         DrawValues values, ReadOnlySpan<double> draw, ReadOnlySpan<double> parameters, Span<double> factors,
         Span<double> shifts)
     {
+        for (var f = 0; f < scales.Count; f++)
+        {
+            factors[f] = FormulaValue.Of(scales[f], parameters);
+        }
+
         for (var s = 0; s < sources.Length; s++)
         {
-            factors[s] = FormulaValue.Of(scales[s], parameters);
             shifts[s] = values.PhaseShift(sources[s], draw);
         }
     }
@@ -75,7 +79,7 @@ internal sealed class SourceWaves
     {
         levels.Clear();
         slopes.Clear();
-        foreach (var (source, exponent, wave) in pieces)
+        foreach (var (source, own, exponent, wave) in pieces)
         {
             if (wave.Start > time || wave.End <= time || (perpetual && !wave.IsPerpetual))
             {
@@ -85,7 +89,7 @@ internal sealed class SourceWaves
             var elapsed = time - wave.Start;
             var phase = wave.Phase + (wave.StatedPhase is null ? 0 : shifts[source])
                 + (wave.AngularFrequency * elapsed);
-            var size = factors[source]
+            var size = factors[own]
                 * (wave.DecayRate == 0 ? 1 : Math.Exp(-wave.DecayRate * elapsed));
             var (sin, cos) = phase == 0 ? (0.0, 1.0) : Math.SinCos(phase);
             // without a frequency only the cosine of the phase counts
@@ -113,15 +117,41 @@ internal sealed class SourceWaves
 
             if (wave.Start == time || (beginsInterval && wave.Start < time && time < wave.End))
             {
-                sum += At(wave, time, shifts[source]);
+                sum += factors[piece.Factor] * At(wave, time, shifts[source]);
             }
             else if (wave.End == time && !beginsInterval)
             {
-                sum -= At(wave, time, shifts[source]);
+                sum -= factors[piece.Factor] * At(wave, time, shifts[source]);
             }
         }
 
-        return factors[source] * sum;
+        return sum;
+    }
+
+    private static Wave WaveOf(InstrumentedCircuit circuit, int source) =>
+        circuit.Original.Parts[circuit.Layout.Sources[source]] switch
+        {
+            VoltageSource v => v.Wave,
+            CurrentSource c => c.Wave,
+            _ => throw new System.Diagnostics.UnreachableException("not a source"),
+        };
+
+    /// <summary>The place of a piece's own factor, which pieces of one term share; null where it goes with
+    /// its wave.</summary>
+    private int? FactorOf(WavePiece piece)
+    {
+        if (piece.Share is not { } share)
+        {
+            return null;
+        }
+
+        var known = scales.FindIndex(s => ReferenceEquals(s, share.Factor));
+        if (known < 0)
+        {
+            scales.Add(share.Factor);
+        }
+
+        return known < 0 ? scales.Count - 1 : known;
     }
 
     private static double At(WavePiece wave, double time, double shift)
@@ -132,5 +162,5 @@ internal sealed class SourceWaves
             * Math.Cos(phase);
     }
 
-    private readonly record struct Piece(int Source, int Exponent, WavePiece Wave);
+    private readonly record struct Piece(int Source, int Factor, int Exponent, WavePiece Wave);
 }

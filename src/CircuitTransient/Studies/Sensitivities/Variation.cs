@@ -72,7 +72,9 @@ internal sealed class Variation
             return Forcing.Of(pieces, layout.Input(source), slope, start);
         }
 
-        return source != turned ? []
+        var shared = pieces.Select(p => (Piece: p, Slope: SlopeOf(p.Share?.Factor))).Where(p => p.Slope != 0);
+        return source != turned
+            ? Forcing.Of(shared.Select(p => p.Piece.At(p.Slope)), layout.Input(source), 1, start)
             : [.. Forcing.Of(pieces.Where(p => p.StatedPhase is not null), layout.Input(source),
                 wave.Scale.Nominal, start).Select(Turned)];
     }

@@ -27,9 +27,12 @@ public sealed class CautionTests
             """));
         Assert.Equal(CautionSeverity.Warning, caution.Severity);
         Assert.Equal(
-            "C holds 118.0 V, 118.0 µC at the end of the study, 1.000 ms; over 60 V and over 45 µC",
+            "C holds 118.0 V, 118.0 µC at the end of the study, 1.000 ms; over 60 V and 60 µC, and over "
+            + "45 µC",
             caution.Text);
-        Assert.Equal("common thresholds, verify in IEC 60204-1 and IEC 60335-1", caution.Standard);
+        Assert.Equal(
+            "common thresholds, verify in IEC 60204-1 and IEC 60335-1 (IEC 61010-1 has the same, from "
+            + "memory)", caution.Standard);
     }
 
     // 0.5 µF at 100 V are 50 µC: exempt by the machine's figure of 60 µC, over the appliance's 45 µC.
@@ -44,7 +47,7 @@ public sealed class CautionTests
             """));
         Assert.Equal(
             ("C holds 100.0 V, 50.00 µC at the end of the study; over 45 µC",
-                "common threshold, verify in IEC 60335-1"),
+                "common threshold, verify in IEC 60335-1 (IEC 61010-1 has the same, from memory)"),
             (caution.Text, caution.Standard));
     }
 
@@ -60,7 +63,7 @@ public sealed class CautionTests
             resistor R from c to ground : 1 MΩ
             until 20 s
             """));
-        Assert.Equal("C holds 71.57 V, 715.7 µC 5 s after K opens; over 60 V", caution.Text);
+        Assert.Equal("C holds 71.57 V, 715.7 µC 5 s after K opens; over 60 V and 60 µC", caution.Text);
         Assert.Equal("common threshold, verify in IEC 60204-1", caution.Standard);
     }
 
@@ -93,11 +96,13 @@ public sealed class CautionTests
             until 2 ms
             """));
         Assert.Equal(
-            "K opens 3.000 A while L carries 3.000 A: a real contact draws an arc, which the result leaves "
-            + "out",
+            "K opens 3.000 A while L carries 3.000 A; over 0.1 A a real contact draws an arc, which the "
+            + "result leaves out",
             caution.Text);
         Assert.Equal(
-            "switching of inductive loads: see IEC 60947 and the switch's own data", caution.Standard);
+            "common practice, no source; switching of inductive loads: see IEC 60947 and the switch's own "
+            + "data",
+            caution.Standard);
     }
 
     // The coil across the ideal source keeps its current whatever the other branch does.
@@ -111,6 +116,38 @@ public sealed class CautionTests
         resistor R from a to ground : 4 Ω
         until 2 ms
         """));
+
+    // 1 H carrying 200 A: ½ · 1 H · (200 A)² = 20 kJ, and 200 A in 5 Ω are 1 kV.
+    [Fact]
+    public void A_coil_s_energy_counts_as_a_capacitor_s_does() => Assert.Equal(
+        "L stores up to 20.00 kJ (and bears 1.000 kV); over 10 J at over 100 V",
+        Cautions(
+            """
+            inductor L from a to ground : 1 H, carrying 200 A
+            resistor R from a to ground : 5 Ω
+            until 1 s
+            """)[0].Text);
+
+    // 6 mH · 3 A
+    [Fact]
+    public void A_voltage_without_limit_threatens_insulation()
+    {
+        var caution = Assert.Single(
+            Cautions(
+                """
+                source E at s : 12 V
+                switch K from s to a : closed, opens at 1 ms
+                inductor L from a to b : 6 mH, carrying 3 A
+                resistor R from b to ground : 4 Ω
+                until 2 ms
+                """),
+            c => c.Text.Contains("Vs", StringComparison.Ordinal));
+        Assert.Equal(
+            ("18.00 mVs across K in no time, -18.00 mVs across L in no time: a real voltage is limited by "
+                + "stray capacitance, an arc or a breakdown alone, and may pierce insulation",
+                "no threshold; the coil's own data and its insulation decide"),
+            (caution.Text, caution.Standard));
+    }
 
     // Without a path beside it the coil's 3 A have to stop at once: 18 mWb.
     [Fact]

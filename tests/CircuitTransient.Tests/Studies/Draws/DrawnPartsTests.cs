@@ -28,6 +28,21 @@ public sealed class DrawnPartsTests
         new EveryTolerance(), new PartValueTarget("M"));
 
     [Fact]
+    public void Terms_of_a_sum_with_values_of_their_own_agree_with_the_exact_engine() => AllAgree(
+        """
+        value Vx : 3 V ±10 %
+        value Vy : 2 V ±20 %
+        source E at s : Vx + step of 2*Vx at 1 ms - sine of Vy at 200 Hz from 2 ms +
+            ramp of 1 V from 3 ms to 4 ms
+        resistor R from s to a : 1 kΩ ±10 %
+        capacitor C from a to ground : 1 µF ±10 %
+        observe voltage of a
+        observe current through C
+        until 8 ms
+        """,
+        new EveryTolerance());
+
+    [Fact]
     public void Dependent_sources_and_their_gains_agree_with_the_exact_engine() => AllAgree(
         """
         source E at s : step of 1 V at 1 ms

@@ -37,6 +37,19 @@ public class SegmentDerivativeTests
             """
         },
         {
+            "a sum whose terms follow values of their own",
+            "value:Vx value:Vy R1",
+            """
+            value     Vx : 3 V
+            value     Vy : 2 V
+            source    Feed at in : Vx + step of 2*Vx at 1 ms - sine of Vy at 200 Hz from 2 ms
+            resistor  R1 from in to a : 1 kΩ
+            capacitor C1 from a to ground : 1 µF
+            observe voltage of a
+            until 3 ms
+            """
+        },
+        {
             "a stiff circuit: a microohm, a picofarad, a megaohm",
             "Rbus Lbus Cbig Cstray Rbleed Rl",
             """
@@ -167,5 +180,11 @@ public class SegmentDerivativeTests
     }
 
     private static Derived Of(string text, string values) => Derived.Of(
-        text, [new EveryTolerance(), .. values.Split(' ').Select(n => new PartValueTarget(n))]);
+        text,
+        [
+            new EveryTolerance(),
+            .. values.Split(' ').Select(n => n.StartsWith("value:", StringComparison.Ordinal)
+                ? (StudyTarget)new NamedValueTarget(n["value:".Length..])
+                : new PartValueTarget(n)),
+        ]);
 }

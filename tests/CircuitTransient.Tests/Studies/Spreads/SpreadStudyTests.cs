@@ -43,6 +43,22 @@ public class SpreadStudyTests
         Assert.True(greatest.IsCorner);
     }
 
+    // One draw is shared by all who use it: 2 · 3 V ± 5 %.
+    [Fact]
+    public void A_named_value_in_two_terms_of_a_wave_is_drawn_once()
+    {
+        var spread = Spreading.Of(
+            """
+            value Vx : 3 V ±5 %
+            source S at a : Vx + step of Vx at 1 ms
+            resistor R1 at a : 1 kΩ
+            until 2 ms
+            """);
+        var range = spread.Figure("max of voltage of a");
+        Assert.Equal(5.7, range.Least!.Value, 1e-12);
+        Assert.Equal(6.3, range.Greatest!.Value, 1e-12);
+    }
+
     [Fact]
     public void The_draws_tell_the_probability_of_the_closed_form()
     {
