@@ -19,8 +19,7 @@ public sealed record Streams(
 {
     private static readonly UTF8Encoding Encoding = new(encoderShouldEmitUTF8Identifier: false);
 
-    /// <summary>The streams of this process. A pipe closed by its reader swallows the
-    /// rest.</summary>
+    /// <summary>The streams of this process. A pipe closed by its reader swallows the rest.</summary>
     public static Streams OfProcess() =>
         new(
             new StreamWriter(Console.OpenStandardOutput(), Encoding, bufferSize: 1 << 16) { NewLine = "\n" },

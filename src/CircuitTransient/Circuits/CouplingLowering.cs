@@ -89,8 +89,7 @@ internal static class CouplingLowering
 
     private static bool IsPossible(
         CheckState state, CouplingStatement syntax, PartDeclaration first, PartDeclaration second,
-            Evaluated value,
-        bool isFactor)
+        Evaluated value, bool isFactor)
     {
         var span = syntax.Value.Value.Span;
         if (isFactor && Math.Abs(value.Value) > 1)

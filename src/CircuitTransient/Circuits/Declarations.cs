@@ -64,7 +64,7 @@ internal static class Declarations
 
         var part = new PartDeclaration(
             full, state.Declared.Count, IsCoupling: false, statement, scope, name, from, to, secondaryFrom,
-                secondaryTo);
+            secondaryTo);
         if (state.Names.Declare(full, name.Span, part))
         {
             state.Declared.Add(part);

@@ -146,7 +146,7 @@ internal sealed class Expansion
         {
             WriteAssembly(assembly, overrides, scope, new Scope(
                 name + "/", ImmutableDictionary<string, int>.Empty, terminals.ToImmutable(),
-                    scope.Reference));
+                scope.Reference));
         }
     }
 

@@ -20,8 +20,7 @@ internal sealed class Findings(SourceText source)
     public HashSet<string> Excused { get; } = new(StringComparer.Ordinal);
 
     /// <summary>Whether parts are missing because of a mistake told already: then nothing is said of paths
-    /// and loose
-    /// ends.</summary>
+    /// and loose ends.</summary>
     public bool LacksParts
     {
         get => field || LacksNames;
@@ -29,8 +28,7 @@ internal sealed class Findings(SourceText source)
     }
 
     /// <summary>Whether it is not even known which names the missing parts had: then nothing is said of
-    /// unknown parts
-    /// and nodes either.</summary>
+    /// unknown parts and nodes either.</summary>
     public bool LacksNames { get; set; }
 
     /// <summary>Whether an unreadable statement may have made, or meant, that name.</summary>

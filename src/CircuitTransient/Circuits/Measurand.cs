@@ -95,8 +95,7 @@ public sealed record Requirement(
 public abstract record Bound;
 
 /// <summary>Limits on the value in the quantity's unit (an overshoot's in per cent), each null where open; a
-/// bound in
-/// magnitude has both.</summary>
+/// bound in magnitude has both.</summary>
 public sealed record Limits(double? Lower, double? Upper) : Bound;
 
 /// <summary>From <paramref name="By"/> on, the quantity stays within a fraction of the target.</summary>

@@ -6,7 +6,7 @@ namespace CircuitTransient.Circuits;
 /// <summary>How a dimension is spoken of: <c>a resistance</c>, in <c>ohms</c>, written <c>Ω</c>.</summary>
 internal sealed record Measure(string Phrase, string UnitWord, string Unit)
 {
-    private static readonly Dictionary<Dimension, Measure> known = new()
+    private static readonly Dictionary<Dimension, Measure> Known = new()
     {
         [Dimension.None] = new("a pure number", "no unit", ""),
         [Dimension.Voltage] = new("a voltage", "volts", "V"),
@@ -29,7 +29,7 @@ internal sealed record Measure(string Phrase, string UnitWord, string Unit)
 
     public static Measure Of(Dimension dimension)
     {
-        if (known.TryGetValue(dimension, out var measure))
+        if (Known.TryGetValue(dimension, out var measure))
         {
             return measure;
         }

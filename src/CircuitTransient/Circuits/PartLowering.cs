@@ -9,7 +9,7 @@ internal static class PartLowering
     public static Part? Lower(CheckState state, PartDeclaration part)
     {
         var clauses = PartClauses.Read(state, part);
-        Part? lowered = part.Statement switch
+        var lowered = part.Statement switch
         {
             SimplePartStatement simple => Simple(state, part, simple),
             SourceStatement source => Source(state, part, source),

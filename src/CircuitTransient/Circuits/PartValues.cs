@@ -12,7 +12,7 @@ internal static class PartValues
     /// own value.</param>
     public static Evaluated? Toleranced(
         CheckState state, PartDeclaration part, ToleratedSyntax syntax, Dimension dimension,
-            string? aspect) =>
+        string? aspect) =>
         Read(state, part, syntax.Value, dimension) is { } value
             ? Tolerances.Apply(value, syntax, part.Scope, state.Evaluator, state.Findings, state.Parameters,
                 part.Name, part.NameSyntax.Span, aspect)

@@ -4,8 +4,7 @@ namespace CircuitTransient.Circuits;
 public static class Schedule
 {
     /// <summary>The instant in seconds where it follows from the text alone, with all parameters nominal;
-    /// null where
-    /// it waits for a condition or a current that the answer decides.</summary>
+    /// null where it waits for a condition or a current that the answer decides.</summary>
     /// <param name="instant">The instant.</param>
     /// <param name="parts">The parts by index; those not known yet may be null.</param>
     public static double? Resolve(Instant instant, IReadOnlyList<Part?> parts)

@@ -40,9 +40,8 @@ internal sealed class SineLowering(CheckState state, Scope scope)
         return
         [
             new WavePiece(start, end, sine.IsRms ? amplitude * Math.Sqrt(2) : amplitude, 0, rate,
-                2 * Math.PI * f,
-                PhaseAt(start, f, sine.IsCosine ? p : p - (Math.PI / 2)), Label(sine, start, end),
-                    isPerpetual)
+                2 * Math.PI * f, PhaseAt(start, f, sine.IsCosine ? p : p - (Math.PI / 2)),
+                Label(sine, start, end), isPerpetual)
             { StatedPhase = p },
         ];
     }

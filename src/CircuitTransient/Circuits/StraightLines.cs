@@ -44,8 +44,7 @@ internal static class StraightLines
             {
                 pieces.Add(new WavePiece(
                     start.Time, end.Time, start.Level, (end.Level - start.Level) / (end.Time - start.Time), 0,
-                        0, 0,
-                    $"line from {Amount.Of(start.Time, "s")} to {Amount.Of(end.Time, "s")}")
+                    0, 0, $"line from {Amount.Of(start.Time, "s")} to {Amount.Of(end.Time, "s")}")
                 {
                     Continues = pieces.Count > 0,
                 });

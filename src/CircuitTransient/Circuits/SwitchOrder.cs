@@ -16,8 +16,7 @@ internal static class SwitchOrder
     }
 
     // An event waits for the one it is counted from and for the one before it on its own switch. A ring of
-    // such
-    // waits is found by walking each event once; the switches in rings are returned.
+    // such waits is found by walking each event once; the switches in rings are returned.
     private static HashSet<int> ReportRings(CheckState state)
     {
         var ringed = new HashSet<int>();

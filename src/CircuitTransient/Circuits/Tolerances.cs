@@ -10,9 +10,8 @@ internal static class Tolerances
     /// else what follows from the named values in it.</summary>
     public static Evaluated? Apply(
         Evaluated value, ToleratedSyntax syntax, Scope scope, ExpressionEvaluator evaluator,
-            Findings findings,
-        ParameterList parameters, string owner, TextSpan span, string? aspect = null, bool isNamedValue =
-            false)
+        Findings findings, ParameterList parameters, string owner, TextSpan span, string? aspect = null,
+        bool isNamedValue = false)
     {
         Tolerance? tolerance = null;
         if (syntax.Tolerance is { } written)

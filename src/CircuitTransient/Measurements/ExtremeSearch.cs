@@ -42,8 +42,8 @@ public sealed class ExtremeSearch
     /// <param name="until">Its end.</param>
     /// <param name="mostStretches">How many stretches may be looked at before the search stops with what is
     /// proven.</param>
-    public static FoundExtreme Greatest(Curve curve, double from, double until, int mostStretches =
-        100_000) =>
+    public static FoundExtreme Greatest(
+        Curve curve, double from, double until, int mostStretches = 100_000) =>
         new ExtremeSearch(curve, 1, from, until).Run(mostStretches);
 
     /// <summary>The least value in a window.</summary>

@@ -11,7 +11,7 @@ internal static class Notices
     /// <summary>All warnings, those of the text first.</summary>
     public static ImmutableArray<Notice> Of(
         TransientSolution solution, ImmutableArray<Diagnostic> warnings,
-            ImmutableArray<ObservationResult> observations) =>
+        ImmutableArray<ObservationResult> observations) =>
     [
         .. warnings.Select(Notice.Of),
         .. solution.NeverActed

@@ -84,8 +84,7 @@ internal sealed class ObservationMeasurement(
 
     private Contribution Contribution(
         Measurand quantity, (string Name, Share Share, int Cause, Curve Curve) share, Extreme max,
-            Extreme min,
-        (double From, double To) window)
+        Extreme min, (double From, double To) window)
     {
         var atMax = At(share.Curve, max);
         var atMin = At(share.Curve, min);
@@ -181,7 +180,7 @@ internal sealed class ObservationMeasurement(
             solution.Causes.Select(c => new Contribution(c.Name, null, null, null, null, null, null));
         return new ObservationResult(
             observation.Name, observation.Unit, null, null, null, nothing, nothing, false, [.. contributions],
-                null,
+            null,
             [.. options.At
                 .Select(t => new SampleAt(t, null, [.. solution.Causes.Select(_ => (double?)null)]))],
             [], []);

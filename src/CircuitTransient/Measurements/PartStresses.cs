@@ -91,9 +91,8 @@ internal sealed class PartStresses(CurveBuilder curves, Infinities infinities, F
 
     /// <summary>The peaks of voltage, current, power and the rates. A resistor's current has the shape of its
     /// voltage, so two searches give all five.</summary>
-    private (TimedValue? V, TimedValue? I, TimedValue? P, TimedValue? VoltageRate,
-        TimedValue? CurrentRate) Peaks(
-        int part)
+    private (TimedValue? V, TimedValue? I, TimedValue? P, TimedValue? VoltageRate, TimedValue? CurrentRate)
+        Peaks(int part)
     {
         var voltage = Peak(new VoltageAcross(part));
         var voltageRate = Peak(new RateOfChange(new VoltageAcross(part)));

@@ -69,8 +69,7 @@ internal sealed class RequirementMeasurement(
         return new Verdict(margin >= 0, worst, margin);
     }
 
-    /// <summary>A figure is one number; where the waveform has none, the requirement does not
-    /// hold.</summary>
+    /// <summary>A figure is one number; where the waveform has none, the requirement does not hold.</summary>
     private Verdict JudgeFigure(
         Requirement requirement, Figure figure, Limits limits)
     {
@@ -86,8 +85,7 @@ internal sealed class RequirementMeasurement(
     }
 
     /// <summary>From the stated instant on the quantity stays within the band about its target.</summary>
-    private Verdict JudgeSettling(Requirement requirement,
-        SettlesTo settles)
+    private Verdict JudgeSettling(Requirement requirement, SettlesTo settles)
     {
         if (times.Of(new Window(settles.By, requirement.Window.To)) is not { } window
             || CurveOf(requirement.Quantity, window) is not { } curve)

@@ -17,15 +17,15 @@ public sealed record Balancing(DoubleDoubleMatrix Matrix, IReadOnlyList<int> Exp
     public static Balancing Of(DoubleDoubleMatrix a)
     {
         ArgumentNullException.ThrowIfNull(a);
-        int[] exponents = new int[a.Rows];
-        for (int sweep = 0; sweep < MostSweeps && Sweep(a, exponents); sweep++)
+        var exponents = new int[a.Rows];
+        for (var sweep = 0; sweep < MostSweeps && Sweep(a, exponents); sweep++)
         {
         }
 
         DoubleDoubleMatrix balanced = new(a.Rows, a.Rows);
-        for (int i = 0; i < a.Rows; i++)
+        for (var i = 0; i < a.Rows; i++)
         {
-            for (int j = 0; j < a.Rows; j++)
+            for (var j = 0; j < a.Rows; j++)
             {
                 balanced[i, j] = DoubleDouble.ScaleByPowerOfTwo(a[i, j], exponents[j] - exponents[i]);
             }
@@ -36,17 +36,17 @@ public sealed record Balancing(DoubleDoubleMatrix Matrix, IReadOnlyList<int> Exp
 
     private static bool Sweep(DoubleDoubleMatrix a, int[] exponents)
     {
-        bool changed = false;
-        for (int i = 0; i < a.Rows; i++)
+        var changed = false;
+        for (var i = 0; i < a.Rows; i++)
         {
-            (double c, double r) = Norms(a, exponents, i);
+            (var c, var r) = Norms(a, exponents, i);
             if (c == 0 || r == 0)
             {
                 continue;
             }
 
-            int step = (int)Math.Round(Math.Log2(r / c) / 2);
-            double f = Math.ScaleB(1, step);
+            var step = (int)Math.Round(Math.Log2(r / c) / 2);
+            var f = Math.ScaleB(1, step);
             if ((c * f) + (r / f) < WorthWhile * (c + r) && Math.Abs(exponents[i] + step) <= LargestExponent)
             {
                 exponents[i] += step;
@@ -61,7 +61,7 @@ public sealed record Balancing(DoubleDoubleMatrix Matrix, IReadOnlyList<int> Exp
     {
         double c = 0;
         double r = 0;
-        for (int k = 0; k < a.Rows; k++)
+        for (var k = 0; k < a.Rows; k++)
         {
             if (k != i)
             {

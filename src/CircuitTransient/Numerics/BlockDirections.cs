@@ -7,24 +7,23 @@ namespace CircuitTransient.Numerics;
 /// <param name="basis">The block.</param>
 internal sealed class BlockDirections(InvariantBasis basis)
 {
-    private readonly Complex[][] _right = Orthonormalised(basis.Right);
-    private readonly Complex[][] _left = Orthonormalised(basis.Left);
+    private readonly Complex[][] right = Orthonormalised(basis.Right);
+    private readonly Complex[][] left = Orthonormalised(basis.Left);
 
     /// <summary>Product of the cosines between the right and between the left spans; 1 where both are
-    /// parallel.
-    /// </summary>
+    /// parallel.</summary>
     public double CosineTo(BlockDirections other) =>
-        Cosine(_right, other._right) * Cosine(_left, other._left);
+        Cosine(right, other.right) * Cosine(left, other.left);
 
     /// <summary>The root mean square cosine over the smaller span; 1 where one lies in the other.</summary>
     private static double Cosine(Complex[][] u, Complex[][] v)
     {
         double sum = 0;
-        foreach (Complex[] a in u)
+        foreach (var a in u)
         {
-            foreach (Complex[] b in v)
+            foreach (var b in v)
             {
-                Complex overlap = Overlap(a, b);
+                var overlap = Overlap(a, b);
                 sum += (overlap.Real * overlap.Real) + (overlap.Imaginary * overlap.Imaginary);
             }
         }
@@ -34,20 +33,20 @@ internal sealed class BlockDirections(InvariantBasis basis)
 
     private static Complex[][] Orthonormalised(DoubleDoubleComplexMatrix rows)
     {
-        Complex[][] result = new Complex[rows.Rows][];
-        for (int i = 0; i < rows.Rows; i++)
+        var result = new Complex[rows.Rows][];
+        for (var i = 0; i < rows.Rows; i++)
         {
-            Complex[] row = new Complex[rows.Columns];
-            for (int j = 0; j < row.Length; j++)
+            var row = new Complex[rows.Columns];
+            for (var j = 0; j < row.Length; j++)
             {
                 row[j] = (Complex)rows[i, j];
             }
 
             Scale(row);
-            for (int k = 0; k < 2 * i; k++)
+            for (var k = 0; k < 2 * i; k++)
             {
-                Complex overlap = Overlap(result[k % i], row);
-                for (int j = 0; j < row.Length; j++)
+                var overlap = Overlap(result[k % i], row);
+                for (var j = 0; j < row.Length; j++)
                 {
                     row[j] -= overlap * result[k % i][j];
                 }
@@ -63,7 +62,7 @@ internal sealed class BlockDirections(InvariantBasis basis)
     private static Complex Overlap(Complex[] a, Complex[] b)
     {
         Complex sum = 0;
-        for (int j = 0; j < a.Length; j++)
+        for (var j = 0; j < a.Length; j++)
         {
             sum += Complex.Conjugate(a[j]) * b[j];
         }
@@ -73,8 +72,8 @@ internal sealed class BlockDirections(InvariantBasis basis)
 
     private static void Scale(Complex[] row)
     {
-        double size = Math.Sqrt(Overlap(row, row).Real);
-        for (int j = 0; j < row.Length && size > 0; j++)
+        var size = Math.Sqrt(Overlap(row, row).Real);
+        for (var j = 0; j < row.Length && size > 0; j++)
         {
             row[j] /= size;
         }

@@ -15,35 +15,34 @@ internal sealed class BlockSubstitution
     private const double Noise = 4e-32;
     // poles that differ by less than this many noises are one to working accuracy
     private const double EqualPoles = 16;
-    // beyond this a vector only says "not separable"; fourth powers stay
-    // finite
+    // beyond this a vector only says "not separable"; fourth powers stay finite
     private const double Largest = 1e60;
 
-    private readonly DoubleDoubleComplexMatrix _t;
-    private readonly double _norm;
-    private readonly double _noise;
+    private readonly DoubleDoubleComplexMatrix t;
+    private readonly double norm;
+    private readonly double noise;
 
     /// <summary>Substitutes in T with ‖T‖ as stated; block b covers places starts[b] to starts[b + 1] −
     /// 1.</summary>
     public BlockSubstitution(DoubleDoubleComplexMatrix t, double norm, IReadOnlyList<int> starts)
     {
-        _t = t;
-        _norm = norm;
-        _noise = Noise * t.Rows * norm;
+        this.t = t;
+        this.norm = norm;
+        noise = Noise * t.Rows * norm;
         X = DoubleDoubleComplexMatrix.Identity(t.Rows);
         Y = DoubleDoubleComplexMatrix.Identity(t.Rows);
-        int[] startOf = new int[t.Rows];
-        for (int b = 0; b + 1 < starts.Count; b++)
+        var startOf = new int[t.Rows];
+        for (var b = 0; b + 1 < starts.Count; b++)
         {
-            for (int i = starts[b]; i < starts[b + 1]; i++)
+            for (var i = starts[b]; i < starts[b + 1]; i++)
             {
                 startOf[i] = starts[b];
             }
         }
 
-        for (int b = starts.Count - 2; b >= 0; b--)
+        for (var b = starts.Count - 2; b >= 0; b--)
         {
-            for (int i = starts[b + 1] - 1; i >= starts[b]; i--)
+            for (var i = starts[b + 1] - 1; i >= starts[b]; i--)
             {
                 SubstituteRight(i, starts[b + 1], startOf);
                 SubstituteLeft(i, starts[b + 1]);
@@ -61,23 +60,23 @@ internal sealed class BlockSubstitution
     /// t_lj.</summary>
     private void SubstituteRight(int i, int end, int[] startOf)
     {
-        int n = _t.Rows;
+        var n = t.Rows;
         if (end == n)
         {
             return;
         }
 
-        for (int k = i + 1; k < n; k++)
+        for (var k = i + 1; k < n; k++)
         {
-            X.AddScaledRow(i, -_t[i, k], X, k, end);
+            X.AddScaledRow(i, -t[i, k], X, k, end);
         }
 
-        for (int j = end; j < n; j++)
+        for (var j = end; j < n; j++)
         {
-            DoubleDoubleComplex sum = X[i, j];
-            for (int l = startOf[j]; l < j; l++)
+            var sum = X[i, j];
+            for (var l = startOf[j]; l < j; l++)
             {
-                sum += X[i, l] * _t[l, j];
+                sum += X[i, l] * t[l, j];
             }
 
             X[i, j] = Divide(sum, i, j);
@@ -88,51 +87,51 @@ internal sealed class BlockSubstitution
     /// Y_kj.</summary>
     private void SubstituteLeft(int i, int end)
     {
-        int n = _t.Rows;
+        var n = t.Rows;
         if (end == n)
         {
             return;
         }
 
-        Y.AddScaledRow(i, -1, _t, i, end);
-        for (int k = i + 1; k < end; k++)
+        Y.AddScaledRow(i, -1, t, i, end);
+        for (var k = i + 1; k < end; k++)
         {
-            Y.AddScaledRow(i, _t[i, k], Y, k, end);
+            Y.AddScaledRow(i, t[i, k], Y, k, end);
         }
 
-        for (int j = end; j < n; j++)
+        for (var j = end; j < n; j++)
         {
-            DoubleDoubleComplex y = Divide(Y[i, j], j, i);
+            var y = Divide(Y[i, j], j, i);
             Y[i, j] = y;
             if (j + 1 < n)
             {
-                Y.AddScaledRow(i, -y, _t, j, j + 1);
+                Y.AddScaledRow(i, -y, t, j, j + 1);
             }
         }
     }
 
     private DoubleDoubleComplex Divide(DoubleDoubleComplex sum, int i, int j)
     {
-        DoubleDoubleComplex gap = _t[i, i] - _t[j, j];
-        double size = sum.Magnitude;
+        var gap = t[i, i] - t[j, j];
+        var size = sum.Magnitude;
         if (size == 0)
         {
             return 0;
         }
 
-        if (gap.Magnitude <= EqualPoles * _noise)
+        if (gap.Magnitude <= EqualPoles * noise)
         {
-            bool isZeroPair = _t[i, i].IsZero && _t[j, j].IsZero;
-            if (size <= (isZeroPair ? ZeroPole * _norm : _noise))
+            var isZeroPair = t[i, i].IsZero && t[j, j].IsZero;
+            if (size <= (isZeroPair ? ZeroPole * norm : noise))
             {
                 return 0;
             }
 
-            gap = gap.Magnitude < _noise ? _noise : gap;
+            gap = gap.Magnitude < noise ? noise : gap;
         }
 
-        DoubleDoubleComplex quotient = sum / gap;
-        double magnitude = quotient.Magnitude;
+        var quotient = sum / gap;
+        var magnitude = quotient.Magnitude;
         return magnitude <= Largest ? quotient : quotient * (Largest / magnitude);
     }
 }

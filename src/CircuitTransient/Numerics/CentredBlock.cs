@@ -12,15 +12,15 @@ internal sealed record CentredBlock(
     public static CentredBlock Of(DoubleDoubleComplexMatrix t)
     {
         DoubleDoubleComplex mean = 0;
-        for (int i = 0; i < t.Rows; i++)
+        for (var i = 0; i < t.Rows; i++)
         {
             mean += t[i, i] / t.Rows;
         }
 
-        DoubleDoubleComplexMatrix n = t.Copy();
+        var n = t.Copy();
         double farthest = 0;
         DoubleDouble rightmost = 0;
-        for (int i = 0; i < t.Rows; i++)
+        for (var i = 0; i < t.Rows; i++)
         {
             n[i, i] -= mean;
             farthest = Math.Max(farthest, n[i, i].Magnitude);

@@ -3,13 +3,13 @@ namespace CircuitTransient.Numerics;
 /// <summary>P A = L U of a square complex matrix, with row exchanges for the largest pivot.</summary>
 public sealed class ComplexLuFactorization
 {
-    private readonly DoubleDoubleComplexMatrix _lu;
-    private readonly int[] _order;
+    private readonly DoubleDoubleComplexMatrix factors;
+    private readonly int[] rowOrder;
 
     private ComplexLuFactorization(DoubleDoubleComplexMatrix lu, int[] order)
     {
-        _lu = lu;
-        _order = order;
+        factors = lu;
+        rowOrder = order;
     }
 
     /// <summary>Factorises a copy of <paramref name="a"/>.</summary>
@@ -17,21 +17,21 @@ public sealed class ComplexLuFactorization
     {
         ArgumentNullException.ThrowIfNull(a);
         Shape.MustAgree(a.Rows, a.Columns);
-        int n = a.Rows;
-        DoubleDoubleComplexMatrix lu = a.Copy();
+        var n = a.Rows;
+        var lu = a.Copy();
         int[] order = [.. Enumerable.Range(0, n)];
-        for (int k = 0; k < n; k++)
+        for (var k = 0; k < n; k++)
         {
-            int pivot = LargestBelow(lu, k);
+            var pivot = LargestBelow(lu, k);
             (order[k], order[pivot]) = (order[pivot], order[k]);
-            for (int j = 0; j < n && pivot != k; j++)
+            for (var j = 0; j < n && pivot != k; j++)
             {
                 (lu[k, j], lu[pivot, j]) = (lu[pivot, j], lu[k, j]);
             }
 
-            for (int i = k + 1; i < n && !lu[k, k].IsZero; i++)
+            for (var i = k + 1; i < n && !lu[k, k].IsZero; i++)
             {
-                DoubleDoubleComplex f = lu[i, k] / lu[k, k];
+                var f = lu[i, k] / lu[k, k];
                 lu.AddScaledRow(i, -f, lu, k, k + 1);
                 lu[i, k] = f;
             }
@@ -44,28 +44,28 @@ public sealed class ComplexLuFactorization
     public DoubleDoubleComplexMatrix Solve(DoubleDoubleComplexMatrix b)
     {
         ArgumentNullException.ThrowIfNull(b);
-        Shape.MustAgree(_lu.Rows, b.Rows);
-        int n = _lu.Rows;
+        Shape.MustAgree(factors.Rows, b.Rows);
+        var n = factors.Rows;
         DoubleDoubleComplexMatrix x = new(n, b.Columns);
-        for (int i = 0; i < n; i++)
+        for (var i = 0; i < n; i++)
         {
-            x.AddScaledRow(i, 1, b, _order[i]);
-            for (int k = 0; k < i; k++)
+            x.AddScaledRow(i, 1, b, rowOrder[i]);
+            for (var k = 0; k < i; k++)
             {
-                x.AddScaledRow(i, -_lu[i, k], x, k);
+                x.AddScaledRow(i, -factors[i, k], x, k);
             }
         }
 
-        for (int i = n - 1; i >= 0; i--)
+        for (var i = n - 1; i >= 0; i--)
         {
-            for (int k = i + 1; k < n; k++)
+            for (var k = i + 1; k < n; k++)
             {
-                x.AddScaledRow(i, -_lu[i, k], x, k);
+                x.AddScaledRow(i, -factors[i, k], x, k);
             }
 
-            for (int j = 0; j < b.Columns; j++)
+            for (var j = 0; j < b.Columns; j++)
             {
-                x[i, j] /= _lu[i, i];
+                x[i, j] /= factors[i, i];
             }
         }
 
@@ -74,8 +74,8 @@ public sealed class ComplexLuFactorization
 
     private static int LargestBelow(DoubleDoubleComplexMatrix lu, int k)
     {
-        int pivot = k;
-        for (int i = k + 1; i < lu.Rows; i++)
+        var pivot = k;
+        for (var i = k + 1; i < lu.Rows; i++)
         {
             if (lu[i, k].Magnitude > lu[pivot, k].Magnitude)
             {

@@ -8,7 +8,7 @@ internal readonly record struct ComplexRotation(DoubleDoubleComplex A, DoubleDou
     /// <summary>The rotation whose first column is along (x, y), not both zero.</summary>
     public static ComplexRotation Towards(DoubleDoubleComplex x, DoubleDoubleComplex y)
     {
-        DoubleDouble size = DoubleDouble.Hypotenuse(DoubleDoubleComplex.Abs(x), DoubleDoubleComplex.Abs(y));
+        var size = DoubleDouble.Hypotenuse(DoubleDoubleComplex.Abs(x), DoubleDoubleComplex.Abs(y));
         return new(x / size, y / size);
     }
 
@@ -16,20 +16,20 @@ internal readonly record struct ComplexRotation(DoubleDoubleComplex A, DoubleDou
     /// it.</summary>
     public void Apply(ComplexSchur schur, int k)
     {
-        DoubleDoubleComplexMatrix t = schur.T;
-        for (int i = 0; i <= k + 1; i++)
+        var t = schur.T;
+        for (var i = 0; i <= k + 1; i++)
         {
             (t[i, k], t[i, k + 1]) = Turn(t[i, k], t[i, k + 1]);
         }
 
         ComplexRotation conjugate = new(A.Conjugate, B.Conjugate);
-        for (int j = k; j < t.Columns; j++)
+        for (var j = k; j < t.Columns; j++)
         {
             (t[k, j], t[k + 1, j]) = conjugate.Turn(t[k, j], t[k + 1, j]);
         }
 
-        DoubleDoubleComplexMatrix z = schur.Vectors;
-        for (int j = 0; j < z.Columns; j++)
+        var z = schur.Vectors;
+        for (var j = 0; j < z.Columns; j++)
         {
             (z[k, j], z[k + 1, j]) = Turn(z[k, j], z[k + 1, j]);
         }

@@ -15,9 +15,9 @@ public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleCompl
         ComplexSchur schur = new(
             DoubleDoubleComplexMatrix.From(real.T.Copy()),
             DoubleDoubleComplexMatrix.From(real.TransposedQ.Copy()));
-        for (int k = 0; k + 1 < schur.T.Rows; k++)
+        for (var k = 0; k + 1 < schur.T.Rows; k++)
         {
-            double below = schur.T[k + 1, k].Magnitude;
+            var below = schur.T[k + 1, k].Magnitude;
             if (below > 0 && Math.Max(below, schur.T[k, k + 1].Magnitude) <= negligible)
             {
                 schur.T[k + 1, k] = 0;
@@ -39,32 +39,32 @@ public sealed record ComplexSchur(DoubleDoubleComplexMatrix T, DoubleDoubleCompl
     /// order.</summary>
     public void Swap(int k, double negligible = 0)
     {
-        DoubleDoubleComplex first = T[k, k];
-        DoubleDoubleComplex second = T[k + 1, k + 1];
-        DoubleDoubleComplex coupling = T[k, k + 1];
-        DoubleDoubleComplex gap = second - first;
+        var first = T[k, k];
+        var second = T[k + 1, k + 1];
+        var coupling = T[k, k + 1];
+        var gap = second - first;
         if (gap.IsZero && coupling.Magnitude > negligible)
         {
             return;
         }
 
-        ComplexRotation rotation = gap.IsZero ? new(0, 1) : ComplexRotation.Towards(coupling, gap);
+        var rotation = gap.IsZero ? new(0, 1) : ComplexRotation.Towards(coupling, gap);
         rotation.Apply(this, k);
         SetDiagonal(k, second, first);
     }
 
     private void SplitPair(int k)
     {
-        DoubleDouble a = T[k, k].Re;
-        DoubleDouble b = T[k, k + 1].Re;
-        DoubleDouble c = T[k + 1, k].Re;
-        DoubleDouble d = T[k + 1, k + 1].Re;
-        DoubleDouble p = (a - d) * 0.5;
-        double scale = Math.Max(Math.Abs(p.Hi), Math.Max(Math.Abs(b.Hi), Math.Abs(c.Hi)));
-        DoubleDouble square = (p / scale * p) + (b / scale * c);
-        DoubleDouble frequency = DoubleDouble.Sqrt(-square) * DoubleDouble.Sqrt(scale);
+        var a = T[k, k].Re;
+        var b = T[k, k + 1].Re;
+        var c = T[k + 1, k].Re;
+        var d = T[k + 1, k + 1].Re;
+        var p = (a - d) * 0.5;
+        var scale = Math.Max(Math.Abs(p.Hi), Math.Max(Math.Abs(b.Hi), Math.Abs(c.Hi)));
+        var square = (p / scale * p) + (b / scale * c);
+        var frequency = DoubleDouble.Sqrt(-square) * DoubleDouble.Sqrt(scale);
         DoubleDoubleComplex pole = new((a + d) * 0.5, frequency);
-        ComplexRotation rotation = Math.Abs(b.Hi) >= Math.Abs(c.Hi)
+        var rotation = Math.Abs(b.Hi) >= Math.Abs(c.Hi)
             ? ComplexRotation.Towards(b, pole - a)
             : ComplexRotation.Towards(pole - d, c);
         rotation.Apply(this, k);

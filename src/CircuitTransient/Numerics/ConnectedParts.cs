@@ -7,16 +7,16 @@ internal static class ConnectedParts
     /// <summary>The sets, each ascending, by least member.</summary>
     public static IReadOnlyList<int[]> Of(DoubleDoubleMatrix a)
     {
-        int n = a.Rows;
+        var n = a.Rows;
         int[] name = [.. Enumerable.Range(0, n)];
-        for (int i = 0; i < n; i++)
+        for (var i = 0; i < n; i++)
         {
-            for (int j = 0; j < n; j++)
+            for (var j = 0; j < n; j++)
             {
                 if (!a[i, j].IsZero && name[i] != name[j])
                 {
-                    (int kept, int lost) = (Math.Min(name[i], name[j]), Math.Max(name[i], name[j]));
-                    for (int k = 0; k < n; k++)
+                    (var kept, var lost) = (Math.Min(name[i], name[j]), Math.Max(name[i], name[j]));
+                    for (var k = 0; k < n; k++)
                     {
                         name[k] = name[k] == lost ? kept : name[k];
                     }

@@ -33,8 +33,8 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static DoubleDouble FromSum(double a, double b)
     {
-        double s = a + b;
-        double t = s - a;
+        var s = a + b;
+        var t = s - a;
         return new(s, (a - (s - t)) + (b - t));
     }
 
@@ -42,7 +42,7 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static DoubleDouble FromProduct(double a, double b)
     {
-        double p = a * b;
+        var p = a * b;
         return new(p, Math.FusedMultiplyAdd(a, b, -p));
     }
 
@@ -50,7 +50,7 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     internal static DoubleDouble FromOrderedSum(double a, double b)
     {
-        double s = a + b;
+        var s = a + b;
         return new(s, b - (s - a));
     }
 
@@ -70,9 +70,9 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static DoubleDouble operator +(DoubleDouble x, DoubleDouble y)
     {
-        DoubleDouble s = FromSum(x.Hi, y.Hi);
-        DoubleDouble t = FromSum(x.Lo, y.Lo);
-        DoubleDouble v = FromOrderedSum(s.Hi, s.Lo + t.Hi);
+        var s = FromSum(x.Hi, y.Hi);
+        var t = FromSum(x.Lo, y.Lo);
+        var v = FromOrderedSum(s.Hi, s.Lo + t.Hi);
         return FromOrderedSum(v.Hi, t.Lo + v.Lo);
     }
 
@@ -84,8 +84,8 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static DoubleDouble operator *(DoubleDouble x, DoubleDouble y)
     {
-        DoubleDouble c = FromProduct(x.Hi, y.Hi);
-        double t = Math.FusedMultiplyAdd(x.Hi, y.Lo, x.Lo * y.Lo);
+        var c = FromProduct(x.Hi, y.Hi);
+        var t = Math.FusedMultiplyAdd(x.Hi, y.Lo, x.Lo * y.Lo);
         return FromOrderedSum(c.Hi, c.Lo + Math.FusedMultiplyAdd(x.Lo, y.Hi, t));
     }
 
@@ -93,7 +93,7 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static DoubleDouble operator *(DoubleDouble x, double y)
     {
-        DoubleDouble c = FromProduct(x.Hi, y);
+        var c = FromProduct(x.Hi, y);
         return FromOrderedSum(c.Hi, Math.FusedMultiplyAdd(x.Lo, y, c.Lo));
     }
 
@@ -103,14 +103,14 @@ public readonly partial record struct DoubleDouble(double Hi, double Lo) : IComp
     /// <summary>Quotient; infinite or undefined as for doubles where <paramref name="y"/> is zero.</summary>
     public static DoubleDouble operator /(DoubleDouble x, DoubleDouble y)
     {
-        double t = x.Hi / y.Hi;
+        var t = x.Hi / y.Hi;
         if (!double.IsFinite(t) || double.IsInfinity(y.Hi))
         {
             return t;
         }
 
-        DoubleDouble r = y * t;
-        double d = (x.Hi - r.Hi) + (x.Lo - r.Lo);
+        var r = y * t;
+        var d = (x.Hi - r.Hi) + (x.Lo - r.Lo);
         return FromOrderedSum(t, d / y.Hi);
     }
 

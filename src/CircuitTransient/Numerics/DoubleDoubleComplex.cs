@@ -69,18 +69,17 @@ public readonly record struct DoubleDoubleComplex(DoubleDouble Re, DoubleDouble 
         new(x.Re / y, x.Im / y);
 
     /// <summary>Quotient, scaled by a power of two so that the square of the divisor neither overflows nor
-    /// vanishes.
-    /// </summary>
+    /// vanishes.</summary>
     public static DoubleDoubleComplex operator /(DoubleDoubleComplex x, DoubleDoubleComplex y)
     {
-        double largest = Math.Max(Math.Abs(y.Re.Hi), Math.Abs(y.Im.Hi));
+        var largest = Math.Max(Math.Abs(y.Re.Hi), Math.Abs(y.Im.Hi));
         if (largest == 0 || !double.IsFinite(largest))
         {
             return (Complex)x / (Complex)y;
         }
 
-        int n = -Math.ILogB(largest);
-        DoubleDoubleComplex d = y.ScaleByPowerOfTwo(n);
+        var n = -Math.ILogB(largest);
+        var d = y.ScaleByPowerOfTwo(n);
         return (x * d.Conjugate / ((d.Re * d.Re) + (d.Im * d.Im))).ScaleByPowerOfTwo(n);
     }
 
@@ -90,13 +89,13 @@ public readonly record struct DoubleDoubleComplex(DoubleDouble Re, DoubleDouble 
     /// <summary>e^z.</summary>
     public static DoubleDoubleComplex Exp(DoubleDoubleComplex z)
     {
-        DoubleDouble size = DoubleDouble.Exp(z.Re);
+        var size = DoubleDouble.Exp(z.Re);
         if (z.Im.IsZero)
         {
             return size;
         }
 
-        (DoubleDouble sin, DoubleDouble cos) = DoubleDouble.SinCos(z.Im);
+        (var sin, var cos) = DoubleDouble.SinCos(z.Im);
         return new(size * cos, size * sin);
     }
 
@@ -108,9 +107,9 @@ public readonly record struct DoubleDoubleComplex(DoubleDouble Re, DoubleDouble 
             return Zero;
         }
 
-        DoubleDouble half = DoubleDouble.Sqrt((Abs(z) + DoubleDouble.Abs(z.Re)) * 0.5);
-        DoubleDouble other = DoubleDouble.Abs(z.Im) / (half * 2.0);
-        (DoubleDouble re, DoubleDouble im) = z.Re.Hi >= 0 ? (half, other) : (other, half);
+        var half = DoubleDouble.Sqrt((Abs(z) + DoubleDouble.Abs(z.Re)) * 0.5);
+        var other = DoubleDouble.Abs(z.Im) / (half * 2.0);
+        (var re, var im) = z.Re.Hi >= 0 ? (half, other) : (other, half);
         return new(re, z.Im.Hi < 0 ? -im : im);
     }
 

@@ -51,9 +51,9 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     {
         ArgumentNullException.ThrowIfNull(values);
         DoubleDoubleComplexMatrix result = new(values.GetLength(0), values.GetLength(1));
-        for (int i = 0; i < result.Rows; i++)
+        for (var i = 0; i < result.Rows; i++)
         {
-            for (int j = 0; j < result.Columns; j++)
+            for (var j = 0; j < result.Columns; j++)
             {
                 result[i, j] = values[i, j];
             }
@@ -65,10 +65,10 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     /// <summary>The entries as an array.</summary>
     public DoubleDoubleComplex[,] ToArray()
     {
-        DoubleDoubleComplex[,] result = new DoubleDoubleComplex[Rows, Columns];
-        for (int i = 0; i < Rows; i++)
+        var result = new DoubleDoubleComplex[Rows, Columns];
+        for (var i = 0; i < Rows; i++)
         {
-            for (int j = 0; j < Columns; j++)
+            for (var j = 0; j < Columns; j++)
             {
                 result[i, j] = this[i, j];
             }
@@ -89,7 +89,7 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     /// <summary>Multiplies every entry.</summary>
     public void Scale(DoubleDouble factor)
     {
-        for (int i = 0; i < Rows; i++)
+        for (var i = 0; i < Rows; i++)
         {
             Re.Row(i).Scale(factor);
             Im.Row(i).Scale(factor);
@@ -121,10 +121,10 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
         int row, DoubleDoubleComplex f, DoubleDoubleComplexMatrix x, int xRow, int start = 0)
     {
         ArgumentNullException.ThrowIfNull(x);
-        DoubleDoubleRow yRe = Re.Row(row, start);
-        DoubleDoubleRow yIm = Im.Row(row, start);
-        DoubleDoubleRow xRe = x.Re.Row(xRow, start);
-        DoubleDoubleRow xIm = x.Im.Row(xRow, start);
+        var yRe = Re.Row(row, start);
+        var yIm = Im.Row(row, start);
+        var xRe = x.Re.Row(xRow, start);
+        var xIm = x.Im.Row(xRow, start);
         yRe.AddScaled(f.Re, xRe);
         yRe.AddScaled(-f.Im, xIm);
         yIm.AddScaled(f.Re, xIm);
@@ -137,10 +137,10 @@ public sealed class DoubleDoubleComplexMatrix(DoubleDoubleMatrix re, DoubleDoubl
     /// <summary>The nearest numbers in doubles.</summary>
     public Complex[,] ToComplex()
     {
-        Complex[,] result = new Complex[Rows, Columns];
-        for (int i = 0; i < Rows; i++)
+        var result = new Complex[Rows, Columns];
+        for (var i = 0; i < Rows; i++)
         {
-            for (int j = 0; j < Columns; j++)
+            for (var j = 0; j < Columns; j++)
             {
                 result[i, j] = (Complex)this[i, j];
             }

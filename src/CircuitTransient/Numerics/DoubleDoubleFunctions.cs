@@ -9,7 +9,7 @@ public readonly partial record struct DoubleDouble
 {
     private const int HalvingSteps = 9; // e^r − 1 is summed at r/2⁹, |r| ≤ ln 2 / 2, where ten terms suffice
 
-    private static readonly DoubleDouble _ln2 = new(0.6931471805599453, 2.3190468138462996e-17);
+    private static readonly DoubleDouble Ln2 = new(0.6931471805599453, 2.3190468138462996e-17);
     private const double Ln2Third = 5.707708438416212e-34;
 
     // The first of the four parts of π/2; the others follow in ReduceToQuarter.
@@ -19,7 +19,7 @@ public readonly partial record struct DoubleDouble
     private const double HalfPi4 = 5.562271104316826e-50;
 
     /// <summary>1/k! for k = 2, 3, …, 28.</summary>
-    private static readonly ImmutableArray<DoubleDouble> _inverseFactorials =
+    private static readonly ImmutableArray<DoubleDouble> InverseFactorials =
     [
         new(0.5, 0),
         new(0.16666666666666666, 9.25185853854297e-18),
@@ -64,28 +64,28 @@ public readonly partial record struct DoubleDouble
     /// memory).</summary>
     public static DoubleDouble Sqrt(DoubleDouble x)
     {
-        double s = Math.Sqrt(x.Hi);
+        var s = Math.Sqrt(x.Hi);
         if (s == 0 || !double.IsFinite(s))
         {
             return s;
         }
 
-        DoubleDouble rest = x - FromProduct(s, s);
+        var rest = x - FromProduct(s, s);
         return FromOrderedSum(s, rest.Hi / (2 * s));
     }
 
     /// <summary>√(x² + y²) without overflow of the squares.</summary>
     public static DoubleDouble Hypotenuse(DoubleDouble x, DoubleDouble y)
     {
-        double largest = Math.Max(Math.Abs(x.Hi), Math.Abs(y.Hi));
+        var largest = Math.Max(Math.Abs(x.Hi), Math.Abs(y.Hi));
         if (largest == 0 || !double.IsFinite(largest))
         {
             return largest;
         }
 
-        int n = Math.ILogB(largest);
-        DoubleDouble a = ScaleByPowerOfTwo(x, -n);
-        DoubleDouble b = ScaleByPowerOfTwo(y, -n);
+        var n = Math.ILogB(largest);
+        var a = ScaleByPowerOfTwo(x, -n);
+        var b = ScaleByPowerOfTwo(y, -n);
         return ScaleByPowerOfTwo(Sqrt((a * a) + (b * b)), n);
     }
 
@@ -97,15 +97,15 @@ public readonly partial record struct DoubleDouble
             return Math.Exp(x.Hi);
         }
 
-        double k = Math.Round(x.Hi / _ln2.Hi);
-        DoubleDouble r = x - FromProduct(k, _ln2.Hi)
-            - FromProduct(k, _ln2.Lo) - (k * Ln2Third);
+        var k = Math.Round(x.Hi / Ln2.Hi);
+        var r = x - FromProduct(k, Ln2.Hi)
+            - FromProduct(k, Ln2.Lo) - (k * Ln2Third);
         return ScaleByPowerOfTwo(ReducedExpM1(r) + 1, (int)k);
     }
 
     /// <summary>eˣ − 1, accurate near zero too.</summary>
     public static DoubleDouble ExpM1(DoubleDouble x) =>
-        Math.Abs(x.Hi) < 0.5 * _ln2.Hi ? ReducedExpM1(x) : Exp(x) - 1;
+        Math.Abs(x.Hi) < 0.5 * Ln2.Hi ? ReducedExpM1(x) : Exp(x) - 1;
 
     /// <summary>ln x by one Halley step on eʸ = x from the double logarithm.</summary>
     public static DoubleDouble Log(DoubleDouble x)
@@ -116,8 +116,8 @@ public readonly partial record struct DoubleDouble
             return y;
         }
 
-        DoubleDouble exp = Exp(y);
-        DoubleDouble gap = Math.Abs(y.Hi) < 0.25 ? x - 1 - ExpM1(y) : x - exp;
+        var exp = Exp(y);
+        var gap = Math.Abs(y.Hi) < 0.25 ? x - 1 - ExpM1(y) : x - exp;
         return y + (gap * 2.0 / (x + exp));
     }
 
@@ -129,9 +129,9 @@ public readonly partial record struct DoubleDouble
             return (Math.Sin(x.Hi), Math.Cos(x.Hi));
         }
 
-        (DoubleDouble r, long quarter) = ReduceToQuarter(x);
-        DoubleDouble sin = SinTaylor(r);
-        DoubleDouble cos = CosTaylor(r);
+        (var r, var quarter) = ReduceToQuarter(x);
+        var sin = SinTaylor(r);
+        var cos = CosTaylor(r);
         return (quarter & 3) switch
         {
             0 => (sin, cos),
@@ -143,23 +143,23 @@ public readonly partial record struct DoubleDouble
 
     private static (DoubleDouble Remainder, long Quarter) ReduceToQuarter(DoubleDouble x)
     {
-        double k = Math.Round(x.Hi / HalfPi1);
-        DoubleDouble r = x - FromProduct(k, HalfPi1) - FromProduct(k, HalfPi2)
+        var k = Math.Round(x.Hi / HalfPi1);
+        var r = x - FromProduct(k, HalfPi1) - FromProduct(k, HalfPi2)
             - FromProduct(k, HalfPi3) - (k * HalfPi4);
         return (r, (long)k);
     }
 
     private static DoubleDouble ReducedExpM1(DoubleDouble r)
     {
-        DoubleDouble x = ScaleByPowerOfTwo(r, -HalvingSteps);
-        DoubleDouble sum = _inverseFactorials[8];
-        for (int k = 7; k >= 0; k--)
+        var x = ScaleByPowerOfTwo(r, -HalvingSteps);
+        var sum = InverseFactorials[8];
+        for (var k = 7; k >= 0; k--)
         {
-            sum = (sum * x) + _inverseFactorials[k];
+            sum = (sum * x) + InverseFactorials[k];
         }
 
-        DoubleDouble s = x + (x * x * sum);
-        for (int k = 0; k < HalvingSteps; k++)
+        var s = x + (x * x * sum);
+        for (var k = 0; k < HalvingSteps; k++)
         {
             s = (s * 2.0) + (s * s);
         }
@@ -169,11 +169,11 @@ public readonly partial record struct DoubleDouble
 
     private static DoubleDouble SinTaylor(DoubleDouble x)
     {
-        DoubleDouble square = -(x * x);
-        DoubleDouble sum = _inverseFactorials[25];
-        for (int k = 23; k >= 1; k -= 2)
+        var square = -(x * x);
+        var sum = InverseFactorials[25];
+        for (var k = 23; k >= 1; k -= 2)
         {
-            sum = (sum * square) + _inverseFactorials[k];
+            sum = (sum * square) + InverseFactorials[k];
         }
 
         return x + (x * square * sum);
@@ -181,11 +181,11 @@ public readonly partial record struct DoubleDouble
 
     private static DoubleDouble CosTaylor(DoubleDouble x)
     {
-        DoubleDouble square = -(x * x);
-        DoubleDouble sum = _inverseFactorials[26];
-        for (int k = 24; k >= 0; k -= 2)
+        var square = -(x * x);
+        var sum = InverseFactorials[26];
+        for (var k = 24; k >= 0; k -= 2)
         {
-            sum = (sum * square) + _inverseFactorials[k];
+            sum = (sum * square) + InverseFactorials[k];
         }
 
         return (square * sum) + 1;

@@ -6,8 +6,8 @@ namespace CircuitTransient.Numerics;
 /// <param name="columns">How many columns; may be zero.</param>
 public sealed class DoubleDoubleMatrix(int rows, int columns)
 {
-    private readonly double[] _hi = new double[rows * columns];
-    private readonly double[] _lo = new double[rows * columns];
+    private readonly double[] hi = new double[rows * columns];
+    private readonly double[] lo = new double[rows * columns];
 
     /// <summary>How many rows.</summary>
     public int Rows { get; } = rows;
@@ -16,25 +16,25 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     public int Columns { get; } = columns;
 
     /// <summary>All high words, row by row.</summary>
-    public Span<double> Hi => _hi;
+    public Span<double> Hi => hi;
 
     /// <summary>All low words, row by row.</summary>
-    public Span<double> Lo => _lo;
+    public Span<double> Lo => lo;
 
     /// <summary>One entry.</summary>
     public DoubleDouble this[int row, int column]
     {
         get
         {
-            int k = (row * Columns) + column;
-            return new(_hi[k], _lo[k]);
+            var k = (row * Columns) + column;
+            return new(hi[k], lo[k]);
         }
 
         set
         {
-            int k = (row * Columns) + column;
-            _hi[k] = value.Hi;
-            _lo[k] = value.Lo;
+            var k = (row * Columns) + column;
+            hi[k] = value.Hi;
+            lo[k] = value.Lo;
         }
     }
 
@@ -42,9 +42,9 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     public static DoubleDoubleMatrix Identity(int n)
     {
         DoubleDoubleMatrix result = new(n, n);
-        for (int i = 0; i < n; i++)
+        for (var i = 0; i < n; i++)
         {
-            result._hi[(i * n) + i] = 1;
+            result.hi[(i * n) + i] = 1;
         }
 
         return result;
@@ -55,9 +55,9 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     {
         ArgumentNullException.ThrowIfNull(values);
         DoubleDoubleMatrix result = new(values.GetLength(0), values.GetLength(1));
-        for (int i = 0; i < result.Rows; i++)
+        for (var i = 0; i < result.Rows; i++)
         {
-            for (int j = 0; j < result.Columns; j++)
+            for (var j = 0; j < result.Columns; j++)
             {
                 result[i, j] = values[i, j];
             }
@@ -68,7 +68,7 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
 
     /// <summary>A row, in this matrix's memory.</summary>
     public DoubleDoubleRow Row(int row) =>
-        new(_hi.AsSpan(row * Columns, Columns), _lo.AsSpan(row * Columns, Columns));
+        new(hi.AsSpan(row * Columns, Columns), lo.AsSpan(row * Columns, Columns));
 
     /// <summary>A row from a column on, in this matrix's memory.</summary>
     public DoubleDoubleRow Row(int row, int start) => Row(row).Slice(start);
@@ -77,8 +77,8 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     public DoubleDoubleMatrix Copy()
     {
         DoubleDoubleMatrix result = new(Rows, Columns);
-        _hi.CopyTo(result._hi.AsSpan());
-        _lo.CopyTo(result._lo.AsSpan());
+        hi.CopyTo(result.hi.AsSpan());
+        lo.CopyTo(result.lo.AsSpan());
         return result;
     }
 
@@ -86,9 +86,9 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     public DoubleDoubleMatrix Transposed()
     {
         DoubleDoubleMatrix result = new(Columns, Rows);
-        for (int i = 0; i < Rows; i++)
+        for (var i = 0; i < Rows; i++)
         {
-            for (int j = 0; j < Columns; j++)
+            for (var j = 0; j < Columns; j++)
             {
                 result[j, i] = this[i, j];
             }
@@ -100,8 +100,8 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     /// <summary>The matrix with every sign turned.</summary>
     public DoubleDoubleMatrix Negative()
     {
-        DoubleDoubleMatrix result = Copy();
-        for (int i = 0; i < Rows; i++)
+        var result = Copy();
+        for (var i = 0; i < Rows; i++)
         {
             result.Row(i).Scale(-1);
         }
@@ -113,7 +113,7 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     public DoubleDoubleMatrix Part(int row, int column, int rows, int columns)
     {
         DoubleDoubleMatrix result = new(rows, columns);
-        for (int i = 0; i < rows; i++)
+        for (var i = 0; i < rows; i++)
         {
             result.Row(i).CopyFrom(Row(row + i).Slice(column, columns));
         }
@@ -134,8 +134,8 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     public DoubleDoubleMatrix Plus(DoubleDouble factor, DoubleDoubleMatrix other)
     {
         ArgumentNullException.ThrowIfNull(other);
-        DoubleDoubleMatrix result = Copy();
-        for (int i = 0; i < Rows; i++)
+        var result = Copy();
+        for (var i = 0; i < Rows; i++)
         {
             result.Row(i).AddScaled(factor, other.Row(i));
         }
@@ -149,10 +149,10 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
         ArgumentNullException.ThrowIfNull(a);
         ArgumentNullException.ThrowIfNull(b);
         Shape.MustAgree(a.Columns, b.Rows);
-        for (int i = 0; i < Rows; i++)
+        for (var i = 0; i < Rows; i++)
         {
-            DoubleDoubleRow row = Row(i);
-            for (int k = 0; k < a.Columns; k++)
+            var row = Row(i);
+            for (var k = 0; k < a.Columns; k++)
             {
                 row.AddScaled(factor * a[i, k], b.Row(k));
             }
@@ -162,14 +162,14 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     /// <summary>The root of the sum of squares, scaled against overflow.</summary>
     public double FrobeniusNorm()
     {
-        double largest = LargestMagnitude();
+        var largest = LargestMagnitude();
         if (largest == 0 || !double.IsFinite(largest))
         {
             return largest;
         }
 
         double sum = 0;
-        foreach (double x in _hi)
+        foreach (var x in hi)
         {
             sum += x / largest * (x / largest);
         }
@@ -181,7 +181,7 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     public double LargestMagnitude()
     {
         double largest = 0;
-        foreach (double x in _hi)
+        foreach (var x in hi)
         {
             largest = Math.Max(largest, Math.Abs(x));
         }
@@ -192,10 +192,10 @@ public sealed class DoubleDoubleMatrix(int rows, int columns)
     /// <summary>The nearest doubles.</summary>
     public double[,] ToDoubles()
     {
-        double[,] result = new double[Rows, Columns];
-        for (int i = 0; i < Rows; i++)
+        var result = new double[Rows, Columns];
+        for (var i = 0; i < Rows; i++)
         {
-            for (int j = 0; j < Columns; j++)
+            for (var j = 0; j < Columns; j++)
             {
                 result[i, j] = (double)this[i, j];
             }

@@ -61,23 +61,23 @@ public readonly ref struct DoubleDoubleRow(Span<double> hi, Span<double> lo)
     /// <summary>this = this + f x.</summary>
     public void AddScaled(DoubleDouble f, DoubleDoubleRow x)
     {
-        int n = Length;
+        var n = Length;
         Shape.MustAgree(n, x.Hi.Length);
         if (f.Hi == 0)
         {
             return;
         }
 
-        ref double yh = ref MemoryMarshal.GetReference(Hi);
-        ref double yl = ref MemoryMarshal.GetReference(Lo);
-        ref double xh = ref MemoryMarshal.GetReference(x.Hi);
-        ref double xl = ref MemoryMarshal.GetReference(x.Lo);
-        Vector256<double> fh = Vector256.Create(f.Hi);
-        Vector256<double> fl = Vector256.Create(f.Lo);
-        int i = 0;
+        ref var yh = ref MemoryMarshal.GetReference(Hi);
+        ref var yl = ref MemoryMarshal.GetReference(Lo);
+        ref var xh = ref MemoryMarshal.GetReference(x.Hi);
+        ref var xl = ref MemoryMarshal.GetReference(x.Lo);
+        var fh = Vector256.Create(f.Hi);
+        var fl = Vector256.Create(f.Lo);
+        var i = 0;
         for (; i <= n - Lanes; i += Lanes)
         {
-            Lane y = Lane.Load(ref yh, ref yl, i);
+            var y = Lane.Load(ref yh, ref yl, i);
             y.AddProduct(fh, fl, Lane.Load(ref xh, ref xl, i)).Store(ref yh, ref yl, i);
         }
 
@@ -90,7 +90,7 @@ public readonly ref struct DoubleDoubleRow(Span<double> hi, Span<double> lo)
     /// <summary>this = f this.</summary>
     public void Scale(DoubleDouble f)
     {
-        for (int i = 0; i < Length; i++)
+        for (var i = 0; i < Length; i++)
         {
             this[i] *= f;
         }
@@ -99,21 +99,21 @@ public readonly ref struct DoubleDoubleRow(Span<double> hi, Span<double> lo)
     /// <summary>Σ this x.</summary>
     public DoubleDouble Dot(DoubleDoubleRow x)
     {
-        int n = Length;
+        var n = Length;
         Shape.MustAgree(n, x.Hi.Length);
-        ref double yh = ref MemoryMarshal.GetReference(Hi);
-        ref double yl = ref MemoryMarshal.GetReference(Lo);
-        ref double xh = ref MemoryMarshal.GetReference(x.Hi);
-        ref double xl = ref MemoryMarshal.GetReference(x.Lo);
+        ref var yh = ref MemoryMarshal.GetReference(Hi);
+        ref var yl = ref MemoryMarshal.GetReference(Lo);
+        ref var xh = ref MemoryMarshal.GetReference(x.Hi);
+        ref var xl = ref MemoryMarshal.GetReference(x.Lo);
         Lane sum = default;
-        int i = 0;
+        var i = 0;
         for (; i <= n - Lanes; i += Lanes)
         {
-            Lane y = Lane.Load(ref yh, ref yl, i);
+            var y = Lane.Load(ref yh, ref yl, i);
             sum = sum.AddProduct(y.Hi, y.Lo, Lane.Load(ref xh, ref xl, i));
         }
 
-        DoubleDouble total = sum.Total();
+        var total = sum.Total();
         for (; i < n; i++)
         {
             total = AddProduct(total, this[i], x[i]);
@@ -125,10 +125,10 @@ public readonly ref struct DoubleDoubleRow(Span<double> hi, Span<double> lo)
     /// <summary>(x, y) = (c x + s y, c y − s x), a plane rotation of two rows.</summary>
     public static void Rotate(DoubleDoubleRow x, DoubleDoubleRow y, DoubleDouble c, DoubleDouble s)
     {
-        for (int i = 0; i < x.Length; i++)
+        for (var i = 0; i < x.Length; i++)
         {
-            DoubleDouble a = x[i];
-            DoubleDouble b = y[i];
+            var a = x[i];
+            var b = y[i];
             x[i] = (c * a) + (s * b);
             y[i] = (c * b) - (s * a);
         }
@@ -141,13 +141,13 @@ public readonly ref struct DoubleDoubleRow(Span<double> hi, Span<double> lo)
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     internal static DoubleDouble AddProduct(DoubleDouble y, DoubleDouble f, DoubleDouble x)
     {
-        double p = f.Hi * x.Hi;
-        double e = Math.FusedMultiplyAdd(f.Hi, x.Hi, -p);
+        var p = f.Hi * x.Hi;
+        var e = Math.FusedMultiplyAdd(f.Hi, x.Hi, -p);
         e = Math.FusedMultiplyAdd(f.Lo, x.Hi, Math.FusedMultiplyAdd(f.Hi, x.Lo, e));
-        double s = y.Hi + p;
-        double t = s - y.Hi;
-        double r = (y.Hi - (s - t)) + (p - t) + (y.Lo + e);
-        double hi = s + r;
+        var s = y.Hi + p;
+        var t = s - y.Hi;
+        var r = (y.Hi - (s - t)) + (p - t) + (y.Lo + e);
+        var hi = s + r;
         return new(hi, r - (hi - s));
     }
 }

@@ -24,13 +24,13 @@ public static class FrancisIteration
     {
         ArgumentNullException.ThrowIfNull(h);
         ArgumentNullException.ThrowIfNull(qt);
-        int last = h.Rows - 1;
-        double norm = h.FrobeniusNorm();
-        int steps = 0;
+        var last = h.Rows - 1;
+        var norm = h.FrobeniusNorm();
+        var steps = 0;
         while (last >= 0)
         {
-            double floor = steps > NormSteps ? h.Rows * norm : steps > LocalSteps ? norm : 0;
-            int first = FirstOfWindow(h, last, floor, steps <= StrictSteps);
+            var floor = steps > NormSteps ? h.Rows * norm : steps > LocalSteps ? norm : 0;
+            var first = FirstOfWindow(h, last, floor, steps <= StrictSteps);
             if (first >= last - 1)
             {
                 if (first == last - 1)
@@ -54,7 +54,7 @@ public static class FrancisIteration
 
     private static int FirstOfWindow(DoubleDoubleMatrix h, int last, double floor, bool isStrict)
     {
-        int k = last;
+        var k = last;
         while (k > 0 && !IsNegligible(h, k, last, floor, isStrict))
         {
             k--;
@@ -70,13 +70,13 @@ public static class FrancisIteration
 
     private static bool IsNegligible(DoubleDoubleMatrix h, int k, int last, double floor, bool isStrict)
     {
-        double below = Math.Abs(h[k, k - 1].Hi);
+        var below = Math.Abs(h[k, k - 1].Hi);
         if (below <= Math.Max(Tiny, UnitRoundoff * floor))
         {
             return true;
         }
 
-        double size = Math.Abs(h[k - 1, k - 1].Hi) + Math.Abs(h[k, k].Hi);
+        var size = Math.Abs(h[k - 1, k - 1].Hi) + Math.Abs(h[k, k].Hi);
         if (size == 0)
         {
             size = (k >= 2 ? Math.Abs(h[k - 1, k - 2].Hi) : 0)
@@ -93,12 +93,12 @@ public static class FrancisIteration
             return true;
         }
 
-        double above = Math.Abs(h[k - 1, k].Hi);
-        double gap = Math.Abs((h[k - 1, k - 1] - h[k, k]).Hi);
-        double diagonal = Math.Abs(h[k, k].Hi);
-        double larger = Math.Max(diagonal, gap);
-        double smaller = Math.Min(diagonal, gap);
-        double sum = larger + Math.Max(below, above);
+        var above = Math.Abs(h[k - 1, k].Hi);
+        var gap = Math.Abs((h[k - 1, k - 1] - h[k, k]).Hi);
+        var diagonal = Math.Abs(h[k, k].Hi);
+        var larger = Math.Max(diagonal, gap);
+        var smaller = Math.Min(diagonal, gap);
+        var sum = larger + Math.Max(below, above);
         return Math.Min(below, above) * (Math.Max(below, above) / sum)
             <= Math.Max(Tiny, UnitRoundoff * (smaller * (larger / sum)));
     }
@@ -106,10 +106,10 @@ public static class FrancisIteration
     private static void Step(
         DoubleDoubleMatrix h, DoubleDoubleMatrix qt, int first, int last, FrancisShifts shifts)
     {
-        (int start, DoubleDouble x, DoubleDouble y, DoubleDouble z) = StartOfBulge(h, first, last, shifts);
-        for (int k = start; k < last; k++)
+        (var start, var x, var y, var z) = StartOfBulge(h, first, last, shifts);
+        for (var k = start; k < last; k++)
         {
-            int count = Math.Min(3, last - k + 1);
+            var count = Math.Min(3, last - k + 1);
             if (k > start)
             {
                 x = h[k, k - 1];
@@ -117,7 +117,7 @@ public static class FrancisIteration
                 z = count == 3 ? h[k + 2, k - 1] : 0;
             }
 
-            Reflection reflection = Reflection.Of(x, y, z, count, out DoubleDouble alpha);
+            var reflection = Reflection.Of(x, y, z, count, out var alpha);
             if (k > start)
             {
                 h[k, k - 1] = alpha;
@@ -143,15 +143,15 @@ public static class FrancisIteration
     private static (int Start, DoubleDouble X, DoubleDouble Y, DoubleDouble Z) StartOfBulge(
         DoubleDoubleMatrix h, int first, int last, FrancisShifts shifts)
     {
-        for (int m = last - 2; ; m--)
+        for (var m = last - 2; ; m--)
         {
-            (DoubleDouble x, DoubleDouble y, DoubleDouble z) = shifts.FirstColumn(h, m);
+            (var x, var y, var z) = shifts.FirstColumn(h, m);
             if (m == first)
             {
                 return (m, x, y, z);
             }
 
-            double around = Math.Abs(h[m - 1, m - 1].Hi) + Math.Abs(h[m, m].Hi)
+            var around = Math.Abs(h[m - 1, m - 1].Hi) + Math.Abs(h[m, m].Hi)
                 + Math.Abs(h[m + 1, m + 1].Hi);
             if (Math.Abs(h[m, m - 1].Hi) * (Math.Abs(y.Hi) + Math.Abs(z.Hi))
                 <= UnitRoundoff * Math.Abs(x.Hi) * around)

@@ -16,14 +16,14 @@ internal readonly record struct FrancisShifts(DoubleDouble Re1, DoubleDouble Im1
     {
         if (step % (2 * ExceptionalEvery) == ExceptionalEvery)
         {
-            DoubleDouble s = DoubleDouble.Abs(h[first + 1, first])
+            var s = DoubleDouble.Abs(h[first + 1, first])
                 + DoubleDouble.Abs(h[first + 2, first + 1]);
             return Exceptional(s, h[first, first]);
         }
 
         if (step % (2 * ExceptionalEvery) == 0)
         {
-            DoubleDouble s = DoubleDouble.Abs(h[last, last - 1]) + DoubleDouble.Abs(h[last - 1, last - 2]);
+            var s = DoubleDouble.Abs(h[last, last - 1]) + DoubleDouble.Abs(h[last - 1, last - 2]);
             return Exceptional(s, h[last, last]);
         }
 
@@ -33,43 +33,43 @@ internal readonly record struct FrancisShifts(DoubleDouble Re1, DoubleDouble Im1
     /// <summary>The first column of (H − s₁)(H − s₂) at row m, up to a factor.</summary>
     public (DoubleDouble X, DoubleDouble Y, DoubleDouble Z) FirstColumn(DoubleDoubleMatrix h, int m)
     {
-        DoubleDouble corner = h[m, m];
-        DoubleDouble scale = DoubleDouble.Abs(corner - Re2) + DoubleDouble.Abs(Im1)
+        var corner = h[m, m];
+        var scale = DoubleDouble.Abs(corner - Re2) + DoubleDouble.Abs(Im1)
             + DoubleDouble.Abs(h[m + 1, m]);
-        DoubleDouble below = h[m + 1, m] / scale;
-        DoubleDouble x = (below * h[m, m + 1]) + ((corner - Re1) * ((corner - Re2) / scale))
+        var below = h[m + 1, m] / scale;
+        var x = (below * h[m, m + 1]) + ((corner - Re1) * ((corner - Re2) / scale))
             + (Im1 * (Im1 / scale));
-        DoubleDouble y = below * (corner + h[m + 1, m + 1] - Re1 - Re2);
-        DoubleDouble z = below * h[m + 2, m + 1];
-        double size = Math.Abs(x.Hi) + Math.Abs(y.Hi) + Math.Abs(z.Hi);
+        var y = below * (corner + h[m + 1, m + 1] - Re1 - Re2);
+        var z = below * h[m + 2, m + 1];
+        var size = Math.Abs(x.Hi) + Math.Abs(y.Hi) + Math.Abs(z.Hi);
         return size == 0 ? (x, y, z) : (x / size, y / size, z / size);
     }
 
     private static FrancisShifts Exceptional(DoubleDouble s, DoubleDouble corner)
     {
-        DoubleDouble h = (0.75 * s) + corner;
+        var h = (0.75 * s) + corner;
         return Of(h, -0.4375 * s, s, h);
     }
 
     private static FrancisShifts Of(DoubleDouble a, DoubleDouble b, DoubleDouble c, DoubleDouble d)
     {
-        double size = Math.Abs(a.Hi) + Math.Abs(b.Hi) + Math.Abs(c.Hi) + Math.Abs(d.Hi);
+        var size = Math.Abs(a.Hi) + Math.Abs(b.Hi) + Math.Abs(c.Hi) + Math.Abs(d.Hi);
         if (size == 0)
         {
             return new(0, 0, 0);
         }
 
-        DoubleDouble mean = (a + d) * 0.5;
-        DoubleDouble determinant = ((a - mean) / size * ((d - mean) / size)) - (b / size * (c / size));
-        DoubleDouble root = DoubleDouble.Sqrt(DoubleDouble.Abs(determinant)) * size;
+        var mean = (a + d) * 0.5;
+        var determinant = ((a - mean) / size * ((d - mean) / size)) - (b / size * (c / size));
+        var root = DoubleDouble.Sqrt(DoubleDouble.Abs(determinant)) * size;
         if (determinant.Hi >= 0)
         {
             return new(mean, root, mean);
         }
 
-        DoubleDouble upper = mean + root;
-        DoubleDouble lower = mean - root;
-        DoubleDouble nearer = DoubleDouble.Abs(upper - d) <= DoubleDouble.Abs(lower - d) ? upper : lower;
+        var upper = mean + root;
+        var lower = mean - root;
+        var nearer = DoubleDouble.Abs(upper - d) <= DoubleDouble.Abs(lower - d) ? upper : lower;
         return new(nearer, 0, nearer);
     }
 }

@@ -10,13 +10,13 @@ public static class Hessenberg
     {
         ArgumentNullException.ThrowIfNull(a);
         ArgumentNullException.ThrowIfNull(qt);
-        int n = a.Rows;
+        var n = a.Rows;
         Shape.MustAgree(n, a.Columns);
         DoubleDoubleMatrix work = new(2, n);
-        for (int k = 0; k + 2 < n; k++)
+        for (var k = 0; k + 2 < n; k++)
         {
-            DoubleDoubleRow v = work.Row(0, k + 1);
-            if (!MakeReflection(a, k, v, out DoubleDouble beta, out DoubleDouble alpha))
+            var v = work.Row(0, k + 1);
+            if (!MakeReflection(a, k, v, out var beta, out var alpha))
             {
                 continue;
             }
@@ -25,7 +25,7 @@ public static class Hessenberg
             FromRight(a, k + 1, v, beta);
             FromLeft(qt, k + 1, 0, v, beta, work.Row(1));
             a[k + 1, k] = alpha;
-            for (int i = k + 2; i < n; i++)
+            for (var i = k + 2; i < n; i++)
             {
                 a[i, k] = 0;
             }
@@ -37,7 +37,7 @@ public static class Hessenberg
         DoubleDoubleMatrix a, int k, DoubleDoubleRow v, out DoubleDouble beta, out DoubleDouble alpha)
     {
         double largest = 0;
-        for (int i = 0; i < v.Length; i++)
+        for (var i = 0; i < v.Length; i++)
         {
             v[i] = a[k + 1 + i, k];
             largest = i > 0 ? Math.Max(largest, Math.Abs(v.Hi[i])) : largest;
@@ -50,14 +50,14 @@ public static class Hessenberg
             return false;
         }
 
-        int scale = Math.ILogB(Math.Max(largest, Math.Abs(alpha.Hi)));
-        for (int i = 0; i < v.Length; i++)
+        var scale = Math.ILogB(Math.Max(largest, Math.Abs(alpha.Hi)));
+        for (var i = 0; i < v.Length; i++)
         {
             v[i] = DoubleDouble.ScaleByPowerOfTwo(v[i], -scale);
         }
 
-        DoubleDouble norm = DoubleDouble.Sqrt(v.SumOfSquares());
-        DoubleDouble signed = v.Hi[0] > 0 ? -norm : norm;
+        var norm = DoubleDouble.Sqrt(v.SumOfSquares());
+        var signed = v.Hi[0] > 0 ? -norm : norm;
         beta = 1.0 / (norm * (norm + DoubleDouble.Abs(v[0])));
         v[0] -= signed;
         alpha = DoubleDouble.ScaleByPowerOfTwo(signed, scale);
@@ -70,12 +70,12 @@ public static class Hessenberg
         DoubleDoubleMatrix a, int first, int start, DoubleDoubleRow v, DoubleDouble beta, DoubleDoubleRow w)
     {
         w.Clear();
-        for (int i = 0; i < v.Length; i++)
+        for (var i = 0; i < v.Length; i++)
         {
             w.AddScaled(v[i], a.Row(first + i, start));
         }
 
-        for (int i = 0; i < v.Length; i++)
+        for (var i = 0; i < v.Length; i++)
         {
             a.Row(first + i, start).AddScaled(-(beta * v[i]), w);
         }
@@ -84,9 +84,9 @@ public static class Hessenberg
     /// <summary>Columns from <paramref name="start"/> on: A = A (I − β v vᵀ).</summary>
     private static void FromRight(DoubleDoubleMatrix a, int start, DoubleDoubleRow v, DoubleDouble beta)
     {
-        for (int i = 0; i < a.Rows; i++)
+        for (var i = 0; i < a.Rows; i++)
         {
-            DoubleDoubleRow row = a.Row(i, start);
+            var row = a.Row(i, start);
             row.AddScaled(-(beta * row.Dot(v)), v);
         }
     }

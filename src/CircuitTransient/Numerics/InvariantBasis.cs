@@ -17,29 +17,29 @@ internal sealed record InvariantBasis(
     public static InvariantBasis Of(
         DoubleDoubleComplexMatrix t, BlockSubstitution substitution, int start, int end)
     {
-        int n = t.Rows;
-        int m = end - start;
-        DoubleDoubleComplexMatrix u = substitution.X.Part(0, start, n, m).Transposed();
+        var n = t.Rows;
+        var m = end - start;
+        var u = substitution.X.Part(0, start, n, m).Transposed();
         DoubleDoubleComplexMatrix r = new(m, m);
-        for (int j = 0; j < m; j++)
+        for (var j = 0; j < m; j++)
         {
-            for (int pass = 0; pass < 2; pass++)
+            for (var pass = 0; pass < 2; pass++)
             {
-                for (int k = 0; k < j; k++)
+                for (var k = 0; k < j; k++)
                 {
-                    DoubleDoubleComplex overlap = Overlap(u, k, u, j);
+                    var overlap = Overlap(u, k, u, j);
                     r[k, j] += overlap;
                     u.AddScaledRow(j, -overlap, u, k);
                 }
             }
 
-            DoubleDouble norm = DoubleDouble.Sqrt(Overlap(u, j, u, j).Re);
+            var norm = DoubleDouble.Sqrt(Overlap(u, j, u, j).Re);
             r[j, j] = norm;
             u.Re.Row(j).Scale(1 / norm);
             u.Im.Row(j).Scale(1 / norm);
         }
 
-        DoubleDoubleComplexMatrix left = r.Times(substitution.Y.Part(start, 0, m, n));
+        var left = r.Times(substitution.Y.Part(start, 0, m, n));
         return new(Transform(t.Part(start, start, m, m), r), u, left);
     }
 
@@ -47,10 +47,10 @@ internal sealed record InvariantBasis(
     public static DoubleDoubleComplex Overlap(
         DoubleDoubleComplexMatrix x, int xRow, DoubleDoubleComplexMatrix y, int yRow)
     {
-        DoubleDoubleRow xRe = x.Re.Row(xRow);
-        DoubleDoubleRow xIm = x.Im.Row(xRow);
-        DoubleDoubleRow yRe = y.Re.Row(yRow);
-        DoubleDoubleRow yIm = y.Im.Row(yRow);
+        var xRe = x.Re.Row(xRow);
+        var xIm = x.Im.Row(xRow);
+        var yRe = y.Re.Row(yRow);
+        var yIm = y.Im.Row(yRow);
         return new(xRe.Dot(yRe) + xIm.Dot(yIm), xRe.Dot(yIm) - xIm.Dot(yRe));
     }
 
@@ -58,13 +58,13 @@ internal sealed record InvariantBasis(
     private static DoubleDoubleComplexMatrix Transform(
         DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix r)
     {
-        int m = t.Rows;
-        DoubleDoubleComplexMatrix s = r.Times(t);
-        for (int i = 0; i < m; i++)
+        var m = t.Rows;
+        var s = r.Times(t);
+        for (var i = 0; i < m; i++)
         {
-            for (int j = i; j < m; j++)
+            for (var j = i; j < m; j++)
             {
-                for (int k = i; k < j; k++)
+                for (var k = i; k < j; k++)
                 {
                     s[i, j] -= s[i, k] * r[k, j];
                 }

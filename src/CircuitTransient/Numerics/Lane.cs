@@ -31,7 +31,7 @@ internal readonly record struct Lane(Vector256<double> Hi, Vector256<double> Lo)
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public void Scatter(Span<double> hi, Span<double> lo, int index, int stride)
     {
-        for (int k = 0; k < Vector256<double>.Count; k++)
+        for (var k = 0; k < Vector256<double>.Count; k++)
         {
             hi[index + (k * stride)] = Hi.GetElement(k);
             lo[index + (k * stride)] = Lo.GetElement(k);
@@ -45,8 +45,8 @@ internal readonly record struct Lane(Vector256<double> Hi, Vector256<double> Lo)
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public Lane AddProduct(Vector256<double> fh, Vector256<double> fl, Lane x)
     {
-        Vector256<double> p = fh * x.Hi;
-        Vector256<double> e = Vector256.FusedMultiplyAdd(fh, x.Hi, -p);
+        var p = fh * x.Hi;
+        var e = Vector256.FusedMultiplyAdd(fh, x.Hi, -p);
         e = Vector256.FusedMultiplyAdd(fl, x.Hi, Vector256.FusedMultiplyAdd(fh, x.Lo, e));
         return Add(p, e);
     }
@@ -59,10 +59,10 @@ internal readonly record struct Lane(Vector256<double> Hi, Vector256<double> Lo)
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public Lane Times(Lane f)
     {
-        Vector256<double> p = f.Hi * Hi;
-        Vector256<double> e = Vector256.FusedMultiplyAdd(f.Hi, Hi, -p);
+        var p = f.Hi * Hi;
+        var e = Vector256.FusedMultiplyAdd(f.Hi, Hi, -p);
         e = Vector256.FusedMultiplyAdd(f.Lo, Hi, Vector256.FusedMultiplyAdd(f.Hi, Lo, e));
-        Vector256<double> hi = p + e;
+        var hi = p + e;
         return new(hi, e - (hi - p));
     }
 
@@ -74,10 +74,10 @@ internal readonly record struct Lane(Vector256<double> Hi, Vector256<double> Lo)
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private Lane Add(Vector256<double> p, Vector256<double> e)
     {
-        Vector256<double> s = Hi + p;
-        Vector256<double> t = s - Hi;
-        Vector256<double> r = (Hi - (s - t)) + (p - t) + (Lo + e);
-        Vector256<double> hi = s + r;
+        var s = Hi + p;
+        var t = s - Hi;
+        var r = (Hi - (s - t)) + (p - t) + (Lo + e);
+        var hi = s + r;
         return new(hi, r - (hi - s));
     }
 }

@@ -3,13 +3,13 @@ namespace CircuitTransient.Numerics;
 /// <summary>P A = L U of a square real matrix, with row exchanges for the largest pivot.</summary>
 public sealed class LuFactorization
 {
-    private readonly DoubleDoubleMatrix _lu;
-    private readonly int[] _order;
+    private readonly DoubleDoubleMatrix factors;
+    private readonly int[] rowOrder;
 
     private LuFactorization(DoubleDoubleMatrix lu, int[] order)
     {
-        _lu = lu;
-        _order = order;
+        factors = lu;
+        rowOrder = order;
     }
 
     /// <summary>Factorises a copy of <paramref name="a"/>.</summary>
@@ -17,12 +17,12 @@ public sealed class LuFactorization
     {
         ArgumentNullException.ThrowIfNull(a);
         Shape.MustAgree(a.Rows, a.Columns);
-        int n = a.Rows;
-        DoubleDoubleMatrix lu = a.Copy();
+        var n = a.Rows;
+        var lu = a.Copy();
         int[] order = [.. Enumerable.Range(0, n)];
-        for (int k = 0; k < n; k++)
+        for (var k = 0; k < n; k++)
         {
-            int pivot = LargestBelow(lu, k);
+            var pivot = LargestBelow(lu, k);
             if (pivot != k)
             {
                 Exchange(lu, k, pivot);
@@ -39,26 +39,26 @@ public sealed class LuFactorization
     public DoubleDoubleMatrix Solve(DoubleDoubleMatrix b)
     {
         ArgumentNullException.ThrowIfNull(b);
-        Shape.MustAgree(_lu.Rows, b.Rows);
-        int n = _lu.Rows;
+        Shape.MustAgree(factors.Rows, b.Rows);
+        var n = factors.Rows;
         DoubleDoubleMatrix x = new(n, b.Columns);
-        for (int i = 0; i < n; i++)
+        for (var i = 0; i < n; i++)
         {
-            x.Row(i).CopyFrom(b.Row(_order[i]));
-            for (int k = 0; k < i; k++)
+            x.Row(i).CopyFrom(b.Row(rowOrder[i]));
+            for (var k = 0; k < i; k++)
             {
-                x.Row(i).AddScaled(-_lu[i, k], x.Row(k));
+                x.Row(i).AddScaled(-factors[i, k], x.Row(k));
             }
         }
 
-        for (int i = n - 1; i >= 0; i--)
+        for (var i = n - 1; i >= 0; i--)
         {
-            for (int k = i + 1; k < n; k++)
+            for (var k = i + 1; k < n; k++)
             {
-                x.Row(i).AddScaled(-_lu[i, k], x.Row(k));
+                x.Row(i).AddScaled(-factors[i, k], x.Row(k));
             }
 
-            x.Row(i).Scale(1.0 / _lu[i, i]);
+            x.Row(i).Scale(1.0 / factors[i, i]);
         }
 
         return x;
@@ -66,8 +66,8 @@ public sealed class LuFactorization
 
     private static int LargestBelow(DoubleDoubleMatrix lu, int k)
     {
-        int pivot = k;
-        for (int i = k + 1; i < lu.Rows; i++)
+        var pivot = k;
+        for (var i = k + 1; i < lu.Rows; i++)
         {
             if (Math.Abs(lu[i, k].Hi) > Math.Abs(lu[pivot, k].Hi))
             {
@@ -80,7 +80,7 @@ public sealed class LuFactorization
 
     private static void Exchange(DoubleDoubleMatrix lu, int i, int k)
     {
-        for (int j = 0; j < lu.Columns; j++)
+        for (var j = 0; j < lu.Columns; j++)
         {
             (lu[i, j], lu[k, j]) = (lu[k, j], lu[i, j]);
         }
@@ -88,20 +88,20 @@ public sealed class LuFactorization
 
     private static void Eliminate(DoubleDoubleMatrix lu, int k)
     {
-        DoubleDouble pivot = lu[k, k];
+        var pivot = lu[k, k];
         if (pivot.IsZero)
         {
             return;
         }
 
-        for (int i = k + 1; i < lu.Rows; i++)
+        for (var i = k + 1; i < lu.Rows; i++)
         {
             if (lu[i, k].IsZero)
             {
                 continue;
             }
 
-            DoubleDouble f = lu[i, k] / pivot;
+            var f = lu[i, k] / pivot;
             lu[i, k] = f;
             lu.Row(i, k + 1).AddScaled(-f, lu.Row(k, k + 1));
         }

@@ -12,25 +12,25 @@ internal static class NilpotentForm
     public static (DoubleDoubleComplexMatrix T, DoubleDoubleComplexMatrix Q) Of(
         DoubleDoubleComplexMatrix original, double tolerance)
     {
-        DoubleDoubleComplexMatrix t = original;
-        int m = t.Rows;
+        var t = original;
+        var m = t.Rows;
         if (!MayBeNilpotent(t, tolerance))
         {
             return (original, DoubleDoubleComplexMatrix.Identity(m));
         }
 
-        DoubleDoubleComplexMatrix total = DoubleDoubleComplexMatrix.Identity(m);
-        for (int k = 0; k < m; k++)
+        var total = DoubleDoubleComplexMatrix.Identity(m);
+        for (var k = 0; k < m; k++)
         {
             if (NullVector.Of(t.Part(k, k, m - k, m - k), tolerance) is not { } z)
             {
                 return (original, DoubleDoubleComplexMatrix.Identity(m));
             }
 
-            DoubleDoubleComplexMatrix q = Embedded(Completed(z), m);
+            var q = Embedded(Completed(z), m);
             t = q.Adjoint().Times(t).Times(q);
             total = total.Times(q);
-            for (int i = k; i < m; i++)
+            for (var i = k; i < m; i++)
             {
                 if (t[i, k].Magnitude > tolerance)
                 {
@@ -41,9 +41,9 @@ internal static class NilpotentForm
             }
         }
 
-        for (int i = 0; i < m; i++)
+        for (var i = 0; i < m; i++)
         {
-            for (int j = i + 1; j < m; j++)
+            for (var j = i + 1; j < m; j++)
             {
                 t[i, j] = t[i, j].Magnitude > tolerance ? t[i, j] : 0;
             }
@@ -54,9 +54,9 @@ internal static class NilpotentForm
 
     private static bool MayBeNilpotent(DoubleDoubleComplexMatrix t, double tolerance)
     {
-        double size = Math.Max(t.FrobeniusNorm(), tolerance);
-        double product = tolerance;
-        for (int i = 0; i < t.Rows; i++)
+        var size = Math.Max(t.FrobeniusNorm(), tolerance);
+        var product = tolerance;
+        for (var i = 0; i < t.Rows; i++)
         {
             product *= t[i, i].Magnitude / (i == 0 ? tolerance : size);
         }
@@ -67,12 +67,12 @@ internal static class NilpotentForm
     /// <summary>Columns: z, then unit vectors made orthogonal to it and to each other.</summary>
     private static DoubleDoubleComplexMatrix Completed(DoubleDoubleComplexMatrix z)
     {
-        int m = z.Rows;
+        var m = z.Rows;
         DoubleDoubleComplexMatrix rows = new(m, m);
         rows.AddScaledRow(0, 1, z.Transposed(), 0);
-        int skipped = Enumerable.Range(0, m).MaxBy(i => z[i, 0].Magnitude);
-        int next = 0;
-        for (int k = 0; k < m; k++)
+        var skipped = Enumerable.Range(0, m).MaxBy(i => z[i, 0].Magnitude);
+        var next = 0;
+        for (var k = 0; k < m; k++)
         {
             if (k > 0)
             {
@@ -80,15 +80,15 @@ internal static class NilpotentForm
                 rows[k, next++] = 1;
             }
 
-            for (int pass = 0; pass < 2; pass++)
+            for (var pass = 0; pass < 2; pass++)
             {
-                for (int l = 0; l < k; l++)
+                for (var l = 0; l < k; l++)
                 {
                     rows.AddScaledRow(k, -InvariantBasis.Overlap(rows, l, rows, k), rows, l);
                 }
             }
 
-            DoubleDouble norm = DoubleDouble.Sqrt(InvariantBasis.Overlap(rows, k, rows, k).Re);
+            var norm = DoubleDouble.Sqrt(InvariantBasis.Overlap(rows, k, rows, k).Re);
             rows.Re.Row(k).Scale(1 / norm);
             rows.Im.Row(k).Scale(1 / norm);
         }
@@ -98,11 +98,11 @@ internal static class NilpotentForm
 
     private static DoubleDoubleComplexMatrix Embedded(DoubleDoubleComplexMatrix q, int m)
     {
-        DoubleDoubleComplexMatrix result = DoubleDoubleComplexMatrix.Identity(m);
-        int k = m - q.Rows;
-        for (int i = 0; i < q.Rows; i++)
+        var result = DoubleDoubleComplexMatrix.Identity(m);
+        var k = m - q.Rows;
+        for (var i = 0; i < q.Rows; i++)
         {
-            for (int j = 0; j < q.Rows; j++)
+            for (var j = 0; j < q.Rows; j++)
             {
                 result[k + i, k + j] = q[i, j];
             }

@@ -7,13 +7,13 @@ internal static class NullVector
     /// </summary>
     public static DoubleDoubleComplexMatrix? Of(DoubleDoubleComplexMatrix a, double tolerance)
     {
-        int m = a.Rows;
-        DoubleDoubleComplexMatrix u = a.Copy();
+        var m = a.Rows;
+        var u = a.Copy();
         int[] columns = [.. Enumerable.Range(0, m)];
-        int rank = 0;
+        var rank = 0;
         while (rank < m && BringLargest(u, columns, rank) > tolerance)
         {
-            for (int i = rank + 1; i < m; i++)
+            for (var i = rank + 1; i < m; i++)
             {
                 u.AddScaledRow(i, -(u[i, rank] / u[rank, rank]), u, rank, rank);
             }
@@ -26,22 +26,22 @@ internal static class NullVector
 
     private static double BringLargest(DoubleDoubleComplexMatrix u, int[] columns, int k)
     {
-        int m = u.Rows;
-        (int row, int column) = (k, k);
-        for (int i = k; i < m; i++)
+        var m = u.Rows;
+        (var row, var column) = (k, k);
+        for (var i = k; i < m; i++)
         {
-            for (int j = k; j < m; j++)
+            for (var j = k; j < m; j++)
             {
                 (row, column) = u[i, j].Magnitude > u[row, column].Magnitude ? (i, j) : (row, column);
             }
         }
 
-        for (int j = 0; j < m; j++)
+        for (var j = 0; j < m; j++)
         {
             (u[k, j], u[row, j]) = (u[row, j], u[k, j]);
         }
 
-        for (int i = 0; i < m; i++)
+        for (var i = 0; i < m; i++)
         {
             (u[i, k], u[i, column]) = (u[i, column], u[i, k]);
         }
@@ -54,10 +54,10 @@ internal static class NullVector
     {
         DoubleDoubleComplexMatrix x = new(u.Rows, 1);
         x[columns[rank], 0] = 1;
-        for (int i = rank - 1; i >= 0; i--)
+        for (var i = rank - 1; i >= 0; i--)
         {
-            DoubleDoubleComplex sum = u[i, rank];
-            for (int k = i + 1; k < rank; k++)
+            var sum = u[i, rank];
+            for (var k = i + 1; k < rank; k++)
             {
                 sum += u[i, k] * x[columns[k], 0];
             }

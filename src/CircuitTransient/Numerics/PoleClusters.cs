@@ -16,34 +16,34 @@ internal sealed class PoleClusters
     private const double Noise = 1e-31; // relative to ‖A‖ and per unit of projector norm: the blur of a pole
     private const double WidestBlur = 0.01; // of ‖A‖; the blur of a twelvefold pole is near this
 
-    private readonly ComplexSchur _schur;
-    private readonly int _largeBlock;
-    private readonly double _norm;
-    private readonly DoubleDoubleComplex[] _poles;
-    private readonly int[] _mirror; // the index of the conjugate pole
-    private readonly int[] _cluster; // the cluster of each pole, named by its least member
-    private readonly int[] _order; // which pole stands at which place of the diagonal
-    private readonly List<int> _starts = [];
+    private readonly ComplexSchur schur;
+    private readonly int largeBlock;
+    private readonly double norm;
+    private readonly DoubleDoubleComplex[] poles;
+    private readonly int[] mirror; // the index of the conjugate pole
+    private readonly int[] cluster; // the cluster of each pole, named by its least member
+    private readonly int[] order; // which pole stands at which place of the diagonal
+    private readonly List<int> starts = [];
 
     private PoleClusters(ComplexSchur schur, double norm, int largeBlock)
     {
-        _largeBlock = largeBlock;
-        int n = schur.T.Rows;
-        _schur = schur;
-        _norm = norm;
-        _order = [.. Enumerable.Range(0, n)];
-        _cluster = [.. Enumerable.Range(0, n)];
-        _poles = new DoubleDoubleComplex[n];
-        _mirror = new int[n];
-        for (int i = 0; i < n; i++)
+        this.largeBlock = largeBlock;
+        var n = schur.T.Rows;
+        this.schur = schur;
+        this.norm = norm;
+        order = [.. Enumerable.Range(0, n)];
+        cluster = [.. Enumerable.Range(0, n)];
+        poles = new DoubleDoubleComplex[n];
+        mirror = new int[n];
+        for (var i = 0; i < n; i++)
         {
-            _poles[i] = schur.T[i, i];
-            _mirror[i] = _poles[i].Im.IsZero ? i : _poles[i].Im.Hi > 0 ? i + 1 : i - 1;
+            poles[i] = schur.T[i, i];
+            mirror[i] = poles[i].Im.IsZero ? i : poles[i].Im.Hi > 0 ? i + 1 : i - 1;
         }
     }
 
     /// <summary>The Schur form, reordered cluster by cluster.</summary>
-    public ComplexSchur Schur => _schur;
+    public ComplexSchur Schur => schur;
 
     /// <summary>The clusters' bases in the Schur basis, and whether each is its own mirror.</summary>
     public IReadOnlyList<(InvariantBasis Basis, bool IsReal)> Found { get; private set; } = [];
@@ -62,10 +62,10 @@ internal sealed class PoleClusters
         while (clusters.Merge(bases));
 
         List<(InvariantBasis Basis, bool IsReal)> found = [];
-        for (int b = 0; b < bases.Length; b++)
+        for (var b = 0; b < bases.Length; b++)
         {
-            int name = clusters.NameOf(b);
-            bool isReal = clusters.MirrorOf(name) == name;
+            var name = clusters.NameOf(b);
+            var isReal = clusters.MirrorOf(name) == name;
             if (isReal || clusters.MeanImaginary(name) > 0)
             {
                 found.Add((bases[b], isReal));
@@ -76,37 +76,37 @@ internal sealed class PoleClusters
         return clusters;
     }
 
-    private int NameOf(int block) => _cluster[_order[_starts[block]]];
+    private int NameOf(int block) => cluster[order[starts[block]]];
 
-    private int MirrorOf(int name) => _cluster[_mirror[name]];
+    private int MirrorOf(int name) => cluster[mirror[name]];
 
     private IEnumerable<int> Members(int name) =>
-        Enumerable.Range(0, _cluster.Length).Where(i => _cluster[i] == name);
+        Enumerable.Range(0, cluster.Length).Where(i => cluster[i] == name);
 
-    private double MeanImaginary(int name) => Members(name).Average(i => _poles[i].Im.Hi);
+    private double MeanImaginary(int name) => Members(name).Average(i => poles[i].Im.Hi);
 
     /// <summary>Swaps neighbours until each cluster stands together on the diagonal.</summary>
     private void Arrange()
     {
-        int n = _order.Length;
-        double negligible = BlockSubstitution.ZeroPole * 1e-4 * _norm;
-        _starts.Clear();
-        for (int place = 0; place < n;)
+        var n = order.Length;
+        var negligible = BlockSubstitution.ZeroPole * 1e-4 * norm;
+        starts.Clear();
+        for (var place = 0; place < n;)
         {
-            _starts.Add(place);
-            int name = _cluster[_order[place]];
-            int end = place + 1;
-            for (int k = end; k < n; k++)
+            starts.Add(place);
+            var name = cluster[order[place]];
+            var end = place + 1;
+            for (var k = end; k < n; k++)
             {
-                if (_cluster[_order[k]] != name)
+                if (cluster[order[k]] != name)
                 {
                     continue;
                 }
 
-                for (int down = k - 1; down >= end; down--)
+                for (var down = k - 1; down >= end; down--)
                 {
-                    _schur.Swap(down, negligible);
-                    (_order[down], _order[down + 1]) = (_order[down + 1], _order[down]);
+                    schur.Swap(down, negligible);
+                    (order[down], order[down + 1]) = (order[down + 1], order[down]);
                 }
 
                 end++;
@@ -115,16 +115,16 @@ internal sealed class PoleClusters
             place = end;
         }
 
-        _starts.Add(n);
+        starts.Add(n);
     }
 
     private InvariantBasis[] Decouple()
     {
-        BlockSubstitution substitution = new(_schur.T, _norm, _starts);
-        InvariantBasis[] bases = new InvariantBasis[_starts.Count - 1];
-        for (int b = 0; b < bases.Length; b++)
+        BlockSubstitution substitution = new(schur.T, norm, starts);
+        var bases = new InvariantBasis[starts.Count - 1];
+        for (var b = 0; b < bases.Length; b++)
         {
-            bases[b] = InvariantBasis.Of(_schur.T, substitution, _starts[b], _starts[b + 1]);
+            bases[b] = InvariantBasis.Of(schur.T, substitution, starts[b], starts[b + 1]);
         }
 
         return bases;
@@ -138,19 +138,19 @@ internal sealed class PoleClusters
             .OrderByDescending(b => bases[b].ProjectorNorm)
             .ToArray();
         int[] names = [.. Enumerable.Range(0, bases.Length).Select(NameOf)];
-        BlockDirections?[] directions = new BlockDirections?[bases.Length];
+        var directions = new BlockDirections?[bases.Length];
         HashSet<int> taken = [];
-        foreach (int b in worst)
+        foreach (var b in worst)
         {
             if (taken.Contains(names[b]))
             {
                 continue;
             }
 
-            int partner = Partner(bases, directions, names, b);
+            var partner = Partner(bases, directions, names, b);
             if (partner >= 0 && !taken.Contains(names[partner])
                 && (bases[b].ProjectorNorm > BearableProjector
-                    || bases[b].T.Rows + bases[partner].T.Rows <= _largeBlock))
+                    || bases[b].T.Rows + bases[partner].T.Rows <= largeBlock))
             {
                 Join(names[b], names[partner], taken);
             }
@@ -161,22 +161,22 @@ internal sealed class PoleClusters
 
     private int Partner(InvariantBasis[] bases, BlockDirections?[] directions, int[] names, int b)
     {
-        int best = -1;
-        double bestScore = double.PositiveInfinity;
-        for (int c = 0; c < bases.Length; c++)
+        var best = -1;
+        var bestScore = double.PositiveInfinity;
+        for (var c = 0; c < bases.Length; c++)
         {
             if (c == b)
             {
                 continue;
             }
 
-            double distance = Distance(names[b], names[c], Blur(bases[b]) + Blur(bases[c]));
+            var distance = Distance(names[b], names[c], Blur(bases[b]) + Blur(bases[c]));
             if (distance < 2.5)
             {
-                BlockDirections own = directions[b] ??= new(bases[b]);
-                BlockDirections other = directions[c] ??= new(bases[c]);
-                double cosine = own.CosineTo(other);
-                double score = (double.IsNaN(cosine) ? 0 : 1 - cosine) + (1e-3 * distance);
+                var own = directions[b] ??= new(bases[b]);
+                var other = directions[c] ??= new(bases[c]);
+                var cosine = own.CosineTo(other);
+                var score = (double.IsNaN(cosine) ? 0 : 1 - cosine) + (1e-3 * distance);
                 (best, bestScore) = score < bestScore ? (c, score) : (best, bestScore);
             }
         }
@@ -184,20 +184,20 @@ internal sealed class PoleClusters
         return best;
     }
 
-    private double Blur(InvariantBasis basis) => Math.Min(Noise * basis.ProjectorNorm, WidestBlur) * _norm;
+    private double Blur(InvariantBasis basis) => Math.Min(Noise * basis.ProjectorNorm, WidestBlur) * norm;
 
     /// <summary>The least relative distance of two members, at most 2; infinite where all moduli differ too
     /// much and the blur of rounding does not explain it.</summary>
     private double Distance(int first, int second, double blur)
     {
-        double least = double.PositiveInfinity;
-        foreach (int i in Members(first))
+        var least = double.PositiveInfinity;
+        foreach (var i in Members(first))
         {
-            foreach (int j in Members(second))
+            foreach (var j in Members(second))
             {
-                double gap = (_poles[i] - _poles[j]).Magnitude;
-                double larger = Math.Max(_poles[i].Magnitude, _poles[j].Magnitude);
-                double smaller = Math.Min(_poles[i].Magnitude, _poles[j].Magnitude);
+                var gap = (poles[i] - poles[j]).Magnitude;
+                var larger = Math.Max(poles[i].Magnitude, poles[j].Magnitude);
+                var smaller = Math.Min(poles[i].Magnitude, poles[j].Magnitude);
                 if (gap <= blur || larger <= FarthestRatio * smaller)
                 {
                     least = Math.Min(least, larger == 0 ? 0 : gap / larger);
@@ -209,14 +209,13 @@ internal sealed class PoleClusters
     }
 
     /// <summary>Joins two clusters and their mirrors; all four where the two lie on both sides of the real
-    /// axis.
-    /// </summary>
+    /// axis.</summary>
     private void Join(int first, int second, HashSet<int> taken)
     {
-        int firstMirror = MirrorOf(first);
-        int secondMirror = MirrorOf(second);
+        var firstMirror = MirrorOf(first);
+        var secondMirror = MirrorOf(second);
         taken.UnionWith([first, second, firstMirror, secondMirror]);
-        bool acrossAxis = firstMirror == first || secondMirror == second || firstMirror == second
+        var acrossAxis = firstMirror == first || secondMirror == second || firstMirror == second
             || MeanImaginary(first) * MeanImaginary(second) < 0;
         int[] all = acrossAxis ? [first, second, firstMirror, secondMirror] : [first, second];
         Rename(all);
@@ -228,12 +227,12 @@ internal sealed class PoleClusters
 
     private void Rename(int[] names)
     {
-        int name = names.Min();
-        for (int i = 0; i < _cluster.Length; i++)
+        var name = names.Min();
+        for (var i = 0; i < cluster.Length; i++)
         {
-            if (names.Contains(_cluster[i]))
+            if (names.Contains(cluster[i]))
             {
-                _cluster[i] = name;
+                cluster[i] = name;
             }
         }
     }

@@ -9,14 +9,14 @@ public static class PoleExponential
     /// <summary>e^(p t).</summary>
     public static Complex Of(DoubleDoubleComplex p, double t)
     {
-        double size = Of(p.Re, t);
+        var size = Of(p.Re, t);
         if (p.Im.IsZero)
         {
             return size;
         }
 
-        DoubleDouble phase = p.Im * t;
-        (double sin, double cos) = Math.SinCos(phase.Hi);
+        var phase = p.Im * t;
+        (var sin, var cos) = Math.SinCos(phase.Hi);
         return new(
             size * Math.FusedMultiplyAdd(-phase.Lo, sin, cos),
             size * Math.FusedMultiplyAdd(phase.Lo, cos, sin));
@@ -25,8 +25,8 @@ public static class PoleExponential
     /// <summary>e^(p t) of a real pole.</summary>
     public static double Of(DoubleDouble p, double t)
     {
-        DoubleDouble exponent = p * t;
-        double size = Math.Exp(exponent.Hi);
+        var exponent = p * t;
+        var size = Math.Exp(exponent.Hi);
         return double.IsFinite(size) ? Math.FusedMultiplyAdd(size, exponent.Lo, size) : size;
     }
 }

@@ -33,16 +33,16 @@ public static class PoleGroups
             .ThenBy(group => group.Value.Imaginary)
             .ThenBy(group => group.Value.Real);
         List<PoleGroup> merged = [];
-        foreach (PoleGroup group in groups)
+        foreach (var group in groups)
         {
-            int twin = merged.FindLastIndex(other => Coincide(group, other));
+            var twin = merged.FindLastIndex(other => Coincide(group, other));
             if (twin < 0)
             {
                 merged.Add(group);
             }
             else
             {
-                int together = merged[twin].Multiplicity + group.Multiplicity;
+                var together = merged[twin].Multiplicity + group.Multiplicity;
                 merged[twin] = merged[twin] with { Multiplicity = together };
             }
         }
@@ -59,15 +59,15 @@ public static class PoleGroups
     private static IEnumerable<PoleGroup> OfBlock(SpectralBlock block, int order)
     {
         List<DoubleDoubleComplex> rest = [.. Enumerable.Range(0, block.Size).Select(block.Pole)];
-        for (int m = rest.Count; m >= 1; m--)
+        for (var m = rest.Count; m >= 1; m--)
         {
-            double width = m == 1 ? 0 : Math.Min(Widest, Slack * Math.Pow(order * InputRounding, 1.0 / m));
+            var width = m == 1 ? 0 : Math.Min(Widest, Slack * Math.Pow(order * InputRounding, 1.0 / m));
             while (rest.Count >= m && Coinciding(rest, m, width, block.IsReal) is { } found)
             {
                 rest.RemoveAll(found.Contains);
-                DoubleDoubleComplex mean = Mean(found);
-                bool isReal = block.IsReal && Math.Abs(mean.Im.Hi) <= width * mean.Magnitude;
-                double im = isReal ? 0 : (double)mean.Im;
+                var mean = Mean(found);
+                var isReal = block.IsReal && Math.Abs(mean.Im.Hi) <= width * mean.Magnitude;
+                var im = isReal ? 0 : (double)mean.Im;
                 if (im >= 0)
                 {
                     yield return new(OnAxis(new Complex((double)mean.Re, im)), found.Count);
@@ -81,13 +81,13 @@ public static class PoleGroups
     private static List<DoubleDoubleComplex>? Coinciding(
         List<DoubleDoubleComplex> poles, int m, double width, bool isReal)
     {
-        foreach (DoubleDoubleComplex pole in poles)
+        foreach (var pole in poles)
         {
-            bool isNearAxis = isReal && Math.Abs(pole.Im.Hi) <= width * pole.Magnitude;
-            DoubleDoubleComplex centre = isNearAxis ? pole.Re : pole;
+            var isNearAxis = isReal && Math.Abs(pole.Im.Hi) <= width * pole.Magnitude;
+            var centre = isNearAxis ? pole.Re : pole;
             List<DoubleDoubleComplex> near = [.. poles.OrderBy(other => (other - centre).Magnitude).Take(m)];
-            DoubleDoubleComplex mean = Mean(near);
-            bool touchesAxis = isReal && Math.Abs(mean.Im.Hi) <= width * mean.Magnitude;
+            var mean = Mean(near);
+            var touchesAxis = isReal && Math.Abs(mean.Im.Hi) <= width * mean.Magnitude;
             near =
             [
                 .. poles.Where(
@@ -106,7 +106,7 @@ public static class PoleGroups
     private static DoubleDoubleComplex Mean(List<DoubleDoubleComplex> poles)
     {
         DoubleDoubleComplex sum = 0;
-        foreach (DoubleDoubleComplex pole in poles)
+        foreach (var pole in poles)
         {
             sum += pole;
         }

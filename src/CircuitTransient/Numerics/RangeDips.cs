@@ -122,8 +122,7 @@ public sealed class RangeDips
     ];
 
     /// <summary>Looks into a stretch, and into its parts while they may hide something.</summary>
-    /// <returns>Whether that is all: a place on the other side of zero was met, or it was
-    /// left.</returns>
+    /// <returns>Whether that is all: a place on the other side of zero was met, or it was left.</returns>
     private bool Follow(Stretch stretch, int left, bool isForeseen)
     {
         var isOpen = stretch.Bound < 0 || (stretch.IsDip && !isForeseen);
@@ -200,8 +199,7 @@ public sealed class RangeDips
     }
 
     /// <summary>Two neighbours as if zero lay below both.</summary>
-    /// <param name="Bound">The least value between them, if the function bends no more than it
-    /// may.</param>
+    /// <param name="Bound">The least value between them, if the function bends no more than it may.</param>
     /// <param name="At">Where that would be.</param>
     private readonly record struct Stretch(SlopedSample Left, SlopedSample Right, double Bound, double At)
     {

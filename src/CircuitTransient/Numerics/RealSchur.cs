@@ -10,8 +10,8 @@ public sealed record RealSchur(DoubleDoubleMatrix T, DoubleDoubleMatrix Transpos
     public static RealSchur Of(DoubleDoubleMatrix a)
     {
         ArgumentNullException.ThrowIfNull(a);
-        DoubleDoubleMatrix t = a.Copy();
-        DoubleDoubleMatrix qt = DoubleDoubleMatrix.Identity(a.Rows);
+        var t = a.Copy();
+        var qt = DoubleDoubleMatrix.Identity(a.Rows);
         Hessenberg.Reduce(t, qt);
         FrancisIteration.Run(t, qt);
         return new(t, qt);

@@ -7,23 +7,23 @@ internal static class RealSpan
     /// the largest remainder first (Gram–Schmidt, twice each).</summary>
     public static DoubleDoubleMatrix Of(DoubleDoubleComplexMatrix vectors)
     {
-        int m = vectors.Rows;
+        var m = vectors.Rows;
         DoubleDoubleMatrix rest = new(2 * m, vectors.Columns);
-        for (int i = 0; i < m; i++)
+        for (var i = 0; i < m; i++)
         {
             rest.Row(i).CopyFrom(vectors.Re.Row(i));
             rest.Row(m + i).CopyFrom(vectors.Im.Row(i));
         }
 
         DoubleDoubleMatrix basis = new(m, vectors.Columns);
-        for (int k = 0; k < m; k++)
+        for (var k = 0; k < m; k++)
         {
-            int largest = Enumerable.Range(0, 2 * m).MaxBy(i => rest.Row(i).SumOfSquares().Hi);
-            DoubleDoubleRow row = basis.Row(k);
+            var largest = Enumerable.Range(0, 2 * m).MaxBy(i => rest.Row(i).SumOfSquares().Hi);
+            var row = basis.Row(k);
             row.CopyFrom(rest.Row(largest));
             RemoveSpan(basis, k, row);
             row.Scale(1 / DoubleDouble.Sqrt(row.SumOfSquares()));
-            for (int i = 0; i < 2 * m; i++)
+            for (var i = 0; i < 2 * m; i++)
             {
                 rest.Row(i).AddScaled(-row.Dot(rest.Row(i)), row);
             }
@@ -34,9 +34,9 @@ internal static class RealSpan
 
     private static void RemoveSpan(DoubleDoubleMatrix basis, int count, DoubleDoubleRow row)
     {
-        for (int pass = 0; pass < 2; pass++)
+        for (var pass = 0; pass < 2; pass++)
         {
-            for (int k = 0; k < count; k++)
+            for (var k = 0; k < count; k++)
             {
                 row.AddScaled(-row.Dot(basis.Row(k)), basis.Row(k));
             }

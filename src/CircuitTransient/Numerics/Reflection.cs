@@ -17,34 +17,34 @@ internal readonly record struct Reflection(DoubleDouble Tau, DoubleDouble V, Dou
     public static Reflection Of(
         DoubleDouble x, DoubleDouble y, DoubleDouble z, int count, out DoubleDouble alpha)
     {
-        DoubleDouble tail = DoubleDouble.Hypotenuse(y, z);
+        var tail = DoubleDouble.Hypotenuse(y, z);
         if (tail.IsZero)
         {
             alpha = x;
             return new(0, 0, 0, count);
         }
 
-        DoubleDouble norm = DoubleDouble.Hypotenuse(x, tail);
+        var norm = DoubleDouble.Hypotenuse(x, tail);
         alpha = x.Hi > 0 ? -norm : norm;
-        DoubleDouble divisor = x - alpha;
+        var divisor = x - alpha;
         return new((alpha - x) / alpha, y / divisor, z / divisor, count);
     }
 
     /// <summary>Rows k, k + 1 (, k + 2) of a, from column <paramref name="start"/> on.</summary>
     public void ApplyToRows(DoubleDoubleMatrix a, int k, int start)
     {
-        int n = a.Columns;
-        int x = k * n;
-        int y = x + n;
-        int z = Count == 3 ? y + n : y;
-        ref double hi = ref MemoryMarshal.GetReference(a.Hi);
-        ref double lo = ref MemoryMarshal.GetReference(a.Lo);
-        int j = start;
+        var n = a.Columns;
+        var x = k * n;
+        var y = x + n;
+        var z = Count == 3 ? y + n : y;
+        ref var hi = ref MemoryMarshal.GetReference(a.Hi);
+        ref var lo = ref MemoryMarshal.GetReference(a.Lo);
+        var j = start;
         for (; j <= n - Lanes; j += Lanes)
         {
-            Lane first = Lane.Load(ref hi, ref lo, x + j);
-            Lane second = Lane.Load(ref hi, ref lo, y + j);
-            Lane third = Count == 3 ? Lane.Load(ref hi, ref lo, z + j) : default;
+            var first = Lane.Load(ref hi, ref lo, x + j);
+            var second = Lane.Load(ref hi, ref lo, y + j);
+            var third = Count == 3 ? Lane.Load(ref hi, ref lo, z + j) : default;
             Apply(ref first, ref second, ref third);
             first.Store(ref hi, ref lo, x + j);
             second.Store(ref hi, ref lo, y + j);
@@ -63,16 +63,16 @@ internal readonly record struct Reflection(DoubleDouble Tau, DoubleDouble V, Dou
     /// <summary>Columns k, k + 1 (, k + 2) of the first <paramref name="rows"/> rows of a.</summary>
     public void ApplyToColumns(DoubleDoubleMatrix a, int k, int rows)
     {
-        int n = a.Columns;
-        Span<double> hi = a.Hi;
-        Span<double> lo = a.Lo;
-        int i = 0;
+        var n = a.Columns;
+        var hi = a.Hi;
+        var lo = a.Lo;
+        var i = 0;
         for (; i <= rows - Lanes; i += Lanes)
         {
-            int at = (i * n) + k;
-            Lane first = Lane.Gather(hi, lo, at, n);
-            Lane second = Lane.Gather(hi, lo, at + 1, n);
-            Lane third = Count == 3 ? Lane.Gather(hi, lo, at + 2, n) : default;
+            var at = (i * n) + k;
+            var first = Lane.Gather(hi, lo, at, n);
+            var second = Lane.Gather(hi, lo, at + 1, n);
+            var third = Count == 3 ? Lane.Gather(hi, lo, at + 2, n) : default;
             Apply(ref first, ref second, ref third);
             first.Scatter(hi, lo, at, n);
             second.Scatter(hi, lo, at + 1, n);
@@ -84,7 +84,7 @@ internal readonly record struct Reflection(DoubleDouble Tau, DoubleDouble V, Dou
 
         for (; i < rows; i++)
         {
-            int at = (i * n) + k;
+            var at = (i * n) + k;
             ApplyToOne(hi, lo, at, at + 1, Count == 3 ? at + 2 : at + 1);
         }
     }
@@ -92,9 +92,9 @@ internal readonly record struct Reflection(DoubleDouble Tau, DoubleDouble V, Dou
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private void Apply(ref Lane first, ref Lane second, ref Lane third)
     {
-        Lane v = Lane.Repeat(V);
-        Lane w = Lane.Repeat(W);
-        Lane sum = first.AddProduct(v, second);
+        var v = Lane.Repeat(V);
+        var w = Lane.Repeat(W);
+        var sum = first.AddProduct(v, second);
         sum = Count == 3 ? sum.AddProduct(w, third) : sum;
         sum = sum.Times(Lane.Repeat(-Tau));
         first = first.AddProduct(Lane.Repeat(1), sum);
@@ -106,8 +106,8 @@ internal readonly record struct Reflection(DoubleDouble Tau, DoubleDouble V, Dou
     {
         DoubleDouble first = new(hi[x], lo[x]);
         DoubleDouble second = new(hi[y], lo[y]);
-        DoubleDouble third = Count == 3 ? new(hi[z], lo[z]) : DoubleDouble.Zero;
-        DoubleDouble sum = DoubleDoubleRow.AddProduct(DoubleDoubleRow.AddProduct(first, V, second), W, third);
+        var third = Count == 3 ? new(hi[z], lo[z]) : DoubleDouble.Zero;
+        var sum = DoubleDoubleRow.AddProduct(DoubleDoubleRow.AddProduct(first, V, second), W, third);
         sum *= -Tau;
         first += sum;
         second = DoubleDoubleRow.AddProduct(second, V, sum);

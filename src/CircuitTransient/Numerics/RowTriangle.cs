@@ -43,7 +43,7 @@ public sealed class RowTriangle
     {
         get
         {
-            double last = rank > Columns ? rows[(Columns * width) + Columns] : 0;
+            var last = rank > Columns ? rows[(Columns * width) + Columns] : 0;
             return last * last;
         }
     }

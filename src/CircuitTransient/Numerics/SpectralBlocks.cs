@@ -14,13 +14,13 @@ public sealed record SpectralBlocks(int Order, ImmutableArray<SpectralBlock> Blo
     {
         ArgumentNullException.ThrowIfNull(a);
         Shape.MustAgree(a.Rows, a.Columns);
-        ImmutableArray<SpectralBlock>.Builder blocks = ImmutableArray.CreateBuilder<SpectralBlock>();
-        foreach (int[] places in ConnectedParts.Of(a))
+        var blocks = ImmutableArray.CreateBuilder<SpectralBlock>();
+        foreach (var places in ConnectedParts.Of(a))
         {
             DoubleDoubleMatrix part = new(places.Length, places.Length);
-            for (int i = 0; i < places.Length; i++)
+            for (var i = 0; i < places.Length; i++)
             {
-                for (int j = 0; j < places.Length; j++)
+                for (var j = 0; j < places.Length; j++)
                 {
                     part[i, j] = a[places[i], places[j]];
                 }
@@ -36,9 +36,9 @@ public sealed record SpectralBlocks(int Order, ImmutableArray<SpectralBlock> Blo
     {
         DoubleDoubleComplexMatrix v = new(n, block.Size);
         DoubleDoubleComplexMatrix w = new(block.Size, n);
-        for (int i = 0; i < places.Length; i++)
+        for (var i = 0; i < places.Length; i++)
         {
-            for (int k = 0; k < block.Size; k++)
+            for (var k = 0; k < block.Size; k++)
             {
                 v[places[i], k] = block.V[i, k];
                 w[k, places[i]] = block.W[k, i];

@@ -11,40 +11,40 @@ internal sealed class SpectralSplit
     // of ‖A‖; a good basis reaches n · 1e-31, and zero poles are cleared at 1e-26
     private const double Invariance = 1e-25;
 
-    private readonly DoubleDoubleMatrix _a;
-    private readonly DoubleDoubleMatrix _transposed;
-    private readonly double _norm;
-    private readonly DoubleDoubleMatrix _rows;
-    private readonly List<Share> _shares = [];
-    private int _filled;
+    private readonly DoubleDoubleMatrix a;
+    private readonly DoubleDoubleMatrix transposed;
+    private readonly double norm;
+    private readonly DoubleDoubleMatrix bases;
+    private readonly List<Share> shares = [];
+    private int filled;
 
     private SpectralSplit(DoubleDoubleMatrix balanced, double norm)
     {
-        _a = balanced;
-        _transposed = balanced.Transposed();
-        _norm = norm;
-        _rows = new(balanced.Rows, balanced.Rows);
+        a = balanced;
+        transposed = balanced.Transposed();
+        this.norm = norm;
+        bases = new(balanced.Rows, balanced.Rows);
     }
 
     /// <summary>The blocks.</summary>
     public static IEnumerable<SpectralBlock> Of(DoubleDoubleMatrix a)
     {
-        Balancing balancing = Balancing.Of(a);
-        DoubleDoubleMatrix balanced = balancing.Matrix;
-        double norm = balanced.FrobeniusNorm();
-        ComplexSchur schur = ComplexSchur.Of(RealSchur.Of(balanced), Noise * a.Rows * norm);
-        ClearZeroPoles(schur.T, BlockSubstitution.ZeroPole * norm);
+        var balancing = Balancing.Of(a);
+        var balanced = balancing.Matrix;
+        var size = balanced.FrobeniusNorm();
+        var schur = ComplexSchur.Of(RealSchur.Of(balanced), Noise * a.Rows * size);
+        ClearZeroPoles(schur.T, BlockSubstitution.ZeroPole * size);
 
-        SpectralSplit split = new(balanced, norm);
-        if (!split.Fill(PoleClusters.Of(schur.Copy(), norm, PoleClusters.LargeBlock))
-            && !split.Fill(PoleClusters.Of(schur.Copy(), norm, a.Rows)))
+        SpectralSplit split = new(balanced, size);
+        if (!split.Fill(PoleClusters.Of(schur.Copy(), size, PoleClusters.LargeBlock))
+            && !split.Fill(PoleClusters.Of(schur.Copy(), size, a.Rows)))
         {
             split.FillWhole(schur.Vectors);
         }
 
-        DoubleDoubleMatrix inverse = LuFactorization.Of(split._rows.Transposed())
+        var inverse = LuFactorization.Of(split.bases.Transposed())
             .Solve(DoubleDoubleMatrix.Identity(a.Rows));
-        return split._shares.Select(share => share.Finished(inverse, balancing.Exponents));
+        return split.shares.Select(share => share.Finished(inverse, balancing.Exponents));
     }
 
     /// <summary>Takes these clusters; false where some basis is not invariant to rounding, because poles
@@ -52,41 +52,41 @@ internal sealed class SpectralSplit
     private bool Fill(PoleClusters clusters)
     {
         Clear();
-        foreach ((InvariantBasis basis, bool isReal) in clusters.Found)
+        foreach ((var basis, var isReal) in clusters.Found)
         {
-            DoubleDoubleComplexMatrix right = basis.Right.Times(clusters.Schur.Vectors);
-            _shares.Add(!isReal ? AddComplex(basis.T, right)
+            var right = basis.Right.Times(clusters.Schur.Vectors);
+            shares.Add(!isReal ? AddComplex(basis.T, right)
                 : right.Rows == 1 ? AddReal(basis.T, right)
                 : AddRealCluster(right));
         }
 
-        return _shares.TrueForAll(IsInvariant);
+        return shares.TrueForAll(IsInvariant);
     }
 
     private void FillWhole(DoubleDoubleComplexMatrix vectors)
     {
         Clear();
-        _shares.Add(AddRealCluster(vectors));
+        shares.Add(AddRealCluster(vectors));
     }
 
     private void Clear()
     {
-        _filled = 0;
-        _shares.Clear();
+        filled = 0;
+        shares.Clear();
     }
 
     private bool IsInvariant(Share share)
     {
-        DoubleDoubleComplexMatrix image = share.Right.Times(_transposed);
-        DoubleDoubleComplexMatrix expected = share.T.Transposed().Times(share.Right);
+        var image = share.Right.Times(transposed);
+        var expected = share.T.Transposed().Times(share.Right);
         return double.Hypot(
             image.Re.Plus(-1, expected.Re).FrobeniusNorm(),
-            image.Im.Plus(-1, expected.Im).FrobeniusNorm()) <= Invariance * _norm;
+            image.Im.Plus(-1, expected.Im).FrobeniusNorm()) <= Invariance * norm;
     }
 
     private static void ClearZeroPoles(DoubleDoubleComplexMatrix t, double limit)
     {
-        for (int i = 0; i < t.Rows; i++)
+        for (var i = 0; i < t.Rows; i++)
         {
             t[i, i] = t[i, i].Magnitude <= limit ? 0 : t[i, i];
         }
@@ -94,7 +94,7 @@ internal sealed class SpectralSplit
 
     private Share AddComplex(DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix right)
     {
-        int first = _filled;
+        var first = filled;
         if (right.Rows == 1)
         {
             TurnPhase(right);
@@ -107,9 +107,9 @@ internal sealed class SpectralSplit
 
     private Share AddReal(DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix right)
     {
-        int first = _filled;
+        var first = filled;
         TurnPhase(right);
-        DoubleDoubleComplexMatrix real = DoubleDoubleComplexMatrix.From(right.Re);
+        var real = DoubleDoubleComplexMatrix.From(right.Re);
         real.Re.Row(0).Scale(1 / DoubleDouble.Sqrt(real.Re.Row(0).SumOfSquares()));
         Append(real.Re);
         return new(true, first, t, real, DoubleDoubleComplexMatrix.Identity(1));
@@ -119,31 +119,31 @@ internal sealed class SpectralSplit
     /// from B A Bᵀ.</summary>
     private Share AddRealCluster(DoubleDoubleComplexMatrix right)
     {
-        int first = _filled;
-        DoubleDoubleMatrix b = RealSpan.Of(right);
+        var first = filled;
+        var b = RealSpan.Of(right);
         Append(b);
-        ComplexSchur schur = ComplexSchur.Of(RealSchur.Of(b.Times(_a).Times(b.Transposed())));
-        ClearZeroPoles(schur.T, BlockSubstitution.ZeroPole * _norm);
-        (DoubleDoubleComplexMatrix t, DoubleDoubleComplexMatrix q) =
-            NilpotentForm.Of(schur.T, BlockSubstitution.ZeroPole * _norm);
-        DoubleDoubleComplexMatrix turn = q.Transposed().Times(schur.Vectors);
+        var schur = ComplexSchur.Of(RealSchur.Of(b.Times(a).Times(b.Transposed())));
+        ClearZeroPoles(schur.T, BlockSubstitution.ZeroPole * norm);
+        (var t, var q) =
+            NilpotentForm.Of(schur.T, BlockSubstitution.ZeroPole * norm);
+        var turn = q.Transposed().Times(schur.Vectors);
         return new(true, first, t, turn.Times(b), turn);
     }
 
     private void Append(DoubleDoubleMatrix rows)
     {
-        for (int i = 0; i < rows.Rows; i++)
+        for (var i = 0; i < rows.Rows; i++)
         {
-            _rows.Row(_filled++).CopyFrom(rows.Row(i));
+            bases.Row(filled++).CopyFrom(rows.Row(i));
         }
     }
 
     /// <summary>Turns the phase of a single vector so that its largest entry is positive.</summary>
     private static void TurnPhase(DoubleDoubleComplexMatrix v)
     {
-        int largest = Enumerable.Range(0, v.Columns).MaxBy(j => v[0, j].Magnitude);
-        DoubleDoubleComplex phase = v[0, largest].Conjugate / DoubleDoubleComplex.Abs(v[0, largest]);
-        for (int j = 0; j < v.Columns; j++)
+        var largest = Enumerable.Range(0, v.Columns).MaxBy(j => v[0, j].Magnitude);
+        var phase = v[0, largest].Conjugate / DoubleDoubleComplex.Abs(v[0, largest]);
+        for (var j = 0; j < v.Columns; j++)
         {
             v[0, j] *= phase;
         }
@@ -160,12 +160,12 @@ internal sealed class SpectralSplit
     {
         public SpectralBlock Finished(DoubleDoubleMatrix inverse, IReadOnlyList<int> exponents)
         {
-            int m = T.Rows;
-            int n = inverse.Rows;
+            var m = T.Rows;
+            var n = inverse.Rows;
             DoubleDoubleComplexMatrix left;
             if (IsReal)
             {
-                DoubleDoubleMatrix dual = inverse.Part(First, 0, m, n);
+                var dual = inverse.Part(First, 0, m, n);
                 left = new(Turn.Re.Times(dual), Turn.Im.Negative().Times(dual));
             }
             else
@@ -175,11 +175,11 @@ internal sealed class SpectralSplit
                 left.Scale(0.5);
             }
 
-            double projector = left.FrobeniusNorm();
-            DoubleDoubleComplexMatrix right = Right.Copy();
-            for (int j = 0; j < n; j++)
+            var projector = left.FrobeniusNorm();
+            var right = Right.Copy();
+            for (var j = 0; j < n; j++)
             {
-                for (int i = 0; i < m; i++)
+                for (var i = 0; i < m; i++)
                 {
                     right[i, j] = right[i, j].ScaleByPowerOfTwo(exponents[j]);
                     left[i, j] = left[i, j].ScaleByPowerOfTwo(-exponents[j]);

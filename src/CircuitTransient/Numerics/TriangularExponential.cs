@@ -17,7 +17,7 @@ public static class TriangularExponential
     public static DoubleDoubleComplexMatrix Of(DoubleDoubleComplexMatrix t, DoubleDouble time)
     {
         ArgumentNullException.ThrowIfNull(t);
-        int m = t.Rows;
+        var m = t.Rows;
         if (m == 1)
         {
             DoubleDoubleComplexMatrix single = new(1, 1);
@@ -25,14 +25,14 @@ public static class TriangularExponential
             return single;
         }
 
-        CentredBlock centred = CentredBlock.Of(t);
-        double distance = centred.Farthest * Math.Abs(time.Hi);
-        int squarings = distance > ScaledDistance ? Math.ILogB(distance / ScaledDistance) + 1 : 0;
-        DoubleDouble scaledTime = DoubleDouble.ScaleByPowerOfTwo(time, -squarings);
-        DoubleDouble shift = time.Hi >= 0 ? centred.Rightmost : 0; // keeps every square bounded
-        DoubleDoubleComplexMatrix result = Taylor(centred.N, scaledTime);
+        var centred = CentredBlock.Of(t);
+        var distance = centred.Farthest * Math.Abs(time.Hi);
+        var squarings = distance > ScaledDistance ? Math.ILogB(distance / ScaledDistance) + 1 : 0;
+        var scaledTime = DoubleDouble.ScaleByPowerOfTwo(time, -squarings);
+        var shift = time.Hi >= 0 ? centred.Rightmost : 0; // keeps every square bounded
+        var result = Taylor(centred.N, scaledTime);
         result.Scale(DoubleDouble.Exp(-(shift * scaledTime)));
-        for (int k = 0; k < squarings; k++)
+        for (var k = 0; k < squarings; k++)
         {
             result = result.Times(result);
         }
@@ -46,10 +46,10 @@ public static class TriangularExponential
 
     private static DoubleDoubleComplexMatrix Taylor(DoubleDoubleComplexMatrix n, DoubleDouble time)
     {
-        DoubleDoubleComplexMatrix sum = DoubleDoubleComplexMatrix.Identity(n.Rows);
-        DoubleDoubleComplexMatrix term = sum.Copy();
-        int quiet = 0;
-        for (int k = 1; k < MostTerms && quiet < n.Rows; k++)
+        var sum = DoubleDoubleComplexMatrix.Identity(n.Rows);
+        var term = sum.Copy();
+        var quiet = 0;
+        for (var k = 1; k < MostTerms && quiet < n.Rows; k++)
         {
             term = term.Times(n);
             term.Scale(time / k);
@@ -63,7 +63,7 @@ public static class TriangularExponential
     private static DoubleDoubleComplexMatrix Scaled(DoubleDoubleComplexMatrix a, DoubleDoubleComplex factor)
     {
         DoubleDoubleComplexMatrix result = new(a.Rows, a.Columns);
-        for (int i = 0; i < a.Rows; i++)
+        for (var i = 0; i < a.Rows; i++)
         {
             result.AddScaledRow(i, factor, a, i);
         }

@@ -104,7 +104,7 @@ internal static class BlockResponse
 
     private static void AddJoined(
         DoubleDoubleComplex[] end, Mode mode, DoubleDoubleComplex[] carriers, DoubleDoubleComplex[] w,
-            Forcing forcing)
+        Forcing forcing)
     {
         var m = end.Length;
         for (var i = 0; i < m; i++)

@@ -99,7 +99,7 @@ public static class GramIntegral
     /// <summary>With P = ∫ X Y and Q = ∫ X Ȳ: ∫ Re X Re Y = Re (P + Q)/2, and so on.</summary>
     private static void Put(
         double[,] gram, SegmentBasis basis, (int Mode, int Carrier) x, (int Mode, int Carrier) y, Complex p,
-            Complex q)
+        Complex q)
     {
         var isRealX = basis.Modes[x.Mode].IsReal;
         var isRealY = basis.Modes[y.Mode].IsReal;

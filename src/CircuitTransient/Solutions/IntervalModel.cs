@@ -64,13 +64,17 @@ public sealed class IntervalModel
     {
         lock (projections)
         {
-            if (!projections.TryGetValue(measurand, out var projection))
+            if (projections.TryGetValue(measurand, out var known))
             {
-                projection = Projection.Of(this, Outputs.Of(Form, measurand));
-                projections.Add(measurand, projection);
+                return known;
             }
+        }
 
-            return projection;
+        // outside the lock: threads that want other quantities need not wait
+        var projection = Projection.Of(this, Outputs.Of(Form, measurand));
+        lock (projections)
+        {
+            return projections.TryAdd(measurand, projection) ? projection : projections[measurand];
         }
     }
 

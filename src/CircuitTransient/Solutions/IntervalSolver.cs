@@ -85,7 +85,7 @@ internal sealed class IntervalSolver(
             ? []
             : Forcing.Of(
                 cause.Pieces, layout.Input(cause.Source), CauseList.ScaleOf(layout.Circuit, cause.Source),
-                    start);
+                start);
 
     private DoubleDoubleComplex[][] StateFrom(IntervalModel model, DoubleDouble[] stored)
     {

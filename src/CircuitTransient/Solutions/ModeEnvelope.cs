@@ -78,7 +78,7 @@ internal static class ModeEnvelope
 
         for (var i = 0; i < n; i++)
         {
-            double sum = -lowest;
+            var sum = -lowest;
             for (var j = i; j < n; j++)
             {
                 sum += matrix[i, j];

@@ -62,25 +62,31 @@ public sealed class Segment
             {
                 return known;
             }
+        }
 
-            var projection = Model.Project(measurand);
-            if (!projection.Output.IsDetermined)
+        // Outside the lock: threads that want other quantities need not wait, and two that want the same find
+        // the same.
+        var projection = Model.Project(measurand);
+        if (!projection.Output.IsDetermined)
+        {
+            return null;
+        }
+
+        var exact = modes.Coefficients(projection, cause == Total ? total : motions[cause]);
+        var rounded = new double[Basis.Width];
+        for (var m = 0; m < exact.Length; m++)
+        {
+            for (var k = 0; k < exact[m].Length; k++)
             {
-                return null;
+                Basis.Put(rounded, m, k, (Complex)exact[m][k]);
             }
+        }
 
-            var exact = modes.Coefficients(projection, cause == Total ? total : motions[cause]);
-            var rounded = new double[Basis.Width];
-            for (var m = 0; m < exact.Length; m++)
-            {
-                for (var k = 0; k < exact[m].Length; k++)
-                {
-                    Basis.Put(rounded, m, k, (Complex)exact[m][k]);
-                }
-            }
-
-            coefficients.Add((measurand, cause), rounded);
-            return rounded;
+        lock (coefficients)
+        {
+            return coefficients.TryAdd((measurand, cause), rounded)
+                ? rounded
+                : coefficients[(measurand, cause)];
         }
     }
 

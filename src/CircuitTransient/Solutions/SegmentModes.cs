@@ -185,7 +185,7 @@ internal sealed class SegmentModes
 
     private void AddForcedTerms(
         DoubleDoubleComplex[][] sums, DoubleDoubleComplex exponent, DoubleDoubleComplex a,
-            DoubleDoubleComplex s)
+        DoubleDoubleComplex s)
     {
         var mirrored = exponent.Im.IsNegative;
         var mode = forcedModes[mirrored ? exponent.Conjugate : exponent];

@@ -8,7 +8,7 @@ internal static class ClauseParser
 {
     private const int MostErrors = 20; // in one statement; as many as are shown of a file
 
-    private static readonly string[] words =
+    private static readonly string[] Words =
         ["charged", "carrying", "rated", "linear", "closed", "open", "closes", "opens"];
 
     /// <summary>Reads clauses to the end of the statement; after a mistake in one it
@@ -47,7 +47,7 @@ internal static class ClauseParser
             return;
         }
 
-        var isClause = words.Contains(cursor.Shown(token));
+        var isClause = Words.Contains(cursor.Shown(token));
         cursor.Error(token.Span, $"`{cursor.Shown(token)}` is left over behind what the statement says",
             isClause ? $"put a comma before it: `, {cursor.TextOf(token)} …`"
                 : "clauses follow a comma, comments a `#`, and a statement has its own line");
@@ -130,7 +130,7 @@ internal static class ClauseParser
         }
         else
         {
-            cursor.Unexpected("a clause", words);
+            cursor.Unexpected("a clause", Words);
         }
 
         return null;

@@ -7,7 +7,7 @@ internal static class ExpressionParser
 {
     private const int Deepest = 200;
     private const int LongestChain = 1000; // operators in a row at one level; later stages descend the tree
-    private static readonly string[] functions = ["sqrt", "exp", "ln"];
+    private static readonly string[] Functions = ["sqrt", "exp", "ln"];
 
     /// <summary>A sum: where an expression stands alone.</summary>
     public static ExpressionSyntax? ReadSum(StatementCursor cursor)
@@ -151,9 +151,9 @@ internal static class ExpressionParser
     {
         var name = cursor.Current;
         var function = cursor.Shown(name);
-        if (!functions.Contains(function))
+        if (!Functions.Contains(function))
         {
-            var nearest = NearestName.Find(function, functions);
+            var nearest = NearestName.Find(function, Functions);
             cursor.Error(name.Span, $"`{function}` is not a function",
                 nearest is null ? "the functions are `sqrt`, `exp` and `ln`; a product is written with `*`"
                     : $"did you mean `{nearest}`?");

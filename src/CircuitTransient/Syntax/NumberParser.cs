@@ -6,12 +6,12 @@ namespace CircuitTransient.Syntax;
 internal static class NumberParser
 {
     // Key words that may follow a number, so that they are not taken for a unit.
-    private static readonly HashSet<string> followers =
+    private static readonly HashSet<string> Followers =
     [
         "after", "and", "as", "at", "because", "between", "by", "closed", "count", "current", "decaying",
         "energy", "every", "falls", "from", "front", "half", "in", "normal", "of", "once", "open", "phase",
         "power", "rises", "rms", "stays", "times", "to", "until", "voltage", "when", "width", "with",
-            "within",
+        "within",
     ];
 
     /// <summary>Reads at a number token; what is wrong with the unit is said, and
@@ -45,7 +45,7 @@ internal static class NumberParser
     /// <summary>A number already read, times a unit; an error where no double holds it.</summary>
     public static NumberSyntax? Number(
         StatementCursor cursor, Token token, string digits, int exponent, Unit unit, bool hasUnit,
-            string? mark)
+        string? mark)
     {
         if (digits.Length > DecimalText.Longest)
         {
@@ -92,7 +92,7 @@ internal static class NumberParser
         }
 
         hasUnit = false;
-        if (length == 0 || followers.Contains(cursor.TextOf(cursor.Current).ToString()))
+        if (length == 0 || Followers.Contains(cursor.TextOf(cursor.Current).ToString()))
         {
             return true;
         }

@@ -6,13 +6,13 @@ internal static class QuantityParser
     private const string Forms =
         "write `voltage of NODE`, `voltage across PART`, `current through PART`, `energy in PART`";
 
-    private static readonly string[] words =
+    private static readonly string[] FirstWords =
     [
         "voltage", "current", "power", "energy", "I²t", "rate", "rise", "front", "time", "overshoot",
         "settling", "ring",
     ];
 
-    private static readonly (string[] Words, FigureKind Kind)[] figures =
+    private static readonly (string[] Words, FigureKind Kind)[] Figures =
     [
         (["rise", "time", "of"], FigureKind.RiseTime),
         (["front", "time", "of"], FigureKind.FrontTime),
@@ -23,7 +23,7 @@ internal static class QuantityParser
         (["time", "after", "which"], FigureKind.TimeStaysBelow),
     ];
 
-    private static readonly (string[] Words, PartQuantityKind Kind)[] ofParts =
+    private static readonly (string[] Words, PartQuantityKind Kind)[] OfParts =
     [
         (["voltage", "across"], PartQuantityKind.VoltageAcross),
         (["current", "through"], PartQuantityKind.CurrentThrough),
@@ -43,7 +43,7 @@ internal static class QuantityParser
             return ReadFigure(cursor, start, FigureKind.TimeToHalfValue);
         }
 
-        foreach (var (wordsOfFigure, kind) in figures)
+        foreach (var (wordsOfFigure, kind) in Figures)
         {
             if (cursor.Take(wordsOfFigure))
             {
@@ -76,7 +76,7 @@ internal static class QuantityParser
                 : null;
         }
 
-        foreach (var (wordsOfPart, kind) in ofParts)
+        foreach (var (wordsOfPart, kind) in OfParts)
         {
             if (cursor.Take(wordsOfPart))
             {
@@ -122,7 +122,7 @@ internal static class QuantityParser
         }
         else
         {
-            cursor.Unexpected("a quantity", words);
+            cursor.Unexpected("a quantity", FirstWords);
         }
 
         cursor.Form = form;

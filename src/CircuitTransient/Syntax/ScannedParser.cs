@@ -3,15 +3,14 @@ using CircuitTransient.Text;
 
 namespace CircuitTransient.Syntax;
 
-/// <summary>Reads what a scan varies: a name, <c>from</c>, <c>to</c>, and how the range is
-/// divided.</summary>
+/// <summary>Reads what a scan varies: a name, <c>from</c>, <c>to</c>, and how the range is divided.</summary>
 public static class ScannedParser
 {
     /// <summary>The steps of a range that says none.</summary>
     public const int UsualSteps = 60;
 
-    private static readonly string[] actions = ["closes", "opens"];
-    private static readonly int[] series = [3, 6, 12, 24, 48, 96, 192];
+    private static readonly string[] Actions = ["closes", "opens"];
+    private static readonly int[] Series = [3, 6, 12, 24, 48, 96, 192];
 
     /// <summary>Reads one; errors point into its own text.</summary>
     public static Outcome<ScannedSyntax> Parse(SourceText source, ScannedKind kind) =>
@@ -36,7 +35,7 @@ public static class ScannedParser
         var closes = cursor.Take("closes");
         if (!closes && !cursor.Take("opens"))
         {
-            cursor.Unexpected("`closes` or `opens`", actions);
+            cursor.Unexpected("`closes` or `opens`", Actions);
             return null;
         }
 
@@ -161,14 +160,14 @@ public static class ScannedParser
             return null;
         }
 
-        if (series.Contains(values))
+        if (Series.Contains(values))
         {
             cursor.Advance();
             return values;
         }
 
         cursor.Error(cursor.Current.Span, $"there is no series `{cursor.Shown(cursor.Current)}`",
-            $"the series of IEC 60063 are {string.Join(", ", series.Select(s => $"E{s}"))}");
+            $"the series of IEC 60063 are {string.Join(", ", Series.Select(s => $"E{s}"))}");
         return null;
     }
 

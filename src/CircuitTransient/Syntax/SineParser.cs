@@ -3,7 +3,7 @@ namespace CircuitTransient.Syntax;
 /// <summary>Reads sines and cosines, behind their first words.</summary>
 internal static class SineParser
 {
-    private static readonly string[] options = ["phase", "from", "until", "decaying"];
+    private static readonly string[] Options = ["phase", "from", "until", "decaying"];
 
     public static SineSyntax? Read(StatementCursor cursor, int start, bool isCosine)
     {
@@ -49,7 +49,7 @@ internal static class SineParser
 
     private static bool IsOption(StatementCursor cursor)
     {
-        foreach (var option in options)
+        foreach (var option in Options)
         {
             if (cursor.IsWord(option))
             {
@@ -61,7 +61,7 @@ internal static class SineParser
     }
 
     private static bool IsBehindComma(StatementCursor cursor) =>
-        cursor.IsSign(',') && options.Contains(cursor.Shown(cursor.Ahead(1)));
+        cursor.IsSign(',') && Options.Contains(cursor.Shown(cursor.Ahead(1)));
 
     private static void ReportComma(StatementCursor cursor, int start)
     {

@@ -3,7 +3,7 @@ namespace CircuitTransient.Syntax;
 /// <summary>Reads what makes a switch act: <c>closes at …</c>, <c>opens when …</c>.</summary>
 internal static class SwitchEventParser
 {
-    private static readonly string[] starts = ["at", "when"];
+    private static readonly string[] Starts = ["at", "when"];
 
     public static SwitchEventSyntax? Read(StatementCursor cursor)
     {
@@ -33,7 +33,7 @@ internal static class SwitchEventParser
     {
         if (!cursor.Take("at"))
         {
-            cursor.Unexpected("`at` or `when`", starts);
+            cursor.Unexpected("`at` or `when`", Starts);
             return null;
         }
 

@@ -3,7 +3,7 @@ namespace CircuitTransient.Syntax;
 /// <summary>Reads instants: a value, <c>T after NAME closes</c>, <c>when NAME opens</c>.</summary>
 internal static class TimeParser
 {
-    private static readonly string[] verbs = ["closes", "opens"];
+    private static readonly string[] Verbs = ["closes", "opens"];
 
     /// <summary>An instant behind <c>from</c>, <c>to</c>, <c>at</c> or <c>after</c>.</summary>
     public static TimeSyntax? Read(StatementCursor cursor)
@@ -70,7 +70,7 @@ internal static class TimeParser
 
         if (!IsVerb(cursor))
         {
-            cursor.Unexpected("`closes` or `opens`", verbs);
+            cursor.Unexpected("`closes` or `opens`", Verbs);
             return null;
         }
 

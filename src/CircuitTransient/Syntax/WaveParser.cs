@@ -11,7 +11,7 @@ internal static class WaveParser
     private const string PulseForms =
         "one pulse: `rectangular pulse of 24 V from 1 ms to 3 ms`; several: `pulse train of …`";
 
-    private static readonly string[] waveWords =
+    private static readonly string[] WaveWords =
     [
         "step", "rectangular", "pulse", "ramp", "sine", "cosine", "decay", "double", "impulse", "straight",
     ];
@@ -105,7 +105,7 @@ internal static class WaveParser
 
     /// <summary><c>step 8 A</c>: the word of a wave, and a number where more words should be.</summary>
     private static bool IsWaveWord(StatementCursor cursor) =>
-        cursor.Ahead(1).Kind == TokenKind.Number && waveWords.Contains(cursor.Shown(cursor.Current));
+        cursor.Ahead(1).Kind == TokenKind.Number && WaveWords.Contains(cursor.Shown(cursor.Current));
 
     private static WavePieceSyntax? ReportUnknown(StatementCursor cursor)
     {
@@ -123,7 +123,7 @@ internal static class WaveParser
         }
 
         cursor.Form = cursor.IsWord("pulse") || cursor.IsWord("square") ? PulseForms : Forms;
-        cursor.Unexpected("the value of the source", waveWords);
+        cursor.Unexpected("the value of the source", WaveWords);
         return null;
     }
 

@@ -5,8 +5,7 @@ namespace CircuitTransient.Text;
 public static class MarkingCode
 {
     // Letters as quoted in secondary sources for IEC 60062:2016; m and F of capacitors from memory; n, µ, m
-    // for
-    // inductors, u for µ and k for K are custom and not the code.
+    // for inductors, u for µ and k for K are custom and not the code.
     private const string Letters = "RLKkMGmuµμnpF";
 
     /// <summary>Reads a code whatever it marks; the value is in the SI unit the part says. Of letters that

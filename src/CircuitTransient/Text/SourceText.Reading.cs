@@ -13,7 +13,7 @@ public sealed partial class SourceText
     private const int BytesThatTellText = 1000;
 
     // Everything but the control characters; a text has of those tabs, the ends of lines and pages.
-    private static readonly SearchValues<byte> bytesOfTexts = SearchValues.Create(
+    private static readonly SearchValues<byte> BytesOfTexts = SearchValues.Create(
         [.. Enumerable.Range(0, 256).Where(b => b is >= 0x20 or (>= 9 and <= 13)).Select(b => (byte)b)]);
 
     /// <summary>Reads the bytes of a file as UTF-8; a byte-order mark is dropped.</summary>
@@ -57,7 +57,7 @@ public sealed partial class SourceText
     /// another encoding.</summary>
     private static bool IsBinary(ReadOnlySpan<byte> text) =>
         text[..Math.Min(text.Length, BytesThatTellText)]
-            .IndexOfAnyExcept(bytesOfTexts) >= 0;
+            .IndexOfAnyExcept(BytesOfTexts) >= 0;
 
     /// <summary>The error for a file over <see cref="LargestFile"/>, which need not be read to be
     /// refused.</summary>

@@ -5,16 +5,16 @@ namespace CircuitTransient.Text;
 /// <summary>What to write in place of something that is not a unit.</summary>
 public static class UnitAdvice
 {
-    private static readonly (string Word, string Symbol)[] words =
+    private static readonly (string Word, string Symbol)[] UnitWords =
     [
         ("volt", "V"), ("amp", "A"), ("ampere", "A"), ("ohm", "Ω"), ("farad", "F"), ("henry", "H"),
         ("henries", "H"), ("watt", "W"), ("joule", "J"), ("coulomb", "C"), ("weber", "Wb"), ("siemens", "S"),
         ("hertz", "Hz"), ("sec", "s"), ("second", "s"), ("minute", "min"), ("hour", "h"), ("hr", "h"),
-            ("degree", "deg"), ("percent", "%"), ("millisecond", "ms"), ("microsecond", "µs"),
-                ("nanosecond", "ns"),
+        ("degree", "deg"), ("percent", "%"), ("millisecond", "ms"), ("microsecond", "µs"),
+        ("nanosecond", "ns"),
     ];
 
-    private static readonly (string Letters, string Word, string Prefix)[] prefixWords =
+    private static readonly (string Letters, string Word, string Prefix)[] PrefixWords =
     [
         ("meg", "mega", "M"), ("kil", "kilo", "k"), ("gig", "giga", "G"), ("ter", "tera", "T"),
         ("mil", "milli", "m"), ("mic", "micro", "µ"), ("nan", "nano", "n"),
@@ -50,7 +50,7 @@ public static class UnitAdvice
             return $"case matters: write `{number} {unit}`";
         }
 
-        foreach (var (letters, name, prefix) in prefixWords)
+        foreach (var (letters, name, prefix) in PrefixWords)
         {
             if (word.StartsWith(letters, StringComparison.OrdinalIgnoreCase))
             {
@@ -103,7 +103,7 @@ public static class UnitAdvice
     /// <summary>The symbol of a unit written out.</summary>
     private static string? SymbolOf(string word)
     {
-        foreach (var (name, symbol) in words)
+        foreach (var (name, symbol) in UnitWords)
         {
             if (word.Equals(name, StringComparison.OrdinalIgnoreCase)
                 || word.Equals(name + "s", StringComparison.OrdinalIgnoreCase))

@@ -7,9 +7,9 @@ namespace CircuitTransient.Benchmarks.Numerics;
 /// <summary>The cost of the double-double spectral work on full random matrices.</summary>
 public class SpectralBenchmark
 {
-    private DoubleDoubleMatrix _matrix = new(0, 0);
-    private BlockExponential _block = new(new DoubleDoubleComplexMatrix(1, 1));
-    private Complex[] _result = [];
+    private DoubleDoubleMatrix matrix = new(0, 0);
+    private BlockExponential block = new(new DoubleDoubleComplexMatrix(1, 1));
+    private Complex[] result = [];
 
     /// <summary>Order of the matrix.</summary>
     [Params(5, 20, 100)]
@@ -20,10 +20,10 @@ public class SpectralBenchmark
     public void Fill()
     {
         Random random = new(7);
-        _matrix = new(Order, Order);
+        matrix = new(Order, Order);
         for (int k = 0; k < Order * Order; k++)
         {
-            _matrix[k / Order, k % Order] = (2 * random.NextDouble()) - 1;
+            matrix[k / Order, k % Order] = (2 * random.NextDouble()) - 1;
         }
 
         DoubleDoubleComplexMatrix chain = new(6, 6);
@@ -36,23 +36,23 @@ public class SpectralBenchmark
             }
         }
 
-        _block = new(chain);
-        _result = new Complex[36];
+        block = new(chain);
+        result = new Complex[36];
     }
 
     /// <summary>The real Schur form with its vectors.</summary>
     [Benchmark]
-    public RealSchur Schur() => RealSchur.Of(_matrix);
+    public RealSchur Schur() => RealSchur.Of(matrix);
 
     /// <summary>The whole way to decoupled blocks.</summary>
     [Benchmark]
-    public SpectralBlocks Blocks() => SpectralBlocks.Of(_matrix);
+    public SpectralBlocks Blocks() => SpectralBlocks.Of(matrix);
 
     /// <summary>One instant of a block of six poles, squarings included.</summary>
     [Benchmark]
     public Complex Instant()
     {
-        _block.Evaluate(1234.5, _result);
-        return _result[5];
+        block.Evaluate(1234.5, result);
+        return result[5];
     }
 }

@@ -5,7 +5,7 @@ namespace CircuitTransient.Tests.Circuits;
 /// <summary>What is known of instants before anything is solved.</summary>
 public class ScheduleTests
 {
-    private static readonly Circuit circuit = Checking.Circuit(
+    private static readonly Circuit Scheduled = Checking.Circuit(
         """
         source Feed at a : 10 V
         resistor R1 at b : 1 kΩ
@@ -20,20 +20,20 @@ public class ScheduleTests
     [InlineData("K2", 0, 0.060)]
     public void Delays_add_up_along_the_events_they_wait_for(string name, int index, double seconds) =>
         Assert.Equal(seconds,
-            Schedule.Resolve(circuit.Part<Switch>(name).Events[index], circuit.Parts)!.Value, 1e-15);
+            Schedule.Resolve(Scheduled.Part<Switch>(name).Events[index], Scheduled.Parts)!.Value, 1e-15);
 
     [Theory]
     [InlineData("K2", 1)]
     [InlineData("K3", 0)]
     [InlineData("K3", 1)]
     public void What_waits_for_a_current_or_a_level_is_not_known(string name, int index) =>
-        Assert.Null(Schedule.Resolve(circuit.Part<Switch>(name).Events[index], circuit.Parts));
+        Assert.Null(Schedule.Resolve(Scheduled.Part<Switch>(name).Events[index], Scheduled.Parts));
 
     [Fact]
     public void Events_keep_their_cut_and_their_condition()
     {
-        var k2 = circuit.Part<Switch>("K2");
-        var k3 = circuit.Part<Switch>("K3");
+        var k2 = Scheduled.Part<Switch>("K2");
+        var k3 = Scheduled.Part<Switch>("K3");
 
         Assert.Equal(0.0, k2.Events[1].CutAtMost);
         Assert.Equal(new WhenCrosses(new VoltageBetween(2, 0), Rises: false, 1, InMagnitude: false, null),

@@ -8,7 +8,7 @@ public class DoubleDoubleComplexTests
 {
     private const double Tolerance = 20 * DoubleDouble.Rounding; // a few tens of rounded operations each
 
-    private static readonly Gen<DoubleDoubleComplex> numbers =
+    private static readonly Gen<DoubleDoubleComplex> Numbers =
         Gen.Select(Gen.Double[-1, 1], Gen.Double[-1, 1], Gen.Int[-60, 60])
             .Where((re, im, _) => Math.Abs(re) + Math.Abs(im) > 1e-3)
             .Select((re, im, n) => new DoubleDoubleComplex(re, im).ScaleByPowerOfTwo(n));
@@ -53,19 +53,19 @@ public class DoubleDoubleComplexTests
     }
 
     [Fact]
-    public void What_is_divided_and_multiplied_is_as_before() => Gen.Select(numbers, numbers).Sample(
+    public void What_is_divided_and_multiplied_is_as_before() => Gen.Select(Numbers, Numbers).Sample(
         (x, y) => IsNear(x, x / y * y),
         seed: "0N0XIzNsQ0O2",
         iter: 1000);
 
     [Fact]
-    public void A_square_root_squared_is_the_number() => numbers.Sample(
+    public void A_square_root_squared_is_the_number() => Numbers.Sample(
         x => IsNear(x, DoubleDoubleComplex.Sqrt(x) * DoubleDoubleComplex.Sqrt(x)),
         seed: "0N0XIzNsQ0O2",
         iter: 1000);
 
     [Fact]
-    public void A_number_times_its_conjugate_is_its_magnitude_squared() => numbers.Sample(
+    public void A_number_times_its_conjugate_is_its_magnitude_squared() => Numbers.Sample(
         x =>
         {
             var size = DoubleDoubleComplex.Abs(x);

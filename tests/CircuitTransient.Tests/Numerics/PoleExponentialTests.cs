@@ -6,7 +6,7 @@ namespace CircuitTransient.Tests.Numerics;
 public class PoleExponentialTests
 {
     // ω = 2π · 50 to double-double; cos and sin of ω t for these doubles t computed with mpmath 1.3.0.
-    private static readonly DoubleDouble _omega = new(314.1592653589793, -1.964386723728472e-15);
+    private static readonly DoubleDouble Omega = new(314.1592653589793, -1.964386723728472e-15);
 
     [Theory]
     [InlineData(3183.0, 1.0, 1.1631132438917263e-29)]
@@ -14,7 +14,7 @@ public class PoleExponentialTests
     [InlineData(33333.333333333336, -0.4999999993401436, -0.8660254041654069)]
     public void The_phase_is_kept_after_a_million_radians(double t, double cos, double sin)
     {
-        Complex z = PoleExponential.Of(new DoubleDoubleComplex(0, _omega), t);
+        Complex z = PoleExponential.Of(new DoubleDoubleComplex(0, Omega), t);
 
         Assert.Equal(cos, z.Real, 2.3e-16);
         Assert.Equal(sin, z.Imaginary, 2.3e-16);

@@ -6,7 +6,7 @@ public class RealSchurTests
 {
     // The lower six eigenvalues of the Frank matrix of order 12, the others being their reciprocals; these
     // digits computed with 60 places by mpmath 1.3.0.
-    private static readonly double[] _frank =
+    private static readonly double[] Frank =
     [
         0.03102806064401, 0.049507429185278, 0.081227659240405, 0.14364651976922, 0.28474972055848,
         0.64350531900486,
@@ -61,7 +61,7 @@ public class RealSchurTests
 
         for (int i = 0; i < 6; i++)
         {
-            Assert.Equal(1, (double)poles[i] / _frank[i], 1e-13); // the printed digits
+            Assert.Equal(1, (double)poles[i] / Frank[i], 1e-13); // the printed digits
             Assert.Equal(1, (double)(poles[i] * poles[11 - i]), 1e-15); // they come in reciprocal pairs
         }
     }

@@ -5,8 +5,7 @@ namespace CircuitTransient.Tests.OutsideChecks;
 public class ReferenceFitTests
 {
     // The certified figures have eleven digits; the data, not the method, limit what double precision
-    // reaches:
-    // the sets are as ill-conditioned as NIST found them (Lanczos3 most, 1e4 in its columns).
+    // reaches: the sets are as ill-conditioned as NIST found them (Lanczos3 most, 1e4 in its columns).
     private const double CertifiedDigits = 1e-9;
 
     public static TheoryData<string, int> Starts()

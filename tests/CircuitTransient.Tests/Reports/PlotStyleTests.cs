@@ -2,8 +2,7 @@ using CircuitTransient.Reports;
 
 namespace CircuitTransient.Tests.Reports;
 
-/// <summary>Colours of neighbouring lines against each other, as the usual kinds of sight see
-/// them.</summary>
+/// <summary>Colours of neighbouring lines against each other, as the usual kinds of sight see them.</summary>
 public class PlotStyleTests
 {
     [Fact]

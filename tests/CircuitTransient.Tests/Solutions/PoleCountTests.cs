@@ -15,7 +15,7 @@ namespace CircuitTransient.Tests.Solutions;
 /// random.</summary>
 public sealed class PoleCountTests
 {
-    private static readonly Gen<(int Nodes, uint[] Draws)> _drawing =
+    private static readonly Gen<(int Nodes, uint[] Draws)> Drawing =
         Gen.Select(Gen.Int[2, 12], Gen.UInt.Array[20, 52]);
 
     /// <remarks>The order of complexity: the stores, less one for each loop of capacitors and voltage sources
@@ -23,7 +23,7 @@ public sealed class PoleCountTests
     /// networks", Proceedings of the IEE 106 C, 1959, from memory).</remarks>
     [Fact]
     public void As_many_as_the_structure_of_a_network_without_dependent_sources_has() =>
-        _drawing.Sample(
+        Drawing.Sample(
             drawing =>
             {
                 var circuit = Built(drawing.Nodes, drawing.Draws, kinds: 6);
@@ -36,7 +36,7 @@ public sealed class PoleCountTests
     /// argument principle); det(s E + G) is taken from equations that the poles do not come from.</remarks>
     [Fact]
     public void As_many_within_circles_as_the_determinant_turns_on_them() =>
-        _drawing.Sample(
+        Drawing.Sample(
             drawing =>
             {
                 var circuit = Built(drawing.Nodes, drawing.Draws, kinds: 12);

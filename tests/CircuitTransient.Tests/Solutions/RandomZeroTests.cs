@@ -6,14 +6,14 @@ namespace CircuitTransient.Tests.Solutions;
 /// <summary>Current zeros in circuits drawn at random, where no closed form is at hand.</summary>
 public sealed class RandomZeroTests
 {
-    private static readonly Gen<(double R, double L, double C, double Phase, double After)> _drawing =
+    private static readonly Gen<(double R, double L, double C, double Phase, double After)> Drawing =
         Gen.Select(
             Gen.Double[1, 100], Gen.Double[1, 50], Gen.Double[1, 50], Gen.Double[0, 360],
             Gen.Double[0.1, 15]);
 
     [Fact]
     public void The_current_is_zero_where_it_is_parted_and_kept_its_sign_until_then() =>
-        _drawing.Sample(
+        Drawing.Sample(
             drawing =>
             {
                 var (r, l, c, phase, after) = drawing;

@@ -147,15 +147,11 @@ public class CircuitParserTests
         string[] pieces =
         [
             "resistor", "source", "switch", "require", "observe", "repeat", "place", "assembly", "end",
-                "value",
-            "R1", "a", "from", "to", "at", "with", "as", "of", "voltage", "current", "through", "I", "²",
-                "t", "open",
-            "closes", "when", "after", "once", "sine", "step", "straight", "lines", "(", ")", "[", "]", ",",
-                ":", "+",
-            "-", "±", "%", "^", "/", "·", "10", "³", "4,7", "4k7", "1e400", "5 V", "\"q\"", "\"", "#", "\n",
-                "\r", "é",
-            "°", "between", "and", "normal", "=", "k", "settling", "time", "impulse", "1.2/50 µs", "turns",
-                "times",
+            "value", "R1", "a", "from", "to", "at", "with", "as", "of", "voltage", "current", "through", "I",
+            "²", "t", "open", "closes", "when", "after", "once", "sine", "step", "straight", "lines", "(",
+            ")", "[", "]", ",", ":", "+", "-", "±", "%", "^", "/", "·", "10", "³", "4,7", "4k7", "1e400",
+            "5 V", "\"q\"", "\"", "#", "\n", "\r", "é", "°", "between", "and", "normal", "=", "k", "settling",
+            "time", "impulse", "1.2/50 µs", "turns", "times",
         ];
         Gen.Int[0, pieces.Length - 1].Array[0, 30].Sample(
             places => IsAnswered(new SourceText("a.cause", string.Join(' ', places.Select(p => pieces[p])))),

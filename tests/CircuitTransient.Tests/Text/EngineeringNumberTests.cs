@@ -8,7 +8,7 @@ namespace CircuitTransient.Tests.Text;
 /// point.</summary>
 public class EngineeringNumberTests
 {
-    private static readonly string[] units = ["V", "Ω", "A²s", "V/s", "s", ""];
+    private static readonly string[] Units = ["V", "Ω", "A²s", "V/s", "s", ""];
 
     [Theory]
     [InlineData(1284.4, "V", "1.284 kV")]
@@ -65,7 +65,7 @@ public class EngineeringNumberTests
     public void What_is_printed_reads_back_to_the_printed_digits() =>
         Gen.Select(
                 Gen.Double[-1, 1].Where(m => Math.Abs(m) > 0.05), Gen.Int[-14, 13], Gen.Int[1, 15],
-                Gen.Int[0, 5].Select(i => units[i]))
+                Gen.Int[0, 5].Select(i => Units[i]))
             .Sample(
                 (mantissa, exponent, digits, unit) =>
                 {

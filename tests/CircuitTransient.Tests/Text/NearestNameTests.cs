@@ -6,7 +6,7 @@ namespace CircuitTransient.Tests.Text;
 /// <summary>What a slip of the finger meant.</summary>
 public class NearestNameTests
 {
-    private static readonly string[] names = ["resistor", "capacitor", "Rpre", "Rbl", "bus"];
+    private static readonly string[] Names = ["resistor", "capacitor", "Rpre", "Rbl", "bus"];
 
     [Theory]
     [InlineData("resitor", "resistor")]
@@ -15,13 +15,13 @@ public class NearestNameTests
     [InlineData("rpre", "Rpre")]
     [InlineData("bsu", "bus")]
     public void A_letter_left_out_swapped_or_in_the_wrong_case_is_mended(string word, string meant) =>
-        Assert.Equal(meant, NearestName.Find(word, names));
+        Assert.Equal(meant, NearestName.Find(word, Names));
 
     [Theory]
     [InlineData("diode")]
     [InlineData("x")]
     [InlineData("")]
-    public void What_is_far_from_all_means_none(string word) => Assert.Null(NearestName.Find(word, names));
+    public void What_is_far_from_all_means_none(string word) => Assert.Null(NearestName.Find(word, Names));
 
     [Fact]
     public void A_word_is_not_mended_into_itself() => Assert.Null(NearestName.Find("bus", ["bus"]));

@@ -6,8 +6,7 @@ namespace CircuitTransient.Measurements.Checks;
 
 /// <summary>Values of the closed forms against those of a route that estimates its own error.</summary>
 /// <param name="Worst">The worst difference over the quantity's size in the study.</param>
-/// <param name="Allowed">The route's own error estimate where the worst was found, at least
-/// 1e-9.</param>
+/// <param name="Allowed">The route's own error estimate where the worst was found, at least 1e-9.</param>
 /// <param name="Compared">How many values were compared.</param>
 /// <param name="TooWeak">How many were left out because the route's own estimate was over 1e-6.</param>
 internal sealed record IndependentValues(double Worst, double Allowed, int Compared, int TooWeak)

@@ -65,9 +65,8 @@ internal sealed class StudySizes
         return size;
     }
 
-    /// <summary>Where every current is zero but for rounding, as in a charge at rest, what the voltages
-    /// could drive through the least resistance; where every voltage is, what the currents could
-    /// raise.</summary>
+    /// <summary>Where every current is zero but for rounding, as in a charge at rest, what the voltages could
+    /// drive through the least resistance; where every voltage is, what the currents could raise.</summary>
     private double Conceivable(bool isCurrent)
     {
         var resistances = curves.Solution.Circuit.Parts.OfType<Resistor>()

@@ -4,9 +4,8 @@ using CircuitTransient.Numerics;
 
 namespace CircuitTransient.Measurements.Verification;
 
-/// <summary>A study solved a second time, all causes at once, straight from the unreduced equations: no
-/// pole, no eigenvector, no elimination by structure, nothing in common with the solution it
-/// judges.</summary>
+/// <summary>A study solved a second time, all causes at once, straight from the unreduced equations: no pole,
+/// no eigenvector, no elimination by structure, nothing in common with the solution it judges.</summary>
 public sealed class AllAtOnceSolution
 {
     private AllAtOnceSolution(

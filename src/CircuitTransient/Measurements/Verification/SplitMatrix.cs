@@ -7,9 +7,8 @@ namespace CircuitTransient.Measurements.Verification;
 /// <summary>A dense matrix of double-doubles kept as two planes of doubles, high and low words apart, rows
 /// padded to whole vectors, so that the processor works on four numbers at a time.</summary>
 /// <remarks>A product is an error-free product by fused multiply-add, a sum an error-free two-sum, the small
-/// words gathered apart (T. Ogita, S. M. Rump, S. Oishi, "Accurate sum and dot product", SIAM J. Sci.
-/// Comput. 26 (2005), from memory). An element of a product errs by some n·2⁻¹⁰⁴ of the sum of
-/// magnitudes.</remarks>
+/// words gathered apart (T. Ogita, S. M. Rump, S. Oishi, "Accurate sum and dot product", SIAM J. Sci. Comput.
+/// 26 (2005), from memory). An element of a product errs by some n·2⁻¹⁰⁴ of the sum of magnitudes.</remarks>
 internal sealed class SplitMatrix(int rows, int columns)
 {
     private const int Lanes = 4;

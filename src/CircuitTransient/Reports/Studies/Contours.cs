@@ -3,8 +3,7 @@ using CircuitTransient.Studies.Sizes;
 
 namespace CircuitTransient.Reports.Studies;
 
-/// <summary>Lines on which a constraint is just met, drawn through the scanned points of two
-/// parts.</summary>
+/// <summary>Lines on which a constraint is just met, drawn through the scanned points of two parts.</summary>
 internal static class Contours
 {
     private const int Digits = 9; // of a logarithm: two triangles find the place on their common side alike

@@ -12,7 +12,7 @@ internal sealed class ScanCurvePanel
 {
     private const double Height = 190;
 
-    private static readonly double[] asides = [6, 40, 74, 108]; // of the marked place's words
+    private static readonly double[] Asides = [6, 40, 74, 108]; // of the marked place's words
 
     private readonly ScanAxis axis;
     private readonly FigureScan finding;
@@ -187,7 +187,7 @@ internal sealed class ScanCurvePanel
                 0, 0, words, ScanFrame.Small, PlotStyle.Ink, IsStrong: true, HasHalo: true);
             double[] heights = [y - 9, y + 18, y - 24, y + 33, y - 40, y + 49, y - 56, y - 72];
             yield return room.Place(
-                asides.SelectMany(apart => Beside(x, heights, label, apart)));
+                Asides.SelectMany(apart => Beside(x, heights, label, apart)));
         }
 
         foreach (var found in finding.Breaks)

@@ -19,7 +19,7 @@ internal sealed record ScanFrame(
     /// <summary>Height of the letters in panels.</summary>
     public const double Small = 11.5;
 
-    private static readonly double[] between = [0.75, 0.25, 0.5]; // for the words of a limit
+    private static readonly double[] Between = [0.75, 0.25, 0.5]; // for the words of a limit
 
     /// <summary>Lower edge.</summary>
     public double Bottom => Top + Height;
@@ -94,7 +94,7 @@ internal sealed record ScanFrame(
         (double X, TextAnchor Anchor)[] places =
         [
             (Right - 6, TextAnchor.End), (Left + 6, TextAnchor.Start),
-            .. between.Select(part => (Left + (part * (Right - Left)), TextAnchor.Middle)),
+            .. Between.Select(part => (Left + (part * (Right - Left)), TextAnchor.Middle)),
         ];
         return heights.SelectMany(_ => places, (height, place) => new TextShape(
             place.X, height, said, Small, PlotStyle.Limit, place.Anchor, HasHalo: true));

@@ -8,7 +8,7 @@ namespace CircuitTransient.Reports.Studies;
 /// <summary>A scanned value laid out between two places, evenly or by its logarithm.</summary>
 internal sealed record ScanScale(ScanAxis Axis, double Start, double End)
 {
-    private static readonly double[] angleSteps = [1, 2, 5, 10, 15, 30, 45, 60, 90];
+    private static readonly double[] AngleSteps = [1, 2, 5, 10, 15, 30, 45, 60, 90];
 
     /// <summary>Whether equal factors are equally wide.</summary>
     public bool IsLogarithmic => Axis.Spacing == ScanSpacing.Logarithmic
@@ -37,7 +37,7 @@ internal sealed record ScanScale(ScanAxis Axis, double Start, double End)
         }
 
         var (from, to) = (Axis.From * 180 / Math.PI, Axis.To * 180 / Math.PI);
-        var step = angleSteps.FirstOrDefault(s => s >= (to - from) / aim, 180);
+        var step = AngleSteps.FirstOrDefault(s => s >= (to - from) / aim, 180);
         var ticks = ImmutableArray.CreateBuilder<(double, string)>();
         for (var k = Math.Ceiling((from / step) - 1e-9); k * step <= to + (1e-9 * step); k++)
         {

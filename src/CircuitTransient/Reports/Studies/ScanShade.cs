@@ -5,14 +5,14 @@ namespace CircuitTransient.Reports.Studies;
 /// <summary>Shades of one hue, from the paper to the accent: what is darker is more.</summary>
 internal static class ScanShade
 {
-    private static readonly (int R, int G, int B) light = Read("#eef3f5");
-    private static readonly (int R, int G, int B) dark = Read(PlotStyle.Accent);
+    private static readonly (int R, int G, int B) Light = Read("#eef3f5");
+    private static readonly (int R, int G, int B) Dark = Read(PlotStyle.Accent);
 
     /// <summary>The shade of a fraction between 0, the lightest, and 1.</summary>
     public static string Of(double fraction)
     {
         var f = double.IsFinite(fraction) ? Math.Clamp(fraction, 0, 1) : 0;
-        return $"#{Mix(light.R, dark.R):x2}{Mix(light.G, dark.G):x2}{Mix(light.B, dark.B):x2}";
+        return $"#{Mix(Light.R, Dark.R):x2}{Mix(Light.G, Dark.G):x2}{Mix(Light.B, Dark.B):x2}";
 
         int Mix(int a, int b) => (int)Math.Round(a + ((b - a) * f));
     }

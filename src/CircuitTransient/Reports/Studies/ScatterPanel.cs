@@ -23,7 +23,7 @@ internal static class ScatterPanel
                 ? (Value: isUsed ? 100 * q.Value : q.Value, Share: 100 * q.Fraction)
                 : (Value: line.Of(q.Value), Share: 100 * (line.Sign < 0 ? 1 - q.Fraction : q.Fraction)))
             .OrderBy(p => p.Share).ThenBy(p => p.Value).ToArray();
-        double? limit = isUsed ? 100 : line?.Limit ?? (figure.Scan.IsJudged ? 0 : null);
+        var limit = isUsed ? 100 : line?.Limit ?? (figure.Scan.IsJudged ? 0 : null);
         var (least, greatest) = Range(points[0].Value, points[^1].Value, limit);
         var across = new PlotScale(least, greatest, ScanFrame.Left, ScanFrame.Right);
         var ticks = across.Ticks(unit, 9);

@@ -214,7 +214,7 @@ public sealed class CurveBuilder
                 Share.Own => Piece(s, tables[s].Segment.Coefficients(measurand, cause)),
                 Share.Without => Piece(s, Difference(
                     tables[s].Segment.Coefficients(measurand),
-                        tables[s].Segment.Coefficients(measurand, cause))),
+                    tables[s].Segment.Coefficients(measurand, cause))),
                 _ => throw new UnreachableException("a linear quantity has no joint part"),
             };
             linears.Add(key, piece);

@@ -11,7 +11,7 @@ public static class ResultsReader
 
     private const string FormatName = "circuit-transient results ";
 
-    private static readonly (string Name, string Unit)[] peaks =
+    private static readonly (string Name, string Unit)[] Peaks =
     [
         ("peakVoltage", "V"), ("peakCurrent", "A"), ("peakPower", "W"), ("peakVoltageRate", "V/s"),
         ("peakCurrentRate", "A/s"),
@@ -124,7 +124,7 @@ public static class ResultsReader
 
     private static DocumentPart Part(JsonField json)
     {
-        var stresses = peaks.Select(peak => new DocumentStress(
+        var stresses = Peaks.Select(peak => new DocumentStress(
             peak.Name, peak.Unit, json[peak.Name] is { IsNothing: false } at ? Peak(at).Value : null));
         var linear = json["linearUpTo"];
         return new DocumentPart(

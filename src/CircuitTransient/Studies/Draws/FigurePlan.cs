@@ -7,12 +7,12 @@ namespace CircuitTransient.Studies.Draws;
 /// <summary>What must be followed for the figures of a study.</summary>
 internal sealed class FigurePlan
 {
-    private static readonly Window whole = new(null, null);
+    private static readonly Window Whole = new(null, null);
 
     private readonly Circuit circuit;
     private readonly List<Measurand> rows = [];
     private readonly List<FollowedFunction> functions = [];
-    private readonly List<Window> windows = [whole];
+    private readonly List<Window> windows = [Whole];
     private readonly List<DrawTrack> tracks = [];
     private readonly List<DrawIntegral> integrals = [];
 
@@ -112,25 +112,25 @@ internal sealed class FigurePlan
         switch (rating.Kind)
         {
             case RatingKind.PeakVoltage:
-                return new PeakUsedFigure(Track(voltage, whole, true, true)!.Value, rating.Limit);
+                return new PeakUsedFigure(Track(voltage, Whole, true, true)!.Value, rating.Limit);
             case RatingKind.PeakCurrent:
-                return new PeakUsedFigure(Track(current, whole, true, true)!.Value, rating.Limit);
+                return new PeakUsedFigure(Track(current, Whole, true, true)!.Value, rating.Limit);
             case RatingKind.VoltageRate:
                 return new PeakUsedFigure(
-                    Track(new RateOfChange(voltage), whole, true, true)!.Value, rating.Limit);
+                    Track(new RateOfChange(voltage), Whole, true, true)!.Value, rating.Limit);
             case RatingKind.CurrentRate:
                 return new PeakUsedFigure(
-                    Track(new RateOfChange(current), whole, true, true)!.Value, rating.Limit);
+                    Track(new RateOfChange(current), Whole, true, true)!.Value, rating.Limit);
             case RatingKind.Energy when circuit.Parts[part] is Capacitor or Inductor:
                 var held = circuit.Parts[part] is Capacitor ? voltage : current;
                 return new StoredEnergyFigure(
-                    Track(held, whole, true, true)!.Value, new TrackFactor(1, FactorKind.HalfOfStore, part),
+                    Track(held, Whole, true, true)!.Value, new TrackFactor(1, FactorKind.HalfOfStore, part),
                     rating.Limit);
             case RatingKind.JouleIntegral:
-                return new IntegralUsedFigure(Integral(current, current, 1, whole), rating.Limit, false);
+                return new IntegralUsedFigure(Integral(current, current, 1, Whole), rating.Limit, false);
             default:
                 return new IntegralUsedFigure(
-                    Integral(voltage, current, 1, whole), rating.Limit, rating.Kind == RatingKind.MeanPower);
+                    Integral(voltage, current, 1, Whole), rating.Limit, rating.Kind == RatingKind.MeanPower);
         }
     }
 
@@ -138,7 +138,7 @@ internal sealed class FigurePlan
     {
         var limit = circuit.Parts[part].LinearUpTo!;
         Measurand quantity = limit.IsVoltage ? new VoltageAcross(part) : new CurrentThrough(part);
-        return new PeakUsedFigure(Track(quantity, whole, true, true)!.Value, limit.Limit);
+        return new PeakUsedFigure(Track(quantity, Whole, true, true)!.Value, limit.Limit);
     }
 
     private bool IsIntegrated(Measurand quantity) =>

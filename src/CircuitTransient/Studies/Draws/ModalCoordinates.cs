@@ -30,8 +30,7 @@ internal sealed class ModalCoordinates
         }
     }
 
-    /// <summary>P⁻¹ A P; what only rounding leaves, and the columns of exact zero poles, are
-    /// zero.</summary>
+    /// <summary>P⁻¹ A P; what only rounding leaves, and the columns of exact zero poles, are zero.</summary>
     public double[,] Matrix { get; }
 
     /// <summary>The coordinates of a matrix: exact zero poles first, then by falling magnitude.</summary>

@@ -6,8 +6,7 @@ using MathNet.Numerics.LinearAlgebra;
 namespace CircuitTransient.Studies.Overlays;
 
 /// <summary>What a fit is worth: standard errors, correlations, and what is determined where single values
-/// are
-/// not.</summary>
+/// are not.</summary>
 internal static class FitDescription
 {
 

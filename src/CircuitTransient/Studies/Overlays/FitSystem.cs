@@ -3,8 +3,7 @@ using CircuitTransient.Numerics;
 namespace CircuitTransient.Studies.Overlays;
 
 /// <summary>The residuals of all records by all unknowns: each record's own offset, gain and level first,
-/// then
-/// the logarithms of the values over their nominal ones.</summary>
+/// then the logarithms of the values over their nominal ones.</summary>
 internal sealed class FitSystem(
     IReadOnlyList<FittedRecord> records, double[] nominal, CancellationToken cancellation)
 {

@@ -74,8 +74,7 @@ public sealed record Differences(
 }
 
 /// <summary>An extreme of the record's samples and of the model on the same instants, in the record's unit
-/// and
-/// study time.</summary>
+/// and study time.</summary>
 public sealed record PeakPair(double Record, double RecordAt, double Model, double ModelAt)
 {
     /// <summary>Record less model.</summary>

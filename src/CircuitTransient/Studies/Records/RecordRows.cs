@@ -103,7 +103,7 @@ internal sealed class RecordRows
             return fault;
         }
 
-        double second = value;
+        var second = value;
         if (channel.Second >= 0 && !ReadCell(row, starts, ends, channel.Second, out second, out fault))
         {
             return fault;

@@ -22,8 +22,7 @@ public sealed record ScanAxis(
 
     private double Greatest => Math.Max(Math.Abs(From), Math.Abs(To));
 
-    /// <summary>How many digits tell its values apart; four, and more where the range is
-    /// narrow.</summary>
+    /// <summary>How many digits tell its values apart; four, and more where the range is narrow.</summary>
     public int Digits => To > From
         ? Math.Clamp(2 + (int)Math.Ceiling(Math.Log10(Greatest / (To - From))), 4, 15)
         : 4;

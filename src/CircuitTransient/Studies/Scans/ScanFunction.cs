@@ -151,7 +151,7 @@ internal sealed class ScanFunction
     private static bool IsIntegrated(Circuit circuit, StudyFigure figure)
     {
         var part = figure.Kind == StudyFigureKind.RatingUsed ? circuit.Parts[figure.Index] : null;
-        Measurand? quantity = figure.Kind switch
+        var quantity = figure.Kind switch
         {
             StudyFigureKind.Maximum or StudyFigureKind.Minimum => circuit.Observations[figure.Index].Quantity,
             StudyFigureKind.Margin => circuit.Requirements[figure.Index].Quantity,

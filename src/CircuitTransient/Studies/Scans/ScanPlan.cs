@@ -7,8 +7,7 @@ namespace CircuitTransient.Studies.Scans;
 
 /// <summary>What is to be scanned: one or two values of a circuit over ranges, or how an event's instant
 /// scatters, or both.</summary>
-/// <param name="Varied">The circuit; its values are those of the axes, then the event that
-/// scatters.</param>
+/// <param name="Varied">The circuit; its values are those of the axes, then the event that scatters.</param>
 /// <param name="Axes">What is scanned; empty where only an event scatters.</param>
 /// <param name="Scatter">The scatter; null where none was asked for.</param>
 public sealed record ScanPlan(VariedCircuit Varied, ImmutableArray<ScanAxis> Axes, ScanScatter? Scatter)

@@ -6,8 +6,7 @@ namespace CircuitTransient.Studies.Sizes;
 /// <summary>A requirement or rating that a sized part has to meet.</summary>
 /// <param name="Name">In the user's words.</param>
 /// <param name="Unit">Unit of its margin.</param>
-/// <param name="Scale">What a margin is measured by: the greater bound's magnitude, or what is
-/// rated.</param>
+/// <param name="Scale">What a margin is measured by: the greater bound's magnitude, or what is rated.</param>
 /// <param name="Figure">The figure that judges it.</param>
 public sealed record SizeConstraint(string Name, string Unit, double Scale, StudyFigure Figure)
 {

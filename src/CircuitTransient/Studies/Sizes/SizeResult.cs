@@ -39,8 +39,7 @@ public sealed record SizeResult(
     /// <summary>The values of the file, judged like the proposed ones.</summary>
     public required SizePoint AsItStands { get; init; }
 
-    /// <summary>Whether values were found, and full solutions with their self-checks confirm
-    /// them.</summary>
+    /// <summary>Whether values were found, and full solutions with their self-checks confirm them.</summary>
     public bool IsFound =>
         Chosen is not null && Proposed.AllHold && ChecksHold && Confirmed.All(corner => corner.Holds);
 

@@ -10,14 +10,14 @@ namespace CircuitTransient.Tests.Measurements.Verification;
 public sealed class TwoRoutesTests
 {
     // Values over twelve decades of time constant: 1 µΩ to 1 MΩ, 1 pF to 1 µF, 10 nH to 10 mH.
-    private static readonly Gen<(int Kind, int From, int To, double Size, double Start)> _part =
+    private static readonly Gen<(int Kind, int From, int To, double Size, double Start)> Part =
         Gen.Select(Gen.Int[0, 9], Gen.Int[0, 5], Gen.Int[0, 5], Gen.Double[-6, 6], Gen.Double[-10, 10]);
 
     [Fact]
     public void Propagation_and_inversion_agree_on_circuits_drawn_at_random()
     {
         var compared = 0;
-        _part.Array[6, 14].Sample(
+        Part.Array[6, 14].Sample(
             parts =>
             {
                 var (built, switches) = Build(parts);
