@@ -53,19 +53,19 @@ public class DoubleDoubleComplexTests
     }
 
     [Fact]
-    public void What_is_divided_and_multiplied_is_as_before() => Gen.Select(Numbers, Numbers).Sample(
+    public void What_is_divided_and_multiplied_is_as_before() => Gen.Select(Numbers, Numbers).OnEach(
         (x, y) => IsNear(x, x / y * y),
         seed: "0N0XIzNsQ0O2",
         iter: 1000);
 
     [Fact]
-    public void A_square_root_squared_is_the_number() => Numbers.Sample(
+    public void A_square_root_squared_is_the_number() => Numbers.OnEach(
         x => IsNear(x, DoubleDoubleComplex.Sqrt(x) * DoubleDoubleComplex.Sqrt(x)),
         seed: "0N0XIzNsQ0O2",
         iter: 1000);
 
     [Fact]
-    public void A_number_times_its_conjugate_is_its_magnitude_squared() => Numbers.Sample(
+    public void A_number_times_its_conjugate_is_its_magnitude_squared() => Numbers.OnEach(
         x =>
         {
             var size = DoubleDoubleComplex.Abs(x);

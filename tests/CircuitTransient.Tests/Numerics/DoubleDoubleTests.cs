@@ -15,7 +15,7 @@ public class DoubleDoubleTests
             .Select((a, b, n) => DoubleDouble.ScaleByPowerOfTwo(DoubleDouble.FromSum(a, a * b * 1.1e-16), n));
 
     [Fact]
-    public void The_sum_is_right_to_its_proven_bound() => Gen.Select(Numbers, Numbers).Sample(
+    public void The_sum_is_right_to_its_proven_bound() => Gen.Select(Numbers, Numbers).OnEach(
         (x, y) =>
             RelativeError(x + y, Exact(x) + Exact(y)) <= 3.1 * SquaredRounding,
         seed: "0N0XIzNsQ0O2",
@@ -23,7 +23,7 @@ public class DoubleDoubleTests
 
     [Fact]
     public void A_sum_that_cancels_keeps_its_relative_accuracy() =>
-        Gen.Select(Numbers, Gen.Double[-1, 1]).Sample(
+        Gen.Select(Numbers, Gen.Double[-1, 1]).OnEach(
         (x, e) =>
         {
             DoubleDouble y = DoubleDouble.FromSum(-x.Hi, x.Lo * e);
@@ -33,21 +33,21 @@ public class DoubleDoubleTests
         iter: 2000);
 
     [Fact]
-    public void The_product_is_right_to_its_proven_bound() => Gen.Select(Numbers, Numbers).Sample(
+    public void The_product_is_right_to_its_proven_bound() => Gen.Select(Numbers, Numbers).OnEach(
         (x, y) =>
             RelativeError(x * y, Exact(x) * Exact(y)) <= 5 * SquaredRounding,
         seed: "0N0XIzNsQ0O2",
         iter: 2000);
 
     [Fact]
-    public void The_quotient_is_right_to_its_proven_bound() => Gen.Select(Numbers, Numbers).Sample(
+    public void The_quotient_is_right_to_its_proven_bound() => Gen.Select(Numbers, Numbers).OnEach(
         (x, y) =>
             RelativeError((x / y) * y, Exact(x)) <= 20 * SquaredRounding,
         seed: "0N0XIzNsQ0O2",
         iter: 2000);
 
     [Fact]
-    public void The_square_root_squared_is_the_number() => Numbers.Sample(
+    public void The_square_root_squared_is_the_number() => Numbers.OnEach(
         x => RelativeError(Squared(DoubleDouble.Sqrt(DoubleDouble.Abs(x))), Exact(DoubleDouble.Abs(x)))
             <= 16 * SquaredRounding,
         seed: "0N0XIzNsQ0O2",

@@ -10,7 +10,7 @@ public class PlotTraceTests
     public void Thinning_keeps_the_extremes_of_every_column() =>
         Gen.Double[-5, 5]
             .Array[2, 400]
-            .Sample(
+            .OnEach(
                 values =>
                 {
                     ImmutableArray<PlotPoint> points =
@@ -82,7 +82,7 @@ public class PlotTraceTests
     public void Names_keep_their_order_and_their_gap() =>
         Gen.Double[0, 100]
             .Array[1, 6]
-            .Sample(
+            .OnEach(
                 wishes =>
                 {
                     Array.Sort(wishes);

@@ -23,20 +23,20 @@ public sealed class PoleCountTests
     /// networks", Proceedings of the IEE 106 C, 1959, from memory).</remarks>
     [Fact]
     public void As_many_as_the_structure_of_a_network_without_dependent_sources_has() =>
-        Drawing.Sample(
+        Drawing.OnEach(
             drawing =>
             {
                 var circuit = Built(drawing.Nodes, drawing.Draws, kinds: 6);
                 var poles = Poles(circuit);
                 Assert.Equal(Order(circuit), poles.Count);
             },
-            seed: "0000000000000", iter: 40, threads: 1);
+            seed: "0000000000000", iter: 40);
 
     /// <remarks>Within a circle, a polynomial has as many zeros as its value turns about zero on it (the
     /// argument principle); det(s E + G) is taken from equations that the poles do not come from.</remarks>
     [Fact]
     public void As_many_within_circles_as_the_determinant_turns_on_them() =>
-        Drawing.Sample(
+        Drawing.OnEach(
             drawing =>
             {
                 var circuit = Built(drawing.Nodes, drawing.Draws, kinds: 12);
@@ -47,7 +47,7 @@ public sealed class PoleCountTests
                     Assert.Equal(poles.Count(p => p.Magnitude < radius), determinant.TurnsAt(radius));
                 }
             },
-            seed: "0000000000000", iter: 20, threads: 1);
+            seed: "0000000000000", iter: 20);
 
     private static List<Complex> Poles(Circuit circuit)
     {

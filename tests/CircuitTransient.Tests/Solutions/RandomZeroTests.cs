@@ -13,7 +13,7 @@ public sealed class RandomZeroTests
 
     [Fact]
     public void The_current_is_zero_where_it_is_parted_and_kept_its_sign_until_then() =>
-        Drawing.Sample(
+        Drawing.OnEach(
             drawing =>
             {
                 var (r, l, c, phase, after) = drawing;
@@ -38,5 +38,5 @@ public sealed class RandomZeroTests
                 Assert.Single(values[..^1].Select(Math.Sign).Distinct());
                 Close.OfScale(kept.Max("current through Load"), 0, values[^1], 1e-11);
             },
-            seed: "0000000000000", iter: 12, threads: 1);
+            seed: "0000000000000", iter: 12);
 }

@@ -111,7 +111,7 @@ public sealed class SingularDiagnosisTests
 
     [Fact]
     public void One_planted_fault_among_random_parts_is_never_misdiagnosed() =>
-        Gen.Select(Gen.Int[0, 6], Gen.Int[3, 10], Gen.Int[1, 4], Gen.Int.Array[30]).Sample(
+        Gen.Select(Gen.Int[0, 6], Gen.Int[3, 10], Gen.Int[1, 4], Gen.Int.Array[30]).OnEach(
             (kind, nodes, length, draws) =>
             {
                 var random = Sound(nodes, draws);
@@ -121,7 +121,7 @@ public sealed class SingularDiagnosisTests
                 var named = found.Message.Split('`').Where((_, i) => i % 2 == 1);
                 Assert.Equal(names.Order(StringComparer.Ordinal), named.Order(StringComparer.Ordinal));
             },
-            seed: "0000000000000", iter: 200, threads: 1);
+            seed: "0000000000000", iter: 200);
 
     /// <summary>A resistor from every node to an earlier one, and parts of all kinds that do no
     /// harm.</summary>

@@ -80,7 +80,7 @@ public sealed class PreferredValuesTests
     [Fact]
     public void A_value_of_a_series_is_its_own_neighbour_in_every_decade() =>
         Gen.Select(Gen.Enum<PreferredSeries>(), Gen.Int[-15, 12], Gen.Double[1, 9.99])
-            .Sample((series, decade, mantissa) =>
+            .OnEach((series, decade, mantissa) =>
             {
                 var value = mantissa * Math.Pow(10, decade);
                 var below = PreferredValues.AtMost(series, value);
@@ -90,7 +90,7 @@ public sealed class PreferredValuesTests
                 Assert.Equal(above, PreferredValues.AtLeast(series, above));
                 Assert.Equal(
                     below == above ? [below] : [below, above], PreferredValues.Between(series, below, above));
-            }, seed: "0000000000000", iter: 200, threads: 1);
+            }, seed: "0000000000000", iter: 200);
 
     [Fact]
     public void Names_are_read_in_either_case_and_others_are_not()

@@ -137,9 +137,9 @@ public class CircuitParserTests
 
     [Fact]
     public void Any_bytes_are_read_or_refused() =>
-        Gen.Byte.Array[0, 300].Sample(
+        Gen.Byte.Array[0, 300].OnEach(
             bytes => SourceText.Read("a.cause", bytes) is { Value: { } text } ? IsAnswered(text) : true,
-            iter: 2000, seed: "0000KJ2mYgS1", threads: 1);
+            iter: 2000, seed: "0000KJ2mYgS1");
 
     [Fact]
     public void Any_words_and_signs_are_read_or_refused()
@@ -153,9 +153,9 @@ public class CircuitParserTests
             "5 V", "\"q\"", "\"", "#", "\n", "\r", "é", "°", "between", "and", "normal", "=", "k", "settling",
             "time", "impulse", "1.2/50 µs", "turns", "times",
         ];
-        Gen.Int[0, pieces.Length - 1].Array[0, 30].Sample(
+        Gen.Int[0, pieces.Length - 1].Array[0, 30].OnEach(
             places => IsAnswered(new SourceText("a.cause", string.Join(' ', places.Select(p => pieces[p])))),
-            iter: 5000, seed: "0000KJ2mYgS1", threads: 1);
+            iter: 5000, seed: "0000KJ2mYgS1");
     }
 
     /// <summary>Read whole, or every statement that is missing has something said, in a place of the

@@ -119,14 +119,14 @@ public class NumberTests
 
     [Fact]
     public void Every_prefix_gives_the_nearest_double() =>
-        Gen.Select(Gen.Double[0.001, 1000], Gen.Int[0, 9]).Sample(
+        Gen.Select(Gen.Double[0.001, 1000], Gen.Int[0, 9]).OnEach(
             (mantissa, index) =>
             {
                 var (prefix, exponent) = ("fpnµm kMGT"[index].ToString().Trim(), (3 * index) - 15);
                 var nearest = double.Parse($"{mantissa:F9}e{exponent}");
                 return Reading.Number($"{mantissa:F9} {prefix}V").Value == nearest;
             },
-            iter: 2000, seed: "0000KJ2mYgS1", threads: 1);
+            iter: 2000, seed: "0000KJ2mYgS1");
 
     [Fact]
     public void A_number_of_more_than_a_thousand_characters_is_refused()

@@ -17,7 +17,7 @@ public sealed class TwoRoutesTests
     public void Propagation_and_inversion_agree_on_circuits_drawn_at_random()
     {
         var compared = 0;
-        Part.Array[6, 14].Sample(
+        Part.Array[6, 14].OnEach(
             parts =>
             {
                 var (built, switches) = Build(parts);
@@ -39,7 +39,7 @@ public sealed class TwoRoutesTests
                 Assert.InRange(residuals.WorstAtNodes, 0, 1e-9);
                 Assert.InRange(residuals.WorstInParts, 0, 1e-9);
             },
-            seed: "0000000000000", iter: 150, threads: 1);
+            seed: "0000000000000", iter: 150);
         Assert.True(compared > 500); // few circuits fall out as singular, few values as too lightly damped
     }
 

@@ -9,7 +9,7 @@ public class RandomDerivativeTests
     [Fact]
     public void Derivatives_of_random_networks_agree_with_differences()
     {
-        Gen.Int[0, 1_000_000].Sample(
+        Gen.Int[0, 1_000_000].OnEach(
             seed =>
             {
                 var network = RandomNetwork.Draw(seed);
@@ -22,6 +22,6 @@ public class RandomDerivativeTests
                     [.. derived.Varied.Circuit.Observations.Select(o => o.Quantity)], times);
                 Assert.True(worst < 1e-7, $"seed {seed}: {worst:E2}");
             },
-            seed: "0000KxQ1dYs4", iter: 12, threads: 1);
+            seed: "0000KxQ1dYs4", iter: 12);
     }
 }
