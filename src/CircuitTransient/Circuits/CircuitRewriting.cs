@@ -15,32 +15,70 @@ public static class CircuitRewriting
     /// <param name="values">New values in SI, by index in <see cref="Circuit.Parameters"/>.</param>
     /// <param name="keepsTolerances">Whether tolerances stay where the new value lies within reach of them:
     /// always in per cent, between limits only if it lies between them.</param>
+    /// <param name="writesOut">Whether a repetition is written out where its rounds differ.</param>
     /// <returns>The text, or which value has no place of its own in it.</returns>
     public static Outcome<string> Put(
-        Circuit circuit, IReadOnlyDictionary<int, double> values, bool keepsTolerances)
+        Circuit circuit, IReadOnlyDictionary<int, double> values, bool keepsTolerances,
+        bool writesOut = false)
     {
         var edits = new SortedDictionary<int, (TextSpan Span, string Text)>();
-        foreach (var (index, value) in values)
+        var writtenOut = new List<TextSpan>();
+        foreach (var index in values.Keys)
         {
             var parameter = circuit.Parameters[index];
-            if (Sharing(circuit, values, index) is { } other)
+            if (Sharing(circuit, values, index) is not { } other
+                || writtenOut.Exists(span => Holds(span, parameter.ValueSpan)))
+            {
+                continue;
+            }
+
+            if (!writesOut || WrittenOutRepeat.Around(circuit, parameter.ValueSpan) is not { } repeat
+                || WrittenOutRepeat.Text(circuit, repeat, EditsOf) is not { } rounds)
             {
                 return new(null, [Diagnostic.Error(
                     circuit.Source, parameter.ValueSpan,
                     $"`{parameter.Name}` and `{other}` stand in one text, and their values differ",
-                    "write the parts out one by one")]);
+                    Advice(parameter))]);
             }
 
-            edits[parameter.ValueSpan.Start] = (parameter.ValueSpan, Written(value, parameter.Unit));
-            if (parameter.ToleranceSpan is { } tolerance
-                && !(keepsTolerances && Holds(circuit, index, value)))
-            {
-                edits[tolerance.Start] = (tolerance, "");
-            }
+            writtenOut.Add(repeat.Span);
+            edits[repeat.Span.Start] = (repeat.Span, rounds);
+        }
+
+        foreach (var edit in values.Keys.SelectMany(EditsOf)
+            .Where(edit => !writtenOut.Exists(span => Holds(span, edit.Span))))
+        {
+            edits[edit.Span.Start] = edit;
         }
 
         return new(Edited(circuit.Source.Content, edits.Values), []);
+
+        IEnumerable<(TextSpan Span, string Text)> EditsOf(int index)
+        {
+            if (!values.TryGetValue(index, out var value))
+            {
+                yield break;
+            }
+
+            var parameter = circuit.Parameters[index];
+            yield return (parameter.ValueSpan, Written(value, parameter.Unit));
+            if (parameter.ToleranceSpan is { } tolerance
+                && !(keepsTolerances && Holds(circuit, index, value)))
+            {
+                yield return (tolerance, "");
+            }
+        }
     }
+
+    private static string Advice(Parameter parameter) =>
+        parameter.Owner.Contains('/', StringComparison.Ordinal)
+        ? "give the value a name in the assembly, and every placing a value of its own for it: "
+            + "`place … with Rdamp = 3 Ω`"
+        : $"write the parts out one by one in place of the repetition, with names such as "
+            + $"`\"{parameter.Owner}\"`, in quotes";
+
+    private static bool Holds(TextSpan outer, TextSpan inner) =>
+        outer.Start <= inner.Start && inner.End <= outer.End;
 
     /// <summary>A value with its unit, as few digits as read back to the same bits.</summary>
     public static string Written(double value, string unit)

@@ -62,20 +62,21 @@ internal static class StoredContradictions
                 + (n == 0 ? Words(h, h.Before) : (isCharge ? "to " : "") + Say(h, h.Before))),
             .. held.Length > MostNamed ? [$"{held.Length - MostNamed} more"] : Array.Empty<string>(),
         ]) + (isCharge ? " do not agree round their loop" : " do not agree where only they meet");
+        var otherwise = (isCharge ? "charge them to" : "let them carry") + " what fits if no jump is meant";
         if (!isPlain || held.Any(h => h.After is null))
         {
-            return (message, (isCharge
-                ? "they share their charge at once, as the impulses in the result show; charge them to "
-                : "they share their flux at once, as the impulses in the result show; let them carry ")
-                + "what fits if no jump is meant");
+            return (message, $"they share their {(isCharge ? "charge" : "flux")} at once, as the impulses in "
+                + $"the result show; {otherwise}");
         }
 
         var moved = held.Where(h => h.Jumps).Take(MostNamed).ToArray();
         var jumps = moved.Select((h, n) =>
             $"`{h.Part.Name}` {(n == 0 ? "jumps by" : "by")} {Say(h, h.After!.Value - h.Before)}");
         var edits = moved.Select(h => $"`{Words(h, h.After!.Value)}`").Distinct();
-        return (message,
-            $"{string.Join(", ", jumps)}; if no jump is meant, write {Joined([.. edits])}");
+        var more = held.Count(h => h.Jumps) - moved.Length;
+        return (message, string.Join(", ", jumps) + (more > 0
+            ? $" and {more} more; {otherwise}"
+            : $"; if no jump is meant, write {Joined([.. edits])}"));
     }
 
     private static string Joined(string[] words) => words.Length == 1

@@ -66,9 +66,41 @@ public class CircuitRewritingTests
         Assert.Equal(
             "`R[1]` and `R[2]` stand in one text, and their values differ",
             Assert.Single(different.Diagnostics).Message);
+        Assert.Equal(
+            "write the parts out one by one in place of the repetition, with names such as `\"R[1]\"`, in "
+                + "quotes",
+            different.Diagnostics[0].Advice);
         var same = CircuitRewriting.Put(
             circuit, Values(circuit, ("R[1]", 2), ("R[2]", 2)), keepsTolerances: false);
         Assert.Contains("to n[k+1] : 2 Ω\nend", same.Value);
+    }
+
+    [Fact]
+    public void A_repeat_whose_rounds_differ_is_written_out_where_that_is_wanted()
+    {
+        var circuit = Checking.Circuit("""
+            source Feed at n[1] : 1 V
+            repeat 2 as k      # the line
+            resistor R[k] from n[k] to n[k+1] : 1 Ω ±5 %   # of round k
+            capacitor C[k] at n[k+1] : k * 2 µF, charged to 1 V
+            end
+            require voltage of n[3] at most 1 V
+            """);
+        var written = CircuitRewriting.Put(
+            circuit, Values(circuit, ("R[1]", 2), ("R[2]", 3)), keepsTolerances: false, writesOut: true);
+        Assert.Equal(
+            """
+            source Feed at n[1] : 1 V
+            # repeat 2 as k      # the line, written out
+            resistor "R[1]" from "n[1]" to "n[2]" : 2 Ω   # of round k
+            capacitor "C[1]" at "n[2]" : 1 * 2 µF, charged to 1 V
+            resistor "R[2]" from "n[2]" to "n[3]" : 3 Ω   # of round k
+            capacitor "C[2]" at "n[3]" : 2 * 2 µF, charged to 1 V
+            require voltage of n[3] at most 1 V
+            """,
+            written.Value);
+        Assert.Equal([2.0, 3.0], Checking.Circuit(written.Value!).Parameters
+            .Where(p => p.Name.StartsWith('R')).Select(p => p.Nominal));
     }
 
     private static ImmutableDictionary<int, double> Values(

@@ -80,6 +80,27 @@ public class StoredContradictionTests
                 resistor R1 from b to c : 1 kΩ
                 """));
 
+    // What came to each node stays there: 2 vc - vd = 6 V and 3 vd - vc = 0, so 3.6 V and 1.2 V.
+    [Fact]
+    public void Of_many_the_first_jumps_are_told() =>
+        Assert.Equal(
+            """
+            plant.cause:3:39: warning: `C1` charged to 3 V, `C2` to 3 V, `C3` to 3 V and 1 more \
+            do not agree round their loop
+              capacitor C3 from d to ground : 1 µF, charged to 3 V
+                                                    ^^^^^^^^^^^^^^
+              → `C1` jumps by 600 mV, `C2` by -600 mV, `C3` by -1.8 V and 1 more; \
+            charge them to what fits if no jump is meant
+            """.Replace("\\\n", "", StringComparison.Ordinal),
+            Checking.Messages(
+                """
+                capacitor C1 from c to ground : 1 µF, charged to 3 V
+                capacitor C2 from c to d : 1 µF, charged to 3 V
+                capacitor C3 from d to ground : 1 µF, charged to 3 V
+                capacitor C4 from d to ground : 1 µF
+                resistor R1 from c to ground : 1 kΩ
+                """));
+
     [Fact]
     public void Where_a_transformer_takes_part_no_figure_is_said() =>
         Assert.Equal(

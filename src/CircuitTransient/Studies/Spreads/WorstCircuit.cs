@@ -28,7 +28,8 @@ public static class WorstCircuit
 
         var values = spread.Varied.Values.ToDictionary(
             v => v.Parameter, v => Rounded(WrittenValues.Of(circuit, v.Parameter, given)));
-        var rewritten = CircuitRewriting.Put(circuit, values, keepsTolerances: false);
+        var rewritten = CircuitRewriting.Put(
+            circuit, values, keepsTolerances: false, writesOut: true);
         if (!rewritten.Succeeded)
         {
             return rewritten;
