@@ -37,10 +37,14 @@ public static class TransientAnalysis
         var warnings = circuit.Diagnostics;
         return solution.Succeeded
             ? new Solved(ResultBuilder.Measure(solution.Value, warnings, options, cancellation))
-            : solution.Diagnostics.Any(d => d.SaysTooLittle)
+            : Unsolved(solution, warnings);
+    }
+
+    private static AnalysisOutcome Unsolved(
+        Outcome<TransientSolution> solution, ImmutableArray<Diagnostic> warnings) =>
+        solution.Diagnostics.Any(d => d.SaysTooLittle)
             ? new Mistakes([.. warnings, .. solution.Diagnostics])
             : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
-    }
 
     /// <summary>Reads, checks and solves a circuit and writes quantities out in closed form.</summary>
     /// <param name="source">The circuit file's text.</param>
@@ -68,7 +72,7 @@ public static class TransientAnalysis
         return solution.Succeeded
             ? new WrittenOut(
                 ClosedFormBuilder.Study(solution.Value, quantities.Value, cancellation), warnings)
-            : new NoUniqueSolution([.. warnings, .. solution.Diagnostics]);
+            : Unsolved(solution, warnings);
     }
 
     /// <summary>Reads and checks a circuit, every mistake in one go; solves nothing.</summary>

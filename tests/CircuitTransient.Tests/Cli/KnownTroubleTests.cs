@@ -14,6 +14,7 @@ public sealed class KnownTroubleTests : IDisposable
     [InlineData("check")]
     [InlineData("solve")]
     [InlineData("spread")]
+    [InlineData("formula")]
     public void Where_nothing_decays_the_text_lacks_an_end(string command) =>
         Refused(
             command,

@@ -96,7 +96,7 @@ public class BreakdownMenuTests(Browser browser)
     [Fact]
     public async Task What_a_switch_saw_before_the_start_is_not_known()
     {
-        await using var opened = await browser.Open(SolvedPages.Page(SolvedPages.Demo("bank-gallery")));
+        await using var opened = await browser.Open(SolvedPages.Page(SolvedPages.Demo("intake-bay")));
 
         Assert.Contains("not known before the start", await opened.Text("#events"));
         Assert.DoesNotContain("undetermined", await opened.Text("#events"));
