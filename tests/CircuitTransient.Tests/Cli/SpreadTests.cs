@@ -170,13 +170,14 @@ public sealed class SpreadTests : IDisposable
         var worst = Path.Combine(commandLine.Folder, "worst.cause");
         var run = Spread(
             """
-            source Feed at n[1] : 10 V
-            repeat 2 as k
-              resistor R[k] from n[k] to n[k+1] : 100 Ω ±5 %
+            source Feed at a : 12 V
+            assembly leg with terminals p, q
+            resistor R from p to q : 10 Ω ±10 %
             end
-            resistor R3 from n[3] to ground : 10 Ω
-            observe voltage from n[1] to n[2]
-            require voltage from n[1] to n[2] at most 4.8 V
+            place leg as Upper with p = a, q = b
+            place leg as Lower with p = b, q = ground
+            observe voltage of b
+            require voltage of b at most 6.2 V
             until 1 ms
             """, "--draws", "0", "--write-worst", worst);
 
