@@ -23,6 +23,7 @@ public sealed class ResultBuilder
     private readonly StoredEnergy energy;
     private readonly FigureMeasurement reading;
     private readonly double[][,] grams;
+    private readonly ObservationMeasurement observing;
 
     private ResultBuilder(TransientSolution solution, AnalysisOptions options, CancellationToken cancellation)
     {
@@ -33,6 +34,9 @@ public sealed class ResultBuilder
         infinities = new Infinities(curves);
         energy = new StoredEnergy(curves);
         reading = new FigureMeasurement(curves, times, infinities);
+        observing = new ObservationMeasurement(
+            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options,
+            cancellation);
         grams = [.. solution.Segments.Select(GramIntegral.Of)];
     }
 
@@ -53,7 +57,7 @@ public sealed class ResultBuilder
         var checking = Check();
         var observed = Observe();
         var parts = PartStresses.Of(curves, s => grams[s], cancellation);
-        var requirements = Judge(LinearLimits.Doubt(parts));
+        var requirements = Judge(LinearLimits.Doubt(parts), [.. observed.Select(o => o.Result)]);
         var waves = Sample(observed, requirements);
         var intervals = solution.Intervals.Select(new IntervalMeasurement(solution, energy).Measure)
             .ToImmutableArray();
@@ -94,22 +98,49 @@ public sealed class ResultBuilder
         return Task.Run(() => SelfChecks.Run(own, new StoredEnergy(own), s => grams[s]), cancellation);
     }
 
-    private (ObservationResult Result, ImmutableArray<Curve> Curves)[] Observe()
-    {
-        var observing = new ObservationMeasurement(
-            curves, times, infinities, new SinceEventBreakdown(solution, cancellation), options,
-            cancellation);
-        return [.. Each(circuit.Observations.Where(o => o.Quantity is not Figure), observing.Measure)];
-    }
+    private (ObservationResult Result, ImmutableArray<Curve> Curves)[] Observe() =>
+        [.. Each(Waveforms, observing.Measure)];
 
     private ImmutableArray<FigureResult> Read() =>
         [.. Each(circuit.Observations.Where(o => o.Quantity is Figure), reading.Measure)];
 
-    private ImmutableArray<RequirementResult> Judge(string? doubt)
+    private ImmutableArray<RequirementResult> Judge(
+        string? doubt, ImmutableArray<ObservationResult> observed)
     {
         var judging = new RequirementMeasurement(curves, times, infinities, reading);
-        return [.. Each(circuit.Requirements, judging.Judge).Select(r => r with { Doubt = doubt })];
+        return
+        [
+            .. Each(circuit.Requirements, requirement =>
+            {
+                var verdict = judging.Judge(requirement);
+                return verdict with { Doubt = doubt, Within = Within(requirement, verdict, observed) };
+            }),
+        ];
     }
+
+    /// <summary>What makes a worst value that no observation has among its extremes.</summary>
+    private ObservationResult? Within(
+        Requirement requirement, RequirementResult verdict, ImmutableArray<ObservationResult> observed)
+    {
+        if (requirement is not { Bound: Limits, Quantity: not Figure } || verdict.Worst.Value is null
+            || Waveforms.Zip(observed).Any(pair => IsExtreme(pair.First, pair.Second)))
+        {
+            return null;
+        }
+
+        var measured = observing.Measure(new Observation(
+            requirement.Name, requirement.Unit, requirement.Quantity, requirement.Window, requirement.Span));
+        return JudgedExtreme.IsMax(measured.Result, verdict.Worst, 1, solution.Until) is null
+            ? null
+            : measured.Result;
+
+        bool IsExtreme(Observation observation, ObservationResult result) =>
+            SameQuantity.Sign(circuit, observation.Quantity, requirement.Quantity) is not 0 and var sign
+            && JudgedExtreme.IsMax(result, verdict.Worst, sign, solution.Until) is not null;
+    }
+
+    /// <summary>The observations that are waveforms, and no figures read off them.</summary>
+    private IEnumerable<Observation> Waveforms => circuit.Observations.Where(o => o.Quantity is not Figure);
 
     private SampledWaves Sample(
         (ObservationResult Result, ImmutableArray<Curve> Curves)[] observed,

@@ -151,6 +151,10 @@ public sealed record RequirementResult(
     /// <summary>Why the verdict is in doubt: a part passed what it is <c>linear up to</c>; else
     /// null.</summary>
     public string? Doubt { get; init; }
+
+    /// <summary>The quantity measured within the requirement's window, where its worst value is no extreme of
+    /// what is observed; else null. Its waveforms are not filled in.</summary>
+    public ObservationResult? Within { get; init; }
 }
 
 /// <summary>One check every solve runs: the worst relative figure against what is allowed.</summary>

@@ -105,7 +105,8 @@ public static partial class JsonReport
         json.WriteString("definition", figure.Definition);
     }
 
-    private static void WriteRequirement(Utf8JsonWriter json, RequirementResult requirement)
+    private static void WriteRequirement(
+        Utf8JsonWriter json, TransientResult result, RequirementResult requirement)
     {
         json.WriteString("statement", requirement.Statement);
         json.Text("quantity", requirement.Quantity);
@@ -116,6 +117,16 @@ public static partial class JsonReport
         json.WriteString("unit", requirement.Unit);
         json.Text("because", requirement.Reason);
         json.Text("doubt", requirement.Doubt);
+        if (requirement.Within is { } within
+            && JudgedExtreme.IsMax(within, requirement.Worst, 1, result.Until) is { } atMax)
+        {
+            json.Objects(
+                "contributions",
+                within.Contributions.Select(c => new CauseValue(c.Cause, atMax ? c.AtMax : c.AtMin)),
+                WriteCauseValue);
+            json.Object("since", atMax ? within.After?.AtMax : within.After?.AtMin, WriteSinceEvent);
+            json.WriteString("inWords", PeakWords.Of(result, within, atMax));
+        }
     }
 
     private static void WritePart(Utf8JsonWriter json, (PartResult Part, Part? Stated) pair)

@@ -40,7 +40,7 @@ public static partial class JsonReport
         json.Objects("observations", result.Observations,
             (to, observation) => WriteObservation(to, result, observation));
         json.Objects("figures", result.Figures, WriteFigure);
-        json.Objects("requirements", result.Requirements, WriteRequirement);
+        json.Objects("requirements", result.Requirements, (to, r) => WriteRequirement(to, result, r));
         var stated = result.Circuit.Parts;
         json.Objects(
             "parts", result.Parts.Select((part, i) => (part, stated.ElementAtOrDefault(i))), WritePart);

@@ -3,49 +3,26 @@ using CircuitTransient.Measurements;
 
 namespace CircuitTransient.Reports;
 
-/// <summary>Finds what was observed under another name: one quantity may be named by its node, its nodes
-/// or its part, with either sign.</summary>
+/// <summary>Finds what was observed under another name.</summary>
 internal static class ObservedQuantity
 {
-    /// <summary>1 where both are the same quantity, −1 where one is the other's negative, 0 where they
-    /// differ.</summary>
-    public static int Sign(Circuit circuit, Measurand first, Measurand second)
-    {
-        var (one, signOfOne) = Normalised(circuit, first);
-        var (other, signOfOther) = Normalised(circuit, second);
-        return one == other ? signOfOne * signOfOther : 0;
-    }
-
     /// <summary>The observation of a quantity, or of the waveform a figure is read off; null where there
     /// is none.</summary>
     public static ObservationResult? Find(TransientResult result, Measurand quantity)
     {
         var sought = quantity is Figure figure ? figure.Of : quantity;
         var observed = result.Circuit.Observations.FirstOrDefault(o =>
-            Sign(result.Circuit, o.Quantity, sought) != 0);
+            SameQuantity.Sign(result.Circuit, o.Quantity, sought) != 0);
         return observed is null ? null : result.Observations.FirstOrDefault(o => o.Name == observed.Name);
     }
 
-    private static (Measurand Quantity, int Sign) Normalised(Circuit circuit, Measurand quantity)
-    {
-        switch (quantity)
-        {
-            case VoltageAcross across:
-                var part = circuit.Parts[across.Part];
-                return Normalised(circuit, new VoltageBetween(part.From, part.To));
-            case VoltageBetween between when between.From < between.To:
-                return (new VoltageBetween(between.To, between.From), -1);
-            case CurrentThrough current:
-                return (current with { Delivered = false }, current.Delivered ? -1 : 1);
-            case PowerIn power:
-                return (power with { Delivered = false }, power.Delivered ? -1 : 1);
-            case EnergyIn energy:
-                return (energy with { Delivered = false }, energy.Delivered ? -1 : 1);
-            case RateOfChange rate:
-                var (of, sign) = Normalised(circuit, rate.Of);
-                return (new RateOfChange(of), sign);
-            default:
-                return (quantity, 1);
-        }
-    }
+    /// <summary>Every observation of a quantity, with 1 or −1 where its sign is turned.</summary>
+    public static IEnumerable<(ObservationResult Observation, int Sign)> All(
+        TransientResult result, Measurand quantity) =>
+        from observed in result.Circuit.Observations
+        let sign = SameQuantity.Sign(result.Circuit, observed.Quantity, quantity)
+        where sign != 0
+        let measured = result.Observations.FirstOrDefault(o => o.Name == observed.Name)
+        where measured is not null
+        select (measured, sign);
 }

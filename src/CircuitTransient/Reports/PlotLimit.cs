@@ -27,7 +27,7 @@ internal sealed record PlotLimit(double Value, double From, double To, string Wo
     }
 
     private static int Sign(Circuit circuit, Requirement requirement, Observation observed) =>
-        ObservedQuantity.Sign(circuit, requirement.Quantity, observed.Quantity);
+        SameQuantity.Sign(circuit, requirement.Quantity, observed.Quantity);
 
     private static IEnumerable<PlotLimit> Of(
         TransientResult result,

@@ -15,7 +15,8 @@ internal static class SinceWords
             return null;
         }
 
-        var observed = result.Circuit.Observations.FirstOrDefault(o => o.Name == worst.Observation.Name);
+        var name = (worst.Shown ?? worst.Observation).Name;
+        var observed = result.Circuit.Observations.FirstOrDefault(o => o.Name == name);
         if (observed is not null
             && QuantityFactors.OfAny(result.Circuit, observed.Quantity) is { IsIntegrated: true })
         {

@@ -20,6 +20,11 @@ public static partial class TerminalSummary
 
         var unit = worst.Observation.Unit;
         text.Heading(HeadingOf(result, worst));
+        if (worst.IsWithin)
+        {
+            text.Paragraph(WithinWords.Of(result, worst));
+        }
+
         if (PeakWords.Of(result, worst.Observation, worst.AtMax) is { } words)
         {
             text.Paragraph(words);

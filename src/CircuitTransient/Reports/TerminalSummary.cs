@@ -46,8 +46,8 @@ public static partial class TerminalSummary
 
     private static void WriteSketch(SummaryText text, TransientResult result, int? terminalWidth)
     {
-        if (terminalWidth >= SummaryText.Width && WorstObservation.Find(result) is { } worst
-            && TerminalSketch.Lines(result, worst.Observation) is { IsEmpty: false } lines)
+        if (terminalWidth >= SummaryText.Width && WorstObservation.Find(result)?.Shown is { } shown
+            && TerminalSketch.Lines(result, shown) is { IsEmpty: false } lines)
         {
             text.Blank();
             foreach (var line in lines)

@@ -4,12 +4,19 @@ using CircuitTransient.Measurements;
 namespace CircuitTransient.Reports;
 
 /// <summary>The observation a reader should look at first, and which of its extremes.</summary>
-/// <param name="Observation">The observation.</param>
+/// <param name="Observation">The observation; or the quantity as measured within a requirement's
+/// window.</param>
 /// <param name="AtMax">Whether its maximum matters (else its minimum).</param>
 /// <param name="Why">Why it was chosen, in words.</param>
 public sealed record WorstObservation(ObservationResult Observation, bool AtMax, string Why)
 {
     private const string FirstObserved = "the first observed";
+
+    /// <summary>The observation whose waveform shows it; null where none does.</summary>
+    public ObservationResult? Shown { get; init; } = Observation;
+
+    /// <summary>Whether a requirement's window has it apart from what is observed.</summary>
+    public bool IsWithin => !ReferenceEquals(Shown, Observation);
 
     /// <summary>The extreme that matters.</summary>
     public Extreme Extreme => AtMax ? Observation.Max : Observation.Min;
@@ -41,14 +48,11 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
 
         WorstObservation? worst = null;
         var greatest = 0.0;
-        foreach (var (quantity, used, value, what) in Uses(result))
+        foreach (var (candidate, used) in Required(result).Concat(Rated(result)))
         {
-            if (used > greatest && ObservedQuantity.Find(result, quantity) is { } observation
-                && IsFinite(observation))
+            if (used > greatest && isMeant(candidate))
             {
-                var why = used > 1 ? $"the {what} exceeded most" : $"nearest to its {what}";
-                var candidate = new WorstObservation(observation, IsAtMax(observation, value), why);
-                (worst, greatest) = isMeant(candidate) ? (candidate, used) : (worst, greatest);
+                (worst, greatest) = (candidate, used);
             }
         }
 
@@ -57,8 +61,7 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
         return worst ?? observed.FirstOrDefault(isMeant);
     }
 
-    private static IEnumerable<(Measurand Quantity, double Used, double? Value, string What)> Uses(
-        TransientResult result)
+    private static IEnumerable<(WorstObservation Worst, double Used)> Required(TransientResult result)
     {
         var required = result.Circuit.Requirements;
         for (var i = 0; i < Math.Min(required.Length, result.Requirements.Length); i++)
@@ -68,20 +71,62 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
                 continue; // when it settles is no extreme that causes could be asked for
             }
 
-            var verdict = result.Requirements[i];
-            var used = Used(required[i].Bound, verdict);
-            yield return (required[i].Quantity, used, verdict.Worst.Value, "requirement");
+            var used = Used(required[i].Bound, result.Requirements[i]);
+            var why = WhyOf(used, "requirement");
+            var worst = required[i].Quantity is Figure figure
+                ? ReadOff(result, figure, $"{why} is read off it")
+                : Judged(result, required[i].Quantity, result.Requirements[i], why);
+            if (worst is not null && (worst.Shown is not null || used > 1))
+            {
+                yield return (worst, used); // what is not observed comes up only where it is broken
+            }
+        }
+    }
+
+    private static string WhyOf(double used, string what) =>
+        used > 1 ? $"the {what} exceeded most" : $"nearest to its {what}";
+
+    /// <summary>The worst value itself: an extreme that is observed, or the one within the requirement's
+    /// window; never another figure.</summary>
+    private static WorstObservation? Judged(
+        TransientResult result, Measurand quantity, RequirementResult verdict, string why)
+    {
+        var observed = ObservedQuantity.All(result, quantity).ToArray();
+        foreach (var (observation, sign) in observed)
+        {
+            if (JudgedExtreme.IsMax(observation, verdict.Worst, sign, result.Until) is { } atMax)
+            {
+                return new WorstObservation(observation, atMax, why);
+            }
         }
 
+        return verdict.Within is { } within
+            && JudgedExtreme.IsMax(within, verdict.Worst, 1, result.Until) is { } isMax
+            ? new WorstObservation(within, isMax, why)
+            {
+                Shown = observed.Select(o => o.Observation).FirstOrDefault(),
+            }
+            : null;
+    }
+
+    private static WorstObservation? ReadOff(TransientResult result, Figure figure, string why) =>
+        ObservedQuantity.Find(result, figure) is { } observation && IsFinite(observation)
+            ? new WorstObservation(observation, observation.Greatest == observation.Max, why)
+            : null;
+
+    private static IEnumerable<(WorstObservation Worst, double Used)> Rated(TransientResult result)
+    {
         foreach (var part in result.Parts)
         {
             var index = result.Circuit.Parts.ToList().FindIndex(p => p.Name == part.Name);
             foreach (var rating in part.Ratings)
             {
-                if (index >= 0 && RatedQuantity(index, rating.Unit) is { } quantity)
+                if (index >= 0 && RatedQuantity(index, rating.Unit) is { } quantity
+                    && ObservedQuantity.Find(result, quantity) is { } observation && IsFinite(observation))
                 {
                     var used = rating.Used ?? (rating.Holds ? 0 : double.PositiveInfinity);
-                    yield return (quantity, used, null, "rating");
+                    yield return (new WorstObservation(
+                        observation, observation.Greatest == observation.Max, WhyOf(used, "rating")), used);
                 }
             }
         }
@@ -120,13 +165,4 @@ public sealed record WorstObservation(ObservationResult Observation, bool AtMax,
     // An impulse is infinite and stands among the impulses; the other extreme would explain the wrong thing.
     private static bool IsFinite(ObservationResult observation) =>
         observation.Max.Value is not null && observation.Min.Value is not null;
-
-    private static bool IsAtMax(ObservationResult observation, double? value)
-    {
-        return (value, observation.Max.Value, observation.Min.Value) switch
-        {
-            ({ } worst, { } max, { } min) => Math.Abs(worst - max) <= Math.Abs(worst - min),
-            _ => observation.Greatest == observation.Max,
-        };
-    }
 }

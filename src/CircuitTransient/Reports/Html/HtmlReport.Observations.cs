@@ -26,6 +26,7 @@ public static partial class HtmlReport
             <p class="aside">Contributions are counted from the start: the sources, and what was stored at
             t = 0, carried through every switching. At every instant they add up to the total.</p>
             <div id="explorer"></div>
+            {(worst is { Shown: null } ? Required(result, worst) : default)}
             {Markup.Join(sections)}
             {Figures(result)}</section>
             """);
@@ -39,6 +40,7 @@ public static partial class HtmlReport
         Markup still)
     {
         var isWorst = ReferenceEquals(worst?.Observation, observed);
+        var isHere = worst is { IsWithin: true } && ReferenceEquals(worst.Shown, observed);
         var atMax = isWorst ? worst!.AtMax : observed.Greatest == observed.Max;
         return Markup.Of($"""
             <section class="observation" id="observation-{index}"
@@ -49,6 +51,7 @@ public static partial class HtmlReport
             <div class="plots" data-observation="{index}"></div>
             {still}<figcaption class="aside">{Caption(observed)}</figcaption>
             </figure>
+            {(isHere ? Required(result, worst!) : default)}
             {CauseTable(result, observed, atMax)}{Breakdowns(result, observed, atMax)}
             {SinceTable(observed, atMax)}</section>
 
@@ -110,7 +113,22 @@ public static partial class HtmlReport
             """);
     }
 
-    private static Markup CauseTable(TransientResult result, ObservationResult observed, bool atMax)
+    /// <summary>What makes a requirement's worst value, where that is no extreme of the
+    /// waveform.</summary>
+    private static Markup Required(TransientResult result, WorstObservation worst)
+    {
+        var (observed, atMax) = (worst.Observation, worst.AtMax);
+        return Markup.Of($"""
+            <div class="required breakdown">
+            <p class="words">{Whole(Number(worst.Extreme.Value, observed.Unit))} of
+            {Markup.Name(observed.Name)}: {worst.Why}. {Whole(WithinWords.Of(result, worst))}</p>
+            {CauseTable(result, observed, atMax, "causes since")}{Breakdowns(result, observed, atMax)}
+            {SinceTable(observed, atMax)}</div>
+            """);
+    }
+
+    private static Markup CauseTable(
+        TransientResult result, ObservationResult observed, bool atMax, string kind = "causes")
     {
         var extreme = atMax ? observed.Max : observed.Min;
         if (observed.Contributions.IsEmpty || extreme.Value is not { } total)
@@ -125,7 +143,7 @@ public static partial class HtmlReport
             .Select(i => CauseRow(observed, i, atMax, total, largest));
         return Markup.Of($"""
             {Words(result, observed, atMax)}
-            <div class="wide"><table class="causes" data-at="{(atMax ? "max" : "min")}">
+            <div class="wide"><table class="{kind}" data-at="{(atMax ? "max" : "min")}">
             <caption>What made the {word} value, <span
             class="peak">{Number(total, observed.Unit)}{When(result, extreme)}</span></caption>
             <thead><tr><th scope="col">Cause</th><th scope="col" class="number">Then</th>

@@ -76,7 +76,7 @@ internal sealed partial class PageData
         var observed = result.Circuit.Observations.Where(o => o.Window is { From: null })
             .Select(o => (
                 o.Name,
-                Sign: ObservedQuantity.Sign(result.Circuit, requirement.Quantity, o.Quantity)))
+                Sign: SameQuantity.Sign(result.Circuit, requirement.Quantity, o.Quantity)))
             .FirstOrDefault(o => o.Sign != 0);
         var place = result.Observations.Select(o => o.Name).ToList().IndexOf(observed.Name);
         return place >= 0 && observed.Sign != 0 ? (place, observed.Sign) : null;

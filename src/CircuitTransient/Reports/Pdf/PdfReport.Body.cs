@@ -43,6 +43,7 @@ public static partial class PdfReport
         var atMax = ReferenceEquals(worst?.Observation, observed)
             ? worst!.AtMax
             : observed.Greatest == observed.Max;
+        var within = worst is { IsWithin: true } && ReferenceEquals(worst.Shown, observed) ? worst : null;
         PlotWindow?[] windows = [PlotWindow.Whole(result, observed), PlotWindow.Enlarged(result, observed)];
         var panels = windows.OfType<PlotWindow>().Select(window =>
         {
@@ -50,7 +51,9 @@ public static partial class PdfReport
             return new Drawing(PlotPanel.Width, height, observed.Name, shapes);
         }).ToArray();
         var usual = panels.Length == 1 ? OnePanel : TwoPanels;
-        var fitting = (pages.Room - HeightOfCauses(result, observed, atMax) - (8 * panels.Length))
+        var causes = HeightOfCauses(result, observed, atMax)
+            + (within is null ? 0 : 30 + HeightOfCauses(result, within.Observation, within.AtMax));
+        var fitting = (pages.Room - causes - (8 * panels.Length))
             / panels.Sum(panel => panel.Height);
         var scale = fitting < SmallestPanels ? usual : Math.Min(usual, fitting);
         foreach (var panel in panels)
@@ -58,7 +61,22 @@ public static partial class PdfReport
             pages.Picture(panel, scale);
         }
 
+        if (within is not null)
+        {
+            AddRequired(pages, result, within);
+        }
+
         AddCauses(pages, result, observed, atMax);
+    }
+
+    /// <summary>What makes a requirement's worst value, where that is no extreme of the
+    /// waveform.</summary>
+    private static void AddRequired(PdfPages pages, TransientResult result, WorstObservation worst)
+    {
+        var value = Number(worst.Extreme.Value, worst.Observation.Unit);
+        pages.Paragraph(
+            $"{value} of {worst.Observation.Name}: {worst.Why}. {WithinWords.Of(result, worst)}", 9.5);
+        AddCauses(pages, result, worst.Observation, worst.AtMax);
     }
 
     /// <summary>What the tables of causes take, with words of some length and names that wrap.</summary>
