@@ -43,7 +43,7 @@ public static class SizeSection
 
     private static string Exact(SizeResult result) =>
         result is { Request.Series: { } series, Exact: { } exact }
-        ? $"Not bound to {series}, it would be {SizeWords.Values(result, exact)}."
+        ? $"Not bound to {series}, it would be {SizeWords.Values(result, exact)}{SizeWords.Unproven(result)}."
         : "";
 
     private static Markup Margins(SizeResult result) => result.Chosen is { } chosen
@@ -101,7 +101,7 @@ public static class SizeSection
             """));
         return Markup.Of($"""
             <div class="wide"><table>
-            <caption>Every value of {Markup.Name(part.Name)} that holds</caption>
+            <caption>Every value of {Markup.Name(part.Name)} that holds{SizeWords.Unproven(result)}</caption>
             <thead><tr><th scope="col">Values</th><th scope="col">Below</th>
             <th scope="col">Above</th></tr></thead>
             <tbody>
