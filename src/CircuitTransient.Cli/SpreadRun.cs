@@ -41,8 +41,8 @@ public sealed class SpreadRun(
 
         using var progress = new StudyProgress(streams);
         progress.Report($"solving {file}", 0, 0);
-        var outcome = TransientAnalysis.Run(
-            source, AnalysisOptions.Default, reading.ReadBeside, cancellation);
+        var outcome = BeforeDraws(progress, () => TransientAnalysis.Run(
+            source, AnalysisOptions.Default, reading.ReadBeside, cancellation));
         switch (outcome)
         {
             case Solved { Result: var nominal }:
@@ -77,7 +77,8 @@ public sealed class SpreadRun(
             return refusal;
         }
 
-        var study = new SpreadStudy(values, nominal, options, Show, cancellation);
+        var study = BeforeDraws(
+            progress, () => new SpreadStudy(values, nominal, options, Show, cancellation));
         if (resumes)
         {
             partial.Load(identity, study.LoadDraws);
@@ -99,6 +100,23 @@ public sealed class SpreadRun(
         }
 
         void Show(SpreadProgress p) => progress.Report(p.Stage, p.Done, p.All);
+    }
+
+    /// <summary>Work before the draws; says of an interruption there that it leaves nothing.</summary>
+    private T BeforeDraws<T>(StudyProgress progress, Func<T> work)
+    {
+        try
+        {
+            return work();
+        }
+        catch (OperationCanceledException)
+        {
+            progress.Dispose();
+            streams.Error.WriteLine(
+                "stopped before the first draw; nothing could be kept, for the search for the extremes "
+                + "starts anew each time");
+            throw;
+        }
     }
 
     private ImmutableArray<string> Asked => ["--draws", $"{options.Draws}", "--seed", $"{options.Seed}"];

@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using System.Globalization;
 using CircuitTransient.Circuits;
 using CircuitTransient.Measurements;
+using CircuitTransient.Measurements.Breakdowns;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Reports;
@@ -149,6 +150,33 @@ internal static class ReportWords
         var when = extreme.Value is null ? "" : InstantWords.At(result, extreme.Time, extreme.Side);
         var isPlain = when.Length == 0 || when.StartsWith("at ", StringComparison.Ordinal);
         return isPlain ? $" {when}" : $", {when}";
+    }
+
+    /// <summary>What is stored at an instant, and how the modes share it: what no mode has alone lies between
+    /// two that add, and takes off where they cancel.</summary>
+    public static string Stored(EnergyByMode energies)
+    {
+        var stored = Number(energies.Stored, "J");
+        return energies.Joint < 0 && !IsRounding(energies.Joint, energies.Stored)
+            ? $"{stored}; the modes, each alone, would store "
+                + $"{Number(energies.Stored - energies.Joint, "J")} in all, for in part they cancel"
+            : $"{stored}, of which {Number(energies.Joint, "J", energies.Stored)} belongs to no mode alone";
+    }
+
+    /// <summary>The greatest voltage and current of a circuit, beside which what rounding left of nothing is
+    /// told.</summary>
+    public static (double Volts, double Amperes) Scales(TransientResult result)
+    {
+        return (
+            Greatest(
+                result.Parts.Select(p => p.PeakVoltage?.Value),
+                result.Events.SelectMany(e => new[] { e.VoltageBefore, e.VoltageAfter })),
+            Greatest(
+                result.Parts.Select(p => p.PeakCurrent?.Value),
+                result.Events.SelectMany(e => new[] { e.CurrentBefore, e.CurrentAfter })));
+
+        static double Greatest(IEnumerable<double?> peaks, IEnumerable<double?> seen) =>
+            peaks.Concat(seen).Max(value => Math.Abs(value ?? 0));
     }
 
     /// <summary>A value of an observation; what rounding left of nothing is nothing.</summary>

@@ -95,10 +95,7 @@ public static partial class TerminalSummary
 
         if (breakdown.Energies is { } energies)
         {
-            text.Paragraph(
-                $"stored at that instant: {Number(energies.Stored, "J")}, of which " +
-                $"{Number(energies.Joint, "J", energies.Stored)} belongs to no mode alone",
-                indent: 4);
+            text.Paragraph($"stored at that instant: {Stored(energies)}", indent: 4, hanging: 2);
         }
     }
 

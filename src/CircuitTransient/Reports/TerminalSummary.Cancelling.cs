@@ -31,26 +31,20 @@ public static partial class TerminalSummary
         return $"{names} {Number(Math.Abs(shares.Sum(share => share.Value ?? 0)), unit)}";
     }
 
-    private static IEnumerable<string> Driving(TransientResult result, SinceEvent since)
+    private static IEnumerable<string> Driving(
+        TransientResult result, WorstObservation worst, SinceEvent since)
     {
-        if (DrivingDifference.Of(since) is { } difference)
+        var difference = DrivingDifference.Of(since);
+        if (difference is not null)
         {
             yield return "what the two are at that instant, and their difference: " +
                 $"{Sized(difference.With)} against {Sized(difference.Against)}: " +
                 Number(difference.Value, difference.Unit);
         }
 
-        var switching = result.Events.FirstOrDefault(e =>
-            e.Time == since.Time && InstantWords.Name(e) == since.Event);
-        if (switching is { Closes: true, VoltageBefore: { } voltage })
+        if (DrivingSwitch.Of(result, worst, since, difference) is { } driving)
         {
-            yield return
-                $"what drives it: the {Number(voltage, "V")} across {switching.Switch} just before it closes";
-        }
-        else if (switching is { Closes: false, CurrentBefore: { } current })
-        {
-            yield return
-                $"what drives it: the {Number(current, "A")} through {switching.Switch} just before it opens";
+            yield return driving;
         }
     }
 

@@ -96,7 +96,7 @@ public static partial class TerminalSummary
             $"Since {since.Event}: what each part held just before it, and the sources from then on");
         var shares = since.Parts.Select(part => new Share(part.Cause, part.Value)).ToImmutableArray();
         WriteShares(text, shares, total, worst.Observation.Unit, without: null);
-        foreach (var driving in Driving(result, since))
+        foreach (var driving in Driving(result, worst, since))
         {
             text.Paragraph(driving, hanging: 2);
         }
@@ -171,17 +171,24 @@ public static partial class TerminalSummary
         double total,
         string unit,
         SignedBars bars,
-        bool withOwn) =>
+        bool withOwn)
+    {
+        var scale = Math.Max(Math.Abs(total), bars.Largest);
+        return
         [
             share.Cause,
             Signed(share.Value, unit, bars.Largest),
             PercentOf(share.Value, total),
             bars.Of(share.Value ?? 0),
             withOwn && share.Own is { Value: { } own, Time: var time }
-                ? $"{Number(own, unit)} at {Number(time, "s")}"
+                ? Own(own, time, unit, scale)
                 : "",
-            withOwn && share.Without is { } without ? Number(without.Value, unit) : "",
+            withOwn && share.Without is { } without ? Number(without.Value, unit, scale) : "",
         ];
+    }
+
+    private static string Own(double own, double time, string unit, double scale) =>
+        IsRounding(own, scale) ? Number(0, unit) : $"{Number(own, unit)} at {Number(time, "s")}";
 
     private static string? DecidedByAnswer(TransientResult result)
     {

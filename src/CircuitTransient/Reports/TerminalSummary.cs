@@ -69,8 +69,7 @@ public static partial class TerminalSummary
             return;
         }
 
-        var volts = Greatest(result.Events.SelectMany(e => new[] { e.VoltageBefore, e.VoltageAfter }));
-        var amperes = Greatest(result.Events.SelectMany(e => new[] { e.CurrentBefore, e.CurrentAfter }));
+        var (volts, amperes) = Scales(result);
         text.Heading("Switchings, with what each switch saw just before and just after");
         text.Table(
             [Right, Prose, Right, Left, Right, Left, Prose],
@@ -86,8 +85,6 @@ public static partial class TerminalSummary
 
     private static string Before(EventResult switching, double? value, string unit, double scale) =>
         value is null ? ReportWords.Before(switching, value, unit) : Number(value, unit, scale);
-
-    private static double Greatest(IEnumerable<double?> values) => values.Max(value => Math.Abs(value ?? 0));
 
     private static void WriteObservations(SummaryText text, TransientResult result)
     {

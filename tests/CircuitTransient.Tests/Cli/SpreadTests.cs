@@ -214,6 +214,20 @@ public sealed class SpreadTests : IDisposable
         Assert.Contains("without `--resume` the study begins anew", run.Error);
     }
 
+    [Fact]
+    public void A_search_for_the_extremes_that_is_stopped_says_that_it_leaves_nothing()
+    {
+        using var stop = new CancellationTokenSource();
+        using var output = new StringWriter();
+        using var error = new StringWriter();
+        using var streams = new Streams(output, error);
+        var file = commandLine.Circuit("divider.cause", Divider);
+        stop.Cancel();
+
+        Assert.Equal(ExitStatus.Interrupted, App.Run(["spread", file, "--no-files"], streams, stop.Token));
+        Assert.Contains("stopped before the first draw; nothing could be kept, for the ", error.ToString());
+    }
+
     private CommandLineAnswer Spread(string text, params string[] args) =>
         commandLine.Run(
             ["spread", commandLine.Circuit("divider.cause", text), "--out", commandLine.Results, .. args]);

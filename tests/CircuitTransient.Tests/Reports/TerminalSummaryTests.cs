@@ -60,7 +60,6 @@ public class TerminalSummaryTests
             Supply                         +4.577 kA   3539 %        ██████
             Cbus charge when Kmain closes  -4.448 kA  -3439 %  ██████
             large causes cancel: Supply 4.577 kA against Cbus charge when Kmain closes 4.448 kA: 129.3 A
-          what drives it: the 26.36 V across Kmain just before it closes
 
         Read off the waveforms
           rise time of voltage of bus  1.006 s  10 to 90 % of the final value

@@ -82,6 +82,7 @@ public static partial class HtmlReport
         var joint = breakdown.Joint == 0
             ? default
             : Markup.Of($"Of no single cause and mode: {Number(breakdown.Joint, observed.Unit)}. ");
+        var stored = breakdown.Energies is { } energies ? $"Stored then: {Stored(energies)}." : "";
         return Markup.Of($"""
             <div class="wide"><table class="breakdown">
             <caption>The same value by cause and mode, in the interval it stands in; a mode is named by the
@@ -92,8 +93,7 @@ public static partial class HtmlReport
             <tbody>
             {Markup.Join(rows)}</tbody>
             </table></div>
-            <p class="aside breakdown">{joint}Stored then: {Number(breakdown.Energies?.Stored, "J")}, of
-            which {Number(breakdown.Energies?.Joint, "J")} belongs to no mode alone.</p>
+            <p class="aside breakdown">{joint}{stored}</p>
 
             """);
     }

@@ -16,13 +16,14 @@ public static partial class HtmlReport
             return default;
         }
 
+        var (volts, amperes) = Scales(result);
         var rows = result.Events.Select(e => Markup.Of($"""
             <tr><td class="number">{Number(e.Time, "s")}</td>
             <th scope="row">{Markup.Name(InstantWords.Name(e))}{Remark(e)}</th>
-            {BeforeCell(e, e.VoltageBefore, "V")}
-            <td class="number">{Number(e.VoltageAfter, "V")}</td>
-            {BeforeCell(e, e.CurrentBefore, "A")}
-            <td class="number">{Number(e.CurrentAfter, "A")}</td></tr>
+            {BeforeCell(e, e.VoltageBefore, "V", volts)}
+            <td class="number">{Number(e.VoltageAfter, "V", volts)}</td>
+            {BeforeCell(e, e.CurrentBefore, "A", amperes)}
+            <td class="number">{Number(e.CurrentAfter, "A", amperes)}</td></tr>
 
             """));
         return Markup.Of($"""
@@ -44,9 +45,9 @@ public static partial class HtmlReport
             """);
     }
 
-    private static Markup BeforeCell(EventResult e, double? value, string unit) => value is null
+    private static Markup BeforeCell(EventResult e, double? value, string unit, double scale) => value is null
         ? Markup.Of($"<td class=\"number unknown\">{Before(e, value, unit)}</td>")
-        : Markup.Of($"<td class=\"number\">{Number(value, unit)}</td>");
+        : Markup.Of($"<td class=\"number\">{Number(value, unit, scale)}</td>");
 
     private static Markup Remark(EventResult e) =>
         e.Remark is { } remark ? Markup.Of($"<br><span class=\"aside\">{remark}</span>") : default;

@@ -57,7 +57,7 @@ internal static class SpreadJumps
     /// <summary>The jumps of figures and ring crests that take over, on the terminal.</summary>
     public static void Write(SummaryText text, SpreadResult spread)
     {
-        var jumps = spread.Jumps.Jumps;
+        var jumps = Apart(spread);
         var told = jumps.Where(jump => jump.IsOfValue || jump.Ring is not null).Take(MostInSummary).ToArray();
         if (told.Length == 0)
         {
@@ -76,11 +76,24 @@ internal static class SpreadJumps
         }
     }
 
+    /// <summary>The jumps, one of a required figure and the same of the figure itself as one.</summary>
+    private static EdgeJump[] Apart(SpreadResult spread) =>
+    [
+        .. spread.Jumps.Jumps.DistinctBy(jump =>
+        {
+            var range = spread.Figures[jump.Figure];
+            var value = spread.Varied.Values[jump.Value];
+            return (SpreadWords.Measured(spread, range), jump.IsOfValue, jump.Value,
+                Number(jump.Place, value.Unit) + Others(spread, jump),
+                Reached(spread, range, jump.ValueBefore), Reached(spread, range, jump.ValueAfter));
+        }),
+    ];
+
     /// <summary>The jumps on the page.</summary>
     public static Markup Section(SpreadResult spread)
     {
         var jumps = spread.Jumps;
-        var items = jumps.Jumps.Select(jump => Markup.Of($"<li>{Markup.Name(Words(spread, jump))}</li>\n"));
+        var items = Apart(spread).Select(jump => Markup.Of($"<li>{Markup.Name(Words(spread, jump))}</li>\n"));
         return jumps.Jumps.IsEmpty ? default : Markup.Of($"""
             <h3>Jumps between neighbouring corners</h3>
             <ul>

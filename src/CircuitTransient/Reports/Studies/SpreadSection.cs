@@ -69,7 +69,7 @@ public static class SpreadSection
 
         var range = spread.Figures[worst.Figure];
         var when = worst.Point.Time is { } time ? $" {InstantWords.At(worst.Result, time)}" : "";
-        var used = double.IsFinite(worst.Used) ? $", {Percent(worst.Used)} of what is allowed" : "";
+        var used = SpreadWords.Used(spread, worst);
         var reached =
             SpreadWords.Reached(spread, range.Figure, worst.Point.Value, worst.Point.Reached);
         var why = SpreadWords.Why(spread, range, worst.Point)

@@ -78,7 +78,7 @@ public static partial class SpreadSummary
         if (spread.Worst is { } worst)
         {
             var range = spread.Figures[worst.Figure];
-            var used = double.IsFinite(worst.Used) ? $", {Percent(worst.Used)} of what is allowed" : "";
+            var used = SpreadWords.Used(spread, worst);
             var reached = SpreadWords.Reached(spread, range.Figure, worst.Point.Value, worst.Point.Reached);
             var when = worst.Point.Time is { } time ? $" {InstantWords.At(worst.Result, time)}" : "";
             text.Heading("The worst case");
@@ -128,17 +128,24 @@ public static partial class SpreadSummary
             text.Paragraph($"and {observed.Length - MostFigures} more, in spread.json");
         }
 
+        var told = new HashSet<(string, bool, string, string)>();
+        if (spread.Worst is { } worst)
+        {
+            told.UnionWith(worst.Point.Jumps.Select(j => Key(spread, spread.Figures[worst.Figure], j)));
+        }
+
         foreach (var range in spread.Figures)
         {
-            WriteJumps(text, spread, range, range.Least, "its least value");
-            WriteJumps(text, spread, range, range.Greatest, "its greatest value");
+            WriteJumps(text, spread, range, range.Least, "its least value", told);
+            WriteJumps(text, spread, range, range.Greatest, "its greatest value", told);
         }
     }
 
     /// <summary>Jumps of a figure, and those of the instant at which a judged one is worst; those of the
-    /// worst case have been told.</summary>
+    /// worst case have been told, and one of a required figure where the figure's own was.</summary>
     private static void WriteJumps(
-        SummaryText text, SpreadResult spread, FigureRange range, ExtremePoint? point, string to)
+        SummaryText text, SpreadResult spread, FigureRange range, ExtremePoint? point, string to,
+        HashSet<(string Measured, bool IsOfValue, string Jump, string Place)> told)
     {
         if (point is null || point == spread.Worst?.Point)
         {
@@ -148,10 +155,24 @@ public static partial class SpreadSummary
         foreach (var jump in point.Jumps
             .Where(j => j.IsOfValue || (point == range.Worst && range.Holds is not null)))
         {
-            text.Paragraph(
-                $"{SpreadWords.Name(spread, range.Figure)}: {SpreadWords.Jump(range.Figure, jump, to)}",
-                hanging: 2);
+            if (told.Add(Key(spread, range, jump)))
+            {
+                text.Paragraph(
+                    $"{SpreadWords.Name(spread, range.Figure)}: {SpreadWords.Jump(spread, range, jump, to)}",
+                    hanging: 2);
+            }
         }
+    }
+
+    /// <summary>By which a jump of a required figure is the same as that of the figure.</summary>
+    private static (string Measured, bool IsOfValue, string Jump, string Place) Key(
+        SpreadResult spread, FigureRange range, FigureJump jump)
+    {
+        var ends = jump.IsOfValue
+            ? SpreadWords.Quantity(spread, range, jump.ValueBefore)
+                + $" to {SpreadWords.Quantity(spread, range, jump.ValueAfter)}"
+            : $"{Number(jump.TimeBefore, "s")} to {Number(jump.TimeAfter, "s")}";
+        return (SpreadWords.Measured(spread, range), jump.IsOfValue, ends, Percent(jump.Place));
     }
 
     private static string Between(SpreadResult spread, FigureRange range) =>

@@ -16,8 +16,9 @@ internal static partial class SpreadWords
             case StudyFigureKind.Margin when value is { } margin && double.IsInfinity(margin):
                 return "no finite value";
             case StudyFigureKind.Margin:
-                return reached is { } quantity
-                    ? Number(quantity, figure.Unit)
+                return reached is { } quantity ? Number(quantity, figure.Unit)
+                    : value is { } known && AtMargin(spread, figure, known, null) is { } told
+                    ? Number(told, figure.Unit)
                     : $"a margin of {Number(value, figure.Unit)}";
             case StudyFigureKind.RatingUsed:
                 var rating = Rating(spread, figure);
@@ -41,18 +42,20 @@ internal static partial class SpreadWords
             return Reached(spread, range.Figure, value, null);
         }
 
-        var sign = Math.Sign(range.Worst?.Reached ?? 1);
-        double? reached = spread.Varied.Circuit.Requirements[range.Figure.Index].Bound switch
-        {
-            Limits { Lower: null, Upper: { } upper } => upper - value,
-            Limits { Lower: { } lower, Upper: null } => lower + value,
-            Limits { Lower: { } lower, Upper: { } upper } when lower == -upper => sign * (upper - value),
-            _ => null,
-        };
-        return reached is { } quantity
+        return AtMargin(spread, range.Figure, value, Math.Sign(range.Worst?.Reached ?? 1)) is { } quantity
             ? Number(quantity, range.Figure.Unit)
             : $"{Number(value, range.Figure.Unit)} to spare";
     }
+
+    /// <summary>The quantity at a margin; null where its bound does not tell that.</summary>
+    private static double? AtMargin(SpreadResult spread, StudyFigure figure, double margin, int? sign) =>
+        spread.Varied.Circuit.Requirements[figure.Index].Bound switch
+        {
+            Limits { Lower: null, Upper: { } upper } => upper - margin,
+            Limits { Lower: { } lower, Upper: null } => lower + margin,
+            Limits { Lower: { } lower, Upper: { } upper } when lower == -upper => sign * (upper - margin),
+            _ => null,
+        };
 
     /// <summary>The verdict on a judged figure over all tolerances.</summary>
     public static string Held(SpreadResult spread, FigureRange range)
@@ -97,7 +100,7 @@ internal static partial class SpreadWords
 
         foreach (var jump in point.Jumps)
         {
-            yield return Jump(range.Figure, jump, "that point");
+            yield return Jump(spread, range, jump, "that point");
         }
     }
 
@@ -157,17 +160,38 @@ internal static partial class SpreadWords
     }
 
     /// <summary>A jump in words.</summary>
-    /// <param name="figure">What jumps.</param>
+    /// <param name="spread">The study.</param>
+    /// <param name="range">What jumps.</param>
     /// <param name="jump">How.</param>
     /// <param name="to">What lies at the end of the way.</param>
-    public static string Jump(StudyFigure figure, FigureJump jump, string to)
+    public static string Jump(SpreadResult spread, FigureRange range, FigureJump jump, string to)
     {
-        var unit = figure.Kind == StudyFigureKind.RatingUsed ? "" : figure.Unit;
         var where = $"{Percent(jump.Place)} of the way from nominal to {to}";
         return jump.IsOfValue
-            ? $"it jumps from {Number(jump.ValueBefore, unit)} to {Number(jump.ValueAfter, unit)} at {where}"
+            ? $"it jumps from {Quantity(spread, range, jump.ValueBefore)} to "
+                + $"{Quantity(spread, range, jump.ValueAfter)} at {where}"
             : $"its instant jumps from {Number(jump.TimeBefore, "s")} to {Number(jump.TimeAfter, "s")} at "
                 + $"{where}: another crest takes over";
+    }
+
+    /// <summary>What is judged or observed, by which a requirement on an observed figure is the same as that
+    /// figure.</summary>
+    public static string Measured(SpreadResult spread, FigureRange range) =>
+        range.Figure.Kind != StudyFigureKind.Margin ? range.Figure.Name
+        : spread.Figures.Select(f => f.Figure)
+            .Where(f => f.Kind == StudyFigureKind.Reading && f.Unit == range.Figure.Unit
+                && Name(spread, range.Figure).StartsWith(f.Name + " ", StringComparison.Ordinal))
+            .MaxBy(f => f.Name.Length)?.Name ?? range.Figure.Name;
+
+    /// <summary>How much of what is allowed the worst case takes, to follow its value; empty where that has
+    /// no meaning: a lower bound allows no share.</summary>
+    public static string Used(SpreadResult spread, WorstCase worst)
+    {
+        var figure = spread.Figures[worst.Figure].Figure;
+        var isMeant = double.IsFinite(worst.Used) && (figure.Kind != StudyFigureKind.Margin
+            || spread.Varied.Circuit.Requirements[figure.Index].Bound is SettlesTo
+                or Limits { Lower: null, Upper: > 0 } or Limits { Lower: < 0, Upper: > 0 });
+        return isMeant ? $", {Percent(worst.Used)} of what is allowed" : "";
     }
 
     private static double Step(ExtremePoint point, int value) => double.IsFinite(point.Returns[value])

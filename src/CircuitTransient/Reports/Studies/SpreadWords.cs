@@ -39,20 +39,15 @@ internal static partial class SpreadWords
                 + ".";
         }
 
-        string[] said =
-        [
-            .. new[]
-            {
-                Tally(required, "requirement", "is broken", "are broken"),
-                Tally(rated, "rating", "is exceeded", "are exceeded"),
-                unsolvable,
-                doubt,
-            }.Where(words => words.Length > 0),
-        ];
-        var opening = spread.AllHold ? "Holds with every tolerance"
-            : !spread.Nominal.AllHold ? "Does not hold even with every value nominal"
-            : "Does not hold with every tolerance";
-        return $"{opening}: {string.Join("; ", said)}.";
+        string[] tallies = [.. Tallies(required, rated, f => f.Holds == false)];
+        var said = string.Join("; ", tallies.Concat([unsolvable, doubt]).Where(words => words.Length > 0));
+        string[] nominally = [.. Tallies(required, rated, IsBrokenNominally)];
+        var isBroken = required.Concat(rated).Any(IsBrokenNominally);
+        return spread.AllHold ? $"Holds with every tolerance: {said}."
+            : spread.Nominal.AllHold || !isBroken ? $"Does not hold with every tolerance: {said}."
+            : nominally.SequenceEqual(tallies) ? $"Does not hold even with every value nominal: {said}."
+            : $"Does not hold even with every value nominal, where {string.Join(" and ", nominally)}; over "
+                + $"the tolerances {said}.";
     }
 
     /// <summary>What was solved, and what of it is proven.</summary>
@@ -217,9 +212,22 @@ internal static partial class SpreadWords
     /// <summary>A number and its noun.</summary>
     public static string Count(long count, string noun) => count == 1 ? $"one {noun}" : $"{count:N0} {noun}s";
 
-    private static string Tally(ImmutableArray<FigureRange> figures, string noun, string one, string many)
+    private static bool IsBrokenNominally(FigureRange range) =>
+        !Judgement.Holds(range.Figure, range.Nominal ?? double.NaN);
+
+    private static IEnumerable<string> Tallies(
+        ImmutableArray<FigureRange> required, ImmutableArray<FigureRange> rated,
+        Func<FigureRange, bool> isBroken) => new[]
+        {
+            Tally(required, isBroken, "requirement", "is broken", "are broken"),
+            Tally(rated, isBroken, "rating", "is exceeded", "are exceeded"),
+        }.Where(words => words.Length > 0);
+
+    private static string Tally(
+        ImmutableArray<FigureRange> figures, Func<FigureRange, bool> isBroken, string noun, string one,
+        string many)
     {
-        var broken = figures.Count(f => f.Holds == false);
+        var broken = figures.Count(isBroken);
         return (broken, figures.Length) switch
         {
             (_, 0) => "",

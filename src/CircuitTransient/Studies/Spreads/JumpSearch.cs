@@ -8,6 +8,9 @@ internal sealed class JumpSearch(PointBatch batch, double[] nominal)
     private const int Halvings = 30;
     private const double Share = 1e-2; // of the whole change along the line: less is not worth a word
     private const double Rounding = 1e-7; // of the figure or the instant
+    private const double Alike = 1e-9; // places on the way are known to 2^-35
+    private const double Aside = 1.0 / 256; // how far from the jump of an instant slopes are taken
+    private const double Kink = 1e-3; // of the steeper slope: less is none
 
     /// <summary>The jumps of one figure on the way to a point; at most one of its value and one of its
     /// instant, the largest.</summary>
@@ -28,10 +31,34 @@ internal sealed class JumpSearch(PointBatch batch, double[] nominal)
             yield return ofValue;
         }
 
-        if (ofTime is not null && Stays(ofTime.TimeBefore, ofTime.TimeAfter, times))
+        // Where the figure itself jumps, its instant goes along.
+        if (ofTime is not null && Stays(ofTime.TimeBefore, ofTime.TimeAfter, times)
+            && !(Math.Abs((ofValue?.Place - ofTime.Place) ?? 1) < Alike)
+            && IsKink(figure, point, ofTime.Place))
         {
             yield return ofTime with { IsOfValue = false };
         }
+    }
+
+    /// <summary>Whether the figure has a kink at a place: on a level stretch of a waveform, where the instant
+    /// of its peak is any, it has none.</summary>
+    private bool IsKink(int figure, double[] point, double place)
+    {
+        var step = Math.Min(Aside, Math.Min(place, 1 - place) / 3);
+        if (step < Aside / 100)
+        {
+            return false;
+        }
+
+        double[] places = [-2.5, -1.5, -0.5, 0.5, 1.5, 2.5];
+        var found = batch.At([.. places.SelectMany(p => Between(point, place + (p * step)))]);
+        var v = places.Select((_, i) => found.Value(i, figure)).ToArray();
+
+        // Of the parabolas through the three points on either side.
+        var before = (2 * v[2]) - (3 * v[1]) + v[0];
+        var after = (3 * v[4]) - (2 * v[3]) - v[5];
+        return Math.Abs(after - before) > Kink * Math.Max(Math.Abs(before), Math.Abs(after))
+            && Math.Abs(after - before) > Rounding * step * Math.Abs(v[2]);
     }
 
     private double[] Between(double[] point, double place) =>
