@@ -108,16 +108,21 @@ internal sealed partial class PlotPanel
             _ => 0,
         };
         shapes.Add(new DiscShape(x, y, 4, PlotStyle.Ink));
-        shapes.Add(
-            new TextShape(
-                x + shift,
-                PeakLabelPlace(y, isMax),
-                text,
-                Small,
-                PlotStyle.Ink,
-                anchor,
-                IsStrong: true,
-                HasHalo: true));
+        var place = PeakLabelPlace(y, isMax);
+        var label = new TextShape(
+            x + shift, place, text, Small, PlotStyle.Ink, anchor, IsStrong: true, HasHalo: true);
+
+        // A limit's line close by would strike it through: then it goes past that line.
+        const double near = 20;
+        var room = new LabelRoom(fonts, Left, PlotTop, Right, PlotBottom);
+        room.Avoid(shapes.Where(s =>
+            s is TextShape || (s is LineShape line && ReferenceEquals(line.Stroke, LimitStroke))));
+        shapes.Add(room.Place(
+            [
+                label,
+                .. LimitPlaces().Where(at => Math.Abs(at - place) < near)
+                    .Select(at => label with { Y = isMax ? at - 5 : at + 14 }),
+            ]));
     }
 
     // Past the lines of the causes where they run close by, so that the label hides none of them.
@@ -132,43 +137,48 @@ internal sealed partial class PlotPanel
         return isMax ? Math.Max(lines.Min() - 9, PlotTop + 12) : Math.Min(lines.Max() + 18, PlotBottom - 4);
     }
 
+    private static readonly Stroke LimitStroke = new(PlotStyle.Limit, 1.2, [8, 4]);
+
+    private IEnumerable<double> LimitPlaces() =>
+        limits.Select(limit => level.Place(limit.Value)).Where(y => y >= PlotTop && y <= PlotBottom);
+
     private void AddLimits()
     {
         foreach (var limit in limits)
         {
             var y = level.Place(limit.Value);
-            var (x1, x2) = (
-                time.Place(Math.Max(limit.From, window.From)),
-                time.Place(Math.Min(limit.To, window.To)));
-            if (y < PlotTop || y > PlotBottom)
+            if (y >= PlotTop && y <= PlotBottom)
             {
-                var (edge, words) = y < PlotTop ? (PlotTop + 14, "above") : (PlotBottom - 6, "below");
-                var note = $"{limit.Words}: {words} this panel";
-                shapes.Add(
-                    new TextShape(
-                        Right - 6,
-                        edge,
-                        note,
-                        Small,
-                        PlotStyle.Limit,
-                        TextAnchor.End,
-                        HasHalo: true));
-                continue;
+                shapes.Add(new LineShape(LimitStart(limit), y, LimitEnd(limit), y, LimitStroke));
             }
-
-            shapes.Add(new LineShape(x1, y, x2, y, new Stroke(PlotStyle.Limit, 1.2, [8, 4])));
-            var isAbove = limit.Words.StartsWith("at most", StringComparison.Ordinal);
-            var place = isAbove ? y - 5 : y + 14;
-            shapes.Add(
-                new TextShape(
-                    x2 - 6,
-                    place,
-                    limit.Words,
-                    Small,
-                    PlotStyle.Limit,
-                    TextAnchor.End,
-                    HasHalo: true));
         }
+    }
+
+    private double LimitStart(PlotLimit limit) => time.Place(Math.Max(limit.From, window.From));
+
+    private double LimitEnd(PlotLimit limit) => time.Place(Math.Min(limit.To, window.To));
+
+    // Where they cover no peak's label: at the right end of their line, else along it.
+    private void AddLimitWords()
+    {
+        var room = new LabelRoom(fonts, Left, PlotTop, Right, PlotBottom);
+        room.Avoid(shapes.Where(s => s is TextShape or DiscShape));
+        foreach (var limit in limits)
+        {
+            var y = level.Place(limit.Value);
+            var isAbove = limit.Words.StartsWith("at most", StringComparison.Ordinal);
+            var label = y < PlotTop ? Words($"{limit.Words}: above this panel", Right - 6, PlotTop + 14)
+                : y > PlotBottom ? Words($"{limit.Words}: below this panel", Right - 6, PlotBottom - 6)
+                : Words(limit.Words, LimitEnd(limit) - 6, isAbove ? y - 5 : y + 14);
+            var start = (y < PlotTop || y > PlotBottom ? Left : LimitStart(limit)) + 6;
+            shapes.Add(room.Place(
+                label,
+                label with { X = start, Anchor = TextAnchor.Start },
+                label with { X = (start + label.X) / 2, Anchor = TextAnchor.Middle }));
+        }
+
+        static TextShape Words(string text, double x, double y) =>
+            new(x, y, text, Small, PlotStyle.Limit, TextAnchor.End, HasHalo: true);
     }
 
     // The height that the labels of events need above the plot; their places are found on the way.

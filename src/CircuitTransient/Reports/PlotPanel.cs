@@ -65,6 +65,7 @@ internal sealed partial class PlotPanel
         panel.AddLimits();
         panel.AddLines();
         panel.AddPeaks();
+        panel.AddLimitWords();
         return (panel.shapes.ToImmutable(), panel.PlotBottom + 40 - top);
     }
 

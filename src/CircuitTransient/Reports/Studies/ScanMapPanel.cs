@@ -168,7 +168,11 @@ internal sealed class ScanMapPanel
         var middles = Middles();
         var levels = new PlotScale(finite.Min(), finite.Max(), 0, 1).Ticks(Unit, 7).Marks;
         var step = levels.Length > 1 ? levels[1].Value - levels[0].Value : finite.Max() - finite.Min();
-        foreach (var (level, _) in levels)
+        var limit = line?.Of(0) ?? (finding.Figure.Kind == StudyFigureKind.RatingUsed ? 100 : double.NaN);
+
+        // Where the limit is one of the levels, the exact line of breaks stands there already.
+        var drawn = levels.Where(l => finding.Breaks.IsEmpty || !(Math.Abs(l.Value - limit) < 1e-9 * step));
+        foreach (var (level, _) in drawn)
         {
             foreach (var (a, b) in MapLines.Equal(values, middles, level, step))
             {

@@ -21,7 +21,11 @@ public static class SizeSection
             <div class="wide"><figure
             class="picture">{HtmlReport.Themed(SizePlot.Draw(result, fonts))}</figure></div>
             <p class="aside">{Markup.Join(notes)}All points stand in size.csv and size.json. {circuit}</p>
-            """));
+            """))
+        {
+            Headline = SizeWords.Verdict(result),
+            Shown = result.Chosen is null ? "As written" : "With the proposed values",
+        };
     }
 
     private static Markup Doubts(SizeResult result) =>
