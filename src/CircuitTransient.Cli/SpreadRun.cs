@@ -65,8 +65,12 @@ public sealed class SpreadRun(
         var varied = VariedCircuit.Of(nominal.Circuit, [new EveryTolerance()], reading.ReadBeside);
         if (varied.Value is not { Values.IsEmpty: false } values)
         {
-            streams.Complain($"{file}: no value has a tolerance, so there is nothing to spread; "
-                + "write one after a value, such as `82 Ω ±10 %`");
+            var hasAny = nominal.Circuit.Parameters.Any(p => p.Tolerance is { } t && t.Highest > t.Lowest);
+            streams.Complain(hasAny
+                ? $"{file}: every value that has a tolerance stays at its nominal value, so there is nothing "
+                    + "to spread; `check` says where"
+                : $"{file}: no value has a tolerance, so there is nothing to spread; "
+                    + "write one after a value, such as `82 Ω ±10 %`");
             return ExitStatus.Mistake;
         }
 

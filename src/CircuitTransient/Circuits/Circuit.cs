@@ -52,6 +52,9 @@ public sealed record Parameter(
 
     /// <summary>Whether it is a named value, not a part's.</summary>
     public bool IsNamedValue { get; init; }
+
+    /// <summary>Whether it is a named value from which nothing in the circuit follows.</summary>
+    public bool IsUsedNowhere { get; init; }
 }
 
 /// <summary>The range of a value: absolute limits in SI, and the distribution between them.</summary>

@@ -101,7 +101,8 @@ public static class CircuitChecker
         CheckTopology(state, settings, couplings);
         return new Circuit(
             state.Findings.Source, settings.Title, settings.Notes, state.Nodes.Names,
-            [.. state.Parts.OfType<Part>()], couplings, state.Parameters.ToImmutable(), observations,
+            [.. state.Parts.OfType<Part>()], couplings,
+            UnusedValues.Check(state, state.Parameters.ToImmutable()), observations,
             requirements.ToImmutable(), settings.StartsSettled, until);
     }
 

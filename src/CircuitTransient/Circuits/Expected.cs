@@ -23,13 +23,18 @@ internal static class Expected
     /// <summary>The nominal value of one that cannot vary here.</summary>
     public static double Fixed(CheckState state, ExpressionSyntax expression, Evaluated value)
     {
-        if (state.Parameters.FirstToleranced(value.Formula) is { } held)
-        {
-            state.Findings.Warn(expression.Span, $"`{held.Name}` is held at its nominal value here",
-                "its tolerance is drawn in part values, charges, currents and levels of waves only");
-        }
-
+        WarnHeld(state, expression.Span, value.Formula);
         return value.Value;
+    }
+
+    /// <summary>Says that a tolerance is not drawn at a place that cannot vary.</summary>
+    public static void WarnHeld(CheckState state, TextSpan span, Formula? formula)
+    {
+        if (state.Parameters.FirstToleranced(formula) is { } held)
+        {
+            state.Findings.Warn(span, $"`{held.Name}` is held at its nominal value here",
+                "its tolerance is drawn in part values, wave levels, switching instants and windows only");
+        }
     }
 
     /// <summary>A fraction written in per cent.</summary>

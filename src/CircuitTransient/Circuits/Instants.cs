@@ -33,20 +33,28 @@ internal static class Instants
             return null;
         }
 
-        if (syntax is TimeValueSyntax { Time: var expression }
-            && state.Evaluator.Evaluate(expression, scope) is { } value)
-        {
-            Expected.Fixed(state, expression, value);
-        }
-
         if (Schedule.Resolve(instant, state.Parts) is { } seconds)
         {
+            WarnHeld(state, syntax, instant);
             return seconds;
         }
 
         state.Findings.Error(syntax.Span, "a wave cannot wait for an event whose instant the answer decides",
             "give the wave a time, or let the switch act at one");
         return null;
+    }
+
+    // A wave stays where it is though the switch it waits for is drawn.
+    private static void WarnHeld(CheckState state, TimeSyntax syntax, Instant instant)
+    {
+        Expected.WarnHeld(state, syntax.Span, instant.Delay.Formula);
+        while (instant.After is { } after
+            && state.Parts[after.Part] is Switch waited
+            && waited.Events[after.Event].Trigger is AtInstant { Instant: var earlier })
+        {
+            instant = earlier;
+            Expected.WarnHeld(state, syntax.Span, instant.Delay.Formula);
+        }
     }
 
     /// <summary>A fixed instant in words, or in the words of the event it waits for.</summary>

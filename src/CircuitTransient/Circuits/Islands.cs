@@ -9,6 +9,9 @@ internal static class Islands
     private const int MostNamed = 4;
     private const int MostCompared = 20; // comparing every name with every other would take minutes
 
+    // What others call the conductor that voltages count from; common practice, no source.
+    private static readonly string[] ReferenceWords = ["0", "gnd", "ground", "earth", "com", "common"];
+
     public static void Check(CheckState state, TextSpan referenceSpan)
     {
         if (state.Findings.LacksParts)
@@ -75,10 +78,16 @@ internal static class Islands
             var only = state.Nodes.TouchOf(node).FirstPart;
             var nearest = ++told <= MostCompared ? state.Nodes.NearestTo(node) : null;
             state.Findings.Warn(touch.Span, $"only `{only}` touches the node `{state.Nodes[node]}`",
-                nearest is null ? "join another part to it, unless it is meant to hang open"
+                IsReferenceMeant(state.Nodes, node, nearest)
+                    ? $"did you mean `{state.Nodes.Reference}`, the reference?"
+                    : nearest is null ? "join another part to it, unless it is meant to hang open"
                     : $"did you mean `{nearest}`?");
         }
     }
+
+    private static bool IsReferenceMeant(NodeTable nodes, int node, string? nearest) =>
+        nearest == nodes.Reference
+        || (nearest is null && ReferenceWords.Contains(nodes[node], StringComparer.OrdinalIgnoreCase));
 
     private static string List(PartDeclaration[] parts)
     {

@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
@@ -23,6 +24,9 @@ internal sealed class NamedValues
     }
 
     public ExpressionEvaluator Evaluator { get; }
+
+    /// <summary>Names that stand where a part's value is a marking code: a warning says so there.</summary>
+    public HashSet<string> TakenForCodes { get; } = new(StringComparer.Ordinal);
 
     public bool IsKnown(string name) => table.TryGet(name, out _);
 
@@ -73,10 +77,44 @@ internal sealed class NamedValues
     public Evaluated? Find(NameSyntax name, Scope scope)
     {
         var written = scope.Written(name, findings);
-        return table.TryGet(scope.Prefix + written, out var inner) ? Evaluate(inner)
+        return table.TryGet(scope.Prefix + written, out var inner) ? Use(inner)
             : table.Find(written, name.Span, out var outer, $"define it: `value {written} : …`")
-            ? Evaluate(outer)
+            ? Use(outer)
             : null;
+    }
+
+    /// <summary>The values that nothing but other such values is made of, in the order written.</summary>
+    public ImmutableArray<(string Name, TextSpan Span, string? Unit)> Unused()
+    {
+        var all = table.Names.Select(name => table.TryGet(name, out var d) ? d : null).OfType<Definition>()
+            .ToArray();
+        var used = new HashSet<Definition>();
+        var open = new Stack<Definition>(all.Where(d => d.IsUsed));
+        while (open.TryPop(out var definition))
+        {
+            if (used.Add(definition))
+            {
+                definition.Parts.ForEach(open.Push);
+            }
+        }
+
+        return [.. all.Where(d => !used.Contains(d)).Select(d => (
+            d.Name, d.Span, d.Result is { } result ? Measure.Of(result.Dimension).Unit : null))];
+    }
+
+    // What another value is made of is used only where that one is.
+    private Evaluated? Use(Definition definition)
+    {
+        if (inProgress is [.., var maker])
+        {
+            maker.Parts.Add(definition);
+        }
+        else
+        {
+            definition.IsUsed = true;
+        }
+
+        return Evaluate(definition);
     }
 
     private Evaluated? Evaluate(Definition definition)
@@ -163,6 +201,10 @@ internal sealed class NamedValues
         public Scope Scope => scope;
 
         public (ToleratedSyntax Value, Scope Scope)? Own { get; init; }
+
+        public bool IsUsed { get; set; }
+
+        public List<Definition> Parts { get; } = [];
 
         public bool IsDone { get; set; }
 

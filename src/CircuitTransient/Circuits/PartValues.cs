@@ -96,6 +96,7 @@ internal static class PartValues
                 $"`{mark}` is read as the marking code of {Amount.Of(marked, measure.Unit)}, not as the "
                     + $"named value",
                 "give the named value another name");
+            state.Values.TakenForCodes.Add(mark);
         }
 
         return new Evaluated(marked, dimension);

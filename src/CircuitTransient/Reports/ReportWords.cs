@@ -41,6 +41,11 @@ internal static class ReportWords
     public static string Signed(double? value, string unit, double scale) =>
         value is { } number && IsRounding(number, scale) ? Number(0, unit) : Signed(value, unit);
 
+    /// <summary>How many there are, <c>3,290</c>; a power of ten where nobody would read the digits, which a
+    /// double does not hold either.</summary>
+    public static string Count(double count) =>
+        count.ToString(count < 1e15 ? "N0" : "0.#e0", CultureInfo.InvariantCulture);
+
     /// <summary>A fraction in per cent.</summary>
     public static string Percent(double fraction)
     {

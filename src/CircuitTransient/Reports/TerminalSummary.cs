@@ -88,6 +88,11 @@ public static partial class TerminalSummary
 
     private static void WriteObservations(SummaryText text, TransientResult result)
     {
+        if (result.Observations.IsEmpty)
+        {
+            return;
+        }
+
         var windows = result.Observations.Select(o => o.Window).Distinct().ToArray();
         var common = windows is [{ } only] ? only : (0, result.Until);
         text.Heading(

@@ -26,12 +26,18 @@ internal static class TargetSearch
         return (part.Name, part.Events[reference.Event].Closes);
     }
 
-    private static ImmutableArray<VariedValue> Toleranced(Circuit circuit) =>
-    [
-        .. Enumerable.Range(0, circuit.Parameters.Length)
-            .Where(i => circuit.Parameters[i].Tolerance is { } t && t.Highest > t.Lowest)
-            .Select(i => Parameter(circuit, i, VariedKind.Parameter)),
-    ];
+    // A value that stays nominal, in a bound say, or is used nowhere would be drawn for nothing.
+    private static ImmutableArray<VariedValue> Toleranced(Circuit circuit)
+    {
+        var read = ReadParameters.Of(circuit);
+        return
+        [
+            .. Enumerable.Range(0, circuit.Parameters.Length)
+                .Where(i => circuit.Parameters[i].Tolerance is { } t && t.Highest > t.Lowest)
+                .Where(read.Contains)
+                .Select(i => Parameter(circuit, i, VariedKind.Parameter)),
+        ];
+    }
 
     private static VariedValue Parameter(Circuit circuit, int index, VariedKind kind)
     {
@@ -49,6 +55,14 @@ internal static class TargetSearch
         {
             if (circuit.Parameters[i] is { IsNamedValue: true } named && named.Owner == name)
             {
+                if (named.IsUsedNowhere)
+                {
+                    var (source, span) = Place(target, name);
+                    return ([], Diagnostic.Error(
+                        source, span, UnusedValues.Headline(name),
+                        UnusedValues.Advice(name, named.Unit, circuit.Parameters)));
+                }
+
                 return ([Parameter(circuit, i, VariedKind.NamedValue) with { Name = name }], null);
             }
         }
@@ -193,11 +207,15 @@ internal static class TargetSearch
         StudyTarget target, string name, string headline, IReadOnlyList<string> known,
         string? otherwise = null)
     {
-        var source = target.Written ?? new SourceText("the study", name);
-        var span = target.Written is null ? new TextSpan(0, name.Length) : target.Span;
+        var (source, span) = Place(target, name);
         var advice = NearestName.Find(name, known) is { } nearest ? $"did you mean `{nearest}`?"
             : known.Count == 0 ? otherwise
             : $"there are {string.Join(", ", known.Take(10).Select(k => $"`{k}`"))}";
         return ([], Diagnostic.Error(source, span, headline, advice));
     }
+
+    private static (SourceText Source, TextSpan Span) Place(StudyTarget target, string name) =>
+        target.Written is { } written
+            ? (written, target.Span)
+            : (new SourceText("the study", name), new TextSpan(0, name.Length));
 }

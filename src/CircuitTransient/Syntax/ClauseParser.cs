@@ -49,9 +49,17 @@ internal static class ClauseParser
 
         var isClause = Words.Contains(cursor.Shown(token));
         cursor.Error(token.Span, $"`{cursor.Shown(token)}` is left over behind what the statement says",
-            isClause ? $"put a comma before it: `, {cursor.TextOf(token)} …`"
+            ToleranceMeant(cursor) is { } tolerance ? $"write `{tolerance}`"
+                : isClause ? $"put a comma before it: `, {cursor.TextOf(token)} …`"
                 : "clauses follow a comma, comments a `#`, and a statement has its own line");
     }
+
+    /// <summary>The tolerance that <c>tolerance 5 %</c> means; null where something else stands.</summary>
+    private static string? ToleranceMeant(StatementCursor cursor) =>
+        cursor.TextOf(cursor.Current) is "tolerance" or "tol"
+        && cursor.Ahead(1).Kind == TokenKind.Number && cursor.IsSign('%', 2)
+            ? $"±{cursor.Shown(cursor.Ahead(1))} %"
+            : null;
 
     /// <summary>Says that a clause stands where the value should, and goes to the end; false where none
     /// does.</summary>
@@ -95,6 +103,7 @@ internal static class ClauseParser
             "clauses are `charged to`, `carrying`, `rated`, `linear up to`, `closes at`, `opens at`";
         return cursor switch
         {
+            _ when IsActionMisspelt(cursor) => ReportAction(cursor),
             _ when cursor.IsWord("closes") || cursor.IsWord("opens") => SwitchEventParser.Read(cursor),
             _ when cursor.Take("charged") => cursor.Expect("to") && ReadTolerated(cursor) is { } voltage
                 ? new ChargedToSyntax(cursor.SpanFrom(start), voltage)
@@ -119,6 +128,26 @@ internal static class ClauseParser
                 : null,
             _ => ReportUnknown(cursor),
         };
+    }
+
+    // Of `open at` and `open when` the first word is that of `open resistance`, and means an action.
+    private static bool IsActionMisspelt(StatementCursor cursor) =>
+        (cursor.IsWord("close") || cursor.IsWord("closed") || cursor.IsWord("open"))
+        && (cursor.IsWord("at", 1) || cursor.IsWord("when", 1));
+
+    private static ClauseSyntax? ReportAction(StatementCursor cursor)
+    {
+        var word = cursor.Advance();
+        var acts = cursor.TextOf(word).StartsWith("close") ? "closes" : "opens";
+        var rest = cursor.Current.Start;
+        while (!cursor.IsAtEnd && !cursor.IsSign(','))
+        {
+            cursor.Advance();
+        }
+
+        cursor.Error(word.Span, $"`{cursor.TextOf(word)}` stands where `{acts}` should",
+            $"write `{acts} {cursor.Shown(cursor.SpanFrom(rest))}`");
+        return null;
     }
 
     private static ClauseSyntax? ReportUnknown(StatementCursor cursor)

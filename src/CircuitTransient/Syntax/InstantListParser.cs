@@ -54,7 +54,7 @@ public static class InstantListParser
             return null;
         }
 
-        if (NumberParser.Read(cursor) is not { } number)
+        if (ReportListWithoutUnits(cursor) || NumberParser.Read(cursor) is not { } number)
         {
             return null;
         }
@@ -81,5 +81,22 @@ public static class InstantListParser
         }
 
         return number;
+    }
+
+    /// <summary><c>1,2</c>: two instants or a decimal comma, and no unit to tell which.</summary>
+    private static bool ReportListWithoutUnits(StatementCursor cursor)
+    {
+        var (first, second) = (cursor.Current, cursor.Ahead(2));
+        if (!cursor.IsSign(',', 1) || !cursor.IsJoined(1) || second.Kind != TokenKind.Number
+            || !cursor.IsJoined(2) || cursor.Ahead(3).Kind == TokenKind.Word)
+        {
+            return false;
+        }
+
+        cursor.Advance(3);
+        var (a, b) = (cursor.Shown(first), cursor.Shown(second));
+        cursor.Error(cursor.SpanFrom(first.Start), $"`{a},{b}` has no unit; an instant is in seconds",
+            $"write `{a} s, {b} s` for two instants, `{a}.{b} s` for one");
+        return true;
     }
 }

@@ -99,11 +99,29 @@ internal static class StudyParser
 
     private static WindowSyntax? ReadWindow(StatementCursor cursor)
     {
+        if (cursor.IsWord("after") && cursor.Ahead(1).Kind == TokenKind.Number)
+        {
+            ReportAfter(cursor);
+            return null;
+        }
+
         if (!TimeParser.ReadOptional(cursor, "from", out var from))
         {
             return null;
         }
 
         return TimeParser.ReadOptional(cursor, "to", out var to) ? new WindowSyntax(from, to) : null;
+    }
+
+    /// <summary><c>after 1 ms</c>, where a window starts <c>from</c> an instant.</summary>
+    private static void ReportAfter(StatementCursor cursor)
+    {
+        var word = cursor.Advance();
+        var start = cursor.Current.Start;
+        var here = cursor.Here;
+        var isRead = ExpressionParser.ReadInClause(cursor) is not null;
+        var time = isRead ? cursor.Shown(cursor.SpanFrom(start)) : "1 ms";
+        cursor.Return(here);
+        cursor.Error(word.Span, "a window starts `from` an instant, not `after` one", $"write `from {time}`");
     }
 }

@@ -111,8 +111,8 @@ internal static class WaveParser
     {
         if (IsWaveWord(cursor))
         {
-            cursor.Advance();
-            cursor.Form = Forms;
+            var word = cursor.TextOf(cursor.Advance()).ToString();
+            cursor.Form = Meant(cursor, word) is { } meant ? $"write `{meant}`" : Forms;
             cursor.Unexpected("`of` and the rest of the wave");
             return null;
         }
@@ -125,6 +125,31 @@ internal static class WaveParser
         cursor.Form = cursor.IsWord("pulse") || cursor.IsWord("square") ? PulseForms : Forms;
         cursor.Unexpected("the value of the source", WaveWords);
         return null;
+    }
+
+    /// <summary>The wave with the words that are missing: <c>sine of 325 V at 50 Hz</c>; null where it cannot
+    /// be told.</summary>
+    private static string? Meant(StatementCursor cursor, string word)
+    {
+        var here = cursor.Here;
+        var level = ExpressionParser.ReadProduct(cursor);
+        var isRead = level is not null && here.Errors == cursor.Here.Errors;
+        var rest = cursor.Current;
+        while (!cursor.IsAtEnd && !cursor.IsSign(','))
+        {
+            cursor.Advance();
+        }
+
+        var behind = cursor.LastEnd > rest.Start ? " " + cursor.Shown(cursor.SpanFrom(rest.Start)) : "";
+        cursor.Return(here);
+        if (!isRead || word is "straight" or "double" or "rectangular" || behind.EndsWith('…'))
+        {
+            return null;
+        }
+
+        var whole = word is "pulse" ? "rectangular pulse" : word;
+        var at = word is "sine" or "cosine" && rest.Kind == TokenKind.Number ? " at" : "";
+        return $"{whole} of {cursor.Shown(level!.Span)}{at}{behind}";
     }
 
     private static ConstantSyntax? ReadConstant(StatementCursor cursor)

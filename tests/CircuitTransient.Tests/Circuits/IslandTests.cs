@@ -20,6 +20,31 @@ public class IslandTests
                 capacitor C2 from x to y : 1 µF
                 """));
 
+    [Theory]
+    [InlineData("gnd", "ground")]
+    [InlineData("GND", "ground")]
+    [InlineData("earth", "ground")]
+    [InlineData("0", "ground")]
+    [InlineData("grund", "ground")]
+    [InlineData("gnd", "minus")]
+    [InlineData("ground", "minus")]
+    public void A_loose_node_named_as_others_name_the_reference_is_told_its_name(
+        string name, string reference) =>
+        Assert.Equal(
+            $"""
+            plant.cause:4:19: warning: only `C1` touches the node `{name}`
+              capacitor C1 from {name} to a : 1 µF
+                                {new string('^', name.Length)}
+              → did you mean `{reference}`, the reference?
+            """,
+            Checking.Messages(
+                $"""
+                reference is {reference}
+                source Feed at a : 10 V
+                resistor R1 at a : 1 kΩ
+                capacitor C1 from {name} to a : 1 µF
+                """));
+
     [Fact]
     public void A_large_island_names_four() =>
         Assert.Equal(

@@ -256,7 +256,7 @@ public class RequirementTests
             plant.cause:4:30: warning: `Vdc` is held at its nominal value here
               require voltage of a at most 1.1*Vdc
                                            ^^^^^^^
-              → its tolerance is drawn in part values, charges, currents and levels of waves only
+              → its tolerance is drawn in part values, wave levels, switching instants and windows only
             """,
             Checking.Messages(
                 """

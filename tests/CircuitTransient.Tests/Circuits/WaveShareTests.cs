@@ -12,7 +12,7 @@ public class WaveShareTests
             plant.cause:2:41: warning: `Vdc` is held at its nominal value here
               source Feed at a : straight lines (0 s, Vdc) (1 s, 0 V)
                                                       ^^^
-              → its tolerance is drawn in part values, charges, currents and levels of waves only
+              → its tolerance is drawn in part values, wave levels, switching instants and windows only
             """,
             Checking.Messages(
                 """

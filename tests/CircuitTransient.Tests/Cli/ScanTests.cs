@@ -96,7 +96,8 @@ public sealed class ScanTests : IDisposable
         Scan("--part", "R from 50 mΩ to 1 Ω in 4 steps", "--quiet");
 
         var page = File.ReadAllText(Path.Combine(commandLine.Results, "plant", "report.html"));
-        Assert.Contains("For R everything required and rated", page);
+        Assert.Contains("As written: The requirement is broken;", page);
+        Assert.Contains("Scan: <bdi>For R everything required and rated", page);
         Assert.Contains(
             "circuit-transient scan plant.cause --part &quot;R from 50 mΩ to 1 Ω in 4 steps&quot;", page);
     }

@@ -38,7 +38,8 @@ public sealed class SizeTests : IDisposable
             ["size/report.html", "size/size.csv", "size/size.json", "size/size.png", "size/size.svg"],
             commandLine.Written);
         var page = File.ReadAllText(Path.Combine(commandLine.Results, "size/report.html"));
-        Assert.Contains("with the proposed values", page);
+        Assert.Contains("With the proposed values: The requirement holds; the rating holds.", page);
+        Assert.Contains("Sizing: <bdi>R2 1.2 kΩ: everything holds,", page);
         Assert.Contains("1.2 kΩ", page);
     }
 

@@ -49,6 +49,22 @@ public sealed class SpreadTests : IDisposable
     }
 
     [Fact]
+    public void The_page_says_beside_the_verdict_as_written_that_the_tolerances_break_it()
+    {
+        Spread(Divider, "--draws", "0", "--quiet");
+
+        var page = File.ReadAllText(Path.Combine(commandLine.Results, "divider/report.html"));
+        Assert.Contains(
+            """
+            <h2 id="verdict-heading">Verdict</h2>
+            <p class="lead" id="verdict-words">As written: The requirement holds.</p>
+            <p class="lead study-words">Tolerances: <bdi>Does not hold with every tolerance: \
+            the requirement is broken.</bdi></p>
+            """.Replace("\\\n", "", StringComparison.Ordinal),
+            page);
+    }
+
+    [Fact]
     public void The_document_on_stdout_is_the_one_in_the_folder()
     {
         var run = Spread(Divider, "--draws", "20", "--json");

@@ -7,6 +7,12 @@ namespace CircuitTransient.Tests.Reports;
 public class TerminalSummaryTests
 {
     [Fact]
+    public void Without_observations_there_is_no_heading_for_them() =>
+        Assert.DoesNotContain(
+            "Observed from",
+            TerminalSummary.Write(SampleResults.Inrush() with { Observations = [] }, []));
+
+    [Fact]
     public void No_line_is_wider_than_a_hundred_columns()
     {
         TransientResult[] results = [SampleResults.Inrush(), SampleResults.Awkward(), SampleResults.Bare()];

@@ -38,6 +38,14 @@ public class InstantListParserTests
         "--at:1:6: error: the statement ends where an instant should stand\n  1 ms,\n       ^\n"
         + "  → such as `1 ms, 2.5 ms`")]
     [InlineData(
+        "1,2",
+        "--at:1:1: error: `1,2` has no unit; an instant is in seconds\n  1,2\n  ^^^\n"
+        + "  → write `1 s, 2 s` for two instants, `1.2 s` for one")]
+    [InlineData(
+        "1 ms, 1,2",
+        "--at:1:7: error: `1,2` has no unit; an instant is in seconds\n  1 ms, 1,2\n        ^^^\n"
+        + "  → write `1 s, 2 s` for two instants, `1.2 s` for one")]
+    [InlineData(
         "0,5 ms",
         "--at:1:1: error: `0,5` has a decimal comma; the decimal mark is a point\n  0,5 ms\n  ^^^\n"
         + "  → write `0.5 ms`")]

@@ -105,6 +105,78 @@ public class SlipMessageTests
           → name the value: `value Level : 540 V ±10 %`, and write `Level + sine of 3 V at 50 Hz`
 
         """)]
+    [InlineData(
+        "switch K from a to b : open, close at 5 ms, rated 1 kV",
+        """
+        a.cause:1:30: error: `close` stands where `closes` should
+          switch K from a to b : open, close at 5 ms, rated 1 kV
+                                       ^^^^^
+          → write `closes at 5 ms`
+
+        """)]
+    [InlineData(
+        "switch K from a to b : closed, open when current through L falls below 1 A",
+        """
+        a.cause:1:32: error: `open` stands where `opens` should
+          switch K from a to b : closed, open when current through L falls below 1 A
+                                         ^^^^
+          → write `opens when current through L falls below 1 A`
+
+        """)]
+    [InlineData(
+        "source V at a : sine 325 V 50 Hz",
+        """
+        a.cause:1:22: error: `325` stands where `of` and the rest of the wave should
+          source V at a : sine 325 V 50 Hz
+                               ^^^
+          → write `sine of 325 V at 50 Hz`
+
+        """)]
+    [InlineData(
+        "source V at a : cosine 325 V at 50 Hz phase 30°",
+        """
+        a.cause:1:24: error: `325` stands where `of` and the rest of the wave should
+          source V at a : cosine 325 V at 50 Hz phase 30°
+                                 ^^^
+          → write `cosine of 325 V at 50 Hz phase 30°`
+
+        """)]
+    [InlineData(
+        "source V at a : pulse 24 V from 1 ms to 3 ms",
+        """
+        a.cause:1:23: error: `24` stands where `of` and the rest of the wave should
+          source V at a : pulse 24 V from 1 ms to 3 ms
+                                ^^
+          → write `rectangular pulse of 24 V from 1 ms to 3 ms`
+
+        """)]
+    [InlineData(
+        "resistor R at a : 10 Ω tolerance 5 %, rated 1 W",
+        """
+        a.cause:1:24: error: `tolerance` is left over behind what the statement says
+          resistor R at a : 10 Ω tolerance 5 %, rated 1 W
+                                 ^^^^^^^^^
+          → write `±5 %`
+
+        """)]
+    [InlineData(
+        "value X : 10 Ω tolerance 5 %",
+        """
+        a.cause:1:16: error: `tolerance` is left over behind what the statement says
+          value X : 10 Ω tolerance 5 %
+                         ^^^^^^^^^
+          → write `±5 %`
+
+        """)]
+    [InlineData(
+        "require energy in R at most 1 J after 1 ms",
+        """
+        a.cause:1:33: error: a window starts `from` an instant, not `after` one
+          require energy in R at most 1 J after 1 ms
+                                          ^^^^^
+          → write `from 1 ms`
+
+        """)]
     public void A_slip_is_answered_with_the_edit(string text, string message) =>
         Assert.Equal(message.Replace("\\\n", "", StringComparison.Ordinal), Reading.Messages(text));
 

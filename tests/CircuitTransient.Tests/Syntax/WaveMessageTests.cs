@@ -37,7 +37,7 @@ public class WaveMessageTests
         a.cause:1:30: error: `8` stands where `of` and the rest of the wave should
           source S5 from a to b : step 8 A at 400 ms
                                        ^
-          → a wave is a constant, `step of`, `ramp of`, `sine of`, `impulse of`, `straight lines` or another
+          → write `step of 8 A at 400 ms`
 
         """)]
     [InlineData(

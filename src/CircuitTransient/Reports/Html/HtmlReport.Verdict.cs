@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using CircuitTransient.Measurements;
 using static CircuitTransient.Reports.ReportWords;
 
@@ -6,12 +7,23 @@ namespace CircuitTransient.Reports.Html;
 /// <content>The verdict, and what is used of each limit on one common scale.</content>
 public static partial class HtmlReport
 {
-    private static Markup Verdict(TransientResult result) => Markup.Of($"""
+    private static Markup Verdict(TransientResult result, ImmutableArray<StudySection> sections) =>
+        Markup.Of($"""
         <section id="verdict" aria-labelledby="verdict-heading">
         <h2 id="verdict-heading">Verdict</h2>
-        <p class="lead" id="verdict-words">{TerminalSummary.Verdict(result)}</p>
-        {RequirementTable(result)}{RatingTable(result)}{Doubts(result)}{Warnings(result)}</section>
+        <p class="lead" id="verdict-words">{Shown(sections)}{TerminalSummary.Verdict(result)}</p>
+        {Markup.Join(sections.Select(Headline))}{RequirementTable(result)}{RatingTable(result)}
+        {Doubts(result)}{Warnings(result)}</section>
         """);
+
+    private static string Shown(ImmutableArray<StudySection> sections) =>
+        sections.FirstOrDefault(section => section.Headline is not null) is { } study
+            ? $"{study.Shown}: "
+            : "";
+
+    private static Markup Headline(StudySection section) => section.Headline is { } words
+        ? Markup.Of($"<p class=\"lead study-words\">{section.Title}: {Markup.Name(words)}</p>\n")
+        : default;
 
     private static Markup RequirementTable(TransientResult result)
     {

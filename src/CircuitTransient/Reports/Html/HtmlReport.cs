@@ -41,7 +41,7 @@ public static partial class HtmlReport
             <a class="skip" href="#observations">Skip to the waveforms</a>
             {Head(result, title)}
             <main>
-            {Verdict(result)}
+            {Verdict(result, sections)}
             {Markup.Join(sections.Select((section, index) => Section(section, index)))}
             {Cautions(result)}
             {Events(result, fonts)}

@@ -23,7 +23,7 @@ internal static class ScanDoubt
         {
             ([var axis], _) => Where(axis, result.Linear),
             (_, true) => "throughout",
-            _ => $"at {doubtful} of {result.Points.Length} points",
+            _ => $"at {doubtful:N0} of {result.Points.Length:N0} points",
         }}: {left}";
     }
 

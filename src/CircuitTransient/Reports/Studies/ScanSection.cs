@@ -15,7 +15,10 @@ public static class ScanSection
             {Judged(result)}
             {Picture(result)}
             <p class="aside">{ScanSummary.Searched(result)} All points stand in scan.csv and scan.json.</p>
-            """));
+            """))
+    {
+        Headline = ScanSummary.Verdict(result),
+    };
 
     // Lines follow the reader's colours; the shades of a map are made for white paper and keep it.
     private static Markup Picture(ScanResult result)

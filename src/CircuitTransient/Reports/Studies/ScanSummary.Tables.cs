@@ -125,7 +125,7 @@ public static partial class ScanSummary
         var count = Math.Min(MostRows - 1, result.Points.Length);
         var shown = Enumerable.Range(0, count)
             .Select(k => result.Points[count == 1 ? 0 : k * (result.Points.Length - 1) / (count - 1)]);
-        text.Heading($"Some of the {result.Points.Length} points");
+        text.Heading($"Some of the {result.Points.Length:N0} points");
         text.Table(
             [Right, .. columns.Select(_ => Right)],
             shown.Select(point => ImmutableArray.Create(

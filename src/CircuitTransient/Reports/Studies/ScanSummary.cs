@@ -69,8 +69,8 @@ public static partial class ScanSummary
         if (result.UnsolvedCount > 0)
         {
             said.Add(result.UnsolvedCount == 1
-                ? $"One of {count} points has no solution."
-                : $"{result.UnsolvedCount} of {count} points have no solution.");
+                ? $"One of {count:N0} points has no solution."
+                : $"{result.UnsolvedCount:N0} of {count:N0} points have no solution.");
         }
 
         return string.Join(" ", said);
@@ -103,10 +103,10 @@ public static partial class ScanSummary
             var holding = result.Points.Count(p => p.Found is { } found
                 && judged.All(f => Holds(f.Figure, found.Values[result.Figures.IndexOf(f.Figure)])));
             return holding == result.Points.Length
-                ? $"Everything required and rated holds at all {holding} points of {range}, but breaks "
+                ? $"Everything required and rated holds at all {holding:N0} points of {range}, but breaks "
                     + $"between them{doubt}"
-                : $"Everything required and rated holds at {holding} of {result.Points.Length} points of "
-                    + $"{range}; the lines where it begins to break are in the map{doubt}";
+                : $"Everything required and rated holds at {holding:N0} of {result.Points.Length:N0} points "
+                    + $"of {range}; the lines where it begins to break are in the map{doubt}";
         }
 
         var common = ScanStretches.Common(judged.Select(f => f.Holding));

@@ -78,9 +78,9 @@ public static class SizeJson
                 place => json.WriteStringValue(result.Problem.NameOf(place)));
             json.WriteNumber("corners",
                 result.Request.WithSpread && !result.Problem.Corners.Toleranced.IsEmpty
-                    ? result.Problem.Corners.All.Length
+                    ? result.Account.Count
                     : 0);
-            json.WriteBoolean("everyCorner", result.Problem.Corners.IsComplete);
+            json.WriteBoolean("everyCorner", result.Account.IsComplete);
             json.WriteNumber("inFull", result.Confirmed.Length);
         });
 

@@ -80,9 +80,11 @@ internal sealed class SizeLine
     private void AddRooms()
     {
         var y = Top - 8;
-        for (var i = 0; i < Math.Min(MostShown, result.Problem.Constraints.Length); i++)
+        var shown = SizeBounds.Shown(result, MostShown, _ => true);
+        for (var drawn = 0; drawn < shown.Length; drawn++)
         {
-            var stroke = PlotStyle.Cause(i);
+            var i = shown[drawn];
+            var stroke = PlotStyle.Cause(drawn);
             foreach (var points in Stretches(i))
             {
                 shapes.Add(new PolylineShape(points, stroke));

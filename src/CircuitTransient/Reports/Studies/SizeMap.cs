@@ -119,14 +119,9 @@ internal sealed class SizeMap
         var y = Top + 6;
         shapes.Add(new TextShape(Right + 24, y, "just met on", 11.5, PlotStyle.Grey));
         var drawn = 0;
-        for (var i = 0; i < result.Problem.Constraints.Length; i++)
+        foreach (var i in SizeBounds.Shown(result, MostShown, i => !Contours.Of(result, i).IsEmpty))
         {
             var lines = Contours.Of(result, i);
-            if (lines.IsEmpty || drawn == MostShown)
-            {
-                continue;
-            }
-
             var stroke = PlotStyle.Cause(drawn++) with { Width = 1.6 };
             foreach (var line in lines)
             {

@@ -21,7 +21,11 @@ public static class SizeSection
             <div class="wide"><figure
             class="picture">{HtmlReport.Themed(SizePlot.Draw(result, fonts))}</figure></div>
             <p class="aside">{Markup.Join(notes)}All points stand in size.csv and size.json. {circuit}</p>
-            """));
+            """))
+        {
+            Headline = SizeWords.Verdict(result),
+            Shown = result.Chosen is null ? "As written" : "With the proposed values",
+        };
     }
 
     private static Markup Doubts(SizeResult result) =>
@@ -43,7 +47,7 @@ public static class SizeSection
 
     private static string Exact(SizeResult result) =>
         result is { Request.Series: { } series, Exact: { } exact }
-        ? $"Not bound to {series}, it would be {SizeWords.Values(result, exact)}."
+        ? $"Not bound to {series}, it would be {SizeWords.Values(result, exact)}{SizeWords.Unproven(result)}."
         : "";
 
     private static Markup Margins(SizeResult result) => result.Chosen is { } chosen
@@ -101,7 +105,7 @@ public static class SizeSection
             """));
         return Markup.Of($"""
             <div class="wide"><table>
-            <caption>Every value of {Markup.Name(part.Name)} that holds</caption>
+            <caption>Every value of {Markup.Name(part.Name)} that holds{SizeWords.Unproven(result)}</caption>
             <thead><tr><th scope="col">Values</th><th scope="col">Below</th>
             <th scope="col">Above</th></tr></thead>
             <tbody>

@@ -62,7 +62,8 @@ public static class SizeSummary
         {
             aim = SizeWords.HasOwnAim(result) ? $" ({SizeWords.AimValue(result, exact)})" : "";
             text.Paragraph(
-                $"Not bound to {result.Request.Series}, it would be {SizeWords.Values(result, exact)}{aim}.",
+                $"Not bound to {result.Request.Series}, it would be {SizeWords.Values(result, exact)}{aim}" +
+                $"{SizeWords.Unproven(result)}.",
                 indent: 0);
         }
     }
@@ -133,7 +134,7 @@ public static class SizeSummary
         }
 
         var part = result.Problem.Parts[0];
-        text.Heading($"Every value of {part.Name} that holds");
+        text.Heading($"Every value of {part.Name} that holds{SizeWords.Unproven(result)}");
         foreach (var interval in result.Intervals.Take(MostIntervals))
         {
             text.Paragraph(
@@ -163,7 +164,9 @@ public static class SizeSummary
             .ThenByDescending(point => point.Worst).ToArray();
         var kind = result.Problem.Parts.Length == 1 ? "values" : "pairs of values";
         kind = $"{result.Request.Series} {kind}";
-        text.Heading($"{holding.Length} of {result.Preferred.Length} {kind} hold; the best of them");
+        text.Heading(
+            $"{holding.Length} of {result.Preferred.Length} {kind} hold{SizeWords.OfListed(result)}; " +
+            "the best of them");
         ImmutableArray<TextColumn> columns =
         [
             .. result.Problem.Parts.Select(_ => Right),

@@ -32,7 +32,7 @@ internal static class SizeWords
         if (result.Chosen is { } chosen)
         {
             return result.IsFound
-                ? $"{Values(result, chosen)}: everything holds, {Confirmed(result)}."
+                ? $"{Values(result, chosen)}: everything holds{Confirmed(result)}."
                 : $"{Values(result, chosen)} is not confirmed: a self-check of its full solution failed.";
         }
 
@@ -101,9 +101,9 @@ internal static class SizeWords
     {
         var (point, problem) = (result.AsItStands, result.Problem);
         var tightest = problem.Constraints[Tightest(point)];
-        var corners = result.Request.WithSpread && !problem.Corners.Toleranced.IsEmpty
-            ? " at the corners of its tolerances"
-            : "";
+        var corners = !HasCorners(result) ? ""
+            : result.Account.IsComplete ? " at the corners of its tolerances"
+            : " at the corners of its tolerances that were searched";
         var margin = Margin(tightest, point.Worst);
         var values = Values(result, point);
         return !point.IsSolved ? $"As it stands ({values}) the circuit has no unique solution."
@@ -185,15 +185,35 @@ internal static class SizeWords
         return words.ToImmutable();
     }
 
-    private static string Confirmed(SizeResult result) => result.Request.WithSpread
-        && !result.Problem.Corners.Toleranced.IsEmpty
-        ? $"at {CornerCount(result)} of the tolerances too; confirmed by full solutions with self-checks, " +
-            $"nominal and at the worst corner of each ({result.Confirmed.Length})"
-        : "confirmed by a full solution with its self-checks";
+    private static string Confirmed(SizeResult result) => HasCorners(result)
+        ? $"{Held(result)}; confirmed by full solutions with self-checks, nominal and at the worst " +
+            $"corner of each ({result.Confirmed.Length})"
+        : ", confirmed by a full solution with its self-checks";
 
-    private static string CornerCount(SizeResult result) => result.Problem.Corners.IsComplete
-        ? $"all {result.Problem.Corners.All.Length} corners"
-        : $"{result.Problem.Corners.All.Length} corners";
+    private static string Held(SizeResult result) => result.Account.IsComplete
+        ? $", at all {result.Account.Count} corners of the tolerances too"
+        : $" where it was searched, not proven: at {result.Account.Count} of the " +
+            $"2^{result.Problem.Corners.Toleranced.Length} corners of the tolerances";
+
+    private static bool HasCorners(SizeResult result) =>
+        result.Request.WithSpread && !result.Problem.Corners.Toleranced.IsEmpty;
+
+    /// <summary>What is to be said of stretches and of values of any size that were not confirmed at every
+    /// corner; empty where they were.</summary>
+    public static string Unproven(SizeResult result) =>
+        HasCorners(result) && !(result.Account is { IsComplete: true, ConfirmsEnds: true })
+        ? " (searched, not proven)"
+        : "";
+
+    /// <summary>What is to be said of the preferred values that hold.</summary>
+    public static string OfListed(SizeResult result)
+    {
+        var holding = result.Preferred.Count(point => point.Holds);
+        return !HasCorners(result) ? ""
+            : result.Account.Listed < holding ? $", the best {result.Account.Listed} at the corners too"
+            : result.Account.IsComplete ? ""
+            : " (searched, not proven)";
+    }
 
     private static string Spread(SizeResult result)
     {
@@ -203,23 +223,25 @@ internal static class SizeWords
             return "No value has a tolerance, so there were no corners to look at.";
         }
 
+        var account = result.Account;
         var names = string.Join(", ", corners.Toleranced.Select(result.Problem.NameOf));
         if (result.Chosen is null)
         {
-            return corners.IsComplete
-                ? $"All {corners.All.Length} corners of {names} were solved in the middle of the range, " +
+            return account.IsComplete
+                ? $"All {account.Count} corners of {names} were solved in the middle of the range, " +
                     $"and the scan looked at the worst of them ({result.Corners.Length})."
-                : $"The scan looked at the worst corners of {names} found one value at a time " +
+                : $"The scan looked at the worst corners of {names} that a search found " +
                     $"({result.Corners.Length}).";
         }
 
         var scanned = result.Corners.Length == 1
             ? "The scan looked at the one corner that decides"
             : $"The scan looked at the {result.Corners.Length} corners that decide";
-        return corners.IsComplete
-            ? $"{scanned}, the proposed values were solved at all {corners.All.Length} corners of {names}; " +
+        return account.IsComplete
+            ? $"{scanned}, the proposed values were solved at all {account.Count} corners of {names}; " +
                 "a worst case inside the tolerances, away from every corner, is not excluded."
-            : $"{scanned}, the proposed values were solved with each of {names} at a limit of its own " +
-                $"against all others ({corners.All.Length} corners of 2^{corners.Toleranced.Length}).";
+            : $"{scanned}, the proposed values were solved at {account.Count} of the " +
+                $"2^{corners.Toleranced.Length} corners of {names}: where each value's own effect points " +
+                "to, random ones, and on from the worst by single exchanges.";
     }
 }

@@ -18,7 +18,7 @@ internal static class SpreadJumps
     public static string Account(SpreadResult spread)
     {
         var jumps = spread.Jumps;
-        var all = jumps.AllEdges.ToString("0.#e0", CultureInfo.InvariantCulture);
+        var all = ReportWords.Count(jumps.AllEdges);
         var edges = jumps.Edges != jumps.AllEdges ? $"{jumps.Edges:N0} of the {all} edges"
             : jumps.Edges == 1 ? "the one edge"
             : $"all {jumps.Edges:N0} edges";

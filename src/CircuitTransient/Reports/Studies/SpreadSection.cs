@@ -22,7 +22,10 @@ public static class SpreadSection
             {Draws(spread)}{Extremes(spread)}{SensitivitySection.Of(spread)}
             <p>{SpreadWords.Checks(spread)}</p>
             <p class="aside">Everything stands in spread.json; {SpreadWords.Table(spread)}.</p>
-            """));
+            """))
+        {
+            Headline = SpreadWords.Verdict(spread),
+        };
     }
 
     private static Markup Doubts(SpreadResult spread) => Markup.Join(

@@ -56,7 +56,7 @@ internal static partial class SpreadWords
         var account = spread.Account;
         var values = spread.Varied.Values.Length;
         var inside = $"{account.InteriorPoints:N0} points between them";
-        var all = account.Corners.ToString("0.#e0", CultureInfo.InvariantCulture);
+        var all = ReportWords.Count(account.Corners);
         var toleranced = values == 1 ? "the one value that has" : $"the {values} values that have";
         var corners = account.AllCorners
             ? $"All {account.Corners:N0} corners of {toleranced} a tolerance were solved"

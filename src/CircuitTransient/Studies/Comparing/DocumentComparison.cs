@@ -211,13 +211,18 @@ public static class DocumentComparison
             .ToDictionary(kind => kind.Key, kind => kind.Max(s => Math.Abs(s.Value ?? 0)) * Rounding);
         var changes = parts.Pairs.SelectMany(pair => pair.Before.Stresses.Zip(pair.After.Stresses, (b, a) =>
             new StressChange(
-                pair.Before.Name, b.Name, b.Unit, sizes.Of(b.Value, a.Value, floor: floors[b.Name]))));
+                pair.Before.Name, b.Name, b.Unit,
+                sizes.Of(Stress(b), Stress(a), floor: floors[b.Name]))));
         return
         [
             .. changes.Where(change => change.Value.Differs)
                 .OrderByDescending(change => Math.Abs(change.Value.Relative ?? double.MaxValue)),
         ];
     }
+
+    // A part is stressed by a peak's magnitude; energy has a direction, taken up or given off.
+    private static double? Stress(DocumentStress stress) =>
+        stress.Value is { } value && stress.Name != "energy" ? Math.Abs(value) : stress.Value;
 
     private static ImmutableArray<CheckChange> ChecksOf(ResultsDocument before, ResultsDocument after)
     {

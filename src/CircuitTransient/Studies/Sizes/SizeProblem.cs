@@ -1,5 +1,7 @@
+using System.Collections.Concurrent;
 using System.Collections.Immutable;
 using CircuitTransient.Circuits;
+using CircuitTransient.Studies.Spreads;
 using CircuitTransient.Syntax;
 using CircuitTransient.Text;
 
@@ -11,6 +13,7 @@ public sealed class SizeProblem
     private readonly VariedCircuit varied;
     private readonly ImmutableArray<StudyFigure> figures;
     private readonly SizeAimReading aim;
+    private readonly ConcurrentDictionary<(double, double, UInt128?), SizePoint> known = new();
 
     private SizeProblem(
         Circuit file, VariedCircuit varied, ImmutableArray<SizedValue> parts,
@@ -90,6 +93,16 @@ public sealed class SizeProblem
     public SizePoint AtCorner(
         ImmutableArray<double> sized, UInt128? corner, CancellationToken cancellation)
     {
+        // A search that is done again with more corners asks again for what it knows.
+        var key = (sized[0], sized[^1], corner);
+        return known.TryGetValue(key, out var point)
+            ? point
+            : known.GetOrAdd(key, Solve(sized, corner, cancellation));
+    }
+
+    private SizePoint Solve(
+        ImmutableArray<double> sized, UInt128? corner, CancellationToken cancellation)
+    {
         var point = CircuitAt(sized, corner) is { Succeeded: true, Value: var circuit }
             ? StudySolver.At(circuit, figures, cancellation).Value
             : null;
@@ -105,6 +118,10 @@ public sealed class SizeProblem
             [.. Constraints.Select((constraint, i) => constraint.Share(point.Values[i]))],
             aim.Read(sized, point.Values.AsSpan()[Constraints.Length..]));
     }
+
+    /// <summary>The fast evaluation of the constraints' figures.</summary>
+    internal PointBatch Batch(CancellationToken cancellation) =>
+        new(varied, [.. Constraints.Select(c => c.Figure)], Environment.ProcessorCount, cancellation);
 
     /// <summary>The circuit with such values.</summary>
     public Outcome<Circuit> CircuitAt(ImmutableArray<double> sized, UInt128? corner) =>

@@ -36,6 +36,9 @@ public sealed record SizeResult(
     string? ProposedText,
     ImmutableArray<ConfirmedCorner> Confirmed)
 {
+    /// <summary>What was solved at the corners of the tolerances.</summary>
+    public required CornerAccount Account { get; init; }
+
     /// <summary>The values of the file, judged like the proposed ones.</summary>
     public required SizePoint AsItStands { get; init; }
 
@@ -61,3 +64,13 @@ public sealed record SizeResult(
 /// <param name="Holds">Whether every requirement and rating holds.</param>
 /// <param name="ChecksHold">Whether every self-check holds.</param>
 public sealed record ConfirmedCorner(UInt128 Corner, bool Holds, bool ChecksHold);
+
+/// <summary>What was solved at the corners of the tolerances.</summary>
+/// <param name="Count">How many corners the proposed values were solved at; without such, those in the middle
+/// of the range.</param>
+/// <param name="IsComplete">Whether these are all there are.</param>
+/// <param name="ConfirmsEnds">Whether the ends of the stretches and the best values of any size hold at all
+/// of these too.</param>
+/// <param name="Listed">How many of the preferred values said to hold, the best first, do so at all of these
+/// too.</param>
+public sealed record CornerAccount(int Count, bool IsComplete, bool ConfirmsEnds, int Listed);

@@ -47,17 +47,23 @@ public sealed class SizeStudy
     private Outcome<SizeResult> Run()
     {
         var corners = judge.Deciding();
-        for (var round = 1; ; round++)
+        for (var (round, isLast) = (1, false); ; round++)
         {
+            isLast |= round == MostRounds;
             var search = new SizeSearch(problem, corners, cancellation);
             var found = problem.Parts.Length == 1 ? OnLine(search) : InPlane(search);
-            var broken = judge.Confirm(found.Intervals, found.Candidates, out var chosen);
-            if (broken.IsEmpty || round == MostRounds)
+            var ends = found.Intervals.SelectMany(interval => new[] { interval.From, interval.To })
+                .Concat(found.Exact is { } exact ? [exact] : []);
+            var broken = judge.Confirm(ends, found.Candidates, isLast, out var chosen);
+            if (broken.IsEmpty || isLast)
             {
-                return Conclude(Judged(found), chosen, corners);
+                var (judged, listed) = Judged(found, search);
+                return Conclude(judged, chosen, corners, broken.IsEmpty, listed);
             }
 
-            corners = corners.Union(broken).ToImmutableArray();
+            // A corner that is known and yet breaks is a matter of rounding: another search ends there too.
+            isLast = broken.All(corners.Contains);
+            corners = [.. corners.Union(broken)];
         }
     }
 
@@ -151,17 +157,18 @@ public sealed class SizeStudy
         }
     }
 
-    private Finding Judged(Finding found)
+    private (Finding Found, int Listed) Judged(Finding found, SizeSearch search)
     {
-        var points = judge.AtEveryCorner(found.Points);
-        return found with
+        var (preferred, listed) = judge.AtTheCorners(found.Preferred, search.Ranked(found.Preferred));
+        return (found with
         {
-            Points = points,
-            Preferred = found.Preferred == found.Points ? points : judge.AtEveryCorner(found.Preferred),
-        };
+            Points = found.Preferred == found.Points ? preferred : found.Points,
+            Preferred = preferred,
+        }, listed);
     }
 
-    private Outcome<SizeResult> Conclude(Finding found, SizePoint? chosen, ImmutableArray<UInt128> corners)
+    private Outcome<SizeResult> Conclude(
+        Finding found, SizePoint? chosen, ImmutableArray<UInt128> corners, bool confirmsEnds, int listed)
     {
         if (chosen is not null && request.Series is null)
         {
@@ -174,6 +181,8 @@ public sealed class SizeStudy
             : chosen is not null ? problem.CircuitAt(chosen.Values, null)
             : new(problem.File, []);
         var solved = circuit.Then(c => TransientSolver.Solve(c, CauseList.FromStart(c), cancellation));
+        var confirmed = chosen is null ? [] : judge.InFull(chosen);
+        var account = new CornerAccount(judge.Count, judge.IsComplete, confirmsEnds, listed);
         return solved.Succeeded
             ? new(new SizeResult(
                 problem, request, found.Points, found.Axes, found.Intervals, found.Preferred, found.Exact,
@@ -181,9 +190,10 @@ public sealed class SizeStudy
                 ResultBuilder.Measure(
                     solved.Value, solved.Diagnostics, AnalysisOptions.Default, cancellation),
                 text,
-                chosen is null ? [] : judge.InFull(chosen))
+                confirmed)
             {
                 AsItStands = judge.Of([.. problem.Parts.Select(part => part.Nominal)]),
+                Account = account,
             }, [])
             : new(null, solved.Diagnostics);
     }

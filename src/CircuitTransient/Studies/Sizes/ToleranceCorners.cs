@@ -6,9 +6,6 @@ namespace CircuitTransient.Studies.Sizes;
 /// highest. That of a sized part moves with its value, in proportion.</summary>
 public sealed class ToleranceCorners
 {
-    /// <summary>With more tolerances than this, corners are picked one value at a time.</summary>
-    public const int MostComplete = 10;
-
     private readonly VariedCircuit varied;
     private readonly int sizedCount;
 
@@ -27,15 +24,6 @@ public sealed class ToleranceCorners
     /// <summary>The values that have a tolerance, by their places.</summary>
     public ImmutableArray<int> Toleranced { get; }
 
-    /// <summary>Whether <see cref="All"/> are all there are.</summary>
-    public bool IsComplete => Toleranced.Length <= MostComplete;
-
-    /// <summary>Every corner, each the set of values at their highest; with too many tolerances only those
-    /// with one value away from all others.</summary>
-    public ImmutableArray<UInt128> All => IsComplete
-        ? [.. Enumerable.Range(0, 1 << Toleranced.Length).Select(i => (UInt128)i)]
-        : [.. Enumerable.Range(0, Toleranced.Length).SelectMany(OneAway)];
-
     /// <summary>The values at a corner, or with everything else nominal where it is null.</summary>
     public double[] Values(ReadOnlySpan<double> sized, UInt128? corner)
     {
@@ -45,19 +33,19 @@ public sealed class ToleranceCorners
             values[i] = i < sizedCount ? sized[i] : varied.Values[i].Nominal;
         }
 
-        if (corner is { } highest)
+        for (var i = 0; corner is { } highest && i < Toleranced.Length; i++)
         {
-            for (var i = 0; i < Toleranced.Length; i++)
-            {
-                var place = Toleranced[i];
-                var tolerance = varied.Values[place].Tolerance!;
-                var limit = ((highest >> i) & 1) == 1 ? tolerance.Highest : tolerance.Lowest;
-                values[place] = place < sizedCount
-                    ? sized[place] * (limit / varied.Values[place].Nominal)
-                    : limit;
-            }
+            Put(values, sized, i, ((highest >> i) & 1) == 1);
         }
 
+        return values;
+    }
+
+    /// <summary>The values with one of <see cref="Toleranced"/> at a limit, all else nominal.</summary>
+    public double[] Alone(ReadOnlySpan<double> sized, int index, bool isHighest)
+    {
+        var values = Values(sized, null);
+        Put(values, sized, index, isHighest);
         return values;
     }
 
@@ -65,10 +53,13 @@ public sealed class ToleranceCorners
     public ImmutableArray<(string Name, bool IsHighest)> Names(UInt128 corner) =>
         [.. Toleranced.Select((place, i) => (varied.Values[place].Name, ((corner >> i) & 1) == 1))];
 
-    private IEnumerable<UInt128> OneAway(int place)
+    private void Put(double[] values, ReadOnlySpan<double> sized, int index, bool isHighest)
     {
-        var all = (UInt128.One << Math.Min(Toleranced.Length, 127)) - 1;
-        var one = UInt128.One << Math.Min(place, 127);
-        return [one, all ^ one];
+        var place = Toleranced[index];
+        var tolerance = varied.Values[place].Tolerance!;
+        var limit = isHighest ? tolerance.Highest : tolerance.Lowest;
+        values[place] = place < sizedCount
+            ? sized[place] * (limit / varied.Values[place].Nominal)
+            : limit;
     }
 }

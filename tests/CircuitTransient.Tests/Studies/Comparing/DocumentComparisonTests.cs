@@ -45,6 +45,20 @@ public sealed class DocumentComparisonTests
     }
 
     [Fact]
+    public void A_stress_of_the_other_sign_is_compared_by_its_magnitude()
+    {
+        // C1 is charged to 1 V: −10 V puts −11 V across R1 at first, 5 V puts 4 V there.
+        string With(string level) => SampleDocuments.Text()
+            .Replace("step of 10 V", $"step of {level}", StringComparison.Ordinal);
+        var comparison = DocumentComparison.Compare(
+            SampleDocuments.Of(With("-10 V")), SampleDocuments.Of(With("5 V")));
+
+        var peak = Assert.Single(comparison.Stresses, s => s is { Part: "R1", Stress: "peakVoltage" }).Value;
+        Assert.Equal(-7, peak.Difference!.Value, 1e-9);
+        Assert.Equal(-7 / 11.0, peak.Relative!.Value, 1e-9);
+    }
+
+    [Fact]
     public void A_verdict_turns_for_the_worse_and_back_for_the_better()
     {
         var broken = SampleDocuments.Of(SampleDocuments.Text(ohms: 500));

@@ -70,7 +70,7 @@ public sealed class SizeStudyTests
         // The worst corner has R1 at +10 %: I·1.1·R·(1 − e^(−20 ms/(1.1·R·0.8 µF))) is the bound.
         var r = 1.1 * result.Exact!.Values[0];
         Assert.Equal(1.5, 1e-3 * r * (1 - Math.Exp(-20e-3 / (r * 0.8e-6))), 1e-11);
-        Assert.Equal(4, result.Problem.Corners.All.Length);
+        Assert.Equal(4, result.Account.Count);
         Assert.True(result.IsFound);
         Assert.NotEmpty(result.Confirmed);
     }
