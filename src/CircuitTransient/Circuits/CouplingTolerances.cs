@@ -95,11 +95,11 @@ internal static class CouplingTolerances
         var read = new SortedSet<int>();
         foreach (var coupling in couplings)
         {
-            state.Parameters.AddToleranced(coupling.Value.Formula, read);
+            read.UnionWith(state.Parameters.Toleranced(coupling.Value.Formula));
             if (!coupling.IsFactor)
             {
-                state.Parameters.AddToleranced(InductanceOf(coupling.First).Formula, read);
-                state.Parameters.AddToleranced(InductanceOf(coupling.Second).Formula, read);
+                read.UnionWith(state.Parameters.Toleranced(InductanceOf(coupling.First).Formula));
+                read.UnionWith(state.Parameters.Toleranced(InductanceOf(coupling.Second).Formula));
             }
         }
 

@@ -43,32 +43,11 @@ internal sealed class ParameterList
 
     public ImmutableArray<Parameter> ToImmutable() => list.ToImmutable();
 
-    /// <summary>Adds the indices of all parameters with a tolerance that a formula reads.</summary>
-    public void AddToleranced(Formula? formula, ISet<int> found)
-    {
-        switch (formula)
-        {
-            case ParameterFormula p when list[p.Index].Tolerance is not null:
-                found.Add(p.Index);
-                break;
-            case BinaryFormula b:
-                AddToleranced(b.Left, found);
-                AddToleranced(b.Right, found);
-                break;
-            case CallFormula c:
-                AddToleranced(c.Argument, found);
-                break;
-            default:
-                break;
-        }
-    }
+    /// <summary>The indices of the parameters with a tolerance that a formula reads.</summary>
+    public IEnumerable<int> Toleranced(Formula? formula) =>
+        ReadParameters.In(formula).Where(index => list[index].Tolerance is not null);
 
     /// <summary>The first parameter with a tolerance that a formula reads, or null.</summary>
-    public Parameter? FirstToleranced(Formula? formula) => formula switch
-    {
-        ParameterFormula p when list[p.Index].Tolerance is not null => list[p.Index],
-        BinaryFormula b => FirstToleranced(b.Left) ?? FirstToleranced(b.Right),
-        CallFormula c => FirstToleranced(c.Argument),
-        _ => null,
-    };
+    public Parameter? FirstToleranced(Formula? formula) =>
+        Toleranced(formula).Select(index => list[index]).FirstOrDefault();
 }

@@ -16,7 +16,7 @@ public static class ReadParameters
             .Concat(circuit.Requirements.SelectMany(r => Delays(r.Window)))
             .Concat(circuit.Requirements.Select(r => (r.Bound as SettlesTo)?.By.Delay)))
         {
-            Add(quantity?.Formula, found);
+            found.UnionWith(In(quantity?.Formula));
         }
 
         return found.ToImmutable();
@@ -40,7 +40,8 @@ public static class ReadParameters
                 _ => null,
             }),
         ],
-        _ => [],
+        IdealTransformer => [],
+        _ => throw new System.Diagnostics.UnreachableException($"no values of {part}"),
     };
 
     private static IEnumerable<Quantity?> QuantitiesOf(Wave wave) =>
@@ -48,22 +49,13 @@ public static class ReadParameters
 
     private static Quantity?[] Delays(Window window) => [window.From?.Delay, window.To?.Delay];
 
-    private static void Add(Formula? formula, ISet<int> found)
+    /// <summary>The indices of the parameters that a formula reads, in the order written; one that is read
+    /// twice comes twice.</summary>
+    public static IEnumerable<int> In(Formula? formula) => formula switch
     {
-        switch (formula)
-        {
-            case ParameterFormula p:
-                found.Add(p.Index);
-                break;
-            case BinaryFormula b:
-                Add(b.Left, found);
-                Add(b.Right, found);
-                break;
-            case CallFormula c:
-                Add(c.Argument, found);
-                break;
-            default:
-                break;
-        }
-    }
+        ParameterFormula p => [p.Index],
+        BinaryFormula b => In(b.Left).Concat(In(b.Right)),
+        CallFormula c => In(c.Argument),
+        _ => [],
+    };
 }

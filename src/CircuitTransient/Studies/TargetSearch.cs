@@ -86,7 +86,7 @@ internal static class TargetSearch
             for (var i = 0; i < circuit.Parameters.Length; i++)
             {
                 if (circuit.Parameters[i] is { IsNamedValue: false, Aspect: null } value
-                    && value.Owner == name && Reads(own, i))
+                    && value.Owner == name && ReadParameters.In(own).Contains(i))
                 {
                     return ([Parameter(circuit, i, VariedKind.Parameter)], null);
                 }
@@ -120,14 +120,6 @@ internal static class TargetSearch
         CurrentSource s => s.Wave.Scale,
         Switch or IdealTransformer => null,
         _ => throw new System.Diagnostics.UnreachableException($"no value of {part}"),
-    };
-
-    private static bool Reads(Formula formula, int parameter) => formula switch
-    {
-        ParameterFormula p => p.Index == parameter,
-        BinaryFormula b => Reads(b.Left, parameter) || Reads(b.Right, parameter),
-        CallFormula c => Reads(c.Argument, parameter),
-        _ => false,
     };
 
     private static (ImmutableArray<VariedValue>, Diagnostic?) Phase(

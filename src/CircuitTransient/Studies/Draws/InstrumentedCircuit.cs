@@ -136,15 +136,8 @@ internal sealed class InstrumentedCircuit
     }
 
     /// <summary>Whether a value depends on a varied parameter.</summary>
-    public static bool Varies(Quantity? quantity, bool[] varied) => Reads(quantity?.Formula, varied);
-
-    private static bool Reads(Formula? formula, bool[] varied) => formula switch
-    {
-        ParameterFormula p => varied[p.Index],
-        BinaryFormula b => Reads(b.Left, varied) || Reads(b.Right, varied),
-        CallFormula c => Reads(c.Argument, varied),
-        _ => false,
-    };
+    public static bool Varies(Quantity? quantity, bool[] varied) =>
+        ReadParameters.In(quantity?.Formula).Any(index => varied[index]);
 
     private static InstrumentKind? KindOf(Part part, bool[] varied, bool isVariedCoil) => part switch
     {
