@@ -1,3 +1,4 @@
+using System.Diagnostics;
 using CircuitTransient.Text;
 
 namespace CircuitTransient.Cli;
@@ -38,6 +39,23 @@ public sealed class CircuitFile
             var reason = Directory.Exists(path) ? "it is a folder" : FileTrouble.Reason(trouble);
             streams.Complain($"{path} cannot be read: {reason}");
             return new(path, null, ExitStatus.FileTrouble);
+        }
+    }
+
+    /// <summary>Says why nothing came of the file.</summary>
+    /// <returns>The exit status of that.</returns>
+    public int Refuse(AnalysisOutcome refused, Streams streams)
+    {
+        switch (refused)
+        {
+            case NoUniqueSolution trouble:
+                streams.Report(trouble.Diagnostics);
+                return ExitStatus.NoUniqueSolution;
+            case Mistakes mistakes:
+                streams.Report(mistakes.Diagnostics);
+                return Math.Max(ExitStatus.Mistake, Status);
+            default:
+                throw new UnreachableException($"no status for {refused}");
         }
     }
 

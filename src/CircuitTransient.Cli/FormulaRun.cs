@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using System.Diagnostics;
 using CircuitTransient.Measurements.ClosedForms;
 using CircuitTransient.Reports.Formula;
 using CircuitTransient.Text;
@@ -67,14 +66,8 @@ public sealed class FormulaRun(
                 return written.Study.SelfChecks.All(c => c.Holds)
                     ? ExitStatus.Success
                     : ExitStatus.SelfCheckFailed;
-            case NoUniqueSolution trouble:
-                streams.Report(trouble.Diagnostics);
-                return ExitStatus.NoUniqueSolution;
-            case Mistakes mistakes:
-                streams.Report(mistakes.Diagnostics);
-                return Math.Max(ExitStatus.Mistake, reading.Status);
             default:
-                throw new UnreachableException($"no status for {outcome}");
+                return reading.Refuse(outcome, streams);
         }
     }
 }

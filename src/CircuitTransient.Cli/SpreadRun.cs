@@ -1,5 +1,4 @@
 using System.Collections.Immutable;
-using System.Diagnostics;
 using CircuitTransient.Measurements;
 using CircuitTransient.Reports.Studies;
 using CircuitTransient.Studies;
@@ -47,14 +46,8 @@ public sealed class SpreadRun(
         {
             case Solved { Result: var nominal }:
                 return Study(file, nominal, reading, partial, progress);
-            case NoUniqueSolution trouble:
-                streams.Report(trouble.Diagnostics);
-                return ExitStatus.NoUniqueSolution;
-            case Mistakes mistakes:
-                streams.Report(mistakes.Diagnostics);
-                return Math.Max(ExitStatus.Mistake, reading.Status);
             default:
-                throw new UnreachableException($"no status for {outcome}");
+                return reading.Refuse(outcome, streams);
         }
     }
 

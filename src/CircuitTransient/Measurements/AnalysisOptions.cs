@@ -19,6 +19,9 @@ public sealed record AnalysisOptions(
 
     /// <summary>Nothing asked for.</summary>
     public static AnalysisOptions Default { get; } = new([]);
+
+    /// <summary>Nothing asked for, of a circuit that no page is written of.</summary>
+    public static AnalysisOptions WithoutPage { get; } = Default with { IsForPage = false };
 }
 
 /// <summary>Into what peaks are broken down.</summary>

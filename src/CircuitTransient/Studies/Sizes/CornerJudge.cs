@@ -164,13 +164,12 @@ internal sealed class CornerJudge(SizeProblem problem, bool withSpread, Cancella
         var corners = Swept(chosen.Values).Take(MostConfirmed).ToArray();
         var confirmed = new ConfirmedCorner[corners.Length];
         var options = new ParallelOptions { CancellationToken = cancellation };
-        var withoutPage = AnalysisOptions.Default with { IsForPage = false };
         Parallel.For(0, corners.Length, options, i =>
         {
             var solved = problem.CircuitAt(chosen.Values, corners[i])
                 .Then(c => TransientSolver.Solve(c, CauseList.FromStart(c), cancellation));
             var result = solved.Succeeded
-                ? ResultBuilder.Measure(solved.Value, [], withoutPage, cancellation)
+                ? ResultBuilder.Measure(solved.Value, [], AnalysisOptions.WithoutPage, cancellation)
                 : null;
             confirmed[i] = new(corners[i], result is { AllHold: true }, result is { ChecksHold: true });
         });

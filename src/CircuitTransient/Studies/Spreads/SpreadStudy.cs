@@ -102,7 +102,7 @@ public sealed class SpreadStudy
         return solved.Value is { } solution
             ? new WorstCase(
                 index, point, used,
-                ResultBuilder.Measure(solution, [], AnalysisOptions.Default, cancellation),
+                ResultBuilder.Measure(solution, [], AnalysisOptions.WithoutPage, cancellation),
                 IsSteepest(figures[index].Figure, point))
             : null;
     }
